@@ -1,0 +1,21 @@
+//! filmwright works out the viscosity machines need and weighs candidate lubricants against it.
+//!
+//! ```text
+//! bytes ─source─▶ located text ─input─▶ model::Site        ┐
+//! rules/ (embedded, then the user's) ─────▶ model::Rulebook ┤
+//!                                                           ▼
+//!            demand::demands ──▶ per lubrication point: its limits, each traced
+//!                                                           ▼  × every oil (oil::Curves)
+//!            suitability (bars, asks, notes) ──▶ judge ──▶ verdict, margins, band
+//!                                                           ▼
+//!            decide (mend, season, gaps, pool …) · audit ──▶ report · tables
+//! ```
+//!
+//! The pipeline runs in one direction; nothing reaches back. The rooms, in the order of the arrows:
+
+pub mod numeric;
+pub mod quantity;
+pub mod relation;
+pub mod source;
+pub mod trace;
+pub mod work;

@@ -1,0 +1,1 @@
+//! Banded systems of equations.

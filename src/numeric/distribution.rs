@@ -1,0 +1,1 @@
+//! Distribution functions needed for confidence intervals.

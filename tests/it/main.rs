@@ -1,0 +1,1 @@
+//! Everything tested from outside the crate, in one binary.
