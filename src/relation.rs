@@ -1,6 +1,8 @@
 //! The published relations, one a file, each once. `work`, `why`, the judge and the report all
 //! call these functions; nothing here knows of machines, messages or files.
 
+pub mod oil;
+
 /// What the program says about a relation wherever it prints a result of it.
 #[derive(Debug, PartialEq, Eq)]
 pub struct Law {
