@@ -148,12 +148,16 @@ pub enum Viscosity {
         from: PointsFrom,
     },
     /// Only a grade.
-    Grade {
-        /// ISO VG number.
-        iso_vg: Given<u32>,
-        /// Viscosity index, where stated.
-        vi: Option<Given<Ratio>>,
-    },
+    Grade(Box<GradeOnly>),
+}
+
+/// A viscosity known only by its grade.
+#[derive(Clone, Debug, PartialEq)]
+pub struct GradeOnly {
+    /// ISO VG number.
+    pub iso_vg: Given<u32>,
+    /// Viscosity index, where stated.
+    pub vi: Option<Given<Ratio>>,
 }
 
 /// One point of a viscosity line.
