@@ -1,6 +1,15 @@
 //! The published relations, one a file, each once. `work`, `why`, the judge and the report all
 //! call these functions; nothing here knows of machines, messages or files.
 
+pub mod bearing;
+pub mod film;
+pub mod gear;
+pub mod guidance;
+pub mod oil_fits;
+pub mod outside;
+
+pub use outside::Outside;
+
 /// What the program says about a relation wherever it prints a result of it.
 #[derive(Debug, PartialEq, Eq)]
 pub struct Law {

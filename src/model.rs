@@ -1,0 +1,3 @@
+//! Checked types of the domain.
+
+pub mod bearing_table;
