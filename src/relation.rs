@@ -5,6 +5,7 @@ pub mod bearing;
 pub mod film;
 pub mod gear;
 pub mod guidance;
+pub mod oil;
 pub mod oil_fits;
 pub mod outside;
 

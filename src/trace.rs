@@ -208,6 +208,22 @@ impl<Q: Copy> Inputs for Vec<(&'static str, Known<Q>)> {
     }
 }
 
+/// Two sets of inputs together, for lists of points.
+#[derive(Clone, Debug)]
+pub struct Both<A, B>(pub A, pub B);
+
+impl<A: Inputs, B: Inputs> Inputs for Both<A, B> {
+    type Values = (A::Values, B::Values);
+    fn values(&self) -> Self::Values {
+        (self.0.values(), self.1.values())
+    }
+    fn steps(&self) -> Vec<(&'static str, StepId)> {
+        let mut steps = self.0.steps();
+        steps.extend(self.1.steps());
+        steps
+    }
+}
+
 /// A calculation written down.
 #[derive(Clone, Debug, Default, PartialEq)]
 pub struct Derivation {
