@@ -16,5 +16,7 @@ pub mod pressure_viscosity;
 pub mod sae_engine;
 pub mod sae_gear;
 pub mod saybolt;
+pub mod tangent;
+pub mod vg_step;
 pub mod viscosity_index;
 pub mod viscosity_temperature;
