@@ -12,7 +12,7 @@ mod oil;
 pub use args::Args;
 
 use crate::quantity::{Amount, Measure};
-use crate::relation::Law;
+use crate::relation::{Law, Outside};
 use crate::trace::{Derivation, Known, StepId};
 
 /// The rows of each group, in the order they are listed.
@@ -124,6 +124,12 @@ impl Refusal {
             name,
             message: message.into(),
         }
+    }
+}
+
+impl From<Outside> for Refusal {
+    fn from(outside: Outside) -> Self {
+        Self::new(outside.name(), outside.to_string())
     }
 }
 
