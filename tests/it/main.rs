@@ -1,1 +1,5 @@
 //! Everything tested from outside the crate, in one binary.
+
+mod checks;
+mod properties_oil;
+mod reference_oil;
