@@ -1,1 +1,5 @@
 //! Everything tested from outside the crate, in one binary.
+
+mod chance;
+mod journal_heat;
+mod journal_table;
