@@ -50,3 +50,7 @@ pub struct HoursPerYear(pub f64);
 /// means nothing without the name of the instrument and the temperature.
 #[derive(Clone, Copy, Debug, PartialEq, PartialOrd)]
 pub struct Efflux(pub f64);
+
+/// Rate at which a fluid is sheared, 1/s.
+#[derive(Clone, Copy, Debug, PartialEq, PartialOrd)]
+pub struct ShearRate(pub f64);

@@ -3,9 +3,9 @@
 use super::{
     AcidNumber, Angle, AngularVelocity, Area, DynamicViscosity, Efflux, Force, HeatFluxDensity,
     HeatTransfer, HoursPerYear, KinematicViscosity, Length, LoadPerLength, Mass, MassDensity,
-    Power, Pressure, PressureViscosity, Ratio, SpecificHeatCapacity, TemperatureCoefficient,
-    TemperatureInterval, ThermalConductance, ThermalConductivity, ThermodynamicTemperature, Time,
-    Torque, Velocity, VgStep, Volume, VolumePerYear, VolumeRate,
+    Power, Pressure, PressureViscosity, Ratio, ShearRate, SpecificHeatCapacity,
+    TemperatureCoefficient, TemperatureInterval, ThermalConductance, ThermalConductivity,
+    ThermodynamicTemperature, Time, Torque, Velocity, VgStep, Volume, VolumePerYear, VolumeRate,
 };
 use std::f64::consts::PI;
 use std::marker::PhantomData;
@@ -77,6 +77,8 @@ pub enum Kind {
     TemperatureCoefficient,
     /// Saybolt, Furol, Engler or Redwood reading.
     Efflux,
+    /// Rate of shear.
+    ShearRate,
 }
 
 /// One way of writing a kind: `base = (value + offset) * factor`.
@@ -298,6 +300,8 @@ const EFFLUX: &[Unit] = &[
     Unit::of("s Redwood 2", 1.0, &["s Admiralty"]),
 ];
 
+const PER_SECOND: &[Unit] = &[Unit::of("1/s", 1.0, &["s-1"])];
+
 const ANY: (f64, f64) = (f64::MIN, f64::MAX);
 const POSITIVE: (f64, f64) = (f64::MIN_POSITIVE, f64::MAX);
 const NOT_NEGATIVE: (f64, f64) = (0.0, f64::MAX);
@@ -354,6 +358,7 @@ impl Kind {
         Self::SpecificHeat,
         Self::TemperatureCoefficient,
         Self::Efflux,
+        Self::ShearRate,
     ];
 
     /// The table of this kind.
@@ -451,6 +456,7 @@ impl Kind {
                 spec("a temperature coefficient", "0.04 1/K", PER_KELVIN, 0, ANY)
             }
             Self::Efflux => spec("an efflux reading", "215 SUS", EFFLUX, 0, POSITIVE),
+            Self::ShearRate => spec("a shear rate", "1e6 1/s", PER_SECOND, 0, NOT_NEGATIVE),
         }
     }
 
@@ -544,6 +550,7 @@ plain_measures! {
     HoursPerYear => HoursPerYear,
     TemperatureCoefficient => TemperatureCoefficient,
     Efflux => Efflux,
+    ShearRate => ShearRate,
 }
 
 /// A quantity whose kind is known only at run time.
