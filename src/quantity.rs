@@ -17,7 +17,7 @@ pub use kind::{Amount, Kind, Measure, Unit};
 pub use uom::si::f64::{
     Angle, AngularVelocity, Area, CompressibilityCoefficient, DynamicViscosity, Force,
     HeatFluxDensity, HeatTransfer, KinematicViscosity, Length, Mass, MassDensity, Power, Pressure,
-    Ratio, SpecificHeatCapacity, TemperatureInterval, ThermalConductivity,
+    Ratio, SpecificHeatCapacity, TemperatureInterval, ThermalConductance, ThermalConductivity,
     ThermodynamicTemperature, Time, Torque, Velocity, Volume, VolumeRate,
 };
 

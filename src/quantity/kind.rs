@@ -4,8 +4,8 @@ use super::{
     AcidNumber, Angle, AngularVelocity, Area, DynamicViscosity, Efflux, Force, HeatFluxDensity,
     HeatTransfer, HoursPerYear, KinematicViscosity, Length, LoadPerLength, Mass, MassDensity,
     Power, Pressure, PressureViscosity, Ratio, ShearRate, SpecificHeatCapacity,
-    TemperatureCoefficient, TemperatureInterval, ThermalConductivity, ThermodynamicTemperature,
-    Time, Torque, Velocity, VgStep, Volume, VolumePerYear, VolumeRate,
+    TemperatureCoefficient, TemperatureInterval, ThermalConductance, ThermalConductivity,
+    ThermodynamicTemperature, Time, Torque, Velocity, VgStep, Volume, VolumePerYear, VolumeRate,
 };
 use std::f64::consts::PI;
 use std::marker::PhantomData;
@@ -61,6 +61,8 @@ pub enum Kind {
     AcidNumber,
     /// Heat transfer coefficient.
     HeatTransfer,
+    /// Heat given off by a whole body for every kelvin it is warmer than the air.
+    HeatConductance,
     /// Heat through an area.
     WattDensity,
     /// Margin in ISO 3448 grades.
@@ -274,6 +276,7 @@ const HEAT_TRANSFER: &[Unit] = &[Unit::of(
     1.0,
     &["W/(m²·K)", "W/m2K", "W/(m2 K)"],
 )];
+const HEAT_CONDUCTANCE: &[Unit] = &[Unit::of("W/K", 1.0, &[])];
 const WATT_DENSITY: &[Unit] = &[
     Unit::of("W/cm2", 1e4, &["W/cm²"]),
     Unit::of("W/in2", 1.0 / (0.0254 * 0.0254), &["W/in²"]),
@@ -347,6 +350,7 @@ impl Kind {
         Self::Ratio,
         Self::AcidNumber,
         Self::HeatTransfer,
+        Self::HeatConductance,
         Self::WattDensity,
         Self::VgStep,
         Self::Angle,
@@ -421,6 +425,13 @@ impl Kind {
                 "a heat transfer coefficient",
                 "16 W/(m2.K)",
                 HEAT_TRANSFER,
+                0,
+                POSITIVE,
+            ),
+            Self::HeatConductance => spec(
+                "a heat conductance",
+                "24 W/K",
+                HEAT_CONDUCTANCE,
                 0,
                 POSITIVE,
             ),
@@ -525,6 +536,7 @@ measures! {
     Time => Time,
     Ratio => Ratio,
     HeatTransfer => HeatTransfer,
+    ThermalConductance => HeatConductance,
     HeatFluxDensity => WattDensity,
     Angle => Angle,
     ThermalConductivity => Conductivity,
