@@ -3,3 +3,4 @@
 mod checks;
 mod properties_oil;
 mod reference_oil;
+mod refusals_oil;
