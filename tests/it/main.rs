@@ -7,3 +7,4 @@ mod journal_table;
 mod properties_oil;
 mod reference_journal;
 mod reference_oil;
+mod refusals_oil;
