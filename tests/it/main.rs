@@ -4,3 +4,4 @@ mod chance;
 mod journal_heat;
 mod journal_table;
 mod reference_journal;
+mod work_journal;
