@@ -4,7 +4,7 @@ mod film;
 mod heat;
 mod limits;
 mod pad;
-mod steps;
+pub(crate) mod steps;
 mod transition;
 mod viscosity;
 
@@ -79,7 +79,7 @@ refusals!(NoFilm, NoSettling, NoBalance, NoPad);
 
 /// A journal bearing as asked, with the checked forms of its numbers.
 #[derive(Clone, Copy)]
-struct Asked {
+pub(crate) struct Asked {
     diameter: Known<Length>,
     width: Known<Length>,
     clearance: Known<Length>,
@@ -89,13 +89,19 @@ struct Asked {
     duty: Duty,
 }
 
+/// Diameter, width and radial clearance.
+type Sizes = (Known<Length>, Known<Length>, Known<Length>);
+
 impl Asked {
-    fn read(args: &mut Args, w: &mut Worked) -> Result<Self, Refusal> {
-        let diameter: Known<Length> = args.quantity(w, "diameter", DIAMETER.says)?;
-        let width: Known<Length> = args.quantity(w, "width", WIDTH.says)?;
-        let clearance: Known<Length> = args.quantity(w, "clearance", "radial clearance")?;
-        let load: Known<Force> = args.quantity(w, "load", LOAD.says)?;
-        let speed: Known<AngularVelocity> = args.quantity(w, "speed", SPEED.says)?;
+    /// Checks numbers that the calculation knows already.
+    ///
+    /// # Errors
+    /// What [`Geometry`] and [`Duty`] refuse.
+    pub(crate) fn new(
+        (diameter, width, clearance): Sizes,
+        load: Known<Force>,
+        speed: Known<AngularVelocity>,
+    ) -> Result<Self, NoFilm> {
         Ok(Self {
             diameter,
             width,
@@ -105,6 +111,17 @@ impl Asked {
             geometry: Geometry::new(diameter.value, width.value, clearance.value)?,
             duty: Duty::new(load.value, speed.value)?,
         })
+    }
+
+    fn read(args: &mut Args, w: &mut Worked) -> Result<Self, Refusal> {
+        let sizes = (
+            args.quantity(w, "diameter", DIAMETER.says)?,
+            args.quantity(w, "width", WIDTH.says)?,
+            args.quantity(w, "clearance", "radial clearance")?,
+        );
+        let load = args.quantity(w, "load", LOAD.says)?;
+        let speed = args.quantity(w, "speed", SPEED.says)?;
+        Ok(Self::new(sizes, load, speed)?)
     }
 }
 

@@ -54,8 +54,8 @@ fn journal_film(args: &mut Args, w: &mut Worked) -> Result<(), Refusal> {
     let asked = Asked::read(args, w)?;
     let eta: Known<DynamicViscosity> = args.quantity(w, "eta", "dynamic viscosity")?;
     let route = route(args, Route::Reynolds)?;
-    let film = steps::film(w, &asked, eta, route)?;
-    let s = steps::sommerfeld(w, film.so);
+    let film = steps::film(&mut w.trace, &asked, eta, route)?;
+    let s = steps::sommerfeld(&mut w.trace, film.so);
     w.result("sommerfeld", s, "");
     w.result("so", film.so, "");
     w.result("eccentricity", film.eccentricity, "");
@@ -85,7 +85,7 @@ fn other(w: &mut Worked, asked: &Asked, eta: Known<DynamicViscosity>, used: Rout
         Route::Reynolds => Route::Iso7902,
         Route::Iso7902 => Route::Reynolds,
     };
-    match steps::film(w, asked, eta, route) {
+    match steps::film(&mut w.trace, asked, eta, route) {
         Ok(film) => w.result("h_min_other", film.h_min, "um"),
         Err(reason) => w.remark(format!("no second opinion: {reason}")),
     }

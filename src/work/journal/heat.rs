@@ -144,7 +144,7 @@ fn journal_heat(args: &mut Args, w: &mut Worked) -> Result<(), Refusal> {
     let says = "effective temperature of the film";
     let t = w.trace.take(&outcome, "T_eff", says, |s| s.t_effective);
     let eta = viscosity(w, (oil, line), rho15, t);
-    let film = steps::film(w, &asked, eta, route)?;
+    let film = steps::film(&mut w.trace, &asked, eta, route)?;
     w.result("t_effective", t, "degC");
     w.result("eta", eta, "mPa.s");
     w.result("h_min", film.h_min, "um");

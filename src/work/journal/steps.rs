@@ -1,4 +1,5 @@
-//! The film of a journal bearing, step by step.
+//! The film of a journal bearing, step by step, told to any recorder: the rows of `work` and the
+//! demands of a machine's bearing name the same numbers.
 
 use super::Asked;
 use crate::quantity::{
@@ -16,11 +17,11 @@ use crate::work::Worked;
 
 /// Steps of several kinds that go into a relation together, where what was read decides which.
 #[derive(Clone, Default)]
-pub(super) struct Recorded(pub(super) Vec<(&'static str, StepId)>);
+pub(crate) struct Recorded(pub(crate) Vec<(&'static str, StepId)>);
 
 impl Recorded {
     /// With those of the bearing itself.
-    pub(super) fn and(mut self, asked: &Asked) -> Self {
+    pub(crate) fn and(mut self, asked: &Asked) -> Self {
         self.0.extend([
             ("F", asked.load.step),
             ("omega", asked.speed.step),
@@ -42,67 +43,65 @@ impl Inputs for Recorded {
 
 /// Numbers that do not depend on the oil.
 #[derive(Clone, Copy)]
-pub(super) struct Basics {
-    pub(super) pressure: Known<Pressure>,
-    pub(super) psi: Known<Ratio>,
+pub(crate) struct Basics {
+    pub(crate) pressure: Known<Pressure>,
+    pub(crate) psi: Known<Ratio>,
 }
 
 /// The film at a viscosity.
-pub(super) struct Film {
-    pub(super) pressure: Known<Pressure>,
-    pub(super) so: Known<Ratio>,
-    pub(super) eccentricity: Known<Ratio>,
-    pub(super) attitude: Known<Angle>,
-    pub(super) h_min: Known<Length>,
-    pub(super) variable: Known<Ratio>,
-    pub(super) friction: Known<Ratio>,
-    pub(super) power: Known<Power>,
-    pub(super) side_flow: Known<VolumeRate>,
-    pub(super) inside: Option<Inside>,
+pub(crate) struct Film {
+    pub(crate) pressure: Known<Pressure>,
+    pub(crate) so: Known<Ratio>,
+    pub(crate) eccentricity: Known<Ratio>,
+    pub(crate) attitude: Known<Angle>,
+    pub(crate) h_min: Known<Length>,
+    pub(crate) variable: Known<Ratio>,
+    pub(crate) friction: Known<Ratio>,
+    pub(crate) power: Known<Power>,
+    pub(crate) side_flow: Known<VolumeRate>,
+    pub(crate) inside: Option<Inside>,
 }
 
 /// What only the solved table tells.
-pub(super) struct Inside {
-    pub(super) flow: Known<VolumeRate>,
-    pub(super) peak: Known<Pressure>,
-    pub(super) peak_at: Known<Angle>,
-    pub(super) rupture_at: Known<Angle>,
+pub(crate) struct Inside {
+    pub(crate) flow: Known<VolumeRate>,
+    pub(crate) peak: Known<Pressure>,
+    pub(crate) peak_at: Known<Angle>,
+    pub(crate) rupture_at: Known<Angle>,
 }
 
 /// Specific load and relative clearance.
-pub(super) fn basics(w: &mut Worked, asked: &Asked) -> Basics {
+pub(crate) fn basics(trace: &mut impl Recorder, asked: &Asked) -> Basics {
     let (geometry, duty) = (asked.geometry, asked.duty);
     let with = (("F", asked.load), ("D", asked.diameter), ("B", asked.width));
-    let pressure = w
-        .trace
-        .law("P", "specific load", &SPECIFIC_LOAD, with, |_| {
-            duty.specific_load(&geometry)
-        });
+    let pressure = trace.law("P", "specific load", &SPECIFIC_LOAD, with, |_| {
+        duty.specific_load(&geometry)
+    });
     let with = (("c", asked.clearance), ("D", asked.diameter));
     let says = "relative clearance";
-    let psi = w.trace.law("psi", says, &RELATIVE_CLEARANCE, with, |_| {
+    let psi = trace.law("psi", says, &RELATIVE_CLEARANCE, with, |_| {
         geometry.relative_clearance()
     });
     Basics { pressure, psi }
 }
 
 /// The film at a viscosity, by a route.
-pub(super) fn film(
-    w: &mut Worked,
+pub(crate) fn film(
+    trace: &mut impl Recorder,
     asked: &Asked,
     eta: Known<DynamicViscosity>,
     route: Route,
 ) -> Result<Film, NoFilm> {
     // refuses what the chain below cannot say
     film::Bearing::new(asked.geometry, asked.duty, route)?.film(eta.value)?;
-    let basics = basics(w, asked);
+    let basics = basics(trace, asked);
     let with = (
         ("P", basics.pressure),
         ("psi", basics.psi),
         ("eta", eta),
         ("omega", asked.speed),
     );
-    let so = w.trace.law(
+    let so = trace.law(
         "So",
         "load number",
         &LOAD_NUMBER,
@@ -110,31 +109,31 @@ pub(super) fn film(
         |(p, psi, eta, n)| film::load_number(p, psi, eta, n),
     );
     match route {
-        Route::Reynolds => Ok(solved(w, asked, &basics, so)),
-        Route::Iso7902 => Ok(closed(w, asked, &basics, so)),
+        Route::Reynolds => Ok(solved(trace, asked, &basics, so)),
+        Route::Iso7902 => Ok(closed(trace, asked, &basics, so)),
     }
 }
 
-fn solved(w: &mut Worked, asked: &Asked, basics: &Basics, so: Known<Ratio>) -> Film {
-    let (geometry, t) = (asked.geometry, &mut w.trace);
+fn solved(trace: &mut impl Recorder, asked: &Asked, basics: &Basics, so: Known<Ratio>) -> Film {
+    let geometry = asked.geometry;
     let with = (("So", so), ("D", asked.diameter), ("B", asked.width));
-    let found = t.apply(&table::LAW, with, |(so, _, _)| {
+    let found = trace.apply(&table::LAW, with, |(so, _, _)| {
         let cut = Cut::at(geometry.width_ratio());
         cut.and_then(|cut| cut.carrying(so))
             .expect("the film has been found before")
     });
-    let eccentricity = t.take(&found, "e", "eccentricity", |c| c.eccentricity);
-    let attitude = t.take(&found, "beta", "attitude angle", |c| c.attitude);
+    let eccentricity = trace.take(&found, "e", "eccentricity", |c| c.eccentricity);
+    let attitude = trace.take(&found, "beta", "attitude angle", |c| c.attitude);
     let says = "oil drawn in, over r c N B";
-    let q = t.take(&found, "q", says, |c| c.flow);
+    let q = trace.take(&found, "q", says, |c| c.flow);
     let says = "share of it lost at the edges";
-    let share = t.take(&found, "Q_s/Q", says, |c| c.side_share);
+    let share = trace.take(&found, "Q_s/Q", says, |c| c.side_share);
     let says = "mean over highest pressure";
-    let mean_over_peak = t.take(&found, "P/p_max", says, |c| c.mean_over_peak);
+    let mean_over_peak = trace.take(&found, "P/p_max", says, |c| c.mean_over_peak);
     let says = "place of the highest pressure, from the widest gap";
-    let peak_at = t.take(&found, "t_max", says, |c| c.peak_at);
+    let peak_at = trace.take(&found, "t_max", says, |c| c.peak_at);
     let says = "place where the film ruptures, from the widest gap";
-    let rupture_at = t.take(&found, "t_r", says, |c| c.rupture_at);
+    let rupture_at = trace.take(&found, "t_r", says, |c| c.rupture_at);
     let with = (
         ("q", q),
         ("c", asked.clearance),
@@ -142,17 +141,17 @@ fn solved(w: &mut Worked, asked: &Asked, basics: &Basics, so: Known<Ratio>) -> F
         ("B", asked.width),
         ("omega", asked.speed),
     );
-    let flow = t.law("Q", "oil drawn in", &FLOW, with, |(q, .., n)| {
+    let flow = trace.law("Q", "oil drawn in", &FLOW, with, |(q, .., n)| {
         film::flow(q, &geometry, n)
     });
     let with = (("Q", flow), ("Q_s/Q", share));
     let says = "oil lost at the edges";
-    let side_flow = t.law("Q_s", says, &SIDE_FLOW, with, |(flow, share)| {
+    let side_flow = trace.law("Q_s", says, &SIDE_FLOW, with, |(flow, share)| {
         VolumeRate::from_base(flow.base() * share.base())
     });
     let with = (("P", basics.pressure), ("P/p_max", mean_over_peak));
     let says = "highest pressure in the film";
-    let peak = t.law("p_max", says, &PEAK, with, |(p, share)| {
+    let peak = trace.law("p_max", says, &PEAK, with, |(p, share)| {
         film::peak_pressure(p, share)
     });
     let inside = Inside {
@@ -162,7 +161,7 @@ fn solved(w: &mut Worked, asked: &Asked, basics: &Basics, so: Known<Ratio>) -> F
         rupture_at,
     };
     finished(
-        w,
+        trace,
         asked,
         basics,
         Found {
@@ -175,11 +174,11 @@ fn solved(w: &mut Worked, asked: &Asked, basics: &Basics, so: Known<Ratio>) -> F
     )
 }
 
-fn closed(w: &mut Worked, asked: &Asked, basics: &Basics, so: Known<Ratio>) -> Film {
-    let (geometry, t) = (asked.geometry, &mut w.trace);
+fn closed(trace: &mut impl Recorder, asked: &Asked, basics: &Basics, so: Known<Ratio>) -> Film {
+    let geometry = asked.geometry;
     let ratio = geometry.width_ratio();
     let with = (("So", so), ("D", asked.diameter), ("B", asked.width));
-    let eccentricity = t.law("e", "eccentricity", &iso7902::LAW, with, |(so, _, _)| {
+    let eccentricity = trace.law("e", "eccentricity", &iso7902::LAW, with, |(so, _, _)| {
         iso7902::carrying(so, ratio).expect("the film has been found before")
     });
     let with = (
@@ -188,7 +187,7 @@ fn closed(w: &mut Worked, asked: &Asked, basics: &Basics, so: Known<Ratio>) -> F
         ("B", asked.width),
     );
     let law = &iso7902::ATTITUDE;
-    let attitude = t.law("beta", "attitude angle", law, with, |(e, _, _)| {
+    let attitude = trace.law("beta", "attitude angle", law, with, |(e, _, _)| {
         iso7902::attitude(e, ratio)
     });
     let with = (
@@ -199,11 +198,11 @@ fn closed(w: &mut Worked, asked: &Asked, basics: &Basics, so: Known<Ratio>) -> F
         ("omega", asked.speed),
     );
     let law = &iso7902::SIDE_FLOW;
-    let side_flow = t.law("Q3", "oil lost at the edges", law, with, |(e, .., n)| {
+    let side_flow = trace.law("Q3", "oil lost at the edges", law, with, |(e, .., n)| {
         film::side_flow_iso7902(iso7902::side_flow(e, ratio), &geometry, n)
     });
     finished(
-        w,
+        trace,
         asked,
         basics,
         Found {
@@ -225,20 +224,19 @@ struct Found {
     inside: Option<Inside>,
 }
 
-fn finished(w: &mut Worked, asked: &Asked, basics: &Basics, found: Found) -> Film {
+fn finished(trace: &mut impl Recorder, asked: &Asked, basics: &Basics, found: Found) -> Film {
     let (so, eccentricity, attitude) = (found.so, found.eccentricity, found.attitude);
-    let t = &mut w.trace;
     let with = (("c", asked.clearance), ("e", eccentricity));
-    let h_min = t.law("h_min", "least film", &LEAST_FILM, with, |(c, e)| {
+    let h_min = trace.law("h_min", "least film", &LEAST_FILM, with, |(c, e)| {
         film::least_film(c, e)
     });
     let with = (("So", so), ("e", eccentricity), ("beta", attitude));
     let says = "friction variable f/psi";
-    let variable = t.law("f/psi", says, &FRICTION, with, |(so, e, beta)| {
+    let variable = trace.law("f/psi", says, &FRICTION, with, |(so, e, beta)| {
         characteristic::friction_variable(so, e, beta)
     });
     let with = (("psi", basics.psi), ("f/psi", variable));
-    let friction = t.law("f", "friction coefficient", &FRICTION, with, |(psi, v)| {
+    let friction = trace.law("f", "friction coefficient", &FRICTION, with, |(psi, v)| {
         characteristic::friction(psi, v)
     });
     let with = (
@@ -247,7 +245,7 @@ fn finished(w: &mut Worked, asked: &Asked, basics: &Basics, found: Found) -> Fil
         ("omega", asked.speed),
         ("D", asked.diameter),
     );
-    let power = t.law("P_f", "friction power", &POWER, with, |(f, load, n, d)| {
+    let power = trace.law("P_f", "friction power", &POWER, with, |(f, load, n, d)| {
         film::power(f, load, n, d)
     });
     Film {
@@ -265,16 +263,15 @@ fn finished(w: &mut Worked, asked: &Asked, basics: &Basics, found: Found) -> Fil
 }
 
 /// Sommerfeld number of a load number.
-pub(super) fn sommerfeld(w: &mut Worked, so: Known<Ratio>) -> Known<Ratio> {
+pub(crate) fn sommerfeld(trace: &mut impl Recorder, so: Known<Ratio>) -> Known<Ratio> {
     let with = (("So", so),);
-    w.trace
-        .law("S", "Sommerfeld number", &SOMMERFELD, with, |(so,)| {
-            characteristic::sommerfeld(so)
-        })
+    trace.law("S", "Sommerfeld number", &SOMMERFELD, with, |(so,)| {
+        characteristic::sommerfeld(so)
+    })
 }
 
 /// Remarks on where a film stands.
-pub(super) fn remarks(w: &mut Worked, geometry: &Geometry, eccentricity: Ratio) {
+pub(crate) fn remarks(w: &mut Worked, geometry: &Geometry, eccentricity: Ratio) {
     let ratio = geometry.width_ratio().base();
     if ratio < table::SHORT {
         w.remark(format!(
@@ -292,7 +289,7 @@ pub(super) fn remarks(w: &mut Worked, geometry: &Geometry, eccentricity: Ratio) 
 }
 
 /// Remark on what the closed form of the standard is worth at a width ratio it covers.
-pub(super) fn error_of_closed_form(w: &mut Worked, geometry: &Geometry) {
+pub(crate) fn error_of_closed_form(w: &mut Worked, geometry: &Geometry) {
     let error = match geometry.width_ratio().base() {
         b if b <= 0.65 => "within -5 and +7 %",
         b if b < 0.98 => "from 11 % below to level",

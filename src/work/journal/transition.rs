@@ -97,6 +97,32 @@ fn journal_transition(args: &mut Args, w: &mut Worked) -> Result<(), Refusal> {
         |(f, eta, d, b, c)| speed(f, eta, volume(d, b), c),
     )?;
     w.result("speed", n_tr, "r/min");
+    compared(args, w, n_tr, |w, running, factor| {
+        let with = (
+            ("F", load),
+            ("n", running),
+            ("D", diameter),
+            ("B", width),
+            ("C", constant),
+            ("x_0", factor),
+        );
+        let says = "viscosity for the factor wanted";
+        w.trace
+            .attempt("eta_0", says, &VISCOSITY, with, |(f, n, d, b, c, x)| {
+                viscosity(f, n, volume(d, b), c, x)
+            })
+    })
+}
+
+type Needed = Result<Known<DynamicViscosity>, NoFilm>;
+
+/// How far a running speed is from the transition, and the viscosity for the factor wanted.
+fn compared(
+    args: &mut Args,
+    w: &mut Worked,
+    n_tr: Known<AngularVelocity>,
+    needed: impl FnOnce(&mut Worked, Known<AngularVelocity>, Known<Ratio>) -> Needed,
+) -> Result<(), Refusal> {
     let running: Option<Known<AngularVelocity>> =
         args.maybe(w, "running_speed", "speed the shaft turns at")?;
     let factor: Option<Known<Ratio>> = args.maybe(w, "factor", "factor wanted")?;
@@ -118,20 +144,7 @@ fn journal_transition(args: &mut Args, w: &mut Worked) -> Result<(), Refusal> {
     let reached = w.trace.law("x", says, &FACTOR, with, |(n, n_tr)| {
         number(to_rpm(n) / to_rpm(n_tr))
     });
-    let with = (
-        ("F", load),
-        ("n", running),
-        ("D", diameter),
-        ("B", width),
-        ("C", constant),
-        ("x_0", factor),
-    );
-    let says = "viscosity for the factor wanted";
-    let needed = w
-        .trace
-        .attempt("eta_0", says, &VISCOSITY, with, |(f, n, d, b, c, x)| {
-            viscosity(f, n, volume(d, b), c, x)
-        })?;
+    let needed = needed(w, running, factor)?;
     w.result("factor", reached, "");
     w.result("eta", needed, "mPa.s");
     if reached.value.base() < factor.value.base() {
