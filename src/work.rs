@@ -6,6 +6,7 @@
 
 pub mod args;
 pub mod batch;
+mod journal;
 mod json;
 mod oil;
 
@@ -16,9 +17,7 @@ use crate::relation::{Law, Outside};
 use crate::trace::{Derivation, Known, StepId};
 
 /// The rows of each group, in the order they are listed.
-static GROUPS: &[&[Relation]] = &[
-    oil::ROWS, //
-];
+static GROUPS: &[&[Relation]] = &[oil::ROWS, journal::ROWS];
 
 /// Every relation, in the order they are listed.
 pub fn relations() -> impl Iterator<Item = &'static Relation> {

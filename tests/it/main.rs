@@ -8,3 +8,4 @@ mod properties_oil;
 mod reference_journal;
 mod reference_oil;
 mod refusals_oil;
+mod work_journal;
