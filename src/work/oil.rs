@@ -10,6 +10,8 @@ mod index;
 mod polymer;
 mod refusals;
 
+pub(in crate::work) use curve::{line_at, on_line};
+
 use super::{Args, Input, Need, Refusal, Relation, Worked};
 use crate::quantity::convert::celsius;
 use crate::quantity::{Ratio, ThermodynamicTemperature};

@@ -17,6 +17,15 @@ pub static CENTRE_DISTANCE: Law = Law {
     source: "ISO 21771",
 };
 
+/// Diameters and angles of a pair.
+pub static MESH: Law = Law {
+    name: "gear-mesh-geometry",
+    title: "Diameters and working angles of a cylindrical gear pair",
+    formula: "d1 = mn z1 / cos(beta); tan(alpha_t) = tan(alpha_n) / cos(beta); cos(alpha_wt) = (db1 + db2) / (2 a); dw1 = 2 a / (z2 / z1 + 1)",
+    range: "cylindrical involute gears; z2 and a negative for an internal pair",
+    source: "ISO 21771; ISO 6336-1",
+};
+
 /// Reduced radius at the pitch point.
 pub static PITCH_RADIUS: Law = Law {
     name: "gear-pitch-radius",

@@ -45,6 +45,15 @@ pub static MESH: Law = Law {
     source: "ISO/TR 14179-2 (from memory)",
 };
 
+/// Power through the mesh.
+pub static POWER: Law = Law {
+    name: "gear-power",
+    title: "Power of a torque at a speed",
+    formula: "P = T omega",
+    range: "steady running",
+    source: "mechanics",
+};
+
 /// Power lost in the mesh, other form.
 pub static MESH_AGMA: Law = Law {
     name: "gear-loss-agma",
@@ -76,7 +85,7 @@ pub fn mesh_friction(f: Friction) -> Result<Ratio, Outside> {
     ))
 }
 
-/// Power through the pinion.
+/// Power of a torque at a speed.
 pub fn power(torque: Torque, speed: AngularVelocity) -> Power {
     Power::from_base(torque.base() * speed.base())
 }

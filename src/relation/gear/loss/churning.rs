@@ -81,11 +81,6 @@ pub fn torque(dip: Dip, splash: Ratio) -> Result<Torque, Outside> {
     Ok(Torque::from_base(splash * c1 * exp(c2 * v / 10.0)))
 }
 
-/// Power of a torque at the pinion's speed.
-pub fn power_of(torque: Torque, pinion_speed: AngularVelocity) -> Power {
-    Power::from_base(torque.base() * pinion_speed.base())
-}
-
 /// One gear that stirs.
 #[derive(Clone, Copy, Debug, PartialEq)]
 pub struct Stirring {
