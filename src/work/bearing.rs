@@ -14,6 +14,7 @@ pub(super) static ROWS: &[Relation] = &[
     viscosity::NU1,
     viscosity::KAPPA,
     viscosity::KAPPA_LAMBDA,
+    viscosity::MINIMUM,
     life::CONTAMINATION,
     life::LIFE_FACTOR,
     life::LIFE,

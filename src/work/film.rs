@@ -13,6 +13,7 @@ use super::Relation;
 
 /// The rows, in the order they are listed.
 pub(super) static ROWS: &[Relation] = &[
+    hertz::REDUCED_MODULUS,
     hertz::LINE,
     hertz::ELLIPSE,
     line::LINE,

@@ -5,8 +5,7 @@
 use crate::numeric::math::{acos, asin, atan, cos, sin, tan};
 use crate::quantity::{Angle, Length, Measure, Ratio};
 use crate::relation::Law;
-use crate::relation::outside::{Outside, positive, within};
-use std::f64::consts::FRAC_PI_2;
+use crate::relation::outside::{Outside, positive, within_degrees};
 
 /// Centre distance of gears without profile shift.
 pub static CENTRE_DISTANCE: Law = Law {
@@ -65,16 +64,12 @@ impl Teeth {
                 what: "the number of teeth of the wheel",
             });
         }
-        let needs = "in radians, it lies between a quarter turn to the left and to the right";
-        let edge = FRAC_PI_2 - 1e-6;
-        within("the helix angle", self.helix, (-edge, edge), needs)?;
-        let needs = "in radians, it lies between 0 and a quarter turn";
-        within(
-            "the pressure angle",
-            self.pressure_angle,
-            (1e-6, edge),
-            needs,
-        )?;
+        let needs = "in degrees, it lies between -90 and 90";
+        let edge = 90.0 - 1e-4;
+        within_degrees("the helix angle", self.helix, (-edge, edge), needs)?;
+        let needs = "in degrees, it lies between 0 and 90";
+        let angle = self.pressure_angle;
+        within_degrees("the pressure angle", angle, (1e-4, edge), needs)?;
         Ok(self)
     }
 }

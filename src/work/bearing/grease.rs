@@ -14,10 +14,14 @@ const KINDS: &[(&str, BearingKind)] = &[
     ("ball", BearingKind::DeepGrooveBall),
     ("radial-ball", BearingKind::DeepGrooveBall),
     ("cylindrical", BearingKind::CylindricalRoller),
+    ("cylindrical-roller", BearingKind::CylindricalRoller),
     ("needle", BearingKind::NeedleRoller),
+    ("needle-roller", BearingKind::NeedleRoller),
     ("spherical", BearingKind::SphericalRoller),
+    ("spherical-roller", BearingKind::SphericalRoller),
     ("tapered", BearingKind::TaperedRoller),
     ("taper", BearingKind::TaperedRoller),
+    ("tapered-roller", BearingKind::TaperedRoller),
 ];
 
 pub(super) const INTERVAL: Relation = Relation {

@@ -3,6 +3,8 @@
 use super::GROUP;
 use super::size::{BORE, DESIGNATION, OUTSIDE, PITCH, pitch};
 use crate::quantity::{KinematicViscosity, Measure};
+use crate::relation::bearing::class::BearingKind;
+use crate::relation::bearing::minimum_viscosity::{MINIMUM_VISCOSITY, minimum_viscosity};
 use crate::relation::bearing::reference_viscosity::{
     self, FILM_RATIO, LARGEST_KAPPA, REFERENCE_VISCOSITY, SMALLEST_KAPPA, VISCOSITY_RATIO,
 };
@@ -78,6 +80,32 @@ fn run_kappa(args: &mut Args, worked: &mut Worked) -> Result<(), Refusal> {
     } else if kappa.value.base() > LARGEST_KAPPA {
         worked.remark("above kappa 4 nothing more is gained; drag and heat rise");
     }
+    Ok(())
+}
+
+pub(super) const MINIMUM: Relation = Relation {
+    name: "bearing-minimum-viscosity",
+    group: GROUP,
+    law: &MINIMUM_VISCOSITY,
+    with: &[must(
+        "kind",
+        "deep groove ball, cylindrical roller, spherical roller, spherical roller thrust …",
+    )],
+    gives: &[("nu", "least viscosity at running temperature, mm2/s")],
+    run: run_minimum,
+};
+
+fn run_minimum(args: &mut Args, worked: &mut Worked) -> Result<(), Refusal> {
+    let words: Vec<&'static str> = BearingKind::NAMES.iter().map(|(name, _)| *name).collect();
+    let word = args.choice("kind", &words, None)?;
+    let kind = BearingKind::of_name(word).expect("the word is one of the list");
+    let says = "least viscosity at running temperature";
+    let trace = &mut worked.trace;
+    let nu = trace.law("nu", says, &MINIMUM_VISCOSITY, (), |()| {
+        minimum_viscosity(kind)
+    });
+    worked.result("nu", nu, "mm2/s");
+    worked.remark("for moderate speeds; where size and speed are known, bearing-nu1 decides");
     Ok(())
 }
 

@@ -1,7 +1,7 @@
 //! `hertz-line` and `hertz-ellipse`.
 
 use super::GROUP;
-use crate::relation::film::body::Radii;
+use crate::relation::film::body::{self, Radii};
 use crate::relation::film::hertz;
 use crate::trace::Recorder;
 use crate::work::contact::{form, may, modulus, must, radii, radius};
@@ -40,6 +40,21 @@ pub(super) const ANGLE: Input = form(
     "angle between the first planes of the two bodies",
     "bodies",
 );
+
+pub(super) const REDUCED_MODULUS: Relation = Relation {
+    name: "reduced-modulus",
+    group: GROUP,
+    law: &body::REDUCED_MODULUS,
+    with: &[E1, POISSON1, E2, POISSON2],
+    gives: &[("E_reduced", "reduced modulus E', GPa")],
+    run: reduced_modulus,
+};
+
+fn reduced_modulus(args: &mut Args, worked: &mut Worked) -> Result<(), Refusal> {
+    let e = modulus(args, worked)?;
+    worked.result("E_reduced", e, "GPa");
+    Ok(())
+}
 
 pub(super) const LINE: Relation = Relation {
     name: "hertz-line",

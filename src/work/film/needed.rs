@@ -10,23 +10,14 @@ use super::line::{FORM, LINE_FORMS, line_films, line_law};
 use super::ratio::{RA1, RA2, RQ1, RQ2};
 use crate::quantity::convert::kinematic;
 use crate::quantity::{DynamicViscosity, Length, MassDensity, PressureViscosity, Ratio, Velocity};
+use crate::relation::Outside;
 use crate::relation::film::groups::{Inlet, of_ellipse, of_line};
-use crate::relation::film::roughness::film_for;
+use crate::relation::film::roughness::{WANTED, film_for};
 use crate::relation::film::{ellipse, inverse};
 use crate::relation::oil::pressure_viscosity::{AGMA_925, Family, GOLD, agma_925, gold};
-use crate::relation::{Law, Outside};
 use crate::trace::{Inputs, Known, Recorder};
 use crate::work::contact::{form, is_elliptical, may, must, sigma};
 use crate::work::{Args, Refusal, Relation, Worked};
-
-/// The film wanted.
-static WANTED: Law = Law {
-    name: "film-wanted",
-    title: "Film that a film ratio asks for",
-    formula: "h = lambda sigma",
-    range: "film ratio above zero",
-    source: "definition of the film ratio",
-};
 
 pub(super) const VISCOSITY: Relation = Relation {
     name: "film-viscosity",

@@ -74,7 +74,7 @@ fn run(args: &mut Args, worked: &mut Worked) -> Result<(), Refusal> {
     churn(args, worked, &pair, &load)
 }
 
-fn loss_factor(worked: &mut Worked, pair: &KnownPair) -> Result<Known<Ratio>, Refusal> {
+pub(super) fn loss_factor(worked: &mut Worked, pair: &KnownPair) -> Result<Known<Ratio>, Refusal> {
     let (z1, z2, mn, beta, alpha_n) = pair.teeth;
     let inputs = (z1, z2, mn, beta, alpha_n, ("a", pair.centre_distance));
     // The pair was worked out from these very inputs.
@@ -87,6 +87,16 @@ fn loss_factor(worked: &mut Worked, pair: &KnownPair) -> Result<Known<Ratio>, Re
     Ok(h_v)
 }
 
+/// How slippery the oil is, by its base.
+pub(super) fn oil_kind(args: &mut Args) -> Result<OilKind, Refusal> {
+    let words = ["mineral", "pao", "ester", "pag"];
+    Ok(match args.choice("base", &words, Some("mineral"))? {
+        "mineral" => OilKind::Mineral,
+        "pag" => OilKind::Polyglycol,
+        _ => OilKind::PaoOrEster,
+    })
+}
+
 fn friction(
     args: &mut Args,
     worked: &mut Worked,
@@ -95,11 +105,7 @@ fn friction(
 ) -> Result<Known<Ratio>, Refusal> {
     let eta = args.quantity(worked, "eta", "dynamic viscosity at oil temperature")?;
     let ra = args.quantity(worked, "ra", "mean roughness Ra of the flanks")?;
-    let kind = match args.choice("base", &["mineral", "pao", "ester", "pag"], Some("mineral"))? {
-        "mineral" => OilKind::Mineral,
-        "pag" => OilKind::Polyglycol,
-        _ => OilKind::PaoOrEster,
-    };
+    let kind = oil_kind(args)?;
     let inputs = (
         ("F_t", load.force),
         ("b", pair.face_width),

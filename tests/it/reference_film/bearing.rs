@@ -119,7 +119,7 @@ fn machine(case: &Case) -> Got {
     });
     oil.insert("points".into(), Value::from(points.to_vec()));
     oil.insert("at".into(), case.with_unit("t_C", "degC").into());
-    let nu = number(&work_json("viscosity-at", oil), "nu");
+    let nu = number(&work_json("viscosity-at", &oil), "nu");
     let size = [
         ("speed", case.with_unit("n_rpm", "r/min")),
         ("pitch_diameter", case.with_unit("Dpw_mm", "mm")),

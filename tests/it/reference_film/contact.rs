@@ -36,12 +36,14 @@ pub(super) fn worked(oracle: &str, case: &Case) -> Option<Got> {
 }
 
 fn modulus(case: &Case) -> Got {
-    let body = |e: &str, nu: &str| Material {
-        youngs: pascals(case.n(e)),
-        poisson: Ratio::from_base(case.n(nu)),
-    };
-    let e = reduced_modulus(body("E1_Pa", "nu1"), body("E2_Pa", "nu2")).expect("sound");
-    Got::from([("E_prime_Pa", json!(e.base()))])
+    let with = [
+        ("E1", case.with_unit("E1_Pa", "Pa")),
+        ("poisson1", case.n("nu1").to_string()),
+        ("E2", case.with_unit("E2_Pa", "Pa")),
+        ("poisson2", case.n("nu2").to_string()),
+    ];
+    let e = number(&work("reduced-modulus", &with), "E_reduced");
+    Got::from([("E_prime_Pa", json!(e * 1e9))])
 }
 
 /// Materials as the cases give them: the second body as the first.

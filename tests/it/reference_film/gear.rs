@@ -3,7 +3,6 @@
 use super::{Case, Got, number, work, work_json};
 use filmwright::quantity::convert::{degrees, mm, number as pure, pascals, rpm};
 use filmwright::quantity::{Measure, Power, Velocity};
-use filmwright::relation::gear::bevel::cone_angles;
 use filmwright::relation::gear::geometry::{Mesh, Teeth};
 use filmwright::relation::gear::load::{tangential_force, torque_of};
 use filmwright::relation::gear::path::{Path, Point, Tips};
@@ -40,15 +39,19 @@ fn points(case: &Case) -> Got {
     let path = Path::new(&mesh, Tips::standard(&mesh)).expect("a path");
     let named = Point::ALL.iter().find(|(n, _)| *n == case.text("point"));
     let at = path.at(named.expect("a point").1, rpm(case.n("n1_rpm")));
+    let mut with = pair(case);
+    with.retain(|(key, _)| *key != "torque1");
+    with.push(("point", case.text("point").to_owned()));
+    let got = work("gear-path-point", &with);
     Got::from([
         ("g_mm", json!(at.from_a.base() * 1e3)),
-        ("rho_t1_mm", json!(at.rho1.base() * 1e3)),
-        ("rho_t2_mm", json!(at.rho2.base() * 1e3)),
-        ("rho_n_mm", json!(at.rho_n.base() * 1e3)),
-        ("v1_m_s", json!(at.v1.base())),
-        ("v2_m_s", json!(at.v2.base())),
-        ("v_sum_m_s", json!(at.sum().base())),
-        ("v_slide_m_s", json!(at.sliding().base())),
+        ("rho_t1_mm", json!(number(&got, "rho1"))),
+        ("rho_t2_mm", json!(number(&got, "rho2"))),
+        ("rho_n_mm", json!(number(&got, "rho_n"))),
+        ("v1_m_s", json!(number(&got, "v1"))),
+        ("v2_m_s", json!(number(&got, "v2"))),
+        ("v_sum_m_s", json!(number(&got, "v_sum"))),
+        ("v_slide_m_s", json!(number(&got, "v_slide"))),
     ])
 }
 
@@ -88,7 +91,7 @@ fn film(case: &Case) -> Got {
     ] {
         with.insert(key.into(), Value::String(value));
     }
-    let got = work_json("gear-film", with);
+    let got = work_json("gear-film", &with);
     let v_t = number(&pitch, "v_t");
     let rule = work("gear-grade-rule", &[("v_t", format!("{v_t} m/s"))]);
     Got::from([
@@ -164,11 +167,19 @@ fn rule(case: &Case) -> Got {
 }
 
 fn bevel(case: &Case) -> Got {
-    let cones = cone_angles(pure(case.n("z1")), pure(case.n("z2")), degrees(90.0));
-    let (first, second) = cones.expect("a pair");
+    let with = [
+        ("z1", case.n("z1").to_string()),
+        ("z2", case.n("z2").to_string()),
+        ("mean_normal_module", case.with_unit("mmn_mm", "mm")),
+        ("face_width", "40 mm".to_owned()),
+    ];
+    let got = work("bevel-virtual", &with);
+    // u_v = u^2 for shafts at a right angle
+    let u = case.n("z2") / case.n("z1");
+    assert!((number(&got, "z2") / number(&got, "z1") / (u * u) - 1.0).abs() < 1e-12);
     Got::from([
-        ("delta1", json!(first.base().to_degrees())),
-        ("delta2", json!(second.base().to_degrees())),
+        ("delta1", json!(number(&got, "delta1"))),
+        ("delta2", json!(number(&got, "delta2"))),
     ])
 }
 

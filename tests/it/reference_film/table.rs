@@ -59,7 +59,15 @@ fn reference() -> Got {
 }
 
 fn minimum() -> Got {
-    let of = |kind| json!(to_mm2_s(minimum_viscosity(kind)));
+    let of = |kind: BearingKind| {
+        let row = super::work(
+            "bearing-minimum-viscosity",
+            &[("kind", kind.name().to_owned())],
+        );
+        let nu = super::number(&row, "nu");
+        assert!((nu - to_mm2_s(minimum_viscosity(kind))).abs() < 1e-9);
+        json!(nu)
+    };
     assert_eq!(
         of(BearingKind::DeepGrooveBall),
         of(BearingKind::CylindricalRoller)
