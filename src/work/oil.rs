@@ -3,14 +3,12 @@
 
 mod alpha;
 mod blend;
-mod curve;
+pub(super) mod curve;
 mod efflux;
 mod grade;
 mod index;
 mod polymer;
 mod refusals;
-
-pub(in crate::work) use curve::{line_at, on_line};
 
 use super::{Args, Input, Need, Refusal, Relation, Worked};
 use crate::quantity::convert::celsius;

@@ -51,15 +51,6 @@ pub static DENSITY: Law = Law {
     source: "ISO/TR 15144-1 (from memory)",
 };
 
-/// Dynamic viscosity from the kinematic one.
-pub static DYNAMIC: Law = Law {
-    name: "dynamic-viscosity",
-    title: "Dynamic viscosity",
-    formula: "eta = nu rho",
-    range: "both at the same temperature",
-    source: "definition",
-};
-
 /// Density of a gear oil as the method has it.
 ///
 /// # Errors

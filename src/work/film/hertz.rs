@@ -45,12 +45,18 @@ pub(super) const REDUCED_MODULUS: Relation = Relation {
     name: "reduced-modulus",
     group: GROUP,
     law: &body::REDUCED_MODULUS,
-    with: &[E1, POISSON1, E2, POISSON2],
+    with: &[
+        must("E1", "Young's modulus of the first body, 206 GPa"),
+        may("poisson1", "its Poisson's ratio", "0.3"),
+        may("E2", "Young's modulus of the second body", "as the first"),
+        may("poisson2", "its Poisson's ratio", "as the first"),
+    ],
     gives: &[("E_reduced", "reduced modulus E', GPa")],
     run: reduced_modulus,
 };
 
 fn reduced_modulus(args: &mut Args, worked: &mut Worked) -> Result<(), Refusal> {
+    args.text("E1", "\"206 GPa\"")?;
     let e = modulus(args, worked)?;
     worked.result("E_reduced", e, "GPa");
     Ok(())

@@ -4,13 +4,14 @@ use crate::quantity::convert::{celsius, dynamic};
 use crate::quantity::{
     DynamicViscosity, KinematicViscosity, MassDensity, PressureViscosity, ThermodynamicTemperature,
 };
-use crate::relation::gear::film::{self, DENSITY, DYNAMIC};
+use crate::relation::gear::film::{self, DENSITY};
+use crate::relation::oil::density::DYNAMIC_VISCOSITY;
 use crate::relation::oil::pressure_viscosity::{
     AGMA_925, Family, GOLD, ISO_15144, agma_925, gold, iso_15144,
 };
 use crate::trace::{Known, Recorder};
 use crate::work::args::Point;
-use crate::work::oil::{line_at, on_line};
+use crate::work::oil::curve::{line_at, on_line};
 use crate::work::{Args, Refusal, Worked};
 
 const ALPHA: &str = "pressure-viscosity coefficient";
@@ -109,5 +110,9 @@ fn eta_of(
     })?;
     let inputs = (("nu", nu), ("rho", rho));
     let says = "dynamic viscosity";
-    Ok(trace.law(symbol, says, &DYNAMIC, inputs, |(nu, rho)| dynamic(nu, rho)))
+    Ok(
+        trace.law(symbol, says, &DYNAMIC_VISCOSITY, inputs, |(nu, rho)| {
+            dynamic(nu, rho)
+        }),
+    )
 }

@@ -157,19 +157,12 @@ fn blend_wright(
         named("x", fractions),
         Both(named("nu40", nu40), named("nu100", nu100)),
     );
-    let outcome = w.trace.apply(&WRIGHT, with, |(x, (nu40, nu100))| {
+    let mix = |(x, (nu40, nu100)): (Vec<_>, (Vec<_>, Vec<_>))| {
         let lines = lines(&nu40, &nu100)?;
         wright(&x, &lines)
-    });
-    let line = outcome.value?;
-    let served = Served::new(
-        w.trace.take(&outcome, "A", "intercept of the blend", |_| {
-            line.intercept()
-        }),
-        w.trace
-            .take(&outcome, "B", "slope of the blend", |_| line.slope()),
-        line.form(),
-    );
+    };
+    let line = w.trace.attempt_all(&WRIGHT, with, mix)?;
+    let served = Served::take(w, &line);
     for (name, t_c) in [("nu40", 40.0), ("nu100", 100.0)] {
         let at = by_definition(w, t_c);
         let nu = on_line(w, &served, at)?;

@@ -11,7 +11,7 @@ use crate::relation::oil::start_limit::{Density, START_LIMIT, temperature_at_dyn
 use crate::relation::oil::viscosity_temperature::{
     Form, LINE, Line, Misfit, Point, TEMPERATURE, VISCOSITY, ViscosityCurve, Weights,
 };
-use crate::trace::{Both, Known, Recorder};
+use crate::trace::{Both, Known, Outcome, Recorder};
 use crate::work::args;
 use crate::work::{Args, Refusal, Relation, Worked};
 
@@ -102,14 +102,22 @@ fn viscosity_at(args: &mut Args, w: &mut Worked) -> Result<(), Refusal> {
 
 /// A line with its constants named.
 pub(in crate::work) struct Served {
-    pub(super) a: Known<Ratio>,
-    pub(super) b: Known<Ratio>,
+    /// Intercept.
+    pub(in crate::work) a: Known<Ratio>,
+    /// Slope.
+    pub(in crate::work) b: Known<Ratio>,
     form: Form,
 }
 
 impl Served {
-    pub(super) fn new(a: Known<Ratio>, b: Known<Ratio>, form: Form) -> Self {
-        Self { a, b, form }
+    /// Names the constants of a line worked out.
+    pub(super) fn take(w: &mut Worked, line: &Outcome<Line>) -> Self {
+        let (a, b) = ("intercept of the line", "slope of the line");
+        Self {
+            a: w.trace.take(line, "A", a, Line::intercept),
+            b: w.trace.take(line, "B", b, Line::slope),
+            form: line.value.form(),
+        }
     }
 }
 
@@ -136,23 +144,15 @@ fn paired(nus: &[KinematicViscosity], temperatures: &[ThermodynamicTemperature])
 }
 
 /// One line through the points, whatever its residuals.
-pub(super) fn one_line(
+pub(in crate::work) fn one_line(
     w: &mut Worked,
     points: &[args::Point],
     weights: Weights,
 ) -> Result<Served, Refusal> {
     let fit = |(nus, ts): (Vec<_>, Vec<_>)| Line::fit(&paired(&nus, &ts), weights);
-    let outcome = w.trace.apply(&LINE, inputs(points), fit);
-    let line = outcome.value?;
-    let served = Served {
-        a: w.trace
-            .take(&outcome, "A", "intercept of the line", |_| line.intercept()),
-        b: w.trace
-            .take(&outcome, "B", "slope of the line", |_| line.slope()),
-        form: line.form(),
-    };
-    remarks(w, line, points);
-    Ok(served)
+    let line = w.trace.attempt_all(&LINE, inputs(points), fit)?;
+    remarks(w, line.value, points);
+    Ok(Served::take(w, &line))
 }
 
 /// The line that serves at a temperature: one for all points, or that of its neighbours where one
@@ -174,21 +174,11 @@ pub(in crate::work) fn line_at(
         100.0 * RESIDUAL_LIMIT
     ));
     let all = Both(inputs(points), (("T_wanted", at),));
-    let outcome = w.trace.apply(&PIECEWISE, all, |((nus, ts), (at,))| {
-        Curve::through(&paired(&nus, &ts)).map(|(curve, _)| curve.line_at(at))
-    });
-    let line = outcome.value?;
-    Ok(Served {
-        a: w.trace
-            .take(&outcome, "A", "intercept of the line that serves", |_| {
-                line.intercept()
-            }),
-        b: w.trace
-            .take(&outcome, "B", "slope of the line that serves", |_| {
-                line.slope()
-            }),
-        form: line.form(),
-    })
+    let serving = |((nus, ts), (at,)): ((Vec<_>, Vec<_>), (_,))| -> Result<Line, Misfit> {
+        Ok(Curve::through(&paired(&nus, &ts))?.0.line_at(at))
+    };
+    let line = w.trace.attempt_all(&PIECEWISE, all, serving)?;
+    Ok(Served::take(w, &line))
 }
 
 /// Viscosity on a line at a temperature.

@@ -81,11 +81,10 @@ fn reference_oils(
     nu100: Known<KinematicViscosity>,
 ) -> Result<(Known<KinematicViscosity>, Known<KinematicViscosity>), Refusal> {
     let with = (("Y", nu100),);
-    let found = w.trace.apply(&REFERENCES, with, |(y,)| references(y));
-    let pair = found.value?;
     let trace = &mut w.trace;
-    let low = trace.take(&found, "L", "oil of index 0 at 40 degC", |_| pair.l);
-    let high = trace.take(&found, "H", "oil of index 100 at 40 degC", |_| pair.h);
+    let pair = trace.attempt_all(&REFERENCES, with, |(y,)| references(y))?;
+    let low = trace.take(&pair, "L", "oil of index 0 at 40 degC", |r| r.l);
+    let high = trace.take(&pair, "H", "oil of index 100 at 40 degC", |r| r.h);
     Ok((low, high))
 }
 

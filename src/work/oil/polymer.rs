@@ -259,24 +259,16 @@ fn polymer_split(args: &mut Args, w: &mut Worked) -> Result<(), Refusal> {
         ("VI_base", base_vi),
         ("R", ratio),
     );
-    let outcome = w
-        .trace
-        .apply(&SPLIT, with, |(nu40, nu100, base_vi, ratio)| {
-            polymer::split(nu40, nu100, base_vi, ratio)
-        });
-    let split = outcome.value?;
-    let take = &mut w.trace;
-    let base_nu40 = take.take(&outcome, "nu40_base", "base oil at 40 degC", |_| {
-        split.base_nu40
+    let assumed = |(nu40, nu100, base_vi, ratio)| polymer::split(nu40, nu100, base_vi, ratio);
+    let split = w.trace.attempt_all(&SPLIT, with, assumed)?;
+    let trace = &mut w.trace;
+    let base_nu40 = trace.take(&split, "nu40_base", "base oil at 40 degC", |s| s.base_nu40);
+    let base_nu100 = trace.take(&split, "nu100_base", "base oil at 100 degC", |s| {
+        s.base_nu100
     });
-    let base_nu100 = take.take(&outcome, "nu100_base", "base oil at 100 degC", |_| {
-        split.base_nu100
-    });
-    let p40 = take.take(&outcome, "P40", "share of the polymer at 40 degC", |_| {
-        split.p40
-    });
-    let p100 = take.take(&outcome, "P100", "share of the polymer at 100 degC", |_| {
-        split.p100
+    let p40 = trace.take(&split, "P40", "share of the polymer at 40 degC", |s| s.p40);
+    let p100 = trace.take(&split, "P100", "share of the polymer at 100 degC", |s| {
+        s.p100
     });
     w.remark("an estimate: the index assumed for the base and the ratio move P by a third");
     w.result("base_nu40", base_nu40, "mm2/s");
