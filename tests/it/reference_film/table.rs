@@ -21,7 +21,7 @@ pub(super) fn worked(id: &str, _: &Case) -> Option<Got> {
             .collect(),
         "gr-45-neale-criterion" => chart(),
         "tb-02-rope-neale" => Got::from([("SAE", json!(guidance::ROPE_OVER_SHEAVES))]),
-        "tb-04-chain-renold" => chain(),
+        id if id.starts_with("tb-04-chain") => chain(),
         "tb-05-slideway" => {
             let (horizontal, vertical) = guidance::SLIDEWAYS;
             Got::from([("ISO_VG", json!([horizontal, vertical]))])
