@@ -6,6 +6,10 @@
 
 pub mod args;
 pub mod batch;
+mod bearing;
+mod contact;
+mod film;
+mod gear;
 mod journal;
 mod json;
 mod oil;
@@ -17,7 +21,8 @@ use crate::relation::{Law, Outside};
 use crate::trace::{Derivation, Known, StepId};
 
 /// The rows of each group, in the order they are listed.
-static GROUPS: &[&[Relation]] = &[oil::ROWS, journal::ROWS];
+static GROUPS: &[&[Relation]] =
+    &[oil::ROWS, film::ROWS, bearing::ROWS, gear::ROWS, journal::ROWS];
 
 /// Every relation, in the order they are listed.
 pub fn relations() -> impl Iterator<Item = &'static Relation> {
