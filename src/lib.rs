@@ -13,11 +13,14 @@
 //!
 //! The pipeline runs in one direction; nothing reaches back. The rooms, in the order of the arrows:
 
+pub mod assets;
 pub mod cli;
+pub mod input;
 pub mod model;
 pub mod numeric;
 pub mod quantity;
 pub mod relation;
 pub mod source;
+pub mod suitability;
 pub mod trace;
 pub mod work;

@@ -4,11 +4,14 @@
 //! these types, and the reverse. A number stated by somebody is a [`stated::Stated`]: known, known
 //! only to lie in a range, or unknown; `None` around it means that nobody wrote anything.
 
+pub mod facts;
 pub mod machine;
 pub mod oil;
 pub mod part;
+pub mod rulebook;
 pub mod site;
 pub mod stated;
+pub mod word;
 
 pub use machine::{Fill, Lubrication, OilNow, Point, Sump};
 pub use oil::Oil;

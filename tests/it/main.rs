@@ -1,1 +1,3 @@
 //! Everything tested from outside the crate, in one binary.
+
+mod rules;
