@@ -11,4 +11,5 @@ mod reference_journal;
 mod reference_oil;
 mod refusals_film;
 mod refusals_oil;
+mod rules;
 mod work_journal;
