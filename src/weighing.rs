@@ -109,7 +109,11 @@ pub struct Settings {
 
 impl Default for Settings {
     fn default() -> Self {
-        Self { reserve: None, worn: true, units: Units::Si }
+        Self {
+            reserve: None,
+            worn: true,
+            units: Units::Si,
+        }
     }
 }
 
@@ -126,15 +130,23 @@ impl<'a> Scales<'a> {
         let oils = site
             .oils
             .iter()
-            .map(|oil| {
-                PreparedOil::new(oil, rules, settings.worn).map_err(|e| (oil.id.clone(), e))
-            })
+            .map(|oil| PreparedOil::new(oil, rules, settings.worn).map_err(|e| (oil.id.clone(), e)))
             .collect::<Result<Vec<_>, _>>()?;
-        let on_site = site.points.iter().filter_map(oil_in_use).map(str::to_owned).collect();
+        let on_site = site
+            .points
+            .iter()
+            .filter_map(oil_in_use)
+            .map(str::to_owned)
+            .collect();
         Ok(Self {
             site,
             rules,
-            facts: site.oils.iter().zip(&oils).map(|(o, r)| facts::of_oil(o, r)).collect(),
+            facts: site
+                .oils
+                .iter()
+                .zip(&oils)
+                .map(|(o, r)| facts::of_oil(o, r))
+                .collect(),
             oils,
             suitability: Suitability::new(rules),
             reserve: settings.reserve.unwrap_or(site.house.reserve.value.base()),
@@ -162,7 +174,9 @@ impl<'a> Scales<'a> {
                 continue;
             }
             let in_use = oil_in_use(point) == Some(oil.id.as_str());
-            let eligible = self.suitability.assess(&card, &self.suitability.oil(&self.facts[i]));
+            let eligible = self
+                .suitability
+                .assess(&card, &self.suitability.oil(&self.facts[i]));
             if eligible.barred() {
                 let by = eligible.barred_by.iter().map(condition).collect();
                 barred.push(Barred { oil: i, by, in_use });
@@ -172,7 +186,13 @@ impl<'a> Scales<'a> {
             }
         }
         self.sort(&mut candidates);
-        Weighed { point, demands, ready, candidates, barred }
+        Weighed {
+            point,
+            demands,
+            ready,
+            candidates,
+            barred,
+        }
     }
 
     /// What is in a point now, for the rules of changing over.
@@ -180,8 +200,9 @@ impl<'a> Scales<'a> {
         match &point.oil_now {
             OilNow::Nothing => SumpNow::Nothing,
             OilNow::Unknown => SumpNow::Unknown,
-            OilNow::Oil(id) => oil_index(self.site, &id.value)
-                .map_or(SumpNow::Unknown, |i| SumpNow::Oil(Box::new(self.facts[i].clone()))),
+            OilNow::Oil(id) => oil_index(self.site, &id.value).map_or(SumpNow::Unknown, |i| {
+                SumpNow::Oil(Box::new(self.facts[i].clone()))
+            }),
         }
     }
 
@@ -233,7 +254,10 @@ impl<'a> Scales<'a> {
         let j = &candidate.judgement;
         let setting = usize::from(j.hot.or(j.cold).or(j.pour).map_or(0, |m| m.setting));
         let oil = &self.oils[candidate.oil];
-        let worn = oil.loss_variants(weighed.ready.severe).last().and_then(Option::as_ref);
+        let worn = oil
+            .loss_variants(weighed.ready.severe)
+            .last()
+            .and_then(Option::as_ref);
         let trace = weighed.trace_of(setting, &self.site.house, self.rules);
         explain(
             &trace.0,
@@ -269,7 +293,9 @@ impl Weighed<'_> {
 
     /// The proposed oil: the first candidate that holds or is tight.
     pub fn proposed(&self) -> Option<&Candidate> {
-        self.candidates.first().filter(|c| c.judgement.verdict <= Verdict::Tight)
+        self.candidates
+            .first()
+            .filter(|c| c.judgement.verdict <= Verdict::Tight)
     }
 }
 

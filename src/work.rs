@@ -21,8 +21,13 @@ use crate::relation::{Law, Outside};
 use crate::trace::{Derivation, Known, StepId};
 
 /// The rows of each group, in the order they are listed.
-static GROUPS: &[&[Relation]] =
-    &[oil::ROWS, film::ROWS, bearing::ROWS, gear::ROWS, journal::ROWS];
+static GROUPS: &[&[Relation]] = &[
+    oil::ROWS,
+    film::ROWS,
+    bearing::ROWS,
+    gear::ROWS,
+    journal::ROWS,
+];
 
 /// Every relation, in the order they are listed.
 pub fn relations() -> impl Iterator<Item = &'static Relation> {

@@ -30,7 +30,11 @@ pub const COMPARED_VI: f64 = 95.0;
 /// The line of VI 95 with that viscosity at 40 °C.
 pub fn line_of_vi_95(nu40: KinematicViscosity) -> Option<Line> {
     let nu100 = viscosity_index::nu100(nu40, number(COMPARED_VI)).ok()?;
-    Line::through(Point::new(celsius(40.0), nu40), Point::new(celsius(100.0), nu100)).ok()
+    Line::through(
+        Point::new(celsius(40.0), nu40),
+        Point::new(celsius(100.0), nu100),
+    )
+    .ok()
 }
 
 /// Viscosity at 40 °C of the VI 95 oil that has `nu` at `at`; `None` outside 8 to 20 000 mm²/s.
@@ -97,8 +101,12 @@ impl Demands {
             .filter(|(_, d)| d.end == end && d.standing == Standing::Judges);
         let mut best: Option<(usize, f64)> = None;
         for (i, demand) in judged {
-            let Some(t) = self.governing_temperature(demand) else { continue };
-            let Some(strictness) = strictness(demand, t) else { continue };
+            let Some(t) = self.governing_temperature(demand) else {
+                continue;
+            };
+            let Some(strictness) = strictness(demand, t) else {
+                continue;
+            };
             if best.is_none_or(|(_, s)| strictness > s) {
                 best = Some((i, strictness));
             }

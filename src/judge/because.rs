@@ -17,7 +17,13 @@ pub fn because(
     j: &Judgement,
     units: Units,
 ) -> Vec<String> {
-    let teller = Teller { point, settings: &ready.settings, severe: ready.severe, oil, units };
+    let teller = Teller {
+        point,
+        settings: &ready.settings,
+        severe: ready.severe,
+        oil,
+        units,
+    };
     match j.verdict {
         Verdict::Holds => vec![holds(j)],
         Verdict::Tight => teller.tight(j),
@@ -49,13 +55,19 @@ impl Teller<'_> {
     }
 
     fn temperature(&self, t: f64) -> String {
-        quantity(ThermodynamicTemperature::from_base(t).amount(), self.units, Toward::Nearest)
+        quantity(
+            ThermodynamicTemperature::from_base(t).amount(),
+            self.units,
+            Toward::Nearest,
+        )
     }
 
     fn tight(&self, j: &Judgement) -> Vec<String> {
         let mut reasons = Vec::new();
         for (m, word) in [(j.hot, "hot"), (j.cold, "cold")] {
-            let Some(m) = m.filter(|m| m.value < j.reserve) else { continue };
+            let Some(m) = m.filter(|m| m.value < j.reserve) else {
+                continue;
+            };
             reasons.push(format!(
                 "{word} margin {} step, {} asked: {}",
                 margin(m.value, 2),
@@ -105,27 +117,43 @@ impl Teller<'_> {
     fn unmet(&self, number: u16) -> Option<(f64, String)> {
         let mut worst: Option<(f64, String)> = None;
         for (setting, demands) in self.settings.iter().zip(&self.point.settings) {
-            let Some(ready) = setting.demands.iter().find(|d| d.number == number) else { continue };
+            let Some(ready) = setting.demands.iter().find(|d| d.number == number) else {
+                continue;
+            };
             let demand = &demands.list[usize::from(number)];
             let (size, says) = match &ready.limit {
                 ReadyLimit::Pour { least, .. } => {
                     let (_, hi) = self.oil.pour?;
                     let short = hi + least - ready.t;
                     let (pour, start) = (self.temperature(hi), self.temperature(ready.t));
-                    (short, format!("pour point {pour}, start {start}: {short:.0} K short of the {least:.0} K margin"))
+                    (
+                        short,
+                        format!(
+                            "pour point {pour}, start {start}: {short:.0} K short of the {least:.0} K margin"
+                        ),
+                    )
                 }
                 ReadyLimit::OilsOwn => {
                     let (_, most) = self.oil.ceiling?;
                     let (t, most) = (self.temperature(ready.t), self.temperature(most));
-                    (0.0, format!("runs at {t}, hotter than the {most} limit of the oil"))
+                    (
+                        0.0,
+                        format!("runs at {t}, hotter than the {most} limit of the oil"),
+                    )
                 }
                 ReadyLimit::AtMost(most) => {
                     let (t, most) = (self.temperature(ready.t), self.temperature(*most));
-                    (0.0, format!("runs at {t}, hotter than the {most} stated for it"))
+                    (
+                        0.0,
+                        format!("runs at {t}, hotter than the {most} stated for it"),
+                    )
                 }
                 ReadyLimit::UseLow => {
                     let low = self.temperature(self.oil.use_range?.0);
-                    (0.0, format!("colder than the {low} its thickener is good for"))
+                    (
+                        0.0,
+                        format!("colder than the {low} its thickener is good for"),
+                    )
                 }
                 limit => self.viscosity(limit, ready.end, ready.t, demand)?,
             };
@@ -156,14 +184,18 @@ impl Teller<'_> {
         let floor = matches!(end, End::HotFloor | End::MakerGrade);
         let worn = self.worst_worn();
         let nu = if floor {
-            worn.map_or(f64::INFINITY, |w| w.nu(t)).min(self.oil.thin.nu(t))
+            worn.map_or(f64::INFINITY, |w| w.nu(t))
+                .min(self.oil.thin.nu(t))
         } else {
             self.oil.thick.nu(t)
         };
         let sheared = floor && nu < self.oil.thin.nu(t);
         let shown = |nu: f64, toward| {
             quantity(
-                Amount { kind: Kind::KinematicViscosity, base: KinematicViscosity::from_base(nu).base() },
+                Amount {
+                    kind: Kind::KinematicViscosity,
+                    base: KinematicViscosity::from_base(nu).base(),
+                },
                 self.units,
                 toward,
             )
@@ -194,14 +226,21 @@ impl Teller<'_> {
     }
 
     fn worst_worn(&self) -> Option<&Ready> {
-        self.oil.loss_variants(self.severe).last().and_then(Option::as_ref)
+        self.oil
+            .loss_variants(self.severe)
+            .last()
+            .and_then(Option::as_ref)
     }
 
     fn open(&self, j: &Judgement) -> Vec<String> {
         let d = j.doubts;
         let mut reasons = Vec::new();
         if j.failing_settings.0 > 0 {
-            reasons.extend(self.fails(j).into_iter().map(|r| format!("at one end of what is not known: {r}")));
+            reasons.extend(
+                self.fails(j)
+                    .into_iter()
+                    .map(|r| format!("at one end of what is not known: {r}")),
+            );
         }
         if d.undecided {
             for (setting, _) in self.point.settings.iter().zip(self.settings) {
@@ -217,7 +256,9 @@ impl Teller<'_> {
         if d.low_confidence {
             for number in &j.asked {
                 if let Some((_, says)) = self.unmet(*number) {
-                    reasons.push(format!("not met, and the rule is of low confidence: {says}"));
+                    reasons.push(format!(
+                        "not met, and the rule is of low confidence: {says}"
+                    ));
                 }
             }
         }

@@ -97,7 +97,10 @@ mod tests {
     fn formulas_stay_text_and_quotes_are_doubled() {
         let table = Table {
             headings: vec!["oil".into(), "hot_vg_step".into()],
-            rows: vec![vec![Cell::from("=1+1"), Cell::Number(0.5)], vec![Cell::from("a \"b\", c"), Cell::Empty]],
+            rows: vec![
+                vec![Cell::from("=1+1"), Cell::Number(0.5)],
+                vec![Cell::from("a \"b\", c"), Cell::Empty],
+            ],
         };
         assert_eq!(
             write(&table, Dialect::Plain),

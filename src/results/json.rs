@@ -22,7 +22,10 @@ pub struct Head {
 pub fn document(format: &str, head: &Head) -> Map<String, Value> {
     let mut top = Map::new();
     top.insert("format".into(), json!(format!("filmwright.{format} 1")));
-    top.insert("program".into(), json!(concat!("filmwright ", env!("CARGO_PKG_VERSION"))));
+    top.insert(
+        "program".into(),
+        json!(concat!("filmwright ", env!("CARGO_PKG_VERSION"))),
+    );
     top.insert("rules".into(), json!(head.rules));
     top.insert("inputs".into(), json!(head.inputs));
     top.insert("date".into(), json!(head.date));
@@ -53,7 +56,11 @@ pub fn quantity<Q: Measure>(q: Q, units: Units) -> Value {
 
 /// A finite number; null otherwise.
 pub fn number(x: f64) -> Value {
-    if x.is_finite() { json!(exact(x)) } else { Value::Null }
+    if x.is_finite() {
+        json!(exact(x))
+    } else {
+        Value::Null
+    }
 }
 
 /// A number of VG steps with its step.
@@ -95,12 +102,20 @@ pub fn unknown(lo: Amount, hi: Amount, units: Units) -> Value {
 
 /// The steps of a calculation that some results stand on.
 pub fn steps(trace: &Derivation, results: &[StepId], units: Units) -> Vec<Value> {
-    trace.behind(results).into_iter().map(|s| step(trace, s, units)).collect()
+    trace
+        .behind(results)
+        .into_iter()
+        .map(|s| step(trace, s, units))
+        .collect()
 }
 
 /// All steps of a calculation.
 pub fn all_steps(trace: &Derivation, units: Units) -> Vec<Value> {
-    trace.steps().iter().map(|s| step(trace, s, units)).collect()
+    trace
+        .steps()
+        .iter()
+        .map(|s| step(trace, s, units))
+        .collect()
 }
 
 fn step(trace: &Derivation, step: &Step, units: Units) -> Value {
@@ -156,7 +171,10 @@ fn unique(map: &Map<String, Value>, symbol: &str) -> String {
     if !map.contains_key(symbol) {
         return symbol.to_owned();
     }
-    (2..).map(|n| format!("{symbol} {n}")).find(|s| !map.contains_key(s)).unwrap_or_default()
+    (2..=map.len() + 2)
+        .map(|n| format!("{symbol} {n}"))
+        .find(|s| !map.contains_key(s))
+        .unwrap_or_default()
 }
 
 fn input(step: &Step, units: Units) -> Value {
@@ -178,10 +196,22 @@ fn input(step: &Step, units: Units) -> Value {
 
 /// A temperature of so many kelvins.
 pub fn temperature(kelvins: f64, units: Units) -> Value {
-    amount(Amount { kind: Kind::Temperature, base: kelvins }, units)
+    amount(
+        Amount {
+            kind: Kind::Temperature,
+            base: kelvins,
+        },
+        units,
+    )
 }
 
 /// A viscosity of so many m²/s.
 pub fn viscosity(base: f64, units: Units) -> Value {
-    amount(Amount { kind: Kind::KinematicViscosity, base }, units)
+    amount(
+        Amount {
+            kind: Kind::KinematicViscosity,
+            base,
+        },
+        units,
+    )
 }

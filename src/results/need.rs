@@ -53,7 +53,10 @@ pub fn document_of(points: &[(&Point, PointDemands)], head: &Head, units: Units)
     let information: Vec<Value> = points
         .iter()
         .flat_map(|(point, d)| {
-            d.middle.information.iter().map(move |i| informed(point, i, units))
+            d.middle
+                .information
+                .iter()
+                .map(move |i| informed(point, i, units))
         })
         .collect();
     top.insert("information".into(), Value::Array(information));
@@ -87,7 +90,10 @@ fn one(point: &Point, demands: &PointDemands, i: usize, d: &Demand, units: Units
     m.insert("says".into(), json!(d.says));
     m.insert("limit".into(), limit(demands, d, units));
     let t = demands.middle.governing_temperature(d);
-    m.insert("at".into(), t.map_or(Value::Null, |t| json::temperature(t, units)));
+    m.insert(
+        "at".into(),
+        t.map_or(Value::Null, |t| json::temperature(t, units)),
+    );
     m.insert("origin".into(), json!(d.whose.to_string()));
     m.insert("source".into(), json!(d.source));
     m.insert("confidence".into(), json!(confidence(d)));
@@ -114,9 +120,15 @@ fn limit(demands: &PointDemands, d: &Demand, units: Units) -> Value {
     };
     let mut ends: Option<(f64, f64)> = None;
     for setting in &demands.settings {
-        let Some(other) = setting.list.iter().find(same) else { continue };
-        let Some(a) = figure(other, setting.governing_temperature(other)) else { continue };
-        ends = Some(ends.map_or((a.base, a.base), |(lo, hi)| (lo.min(a.base), hi.max(a.base))));
+        let Some(other) = setting.list.iter().find(same) else {
+            continue;
+        };
+        let Some(a) = figure(other, setting.governing_temperature(other)) else {
+            continue;
+        };
+        ends = Some(ends.map_or((a.base, a.base), |(lo, hi)| {
+            (lo.min(a.base), hi.max(a.base))
+        }));
     }
     match (own, ends) {
         (Some(a), Some((lo, hi))) if (hi - lo) > 1e-12 * hi.abs() => {
@@ -132,11 +144,15 @@ pub fn limit_amount(d: &Demand, t: Option<f64>) -> Option<Amount> {
     match &d.limit {
         Limit::Kinematic(nu) => Some(nu.amount()),
         Limit::Dynamic(eta) => Some(eta.amount()),
-        Limit::Film(_) => {
-            crate::demand::governing::as_viscosity(d, t?).map(Measure::amount)
-        }
-        Limit::Pour { least, .. } => Some(Amount { kind: Kind::Rise, base: *least }),
-        Limit::Temperature(t) => Some(Amount { kind: Kind::Temperature, base: *t }),
+        Limit::Film(_) => crate::demand::governing::as_viscosity(d, t?).map(Measure::amount),
+        Limit::Pour { least, .. } => Some(Amount {
+            kind: Kind::Rise,
+            base: *least,
+        }),
+        Limit::Temperature(t) => Some(Amount {
+            kind: Kind::Temperature,
+            base: *t,
+        }),
         Limit::OilsOwn | Limit::UseLow => None,
     }
 }
@@ -145,11 +161,31 @@ pub fn limit_amount(d: &Demand, t: Option<f64>) -> Option<Amount> {
 pub fn table_of(points: &[(&Point, PointDemands)], units: Units) -> Table {
     let t_unit = unit_of(Kind::Temperature, units).name;
     let headings = [
-        "machine", "point", "end", "part", "rule", "says", "limit", "limit_unit", "at", "origin",
-        "confidence", "governs", "standing",
+        "machine",
+        "point",
+        "end",
+        "part",
+        "rule",
+        "says",
+        "limit",
+        "limit_unit",
+        "at",
+        "origin",
+        "confidence",
+        "governs",
+        "standing",
     ];
     let mut table = Table {
-        headings: headings.iter().map(|h| if *h == "at" { format!("at_{t_unit}") } else { (*h).to_owned() }).collect(),
+        headings: headings
+            .iter()
+            .map(|h| {
+                if *h == "at" {
+                    format!("at_{t_unit}")
+                } else {
+                    (*h).to_owned()
+                }
+            })
+            .collect(),
         rows: Vec::new(),
     };
     for (point, demands) in points {
@@ -169,7 +205,11 @@ pub fn table_of(points: &[(&Point, PointDemands)], units: Units) -> Table {
                 Cell::number(t.map(|t| unit_of(Kind::Temperature, units).from_base(t))),
                 Cell::Text(d.whose.to_string()),
                 Cell::from(confidence(d)),
-                Cell::from(if demands.middle.governing(d.end) == Some(i) { "yes" } else { "no" }),
+                Cell::from(if demands.middle.governing(d.end) == Some(i) {
+                    "yes"
+                } else {
+                    "no"
+                }),
                 Cell::from(standing_word(&d.standing)),
             ]);
         }

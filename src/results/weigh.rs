@@ -55,9 +55,15 @@ pub fn judgement(scales: &Scales<'_>, w: &Weighed<'_>, c: &Candidate) -> Value {
     if j.maker.is_some() {
         m.insert("maker_grade".into(), steps(j.maker, &told));
     }
-    m.insert("reserve".into(), json!({ "value": j.reserve, "unit": "VG step" }));
+    m.insert(
+        "reserve".into(),
+        json!({ "value": j.reserve, "unit": "VG step" }),
+    );
     m.insert("band".into(), band(j.band, units));
-    m.insert("nu".into(), json!({ "hot": nu(j.at_hot, units), "start": nu(j.at_start, units) }));
+    m.insert(
+        "nu".into(),
+        json!({ "hot": nu(j.at_hot, units), "start": nu(j.at_start, units) }),
+    );
     m.insert(
         "temperatures".into(),
         json!({ "hot": temperature(j.at_hot, units), "start": temperature(j.at_start, units) }),
@@ -68,7 +74,10 @@ pub fn judgement(scales: &Scales<'_>, w: &Weighed<'_>, c: &Candidate) -> Value {
     m.insert("because".into(), json!(c.because));
     let mut results: Vec<StepId> = told.margins.iter().map(|e| e.step).collect();
     results.dedup();
-    m.insert("steps".into(), Value::Array(json::steps(&told.trace, &results, units)));
+    m.insert(
+        "steps".into(),
+        Value::Array(json::steps(&told.trace, &results, units)),
+    );
     Value::Object(m)
 }
 
@@ -78,7 +87,10 @@ fn barred_row(scales: &Scales<'_>, w: &Weighed<'_>, b: &Barred) -> Value {
     m.insert("verdict".into(), json!("barred"));
     m.insert("barred_by".into(), conditions(&b.by));
     m.insert("conditions".into(), json!([]));
-    m.insert("because".into(), json!(b.by.iter().map(|c| c.says.clone()).collect::<Vec<_>>()));
+    m.insert(
+        "because".into(),
+        json!(b.by.iter().map(|c| c.says.clone()).collect::<Vec<_>>()),
+    );
     Value::Object(m)
 }
 
@@ -91,15 +103,22 @@ fn conditions(list: &[Condition]) -> Value {
 }
 
 fn step_of(m: Margin, told: &Explanation) -> Option<StepId> {
-    told.margins.iter().find(|e| e.demand == m.demand).map(|e| e.step)
+    told.margins
+        .iter()
+        .find(|e| e.demand == m.demand)
+        .map(|e| e.step)
 }
 
 fn steps(m: Option<Margin>, told: &Explanation) -> Value {
-    m.map_or(Value::Null, |m| json::steps_margin(m.value, step_of(m, told)))
+    m.map_or(Value::Null, |m| {
+        json::steps_margin(m.value, step_of(m, told))
+    })
 }
 
 fn kelvins(m: Option<Margin>, told: &Explanation) -> Value {
-    m.map_or(Value::Null, |m| json::kelvins_margin(m.value, step_of(m, told)))
+    m.map_or(Value::Null, |m| {
+        json::kelvins_margin(m.value, step_of(m, told))
+    })
 }
 
 /// The band: null where it is nowhere, a null end where nothing limits it.
@@ -127,7 +146,9 @@ fn governing(w: &Weighed<'_>, hot: Option<Margin>, cold: Option<Margin>) -> Valu
         (None, Some(c)) => Some((c, "cold")),
         (None, None) => None,
     };
-    let Some((m, end)) = smaller else { return Value::Null };
+    let Some((m, end)) = smaller else {
+        return Value::Null;
+    };
     let demand: &Demand = &w.demands.settings[usize::from(m.setting)].list[usize::from(m.demand)];
     json!({ "end": end, "rule": demand.rule, "part": demand.part })
 }
@@ -135,7 +156,9 @@ fn governing(w: &Weighed<'_>, hot: Option<Margin>, cold: Option<Margin>) -> Valu
 /// The same as a table.
 pub fn table_of(scales: &Scales<'_>, weighed: &[Weighed<'_>]) -> Table {
     let units = scales.units;
-    let nu_unit = unit_of(Kind::KinematicViscosity, units).name.replace('/', "_");
+    let nu_unit = unit_of(Kind::KinematicViscosity, units)
+        .name
+        .replace('/', "_");
     let t_unit = unit_of(Kind::Temperature, units).name;
     let headings = [
         "machine".to_owned(),
@@ -156,7 +179,10 @@ pub fn table_of(scales: &Scales<'_>, weighed: &[Weighed<'_>]) -> Table {
         "conditions".to_owned(),
         "because".to_owned(),
     ];
-    let mut table = Table { headings: headings.to_vec(), rows: Vec::new() };
+    let mut table = Table {
+        headings: headings.to_vec(),
+        rows: Vec::new(),
+    };
     for w in weighed {
         for c in &w.candidates {
             table.rows.push(row(scales, w, c, units));
@@ -166,7 +192,9 @@ pub fn table_of(scales: &Scales<'_>, weighed: &[Weighed<'_>]) -> Table {
             row.extend((0..10).map(|_| Cell::Empty));
             row.push(Cell::Number(0.0));
             let by: Vec<String> =
-                b.by.iter().map(|c| format!("{}: {}", c.rule, c.says)).collect();
+                b.by.iter()
+                    .map(|c| format!("{}: {}", c.rule, c.says))
+                    .collect();
             row.push(Cell::Text(by.join("; ")));
             table.rows.push(row);
         }
@@ -197,7 +225,9 @@ fn row(scales: &Scales<'_>, w: &Weighed<'_>, c: &Candidate, units: Units) -> Vec
     }
     let nowhere = j.band.is_nowhere();
     for end in [j.band.low_end(), j.band.high_end()] {
-        row.push(Cell::number(end.filter(|_| !nowhere).map(|e| t.from_base(e))));
+        row.push(Cell::number(
+            end.filter(|_| !nowhere).map(|e| t.from_base(e)),
+        ));
     }
     row.push(Cell::Number(c.conditions.len() as f64));
     row.push(Cell::Text(c.because.join("; ")));

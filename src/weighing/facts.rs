@@ -24,8 +24,11 @@ pub fn of_oil(oil: &Oil, ready: &PreparedOil) -> OilFacts {
         let t = given.value.figure();
         Between { lo: t, hi: t }
     });
-    facts.thickener =
-        oil.grease.as_ref().and_then(|g| g.thickener.as_ref()).map(|t| t.value.clone());
+    facts.thickener = oil
+        .grease
+        .as_ref()
+        .and_then(|g| g.thickener.as_ref())
+        .map(|t| t.value.clone());
     facts
 }
 
@@ -68,7 +71,10 @@ fn part_implies(facts: &mut PointFacts, kind: &PartKind) {
         PartKind::GearMesh(m) if m.kind == Some(GearType::Hypoid) => PartGroup::Hypoid,
         PartKind::GearMesh(_) => PartGroup::Gear,
         PartKind::WormMesh(w) => {
-            if w.wheel.as_ref().is_some_and(|w| w.value == WheelMaterial::Bronze) {
+            if w.wheel
+                .as_ref()
+                .is_some_and(|w| w.value == WheelMaterial::Bronze)
+            {
                 facts.yellow_metal = Some(true);
             }
             PartGroup::Worm
