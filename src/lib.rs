@@ -15,6 +15,7 @@
 
 pub mod model;
 pub mod numeric;
+pub mod problem;
 pub mod quantity;
 pub mod relation;
 pub mod source;
