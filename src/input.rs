@@ -1,0 +1,3 @@
+//! The reader: text into the checked model, with every problem of every file in one pass.
+
+pub mod value;
