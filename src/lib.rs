@@ -13,6 +13,7 @@
 //!
 //! The pipeline runs in one direction; nothing reaches back. The rooms, in the order of the arrows:
 
+pub mod cli;
 pub mod input;
 pub mod model;
 pub mod numeric;

@@ -2,6 +2,7 @@
 //! call these functions; nothing here knows of machines, messages or files.
 
 pub mod oil;
+pub mod sump;
 
 /// What the program says about a relation wherever it prints a result of it.
 #[derive(Debug, PartialEq, Eq)]
