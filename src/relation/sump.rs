@@ -86,7 +86,10 @@ mod tests {
 
     #[test]
     fn across_is_carried_on_beyond_its_ends() {
-        let ends = ((celsius(-10.0), celsius(40.0)), (celsius(30.0), celsius(60.0)));
+        let ends = (
+            (celsius(-10.0), celsius(40.0)),
+            (celsius(30.0), celsius(60.0)),
+        );
         for (ambient, sump) in [(-10.0, 40.0), (10.0, 50.0), (30.0, 60.0), (50.0, 70.0)] {
             let t = across(celsius(ambient), ends.0, ends.1);
             assert!((to_celsius(t) - sump).abs() < 1e-9, "{ambient}");
