@@ -131,6 +131,20 @@ pub trait Recorder {
         f: impl FnOnce(T) -> Q,
     ) -> Known<Q>;
 
+    /// A relation that gives several numbers and may refuse its inputs.
+    ///
+    /// # Errors
+    /// What the relation returned.
+    fn attempt_all<I: Inputs, T: Copy, E>(
+        &mut self,
+        law: &'static Law,
+        inputs: I,
+        f: impl FnOnce(I::Values) -> Result<T, E>,
+    ) -> Result<Outcome<T>, E> {
+        let value = f(inputs.values())?;
+        Ok(self.apply(law, inputs, |_| value))
+    }
+
     /// A remark on the latest step.
     fn note(&mut self, remark: impl FnOnce() -> String);
 
