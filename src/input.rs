@@ -1,6 +1,10 @@
 //! The reader: text into the checked model, with every problem of every file in one pass.
 
+pub mod fields;
 pub mod file;
+pub mod gate;
 pub mod keys;
+pub mod reader;
 pub mod schema;
+mod syntax;
 pub mod value;

@@ -45,6 +45,8 @@ pub struct Scalar {
     pub text: String,
     /// How it was written.
     pub style: Style,
+    /// Whether it stands in a list or record in brackets, where a comma would end it.
+    pub in_brackets: bool,
 }
 
 /// How a text was written.

@@ -3,17 +3,19 @@
 use super::fault::{Fault, FaultKind, Syntax};
 use super::{Entry, Gated, Key, MAX_DEPTH, Node, NodeKind, Scalar, Style, narrow};
 use crate::source::place::{FileId, Span};
-use granit_parser::{ErrorKind, Event, Parser, ScalarStyle, ScanError};
+use granit_parser::{ErrorKind, Event, Parser, ScalarStyle, ScanError, StructureStyle};
 
 /// A record or list not yet closed.
 enum Open {
     Map {
         start: usize,
+        flow: bool,
         entries: Vec<Entry>,
         key: Option<Key>,
     },
     Seq {
         start: usize,
+        flow: bool,
         items: Vec<Node>,
     },
 }
@@ -28,6 +30,8 @@ struct Builder<'t> {
     documents: usize,
     /// End of the event before.
     last_end: usize,
+    /// How many of the open records and lists stand in brackets.
+    bracketed: usize,
     /// Bytes of the last scalar, for mistakes that are found only behind it.
     last_scalar: (usize, usize),
 }
@@ -48,6 +52,7 @@ pub(super) fn read(file: FileId, text: &str) -> Gated {
         faults: Vec::new(),
         documents: 0,
         last_end: 0,
+        bracketed: 0,
         last_scalar: (0, 0),
     };
     let mut complete = true;
@@ -103,17 +108,19 @@ impl Builder<'_> {
                 self.fault(FaultKind::Anchor(name.to_string()), start, end);
                 return Ok(()); // stands before its node: does not move the reading on
             }
-            Event::MappingStart(..) => self.open(
+            Event::MappingStart(style, ..) => self.open(
                 Open::Map {
                     start,
+                    flow: matches!(style, StructureStyle::Flow),
                     entries: Vec::new(),
                     key: None,
                 },
                 start,
             )?,
-            Event::SequenceStart(..) => self.open(
+            Event::SequenceStart(style, ..) => self.open(
                 Open::Seq {
                     start,
+                    flow: matches!(style, StructureStyle::Flow),
                     items: Vec::new(),
                 },
                 start,
@@ -175,6 +182,7 @@ impl Builder<'_> {
             kind: NodeKind::Scalar(Scalar {
                 text: text.to_owned(),
                 style,
+                in_brackets: self.bracketed > 0,
             }),
         }
     }
@@ -197,39 +205,40 @@ impl Builder<'_> {
                 span: self.span(start, start + 1),
             }));
         }
+        let (Open::Map { flow, .. } | Open::Seq { flow, .. }) = &open;
+        self.bracketed += usize::from(*flow);
         self.stack.push(open);
         Ok(())
     }
 
     fn close(&mut self, end: usize) {
         let node = match self.stack.pop() {
-            Some(Open::Map { start, entries, .. }) => {
+            Some(Open::Map {
+                start,
+                flow,
+                entries,
+                ..
+            }) => {
+                self.bracketed -= usize::from(flow);
                 let last = entries.last().map(|e| e.value.span.end as usize);
-                self.closed(start, end, last, NodeKind::Map(entries))
+                let end = last.filter(|_| !flow).unwrap_or(end);
+                (start, end, NodeKind::Map(entries))
             }
-            Some(Open::Seq { start, items }) => {
+            Some(Open::Seq { start, flow, items }) => {
+                self.bracketed -= usize::from(flow);
                 let last = items.last().map(|n| n.span.end as usize);
-                self.closed(start, end, last, NodeKind::Seq(items))
+                let end = last.filter(|_| !flow).unwrap_or(end);
+                (start, end, NodeKind::Seq(items))
             }
             None => return,
         };
-        self.place(node);
-    }
-
-    /// A bracketed collection ends at its bracket, any other with its last value.
-    fn closed(&self, start: usize, end: usize, last: Option<usize>, kind: NodeKind) -> Node {
-        let bracketed = self
-            .text
-            .get(start..)
-            .is_some_and(|t| t.starts_with(['[', '{']));
-        let end = match last {
-            Some(last) if !bracketed => last,
-            _ => end,
-        };
-        Node {
+        // A bracketed collection ends at its bracket, any other with its last value.
+        let (start, end, kind) = node;
+        let node = Node {
             span: self.span(start, end),
             kind,
-        }
+        };
+        self.place(node);
     }
 
     fn place(&mut self, node: Node) {
@@ -371,9 +380,9 @@ impl Builder<'_> {
     /// A colon met while brackets are open: the bracket is the mistake.
     fn in_brackets(&self, at: usize, error: &ScanError) -> (Syntax, usize, usize) {
         let opened = self.stack.iter().rev().find_map(|open| {
-            let (Open::Map { start, .. } | Open::Seq { start, .. }) = open;
+            let (Open::Map { start, flow, .. } | Open::Seq { start, flow, .. }) = open;
             let bracket = self.text[*start..].chars().next()?;
-            ['[', '{'].contains(&bracket).then_some((*start, bracket))
+            flow.then_some((*start, bracket))
         });
         match opened {
             Some((start, bracket)) => (
@@ -393,7 +402,7 @@ impl Builder<'_> {
         let (start, end) = self.last_scalar;
         let scalar = self.text.get(start..end).unwrap_or("");
         let Some((first, _)) = scalar.split_once('\n') else {
-            return (Syntax::Colon, at, at + 1);
+            return (Syntax::Colon, start, self.value_end(at));
         };
         let first = first.trim_end();
         let glued = first.split_once(':').is_some_and(|(key, value)| {
@@ -423,6 +432,17 @@ impl Builder<'_> {
         let line = &self.text[begin..end];
         let start = begin + (line.len() - line.trim_start().len());
         (syntax, start.min(end), end)
+    }
+
+    /// The end of a line without its comment.
+    fn value_end(&self, at: usize) -> usize {
+        let end = self.line_end(at);
+        let rest = &self.text[at..end];
+        at + rest
+            .find(" #")
+            .map_or(rest, |c| &rest[..c])
+            .trim_end()
+            .len()
     }
 
     fn line_end(&self, at: usize) -> usize {

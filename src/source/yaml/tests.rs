@@ -154,7 +154,7 @@ fn bad_form_is_named_and_marked() {
         ("a: \"abc\nb: 1\n", Syntax::QuoteOpen, "\"abc"),
         ("a: \"x\" y\n", Syntax::QuoteTail, "y"),
         ("a: \"\\q\"\n", Syntax::Escape, "\"\\q\""),
-        ("a: Foo: bar\n", Syntax::Colon, ":"),
+        ("a: Foo: bar # c\n", Syntax::Colon, "Foo: bar"),
         (
             "a:\n  speed:236 r/min\n  b: 1\n",
             Syntax::ColonSpace,
