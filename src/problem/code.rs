@@ -211,6 +211,11 @@ codes! {
     /// A unit of an instrument outside the range its conversion holds in.
     ConversionRange = "conversion-range" Error,
 
+    /// A grade of another system, with what it was read as.
+    GradeRead = "grade-read" Note,
+    /// A viscosity in other units, with what it was read as.
+    ViscosityRead = "viscosity-read" Note,
+
     // what belongs together
     /// A record names itself through others.
     LikeLoop = "like-loop" Error,

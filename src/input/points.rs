@@ -1,0 +1,285 @@
+//! Lists of viscosities at temperatures, and grades in their place.
+
+mod grade;
+mod pieces;
+
+pub use grade::{Grade, read_grade};
+pub use pieces::{Piece, pieces};
+
+use super::convert::{Dense, shown, to_kinematic};
+use super::fields::Slot;
+use super::reader::Reader;
+use super::value::{self, At, Body, Clauses, Deviation, Fault, Mend, Want};
+use crate::model::oil::{DynamicPoint, ViscosityPoint};
+use crate::problem::{Code, Write};
+use crate::quantity::kind::Unit;
+use crate::quantity::{DynamicViscosity, Kind, Measure, Ratio};
+use crate::source::Origin;
+use crate::source::place::{Given, Whose};
+
+const POINT: Want = Want::one(&[
+    Kind::KinematicViscosity,
+    Kind::DynamicViscosity,
+    Kind::Efflux,
+])
+.at(At::Must);
+const COLD: Want = Want::one(&[Kind::DynamicViscosity]).at(At::Must);
+const INDEX: Want = Want::one(&[Kind::Ratio]);
+
+/// What a list of viscosities holds.
+#[derive(Clone, Debug, Default)]
+pub struct Listed {
+    /// The points, in the order written.
+    pub points: Vec<ViscosityPoint>,
+    /// The pieces of the points, for messages.
+    pub at: Vec<Piece>,
+    /// A grade.
+    pub grade: Option<Given<Grade>>,
+    /// A viscosity index.
+    pub index: Option<Given<Ratio>>,
+    /// The test named behind the list.
+    pub test: Option<String>,
+    /// Whether anything could not be read.
+    pub faulty: bool,
+}
+
+/// Reads a list of viscosities, or a grade with an index.
+pub fn read(reader: &mut Reader<'_>, slot: &Slot<'_>, dense: Option<&Dense>) -> Listed {
+    let mut listed = Listed::default();
+    if without_brackets(reader, slot) {
+        listed.faulty = true;
+        return listed;
+    }
+    let Some((list, whole)) = pieces(reader, slot) else {
+        listed.faulty = true;
+        return listed;
+    };
+    listed.test = whole.test.clone();
+    for piece in list {
+        if take(reader, slot, &whole, &piece, dense, &mut listed).is_none() {
+            listed.faulty = true;
+        }
+    }
+    listed
+}
+
+/// `220 mm2/s at 40 degC, 19 mm2/s at 100 degC` without brackets round it.
+fn without_brackets(reader: &mut Reader<'_>, slot: &Slot<'_>) -> bool {
+    let Some(text) = slot.node.text() else {
+        return false;
+    };
+    let mut parts = text.split(", ");
+    let several = parts.clone().count() > 1
+        && parts.all(|p| {
+            let p = p.trim();
+            p.contains(" at ") || grade::opens(p) || p.starts_with("VI ")
+        });
+    if several {
+        let problem = reader
+            .at(
+                Code::ListWanted,
+                "several points found, a list in brackets is wanted",
+                slot.node.span,
+                &slot.within,
+            )
+            .write(Write::edit(slot.node.span, format!("[{text}]")));
+        reader.report(problem);
+    }
+    several
+}
+
+fn take(
+    reader: &mut Reader<'_>,
+    slot: &Slot<'_>,
+    whole: &Clauses,
+    piece: &Piece,
+    dense: Option<&Dense>,
+    listed: &mut Listed,
+) -> Option<()> {
+    let text = piece.text();
+    if let Some(number) = text
+        .strip_prefix("VI ")
+        .or_else(|| text.strip_prefix("VI="))
+    {
+        let value = value_of(reader, slot, piece, number, &INDEX)?;
+        let Body::One { read, .. } = value.body else {
+            return None;
+        };
+        let origin = origin(slot, whole, &value.clauses);
+        let index = Ratio::from_base(read.amount.base);
+        listed.index = Some(Given::new(index, text, origin));
+        return Some(());
+    }
+    if grade::opens(text) {
+        let (grade, clauses) = grade_of(reader, slot, piece)?;
+        listed.grade = Some(grade.map_origin(origin(slot, whole, &clauses)));
+        return Some(());
+    }
+    let value = value_of(reader, slot, piece, text, &POINT)?;
+    let point = point(reader, slot, whole, piece, value, dense)?;
+    listed.points.push(point);
+    listed.at.push(piece.clone());
+    Some(())
+}
+
+/// A given value with another origin.
+trait MapOrigin {
+    fn map_origin(self, origin: Origin) -> Self;
+}
+
+impl<T> MapOrigin for Given<T> {
+    fn map_origin(mut self, origin: Origin) -> Self {
+        self.origin = origin;
+        self
+    }
+}
+
+/// A grade with what it was read as.
+pub fn grade_of(
+    reader: &mut Reader<'_>,
+    slot: &Slot<'_>,
+    piece: &Piece,
+) -> Option<(Given<Grade>, Clauses)> {
+    let text = piece.text();
+    let (head, clauses) = super::fields::words::parted(text);
+    match read_grade(&head) {
+        Ok(grade) => {
+            if let Some(read_as) = grade.read_as() {
+                let note = reader.at(
+                    Code::GradeRead,
+                    format!("{head} read as {read_as}"),
+                    piece.node.span,
+                    &slot.within,
+                );
+                reader.report(note);
+            }
+            let origin = slot.origin(&clauses);
+            Some((Given::new(grade, head, origin), clauses))
+        }
+        Err(fault) => {
+            reader.faults(&piece.node, vec![fault], &slot.within);
+            None
+        }
+    }
+}
+
+/// A value of a piece; a text that begins inside it keeps its bytes.
+fn value_of(
+    reader: &mut Reader<'_>,
+    slot: &Slot<'_>,
+    piece: &Piece,
+    text: &str,
+    want: &Want,
+) -> Option<value::Value> {
+    let shift = piece.text().len() - text.len();
+    match value::read(text, want) {
+        Ok(value) => Some(value),
+        Err(faults) => {
+            let shifted = faults.into_iter().map(|f| f.shifted(shift)).collect();
+            reader.faults(&piece.node, shifted, &slot.within);
+            None
+        }
+    }
+}
+
+fn point(
+    reader: &mut Reader<'_>,
+    slot: &Slot<'_>,
+    whole: &Clauses,
+    piece: &Piece,
+    value: value::Value,
+    dense: Option<&Dense>,
+) -> Option<ViscosityPoint> {
+    let Body::One {
+        read,
+        deviation,
+        at: Some(at),
+    } = value.body
+    else {
+        return None;
+    };
+    let at = at.amount.as_measure()?;
+    let nu = match to_kinematic(&read, at, dense, &value.written) {
+        Ok(nu) => nu,
+        Err(fault) => {
+            reader.faults(&piece.node, vec![fault], &slot.within);
+            return None;
+        }
+    };
+    if read.amount.kind != Kind::KinematicViscosity {
+        let note = reader.at(
+            Code::ViscosityRead,
+            format!("{} read as {}", value.written, shown(nu)),
+            piece.node.span,
+            &slot.within,
+        );
+        reader.report(note);
+    }
+    let tolerance = match deviation {
+        Some(Deviation::Share(share)) => Some(share),
+        Some(Deviation::Of(by)) => Some(by.amount.base / read.amount.base),
+        None => None,
+    };
+    if tolerance.is_some_and(|t| t >= 1.0) {
+        let fault = Fault::new(
+            Code::ValueImpossible,
+            "the tolerance is as large as the viscosity",
+            0..piece.text().len(),
+        )
+        .mend(Mend::new(
+            0..piece.text().len(),
+            without_tolerance(piece.text()),
+        ));
+        reader.faults(&piece.node, vec![fault], &slot.within);
+        return None;
+    }
+    let origin = origin(slot, whole, &value.clauses);
+    let nu = Given::new(nu, value.written, origin);
+    Some(ViscosityPoint { nu, at, tolerance })
+}
+
+fn without_tolerance(text: &str) -> String {
+    let value = text.split("+/-").next().unwrap_or(text).trim_end();
+    let at = text.rfind(" at ").map_or("", |at| &text[at..]);
+    format!("{value}{at}")
+}
+
+/// The piece's own origin, else that of the whole list.
+fn origin(slot: &Slot<'_>, whole: &Clauses, own: &Clauses) -> Origin {
+    let origin = slot.origin(own);
+    if origin.whose == Whose::NotStated && origin.note.is_none() {
+        slot.origin(whole)
+    } else {
+        origin
+    }
+}
+
+/// Reads dynamic viscosities measured cold.
+pub fn read_cold(reader: &mut Reader<'_>, slot: &Slot<'_>) -> Vec<Given<DynamicPoint>> {
+    let Some((list, whole)) = pieces(reader, slot) else {
+        return Vec::new();
+    };
+    let mut found = Vec::new();
+    for piece in list {
+        let Some(value) = value_of(reader, slot, &piece, piece.text(), &COLD) else {
+            continue;
+        };
+        let origin = origin(slot, &whole, &value.clauses);
+        if let Body::One {
+            read, at: Some(at), ..
+        } = value.body
+            && let Some(at) = at.amount.as_measure()
+        {
+            let eta = DynamicViscosity::from_base(read.amount.base);
+            let point = DynamicPoint { eta, at };
+            found.push(Given::new(point, value.written, origin));
+        }
+    }
+    found
+}
+
+/// Whether a unit is one of an instrument.
+pub fn is_instrument(unit: &str) -> bool {
+    let named = |u: &Unit| u.name == unit;
+    Kind::Efflux.spec().units.iter().any(named)
+}
