@@ -14,12 +14,16 @@
 //! The pipeline runs in one direction; nothing reaches back. The rooms, in the order of the arrows:
 
 pub mod cli;
+pub mod demand;
 pub mod input;
+pub mod judge;
 pub mod model;
 pub mod numeric;
+pub mod oil;
 pub mod problem;
 pub mod quantity;
 pub mod relation;
+pub mod results;
 pub mod source;
 pub mod trace;
 pub mod work;
