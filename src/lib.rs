@@ -23,7 +23,6 @@ pub mod oil;
 pub mod problem;
 pub mod quantity;
 pub mod relation;
-pub mod results;
 pub mod source;
 pub mod trace;
 pub mod work;
