@@ -5,6 +5,8 @@ pub mod fields;
 pub mod file;
 pub mod gate;
 pub mod keys;
+pub mod like;
+pub mod oils;
 pub mod points;
 pub mod reader;
 pub mod schema;

@@ -6,10 +6,12 @@ pub mod words;
 
 use super::keys::{Form, Key, Record, is_private, spelt};
 use super::reader::{Reader, as_plain};
+use super::value::Clauses;
+use crate::model::machine::InputLine;
 use crate::problem::{Code, Write};
 use crate::source::place::Whose;
 use crate::source::yaml::{self, Entry, Node, NodeKind};
-use crate::source::{Origin, Place, Span};
+use crate::source::{Origin, Place, SourceSet, Span};
 use std::collections::BTreeMap;
 use std::rc::Rc;
 
@@ -175,7 +177,39 @@ impl<'t> Fields<'t> {
     }
 }
 
+impl Fields<'_> {
+    /// Where the record stands.
+    pub fn origin(&self) -> Origin {
+        Origin {
+            whose: Whose::NotStated,
+            dated: None,
+            note: None,
+            place: Place::Text(self.span),
+            inherited: None,
+        }
+    }
+}
+
 impl Slot<'_> {
+    /// The value as written, for the table of inputs.
+    pub fn input_line(&self, set: &SourceSet, about: Option<&str>) -> InputLine {
+        let (written, clauses) = match (self.node.text(), self.node.items()) {
+            (Some(text), _) => words::parted(text),
+            (None, Some(items)) => {
+                let texts: Vec<&str> = items.iter().filter_map(Node::text).collect();
+                (texts.join(", "), Clauses::default())
+            }
+            // Records in brackets, as the sizes of a bearing.
+            (None, None) => (set.slice(self.node.span).to_owned(), Clauses::default()),
+        };
+        InputLine {
+            key: self.key.name.to_owned(),
+            about: about.map(str::to_owned),
+            written,
+            origin: self.origin(&clauses),
+        }
+    }
+
     /// Where the value comes from, without clauses.
     pub fn bare_origin(&self) -> Origin {
         Origin {

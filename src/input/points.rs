@@ -12,7 +12,6 @@ use super::reader::Reader;
 use super::value::{self, At, Body, Clauses, Deviation, Fault, Mend, Want};
 use crate::model::oil::{DynamicPoint, ViscosityPoint};
 use crate::problem::{Code, Write};
-use crate::quantity::kind::Unit;
 use crate::quantity::{DynamicViscosity, Kind, Measure, Ratio};
 use crate::source::Origin;
 use crate::source::place::{Given, Whose};
@@ -24,6 +23,8 @@ const POINT: Want = Want::one(&[
 ])
 .at(At::Must);
 const COLD: Want = Want::one(&[Kind::DynamicViscosity]).at(At::Must);
+/// The key whose points come from a test.
+const SHEARED: &str = "sheared";
 const INDEX: Want = Want::one(&[Kind::Ratio]);
 
 /// What a list of viscosities holds.
@@ -54,13 +55,34 @@ pub fn read(reader: &mut Reader<'_>, slot: &Slot<'_>, dense: Option<&Dense>) -> 
         listed.faulty = true;
         return listed;
     };
-    listed.test = whole.test.clone();
+    listed.test.clone_from(&whole.test);
+    if listed.test.is_some() && slot.key.name != SHEARED {
+        let fault = Fault::new(
+            Code::ClauseUnwanted,
+            "a test named behind viscosities of the new oil",
+            0..0,
+        )
+        .why(
+            "only what was measured after a shear test has one; those points stand under `sheared`",
+        );
+        reader.faults(slot.node, vec![fault], &slot.within);
+        listed.faulty = true;
+    }
+    let list_of = List { slot, whole, dense };
     for piece in list {
-        if take(reader, slot, &whole, &piece, dense, &mut listed).is_none() {
+        if list_of.take(reader, &piece, &mut listed).is_none() {
             listed.faulty = true;
         }
     }
     listed
+}
+
+/// What every item of a list shares.
+struct List<'s, 't> {
+    slot: &'s Slot<'t>,
+    /// The clauses behind the whole list.
+    whole: Clauses,
+    dense: Option<&'s Dense>,
 }
 
 /// `220 mm2/s at 40 degC, 19 mm2/s at 100 degC` without brackets round it.
@@ -88,49 +110,97 @@ fn without_brackets(reader: &mut Reader<'_>, slot: &Slot<'_>) -> bool {
     several
 }
 
-fn take(
-    reader: &mut Reader<'_>,
-    slot: &Slot<'_>,
-    whole: &Clauses,
-    piece: &Piece,
-    dense: Option<&Dense>,
-    listed: &mut Listed,
-) -> Option<()> {
-    let text = piece.text();
-    if let Some(number) = text
-        .strip_prefix("VI ")
-        .or_else(|| text.strip_prefix("VI="))
-    {
-        let value = value_of(reader, slot, piece, number, &INDEX)?;
-        let Body::One { read, .. } = value.body else {
+impl List<'_, '_> {
+    fn take(&self, reader: &mut Reader<'_>, piece: &Piece, listed: &mut Listed) -> Option<()> {
+        let slot = self.slot;
+        let text = piece.text();
+        if let Some(number) = text
+            .strip_prefix("VI ")
+            .or_else(|| text.strip_prefix("VI="))
+        {
+            let value = value_of(reader, slot, piece, number, &INDEX)?;
+            let Body::One { read, .. } = value.body else {
+                return None;
+            };
+            let origin = origin(slot, &self.whole, &value.clauses);
+            let index = Ratio::from_base(read.amount.base);
+            listed.index = Some(Given::new(index, text, origin));
+            return Some(());
+        }
+        if grade::opens(text) {
+            let (grade, clauses) = grade_of(reader, slot, piece)?;
+            let origin = origin(slot, &self.whole, &clauses);
+            listed.grade = Some(Given { origin, ..grade });
+            return Some(());
+        }
+        let want = if slot.key.name == SHEARED {
+            POINT.with_test()
+        } else {
+            POINT
+        };
+        let value = value_of(reader, slot, piece, text, &want)?;
+        if let Some(test) = &value.clauses.test {
+            listed.test = Some(test.clone());
+        }
+        let point = self.point(reader, piece, value)?;
+        listed.points.push(point);
+        listed.at.push(piece.clone());
+        Some(())
+    }
+
+    fn point(
+        &self,
+        reader: &mut Reader<'_>,
+        piece: &Piece,
+        value: value::Value,
+    ) -> Option<ViscosityPoint> {
+        let slot = self.slot;
+        let Body::One {
+            read,
+            deviation,
+            at: Some(at),
+        } = value.body
+        else {
             return None;
         };
-        let origin = origin(slot, whole, &value.clauses);
-        let index = Ratio::from_base(read.amount.base);
-        listed.index = Some(Given::new(index, text, origin));
-        return Some(());
-    }
-    if grade::opens(text) {
-        let (grade, clauses) = grade_of(reader, slot, piece)?;
-        listed.grade = Some(grade.map_origin(origin(slot, whole, &clauses)));
-        return Some(());
-    }
-    let value = value_of(reader, slot, piece, text, &POINT)?;
-    let point = point(reader, slot, whole, piece, value, dense)?;
-    listed.points.push(point);
-    listed.at.push(piece.clone());
-    Some(())
-}
-
-/// A given value with another origin.
-trait MapOrigin {
-    fn map_origin(self, origin: Origin) -> Self;
-}
-
-impl<T> MapOrigin for Given<T> {
-    fn map_origin(mut self, origin: Origin) -> Self {
-        self.origin = origin;
-        self
+        let at = at.amount.as_measure()?;
+        let nu = match to_kinematic(&read, at, self.dense, &value.written) {
+            Ok(nu) => nu,
+            Err(fault) => {
+                reader.faults(&piece.node, vec![fault], &slot.within);
+                return None;
+            }
+        };
+        if read.amount.kind != Kind::KinematicViscosity {
+            let note = reader.at(
+                Code::ViscosityRead,
+                format!("{} read as {}", value.written, shown(nu)),
+                piece.node.span,
+                &slot.within,
+            );
+            reader.report(note);
+        }
+        let tolerance = match deviation {
+            Some(Deviation::Share(share)) => Some(share),
+            Some(Deviation::Of(by)) => Some(by.amount.base / read.amount.base),
+            None => None,
+        };
+        if tolerance.is_some_and(|t| t >= 1.0) {
+            let fault = Fault::new(
+                Code::ValueImpossible,
+                "the tolerance is as large as the viscosity",
+                0..piece.text().len(),
+            )
+            .mend(Mend::new(
+                0..piece.text().len(),
+                without_tolerance(piece.text()),
+            ));
+            reader.faults(&piece.node, vec![fault], &slot.within);
+            return None;
+        }
+        let origin = origin(slot, &self.whole, &value.clauses);
+        let nu = Given::new(nu, value.written, origin);
+        Some(ViscosityPoint { nu, at, tolerance })
     }
 }
 
@@ -182,62 +252,6 @@ fn value_of(
     }
 }
 
-fn point(
-    reader: &mut Reader<'_>,
-    slot: &Slot<'_>,
-    whole: &Clauses,
-    piece: &Piece,
-    value: value::Value,
-    dense: Option<&Dense>,
-) -> Option<ViscosityPoint> {
-    let Body::One {
-        read,
-        deviation,
-        at: Some(at),
-    } = value.body
-    else {
-        return None;
-    };
-    let at = at.amount.as_measure()?;
-    let nu = match to_kinematic(&read, at, dense, &value.written) {
-        Ok(nu) => nu,
-        Err(fault) => {
-            reader.faults(&piece.node, vec![fault], &slot.within);
-            return None;
-        }
-    };
-    if read.amount.kind != Kind::KinematicViscosity {
-        let note = reader.at(
-            Code::ViscosityRead,
-            format!("{} read as {}", value.written, shown(nu)),
-            piece.node.span,
-            &slot.within,
-        );
-        reader.report(note);
-    }
-    let tolerance = match deviation {
-        Some(Deviation::Share(share)) => Some(share),
-        Some(Deviation::Of(by)) => Some(by.amount.base / read.amount.base),
-        None => None,
-    };
-    if tolerance.is_some_and(|t| t >= 1.0) {
-        let fault = Fault::new(
-            Code::ValueImpossible,
-            "the tolerance is as large as the viscosity",
-            0..piece.text().len(),
-        )
-        .mend(Mend::new(
-            0..piece.text().len(),
-            without_tolerance(piece.text()),
-        ));
-        reader.faults(&piece.node, vec![fault], &slot.within);
-        return None;
-    }
-    let origin = origin(slot, whole, &value.clauses);
-    let nu = Given::new(nu, value.written, origin);
-    Some(ViscosityPoint { nu, at, tolerance })
-}
-
 fn without_tolerance(text: &str) -> String {
     let value = text.split("+/-").next().unwrap_or(text).trim_end();
     let at = text.rfind(" at ").map_or("", |at| &text[at..]);
@@ -276,10 +290,4 @@ pub fn read_cold(reader: &mut Reader<'_>, slot: &Slot<'_>) -> Vec<Given<DynamicP
         }
     }
     found
-}
-
-/// Whether a unit is one of an instrument.
-pub fn is_instrument(unit: &str) -> bool {
-    let named = |u: &Unit| u.name == unit;
-    Kind::Efflux.spec().units.iter().any(named)
 }

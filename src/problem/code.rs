@@ -279,16 +279,10 @@ codes! {
     ShearedThicker = "sheared-thicker" Error,
     /// A base stock nobody knows.
     BaseUnknown = "base-unknown" Error,
-    /// Base stocks of which not even the common kind is known.
+    /// A density assumed to convert a dynamic viscosity.
     DensityAssumed = "density-assumed" Note,
     /// A polymer-thickened oil without a sheared viscosity.
     ShearMissing = "shear-missing" Note,
-    /// A viscosity index that suggests a polymer nobody declared.
-    PolymerSuspected = "polymer-suspected" Warning,
-    /// A stated viscosity index that the two viscosities contradict.
-    IndexDisagrees = "index-disagrees" Warning,
-    /// A viscosity far from the grade in its name.
-    GradeDisagrees = "grade-disagrees" Warning,
 
     // the command line and the judging
     /// An option's value that is not KEY=VALUE.

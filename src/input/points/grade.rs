@@ -63,7 +63,7 @@ fn range(lo: KinematicViscosity, hi: KinematicViscosity, at: u32) -> String {
 }
 
 /// Whether a text begins as a grade does.
-pub fn opens(text: &str) -> bool {
+pub(super) fn opens(text: &str) -> bool {
     let upper = text.to_uppercase();
     ["ISO", "VG", "AGMA", "SAE"]
         .iter()
@@ -108,7 +108,7 @@ fn unknown_iso(text: &str, number: &str) -> Fault {
         return fault.mend(Mend::new(all, "ISO VG 220").remark("or the right grade"));
     };
     let middle = |g: &IsoGrade| f64::from(g.number());
-    let below = IsoGrade::all().filter(|g| middle(g) <= value).next_back();
+    let below = IsoGrade::all().rfind(|g| middle(g) <= value);
     let above = IsoGrade::all().find(|g| middle(g) > value);
     below.into_iter().chain(above).fold(fault, |f, g| {
         f.mend(Mend::new(all.clone(), format!("ISO VG {}", g.number())))
