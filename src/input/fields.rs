@@ -34,12 +34,16 @@ pub struct Slot<'t> {
 #[derive(Clone, Debug)]
 pub struct Fields<'t> {
     slots: BTreeMap<&'static str, Slot<'t>>,
+    /// Keys that are there, though nothing could be read behind them.
+    unread: Vec<&'static str>,
     /// Which record it is.
     pub record: &'static Record,
     /// Where it stands.
     pub span: Span,
     /// The machine, part or oil it is.
     pub within: Rc<str>,
+    /// Whether it is no record at all; reported, and nothing is missing in it.
+    pub broken: bool,
 }
 
 impl<'t> Fields<'t> {
@@ -47,9 +51,11 @@ impl<'t> Fields<'t> {
     pub fn empty(record: &'static Record, span: Span, within: &str) -> Self {
         Self {
             slots: BTreeMap::new(),
+            unread: Vec::new(),
             record,
             span,
             within: within.into(),
+            broken: false,
         }
     }
 
@@ -67,9 +73,12 @@ impl<'t> Fields<'t> {
                     fields.take(reader, entry);
                 }
             }
-            NodeKind::Refused => {}
+            NodeKind::Refused => fields.broken = true,
             _ if node.is_blank() => {}
-            _ => record_wanted(reader, node, record, within),
+            _ => {
+                fields.broken = true;
+                record_wanted(reader, node, record, within);
+            }
         }
         fields
     }
@@ -91,9 +100,11 @@ impl<'t> Fields<'t> {
         }
         if entry.value.is_blank() {
             value_missing(reader, key, entry, &self.within);
+            self.unread.push(key.name);
             return;
         }
         if matches!(entry.value.kind, NodeKind::Refused) {
+            self.unread.push(key.name);
             return;
         }
         self.slots.insert(
@@ -123,9 +134,24 @@ impl<'t> Fields<'t> {
         self.get(name).is_some()
     }
 
+    /// Whether a key is nowhere to be seen, not even with something that cannot be read.
+    pub fn lacks(&self, name: &str) -> bool {
+        !self.broken && !self.has(name) && !self.unread.contains(&name)
+    }
+
     /// Drops a key.
     pub fn remove(&mut self, name: &str) -> Option<Slot<'t>> {
         self.slots.remove(name)
+    }
+
+    /// Puts a value in, whatever was there.
+    pub fn put(&mut self, slot: Slot<'t>) {
+        self.slots.insert(slot.key.name, slot);
+    }
+
+    /// Changes every value's slot.
+    pub fn for_each(&mut self, change: impl FnMut(&mut Slot<'t>)) {
+        self.slots.values_mut().for_each(change);
     }
 
     /// Every value, in the order of the files.
@@ -150,17 +176,10 @@ impl<'t> Fields<'t> {
         }
     }
 
-    /// Puts values above these: what is stated there counts.
-    pub fn overlay(&mut self, above: &Self) {
-        for (name, slot) in &above.slots {
-            self.slots.insert(name, slot.clone());
-        }
-    }
-
     /// Reports the keys that must be there and are not.
     pub fn must(&self, reader: &mut Reader<'_>, node: &Node) {
         for name in self.record.must {
-            let Some(key) = self.record.key(name).filter(|_| !self.has(name)) else {
+            let Some(key) = self.record.key(name).filter(|_| self.lacks(name)) else {
                 continue;
             };
             let message = format!("no `{name}` in {}", self.record.name);
@@ -223,7 +242,7 @@ impl Slot<'_> {
 }
 
 /// The beginning of a record, as far as its first line goes.
-fn first_line(reader: &Reader<'_>, node: &Node) -> Span {
+pub(in crate::input) fn first_line(reader: &Reader<'_>, node: &Node) -> Span {
     let text = reader.source(node);
     let start = node.span.start as usize;
     let line = text

@@ -5,6 +5,10 @@ mod facts;
 mod other;
 mod viscosity;
 
+pub(super) use facts::{one, set};
+pub(super) use other::say_unusual;
+pub(super) use viscosity::stated_twice;
+
 use super::fields::Fields;
 use super::keys::{is_private, oil::OIL};
 use super::like::{self, Copying};
@@ -52,7 +56,11 @@ pub fn read(
         .filter_map(|entry| {
             let id = entry.key.text.trim();
             let fields = copied(reader, &own, id, complete);
-            build::oil(reader, id, entry, &fields, rules)
+            let oil = build::oil(reader, id, entry, &fields, rules);
+            if oil.is_none() {
+                reader.unread_oils.insert(id.to_owned());
+            }
+            oil
         })
         .collect()
 }

@@ -13,8 +13,8 @@ use super::value::{self, At, Body, Clauses, Deviation, Fault, Mend, Want};
 use crate::model::oil::{DynamicPoint, ViscosityPoint};
 use crate::problem::{Code, Write};
 use crate::quantity::{DynamicViscosity, Kind, Measure, Ratio};
-use crate::source::Origin;
 use crate::source::place::{Given, Whose};
+use crate::source::{Origin, Span};
 
 const POINT: Want = Want::one(&[
     Kind::KinematicViscosity,
@@ -57,15 +57,7 @@ pub fn read(reader: &mut Reader<'_>, slot: &Slot<'_>, dense: Option<&Dense>) -> 
     };
     listed.test.clone_from(&whole.test);
     if listed.test.is_some() && slot.key.name != SHEARED {
-        let fault = Fault::new(
-            Code::ClauseUnwanted,
-            "a test named behind viscosities of the new oil",
-            0..0,
-        )
-        .why(
-            "only what was measured after a shear test has one; those points stand under `sheared`",
-        );
-        reader.faults(slot.node, vec![fault], &slot.within);
+        test_unwanted(reader, slot);
         listed.faulty = true;
     }
     let list_of = List { slot, whole, dense };
@@ -75,6 +67,34 @@ pub fn read(reader: &mut Reader<'_>, slot: &Slot<'_>, dense: Option<&Dense>) -> 
         }
     }
     listed
+}
+
+/// A test behind viscosities that come from none.
+fn test_unwanted(reader: &mut Reader<'_>, slot: &Slot<'_>) {
+    let text = reader.set.slice(slot.node.span);
+    let start = text.rfind("test ").unwrap_or(0);
+    let comma = text[..start].trim_end_matches([' ', ',']).len();
+    let end = text[start..]
+        .rfind('"')
+        .map_or(text.len(), |quote| start + quote + 1);
+    let part = |from: usize, to: usize| Span {
+        start: slot.node.span.start + u32::try_from(from).unwrap_or(0),
+        end: slot.node.span.start + u32::try_from(to).unwrap_or(0),
+        ..slot.node.span
+    };
+    let problem = reader
+        .at(
+            Code::ClauseUnwanted,
+            "a test named behind viscosities of the new oil",
+            part(start, end),
+            &slot.within,
+        )
+        .why(
+            "only what was measured after a shear test has one; those points stand under `sheared`",
+        )
+        .write(Write::edit(part(comma, end), ""))
+        .write(Write::edit(slot.name.span, SHEARED));
+    reader.report(problem);
 }
 
 /// What every item of a list shares.

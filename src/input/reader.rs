@@ -4,6 +4,7 @@ use super::value::{Fault, Mend};
 use crate::problem::{Code, Edit, Problem, Problems, Write};
 use crate::source::yaml::{Node, NodeKind, Scalar, Style};
 use crate::source::{Place, SourceSet, Span};
+use std::collections::BTreeSet;
 
 /// The texts of a run and its problems.
 pub struct Reader<'a> {
@@ -11,9 +12,20 @@ pub struct Reader<'a> {
     pub set: &'a SourceSet,
     /// The collector.
     pub problems: &'a mut Problems,
+    /// Oils that are in the files but could not be read: not unknown, only unusable.
+    pub unread_oils: BTreeSet<String>,
 }
 
-impl Reader<'_> {
+impl<'a> Reader<'a> {
+    /// A reader of some texts.
+    pub fn new(set: &'a SourceSet, problems: &'a mut Problems) -> Self {
+        Self {
+            set,
+            problems,
+            unread_oils: BTreeSet::new(),
+        }
+    }
+
     /// Reports a problem at a span.
     pub fn report(&mut self, problem: Problem) {
         self.problems.push(problem);

@@ -24,7 +24,7 @@ pub mod want;
 pub use body::{Body, Deviation};
 pub use clauses::{Clauses, Said};
 pub use fault::{Fault, Mend};
-pub use want::{At, Ends, Want};
+pub use want::{At, Ends, Roughness, Want};
 
 use crate::problem::Code;
 
@@ -37,6 +37,8 @@ pub struct Value {
     pub clauses: Clauses,
     /// The body as written.
     pub written: String,
+    /// Which roughness was written, where one was named.
+    pub roughness: Option<Roughness>,
 }
 
 /// Reads a value of the kind wanted.
@@ -46,7 +48,9 @@ pub struct Value {
 pub fn read(text: &str, want: &Want) -> Result<Value, Vec<Fault>> {
     let split = clauses::split(text);
     let head = &text[split.head.clone()];
-    let body = body::read(head, want).map_err(|f| f.shifted(split.head.start));
+    let (roughness, bare) = named_roughness(head, want);
+    let from = split.head.end - bare.len();
+    let body = body::read(bare, want).map_err(|f| f.shifted(from));
     let mut faults = split.faults;
     if let Some(at) = &split.test_at
         && !want.test
@@ -70,6 +74,7 @@ pub fn read(text: &str, want: &Want) -> Result<Value, Vec<Fault>> {
             body,
             clauses: split.clauses,
             written: head.to_owned(),
+            roughness,
         }),
         Ok(_) => Err(faults),
         Err(fault) => {
@@ -77,6 +82,20 @@ pub fn read(text: &str, want: &Want) -> Result<Value, Vec<Fault>> {
             Err(faults)
         }
     }
+}
+
+/// Parts `Ra` or `Rq` from a roughness.
+fn named_roughness<'t>(head: &'t str, want: &Want) -> (Option<Roughness>, &'t str) {
+    if want.roughness.is_none() {
+        return (None, head);
+    }
+    for roughness in [Roughness::Ra, Roughness::Rq] {
+        let rest = head.strip_prefix(roughness.symbol());
+        if let Some(rest) = rest.filter(|r| r.starts_with(' ')) {
+            return (Some(roughness), rest.trim_start());
+        }
+    }
+    (None, head)
 }
 
 /// Reads words with clauses behind them: a value that is no quantity.

@@ -3,11 +3,12 @@
 use super::{Fields, Slot};
 use crate::input::keys::Form;
 use crate::input::reader::Reader;
-use crate::input::value::{self, Body, Clauses, Deviation, Value, Want};
+use crate::input::value::{self, Body, Clauses, Deviation, Roughness, Value, Want};
 use crate::model::stated::{Between, Bound, Stated, Tolerance};
 use crate::problem::{Code, Write};
 use crate::quantity::parse::Read;
-use crate::quantity::{Amount, Kind, Measure};
+use crate::quantity::{Amount, Kind, Length, Measure};
+use crate::relation::film::roughness::rq_from_ra;
 use crate::source::place::{Given, Whose};
 use crate::source::{Origin, Place};
 
@@ -64,6 +65,26 @@ impl Slot<'_> {
         }
     }
 
+    /// Carries a roughness stated by the other mean to the one wanted: Rq = 1.25 Ra.
+    fn as_wanted(&self, value: &mut Value) {
+        let Form::Quantity(want) = &self.key.form else {
+            return;
+        };
+        let factor = match (want.roughness, value.roughness) {
+            (Some(Roughness::Ra), Some(Roughness::Rq)) => 1.0 / rq_over_ra(),
+            (Some(Roughness::Rq), Some(Roughness::Ra)) => rq_over_ra(),
+            _ => return,
+        };
+        match &mut value.body {
+            Body::One { read, .. } => read.amount.base *= factor,
+            Body::Unknown(Some((lo, hi))) => {
+                lo.amount.base *= factor;
+                hi.amount.base *= factor;
+            }
+            _ => {}
+        }
+    }
+
     /// A speed of exactly 50 or 60 Hz is more often the mains than a shaft.
     fn mains(&self, reader: &mut Reader<'_>, value: &Value) {
         let Body::One { read, .. } = &value.body else {
@@ -100,7 +121,8 @@ impl Fields<'_> {
         make: impl Fn(Amount) -> Option<T>,
     ) -> Option<Stated<T>> {
         let slot = self.get(name)?;
-        let value = slot.value(reader)?;
+        let mut value = slot.value(reader)?;
+        slot.as_wanted(&mut value);
         stated_of(slot, value, make)
     }
 
@@ -133,6 +155,11 @@ impl Fields<'_> {
         let value = slot.value(reader)?;
         bound_of(slot, value)
     }
+}
+
+/// The usual ratio of the two means of a profile.
+fn rq_over_ra() -> f64 {
+    rq_from_ra(Length::from_base(1.0)).base()
 }
 
 /// A value as the model keeps it.

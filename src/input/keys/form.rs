@@ -1,7 +1,7 @@
 //! What a key takes.
 
 use super::Record;
-use crate::input::value::{At, Ends, Want};
+use crate::input::value::{At, Ends, Roughness, Want};
 use crate::quantity::Kind;
 
 /// The form of a value.
@@ -212,6 +212,11 @@ pub(crate) const VISCOSITY: &[Kind] = &[
 /// One value or unknown.
 pub(crate) const fn stated(kinds: &'static [Kind]) -> Form {
     Form::Quantity(Want::stated(kinds))
+}
+
+/// A roughness, known or not.
+pub(crate) const fn rough(roughness: Roughness) -> Form {
+    Form::Quantity(Want::stated(LENGTH).rough(roughness))
 }
 
 /// One value that must be known.

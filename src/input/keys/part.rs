@@ -2,10 +2,10 @@
 
 use super::form::{
     ANGLE, AREA, DYNAMIC, FORCE, Form, LENGTH, NUMBER, POWER, PRESSURE, RISE, Refers, SPEED,
-    TEMPERATURE, TORQUE, VELOCITY, VISCOSITY, one, stated,
+    TEMPERATURE, TORQUE, VELOCITY, VISCOSITY, one, rough, stated,
 };
 use super::{Key, Record, key};
-use crate::input::value::{At, Want};
+use crate::input::value::{At, Roughness, Want};
 use crate::quantity::Kind;
 
 /// Types of rolling bearing.
@@ -105,8 +105,8 @@ pub static ROLLING_BEARING: Record = part!("a rolling bearing", &[
         key("element length", stated(LENGTH), "–", "Effective length of a roller."),
         key("contact angle", stated(ANGLE), "0 deg", "Contact angle under load."),
         key("conformity", one(NUMBER), "0.52", "Groove radius over ball diameter."),
-        key("ring roughness", stated(LENGTH), "–", "Rq of the raceways."),
-        key("element roughness", stated(LENGTH), "–", "Rq of the rolling elements."),
+        key("ring roughness", rough(Roughness::Rq), "–", "Rq of the raceways."),
+        key("element roughness", rough(Roughness::Rq), "–", "Rq of the rolling elements."),
     ]
 );
 
@@ -139,7 +139,7 @@ const GEAR_KEYS: &[Key] = &[
     key("helix", stated(ANGLE), "0 deg", "Helix angle at the reference cylinder."),
     key("pressure angle", stated(ANGLE), "20 deg", "Normal pressure angle."),
     key("application factor", one(NUMBER), "1", "Application and load factors together."),
-    key("flank roughness", stated(LENGTH), "–", "Ra of the flanks; `Ra 0.3 um` is understood."),
+    key("flank roughness", rough(Roughness::Ra), "–", "Ra of the flanks; Rq is carried over where it is named."),
     key("film ratio", one(NUMBER), "none asked", "Film ratio asked for; turns the film into a demand."),
 ];
 
@@ -205,7 +205,7 @@ pub static JOURNAL_BEARING: Record = part!("a journal bearing", &[
         key("feed temperature", stated(TEMPERATURE), "the sump's", "Temperature of the oil fed."),
         key("feed pressure", stated(PRESSURE), "–", "Pressure of the oil fed."),
         key("casing area", stated(AREA), "–", "Surface that gives off heat."),
-        key("shaft roughness", stated(LENGTH), "–", "Ra of the shaft."),
+        key("shaft roughness", rough(Roughness::Ra), "–", "Ra of the shaft."),
         key("lining", Form::Text, "–", "Material of the lining."),
     ]
 );
@@ -244,8 +244,8 @@ pub static CONTACT: Record = part!("a contact", &[
         key("E2", stated(PRESSURE), "steel", "Young's modulus of the second body."),
         key("poisson1", stated(NUMBER), "0.3", "Poisson's ratio of the first body."),
         key("poisson2", stated(NUMBER), "0.3", "Poisson's ratio of the second body."),
-        key("roughness 1", stated(LENGTH), "gap", "Rq of the first body."),
-        key("roughness 2", stated(LENGTH), "gap", "Rq of the second body."),
+        key("roughness 1", rough(Roughness::Rq), "gap", "Rq of the first body."),
+        key("roughness 2", rough(Roughness::Rq), "gap", "Rq of the second body."),
         key("film ratio", one(NUMBER), "1", "Film ratio asked for."),
     ]
 );

@@ -44,7 +44,9 @@ pub(super) fn viscosity(
         "viscosity"
     };
     let Some(slot) = fields.get(name) else {
-        missing(reader, sheet.entry, sheet.kind);
+        if fields.lacks(name) {
+            missing(reader, sheet.entry, sheet.kind);
+        }
         return None;
     };
     let listed = points::read(reader, slot, Some(&density.dense));

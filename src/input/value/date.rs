@@ -42,14 +42,25 @@ pub fn read(text: &str) -> Result<String, Fault> {
 /// # Errors
 /// As [`read`]; a year or a month alone is not enough.
 pub fn day(text: &str) -> Result<Date, Fault> {
-    let date = one(text)?;
-    if text.len() < "2026-07-18".len() {
+    let date = one(text).map_err(|mut fault| {
+        for mend in &mut fault.mends {
+            if let (true, Ok(date)) = (mend.text.len() < WHOLE, one(&mend.text)) {
+                mend.text = date.strftime("%Y-%m-%d").to_string();
+                mend.remark = Some("with the right day".into());
+            }
+        }
+        fault
+    })?;
+    if text.len() < WHOLE {
         let whole = date.strftime("%Y-%m-%d").to_string();
         return Err(form(text, "a day is wanted, as 2026-07-18")
             .mend(Mend::new(0..text.len(), whole).remark("with the right day")));
     }
     Ok(date)
 }
+
+/// Characters of a whole date.
+const WHOLE: usize = "2026-07-18".len();
 
 /// The first day of a year, of a month, or the day itself.
 fn one(text: &str) -> Result<Date, Fault> {

@@ -23,6 +23,27 @@ pub struct Want {
     pub at: At,
     /// Whether a test may be named.
     pub test: bool,
+    /// Which roughness it is, where it is one: `Ra 0.3 um`.
+    pub roughness: Option<Roughness>,
+}
+
+/// Which mean of a profile a roughness is.
+#[derive(Clone, Copy, Debug, PartialEq, Eq)]
+pub enum Roughness {
+    /// Arithmetic mean, as drawings state it.
+    Ra,
+    /// Root mean square, as film ratios use it.
+    Rq,
+}
+
+impl Roughness {
+    /// Its symbol.
+    pub const fn symbol(self) -> &'static str {
+        match self {
+            Self::Ra => "Ra",
+            Self::Rq => "Rq",
+        }
+    }
 }
 
 /// How many ends a value has.
@@ -58,6 +79,7 @@ impl Want {
             held: false,
             at: At::Never,
             test: false,
+            roughness: None,
         }
     }
 
@@ -96,6 +118,13 @@ impl Want {
         self
     }
 
+    /// The same as a roughness, known or not.
+    #[must_use]
+    pub const fn rough(mut self, roughness: Roughness) -> Self {
+        self.roughness = Some(roughness);
+        self
+    }
+
     /// The same, and a test may be named.
     #[must_use]
     pub const fn with_test(mut self) -> Self {
@@ -116,7 +145,10 @@ impl Want {
 
     /// A right example.
     pub fn example(&self) -> String {
-        let one = self.kind().spec().example.to_owned();
+        let one = match self.roughness {
+            Some(roughness) => format!("{} 0.4 um", roughness.symbol()),
+            None => self.kind().spec().example.to_owned(),
+        };
         let with_ends = match (self.ends, self.kind()) {
             (Ends::Range, Kind::Temperature) => "-18 .. 36 degC".to_owned(),
             (Ends::Range, _) => format!("{one} .. {one}"),

@@ -125,7 +125,7 @@ impl Builder<'_> {
                 },
                 start,
             )?,
-            Event::MappingEnd | Event::SequenceEnd => self.close(end),
+            Event::MappingEnd | Event::SequenceEnd => self.close(end, false),
             _ => {}
         }
         self.last_end = end.max(self.last_end);
@@ -211,7 +211,7 @@ impl Builder<'_> {
         Ok(())
     }
 
-    fn close(&mut self, end: usize) {
+    fn close(&mut self, end: usize, cut_off: bool) {
         let node = match self.stack.pop() {
             Some(Open::Map {
                 start,
@@ -236,7 +236,7 @@ impl Builder<'_> {
         let (start, end, kind) = node;
         let node = Node {
             span: self.span(start, end),
-            kind,
+            kind: if cut_off { NodeKind::Refused } else { kind },
         };
         self.place(node);
     }
@@ -275,8 +275,11 @@ impl Builder<'_> {
         if !complete {
             self.drop_last();
         }
-        while !self.stack.is_empty() {
-            self.close(self.last_end);
+        while let Some(open) = self.stack.last() {
+            let (Open::Map { flow, .. } | Open::Seq { flow, .. }) = open;
+            // Where a bracket is open at the break, nobody knows what belongs inside it.
+            let cut_off = *flow;
+            self.close(self.last_end, cut_off);
         }
         if self.root.is_none() && complete {
             self.fault(FaultKind::Empty, 0, 0);
