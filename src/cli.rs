@@ -1,7 +1,12 @@
 //! The command line: what may be typed, with every help text; no logic.
 
+mod commands;
 pub mod exit;
 pub mod host;
+pub mod run;
+mod session;
+mod text;
+mod text_of;
 
 use clap::{Args, Parser, Subcommand, ValueEnum};
 

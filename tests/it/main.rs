@@ -4,6 +4,7 @@ mod chance;
 mod checks;
 mod journal_heat;
 mod journal_table;
+mod problems;
 mod properties_film;
 mod properties_oil;
 mod reference_film;
