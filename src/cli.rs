@@ -1,12 +1,13 @@
 //! The command line: what may be typed, with every help text; no logic.
 
-mod commands;
+pub mod commands;
 pub mod exit;
 pub mod host;
+pub mod load;
 pub mod run;
-mod session;
-mod text;
-mod text_of;
+pub mod session;
+pub mod text;
+pub mod text_of;
 
 use clap::{Args, Parser, Subcommand, ValueEnum};
 

@@ -1,7 +1,8 @@
 //! `weigh`: candidate oils against what machines need.
 
 use crate::cli::exit::Exit;
-use crate::cli::session::{Loaded, Session};
+use crate::cli::load::Loaded;
+use crate::cli::session::Session;
 use crate::cli::text_of::weigh::{Style, one};
 use crate::cli::{AsState, Format, Gate, Weigh};
 use crate::judge::Verdict;
