@@ -2,6 +2,7 @@
 
 mod chance;
 mod checks;
+mod demo;
 mod journal_heat;
 mod journal_table;
 mod problems;
@@ -13,4 +14,5 @@ mod reference_oil;
 mod refusals_film;
 mod refusals_oil;
 mod rules;
+mod scenario;
 mod work_journal;
