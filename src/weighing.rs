@@ -254,17 +254,13 @@ impl<'a> Scales<'a> {
         let j = &candidate.judgement;
         let setting = usize::from(j.hot.or(j.cold).or(j.pour).map_or(0, |m| m.setting));
         let oil = &self.oils[candidate.oil];
-        let worn = oil
-            .loss_variants(weighed.ready.severe)
-            .last()
-            .and_then(Option::as_ref);
         let trace = weighed.trace_of(setting, &self.site.house, self.rules);
         explain(
             &trace.0,
             &trace.1,
             &weighed.ready.settings[setting],
             (&self.site.oils[candidate.oil], oil),
-            worn,
+            oil.worst(&weighed.ready),
         )
     }
 }

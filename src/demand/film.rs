@@ -3,10 +3,11 @@
 
 use crate::numeric::math::{exp, ln};
 use crate::oil::Curves;
-use crate::quantity::convert::{dynamic, kinematic};
+use crate::oil::thinning::{End as ShearEnd, Kept};
+use crate::quantity::convert::{dynamic, kinematic, number};
 use crate::quantity::{
     AngularVelocity, DynamicViscosity, Force, KinematicViscosity, Length, Measure, Pressure,
-    PressureViscosity, ThermodynamicTemperature, Velocity,
+    PressureViscosity, Ratio, ShearRate, ThermodynamicTemperature, Velocity,
 };
 use crate::relation::Law;
 use crate::relation::bearing::film::{self as bearing, Duty, Element, at_race};
@@ -14,6 +15,7 @@ use crate::relation::bearing::kinematics::{Inside, Race};
 use crate::relation::film::groups::{Inlet, LineLoad, PointLoad, of_ellipse, of_line};
 use crate::relation::film::{ellipse, inverse, line};
 use crate::relation::gear::film::{self as tooth, ToothContact};
+use crate::relation::oil::temporary_shear::contact_rate;
 use crate::relation::oil::viscosity_temperature::Line;
 use crate::relation::outside::Outside;
 
@@ -83,6 +85,15 @@ impl FilmContact {
         }
     }
 
+    /// Mean speed of the surfaces, which draws the oil in; `None` for a geometry without one.
+    pub fn speed(self) -> Option<Velocity> {
+        match self {
+            Self::Line { speed, .. } | Self::Ellipse { speed, .. } => Some(speed),
+            Self::Race { inside, speed, .. } => inside.rolling_speed(speed).ok(),
+            Self::Tooth(contact) => Some(Velocity::from_base(0.5 * contact.sum_speed.base())),
+        }
+    }
+
     /// Film at a viscosity and pressure-viscosity coefficient.
     ///
     /// # Errors
@@ -124,57 +135,93 @@ impl FilmContact {
     }
 }
 
+/// An oil as a film demand meets it: at a temperature, thinned by the shear of the contact.
+#[derive(Clone, Copy, Debug)]
+pub struct InContact<'o> {
+    /// Its data.
+    pub oil: &'o Curves,
+    /// Its line there.
+    pub line: Line,
+    /// The temperature.
+    pub at: ThermodynamicTemperature,
+    /// Share of its viscosity that it keeps under the shear of the contact; 1 without polymer.
+    pub kept: Ratio,
+}
+
 impl FilmDemand {
-    /// The film of an oil at a temperature; `None` where its pressure-viscosity coefficient is
-    /// not known.
-    pub fn film_of(
+    /// Shear rate at the inlet once the wanted film is reached.
+    pub fn shear_rate(&self) -> Option<ShearRate> {
+        self.contact
+            .speed()
+            .map(|speed| contact_rate(speed, self.wanted))
+    }
+
+    /// What a polymer-thickened oil of this viscosity keeps in the contact; `None` for an oil
+    /// that does not thin, or of whose polymer nothing is known.
+    pub fn thinned(
         &self,
-        line: Line,
         oil: &Curves,
         nu: KinematicViscosity,
         at: ThermodynamicTemperature,
-    ) -> Option<Length> {
+        end: ShearEnd,
+    ) -> Option<Kept> {
+        oil.thinning.as_ref()?.kept(nu, at, self.shear_rate()?, end)
+    }
+
+    /// An oil of a line at a temperature as this contact meets it.
+    pub fn meet<'o>(
+        &self,
+        oil: &'o Curves,
+        line: Line,
+        at: ThermodynamicTemperature,
+        end: ShearEnd,
+    ) -> InContact<'o> {
+        let kept = self.thinned(oil, line.nu_at(at), at, end);
+        InContact {
+            oil,
+            line,
+            at,
+            kept: kept.map_or(number(1.0), |k| k.viscosity),
+        }
+    }
+
+    /// The film of an oil of that viscosity at rest; `None` where its pressure-viscosity
+    /// coefficient is not known.
+    pub fn film_of(&self, met: InContact<'_>, nu: KinematicViscosity) -> Option<Length> {
+        let (oil, at) = (met.oil, met.at);
         let alpha = oil
             .pressure
-            .alpha(line.parallel_through(nu, at), oil.density, at)?;
+            .alpha(met.line.parallel_through(nu, at), oil.density, at)?;
+        let under_shear = KinematicViscosity::from_base(nu.base() * met.kept.base());
         self.contact
-            .film(dynamic(nu, oil.density.at(at)), alpha)
+            .film(dynamic(under_shear, oil.density.at(at)), alpha)
             .ok()
     }
 
-    /// The kinematic viscosity this oil would need, slid without turning. The film is close to a
-    /// power of the viscosity, so a few secant steps in the logarithms settle it; where they do
-    /// not, the bracketed solution of the same equation stands (a test compares the two).
-    pub fn viscosity_needed(
-        &self,
-        line: Line,
-        oil: &Curves,
-        at: ThermodynamicTemperature,
-    ) -> Option<KinematicViscosity> {
+    /// The kinematic viscosity at rest this oil would need, slid without turning. The film is
+    /// close to a power of the viscosity, so a few secant steps in the logarithms settle it;
+    /// where they do not, the bracketed solution of the same equation stands (a test compares
+    /// the two).
+    pub fn viscosity_needed(&self, met: InContact<'_>) -> Option<KinematicViscosity> {
         let excess = |ln_nu: f64| -> Option<f64> {
             let nu = KinematicViscosity::from_base(exp(ln_nu));
-            self.film_of(line, oil, nu, at)
+            self.film_of(met, nu)
                 .map(|h| ln(h.base() / self.wanted.base()))
         };
-        let start = ln(line.nu_at(at).base());
+        let start = ln(met.line.nu_at(met.at).base());
         if let Some(ln_nu) = secant(start, excess) {
             return Some(KinematicViscosity::from_base(exp(ln_nu)));
         }
-        self.viscosity_bracketed(line, oil, at)
+        self.viscosity_bracketed(met)
     }
 
     /// The same by the bracketed root.
-    pub fn viscosity_bracketed(
-        &self,
-        line: Line,
-        oil: &Curves,
-        at: ThermodynamicTemperature,
-    ) -> Option<KinematicViscosity> {
-        let rho = oil.density.at(at);
-        oil.pressure.alpha(line, oil.density, at)?;
+    pub fn viscosity_bracketed(&self, met: InContact<'_>) -> Option<KinematicViscosity> {
+        let rho = met.oil.density.at(met.at);
+        met.oil.pressure.alpha(met.line, met.oil.density, met.at)?;
         inverse::viscosity(self.wanted, None, |eta| {
             let nu = kinematic(eta, rho);
-            self.film_of(line, oil, nu, at).ok_or(Outside::NoAnswer {
+            self.film_of(met, nu).ok_or(Outside::NoAnswer {
                 what: "the film",
                 why: "the pressure-viscosity coefficient is not known",
             })

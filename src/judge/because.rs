@@ -20,7 +20,7 @@ pub fn because(
     let teller = Teller {
         point,
         settings: &ready.settings,
-        severe: ready.severe,
+        ready,
         oil,
         units,
     };
@@ -44,7 +44,7 @@ fn holds(j: &Judgement) -> String {
 struct Teller<'a> {
     point: &'a PointDemands,
     settings: &'a [Setting],
-    severe: bool,
+    ready: &'a PreparedPoint,
     oil: &'a PreparedOil,
     units: Units,
 }
@@ -176,8 +176,10 @@ impl Teller<'_> {
             ReadyLimit::Jaw(jaw) => jaw.nu,
             ReadyLimit::Dynamic(eta) => eta / self.oil.curves.density.at(at).base(),
             ReadyLimit::Film(film) => {
-                let line = self.oil.thin.at(t).line;
-                film.viscosity_needed(line, &self.oil.curves, at)?.base()
+                let worst = self.oil.worst(self.ready);
+                let curve = worst.worn.as_ref().unwrap_or(&self.oil.thin);
+                let met = film.meet(&self.oil.curves, curve.at(t).line, at, worst.under_shear);
+                film.viscosity_needed(met)?.base()
             }
             _ => return None,
         };
@@ -226,10 +228,7 @@ impl Teller<'_> {
     }
 
     fn worst_worn(&self) -> Option<&Ready> {
-        self.oil
-            .loss_variants(self.severe)
-            .last()
-            .and_then(Option::as_ref)
+        self.oil.worst(self.ready).worn.as_ref()
     }
 
     fn open(&self, j: &Judgement) -> Vec<String> {

@@ -1,20 +1,21 @@
 //! The steps behind one verdict, by the relations the judge used, told to a recorder.
 
+mod film;
+
 use super::margin::Ready;
-use super::prepared::{PreparedOil, ReadyDemand, ReadyLimit, Setting};
+use super::prepared::{PreparedOil, ReadyDemand, ReadyLimit, Setting, Variant};
 use super::weigh::Judgement;
-use crate::demand::film::FilmDemand;
 use crate::demand::{Demand, End};
 use crate::model::Oil;
 use crate::model::oil::{Shear, Viscosity, ViscosityPoint};
 use crate::oil::Worn;
+use crate::oil::thinning::End as ShearEnd;
 use crate::quantity::convert::{celsius, kinematic, rise};
 use crate::quantity::show::{Toward, Units, quantity};
 use crate::quantity::{
     DynamicViscosity, KinematicViscosity, Measure, TemperatureInterval, ThermodynamicTemperature,
     VgStep,
 };
-use crate::relation::film::inverse;
 use crate::relation::oil::tangent::TANGENT;
 use crate::relation::oil::vg_step::{ABOVE, BELOW, CARRIED, carried_to_40, steps};
 use crate::relation::oil::viscosity_temperature::VISCOSITY;
@@ -60,13 +61,13 @@ enum Which {
 }
 
 /// Explains a judgement in one setting of the unknowns. `trace` and `list` are the demands of
-/// that setting, `worn` the worn curve that was worst.
+/// that setting, `variant` the worst of what is not known of the oil's polymer.
 pub fn explain(
     trace: &Derivation,
     list: &[Demand],
     setting: &Setting,
     oil: (&Oil, &PreparedOil),
-    worn: Option<&Ready>,
+    variant: &Variant,
 ) -> Explanation {
     let mut told = Explanation {
         trace: trace.clone(),
@@ -75,7 +76,8 @@ pub fn explain(
     let mut teller = Teller {
         oil: oil.0,
         ready: oil.1,
-        worn,
+        worn: variant.worn.as_ref(),
+        under_shear: variant.under_shear,
         points: Vec::new(),
     };
     for ready in &setting.demands {
@@ -97,6 +99,7 @@ struct Teller<'a> {
     oil: &'a Oil,
     ready: &'a PreparedOil,
     worn: Option<&'a Ready>,
+    under_shear: ShearEnd,
     points: Vec<(Which, CurveSteps)>,
 }
 
@@ -171,6 +174,18 @@ impl Teller<'_> {
         t: Known<ThermodynamicTemperature>,
     ) -> Explained {
         let which = self.which(ready, limit.value.base(), t.value.base());
+        self.viscosity_on(d, ready, limit, t, which)
+    }
+
+    /// The same on one of the curves.
+    fn viscosity_on(
+        &mut self,
+        d: &mut Derivation,
+        ready: &ReadyDemand,
+        limit: Known<KinematicViscosity>,
+        t: Known<ThermodynamicTemperature>,
+        which: Which,
+    ) -> Explained {
         let curve = self.curve(which).clone();
         let nu = self.nu_at(d, which, t, says_at(which));
         let straight = curve.at(t.value.base());
@@ -320,60 +335,6 @@ impl Teller<'_> {
             (("eta", limit), ("rho", rho)),
             |(e, r)| kinematic(e, r),
         )
-    }
-
-    fn film(
-        &mut self,
-        d: &mut Derivation,
-        ready: &ReadyDemand,
-        film: &FilmDemand,
-        t: Known<ThermodynamicTemperature>,
-    ) -> Option<Explained> {
-        // the curve judged is the one with the smaller margin; the need differs little between them
-        let mut best: Option<(Which, f64, KinematicViscosity)> = None;
-        for which in [Which::Thin, Which::Worn] {
-            if which == Which::Worn && self.worn.is_none() {
-                continue;
-            }
-            let straight = self.curve(which).at(t.value.base());
-            let need = film.viscosity_needed(straight.line, &self.ready.curves, t.value)?;
-            let value = straight.above(&super::margin::Jaw::new(need, t.value)).0;
-            if best.is_none_or(|(_, v, _)| value < v) {
-                best = Some((which, value, need));
-            }
-        }
-        let (which, _, need) = best?;
-        let line = self.curve(which).at(t.value.base()).line;
-        let oil = &self.ready.curves;
-        let alpha =
-            oil.pressure
-                .alpha(line.parallel_through(need, t.value), oil.density, t.value)?;
-        let wanted = d.assume(
-            "h_wanted",
-            "film asked for",
-            film.wanted,
-            "film ratio times roughness",
-        );
-        let alpha = d.law(
-            "alpha",
-            "pressure-viscosity coefficient at that viscosity",
-            oil.pressure.law()?,
-            (("t", t),),
-            |_: (ThermodynamicTemperature,)| alpha,
-        );
-        let limit = d.law(
-            "nu_min",
-            "viscosity the film needs, with this oil",
-            &inverse::VISCOSITY,
-            (("h", wanted), ("alpha", alpha), ("t", t)),
-            |_: (
-                crate::quantity::Length,
-                crate::quantity::PressureViscosity,
-                ThermodynamicTemperature,
-            )| need,
-        );
-        d.note(|| format!("film by {}", film.contact.law().source));
-        Some(self.viscosity(d, ready, limit, t))
     }
 
     fn pour(

@@ -8,6 +8,8 @@ use crate::demand::{AtAmbient, Demand, Demands, End, For, Limit, Standing};
 use crate::model::Oil;
 use crate::model::oil::OilKind;
 use crate::model::rulebook::{Confidence, Rulebook};
+use crate::oil::cold::Used;
+use crate::oil::thinning::End as ShearEnd;
 use crate::oil::{Curves, curves};
 use crate::quantity::{KinematicViscosity, Measure, ThermodynamicTemperature};
 use crate::relation::oil::viscosity_temperature::Misfit;
@@ -89,6 +91,8 @@ pub struct PreparedPoint {
     pub settings: Vec<Setting>,
     /// Whether it shears polymers as gears and rolling bearings do.
     pub severe: bool,
+    /// Whether a film is asked for somewhere.
+    pub films: bool,
     /// Reserve asked on this site, VG steps.
     pub reserve: f64,
 }
@@ -96,8 +100,11 @@ pub struct PreparedPoint {
 impl PreparedPoint {
     /// From the demands in each setting.
     pub fn new(settings: &[Demands], severe: bool, reserve: f64) -> Self {
+        let settings: Vec<Setting> = settings.iter().map(setting).collect();
+        let film = |d: &ReadyDemand| matches!(d.limit, ReadyLimit::Film(_));
         Self {
-            settings: settings.iter().map(setting).collect(),
+            films: settings.iter().any(|s| s.demands.iter().any(film)),
+            settings,
             severe,
             reserve,
         }
@@ -174,8 +181,19 @@ pub struct PreparedOil {
     cloud: Option<f64>,
     waxy: bool,
     coldest_measured: Option<f64>,
-    mild: Vec<Option<Ready>>,
-    severe: Vec<Option<Ready>>,
+    mild: Vec<Variant>,
+    severe: Vec<Variant>,
+    /// Whether the variants differ by what is lost under the shear of a film alone.
+    film_only: bool,
+}
+
+/// One end of what is not known of an oil's polymer.
+#[derive(Clone, Debug)]
+pub struct Variant {
+    /// The worn curve floors are judged on; none where nothing is lost for good.
+    pub worn: Option<Ready>,
+    /// What it loses for the time it is under the shear of a film.
+    pub under_shear: ShearEnd,
 }
 
 impl PreparedOil {
@@ -186,14 +204,18 @@ impl PreparedOil {
     pub fn new(oil: &Oil, rules: &Rulebook, worn: bool) -> Result<Self, Misfit> {
         let curves = curves(oil, rules)?;
         let thin = Ready::of(curves.thin.as_ref().unwrap_or(&curves.new));
-        let thick = Ready::of(curves.thick.as_ref().unwrap_or(&curves.new));
+        let thick = Ready::of(&curves.ceiling());
         let stock = rules.base_stock(curves.base);
-        let measured = [&oil.cold_viscosity, &oil.ccs, &oil.mrv]
-            .into_iter()
-            .flatten()
-            .map(|p| p.value.at.base())
-            .chain(oil.t150000.iter().map(|t| t.value.base()))
+        let measured = curves
+            .cold_points
+            .iter()
+            .filter(|p| p.used != Used::Crosses)
+            .map(|p| p.at.base())
             .min_by(f64::total_cmp);
+        let (mild, severe) = (
+            variants(&curves, false, worn),
+            variants(&curves, true, worn),
+        );
         let stated_pour = oil.pour_point.as_ref().map(|p| p.value.figure().base());
         let pour = stated_pour
             .map(|p| (p, p))
@@ -214,17 +236,38 @@ impl PreparedOil {
             cloud: oil.cloud_point.as_ref().map(|c| c.value.figure().base()),
             waxy: stock.is_some_and(|s| s.wax_bearing),
             coldest_measured: measured,
-            mild: variants(&curves, false, worn),
-            severe: variants(&curves, true, worn),
+            film_only: !worn || curves.loss_range(true).is_none(),
+            mild,
+            severe,
             thin,
             thick,
             curves,
         })
     }
 
-    /// The worn curves to judge floors on, one for each end of an unknown loss.
-    pub fn loss_variants(&self, severe: bool) -> &[Option<Ready>] {
-        if severe { &self.severe } else { &self.mild }
+    /// The ends of what is not known of its polymer, the worse last: permanent loss, and
+    /// temporary loss where the point asks for a film.
+    pub fn variants(&self, point: &PreparedPoint) -> &[Variant] {
+        let all = if point.severe {
+            &self.severe
+        } else {
+            &self.mild
+        };
+        if self.film_only && !point.films {
+            &all[all.len() - 1..]
+        } else {
+            all
+        }
+    }
+
+    /// The worst of them.
+    pub fn worst(&self, point: &PreparedPoint) -> &Variant {
+        let all = if point.severe {
+            &self.severe
+        } else {
+            &self.mild
+        };
+        &all[all.len() - 1]
     }
 
     /// Reserve asked, VG steps: half where the tolerance is judged already or points are measured.
@@ -239,6 +282,13 @@ impl PreparedOil {
     /// Whether the oil declares an additive or a class.
     pub fn declares(&self, tag: &str) -> bool {
         self.tags.iter().any(|t| t.eq_ignore_ascii_case(tag))
+    }
+
+    /// Start below the polymer's window of an oil known by two finished points alone: its line
+    /// says little there, and nobody measured it there.
+    pub fn window_doubt(&self, start: f64) -> bool {
+        let measured = self.coldest_measured.is_some_and(|m| m <= start + 1e-9);
+        !measured && self.window_end.is_some_and(|end| start < end - 1e-9)
     }
 
     /// Start so close to the pour point, or below the cloud point, that a waxy oil's line says
@@ -263,17 +313,25 @@ fn tags(oil: &Oil) -> Vec<String> {
     oil.facts.classes.iter().cloned().chain(additives).collect()
 }
 
-fn variants(curves: &Curves, severe: bool, worn: bool) -> Vec<Option<Ready>> {
-    if !worn {
-        return vec![None];
+/// Least and greatest of what may be lost go together: what is wanted are the ends.
+fn variants(curves: &Curves, severe: bool, worn: bool) -> Vec<Variant> {
+    let curve = |loss: f64| {
+        let curve = worn.then(|| curves.worn_after(loss)).flatten();
+        curve.map(|c| Ready::of(&c))
+    };
+    let range = worn.then(|| curves.loss_range(severe)).flatten();
+    let (least, most) = range.unwrap_or((0.0, 0.0));
+    let end = |loss: f64, under_shear| Variant {
+        worn: curve(loss),
+        under_shear,
+    };
+    if range.is_none() && curves.thinning.is_none() {
+        return vec![end(0.0, ShearEnd::MostLost)];
     }
-    match curves.loss_range(severe) {
-        Some((least, most)) => [least, most]
-            .into_iter()
-            .map(|loss| curves.worn_after(loss).map(|c| Ready::of(&c)))
-            .collect(),
-        None => vec![curves.worn_after(0.0).map(|c| Ready::of(&c))],
-    }
+    vec![
+        end(least, ShearEnd::LeastLost),
+        end(most, ShearEnd::MostLost),
+    ]
 }
 
 /// Margin, band and viscosity at a film demand: the limit is solved for this oil. `None` where
@@ -282,23 +340,25 @@ pub fn film_margin(
     demand: &ReadyDemand,
     film: &FilmDemand,
     oil: &PreparedOil,
-    worn: Option<&Ready>,
+    variant: &Variant,
 ) -> Option<(f64, Band, At)> {
-    let margin_at = |t: f64, curve: &Ready| -> Option<(f64, f64)> {
+    let met = |t: f64, curve: &Ready| {
         let at = ThermodynamicTemperature::from_base(t);
-        let line = curve.at(t);
-        let need = film.viscosity_needed(line.line, &oil.curves, at)?;
-        Some((line.above(&Jaw::new(need, at)).0, curve.nu(t)))
+        film.meet(&oil.curves, curve.at(t).line, at, variant.under_shear)
+    };
+    let margin_at = |t: f64, curve: &Ready| -> Option<(f64, f64)> {
+        let need = film.viscosity_needed(met(t, curve))?;
+        let jaw = Jaw::new(need, ThermodynamicTemperature::from_base(t));
+        Some((curve.at(t).above(&jaw).0, curve.nu(t)))
     };
     let mut best: Option<(f64, Band, At)> = None;
-    for curve in std::iter::once(&oil.thin).chain(worn) {
+    for curve in std::iter::once(&oil.thin).chain(variant.worn.as_ref()) {
         let (value, nu) = margin_at(demand.t, curve)?;
         // where the oil's own film reaches the wanted one, no viscosity need be solved for
         let band = Band::by_root(true, |ambient| {
             let t = demand.at.at(ambient);
-            let at = ThermodynamicTemperature::from_base(t);
             let nu = KinematicViscosity::from_base(curve.nu(t));
-            film.film_of(curve.at(t).line, &oil.curves, nu, at)
+            film.film_of(met(t, curve), nu)
                 .map_or(-1.0, |h| h.base() - film.wanted.base())
         });
         best = Some(match best {

@@ -2,7 +2,7 @@
 
 use super::band::Band;
 use super::margin::{Jaw, Ready};
-use super::prepared::{PreparedOil, PreparedPoint, ReadyDemand, ReadyLimit, Setting};
+use super::prepared::{PreparedOil, PreparedPoint, ReadyDemand, ReadyLimit, Setting, Variant};
 use super::verdict::Verdict;
 use crate::demand::End;
 use crate::quantity::{KinematicViscosity, Measure, ThermodynamicTemperature};
@@ -115,12 +115,12 @@ const ZERO: f64 = 1e-9;
 /// Never: a point always has at least one setting.
 pub fn weigh(point: &PreparedPoint, oil: &PreparedOil) -> Judgement {
     let mut total: Option<Judgement> = None;
-    let losses = oil.loss_variants(point.severe);
+    let variants = oil.variants(point);
     for (number, setting) in point.settings.iter().enumerate() {
-        for worn in losses {
+        for variant in variants {
             let number = u16::try_from(number).unwrap_or(u16::MAX);
             let (mut unmet, mut asked) = (Vec::new(), Vec::new());
-            let sum = one(setting, number, oil, worn.as_ref(), &mut unmet, &mut asked);
+            let sum = one(setting, number, (oil, variant), &mut unmet, &mut asked);
             match &mut total {
                 None => total = Some(begin(sum, unmet, asked, oil.reserve(point.reserve))),
                 Some(total) => combine(total, sum, unmet, asked),
@@ -235,8 +235,7 @@ impl Doubts {
 fn one(
     setting: &Setting,
     number: u16,
-    oil: &PreparedOil,
-    worn: Option<&Ready>,
+    (oil, variant): (&PreparedOil, &Variant),
     unmet: &mut Vec<u16>,
     asked: &mut Vec<u16>,
 ) -> Sum {
@@ -262,7 +261,7 @@ fn one(
         if !demand.applies_to(oil) {
             continue;
         }
-        let Some(found) = measure(demand, oil, worn, &mut sum.doubts) else {
+        let Some(found) = measure(demand, oil, variant, &mut sum.doubts) else {
             continue;
         };
         let met = found.value >= -ZERO;
@@ -322,9 +321,10 @@ struct Found {
 fn measure(
     demand: &ReadyDemand,
     oil: &PreparedOil,
-    worn: Option<&Ready>,
+    variant: &Variant,
     doubts: &mut Doubts,
 ) -> Option<Found> {
+    let worn = variant.worn.as_ref();
     match &demand.limit {
         ReadyLimit::Jaw(jaw) => Some(match demand.end {
             End::HotFloor => floor(demand, jaw, &oil.thin, worn),
@@ -341,7 +341,7 @@ fn measure(
             })
         }
         ReadyLimit::Film(film) => {
-            let found = super::prepared::film_margin(demand, film, oil, worn);
+            let found = super::prepared::film_margin(demand, film, oil, variant);
             doubts.alpha_unknown |= found.is_none();
             found.map(|(value, band, at)| Found {
                 value,
@@ -473,5 +473,5 @@ fn cold_data(setting: &Setting, oil: &PreparedOil, sum: &mut Sum) {
     let d = &mut sum.doubts;
     d.wax |= oil.wax_doubt(start);
     d.far_below |= start < oil.lowest - 60.0 - ZERO;
-    d.window |= oil.window_end.is_some_and(|end| start < end - ZERO);
+    d.window |= oil.window_doubt(start);
 }

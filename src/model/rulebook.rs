@@ -14,6 +14,7 @@ pub mod component;
 pub mod condition;
 pub mod grease;
 mod lookup;
+pub mod polymer;
 pub mod provenance;
 pub mod start;
 pub mod suitability;
@@ -27,6 +28,7 @@ pub use class::{Because, Class, Contains, Need, Serving};
 pub use compatibility::{MixRule, PaintRule, ResidualRule, SealRule};
 pub use component::{Component, WindowLimit};
 pub use condition::{Clause, Condition, Fact, Test, Values};
+pub use polymer::{PolymerKind, ShearTest, ShearsLike};
 pub use provenance::{Basis, Confidence, Provenance, SourceEntry};
 pub use start::{AirReleaseLimit, HeaterDensity, PourMargin, StartLimit};
 pub use suitability::{Level, SuitabilityRule, WhenUnknown};
@@ -54,6 +56,10 @@ pub struct Rulebook {
     pub residuals: Table<ResidualRule>,
     /// Oil life against temperature.
     pub life: Table<LifeRule>,
+    /// Viscosity modifiers.
+    pub polymers: Table<PolymerKind>,
+    /// Tests that shear them.
+    pub shear_tests: Table<ShearTest>,
     /// Loose equivalents between grade systems.
     pub crossings: Table<GradeCrossing>,
     /// Classes and additive families.

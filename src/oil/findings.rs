@@ -1,8 +1,13 @@
-//! What does not add up in the data of an oil.
+//! What does not add up in the data of an oil, and what its reader should know.
+
+mod cold;
+mod fluid;
+mod polymer;
 
 use super::curves::{Curves, implies_polymer, natural_index};
 use crate::model::Oil;
 use crate::model::oil::{Polymer, Viscosity};
+use crate::model::rulebook::Rulebook;
 use crate::quantity::convert::celsius;
 use crate::quantity::show::{Toward, Units, quantity};
 use crate::quantity::{Measure, Ratio};
@@ -20,7 +25,7 @@ pub struct Finding {
     pub act: String,
 }
 
-fn finding(name: &'static str, says: String, act: &str) -> Finding {
+pub(super) fn finding(name: &'static str, says: String, act: &str) -> Finding {
     Finding {
         name,
         says,
@@ -33,33 +38,31 @@ pub const INDEX_TOLERANCE: f64 = 3.5;
 /// A residual beyond this share is reported.
 pub const RESIDUAL_REPORTED: f64 = 0.03;
 
+/// What was found while the curves were built.
+pub(super) struct DataFindings {
+    /// How far one line misses each point.
+    pub(super) residuals: Vec<Ratio>,
+    /// Why stated base and polymer are not used.
+    pub(super) not_made: Option<String>,
+    /// Viscosity index by the viscosities.
+    pub(super) vi: Option<f64>,
+}
+
 pub(super) fn findings(
     oil: &Oil,
     curves: &Curves,
-    residuals: Vec<Ratio>,
-    vi: Option<f64>,
+    data: &DataFindings,
+    rules: &Rulebook,
 ) -> Vec<Finding> {
     let mut found = Vec::new();
-    residual(&mut found, &residuals);
-    stated_index(&mut found, oil, vi);
+    residual(&mut found, &data.residuals);
+    stated_index(&mut found, oil, data.vi);
     slope(&mut found, curves);
-    suspected_polymer(&mut found, oil, curves, vi);
+    suspected_polymer(&mut found, oil, curves, data.vi);
     grade_claimed(&mut found, oil, curves);
-    if curves.density.assumed {
-        let rho = quantity(curves.density.at15.amount(), Units::Si, Toward::Nearest);
-        found.push(finding(
-            "density-assumed",
-            format!("no density stated; {rho} at 15 degC is typical of the base"),
-            "take the density from the data sheet",
-        ));
-    }
-    if curves.base_assumed {
-        found.push(finding(
-            "base-assumed",
-            "no base stock stated; mineral Group I assumed".to_owned(),
-            "ask the supplier for the base stock",
-        ));
-    }
+    polymer::findings(&mut found, oil, curves, data, rules);
+    cold::findings(&mut found, oil, curves, rules);
+    fluid::findings(&mut found, oil, curves);
     found
 }
 

@@ -37,6 +37,8 @@ fn walk(visit: &mut dyn FnMut(&str, &str, &Provenance)) {
     each(&book.mixing, "mixing", visit);
     each(&book.residuals, "residuals", visit);
     each(&book.life, "life", visit);
+    each(&book.polymers, "polymers", visit);
+    each(&book.shear_tests, "shear tests", visit);
     each(&book.crossings, "grade crossings", visit);
     each(&book.classes, "classes", visit);
     each(&book.needs, "class needs", visit);

@@ -4,6 +4,7 @@ mod advice;
 mod classes;
 mod grease;
 mod parts;
+mod polymers;
 mod start;
 mod stocks;
 mod suitability;
@@ -32,6 +33,8 @@ const KINDS: &[(&str, Reader)] = &[
     ("mixing", reader!(mixing, stocks::mixing)),
     ("residuals", reader!(residuals, stocks::residual)),
     ("life", reader!(life, stocks::life)),
+    ("polymers", reader!(polymers, polymers::polymer)),
+    ("shear tests", reader!(shear_tests, polymers::shear_test)),
     ("grade crossings", reader!(crossings, advice::crossing)),
     ("advice", reader!(advice, advice::advice)),
     ("classes", reader!(classes, classes::class)),

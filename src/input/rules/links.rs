@@ -141,6 +141,8 @@ impl Links<'_> {
         self.cited(&book.seals);
         self.cited(&book.paints);
         self.cited(&book.mixing);
+        self.cited(&book.polymers);
+        self.cited(&book.shear_tests);
         self.cited(&book.residuals);
         self.cited(&book.life);
         self.cited(&book.crossings);

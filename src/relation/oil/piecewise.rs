@@ -93,6 +93,34 @@ impl Curve {
         Ok((curve, residuals))
     }
 
+    /// The same kind of curve with one point moved by its share times `sign`.
+    ///
+    /// # Errors
+    /// See [`Misfit`].
+    pub(super) fn through_moved(
+        &self,
+        points: &[(Point, Ratio)],
+        which: usize,
+        sign: f64,
+    ) -> Result<Self, Misfit> {
+        let moved: Vec<Point> = points
+            .iter()
+            .enumerate()
+            .map(|(i, (p, share))| {
+                let factor = if i == which {
+                    1.0 + sign * share.base()
+                } else {
+                    1.0
+                };
+                Point::new(p.at, KinematicViscosity::from_base(p.nu.base() * factor))
+            })
+            .collect();
+        match self {
+            Self::Line(_) => Ok(Self::Line(Line::fit(&moved, Weights::PerCent)?)),
+            Self::Pieces(_) => Ok(Self::Pieces(Pieces::through(&moved)?)),
+        }
+    }
+
     /// The line that serves at a temperature.
     pub fn line_at(&self, at: ThermodynamicTemperature) -> Line {
         match self {

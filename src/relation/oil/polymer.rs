@@ -5,7 +5,8 @@
 //! flat and rising shares are both offered. Outside its window `P` stays level and the curve
 //! follows the base oil. Whatever the inputs, base ≤ sheared ≤ new at every temperature.
 
-use super::shear::{ShearError, checked_index};
+use super::shear::{ShearError, checked_index, stability_index};
+use super::tangent::fall;
 use super::viscosity_index::{self, IndexError};
 use super::viscosity_temperature::{LOWEST_MM2_S, Line, Misfit, ViscosityCurve};
 use crate::numeric::root::bracketed;
@@ -132,12 +133,57 @@ impl Thickening {
         Self::between(Level { p, at: cold }, Level { p, at: hot })
     }
 
-    /// The share at a temperature.
-    pub fn share_at(&self, at: ThermodynamicTemperature) -> Ratio {
+    /// Level outside, smooth within the window, through a share at two temperatures inside it: a
+    /// level that would have to lie below zero is held at zero, and the share at the colder of
+    /// the two is then missed.
+    ///
+    /// # Errors
+    /// [`PolymerError::Negative`], [`PolymerError::Window`].
+    pub fn through(
+        window: (ThermodynamicTemperature, ThermodynamicTemperature),
+        cold: Level,
+        hot: Level,
+    ) -> Result<Self, PolymerError> {
+        let flat = |p: f64| Self {
+            p_cold: p,
+            p_hot: p,
+            t_cold_k: window.0.base(),
+            t_hot_k: window.1.base(),
+        };
+        let (s_cold, s_hot) = (flat(0.0).smooth(cold.at), flat(0.0).smooth(hot.at));
+        if window.0 >= window.1 || cold.at >= hot.at || s_hot <= s_cold {
+            return Err(PolymerError::Window);
+        }
+        let rise = (hot.p.base() - cold.p.base()) / (s_hot - s_cold);
+        let p_cold = (cold.p.base() - rise * s_cold).max(0.0);
+        let p_hot = p_cold + (hot.p.base() - p_cold) / s_hot;
+        let level = |p: f64, at| Level { p: number(p), at };
+        Self::between(level(p_cold, window.0), level(p_hot.max(0.0), window.1))
+    }
+
+    /// How far between the levels, 0 to 1.
+    fn smooth(&self, at: ThermodynamicTemperature) -> f64 {
         let u = (at.base() - self.t_cold_k) / (self.t_hot_k - self.t_cold_k);
         let u = u.clamp(0.0, 1.0);
-        let s = u * u * (3.0 - 2.0 * u);
-        number(self.p_cold + (self.p_hot - self.p_cold) * s)
+        u * u * (3.0 - 2.0 * u)
+    }
+
+    /// The share at a temperature.
+    pub fn share_at(&self, at: ThermodynamicTemperature) -> Ratio {
+        number(self.p_cold + (self.p_hot - self.p_cold) * self.smooth(at))
+    }
+
+    /// Rise of the share with temperature, 1/K; zero outside the window.
+    fn slope_at(&self, at: ThermodynamicTemperature) -> f64 {
+        let width = self.t_hot_k - self.t_cold_k;
+        let u = ((at.base() - self.t_cold_k) / width).clamp(0.0, 1.0);
+        (self.p_hot - self.p_cold) * 6.0 * u * (1.0 - u) / width
+    }
+
+    /// The window, cold end first.
+    pub fn window(&self) -> (ThermodynamicTemperature, ThermodynamicTemperature) {
+        let at = ThermodynamicTemperature::from_base;
+        (at(self.t_cold_k), at(self.t_hot_k))
     }
 }
 
@@ -164,7 +210,8 @@ pub fn after_shear(
 pub struct ThickenedOil {
     base: Line,
     thickening: Thickening,
-    left: f64,
+    /// What is left of the share, 0 to 1, over temperature.
+    left: Thickening,
 }
 
 impl ThickenedOil {
@@ -173,7 +220,11 @@ impl ThickenedOil {
         Self {
             base,
             thickening,
-            left: 1.0,
+            left: Thickening {
+                p_cold: 1.0,
+                p_hot: 1.0,
+                ..thickening
+            },
         }
     }
 
@@ -182,7 +233,35 @@ impl ThickenedOil {
     /// # Errors
     /// [`ShearError::Index`].
     pub fn sheared(self, stability_index: Ratio) -> Result<Self, ShearError> {
-        let left = self.left * (1.0 - checked_index(stability_index)?);
+        let left = 1.0 - checked_index(stability_index)?;
+        let left = Thickening {
+            p_cold: self.left.p_cold * left,
+            p_hot: self.left.p_hot * left,
+            ..self.left
+        };
+        Ok(Self { left, ..self })
+    }
+
+    /// The oil as measured after a test at two temperatures: what is left of the share is found
+    /// at both, moves smoothly between them and stays level beyond.
+    ///
+    /// # Errors
+    /// [`ShearError::Thicker`], [`ShearError::BelowBase`], [`ShearError::NoPolymer`].
+    pub fn sheared_to(
+        self,
+        cold: (ThermodynamicTemperature, KinematicViscosity),
+        hot: (ThermodynamicTemperature, KinematicViscosity),
+    ) -> Result<Self, ShearError> {
+        let left = |(at, sheared)| {
+            let (new, base) = (self.nu_at(at), self.base.nu_at(at));
+            stability_index(new, sheared, base).map(|index| 1.0 - index.base())
+        };
+        let left = Thickening {
+            p_cold: left(cold)?,
+            p_hot: left(hot)?,
+            t_cold_k: cold.0.base(),
+            t_hot_k: hot.0.base(),
+        };
         Ok(Self { left, ..self })
     }
 
@@ -191,9 +270,25 @@ impl ThickenedOil {
         self.base
     }
 
+    /// Where the share of its polymer moves.
+    pub fn window(&self) -> (ThermodynamicTemperature, ThermodynamicTemperature) {
+        self.thickening.window()
+    }
+
     /// The share by which its polymer still thickens.
     pub fn share_at(&self, at: ThermodynamicTemperature) -> Ratio {
-        number(self.left * self.thickening.share_at(at).base())
+        number(self.left.share_at(at).base() * self.thickening.share_at(at).base())
+    }
+
+    /// `-d ln nu / d ln T` at a temperature: that of the base oil, less what the polymer gains
+    /// as it warms.
+    pub fn fall_at(&self, at: ThermodynamicTemperature) -> f64 {
+        let (left, p) = (
+            self.left.share_at(at).base(),
+            self.thickening.share_at(at).base(),
+        );
+        let gain = self.left.slope_at(at) * p + left * self.thickening.slope_at(at);
+        fall(self.base, at) - at.base() * gain / (1.0 + left * p)
     }
 }
 
@@ -205,7 +300,8 @@ impl ViscosityCurve for ThickenedOil {
     /// Temperature at which it has a viscosity; one of them, should the polymer's window be so
     /// narrow that the curve turns.
     fn temperature_at(&self, nu: KinematicViscosity) -> Result<ThermodynamicTemperature, Misfit> {
-        let most = 1.0 + self.left * self.thickening.p_cold.max(self.thickening.p_hot);
+        let highest = |t: &Thickening| t.p_cold.max(t.p_hot);
+        let most = 1.0 + highest(&self.left) * highest(&self.thickening);
         let thinned = KinematicViscosity::from_base(nu.base() / most);
         // The base oil alone is too thin at the cold end and thick enough at the warm one; the
         // small step beyond either keeps rounding from closing the bracket.
@@ -266,4 +362,70 @@ pub fn split(
         p40: number(r * p100),
         p100: number(p100),
     })
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use crate::relation::oil::viscosity_temperature::Point;
+
+    fn base() -> Line {
+        let point = |t, nu| Point::new(celsius(t), mm2_s(nu));
+        Line::through(point(40.0, 30.0), point(100.0, 5.2)).expect("two good points")
+    }
+
+    fn level(p: f64, t: f64) -> Level {
+        Level {
+            p: number(p),
+            at: celsius(t),
+        }
+    }
+
+    #[test]
+    fn the_share_goes_through_two_points_within_its_window() {
+        let window = (celsius(0.0), celsius(100.0));
+        for (p40, p100) in [(0.5, 0.8), (0.8, 0.8), (0.9, 0.7)] {
+            let found = Thickening::through(window, level(p40, 40.0), level(p100, 100.0));
+            let share = |t| found.map_or(f64::NAN, |f| f.share_at(celsius(t)).base());
+            assert!((share(40.0) - p40).abs() < 1e-12 && (share(100.0) - p100).abs() < 1e-12);
+            assert!(
+                (share(-30.0) - share(0.0)).abs() < 1e-12,
+                "level below the window"
+            );
+        }
+        // a share that would start below nothing starts at nothing
+        let steep = Thickening::through(window, level(0.1, 40.0), level(0.8, 100.0));
+        let share = |t| steep.map_or(f64::NAN, |f| f.share_at(celsius(t)).base());
+        assert!(share(0.0).abs() < 1e-12 && (share(100.0) - 0.8).abs() < 1e-12);
+    }
+
+    #[test]
+    fn what_a_test_left_is_met_at_both_temperatures_and_stays_between_base_and_new() {
+        let window = (celsius(0.0), celsius(100.0));
+        let new = ThickenedOil::new(
+            base(),
+            Thickening::through(window, level(0.5, 40.0), level(0.7, 100.0)).expect("a window"),
+        );
+        let sheared = new.sheared_to((celsius(40.0), mm2_s(39.0)), (celsius(100.0), mm2_s(7.0)));
+        let nu = |t: f64| sheared.map_or(f64::NAN, |s| to_mm2_s(s.nu_at(celsius(t))));
+        assert!((nu(40.0) - 39.0).abs() < 1e-9 && (nu(100.0) - 7.0).abs() < 1e-9);
+        for t in [-40.0, 0.0, 70.0, 150.0] {
+            let at = celsius(t);
+            assert!(nu(t) <= to_mm2_s(new.nu_at(at)) && nu(t) >= to_mm2_s(base().nu_at(at)));
+        }
+        let thinner = new.sheared_to((celsius(40.0), mm2_s(29.0)), (celsius(100.0), mm2_s(7.0)));
+        assert!(matches!(thinner, Err(ShearError::BelowBase { .. })));
+    }
+
+    #[test]
+    fn the_fall_is_that_of_the_curve() {
+        let window = (celsius(0.0), celsius(100.0));
+        let shares = Thickening::through(window, level(0.4, 40.0), level(0.8, 100.0));
+        let oil = ThickenedOil::new(base(), shares.expect("a window"));
+        for t in [-20.0, 30.0, 75.0, 130.0] {
+            let nu = |dt: f64| oil.nu_at(celsius(t + dt)).base();
+            let slope = -(nu(0.01) - nu(-0.01)) / 0.02 / nu(0.0) * celsius(t).base();
+            assert!((oil.fall_at(celsius(t)) / slope - 1.0).abs() < 1e-5, "{t}");
+        }
+    }
 }

@@ -6,7 +6,9 @@
 
 use crate::numeric::math::pow;
 use crate::quantity::convert::number;
-use crate::quantity::{DynamicViscosity, Measure, Ratio, ShearRate, Time};
+use crate::quantity::{
+    DynamicViscosity, Length, Measure, Pressure, Ratio, ShearRate, Time, Velocity,
+};
 use crate::relation::Law;
 
 /// Cross, on the polymer's share.
@@ -36,6 +38,24 @@ pub static CARREAU: Law = Law {
     source: "Carreau; Yasuda; textbook form",
 };
 
+/// Shear rate at the inlet of a contact.
+pub static CONTACT_RATE: Law = Law {
+    name: "contact-shear-rate",
+    title: "Shear rate at the inlet of a contact",
+    formula: "g = u / h",
+    range: "order of magnitude; u mean speed of the surfaces, h the film asked for",
+    source: "common practice for lubricated contacts",
+};
+
+/// Critical rate from a critical stress.
+pub static CRITICAL: Law = Law {
+    name: "critical-shear-rate",
+    title: "Shear rate at which half of what the polymer can lose is lost",
+    formula: "g_c = tau_c / eta_base",
+    range: "tau_c 1 to 10 kPa (from memory): an order of magnitude",
+    source: "common practice: the rate scales inversely with the viscosity of the base oil",
+};
+
 /// Share effective in the high-shear test.
 pub static FROM_HTHS: Law = Law {
     name: "thickening-at-high-shear",
@@ -44,6 +64,15 @@ pub static FROM_HTHS: Law = Law {
     range: "polymer-thickened oil",
     source: "definition; HTHS by ASTM D4683, D4741 or D5481",
 };
+
+/// Share of the polymer's contribution that no rate takes away, plausible ends (common practice).
+pub const PLATEAU: (f64, f64) = (0.2, 0.6);
+/// Exponent, plausible ends (common practice).
+pub const EXPONENT: (f64, f64) = (0.6, 1.0);
+/// Critical shear stress, plausible ends, Pa (from memory).
+pub const CRITICAL_STRESS_PA: (f64, f64) = (1e3, 1e4);
+/// Shear rate of the high-shear test at 150 °C.
+pub const HIGH_SHEAR: ShearRate = ShearRate(1e6);
 
 /// Why there is no figure under shear.
 #[derive(Clone, Copy, Debug, PartialEq, thiserror::Error)]
@@ -151,6 +180,16 @@ impl Cross {
     pub fn share(self, at_rest: Ratio, rate: ShearRate) -> Ratio {
         number(at_rest.base() * self.kept(rate).base())
     }
+}
+
+/// Shear rate at the inlet of a contact: mean speed of the surfaces over the film.
+pub fn contact_rate(speed: Velocity, film: Length) -> ShearRate {
+    ShearRate(speed.base() / film.base())
+}
+
+/// Critical rate of a polymer in a base oil of that viscosity.
+pub fn critical_rate(stress: Pressure, base: DynamicViscosity) -> ShearRate {
+    ShearRate(stress.base() / base.base())
 }
 
 /// Viscosity under shear over that at rest, from the polymer's shares.
