@@ -16,6 +16,7 @@
 pub mod numeric;
 pub mod quantity;
 pub mod relation;
+pub mod report;
 pub mod source;
 pub mod trace;
 pub mod work;
