@@ -13,6 +13,8 @@
 //!
 //! The pipeline runs in one direction; nothing reaches back. The rooms, in the order of the arrows:
 
+pub mod cli;
+pub mod model;
 pub mod numeric;
 pub mod quantity;
 pub mod relation;

@@ -98,6 +98,22 @@ pub trait Recorder {
         f: impl FnOnce(I::Values) -> Q,
     ) -> Known<Q>;
 
+    /// A number worked out by a relation that may refuse its inputs; a refusal leaves no step.
+    ///
+    /// # Errors
+    /// What the relation returned.
+    fn attempt<I: Inputs, Q: Measure, E>(
+        &mut self,
+        symbol: &'static str,
+        says: &'static str,
+        law: &'static Law,
+        inputs: I,
+        f: impl FnOnce(I::Values) -> Result<Q, E>,
+    ) -> Result<Known<Q>, E> {
+        let value = f(inputs.values())?;
+        Ok(self.law(symbol, says, law, inputs, |_| value))
+    }
+
     /// A relation that gives several numbers; each is then named with [`Recorder::take`].
     fn apply<I: Inputs, T: Copy>(
         &mut self,
@@ -114,6 +130,20 @@ pub trait Recorder {
         says: &'static str,
         f: impl FnOnce(T) -> Q,
     ) -> Known<Q>;
+
+    /// A relation that gives several numbers and may refuse its inputs.
+    ///
+    /// # Errors
+    /// What the relation returned.
+    fn attempt_all<I: Inputs, T: Copy, E>(
+        &mut self,
+        law: &'static Law,
+        inputs: I,
+        f: impl FnOnce(I::Values) -> Result<T, E>,
+    ) -> Result<Outcome<T>, E> {
+        let value = f(inputs.values())?;
+        Ok(self.apply(law, inputs, |_| value))
+    }
 
     /// A remark on the latest step.
     fn note(&mut self, remark: impl FnOnce() -> String);
@@ -175,6 +205,22 @@ impl<Q: Copy> Inputs for Vec<(&'static str, Known<Q>)> {
     }
     fn steps(&self) -> Vec<(&'static str, StepId)> {
         self.iter().map(|(s, k)| (*s, k.step)).collect()
+    }
+}
+
+/// Two sets of inputs together, for lists of points.
+#[derive(Clone, Debug)]
+pub struct Both<A, B>(pub A, pub B);
+
+impl<A: Inputs, B: Inputs> Inputs for Both<A, B> {
+    type Values = (A::Values, B::Values);
+    fn values(&self) -> Self::Values {
+        (self.0.values(), self.1.values())
+    }
+    fn steps(&self) -> Vec<(&'static str, StepId)> {
+        let mut steps = self.0.steps();
+        steps.extend(self.1.steps());
+        steps
     }
 }
 

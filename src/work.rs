@@ -9,7 +9,7 @@ pub mod args;
 pub use args::Args;
 
 use crate::quantity::{Amount, Measure};
-use crate::relation::Law;
+use crate::relation::{Law, Outside};
 use crate::trace::{Derivation, Known, StepId};
 
 /// One row of the register.
@@ -65,6 +65,12 @@ impl Refusal {
             name,
             message: message.into(),
         }
+    }
+}
+
+impl From<Outside> for Refusal {
+    fn from(outside: Outside) -> Self {
+        Self::new(outside.name(), outside.to_string())
     }
 }
 

@@ -1,0 +1,334 @@
+//! The command line: what may be typed, with every help text; no logic.
+
+pub mod exit;
+pub mod host;
+
+use clap::{Args, Parser, Subcommand, ValueEnum};
+
+/// The program.
+#[derive(Debug, Parser)]
+#[command(
+    name = "filmwright",
+    version,
+    about = "Works out the viscosity machines need and weighs candidate lubricants against it.",
+    max_term_width = 100,
+    help_expected = true,
+    disable_help_subcommand = true,
+    arg_required_else_help = true,
+    after_help = "The core: need -> weigh -> why -> report.  Try: filmwright weigh --demo\n\
+                  Topics: filmwright help units, verdicts, files, keys, steps"
+)]
+pub struct Cli {
+    /// What to do.
+    #[command(subcommand)]
+    pub command: Command,
+    /// Options shared by all commands.
+    #[command(flatten)]
+    pub shared: Shared,
+}
+
+/// Options shared by all commands.
+#[derive(Clone, Debug, Default, Args)]
+#[command(next_help_heading = "Shared options")]
+pub struct Shared {
+    /// Work in this folder (default: the nearest one upward holding site.yaml)
+    #[arg(short = 'C', long, value_name = "DIR", global = true)]
+    pub dir: Option<String>,
+    /// Site file, instead of site.yaml
+    #[arg(long, value_name = "FILE", global = true)]
+    pub site: Option<String>,
+    /// Oil files, instead of oils.yaml and oils/*.yaml
+    #[arg(long, value_name = "FILE", global = true)]
+    pub oils: Vec<String>,
+    /// Sample maps or laboratory files, instead of samples.yaml
+    #[arg(long, value_name = "FILE", global = true)]
+    pub samples: Vec<String>,
+    /// Take the built-in demonstration works instead of files
+    #[arg(long, global = true)]
+    pub demo: bool,
+    /// Output format; text is for people and may change, json and csv are promises
+    #[arg(short, long, value_enum, default_value_t = Format::Text, global = true)]
+    pub format: Format,
+    /// Write results here instead of standard output; '-' is standard output
+    #[arg(short, long, value_name = "FILE", global = true)]
+    pub out: Option<String>,
+    /// Units of the output; input always carries its own
+    #[arg(long, value_enum, default_value_t = UnitSystem::Si, global = true)]
+    pub units: UnitSystem,
+    /// Reserve asked, VG steps (default: the site's own, else 0.5)
+    #[arg(long, value_name = "STEPS", global = true)]
+    pub reserve: Option<String>,
+    /// Exit with 1 if the oil in use (or --oil) is at this level or worse
+    #[arg(long, value_enum, value_name = "LEVEL", global = true)]
+    pub gate: Option<Gate>,
+    /// Warnings count as errors
+    #[arg(long, global = true)]
+    pub strict: bool,
+    /// No notes on standard error
+    #[arg(short, long, global = true)]
+    pub quiet: bool,
+    /// Show where every value comes from
+    #[arg(short, long, global = true)]
+    pub verbose: bool,
+    /// Colour of the output
+    #[arg(long, value_enum, default_value_t = When::Auto, global = true)]
+    pub color: When,
+    /// Verdict marks in text output
+    #[arg(long, value_enum, default_value_t = Marks::Plain, global = true)]
+    pub marks: Marks,
+    /// Date of judgement and of the outputs, as 2026-11-02
+    #[arg(long, value_name = "DATE", global = true)]
+    pub on: Option<String>,
+    /// Folder of own rules on top of the built-in ones
+    #[arg(long, value_name = "DIR", global = true)]
+    pub rules: Option<String>,
+    /// Replace existing files that filmwright did not make
+    #[arg(long, global = true)]
+    pub replace: bool,
+    /// CSV for spreadsheets of comma-decimal countries: byte-order mark and semicolons
+    #[arg(long, global = true)]
+    pub csv_excel: bool,
+}
+
+/// Output formats.
+#[derive(Clone, Copy, Debug, Default, PartialEq, Eq, ValueEnum)]
+pub enum Format {
+    /// For people.
+    #[default]
+    Text,
+    /// One JSON document.
+    Json,
+    /// One table.
+    Csv,
+}
+
+/// Units of the output.
+#[derive(Clone, Copy, Debug, Default, PartialEq, Eq, ValueEnum)]
+pub enum UnitSystem {
+    /// mm2/s, degC, mm.
+    #[default]
+    Si,
+    /// As customary in the United States.
+    Us,
+}
+
+/// Levels of the gate, mildest first.
+#[derive(Clone, Copy, Debug, PartialEq, Eq, PartialOrd, Ord, ValueEnum)]
+pub enum Gate {
+    /// Limits met, reserve not kept.
+    Tight,
+    /// Not decided.
+    Open,
+    /// A limit not met, or barred.
+    Fails,
+}
+
+/// Colour.
+#[derive(Clone, Copy, Debug, Default, PartialEq, Eq, ValueEnum)]
+pub enum When {
+    /// On a terminal, unless NO_COLOR is set or TERM is dumb.
+    #[default]
+    Auto,
+    /// Always.
+    Always,
+    /// Never.
+    Never,
+}
+
+/// Verdict marks.
+#[derive(Clone, Copy, Debug, Default, PartialEq, Eq, ValueEnum)]
+pub enum Marks {
+    /// The word alone.
+    Words,
+    /// The bar against its limit in plain characters, with the word.
+    #[default]
+    Plain,
+    /// The bar in drawing characters, with the word.
+    Drawn,
+}
+
+/// The commands.
+#[derive(Debug, Subcommand)]
+pub enum Command {
+    /// Lay down a starter folder: three commented files and the editor schemas
+    #[command(after_help = "Example:\n  filmwright new works/")]
+    New(New),
+    /// Read all files, report errors and warnings, run nothing
+    #[command(after_help = "Example:\n  filmwright check --strict")]
+    Check,
+    /// What a machine needs: floor, ceiling, and what sets them
+    #[command(after_help = "Examples:\n  filmwright need M01 --demo\n  \
+        filmwright need --bearing 22220 --speed \"236 r/min\"\n\
+        See also: weigh, why")]
+    Need(Need),
+    /// Weigh candidate oils against what machines need
+    #[command(after_help = "Examples:\n  filmwright weigh CV-104              one machine, all suitable oils\n  \
+        filmwright weigh 'CV-*' -f csv       several, as a table\n  \
+        filmwright weigh --gate fails        exit 1 if any oil in use fails\n\
+        See also: need, why")]
+    Weigh(Weigh),
+    /// The traced steps behind one verdict
+    #[command(after_help = "Example:\n  filmwright why M01 O-13 --demo")]
+    Why(Why),
+    /// One oil: its line, viscosity at temperatures, grades, what does not add up
+    #[command(after_help = "Example:\n  filmwright oil O-12 --at -15degC --at 85degC --demo")]
+    Oil(Oil),
+    /// HTML sheets: overview, one sheet a machine
+    #[command(after_help = "Examples:\n  filmwright report --demo\n  filmwright report -o out/\n  \
+        filmwright report --one-file -o review.html --only 'CV-*'")]
+    Report(Report),
+    /// The rules built in: formula, range of use, source, defaults
+    #[command(after_help = "Examples:\n  filmwright rules\n  filmwright rules gear_parallel_bevel")]
+    Rules(Rules),
+    /// One published relation worked out, with its steps
+    #[command(after_help = "Examples:\n  filmwright work\n  \
+        filmwright work bearing-nu1 speed=\"236 r/min\" pitch_diameter=\"140 mm\"\n  \
+        filmwright work --batch sums.jsonl")]
+    Work(Work),
+    /// Short texts: units, verdicts, files, keys, steps, or the name of a message
+    #[command(after_help = "Example:\n  filmwright help verdicts")]
+    Help(Help),
+}
+
+/// `new`
+#[derive(Debug, Args)]
+pub struct New {
+    /// Folder to lay it down in (default: the working folder)
+    pub folder: Option<String>,
+    /// Also write the built-in rules out for editing
+    #[arg(long = "with-rules")]
+    pub with_rules: bool,
+}
+
+/// `need`
+#[derive(Debug, Args)]
+pub struct Need {
+    /// Machines, by tag or pattern; all where none is given
+    pub tags: Vec<String>,
+    /// List the machines and stop
+    #[arg(long)]
+    pub list: bool,
+    /// A rolling bearing, without any file: its designation, or bore x outside as "100x180 mm"
+    #[arg(long, value_name = "BEARING")]
+    pub bearing: Option<String>,
+    /// Pitch-line speed of a gear mesh, without any file
+    #[arg(long, value_name = "SPEED")]
+    pub gear: Option<String>,
+    /// A component of the practice windows by id or name, without any file
+    #[arg(long, value_name = "ID")]
+    pub component: Option<String>,
+    /// Speed of the bearing
+    #[arg(long, value_name = "SPEED")]
+    pub speed: Option<String>,
+    /// Running temperature of the sump
+    #[arg(long, value_name = "TEMP", allow_hyphen_values = true)]
+    pub sump: Option<String>,
+    /// Oil temperature at start
+    #[arg(long, value_name = "TEMP", allow_hyphen_values = true)]
+    pub start: Option<String>,
+}
+
+/// `weigh`
+#[derive(Debug, Args)]
+pub struct Weigh {
+    /// Machines, by tag or pattern; all where none is given
+    pub tags: Vec<String>,
+    /// Only these oils, by id or pattern
+    #[arg(long, value_name = "OIL")]
+    pub oil: Vec<String>,
+    /// Only the oil in use
+    #[arg(long)]
+    pub now: bool,
+    /// Judge polymer-thickened oils as new, or worn by shear
+    #[arg(long = "as", value_enum, value_name = "STATE", default_value_t = AsState::Worn)]
+    pub state: AsState,
+    /// Ambient instead of the area's, as -25..40degC
+    #[arg(long, value_name = "LOW..HIGH", allow_hyphen_values = true)]
+    pub band: Option<String>,
+}
+
+/// Which curve floors are judged on.
+#[derive(Clone, Copy, Debug, Default, PartialEq, Eq, ValueEnum)]
+pub enum AsState {
+    /// As new.
+    New,
+    /// After permanent shear.
+    #[default]
+    Worn,
+}
+
+/// `why`
+#[derive(Debug, Args)]
+pub struct Why {
+    /// The machine, or machine/point
+    pub tag: String,
+    /// The oil
+    pub oil: String,
+}
+
+/// `oil`
+#[derive(Debug, Args)]
+pub struct Oil {
+    /// The oil
+    pub oil: String,
+    /// Temperatures to print it at
+    #[arg(long, value_name = "TEMP", allow_hyphen_values = true)]
+    pub at: Vec<String>,
+}
+
+/// `report`
+#[derive(Debug, Args)]
+pub struct Report {
+    /// All pages in one file
+    #[arg(long)]
+    pub one_file: bool,
+    /// Only these machines, by tag or pattern
+    #[arg(long, value_name = "TAG")]
+    pub only: Vec<String>,
+    /// Paper the print style is laid out for
+    #[arg(long, value_enum, default_value_t = Paper::A4)]
+    pub paper: Paper,
+    /// Folder of own templates on top of the built-in ones
+    #[arg(long, value_name = "DIR")]
+    pub templates: Option<String>,
+}
+
+/// Paper sizes.
+#[derive(Clone, Copy, Debug, Default, PartialEq, Eq, ValueEnum)]
+pub enum Paper {
+    /// 210 by 297 mm.
+    #[default]
+    A4,
+    /// 8.5 by 11 in.
+    Letter,
+}
+
+/// `rules`
+#[derive(Debug, Args)]
+pub struct Rules {
+    /// Ids, names or patterns; an overview where none is given
+    pub rules: Vec<String>,
+    /// Only this kind: parts, suitability, base_stocks, classes, limits, grease, cautions
+    #[arg(long, value_name = "KIND")]
+    pub kind: Option<String>,
+}
+
+/// `work`
+#[derive(Debug, Args)]
+pub struct Work {
+    /// The relation; a list of all where none is given
+    pub relation: Option<String>,
+    /// Its inputs
+    #[arg(value_name = "KEY=VALUE")]
+    pub with: Vec<String>,
+    /// JSON Lines in, JSON Lines out; '-' is standard input
+    #[arg(long, value_name = "FILE")]
+    pub batch: Option<String>,
+}
+
+/// `help`
+#[derive(Debug, Args)]
+pub struct Help {
+    /// The topic
+    pub topic: Option<String>,
+}

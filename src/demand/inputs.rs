@@ -1,0 +1,245 @@
+//! Takes a point's inputs for one scenario: stated values as stated, unknowns at a share of
+//! their range. What is missing or assumed is noted as a gap on the way.
+
+use crate::model::Stated;
+use crate::quantity::{Amount, Measure};
+use crate::source::Origin;
+use crate::source::place::Given;
+use crate::trace::{Known, Recorder};
+
+/// What is not known about an input.
+#[derive(Clone, Debug, PartialEq)]
+pub struct Gap {
+    /// The key as users write it.
+    pub key: String,
+    /// The part it belongs to, if to one.
+    pub about: Option<String>,
+    /// How it is unknown.
+    pub kind: GapKind,
+    /// Whom to ask, where the user said so.
+    pub ask: Option<String>,
+    /// How it can be found out.
+    pub how: &'static str,
+    /// Where it is written, if it is.
+    pub origin: Option<Origin>,
+}
+
+/// How an input is unknown.
+#[derive(Clone, Debug, PartialEq)]
+pub enum GapKind {
+    /// Unknown, but between these; it makes verdicts open where the ends disagree.
+    Range(Amount, Amount),
+    /// A usual value stands in; the range is what would be plausible.
+    Assumed {
+        /// What is used.
+        taken: Amount,
+        /// Plausible low end.
+        lo: Amount,
+        /// Plausible high end.
+        hi: Amount,
+    },
+    /// Nothing stands in: what needs it cannot be judged.
+    Missing,
+    /// A fact in words that a suitability rule needs.
+    Fact,
+}
+
+/// One input wanted, for messages, traces and gaps.
+#[derive(Clone, Copy, Debug)]
+pub struct Wanted<'a> {
+    /// The key as users write it.
+    pub key: &'a str,
+    /// The part it belongs to, if to one.
+    pub about: Option<&'a str>,
+    /// Its symbol in formulas.
+    pub symbol: &'static str,
+    /// What it is.
+    pub says: &'static str,
+    /// How it can be found out.
+    pub how: &'static str,
+}
+
+/// One setting of all unknowns: a share of each range, in the order they are first asked for.
+#[derive(Clone, Debug, Default, PartialEq)]
+pub struct Scenario {
+    /// Shares from 0 (low end) to 1 (high end).
+    pub shares: Vec<f64>,
+}
+
+impl Scenario {
+    /// Every unknown in the middle of its range.
+    pub fn middle() -> Self {
+        Self::default()
+    }
+
+    fn share(&self, axis: usize) -> f64 {
+        self.shares.get(axis).copied().unwrap_or(0.5)
+    }
+}
+
+/// Hands out inputs and remembers what was unknown.
+#[derive(Debug)]
+pub struct Inputs<'s> {
+    scenario: &'s Scenario,
+    /// Unknowns with a range, in the order of first use: the axes of the scenarios.
+    pub axes: Vec<Gap>,
+    /// Assumed and missing inputs.
+    pub gaps: Vec<Gap>,
+}
+
+impl<'s> Inputs<'s> {
+    /// For one scenario.
+    pub fn new(scenario: &'s Scenario) -> Self {
+        Self { scenario, axes: Vec::new(), gaps: Vec::new() }
+    }
+
+    /// A stated input; a gap where it is not there.
+    pub fn take<Q: Measure, R: Recorder>(
+        &mut self,
+        r: &mut R,
+        wanted: Wanted<'_>,
+        stated: Option<&Stated<Q>>,
+    ) -> Option<Known<Q>> {
+        match stated {
+            Some(Stated::Known(given, _)) => Some(r.given(wanted.symbol, wanted.says, given)),
+            Some(Stated::Range(range, ask)) => {
+                let (lo, hi) = (range.value.lo.base(), range.value.hi.base());
+                let axis = self.axis(
+                    wanted,
+                    (range.value.lo.amount(), range.value.hi.amount()),
+                    ask.clone(),
+                    Some(range.origin.clone()),
+                );
+                let value = Q::from_base(lo + (hi - lo) * self.scenario.share(axis));
+                let given = Given::new(value, range.written.clone(), range.origin.clone());
+                let known = r.given(wanted.symbol, wanted.says, &given);
+                r.note(|| format!("unknown: {}", range.written));
+                Some(known)
+            }
+            Some(Stated::Unknown(ask, origin)) => {
+                self.missing(wanted, ask.clone(), Some(origin.clone()));
+                None
+            }
+            None => {
+                self.missing(wanted, None, None);
+                None
+            }
+        }
+    }
+
+    /// A stated input that nobody needs to state.
+    pub fn maybe<Q: Measure, R: Recorder>(
+        &mut self,
+        r: &mut R,
+        wanted: Wanted<'_>,
+        stated: Option<&Stated<Q>>,
+    ) -> Option<Known<Q>> {
+        stated.and_then(|s| self.take(r, wanted, Some(s)))
+    }
+
+    /// A stated input, or a usual value in its place with its plausible range.
+    pub fn or_assume<Q: Measure, R: Recorder>(
+        &mut self,
+        r: &mut R,
+        wanted: Wanted<'_>,
+        stated: Option<&Stated<Q>>,
+        usual: Usual<Q>,
+    ) -> Known<Q> {
+        if let Some(stated) = stated {
+            let unknown = matches!(stated, Stated::Unknown(..));
+            if !unknown && let Some(known) = self.take(r, wanted, Some(stated)) {
+                return known;
+            }
+        }
+        let kind = GapKind::Assumed {
+            taken: usual.value.amount(),
+            lo: usual.lo.amount(),
+            hi: usual.hi.amount(),
+        };
+        let ask = stated.and_then(Stated::ask).map(str::to_owned);
+        let origin = stated.map(|s| s.origin().clone());
+        self.note_gap(wanted, kind, ask, origin);
+        r.assume(wanted.symbol, wanted.says, usual.value, usual.why)
+    }
+
+    /// An unknown that nobody stated but whose plausible range is known.
+    pub fn plausible<Q: Measure, R: Recorder>(
+        &mut self,
+        r: &mut R,
+        wanted: Wanted<'_>,
+        range: (Q, Q),
+        why: &'static str,
+    ) -> Known<Q> {
+        let axis = self.axis(wanted, (range.0.amount(), range.1.amount()), None, None);
+        let (lo, hi) = (range.0.base(), range.1.base());
+        let value = Q::from_base(lo + (hi - lo) * self.scenario.share(axis));
+        r.assume(wanted.symbol, wanted.says, value, why)
+    }
+
+    /// Notes that something is missing altogether.
+    pub fn missing(&mut self, wanted: Wanted<'_>, ask: Option<String>, origin: Option<Origin>) {
+        self.note_gap(wanted, GapKind::Missing, ask, origin);
+    }
+
+    fn axis(
+        &mut self,
+        wanted: Wanted<'_>,
+        (lo, hi): (Amount, Amount),
+        ask: Option<String>,
+        origin: Option<Origin>,
+    ) -> usize {
+        let known = self
+            .axes
+            .iter()
+            .position(|a| a.key == wanted.key && a.about.as_deref() == wanted.about);
+        known.unwrap_or_else(|| {
+            self.axes.push(gap(wanted, GapKind::Range(lo, hi), ask, origin));
+            self.axes.len() - 1
+        })
+    }
+
+    fn note_gap(
+        &mut self,
+        wanted: Wanted<'_>,
+        kind: GapKind,
+        ask: Option<String>,
+        origin: Option<Origin>,
+    ) {
+        let known = self
+            .gaps
+            .iter()
+            .any(|g| g.key == wanted.key && g.about.as_deref() == wanted.about);
+        if !known {
+            self.gaps.push(gap(wanted, kind, ask, origin));
+        }
+    }
+}
+
+fn gap(
+    wanted: Wanted<'_>,
+    kind: GapKind,
+    ask: Option<String>,
+    origin: Option<Origin>,
+) -> Gap {
+    Gap {
+        key: wanted.key.to_owned(),
+        about: wanted.about.map(str::to_owned),
+        kind,
+        ask,
+        how: wanted.how,
+        origin,
+    }
+}
+
+/// A usual value with its plausible range.
+#[derive(Clone, Copy, Debug)]
+pub struct Usual<Q> {
+    /// What is used.
+    pub value: Q,
+    /// Plausible low end.
+    pub lo: Q,
+    /// Plausible high end.
+    pub hi: Q,
+    /// Why that.
+    pub why: &'static str,
+}

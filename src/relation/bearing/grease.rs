@@ -1,0 +1,125 @@
+//! Grease in a rolling bearing: how much, and how long it lasts.
+//!
+//! Sources: interval after Neale (ed.), *The Tribology Handbook*, 2nd edition, table 20.4;
+//! adjustments and amount common practice.
+
+use super::class::BearingKind;
+use crate::numeric::math::pow;
+use crate::quantity::convert::{to_celsius, to_mm, to_rpm};
+use crate::quantity::{
+    AngularVelocity, Length, Mass, Measure, Ratio, ThermodynamicTemperature, Time,
+};
+use crate::relation::Law;
+use crate::relation::outside::{Outside, positive};
+
+/// The interval at 70 °C.
+pub static INTERVAL: Law = Law {
+    name: "grease-interval",
+    title: "Relubrication interval of a grease at 70 degC",
+    formula: "t = k (14 10^6 / (n sqrt(d)) - 4 d)",
+    range: "hours; n in r/min, bore d in mm; k 10 ball, 5 cylindrical and needle, 1 spherical and tapered roller; where the bracket is negative, grease does not suit the speed",
+    source: "Neale (ed.), The Tribology Handbook, 2nd edition, table 20.4",
+};
+
+/// The interval as it is run.
+pub static ADJUSTED: Law = Law {
+    name: "grease-interval-adjusted",
+    title: "Relubrication interval under running conditions",
+    formula: "t = t70 2^((70 - T) / 15) f, the temperature's part at most 2",
+    range: "T bearing temperature in degC up to the limit of the grease; f the product of position, dirt, moisture and vibration factors",
+    source: "common practice",
+};
+
+/// The amount.
+pub static AMOUNT: Law = Law {
+    name: "grease-amount",
+    title: "Grease for one relubrication",
+    formula: "G = 0.005 D B",
+    range: "grams; outside diameter D and width B in mm, total height for thrust bearings; lubricated from the side",
+    source: "Neale (ed.), The Tribology Handbook, 2nd edition, section A20; common practice",
+};
+
+/// Factor of the kind of bearing in the interval; `None` for thrust bearings, which the table
+/// does not hold.
+pub fn kind_factor(kind: BearingKind) -> Option<Ratio> {
+    let k = match kind {
+        BearingKind::DeepGrooveBall
+        | BearingKind::AngularContactBall
+        | BearingKind::DoubleRowAngularContactBall
+        | BearingKind::SelfAligningBall => 10.0,
+        BearingKind::CylindricalRoller | BearingKind::NeedleRoller => 5.0,
+        BearingKind::SphericalRoller | BearingKind::TaperedRoller => 1.0,
+        BearingKind::ThrustBall
+        | BearingKind::CylindricalRollerThrust
+        | BearingKind::SphericalRollerThrust => return None,
+    };
+    Some(Ratio::from_base(k))
+}
+
+/// Interval at 70 °C bearing temperature.
+///
+/// # Errors
+/// A factor, speed or bore that is not above zero, or a speed too high for grease.
+pub fn interval(k: Ratio, speed: AngularVelocity, bore: Length) -> Result<Time, Outside> {
+    let k = positive("the factor of the kind", k)?;
+    positive("the speed", speed)?;
+    positive("the bore", bore)?;
+    let (n_rpm, d_mm) = (to_rpm(speed), to_mm(bore));
+    let hours = k * (14e6 / (n_rpm * d_mm.sqrt()) - 4.0 * d_mm);
+    if hours <= 0.0 {
+        return Err(Outside::NoAnswer {
+            what: "the relubrication interval",
+            why: "grease is not suitable at this size and speed",
+        });
+    }
+    Ok(Time::from_base(hours * 3600.0))
+}
+
+/// What the bearing temperature does to the interval: half for every 15 K above 70 °C, at most
+/// double below.
+pub fn temperature_factor(bearing: ThermodynamicTemperature) -> Ratio {
+    let steps = (70.0 - to_celsius(bearing)) / 15.0;
+    Ratio::from_base(pow(2.0, steps.min(1.0)))
+}
+
+/// The interval under running conditions; `others` is the product of the other factors.
+///
+/// # Errors
+/// A factor that is not above zero.
+pub fn adjusted(
+    at_70: Time,
+    bearing: ThermodynamicTemperature,
+    others: Ratio,
+) -> Result<Time, Outside> {
+    let others = positive("the product of the factors", others)?;
+    let temperature = temperature_factor(bearing).base();
+    Ok(Time::from_base(at_70.base() * temperature * others))
+}
+
+/// Grease for one relubrication.
+///
+/// # Errors
+/// A length that is not above zero.
+pub fn amount(outside: Length, width: Length) -> Result<Mass, Outside> {
+    positive("the outside diameter", outside)?;
+    positive("the width", width)?;
+    let grams = 0.005 * to_mm(outside) * to_mm(width);
+    Ok(Mass::from_base(grams * 1e-3))
+}
+
+/// Factors of the surroundings on the interval, in words (common practice).
+pub mod surroundings {
+    /// How the shaft lies; halved for a vertical shaft.
+    pub const POSITION: &[(&str, f64)] = &[("horizontal", 1.0), ("vertical", 0.5)];
+    /// Dirt.
+    pub const DIRT: &[(&str, f64)] = &[("light", 1.0), ("severe", 0.7), ("extreme", 0.4)];
+    /// Moisture.
+    pub const MOISTURE: &[(&str, f64)] = &[
+        ("dry", 1.0),
+        ("humid", 0.7),
+        ("condensation", 0.4),
+        ("water", 0.1),
+    ];
+    /// Vibration: below 5 mm/s, 5 to 10 mm/s, above.
+    pub const VIBRATION: &[(&str, f64)] = &[("low", 1.0), ("medium", 0.6), ("high", 0.3)];
+}
