@@ -45,13 +45,20 @@ fn texts_after<'a>(source: &'a str, mark: &'a str) -> impl Iterator<Item = Strin
     })
 }
 
-#[test]
-fn every_formula_is_understood() {
+/// All of them, with their files.
+pub(crate) fn all() -> Vec<(String, String)> {
     let mut found = Vec::new();
     formulas(
         std::path::Path::new(concat!(env!("CARGO_MANIFEST_DIR"), "/src")),
         &mut found,
     );
+    found
+}
+
+#[test]
+fn every_formula_is_understood() {
+    let found = all();
+    assert!(found.len() > 40, "only {} formulas found", found.len());
     let strange: Vec<_> = found
         .iter()
         .filter(|(_, formula)| Formula::parse(formula).is_none())

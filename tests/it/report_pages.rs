@@ -112,4 +112,6 @@ fn write_pages() {
         std::fs::write(format!("{folder}/{name}.html"), page).expect("written");
     }
     std::fs::write(format!("{folder}/hostile.html"), hostile::page()).expect("written");
+    let page = templates().page(&fixtures::frame(), &others::formulas());
+    std::fs::write(format!("{folder}/formulas.html"), page.expect("lays out")).expect("written");
 }

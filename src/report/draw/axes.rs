@@ -98,7 +98,7 @@ impl Axis {
 pub fn round_ticks(axis: &Axis, gap: f64) -> Vec<f64> {
     let per_px = (axis.high - axis.low).abs() / (axis.end - axis.start).abs().max(1.0);
     let wanted = (per_px * gap).max(1e-9);
-    let decade = power_of_ten(lg(wanted).floor());
+    let decade = decade_below(wanted);
     let step = [1.0, 2.0, 5.0, 10.0]
         .into_iter()
         .map(|m| m * decade)
@@ -111,6 +111,18 @@ pub fn round_ticks(axis: &Axis, gap: f64) -> Vec<f64> {
         k += 1.0;
     }
     out
+}
+
+/// The power of ten at or below a positive number, without the noise of exponentials.
+pub fn decade_below(value: f64) -> f64 {
+    let mut decade = 1.0_f64;
+    while decade > value && decade > 1e-12 {
+        decade /= 10.0;
+    }
+    while decade * 10.0 <= value && decade < 1e12 {
+        decade *= 10.0;
+    }
+    decade
 }
 
 /// Round viscosities in the order they are wanted: decades, then 5, 2, 3, 1.5 and 7 in each.

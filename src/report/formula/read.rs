@@ -1,166 +1,42 @@
 //! Reads plain-text formulas.
 
+mod prose;
+mod tokens;
+
 use super::Node;
+use prose::{FUNCTIONS, JOINTS, prose};
+use tokens::{Placed, Token, tokens};
 
 /// Brackets may stand so deep.
 const DEPTH: usize = 40;
 
-#[derive(Clone, Debug, PartialEq)]
-enum Token {
-    Number(String),
-    Name(String),
-    Sign(&'static str),
-}
-
-/// Signs of two or more characters first.
-const SIGNS: [(&str, &str); 27] = [
-    ("...", "…"),
-    ("..", "…"),
-    ("<=", "≤"),
-    (">=", "≥"),
-    ("->", "→"),
-    ("±", "±"),
-    ("+/-", "±"),
-    ("≤", "≤"),
-    ("≥", "≥"),
-    ("≈", "≈"),
-    ("~", "≈"),
-    ("=", "="),
-    ("<", "<"),
-    (">", ">"),
-    ("+", "+"),
-    ("-", "−"),
-    ("−", "−"),
-    ("*", "*"),
-    ("·", "*"),
-    ("×", "*"),
-    ("/", "/"),
-    ("^", "^"),
-    ("(", "("),
-    (")", ")"),
-    ("[", "["),
-    ("]", "]"),
-    ("|", "|"),
-];
-const MORE_SIGNS: [(&str, &str); 8] = [
-    ("{", "{"),
-    ("}", "}"),
-    (",", ","),
-    (";", ";"),
-    (":", ":"),
-    ("²", "²"),
-    ("³", "³"),
-    ("%", "%"),
-];
-
 const RELATIONS: [&str; 8] = ["=", "≤", "≥", "<", ">", "≈", "→", "…"];
 const BREAKS: [&str; 3] = [",", ";", ":"];
-const JOINTS: [&str; 12] = [
-    "for",
-    "if",
-    "where",
-    "else",
-    "and",
-    "with",
-    "in",
-    "at",
-    "or",
-    "otherwise",
-    "from",
-    "to",
-];
-const FUNCTIONS: [&str; 20] = [
-    "lg", "ln", "log", "log10", "exp", "sqrt", "sin", "cos", "tan", "asin", "acos", "atan",
-    "arcsin", "arccos", "arctan", "min", "max", "abs", "tanh", "inv",
-];
-
 pub(super) fn formula(text: &str) -> Option<Node> {
     let tokens = tokens(text)?;
     let mut reader = Reader {
+        text,
         tokens,
         at: 0,
         depth: 0,
+        bars: 0,
     };
     let node = reader.clauses()?;
     (reader.at == reader.tokens.len()).then_some(node)
 }
 
-fn tokens(text: &str) -> Option<Vec<Token>> {
-    let mut out = Vec::new();
-    let mut rest = text.trim_start();
-    if rest.is_empty() {
-        return None;
-    }
-    while let Some(first) = rest.chars().next() {
-        let taken = if first.is_ascii_digit()
-            || (first == '.' && rest[1..].starts_with(|c: char| c.is_ascii_digit()))
-        {
-            number(rest)
-        } else if first.is_alphabetic() {
-            name(rest)
-        } else {
-            let sign = SIGNS
-                .iter()
-                .chain(&MORE_SIGNS)
-                .find(|(raw, _)| rest.starts_with(raw))?;
-            out.push(Token::Sign(sign.1));
-            rest = rest[sign.0.len()..].trim_start();
-            continue;
-        };
-        let word = &rest[..taken];
-        out.push(if first.is_alphabetic() {
-            Token::Name(word.into())
-        } else {
-            Token::Number(word.into())
-        });
-        rest = rest[taken..].trim_start();
-    }
-    Some(out)
-}
-
-/// Length of the number at the start: digits, a point, an exponent.
-fn number(text: &str) -> usize {
-    let bytes = text.as_bytes();
-    let digits = |from: usize| {
-        bytes[from..]
-            .iter()
-            .take_while(|b| b.is_ascii_digit())
-            .count()
-    };
-    let mut len = digits(0);
-    if bytes.get(len) == Some(&b'.') && bytes.get(len + 1).is_some_and(u8::is_ascii_digit) {
-        len += 1 + digits(len + 1);
-    }
-    if matches!(bytes.get(len), Some(b'e' | b'E')) {
-        let sign = usize::from(matches!(bytes.get(len + 1), Some(b'-' | b'+')));
-        let power = bytes
-            .get(len + 1 + sign)
-            .map_or(0, |_| digits(len + 1 + sign));
-        if power > 0 {
-            len += 1 + sign + power;
-        }
-    }
-    len
-}
-
-/// Length of the name at the start: letters, digits, `_`, primes.
-fn name(text: &str) -> usize {
-    text.char_indices()
-        .find(|(_, c)| {
-            !(c.is_alphanumeric() && !matches!(c, '²' | '³') || matches!(c, '_' | '\'' | '′'))
-        })
-        .map_or(text.len(), |(i, _)| i)
-}
-
-struct Reader {
-    tokens: Vec<Token>,
+struct Reader<'a> {
+    text: &'a str,
+    tokens: Vec<Placed>,
     at: usize,
     depth: usize,
+    /// How many bars of absolute values are open.
+    bars: usize,
 }
 
-impl Reader {
+impl Reader<'_> {
     fn peek(&self) -> Option<&Token> {
-        self.tokens.get(self.at)
+        self.tokens.get(self.at).map(|placed| &placed.token)
     }
 
     fn take(&mut self, sign: &str) -> bool {
@@ -178,40 +54,49 @@ impl Reader {
         found
     }
 
-    /// Formulas parted by commas and joining words.
+    /// Formulas and prose, parted by commas and joining words.
     fn clauses(&mut self) -> Option<Node> {
         let mut parts = Vec::new();
-        loop {
-            while let Some(words) = self.words() {
-                parts.push(words);
-            }
-            if self.peek().is_some() {
+        while self.peek().is_some() {
+            let end = self.clause_end();
+            if end == self.at {
+                parts.push(self.words_to(self.at + 1));
+            } else if prose(&self.tokens[self.at..end]) {
+                parts.push(self.words_to(end));
+            } else {
                 parts.push(self.relation()?);
+                if self.at != end {
+                    return None;
+                }
             }
             if let Some(mark) = self.take_any(&BREAKS) {
                 parts.push(Node::Sign(mark));
-            } else if self.peek().is_none() {
-                break;
-            } else if !self.at_words() {
-                return None;
             }
         }
-        (!parts.is_empty()).then(|| one(parts))
+        Some(one(parts))
     }
 
-    fn at_words(&self) -> bool {
-        matches!(self.peek(), Some(Token::Name(n)) if JOINTS.contains(&n.as_str()))
-    }
-
-    fn words(&mut self) -> Option<Node> {
-        if !self.at_words() {
-            return None;
+    /// Where the clause under way ends: before a joining word or a break outside all brackets.
+    fn clause_end(&self) -> usize {
+        let mut depth = 0_usize;
+        for (i, placed) in self.tokens.iter().enumerate().skip(self.at) {
+            match &placed.token {
+                Token::Sign("(" | "[" | "{") => depth += 1,
+                Token::Sign(")" | "]" | "}") => depth = depth.saturating_sub(1),
+                Token::Sign(s) if depth == 0 && BREAKS.contains(s) => return i,
+                Token::Name(n) if depth == 0 && JOINTS.contains(&n.as_str()) => return i,
+                _ => {}
+            }
         }
-        let Some(Token::Name(word)) = self.peek().cloned() else {
-            return None;
-        };
-        self.at += 1;
-        Some(Node::Words(word))
+        self.tokens.len()
+    }
+
+    /// The text up to that token, as it was written.
+    fn words_to(&mut self, end: usize) -> Node {
+        let from = self.tokens[self.at].from;
+        let to = self.tokens[end - 1].to;
+        self.at = end;
+        Node::Words(self.text[from..to].to_owned())
     }
 
     /// Sides with signs of relation between them.
@@ -242,7 +127,13 @@ impl Reader {
         let mut factors = vec![self.power()?];
         loop {
             if self.take("*") {
-                factors.push(self.power()?);
+                if self.starts_factor() {
+                    factors.push(self.power()?);
+                } else {
+                    // a star on the symbol before it
+                    let starred = factors.pop()?;
+                    factors.push(Node::Power(Box::new(starred), Box::new(Node::Sign("∗"))));
+                }
             } else if self.take("/") {
                 let below = unwrapped(self.power()?);
                 let above = unwrapped(factor(factors));
@@ -259,6 +150,7 @@ impl Reader {
         match self.peek() {
             Some(Token::Number(_)) => true,
             Some(Token::Name(n)) => !JOINTS.contains(&n.as_str()),
+            Some(Token::Sign("|")) => self.bars == 0,
             Some(Token::Sign(s)) => ["(", "[", "{"].contains(s),
             None => false,
         }
@@ -324,12 +216,53 @@ impl Reader {
     }
 
     fn bracketed(&mut self) -> Option<Node> {
-        for (open, close) in [("(", ")"), ("[", "]"), ("{", "}"), ("|", "|")] {
+        for (open, close) in [("(", ")"), ("[", "]"), ("{", "}")] {
             if self.take(open) {
-                let inside = self.deeper(Self::arguments)?;
+                let end = self.closing(open, close)?;
+                let inside = if end > self.at && self.told(end) {
+                    self.words_to(end)
+                } else {
+                    let bars = std::mem::take(&mut self.bars);
+                    let inside = self.deeper(Self::arguments)?;
+                    self.bars = bars;
+                    inside
+                };
                 return self
                     .take(close)
                     .then(|| Node::Group(open, Box::new(inside), close));
+            }
+        }
+        if self.bars == 0 && self.take("|") {
+            self.bars += 1;
+            let inside = self.deeper(Self::arguments)?;
+            self.bars -= 1;
+            return self
+                .take("|")
+                .then(|| Node::Group("|", Box::new(inside), "|"));
+        }
+        None
+    }
+
+    /// Whether what stands before `end` is prose.
+    fn told(&self, end: usize) -> bool {
+        let inside = &self.tokens[self.at..end];
+        let joined = inside
+            .iter()
+            .any(|t| matches!(&t.token, Token::Name(n) if JOINTS.contains(&n.as_str())));
+        joined || prose(inside)
+    }
+
+    /// Where the bracket just opened closes.
+    fn closing(&self, open: &str, close: &str) -> Option<usize> {
+        let mut depth = 1_usize;
+        for (i, placed) in self.tokens.iter().enumerate().skip(self.at) {
+            match &placed.token {
+                Token::Sign(s) if *s == open => depth += 1,
+                Token::Sign(s) if *s == close => depth -= 1,
+                _ => {}
+            }
+            if depth == 0 {
+                return Some(i);
             }
         }
         None

@@ -50,7 +50,7 @@ const GREEK: [(&str, &str); 40] = [
     ("Xi", "Ξ"),
     ("degC", "°C"),
     ("mm2", "mm²"),
-    ("epsilon0", "ε0"),
+    ("eps", "ε"),
     ("vartheta", "ϑ"),
 ];
 
@@ -111,12 +111,18 @@ fn letter(head: &str) -> (String, String) {
 
 fn stays_whole(first: char, rest: &str) -> bool {
     let capitals = first.is_uppercase() && rest.chars().all(char::is_uppercase);
-    let word = rest.chars().all(char::is_lowercase) && rest.chars().count() >= 3;
+    let vowel = rest.contains(['a', 'e', 'i', 'o', 'u', 'y']);
+    let word = vowel && rest.chars().all(char::is_lowercase) && rest.chars().count() >= 3;
+    let short = first.is_lowercase()
+        && matches!(
+            rest,
+            "ew" | "ld" | "he" | "ll" | "er" | "ot" | "ny" | "ax" | "in"
+        );
     let unit = matches!(
         (first, rest),
         ('m', "m" | "m2" | "in") | ('k', "g" | "W" | "N") | ('P', "a") | ('G' | 'M', "Pa")
     );
-    capitals || word || unit
+    capitals || word || short || unit
 }
 
 #[cfg(test)]

@@ -1,7 +1,7 @@
 //! Writes formulas as MathML.
 
 use super::Node;
-use super::symbol::take_apart;
+use super::symbol::{Symbol, take_apart};
 use crate::report::escape::{Markup, push_text};
 
 /// The whole formula; symbols among `numbers` have been replaced and need signs between them.
@@ -77,7 +77,7 @@ fn write(out: &mut String, node: &Node, figures: bool) {
         Node::Power(a, b) => pair(out, "msup", a, b, figures),
         Node::Root(a) => wrapped(out, "msqrt", |out| write(out, a, figures)),
         Node::Function(name, a) => wrapped(out, "mrow", |out| {
-            tagged(out, "mi", name);
+            tagged(out, "mi", if name == "sum" { "∑" } else { name });
             tagged(out, "mo", "\u{2061}");
             if !matches!(a.as_ref(), Node::Group(..)) {
                 out.push_str("<mspace width=\"0.17em\"/>");
@@ -167,14 +167,26 @@ fn parted(text: &str) -> String {
 }
 
 fn symbol(out: &mut String, name: &str) {
+    if name.contains('.') {
+        return tagged(out, "mi", &name.replace('.', "·"));
+    }
     let symbol = take_apart(name);
-    let base = format!("{}{}", symbol.base, symbol.primes);
     if symbol.sub.is_empty() {
-        return tagged(out, "mi", &base);
+        return base(out, &symbol);
     }
     wrapped(out, "msub", |out| {
-        tagged(out, "mi", &base);
+        base(out, &symbol);
         let digits = symbol.sub.chars().all(|c| c.is_ascii_digit());
         tagged(out, if digits { "mn" } else { "mi" }, &symbol.sub);
+    });
+}
+
+fn base(out: &mut String, symbol: &Symbol) {
+    if symbol.primes.is_empty() {
+        return tagged(out, "mi", &symbol.base);
+    }
+    wrapped(out, "msup", |out| {
+        tagged(out, "mi", &symbol.base);
+        tagged(out, "mo", &symbol.primes);
     });
 }

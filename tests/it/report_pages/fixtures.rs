@@ -788,6 +788,7 @@ pub(crate) fn forty() -> Sheet {
     sheet
 }
 
+#[expect(clippy::too_many_lines, reason = "a page model written out")]
 pub(crate) fn overview() -> Sheet {
     let row = |item: u32,
                tag: &str,

@@ -40,6 +40,7 @@ fn cell(count: u32, machines: &str, means: &str) -> CrossCell {
     }
 }
 
+#[expect(clippy::too_many_lines, reason = "a page model written out")]
 pub(crate) fn audit() -> Sheet {
     let row = |label: &str, note: &str, serves: Option<CrossCell>, not: CrossCell| CrossRow {
         label: label.into(),
@@ -268,6 +269,28 @@ pub(crate) fn methods() -> Sheet {
         }],
     };
     sheet("methods", "", "Methods", Body::Methods(Box::new(body)))
+}
+
+/// Every formula of the program on one sheet, to be looked at.
+pub(crate) fn formulas() -> Sheet {
+    let methods = crate::report_formulas::all()
+        .into_iter()
+        .enumerate()
+        .map(|(i, (file, formula))| Method {
+            id: format!("f{i}"),
+            name: format!("{i} {file}"),
+            title: format!("{i}"),
+            range: formula.clone(),
+            formula,
+            ..Method::default()
+        })
+        .collect();
+    sheet(
+        "methods",
+        "",
+        "Formulas",
+        Body::Methods(Box::new(MethodAppendix { methods })),
+    )
 }
 
 pub(crate) fn rules() -> Sheet {

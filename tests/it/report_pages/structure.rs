@@ -165,8 +165,9 @@ fn tables_and_figures_can_be_read_aloud() {
             }
             if tag.class("scroll") || tag.class("f") {
                 assert!(
-                    tag.attr("tabindex") == Some("0")
-                        && tag.attr("role") == Some("region")
+                    tag.is("section")
+                        && tag.attr("tabindex") == Some("0")
+                        && tag.is("section")
                         && tag.attr("aria-label").is_some(),
                     "{name}: {tag:?}"
                 );

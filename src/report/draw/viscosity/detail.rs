@@ -4,7 +4,7 @@
 use super::lines::{shown, viscosity_at};
 use super::plot::Plot;
 use super::{OilLine, ViscosityFigure};
-use crate::report::draw::axes::{Axes, Axis, Scale, viscosity_groups};
+use crate::report::draw::axes::{Axes, Axis, Scale, decade_below, viscosity_groups};
 use crate::report::draw::measure::{Anchor, Style};
 use crate::report::draw::svg::{Alternative, Canvas};
 use crate::report::draw::{Drawing, Rect, pt};
@@ -147,7 +147,7 @@ pub fn draw_detail(figure: &ViscosityFigure, detail: &Detail, uid: &str) -> Draw
 fn fine_groups(axes: &Axes) -> Vec<Vec<f64>> {
     let mut groups = viscosity_groups();
     let span = axes.y.high - axes.y.low;
-    let decade = crate::numeric::math::power_of_ten(crate::numeric::math::lg(span).floor());
+    let decade = decade_below(span);
     for step in [0.5, 0.2, 0.1] {
         let step = step * decade;
         let first = (axes.y.low / step).ceil();
