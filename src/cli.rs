@@ -28,6 +28,7 @@ pub struct Cli {
 }
 
 /// Options shared by all commands.
+#[expect(clippy::struct_excessive_bools, reason = "switches of a command line")]
 #[derive(Clone, Debug, Default, Args)]
 #[command(next_help_heading = "Shared options")]
 pub struct Shared {
@@ -126,7 +127,7 @@ pub enum Gate {
 /// Colour.
 #[derive(Clone, Copy, Debug, Default, PartialEq, Eq, ValueEnum)]
 pub enum When {
-    /// On a terminal, unless NO_COLOR is set or TERM is dumb.
+    /// On a terminal, unless `NO_COLOR` is set or `TERM` is dumb.
     #[default]
     Auto,
     /// Always.
@@ -162,10 +163,12 @@ pub enum Command {
         See also: weigh, why")]
     Need(Need),
     /// Weigh candidate oils against what machines need
-    #[command(after_help = "Examples:\n  filmwright weigh CV-104              one machine, all suitable oils\n  \
+    #[command(
+        after_help = "Examples:\n  filmwright weigh CV-104              one machine, all suitable oils\n  \
         filmwright weigh 'CV-*' -f csv       several, as a table\n  \
         filmwright weigh --gate fails        exit 1 if any oil in use fails\n\
-        See also: need, why")]
+        See also: need, why"
+    )]
     Weigh(Weigh),
     /// The traced steps behind one verdict
     #[command(after_help = "Example:\n  filmwright why M01 O-13 --demo")]
@@ -174,8 +177,10 @@ pub enum Command {
     #[command(after_help = "Example:\n  filmwright oil O-12 --at -15degC --at 85degC --demo")]
     Oil(Oil),
     /// HTML sheets: overview, one sheet a machine
-    #[command(after_help = "Examples:\n  filmwright report --demo\n  filmwright report -o out/\n  \
-        filmwright report --one-file -o review.html --only 'CV-*'")]
+    #[command(
+        after_help = "Examples:\n  filmwright report --demo\n  filmwright report -o out/\n  \
+        filmwright report --one-file -o review.html --only 'CV-*'"
+    )]
     Report(Report),
     /// The rules built in: formula, range of use, source, defaults
     #[command(after_help = "Examples:\n  filmwright rules\n  filmwright rules gear_parallel_bevel")]
@@ -308,7 +313,7 @@ pub enum Paper {
 pub struct Rules {
     /// Ids, names or patterns; an overview where none is given
     pub rules: Vec<String>,
-    /// Only this kind: parts, suitability, base_stocks, classes, limits, grease, cautions
+    /// Only this kind: parts, suitability, base stocks, classes, limits, grease, cautions
     #[arg(long, value_name = "KIND")]
     pub kind: Option<String>,
 }

@@ -13,12 +13,20 @@
 //!
 //! The pipeline runs in one direction; nothing reaches back. The rooms, in the order of the arrows:
 
+pub mod assets;
 pub mod cli;
+pub mod demand;
+pub mod input;
+pub mod judge;
 pub mod model;
 pub mod numeric;
+pub mod oil;
 pub mod quantity;
 pub mod relation;
 pub mod report;
+pub mod results;
 pub mod source;
+pub mod suitability;
 pub mod trace;
+pub mod weighing;
 pub mod work;

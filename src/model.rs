@@ -5,11 +5,14 @@
 //! only to lie in a range, or unknown; `None` around it means that nobody wrote anything.
 
 pub mod bearing_table;
+pub mod facts;
 pub mod machine;
 pub mod oil;
 pub mod part;
+pub mod rulebook;
 pub mod site;
 pub mod stated;
+pub mod word;
 
 pub use machine::{Fill, Lubrication, OilNow, Point, Sump};
 pub use oil::Oil;

@@ -1,17 +1,19 @@
 //! The published relations, one a file, each once. `work`, `why`, the judge and the report all
 //! call these functions; nothing here knows of machines, messages or files.
 
-
 pub use outside::Outside;
 
 pub mod bearing;
 pub mod film;
 pub mod gear;
 pub mod guidance;
+pub mod heat;
+pub mod journal;
 pub mod oil;
 pub mod oil_fits;
 pub mod outside;
 pub mod sump;
+pub mod thrust;
 
 /// What the program says about a relation wherever it prints a result of it.
 #[derive(Debug, PartialEq, Eq)]

@@ -40,6 +40,33 @@ pub static PART: Law = Law {
     source: "definition",
 };
 
+/// Start temperature over pour point.
+pub static POUR_MARGIN: Law = Law {
+    name: "pour-margin",
+    title: "Margin of the start temperature over the pour point",
+    formula: "margin = t_start - t_pour - Delta_t_least",
+    range: "counted from the least margin, at which the verdict becomes fails",
+    source: "definition; the least margin by the rule named beside it",
+};
+
+/// Running temperature under the oil's limit.
+pub static CEILING_MARGIN: Law = Law {
+    name: "oil-ceiling-margin",
+    title: "Margin of the running temperature under the oil's limit",
+    formula: "margin = t_max - t",
+    range: "bulk oil at the hottest ambient",
+    source: "definition; the limit by the supplier or the base stock",
+};
+
+/// Over the low end of a use range.
+pub static USE_MARGIN: Law = Law {
+    name: "use-range-margin",
+    title: "Margin of the start temperature over the low end of the use range",
+    formula: "margin = t_start - t_low",
+    range: "coldest start",
+    source: "definition; the range by the thickener",
+};
+
 /// `t = t_amb + rise`.
 pub fn running(
     ambient: ThermodynamicTemperature,
@@ -86,7 +113,10 @@ mod tests {
 
     #[test]
     fn across_is_carried_on_beyond_its_ends() {
-        let ends = ((celsius(-10.0), celsius(40.0)), (celsius(30.0), celsius(60.0)));
+        let ends = (
+            (celsius(-10.0), celsius(40.0)),
+            (celsius(30.0), celsius(60.0)),
+        );
         for (ambient, sump) in [(-10.0, 40.0), (10.0, 50.0), (30.0, 60.0), (50.0, 70.0)] {
             let t = across(celsius(ambient), ends.0, ends.1);
             assert!((to_celsius(t) - sump).abs() < 1e-9, "{ambient}");

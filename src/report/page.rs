@@ -8,14 +8,15 @@ mod drawn;
 mod outline;
 mod style;
 
+use crate::assets;
 use crate::report::escape::{self, Markup};
 use crate::report::model::{Body, Frame, NavLink, Sheet};
 use crate::report::{formula, markdown};
-use include_dir::{Dir, include_dir};
 use std::fmt;
 use tera::{Context, ErrorKind, Kwargs, State, Tera, TeraResult, Value};
 
-static BUILT_IN: Dir<'static> = include_dir!("$CARGO_MANIFEST_DIR/templates/report");
+/// The folder of the report's templates.
+const FOLDER: &str = "report/";
 
 /// Where a built-in template stands, for a user's own of the same name to go before it.
 const PREFIX: &str = "builtin/";
@@ -80,6 +81,11 @@ impl TemplateProblem {
     }
 }
 
+/// A template's name without its folder.
+fn plain_name(path: &str) -> &str {
+    path.strip_prefix(FOLDER).unwrap_or(path)
+}
+
 fn shown_name(name: &str) -> String {
     name.strip_prefix(PREFIX).map_or_else(
         || name.to_owned(),
@@ -118,9 +124,12 @@ impl Templates {
         );
         tera.set_fallback_prefixes([PREFIX])
             .map_err(|e| TemplateProblem::new(&e, "templates"))?;
-        let built_in = BUILT_IN.files().filter_map(|file| {
-            let name = format!("{PREFIX}{}", file.path().display());
-            file.contents_utf8().map(|text| (name, text))
+        let built_in = assets::templates(FOLDER);
+        let built_in = built_in.iter().map(|file| {
+            (
+                format!("{PREFIX}{}", plain_name(&file.path)),
+                file.text.as_str(),
+            )
         });
         let own = own.iter().map(|(name, text)| (name.clone(), text.as_str()));
         let all: Vec<(String, &str)> = built_in.chain(own).collect();
@@ -131,12 +140,11 @@ impl Templates {
 
     /// Names of the built-in templates, sorted.
     pub fn built_in() -> Vec<String> {
-        let mut names: Vec<String> = BUILT_IN
-            .files()
-            .map(|file| file.path().display().to_string())
-            .collect();
-        names.sort();
-        names
+        let files = assets::templates(FOLDER);
+        files
+            .iter()
+            .map(|file| plain_name(&file.path).to_owned())
+            .collect()
     }
 
     /// One sheet as a page of its own.

@@ -1,5 +1,18 @@
 //! Everything tested from outside the crate, in one binary.
 
+mod chance;
+mod checks;
+mod journal_heat;
+mod journal_table;
+mod properties_film;
+mod properties_oil;
+mod reference_film;
+mod reference_journal;
+mod reference_oil;
+mod refusals_film;
+mod refusals_oil;
 mod report_figures;
 mod report_formulas;
 mod report_pages;
+mod rules;
+mod work_journal;

@@ -1,0 +1,3 @@
+//! From text to checked types.
+
+pub mod rules;
