@@ -9,7 +9,7 @@ mod lines;
 mod plot;
 
 use super::axes::{Axes, Axis, Scale, viscosity_groups};
-use super::measure::{Anchor, Style};
+use super::measure::{Anchor, Style, fit};
 use super::svg::{Alternative, Canvas};
 use super::{Draw, Drawing, Rect, pt};
 use crate::report::model::Degrees;
@@ -247,7 +247,7 @@ impl ViscosityFigure {
             for x in [a, b] {
                 canvas.line(pt(x, axes.frame().bottom()), pt(x, y + 4.0), "ext");
             }
-            canvas.across(a, b, y, &band.label);
+            canvas.across(a, b, y, &fit(&band.label, Style::Dim, WIDTH - 8.0));
         }
     }
 }
@@ -307,5 +307,6 @@ fn label_jaw(canvas: &mut Canvas, axes: &Axes, jaw: &Jaw) {
         (pt(axes.frame().right() - 4.0, near), Anchor::End),
         (pt(axes.frame().right() - 4.0, far), Anchor::End),
     ];
-    canvas.place(Style::Strong, &jaw.label, &places);
+    let label = fit(&jaw.label, Style::Strong, axes.frame().w - 8.0);
+    canvas.place(Style::Strong, &label, &places);
 }

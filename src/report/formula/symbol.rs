@@ -116,7 +116,7 @@ fn stays_whole(first: char, rest: &str) -> bool {
     let short = first.is_lowercase()
         && matches!(
             rest,
-            "ew" | "ld" | "he" | "ll" | "er" | "ot" | "ny" | "ax" | "in"
+            "ew" | "il" | "ir" | "ld" | "he" | "ll" | "er" | "ot" | "ny" | "ax" | "in"
         );
     let unit = matches!(
         (first, rest),

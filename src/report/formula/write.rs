@@ -185,8 +185,11 @@ fn base(out: &mut String, symbol: &Symbol) {
     if symbol.primes.is_empty() {
         return tagged(out, "mi", &symbol.base);
     }
-    wrapped(out, "msup", |out| {
+    // side by side: as a superscript the prime would be raised twice
+    wrapped(out, "mrow", |out| {
         tagged(out, "mi", &symbol.base);
-        tagged(out, "mo", &symbol.primes);
+        out.push_str("<mo form=\"postfix\" lspace=\"0em\" rspace=\"0em\">");
+        push_text(out, &symbol.primes);
+        out.push_str("</mo>");
     });
 }

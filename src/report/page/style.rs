@@ -52,3 +52,38 @@ pub(super) fn policy(style: &str) -> String {
         "default-src 'none'; style-src 'sha256-{hash}'; img-src data:; base-uri 'none'; form-action 'none'"
     )
 }
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use crate::report::model::Paper;
+
+    #[test]
+    fn the_foot_names_paper_and_document() {
+        let frame = Frame {
+            document: Some("A-1".into()),
+            revision: Some("</style>".into()),
+            paper: Paper::Letter,
+            ..Frame::default()
+        };
+        let style = paper(&frame, None);
+        assert!(style.contains("size:letter portrait"));
+        assert!(style.contains("A\\2d 1") && !style.contains("</style"));
+    }
+
+    #[test]
+    fn the_policy_lets_in_this_style_only() {
+        // SHA-256 of the empty text: FIPS 180-4 test value
+        let empty = "sha256-47DEQpj8HBSa+/TImW+5JCeuQeRkm5NMpJWZG3hSuFU=";
+        assert!(policy("").contains(empty));
+        assert!(!policy("p{}").contains(empty));
+    }
+
+    #[test]
+    fn comments_and_indentation_go() {
+        assert_eq!(
+            close_set("/* a */\n\n  p {\n  x: y;\n}\n"),
+            "p {\nx: y;\n}\n"
+        );
+    }
+}

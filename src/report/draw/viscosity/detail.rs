@@ -5,7 +5,7 @@ use super::lines::{shown, viscosity_at};
 use super::plot::Plot;
 use super::{OilLine, ViscosityFigure};
 use crate::report::draw::axes::{Axes, Axis, Scale, decade_below, viscosity_groups};
-use crate::report::draw::measure::{Anchor, Style};
+use crate::report::draw::measure::{Anchor, Style, fit};
 use crate::report::draw::svg::{Alternative, Canvas};
 use crate::report::draw::{Drawing, Rect, pt};
 use serde::{Deserialize, Serialize};
@@ -116,11 +116,12 @@ pub fn draw_detail(figure: &ViscosityFigure, detail: &Detail, uid: &str) -> Draw
     let frame = axes.frame();
     let mut canvas = Canvas::new(WIDTH, frame.bottom() + plot.tick_row + 24.0);
     let heading = format!("Detail {}: {}", detail.letter, detail.title);
+    let shown_heading = fit(&heading, Style::Head, WIDTH - LEFT);
     canvas.text(
         pt(frame.x, TOP - 13.0),
         Anchor::Start,
         Style::Head,
-        &heading,
+        &shown_heading,
     );
     plot.grid(
         &mut canvas,

@@ -3,7 +3,7 @@
 use super::tokens::{Placed, Token};
 
 /// Words that join formulas.
-pub(super) const JOINTS: [&str; 24] = [
+pub(super) const JOINTS: [&str; 28] = [
     "for",
     "if",
     "where",
@@ -28,6 +28,10 @@ pub(super) const JOINTS: [&str; 24] = [
     "is",
     "are",
     "between",
+    "held",
+    "taken",
+    "but",
+    "as",
 ];
 /// Names of functions.
 pub(super) const FUNCTIONS: [&str; 21] = [

@@ -15,7 +15,8 @@ pub(super) struct Placed {
 }
 
 /// Signs of two or more characters first.
-const SIGNS: [(&str, &str); 28] = [
+const SIGNS: [(&str, &str); 29] = [
+    ("…", "…"),
     ("...", "…"),
     ("..", "…"),
     ("<=", "≤"),
