@@ -21,6 +21,7 @@ pub mod judge;
 pub mod model;
 pub mod numeric;
 pub mod oil;
+pub mod problem;
 pub mod quantity;
 pub mod relation;
 pub mod report;

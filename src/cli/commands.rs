@@ -1,16 +1,16 @@
 //! One function a command, thin: load, call the room that does the work, print.
 
-mod check;
-mod help;
-mod need;
-mod need_line;
-mod new;
-mod oil;
-mod report;
-mod rules;
-mod weigh;
-mod why;
-mod work;
+pub mod check;
+pub mod help;
+pub mod need;
+pub mod need_line;
+pub mod new;
+pub mod oil;
+pub mod report;
+pub mod rules;
+pub mod weigh;
+pub mod why;
+pub mod work;
 
 pub use check::check;
 pub use help::help;

@@ -2,8 +2,10 @@
 
 mod chance;
 mod checks;
+mod demo;
 mod journal_heat;
 mod journal_table;
+mod problems;
 mod properties_film;
 mod properties_oil;
 mod reference_film;
@@ -15,4 +17,5 @@ mod report_figures;
 mod report_formulas;
 mod report_pages;
 mod rules;
+mod scenario;
 mod work_journal;

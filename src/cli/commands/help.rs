@@ -16,7 +16,7 @@ pub fn help(session: &mut Session<'_>, args: &Help) -> Exit {
         return session.result(&text);
     };
     if topic == "keys" {
-        return session.result(&crate::input::keys::help());
+        return session.result(&crate::input::keys::list::text());
     }
     if let Some(text) = assets::template(&format!("help/{topic}.md")) {
         return session.result(text);
