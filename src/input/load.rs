@@ -312,7 +312,7 @@ fn kind_problem(kind: FileKind, entry: &Entry) -> Option<Problem> {
         return Some(
             at(
                 Code::FileKindOther,
-                format!("this is a file of {word}, one of {} is read here", kind.word()),
+                format!("this is a {word} file, a file that begins with {} is read here", kind.heading()),
             )
             .why("which kind is read where is told by the name of the file, or by --site, --oils, --samples")
             .write(right.remark("if that is what it holds")),

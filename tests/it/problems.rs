@@ -261,3 +261,59 @@ fn messages_speak_no_programmers_language() {
         }
     }
 }
+
+/// The text of a case with something done to it: a piece cut out, doubled, or put in.
+fn mutated(text: &str, at: usize, len: usize, put: &str) -> String {
+    let chars: Vec<char> = text.chars().collect();
+    let from = at % (chars.len() + 1);
+    let to = (from + len).min(chars.len());
+    let before: String = chars[..from].iter().collect();
+    let behind: String = chars[to..].iter().collect();
+    format!("{before}{put}{behind}")
+}
+
+proptest::proptest! {
+    #![proptest_config(proptest::test_runner::Config::with_cases(200))]
+
+    #[test]
+    fn no_text_breaks_the_reader(
+        at in 0..4000_usize,
+        len in 0..40_usize,
+        put in "(\\PC|[-:#\\[\\]{}&*!|>'\"%@`,? \n\t0-9]|unknown|parts|like){0,12}",
+        which in 0..5_usize,
+    ) {
+        let folder = cases("good").join("lime-works");
+        let mut files = files_of(&folder);
+        let place = which % files.len();
+        let text = String::from_utf8_lossy(&files[place].1).into_owned();
+        files[place].1 = mutated(&text, at, len, &put).into_bytes();
+        let (set, problems) = found_in(&files);
+        drop(all(&set, &problems, Look::default()));
+        for problem in problems.sorted() {
+            filmwright::problem::json::object(&set, problem);
+            for write in &problem.write {
+                drop(write.applied(&set));
+            }
+        }
+    }
+
+    #[test]
+    fn no_bytes_break_the_reader(bytes in proptest::collection::vec(0..=255_u8, 0..200)) {
+        for name in ["site.yaml", "oils.yaml", "samples.yaml", "events.yaml"] {
+            let (set, problems) = found_in(&vec![(name.to_owned(), bytes.clone())]);
+            drop(all(&set, &problems, Look::default()));
+        }
+    }
+}
+
+#[test]
+fn a_file_over_the_limit_is_refused_at_once() {
+    let bytes = vec![b'#'; (64 << 20) + 1];
+    let (set, problems) = found_in(&vec![("site.yaml".to_owned(), bytes)]);
+    let codes: Vec<Code> = problems.sorted().iter().map(|p| p.code).collect();
+    assert!(codes.contains(&Code::FileTooLarge), "{codes:?}");
+    assert!(
+        all(&set, &problems, Look::default()).contains("65 MiB")
+            || all(&set, &problems, Look::default()).contains("64 MiB")
+    );
+}
