@@ -12,6 +12,7 @@ pub mod overlay;
 mod parts;
 pub mod points;
 pub mod reader;
+pub mod rules;
 pub mod samples;
 pub mod schema;
 pub mod site;

@@ -13,6 +13,7 @@
 //!
 //! The pipeline runs in one direction; nothing reaches back. The rooms, in the order of the arrows:
 
+pub mod assets;
 pub mod cli;
 pub mod demand;
 pub mod input;
@@ -23,6 +24,9 @@ pub mod oil;
 pub mod problem;
 pub mod quantity;
 pub mod relation;
+pub mod results;
 pub mod source;
+pub mod suitability;
 pub mod trace;
+pub mod weighing;
 pub mod work;

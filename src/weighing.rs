@@ -1,17 +1,20 @@
 //! From a read site to weighed candidates: every point, every oil, eligibility first.
 
+pub mod facts;
+
 use crate::demand::{Demand, PointDemands, Standing, is_severe, point_demands, takes_grease};
 use crate::judge::because::because;
 use crate::judge::explain::{Explanation, explain};
 use crate::judge::order::{Candidate as Ordered, compare, quantised, thousandths};
 use crate::judge::{Judgement, PreparedOil, PreparedPoint, Verdict, weigh};
+use crate::model::facts::{OilFacts, SumpNow};
 use crate::model::oil::Price;
 use crate::model::rulebook::Rulebook;
 use crate::model::{Oil, OilNow, Point, Site};
 use crate::quantity::Measure;
 use crate::quantity::show::Units;
 use crate::relation::oil::viscosity_temperature::Misfit;
-use crate::suitability::{Eligibility, Suitability};
+use crate::suitability::{Eligibility, Finding, Suitability};
 use std::collections::BTreeSet;
 
 /// A numbered condition that rides with a verdict.
@@ -84,6 +87,8 @@ pub struct Scales<'a> {
     pub oils: Vec<PreparedOil>,
     /// Suitability rules compiled.
     pub suitability: Suitability<'a>,
+    /// What the rules may ask of each oil, in list order.
+    pub facts: Vec<OilFacts>,
     /// Reserve asked, VG steps.
     pub reserve: f64,
     /// Units of sentences.
@@ -104,7 +109,11 @@ pub struct Settings {
 
 impl Default for Settings {
     fn default() -> Self {
-        Self { reserve: None, worn: true, units: Units::Si }
+        Self {
+            reserve: None,
+            worn: true,
+            units: Units::Si,
+        }
     }
 }
 
@@ -121,16 +130,25 @@ impl<'a> Scales<'a> {
         let oils = site
             .oils
             .iter()
-            .map(|oil| {
-                PreparedOil::new(oil, rules, settings.worn).map_err(|e| (oil.id.clone(), e))
-            })
+            .map(|oil| PreparedOil::new(oil, rules, settings.worn).map_err(|e| (oil.id.clone(), e)))
             .collect::<Result<Vec<_>, _>>()?;
-        let on_site = site.points.iter().filter_map(oil_in_use).map(str::to_owned).collect();
+        let on_site = site
+            .points
+            .iter()
+            .filter_map(oil_in_use)
+            .map(str::to_owned)
+            .collect();
         Ok(Self {
             site,
             rules,
+            facts: site
+                .oils
+                .iter()
+                .zip(&oils)
+                .map(|(o, r)| facts::of_oil(o, r))
+                .collect(),
             oils,
-            suitability: Suitability::new(rules, &site.oils),
+            suitability: Suitability::new(rules),
             reserve: settings.reserve.unwrap_or(site.house.reserve.value.base()),
             units: settings.units,
             on_site,
@@ -148,23 +166,44 @@ impl<'a> Scales<'a> {
     pub fn weigh(&self, point: &'a Point) -> Weighed<'a> {
         let (demands, ready) = self.prepare(point);
         let grease = takes_grease(point);
-        let facts = self.suitability.point(point, &demands, self.site);
+        let facts = facts::of_point(point, &demands, self.in_use_facts(point));
+        let card = self.suitability.point(&facts);
         let (mut candidates, mut barred) = (Vec::new(), Vec::new());
         for (i, oil) in self.site.oils.iter().enumerate() {
             if self.oils[i].grease != grease {
                 continue;
             }
             let in_use = oil_in_use(point) == Some(oil.id.as_str());
-            let eligible = self.suitability.assess(&facts, i, in_use);
-            if eligible.is_barred() {
-                barred.push(Barred { oil: i, by: eligible.barred_by(), in_use });
+            let eligible = self
+                .suitability
+                .assess(&card, &self.suitability.oil(&self.facts[i]));
+            if eligible.barred() {
+                let by = eligible.barred_by.iter().map(condition).collect();
+                barred.push(Barred { oil: i, by, in_use });
             } else {
                 let judged = weigh(&ready, &self.oils[i]);
                 candidates.push(self.candidate(&demands, &ready, i, judged, &eligible, in_use));
             }
         }
         self.sort(&mut candidates);
-        Weighed { point, demands, ready, candidates, barred }
+        Weighed {
+            point,
+            demands,
+            ready,
+            candidates,
+            barred,
+        }
+    }
+
+    /// What is in a point now, for the rules of changing over.
+    fn in_use_facts(&self, point: &Point) -> SumpNow {
+        match &point.oil_now {
+            OilNow::Nothing => SumpNow::Nothing,
+            OilNow::Unknown => SumpNow::Unknown,
+            OilNow::Oil(id) => oil_index(self.site, &id.value).map_or(SumpNow::Unknown, |i| {
+                SumpNow::Oil(Box::new(self.facts[i].clone()))
+            }),
+        }
     }
 
     fn candidate(
@@ -173,18 +212,18 @@ impl<'a> Scales<'a> {
         ready: &PreparedPoint,
         oil: usize,
         judgement: Judgement,
-        eligible: &Eligibility<'_>,
+        eligible: &Eligibility,
         in_use: bool,
     ) -> Candidate {
-        let mut conditions = eligible.conditions();
+        let mut conditions: Vec<Condition> = eligible.conditions.iter().map(condition).collect();
         conditions.extend(asked(demands, &judgement));
         let because = because(demands, ready, &self.oils[oil], &judgement, self.units);
         Candidate {
             oil,
             judgement,
             conditions,
-            notes: eligible.notes(),
-            facts_missing: eligible.facts_missing(),
+            notes: eligible.notes.iter().map(condition).collect(),
+            facts_missing: eligible.gaps.iter().map(|g| g.says.clone()).collect(),
             because,
             in_use,
             on_site: self.on_site.contains(&self.site.oils[oil].id),
@@ -215,7 +254,10 @@ impl<'a> Scales<'a> {
         let j = &candidate.judgement;
         let setting = usize::from(j.hot.or(j.cold).or(j.pour).map_or(0, |m| m.setting));
         let oil = &self.oils[candidate.oil];
-        let worn = oil.loss_variants(weighed.ready.severe).last().and_then(Option::as_ref);
+        let worn = oil
+            .loss_variants(weighed.ready.severe)
+            .last()
+            .and_then(Option::as_ref);
         let trace = weighed.trace_of(setting, &self.site.house, self.rules);
         explain(
             &trace.0,
@@ -251,7 +293,9 @@ impl Weighed<'_> {
 
     /// The proposed oil: the first candidate that holds or is tight.
     pub fn proposed(&self) -> Option<&Candidate> {
-        self.candidates.first().filter(|c| c.judgement.verdict <= Verdict::Tight)
+        self.candidates
+            .first()
+            .filter(|c| c.judgement.verdict <= Verdict::Tight)
     }
 }
 
@@ -293,6 +337,16 @@ fn asked(demands: &PointDemands, judgement: &Judgement) -> Vec<Condition> {
             }
         })
         .collect()
+}
+
+/// A finding of a suitability rule as a condition on the sheet.
+fn condition(finding: &Finding) -> Condition {
+    Condition {
+        rule: finding.rule.clone(),
+        says: finding.reason.clone(),
+        act: finding.act.clone(),
+        source: finding.source.join("; "),
+    }
 }
 
 /// Finds an oil by id.

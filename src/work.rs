@@ -6,6 +6,11 @@
 
 pub mod args;
 pub mod batch;
+mod bearing;
+mod contact;
+mod film;
+mod gear;
+mod journal;
 mod json;
 mod oil;
 
@@ -17,7 +22,11 @@ use crate::trace::{Derivation, Known, StepId};
 
 /// The rows of each group, in the order they are listed.
 static GROUPS: &[&[Relation]] = &[
-    oil::ROWS, //
+    oil::ROWS,
+    film::ROWS,
+    bearing::ROWS,
+    gear::ROWS,
+    journal::ROWS,
 ];
 
 /// Every relation, in the order they are listed.

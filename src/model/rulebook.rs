@@ -13,6 +13,7 @@ pub mod compatibility;
 pub mod component;
 pub mod condition;
 pub mod grease;
+mod lookup;
 pub mod provenance;
 pub mod start;
 pub mod suitability;
@@ -135,15 +136,14 @@ impl Rulebook {
         self.serving.between(declared, wanted)
     }
 
-    /// The class a designation means: `ISO-L-CKC` is `CKC`, `SAE 15W-40` an engine grade.
+    /// The class a designation means: `ISO-L-CKC` and `CKC 220` are `CKC`, `SAE 15W-40` is an
+    /// engine grade.
     pub fn class_id(&self, written: &str) -> Option<&str> {
         let plain = class::plain(written);
         self.classes
             .find(&plain)
             .or_else(|| self.classes.find(class::family_of(&plain)?))
+            .or_else(|| self.classes.find(class::without_grade(&plain)?))
             .map(|class| class.id.as_str())
     }
 }
-
-/// What demands and curves look up, in the words they need.
-mod lookup;

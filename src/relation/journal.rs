@@ -115,6 +115,12 @@ pub enum NoFilm {
         /// Load number at the largest eccentricity.
         most: f64,
     },
+    /// A feed hole that is no hole in the width.
+    #[error("a feed hole of {share:.2} of the width; it must lie above 0 and not above 0.5")]
+    Hole {
+        /// Diameter over width.
+        share: f64,
+    },
     /// A film target that no eccentricity meets.
     #[error(
         "a film of {film_um:.1} um is {which} of a radial clearance of {clearance_um:.1} um; \
@@ -140,6 +146,7 @@ impl NoFilm {
             Self::NoLoad => "load-zero",
             Self::WidthRatio { .. } => "width-ratio-out-of-range",
             Self::TooThin { .. } => "film-too-thin",
+            Self::Hole { .. } => "feed-hole-out-of-range",
             Self::Target { .. } => "film-target-impossible",
         }
     }

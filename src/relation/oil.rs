@@ -10,6 +10,7 @@ pub mod d341_z;
 pub mod d6080;
 pub mod density;
 pub mod density_2004;
+pub mod density_iso15144;
 pub mod efflux;
 pub mod grade;
 pub mod piecewise;

@@ -3,4 +3,5 @@
 pub mod limits;
 pub mod pad;
 pub mod series;
+pub mod shape;
 pub mod slider;

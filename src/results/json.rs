@@ -171,7 +171,7 @@ fn unique(map: &Map<String, Value>, symbol: &str) -> String {
     if !map.contains_key(symbol) {
         return symbol.to_owned();
     }
-    (2..)
+    (2..=map.len() + 2)
         .map(|n| format!("{symbol} {n}"))
         .find(|s| !map.contains_key(s))
         .unwrap_or_default()

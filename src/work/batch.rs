@@ -1,6 +1,6 @@
 //! Many relations at once: JSON Lines in, JSON Lines out, in the same order.
 
-use super::{Args, Refusal, json, run};
+use super::{Args, Refusal, json, relation, run};
 use serde_json::{Map, Value as Json, json};
 
 /// The answers to a batch.
@@ -67,7 +67,7 @@ fn read(line: &str) -> Result<Map<String, Json>, Refusal> {
 }
 
 fn work(line: &Map<String, Json>) -> Result<Json, Refusal> {
-    let Some(relation) = line.get("relation").and_then(Json::as_str) else {
+    let Some(name) = line.get("relation").and_then(Json::as_str) else {
         let words = "no relation; write {\"relation\": \"viscosity-index\", \"with\": {…}}";
         return Err(malformed(words));
     };
@@ -81,5 +81,6 @@ fn work(line: &Map<String, Json>) -> Result<Json, Refusal> {
         None => Args::default(),
         Some(_) => return Err(malformed("`with` is not an object")),
     };
-    Ok(json::answer(&run(relation, args)?))
+    let worked = run(name, args)?;
+    Ok(json::answer(relation(name)?, &worked))
 }

@@ -1,16 +1,17 @@
 //! Results and steps as JSON.
 
-use super::{Value, Worked};
+use super::{Relation, Value, Worked};
 use crate::quantity::show::{Units, exact, unit_of};
 use crate::quantity::{Amount, Unit};
 use crate::trace::{Derivation, How, Step, StepId};
 use serde_json::{Map, Value as Json, json};
 
-/// A relation worked out: its results, the steps behind them, remarks.
-pub(super) fn answer(worked: &Worked) -> Json {
+/// A relation worked out: its results, the steps behind them, remarks. A name has no step; the
+/// source of its relation stands beside it.
+pub(super) fn answer(relation: &Relation, worked: &Worked) -> Json {
     let mut result = Map::new();
     for (name, value) in &worked.results {
-        result.insert((*name).to_owned(), result_value(value));
+        result.insert((*name).to_owned(), result_value(relation, value));
     }
     let steps: Vec<Json> = worked
         .trace
@@ -21,14 +22,16 @@ pub(super) fn answer(worked: &Worked) -> Json {
     json!({ "result": result, "steps": steps, "notes": worked.notes })
 }
 
-fn result_value(value: &Value) -> Json {
+fn result_value(relation: &Relation, value: &Value) -> Json {
     match value {
         Value::Quantity { amount, unit, step } => {
             let mut object = in_unit(*amount, unit);
             object.insert("step".to_owned(), json!(step.0));
             Json::Object(object)
         }
-        Value::Text(text) => json!({ "value": text, "unit": "" }),
+        Value::Text(text) => {
+            json!({ "value": text, "unit": "", "source": relation.law.source })
+        }
     }
 }
 

@@ -3,7 +3,7 @@
 
 mod alpha;
 mod blend;
-mod curve;
+pub(super) mod curve;
 mod efflux;
 mod grade;
 mod index;

@@ -10,6 +10,7 @@ use filmwright::quantity::{
 use filmwright::relation::journal::feed::{Coolant, Feed};
 use filmwright::relation::journal::film::Bearing;
 use filmwright::relation::journal::heat::{Cooling, settled};
+use filmwright::relation::journal::viscosity::needed;
 use filmwright::relation::journal::{Duty, Geometry, Route};
 use filmwright::relation::oil::viscosity_temperature::{Line, Point, ViscosityCurve};
 use rayon::prelude::*;
@@ -141,4 +142,34 @@ fn a_balance_is_the_only_one() {
         }
     }
     assert!(looked_at > 20, "{looked_at}");
+}
+
+/// The viscosity that a film's thickness needs is the one the film was worked out with.
+#[test]
+fn viscosity_and_film_undo_each_other() {
+    let mut chance = Chance::seeded(1_958);
+    let mut looked_at = 0;
+    for _ in 0..300 {
+        let case = drawn(&mut chance);
+        let ratio = case.geometry.width_ratio().base();
+        for route in [Route::Reynolds, Route::Iso7902] {
+            let Ok(bearing) = Bearing::new(case.geometry, case.duty, route) else {
+                assert!(!(0.25..=1.0).contains(&ratio), "{ratio}");
+                continue;
+            };
+            let eta = DynamicViscosity::from_base(chance.spread(0.003, 0.6));
+            let Ok(film) = bearing.film(eta) else {
+                continue;
+            };
+            // close to the middle the film hardly changes with viscosity
+            if film.eccentricity.base() < 0.01 {
+                continue;
+            }
+            looked_at += 1;
+            let again = needed(case.geometry, case.duty, film.h_min, route);
+            let again = again.expect("a film there is");
+            assert!((again.base() / eta.base() - 1.0).abs() < 1e-9, "{film:?}");
+        }
+    }
+    assert!(looked_at > 250, "{looked_at}");
 }

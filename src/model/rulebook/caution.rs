@@ -19,7 +19,8 @@ pub struct Caution {
     pub title: String,
     /// Safety or deferral.
     pub kind: CautionKind,
-    /// When it applies: all of these; empty: always. Undecided counts as applying.
+    /// When it applies: all of these; empty: always. Undecided is not enough: a caution that
+    /// shall also stand where a fact is not stated says so.
     pub applies: Vec<Clause>,
     /// The text, Markdown.
     pub text: String,

@@ -221,6 +221,13 @@ pub fn family_of(plain: &str) -> Option<&'static str> {
     })
 }
 
+/// A class without the ISO VG number behind it: `CLP 220` is `CLP`.
+pub fn without_grade(plain: &str) -> Option<&str> {
+    let (class, grade) = plain.rsplit_once([' ', '-'])?;
+    let is_grade = !grade.is_empty() && grade.bytes().all(|b| b.is_ascii_digit());
+    is_grade.then_some(class)
+}
+
 impl Class {
     /// Whether it is an additive family and not a class of a standard.
     pub fn is_family(&self) -> bool {

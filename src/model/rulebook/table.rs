@@ -62,19 +62,25 @@ fn folded(name: &str) -> String {
 impl<T: Entry> Table<T> {
     /// Adds an entry, or puts it in the place of the one with the same id, which comes back.
     pub fn put(&mut self, entry: T) -> Option<T> {
-        let key = format!("={}", entry.id());
-        if let Some(place) = self.places.get(&key) {
-            return Some(std::mem::replace(&mut self.entries[*place], entry));
+        if let Some(place) = self.place(entry.id()) {
+            let old = std::mem::replace(&mut self.entries[place], entry);
+            self.places.clear();
+            (0..self.entries.len()).for_each(|place| self.enter(place));
+            return Some(old);
         }
-        let place = self.entries.len();
+        self.entries.push(entry);
+        self.enter(self.entries.len() - 1);
+        None
+    }
+
+    /// Enters id and names of an entry. An id outranks a name that folds to the same letters.
+    fn enter(&mut self, place: usize) {
+        let entry = &self.entries[place];
         for name in entry.names() {
             self.places.entry(folded(name)).or_insert(place);
         }
-        // an id outranks a name that folds to the same letters
         self.places.insert(folded(entry.id()), place);
-        self.places.insert(key, place);
-        self.entries.push(entry);
-        None
+        self.places.insert(format!("={}", entry.id()), place);
     }
 
     /// The entry with that id, exactly.

@@ -25,7 +25,7 @@ pub static REFERENCE_DIAMETER: Law = Law {
 
 /// Pitch-line speed.
 pub static PITCH_SPEED: Law = Law {
-    name: "gear-pitch-speed",
+    name: "gear-nameplate-speed",
     title: "Pitch-line speed",
     formula: "v = pi d1 n1",
     range: "parallel axes",
@@ -34,7 +34,7 @@ pub static PITCH_SPEED: Law = Law {
 
 /// Reduced radius at the pitch point.
 pub static REDUCED_RADIUS: Law = Law {
-    name: "gear-pitch-radius",
+    name: "gear-nameplate-radius",
     title: "Reduced radius of the flanks at the pitch point",
     formula: "rho_n = a u sin(alpha_wt) / ((u + 1)^2 cos(beta_b))",
     range: "parallel axes, external gears; the working pressure angle taken as the standard one where the teeth are not known",

@@ -68,3 +68,8 @@ pub fn friction_variable(so: Ratio, eccentricity: Ratio, attitude: Angle) -> Rat
     let shear = PI / (so.base() * (1.0 - e * e).sqrt());
     number(shear + 0.5 * e * sin(attitude.base()))
 }
+
+/// Friction coefficient of [`FRICTION`], from the relative clearance and the friction variable.
+pub fn friction(clearance: Ratio, variable: Ratio) -> Ratio {
+    number(clearance.base() * variable.base())
+}

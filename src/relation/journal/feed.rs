@@ -1,6 +1,6 @@
 //! Oil that the feed pushes through a journal bearing, and the heat oil carries.
 
-use super::Geometry;
+use super::{Geometry, NoFilm};
 use crate::numeric::math::ln;
 use crate::quantity::{
     DynamicViscosity, Length, MassDensity, Measure, Pressure, Ratio, SpecificHeatCapacity,
@@ -60,6 +60,25 @@ impl Coolant {
 }
 
 impl Feed {
+    /// A hole opposite the load.
+    ///
+    /// # Errors
+    /// A pressure not above zero, or a hole not between zero and half the width.
+    pub fn hole(geometry: &Geometry, pressure: Pressure, hole: Length) -> Result<Self, NoFilm> {
+        if pressure.base().is_nan() || pressure.base() <= 0.0 {
+            let what = "the feed pressure";
+            return Err(NoFilm::NotPositive { what });
+        }
+        let share = hole.base() / geometry.width().base();
+        if !(share > 0.0 && share <= 0.5) {
+            return Err(NoFilm::Hole { share });
+        }
+        Ok(Self::Hole {
+            pressure,
+            diameter: hole,
+        })
+    }
+
     /// Flow besides the side flow, at a viscosity and eccentricity.
     pub fn flow(
         &self,

@@ -1,11 +1,12 @@
 //! The film of a journal bearing under its load, at a known viscosity.
 
-use super::characteristic::{Characteristic, friction_variable, sommerfeld};
+use super::characteristic::{Characteristic, friction, friction_variable, sommerfeld};
 use super::table::Cut;
 use super::{Duty, Geometry, NoFilm, Route, iso7902, table};
-use crate::quantity::convert::{number, pascals};
+use crate::quantity::convert::{number, pascals, surface_speed};
 use crate::quantity::{
-    Angle, DynamicViscosity, Length, Measure, Power, Pressure, Ratio, VolumeRate,
+    Angle, AngularVelocity, DynamicViscosity, Force, Length, Measure, Power, Pressure, Ratio,
+    VolumeRate,
 };
 use crate::relation::Law;
 use std::f64::consts::PI;
@@ -55,6 +56,15 @@ pub static FLOW: Law = Law {
     title: "oil drawn into the film of a journal bearing",
     formula: "Q = q c (D/2) (omega/2 pi) B, q from the Reynolds equation",
     range: "full bearing fed at the widest gap over its whole width",
+    source: "Raimondi and Boyd 1958 for the form",
+};
+
+/// Oil lost at the edges.
+pub static SIDE_FLOW: Law = Law {
+    name: "journal-side-flow",
+    title: "oil leaving a journal bearing at its edges",
+    formula: "Q_s = (Q_s/Q) Q, the share from the Reynolds equation",
+    range: "full bearing fed at the widest gap; what the feed must at least replace",
     source: "Raimondi and Boyd 1958 for the form",
 };
 
@@ -132,9 +142,7 @@ impl Bearing {
                 Some(Cut::at(ratio).ok_or_else(outside)?)
             }
             Route::Iso7902 => {
-                // a ratio of 1 worked out from two lengths may miss it by a rounding
-                let range = iso7902::NARROWEST - 1e-9..=iso7902::WIDEST + 1e-9;
-                if !range.contains(&ratio.base()) {
+                if !iso7902::covers(ratio) {
                     let (from, to) = (iso7902::NARROWEST, iso7902::WIDEST);
                     return Err(outside("the closed form of ISO 7902-2", from, to));
                 }
@@ -165,7 +173,9 @@ impl Bearing {
 
     /// Load number at a viscosity, [`LOAD_NUMBER`].
     pub fn load_number(&self, eta: DynamicViscosity) -> Ratio {
-        load_number(&self.geometry, &self.duty, eta)
+        let pressure = self.duty.specific_load(&self.geometry);
+        let clearance = self.geometry.relative_clearance();
+        load_number(pressure, clearance, eta, self.duty.speed())
     }
 
     /// Largest load number with a full film, at eccentricity 0.97.
@@ -226,12 +236,12 @@ impl Bearing {
 
     fn solved(&self, c: &Characteristic) -> Film {
         let mean = self.duty.specific_load(&self.geometry);
-        let flow = self.flow_unit() * c.flow.base();
+        let flow = flow(c.flow, &self.geometry, self.duty.speed());
         let mut film = self.common(c.so, c.eccentricity, c.attitude);
-        film.side_flow = VolumeRate::from_base(flow * c.side_share.base());
+        film.side_flow = VolumeRate::from_base(flow.base() * c.side_share.base());
         film.solved = Some(Inside {
-            flow: VolumeRate::from_base(flow),
-            peak: pascals(mean.base() / c.mean_over_peak.base()),
+            flow,
+            peak: peak_pressure(mean, c.mean_over_peak),
             peak_at: c.peak_at,
             rupture_at: c.rupture_at,
         });
@@ -240,55 +250,72 @@ impl Bearing {
 
     fn closed(&self, so: Ratio, eccentricity: Ratio) -> Film {
         let ratio = self.geometry.width_ratio();
-        let q3 = iso7902::side_flow(eccentricity, ratio).base();
+        let q3 = iso7902::side_flow(eccentricity, ratio);
         let attitude = iso7902::attitude(eccentricity, ratio);
         let mut film = self.common(so, eccentricity, attitude);
-        film.side_flow = VolumeRate::from_base(self.flow_unit() * q3 * 8.0 * PI / ratio.base());
+        film.side_flow = side_flow_iso7902(q3, &self.geometry, self.duty.speed());
         film
     }
 
-    /// `r c N B`, m3/s.
-    fn flow_unit(&self) -> f64 {
-        let geometry = &self.geometry;
-        let radius = geometry.diameter().base() / 2.0;
-        let turns = self.duty.speed().base() / (2.0 * PI);
-        radius * geometry.clearance().base() * turns * geometry.width().base()
-    }
-
     fn common(&self, so: Ratio, eccentricity: Ratio, attitude: Angle) -> Film {
+        let (geometry, duty) = (&self.geometry, &self.duty);
         let variable = friction_variable(so, eccentricity, attitude);
-        let friction = number(variable.base() * self.geometry.relative_clearance().base());
+        let friction = friction(geometry.relative_clearance(), variable);
         Film {
             so,
             sommerfeld: sommerfeld(so),
             eccentricity,
-            h_min: least_film(&self.geometry, eccentricity),
+            h_min: least_film(geometry.clearance(), eccentricity),
             attitude,
             friction_variable: variable,
             friction,
-            power: power(&self.geometry, &self.duty, friction),
+            power: power(friction, duty.load(), duty.speed(), geometry.diameter()),
             side_flow: VolumeRate::from_base(0.0),
             solved: None,
         }
     }
 }
 
-/// Load number of [`LOAD_NUMBER`].
-pub fn load_number(geometry: &Geometry, duty: &Duty, eta: DynamicViscosity) -> Ratio {
-    let psi = geometry.relative_clearance().base();
-    let pressure = duty.specific_load(geometry).base();
-    number(pressure * psi * psi / (eta.base() * duty.speed().base()))
+/// Load number of [`LOAD_NUMBER`], from specific load and relative clearance.
+pub fn load_number(
+    pressure: Pressure,
+    clearance: Ratio,
+    eta: DynamicViscosity,
+    speed: AngularVelocity,
+) -> Ratio {
+    let psi = clearance.base();
+    number(pressure.base() * psi * psi / (eta.base() * speed.base()))
 }
 
-/// Least film of [`LEAST_FILM`].
-pub fn least_film(geometry: &Geometry, eccentricity: Ratio) -> Length {
-    Length::from_base(geometry.clearance().base() * (1.0 - eccentricity.base()))
+/// Least film of [`LEAST_FILM`], from the radial clearance.
+pub fn least_film(clearance: Length, eccentricity: Ratio) -> Length {
+    Length::from_base(clearance.base() * (1.0 - eccentricity.base()))
 }
 
 /// Friction power of [`POWER`].
-pub fn power(geometry: &Geometry, duty: &Duty, friction: Ratio) -> Power {
-    let surface = duty.surface_speed(geometry).base();
-    Power::from_base(friction.base() * duty.load().base() * surface)
+pub fn power(friction: Ratio, load: Force, speed: AngularVelocity, diameter: Length) -> Power {
+    let surface = surface_speed(speed, diameter).base();
+    Power::from_base(friction.base() * load.base() * surface)
+}
+
+/// Flow of [`FLOW`], from a variable over `r c N B`.
+pub fn flow(variable: Ratio, geometry: &Geometry, speed: AngularVelocity) -> VolumeRate {
+    let radius = geometry.diameter().base() / 2.0;
+    let turns = speed.base() / (2.0 * PI);
+    let unit = radius * geometry.clearance().base() * turns * geometry.width().base();
+    VolumeRate::from_base(variable.base() * unit)
+}
+
+/// Highest pressure of [`PEAK`].
+pub fn peak_pressure(mean: Pressure, mean_over_peak: Ratio) -> Pressure {
+    pascals(mean.base() / mean_over_peak.base())
+}
+
+/// Side flow of a variable `q3`, in the unit of ISO 7902.
+pub fn side_flow_iso7902(q3: Ratio, geometry: &Geometry, speed: AngularVelocity) -> VolumeRate {
+    let d = geometry.diameter().base();
+    let unit = d * d * d * geometry.relative_clearance().base() * speed.base();
+    VolumeRate::from_base(q3.base() * unit)
 }
 
 /// The film of a bearing at a viscosity, by a route.

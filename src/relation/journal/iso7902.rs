@@ -41,6 +41,12 @@ pub const NARROWEST: f64 = 0.25;
 /// Largest width ratio they may be used for.
 pub const WIDEST: f64 = 1.0;
 
+/// Whether the closed forms may be used at a width ratio.
+pub fn covers(width_ratio: Ratio) -> bool {
+    // a ratio of 1 worked out from two lengths may miss it by a rounding
+    (NARROWEST - 1e-9..=WIDEST + 1e-9).contains(&width_ratio.base())
+}
+
 /// Value of a polynomial, constant first.
 fn polynomial(coefficients: [f64; 5], x: f64) -> f64 {
     coefficients.iter().rev().fold(0.0, |sum, c| sum * x + c)

@@ -1,6 +1,7 @@
 //! A thrust pad under its load: the film at a viscosity, and the viscosity for a film.
 
 use super::series;
+use super::shape::{NoPad, Shape, check_aspect, shaped};
 use super::slider::{STEEPEST, Slider};
 use crate::numeric::root::bracketed;
 use crate::quantity::convert::{number, pascals};
@@ -37,80 +38,6 @@ pub static TAPER: Law = Law {
     source: "Reynolds equation solved by the program",
 };
 
-/// Why no film can be stated.
-#[derive(Clone, Copy, Debug, PartialEq, thiserror::Error)]
-pub enum NoPad {
-    /// A size, load or viscosity that cannot be.
-    #[error("{what} must be above zero")]
-    NotPositive {
-        /// Which.
-        what: &'static str,
-    },
-    /// The runner stands.
-    #[error("a standing runner carries no hydrodynamic film; give its sliding speed")]
-    Standstill,
-    /// Parallel films.
-    #[error(
-        "ratio 1 means films that do not narrow: with one viscosity and flat faces such a pad \
-         carries nothing; give inlet over outlet film above 1, usually 2 to 3, or best"
-    )]
-    RatioOne,
-    /// Films that widen, or narrow too much.
-    #[error(
-        "ratio {ratio:.3} is inlet over outlet film; it must lie above 1 and not above {most:.0}"
-    )]
-    Ratio {
-        /// As given.
-        ratio: f64,
-        /// Largest.
-        most: f64,
-    },
-    /// A pivot in the middle.
-    #[error(
-        "a pivot at {pivot:.3} of the length: at or before the middle, theory with one viscosity \
-         and flat faces gives no load; what such pads carry comes from heat and crowning"
-    )]
-    PivotCentral {
-        /// Distance from the inlet over the length.
-        pivot: f64,
-    },
-    /// A pivot behind every centre of pressure.
-    #[error("a pivot at {pivot:.3} of the length lies behind the centre of pressure at ratio 10")]
-    PivotBehind {
-        /// Distance from the inlet over the length.
-        pivot: f64,
-    },
-    /// Width over length outside the range.
-    #[error("width over length is {aspect:.3}; the solution covers {from} to {to}")]
-    Aspect {
-        /// Width over length.
-        aspect: f64,
-        /// Least.
-        from: f64,
-        /// Most.
-        to: f64,
-    },
-    /// A taper at which no film in the range carries the load.
-    #[error("no film with a ratio of 1.01 to 10 at that taper carries the load")]
-    Taper,
-}
-
-impl NoPad {
-    /// Kebab-case name for messages.
-    pub fn name(&self) -> &'static str {
-        match self {
-            Self::NotPositive { .. } => "size-not-positive",
-            Self::Standstill => "runner-stands",
-            Self::RatioOne => "pad-ratio-one",
-            Self::Ratio { .. } => "pad-ratio-out-of-range",
-            Self::PivotCentral { .. } => "pivot-central",
-            Self::PivotBehind { .. } => "pivot-out-of-range",
-            Self::Aspect { .. } => "pad-width-out-of-range",
-            Self::Taper => "taper-out-of-range",
-        }
-    }
-}
-
 /// One pad and what it is asked to do, sound by construction.
 #[derive(Clone, Copy, Debug, PartialEq)]
 pub struct Pad {
@@ -118,17 +45,6 @@ pub struct Pad {
     width: Length,
     load: Force,
     speed: Velocity,
-}
-
-/// How the film narrows.
-#[derive(Clone, Copy, Debug, PartialEq)]
-pub enum Shape {
-    /// Inlet over outlet film.
-    Ratio(Ratio),
-    /// The ratio with the largest load.
-    Best,
-    /// Pivot of a tilting pad, from the inlet over the length.
-    Pivot(Ratio),
 }
 
 /// A pad's film.
@@ -169,11 +85,7 @@ impl Pad {
         if speed.base().is_nan() || speed.base() <= 0.0 {
             return Err(NoPad::Standstill);
         }
-        let aspect = width.base() / length.base();
-        let (from, to) = series::ASPECTS;
-        if !(from..=to).contains(&aspect) {
-            return Err(NoPad::Aspect { aspect, from, to });
-        }
+        check_aspect(number(width.base() / length.base()))?;
         Ok(Self {
             length,
             width,
@@ -195,44 +107,9 @@ impl Pad {
     /// The pure numbers of a shape, with its ratio of films.
     ///
     /// # Errors
-    /// Ratio 1 or outside its range, a pivot in the middle or too far back.
+    /// As for [`shaped`].
     pub fn shaped(&self, shape: Shape) -> Result<(Ratio, Slider), NoPad> {
-        let ratio = match shape {
-            Shape::Ratio(ratio) => ratio,
-            Shape::Best => {
-                let found = series::optimum(self.aspect());
-                return found.ok_or_else(|| self.outside());
-            }
-            Shape::Pivot(pivot) => {
-                let pivot_base = pivot.base();
-                if pivot_base < 0.501 {
-                    return Err(NoPad::PivotCentral { pivot: pivot_base });
-                }
-                let found = series::ratio_from_pivot(pivot, self.aspect());
-                found.ok_or(NoPad::PivotBehind { pivot: pivot_base })?
-            }
-        };
-        let m = ratio.base();
-        if (m - 1.0).abs() < 1e-9 {
-            return Err(NoPad::RatioOne);
-        }
-        if !(m > 1.0 && m <= STEEPEST) {
-            return Err(NoPad::Ratio {
-                ratio: m,
-                most: STEEPEST,
-            });
-        }
-        let numbers = series::pad(ratio, self.aspect()).ok_or_else(|| self.outside())?;
-        Ok((ratio, numbers))
-    }
-
-    fn outside(&self) -> NoPad {
-        let (from, to) = series::ASPECTS;
-        NoPad::Aspect {
-            aspect: self.aspect().base(),
-            from,
-            to,
-        }
+        shaped(shape, Some(self.aspect()))
     }
 
     /// The film at a viscosity, [`LAW`].

@@ -5,7 +5,7 @@
 //! `n = 1, 3, 5 ...`. Each is solved on two grids, and a third of their difference is added to
 //! the finer result. Nothing cavitates: the film narrows everywhere.
 
-use super::slider::{STEEPEST, Slider};
+use super::slider::{FIRST_PIVOT, STEEPEST, Slider};
 use crate::numeric::banded::{NotPositive, SymmetricBand};
 use crate::numeric::math::ln;
 use crate::numeric::maximum::golden;
@@ -101,7 +101,8 @@ fn sums(m: f64, aspect: f64, steps: usize) -> Result<Sums, NotPositive> {
 /// else `None`.
 pub fn pad(ratio: Ratio, aspect: Ratio) -> Option<Slider> {
     let (m, aspect) = (ratio.base(), aspect.base());
-    let inside = m > 1.0 && m <= STEEPEST && (ASPECTS.0..=ASPECTS.1).contains(&aspect);
+    let inside =
+        m > 1.0 && m <= STEEPEST && (ASPECTS.0 - 1e-9..=ASPECTS.1 + 1e-9).contains(&aspect);
     if !inside {
         return None;
     }
@@ -143,7 +144,7 @@ pub fn optimum(aspect: Ratio) -> Option<(Ratio, Slider)> {
 /// of the length or beyond what ratio 10 reaches, or outside the range of [`LAW`].
 pub fn ratio_from_pivot(pivot: Ratio, aspect: Ratio) -> Option<Ratio> {
     pad(number(2.0), aspect)?;
-    if pivot.base() < 0.501 {
+    if pivot.base() < FIRST_PIVOT {
         return None;
     }
     let centre = |m: f64| pad(number(m), aspect).map_or(f64::NAN, |p| p.centre.base());

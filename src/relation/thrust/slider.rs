@@ -42,6 +42,8 @@ pub struct Slider {
     pub peak: Ratio,
 }
 
+/// Foremost pivot that is told from the middle.
+pub(super) const FIRST_PIVOT: f64 = 0.501;
 /// Largest ratio looked at.
 pub(super) const STEEPEST: f64 = 10.0;
 
@@ -95,7 +97,7 @@ pub fn optimum() -> (Ratio, Ratio) {
 
 /// Ratio of a tilting pad from its pivot, [`PIVOT`]; `None` outside its range.
 pub fn ratio_from_pivot(pivot: Ratio) -> Option<Ratio> {
-    if pivot.base() < 0.501 {
+    if pivot.base() < FIRST_PIVOT {
         return None;
     }
     let root = bracketed(1.001, STEEPEST, |m| centre(m) - pivot.base());

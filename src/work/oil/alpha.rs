@@ -7,6 +7,7 @@ use crate::quantity::{
     ThermodynamicTemperature,
 };
 use crate::relation::Law;
+use crate::relation::oil::density::DYNAMIC_VISCOSITY;
 use crate::relation::oil::pressure_viscosity::{
     AGMA_925, Family, GOLD, ISO_15144, MOVED, SO_KLAUS, WOOSTER, agma_925, gold, iso_15144, moved,
     so_klaus, wooster,
@@ -147,23 +148,16 @@ fn eta(args: &mut Args, w: &mut Worked) -> Result<Known<DynamicViscosity>, Refus
         let nu: Known<KinematicViscosity> = args.quantity(w, "nu", "kinematic viscosity")?;
         let rho: Known<MassDensity> = args.quantity(w, "density", "density at the temperature")?;
         let with = (("nu", nu), ("rho", rho));
-        return Ok(w
-            .trace
-            .law("eta", "dynamic viscosity", &DYNAMIC, with, |(nu, rho)| {
-                dynamic(nu, rho)
-            }));
+        return Ok(w.trace.law(
+            "eta",
+            "dynamic viscosity",
+            &DYNAMIC_VISCOSITY,
+            with,
+            |(nu, rho)| dynamic(nu, rho),
+        ));
     }
     args.quantity(w, "eta", "dynamic viscosity at the temperature")
 }
-
-/// Dynamic viscosity from kinematic.
-static DYNAMIC: Law = Law {
-    name: "dynamic-viscosity",
-    title: "Dynamic viscosity",
-    formula: "eta = nu rho",
-    range: "both at one temperature",
-    source: "definition",
-};
 
 /// A temperature at which the temperature factor means something.
 fn temperature(

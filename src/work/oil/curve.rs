@@ -101,9 +101,11 @@ fn viscosity_at(args: &mut Args, w: &mut Worked) -> Result<(), Refusal> {
 }
 
 /// A line with its constants named.
-pub(super) struct Served {
-    pub(super) a: Known<Ratio>,
-    pub(super) b: Known<Ratio>,
+pub(in crate::work) struct Served {
+    /// Intercept.
+    pub(in crate::work) a: Known<Ratio>,
+    /// Slope.
+    pub(in crate::work) b: Known<Ratio>,
     form: Form,
 }
 
@@ -142,7 +144,7 @@ fn paired(nus: &[KinematicViscosity], temperatures: &[ThermodynamicTemperature])
 }
 
 /// One line through the points, whatever its residuals.
-pub(super) fn one_line(
+pub(in crate::work) fn one_line(
     w: &mut Worked,
     points: &[args::Point],
     weights: Weights,
@@ -155,7 +157,7 @@ pub(super) fn one_line(
 
 /// The line that serves at a temperature: one for all points, or that of its neighbours where one
 /// line misses a point by more than 3 %.
-pub(super) fn line_at(
+pub(in crate::work) fn line_at(
     w: &mut Worked,
     points: &[args::Point],
     at: Known<ThermodynamicTemperature>,
@@ -180,7 +182,7 @@ pub(super) fn line_at(
 }
 
 /// Viscosity on a line at a temperature.
-pub(super) fn on_line(
+pub(in crate::work) fn on_line(
     w: &mut Worked,
     line: &Served,
     at: Known<ThermodynamicTemperature>,

@@ -32,6 +32,15 @@ pub static ROUGHNESS: Law = Law {
     source: "common practice",
 };
 
+/// The same from rms roughness.
+pub static ROUGHNESS_RMS: Law = Law {
+    name: "journal-film-limit-rms",
+    title: "least film over the composite rms roughness of journal and bearing",
+    formula: "h_min = 5 sqrt(Rq_shaft^2 + Rq_bore^2)",
+    range: "4 to 5 times is usual; the upper end is taken",
+    source: "common practice",
+};
+
 /// Upper ends of the classes of diameter, mm.
 const DIAMETERS: [f64; 5] = [63.0, 160.0, 400.0, 1000.0, 2500.0];
 /// Upper ends of the classes of speed, m/s; the last class is open.
@@ -68,6 +77,12 @@ pub fn trumpler(diameter: Length) -> Length {
 /// Least film of [`ROUGHNESS`].
 pub fn roughness(rz_shaft: Length, rz_bore: Length) -> Length {
     Length::from_base(rz_shaft.base() + rz_bore.base())
+}
+
+/// Least film of [`ROUGHNESS_RMS`].
+pub fn roughness_rms(rq_shaft: Length, rq_bore: Length) -> Length {
+    let (shaft, bore) = (rq_shaft.base(), rq_bore.base());
+    Length::from_base(5.0 * (shaft * shaft + bore * bore).sqrt())
 }
 
 #[cfg(test)]
