@@ -1,7 +1,13 @@
 //! The command line: what may be typed, with every help text; no logic.
 
+pub mod commands;
 pub mod exit;
 pub mod host;
+pub mod load;
+pub mod run;
+pub mod session;
+pub mod text;
+pub mod text_of;
 
 use clap::{Args, Parser, Subcommand, ValueEnum};
 

@@ -16,6 +16,7 @@ pub mod governing;
 pub mod inputs;
 pub mod point;
 pub mod rolling_bearing;
+pub mod rules;
 pub mod settings;
 pub mod thermal;
 

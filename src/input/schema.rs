@@ -27,6 +27,18 @@ pub fn schema(kind: FileKind) -> Value {
     Value::Object(head)
 }
 
+/// Every schema with the name of its file: `site.schema.json`.
+pub fn files() -> Vec<(String, String)> {
+    FileKind::ALL
+        .iter()
+        .map(|kind| {
+            let mut text = serde_json::to_string_pretty(&schema(*kind)).unwrap_or_default();
+            text.push('\n');
+            (format!("{}.schema.json", kind.word()), text)
+        })
+        .collect()
+}
+
 /// The records a kind of file can reach, by name.
 fn definitions(kind: FileKind) -> Map<String, Value> {
     let mut wanted: Vec<&'static Record> = Vec::new();

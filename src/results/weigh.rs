@@ -81,7 +81,8 @@ pub fn judgement(scales: &Scales<'_>, w: &Weighed<'_>, c: &Candidate) -> Value {
     Value::Object(m)
 }
 
-fn barred_row(scales: &Scales<'_>, w: &Weighed<'_>, b: &Barred) -> Value {
+/// A barred oil.
+pub fn barred_row(scales: &Scales<'_>, w: &Weighed<'_>, b: &Barred) -> Value {
     let mut m = place(w, &scales.site.oils[b.oil].id);
     m.insert("in_use".into(), json!(b.in_use));
     m.insert("verdict".into(), json!("barred"));

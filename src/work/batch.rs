@@ -25,6 +25,25 @@ pub fn run_batch<'t>(lines: impl IntoIterator<Item = &'t str>) -> Batch {
     batch
 }
 
+impl Batch {
+    /// All answers, one a line.
+    pub fn text(&self) -> String {
+        self.lines.iter().fold(String::new(), |mut all, line| {
+            all.push_str(line);
+            all.push('\n');
+            all
+        })
+    }
+}
+
+/// One relation with its inputs, as a line of the same form; and whether it was refused.
+pub fn answer(name: &str, args: Args) -> (String, bool) {
+    let outcome = relation(name)
+        .and_then(|row| run(row.name, args).map(|worked| json::answer(row, &worked)));
+    let refused = outcome.is_err();
+    (answered(None, &Json::from(name), outcome), refused)
+}
+
 /// The answer to one line, and whether it is an error.
 pub fn run_line(line: &str) -> (String, bool) {
     let object = match read(line) {

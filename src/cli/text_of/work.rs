@@ -1,6 +1,6 @@
 //! `work`: one relation at a time, as text.
 
-use super::text::{Column, folded, table};
+use crate::cli::text::{Column, folded, table};
 use super::why;
 use crate::quantity::show::{Units, significant};
 use crate::work::{Need, Relation, Value, Worked};
@@ -71,4 +71,27 @@ pub fn worked(worked: &Worked, units: Units, width: usize) -> String {
     }
     out.push_str(&why::steps(&worked.trace, &results, units, width, &|_| String::new()));
     out
+}
+
+/// The register as JSON: what each relation takes and gives.
+pub fn register(relations: &[&Relation]) -> String {
+    let rows: Vec<serde_json::Value> = relations
+        .iter()
+        .map(|r| {
+            let with: Vec<_> = r
+                .with
+                .iter()
+                .map(|i| serde_json::json!({ "name": i.name, "says": i.says, "needed": i.need == Need::Always }))
+                .collect();
+            let gives: Vec<_> =
+                r.gives.iter().map(|(n, s)| serde_json::json!({ "name": n, "says": s })).collect();
+            serde_json::json!({
+                "relation": r.name, "group": r.group, "title": r.law.title, "formula": r.law.formula,
+                "range": r.law.range, "source": r.law.source, "with": with, "gives": gives,
+            })
+        })
+        .collect();
+    let mut text = serde_json::to_string_pretty(&serde_json::json!({ "relations": rows })).unwrap_or_default();
+    text.push('\n');
+    text
 }

@@ -1,6 +1,6 @@
 //! `need`: what machines need, as text.
 
-use super::text::{Column, folded, table};
+use crate::cli::text::{Column, folded, table};
 use super::weigh::needs;
 use crate::demand::{Demand, GapKind, PointDemands, Standing};
 use crate::model::Point;

@@ -1,7 +1,7 @@
 //! `weigh`: candidate oils against what machines need, as text.
 
-use super::Marks;
-use super::text::{Column, band, folded, table, verdict};
+use crate::cli::Marks;
+use crate::cli::text::{Column, band, folded, table, verdict};
 use crate::demand::{Demand, End, PointDemands};
 use crate::judge::Verdict;
 use crate::judge::weigh::Margin;

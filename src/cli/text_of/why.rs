@@ -1,6 +1,6 @@
 //! `why`: the traced steps behind one verdict, as text.
 
-use super::text::folded;
+use crate::cli::text::folded;
 use crate::quantity::show::{Toward, Units, quantity};
 use crate::results::json::step_name;
 use crate::source::place::Place;
