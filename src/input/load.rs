@@ -95,6 +95,8 @@ pub struct With<'w> {
     pub rules: &'w Rulebook,
     /// Dimensions of rolling bearings.
     pub bearings: &'w DimensionTable,
+    /// Ids of the rules by which limits are worked out, which a house rule may replace.
+    pub calculated: &'w [&'w str],
 }
 
 /// Reads the site and its oils; every problem of every file is reported before it fails.
@@ -122,6 +124,7 @@ pub fn load<'t>(
     let known = Known {
         rules: with.rules,
         bearings: with.bearings,
+        calculated: with.calculated,
         complete: complete(FileKind::Site) && complete(FileKind::Oils),
         has_oils: trees.iter().any(|t| t.kind == FileKind::Oils),
     };

@@ -31,6 +31,8 @@ pub struct Known<'k> {
     pub rules: &'k Rulebook,
     /// Dimensions of rolling bearings.
     pub bearings: &'k DimensionTable,
+    /// Ids of the rules by which limits are worked out.
+    pub calculated: &'k [&'k str],
     /// Whether every file was read to its end: only then is a missing name a mistake.
     pub complete: bool,
     /// Whether there is any oil file.
@@ -60,7 +62,7 @@ pub fn read<'t>(
         top.must(reader, root);
     }
     let frame = frame(reader, &top);
-    let house = house::read(reader, &top);
+    let house = house::read(reader, &top, known);
     let areas = areas(reader, &top);
     let scene = Scene {
         known,

@@ -1,7 +1,10 @@
 //! Bad input: a folder a problem, its message as a snapshot, and its own `write` applied.
 
+use filmwright::assets::builtin_rules;
+use filmwright::demand::rules::CALCULATED;
 use filmwright::input::file::FileKind;
 use filmwright::input::load::{Tree, With, load, load_oils, take};
+use filmwright::input::rules::rulebook;
 use filmwright::model::rulebook::Rulebook;
 use filmwright::problem::render::{Look, all};
 use filmwright::problem::{Code, Problem, Problems, Severity};
@@ -9,6 +12,11 @@ use filmwright::relation::bearing::designation::DimensionTable;
 use filmwright::source::{Place, SourceSet};
 use std::collections::{BTreeMap, BTreeSet};
 use std::path::{Path, PathBuf};
+use std::sync::LazyLock;
+
+/// The built-in rules.
+static BOOK: LazyLock<Rulebook> =
+    LazyLock::new(|| rulebook(&[builtin_rules()]).expect("a test of its own reads them"));
 
 /// Files of a case: path and bytes.
 type Files = Vec<(String, Vec<u8>)>;
@@ -95,10 +103,12 @@ fn found_in(files: &Files) -> (SourceSet, Problems) {
         .iter()
         .map(|(path, bytes)| take(&mut set, kind_of(path), path, bytes, &mut problems))
         .collect();
-    let rules = Rulebook::default();
+    let rules = &*BOOK;
+    let calculated: Vec<&str> = CALCULATED.iter().map(|rule| rule.0).collect();
     let with = With {
-        rules: &rules,
+        rules,
         bearings: DimensionTable::built_in(),
+        calculated: &calculated,
     };
     if files
         .iter()
@@ -106,7 +116,7 @@ fn found_in(files: &Files) -> (SourceSet, Problems) {
     {
         drop(load(&set, &trees, &with, &[], &mut problems));
     } else {
-        drop(load_oils(&set, &trees, &rules, &mut problems));
+        drop(load_oils(&set, &trees, rules, &mut problems));
         let mut reader = filmwright::input::reader::Reader::new(&set, &mut problems);
         for tree in &trees {
             if let Some(root) = &tree.root {
