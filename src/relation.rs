@@ -1,7 +1,6 @@
 //! The published relations, one a file, each once. `work`, `why`, the judge and the report all
 //! call these functions; nothing here knows of machines, messages or files.
 
-
 pub use outside::Outside;
 
 pub mod bearing;
