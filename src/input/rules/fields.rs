@@ -9,7 +9,6 @@ use crate::model::rulebook::{Basis, Clause, Confidence, Provenance};
 use crate::model::word::{Word, known};
 use serde_yaml::{Mapping, Value};
 use std::cell::RefCell;
-use std::collections::BTreeSet;
 
 /// The fields of an entry, or of a block inside one.
 pub(super) struct Fields<'a> {
@@ -19,7 +18,7 @@ pub(super) struct Fields<'a> {
     id: String,
     /// Where the block stands in the entry, empty at the top.
     block: String,
-    asked: RefCell<BTreeSet<&'static str>>,
+    asked: RefCell<Vec<&'static str>>,
 }
 
 impl<'a> Fields<'a> {
@@ -60,7 +59,10 @@ impl<'a> Fields<'a> {
     }
 
     fn take(&self, key: &'static str) -> Option<&'a Value> {
-        self.asked.borrow_mut().insert(key);
+        let mut asked = self.asked.borrow_mut();
+        if !asked.contains(&key) {
+            asked.push(key);
+        }
         self.map.get(key).filter(|v| !v.is_null())
     }
 
@@ -308,8 +310,8 @@ impl<'a> Fields<'a> {
         let asked = self.asked.borrow();
         for key in self.map.keys() {
             let key = key.as_str().unwrap_or("a key that is not text");
-            if !asked.contains(key) && !key.starts_with("x-") {
-                let known: Vec<&str> = asked.iter().copied().collect();
+            if !asked.contains(&key) && !key.starts_with("x-") {
+                let known: &[&str] = &asked;
                 self.fault(
                     format!("unknown key `{}`", self.path(key)),
                     format!("one of {}", known.join(", ")),
