@@ -1,7 +1,13 @@
 //! The command line: what may be typed, with every help text; no logic.
 
+pub mod commands;
 pub mod exit;
 pub mod host;
+pub mod load;
+pub mod run;
+pub mod session;
+pub mod text;
+pub mod text_of;
 
 use clap::{Args, Parser, Subcommand, ValueEnum};
 
@@ -28,6 +34,7 @@ pub struct Cli {
 }
 
 /// Options shared by all commands.
+#[expect(clippy::struct_excessive_bools, reason = "switches of a command line")]
 #[derive(Clone, Debug, Default, Args)]
 #[command(next_help_heading = "Shared options")]
 pub struct Shared {
@@ -126,7 +133,7 @@ pub enum Gate {
 /// Colour.
 #[derive(Clone, Copy, Debug, Default, PartialEq, Eq, ValueEnum)]
 pub enum When {
-    /// On a terminal, unless NO_COLOR is set or TERM is dumb.
+    /// On a terminal, unless `NO_COLOR` is set or `TERM` is dumb.
     #[default]
     Auto,
     /// Always.
@@ -312,7 +319,7 @@ pub enum Paper {
 pub struct Rules {
     /// Ids, names or patterns; an overview where none is given
     pub rules: Vec<String>,
-    /// Only this kind: parts, suitability, base_stocks, classes, limits, grease, cautions
+    /// Only this kind: parts, suitability, base stocks, classes, limits, grease, cautions
     #[arg(long, value_name = "KIND")]
     pub kind: Option<String>,
 }

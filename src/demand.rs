@@ -4,15 +4,33 @@
 //! step of the calculation behind it. Each part yields demands; the point's list is their union,
 //! and the strictest at each end governs.
 
+pub mod bearing_film;
+pub mod component;
+pub mod contact;
+pub mod context;
+pub mod feed;
+pub mod film;
+pub mod gear_film;
+pub mod gear_mesh;
+pub mod governing;
 pub mod inputs;
+pub mod point;
+pub mod rolling_bearing;
+pub mod rules;
+pub mod settings;
 pub mod thermal;
 
-use crate::model::rulebook::Confidence;
-use crate::quantity::{Amount, KinematicViscosity, DynamicViscosity};
+use crate::model::part::{Part, PartKind};
+use crate::model::rulebook::{Confidence, Rulebook};
+use crate::model::site::House;
+use crate::model::{Lubrication, Point};
+use crate::quantity::{Amount, DynamicViscosity, KinematicViscosity, Measure};
 use crate::source::place::Whose;
-use crate::trace::StepId;
+use crate::trace::{Recorder, StepId};
+use context::Context;
 pub use inputs::{Gap, GapKind, Inputs, Scenario};
-pub use thermal::{AtAmbient, Thermal};
+pub use settings::{PointDemands, point_demands};
+pub use thermal::{AtAmbient, Thermal, thermal};
 
 /// Which end a demand limits.
 #[derive(Clone, Copy, Debug, PartialEq, Eq, PartialOrd, Ord)]
@@ -51,6 +69,8 @@ pub enum Limit {
     OilsOwn,
     /// A ceiling stated for the point, K.
     Temperature(f64),
+    /// The low end of a grease's use range.
+    UseLow,
 }
 
 /// Which oils a demand speaks of.
@@ -110,6 +130,8 @@ pub struct Demand {
     pub only: For,
     /// What it does.
     pub standing: Standing,
+    /// Whether it is a practice window's.
+    pub from_window: bool,
 }
 
 /// A figure worked out for a part that sets no limit.
@@ -123,4 +145,147 @@ pub struct Information {
     pub amount: Option<Amount>,
     /// Its step.
     pub step: Option<StepId>,
+}
+
+/// A demand that cannot be worked out.
+#[derive(Clone, Debug, PartialEq, Eq)]
+pub struct Undecided {
+    /// The end it would limit.
+    pub end: End,
+    /// The part it comes from.
+    pub part: Option<String>,
+    /// What is missing.
+    pub because: String,
+}
+
+/// The demands of a point in one setting of its unknowns.
+#[derive(Clone, Debug)]
+pub struct Demands {
+    /// The demands.
+    pub list: Vec<Demand>,
+    /// Demands that cannot be worked out.
+    pub undecided: Vec<Undecided>,
+    /// Figures that set no limit.
+    pub information: Vec<Information>,
+    /// Temperatures of the point.
+    pub thermal: Thermal,
+    /// Unknowns with a range, in the order the settings count them.
+    pub axes: Vec<Gap>,
+    /// What is missing or assumed.
+    pub gaps: Vec<Gap>,
+}
+
+impl Demands {
+    /// Temperature a demand is judged at: running floors and the oil's ceiling at the hottest
+    /// ambient, all others at the coldest. `None` where it is not known.
+    pub fn governing_temperature(&self, demand: &Demand) -> Option<f64> {
+        if demand.at.is_unknown() {
+            return None;
+        }
+        let hot = matches!(
+            demand.end,
+            End::HotFloor | End::OilCeiling | End::MakerGrade
+        );
+        let ambient = self
+            .thermal
+            .ambient
+            .map(|(cold, warm)| if hot { warm } else { cold });
+        match ambient {
+            Some(ambient) => Some(demand.at.at(ambient.value.base())),
+            None if demand.at.slope == 0.0 => Some(demand.at.offset.max(demand.at.least)),
+            None if demand.at.least.is_finite() => Some(demand.at.least),
+            None => None,
+        }
+    }
+}
+
+/// Works out the demands of a point in one setting of its unknowns.
+pub fn demands<R: Recorder>(
+    r: &mut R,
+    point: &Point,
+    house: &House,
+    rules: &Rulebook,
+    setting: &Scenario,
+) -> Demands {
+    let mut inputs = Inputs::new(setting);
+    let thermal = thermal(r, &mut inputs, point);
+    let mut cx = Context {
+        r,
+        inputs: &mut inputs,
+        rules,
+        house,
+        point,
+        thermal,
+        list: Vec::new(),
+        undecided: Vec::new(),
+        information: Vec::new(),
+    };
+    for part in &point.parts {
+        cx.r.about(|| Some(part.label.clone()));
+        of_part(&mut cx, part);
+        point::stated(&mut cx, Some(part), &part.limits);
+    }
+    cx.r.about(|| None);
+    point::stated(&mut cx, None, &point.limits);
+    point::maker_grade(&mut cx);
+    point::start(&mut cx);
+    point::pour(&mut cx);
+    point::ceiling(&mut cx);
+    point::replace(&mut cx.list);
+    let Context {
+        list,
+        undecided,
+        information,
+        ..
+    } = cx;
+    Demands {
+        list,
+        undecided,
+        information,
+        thermal,
+        axes: inputs.axes,
+        gaps: inputs.gaps,
+    }
+}
+
+fn of_part<R: Recorder>(cx: &mut Context<'_, '_, R>, part: &Part) {
+    match &part.kind {
+        PartKind::RollingBearing(b) => rolling_bearing::add(cx, part, b),
+        PartKind::GearMesh(m) => gear_mesh::add(cx, part, m),
+        PartKind::Contact(c) => contact::add(cx, part, c),
+        PartKind::Component(c) => component::add(cx, part, c),
+        PartKind::WormMesh(_)
+        | PartKind::OpenGear(_)
+        | PartKind::JournalBearing(_)
+        | PartKind::ThrustBearing(_)
+        | PartKind::Engine(_)
+        | PartKind::Axle(_) => {
+            cx.undecided(
+                part,
+                End::HotFloor,
+                "this kind of part is not worked out yet",
+            );
+        }
+    }
+}
+
+/// Whether a point shears polymers as gears and rolling bearings do.
+pub fn is_severe(point: &Point) -> bool {
+    point.parts.iter().any(|p| {
+        matches!(
+            p.kind,
+            PartKind::RollingBearing(_)
+                | PartKind::GearMesh(_)
+                | PartKind::WormMesh(_)
+                | PartKind::OpenGear(_)
+        )
+    })
+}
+
+/// Whether a point takes grease.
+pub fn takes_grease(point: &Point) -> bool {
+    point
+        .lubrication
+        .as_ref()
+        .is_some_and(|l| l.value == Lubrication::Grease)
 }

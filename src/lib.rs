@@ -15,12 +15,18 @@
 
 pub mod assets;
 pub mod cli;
+pub mod demand;
 pub mod input;
+pub mod judge;
 pub mod model;
 pub mod numeric;
+pub mod oil;
+pub mod problem;
 pub mod quantity;
 pub mod relation;
+pub mod results;
 pub mod source;
 pub mod suitability;
 pub mod trace;
+pub mod weighing;
 pub mod work;

@@ -5,8 +5,10 @@
 //! numbers. Tables are monotone and never extrapolated unless the caller says how far.
 
 pub mod banded;
+pub mod complementarity;
 pub mod distribution;
 pub mod elliptic;
 pub mod interpolate;
 pub mod math;
+pub mod maximum;
 pub mod root;

@@ -17,7 +17,7 @@ pub use kind::{Amount, Kind, Measure, Unit};
 pub use uom::si::f64::{
     Angle, AngularVelocity, Area, CompressibilityCoefficient, DynamicViscosity, Force,
     HeatFluxDensity, HeatTransfer, KinematicViscosity, Length, Mass, MassDensity, Power, Pressure,
-    Ratio, SpecificHeatCapacity, TemperatureInterval, ThermalConductivity,
+    Ratio, SpecificHeatCapacity, TemperatureInterval, ThermalConductance, ThermalConductivity,
     ThermodynamicTemperature, Time, Torque, Velocity, Volume, VolumeRate,
 };
 
@@ -50,3 +50,7 @@ pub struct HoursPerYear(pub f64);
 /// means nothing without the name of the instrument and the temperature.
 #[derive(Clone, Copy, Debug, PartialEq, PartialOrd)]
 pub struct Efflux(pub f64);
+
+/// Rate at which a fluid is sheared, 1/s.
+#[derive(Clone, Copy, Debug, PartialEq, PartialOrd)]
+pub struct ShearRate(pub f64);

@@ -7,10 +7,13 @@ pub mod bearing;
 pub mod film;
 pub mod gear;
 pub mod guidance;
+pub mod heat;
+pub mod journal;
 pub mod oil;
 pub mod oil_fits;
 pub mod outside;
 pub mod sump;
+pub mod thrust;
 
 /// What the program says about a relation wherever it prints a result of it.
 #[derive(Debug, PartialEq, Eq)]

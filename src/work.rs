@@ -5,12 +5,80 @@
 //! function the demands and the judge call, with a [`Derivation`] that keeps the steps.
 
 pub mod args;
+pub mod batch;
+mod bearing;
+mod contact;
+mod film;
+mod gear;
+mod journal;
+mod json;
+mod oil;
 
 pub use args::Args;
 
 use crate::quantity::{Amount, Measure};
 use crate::relation::{Law, Outside};
 use crate::trace::{Derivation, Known, StepId};
+
+/// The rows of each group, in the order they are listed.
+static GROUPS: &[&[Relation]] = &[
+    oil::ROWS,
+    film::ROWS,
+    bearing::ROWS,
+    gear::ROWS,
+    journal::ROWS,
+];
+
+/// Every relation, in the order they are listed.
+pub fn relations() -> impl Iterator<Item = &'static Relation> {
+    GROUPS.iter().copied().flatten()
+}
+
+/// The relation of that name; hyphens, underscores and capitals do not matter.
+///
+/// # Errors
+/// `relation-unknown`, with the name nearly written where that is certain.
+pub fn relation(name: &str) -> Result<&'static Relation, Refusal> {
+    let wanted = plain(name);
+    if let Some(found) = relations().find(|r| r.name == wanted) {
+        return Ok(found);
+    }
+    let near = relations()
+        .map(|r| (strsim::damerau_levenshtein(r.name, &wanted), r.name))
+        .min();
+    let hint = match near {
+        Some((distance, near)) if distance <= near.len() / 5 => format!("; nearest: {near}"),
+        _ => "; see the list: filmwright work".to_owned(),
+    };
+    Err(Refusal::new(
+        "relation-unknown",
+        format!("no relation `{}`{hint}", name.trim()),
+    ))
+}
+
+fn plain(name: &str) -> String {
+    name.trim().to_lowercase().replace(['_', ' '], "-")
+}
+
+/// Works out one relation with values given by hand.
+///
+/// # Errors
+/// What the relation refuses, keys it does not take, and results that are no numbers.
+pub fn run(name: &str, mut args: Args) -> Result<Worked, Refusal> {
+    let relation = relation(name)?;
+    let mut worked = Worked::default();
+    (relation.run)(&mut args, &mut worked)?;
+    args.finish(relation.name)?;
+    for (result, value) in &worked.results {
+        if let Value::Quantity { amount, .. } = value
+            && !amount.base.is_finite()
+        {
+            let words = format!("{result} has no finite value with these inputs; see the range");
+            return Err(Refusal::new("out-of-range", words));
+        }
+    }
+    Ok(worked)
+}
 
 /// One row of the register.
 pub struct Relation {

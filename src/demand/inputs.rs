@@ -90,7 +90,11 @@ pub struct Inputs<'s> {
 impl<'s> Inputs<'s> {
     /// For one scenario.
     pub fn new(scenario: &'s Scenario) -> Self {
-        Self { scenario, axes: Vec::new(), gaps: Vec::new() }
+        Self {
+            scenario,
+            axes: Vec::new(),
+            gaps: Vec::new(),
+        }
     }
 
     /// A stated input; a gap where it is not there.
@@ -181,6 +185,11 @@ impl<'s> Inputs<'s> {
         self.note_gap(wanted, GapKind::Missing, ask, origin);
     }
 
+    /// Notes that a fact in words is not stated.
+    pub fn fact(&mut self, wanted: Wanted<'_>) {
+        self.note_gap(wanted, GapKind::Fact, None, None);
+    }
+
     fn axis(
         &mut self,
         wanted: Wanted<'_>,
@@ -193,7 +202,8 @@ impl<'s> Inputs<'s> {
             .iter()
             .position(|a| a.key == wanted.key && a.about.as_deref() == wanted.about);
         known.unwrap_or_else(|| {
-            self.axes.push(gap(wanted, GapKind::Range(lo, hi), ask, origin));
+            self.axes
+                .push(gap(wanted, GapKind::Range(lo, hi), ask, origin));
             self.axes.len() - 1
         })
     }
@@ -215,12 +225,7 @@ impl<'s> Inputs<'s> {
     }
 }
 
-fn gap(
-    wanted: Wanted<'_>,
-    kind: GapKind,
-    ask: Option<String>,
-    origin: Option<Origin>,
-) -> Gap {
+fn gap(wanted: Wanted<'_>, kind: GapKind, ask: Option<String>, origin: Option<Origin>) -> Gap {
     Gap {
         key: wanted.key.to_owned(),
         about: wanted.about.map(str::to_owned),

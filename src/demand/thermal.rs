@@ -21,11 +21,31 @@ pub struct AtAmbient {
 
 impl AtAmbient {
     /// The ambient itself.
-    pub const AMBIENT: Self = Self { slope: 1.0, offset: 0.0, least: f64::NEG_INFINITY };
+    pub const AMBIENT: Self = Self {
+        slope: 1.0,
+        offset: 0.0,
+        least: f64::NEG_INFINITY,
+    };
+
+    /// Nobody knows.
+    pub const UNKNOWN: Self = Self {
+        slope: 0.0,
+        offset: f64::NAN,
+        least: f64::NEG_INFINITY,
+    };
+
+    /// Whether nobody knows.
+    pub fn is_unknown(self) -> bool {
+        self.offset.is_nan()
+    }
 
     /// Always the same.
     pub fn held(t: f64) -> Self {
-        Self { slope: 0.0, offset: t, least: f64::NEG_INFINITY }
+        Self {
+            slope: 0.0,
+            offset: t,
+            least: f64::NEG_INFINITY,
+        }
     }
 
     /// The temperature at an ambient, K.
@@ -36,7 +56,11 @@ impl AtAmbient {
     /// Raised by so many kelvins.
     #[must_use]
     pub fn raised(self, by: f64) -> Self {
-        Self { offset: self.offset + by, least: self.least + by, ..self }
+        Self {
+            offset: self.offset + by,
+            least: self.least + by,
+            ..self
+        }
     }
 }
 
@@ -44,7 +68,10 @@ impl AtAmbient {
 #[derive(Clone, Copy, Debug)]
 pub struct Thermal {
     /// Coldest and hottest ambient.
-    pub ambient: Option<(Known<ThermodynamicTemperature>, Known<ThermodynamicTemperature>)>,
+    pub ambient: Option<(
+        Known<ThermodynamicTemperature>,
+        Known<ThermodynamicTemperature>,
+    )>,
     /// Running temperature of the sump.
     pub running: Option<AtAmbient>,
     /// Running temperature at the hottest ambient.
@@ -92,17 +119,19 @@ fn ambient<R: Recorder>(
     };
     match &point.ambient {
         Some(Stated::Known(range, _)) => {
-            let end = |value| crate::source::place::Given::new(
-                value,
-                range.written.clone(),
-                range.origin.clone(),
-            );
+            let end = |value| {
+                crate::source::place::Given::new(value, range.written.clone(), range.origin.clone())
+            };
             let cold = r.given("t_amb_cold", "coldest ambient", &end(range.value.lo));
             let hot = r.given("t_amb_hot", "hottest ambient", &end(range.value.hi));
             Some((cold, hot))
         }
         Some(other) => {
-            inputs.missing(wanted, other.ask().map(str::to_owned), Some(other.origin().clone()));
+            inputs.missing(
+                wanted,
+                other.ask().map(str::to_owned),
+                Some(other.origin().clone()),
+            );
             None
         }
         None => {
@@ -124,22 +153,36 @@ fn running<R: Recorder>(
             let held = inputs.take(r, wanted_sump("sump"), Some(stated))?;
             return Some((AtAmbient::held(held.value.base()), Some(held), Some(held)));
         }
-        Some(Sump::Across(range)) => return across(r, ambient, range),
+        Some(Sump::Across(range)) => return Some(across(r, ambient, range)),
         Some(Sump::Rise(stated)) => stated_rise(r, inputs, point, stated),
-        Some(Sump::Reading { sump: read, ambient: taken }) => {
+        Some(Sump::Reading {
+            sump: read,
+            ambient: taken,
+        }) => {
             let read = r.given("t_sump", "sump, as read", read);
             let taken = r.given("t_amb", "ambient at the reading", taken);
-            r.law("Delta_t", "rise over ambient", &sump::RISE, (("t_sump", read), ("t_amb", taken)), |(s, a)| {
-                sump::rise_of_reading(s, a)
-            })
+            r.law(
+                "Delta_t",
+                "rise over ambient",
+                &sump::RISE,
+                (("t_sump", read), ("t_amb", taken)),
+                |(s, a)| sump::rise_of_reading(s, a),
+            )
         }
         None => plausible_rise(r, inputs, point),
     };
-    let curve = AtAmbient { offset: rise.value.base(), ..AtAmbient::AMBIENT };
-    let mut at = |r: &mut R, ambient: Temperature, says| {
-        r.law("t", says, &sump::RUNNING, (("t_amb", ambient), ("Delta_t", rise)), |(a, d)| {
-            sump::running(a, d)
-        })
+    let curve = AtAmbient {
+        offset: rise.value.base(),
+        ..AtAmbient::AMBIENT
+    };
+    let at = |r: &mut R, ambient: Temperature, says| {
+        r.law(
+            "t",
+            says,
+            &sump::RUNNING,
+            (("t_amb", ambient), ("Delta_t", rise)),
+            |(a, d)| sump::running(a, d),
+        )
     };
     let cold = ambient.map(|(cold, _)| at(r, cold, "running temperature at the coldest ambient"));
     let hot = ambient.map(|(_, hot)| at(r, hot, "running temperature at the hottest ambient"));
@@ -151,7 +194,11 @@ fn wanted_sump(key: &'static str) -> Wanted<'static> {
         key,
         about: None,
         symbol: if key == "sump" { "t" } else { "Delta_t" },
-        says: if key == "sump" { "running temperature" } else { "rise over ambient" },
+        says: if key == "sump" {
+            "running temperature"
+        } else {
+            "rise over ambient"
+        },
         how: SUMP_HOW,
     }
 }
@@ -199,16 +246,24 @@ fn across<R: Recorder>(
     r: &mut R,
     ambient: Option<(Temperature, Temperature)>,
     range: &crate::source::place::Given<crate::model::Between<ThermodynamicTemperature>>,
-) -> Option<(AtAmbient, Option<Temperature>, Option<Temperature>)> {
+) -> (AtAmbient, Option<Temperature>, Option<Temperature>) {
     let end = |value| {
         crate::source::place::Given::new(value, range.written.clone(), range.origin.clone())
     };
-    let t_cold = r.given("t_cold", "running temperature at the coldest ambient", &end(range.value.lo));
-    let t_hot = r.given("t_hot", "running temperature at the hottest ambient", &end(range.value.hi));
+    let t_cold = r.given(
+        "t_cold",
+        "running temperature at the coldest ambient",
+        &end(range.value.lo),
+    );
+    let t_hot = r.given(
+        "t_hot",
+        "running temperature at the hottest ambient",
+        &end(range.value.hi),
+    );
     let curve = match ambient {
         Some((a, b)) if b.value.base() > a.value.base() => {
-            let slope = (t_hot.value.base() - t_cold.value.base())
-                / (b.value.base() - a.value.base());
+            let slope =
+                (t_hot.value.base() - t_cold.value.base()) / (b.value.base() - a.value.base());
             AtAmbient {
                 slope,
                 offset: t_cold.value.base() - slope * a.value.base(),
@@ -217,7 +272,7 @@ fn across<R: Recorder>(
         }
         _ => AtAmbient::held(t_hot.value.base().max(t_cold.value.base())),
     };
-    Some((curve, Some(t_cold), Some(t_hot)))
+    (curve, Some(t_cold), Some(t_hot))
 }
 
 /// Oil temperature at start: the coldest ambient, `start`, or the heater, whichever is warmest.
@@ -229,14 +284,20 @@ fn start<R: Recorder>(
 ) -> (Option<AtAmbient>, Option<Temperature>) {
     let stated = inputs.maybe(r, wanted_start("start"), point.start.as_ref());
     let heater = inputs.maybe(r, wanted_start("heater"), point.heater.as_ref());
-    let least = [stated, heater].into_iter().flatten().map(|k| k.value.base()).fold(f64::NEG_INFINITY, f64::max);
+    let least = [stated, heater]
+        .into_iter()
+        .flatten()
+        .map(|k| k.value.base())
+        .fold(f64::NEG_INFINITY, f64::max);
     let candidates = [ambient.map(|(cold, _)| cold), stated, heater];
     let warmest = candidates
         .into_iter()
         .flatten()
         .max_by(|a, b| a.value.base().total_cmp(&b.value.base()));
-    let curve = (ambient.is_some() || least.is_finite())
-        .then_some(AtAmbient { least, ..AtAmbient::AMBIENT });
+    let curve = (ambient.is_some() || least.is_finite()).then_some(AtAmbient {
+        least,
+        ..AtAmbient::AMBIENT
+    });
     (curve, warmest)
 }
 
@@ -245,12 +306,26 @@ fn wanted_start(key: &'static str) -> Wanted<'static> {
         key,
         about: None,
         symbol: "t_start",
-        says: if key == "start" { "oil temperature at start" } else { "heater setting" },
+        says: if key == "start" {
+            "oil temperature at start"
+        } else {
+            "heater setting"
+        },
         how: "thermometer in the sump before the coldest start",
     }
 }
 
 /// A usual value of a temperature difference, with its plausible range.
-pub(super) fn usual_kelvins(value: f64, lo: f64, hi: f64, why: &'static str) -> Usual<TemperatureInterval> {
-    Usual { value: kelvins(value), lo: kelvins(lo), hi: kelvins(hi), why }
+pub(super) fn usual_kelvins(
+    value: f64,
+    lo: f64,
+    hi: f64,
+    why: &'static str,
+) -> Usual<TemperatureInterval> {
+    Usual {
+        value: kelvins(value),
+        lo: kelvins(lo),
+        hi: kelvins(hi),
+        why,
+    }
 }

@@ -9,6 +9,7 @@ mod fault;
 mod fields;
 mod kinds;
 mod links;
+pub mod listing;
 
 pub use condition::clause;
 pub use fault::RuleFault;

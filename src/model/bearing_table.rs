@@ -1,9 +1,10 @@
 //! The boundary dimensions of rolling bearings, as read from their rule file.
 
+use crate::model::part::BearingClass;
 use crate::quantity::Length;
 use crate::quantity::convert::mm;
 use crate::relation::bearing::class::BearingKind;
-use crate::relation::bearing::designation::DimensionTable;
+use crate::relation::bearing::designation::{Designated, DimensionTable, Unknown, read};
 use std::collections::BTreeMap;
 use std::sync::LazyLock;
 
@@ -86,6 +87,14 @@ impl DimensionTable {
     }
 }
 
+/// Kind and dimensions of a bearing by its number, from the table the program carries.
+///
+/// # Errors
+/// [`Unknown`], with the advice to state the dimensions.
+pub fn designated(text: &str) -> Result<Designated, Unknown> {
+    read(DimensionTable::built_in(), text)
+}
+
 type Diameters = BTreeMap<u8, BTreeMap<u32, Length>>;
 
 fn diameters(written: BTreeMap<u8, BTreeMap<u32, f64>>) -> Result<Diameters, TableFault> {
@@ -115,15 +124,49 @@ fn series(
     Ok(all)
 }
 
+impl From<BearingKind> for BearingClass {
+    fn from(kind: BearingKind) -> Self {
+        match kind {
+            BearingKind::DeepGrooveBall => Self::DeepGrooveBall,
+            BearingKind::AngularContactBall | BearingKind::DoubleRowAngularContactBall => {
+                Self::AngularContactBall
+            }
+            BearingKind::SelfAligningBall => Self::SelfAligningBall,
+            BearingKind::CylindricalRoller => Self::CylindricalRoller,
+            BearingKind::NeedleRoller => Self::NeedleRoller,
+            BearingKind::SphericalRoller => Self::SphericalRoller,
+            BearingKind::TaperedRoller => Self::TaperedRoller,
+            BearingKind::ThrustBall => Self::ThrustBall,
+            BearingKind::CylindricalRollerThrust => Self::CylindricalRollerThrust,
+            BearingKind::SphericalRollerThrust => Self::SphericalRollerThrust,
+        }
+    }
+}
+
+impl From<BearingClass> for BearingKind {
+    fn from(class: BearingClass) -> Self {
+        match class {
+            BearingClass::DeepGrooveBall => Self::DeepGrooveBall,
+            BearingClass::AngularContactBall => Self::AngularContactBall,
+            BearingClass::SelfAligningBall => Self::SelfAligningBall,
+            BearingClass::CylindricalRoller => Self::CylindricalRoller,
+            BearingClass::NeedleRoller => Self::NeedleRoller,
+            BearingClass::SphericalRoller => Self::SphericalRoller,
+            BearingClass::TaperedRoller => Self::TaperedRoller,
+            BearingClass::ThrustBall => Self::ThrustBall,
+            BearingClass::CylindricalRollerThrust => Self::CylindricalRollerThrust,
+            BearingClass::SphericalRollerThrust => Self::SphericalRollerThrust,
+        }
+    }
+}
+
 #[cfg(test)]
 mod tests {
     use super::*;
     use crate::quantity::convert::to_mm;
-    use crate::relation::bearing::designation::{Unknown, read};
 
     fn of(text: &str) -> Result<(BearingKind, f64, f64), Unknown> {
-        read(DimensionTable::built_in(), text)
-            .map(|d| (d.kind, to_mm(d.bore).round(), to_mm(d.outside).round()))
+        designated(text).map(|d| (d.kind, to_mm(d.bore).round(), to_mm(d.outside).round()))
     }
 
     #[test]
@@ -206,7 +249,7 @@ mod tests {
     proptest::proptest! {
         #[test]
         fn never_panics(text in "\\PC{0,20}") {
-            drop(read(DimensionTable::built_in(), &text));
+            drop(designated(&text));
         }
     }
 }

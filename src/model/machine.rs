@@ -61,6 +61,8 @@ pub struct Point {
     pub limits: Limits,
     /// Temperature the bulk oil must not pass.
     pub oil_limit: Option<Given<ThermodynamicTemperature>>,
+    /// Materials, environment and duty that suitability rules ask about.
+    pub facts: super::facts::PointFacts,
     /// For the heat balance.
     pub losses: Option<Losses>,
     /// Grease points: how they are regreased today.

@@ -56,6 +56,8 @@ pub struct Oil {
     pub alpha: Option<Given<(PressureViscosity, ThermodynamicTemperature)>>,
     /// Viscosity index as stated; only checked.
     pub vi: Option<Given<Ratio>>,
+    /// Additives, classes and declarations that suitability rules ask about.
+    pub facts: super::facts::OilFacts,
     /// Price for a litre, or for a kilogram of grease.
     pub price: Option<Given<Price>>,
     /// Litres in stock.

@@ -13,6 +13,7 @@ pub mod compatibility;
 pub mod component;
 pub mod condition;
 pub mod grease;
+mod lookup;
 pub mod provenance;
 pub mod start;
 pub mod suitability;

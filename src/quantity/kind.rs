@@ -3,9 +3,9 @@
 use super::{
     AcidNumber, Angle, AngularVelocity, Area, DynamicViscosity, Efflux, Force, HeatFluxDensity,
     HeatTransfer, HoursPerYear, KinematicViscosity, Length, LoadPerLength, Mass, MassDensity,
-    Power, Pressure, PressureViscosity, Ratio, SpecificHeatCapacity, TemperatureCoefficient,
-    TemperatureInterval, ThermalConductivity, ThermodynamicTemperature, Time, Torque, Velocity,
-    VgStep, Volume, VolumePerYear, VolumeRate,
+    Power, Pressure, PressureViscosity, Ratio, ShearRate, SpecificHeatCapacity,
+    TemperatureCoefficient, TemperatureInterval, ThermalConductance, ThermalConductivity,
+    ThermodynamicTemperature, Time, Torque, Velocity, VgStep, Volume, VolumePerYear, VolumeRate,
 };
 use std::f64::consts::PI;
 use std::marker::PhantomData;
@@ -61,6 +61,8 @@ pub enum Kind {
     AcidNumber,
     /// Heat transfer coefficient.
     HeatTransfer,
+    /// Heat given off by a whole body for every kelvin it is warmer than the air.
+    HeatConductance,
     /// Heat through an area.
     WattDensity,
     /// Margin in ISO 3448 grades.
@@ -75,6 +77,8 @@ pub enum Kind {
     TemperatureCoefficient,
     /// Saybolt, Furol, Engler or Redwood reading.
     Efflux,
+    /// Rate of shear.
+    ShearRate,
 }
 
 /// One way of writing a kind: `base = (value + offset) * factor`.
@@ -272,6 +276,7 @@ const HEAT_TRANSFER: &[Unit] = &[Unit::of(
     1.0,
     &["W/(m²·K)", "W/m2K", "W/(m2 K)"],
 )];
+const HEAT_CONDUCTANCE: &[Unit] = &[Unit::of("W/K", 1.0, &[])];
 const WATT_DENSITY: &[Unit] = &[
     Unit::of("W/cm2", 1e4, &["W/cm²"]),
     Unit::of("W/in2", 1.0 / (0.0254 * 0.0254), &["W/in²"]),
@@ -294,6 +299,8 @@ const EFFLUX: &[Unit] = &[
     Unit::of("s Redwood", 1.0, &["s Redwood 1", "Redwood s"]),
     Unit::of("s Redwood 2", 1.0, &["s Admiralty"]),
 ];
+
+const PER_SECOND: &[Unit] = &[Unit::of("1/s", 1.0, &["s-1"])];
 
 const ANY: (f64, f64) = (f64::MIN, f64::MAX);
 const POSITIVE: (f64, f64) = (f64::MIN_POSITIVE, f64::MAX);
@@ -343,6 +350,7 @@ impl Kind {
         Self::Ratio,
         Self::AcidNumber,
         Self::HeatTransfer,
+        Self::HeatConductance,
         Self::WattDensity,
         Self::VgStep,
         Self::Angle,
@@ -350,6 +358,7 @@ impl Kind {
         Self::SpecificHeat,
         Self::TemperatureCoefficient,
         Self::Efflux,
+        Self::ShearRate,
     ];
 
     /// The table of this kind.
@@ -419,6 +428,13 @@ impl Kind {
                 0,
                 POSITIVE,
             ),
+            Self::HeatConductance => spec(
+                "a heat conductance",
+                "24 W/K",
+                HEAT_CONDUCTANCE,
+                0,
+                POSITIVE,
+            ),
             Self::WattDensity => spec("a watt density", "1.6 W/cm2", WATT_DENSITY, 1, NOT_NEGATIVE),
             Self::VgStep => spec("a number of VG steps", "0.5 step", STEP, 0, (-100.0, 100.0)),
             Self::Angle => spec("an angle", "20 deg", ANGLE, 0, ANY),
@@ -440,6 +456,7 @@ impl Kind {
                 spec("a temperature coefficient", "0.04 1/K", PER_KELVIN, 0, ANY)
             }
             Self::Efflux => spec("an efflux reading", "215 SUS", EFFLUX, 0, POSITIVE),
+            Self::ShearRate => spec("a shear rate", "1e6 1/s", PER_SECOND, 0, NOT_NEGATIVE),
         }
     }
 
@@ -519,6 +536,7 @@ measures! {
     Time => Time,
     Ratio => Ratio,
     HeatTransfer => HeatTransfer,
+    ThermalConductance => HeatConductance,
     HeatFluxDensity => WattDensity,
     Angle => Angle,
     ThermalConductivity => Conductivity,
@@ -532,6 +550,7 @@ plain_measures! {
     HoursPerYear => HoursPerYear,
     TemperatureCoefficient => TemperatureCoefficient,
     Efflux => Efflux,
+    ShearRate => ShearRate,
 }
 
 /// A quantity whose kind is known only at run time.

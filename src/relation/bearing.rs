@@ -15,5 +15,6 @@ pub mod life;
 pub mod life_factor;
 pub mod minimum_viscosity;
 pub mod reference_viscosity;
+pub mod required;
 pub mod speed_limit;
 pub mod thermal_reference;

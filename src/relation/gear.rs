@@ -11,6 +11,7 @@ pub mod grade_table;
 pub mod load;
 pub mod loss;
 pub mod path;
+pub mod pitch_point;
 pub mod temperature;
 pub mod viscosity_rule;
 pub mod worm;

@@ -1,6 +1,6 @@
 //! Why a relation has no answer for what it was given.
 
-use crate::quantity::Measure;
+use crate::quantity::{Angle, Measure};
 
 /// The inputs lie where the relation says nothing.
 #[derive(Clone, Copy, Debug, PartialEq, thiserror::Error)]
@@ -62,6 +62,21 @@ pub(crate) fn within<Q: Measure>(
     let value = quantity.base();
     if (lo..=hi).contains(&value) {
         Ok(value)
+    } else {
+        Err(Outside::Range { what, value, needs })
+    }
+}
+
+/// An angle in radians, refused outside `lo..=hi` degrees.
+pub(crate) fn within_degrees(
+    what: &'static str,
+    angle: Angle,
+    (lo, hi): (f64, f64),
+    needs: &'static str,
+) -> Result<f64, Outside> {
+    let value = angle.base().to_degrees();
+    if (lo..=hi).contains(&value) {
+        Ok(angle.base())
     } else {
         Err(Outside::Range { what, value, needs })
     }

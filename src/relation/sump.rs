@@ -40,6 +40,33 @@ pub static PART: Law = Law {
     source: "definition",
 };
 
+/// Start temperature over pour point.
+pub static POUR_MARGIN: Law = Law {
+    name: "pour-margin",
+    title: "Margin of the start temperature over the pour point",
+    formula: "margin = t_start - t_pour - Delta_t_least",
+    range: "counted from the least margin, at which the verdict becomes fails",
+    source: "definition; the least margin by the rule named beside it",
+};
+
+/// Running temperature under the oil's limit.
+pub static CEILING_MARGIN: Law = Law {
+    name: "oil-ceiling-margin",
+    title: "Margin of the running temperature under the oil's limit",
+    formula: "margin = t_max - t",
+    range: "bulk oil at the hottest ambient",
+    source: "definition; the limit by the supplier or the base stock",
+};
+
+/// Over the low end of a use range.
+pub static USE_MARGIN: Law = Law {
+    name: "use-range-margin",
+    title: "Margin of the start temperature over the low end of the use range",
+    formula: "margin = t_start - t_low",
+    range: "coldest start",
+    source: "definition; the range by the thickener",
+};
+
 /// `t = t_amb + rise`.
 pub fn running(
     ambient: ThermodynamicTemperature,

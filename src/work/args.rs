@@ -2,7 +2,7 @@
 
 use super::{Refusal, Worked};
 use crate::quantity::parse::{Bad, parse};
-use crate::quantity::{KinematicViscosity, Measure, ThermodynamicTemperature};
+use crate::quantity::{DynamicViscosity, KinematicViscosity, Measure, ThermodynamicTemperature};
 use crate::source::Origin;
 use crate::source::place::Given;
 use crate::trace::{Known, Recorder};
@@ -206,7 +206,28 @@ impl Args {
         key: &'static str,
     ) -> Result<Vec<Point>, Refusal> {
         let items = self.items(key, "32 mm2/s at 40 degC")?;
-        items.iter().map(|item| point(worked, key, item)).collect()
+        let read = |item: &String| {
+            let (nu, at) = point(worked, key, item, "32 mm2/s at 40 degC")?;
+            Ok(Point { at, nu })
+        };
+        items.iter().map(read).collect()
+    }
+
+    /// Dynamic viscosities with their temperatures, as `"6500 mPa.s at -25 degC"`.
+    ///
+    /// # Errors
+    /// Missing, or an item of another form.
+    pub fn dynamic_points(
+        &mut self,
+        worked: &mut Worked,
+        key: &'static str,
+    ) -> Result<Vec<DynamicPoint>, Refusal> {
+        let items = self.items(key, "6500 mPa.s at -25 degC")?;
+        let read = |item: &String| {
+            let (eta, at) = point(worked, key, item, "6500 mPa.s at -25 degC")?;
+            Ok(DynamicPoint { at, eta })
+        };
+        items.iter().map(read).collect()
     }
 
     /// Refuses keys that nothing asked for, once a relation has read its inputs.
@@ -240,17 +261,30 @@ pub struct Point {
     pub nu: Known<KinematicViscosity>,
 }
 
-fn point(worked: &mut Worked, key: &'static str, item: &str) -> Result<Point, Refusal> {
-    let Some((nu, at)) = item.split_once(" at ") else {
-        let words = format!(
-            "{key}: `{item}` is not a viscosity at a temperature; write \"32 mm2/s at 40 degC\""
-        );
+/// A dynamic viscosity at a temperature.
+#[derive(Clone, Copy, Debug, PartialEq)]
+pub struct DynamicPoint {
+    /// The temperature.
+    pub at: Known<ThermodynamicTemperature>,
+    /// The viscosity.
+    pub eta: Known<DynamicViscosity>,
+}
+
+fn point<Q: Measure>(
+    worked: &mut Worked,
+    key: &'static str,
+    item: &str,
+    example: &str,
+) -> Result<(Known<Q>, Known<ThermodynamicTemperature>), Refusal> {
+    let Some((value, at)) = item.split_once(" at ") else {
+        let words =
+            format!("{key}: `{item}` is not a viscosity at a temperature; write \"{example}\"");
         return Err(Refusal::new("point-malformed", words));
     };
-    Ok(Point {
-        nu: read(worked, key, "viscosity of a point", nu)?,
-        at: read(worked, key, "temperature of a point", at)?,
-    })
+    Ok((
+        read(worked, key, "viscosity of a point", value)?,
+        read(worked, key, "temperature of a point", at)?,
+    ))
 }
 
 fn read<Q: Measure>(

@@ -2,7 +2,7 @@
 
 /// The classes of ISO 281.
 #[derive(Clone, Copy, Debug, PartialEq, Eq, PartialOrd, Ord)]
-pub enum BearingClass {
+pub enum RatingClass {
     /// Radial ball bearings.
     RadialBall,
     /// Radial roller bearings.
@@ -13,7 +13,7 @@ pub enum BearingClass {
     ThrustRoller,
 }
 
-impl BearingClass {
+impl RatingClass {
     /// As written by the user.
     pub const WORDS: &'static [&'static str] = &[
         "radial-ball",
@@ -102,19 +102,19 @@ impl BearingKind {
     }
 
     /// The class of ISO 281 it belongs to.
-    pub fn class(self) -> BearingClass {
+    pub fn class(self) -> RatingClass {
         match self {
             Self::DeepGrooveBall
             | Self::AngularContactBall
             | Self::DoubleRowAngularContactBall
-            | Self::SelfAligningBall => BearingClass::RadialBall,
+            | Self::SelfAligningBall => RatingClass::RadialBall,
             Self::CylindricalRoller
             | Self::NeedleRoller
             | Self::SphericalRoller
-            | Self::TaperedRoller => BearingClass::RadialRoller,
-            Self::ThrustBall => BearingClass::ThrustBall,
+            | Self::TaperedRoller => RatingClass::RadialRoller,
+            Self::ThrustBall => RatingClass::ThrustBall,
             Self::CylindricalRollerThrust | Self::SphericalRollerThrust => {
-                BearingClass::ThrustRoller
+                RatingClass::ThrustRoller
             }
         }
     }
@@ -123,7 +123,7 @@ impl BearingKind {
     pub fn is_thrust(self) -> bool {
         matches!(
             self.class(),
-            BearingClass::ThrustBall | BearingClass::ThrustRoller
+            RatingClass::ThrustBall | RatingClass::ThrustRoller
         )
     }
 }

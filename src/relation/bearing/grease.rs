@@ -39,6 +39,20 @@ pub static AMOUNT: Law = Law {
     source: "Neale (ed.), The Tribology Handbook, 2nd edition, section A20; common practice",
 };
 
+/// Factors together.
+pub static FACTORS: Law = Law {
+    name: "grease-interval-factors",
+    title: "Factors on the relubrication interval together",
+    formula: "f = f1 f2",
+    range: "factors that act independently",
+    source: "common practice",
+};
+
+/// Two factors together.
+pub fn together(one: Ratio, other: Ratio) -> Ratio {
+    Ratio::from_base(one.base() * other.base())
+}
+
 /// Factor of the kind of bearing in the interval; `None` for thrust bearings, which the table
 /// does not hold.
 pub fn kind_factor(kind: BearingKind) -> Option<Ratio> {

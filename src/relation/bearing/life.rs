@@ -2,7 +2,7 @@
 //!
 //! Source: ISO 281:2007.
 
-use super::class::BearingClass;
+use super::class::RatingClass;
 use crate::numeric::math::pow;
 use crate::quantity::convert::{to_mm, to_rpm};
 use crate::quantity::{AngularVelocity, Force, Length, Measure, Ratio, Time};
@@ -58,7 +58,7 @@ pub const RELIABILITY: &[(f64, f64)] = &[
 /// # Errors
 /// A load rating, load or speed that is not above zero.
 pub fn basic(
-    class: BearingClass,
+    class: RatingClass,
     rating: Force,
     load: Force,
     speed: AngularVelocity,
@@ -95,7 +95,7 @@ pub fn reliability_factor(reliability: Ratio) -> Option<Ratio> {
 /// # Errors
 /// A rating or a diameter that is not above zero.
 pub fn fatigue_limit(
-    class: BearingClass,
+    class: RatingClass,
     static_rating: Force,
     pitch_diameter: Length,
 ) -> Result<Force, Outside> {

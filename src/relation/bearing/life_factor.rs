@@ -3,7 +3,7 @@
 //! Source: ISO 281:2007, equations for the life modification factor (coefficients from memory,
 //! continuity of the branches checked).
 
-use super::class::BearingClass;
+use super::class::RatingClass;
 use super::reference_viscosity::{LARGEST_KAPPA, SMALLEST_KAPPA};
 use crate::numeric::math::{cbrt, pow};
 use crate::quantity::{Force, Measure, Ratio};
@@ -57,7 +57,7 @@ pub fn fatigue_ratio(e_c: Ratio, c_u: Force, load: Force) -> Result<Ratio, Outsi
 ///
 /// # Errors
 /// A viscosity ratio below 0.1, which the standard does not cover, or a negative `x`.
-pub fn life_factor(class: BearingClass, kappa: Ratio, x: Ratio) -> Result<Ratio, Outside> {
+pub fn life_factor(class: RatingClass, kappa: Ratio, x: Ratio) -> Result<Ratio, Outside> {
     let kappa = kappa.base();
     if kappa.is_nan() || kappa < SMALLEST_KAPPA {
         return Err(Outside::Range {
@@ -98,7 +98,7 @@ pub fn life_factor(class: BearingClass, kappa: Ratio, x: Ratio) -> Result<Ratio,
 /// # Errors
 /// As [`life_factor`].
 pub fn life_factor_with_ep(
-    class: BearingClass,
+    class: RatingClass,
     kappa: Ratio,
     x: Ratio,
     e_c: Ratio,
@@ -129,10 +129,10 @@ fn roller_term(kappa: f64) -> f64 {
     }
 }
 
-fn relieved(class: BearingClass, x: f64) -> f64 {
+fn relieved(class: RatingClass, x: f64) -> f64 {
     match class {
-        BearingClass::RadialBall | BearingClass::RadialRoller => x,
-        BearingClass::ThrustBall => x / 3.0,
-        BearingClass::ThrustRoller => x / 2.5,
+        RatingClass::RadialBall | RatingClass::RadialRoller => x,
+        RatingClass::ThrustBall => x / 3.0,
+        RatingClass::ThrustRoller => x / 2.5,
     }
 }

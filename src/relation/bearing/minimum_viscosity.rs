@@ -12,8 +12,8 @@ use crate::relation::Law;
 pub static MINIMUM_VISCOSITY: Law = Law {
     name: "bearing-minimum-viscosity",
     title: "Least viscosity by kind of rolling bearing",
-    formula: "nu = 12 (ball, cylindrical roller), 20 (spherical and tapered roller), 32 (spherical roller thrust)",
-    range: "mm2/s at running temperature, moderate speeds; the reference viscosity overrides it for slow bearings",
+    formula: "nu_min = 12, 20 or 32 by kind",
+    range: "12 ball and cylindrical roller, 20 spherical and tapered roller, 32 spherical roller thrust; mm2/s at running temperature, moderate speeds; the reference viscosity overrides it for slow bearings",
     source: "Neale (ed.), The Tribology Handbook, 2nd edition, section C8",
 };
 

@@ -76,13 +76,14 @@ pub fn reference_viscosity(
 ) -> Result<KinematicViscosity, Outside> {
     positive("the speed", speed)?;
     positive("the pitch diameter", pitch_diameter)?;
-    // Snapped to a billionth, so that 1000 r/min is on the branch the standard puts it.
-    let n_rpm = (to_rpm(speed) * 1e9).round() / 1e9;
+    let n_rpm = to_rpm(speed);
+    // 1000 r/min comes back from rad/s a rounding error away and belongs to the upper branch.
+    let upper = n_rpm >= 1000.0 * (1.0 - 1e-12);
     let size = pow(to_mm(pitch_diameter), -0.5);
-    Ok(mm2_s(if n_rpm < 1000.0 {
-        45_000.0 * pow(n_rpm, -0.83) * size
-    } else {
+    Ok(mm2_s(if upper {
         4_500.0 * pow(n_rpm, -0.5) * size
+    } else {
+        45_000.0 * pow(n_rpm, -0.83) * size
     }))
 }
 

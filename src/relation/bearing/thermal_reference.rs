@@ -2,7 +2,7 @@
 //!
 //! Source: ISO 15312, as quoted in bearing catalogues (common practice).
 
-use super::class::BearingClass;
+use super::class::RatingClass;
 use crate::quantity::convert::{celsius, mm2_s};
 use crate::quantity::{KinematicViscosity, Measure, Ratio, ThermodynamicTemperature};
 
@@ -21,9 +21,9 @@ pub struct Reference {
 }
 
 /// Reference conditions of a class; the oil bath reaches the centre of the lowest element.
-pub fn reference(class: BearingClass) -> Reference {
-    let thrust = matches!(class, BearingClass::ThrustBall | BearingClass::ThrustRoller);
-    let thick = class == BearingClass::ThrustRoller;
+pub fn reference(class: RatingClass) -> Reference {
+    let thrust = matches!(class, RatingClass::ThrustBall | RatingClass::ThrustRoller);
+    let thick = class == RatingClass::ThrustRoller;
     Reference {
         bearing: celsius(70.0),
         ambient: celsius(20.0),

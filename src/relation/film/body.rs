@@ -30,7 +30,7 @@ pub static REDUCED_RADIUS: Law = Law {
 pub static SKEWED_RADII: Law = Law {
     name: "skewed-radii",
     title: "Reduced radii of two bodies turned against each other",
-    formula: "R = 1 / (2 (S / 4 +- sqrt((D1 + D2)^2 - 4 D1 D2 sin(theta)^2) / 4))",
+    formula: "1 / Rx = (S + sqrt((D1 + D2)^2 - 4 D1 D2 sin(theta)^2)) / 2; 1 / Ry = (S - sqrt((D1 + D2)^2 - 4 D1 D2 sin(theta)^2)) / 2",
     range: "principal planes at the angle theta; S sum of the four curvatures, D difference of the two of one body",
     source: "Boresi & Schmidt, Advanced Mechanics of Materials, ch. 17",
 };

@@ -24,6 +24,15 @@ pub static FILM_RATIO: Law = Law {
     source: "Tallian 1967; bands below 1 boundary, 1 to 3 mixed, above 3 full film: common practice",
 };
 
+/// The film that a film ratio asks for.
+pub static WANTED: Law = Law {
+    name: "film-wanted",
+    title: "Film that a film ratio asks for",
+    formula: "h = lambda sigma",
+    range: "film ratio above zero",
+    source: "definition of the film ratio",
+};
+
 /// Root mean square height from the arithmetic mean.
 pub static RQ_FROM_RA: Law = Law {
     name: "rq-from-ra",

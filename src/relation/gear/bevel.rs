@@ -28,6 +28,15 @@ pub static VIRTUAL: Law = Law {
     source: "ISO 10300-1 (from memory)",
 };
 
+/// Speed and torque of the virtual pinion.
+pub static VIRTUAL_LOAD: Law = Law {
+    name: "bevel-virtual-load",
+    title: "Speed and torque of the virtual pinion",
+    formula: "n_v1 = n1 cos(delta1); T_v1 = T1 / cos(delta1)",
+    range: "same pitch-line speed and tooth force as the real pinion",
+    source: "ISO 10300-1 (from memory)",
+};
+
 /// A bevel gear pair at the middle of the face.
 #[derive(Clone, Copy, Debug, PartialEq)]
 pub struct Bevel {

@@ -5,8 +5,10 @@
 //! no limit holds for every oil and gear: the former's comes from a micropitting test.
 
 use crate::numeric::math::pow;
+use crate::quantity::convert::to_celsius;
 use crate::quantity::{
-    DynamicViscosity, Length, Measure, Pressure, PressureViscosity, Ratio, Velocity,
+    DynamicViscosity, Length, MassDensity, Measure, Pressure, PressureViscosity, Ratio,
+    ThermodynamicTemperature, Velocity,
 };
 use crate::relation::Law;
 use crate::relation::film::groups::Groups;
@@ -39,6 +41,26 @@ pub static CENTRAL: Law = Law {
     range: "U with the mean of the surface speeds, alpha from the viscosity at tooth temperature; W = 2 pi p^2 / E'^2",
     source: "AGMA 925 after Dowson and Toyoda 1979 (from memory)",
 };
+
+/// Density in the gear film method.
+pub static DENSITY: Law = Law {
+    name: "gear-film-density",
+    title: "Density of a gear oil at temperature, in the gear film method",
+    formula: "rho = rho15 - 0.7 (t + 273 - 289)",
+    range: "kg/m3, t in degC; within 0.5 % of the tables of ASTM D1250 for mineral oil",
+    source: "ISO/TR 15144-1 (from memory)",
+};
+
+/// Density of a gear oil as the method has it.
+///
+/// # Errors
+/// A temperature so high that no density is left.
+pub fn density(rho15: MassDensity, at: ThermodynamicTemperature) -> Result<MassDensity, Outside> {
+    let rho = rho15.base() - 0.7 * (to_celsius(at) + 273.0 - 289.0);
+    let left = MassDensity::from_base(rho);
+    positive("the density at temperature", left)?;
+    Ok(left)
+}
 
 /// Groups of a tooth contact.
 pub static GROUPS: Law = Law {

@@ -5,8 +5,7 @@
 use crate::numeric::math::{acos, asin, atan, cos, sin, tan};
 use crate::quantity::{Angle, Length, Measure, Ratio};
 use crate::relation::Law;
-use crate::relation::outside::{Outside, positive, within};
-use std::f64::consts::FRAC_PI_2;
+use crate::relation::outside::{Outside, positive, within_degrees};
 
 /// Centre distance of gears without profile shift.
 pub static CENTRE_DISTANCE: Law = Law {
@@ -15,6 +14,15 @@ pub static CENTRE_DISTANCE: Law = Law {
     formula: "a = mn (z1 + z2) / (2 cos(beta))",
     range: "cylindrical gears; profile shifts that add up to zero",
     source: "ISO 21771",
+};
+
+/// Diameters and angles of a pair.
+pub static MESH: Law = Law {
+    name: "gear-mesh-geometry",
+    title: "Diameters and working angles of a cylindrical gear pair",
+    formula: "d1 = mn z1 / cos(beta); tan(alpha_t) = tan(alpha_n) / cos(beta); cos(alpha_wt) = (db1 + db2) / (2 a); dw1 = 2 a / (z2 / z1 + 1)",
+    range: "cylindrical involute gears; z2 and a negative for an internal pair",
+    source: "ISO 21771; ISO 6336-1",
 };
 
 /// Reduced radius at the pitch point.
@@ -56,16 +64,12 @@ impl Teeth {
                 what: "the number of teeth of the wheel",
             });
         }
-        let needs = "in radians, it lies between a quarter turn to the left and to the right";
-        let edge = FRAC_PI_2 - 1e-6;
-        within("the helix angle", self.helix, (-edge, edge), needs)?;
-        let needs = "in radians, it lies between 0 and a quarter turn";
-        within(
-            "the pressure angle",
-            self.pressure_angle,
-            (1e-6, edge),
-            needs,
-        )?;
+        let needs = "in degrees, it lies between -90 and 90";
+        let edge = 90.0 - 1e-4;
+        within_degrees("the helix angle", self.helix, (-edge, edge), needs)?;
+        let needs = "in degrees, it lies between 0 and 90";
+        let angle = self.pressure_angle;
+        within_degrees("the pressure angle", angle, (1e-4, edge), needs)?;
         Ok(self)
     }
 }

@@ -5,7 +5,7 @@
 use super::geometry::Mesh;
 use crate::numeric::math::{cos, sin};
 use crate::quantity::{
-    AngularVelocity, Force, Length, LoadPerLength, Measure, Power, Pressure, Ratio, Torque,
+    Angle, AngularVelocity, Force, Length, LoadPerLength, Measure, Power, Pressure, Ratio, Torque,
 };
 use crate::relation::Law;
 use crate::relation::film::hertz;
@@ -39,6 +39,15 @@ pub static PRESSURE: Law = Law {
     source: "Hertz 1881; ISO 6336-2",
 };
 
+/// The torque.
+pub static TORQUE: Law = Law {
+    name: "gear-torque",
+    title: "Torque of a power at a speed",
+    formula: "T = P / omega",
+    range: "steady running",
+    source: "mechanics",
+};
+
 /// Torque of a power at a speed.
 ///
 /// # Errors
@@ -63,13 +72,14 @@ pub fn tangential_force(torque: Torque, diameter: Length) -> Result<Force, Outsi
 /// # Errors
 /// A force, width or factor that is not above zero.
 pub fn line_load(
-    mesh: &Mesh,
     force: Force,
     face_width: Length,
     load_factor: Ratio,
     load_share: Ratio,
+    transverse_pressure_angle: Angle,
 ) -> Result<LoadPerLength, Outside> {
-    let f = positive("the tangential force", path_force(mesh, force))?;
+    let along = path_force(force, transverse_pressure_angle);
+    let f = positive("the tangential force", along)?;
     let b = positive("the face width", face_width)?;
     let k = positive("the load factor", load_factor)?;
     let x = positive("the load share", load_share)?;
@@ -105,6 +115,6 @@ pub fn overlap_ratio(mesh: &Mesh, face_width: Length) -> Ratio {
 }
 
 /// Force along the path of contact, `F_t / cos(alpha_t)`.
-pub fn path_force(mesh: &Mesh, force: Force) -> Force {
-    Force::from_base(force.base() / cos(mesh.transverse_pressure_angle.base()))
+pub fn path_force(force: Force, transverse_pressure_angle: Angle) -> Force {
+    Force::from_base(force.base() / cos(transverse_pressure_angle.base()))
 }

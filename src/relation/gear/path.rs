@@ -4,9 +4,9 @@
 
 use super::geometry::Mesh;
 use crate::numeric::math::sin;
-use crate::quantity::{AngularVelocity, Length, Measure, Ratio, Velocity};
+use crate::quantity::{Angle, AngularVelocity, Length, Measure, Ratio, Velocity};
 use crate::relation::Law;
-use crate::relation::outside::Outside;
+use crate::relation::outside::{Outside, positive};
 use std::f64::consts::PI;
 
 /// Pitch-line speed.
@@ -141,10 +141,10 @@ impl Path {
         let e = at_tip(tips.pinion, db1);
         let a = total - at_tip(tips.wheel, db2).copysign(db2.base());
         let base_pitch = PI * mesh.base_diameters.0.base() / mesh.teeth.z1.base();
-        if !(a > 0.0 && e > a) {
+        if !(a > 0.0 && e >= a + base_pitch) {
             return Err(Outside::NoAnswer {
                 what: "the path of contact",
-                why: "the tip diameters leave no engagement on the involute",
+                why: "the tip diameters leave less than one pair of teeth in engagement",
             });
         }
         Ok(Self {
@@ -207,12 +207,20 @@ impl Path {
     }
 }
 
-/// Pitch-line speed.
-pub fn pitch_speed(mesh: &Mesh, pinion_speed: AngularVelocity) -> Velocity {
-    Velocity::from_base(mesh.working_diameter.base() * pinion_speed.base() / 2.0)
+/// Pitch-line speed, from the pinion's pitch diameter and speed.
+///
+/// # Errors
+/// A diameter or speed that is not above zero.
+pub fn pitch_speed(
+    working_diameter: Length,
+    pinion_speed: AngularVelocity,
+) -> Result<Velocity, Outside> {
+    let d = positive("the pitch diameter of the pinion", working_diameter)?;
+    let omega = positive("the speed", pinion_speed)?;
+    Ok(Velocity::from_base(d * omega / 2.0))
 }
 
 /// Sum of the surface speeds at the pitch point.
-pub fn sum_speed(mesh: &Mesh, pitch_speed: Velocity) -> Velocity {
-    Velocity::from_base(2.0 * pitch_speed.base() * sin(mesh.working_pressure_angle.base()))
+pub fn sum_speed(pitch_speed: Velocity, working_pressure_angle: Angle) -> Velocity {
+    Velocity::from_base(2.0 * pitch_speed.base() * sin(working_pressure_angle.base()))
 }

@@ -25,8 +25,8 @@ pub static MEAN_FRICTION: Law = Law {
 pub static FLASH: Law = Law {
     name: "gear-flash",
     title: "Flash temperature between gear teeth, ISO form",
-    formula: "theta_fl = sqrt(pi) / 2 mu_m p |v1 - v2| / (B_M (sqrt(v1) + sqrt(v2))) sqrt(8 rho_n p / E')",
-    range: "both gears of the same material; p local pressure, SI units",
+    formula: "theta_fl = sqrt(pi) / 2 mu_m p v_s / (B_M (sqrt(v1) + sqrt(v2))) sqrt(8 rho_n p / E')",
+    range: "both gears of the same material; p local pressure, v_s difference of the surface speeds, SI units",
     source: "ISO/TS 6336-22, ISO/TR 15144-1 (from memory)",
 };
 
@@ -34,8 +34,8 @@ pub static FLASH: Law = Law {
 pub static FLASH_BLOK: Law = Law {
     name: "gear-flash-blok",
     title: "Flash temperature between gear teeth, Blok",
-    formula: "theta_fl = 1.11 mu_m w |sqrt(v1) - sqrt(v2)| / (B_M sqrt(2 b))",
-    range: "both gears of the same material; w load per length, b half-width of contact, SI units",
+    formula: "theta_fl = 1.11 mu_m w (sqrt(v1) - sqrt(v2)) / (B_M sqrt(2 b))",
+    range: "both gears of the same material; v1 the faster surface, w load per length, b half-width of contact, SI units",
     source: "Blok 1937",
 };
 

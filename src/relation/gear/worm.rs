@@ -10,8 +10,7 @@ use crate::quantity::{
     TemperatureInterval, Velocity,
 };
 use crate::relation::Law;
-use crate::relation::outside::{Outside, positive, within};
-use std::f64::consts::FRAC_PI_2;
+use crate::relation::outside::{Outside, positive, within, within_degrees};
 
 /// Sliding speed.
 pub static SLIDING: Law = Law {
@@ -74,8 +73,8 @@ pub fn sliding_speed(
 }
 
 fn lead(angle: Angle) -> Result<f64, Outside> {
-    let needs = "in radians, it lies between 0 and a quarter turn";
-    within("the lead angle", angle, (1e-6, FRAC_PI_2 - 1e-6), needs)
+    let needs = "in degrees, it lies between 0 and 90";
+    within_degrees("the lead angle", angle, (1e-4, 90.0 - 1e-4), needs)
 }
 
 /// Coefficient of friction.

@@ -98,7 +98,7 @@ pub enum BlendError {
     #[error("a fraction is {0}; each is between 0 and 1")]
     Fraction(f64),
     /// Fractions of more or less than the whole.
-    #[error("the fractions add up to {0}, not 1")]
+    #[error("the fractions add up to {0:.6}, not 1")]
     Sum(f64),
     /// A component the rule does not cover.
     #[error("{} is too thin for this rule, which holds above {limit} mm2/s",

@@ -37,6 +37,15 @@ pub static DENSITY_LINEAR: Law = Law {
     source: "common practice, coefficients from memory; the supplier's come first",
 };
 
+/// Dynamic viscosity from the kinematic one.
+pub static DYNAMIC_VISCOSITY: Law = Law {
+    name: "dynamic-viscosity",
+    title: "Dynamic viscosity",
+    formula: "eta = nu rho",
+    range: "both at one temperature",
+    source: "definition",
+};
+
 /// How density changes with temperature.
 #[derive(Clone, Copy, Debug, PartialEq)]
 pub enum DensityLaw {

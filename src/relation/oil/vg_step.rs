@@ -4,8 +4,9 @@
 //! 40 °C; the margin is `6 lg(ratio)`. It means the same at the hot end and at the cold one,
 //! which a ratio at temperature does not.
 
+use super::tangent::{ln_ln_z, parallel_nu40};
 use super::viscosity_temperature::Line;
-use crate::numeric::math::lg;
+use crate::numeric::math::{lg, ln};
 use crate::quantity::{KinematicViscosity, Measure, ThermodynamicTemperature, VgStep};
 use crate::relation::Law;
 
@@ -37,10 +38,7 @@ pub static CARRIED: Law = Law {
 };
 
 /// Steps between two viscosities at 40 °C, positive where the first is the greater.
-pub fn steps(
-    nu40: KinematicViscosity,
-    limit40: KinematicViscosity,
-) -> VgStep {
+pub fn steps(nu40: KinematicViscosity, limit40: KinematicViscosity) -> VgStep {
     VgStep(6.0 * lg(nu40.base() / limit40.base()))
 }
 
@@ -50,7 +48,9 @@ pub fn carried_to_40(
     limit: KinematicViscosity,
     at: ThermodynamicTemperature,
 ) -> KinematicViscosity {
-    line.parallel_through(limit, at).nu40()
+    let w = ln_ln_z(line.form(), limit);
+    let nu40 = parallel_nu40(line.form(), line.slope_b(), w, ln(at.base()));
+    KinematicViscosity::from_base(nu40)
 }
 
 #[cfg(test)]
@@ -60,7 +60,7 @@ mod tests {
     use crate::relation::oil::viscosity_temperature::Point;
 
     fn line(nu40: f64, nu100: f64) -> Line {
-        let point = |nu, t| Point { at: celsius(t), nu: mm2_s(nu) };
+        let point = |nu, t| Point::new(celsius(t), mm2_s(nu));
         Line::through(point(nu40, 40.0), point(nu100, 100.0)).expect("two good points")
     }
 

@@ -225,6 +225,40 @@ impl Line {
         Ok(ThermodynamicTemperature::from_base(exp(ln_t)))
     }
 
+    /// The line of slope `b` through a viscosity at a temperature.
+    pub(super) fn with_slope(
+        nu: KinematicViscosity,
+        at: ThermodynamicTemperature,
+        b: f64,
+        form: Form,
+    ) -> Self {
+        let k = ln(ln(form.z(to_mm2_s(nu)))) + b * ln(at.base());
+        Self {
+            a: (k - LN_LN_10) / LN_10,
+            b,
+            form,
+        }
+    }
+
+    /// The parallel of this line through a viscosity at a temperature: the line slid, without
+    /// turning it, until it touches a limit.
+    #[must_use]
+    pub fn parallel_through(self, nu: KinematicViscosity, at: ThermodynamicTemperature) -> Self {
+        Self::with_slope(nu, at, self.b, self.form)
+    }
+
+    /// Slope `B` as a plain number, for many evaluations.
+    #[inline]
+    pub(crate) fn slope_b(self) -> f64 {
+        self.b
+    }
+
+    /// Temperature, K, at which the line has the viscosity whose `ln ln Z` is `w`.
+    #[inline]
+    pub(crate) fn temperature_of_w(self, w: f64) -> f64 {
+        exp((self.a * LN_10 + LN_LN_10 - w) / self.b)
+    }
+
     /// Viscosity at 40 °C.
     pub fn nu40(self) -> KinematicViscosity {
         self.nu_at(celsius(40.0))

@@ -81,11 +81,6 @@ pub fn torque(dip: Dip, splash: Ratio) -> Result<Torque, Outside> {
     Ok(Torque::from_base(splash * c1 * exp(c2 * v / 10.0)))
 }
 
-/// Power of a torque at the pinion's speed.
-pub fn power_of(torque: Torque, pinion_speed: AngularVelocity) -> Power {
-    Power::from_base(torque.base() * pinion_speed.base())
-}
-
 /// One gear that stirs.
 #[derive(Clone, Copy, Debug, PartialEq)]
 pub struct Stirring {
@@ -128,4 +123,49 @@ pub fn power(s: Stirring) -> Result<Power, Outside> {
     let sum = smooth + 1.474 * d_mm + teeth;
     let scale = f_g * to_mm2_s(s.nu) * n_rpm * n_rpm * n_rpm * pow(d_mm, 4.7);
     Ok(Power::from_base(scale * sum / (0.2 * 1e26) * 1e3))
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use crate::quantity::convert::{degrees, mm, mm2_s, number, rpm};
+
+    fn wheel(nu: f64, n: f64, helix: f64) -> f64 {
+        let stirring = Stirring {
+            dip_factor: number(0.3),
+            nu: mm2_s(nu),
+            speed: rpm(n),
+            diameter: mm(330.0),
+            length: mm(60.0),
+            face_width: mm(60.0),
+            transverse_module: mm(5.1),
+            helix: degrees(helix),
+        };
+        power(stirring).map_or(f64::NAN, Measure::base)
+    }
+
+    #[test]
+    fn churning_rises_straight_with_viscosity_and_with_the_cube_of_speed() {
+        let one = wheel(100.0, 470.0, 12.0);
+        assert!(one > 0.0);
+        assert!((wheel(200.0, 470.0, 12.0) / one - 2.0).abs() < 1e-9);
+        assert!((wheel(100.0, 940.0, 12.0) / one - 8.0).abs() < 1e-9);
+        // below its range the tooth term stays as at 10 degrees
+        let (spur, at_10) = (wheel(100.0, 470.0, 0.0), wheel(100.0, 470.0, 10.0));
+        assert!((spur / at_10 - 1.0).abs() < 1e-12);
+    }
+
+    #[test]
+    fn a_gear_that_does_not_dip_churns_nothing() {
+        let dip = Dip {
+            pinion: mm(0.0),
+            wheel: mm(0.0),
+            face_width: mm(60.0),
+            pitch_speed: Velocity::from_base(8.0),
+        };
+        assert_eq!(torque(dip, number(1.0)).map(Measure::base), Ok(0.0));
+        // as deep as the axis in a housing as wide as its axis is high: (4/3)^1.5 times 2
+        let c = splash_factor(mm(100.0), mm(100.0), mm(100.0)).map_or(f64::NAN, Measure::base);
+        assert!((c - 2.0 * pow(4.0 / 3.0, 1.5)).abs() < 1e-12);
+    }
 }

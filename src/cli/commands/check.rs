@@ -1,0 +1,73 @@
+//! `check`: reads all files, reports, runs nothing but the verdicts the user expects.
+
+use crate::cli::Format;
+use crate::cli::exit::Exit;
+use crate::cli::session::Session;
+use crate::weighing::{Scales, Settings, Weighed};
+use std::fmt::Write as _;
+
+/// Runs `check`.
+pub fn check(session: &mut Session<'_>) -> Exit {
+    let loaded = match session.load(&[]) {
+        Ok(loaded) => loaded,
+        Err(exit) => return exit,
+    };
+    let site = &loaded.site;
+    let mut unmet = Vec::new();
+    if !site.expect.is_empty() {
+        let settings = Settings {
+            units: session.units(),
+            ..Settings::default()
+        };
+        let scales = match Scales::new(site, &loaded.rules, settings) {
+            Ok(scales) => scales,
+            Err((oil, misfit)) => return session.misfit(&oil, &misfit),
+        };
+        for expected in &site.expect {
+            let address = &expected.machine.value;
+            for point in site.points.iter().filter(|p| p.address() == *address) {
+                let weighed = scales.weigh(point);
+                let is = word_of(&scales, &weighed, &expected.oil.value);
+                if is != expected.verdict.value {
+                    let place = loaded.place(&expected.verdict.origin.place);
+                    unmet.push(format!(
+                        "{place}: {address} with {}: {} expected, it is {is}",
+                        expected.oil.value, expected.verdict.value
+                    ));
+                }
+            }
+        }
+    }
+    if session.wants(Format::Json) {
+        let text = loaded.problems_json(&unmet);
+        session.result(&text);
+    } else {
+        let mut text = format!(
+            "{} machines with {} lubrication points, {} oils read\n",
+            loaded.machines(),
+            site.points.len(),
+            site.oils.len()
+        );
+        for line in &unmet {
+            let _ = writeln!(text, "not as expected  {line}");
+        }
+        session.result(&text);
+    }
+    if unmet.is_empty() {
+        Exit::Done
+    } else {
+        Exit::Input
+    }
+}
+
+/// The word of one oil on a weighed point.
+pub fn word_of(scales: &Scales<'_>, weighed: &Weighed<'_>, oil: &str) -> String {
+    let is = |i: usize| scales.site.oils[i].id == oil;
+    if let Some(c) = weighed.candidates.iter().find(|c| is(c.oil)) {
+        return c.judgement.verdict.word().to_owned();
+    }
+    if weighed.barred.iter().any(|b| is(b.oil)) {
+        return "barred".to_owned();
+    }
+    "not weighed".to_owned()
+}

@@ -1,0 +1,68 @@
+//! `need`: what a machine needs, from files or from one line.
+
+use crate::cli::exit::Exit;
+use crate::cli::session::Session;
+use crate::cli::text_of::need::{one, origins};
+use crate::cli::{Format, Need};
+use crate::demand::point_demands;
+use crate::model::Point;
+use crate::results::need::{document_of, table_of};
+use crate::weighing::{Scales, Settings};
+
+/// Runs `need`.
+pub fn need(session: &mut Session<'_>, args: &Need) -> Exit {
+    let without_files = args.bearing.is_some() || args.gear.is_some() || args.component.is_some();
+    if without_files {
+        return super::need_line::need_line(session, args);
+    }
+    match from_files(session, args) {
+        Ok(exit) | Err(exit) => exit,
+    }
+}
+
+fn from_files(session: &mut Session<'_>, args: &Need) -> Result<Exit, Exit> {
+    let loaded = session.load(&[])?;
+    if args.list {
+        let lines: String = loaded
+            .site
+            .points
+            .iter()
+            .map(|p| format!("{}  {}\n", p.address(), p.title.as_deref().unwrap_or("")))
+            .collect();
+        return Ok(session.result(&lines));
+    }
+    let points = session.points(&loaded.site, &args.tags)?;
+    let settings = Settings {
+        units: session.units(),
+        ..Settings::default()
+    };
+    let scales = Scales::new(&loaded.site, &loaded.rules, settings)
+        .map_err(|(oil, misfit)| session.misfit(&oil, &misfit))?;
+    let all: Vec<(&Point, _)> = points
+        .into_iter()
+        .map(|p| (p, point_demands(p, &loaded.site.house, &loaded.rules)))
+        .collect();
+    Ok(match session.shared.format {
+        Format::Json => {
+            let head = session.head(&loaded);
+            session.result(&document_of(&all, &head, session.units()))
+        }
+        Format::Csv => session.table(&table_of(&all, session.units())),
+        Format::Text => {
+            let width = session.width();
+            let mut parts: Vec<String> = Vec::new();
+            for (point, demands) in &all {
+                let mut text = one(&scales, point, demands, width);
+                if session.shared.verbose {
+                    text.push_str(&origins(point, |place| loaded.place(place)));
+                }
+                parts.push(text);
+            }
+            if let [(point, _)] = all.as_slice() {
+                let demo = if session.shared.demo { " --demo" } else { "" };
+                session.note(&format!("next: filmwright weigh {}{demo}", point.address()));
+            }
+            session.result(&parts.join("\n"))
+        }
+    })
+}

@@ -1,0 +1,122 @@
+//! `rules`: what is in force, entry by entry, and the rules the program works limits out by.
+
+use crate::cli::exit::Exit;
+use crate::cli::load::matches;
+use crate::cli::session::Session;
+use crate::cli::text::folded;
+use crate::cli::{Format, Rules};
+use crate::demand::rules::CALCULATED;
+use crate::input::rules::listing::{Listed, listing};
+use serde_json::json;
+use std::fmt::Write as _;
+
+/// Runs `rules`.
+pub fn rules(session: &mut Session<'_>, args: &Rules) -> Exit {
+    let folder = (!session.shared.demo).then(|| session.folder());
+    if let Err(exit) = session.rules(folder.as_deref()) {
+        return exit;
+    }
+    let mut all = calculated();
+    all.extend(listing(&session.layers(folder.as_deref())));
+    let kind = args.kind.as_deref().map(folded_name);
+    let chosen: Vec<&Listed> = all
+        .iter()
+        .filter(|r| kind.as_ref().is_none_or(|k| folded_name(&r.kind) == *k))
+        .filter(|r| args.rules.is_empty() || args.rules.iter().any(|w| is(w, r)))
+        .collect();
+    if chosen.is_empty() {
+        let mut kinds: Vec<&str> = all.iter().map(|r| r.kind.as_str()).collect();
+        kinds.dedup();
+        session.fail(&format!(
+            "no rule matches {}\n  filmwright rules lists them; kinds: {}",
+            args.rules.join(", "),
+            kinds.join(", ")
+        ));
+        return Exit::NoMatch;
+    }
+    if session.wants(Format::Json) {
+        let list: Vec<_> = chosen.iter().map(|r| one_json(r)).collect();
+        let mut text = serde_json::to_string_pretty(&json!({ "rules": list })).unwrap_or_default();
+        text.push('\n');
+        return session.result(&text);
+    }
+    let text = if args.rules.is_empty() {
+        overview(&chosen)
+    } else {
+        chosen
+            .iter()
+            .map(|r| one(r, session.width()))
+            .collect::<Vec<_>>()
+            .join("\n")
+    };
+    session.result(&text)
+}
+
+fn folded_name(name: &str) -> String {
+    name.to_lowercase().replace(['_', ' '], "-")
+}
+
+fn is(wanted: &str, r: &Listed) -> bool {
+    matches(wanted, &r.id)
+        || folded_name(wanted) == folded_name(&r.id)
+        || wanted.eq_ignore_ascii_case(&r.title)
+}
+
+/// The rules by which limits are worked out, with their formulas.
+fn calculated() -> Vec<Listed> {
+    CALCULATED
+        .iter()
+        .map(|(id, law, default)| Listed {
+            kind: "calculated limits".to_owned(),
+            id: (*id).to_owned(),
+            title: law.title.to_owned(),
+            says: [
+                ("formula", law.formula),
+                ("range", law.range),
+                ("default", *default),
+                ("source", law.source),
+            ]
+            .iter()
+            .map(|(k, v)| ((*k).to_owned(), (*v).to_owned()))
+            .collect(),
+            file: "worked out by the program".to_owned(),
+        })
+        .collect()
+}
+
+fn one_json(r: &Listed) -> serde_json::Value {
+    let mut entry = serde_json::Map::new();
+    entry.insert("kind".into(), json!(r.kind));
+    entry.insert("id".into(), json!(r.id));
+    entry.insert("title".into(), json!(r.title));
+    for (key, says) in &r.says {
+        entry.insert(key.clone(), json!(says));
+    }
+    entry.insert("file".into(), json!(r.file));
+    serde_json::Value::Object(entry)
+}
+
+fn overview(rules: &[&Listed]) -> String {
+    let mut out = String::from("Rules in force. filmwright rules ID prints one with its source.\n");
+    let mut kind = "";
+    for r in rules {
+        if r.kind != kind {
+            kind = &r.kind;
+            let _ = writeln!(out, "\n  {kind}");
+        }
+        let sure = r
+            .field("confidence")
+            .map_or(String::new(), |c| format!("  [{c}]"));
+        let _ = writeln!(out, "    {:<34} {}{sure}", r.id, r.title);
+    }
+    out
+}
+
+fn one(r: &Listed, width: usize) -> String {
+    let mut out = format!("{}  {}\n", r.id, r.title);
+    for (key, says) in &r.says {
+        out.push_str(&folded(&format!("{key}: {says}"), "  ", width));
+    }
+    let _ = writeln!(out, "  file: {}", r.file);
+    out
+}

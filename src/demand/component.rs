@@ -1,0 +1,181 @@
+//! A component with a practice window: floor, running ceiling, start ceiling as it gives them.
+
+use super::context::{Context, forty};
+use super::{AtAmbient, Demand, End, Limit, Standing};
+use crate::model::part::{Component, Part, PartKind};
+use crate::model::rulebook::component::{Component as Window, WindowLimit};
+use crate::model::{Lubrication, ViscosityLimit};
+use crate::quantity::Measure;
+use crate::source::place::Whose;
+use crate::trace::{Recorder, StepId};
+
+/// Adds the demands of a component.
+pub fn add<R: Recorder>(cx: &mut Context<'_, '_, R>, part: &Part, component: &Component) {
+    let Some(window) = cx.rules.components.get(&component.id).cloned() else {
+        cx.undecided(part, End::HotFloor, "no such component in the rules");
+        return;
+    };
+    window_demands(cx, part, &window);
+    if let Some(base) = window.base_oil {
+        grease_window(cx, part, &window, (base.lo, base.hi));
+    }
+    if let Some(prefer) = window.prefer {
+        let ends = [prefer.lo, prefer.hi].map(shown);
+        cx.inform(
+            part,
+            format!("preferred {} .. {} while running", ends[0], ends[1]),
+            None,
+        );
+    }
+    if let Some(way) = &window.choose_by {
+        cx.inform(part, format!("chosen by: {way}"), None);
+    }
+    super::feed::add(cx, part, component, &window);
+}
+
+fn shown(limit: WindowLimit) -> String {
+    use crate::quantity::show::{Toward, Units, quantity};
+    match limit {
+        WindowLimit::Fixed(ViscosityLimit::Kinematic(nu)) => {
+            quantity(nu.amount(), Units::Si, Toward::Nearest)
+        }
+        WindowLimit::Fixed(ViscosityLimit::Dynamic(eta)) => {
+            quantity(eta.amount(), Units::Si, Toward::Nearest)
+        }
+        WindowLimit::TimesReference { factor, .. } => {
+            format!("{} times the pitch-line reference", factor.base())
+        }
+    }
+}
+
+/// Whether a worked-out viscosity ratio stands beside a window that only restates it.
+fn ratio_is_known<R: Recorder>(cx: &Context<'_, '_, R>) -> bool {
+    cx.point.parts.iter().any(|p| match &p.kind {
+        PartKind::RollingBearing(b) => {
+            cx.has(b.bore.as_ref()) && cx.has(b.outside.as_ref()) && cx.has(b.speed.as_ref())
+        }
+        _ => false,
+    })
+}
+
+fn window_demands<R: Recorder>(cx: &mut Context<'_, '_, R>, part: &Part, window: &Window) {
+    let informs = window.restates && ratio_is_known(cx);
+    let hot = cx.hot_at(part);
+    let start = (cx.thermal.start, cx.thermal.start_coldest.map(|k| k.step));
+    if let Some(WindowLimit::Fixed(limit)) = window.min {
+        let standing = if informs {
+            Standing::Information
+        } else {
+            Standing::Judges
+        };
+        let place = (hot.at, hot.hottest.map(|k| k.step));
+        push(
+            cx,
+            part,
+            window,
+            End::HotFloor,
+            limit,
+            place,
+            standing,
+            "least while running",
+        );
+    }
+    if let Some(WindowLimit::Fixed(limit)) = window.max_run {
+        let standing = if window.max_run_is_note {
+            Standing::Information
+        } else {
+            Standing::Judges
+        };
+        let place = (hot.at, hot.coldest.map(|k| k.step));
+        push(
+            cx,
+            part,
+            window,
+            End::RunningCeiling,
+            limit,
+            place,
+            standing,
+            "greatest at full speed",
+        );
+    }
+    let fed = matches!(
+        cx.lubrication(),
+        Some(Lubrication::Circulated | Lubrication::PressureFed)
+    );
+    let at_start = if fed {
+        window.max_start_pump_fed.or(window.max_start)
+    } else {
+        window.max_start
+    };
+    if let Some(WindowLimit::Fixed(limit)) = at_start {
+        push(
+            cx,
+            part,
+            window,
+            End::StartCeiling,
+            limit,
+            start,
+            Standing::Judges,
+            "greatest at start",
+        );
+    }
+}
+
+#[expect(clippy::too_many_arguments, reason = "one row of a window")]
+fn push<R: Recorder>(
+    cx: &mut Context<'_, '_, R>,
+    part: &Part,
+    window: &Window,
+    end: End,
+    limit: ViscosityLimit,
+    (at, step): (Option<AtAmbient>, Option<StepId>),
+    standing: Standing,
+    says: &str,
+) {
+    let (boxed, limit_step) = match limit {
+        ViscosityLimit::Kinematic(nu) => (
+            Limit::Kinematic(nu),
+            cx.rule_value("nu_lim", "limit of the practice window", nu, &window.id)
+                .step,
+        ),
+        ViscosityLimit::Dynamic(eta) => (
+            Limit::Dynamic(eta),
+            cx.rule_value("eta_lim", "limit of the practice window", eta, &window.id)
+                .step,
+        ),
+    };
+    cx.push(Demand {
+        end,
+        limit: boxed,
+        limit_step: Some(limit_step),
+        rule: window.id.clone(),
+        says: format!("{}: {says}", window.name),
+        source: window.provenance.cited(),
+        whose: Whose::Standard,
+        confidence: window.provenance.confidence,
+        standing,
+        from_window: true,
+        ..cx.blank_at(Some(part.label.clone()), at, step)
+    });
+}
+
+/// A grease for this component has its base oil within these at 40 °C.
+fn grease_window<R: Recorder>(
+    cx: &mut Context<'_, '_, R>,
+    part: &Part,
+    window: &Window,
+    (lo, hi): (
+        crate::quantity::KinematicViscosity,
+        crate::quantity::KinematicViscosity,
+    ),
+) {
+    let place = (Some(forty()), None);
+    let says = [
+        (End::HotFloor, lo, "base oil at 40 degC, least"),
+        (End::RunningCeiling, hi, "base oil at 40 degC, greatest"),
+    ];
+    for (end, nu, says) in says {
+        let limit = ViscosityLimit::Kinematic(nu);
+        push(cx, part, window, end, limit, place, Standing::Judges, says);
+    }
+}

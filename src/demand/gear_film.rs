@@ -1,0 +1,522 @@
+//! Film at the pitch point of a gear mesh: information, and a demand where a film ratio is asked
+//! for by the maker, the house or a micropitting result.
+
+use super::context::{Context, HotAt};
+use super::film::FilmContact;
+use super::gear_mesh::{film_limit, pinion_speed, ratio};
+use super::inputs::{Usual, Wanted};
+use super::thermal::usual_kelvins;
+use super::{Demand, End};
+use crate::model::part::{GearMesh, GearType, Part};
+use crate::model::rulebook::Confidence;
+use crate::model::site::HouseLimit;
+use crate::quantity::convert::{degrees, number, um};
+use crate::quantity::{
+    Angle, Force, KinematicViscosity, Length, LoadPerLength, Measure, Pressure, Ratio,
+    ThermodynamicTemperature, Torque, Velocity,
+};
+use crate::relation::film::body::{Material, REDUCED_MODULUS, reduced_modulus};
+use crate::relation::film::roughness::{RQ_FROM_RA, rq_from_ra};
+use crate::relation::film::{inverse, line, roughness};
+use crate::relation::gear::film::{self as tooth, ToothContact};
+use crate::relation::gear::load::{
+    LINE_LOAD, PRESSURE, TANGENTIAL_FORCE, pressure, tangential_force, torque_of,
+};
+use crate::relation::gear::pitch_point::{
+    PITCH_DIAMETER, PITCH_SPEED, REDUCED_RADIUS, REFERENCE_DIAMETER, pitch_diameter,
+    reduced_radius, reference_diameter as diameter_of, transverse_sine_cosine,
+};
+use crate::relation::oil::pressure_viscosity::{Family, agma_925};
+use crate::source::place::Whose;
+use crate::trace::{Known, Recorder};
+
+/// Id of the rule.
+pub const FILM_RULE: &str = "gear-film";
+
+fn wanted(
+    key: &'static str,
+    symbol: &'static str,
+    says: &'static str,
+    how: &'static str,
+) -> Wanted<'static> {
+    Wanted {
+        key,
+        about: None,
+        symbol,
+        says,
+        how,
+    }
+}
+
+/// Reference diameter from module and teeth, where given.
+pub(super) fn reference_diameter<R: Recorder>(
+    cx: &mut Context<'_, '_, R>,
+    part: &Part,
+    mesh: &GearMesh,
+) -> Option<Known<Length>> {
+    let (z1, _) = mesh.teeth.as_ref()?.value;
+    let module = wanted("normal module", "m_n", "normal module", "drawing");
+    let m = cx.maybe(part, module, mesh.normal_module.as_ref())?;
+    let z = mesh.teeth.clone()?.map(|_| number(f64::from(z1)));
+    let z = cx.r.given("z1", "teeth of the pinion", &z);
+    let beta = helix(cx, part, mesh);
+    cx.r.attempt(
+        "d1",
+        "reference diameter of the pinion",
+        &REFERENCE_DIAMETER,
+        (("m_n", m), ("z1", z), ("beta", beta)),
+        |(m, z, b)| diameter_of(m, z, b),
+    )
+    .ok()
+}
+
+fn helix<R: Recorder>(cx: &mut Context<'_, '_, R>, part: &Part, mesh: &GearMesh) -> Known<Angle> {
+    let key = wanted("helix", "beta", "helix angle", "drawing");
+    let usual = match mesh.kind {
+        Some(GearType::Spur | GearType::Bevel) | None => (0.0, "straight teeth unless stated"),
+        Some(_) => (12.0, "helical, usual angle"),
+    };
+    let usual = Usual {
+        value: degrees(usual.0),
+        lo: degrees(0.0),
+        hi: degrees(30.0),
+        why: usual.1,
+    };
+    match &mesh.helix {
+        Some(_) => cx.or_assume(part, key, mesh.helix.as_ref(), usual),
+        None => cx.r.assume("beta", "helix angle", usual.value, usual.why),
+    }
+}
+
+/// What the film needs of geometry and load.
+struct PitchPoint {
+    contact: ToothContact,
+    rho: Known<Length>,
+    rq: Known<Length>,
+    ra: Known<Length>,
+}
+
+/// Adds the film of a mesh: information always, a demand where a ratio is asked for.
+pub fn add<R: Recorder>(cx: &mut Context<'_, '_, R>, part: &Part, mesh: &GearMesh) {
+    let asked = asked(cx, part, mesh);
+    let bevel = matches!(mesh.kind, Some(GearType::Bevel | GearType::SpiralBevel));
+    let Some(point) = pitch_point(cx, part, mesh) else {
+        if asked.is_some() {
+            cx.undecided(
+                part,
+                End::HotFloor,
+                "film at the pitch point: geometry or load is missing",
+            );
+        }
+        return;
+    };
+    if bevel {
+        cx.r.note(|| "bevel: taken at the mid-face as a cylindrical pair".to_owned());
+    }
+    let at = tooth_temperature(cx, part);
+    for target in [0.7, 1.0] {
+        inform(cx, part, &point, target, at);
+    }
+    if let Some((target, whose, rule, source)) = asked {
+        let wanted = Length::from_base(point.ra.value.base() * target.base());
+        cx.push(Demand {
+            end: End::HotFloor,
+            limit: film_limit(FilmContact::Tooth(point.contact), wanted),
+            limit_step: None,
+            rule,
+            says: format!(
+                "film ratio >= {} at the pitch point, h over mean Ra",
+                target.base()
+            ),
+            source,
+            whose,
+            confidence: Confidence::Medium,
+            ..cx.blank(part, at)
+        });
+    }
+}
+
+/// The film ratio asked for: on the part, or by a house rule.
+fn asked<R: Recorder>(
+    cx: &Context<'_, '_, R>,
+    part: &Part,
+    mesh: &GearMesh,
+) -> Option<(Ratio, Whose, String, String)> {
+    if let Some(given) = &mesh.film_ratio {
+        let source = given
+            .origin
+            .note
+            .clone()
+            .unwrap_or_else(|| given.origin.whose.to_string());
+        return Some((
+            given.value,
+            given.origin.whose,
+            FILM_RULE.to_owned(),
+            source,
+        ));
+    }
+    let named = part.rule.as_ref()?;
+    cx.house
+        .rules
+        .iter()
+        .enumerate()
+        .find_map(|(i, rule)| match rule.limit {
+            HouseLimit::FilmRatio(ratio) if rule.name == named.value => Some((
+                number(ratio),
+                Whose::House,
+                format!("H-{} {}", i + 1, rule.name),
+                rule.source
+                    .clone()
+                    .unwrap_or_else(|| "house rule".to_owned()),
+            )),
+            _ => None,
+        })
+}
+
+fn tooth_temperature<R: Recorder>(cx: &mut Context<'_, '_, R>, part: &Part) -> HotAt {
+    let hot = cx.hot_at(part);
+    if part.part_rise.is_some() {
+        return hot;
+    }
+    let why = "teeth run hotter than the oil; 10 to 25 K is common practice";
+    let rise = cx.or_assume(
+        part,
+        wanted(
+            "part rise",
+            "Delta_t_tooth",
+            "bulk temperature of the teeth over the oil",
+            "estimate from losses",
+        ),
+        None,
+        usual_kelvins(15.0, 10.0, 25.0, why),
+    );
+    let hottest = hot.hottest.map(|t| {
+        cx.r.law(
+            "t_tooth",
+            "bulk temperature of the teeth",
+            &crate::relation::sump::PART,
+            (("t", t), ("Delta_t_tooth", rise)),
+            |(t, d)| crate::relation::sump::running(t, d),
+        )
+    });
+    HotAt {
+        at: hot.at.map(|at| at.raised(rise.value.base())),
+        hottest,
+        coldest: hot.coldest,
+    }
+}
+
+/// Viscosity that a film ratio would need of a mineral oil, both forms.
+fn inform<R: Recorder>(
+    cx: &mut Context<'_, '_, R>,
+    part: &Part,
+    point: &PitchPoint,
+    target: f64,
+    at: HotAt,
+) {
+    let Some(t) = at.hottest else { return };
+    let sigma = roughness::composite(point.rq.value, point.rq.value).unwrap_or(point.rq.value);
+    let iso = Length::from_base(point.ra.value.base() * target);
+    let agma = Length::from_base(sigma.base() * target);
+    let solve = |wanted: Length, central: bool| {
+        inverse::viscosity(wanted, None, |eta| {
+            let alpha = agma_925(Family::Mineral, eta).map_err(|_| {
+                crate::relation::outside::Outside::NoAnswer {
+                    what: "alpha",
+                    why: "no model",
+                }
+            })?;
+            let groups = tooth::groups(eta, alpha, point.contact)?;
+            Ok(if central {
+                line::central_dowson_toyoda(groups, point.contact.rho_n)
+            } else {
+                tooth::minimum(groups, point.contact.rho_n, number(1.0))
+            })
+        })
+        .ok()
+    };
+    let law = &inverse::VISCOSITY;
+    for (wanted, central, form) in [
+        (iso, false, "ISO/TS 6336-22 form, h over mean Ra"),
+        (agma, true, "AGMA 925 form, central film over composite Rq"),
+    ] {
+        let Some(eta) = solve(wanted, central) else {
+            continue;
+        };
+        let rho = REFERENCE_DENSITY;
+        let nu = KinematicViscosity::from_base(eta.base() / rho);
+        let step = cx.r.law(
+            "nu",
+            "viscosity a film ratio would need, mineral oil",
+            law,
+            (("rho_n", point.rho), ("Rq", point.rq), ("t", t)),
+            |_: (Length, Length, ThermodynamicTemperature)| nu,
+        );
+        cx.r.note(|| format!("lambda {target}, {form}; density 860 kg/m3 at running temperature"));
+        cx.inform(
+            part,
+            format!("viscosity that film ratio {target} would need ({form}, mineral oil)"),
+            Some((nu.amount(), step.step)),
+        );
+    }
+}
+
+/// Density of a mineral oil near running temperature, for figures that go with no particular oil.
+const REFERENCE_DENSITY: f64 = 860.0;
+
+fn pitch_point<R: Recorder>(
+    cx: &mut Context<'_, '_, R>,
+    part: &Part,
+    mesh: &GearMesh,
+) -> Option<PitchPoint> {
+    let u = ratio(cx, part, mesh)?;
+    let n = pinion_speed(cx, part, mesh)?;
+    let centre = wanted(
+        "centre distance",
+        "a",
+        "centre distance",
+        "drawing or a rule",
+    );
+    let a = match cx.maybe(part, centre, mesh.centre_distance.as_ref()) {
+        Some(a) => a,
+        None => distance(cx, part, mesh, u)?,
+    };
+    let face = wanted("face width", "b", "face width", "drawing or a rule");
+    let b = cx.maybe(part, face, mesh.face_width.as_ref())?;
+    let torque = torque(cx, part, mesh, n)?;
+    let beta = helix(cx, part, mesh);
+    let an = pressure_angle(cx, part, mesh);
+    let d1 =
+        cx.r.attempt(
+            "d1",
+            "pitch diameter of the pinion",
+            &PITCH_DIAMETER,
+            (("a", a), ("u", u)),
+            |(a, u)| pitch_diameter(a, u),
+        )
+        .ok()?;
+    let v = cx.r.law(
+        "v",
+        "pitch-line speed",
+        &PITCH_SPEED,
+        (("n1", n), ("d1", d1)),
+        |(n, d)| crate::quantity::convert::surface_speed(n, d),
+    );
+    let rho =
+        cx.r.attempt(
+            "rho_n",
+            "reduced radius at the pitch point",
+            &REDUCED_RADIUS,
+            (("a", a), ("u", u), ("alpha", an), ("beta", beta)),
+            |(a, u, an, b)| reduced_radius(a, u, an, b),
+        )
+        .ok()?;
+    let load = line_load(cx, part, mesh, (torque, d1, b), (an, beta))?;
+    let e = steel(cx);
+    let p =
+        cx.r.attempt(
+            "p_H",
+            "Hertzian pressure at the pitch point",
+            &PRESSURE,
+            (("w", load), ("rho_n", rho), ("E", e)),
+            |(w, r, e)| pressure(w, r, e),
+        )
+        .ok()?;
+    let (sine, _) = transverse_sine_cosine(an.value, beta.value);
+    let contact = ToothContact {
+        sum_speed: Velocity::from_base(2.0 * v.value.base() * sine.base()),
+        rho_n: rho.value,
+        pressure: p.value,
+        modulus: e.value,
+    };
+    let (ra, rq) = flanks(cx, part, mesh);
+    Some(PitchPoint {
+        contact,
+        rho,
+        rq,
+        ra,
+    })
+}
+
+fn distance<R: Recorder>(
+    cx: &mut Context<'_, '_, R>,
+    part: &Part,
+    mesh: &GearMesh,
+    u: Known<Ratio>,
+) -> Option<Known<Length>> {
+    let d1 = reference_diameter(cx, part, mesh)?;
+    Some(cx.r.law(
+        "a",
+        "centre distance",
+        &PITCH_DIAMETER,
+        (("d1", d1), ("u", u)),
+        |(d, u)| Length::from_base(d.base() * (u.base() + 1.0) / 2.0),
+    ))
+}
+
+fn torque<R: Recorder>(
+    cx: &mut Context<'_, '_, R>,
+    part: &Part,
+    mesh: &GearMesh,
+    n: Known<crate::quantity::AngularVelocity>,
+) -> Option<Known<Torque>> {
+    let key = wanted("pinion torque", "T1", "pinion torque", "power and speed");
+    if let Some(t) = cx.maybe(part, key, mesh.pinion_torque.as_ref()) {
+        return Some(t);
+    }
+    let key = wanted(
+        "power",
+        "P",
+        "power through the mesh",
+        "nameplate of the motor",
+    );
+    let p = cx.maybe(part, key, mesh.power.as_ref())?;
+    cx.r.attempt(
+        "T1",
+        "pinion torque",
+        &TANGENTIAL_FORCE,
+        (("P", p), ("n1", n)),
+        |(p, n)| torque_of(p, n),
+    )
+    .ok()
+}
+
+fn pressure_angle<R: Recorder>(
+    cx: &mut Context<'_, '_, R>,
+    part: &Part,
+    mesh: &GearMesh,
+) -> Known<Angle> {
+    let key = wanted(
+        "pressure angle",
+        "alpha",
+        "normal pressure angle",
+        "drawing",
+    );
+    match &mesh.pressure_angle {
+        Some(_) => cx.or_assume(
+            part,
+            key,
+            mesh.pressure_angle.as_ref(),
+            Usual {
+                value: degrees(20.0),
+                lo: degrees(14.5),
+                hi: degrees(25.0),
+                why: "standard rack",
+            },
+        ),
+        None => cx.r.assume(
+            "alpha",
+            "normal pressure angle",
+            degrees(20.0),
+            "standard rack",
+        ),
+    }
+}
+
+type Loaded = (Known<Torque>, Known<Length>, Known<Length>);
+
+/// Load per length of contact, on the shortest line, load factors included.
+fn line_load<R: Recorder>(
+    cx: &mut Context<'_, '_, R>,
+    part: &Part,
+    mesh: &GearMesh,
+    (torque, d1, b): Loaded,
+    (an, beta): (Known<Angle>, Known<Angle>),
+) -> Option<Known<LoadPerLength>> {
+    let force =
+        cx.r.attempt(
+            "F_t",
+            "tangential force",
+            &TANGENTIAL_FORCE,
+            (("T1", torque), ("d1", d1)),
+            |(t, d)| tangential_force(t, d),
+        )
+        .ok()?;
+    let factor = match &mesh.application_factor {
+        Some(given) => cx.r.given("K", "load factors together", given),
+        None => {
+            let key = wanted(
+                "application factor",
+                "K",
+                "load factors together",
+                "duty and drive",
+            );
+            let why = "moderate shock; 1 to 2 is common practice";
+            let usual = Usual {
+                value: number(1.25),
+                lo: number(1.0),
+                hi: number(2.0),
+                why,
+            };
+            cx.or_assume(part, key, None, usual)
+        }
+    };
+    Some(cx.r.law(
+        "w",
+        "load per length at the pitch point, one pair carrying",
+        &LINE_LOAD,
+        (
+            ("F_t", force),
+            ("b", b),
+            ("K", factor),
+            ("alpha", an),
+            ("beta", beta),
+        ),
+        |(f, b, k, an, beta): (Force, Length, Ratio, Angle, Angle)| {
+            let (_, cosine) = transverse_sine_cosine(an, beta);
+            LoadPerLength::from_base(k.base() * f.base() / (b.base() * cosine.base()))
+        },
+    ))
+}
+
+/// Reduced modulus of steel on steel.
+pub(super) fn steel<R: Recorder>(cx: &mut Context<'_, '_, R>) -> Known<Pressure> {
+    let steel = Material::steel();
+    let e = cx.r.assume(
+        "E1",
+        "Young's modulus of steel",
+        steel.youngs,
+        "steel on steel",
+    );
+    cx.r.law(
+        "E",
+        "reduced modulus",
+        &REDUCED_MODULUS,
+        (("E1", e),),
+        |_: (Pressure,)| reduced_modulus(steel, steel).unwrap_or(steel.youngs),
+    )
+}
+
+/// Roughness of the flanks: Ra stated or usual, Rq from it.
+fn flanks<R: Recorder>(
+    cx: &mut Context<'_, '_, R>,
+    part: &Part,
+    mesh: &GearMesh,
+) -> (Known<Length>, Known<Length>) {
+    let key = wanted(
+        "flank roughness",
+        "Ra",
+        "Ra of the flanks",
+        "drawing, or a replica of a flank",
+    );
+    let why = "ground flanks; 0.3 to 0.8 um is common practice";
+    let ra = cx.or_assume(
+        part,
+        key,
+        mesh.flank_roughness.as_ref(),
+        Usual {
+            value: um(0.5),
+            lo: um(0.3),
+            hi: um(0.8),
+            why,
+        },
+    );
+    let rq = cx.r.law(
+        "Rq",
+        "Rq of the flanks",
+        &RQ_FROM_RA,
+        (("Ra", ra),),
+        |(ra,)| rq_from_ra(ra),
+    );
+    (ra, rq)
+}

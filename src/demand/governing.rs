@@ -1,0 +1,154 @@
+//! Which demand governs an end where no oil is given yet: every limit is carried to 40 °C along
+//! a mineral oil of VI 95, and the strictest there governs.
+
+use super::film::FilmDemand;
+use super::{Demand, Demands, End, Limit, Standing};
+use crate::numeric::math::{exp, ln};
+use crate::numeric::root::bracketed;
+use crate::oil::density::Density;
+use crate::oil::pressure::PressureLaw;
+use crate::quantity::convert::{celsius, dynamic, kinematic, number};
+use crate::quantity::{KinematicViscosity, MassDensity, Measure, ThermodynamicTemperature};
+use crate::relation::Law;
+use crate::relation::oil::base_stock::BaseStock;
+use crate::relation::oil::pressure_viscosity::Family;
+use crate::relation::oil::viscosity_index;
+use crate::relation::oil::viscosity_temperature::{Line, Point};
+
+/// A limit carried to 40 °C along a mineral oil of VI 95.
+pub static AT_VI_95: Law = Law {
+    name: "limit-at-vi-95",
+    title: "Viscosity at 40 degC of the VI 95 mineral oil that just meets the limit",
+    formula: "nu_40 of the line of VI 95 through the limit",
+    range: "2 to 10000 mm2/s at 40 degC",
+    source: "ASTM D2270 and D341; VI 95 for comparison only",
+};
+
+/// The index of the oil limits are compared on.
+pub const COMPARED_VI: f64 = 95.0;
+
+/// The line of VI 95 with that viscosity at 40 °C.
+pub fn line_of_vi_95(nu40: KinematicViscosity) -> Option<Line> {
+    let nu100 = viscosity_index::nu100(nu40, number(COMPARED_VI)).ok()?;
+    Line::through(
+        Point::new(celsius(40.0), nu40),
+        Point::new(celsius(100.0), nu100),
+    )
+    .ok()
+}
+
+/// Viscosity at 40 °C of the VI 95 oil that has `nu` at `at`; `None` outside 8 to 20 000 mm²/s.
+pub fn carried_on_vi_95(
+    nu: KinematicViscosity,
+    at: ThermodynamicTemperature,
+) -> Option<KinematicViscosity> {
+    let excess = |ln40: f64| {
+        line_of_vi_95(KinematicViscosity::from_base(exp(ln40)))
+            .map_or(f64::NAN, |line| ln(line.nu_at(at).base() / nu.base()))
+    };
+    bracketed(ln(8e-6), ln(2e-2), excess)
+        .ok()
+        .map(|root| KinematicViscosity::from_base(exp(root.at)))
+}
+
+/// The limit of a demand as a viscosity at its temperature, for a mineral oil of VI 95.
+pub fn as_viscosity(demand: &Demand, t: f64) -> Option<KinematicViscosity> {
+    let at = ThermodynamicTemperature::from_base(t);
+    match &demand.limit {
+        Limit::Kinematic(nu) => Some(*nu),
+        Limit::Dynamic(eta) => Some(kinematic(*eta, mineral().at(at))),
+        Limit::Film(film) => film_on_mineral(film, at),
+        _ => None,
+    }
+}
+
+fn mineral() -> Density {
+    Density {
+        at15: MassDensity::from_base(880.0),
+        law: BaseStock::MineralI.density_law(),
+        assumed: true,
+    }
+}
+
+/// Viscosity a film needs of a VI 95 mineral oil: the pressure-viscosity coefficient follows it.
+pub fn film_on_mineral(
+    film: &FilmDemand,
+    at: ThermodynamicTemperature,
+) -> Option<KinematicViscosity> {
+    let density = mineral();
+    let excess = |ln40: f64| -> f64 {
+        let Some(line) = line_of_vi_95(KinematicViscosity::from_base(exp(ln40))) else {
+            return f64::NAN;
+        };
+        let Some(alpha) = PressureLaw::Iso(Family::Mineral).alpha(line, density, at) else {
+            return f64::NAN;
+        };
+        film.contact
+            .film(dynamic(line.nu_at(at), density.at(at)), alpha)
+            .map_or(f64::NAN, |h| ln(h.base() / film.wanted.base()))
+    };
+    let root = bracketed(ln(8e-6), ln(2e-2), excess).ok()?;
+    line_of_vi_95(KinematicViscosity::from_base(exp(root.at))).map(|line| line.nu_at(at))
+}
+
+impl Demands {
+    /// The number of the demand that governs an end, where no oil is given.
+    pub fn governing(&self, end: End) -> Option<usize> {
+        let judged = self
+            .list
+            .iter()
+            .enumerate()
+            .filter(|(_, d)| d.end == end && d.standing == Standing::Judges);
+        let mut best: Option<(usize, f64)> = None;
+        for (i, demand) in judged {
+            let Some(t) = self.governing_temperature(demand) else {
+                continue;
+            };
+            let Some(strictness) = strictness(demand, t) else {
+                continue;
+            };
+            if best.is_none_or(|(_, s)| strictness > s) {
+                best = Some((i, strictness));
+            }
+        }
+        best.map(|(i, _)| i)
+    }
+}
+
+/// The greater the stricter: a floor's viscosity at 40 °C, a ceiling's turned round.
+fn strictness(demand: &Demand, t: f64) -> Option<f64> {
+    match demand.end {
+        End::HotFloor | End::MakerGrade => {
+            let nu = as_viscosity(demand, t)?;
+            let at = ThermodynamicTemperature::from_base(t);
+            Some(carried_on_vi_95(nu, at).map_or(nu.base(), Measure::base))
+        }
+        End::RunningCeiling | End::StartCeiling => {
+            let nu = as_viscosity(demand, t)?;
+            let at = ThermodynamicTemperature::from_base(t);
+            Some(1.0 / carried_on_vi_95(nu, at).map_or(nu.base(), Measure::base))
+        }
+        End::PourMargin => match demand.limit {
+            Limit::Pour { least, .. } => Some(least),
+            _ => Some(0.0),
+        },
+        End::OilCeiling => match demand.limit {
+            Limit::Temperature(most) => Some(-most),
+            _ => Some(-f64::MAX),
+        },
+    }
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use crate::quantity::convert::{mm2_s, to_mm2_s};
+
+    #[test]
+    fn a_limit_is_carried_along_vi_95() {
+        let line = line_of_vi_95(mm2_s(220.0)).expect("an oil");
+        let at = celsius(78.0);
+        let back = carried_on_vi_95(line.nu_at(at), at).expect("inside");
+        assert!((to_mm2_s(back) - 220.0).abs() < 1e-6);
+    }
+}

@@ -1,0 +1,127 @@
+//! Every key of every file: one table from which the reader, `help keys` and the editor schemas
+//! are made, so that they cannot differ.
+
+pub mod form;
+pub mod list;
+pub mod machine;
+pub mod oil;
+pub mod part;
+pub mod samples;
+pub mod site;
+
+pub use form::{Form, Refers};
+
+use crate::problem::suggest;
+
+/// One key of a record.
+#[derive(Debug)]
+pub struct Key {
+    /// Its name, with spaces.
+    pub name: &'static str,
+    /// What it takes.
+    pub form: Form,
+    /// What stands in where it is not stated; `–` for nothing.
+    pub unstated: &'static str,
+    /// What it is, in one sentence.
+    pub says: &'static str,
+}
+
+/// A record: what may stand under one name.
+#[derive(Debug)]
+pub struct Record {
+    /// With its article: "a machine".
+    pub name: &'static str,
+    /// Its own keys.
+    pub keys: &'static [Key],
+    /// Records whose keys it has as well.
+    pub also: &'static [&'static Record],
+    /// Keys that must be there.
+    pub must: &'static [&'static str],
+}
+
+impl Record {
+    /// Every key, those of the records it takes in included.
+    pub fn all(&'static self) -> impl Iterator<Item = &'static Key> {
+        let own = self.keys.iter();
+        own.chain(self.also.iter().flat_map(|r| r.keys))
+    }
+
+    /// The key of that name, however its words are parted.
+    pub fn key(&'static self, written: &str) -> Option<&'static Key> {
+        let name = spelt(written);
+        self.all().find(|k| k.name == name)
+    }
+
+    /// The key certainly meant by a name that is none.
+    pub fn meant(&'static self, written: &str) -> Option<&'static str> {
+        suggest::certain(&spelt(written), self.all().map(|k| k.name))
+    }
+}
+
+/// A key as the table spells it: underscores are spaces.
+pub fn spelt(written: &str) -> String {
+    written.trim().replace('_', " ")
+}
+
+/// Whether a key is kept and ignored.
+pub fn is_private(written: &str) -> bool {
+    written.trim_start().starts_with("x-")
+}
+
+/// A shorter way to write a row of a table.
+pub(crate) const fn key(
+    name: &'static str,
+    form: Form,
+    unstated: &'static str,
+    says: &'static str,
+) -> Key {
+    Key {
+        name,
+        form,
+        unstated,
+        says,
+    }
+}
+
+/// Every record of every file, in the order `help keys` prints them.
+pub fn records() -> Vec<&'static Record> {
+    let mut all = vec![
+        &site::SITE,
+        &site::HOUSE,
+        &site::HOUSE_RULE,
+        &machine::AREA,
+        &machine::MACHINE,
+        &machine::LOSSES,
+        &machine::REGREASE,
+        &part::PART,
+        &part::GEAR,
+        &part::DRIVE,
+    ];
+    all.extend(part::KINDS.iter().map(|k| k.record));
+    all.extend([
+        &part::BEARING_SIZES,
+        &site::ACCEPT,
+        &site::EXPECT,
+        &oil::OIL,
+        &samples::SAMPLES,
+        &samples::COLUMNS,
+        &samples::EVENTS,
+        &samples::EVENT,
+    ]);
+    all
+}
+
+/// The records, other than one, that have a key of that name.
+pub fn owners(name: &str, except: &Record) -> Vec<&'static Record> {
+    let mut found: Vec<&'static Record> = Vec::new();
+    for record in records() {
+        let known = found.iter().any(|r| r.name == record.name) || record.name == except.name;
+        if !known && record.keys.iter().any(|k| k.name == name) {
+            found.push(record);
+        }
+    }
+    found
+}
+
+#[cfg(test)]
+mod tests;

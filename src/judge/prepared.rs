@@ -1,0 +1,311 @@
+//! Points and oils made ready once, so that a pair costs a few exponentials.
+
+use super::band::Band;
+use super::margin::{Jaw, Ready};
+use super::weigh::At;
+use crate::demand::film::FilmDemand;
+use crate::demand::{AtAmbient, Demand, Demands, End, For, Limit, Standing};
+use crate::model::Oil;
+use crate::model::oil::OilKind;
+use crate::model::rulebook::{Confidence, Rulebook};
+use crate::oil::{Curves, curves};
+use crate::quantity::{KinematicViscosity, Measure, ThermodynamicTemperature};
+use crate::relation::oil::viscosity_temperature::Misfit;
+
+/// A limit ready to be compared.
+#[derive(Clone, Debug)]
+pub enum ReadyLimit {
+    /// A kinematic viscosity at a temperature.
+    Jaw(Jaw),
+    /// A dynamic viscosity, Pa·s.
+    Dynamic(f64),
+    /// A film, solved for each oil.
+    Film(Box<FilmDemand>),
+    /// Kelvins over the pour point.
+    Pour {
+        /// Least.
+        least: f64,
+        /// Preferred.
+        preferred: f64,
+    },
+    /// The oil's own ceiling.
+    OilsOwn,
+    /// A temperature not to be passed, K.
+    AtMost(f64),
+    /// The low end of a grease's use range.
+    UseLow,
+}
+
+/// A demand made ready.
+#[derive(Clone, Debug)]
+pub struct ReadyDemand {
+    /// Its number in the point's list.
+    pub number: u16,
+    /// Which end.
+    pub end: End,
+    /// The limit.
+    pub limit: ReadyLimit,
+    /// Temperature as a function of ambient.
+    pub at: AtAmbient,
+    /// Temperature at the governing ambient, K.
+    pub t: f64,
+    /// Whether an unmet one only makes the verdict open.
+    pub low_confidence: bool,
+    /// Whether it judges at all.
+    pub judges: bool,
+    /// Whether an unmet one that does not judge becomes a condition.
+    pub asks_when_unmet: bool,
+    only: For,
+}
+
+impl ReadyDemand {
+    /// Whether it applies to an oil.
+    pub fn applies_to(&self, oil: &PreparedOil) -> bool {
+        match &self.only {
+            For::All => true,
+            For::With(tag) => oil.declares(tag),
+            For::Without(tag) => !oil.declares(tag),
+        }
+    }
+}
+
+/// One setting of a point's unknowns.
+#[derive(Clone, Debug)]
+pub struct Setting {
+    /// The demands that can be worked out.
+    pub demands: Vec<ReadyDemand>,
+    /// Whether one cannot.
+    pub undecided: bool,
+    /// Oil temperature at the coldest start, K.
+    pub start: Option<f64>,
+    /// Whether anything limits viscosity at start.
+    pub has_start_ceiling: bool,
+}
+
+/// A point made ready.
+#[derive(Clone, Debug)]
+pub struct PreparedPoint {
+    /// Settings of its unknowns; one where nothing is unknown.
+    pub settings: Vec<Setting>,
+    /// Whether it shears polymers as gears and rolling bearings do.
+    pub severe: bool,
+    /// Reserve asked on this site, VG steps.
+    pub reserve: f64,
+}
+
+impl PreparedPoint {
+    /// From the demands in each setting.
+    pub fn new(settings: &[Demands], severe: bool, reserve: f64) -> Self {
+        Self {
+            settings: settings.iter().map(setting).collect(),
+            severe,
+            reserve,
+        }
+    }
+}
+
+fn setting(demands: &Demands) -> Setting {
+    let ready: Vec<ReadyDemand> = demands
+        .list
+        .iter()
+        .enumerate()
+        .filter_map(|(n, d)| ready(n, d, demands))
+        .collect();
+    Setting {
+        has_start_ceiling: ready.iter().any(|d| d.end == End::StartCeiling && d.judges),
+        demands: ready,
+        undecided: !demands.undecided.is_empty(),
+        start: demands.thermal.start_coldest.map(|k| k.value.base()),
+    }
+}
+
+fn ready(number: usize, demand: &Demand, demands: &Demands) -> Option<ReadyDemand> {
+    let t = demands.governing_temperature(demand)?;
+    let at = ThermodynamicTemperature::from_base(t);
+    let limit = match &demand.limit {
+        Limit::Kinematic(nu) => ReadyLimit::Jaw(Jaw::new(*nu, at)),
+        Limit::Dynamic(eta) => ReadyLimit::Dynamic(eta.base()),
+        Limit::Film(film) => ReadyLimit::Film(film.clone()),
+        Limit::Pour { least, preferred } => ReadyLimit::Pour {
+            least: *least,
+            preferred: *preferred,
+        },
+        Limit::OilsOwn => ReadyLimit::OilsOwn,
+        Limit::Temperature(most) => ReadyLimit::AtMost(*most),
+        Limit::UseLow => ReadyLimit::UseLow,
+    };
+    Some(ReadyDemand {
+        number: u16::try_from(number).unwrap_or(u16::MAX),
+        end: demand.end,
+        limit,
+        at: demand.at,
+        t,
+        low_confidence: demand.confidence == Confidence::Low,
+        judges: demand.standing == Standing::Judges,
+        asks_when_unmet: !matches!(demand.standing, Standing::Judges | Standing::Information),
+        only: demand.only.clone(),
+    })
+}
+
+/// An oil made ready.
+#[derive(Clone, Debug)]
+pub struct PreparedOil {
+    /// Its curves and data.
+    pub curves: Curves,
+    /// Thin end of the new oil.
+    pub thin: Ready,
+    /// Thick end of the new oil.
+    pub thick: Ready,
+    /// Lowest temperature anything was stated at, K.
+    pub lowest: f64,
+    /// Lower end of the polymer's window where the oil is known by two finished points, K.
+    pub window_end: Option<f64>,
+    /// Pour point, K: both ends of its base's range where it is not stated.
+    pub pour: Option<(f64, f64)>,
+    /// Whether the pour point is stated.
+    pub pour_stated: bool,
+    /// Continuous limit (tight above) and the one not to be passed, K.
+    pub ceiling: Option<(Option<f64>, f64)>,
+    /// Use range of a grease, K.
+    pub use_range: Option<(f64, f64)>,
+    /// Whether it is a grease.
+    pub grease: bool,
+    tags: Vec<String>,
+    cloud: Option<f64>,
+    waxy: bool,
+    coldest_measured: Option<f64>,
+    mild: Vec<Option<Ready>>,
+    severe: Vec<Option<Ready>>,
+}
+
+impl PreparedOil {
+    /// From an oil. `worn`: whether floors are judged after permanent shear.
+    ///
+    /// # Errors
+    /// Points that make no curve.
+    pub fn new(oil: &Oil, rules: &Rulebook, worn: bool) -> Result<Self, Misfit> {
+        let curves = curves(oil, rules)?;
+        let thin = Ready::of(curves.thin.as_ref().unwrap_or(&curves.new));
+        let thick = Ready::of(curves.thick.as_ref().unwrap_or(&curves.new));
+        let stock = rules.base_stock(curves.base);
+        let measured = [&oil.cold_viscosity, &oil.ccs, &oil.mrv]
+            .into_iter()
+            .flatten()
+            .map(|p| p.value.at.base())
+            .chain(oil.t150000.iter().map(|t| t.value.base()))
+            .min_by(f64::total_cmp);
+        let stated_pour = oil.pour_point.as_ref().map(|p| p.value.figure().base());
+        let pour = stated_pour
+            .map(|p| (p, p))
+            .or_else(|| stock.map(|s| (s.pour.lo.base(), s.pour.hi.base())));
+        let ceiling = match &oil.oil_limit {
+            Some(limit) => Some((None, limit.value.base())),
+            None => stock.map(|s| (Some(s.continuous.base()), s.peak.base())),
+        };
+        Ok(Self {
+            lowest: curves.lowest.base().min(measured.unwrap_or(f64::INFINITY)),
+            window_end: curves.window_end.map(Measure::base),
+            pour,
+            pour_stated: stated_pour.is_some(),
+            ceiling,
+            use_range: rules.use_range(oil).map(|(lo, hi)| (lo.base(), hi.base())),
+            grease: oil.kind == OilKind::Grease,
+            tags: tags(oil),
+            cloud: oil.cloud_point.as_ref().map(|c| c.value.figure().base()),
+            waxy: stock.is_some_and(|s| s.wax_bearing),
+            coldest_measured: measured,
+            mild: variants(&curves, false, worn),
+            severe: variants(&curves, true, worn),
+            thin,
+            thick,
+            curves,
+        })
+    }
+
+    /// The worn curves to judge floors on, one for each end of an unknown loss.
+    pub fn loss_variants(&self, severe: bool) -> &[Option<Ready>] {
+        if severe { &self.severe } else { &self.mild }
+    }
+
+    /// Reserve asked, VG steps: half where the tolerance is judged already or points are measured.
+    pub fn reserve(&self, site: f64) -> f64 {
+        if self.curves.half_reserve {
+            0.5 * site
+        } else {
+            site
+        }
+    }
+
+    /// Whether the oil declares an additive or a class.
+    pub fn declares(&self, tag: &str) -> bool {
+        self.tags.iter().any(|t| t.eq_ignore_ascii_case(tag))
+    }
+
+    /// Start so close to the pour point, or below the cloud point, that a waxy oil's line says
+    /// nothing and nobody measured it there.
+    pub fn wax_doubt(&self, start: f64) -> bool {
+        if !self.waxy || self.coldest_measured.is_some_and(|m| m <= start + 1e-9) {
+            return false;
+        }
+        let near_pour = self.pour.is_some_and(|(_, hi)| start < hi + 10.0 - 1e-9);
+        near_pour || self.cloud.is_some_and(|c| start < c - 1e-9)
+    }
+}
+
+fn tags(oil: &Oil) -> Vec<String> {
+    use crate::model::word::Word;
+    let additives = oil
+        .facts
+        .additives
+        .iter()
+        .flatten()
+        .map(|a| a.word().to_owned());
+    oil.facts.classes.iter().cloned().chain(additives).collect()
+}
+
+fn variants(curves: &Curves, severe: bool, worn: bool) -> Vec<Option<Ready>> {
+    if !worn {
+        return vec![None];
+    }
+    match curves.loss_range(severe) {
+        Some((least, most)) => [least, most]
+            .into_iter()
+            .map(|loss| curves.worn_after(loss).map(|c| Ready::of(&c)))
+            .collect(),
+        None => vec![curves.worn_after(0.0).map(|c| Ready::of(&c))],
+    }
+}
+
+/// Margin, band and viscosity at a film demand: the limit is solved for this oil. `None` where
+/// its pressure-viscosity coefficient is not known.
+pub fn film_margin(
+    demand: &ReadyDemand,
+    film: &FilmDemand,
+    oil: &PreparedOil,
+    worn: Option<&Ready>,
+) -> Option<(f64, Band, At)> {
+    let margin_at = |t: f64, curve: &Ready| -> Option<(f64, f64)> {
+        let at = ThermodynamicTemperature::from_base(t);
+        let line = curve.at(t);
+        let need = film.viscosity_needed(line.line, &oil.curves, at)?;
+        Some((line.above(&Jaw::new(need, at)).0, curve.nu(t)))
+    };
+    let mut best: Option<(f64, Band, At)> = None;
+    for curve in std::iter::once(&oil.thin).chain(worn) {
+        let (value, nu) = margin_at(demand.t, curve)?;
+        // where the oil's own film reaches the wanted one, no viscosity need be solved for
+        let band = Band::by_root(true, |ambient| {
+            let t = demand.at.at(ambient);
+            let at = ThermodynamicTemperature::from_base(t);
+            let nu = KinematicViscosity::from_base(curve.nu(t));
+            film.film_of(curve.at(t).line, &oil.curves, nu, at)
+                .map_or(-1.0, |h| h.base() - film.wanted.base())
+        });
+        best = Some(match best {
+            Some((v, b, at)) if v <= value => (v, b.and(band), at),
+            Some((_, b, _)) => (value, b.and(band), At { nu, t: demand.t }),
+            None => (value, band, At { nu, t: demand.t }),
+        });
+    }
+    best
+}

@@ -1,0 +1,3 @@
+//! Losses and the temperature they lead to.
+
+pub mod balance;

@@ -1,0 +1,241 @@
+//! The judgements of a weighing.
+
+use super::csv::{Cell, Table};
+use super::json::{self, Head, document};
+use crate::demand::Demand;
+use crate::judge::explain::Explanation;
+use crate::judge::weigh::{At, Margin};
+use crate::quantity::Kind;
+use crate::quantity::show::{Units, unit_of};
+use crate::trace::{Derivation, StepId};
+use crate::weighing::{Barred, Candidate, Condition, Scales, Weighed};
+use serde_json::{Map, Value, json};
+
+/// A JSON document of all judgements.
+pub fn document_of(scales: &Scales<'_>, weighed: &[Weighed<'_>], head: &Head) -> String {
+    let mut top = document("weigh", head);
+    let mut list = Vec::new();
+    for w in weighed {
+        for candidate in &w.candidates {
+            list.push(judgement(scales, w, candidate));
+        }
+        for barred in &w.barred {
+            list.push(barred_row(scales, w, barred));
+        }
+    }
+    top.insert("judgements".into(), Value::Array(list));
+    json::text(top)
+}
+
+fn place(w: &Weighed<'_>, oil: &str) -> Map<String, Value> {
+    let mut m = Map::new();
+    m.insert("machine".into(), json!(w.point.machine));
+    m.insert("point".into(), json!(w.point.point));
+    m.insert("oil".into(), json!(oil));
+    m
+}
+
+/// One judgement with its steps.
+pub fn judgement(scales: &Scales<'_>, w: &Weighed<'_>, c: &Candidate) -> Value {
+    let units = scales.units;
+    let j = &c.judgement;
+    let told = scales.explain(w, c);
+    let mut m = place(w, &scales.site.oils[c.oil].id);
+    m.insert("in_use".into(), json!(c.in_use));
+    m.insert("verdict".into(), json!(j.verdict.word()));
+    m.insert(
+        "margins".into(),
+        json!({
+            "hot": steps(j.hot, &told),
+            "cold": steps(j.cold, &told),
+            "pour": kelvins(j.pour, &told),
+            "oil": kelvins(j.oil, &told),
+        }),
+    );
+    if j.maker.is_some() {
+        m.insert("maker_grade".into(), steps(j.maker, &told));
+    }
+    m.insert(
+        "reserve".into(),
+        json!({ "value": j.reserve, "unit": "VG step" }),
+    );
+    m.insert("band".into(), band(j.band, units));
+    m.insert(
+        "nu".into(),
+        json!({ "hot": nu(j.at_hot, units), "start": nu(j.at_start, units) }),
+    );
+    m.insert(
+        "temperatures".into(),
+        json!({ "hot": temperature(j.at_hot, units), "start": temperature(j.at_start, units) }),
+    );
+    m.insert("governing".into(), governing(w, j.hot, j.cold));
+    m.insert("conditions".into(), conditions(&c.conditions));
+    m.insert("notes".into(), conditions(&c.notes));
+    m.insert("because".into(), json!(c.because));
+    let mut results: Vec<StepId> = told.margins.iter().map(|e| e.step).collect();
+    results.dedup();
+    m.insert(
+        "steps".into(),
+        Value::Array(json::steps(&told.trace, &results, units)),
+    );
+    Value::Object(m)
+}
+
+/// A barred oil.
+pub fn barred_row(scales: &Scales<'_>, w: &Weighed<'_>, b: &Barred) -> Value {
+    let mut m = place(w, &scales.site.oils[b.oil].id);
+    m.insert("in_use".into(), json!(b.in_use));
+    m.insert("verdict".into(), json!("barred"));
+    m.insert("barred_by".into(), conditions(&b.by));
+    m.insert("conditions".into(), json!([]));
+    m.insert(
+        "because".into(),
+        json!(b.by.iter().map(|c| c.says.clone()).collect::<Vec<_>>()),
+    );
+    Value::Object(m)
+}
+
+fn conditions(list: &[Condition]) -> Value {
+    Value::Array(
+        list.iter()
+            .map(|c| json!({ "rule": c.rule, "says": c.says, "act": c.act, "source": c.source }))
+            .collect(),
+    )
+}
+
+fn step_of(m: Margin, told: &Explanation) -> Option<StepId> {
+    told.margins
+        .iter()
+        .find(|e| e.demand == m.demand)
+        .map(|e| e.step)
+}
+
+fn steps(m: Option<Margin>, told: &Explanation) -> Value {
+    m.map_or(Value::Null, |m| {
+        json::steps_margin(m.value, step_of(m, told))
+    })
+}
+
+fn kelvins(m: Option<Margin>, told: &Explanation) -> Value {
+    m.map_or(Value::Null, |m| {
+        json::kelvins_margin(m.value, step_of(m, told))
+    })
+}
+
+/// The band: null where it is nowhere, a null end where nothing limits it.
+pub fn band(band: crate::judge::Band, units: Units) -> Value {
+    if band.is_nowhere() {
+        return Value::Null;
+    }
+    let end = |t: Option<f64>| t.map_or(Value::Null, |t| json::temperature(t, units));
+    json!({ "low": end(band.low_end()), "high": end(band.high_end()) })
+}
+
+fn nu(at: Option<At>, units: Units) -> Value {
+    at.map_or(Value::Null, |a| json::viscosity(a.nu, units))
+}
+
+fn temperature(at: Option<At>, units: Units) -> Value {
+    at.map_or(Value::Null, |a| json::temperature(a.t, units))
+}
+
+/// The demand with the smallest margin of viscosity.
+fn governing(w: &Weighed<'_>, hot: Option<Margin>, cold: Option<Margin>) -> Value {
+    let smaller = match (hot, cold) {
+        (Some(h), Some(c)) if c.value < h.value => Some((c, "cold")),
+        (Some(h), _) => Some((h, "hot")),
+        (None, Some(c)) => Some((c, "cold")),
+        (None, None) => None,
+    };
+    let Some((m, end)) = smaller else {
+        return Value::Null;
+    };
+    let demand: &Demand = &w.demands.settings[usize::from(m.setting)].list[usize::from(m.demand)];
+    json!({ "end": end, "rule": demand.rule, "part": demand.part })
+}
+
+/// The same as a table.
+pub fn table_of(scales: &Scales<'_>, weighed: &[Weighed<'_>]) -> Table {
+    let units = scales.units;
+    let nu_unit = unit_of(Kind::KinematicViscosity, units)
+        .name
+        .replace('/', "_");
+    let t_unit = unit_of(Kind::Temperature, units).name;
+    let headings = [
+        "machine".to_owned(),
+        "point".to_owned(),
+        "oil".to_owned(),
+        "in_use".to_owned(),
+        "verdict".to_owned(),
+        "hot_vg_step".to_owned(),
+        "cold_vg_step".to_owned(),
+        "pour_k".to_owned(),
+        "oil_k".to_owned(),
+        format!("nu_hot_{nu_unit}"),
+        format!("t_hot_{t_unit}"),
+        format!("nu_start_{nu_unit}"),
+        format!("t_start_{t_unit}"),
+        format!("band_low_{t_unit}"),
+        format!("band_high_{t_unit}"),
+        "conditions".to_owned(),
+        "because".to_owned(),
+    ];
+    let mut table = Table {
+        headings: headings.to_vec(),
+        rows: Vec::new(),
+    };
+    for w in weighed {
+        for c in &w.candidates {
+            table.rows.push(row(scales, w, c, units));
+        }
+        for b in &w.barred {
+            let mut row = first_cells(w, &scales.site.oils[b.oil].id, b.in_use, "barred");
+            row.extend((0..10).map(|_| Cell::Empty));
+            row.push(Cell::Number(0.0));
+            let by: Vec<String> =
+                b.by.iter()
+                    .map(|c| format!("{}: {}", c.rule, c.says))
+                    .collect();
+            row.push(Cell::Text(by.join("; ")));
+            table.rows.push(row);
+        }
+    }
+    table
+}
+
+fn first_cells(w: &Weighed<'_>, oil: &str, in_use: bool, verdict: &str) -> Vec<Cell> {
+    vec![
+        Cell::from(w.point.machine.as_str()),
+        Cell::maybe(w.point.point.as_deref()),
+        Cell::from(oil),
+        Cell::from(if in_use { "yes" } else { "no" }),
+        Cell::from(verdict),
+    ]
+}
+
+fn row(scales: &Scales<'_>, w: &Weighed<'_>, c: &Candidate, units: Units) -> Vec<Cell> {
+    let j = &c.judgement;
+    let mut row = first_cells(w, &scales.site.oils[c.oil].id, c.in_use, j.verdict.word());
+    let value = |m: Option<Margin>| Cell::number(m.map(|m| m.value));
+    let nu = unit_of(Kind::KinematicViscosity, units);
+    let t = unit_of(Kind::Temperature, units);
+    row.extend([value(j.hot), value(j.cold), value(j.pour), value(j.oil)]);
+    for at in [j.at_hot, j.at_start] {
+        row.push(Cell::number(at.map(|a| nu.from_base(a.nu))));
+        row.push(Cell::number(at.map(|a| t.from_base(a.t))));
+    }
+    let nowhere = j.band.is_nowhere();
+    for end in [j.band.low_end(), j.band.high_end()] {
+        row.push(Cell::number(
+            end.filter(|_| !nowhere).map(|e| t.from_base(e)),
+        ));
+    }
+    row.push(Cell::Number(c.conditions.len() as f64));
+    row.push(Cell::Text(c.because.join("; ")));
+    row
+}
+
+/// The calculation of a judgement, for other documents.
+pub fn trace_of(scales: &Scales<'_>, w: &Weighed<'_>, c: &Candidate) -> Derivation {
+    scales.explain(w, c).trace
+}
