@@ -173,11 +173,16 @@ impl Session<'_> {
                 Err(_) => return Err(self.told(&sources, &problems)),
             }
         }
-        let overlays: Vec<_> =
-            settings.iter().flat_map(|(targets, read)| read.over(targets)).collect();
+        let overlays: Vec<_> = settings
+            .iter()
+            .flat_map(|(targets, read)| read.over(targets))
+            .collect();
         let calculated: Vec<&str> = CALCULATED.iter().map(|rule| rule.0).collect();
-        let with =
-            With { rules: &rules, bearings: DimensionTable::built_in(), calculated: &calculated };
+        let with = With {
+            rules: &rules,
+            bearings: DimensionTable::built_in(),
+            calculated: &calculated,
+        };
         let site = reader::load(&sources, &trees, &with, &overlays, &mut problems);
         drop(overlays);
         if let Ok(site) = &site {

@@ -47,7 +47,11 @@ pub fn oils(count: usize, seed: u64) -> String {
             (true, _) => "PAO, no polymer",
             _ => "mineral I",
         };
-        let pour = if pao || thick { -42.0 } else { chance.between(-24.0, -12.0) };
+        let pour = if pao || thick {
+            -42.0
+        } else {
+            chance.between(-24.0, -12.0)
+        };
         let _ = write!(
             text,
             "OIL-{i:03}:\n  kind: gear\n  base: {base}\n  classes: [CKC, HM, CKB]\n  additives: [EP]\n  sulphur: inactive\n  copper strip: 1a\n  viscosity: [{nu40:.2} mm2/s at 40 degC, {nu100:.3} mm2/s at 100 degC]\n  pour point: {pour:.0} degC\n  density: 880 kg/m3 at 15 degC\n  price: {:.2} per L\n",

@@ -4,12 +4,12 @@
 
 mod generate;
 
-use filmwright::demand::{PointDemands, is_severe, point_demands};
-use filmwright::judge::{PreparedOil, PreparedPoint, Verdict, weigh};
 use filmwright::assets;
+use filmwright::demand::{PointDemands, is_severe, point_demands};
 use filmwright::input::file::FileKind;
 use filmwright::input::load::{self, With};
 use filmwright::input::rules::rulebook;
+use filmwright::judge::{PreparedOil, PreparedPoint, Verdict, weigh};
 use filmwright::model::Site;
 use filmwright::model::rulebook::Rulebook;
 use filmwright::numeric::math::{exp, ln};
@@ -25,13 +25,32 @@ fn read(site: &str, oils: &str, rules: &Rulebook) -> Site {
     let mut set = SourceSet::new();
     let mut problems = Problems::new();
     let trees = [
-        load::take(&mut set, FileKind::Site, "site.yaml", site.as_bytes(), &mut problems),
-        load::take(&mut set, FileKind::Oils, "oils.yaml", oils.as_bytes(), &mut problems),
+        load::take(
+            &mut set,
+            FileKind::Site,
+            "site.yaml",
+            site.as_bytes(),
+            &mut problems,
+        ),
+        load::take(
+            &mut set,
+            FileKind::Oils,
+            "oils.yaml",
+            oils.as_bytes(),
+            &mut problems,
+        ),
     ];
-    let with = With { rules, bearings: DimensionTable::built_in() };
+    let with = With {
+        rules,
+        bearings: DimensionTable::built_in(),
+        calculated: &[],
+    };
     load::load(&set, &trees, &with, &[], &mut problems).unwrap_or_else(|_| {
         let look = filmwright::problem::render::Look::default();
-        panic!("{}", filmwright::problem::render::all(&set, &problems, look))
+        panic!(
+            "{}",
+            filmwright::problem::render::all(&set, &problems, look)
+        )
     })
 }
 
@@ -84,16 +103,26 @@ fn d341() {
         black_box(sum);
     }) / f64::from(n);
     let floor = floor_of_one(2, 1);
-    println!("D341 evaluation            {:8.1} ns   {:5.2} x the bare two exp and one ln", took * 1e9, took / floor);
+    println!(
+        "D341 evaluation            {:8.1} ns   {:5.2} x the bare two exp and one ln",
+        took * 1e9,
+        took / floor
+    );
 }
 
 fn pairs(name: &str, points: usize, oils: usize, films: bool, rules: &Rulebook) {
-    let (site_text, oil_text) = (generate::site(points, oils, 7, films), generate::oils(oils, 11));
+    let (site_text, oil_text) = (
+        generate::site(points, oils, 7, films),
+        generate::oils(oils, 11),
+    );
     let start = now();
     let site = read(&site_text, &oil_text, rules);
     let reading = start.elapsed().as_secs_f64();
-    let ready: Vec<PreparedOil> =
-        site.oils.iter().map(|o| PreparedOil::new(o, rules, true).expect("a curve")).collect();
+    let ready: Vec<PreparedOil> = site
+        .oils
+        .iter()
+        .map(|o| PreparedOil::new(o, rules, true).expect("a curve"))
+        .collect();
     let start = now();
     let prepared: Vec<PreparedPoint> = site
         .points

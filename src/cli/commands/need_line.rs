@@ -29,9 +29,18 @@ fn run(session: &mut Session<'_>, args: &Need) -> Result<Exit, Exit> {
     let mut sources = SourceSet::new();
     let mut problems = Problems::new();
     let name = crate::source::COMMAND_LINE;
-    let tree = reader::take(&mut sources, FileKind::Site, name, text.as_bytes(), &mut problems);
-    let with =
-        With { rules: &rules, bearings: DimensionTable::built_in(), calculated: &[] };
+    let tree = reader::take(
+        &mut sources,
+        FileKind::Site,
+        name,
+        text.as_bytes(),
+        &mut problems,
+    );
+    let with = With {
+        rules: &rules,
+        bearings: DimensionTable::built_in(),
+        calculated: &[],
+    };
     let site = reader::load(&sources, &[tree], &with, &[], &mut problems);
     let Ok(site) = site else {
         return Err(session.told(&sources, &problems));
