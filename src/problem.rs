@@ -220,6 +220,9 @@ impl Problems {
 
     /// Drops the warnings of these codes about a machine that allows them; never an error.
     pub fn allow(&mut self, address: &str, codes: &[String]) {
+        if codes.is_empty() {
+            return;
+        }
         self.list.retain(|p| {
             let about = p.within.as_deref().is_some_and(|w| {
                 w.strip_prefix(address)

@@ -104,7 +104,7 @@ impl SourceFile {
     }
 
     /// The nearest place at or before a byte where a character begins.
-    fn boundary(&self, byte: u32) -> usize {
+    pub fn boundary(&self, byte: u32) -> usize {
         let mut at = (byte as usize).min(self.text.len());
         while !self.text.is_char_boundary(at) {
             at -= 1;

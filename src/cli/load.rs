@@ -4,6 +4,7 @@ use super::exit::Exit;
 use super::host::Host;
 use super::session::Session;
 use crate::assets::{self, Files, Unread};
+use crate::demand::rules::CALCULATED;
 use crate::input::file::FileKind;
 use crate::input::load::{self as reader, Tree, With};
 use crate::input::overlay;
@@ -176,9 +177,11 @@ impl Session<'_> {
             .iter()
             .flat_map(|(targets, read)| read.over(targets))
             .collect();
+        let calculated: Vec<&str> = CALCULATED.iter().map(|rule| rule.0).collect();
         let with = With {
             rules: &rules,
             bearings: DimensionTable::built_in(),
+            calculated: &calculated,
         };
         let site = reader::load(&sources, &trees, &with, &overlays, &mut problems);
         drop(overlays);

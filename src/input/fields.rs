@@ -179,7 +179,9 @@ impl<'t> Fields<'t> {
     /// Reports the keys that must be there and are not.
     pub fn must(&self, reader: &mut Reader<'_>, node: &Node) {
         for name in self.record.must {
-            let Some(key) = self.record.key(name).filter(|_| self.lacks(name)) else {
+            // What a file is, is asked when it is taken in.
+            let asked = *name != "file" && self.lacks(name);
+            let Some(key) = self.record.key(name).filter(|_| asked) else {
                 continue;
             };
             let message = format!("no `{name}` in {}", self.record.name);
@@ -189,7 +191,7 @@ impl<'t> Fields<'t> {
                 first_line(reader, node),
                 &self.within,
             );
-            problem = problem.why(key.says);
+            problem = problem.why("nothing can stand in for it");
             problem.write.push(added(reader, node, key));
             reader.report(problem);
         }
@@ -299,6 +301,9 @@ pub fn example(key: &Key) -> String {
         Form::ColdPoints => "[6500 mPa.s at -25 degC]".into(),
         Form::Bearing => "22220".into(),
         Form::Parts => "[{ rolling bearing: 22220 }]".into(),
+        Form::Named(record) if record.name == "a machine" => {
+            "{ GB-1: { parts: [{ rolling bearing: 22220, speed: 1480 r/min }] } }".into()
+        }
         Form::Named(_) | Form::Fills | Form::Record(_) | Form::Table => "{ }".into(),
         Form::List(_) => "[ ]".into(),
         _ => "NAME".into(),

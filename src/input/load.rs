@@ -95,6 +95,8 @@ pub struct With<'w> {
     pub rules: &'w Rulebook,
     /// Dimensions of rolling bearings.
     pub bearings: &'w DimensionTable,
+    /// Ids of the rules by which limits are worked out, which a house rule may replace.
+    pub calculated: &'w [&'w str],
 }
 
 /// Reads the site and its oils; every problem of every file is reported before it fails.
@@ -122,6 +124,7 @@ pub fn load<'t>(
     let known = Known {
         rules: with.rules,
         bearings: with.bearings,
+        calculated: with.calculated,
         complete: complete(FileKind::Site) && complete(FileKind::Oils),
         has_oils: trees.iter().any(|t| t.kind == FileKind::Oils),
     };
@@ -312,7 +315,7 @@ fn kind_problem(kind: FileKind, entry: &Entry) -> Option<Problem> {
         return Some(
             at(
                 Code::FileKindOther,
-                format!("this is a file of {word}, one of {} is read here", kind.word()),
+                format!("this is a {word} file, a file that begins with {} is read here", kind.heading()),
             )
             .why("which kind is read where is told by the name of the file, or by --site, --oils, --samples")
             .write(right.remark("if that is what it holds")),

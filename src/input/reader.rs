@@ -58,7 +58,26 @@ impl<'a> Reader<'a> {
         problem.why = fault.why;
         let writes = fault.mends.iter().map(|m| self.mended(node, m));
         problem.write = writes.collect();
+        if problem.code == Code::NoteOpen
+            && let Some(whole) = self.cut_by_comment(node)
+        {
+            problem.write = vec![whole];
+        }
         problem
+    }
+
+    /// A value that a `#` inside a remark has cut off: the whole line in single quotes.
+    fn cut_by_comment(&self, node: &Node) -> Option<Write> {
+        let rest = self.source(node).get(node.span.end as usize..)?;
+        let rest = rest.lines().next()?.trim_end();
+        if !rest.starts_with(" #") {
+            return None;
+        }
+        let whole = Span {
+            end: node.span.end + u32::try_from(rest.len()).ok()?,
+            ..node.span
+        };
+        Some(Write::edit(whole, single_quoted(self.set.slice(whole))))
     }
 
     /// A change of a value's text as a change of the file.

@@ -31,6 +31,8 @@ pub struct Known<'k> {
     pub rules: &'k Rulebook,
     /// Dimensions of rolling bearings.
     pub bearings: &'k DimensionTable,
+    /// Ids of the rules by which limits are worked out.
+    pub calculated: &'k [&'k str],
     /// Whether every file was read to its end: only then is a missing name a mistake.
     pub complete: bool,
     /// Whether there is any oil file.
@@ -60,7 +62,7 @@ pub fn read<'t>(
         top.must(reader, root);
     }
     let frame = frame(reader, &top);
-    let house = house::read(reader, &top);
+    let house = house::read(reader, &top, known);
     let areas = areas(reader, &top);
     let scene = Scene {
         known,
@@ -153,9 +155,17 @@ pub(super) fn not_named(reader: &mut Reader<'_>, node: &Node, within: &str, key:
     if matches!(node.kind, NodeKind::Refused) {
         return;
     }
-    let text = node.text().or_else(|| node.items()?.first()?.text());
-    let name = text.filter(|t| !t.is_empty()).unwrap_or("NAME");
-    let name = super::reader::as_plain(name, true);
+    let items = node.items().unwrap_or_default().iter();
+    let names = items.filter_map(Node::text).chain(node.text());
+    let records: Vec<String> = names
+        .filter(|t| !t.is_empty())
+        .map(|t| format!("{}: {{ }}", super::reader::as_plain(t, true)))
+        .collect();
+    let records = if records.is_empty() {
+        "NAME: { }".to_owned()
+    } else {
+        records.join(", ")
+    };
     let span = super::fields::first_line(reader, node);
     let problem = reader
         .at(
@@ -166,7 +176,7 @@ pub(super) fn not_named(reader: &mut Reader<'_>, node: &Node, within: &str, key:
         )
         .why("each name stands on its own line, its keys deeper below it")
         .write(
-            Write::edit(node.span, format!("{{ {name}: {{ }} }}"))
+            Write::edit(node.span, format!("{{ {records} }}"))
                 .remark("with the keys in the inner braces"),
         );
     reader.report(problem);

@@ -105,12 +105,18 @@ fn slice(file: &SourceFile, span: Span) -> &str {
         .unwrap_or("")
 }
 
-/// The tabs themselves are marked, not what stands behind them.
+/// Tabs and invisible characters themselves are marked, not what stands round them.
 fn marked(file: &SourceFile, span: Span, syntax: &Syntax) -> Span {
-    if *syntax != Syntax::Tab {
-        return span;
+    match syntax {
+        Syntax::Tab => tabs(file, span).unwrap_or(span),
+        Syntax::Character(c) if c.is_control() => {
+            let at = span.start as usize;
+            let (_, end) = file.line_range(file.line_of(span.start));
+            let found = file.text.get(at..end).and_then(|t| t.find(*c));
+            found.map_or(span, |b| file.span(at + b, at + b + c.len_utf8()))
+        }
+        _ => span,
     }
-    tabs(file, span).unwrap_or(span)
 }
 
 /// The blanks at the beginning of the line, or before the place, that hold a tab.
@@ -171,6 +177,7 @@ fn proposals(file: &SourceFile, span: Span, syntax: &Syntax) -> Vec<Write> {
                     .said("delete the character, or type the line anew"),
             ]
         }
+        Syntax::Character(',' | ']' | '}') => vec![without(file, at, end)],
         Syntax::Character(_) => {
             let to = before_comment(file, at, end);
             let value = file.text[at..to].trim_end();
@@ -182,9 +189,26 @@ fn proposals(file: &SourceFile, span: Span, syntax: &Syntax) -> Vec<Write> {
         Syntax::KeyWanted | Syntax::Other(_) => {
             let text = file.text[start..end].trim_start();
             let from = end - text.len();
-            vec![insert(from, "# ").remark("or key: value")]
+            let value = value_start(file, start, end);
+            let to = before_comment(file, value, end);
+            let quoted = single_quoted(&file.text[value..to]);
+            let mut writes = vec![insert(from, "# ").remark("or key: value")];
+            if matches!(syntax, Syntax::Other(_)) && value > from {
+                writes.insert(0, Write::edit(file.span(value, to), quoted));
+            }
+            writes
         }
     }
+}
+
+/// The line without one character and the blanks behind it.
+fn without(file: &SourceFile, at: usize, end: usize) -> Write {
+    let rest = file.text[at..end]
+        .char_indices()
+        .nth(1)
+        .map_or(end, |(i, _)| at + i);
+    let blanks = file.text[rest..end].len() - file.text[rest..end].trim_start().len();
+    Write::edit(file.span(at, rest + blanks), "")
 }
 
 fn tab_proposals(file: &SourceFile, span: Span) -> Vec<Write> {
@@ -258,7 +282,7 @@ fn brackets(file: &SourceFile, span: Span, open: Option<char>, close: Option<cha
             let to = before_comment(file, from, end);
             let value = &file.text[from..to];
             vec![
-                Write::edit(file.span(at, at + 1), ""),
+                without(file, at, end),
                 Write::edit(file.span(from, to), single_quoted(value)),
             ]
         }

@@ -33,9 +33,9 @@ macro_rules! codes {
             }
 
             /// One line on what it means.
-            pub const fn says(self) -> &'static str {
+            pub fn says(self) -> &'static str {
                 match self {
-                    $(Self::$variant => concat!($($says),+),)+
+                    $(Self::$variant => concat!($($says),+).trim_start(),)+
                 }
             }
         }
@@ -326,6 +326,34 @@ mod tests {
                     .all(|b| b.is_ascii_lowercase() || b.is_ascii_digit() || b == b'-');
             assert!(fine, "{name}");
             assert_eq!(Code::named(name).map(Code::as_str), Some(name));
+        }
+    }
+    static PAGES: include_dir::Dir<'_> =
+        include_dir::include_dir!("$CARGO_MANIFEST_DIR/rules/messages");
+
+    #[test]
+    fn every_code_has_its_page_and_every_page_its_code() {
+        for code in Code::ALL {
+            let page = PAGES
+                .get_file(format!("{code}.md"))
+                .and_then(include_dir::File::contents_utf8)
+                .unwrap_or("");
+            assert!(page.starts_with(&format!("# {code}\n\n")), "{code}");
+            let says = code.says();
+            assert!(page.contains(&says[1..]), "{code}: {says}");
+            let examples = if code.severity() == Severity::Error {
+                ["Wrong:", "Right:"]
+            } else {
+                ["Written:", "To change it:"]
+            };
+            for heading in examples {
+                let (_, below) = page.split_once(heading).unwrap_or_default();
+                assert!(below.trim_start().len() > 4, "{code}: {heading}");
+            }
+        }
+        for file in PAGES.files() {
+            let name = file.path().file_stem().and_then(|n| n.to_str());
+            assert!(name.and_then(Code::named).is_some(), "{name:?}");
         }
     }
 }

@@ -126,8 +126,9 @@ fn snippet(file: &SourceFile, span: Span, problem: &Problem, look: Look, tail: &
     let line = file.line_of(span.start);
     let (start, end) = file.line_range(line);
     // Only the first line is drawn: a record of many lines is named by its beginning.
-    let from = (span.start as usize).clamp(start, end) - start;
-    let to = (span.end as usize).clamp(start + from, end) - start;
+    let inside = |at: u32| file.boundary(at).clamp(start, end) - start;
+    let from = inside(span.start);
+    let to = inside(span.end).max(from);
     let mut mark = AnnotationKind::Primary.span(from..to);
     if let Some(label) = &problem.label {
         mark = mark.label(label.as_str());
@@ -137,13 +138,13 @@ fn snippet(file: &SourceFile, span: Span, problem: &Problem, look: Look, tail: &
         Severity::Warning => Level::WARNING,
         Severity::Note => Level::NOTE,
     };
-    let shown = file.line(line).replace('\u{0}', "\u{2400}");
+    let shown = file.line(line);
     let path = if file.path == COMMAND_LINE {
         format!("<{COMMAND_LINE}>")
     } else {
         file.path.clone()
     };
-    let source = Snippet::source(shown.as_str())
+    let source = Snippet::source(shown)
         .line_start(line)
         .path(path.as_str())
         .annotation(mark);

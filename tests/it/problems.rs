@@ -1,7 +1,10 @@
 //! Bad input: a folder a problem, its message as a snapshot, and its own `write` applied.
 
+use filmwright::assets::builtin_rules;
+use filmwright::demand::rules::CALCULATED;
 use filmwright::input::file::FileKind;
 use filmwright::input::load::{Tree, With, load, load_oils, take};
+use filmwright::input::rules::rulebook;
 use filmwright::model::rulebook::Rulebook;
 use filmwright::problem::render::{Look, all};
 use filmwright::problem::{Code, Problem, Problems, Severity};
@@ -9,6 +12,11 @@ use filmwright::relation::bearing::designation::DimensionTable;
 use filmwright::source::{Place, SourceSet};
 use std::collections::{BTreeMap, BTreeSet};
 use std::path::{Path, PathBuf};
+use std::sync::LazyLock;
+
+/// The built-in rules.
+static BOOK: LazyLock<Rulebook> =
+    LazyLock::new(|| rulebook(&[builtin_rules()]).expect("a test of its own reads them"));
 
 /// Files of a case: path and bytes.
 type Files = Vec<(String, Vec<u8>)>;
@@ -95,10 +103,12 @@ fn found_in(files: &Files) -> (SourceSet, Problems) {
         .iter()
         .map(|(path, bytes)| take(&mut set, kind_of(path), path, bytes, &mut problems))
         .collect();
-    let rules = Rulebook::default();
+    let rules = &*BOOK;
+    let calculated: Vec<&str> = CALCULATED.iter().map(|rule| rule.0).collect();
     let with = With {
-        rules: &rules,
+        rules,
         bearings: DimensionTable::built_in(),
+        calculated: &calculated,
     };
     if files
         .iter()
@@ -106,7 +116,7 @@ fn found_in(files: &Files) -> (SourceSet, Problems) {
     {
         drop(load(&set, &trees, &with, &[], &mut problems));
     } else {
-        drop(load_oils(&set, &trees, &rules, &mut problems));
+        drop(load_oils(&set, &trees, rules, &mut problems));
         let mut reader = filmwright::input::reader::Reader::new(&set, &mut problems);
         for tree in &trees {
             if let Some(root) = &tree.root {
@@ -260,4 +270,60 @@ fn messages_speak_no_programmers_language() {
             assert!(quoted || !text.contains(word), "\"{word}\" in: {text}");
         }
     }
+}
+
+/// The text of a case with something done to it: a piece cut out, doubled, or put in.
+fn mutated(text: &str, at: usize, len: usize, put: &str) -> String {
+    let chars: Vec<char> = text.chars().collect();
+    let from = at % (chars.len() + 1);
+    let to = (from + len).min(chars.len());
+    let before: String = chars[..from].iter().collect();
+    let behind: String = chars[to..].iter().collect();
+    format!("{before}{put}{behind}")
+}
+
+proptest::proptest! {
+    #![proptest_config(proptest::test_runner::Config::with_cases(200))]
+
+    #[test]
+    fn no_text_breaks_the_reader(
+        at in 0..4000_usize,
+        len in 0..40_usize,
+        put in "(\\PC|[-:#\\[\\]{}&*!|>'\"%@`,? \n\t0-9]|unknown|parts|like){0,12}",
+        which in 0..5_usize,
+    ) {
+        let folder = cases("good").join("lime-works");
+        let mut files = files_of(&folder);
+        let place = which % files.len();
+        let text = String::from_utf8_lossy(&files[place].1).into_owned();
+        files[place].1 = mutated(&text, at, len, &put).into_bytes();
+        let (set, problems) = found_in(&files);
+        drop(all(&set, &problems, Look::default()));
+        for problem in problems.sorted() {
+            filmwright::problem::json::object(&set, problem);
+            for write in &problem.write {
+                drop(write.applied(&set));
+            }
+        }
+    }
+
+    #[test]
+    fn no_bytes_break_the_reader(bytes in proptest::collection::vec(0..=255_u8, 0..200)) {
+        for name in ["site.yaml", "oils.yaml", "samples.yaml", "events.yaml"] {
+            let (set, problems) = found_in(&vec![(name.to_owned(), bytes.clone())]);
+            drop(all(&set, &problems, Look::default()));
+        }
+    }
+}
+
+#[test]
+fn a_file_over_the_limit_is_refused_at_once() {
+    let bytes = vec![b'#'; (64 << 20) + 1];
+    let (set, problems) = found_in(&vec![("site.yaml".to_owned(), bytes)]);
+    let codes: Vec<Code> = problems.sorted().iter().map(|p| p.code).collect();
+    assert!(codes.contains(&Code::FileTooLarge), "{codes:?}");
+    assert!(
+        all(&set, &problems, Look::default()).contains("65 MiB")
+            || all(&set, &problems, Look::default()).contains("64 MiB")
+    );
 }

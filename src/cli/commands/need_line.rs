@@ -39,6 +39,7 @@ fn run(session: &mut Session<'_>, args: &Need) -> Result<Exit, Exit> {
     let with = With {
         rules: &rules,
         bearings: DimensionTable::built_in(),
+        calculated: &[],
     };
     let site = reader::load(&sources, &[tree], &with, &[], &mut problems);
     let Ok(site) = site else {

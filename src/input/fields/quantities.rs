@@ -10,7 +10,7 @@ use crate::quantity::parse::Read;
 use crate::quantity::{Amount, Kind, Length, Measure};
 use crate::relation::film::roughness::rq_from_ra;
 use crate::source::place::{Given, Whose};
-use crate::source::{Origin, Place};
+use crate::source::{Origin, Place, Span};
 
 impl Slot<'_> {
     /// Where the value comes from.
@@ -58,11 +58,27 @@ impl Slot<'_> {
                         let reading = Write::edit(self.name.span, "sump");
                         problem.write.push(reading);
                     }
+                    if code == Code::UnknownUnwanted {
+                        problem.write.splice(0..0, self.left_out(reader));
+                    }
                     reader.report(problem);
                 }
                 None
             }
         }
+    }
+
+    /// The line made a comment, where the key begins it.
+    fn left_out(&self, reader: &Reader<'_>) -> Option<Write> {
+        let at = self.name.span;
+        let before = reader.source(self.node).get(..at.start as usize)?;
+        let line = before.rsplit('\n').next()?;
+        let before = Span {
+            end: at.start,
+            ..at
+        };
+        let alone = line.trim().is_empty() && self.node.text().is_some();
+        alone.then(|| Write::edit(before, "# "))
     }
 
     /// Carries a roughness stated by the other mean to the one wanted: Rq = 1.25 Ra.

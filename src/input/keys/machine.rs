@@ -80,7 +80,7 @@ pub static AREA: Record = Record {
         key("food zone", Form::YesNo, "gap where a rule needs it", "Whether there is open food, or goods that touch food."),
         key("water protection", Form::YesNo, "gap where a rule needs it", "Whether a leak would reach protected water or ground."),
         key("fire zone", Form::YesNo, "gap where a rule needs it", "Whether a leak could meet flame or hot metal."),
-        key("hot surface", stated(TEMPERATURE), "gap where a rule needs it", "Hottest surface a leak could reach."),
+        key("hot surface", Form::Quantity(Want::stated(TEMPERATURE).such_as("380 degC")), "gap where a rule needs it", "Hottest surface a leak could reach."),
     ],
 };
 
@@ -107,9 +107,9 @@ const MACHINE_KEYS: &[Key] = &[
     key("asks for", Form::Names, "what its parts imply", "Additive families or classes the maker or the duty requires."),
     key("sump rise", stated(RISE), "gap; plausible range by lubrication", "How much hotter than ambient the sump runs at full load."),
     key("sump", Form::Quantity(Want::stated(TEMPERATURE).ends(Ends::Either).or_held()), "gap", "Sump temperature: a reading with `at ambient`, `held at` a value, or at the coldest and the hottest ambient."),
-    key("at ambient", Form::Quantity(Want::one(TEMPERATURE)), "–", "Ambient at which the sump reading was taken."),
-    key("start", stated(TEMPERATURE), "coldest ambient", "Oil temperature at start."),
-    key("heater", stated(TEMPERATURE), "none", "Temperature a heater keeps the oil at before start."),
+    key("at ambient", Form::Quantity(Want::one(TEMPERATURE).such_as("20 degC")), "–", "Ambient at which the sump reading was taken."),
+    key("start", Form::Quantity(Want::stated(TEMPERATURE).such_as("-18 degC")), "coldest ambient", "Oil temperature at start."),
+    key("heater", Form::Quantity(Want::stated(TEMPERATURE).such_as("10 degC")), "none", "Temperature a heater keeps the oil at before start."),
     key("heater power", stated(POWER), "–", "Power of the heater."),
     key("heater area", stated(SURFACE), "–", "Heated surface of its sheath."),
     key("maker grade", Form::Grade, "–", "Viscosity grade the maker names; a floor at 40 °C."),
@@ -118,7 +118,7 @@ const MACHINE_KEYS: &[Key] = &[
     key("floor", Form::Quantity(LIMIT), "by rules", "Least viscosity at running temperature."),
     key("ceiling", Form::Quantity(LIMIT), "by rules", "Greatest viscosity at running temperature."),
     key("start limit", Form::Quantity(LIMIT), "by rules", "Greatest viscosity at start."),
-    key("oil limit", Form::Quantity(Want::one(TEMPERATURE)), "the oil's own", "Highest temperature the maker allows the oil."),
+    key("oil limit", Form::Quantity(Want::one(TEMPERATURE).such_as("90 degC")), "the oil's own", "Highest temperature the maker allows the oil."),
     key("yellow metal", Form::YesNo, "gap where a rule needs it", "Whether bronze, brass or copper touches the oil."),
     key("silver", Form::YesNo, "gap where a rule needs it", "Whether silver touches the oil."),
     key("zinc plated", Form::YesNo, "gap where a rule needs it", "Whether zinc-plated parts touch the oil."),
@@ -163,6 +163,6 @@ pub static REGREASE: Record = Record {
     must: &[],
     keys: &[
         key("amount", stated(MASS), "gap", "Grease put in each time."),
-        key("interval", stated(TIME), "gap", "Time between."),
+        key("interval", Form::Quantity(Want::stated(TIME).such_as("2000 h")), "gap", "Time between."),
     ],
 };

@@ -43,10 +43,19 @@ pub const COPPER: &[&str] = &[
 /// Where viscosity points come from.
 pub const POINTS: &[&str] = &["data sheet", "batch", "measured"];
 
-const BOUND: Want = Want::one(TEMPERATURE).or_bound();
-const LOSS: Want = Want::one(NUMBER).at(At::Must).with_test();
-const INDEX: Want = Want::one(NUMBER).with_test();
-const DENSITY: Want = Want::one(&[Kind::Density]).at(At::Must);
+const BOUND: Want = Want::one(TEMPERATURE).or_bound().such_as("-18 degC");
+const LOSS: Want = Want::one(NUMBER)
+    .at(At::Must)
+    .with_test()
+    .such_as("26 % at 100 degC");
+const INDEX: Want = Want::one(NUMBER).with_test().such_as("25");
+const VI: Want = Want::one(NUMBER).such_as("95");
+const MINUTES: Want = Want::one(TIME).such_as("10 min");
+const HOT: Want = Want::one(TEMPERATURE).such_as("95 degC");
+const COLD: Want = Want::one(TEMPERATURE).such_as("-26 degC");
+const DENSITY: Want = Want::one(&[Kind::Density])
+    .at(At::Must)
+    .such_as("893 kg/m3 at 15 degC");
 const ALPHA: Want = Want::one(&[Kind::PressureViscosity]).at(At::Must);
 
 /// An oil or a grease.
@@ -74,15 +83,15 @@ const OIL_KEYS: &[Key] = &[
     key("cold viscosity", Form::ColdPoints, "–", "Viscosities measured cold, ASTM D2983 and the like."),
     key("CCS", Form::ColdPoints, "–", "Cranking simulator viscosities, ASTM D5293."),
     key("MRV", Form::ColdPoints, "–", "Mini-rotary viscosities, ASTM D4684."),
-    key("t150000", one(TEMPERATURE), "–", "Temperature of 150 000 mPa.s, ASTM D2983."),
+    key("t150000", Form::Quantity(COLD), "–", "Temperature of 150 000 mPa.s, ASTM D2983."),
     key("HTHS", one(DYNAMIC), "plausible range of the class", "Viscosity at 150 °C under high shear, ASTM D4683."),
     key("pour point", Form::Quantity(BOUND), "gap", "Pour point, ASTM D97."),
     key("cloud point", Form::Quantity(BOUND), "–", "Cloud point, ASTM D2500."),
     key("flash point", Form::Flash, "gap", "Flash point, with COC for the open cup or PMCC for the closed one."),
-    key("oil limit", one(TEMPERATURE), "by base", "Highest bulk temperature the supplier allows."),
+    key("oil limit", Form::Quantity(HOT), "by base", "Highest bulk temperature the supplier allows."),
     key("density", Form::Quantity(DENSITY), "typical of the base, assumed", "Density at a temperature."),
     key("alpha", Form::Quantity(ALPHA), "by correlation", "Measured pressure-viscosity coefficient at a temperature."),
-    key("VI", one(NUMBER), "from the viscosities", "Viscosity index as stated; only checked."),
+    key("VI", Form::Quantity(VI), "from the viscosities", "Viscosity index as stated; only checked."),
     key("additives", Form::Words(ADDITIVES), "none declared", "Additives declared; a list is taken as complete."),
     key("sulphur", Form::Word(SULPHUR), "gap where a rule needs it", "How reactive the sulphur is."),
     key("copper strip", Form::Word(COPPER), "gap where a rule needs it", "Copper strip rating at 100 °C, ASTM D130."),
@@ -90,14 +99,14 @@ const OIL_KEYS: &[Key] = &[
     key("environment", Form::Word(ENVIRONMENT), "none declared", "Environmental class declared."),
     key("fire class", Form::Word(FIRE), "none declared", "Fire class declared."),
     key("FZG stage", Form::Whole, "none declared", "Failure load stage, ISO 14635-1."),
-    key("air release", one(TIME), "none declared", "Air release at 50 °C, ISO 9120."),
-    key("demulsibility", one(TIME), "none declared", "Time to part from water, ISO 6614."),
+    key("air release", Form::Quantity(MINUTES), "none declared", "Air release at 50 °C, ISO 9120."),
+    key("demulsibility", Form::Quantity(MINUTES), "none declared", "Time to part from water, ISO 6614."),
     key("price", Form::Price, "–", "Price for a litre, or for a kilogram of grease."),
     key("in stock", one(VOLUME), "–", "How much is in store."),
     key("thickener", Form::Text, "gap", "Thickener of a grease."),
     key("NLGI", Form::Text, "gap", "Consistency of a grease, 000 to 6."),
     key("base oil", Form::Points, "gap", "Viscosities of the base oil of a grease."),
-    key("dropping point", Form::Quantity(BOUND), "gap", "Dropping point of a grease, ISO 2176."),
+    key("dropping point", Form::Quantity(Want::one(TEMPERATURE).or_bound().such_as("above 250 degC")), "gap", "Dropping point of a grease, ISO 2176."),
     key("code", Form::Text, "–", "DIN 51502 code of a grease."),
 ];
 

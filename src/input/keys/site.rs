@@ -3,6 +3,7 @@
 use super::form::{Form, RISE, Refers, TIME, one};
 use super::machine::{AREA, MACHINE};
 use super::{Key, Record, key};
+use crate::input::value::Want;
 use crate::quantity::Kind;
 
 const STEP: &[Kind] = &[Kind::VgStep];
@@ -43,8 +44,8 @@ pub static HOUSE: Record = Record {
     must: &[],
     keys: &[
         key("reserve", one(STEP), "0.5 step", "Margin asked beyond every viscosity limit."),
-        key("pour margin", one(RISE), "by lubrication", "Least difference between start temperature and pour point."),
-        key("sample age", one(TIME), "12 months", "Age beyond which a sample says nothing about the oil in use."),
+        key("pour margin", Form::Quantity(Want::one(RISE).such_as("5 K")), "by lubrication", "Least difference between start temperature and pour point."),
+        key("sample age", Form::Quantity(Want::one(TIME).such_as("12 months")), "12 months", "Age beyond which a sample says nothing about the oil in use."),
         key("rules", Form::Named(&HOUSE_RULE), "–", "House rules by name; a part takes one with `rule`."),
     ],
 };

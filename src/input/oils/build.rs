@@ -74,7 +74,10 @@ pub(super) fn oil(
     };
     oil.facts = facts::of(reader, fields, &oil);
     other::unusual(reader, fields, &oil);
-    if polymer == Polymer::Thickened && oil.shear.is_none() {
+    let silent = ["sheared", "shear loss", "PSSI"]
+        .iter()
+        .all(|k| fields.lacks(k));
+    if polymer == Polymer::Thickened && silent {
         viscosity::no_shear(reader, fields, &oil);
     }
     Some(oil)

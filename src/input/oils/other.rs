@@ -86,9 +86,10 @@ fn base_unknown(reader: &mut Reader<'_>, slot: &Slot<'_>, piece: &str) {
     let other = OTHER_BASES
         .iter()
         .find(|(w, _)| w.eq_ignore_ascii_case(piece));
-    let proposals: Vec<&str> = match (meant, other) {
-        (Some(meant), _) => vec![meant],
-        (None, Some((_, ours))) => ours.to_vec(),
+    let meant = meant.filter(|_| other.is_none());
+    let proposals: Vec<&str> = match (other, meant) {
+        (Some((_, ours)), _) => ours.to_vec(),
+        (None, Some(meant)) => vec![meant],
         (None, None) => Vec::new(),
     };
     if proposals.is_empty() {

@@ -9,7 +9,7 @@ use crate::model::Oil;
 use crate::model::oil::{GradeOnly, OilKind, PointsFrom, Shear, Viscosity, ViscosityPoint};
 use crate::problem::{Code, Problem, Write};
 use crate::quantity::convert::celsius;
-use crate::quantity::show::{Toward, Units, quantity};
+use crate::quantity::show::{Toward, Units, quantity, significant};
 use crate::quantity::{KinematicViscosity, Measure, Ratio};
 use crate::relation::oil::viscosity_index;
 use crate::source::place::Given;
@@ -178,7 +178,7 @@ fn too_few(reader: &mut Reader<'_>, slot: &Slot<'_>, listed: &Listed) {
         let at_40 = (point.at.base() - celsius(40.0).base()).abs() < 1e-6;
         let nu100 = viscosity_index::nu100(point.nu.value, index.value);
         if let (true, Ok(nu100)) = (at_40, nu100) {
-            let second = format!("{:.4} mm2/s at 100 degC", nu100.base() * 1e6);
+            let second = format!("{} at 100 degC", figure(nu100.base()));
             let text = format!("[{}, {second}]", point.nu.written);
             problem = problem.write(Write::edit(slot.node.span, text).remark("by that index"));
             reader.report(problem);
@@ -186,12 +186,12 @@ fn too_few(reader: &mut Reader<'_>, slot: &Slot<'_>, listed: &Listed) {
         }
     }
     let (first, second) = match listed.points.first() {
-        Some(p) if (p.at.base() - celsius(100.0).base()).abs() < 5.0 => (
-            format!("{:.4} mm2/s at 40 degC", p.nu.value.base() * 12e6),
-            p.nu.written.clone(),
-        ),
+        Some(p) if (p.at.base() - celsius(100.0).base()).abs() < 5.0 => {
+            let cold = format!("{} at 40 degC", figure(p.nu.value.base() * 12.0));
+            (cold, p.nu.written.clone())
+        }
         Some(p) => {
-            let hot = format!("{:.4} mm2/s at 100 degC", p.nu.value.base() * 0.09e6);
+            let hot = format!("{} at 100 degC", figure(p.nu.value.base() * 0.09));
             (p.nu.written.clone(), hot)
         }
         None => (
@@ -202,6 +202,12 @@ fn too_few(reader: &mut Reader<'_>, slot: &Slot<'_>, listed: &Listed) {
     let text = format!("[{first}, {second}]");
     problem = problem.write(Write::edit(slot.node.span, text).remark("with the right figure"));
     reader.report(problem);
+}
+
+/// A viscosity in m²/s as it would be written.
+fn figure(base: f64) -> String {
+    let digits = significant(base * 1e6, 3, Toward::Nearest);
+    format!("{} mm2/s", digits.replace('\u{202f}', ""))
 }
 
 fn same_temperature(reader: &mut Reader<'_>, slot: &Slot<'_>, listed: &Listed, pair: &[usize]) {

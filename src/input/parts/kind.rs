@@ -56,7 +56,8 @@ pub(super) fn label(reader: &Reader<'_>, node: &Node, key: &PartKey) -> String {
     let size = |name: &str| {
         let entries = value.entries()?;
         let entry = entries.iter().find(|e| spelt(&e.key.text) == name)?;
-        entry.value.text().map(str::to_owned)
+        let text = entry.value.text().filter(|t| !t.is_empty());
+        text.map(str::to_owned)
     };
     match (size("bore"), size("outside")) {
         (Some(bore), Some(outside)) => {

@@ -111,20 +111,20 @@ fn relative(
         "{} on a {} shaft is {} %; 0.1 to 0.2 % is usual.{question}",
         shown(gap / factor),
         shown(to_mm(diameter.value)),
-        three(share * 100.0)
+        figures(share * 100.0, 2)
     );
     let instead = meant.map(|_| format!("{digits} mm"));
     say_unusual(reader, fields, name, &why, instead);
 }
 
 fn shown(millimetres: f64) -> String {
-    format!("{} mm", three(millimetres))
+    format!("{} mm", figures(millimetres, 3))
 }
 
-/// Up to three significant figures.
-fn three(value: f64) -> String {
+/// Up to so many significant figures.
+fn figures(value: f64, digits: i32) -> String {
     use crate::quantity::show::{Toward, significant};
-    let text = significant(value, 3, Toward::Nearest);
+    let text = significant(value, digits, Toward::Nearest);
     if text.contains('.') {
         text.trim_end_matches('0').trim_end_matches('.').to_owned()
     } else {

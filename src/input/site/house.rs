@@ -1,12 +1,12 @@
 //! House values and house rules.
 
-use super::named;
+use super::{Known, named, named_or_private};
 use crate::input::fields::{Fields, Slot};
 use crate::input::keys::site::{HOUSE, HOUSE_RULE};
 use crate::input::reader::Reader;
 use crate::input::value::{Fault, Mend};
 use crate::model::site::{House, HouseLimit, HouseRule};
-use crate::problem::Code;
+use crate::problem::{Code, suggest};
 use crate::quantity::parse::parse;
 use crate::quantity::{Kind, Length, Measure, Ratio, Time, VgStep};
 use crate::source::Origin;
@@ -17,7 +17,7 @@ const RESERVE: f64 = 0.5;
 /// Sample age where the house states none, s: twelve months.
 const SAMPLE_AGE: f64 = 12.0 * 2_629_746.0;
 
-pub(super) fn read(reader: &mut Reader<'_>, top: &Fields<'_>) -> House {
+pub(super) fn read(reader: &mut Reader<'_>, top: &Fields<'_>, known: &Known<'_>) -> House {
     let house = match top.get("house") {
         Some(slot) => Fields::read(reader, slot.node, &HOUSE, "house"),
         None => Fields::empty(&HOUSE, top.span, "house"),
@@ -39,11 +39,11 @@ pub(super) fn read(reader: &mut Reader<'_>, top: &Fields<'_>) -> House {
         reserve,
         pour_margin: house.given(reader, "pour margin"),
         sample_age,
-        rules: rules(reader, &house),
+        rules: rules(reader, &house, known),
     }
 }
 
-fn rules(reader: &mut Reader<'_>, house: &Fields<'_>) -> Vec<HouseRule> {
+fn rules(reader: &mut Reader<'_>, house: &Fields<'_>, known: &Known<'_>) -> Vec<HouseRule> {
     let mut found = Vec::new();
     for entry in named(reader, house, "rules", "house rules") {
         let name = entry.key.text.trim();
@@ -51,7 +51,7 @@ fn rules(reader: &mut Reader<'_>, house: &Fields<'_>) -> Vec<HouseRule> {
         let fields = Fields::read(reader, &entry.value, &HOUSE_RULE, &within);
         fields.must(reader, &entry.value);
         let limit = fields.get("limit").and_then(|slot| limit(reader, slot));
-        let replaces = fields.given_text(reader, "replaces");
+        let replaces = replaces(reader, &fields, known);
         let only_for = fields.given_text(reader, "for");
         let source = fields.text(reader, "source");
         if let Some((limit, written)) = limit {
@@ -67,6 +67,33 @@ fn rules(reader: &mut Reader<'_>, house: &Fields<'_>) -> Vec<HouseRule> {
         }
     }
     found
+}
+
+/// The rule replaced; one that does not exist would replace nothing.
+fn replaces(
+    reader: &mut Reader<'_>,
+    fields: &Fields<'_>,
+    known: &Known<'_>,
+) -> Option<Given<String>> {
+    let given = fields.given_text(reader, "replaces")?;
+    let slot = fields.get("replaces")?;
+    let calculated = known.calculated.iter().copied();
+    let window = known.rules.components.get(&given.value).is_some();
+    if window || calculated.clone().any(|id| id == given.value) {
+        return Some(given);
+    }
+    let meant = suggest::certain(&given.value, calculated.clone());
+    let problem = reader
+        .at(
+            Code::RuleUnknown,
+            format!("there is no rule {} to replace", given.value),
+            slot.node.span,
+            &slot.within,
+        )
+        .why("the rules are listed by: filmwright rules");
+    let problem = named_or_private(problem, slot, meant, calculated);
+    reader.report(problem);
+    None
 }
 
 fn limit(reader: &mut Reader<'_>, slot: &Slot<'_>) -> Option<(HouseLimit, String)> {

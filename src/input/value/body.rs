@@ -159,7 +159,7 @@ fn unknown(head: &str, rest: &str, want: &Want) -> Result<Body, Fault> {
             "`unknown` stands where a value must be stated",
             0..head.len(),
         )
-        .why("nothing can be worked out without it, and nothing plausible stands in for it")
+        .why("what is not known is left out here; what then stands in for it is said by: filmwright help keys")
         .mend(Mend::new(0..head.len(), want.example()).remark("with the right figure")));
     }
     if rest.is_empty() {

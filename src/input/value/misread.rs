@@ -265,13 +265,18 @@ fn other_kind(text: &str, unit: &str, is: &str, other: Kind, want: &Want) -> Fau
 /// A viscosity without its temperature.
 pub(super) fn at_missing(head: &str, want: &Want) -> Fault {
     let at = head.len();
+    let usual = match want.kind() {
+        Kind::Density => " at 15 degC",
+        Kind::Ratio => " at 100 degC",
+        _ => " at 40 degC",
+    };
     Fault::new(
         Code::AtMissing,
         format!("no temperature beside {}", want.noun()),
         0..at,
     )
     .why("viscosity and density mean something only together with their temperature")
-    .mend(Mend::new(at..at, " at 40 degC").remark("or the temperature it holds at"))
+    .mend(Mend::new(at..at, usual).remark("or the temperature it holds at"))
 }
 
 /// Bytes of the last occurrence of a piece that was cut from a text, perhaps a copy.

@@ -25,6 +25,8 @@ pub struct Want {
     pub test: bool,
     /// Which roughness it is, where it is one: `Ra 0.3 um`.
     pub roughness: Option<Roughness>,
+    /// A right example, where that of the kind would mislead.
+    pub example: Option<&'static str>,
 }
 
 /// Which mean of a profile a roughness is.
@@ -80,6 +82,7 @@ impl Want {
             at: At::Never,
             test: false,
             roughness: None,
+            example: None,
         }
     }
 
@@ -118,6 +121,13 @@ impl Want {
         self
     }
 
+    /// The same with an example of its own.
+    #[must_use]
+    pub const fn such_as(mut self, example: &'static str) -> Self {
+        self.example = Some(example);
+        self
+    }
+
     /// The same as a roughness, known or not.
     #[must_use]
     pub const fn rough(mut self, roughness: Roughness) -> Self {
@@ -137,14 +147,24 @@ impl Want {
         self.kinds[0]
     }
 
-    /// With its article: "a speed", "a kinematic viscosity or a dynamic viscosity".
+    /// With its article: "a speed", "a volume or a mass".
     pub fn noun(&self) -> String {
-        let nouns: Vec<&str> = self.kinds.iter().map(|k| k.spec().noun).collect();
-        nouns.join(" or ")
+        match self.kinds {
+            [Kind::KinematicViscosity, ..] if self.kinds.len() > 1 => "a viscosity".into(),
+            // The second kind is only another way to write the first.
+            [Kind::VolumePerYear | Kind::HoursPerYear, ..] => self.kind().spec().noun.to_owned(),
+            kinds => {
+                let nouns: Vec<&str> = kinds.iter().map(|k| k.spec().noun).collect();
+                nouns.join(" or ")
+            }
+        }
     }
 
     /// A right example.
     pub fn example(&self) -> String {
+        if let Some(example) = self.example {
+            return example.to_owned();
+        }
         let one = match self.roughness {
             Some(roughness) => format!("{} 0.4 um", roughness.symbol()),
             None => self.kind().spec().example.to_owned(),

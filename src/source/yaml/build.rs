@@ -20,6 +20,9 @@ enum Open {
     },
 }
 
+/// The text of a merge key, and of any key that cannot be one; what stands behind it is left out.
+const REFUSED_KEY: &str = "<<";
+
 struct Builder<'t> {
     file: FileId,
     text: &'t str,
@@ -246,7 +249,7 @@ impl Builder<'_> {
             None => self.root = Some(node),
             Some(Open::Seq { items, .. }) => items.push(node),
             Some(Open::Map { entries, key, .. }) => match key.take() {
-                Some(key) if key.text == "<<" => {}
+                Some(key) if key.text == REFUSED_KEY => {}
                 Some(key) => entries.push(Entry { key, value: node }),
                 None => self.key(node),
             },
@@ -256,14 +259,17 @@ impl Builder<'_> {
     fn key(&mut self, node: Node) {
         let span = node.span;
         let text = if let NodeKind::Scalar(s) = node.kind {
-            if s.text == "<<" && s.style == Style::Plain {
+            if s.text == REFUSED_KEY && s.style == Style::Plain {
                 self.fault(FaultKind::Merge, span.start as usize, span.end as usize);
             }
             s.text
         } else {
-            let (from, to) = (span.start as usize, span.end as usize);
-            self.fault(FaultKind::KeyNotText, from, to);
-            self.text.get(from..to).unwrap_or("").to_owned()
+            self.fault(
+                FaultKind::KeyNotText,
+                span.start as usize,
+                span.end as usize,
+            );
+            REFUSED_KEY.to_owned()
         };
         if let Some(Open::Map { key, .. }) = self.stack.last_mut() {
             *key = Some(Key { text, span });
@@ -423,8 +429,7 @@ impl Builder<'_> {
         if let Some(c @ (',' | ']' | '}')) = self.text[at..].chars().next() {
             return (Syntax::Character(c), at, at + 1);
         }
-        let words = error.to_string();
-        let words = words.split(" at ").next().unwrap_or("").trim().to_owned();
+        let words = other_words(error.kind()).to_owned();
         self.whole_line(Syntax::Other(words), at)
     }
 
@@ -459,5 +464,23 @@ impl Builder<'_> {
 
     fn next_char(&self, at: usize) -> usize {
         at + self.text[at..].chars().next().map_or(0, char::len_utf8)
+    }
+}
+
+/// The rarer offences in words.
+fn other_words(kind: &ErrorKind) -> &'static str {
+    use ErrorKind as E;
+    match kind {
+        E::InvalidBlockScalarHeader | E::ZeroBlockScalarIndent | E::InvalidBlockScalarIndent => {
+            "a block of text does not begin on the line below its | or >"
+        }
+        E::CommentInterceptedScalar => "a comment inside a value of several lines",
+        E::CommentNotSeparated => "no space before the #",
+        E::ExpectedNodeContent => "no value where one must stand",
+        E::UnexpectedEof | E::UnexpectedEofBlockMapping | E::UnexpectedEofBlockSequence => {
+            "the file ends in the middle of a record"
+        }
+        E::InvalidDocumentEnd => "text behind the end of the document",
+        _ => "the text has a form that is not understood here",
     }
 }

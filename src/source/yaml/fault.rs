@@ -87,7 +87,7 @@ pub enum Syntax {
     /// A character that may not stand there.
     #[error("character `{0}`")]
     Character(char),
-    /// Anything else, in the words of the library that found it.
+    /// Anything else, in words.
     #[error("{0}")]
     Other(String),
 }
