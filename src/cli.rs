@@ -180,7 +180,11 @@ pub enum Command {
     #[command(after_help = "Example:\n  filmwright why M01 O-13 --demo")]
     Why(Why),
     /// One oil: its line, viscosity at temperatures, grades, what does not add up
-    #[command(after_help = "Example:\n  filmwright oil O-12 --at -15degC --at 85degC --demo")]
+    #[command(
+        after_help = "Example:\n  filmwright oil O-12 --at -15degC --at 85degC --demo\n  \
+        filmwright oil O-04 --with O-05 --share \"30 %\" --demo\n  \
+        filmwright oil O-04 --with O-05 --target \"46.3 mm2/s at 40 degC\" --demo"
+    )]
     Oil(Oil),
     /// HTML sheets: overview, one sheet a machine
     #[command(
@@ -285,6 +289,21 @@ pub struct Oil {
     /// Temperatures to print it at
     #[arg(long, value_name = "TEMP", allow_hyphen_values = true)]
     pub at: Vec<String>,
+    /// Weigh it on every machine, not only where it is in use
+    #[arg(long)]
+    pub machines: bool,
+    /// Another oil to blend into it
+    #[arg(long, value_name = "OIL")]
+    pub with: Option<String>,
+    /// Share of the other oil, by volume
+    #[arg(long, value_name = "SHARE", requires = "with")]
+    pub share: Option<String>,
+    /// Viscosity the blend is to have, as "46 mm2/s at 40 degC": the share for it
+    #[arg(long, value_name = "VISCOSITY", requires = "with")]
+    pub target: Option<String>,
+    /// What the blend does to these machines; those that hold the oil where none is given
+    #[arg(long, value_name = "TAG", requires = "with")]
+    pub at_machine: Vec<String>,
 }
 
 /// `report`

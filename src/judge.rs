@@ -5,6 +5,7 @@
 //! point's unknowns are judged one by one and combined: what fails in all of them fails, what
 //! fails in some is open, and else the worst one speaks.
 
+pub mod allowance;
 pub mod band;
 pub mod because;
 pub mod explain;

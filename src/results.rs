@@ -4,4 +4,5 @@
 pub mod csv;
 pub mod json;
 pub mod need;
+pub mod oil;
 pub mod weigh;

@@ -1,6 +1,8 @@
 //! From a read site to weighed candidates: every point, every oil, eligibility first.
 
 pub mod facts;
+pub mod top_up;
+pub mod uses;
 
 use crate::demand::{Demand, PointDemands, Standing, is_severe, point_demands, takes_grease};
 use crate::judge::because::because;
@@ -164,13 +166,18 @@ impl<'a> Scales<'a> {
 
     /// Weighs every oil on a point.
     pub fn weigh(&self, point: &'a Point) -> Weighed<'a> {
+        self.weigh_where(point, |_| true)
+    }
+
+    /// Weighs those oils on a point that are wanted, by their place in the list.
+    pub fn weigh_where(&self, point: &'a Point, wanted: impl Fn(usize) -> bool) -> Weighed<'a> {
         let (demands, ready) = self.prepare(point);
         let grease = takes_grease(point);
         let facts = facts::of_point(point, &demands, self.in_use_facts(point));
         let card = self.suitability.point(&facts);
         let (mut candidates, mut barred) = (Vec::new(), Vec::new());
         for (i, oil) in self.site.oils.iter().enumerate() {
-            if self.oils[i].grease != grease {
+            if self.oils[i].grease != grease || !wanted(i) {
                 continue;
             }
             let in_use = oil_in_use(point) == Some(oil.id.as_str());

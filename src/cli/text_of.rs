@@ -1,6 +1,7 @@
 //! Results as text for people.
 
 pub mod need;
+pub mod oil;
 pub mod weigh;
 pub mod why;
 pub mod work;

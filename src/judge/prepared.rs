@@ -205,7 +205,11 @@ impl PreparedOil {
     /// # Errors
     /// Points that make no curve.
     pub fn new(oil: &Oil, rules: &Rulebook, worn: bool) -> Result<Self, Misfit> {
-        let curves = curves(oil, rules)?;
+        Ok(Self::of(oil, curves(oil, rules)?, rules, worn))
+    }
+
+    /// From an oil whose curves are at hand.
+    pub fn of(oil: &Oil, curves: Curves, rules: &Rulebook, worn: bool) -> Self {
         let thin = Ready::of(curves.thin.as_ref().unwrap_or(&curves.new));
         let thick = Ready::of(&curves.ceiling());
         let stock = rules.base_stock(curves.base);
@@ -227,7 +231,7 @@ impl PreparedOil {
             Some(limit) => Some((None, limit.value.base())),
             None => stock.map(|s| (Some(s.continuous.base()), s.peak.base())),
         };
-        Ok(Self {
+        Self {
             lowest: curves.lowest.base().min(measured.unwrap_or(f64::INFINITY)),
             window_end: curves.window_end.map(Measure::base),
             pour,
@@ -245,7 +249,7 @@ impl PreparedOil {
             thin,
             thick,
             curves,
-        })
+        }
     }
 
     /// The ends of what is not known of its polymer, the worse last: permanent loss, and

@@ -342,6 +342,20 @@ fn note(sum: &mut Sum, end: End, margin: Margin, at: Option<At>) {
     }
 }
 
+/// Margins of the hot floors that judge, in VG steps, with the number of the demand.
+pub(super) fn floor_margins(
+    setting: &Setting,
+    oil: &PreparedOil,
+    variant: &Variant,
+) -> Vec<(f64, u16)> {
+    let mut doubts = Doubts::default();
+    let floors = setting.demands.iter();
+    let floors = floors.filter(|d| d.end == End::HotFloor && d.judges && d.applies_to(oil));
+    floors
+        .filter_map(|d| measure(d, oil, variant, &mut doubts).map(|f| (f.value, d.number)))
+        .collect()
+}
+
 /// A margin found, with the ambients at which it is not negative.
 struct Found {
     value: f64,

@@ -212,6 +212,14 @@ pub enum Shear {
     },
 }
 
+impl Shear {
+    /// The test, as written.
+    pub fn test(&self) -> Option<&str> {
+        let (Self::Points { test, .. } | Self::Loss { test, .. } | Self::Pssi { test, .. }) = self;
+        test.as_deref()
+    }
+}
+
 /// Base oil and polymer of a thickened oil, where stated.
 #[derive(Clone, Debug, Default, PartialEq)]
 pub struct Formulation {

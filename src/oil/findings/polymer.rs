@@ -71,13 +71,10 @@ fn named_polymer(found: &mut Vec<Finding>, oil: &Oil, rules: &Rulebook) {
 
 /// Tests are not interchangeable.
 fn test(found: &mut Vec<Finding>, oil: &Oil, rules: &Rulebook) {
-    let written = match &oil.shear {
-        Some(Shear::Points { test, .. } | Shear::Loss { test, .. } | Shear::Pssi { test, .. }) => {
-            test
-        }
-        None => return,
+    let Some(shear) = &oil.shear else {
+        return;
     };
-    let Some(written) = written else {
+    let Some(written) = shear.test() else {
         found.push(finding(
             "shear-test-unnamed",
             "the loss by shear is stated without its test".to_owned(),

@@ -67,6 +67,26 @@ pub static FRACTION: Law = Law {
     source: "ASTM D7152, solved for the fraction",
 };
 
+/// Polymer of a blend.
+pub static POLYMER: Law = Law {
+    name: "blend-polymer",
+    title: "Share by which the polymers of two oils thicken their blend",
+    formula: "ln(1 + P) = sum(x_i ln(1 + P_i)); the blend is held between its components",
+    range: "to first order in the concentration of the polymer, volume fractions",
+    source: "common practice: the logarithm of the relative viscosity rises with concentration",
+};
+
+/// Share by which polymers thicken a blend, each diluted to its fraction.
+///
+/// # Errors
+/// [`BlendError::Lengths`], [`BlendError::Fraction`], [`BlendError::Sum`].
+pub fn polymer(fractions: &[Ratio], shares: &[Ratio]) -> Result<Ratio, BlendError> {
+    check_fractions(fractions, shares.len())?;
+    let parts = fractions.iter().zip(shares);
+    let sum: f64 = parts.map(|(x, p)| x.base() * ln(1.0 + p.base())).sum();
+    Ok(number(exp(sum) - 1.0))
+}
+
 /// A blending rule.
 #[derive(Clone, Copy, Debug, Default, PartialEq, Eq)]
 pub enum Rule {

@@ -45,6 +45,15 @@ pub static SHEARED: Law = Law {
     source: "ASTM D6022, solved for the sheared viscosity",
 };
 
+/// The same share lost at every temperature.
+pub static UNIFORM: Law = Law {
+    name: "shear-uniform-loss",
+    title: "Viscosity after permanent shear, the same share lost at every temperature",
+    formula: "nu_sheared = nu (1 - PVL)",
+    range: "until base oil and polymer are known; holds to first order",
+    source: "common practice",
+};
+
 /// Why no shear figure follows.
 #[derive(Clone, Copy, Debug, PartialEq, thiserror::Error)]
 pub enum ShearError {
