@@ -8,6 +8,7 @@ mod kind;
 mod plain;
 
 use super::fields::Fields;
+use super::keys::Form;
 use super::overlay::{self, Overlay};
 use super::reader::Reader;
 use super::site::Scene;
@@ -105,6 +106,11 @@ fn part(
     fields: &Fields<'_>,
     scene: &Scene<'_, '_>,
 ) -> Option<Part> {
+    for slot in fields.in_file_order() {
+        if matches!(slot.key.form, Form::Label) {
+            slot.text(reader);
+        }
+    }
     let kind = kind(reader, fields, scene);
     let rule = rule(reader, fields, scene);
     let part_rise = fields.stated(reader, "part rise");

@@ -7,6 +7,7 @@ mod journal_table;
 mod problems;
 mod properties_film;
 mod properties_oil;
+mod reader;
 mod reference_film;
 mod reference_journal;
 mod reference_oil;
