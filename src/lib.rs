@@ -24,6 +24,7 @@ pub mod oil;
 pub mod problem;
 pub mod quantity;
 pub mod relation;
+pub mod report;
 pub mod results;
 pub mod source;
 pub mod suitability;

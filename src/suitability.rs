@@ -6,21 +6,25 @@
 //! allocation, and [`Suitability::assess`] allocates only for what it finds.
 
 mod card;
+mod compiled;
+mod declared;
 mod explain;
 mod mixing;
 mod need;
+mod need_text;
 mod truth;
 mod value;
 
 pub use card::{OilCard, PointCard};
-pub use need::Declared;
+pub use declared::Declared;
 pub use truth::Truth;
 
 use crate::model::facts::{OilFacts, PointFacts, Use};
 use crate::model::rulebook::{
     Basis, Caution, Clause, Confidence, Fact, Level, Rulebook, SuitabilityRule, WhenUnknown,
 };
-use card::Compiled;
+use compiled::Compiled;
+use std::cell::Cell;
 
 /// The engine, with the rules in the form it weighs them.
 pub struct Suitability<'r> {
@@ -111,7 +115,7 @@ impl<'r> Suitability<'r> {
     pub fn screen(&self, point: &PointCard<'_>, oil: &OilCard<'_>) -> Screen {
         let mut screen = Screen::default();
         let pair = self.pair(point, oil, Use::Fill);
-        for (place, rule) in self.compiled.live(point, oil) {
+        for (place, rule) in self.compiled.live(point, oil, false) {
             match pair.outcome(place, rule) {
                 Outcome::Fires(Level::Bars) => screen.barred = true,
                 Outcome::Fires(Level::Asks) | Outcome::Undecided => screen.conditions += 1,
@@ -140,7 +144,7 @@ impl<'r> Suitability<'r> {
     pub fn assess_use(&self, point: &PointCard<'_>, oil: &OilCard<'_>, how: Use) -> Eligibility {
         let mut found = Eligibility::default();
         let pair = self.pair(point, oil, how);
-        for (place, rule) in self.compiled.live(point, oil) {
+        for (place, rule) in self.compiled.live(point, oil, true) {
             match pair.outcome(place, rule) {
                 Outcome::Fires(level) => found.take(pair.fired(place, rule, level)),
                 Outcome::Undecided => pair.undecided(place, rule, &mut found),
@@ -193,6 +197,7 @@ impl<'r> Suitability<'r> {
                 oil: Some(oil),
                 how,
             },
+            answers: [const { Cell::new(None) }; 32],
         }
     }
 }
@@ -201,6 +206,8 @@ impl<'r> Suitability<'r> {
 pub struct Pair<'p> {
     compiled: &'p Compiled<'p>,
     context: value::Context<'p>,
+    /// Answers to the first questions on a pair; any beyond are worked out each time.
+    answers: [Cell<Option<Truth>>; 32],
 }
 
 /// What a rule comes to.
@@ -256,17 +263,31 @@ impl Pair<'_> {
 
     /// One clause: the better of what oil, point and pair say.
     fn clause(&self, place: usize) -> Truth {
-        let point = self.context.point.truths[place];
-        let oil = self.context.oil.map_or(Truth::False, |o| o.truths[place]);
-        let best = point.max(oil);
-        if best == Truth::True || !self.compiled.clauses[place].pair {
-            return best;
+        let point = self.context.point.said.truths[place];
+        let oil = self
+            .context
+            .oil
+            .map_or(Truth::False, |o| o.said.truths[place]);
+        let mut best = point.max(oil);
+        for question in &self.compiled.clauses[place].asks {
+            if best == Truth::True {
+                break;
+            }
+            best = best.max(self.answer(*question));
         }
-        let pairs = self.compiled.clauses[place].clause.any.iter();
-        pairs
-            .filter(|c| matches!(c.fact, Fact::Pair(_)))
-            .map(|c| self.context.condition(c))
-            .fold(best, Truth::max)
+        best
+    }
+
+    /// A question on the pair, worked out when it is first put.
+    fn answer(&self, question: usize) -> Truth {
+        let Some(known) = self.answers.get(question) else {
+            return self.context.condition(self.compiled.questions[question]);
+        };
+        known.get().unwrap_or_else(|| {
+            let truth = self.context.condition(self.compiled.questions[question]);
+            known.set(Some(truth));
+            truth
+        })
     }
 }
 

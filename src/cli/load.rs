@@ -47,7 +47,12 @@ impl Loaded {
 
     /// How many machines there are.
     pub fn machines(&self) -> usize {
-        let mut tags: Vec<&str> = self.site.points.iter().map(|p| p.machine.as_str()).collect();
+        let mut tags: Vec<&str> = self
+            .site
+            .points
+            .iter()
+            .map(|p| p.machine.as_str())
+            .collect();
         tags.dedup();
         tags.len()
     }
@@ -78,7 +83,9 @@ impl Loaded {
     /// A text that is not a range of temperatures.
     pub fn set_ambient(&mut self, session: &mut Session<'_>, text: &str) -> Result<(), Exit> {
         let range = ambient_range(text).ok_or_else(|| {
-            session.fail(&format!("--band {text} is not a range of temperatures\n  write  --band -25..40degC"));
+            session.fail(&format!(
+                "--band {text} is not a range of temperatures\n  write  --band -25..40degC"
+            ));
             Exit::Usage
         })?;
         for point in &mut self.site.points {
@@ -95,8 +102,12 @@ fn ambient_range(text: &str) -> Option<Between<ThermodynamicTemperature>> {
     let read = |t: &str| crate::quantity::parse::parse(Kind::Temperature, t).ok();
     let hi = read(high)?;
     let lo = read(low).or_else(|| read(&format!("{low} {}", hi.unit)))?;
-    let between = |r: crate::quantity::parse::Read| ThermodynamicTemperature::from_base(r.amount.base);
-    (lo.amount.base <= hi.amount.base).then(|| Between { lo: between(lo), hi: between(hi) })
+    let between =
+        |r: crate::quantity::parse::Read| ThermodynamicTemperature::from_base(r.amount.base);
+    (lo.amount.base <= hi.amount.base).then(|| Between {
+        lo: between(lo),
+        hi: between(hi),
+    })
 }
 
 /// The user's files, through the host.
@@ -127,8 +138,14 @@ impl Files for HostFiles<'_> {
     }
 
     fn text(&self, path: &str) -> Result<String, Unread> {
-        let unread = |why: String| Unread { path: path.to_owned(), why };
-        let bytes = self.0.read(Path::new(path)).map_err(|e| unread(e.to_string()))?;
+        let unread = |why: String| Unread {
+            path: path.to_owned(),
+            why,
+        };
+        let bytes = self
+            .0
+            .read(Path::new(path))
+            .map_err(|e| unread(e.to_string()))?;
         String::from_utf8(bytes).map_err(|_| unread("it is not UTF-8 text".to_owned()))
     }
 }
@@ -156,11 +173,16 @@ impl Session<'_> {
                 Err(_) => return Err(self.told(&sources, &problems)),
             }
         }
-        let overlays: Vec<_> =
-            settings.iter().flat_map(|(targets, read)| read.over(targets)).collect();
+        let overlays: Vec<_> = settings
+            .iter()
+            .flat_map(|(targets, read)| read.over(targets))
+            .collect();
         let calculated: Vec<&str> = CALCULATED.iter().map(|rule| rule.0).collect();
-        let with =
-            With { rules: &rules, bearings: DimensionTable::built_in(), calculated: &calculated };
+        let with = With {
+            rules: &rules,
+            bearings: DimensionTable::built_in(),
+            calculated: &calculated,
+        };
         let site = reader::load(&sources, &trees, &with, &overlays, &mut problems);
         drop(overlays);
         if let Ok(site) = &site {
@@ -175,7 +197,14 @@ impl Session<'_> {
             Ok(site) if problems.failed().is_none() => {
                 self.warn(&sources, &problems);
                 let fingerprint = hex(&hash.finalize());
-                Ok(Loaded { site, rules, sources, fingerprint, problems, folder })
+                Ok(Loaded {
+                    site,
+                    rules,
+                    sources,
+                    fingerprint,
+                    problems,
+                    folder,
+                })
             }
             _ => Err(self.told(&sources, &problems)),
         }
@@ -255,7 +284,9 @@ impl Session<'_> {
                     .map(|name| (folder.join(&name), name))
                     .collect()
             } else {
-                yaml.into_iter().map(|name| (PathBuf::from(&name), name)).collect()
+                yaml.into_iter()
+                    .map(|name| (PathBuf::from(&name), name))
+                    .collect()
             };
             if files.is_empty() && *kind == FileKind::Site {
                 problems.error(reader::missing(*kind, &shown(folder)));
@@ -290,7 +321,10 @@ impl Session<'_> {
     }
 
     fn look(&self) -> render::Look {
-        render::Look { width: self.host.width().clamp(60, 120), colour: self.colour() }
+        render::Look {
+            width: self.host.width().clamp(60, 120),
+            colour: self.colour(),
+        }
     }
 
     /// Tells problems of a run that cannot go on.
@@ -350,12 +384,18 @@ impl Session<'_> {
             Some(text) => match steps(&text) {
                 Some(steps) => Some(steps),
                 None => {
-                    self.fail(&format!("--reserve {text} is not a number of steps\n  write  --reserve 0.5"));
+                    self.fail(&format!(
+                        "--reserve {text} is not a number of steps\n  write  --reserve 0.5"
+                    ));
                     return Err(Exit::Usage);
                 }
             },
         };
-        Ok(Settings { reserve, worn, units: self.units() })
+        Ok(Settings {
+            reserve,
+            worn,
+            units: self.units(),
+        })
     }
 
     /// Points by tag, address or pattern; all where none is given.
@@ -371,7 +411,11 @@ impl Session<'_> {
                 .filter(|p| matches(tag, &p.machine) || matches(tag, &p.address()))
                 .collect();
             if matching.is_empty() {
-                return Err(self.no_match("machine", tag, site.points.iter().map(|p| p.machine.as_str())));
+                return Err(self.no_match(
+                    "machine",
+                    tag,
+                    site.points.iter().map(|p| p.machine.as_str()),
+                ));
             }
             for point in matching {
                 if !found.iter().any(|f| f.address() == point.address()) {
@@ -423,7 +467,11 @@ impl Session<'_> {
         let mut all: Vec<&str> = known.collect();
         all.dedup();
         let n = all.len();
-        let list = if what == "machine" { "  filmwright need --list" } else { "" };
+        let list = if what == "machine" {
+            "  filmwright need --list"
+        } else {
+            ""
+        };
         let plural = if n == 1 { "" } else { "s" };
         self.fail(&format!(
             "nothing weighed  [nothing-to-weigh]\n  no {what} matches '{name}'{hint}  {n} {what}{plural}{list}"
@@ -444,7 +492,9 @@ impl Session<'_> {
 fn steps(text: &str) -> Option<f64> {
     let read = crate::quantity::parse::parse(Kind::VgStep, text)
         .or_else(|_| crate::quantity::parse::parse(Kind::Ratio, text));
-    read.ok().map(|r| r.amount.base).filter(|s| (0.0..=10.0).contains(s))
+    read.ok()
+        .map(|r| r.amount.base)
+        .filter(|s| (0.0..=10.0).contains(s))
 }
 
 /// Shell-style patterns: `*` for any letters, `?` for one.
@@ -480,7 +530,13 @@ fn demo(sources: &mut SourceSet, problems: &mut Problems, hash: &mut Sha256) -> 
         let kind = FileKind::ALL.iter().find(|k| k.default_name() == name);
         if let Some(kind) = kind {
             let path = format!("<builtin>/demo/{name}");
-            trees.push(reader::take(sources, *kind, &path, file.text.as_bytes(), problems));
+            trees.push(reader::take(
+                sources,
+                *kind,
+                &path,
+                file.text.as_bytes(),
+                problems,
+            ));
         }
     }
     trees
@@ -507,7 +563,11 @@ fn is_yaml(name: &str) -> bool {
 
 fn shown(folder: &Path) -> String {
     let text = folder.to_string_lossy().replace('\\', "/");
-    if text.is_empty() { ".".to_owned() } else { text }
+    if text.is_empty() {
+        ".".to_owned()
+    } else {
+        text
+    }
 }
 
 #[cfg(test)]

@@ -20,7 +20,11 @@ pub struct Session<'h> {
 impl<'h> Session<'h> {
     /// A run.
     pub fn new(host: &'h mut dyn Host, shared: Shared) -> Self {
-        Self { host, shared, notes: Vec::new() }
+        Self {
+            host,
+            shared,
+            notes: Vec::new(),
+        }
     }
 
     /// Units of the output.
@@ -38,7 +42,11 @@ impl<'h> Session<'h> {
 
     /// Columns of the output.
     pub fn width(&self) -> usize {
-        if self.shared.out.is_some() { 100 } else { self.host.width().max(60) }
+        if self.shared.out.is_some() {
+            100
+        } else {
+            self.host.width().max(60)
+        }
     }
 
     /// Whether the output is coloured.
@@ -47,7 +55,10 @@ impl<'h> Session<'h> {
             When::Always => true,
             When::Never => false,
             When::Auto => {
-                let quiet = self.host.variable("NO_COLOR").is_some_and(|v| !v.is_empty())
+                let quiet = self
+                    .host
+                    .variable("NO_COLOR")
+                    .is_some_and(|v| !v.is_empty())
                     || self.host.variable("TERM").as_deref() == Some("dumb");
                 !quiet && self.host.err_is_terminal()
             }
@@ -62,7 +73,10 @@ impl<'h> Session<'h> {
         if let Some(reviewed) = reviewed {
             return reviewed.to_owned();
         }
-        let epoch = self.host.variable("SOURCE_DATE_EPOCH").and_then(|v| v.trim().parse().ok());
+        let epoch = self
+            .host
+            .variable("SOURCE_DATE_EPOCH")
+            .and_then(|v| v.trim().parse().ok());
         match epoch {
             Some(seconds) => super::host::date_of(seconds),
             None => self.host.today(),
@@ -118,7 +132,9 @@ impl<'h> Session<'h> {
 
     /// Whether a file carries the program's mark in its first or last kilobyte.
     fn is_ours(&self, path: &Path) -> bool {
-        let Ok(bytes) = self.host.read(path) else { return false };
+        let Ok(bytes) = self.host.read(path) else {
+            return false;
+        };
         let mark = b"filmwright";
         let head = &bytes[..bytes.len().min(4096)];
         let tail = &bytes[bytes.len().saturating_sub(1024)..];
@@ -128,8 +144,11 @@ impl<'h> Session<'h> {
 
     /// A table in the dialect asked for.
     pub fn table(&mut self, table: &Table) -> Exit {
-        let dialect =
-            if self.shared.csv_excel { Dialect::Spreadsheet } else { Dialect::Plain };
+        let dialect = if self.shared.csv_excel {
+            Dialect::Spreadsheet
+        } else {
+            Dialect::Plain
+        };
         self.result(&write(table, dialect))
     }
 

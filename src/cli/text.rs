@@ -2,8 +2,8 @@
 
 use super::Marks;
 use crate::judge::{Band, Verdict};
+use crate::quantity::Kind;
 use crate::quantity::show::{Toward, Units, fixed, round_to, unit_of};
-use crate::quantity::{Kind};
 
 /// One column of a table.
 #[derive(Clone, Copy, Debug)]
@@ -19,12 +19,20 @@ pub struct Column {
 impl Column {
     /// A column of text.
     pub const fn text(heading: &'static str, keep: u8) -> Self {
-        Self { heading, right: false, keep }
+        Self {
+            heading,
+            right: false,
+            keep,
+        }
     }
 
     /// A column of numbers.
     pub const fn number(heading: &'static str, keep: u8) -> Self {
-        Self { heading, right: true, keep }
+        Self {
+            heading,
+            right: true,
+            keep,
+        }
     }
 }
 
@@ -47,7 +55,10 @@ pub fn table(columns: &[Column], rows: &[Vec<String>], width: usize) -> String {
             .iter()
             .map(|i| if Some(*i) == last { columns[*i].heading.chars().count() } else { widths[*i] } + 2)
             .sum();
-        let droppable = shown.iter().filter(|i| columns[**i].keep > 0).min_by_key(|i| columns[**i].keep);
+        let droppable = shown
+            .iter()
+            .filter(|i| columns[**i].keep > 0)
+            .min_by_key(|i| columns[**i].keep);
         match droppable.copied() {
             Some(drop) if total > width => shown.retain(|i| *i != drop),
             _ => break,
@@ -96,7 +107,9 @@ pub fn verdict(verdict: Verdict, marks: Marks) -> String {
         (Marks::Plain, Verdict::Tight) => "####|  ",
         (Marks::Plain, Verdict::Open) => "- - |- -",
         (Marks::Plain, Verdict::Fails) => "##  |  ",
-        (Marks::Drawn, Verdict::Holds) => "\u{2580}\u{2580}\u{2580}\u{2580}\u{2502}\u{2580}\u{2580}",
+        (Marks::Drawn, Verdict::Holds) => {
+            "\u{2580}\u{2580}\u{2580}\u{2580}\u{2502}\u{2580}\u{2580}"
+        }
         (Marks::Drawn, Verdict::Tight) => "\u{2580}\u{2580}\u{2580}\u{2580}\u{2502}  ",
         (Marks::Drawn, Verdict::Open) => "\u{254c}\u{254c}\u{254c}\u{254c}\u{2502}\u{254c}\u{254c}",
         (Marks::Drawn, Verdict::Fails) => "\u{2580}\u{2580}  \u{2502}  ",
@@ -113,7 +126,12 @@ pub fn band(band: Band, units: Units) -> String {
     let end = |t: f64, toward| fixed(round_to(unit.from_base(t), 0, toward), 0, Toward::Nearest);
     match (band.low_end(), band.high_end()) {
         (Some(low), Some(high)) => {
-            format!("{}..{} {}", end(low, Toward::Up), end(high, Toward::Down), unit.name)
+            format!(
+                "{}..{} {}",
+                end(low, Toward::Up),
+                end(high, Toward::Down),
+                unit.name
+            )
         }
         (Some(low), None) => format!("from {} {}", end(low, Toward::Up), unit.name),
         (None, Some(high)) => format!("to {} {}", end(high, Toward::Down), unit.name),
@@ -149,8 +167,16 @@ mod tests {
 
     #[test]
     fn the_least_important_column_goes_first() {
-        let columns = [Column::text("oil", 0), Column::number("hot", 2), Column::text("band", 1)];
-        let rows = vec![vec!["SG-220".to_owned(), "+0.67".to_owned(), "-22..42 degC".to_owned()]];
+        let columns = [
+            Column::text("oil", 0),
+            Column::number("hot", 2),
+            Column::text("band", 1),
+        ];
+        let rows = vec![vec![
+            "SG-220".to_owned(),
+            "+0.67".to_owned(),
+            "-22..42 degC".to_owned(),
+        ]];
         assert!(table(&columns, &rows, 80).contains("-22..42 degC"));
         let narrow = table(&columns, &rows, 18);
         assert!(!narrow.contains("-22") && narrow.contains("+0.67"));
@@ -158,7 +184,10 @@ mod tests {
 
     #[test]
     fn bands_are_rounded_inwards() {
-        let b = Band { low: 250.22, high: 315.41 };
+        let b = Band {
+            low: 250.22,
+            high: 315.41,
+        };
         assert_eq!(band(b, Units::Si), "-22..42 degC");
         assert_eq!(band(Band::NOWHERE, Units::Si), "nowhere");
         assert_eq!(band(Band::OPEN, Units::Si), "not limited");

@@ -91,12 +91,22 @@ fn one<R: Recorder>(
         limit,
         limit_step: Some(limit_step),
         rule: format!("stated-{}", key.replace(' ', "-")),
-        says: format!("{key} stated, {whose}"),
+        says: stated_by(key, whose),
         source,
         whose,
         confidence,
         ..cx.blank_at(part, at, step)
     });
+}
+
+/// `the maker's start limit`, `measured floor`, `floor, nobody says whose`.
+fn stated_by(key: &str, whose: Whose) -> String {
+    match whose {
+        Whose::Maker => format!("the maker's {key}"),
+        Whose::Nameplate => format!("{key} on the nameplate"),
+        Whose::NotStated => format!("{key} stated, nobody says whose"),
+        other => format!("{other} {key}"),
+    }
 }
 
 /// The grade the maker names: a floor at 40 °C, the grade's lower limit.
@@ -279,7 +289,7 @@ pub fn ceiling<R: Recorder>(cx: &mut Context<'_, '_, R>) {
             limit: Limit::Temperature(limit.value.base()),
             limit_step: Some(known.step),
             rule: "stated-oil-limit".to_owned(),
-            says: format!("oil limit stated, {}", limit.origin.whose),
+            says: stated_by("oil limit", limit.origin.whose),
             source: limit
                 .origin
                 .note

@@ -17,6 +17,7 @@ pub use fault::RuleFault;
 use crate::assets::{Layer, TextFile};
 use crate::model::rulebook::{Rulebook, Serving};
 use fault::Faults;
+use rayon::iter::{IntoParallelRefIterator, ParallelIterator};
 use serde_yaml::Value;
 use std::collections::BTreeSet;
 
@@ -32,14 +33,16 @@ pub fn rulebook(layers: &[Layer]) -> Result<Rulebook, Vec<RuleFault>> {
     let mut book = Rulebook::default();
     for layer in layers {
         let mut seen = BTreeSet::new();
-        for file in &layer.files {
+        // reading YAML is most of the work, and no file depends on another
+        let read: Vec<Read<'_>> = layer.files.par_iter().map(read).collect();
+        for (file, read) in layer.files.iter().zip(read) {
             let mut filling = Filling {
                 book: &mut book,
                 seen: &mut seen,
                 faults: &faults,
                 file,
             };
-            filling.file();
+            filling.file(&read);
         }
     }
     book.serving = Serving::of(&book.classes);
@@ -53,6 +56,35 @@ pub fn rulebook(layers: &[Layer]) -> Result<Rulebook, Vec<RuleFault>> {
     }
 }
 
+/// A file as far as it can be read without the others.
+enum Read<'f> {
+    /// A YAML file.
+    Yaml(Value),
+    /// The front matter and the text of a Markdown file.
+    Markdown(Value, &'f str),
+    /// Neither: what is wrong and what to write.
+    Faulty(String, &'static str),
+}
+
+fn read(file: &TextFile) -> Read<'_> {
+    let (text, body) = if is_markdown(&file.path) {
+        match front_matter(&file.text) {
+            Some((head, body)) => (head, Some(body)),
+            None => return Read::Faulty("no front matter".into(), MARKDOWN_FORM),
+        }
+    } else {
+        (file.text.as_str(), None)
+    };
+    match (serde_yaml::from_str(text), body) {
+        (Ok(value), None) => Read::Yaml(value),
+        (Ok(value), Some(body)) => Read::Markdown(value, body),
+        (Err(e), None) => Read::Faulty(format!("not readable as YAML: {e}"), YAML_FORM),
+        (Err(e), Some(_)) => {
+            Read::Faulty(format!("front matter is not readable: {e}"), MARKDOWN_FORM)
+        }
+    }
+}
+
 /// One file being read into the rulebook.
 struct Filling<'a> {
     book: &'a mut Rulebook,
@@ -63,11 +95,11 @@ struct Filling<'a> {
 }
 
 impl Filling<'_> {
-    fn file(&mut self) {
-        if is_markdown(&self.file.path) {
-            self.caution();
-        } else {
-            self.yaml();
+    fn file(&mut self, read: &Read<'_>) {
+        match read {
+            Read::Yaml(value) => self.yaml(value),
+            Read::Markdown(head, body) => kinds::caution(self, head, body),
+            Read::Faulty(what, write) => self.fault(what, *write),
         }
     }
 
@@ -75,11 +107,7 @@ impl Filling<'_> {
         self.faults.add(&self.file.path, None, what, write);
     }
 
-    fn yaml(&mut self) {
-        let value: Value = match serde_yaml::from_str(&self.file.text) {
-            Ok(value) => value,
-            Err(e) => return self.fault(format!("not readable as YAML: {e}"), YAML_FORM),
-        };
+    fn yaml(&mut self, value: &Value) {
         let Some(map) = value.as_mapping() else {
             return self.fault("nothing in it", YAML_FORM);
         };
@@ -110,19 +138,10 @@ impl Filling<'_> {
             );
         }
     }
-
-    fn caution(&mut self) {
-        let form = "--- on the first line, then id, title, applies, source, basis, confidence, then --- and the text";
-        let Some((head, body)) = front_matter(&self.file.text) else {
-            return self.fault("no front matter", form);
-        };
-        match serde_yaml::from_str::<Value>(head) {
-            Ok(value) => kinds::caution(self, &value, body),
-            Err(e) => self.fault(format!("front matter is not readable: {e}"), form),
-        }
-    }
 }
 
+const MARKDOWN_FORM: &str = "--- on the first line, then id, title, kind, applies, source, basis, \
+    confidence, then --- and the text";
 const YAML_FORM: &str = "file: KIND 1, then entries: and a list";
 
 fn is_markdown(path: &str) -> bool {

@@ -129,6 +129,51 @@ impl Rulebook {
             .map_or(source, |entry| entry.citation.as_str())
     }
 
+    /// Every entry of every table with the kind of its file, in the order of the tables.
+    pub fn entries(&self) -> Vec<(&'static str, &dyn Entry)> {
+        let mut all: Vec<(&'static str, &dyn Entry)> = Vec::new();
+        macro_rules! take {
+            ($($table:ident: $kind:literal),+ $(,)?) => {$(
+                all.extend(self.$table.iter().map(|e| ($kind, e as &dyn Entry)));
+            )+};
+        }
+        take! {
+            sources: "sources",
+            components: "components",
+            base_stocks: "base stocks",
+            seals: "seals",
+            paints: "paints",
+            mixing: "mixing",
+            residuals: "residuals",
+            life: "life",
+            crossings: "grade crossings",
+            classes: "classes",
+            needs: "class needs",
+            suitability: "suitability",
+            start_limits: "start limits",
+            pour_margins: "pour margins",
+            heaters: "heaters",
+            air_release: "air release",
+            used_oil: "used-oil limits",
+            cleanliness: "cleanliness",
+            wear: "wear",
+            diagnosis: "diagnosis",
+            sampling: "sampling",
+            changes: "change intervals",
+            thickeners: "thickeners",
+            grease_mixing: "grease mixing",
+            nlgi: "nlgi",
+            grease_code: "grease code",
+            grease_speeds: "grease speeds",
+            grease_speed_limits: "grease speed limits",
+            grease_factors: "grease factors",
+            grease_fills: "grease fills",
+            advice: "advice",
+            cautions: "cautions",
+        }
+        all
+    }
+
     /// Why an oil that declares one class serves where another is wanted.
     pub fn serves(&self, declared: &str, wanted: &str) -> Option<&Because> {
         let declared = self.class_id(declared)?;

@@ -22,10 +22,12 @@ pub trait Word: Copy + Eq + Ord + 'static {
             .find(|w| w.spellings().iter().any(|s| s.eq_ignore_ascii_case(text)))
     }
 
+    /// Its place in the list.
+    fn place(self) -> usize;
+
     /// Its place in the list as one bit of a set; lists hold at most 64 words.
     fn bit(self) -> u64 {
-        let place = Self::ALL.iter().position(|w| *w == self).unwrap_or(0);
-        1 << place
+        1 << self.place()
     }
 }
 
@@ -65,6 +67,10 @@ macro_rules! words {
 
             fn spellings(self) -> &'static [&'static str] {
                 match self { $(Self::$variant => &[$word $(, $also)*]),+ }
+            }
+
+            fn place(self) -> usize {
+                self as usize
             }
         }
 

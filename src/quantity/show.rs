@@ -130,6 +130,7 @@ pub fn in_unit(amount: Amount, unit: &Unit, toward: Toward) -> String {
             trim_zero(&significant(value, 4, toward))
         }
         Kind::VgStep => margin(value, 2),
+        _ if is_short(value) => trim_zero(&significant(value, 4, Toward::Nearest)),
         _ => trim_zero(&significant(value, 3, toward)),
     };
     if unit.name.is_empty() {
@@ -137,6 +138,20 @@ pub fn in_unit(amount: Amount, unit: &Unit, toward: Toward) -> String {
     } else {
         format!("{number} {}", unit.name)
     }
+}
+
+/// Whether a value is written in full with four digits: a stated 1725 stays 1725.
+fn is_short(value: f64) -> bool {
+    if value == 0.0 || !value.is_finite() {
+        return true;
+    }
+    #[expect(
+        clippy::cast_possible_truncation,
+        reason = "lg of a finite f64 is within ±324"
+    )]
+    let decimals = 3 - lg(value.abs()).floor() as i32;
+    let rounded = round_to(value, decimals, Toward::Nearest);
+    (rounded - value).abs() <= 1e-12 * value.abs()
 }
 
 /// The same with the unit as people print it: `40.8 mm²/s`.

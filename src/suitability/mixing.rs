@@ -21,10 +21,6 @@ pub(super) struct Tables {
     glasses: Vec<Option<u64>>,
 }
 
-fn place<W: Word>(word: W) -> usize {
-    word.bit().trailing_zeros() as usize
-}
-
 fn bits<W: Word>(words: &[W]) -> u64 {
     words.iter().fold(0, |all, w| all | w.bit())
 }
@@ -71,7 +67,7 @@ impl Tables {
         let (Some(oil), Some(now)) = (oil.base, now.base) else {
             return Value::Unknown;
         };
-        as_value(self.mixing[place(oil)].get(place(now)).copied().flatten())
+        as_value(self.mixing[oil.place()].get(now.place()).copied().flatten())
     }
 
     /// The worst mark of the seals in this oil.
@@ -79,10 +75,10 @@ impl Tables {
         let (Some(seals), Some(base)) = (&point.seals, oil.base) else {
             return Value::Unknown;
         };
-        let marks = &self.seals[place(base)];
+        let marks = &self.seals[base.place()];
         let mut worst = Some(Mark::Good);
         for seal in seals {
-            let found = marks.get(place(*seal)).copied().flatten();
+            let found = marks.get(seal.place()).copied().flatten();
             worst = match (worst, found) {
                 (Some(Mark::Bad), _) | (_, Some(Mark::Bad)) => Some(Mark::Bad),
                 (Some(worst), Some(found)) => Some(worst.max(found)),
@@ -104,7 +100,7 @@ impl Tables {
 }
 
 fn attacked<'v, W: Word>(what: Option<W>, by: &[Option<u64>], oil: &OilFacts) -> Value<'v> {
-    match (what, oil.base.and_then(|base| by[place(base)])) {
+    match (what, oil.base.and_then(|base| by[base.place()])) {
         (Some(what), Some(bits)) => {
             let attacked = bits & what.bit() != 0;
             Value::Bits(if attacked { Mark::Bad } else { Mark::Good }.bit())

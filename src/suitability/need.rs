@@ -1,82 +1,16 @@
 //! Class needs: what the maker or the duty asks for, and what a component implies.
 
 use super::card::{OilCard, PointCard};
+use super::compiled::Compiled;
+use super::declared::{ClassSet, Declared};
 use super::mixing::Tables;
+use super::need_text::{declared_text, need_text};
 use super::truth::Truth;
 use super::value::Context;
 use super::{FactGap, Finding};
-use crate::model::facts::{Additive, OilFacts, Use};
-use crate::model::oil::OilKind;
+use crate::model::facts::Use;
 use crate::model::rulebook::class::{families, plain};
-use crate::model::rulebook::{Basis, Confidence, Entry, Level, Need, Rulebook};
-use crate::model::word::Word;
-
-/// Classes of the rulebook as a set.
-#[derive(Clone, Debug, Default, PartialEq, Eq)]
-struct ClassSet(Vec<u64>);
-
-impl ClassSet {
-    fn insert(&mut self, place: usize) {
-        if self.0.len() <= place / 64 {
-            self.0.resize(place / 64 + 1, 0);
-        }
-        self.0[place / 64] |= 1 << (place % 64);
-    }
-
-    fn meets(&self, other: &Self) -> bool {
-        self.0.iter().zip(&other.0).any(|(a, b)| a & b != 0)
-    }
-}
-
-/// What an oil declares, ready to be held against needs.
-#[derive(Clone, Debug, PartialEq)]
-pub struct Declared {
-    tokens: ClassSet,
-    /// As written, for grades the rulebook has no entry of its own for.
-    literals: Vec<String>,
-    any_class: bool,
-    additives: Option<usize>,
-    grease: bool,
-}
-
-impl Declared {
-    pub(super) fn of(book: &Rulebook, facts: &OilFacts, classes: &[String]) -> Self {
-        let mut tokens = ClassSet::default();
-        let words = facts
-            .additives
-            .iter()
-            .flatten()
-            .map(|a: &Additive| a.word());
-        let food = facts.food_class.map(Word::word);
-        let environment = facts.environment.map(Word::word);
-        for id in words.chain(food).chain(environment) {
-            book.classes
-                .place(id)
-                .into_iter()
-                .for_each(|p| tokens.insert(p));
-        }
-        for id in classes {
-            book.classes
-                .place(id)
-                .into_iter()
-                .for_each(|p| tokens.insert(p));
-        }
-        Self {
-            tokens,
-            literals: facts.classes.iter().map(|c| plain(c)).collect(),
-            any_class: !facts.classes.is_empty(),
-            additives: facts
-                .additives
-                .as_ref()
-                .map(std::collections::BTreeSet::len),
-            grease: facts.kind == Some(OilKind::Grease),
-        }
-    }
-
-    fn anything(&self) -> bool {
-        self.any_class || self.additives.is_some()
-    }
-}
+use crate::model::rulebook::{Confidence, Entry, Level, Need, Rulebook};
 
 /// One need of a point.
 #[derive(Clone, Debug, PartialEq)]
@@ -84,6 +18,9 @@ pub(super) struct Want {
     whose: Whose,
     accept: ClassSet,
     leave: ClassSet,
+    /// Whether every class that serves carries an additive family, so that an oil stated to have
+    /// no additives cannot be one.
+    carries: bool,
 }
 
 #[derive(Clone, Debug, PartialEq)]
@@ -94,18 +31,17 @@ enum Whose {
     Implied(usize),
 }
 
+/// A class or an additive family asked for by name.
 #[derive(Clone, Debug, PartialEq)]
-struct Asked {
-    written: String,
+pub(super) struct Asked {
+    pub(super) written: String,
     plain: String,
     /// The class it means, where the rulebook knows one.
     class: Option<String>,
     /// Whether it is an additive family.
     family: bool,
-    /// Whether that class carries an additive family, so that an oil without any cannot be it.
-    carries: bool,
     /// Whether it is a numbered grade, which only the same number meets.
-    numbered: bool,
+    pub(super) numbered: bool,
 }
 
 /// How an oil answers a need.
@@ -115,52 +51,45 @@ pub(super) struct Answer {
     how: How,
 }
 
+/// How the classes of an oil stand to a need.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
-enum How {
+pub(super) enum How {
+    /// One of them serves.
     Met,
+    /// One of them may serve, if somebody allows it.
     Leave,
+    /// None of them serves.
     Short,
+    /// Nothing is declared.
     Undeclared,
 }
 
 impl Want {
-    pub(super) fn of_point(book: &Rulebook, tables: &Tables, point: &PointCard<'_>) -> Vec<Self> {
+    pub(super) fn of_point(
+        book: &Rulebook,
+        compiled: &Compiled<'_>,
+        point: &PointCard<'_>,
+    ) -> Vec<Self> {
         let asked: Vec<Asked> = point
             .facts
             .asks_for
             .iter()
             .map(|written| Asked::of(book, written))
             .collect();
-        let implied: Vec<usize> = (0..book.needs.len())
-            .filter(|place| {
-                book.needs.at(*place).is_some_and(|need| {
-                    applies(book, tables, point, need)
-                        && !asked.iter().any(|a| a.replaces(book, need))
-                })
-            })
+        let replaced = |need: &Need| asked.iter().any(|a| a.replaces(book, need));
+        let implied: Vec<Self> = book
+            .needs
+            .iter()
+            .enumerate()
+            .filter(|(_, need)| applies(book, &compiled.tables, point, need) && !replaced(need))
+            .map(|(place, _)| compiled.needs.implied[place].clone())
             .collect();
-        let asked = asked.into_iter().map(|asked| Self {
-            accept: asked.class.iter().fold(ClassSet::default(), |set, class| {
-                with_servers(set, book, class)
-            }),
-            leave: ClassSet::default(),
-            whose: Whose::Asked(asked),
-        });
-        let implied = implied.into_iter().filter_map(|place| {
-            let need = book.needs.at(place)?;
-            let servers = |classes: &[String]| {
-                let none = ClassSet::default();
-                classes
-                    .iter()
-                    .fold(none, |set, c| with_servers(set, book, c))
-            };
-            Some(Self {
-                whose: Whose::Implied(place),
-                accept: servers(&need.served_by),
-                leave: servers(&need.with_leave),
-            })
-        });
-        asked.chain(implied).collect()
+        let mut wants: Vec<Self> = asked
+            .into_iter()
+            .map(|asked| compiled.needs.asked(book, asked))
+            .collect();
+        wants.extend(implied);
+        wants
     }
 
     pub(super) fn answer(&self, book: &Rulebook, oil: &OilCard<'_>) -> Answer {
@@ -169,7 +98,7 @@ impl Want {
             How::Met
         } else {
             match &self.whose {
-                Whose::Asked(asked) => asked.answer(&self.accept, has),
+                Whose::Asked(asked) => asked.answer(self, has),
                 Whose::Implied(_) => self.implied(has),
             }
         };
@@ -195,7 +124,7 @@ impl Want {
             How::Met
         } else if self.leave.meets(&has.tokens) {
             How::Leave
-        } else if has.any_class {
+        } else if has.any_class || (has.bare && self.carries) {
             How::Short
         } else {
             How::Undeclared
@@ -238,16 +167,6 @@ impl Want {
     }
 }
 
-struct Text {
-    rule: String,
-    title: String,
-    why: String,
-    act: String,
-    source: Vec<String>,
-    basis: Basis,
-    confidence: Confidence,
-}
-
 impl Asked {
     fn of(book: &Rulebook, written: &str) -> Self {
         let class = book.class_id(written).map(str::to_owned);
@@ -256,9 +175,6 @@ impl Asked {
         Self {
             written: written.to_owned(),
             family: entry.is_some_and(crate::model::rulebook::Class::is_family),
-            carries: class
-                .as_ref()
-                .is_some_and(|id| families(id, &book.serving, &book.classes).next().is_some()),
             numbered: plain.starts_with("SAE "),
             plain,
             class,
@@ -271,100 +187,23 @@ impl Asked {
         class.is_some_and(|class| !class.is_family() && class.group == need.group)
     }
 
-    fn answer(&self, accept: &ClassSet, has: &Declared) -> How {
-        let named = has.literals.contains(&self.plain);
-        let served = accept.meets(&has.tokens);
-        match (self.numbered, named, served) {
-            (_, true, _) | (false, _, true) => return How::Met,
-            // the same scale, another number: viscosity decides, and the maker
-            (true, false, true) => return How::Leave,
-            _ => {}
+    fn answer(&self, want: &Want, has: &Declared) -> How {
+        if has.literals.contains(&self.plain) {
+            return How::Met;
         }
-        let none_at_all = has.additives == Some(0) && self.carries;
-        let family_left_out = self.family && has.additives.is_some();
-        if family_left_out || none_at_all || (has.any_class && self.class.is_some()) {
+        let stated = has.families.as_ref();
+        let left_out = self.family && stated.is_some_and(|stated| !want.accept.meets(stated));
+        if want.accept.meets(&has.tokens) {
+            // the same scale with another number, or a class that may carry the family beside a
+            // list of additives that does not name it: viscosity or the maker decides
+            let leave = self.numbered || left_out;
+            return if leave { How::Leave } else { How::Met };
+        }
+        if left_out || (has.bare && want.carries) || (has.any_class && self.class.is_some()) {
             How::Short
         } else {
             How::Undeclared
         }
-    }
-
-    fn text(&self, oil: &OilCard<'_>, how: How) -> Text {
-        let act = match how {
-            How::Leave => format!(
-                "ask the maker whether {} is meant to the number",
-                self.written
-            ),
-            How::Undeclared => {
-                format!(
-                    "ask the supplier whether {} meets {}",
-                    oil.facts.id, self.written
-                )
-            }
-            How::Short | How::Met => format!("an oil that declares {}", self.written),
-        };
-        Text {
-            rule: "class-asked".into(),
-            title: format!("{} asked for", self.written),
-            why: match how {
-                How::Short => "none of it serves".into(),
-                _ => "whether it serves is not known".into(),
-            },
-            act,
-            source: vec!["the point's own record".into()],
-            basis: Basis::Seen,
-            confidence: Confidence::High,
-        }
-    }
-}
-
-fn need_text(need: &Need, oil: &OilCard<'_>, how: How) -> Text {
-    Text {
-        rule: need.id.clone(),
-        title: need.title.clone(),
-        why: match how {
-            How::Short => format!(
-                "none of {} is among them; {}",
-                list(&need.served_by),
-                need.why
-            ),
-            How::Leave => format!("it may serve with leave; {}", need.why),
-            How::Undeclared | How::Met => need.why.clone(),
-        },
-        act: match how {
-            How::Undeclared => format!(
-                "ask the supplier which of {} {} meets",
-                list(&need.served_by),
-                oil.facts.id
-            ),
-            How::Short if need.level == Level::Bars => {
-                format!("an oil that declares one of {}", list(&need.served_by))
-            }
-            _ => need.act.clone(),
-        },
-        source: need.provenance.source.clone(),
-        basis: need.provenance.basis,
-        confidence: need.provenance.confidence,
-    }
-}
-
-fn list(classes: &[String]) -> String {
-    classes.join(", ")
-}
-
-fn declared_text(oil: &OilCard<'_>) -> String {
-    let facts = oil.facts;
-    let additives: Vec<&str> = facts.additives.iter().flatten().map(|a| a.word()).collect();
-    let id = &facts.id;
-    match (facts.classes.is_empty(), &facts.additives) {
-        (false, _) => format!("{id} declares {}", list(&facts.classes)),
-        (true, Some(_)) if additives.is_empty() => {
-            format!("{id} declares no class and has no additives")
-        }
-        (true, Some(_)) => {
-            format!("{id} declares no class, additives {}", additives.join(", "))
-        }
-        (true, None) => format!("{id} declares neither class nor additives"),
     }
 }
 
@@ -385,19 +224,76 @@ fn applies(book: &Rulebook, tables: &Tables, point: &PointCard<'_>, need: &Need)
     named || (!need.when.is_empty() && context.all(&need.when) == Truth::True)
 }
 
-/// Adds every class that serves where `wanted` is asked for.
-fn with_servers(mut set: ClassSet, book: &Rulebook, wanted: &str) -> ClassSet {
-    for (place, class) in book.classes.iter().enumerate() {
-        if book.serving.between(&class.id, wanted).is_some() {
-            set.insert(place);
-        }
-    }
-    set
+/// What is worked out once about classes and needs.
+pub(super) struct Needs {
+    /// By class: every class that serves where it is wanted.
+    servers: Vec<ClassSet>,
+    /// By class: whether it carries an additive family.
+    carries: Vec<bool>,
+    /// By need: what a point that has it wants.
+    implied: Vec<Want>,
 }
 
-impl Declared {
-    /// Whether the oil declares neither classes nor additives.
-    pub fn nothing(&self) -> bool {
-        !self.anything()
+impl Needs {
+    pub(super) fn of(book: &Rulebook) -> Self {
+        let classes = book.classes.len();
+        let mut needs = Self {
+            servers: vec![ClassSet::default(); classes],
+            carries: vec![false; classes],
+            implied: Vec::new(),
+        };
+        for (declared, class) in book.classes.iter().enumerate() {
+            let served = book.serving.served_by(&class.id);
+            for wanted in served.filter_map(|b| book.classes.place(&b.wanted)) {
+                let set = std::mem::take(&mut needs.servers[wanted]);
+                needs.servers[wanted] = set.with(declared);
+            }
+            needs.carries[declared] = families(&class.id, &book.serving, &book.classes)
+                .next()
+                .is_some();
+        }
+        let implied = book.needs.iter().enumerate();
+        needs.implied = implied
+            .map(|(place, need)| needs.implied(book, place, need))
+            .collect();
+        needs
+    }
+
+    fn implied(&self, book: &Rulebook, place: usize, need: &Need) -> Want {
+        Want {
+            whose: Whose::Implied(place),
+            accept: self.serving_any(book, &need.served_by),
+            leave: self.serving_any(book, &need.with_leave),
+            carries: self.all_carry(book, &need.served_by),
+        }
+    }
+
+    fn asked(&self, book: &Rulebook, asked: Asked) -> Want {
+        let place = asked.class.as_ref().and_then(|id| book.classes.place(id));
+        Want {
+            accept: place
+                .map(|place| self.servers[place].clone())
+                .unwrap_or_default(),
+            leave: ClassSet::default(),
+            carries: place.is_some_and(|place| self.carries[place]),
+            whose: Whose::Asked(asked),
+        }
+    }
+
+    fn serving_any(&self, book: &Rulebook, classes: &[String]) -> ClassSet {
+        let places = classes.iter().filter_map(|id| book.classes.place(id));
+        places.fold(ClassSet::default(), |set, place| {
+            set.and(&self.servers[place])
+        })
+    }
+
+    /// Whether all of these classes carry a family, those apart whose meaning is not sure.
+    fn all_carry(&self, book: &Rulebook, classes: &[String]) -> bool {
+        let sure = |place: &usize| {
+            let class = book.classes.at(*place);
+            class.is_some_and(|c| c.provenance.confidence > Confidence::Low)
+        };
+        let places = classes.iter().filter_map(|id| book.classes.place(id));
+        places.filter(sure).all(|place| self.carries[place])
     }
 }

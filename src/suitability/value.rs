@@ -6,6 +6,7 @@ use super::truth::Truth;
 use crate::model::facts::{
     Environment, FireClass, FoodClass, OilFacts, PointFacts, SumpNow, Use, YesNo,
 };
+use crate::model::oil::OilKind;
 use crate::model::rulebook::condition::{Met, NowKnown, OilFact, PairFact, PointFact};
 use crate::model::rulebook::{Clause, Condition, Fact, Rulebook, Test, Values};
 use crate::model::stated::Between;
@@ -108,6 +109,47 @@ impl<'c> Context<'c> {
                 _ => Value::Unknown,
             },
         }
+    }
+}
+
+/// The value of a fact of a pair, where the point alone settles it.
+pub(super) fn settled_by_point<'v>(fact: PairFact, point: &PointFacts) -> Option<Value<'v>> {
+    let unless = |stated: bool, value: Value<'v>| (!stated).then_some(value);
+    match fact {
+        PairFact::SameOil | PairFact::Mixing => match point.oil_now {
+            SumpNow::Unknown => Some(Value::Unknown),
+            SumpNow::Nothing => Some(Value::Absent),
+            SumpNow::Oil(_) => None,
+        },
+        PairFact::GreaseMixing => unless(point.oil_now != SumpNow::Nothing, Value::Absent),
+        PairFact::Seals => unless(point.seals.is_some(), Value::Unknown),
+        PairFact::Paint => unless(point.inside_paint.is_some(), Value::Unknown),
+        PairFact::SightGlass => unless(point.sight_glass.is_some(), Value::Unknown),
+        PairFact::FoodClass => unless(point.food_class.is_some(), Value::Absent),
+        PairFact::Environment => unless(point.environment.is_some(), Value::Absent),
+        PairFact::FireClass => unless(point.fire_class.is_some(), Value::Absent),
+        PairFact::FlashMargin => unless(point.part_temperature.is_some(), Value::Unknown),
+        PairFact::DwellRatio => unless(point.dwell.is_some(), Value::Unknown),
+        PairFact::Use => None,
+    }
+}
+
+/// The value of a fact of a pair, where the oil alone settles it.
+pub(super) fn settled_by_oil<'v>(fact: PairFact, oil: &OilFacts) -> Option<Value<'v>> {
+    let unless = |stated: bool, value: Value<'v>| (!stated).then_some(value);
+    match fact {
+        PairFact::GreaseMixing => unless(oil.kind == Some(OilKind::Grease), Value::Absent),
+        PairFact::Seals | PairFact::Paint | PairFact::SightGlass => {
+            unless(oil.base.is_some(), Value::Unknown)
+        }
+        PairFact::FlashMargin => unless(oil.flash.is_some(), Value::Unknown),
+        PairFact::DwellRatio => unless(oil.air_release.is_some(), Value::Unknown),
+        PairFact::SameOil
+        | PairFact::Mixing
+        | PairFact::FoodClass
+        | PairFact::Environment
+        | PairFact::FireClass
+        | PairFact::Use => None,
     }
 }
 

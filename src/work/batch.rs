@@ -38,8 +38,8 @@ impl Batch {
 
 /// One relation with its inputs, as a line of the same form; and whether it was refused.
 pub fn answer(name: &str, args: Args) -> (String, bool) {
-    let outcome = relation(name)
-        .and_then(|row| run(row.name, args).map(|worked| json::answer(row, &worked)));
+    let outcome =
+        relation(name).and_then(|row| run(row.name, args).map(|worked| json::answer(row, &worked)));
     let refused = outcome.is_err();
     (answered(None, &Json::from(name), outcome), refused)
 }

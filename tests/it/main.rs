@@ -2,6 +2,7 @@
 
 mod chance;
 mod checks;
+mod demo;
 mod journal_heat;
 mod journal_table;
 mod problems;
@@ -13,5 +14,9 @@ mod reference_journal;
 mod reference_oil;
 mod refusals_film;
 mod refusals_oil;
+mod report_figures;
+mod report_formulas;
+mod report_pages;
 mod rules;
+mod scenario;
 mod work_journal;

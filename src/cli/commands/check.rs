@@ -15,7 +15,10 @@ pub fn check(session: &mut Session<'_>) -> Exit {
     let site = &loaded.site;
     let mut unmet = Vec::new();
     if !site.expect.is_empty() {
-        let settings = Settings { units: session.units(), ..Settings::default() };
+        let settings = Settings {
+            units: session.units(),
+            ..Settings::default()
+        };
         let scales = match Scales::new(site, &loaded.rules, settings) {
             Ok(scales) => scales,
             Err((oil, misfit)) => return session.misfit(&oil, &misfit),
@@ -50,7 +53,11 @@ pub fn check(session: &mut Session<'_>) -> Exit {
         }
         session.result(&text);
     }
-    if unmet.is_empty() { Exit::Done } else { Exit::Input }
+    if unmet.is_empty() {
+        Exit::Done
+    } else {
+        Exit::Input
+    }
 }
 
 /// The word of one oil on a weighed point.

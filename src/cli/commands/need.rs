@@ -32,7 +32,10 @@ fn from_files(session: &mut Session<'_>, args: &Need) -> Result<Exit, Exit> {
         return Ok(session.result(&lines));
     }
     let points = session.points(&loaded.site, &args.tags)?;
-    let settings = Settings { units: session.units(), ..Settings::default() };
+    let settings = Settings {
+        units: session.units(),
+        ..Settings::default()
+    };
     let scales = Scales::new(&loaded.site, &loaded.rules, settings)
         .map_err(|(oil, misfit)| session.misfit(&oil, &misfit))?;
     let all: Vec<(&Point, _)> = points

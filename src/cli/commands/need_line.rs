@@ -7,10 +7,10 @@ use crate::cli::{Format, Need};
 use crate::demand::{Demand, End, PointDemands, point_demands};
 use crate::input::file::FileKind;
 use crate::input::load::{self as reader, With};
-use crate::relation::bearing::designation::DimensionTable;
 use crate::problem::Problems;
 use crate::quantity::Measure;
 use crate::quantity::show::{Toward, quantity};
+use crate::relation::bearing::designation::DimensionTable;
 use crate::results::need::{document_of, limit_amount, table_of};
 use crate::source::SourceSet;
 use crate::trace::How;
@@ -29,11 +29,22 @@ fn run(session: &mut Session<'_>, args: &Need) -> Result<Exit, Exit> {
     let mut sources = SourceSet::new();
     let mut problems = Problems::new();
     let name = crate::source::COMMAND_LINE;
-    let tree = reader::take(&mut sources, FileKind::Site, name, text.as_bytes(), &mut problems);
-    let with =
-        With { rules: &rules, bearings: DimensionTable::built_in(), calculated: &[] };
+    let tree = reader::take(
+        &mut sources,
+        FileKind::Site,
+        name,
+        text.as_bytes(),
+        &mut problems,
+    );
+    let with = With {
+        rules: &rules,
+        bearings: DimensionTable::built_in(),
+        calculated: &[],
+    };
     let site = reader::load(&sources, &[tree], &with, &[], &mut problems);
-    let Ok(site) = site else { return Err(session.told(&sources, &problems)) };
+    let Ok(site) = site else {
+        return Err(session.told(&sources, &problems));
+    };
     let point = &site.points[0];
     let demands = point_demands(point, &site.house, &rules);
     Ok(match session.shared.format {
@@ -66,7 +77,11 @@ fn site_text(args: &Need) -> String {
         }
     };
     if let Some(bearing) = &args.bearing {
-        part("rolling bearing", &size(bearing), args.speed.as_ref().map(|s| ("speed", s)));
+        part(
+            "rolling bearing",
+            &size(bearing),
+            args.speed.as_ref().map(|s| ("speed", s)),
+        );
     }
     if let Some(gear) = &args.gear {
         part("gear mesh", "the mesh", Some(("pitch-line speed", gear)));
@@ -84,7 +99,11 @@ fn size(bearing: &str) -> String {
         Some((bore, outside))
             if bore.trim().parse::<f64>().is_ok() && outside.trim().parse::<f64>().is_ok() =>
         {
-            format!("{{ bore: {} mm, outside: {} mm }}", bore.trim(), outside.trim())
+            format!(
+                "{{ bore: {} mm, outside: {} mm }}",
+                bore.trim(),
+                outside.trim()
+            )
         }
         _ => bearing.to_owned(),
     }
@@ -92,14 +111,17 @@ fn size(bearing: &str) -> String {
 
 fn answer(session: &Session<'_>, demands: &PointDemands, args: &Need) -> String {
     let units = session.units();
-    let governing = demands.middle.list.iter().enumerate().filter(|(i, d)| {
-        d.end == End::HotFloor && governs_without_temperature(demands, *i, d)
-    });
+    let governing = demands
+        .middle
+        .list
+        .iter()
+        .enumerate()
+        .filter(|(i, d)| d.end == End::HotFloor && governs_without_temperature(demands, *i, d));
     let mut out = String::new();
     for (_, demand) in governing {
-        let Some(limit) = limit_amount(demand, None).or_else(|| {
-            limit_amount(demand, demands.middle.governing_temperature(demand))
-        }) else {
+        let Some(limit) = limit_amount(demand, None)
+            .or_else(|| limit_amount(demand, demands.middle.governing_temperature(demand)))
+        else {
             continue;
         };
         let temperature = match demands.middle.governing_temperature(demand) {
@@ -110,10 +132,19 @@ fn answer(session: &Session<'_>, demands: &PointDemands, args: &Need) -> String 
             ),
             None => "running temperature".to_owned(),
         };
-        let _ = writeln!(out, "needs at least {} at {temperature}\n", quantity(limit, units, Toward::Up));
+        let _ = writeln!(
+            out,
+            "needs at least {} at {temperature}\n",
+            quantity(limit, units, Toward::Up)
+        );
         let part = demand.part.as_deref().unwrap_or("");
         let _ = writeln!(out, "  set by   {part}, {}", demand.says);
-        let _ = writeln!(out, "  rule     {}: {}", demand.source, formula(demands, demand));
+        let _ = writeln!(
+            out,
+            "  rule     {}: {}",
+            demand.source,
+            formula(demands, demand)
+        );
     }
     if out.is_empty() {
         out.push_str("nothing can be worked out from this\n\n");
@@ -162,7 +193,10 @@ fn formula(demands: &PointDemands, demand: &Demand) -> String {
                 .iter()
                 .filter_map(|(symbol, id)| {
                     let amount = demands.trace.step(*id)?.amount;
-                    Some(format!("{symbol} = {}", quantity(amount, crate::quantity::show::Units::Si, Toward::Nearest)))
+                    Some(format!(
+                        "{symbol} = {}",
+                        quantity(amount, crate::quantity::show::Units::Si, Toward::Nearest)
+                    ))
                 })
                 .collect();
             shown.push(format!("{} with {}", law.formula, inputs.join(", ")));

@@ -43,7 +43,11 @@ pub fn rules(session: &mut Session<'_>, args: &Rules) -> Exit {
     let text = if args.rules.is_empty() {
         overview(&chosen)
     } else {
-        chosen.iter().map(|r| one(r, session.width())).collect::<Vec<_>>().join("\n")
+        chosen
+            .iter()
+            .map(|r| one(r, session.width()))
+            .collect::<Vec<_>>()
+            .join("\n")
     };
     session.result(&text)
 }
@@ -100,7 +104,9 @@ fn overview(rules: &[&Listed]) -> String {
             kind = &r.kind;
             let _ = writeln!(out, "\n  {kind}");
         }
-        let sure = r.field("confidence").map_or(String::new(), |c| format!("  [{c}]"));
+        let sure = r
+            .field("confidence")
+            .map_or(String::new(), |c| format!("  [{c}]"));
         let _ = writeln!(out, "    {:<34} {}{sure}", r.id, r.title);
     }
     out

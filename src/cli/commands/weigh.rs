@@ -40,18 +40,28 @@ fn run(
     let wanted = session.oils(&loaded.site, &args.oil)?;
     let scales = Scales::new(&loaded.site, &loaded.rules, settings)
         .map_err(|(oil, misfit)| session.misfit(&oil, &misfit))?;
-    let mut all: Vec<Weighed<'_>> = points.into_iter().map(|p: &Point| scales.weigh(p)).collect();
-    let tripped = args_gate(session).is_some_and(|gate| all.iter().any(|w| trips(w, gate, &wanted)));
+    let mut all: Vec<Weighed<'_>> = points
+        .into_iter()
+        .map(|p: &Point| scales.weigh(p))
+        .collect();
+    let tripped =
+        args_gate(session).is_some_and(|gate| all.iter().any(|w| trips(w, gate, &wanted)));
     for w in &mut all {
-        w.candidates.retain(|c| wanted.as_ref().is_none_or(|o| o.contains(&c.oil)));
-        w.barred.retain(|b| wanted.as_ref().is_none_or(|o| o.contains(&b.oil)));
+        w.candidates
+            .retain(|c| wanted.as_ref().is_none_or(|o| o.contains(&c.oil)));
+        w.barred
+            .retain(|b| wanted.as_ref().is_none_or(|o| o.contains(&b.oil)));
         if args.now {
             w.candidates.retain(|c| c.in_use);
             w.barred.retain(|b| b.in_use);
         }
     }
     let exit = print(session, &scales, loaded, &all);
-    Ok(if exit == Exit::Done && tripped { Exit::Gate } else { exit })
+    Ok(if exit == Exit::Done && tripped {
+        Exit::Gate
+    } else {
+        exit
+    })
 }
 
 fn args_gate(session: &Session<'_>) -> Option<Gate> {
@@ -60,8 +70,7 @@ fn args_gate(session: &Session<'_>) -> Option<Gate> {
 
 /// Whether the oil in use, or one asked for, is at the level or worse.
 fn trips(w: &Weighed<'_>, gate: Gate, wanted: &Option<Vec<usize>>) -> bool {
-    let looked_at =
-        |oil: usize, in_use: bool| wanted.as_ref().map_or(in_use, |o| o.contains(&oil));
+    let looked_at = |oil: usize, in_use: bool| wanted.as_ref().map_or(in_use, |o| o.contains(&oil));
     let level = |v: Verdict| match v {
         Verdict::Holds => None,
         Verdict::Tight => Some(Gate::Tight),
@@ -88,7 +97,10 @@ fn print(
         }
         Format::Csv => session.table(&table_of(scales, all)),
         Format::Text => {
-            let style = Style { marks: session.marks(), width: session.width() };
+            let style = Style {
+                marks: session.marks(),
+                width: session.width(),
+            };
             let text: Vec<String> = all.iter().map(|w| one(scales, w, style)).collect();
             suggest(session, scales, all);
             session.result(&text.join("\n"))
@@ -102,6 +114,9 @@ fn suggest(session: &mut Session<'_>, scales: &Scales<'_>, all: &[Weighed<'_>]) 
     {
         let oil = &scales.site.oils[best.oil].id;
         let demo = if session.shared.demo { " --demo" } else { "" };
-        session.note(&format!("next: filmwright why {} {oil}{demo}", w.point.address()));
+        session.note(&format!(
+            "next: filmwright why {} {oil}{demo}",
+            w.point.address()
+        ));
     }
 }

@@ -26,7 +26,9 @@ fn run(session: &mut Session<'_>, args: &Why) -> Result<Exit, Exit> {
     let scales = Scales::new(&loaded.site, &loaded.rules, settings)
         .map_err(|(oil, misfit)| session.misfit(&oil, &misfit))?;
     let points = session.points(&loaded.site, std::slice::from_ref(&args.tag))?;
-    let oils = session.oils(&loaded.site, std::slice::from_ref(&args.oil))?.unwrap_or_default();
+    let oils = session
+        .oils(&loaded.site, std::slice::from_ref(&args.oil))?
+        .unwrap_or_default();
     let mut out = String::new();
     let mut documents = Vec::new();
     for point in points {
@@ -87,7 +89,13 @@ fn told(
         let _ = writeln!(out, "    {shown:<12} {} ({step})", demand.says);
     }
     for (i, condition) in c.conditions.iter().enumerate() {
-        let text = format!("condition {}  {}. {}  [{}]", i + 1, condition.says, condition.act, condition.rule);
+        let text = format!(
+            "condition {}  {}. {}  [{}]",
+            i + 1,
+            condition.says,
+            condition.act,
+            condition.rule
+        );
         out.push_str(&folded(&text, "  ", width));
     }
     let mut results: Vec<StepId> = told.margins.iter().map(|e| e.step).collect();

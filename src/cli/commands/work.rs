@@ -66,5 +66,9 @@ fn in_batch(session: &mut Session<'_>, file: &str) -> Exit {
     let text = String::from_utf8_lossy(&bytes);
     let done = batch::run_batch(text.lines());
     let exit = session.result(&done.text());
-    if exit == Exit::Done && done.refused > 0 { Exit::Input } else { exit }
+    if exit == Exit::Done && done.refused > 0 {
+        Exit::Input
+    } else {
+        exit
+    }
 }

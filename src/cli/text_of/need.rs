@@ -1,7 +1,7 @@
 //! `need`: what machines need, as text.
 
-use crate::cli::text::{Column, folded, table};
 use super::weigh::needs;
+use crate::cli::text::{Column, folded, table};
 use crate::demand::{Demand, GapKind, PointDemands, Standing};
 use crate::model::Point;
 use crate::quantity::show::{Toward, Units, quantity};
@@ -23,7 +23,11 @@ const COLUMNS: [Column; 7] = [
 
 /// One machine.
 pub fn one(scales: &Scales<'_>, point: &Point, demands: &PointDemands, width: usize) -> String {
-    let mut out = format!("{}  {}\n", point.address(), point.title.as_deref().unwrap_or(""));
+    let mut out = format!(
+        "{}  {}\n",
+        point.address(),
+        point.title.as_deref().unwrap_or("")
+    );
     out = out.trim_end().to_owned();
     out.push_str("\n\n");
     needs(&mut out, scales, demands);
@@ -37,11 +41,18 @@ pub fn one(scales: &Scales<'_>, point: &Point, demands: &PointDemands, width: us
         .collect();
     out.push_str(&table(&COLUMNS, &rows, width));
     for info in &demands.middle.information {
-        let figure = info
-            .amount
-            .map_or(String::new(), |a| format!(": {}", quantity(a, scales.units, Toward::Nearest)));
-        let part = info.part.as_ref().map_or(String::new(), |p| format!("{p}, "));
-        out.push_str(&folded(&format!("also  {part}{}{figure}", info.says), "  ", width));
+        let figure = info.amount.map_or(String::new(), |a| {
+            format!(": {}", quantity(a, scales.units, Toward::Nearest))
+        });
+        let part = info
+            .part
+            .as_ref()
+            .map_or(String::new(), |p| format!("{p}, "));
+        out.push_str(&folded(
+            &format!("also  {part}{}{figure}", info.says),
+            "  ",
+            width,
+        ));
     }
     gaps(&mut out, scales.units, demands, width);
     out
@@ -52,7 +63,8 @@ fn row(units: Units, demands: &PointDemands, i: usize, d: &Demand) -> Vec<String
     let t = demands.middle.governing_temperature(d);
     let floor = matches!(d.end, End::HotFloor | End::MakerGrade | End::PourMargin);
     let toward = if floor { Toward::Up } else { Toward::Down };
-    let limit = limit_amount(d, t).map_or_else(|| "its own".to_owned(), |a| quantity(a, units, toward));
+    let limit =
+        limit_amount(d, t).map_or_else(|| "its own".to_owned(), |a| quantity(a, units, toward));
     let state = match &d.standing {
         Standing::Judges if demands.middle.governing(d.end) == Some(i) => "governs".to_owned(),
         Standing::Judges => String::new(),
@@ -63,9 +75,16 @@ fn row(units: Units, demands: &PointDemands, i: usize, d: &Demand) -> Vec<String
     vec![
         end_word(d.end).to_owned(),
         limit,
-        t.map_or_else(|| "?".to_owned(), |t| {
-            quantity(ThermodynamicTemperature::from_base(t).amount(), units, Toward::Nearest)
-        }),
+        t.map_or_else(
+            || "?".to_owned(),
+            |t| {
+                quantity(
+                    ThermodynamicTemperature::from_base(t).amount(),
+                    units,
+                    Toward::Nearest,
+                )
+            },
+        ),
         d.part.clone().unwrap_or_default(),
         d.says.clone(),
         confidence(d).to_owned(),
@@ -76,12 +95,20 @@ fn row(units: Units, demands: &PointDemands, i: usize, d: &Demand) -> Vec<String
 /// What is missing or assumed.
 fn gaps(out: &mut String, units: Units, demands: &PointDemands, width: usize) {
     for gap in demands.middle.axes.iter().chain(&demands.middle.gaps) {
-        let about = gap.about.as_ref().map_or(String::new(), |a| format!("{a}, "));
+        let about = gap
+            .about
+            .as_ref()
+            .map_or(String::new(), |a| format!("{a}, "));
         let show = |a| quantity(a, units, Toward::Nearest);
         let how = gap.ask.as_deref().unwrap_or(gap.how);
         let text = match &gap.kind {
             GapKind::Range(lo, hi) => {
-                format!("gap   {about}{}: unknown, {} .. {} ({how})", gap.key, show(*lo), show(*hi))
+                format!(
+                    "gap   {about}{}: unknown, {} .. {} ({how})",
+                    gap.key,
+                    show(*lo),
+                    show(*hi)
+                )
             }
             GapKind::Assumed { taken, lo, hi } => format!(
                 "gap   {about}{}: {} assumed, {} .. {} plausible ({how})",
@@ -115,7 +142,10 @@ pub fn origins(point: &Point, place: impl Fn(&Place) -> String) -> String {
                 None => line.key.clone(),
             };
             let mut whose = line.origin.whose.to_string();
-            for extra in [&line.origin.dated, &line.origin.note].into_iter().flatten() {
+            for extra in [&line.origin.dated, &line.origin.note]
+                .into_iter()
+                .flatten()
+            {
                 let _ = write!(whose, ", {extra}");
             }
             vec![
@@ -127,5 +157,8 @@ pub fn origins(point: &Point, place: impl Fn(&Place) -> String) -> String {
             ]
         })
         .collect();
-    format!("\n  where each value comes from\n{}", table(&columns, &rows, 120))
+    format!(
+        "\n  where each value comes from\n{}",
+        table(&columns, &rows, 120)
+    )
 }

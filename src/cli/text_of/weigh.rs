@@ -39,8 +39,12 @@ pub fn one(scales: &Scales<'_>, w: &Weighed<'_>, style: Style) -> String {
         out.push_str("\n  no oil is eligible here\n");
     } else {
         out.push('\n');
-        let rows: Vec<Vec<String>> =
-            w.candidates.iter().enumerate().map(|(i, c)| row(scales, i, c, style)).collect();
+        let rows: Vec<Vec<String>> = w
+            .candidates
+            .iter()
+            .enumerate()
+            .map(|(i, c)| row(scales, i, c, style))
+            .collect();
         out.push_str(&table(&COLUMNS, &rows, style.width));
     }
     conditions(&mut out, scales, w, style);
@@ -65,14 +69,21 @@ fn headline(scales: &Scales<'_>, w: &Weighed<'_>) -> String {
                 format!("fill with {}", id(best))
             };
             let word = best.judgement.verdict.word();
-            let it = if word == "holds" { "It holds" } else { "It is tight" };
+            let it = if word == "holds" {
+                "It holds"
+            } else {
+                "It is tight"
+            };
             let n = best.conditions.len();
             let with = match n {
                 0 => String::new(),
                 1 => ", on 1 condition".to_owned(),
                 n => format!(", on {n} conditions"),
             };
-            format!("{address}  {act}. {it}{with}: {ends}(reserve asked {})\n", best.judgement.reserve)
+            format!(
+                "{address}  {act}. {it}{with}: {ends}(reserve asked {})\n",
+                best.judgement.reserve
+            )
         }
         Verdict::Open => format!(
             "{address}  not decided: {} is open. {}\n",
@@ -94,14 +105,25 @@ fn ends(c: &Candidate) -> String {
             parts.push(format!("{} step {word}", margin(m.value, 1)));
         }
     }
-    if parts.is_empty() { String::new() } else { format!("{} ", parts.join(", ")) }
+    if parts.is_empty() {
+        String::new()
+    } else {
+        format!("{} ", parts.join(", "))
+    }
 }
 
 /// The governing demand of each end.
 pub fn needs(out: &mut String, scales: &Scales<'_>, demands: &PointDemands) {
     let mut first = true;
-    for end in [End::HotFloor, End::RunningCeiling, End::StartCeiling, End::PourMargin] {
-        let Some(i) = demands.middle.governing(end) else { continue };
+    for end in [
+        End::HotFloor,
+        End::RunningCeiling,
+        End::StartCeiling,
+        End::PourMargin,
+    ] {
+        let Some(i) = demands.middle.governing(end) else {
+            continue;
+        };
         let demand = &demands.middle.list[i];
         let lead = if first { "  needs  " } else { "         " };
         first = false;
@@ -121,17 +143,31 @@ fn need_line(scales: &Scales<'_>, demands: &PointDemands, demand: &Demand) -> St
         End::HotFloor | End::MakerGrade | End::PourMargin => (">=", Toward::Up),
         _ => ("<=", Toward::Down),
     };
-    let limit = limit_amount(demand, t)
-        .map_or_else(|| "as its own limit".to_owned(), |a| quantity(a, scales.units, toward));
+    let limit = limit_amount(demand, t).map_or_else(
+        || "as its own limit".to_owned(),
+        |a| quantity(a, scales.units, toward),
+    );
     let at = t.map_or(String::new(), |t| {
         format!(
             " at {}",
-            quantity(ThermodynamicTemperature::from_base(t).amount(), scales.units, Toward::Nearest)
+            quantity(
+                ThermodynamicTemperature::from_base(t).amount(),
+                scales.units,
+                Toward::Nearest
+            )
         )
     });
-    let part = demand.part.as_ref().map_or(String::new(), |p| format!("{p}: "));
+    let part = demand
+        .part
+        .as_ref()
+        .map_or(String::new(), |p| format!("{p}: "));
     let text = format!("{sign} {limit}{at}");
-    format!("{text:<34}{part}{}, {}", demand.says, demand.source)
+    let source = if demand.says.contains(&demand.source) {
+        String::new()
+    } else {
+        format!(", {}", demand.source)
+    };
+    format!("{text:<34}{part}{}{source}", demand.says)
 }
 
 fn row(scales: &Scales<'_>, i: usize, c: &Candidate, style: Style) -> Vec<String> {
@@ -155,11 +191,17 @@ fn row(scales: &Scales<'_>, i: usize, c: &Candidate, style: Style) -> Vec<String
 /// A, B … Z, AA, AB …
 pub fn letter(i: usize) -> String {
     let last = char::from(b'A' + u8::try_from(i % 26).unwrap_or(0));
-    if i < 26 { last.to_string() } else { format!("{}{last}", letter(i / 26 - 1)) }
+    if i < 26 {
+        last.to_string()
+    } else {
+        format!("{}{last}", letter(i / 26 - 1))
+    }
 }
 
 fn conditions(out: &mut String, scales: &Scales<'_>, w: &Weighed<'_>, style: Style) {
-    let Some(best) = w.candidates.first() else { return };
+    let Some(best) = w.candidates.first() else {
+        return;
+    };
     if best.judgement.verdict == Verdict::Fails || best.conditions.is_empty() {
         return;
     }
@@ -175,7 +217,11 @@ fn barred(out: &mut String, scales: &Scales<'_>, w: &Weighed<'_>, style: Style) 
         return;
     }
     let n = w.barred.len();
-    let _ = writeln!(out, "\n  {n} {} barred", if n == 1 { "oil" } else { "oils" });
+    let _ = writeln!(
+        out,
+        "\n  {n} {} barred",
+        if n == 1 { "oil" } else { "oils" }
+    );
     for b in &w.barred {
         let id = &scales.site.oils[b.oil].id;
         let now = if b.in_use { ", in use" } else { "" };
@@ -185,7 +231,9 @@ fn barred(out: &mut String, scales: &Scales<'_>, w: &Weighed<'_>, style: Style) 
 }
 
 fn ambient(out: &mut String, scales: &Scales<'_>, w: &Weighed<'_>) {
-    let Some((cold, hot)) = w.demands.middle.thermal.ambient else { return };
+    let Some((cold, hot)) = w.demands.middle.thermal.ambient else {
+        return;
+    };
     let shown = |t: ThermodynamicTemperature| quantity(t.amount(), scales.units, Toward::Nearest);
     let place = w.point.area.as_deref().unwrap_or("the place");
     let _ = writeln!(
@@ -195,4 +243,3 @@ fn ambient(out: &mut String, scales: &Scales<'_>, w: &Weighed<'_>) {
         shown(hot.value)
     );
 }
-

@@ -58,7 +58,10 @@ fn one(
         }
         How::Given { written, origin } => {
             let mut from = origin.whose.to_string();
-            for extra in [&origin.dated, &origin.note, &origin.inherited].into_iter().flatten() {
+            for extra in [&origin.dated, &origin.note, &origin.inherited]
+                .into_iter()
+                .flatten()
+            {
                 let _ = write!(from, ", {extra}");
             }
             let at = place(&origin.place);

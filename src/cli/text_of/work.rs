@@ -1,14 +1,16 @@
 //! `work`: one relation at a time, as text.
 
-use crate::cli::text::{Column, folded, table};
 use super::why;
+use crate::cli::text::{Column, folded, table};
 use crate::quantity::show::{Units, significant};
 use crate::work::{Need, Relation, Value, Worked};
 use std::fmt::Write as _;
 
 /// All relations, grouped.
 pub fn list(relations: &[&Relation]) -> String {
-    let mut out = String::from("Relations, grouped. filmwright work RELATION prints its inputs, range and source.\n");
+    let mut out = String::from(
+        "Relations, grouped. filmwright work RELATION prints its inputs, range and source.\n",
+    );
     let mut group = "";
     for relation in relations {
         if relation.group != group {
@@ -37,15 +39,27 @@ pub fn about(relation: &Relation, width: usize) -> String {
             vec![format!("  {}", input.name), need, input.says.to_owned()]
         })
         .collect();
-    let columns = [Column::text("", 0), Column::text("", 0), Column::text("", 0)];
+    let columns = [
+        Column::text("", 0),
+        Column::text("", 0),
+        Column::text("", 0),
+    ];
     out.push_str(&table(&columns, &rows, width));
     out.push_str("\n  gives\n");
     for (name, says) in relation.gives {
         let _ = writeln!(out, "    {name:<20} {says}");
     }
     out.push('\n');
-    out.push_str(&folded(&format!("range   {}", relation.law.range), "  ", width));
-    out.push_str(&folded(&format!("source  {}", relation.law.source), "  ", width));
+    out.push_str(&folded(
+        &format!("range   {}", relation.law.range),
+        "  ",
+        width,
+    ));
+    out.push_str(&folded(
+        &format!("source  {}", relation.law.source),
+        "  ",
+        width,
+    ));
     out
 }
 
@@ -57,7 +71,10 @@ pub fn worked(worked: &Worked, units: Units, width: usize) -> String {
         match value {
             Value::Quantity { amount, unit, step } => {
                 results.push(*step);
-                let shown = amount.kind.unit(unit).map_or(amount.base, |u| amount.in_unit(u));
+                let shown = amount
+                    .kind
+                    .unit(unit)
+                    .map_or(amount.base, |u| amount.in_unit(u));
                 let number = significant(shown, 5, crate::quantity::show::Toward::Nearest);
                 let _ = writeln!(out, "{name} = {}", format!("{number} {unit}").trim_end());
             }
@@ -69,7 +86,9 @@ pub fn worked(worked: &Worked, units: Units, width: usize) -> String {
     for note in &worked.notes {
         out.push_str(&folded(&format!("note: {note}"), "", width));
     }
-    out.push_str(&why::steps(&worked.trace, &results, units, width, &|_| String::new()));
+    out.push_str(&why::steps(&worked.trace, &results, units, width, &|_| {
+        String::new()
+    }));
     out
 }
 
@@ -91,7 +110,8 @@ pub fn register(relations: &[&Relation]) -> String {
             })
         })
         .collect();
-    let mut text = serde_json::to_string_pretty(&serde_json::json!({ "relations": rows })).unwrap_or_default();
+    let mut text =
+        serde_json::to_string_pretty(&serde_json::json!({ "relations": rows })).unwrap_or_default();
     text.push('\n');
     text
 }

@@ -215,4 +215,11 @@ mod tests {
             assert!(bad.what.contains(what), "{text}: {}", bad.what);
         }
     }
+
+    proptest::proptest! {
+        #[test]
+        fn never_panics(text in "(oil|now|point|pair)? ?\\PC{0,60}") {
+            drop(clause(&text));
+        }
+    }
 }

@@ -1,15 +1,14 @@
 //! One entry of a rule file, field by field. Every field that is missing or wrong is a fault and
 //! reading goes on; fields nobody asked for are faults too.
 
+mod quantities;
+
 use super::condition;
 use super::fault::Faults;
 use crate::model::rulebook::{Basis, Clause, Confidence, Provenance};
-use crate::model::stated::Between;
 use crate::model::word::{Word, known};
-use crate::quantity::{Amount, Kind, Measure, parse};
 use serde_yaml::{Mapping, Value};
 use std::cell::RefCell;
-use std::collections::BTreeSet;
 
 /// The fields of an entry, or of a block inside one.
 pub(super) struct Fields<'a> {
@@ -19,7 +18,7 @@ pub(super) struct Fields<'a> {
     id: String,
     /// Where the block stands in the entry, empty at the top.
     block: String,
-    asked: RefCell<BTreeSet<&'static str>>,
+    asked: RefCell<Vec<&'static str>>,
 }
 
 impl<'a> Fields<'a> {
@@ -60,7 +59,10 @@ impl<'a> Fields<'a> {
     }
 
     fn take(&self, key: &'static str) -> Option<&'a Value> {
-        self.asked.borrow_mut().insert(key);
+        let mut asked = self.asked.borrow_mut();
+        if !asked.contains(&key) {
+            asked.push(key);
+        }
         self.map.get(key).filter(|v| !v.is_null())
     }
 
@@ -175,104 +177,6 @@ impl<'a> Fields<'a> {
             }
             None => false,
         }
-    }
-
-    fn read_amount(&self, key: &str, kind: Kind, text: &str) -> Option<parse::Read> {
-        match parse::parse(kind, text) {
-            Ok(read) => Some(read),
-            Err(bad) => {
-                self.wrong(key, text, &bad.to_string(), kind.spec().example);
-                None
-            }
-        }
-    }
-
-    /// A quantity that may be there, of a kind known only here.
-    pub(super) fn opt_amount(&self, key: &'static str, kind: Kind) -> Option<Amount> {
-        match self.take(key)? {
-            Value::Number(n) if kind.spec().bare => n.as_f64().map(|base| Amount { kind, base }),
-            other => self
-                .read_amount(key, kind, self.scalar(key, other)?)
-                .map(|read| read.amount),
-        }
-    }
-
-    /// A quantity that may be there.
-    pub(super) fn opt<Q: Measure>(&self, key: &'static str) -> Option<Q> {
-        self.opt_amount(key, Q::KIND).map(|a| Q::from_base(a.base))
-    }
-
-    /// A quantity that must be there; one in base units after a fault.
-    pub(super) fn quantity<Q: Measure>(&self, key: &'static str) -> Q {
-        if self.take(key).is_none() {
-            self.missing(key, Q::KIND.spec().example);
-        }
-        self.opt(key).unwrap_or(Q::from_base(1.0))
-    }
-
-    /// A range `a .. b unit`; either end may be left open.
-    pub(super) fn open<Q: Measure>(&self, key: &'static str) -> Option<(Option<Q>, Option<Q>)> {
-        let text = self.scalar(key, self.take(key)?)?;
-        self.read_open(key, text)
-    }
-
-    fn read_open<Q: Measure>(&self, key: &str, text: &str) -> Option<(Option<Q>, Option<Q>)> {
-        let Some((low, high)) = text.split_once("..") else {
-            let example = Q::KIND.spec().example;
-            self.wrong(
-                key,
-                text,
-                "a range is wanted",
-                &format!("{example} .. {example}"),
-            );
-            return None;
-        };
-        let (low, high) = (low.trim(), high.trim());
-        let end = |text: &str| self.read_amount(key, Q::KIND, text);
-        let high_read = if high.is_empty() {
-            None
-        } else {
-            Some(end(high)?)
-        };
-        let low_read = match (&high_read, low.is_empty()) {
-            (_, true) => None,
-            // the unit may stand once, behind both numbers
-            (Some(high), false) if low.parse::<f64>().is_ok() => {
-                Some(end(&format!("{low} {}", high.unit))?)
-            }
-            _ => Some(end(low)?),
-        };
-        let value = |r: parse::Read| Q::from_base(r.amount.base);
-        Some((low_read.map(value), high_read.map(value)))
-    }
-
-    /// A range with both ends that may be there.
-    pub(super) fn opt_between<Q: Measure>(&self, key: &'static str) -> Option<Between<Q>> {
-        let text = self.scalar(key, self.take(key)?)?;
-        let (lo, hi) = self.read_open(key, text)?;
-        if let (Some(lo), Some(hi)) = (lo, hi)
-            && lo <= hi
-        {
-            return Some(Between { lo, hi });
-        }
-        self.wrong(
-            key,
-            text,
-            "two ends are wanted, the lower first",
-            "LOW .. HIGH UNIT",
-        );
-        None
-    }
-
-    /// A range with both ends that must be there.
-    pub(super) fn between<Q: Measure>(&self, key: &'static str) -> Between<Q> {
-        if self.take(key).is_none() {
-            let example = Q::KIND.spec().example;
-            self.missing(key, &format!("{example} .. {example}"));
-        }
-        let one = Q::from_base(1.0);
-        self.opt_between(key)
-            .unwrap_or(Between { lo: one, hi: one })
     }
 
     fn read_count(&self, key: &str, value: &Value) -> Option<u32> {
@@ -406,8 +310,8 @@ impl<'a> Fields<'a> {
         let asked = self.asked.borrow();
         for key in self.map.keys() {
             let key = key.as_str().unwrap_or("a key that is not text");
-            if !asked.contains(key) && !key.starts_with("x-") {
-                let known: Vec<&str> = asked.iter().copied().collect();
+            if !asked.contains(&key) && !key.starts_with("x-") {
+                let known: &[&str] = &asked;
                 self.fault(
                     format!("unknown key `{}`", self.path(key)),
                     format!("one of {}", known.join(", ")),

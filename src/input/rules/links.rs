@@ -135,48 +135,17 @@ impl Links<'_> {
 
     /// Built-in entries cite the register; a user's may cite anything.
     fn sources(&self) {
-        let book = self.book;
-        self.cited(&book.components);
-        self.cited(&book.base_stocks);
-        self.cited(&book.seals);
-        self.cited(&book.paints);
-        self.cited(&book.mixing);
-        self.cited(&book.residuals);
-        self.cited(&book.life);
-        self.cited(&book.crossings);
-        self.cited(&book.classes);
-        self.cited(&book.needs);
-        self.cited(&book.suitability);
-        self.cited(&book.start_limits);
-        self.cited(&book.pour_margins);
-        self.cited(&book.heaters);
-        self.cited(&book.air_release);
-        self.cited(&book.used_oil);
-        self.cited(&book.cleanliness);
-        self.cited(&book.wear);
-        self.cited(&book.diagnosis);
-        self.cited(&book.sampling);
-        self.cited(&book.changes);
-        self.cited(&book.thickeners);
-        self.cited(&book.grease_mixing);
-        self.cited(&book.nlgi);
-        self.cited(&book.grease_code);
-        self.cited(&book.grease_speeds);
-        self.cited(&book.grease_speed_limits);
-        self.cited(&book.grease_factors);
-        self.cited(&book.grease_fills);
-        self.cited(&book.advice);
-        self.cited(&book.cautions);
-    }
-
-    fn cited<T: Entry>(&self, table: &Table<T>) {
-        for entry in table {
+        for (_, entry) in self.book.entries() {
             let Provenance { source, file, .. } = entry.provenance();
             for name in source {
-                if file.starts_with(crate::assets::BUILT_IN)
-                    && self.book.sources.get(name).is_none()
-                {
-                    self.wants(entry, "source", name, &self.book.sources);
+                let unknown = self.book.sources.get(name).is_none();
+                if unknown && file.starts_with(crate::assets::BUILT_IN) {
+                    self.faults.add(
+                        file,
+                        Some(entry.id()),
+                        format!("source `{name}` is not in the register"),
+                        "a source of rules/sources.yaml, or a new entry there",
+                    );
                 }
             }
         }

@@ -21,7 +21,10 @@ pub struct Listed {
 impl Listed {
     /// A field by name.
     pub fn field(&self, name: &str) -> Option<&str> {
-        self.says.iter().find(|(k, _)| k == name).map(|(_, v)| v.as_str())
+        self.says
+            .iter()
+            .find(|(k, _)| k == name)
+            .map(|(_, v)| v.as_str())
     }
 }
 
@@ -32,7 +35,10 @@ pub fn listing(layers: &[Layer]) -> Vec<Listed> {
     for layer in layers {
         for file in &layer.files {
             for entry in entries(&file.path, &file.text) {
-                match all.iter_mut().find(|e| e.kind == entry.kind && e.id == entry.id) {
+                match all
+                    .iter_mut()
+                    .find(|e| e.kind == entry.kind && e.id == entry.id)
+                {
                     Some(old) => *old = entry,
                     None => all.push(entry),
                 }
@@ -46,14 +52,21 @@ pub fn listing(layers: &[Layer]) -> Vec<Listed> {
 fn entries(path: &str, text: &str) -> Vec<Listed> {
     if let Some(front) = text.strip_prefix("---\n").filter(|_| path.ends_with(".md")) {
         let (head, body) = front.split_once("\n---").unwrap_or((front, ""));
-        let Ok(value) = serde_yaml::from_str::<Value>(head) else { return Vec::new() };
+        let Ok(value) = serde_yaml::from_str::<Value>(head) else {
+            return Vec::new();
+        };
         let mut entry = listed("cautions", &value, path);
         entry.says.push(("text".to_owned(), body.trim().to_owned()));
         return vec![entry];
     }
-    let Ok(Value::Mapping(top)) = serde_yaml::from_str::<Value>(text) else { return Vec::new() };
+    let Ok(Value::Mapping(top)) = serde_yaml::from_str::<Value>(text) else {
+        return Vec::new();
+    };
     let heading = top.get("file").map(plain).unwrap_or_default();
-    let kind = heading.rsplit_once(' ').map_or(heading.as_str(), |(k, _)| k).to_owned();
+    let kind = heading
+        .rsplit_once(' ')
+        .map_or(heading.as_str(), |(k, _)| k)
+        .to_owned();
     match top.get("entries") {
         Some(Value::Sequence(list)) => list.iter().map(|v| listed(&kind, v, path)).collect(),
         _ => Vec::new(),

@@ -19,6 +19,10 @@ macro_rules! written_words {
             fn spellings(self) -> &'static [&'static str] {
                 match self { $(Self::$variant => &[$word $(, $also)*]),+ }
             }
+
+            fn place(self) -> usize {
+                self as usize
+            }
         }
     };
 }
@@ -162,4 +166,25 @@ words! {
 words! {
     /// How two things agree in a published table.
     Mark, "a mark of agreement" { Good = "good", Care = "care", Bad = "bad" }
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+
+    fn in_order<W: Word>() {
+        for (place, word) in W::ALL.iter().enumerate() {
+            assert_eq!(word.place(), place, "{}", word.word());
+            assert!(W::from_word(word.word()) == Some(*word), "{}", word.word());
+        }
+    }
+
+    #[test]
+    fn lists_follow_the_order_of_their_enums() {
+        in_order::<OilKind>();
+        in_order::<BaseStock>();
+        in_order::<Lubrication>();
+        in_order::<CopperStrip>();
+        in_order::<PartGroup>();
+    }
 }

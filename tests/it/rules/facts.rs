@@ -88,9 +88,12 @@ fn after<'t>(text: &'t str, key: &str) -> Option<&'t str> {
     text.strip_prefix(key)?.strip_prefix(' ')
 }
 
+/// A key and what sets its fact.
+type Setter<F> = (&'static str, fn(&mut F, &str));
+
 fn set_oil(oil: &mut OilFacts, text: &str) {
-    let keys: &[(&str, fn(&mut OilFacts, &str))] = &[
-        ("id", |o, t| o.id = t.to_owned()),
+    let keys: &[Setter<OilFacts>] = &[
+        ("id", |o, t| t.clone_into(&mut o.id)),
         ("kind", |o, t| o.kind = Some(word(t))),
         ("base", |o, t| o.base = Some(word(t))),
         ("polymer", |o, t| o.polymer = Some(yes(t))),
@@ -119,7 +122,7 @@ fn set_oil(oil: &mut OilFacts, text: &str) {
 }
 
 fn set_point(point: &mut PointFacts, text: &str) {
-    let keys: &[(&str, fn(&mut PointFacts, &str))] = &[
+    let keys: &[Setter<PointFacts>] = &[
         ("serves", |p, t| p.serves = words(t)),
         ("component", |p, t| p.components = list(t)),
         ("lubrication", |p, t| p.lubrication = Some(word(t))),
@@ -146,13 +149,13 @@ fn set_point(point: &mut PointFacts, text: &str) {
         ("fire zone", |p, t| p.fire_zone = Some(yes(t))),
         ("hot surface", |p, t| p.hot_surface = Some(temperature(t))),
         ("oil temperature", |p, t| {
-            p.oil_temperature = Some(temperature(t))
+            p.oil_temperature = Some(temperature(t));
         }),
         ("part temperature", |p, t| {
-            p.part_temperature = Some(temperature(t))
+            p.part_temperature = Some(temperature(t));
         }),
         ("start temperature", |p, t| {
-            p.start_temperature = Some(temperature(t))
+            p.start_temperature = Some(temperature(t));
         }),
         ("dwell", |p, t| p.dwell = Some(exactly(minutes(t)))),
     ];

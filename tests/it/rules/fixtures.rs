@@ -275,7 +275,7 @@ pub(super) const ROWS: &[Row] = &[
         "oil classes HFDU; point seals NBR; point inside paint none",
         "oil classes HFDU; point seals FKM; point inside paint two-part epoxy",
     )
-    .asks("oil classes HFDU; point seals FKM"),
+    .asks("oil classes HFDU"),
     row(
         "hfc-zinc",
         "oil base water-glycol; point zinc plated yes",
