@@ -130,6 +130,14 @@ fn values_come_from_where_they_are_stated_and_say_so() {
     assert_eq!(ambient.origin.whose, Whose::Measured);
     assert_eq!(ambient.origin.dated.as_deref(), Some("2020..2026"));
 
+    // What the machine says of cleanliness holds for its bearings.
+    let PartKind::RollingBearing(bearing) = &head.parts[0].kind else {
+        panic!("a bearing");
+    };
+    let clean = bearing.cleanliness.as_ref().expect("the machine's");
+    assert_eq!(clean.value, "-/19/16");
+    assert_eq!(clean.origin.inherited.as_deref(), Some("machine CV-104"));
+
     // CV-105 states its own rise, takes parts and limits from CV-104, ambient from the area.
     let tail = read.point("CV-105");
     let Some(Sump::Rise(Stated::Known(rise, tolerance))) = &tail.sump else {
