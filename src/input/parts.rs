@@ -136,7 +136,7 @@ fn kind(reader: &mut Reader<'_>, fields: &Fields<'_>, scene: &Scene<'_, '_>) -> 
         "an open gear" => Some(PartKind::OpenGear(Box::new(gear::open(reader, fields)))),
         "a worm mesh" => Some(PartKind::WormMesh(Box::new(gear::worm(reader, fields)))),
         "a journal bearing" => {
-            let bearing = plain::journal(reader, fields)?;
+            let bearing = plain::journal(reader, fields);
             Some(PartKind::JournalBearing(Box::new(bearing)))
         }
         "a thrust bearing" => {
