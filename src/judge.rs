@@ -9,8 +9,10 @@ pub mod band;
 pub mod because;
 pub mod explain;
 pub mod margin;
+pub mod numbers;
 pub mod order;
 pub mod prepared;
+mod straight;
 pub mod verdict;
 pub mod weigh;
 

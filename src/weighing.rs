@@ -314,7 +314,7 @@ fn asked(demands: &PointDemands, judgement: &Judgement) -> Vec<Condition> {
         .asked
         .iter()
         .map(|number| {
-            let demand = &demands.middle.list[usize::from(*number)];
+            let demand = &demands.middle.list[usize::from(number)];
             let (why, act) = match &demand.standing {
                 Standing::Replaced { by } => (
                     format!("stricter than {by} and not met"),

@@ -104,8 +104,8 @@ impl Teller<'_> {
 
     fn fails(&self, j: &Judgement) -> Vec<String> {
         let mut reasons: Vec<(f64, String)> = Vec::new();
-        for number in &j.unmet {
-            if let Some((size, says)) = self.unmet(*number) {
+        for number in j.unmet.iter() {
+            if let Some((size, says)) = self.unmet(number) {
                 reasons.push((size, says));
             }
         }
@@ -254,8 +254,8 @@ impl Teller<'_> {
             }
         }
         if d.low_confidence {
-            for number in &j.asked {
-                if let Some((_, says)) = self.unmet(*number) {
+            for number in j.asked.iter() {
+                if let Some((_, says)) = self.unmet(number) {
                     reasons.push(format!(
                         "not met, and the rule is of low confidence: {says}"
                     ));

@@ -3,7 +3,7 @@
 use crate::numeric::math::lg;
 use crate::oil::Curve;
 use crate::quantity::{KinematicViscosity, Measure, ThermodynamicTemperature, VgStep};
-use crate::relation::oil::tangent::{ln_ln_z, parallel_nu40};
+use crate::relation::oil::tangent::{LN_T40, ln_ln_z, parallel_nu40};
 use crate::relation::oil::viscosity_temperature::{Form, Line};
 
 /// A limit on viscosity at a temperature, ready to be compared with many lines.
@@ -47,6 +47,8 @@ pub struct Straight {
     pub line: Line,
     /// Its viscosity at 40 °C, m²/s.
     pub nu40: f64,
+    /// `ln ln Z` of that.
+    pub ln_ln_z40: f64,
 }
 
 impl Straight {
@@ -55,6 +57,7 @@ impl Straight {
         Self {
             line,
             nu40: line.nu40().base(),
+            ln_ln_z40: line.ln_ln_z_at(LN_T40),
         }
     }
 

@@ -76,8 +76,8 @@ pub struct Setting {
     pub demands: Vec<ReadyDemand>,
     /// Whether one cannot.
     pub undecided: bool,
-    /// Oil temperature at the coldest start, K.
-    pub start: Option<f64>,
+    /// Oil temperature at the coldest start, K, and its logarithm.
+    pub start: Option<(f64, f64)>,
     /// Whether anything limits viscosity at start.
     pub has_start_ceiling: bool,
 }
@@ -115,7 +115,10 @@ fn setting(demands: &Demands) -> Setting {
         has_start_ceiling: ready.iter().any(|d| d.end == End::StartCeiling && d.judges),
         demands: ready,
         undecided: !demands.undecided.is_empty(),
-        start: demands.thermal.start_coldest.map(|k| k.value.base()),
+        start: demands.thermal.start_coldest.map(|k| {
+            let t = k.value.base();
+            (t, crate::numeric::math::ln(t))
+        }),
     }
 }
 
@@ -247,7 +250,7 @@ impl PreparedOil {
         if !self.waxy || self.coldest_measured.is_some_and(|m| m <= start + 1e-9) {
             return false;
         }
-        let near_pour = self.pour.is_some_and(|(_, hi)| start < hi + 10.0 - 1e-9);
+        let near_pour = self.pour.is_some_and(|(_, hi)| start <= hi + 10.0 + 1e-9);
         near_pour || self.cloud.is_some_and(|c| start < c - 1e-9)
     }
 }

@@ -2,7 +2,9 @@
 
 use super::band::Band;
 use super::margin::{Jaw, Ready};
+use super::numbers::Numbers;
 use super::prepared::{PreparedOil, PreparedPoint, ReadyDemand, ReadyLimit, Setting};
+use super::straight;
 use super::verdict::Verdict;
 use crate::demand::End;
 use crate::quantity::{KinematicViscosity, Measure, ThermodynamicTemperature};
@@ -49,9 +51,9 @@ pub struct Judgement {
     /// At the start temperature, thick end.
     pub at_start: Option<At>,
     /// Demands not met that make it fail.
-    pub unmet: Vec<u16>,
+    pub unmet: Numbers,
     /// Demands not met that only ask: replaced ones, low confidence, review limits.
-    pub asked: Vec<u16>,
+    pub asked: Numbers,
     /// Why it is open or capped, beyond the margins.
     pub doubts: Doubts,
     /// Reserve asked of this oil, VG steps.
@@ -91,36 +93,53 @@ pub struct Doubts {
 
 /// One setting's result.
 #[derive(Clone, Debug)]
-struct Sum {
-    fails: bool,
-    doubts: Doubts,
-    hot: Option<Margin>,
-    cold: Option<Margin>,
-    pour: Option<Margin>,
-    oil: Option<Margin>,
-    maker: Option<Margin>,
-    band: Band,
-    at_hot: Option<At>,
-    at_start: Option<At>,
+pub(super) struct Sum {
+    pub(super) fails: bool,
+    pub(super) doubts: Doubts,
+    pub(super) hot: Option<Margin>,
+    pub(super) cold: Option<Margin>,
+    pub(super) pour: Option<Margin>,
+    pub(super) oil: Option<Margin>,
+    pub(super) maker: Option<Margin>,
+    pub(super) band: Band,
+    pub(super) at_hot: Option<At>,
+    pub(super) at_start: Option<At>,
 }
 
 /// Demands of low confidence fail only when missed by more than this, VG steps.
-const LOW_CONFIDENCE_REACH: f64 = 2.0;
+pub(super) const LOW_CONFIDENCE_REACH: f64 = 2.0;
 /// A margin this close to zero is zero, and met.
-const ZERO: f64 = 1e-9;
+pub(super) const ZERO: f64 = 1e-9;
 
 /// Weighs an oil on a point.
 ///
 /// # Panics
 /// Never: a point always has at least one setting.
 pub fn weigh(point: &PreparedPoint, oil: &PreparedOil) -> Judgement {
+    weigh_by(point, oil, true)
+}
+
+/// The same without the short cut for straight lines; gives the same bits (tested).
+///
+/// # Panics
+/// Never: a point always has at least one setting.
+pub fn weigh_generally(point: &PreparedPoint, oil: &PreparedOil) -> Judgement {
+    weigh_by(point, oil, false)
+}
+
+fn weigh_by(point: &PreparedPoint, oil: &PreparedOil, short_cut: bool) -> Judgement {
     let mut total: Option<Judgement> = None;
     let losses = oil.loss_variants(point.severe);
     for (number, setting) in point.settings.iter().enumerate() {
         for worn in losses {
             let number = u16::try_from(number).unwrap_or(u16::MAX);
-            let (mut unmet, mut asked) = (Vec::new(), Vec::new());
-            let sum = one(setting, number, oil, worn.as_ref(), &mut unmet, &mut asked);
+            let (mut unmet, mut asked) = (Numbers::default(), Numbers::default());
+            let sum = match straight::lines(oil, worn.as_ref()) {
+                Some(lines) if short_cut => {
+                    straight::one(setting, number, oil, lines, &mut unmet, &mut asked)
+                }
+                _ => one(setting, number, oil, worn.as_ref(), &mut unmet, &mut asked),
+            };
             match &mut total {
                 None => total = Some(begin(sum, unmet, asked, oil.reserve(point.reserve))),
                 Some(total) => combine(total, sum, unmet, asked),
@@ -132,7 +151,7 @@ pub fn weigh(point: &PreparedPoint, oil: &PreparedOil) -> Judgement {
     judgement
 }
 
-fn begin(sum: Sum, unmet: Vec<u16>, asked: Vec<u16>, reserve: f64) -> Judgement {
+fn begin(sum: Sum, unmet: Numbers, asked: Numbers, reserve: f64) -> Judgement {
     Judgement {
         verdict: Verdict::Holds,
         hot: sum.hot,
@@ -152,7 +171,7 @@ fn begin(sum: Sum, unmet: Vec<u16>, asked: Vec<u16>, reserve: f64) -> Judgement 
 }
 
 /// Adds another setting: the worse end of each margin, both sets of reasons.
-fn combine(total: &mut Judgement, sum: Sum, unmet: Vec<u16>, asked: Vec<u16>) {
+fn combine(total: &mut Judgement, sum: Sum, unmet: Numbers, asked: Numbers) {
     if lower(sum.hot, total.hot) {
         (total.hot, total.at_hot) = (sum.hot, sum.at_hot);
     }
@@ -172,16 +191,8 @@ fn combine(total: &mut Judgement, sum: Sum, unmet: Vec<u16>, asked: Vec<u16>) {
     total.doubts = total.doubts.and(sum.doubts);
     total.failing_settings.0 += u16::from(sum.fails);
     total.failing_settings.1 += 1;
-    add(&mut total.unmet, unmet);
-    add(&mut total.asked, asked);
-}
-
-fn add(mine: &mut Vec<u16>, other: Vec<u16>) {
-    for number in other {
-        if let Err(at) = mine.binary_search(&number) {
-            mine.insert(at, number);
-        }
-    }
+    total.unmet.add_all(&unmet);
+    total.asked.add_all(&asked);
 }
 
 fn lower(new: Option<Margin>, old: Option<Margin>) -> bool {
@@ -231,68 +242,88 @@ impl Doubts {
     }
 }
 
-/// One setting of the unknowns.
+/// One setting of the unknowns, for curves of any form.
 fn one(
     setting: &Setting,
     number: u16,
     oil: &PreparedOil,
     worn: Option<&Ready>,
-    unmet: &mut Vec<u16>,
-    asked: &mut Vec<u16>,
+    unmet: &mut Numbers,
+    asked: &mut Numbers,
 ) -> Sum {
-    let mut sum = Sum {
-        fails: false,
-        doubts: Doubts {
-            undecided: setting.undecided,
-            ..Doubts::default()
-        },
-        hot: None,
-        cold: None,
-        pour: None,
-        oil: None,
-        maker: None,
-        band: Band::OPEN,
-        at_hot: None,
-        at_start: setting.start.map(|t| At {
-            nu: oil.thick.nu(t),
-            t,
-        }),
-    };
+    let start = setting.start.map(|(t, _)| At {
+        nu: oil.thick.nu(t),
+        t,
+    });
+    let mut sum = Sum::begin(setting, start);
     for demand in &setting.demands {
-        if !demand.applies_to(oil) {
-            continue;
-        }
-        let Some(found) = measure(demand, oil, worn, &mut sum.doubts) else {
-            continue;
-        };
-        let met = found.value >= -ZERO;
-        if !demand.judges {
-            if !met && demand.asks_when_unmet {
-                asked.push(demand.number);
-            }
-            continue;
-        }
-        sum.band = sum.band.and(found.band);
-        let margin = Margin {
-            value: found.value,
-            demand: demand.number,
-            setting: number,
-        };
-        note(&mut sum, demand.end, margin, found.at);
-        if met {
-            continue;
-        }
-        let far = found.steps && found.value < -LOW_CONFIDENCE_REACH;
-        if demand.low_confidence && !far {
-            sum.doubts.low_confidence = true;
-            asked.push(demand.number);
-        } else {
-            sum.fails = true;
-            unmet.push(demand.number);
+        if demand.applies_to(oil) {
+            measured(demand, oil, worn, number, &mut sum, unmet, asked);
         }
     }
     cold_data(setting, oil, &mut sum);
     sum
+}
+
+impl Sum {
+    /// Nothing looked at yet.
+    pub(super) fn begin(setting: &Setting, at_start: Option<At>) -> Self {
+        Self {
+            fails: false,
+            doubts: Doubts {
+                undecided: setting.undecided,
+                ..Doubts::default()
+            },
+            hot: None,
+            cold: None,
+            pour: None,
+            oil: None,
+            maker: None,
+            band: Band::OPEN,
+            at_hot: None,
+            at_start,
+        }
+    }
+}
+
+/// One demand, measured and noted.
+pub(super) fn measured(
+    demand: &ReadyDemand,
+    oil: &PreparedOil,
+    worn: Option<&Ready>,
+    setting: u16,
+    sum: &mut Sum,
+    unmet: &mut Numbers,
+    asked: &mut Numbers,
+) {
+    let Some(found) = measure(demand, oil, worn, &mut sum.doubts) else {
+        return;
+    };
+    let met = found.value >= -ZERO;
+    if !demand.judges {
+        if !met && demand.asks_when_unmet {
+            asked.add(demand.number);
+        }
+        return;
+    }
+    sum.band = sum.band.and(found.band);
+    let margin = Margin {
+        value: found.value,
+        demand: demand.number,
+        setting,
+    };
+    note(sum, demand.end, margin, found.at);
+    if met {
+        return;
+    }
+    let far = found.steps && found.value < -LOW_CONFIDENCE_REACH;
+    if demand.low_confidence && !far {
+        sum.doubts.low_confidence = true;
+        asked.add(demand.number);
+    } else {
+        sum.fails = true;
+        unmet.add(demand.number);
+    }
 }
 
 fn note(sum: &mut Sum, end: End, margin: Margin, at: Option<At>) {
@@ -466,8 +497,8 @@ fn oils_own(demand: &ReadyDemand, oil: &PreparedOil, doubts: &mut Doubts) -> Opt
 }
 
 /// How far cold start verdicts may be carried by the data (interface, settled question 3).
-fn cold_data(setting: &Setting, oil: &PreparedOil, sum: &mut Sum) {
-    let Some(start) = setting.start.filter(|_| setting.has_start_ceiling) else {
+pub(super) fn cold_data(setting: &Setting, oil: &PreparedOil, sum: &mut Sum) {
+    let Some((start, _)) = setting.start.filter(|_| setting.has_start_ceiling) else {
         return;
     };
     let d = &mut sum.doubts;

@@ -3,7 +3,8 @@
 use super::truth::Truth;
 use super::value::Value;
 use super::{Eligibility, FactGap, Finding, Pair};
-use crate::model::rulebook::condition::Form;
+use crate::model::facts::{Mark, PartGroup, YesNo};
+use crate::model::rulebook::condition::{Form, PairFact, PointFact, WordForm};
 use crate::model::rulebook::{
     Clause, Condition, Fact, Level, SuitabilityRule, Test, Values, WhenUnknown,
 };
@@ -92,26 +93,116 @@ impl Pair<'_> {
         facts
     }
 
+    /// A condition that holds, in words: `yellow metal`, `copper strip 2c`, `no food class`.
     fn says(&self, condition: &Condition) -> Option<String> {
         let fact = condition.fact;
-        let value = match (fact.form(), self.context.value(fact)) {
-            (Form::Words(words), Value::Bits(bits)) => match &condition.test {
-                Test::Is(Values::Bits(wanted)) => (words.write)(bits & wanted),
-                _ if bits == 0 => "none declared".into(),
-                _ => (words.write)(bits),
-            },
-            (Form::Number(kind), Value::Span(lo, hi)) => number(kind, lo, hi),
-            (Form::Classes | Form::Parts, Value::Names(names, groups)) => {
-                named(&condition.test, names, groups)?
+        if let Fact::Pair(fact) = fact {
+            return self.says_pair(fact);
+        }
+        let about = fact.says();
+        // what an oil is not says little beside what it is, unless it declares nothing
+        let negative = matches!(condition.test, Test::IsNot(_));
+        Some(match (fact.form(), self.context.value(fact)) {
+            (Form::Words(words), Value::Bits(bits)) => {
+                if bits == YesNo::Yes.bit() && is_yes_no(&words) {
+                    return Some(about);
+                }
+                if bits == 0 || (bits == YesNo::No.bit() && is_yes_no(&words)) {
+                    return Some(format!("no {about}"));
+                }
+                if negative && matches!(fact, Fact::Oil(_)) {
+                    return None;
+                }
+                let shown = match &condition.test {
+                    Test::Is(Values::Bits(wanted)) => bits & wanted,
+                    _ => bits,
+                };
+                format!("{about} {}", (words.write)(shown))
+            }
+            (Form::Number(kind), Value::Span(lo, hi)) => {
+                format!("{about} {}", number(kind, lo, hi))
+            }
+            (Form::Classes, Value::Names(names, _)) if !negative => {
+                let names = among(&condition.test, names);
+                format!("{about} {}", names.join(", "))
+            }
+            (Form::Parts, Value::Names(names, groups)) => {
+                self.parts(&condition.test, names, groups)?
             }
             _ => return None,
-        };
-        match fact {
+        })
+    }
+
+    /// A fact of the pair that made a rule fire, in words.
+    fn says_pair(&self, fact: PairFact) -> Option<String> {
+        let care = self.context.value(Fact::Pair(fact)) == Value::Bits(Mark::Care.bit());
+        let says = match fact {
             // how an oil is brought in is part of the question, not a fact of the machine
-            Fact::Pair(crate::model::rulebook::condition::PairFact::Use) => None,
-            _ => Some(format!("{} {value}", fact.says())),
+            PairFact::Use => return None,
+            PairFact::SameOil => "another oil than today",
+            PairFact::Mixing if care => "the two bases mix only with care",
+            PairFact::Mixing => "the two bases do not mix",
+            PairFact::GreaseMixing if care => "the two thickeners mix only with care",
+            PairFact::GreaseMixing => "the two thickeners do not mix",
+            PairFact::Seals if care => "the seals bear this fluid only with care",
+            PairFact::Seals => "the seals do not bear this fluid",
+            PairFact::Paint => "the inside paint does not bear this fluid",
+            PairFact::SightGlass => "the sight glass does not bear this fluid",
+            PairFact::FoodClass => return Some(self.asked(PointFact::FoodClass)),
+            PairFact::Environment => return Some(self.asked(PointFact::Environment)),
+            PairFact::FireClass => return Some(self.asked(PointFact::FireClass)),
+            PairFact::FlashMargin | PairFact::DwellRatio => {
+                let (Form::Number(kind), Value::Span(lo, hi)) =
+                    (fact.form(), self.context.value(Fact::Pair(fact)))
+                else {
+                    return None;
+                };
+                return Some(format!("{fact} {}", number(kind, lo, hi)));
+            }
+        };
+        Some(says.to_owned())
+    }
+
+    fn asked(&self, fact: PointFact) -> String {
+        let fact = Fact::Point(fact);
+        match (fact.form(), self.context.value(fact)) {
+            (Form::Words(words), Value::Bits(bits)) => {
+                format!("{} {}", fact.says(), (words.write)(bits))
+            }
+            _ => fact.says(),
         }
     }
+
+    /// The parts that made the test true, by their names.
+    fn parts(&self, test: &Test, names: &[String], groups: u64) -> Option<String> {
+        let Test::Is(Values::Names { groups: wanted, .. }) = test else {
+            return None;
+        };
+        let mut found: Vec<&str> = PartGroup::ALL
+            .iter()
+            .filter(|g| g.bit() & groups & wanted != 0)
+            .map(|g| g.word())
+            .collect();
+        let components = among(test, names);
+        let known = components
+            .iter()
+            .filter_map(|id| self.context.book.components.get(id));
+        found.extend(known.map(|c| c.name.as_str()));
+        (!found.is_empty()).then(|| found.join(", "))
+    }
+}
+
+fn is_yes_no(words: &WordForm) -> bool {
+    words.noun == YesNo::NOUN
+}
+
+/// The names a test asks for; all of them where it asks for none.
+fn among<'n>(test: &Test, names: &'n [String]) -> Vec<&'n str> {
+    let wanted = |name: &&String| match test {
+        Test::Is(Values::Names { names: wanted, .. }) => wanted.contains(name),
+        _ => true,
+    };
+    names.iter().filter(wanted).map(String::as_str).collect()
 }
 
 fn number(kind: Kind, lo: f64, hi: f64) -> String {
@@ -121,29 +212,6 @@ fn number(kind: Kind, lo: f64, hi: f64) -> String {
     } else {
         format!("{} .. {}", show(lo), show(hi))
     }
-}
-
-/// The names that made the test true.
-fn named(test: &Test, names: &[String], groups: u64) -> Option<String> {
-    let Test::Is(Values::Names {
-        names: wanted,
-        groups: wanted_groups,
-    }) = test
-    else {
-        return (!names.is_empty()).then(|| names.join(", "));
-    };
-    let mut found: Vec<&str> = crate::model::facts::PartGroup::ALL
-        .iter()
-        .filter(|g| g.bit() & groups & wanted_groups != 0)
-        .map(|g| g.word())
-        .collect();
-    found.extend(
-        names
-            .iter()
-            .filter(|n| wanted.contains(n))
-            .map(String::as_str),
-    );
-    (!found.is_empty()).then(|| found.join(", "))
 }
 
 fn finding(
@@ -160,10 +228,18 @@ fn finding(
         title: rule.title.clone(),
         facts,
         reason,
-        act,
+        act: sentence(&act),
         source: rule.provenance.source.clone(),
         basis: rule.provenance.basis,
         confidence: rule.provenance.confidence,
         undecided,
     }
+}
+
+/// A text with a capital first letter, so that it can stand behind a full stop.
+pub(super) fn sentence(text: &str) -> String {
+    let mut letters = text.chars();
+    letters.next().map_or_else(String::new, |first| {
+        first.to_uppercase().chain(letters).collect()
+    })
 }

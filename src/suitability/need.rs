@@ -3,6 +3,7 @@
 use super::card::{OilCard, PointCard};
 use super::compiled::Compiled;
 use super::declared::{ClassSet, Declared};
+use super::explain::sentence;
 use super::mixing::Tables;
 use super::need_text::{declared_text, need_text};
 use super::truth::Truth;
@@ -157,7 +158,7 @@ impl Want {
             reason: format!("{}: {}; {}", text.title, facts[0], text.why),
             title: text.title,
             facts,
-            act: text.act,
+            act: sentence(&text.act),
             source: text.source,
             basis: text.basis,
             confidence: text.confidence,

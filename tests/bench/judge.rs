@@ -71,11 +71,11 @@ fn now() -> Instant {
 }
 
 fn floor_of_one(exps: usize, lns: usize) -> f64 {
-    let n = 200_000;
-    best(7, || {
+    let n = 20_000;
+    best(60, || {
         let mut sum = 0.0;
         for i in 0..n {
-            let x = 1.0 + f64::from(i) * 1e-6;
+            let x = 1.0 + f64::from(i) * 1e-5;
             for k in 0..exps {
                 sum += exp(x * (0.1 + 0.01 * k as f64));
             }
@@ -93,11 +93,11 @@ fn d341() {
         Point::new(celsius(100.0), mm2_s(19.4)),
     )
     .expect("two points");
-    let n = 200_000;
-    let took = best(7, || {
+    let n = 20_000;
+    let took = best(60, || {
         let mut sum = 0.0;
         for i in 0..n {
-            let t = celsius(-20.0 + f64::from(i) * 5e-4);
+            let t = celsius(-20.0 + f64::from(i) * 5e-3);
             sum += filmwright::quantity::Measure::base(line.nu_at(t));
         }
         black_box(sum);
@@ -134,15 +134,19 @@ fn pairs(name: &str, points: usize, oils: usize, films: bool, rules: &Rulebook) 
         .collect();
     let preparing = start.elapsed().as_secs_f64();
     let pairs = (points * oils) as f64;
+    // point by point, each the best of several, so that other work on the machine does not count
     let mut holds = 0_usize;
-    let took = best(3, || {
-        holds = 0;
-        for point in &prepared {
+    let mut took = 0.0;
+    for point in &prepared {
+        let mut here = 0;
+        took += best(5, || {
+            here = 0;
             for oil in &ready {
-                holds += usize::from(weigh(point, oil).verdict == Verdict::Holds);
+                here += usize::from(weigh(point, oil).verdict == Verdict::Holds);
             }
-        }
-    });
+        });
+        holds += here;
+    }
     let floor = floor_of_one(10, 2);
     println!(
         "{name:<26} {:8.1} ns a pair   {:5.2} x the floor of 10 exp and 2 ln   {:.2} million pairs/s   ({holds} hold; read {reading:.2} s, demands {preparing:.2} s)",
@@ -153,8 +157,16 @@ fn pairs(name: &str, points: usize, oils: usize, films: bool, rules: &Rulebook) 
 }
 
 fn main() {
+    // `cargo bench --bench judge -- d341` runs one part
+    let only = std::env::args().nth(1).filter(|a| !a.starts_with("--"));
+    if only.as_deref() == Some("d341") {
+        return d341();
+    }
     let rules = rulebook(&[assets::builtin_rules()]).unwrap_or_else(|f| panic!("{f:?}"));
     d341();
+    if only.as_deref() == Some("pairs") {
+        return pairs("fixed limits, 300 x 50", 300, 50, false, &rules);
+    }
     pairs("fixed limits, 1 000 x 50", 1_000, 50, false, &rules);
     pairs("fixed limits, 10 000 x 50", 10_000, 50, false, &rules);
     pairs("one in ten a film, 1 000 x 50", 1_000, 50, true, &rules);

@@ -5,6 +5,7 @@ mod checks;
 mod demo;
 mod journal_heat;
 mod journal_table;
+mod judging;
 mod problems;
 mod properties_film;
 mod properties_oil;

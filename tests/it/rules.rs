@@ -183,7 +183,7 @@ fn a_finding_says_its_facts() {
     );
     assert_eq!(
         found[0].reason,
-        "Active sulphur on a copper alloy: oil additive EP, oil sulphur active, yellow metal yes, \
+        "Active sulphur on a copper alloy: oil additive EP, oil sulphur active, yellow metal, \
          part temperature 75 degC; active sulphur attacks copper alloys, the faster the hotter: a \
          wheel softens and copper climbs in the samples"
     );

@@ -288,18 +288,19 @@ impl Fact {
         }
     }
 
-    /// The fact as a sheet says it: `copper strip`, `yellow metal`.
+    /// The fact as a sheet names it: `oil copper strip`, `yellow metal`.
     pub fn says(self) -> String {
         match self {
+            Self::Oil(OilFact::Environment) => "oil environmental class".into(),
             Self::Oil(fact) => format!("oil {fact}"),
-            Self::Now(fact) => format!("{fact} of the oil now in it"),
+            Self::Now(OilFact::Environment) => "environmental class of the oil in use".into(),
+            Self::Now(fact) => format!("{fact} of the oil in use"),
+            Self::Point(PointFact::Environment) => "environmental class asked".into(),
             Self::Point(fact) => fact.to_string(),
             Self::Pair(fact) => match fact {
-                PairFact::Mixing => "mixing with the oil now in it".into(),
-                PairFact::GreaseMixing => "mixing with the grease now in it".into(),
-                PairFact::Seals => "seals in this fluid".into(),
-                PairFact::Paint => "inside paint in this fluid".into(),
-                PairFact::SightGlass => "sight glass in this fluid".into(),
+                PairFact::SameOil | PairFact::Mixing => "oil in use".into(),
+                PairFact::GreaseMixing => "thickeners of the two greases".into(),
+                PairFact::Paint => "inside paint".into(),
                 other => other.to_string(),
             },
         }

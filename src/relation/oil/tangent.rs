@@ -47,7 +47,7 @@ pub(crate) fn parallel_nu40(form: Form, b: f64, w: f64, ln_t: f64) -> f64 {
 }
 
 /// Logarithm of 313.15.
-const LN_T40: f64 = 5.746_682_308_971_422;
+pub(crate) const LN_T40: f64 = 5.746_682_308_971_422;
 
 #[cfg(test)]
 mod tests {

@@ -253,6 +253,12 @@ impl Line {
         self.b
     }
 
+    /// `ln ln Z` of the line at a temperature, from the logarithm of that.
+    #[inline]
+    pub(crate) fn ln_ln_z_at(self, ln_t: f64) -> f64 {
+        self.a * LN_10 + LN_LN_10 - self.b * ln_t
+    }
+
     /// Temperature, K, at which the line has the viscosity whose `ln ln Z` is `w`.
     #[inline]
     pub(crate) fn temperature_of_w(self, w: f64) -> f64 {

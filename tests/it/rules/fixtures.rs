@@ -240,6 +240,11 @@ pub(super) const ROWS: &[Row] = &[
     )
     .asks("oil base diester; point part temperature 70"),
     row(
+        "vegetable-cold",
+        "oil base vegetable; point start temperature -20",
+        "oil base vegetable; point start temperature 5",
+    ),
+    row(
         "food-class-asked",
         "point food class H1; oil classes CKC",
         "point food class H1; oil food class 3H",
