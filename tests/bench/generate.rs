@@ -24,10 +24,16 @@ impl Chance {
         lo + (hi - lo) * self.unit()
     }
 
+    /// A whole number below another.
+    pub fn below(&mut self, count: usize) -> usize {
+        let many = u64::try_from(count).unwrap_or(u64::MAX);
+        usize::try_from(self.0.next_u64() % many).unwrap_or(0)
+    }
+
     /// One of several.
     pub fn pick<'a, T>(&mut self, list: &'a [T]) -> &'a T {
-        let i = (self.unit() * list.len() as f64) as usize;
-        &list[i.min(list.len() - 1)]
+        let i = self.below(list.len());
+        &list[i]
     }
 }
 
@@ -41,7 +47,8 @@ pub fn oils(count: usize, seed: u64) -> String {
         let pao = i % 3 == 2;
         let thick = i % 10 == 9;
         // 100 degC from the usual run of the index: nu100 grows with nu40^0.77
-        let nu100 = nu40.powf(0.77) * if pao || thick { 0.415 } else { 0.312 };
+        let nu100 =
+            filmwright::numeric::math::pow(nu40, 0.77) * if pao || thick { 0.415 } else { 0.312 };
         let base = match (pao, thick) {
             (_, true) => "mineral I, polymer-thickened",
             (true, _) => "PAO, no polymer",
@@ -79,7 +86,7 @@ pub fn site(machines: usize, oils: usize, seed: u64, films: bool) -> String {
     for i in 0..machines {
         let area = if i % 3 == 0 { "hall" } else { "yard" };
         let rise = chance.between(12.0, 45.0);
-        let oil = (chance.unit() * oils as f64) as usize;
+        let oil = chance.below(oils);
         let _ = write!(
             text,
             "  MC-{i:06}:\n    area: {area}\n    lubrication: splash\n    oil now: OIL-{oil:03}\n    fill: {:.0} L\n    sump rise: {rise:.1} K\n    start limit: {:.0} mm2/s, maker\n    yellow metal: no\n    backstop: no\n    wet clutch: no\n    silver: no\n    zinc plated: no\n    breathing air: no\n    oxygen: no\n    water entry: no\n    seals: FKM\n    inside paint: two-part epoxy\n    sight glass: glass\n    parts:\n",
