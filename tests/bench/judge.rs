@@ -2,6 +2,8 @@
 //!
 //! `cargo bench --bench judge`
 
+#![expect(clippy::print_stdout, reason = "a benchmark prints its figures")]
+
 mod generate;
 
 use filmwright::assets;
