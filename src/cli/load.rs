@@ -558,7 +558,9 @@ fn hex(bytes: &[u8]) -> String {
 }
 
 fn is_yaml(name: &str) -> bool {
-    name.ends_with(".yaml") || name.ends_with(".yml")
+    Path::new(name)
+        .extension()
+        .is_some_and(|e| e.eq_ignore_ascii_case("yaml") || e.eq_ignore_ascii_case("yml"))
 }
 
 fn shown(folder: &Path) -> String {

@@ -65,7 +65,7 @@ impl<'h> Session<'h> {
         }
     }
 
-    /// The date of judgement: `--on`, `reviewed`, SOURCE_DATE_EPOCH, today.
+    /// The date of judgement: `--on`, `reviewed`, `SOURCE_DATE_EPOCH`, today.
     pub fn date(&self, reviewed: Option<&str>) -> String {
         if let Some(on) = &self.shared.on {
             return on.clone();
@@ -75,7 +75,7 @@ impl<'h> Session<'h> {
         }
         let epoch = self
             .host
-            .variable("SOURCE_DATE_EPOCH")
+            .variable("`SOURCE_DATE_EPOCH`")
             .and_then(|v| v.trim().parse().ok());
         match epoch {
             Some(seconds) => super::host::date_of(seconds),

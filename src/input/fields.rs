@@ -4,7 +4,7 @@ mod misplaced;
 pub mod quantities;
 pub mod words;
 
-use super::keys::{Form, Key, Record, is_private, spelt};
+use super::keys::{Form, Key, Record, example, is_private, spelt};
 use super::reader::{Reader, as_plain};
 use super::value::Clauses;
 use crate::model::machine::InputLine;
@@ -281,33 +281,6 @@ fn added(reader: &Reader<'_>, node: &Node, key: &Key) -> Write {
     let column = text[..start].rsplit('\n').next().map_or(0, str::len);
     let indent = " ".repeat(column);
     Write::edit(at, format!("{line}\n{indent}")).said(line)
-}
-
-/// A right value of a key, as it would be written.
-pub fn example(key: &Key) -> String {
-    match key.form {
-        Form::FileKind => "site 1".into(),
-        Form::Quantity(want) => want.example(),
-        Form::Word(words) | Form::Words(words) => words.first().copied().unwrap_or("").into(),
-        Form::YesNo | Form::YesNoOr(_) => "yes".into(),
-        Form::Day => "2026-07-18".into(),
-        Form::Whole => "1".into(),
-        Form::HouseLimit => "kappa >= 0.4".into(),
-        Form::Price => "3.10 per L".into(),
-        Form::Teeth => "19 / 68".into(),
-        Form::Grade => "ISO VG 220".into(),
-        Form::Cleanliness => "-/17/14".into(),
-        Form::Points => "[220 mm2/s at 40 degC, 19.0 mm2/s at 100 degC]".into(),
-        Form::ColdPoints => "[6500 mPa.s at -25 degC]".into(),
-        Form::Bearing => "22220".into(),
-        Form::Parts => "[{ rolling bearing: 22220 }]".into(),
-        Form::Named(record) if record.name == "a machine" => {
-            "{ GB-1: { parts: [{ rolling bearing: 22220, speed: 1480 r/min }] } }".into()
-        }
-        Form::Named(_) | Form::Fills | Form::Record(_) | Form::Table => "{ }".into(),
-        Form::List(_) => "[ ]".into(),
-        _ => "NAME".into(),
-    }
 }
 
 fn record_wanted(reader: &mut Reader<'_>, node: &Node, record: &'static Record, within: &str) {

@@ -68,6 +68,33 @@ pub fn is_private(written: &str) -> bool {
     written.trim_start().starts_with("x-")
 }
 
+/// A right value of a key, as it would be written.
+pub fn example(key: &Key) -> String {
+    match key.form {
+        Form::FileKind => "site 1".into(),
+        Form::Quantity(want) => want.example(),
+        Form::Word(words) | Form::Words(words) => words.first().copied().unwrap_or("").into(),
+        Form::YesNo | Form::YesNoOr(_) => "yes".into(),
+        Form::Day => "2026-07-18".into(),
+        Form::Whole => "1".into(),
+        Form::HouseLimit => "kappa >= 0.4".into(),
+        Form::Price => "3.10 per L".into(),
+        Form::Teeth => "19 / 68".into(),
+        Form::Grade => "ISO VG 220".into(),
+        Form::Cleanliness => "-/17/14".into(),
+        Form::Points => "[220 mm2/s at 40 degC, 19.0 mm2/s at 100 degC]".into(),
+        Form::ColdPoints => "[6500 mPa.s at -25 degC]".into(),
+        Form::Bearing => "22220".into(),
+        Form::Parts => "[{ rolling bearing: 22220 }]".into(),
+        Form::Named(record) if record.name == "a machine" => {
+            "{ GB-1: { parts: [{ rolling bearing: 22220, speed: 1480 r/min }] } }".into()
+        }
+        Form::Named(_) | Form::Fills | Form::Record(_) | Form::Table => "{ }".into(),
+        Form::List(_) => "[ ]".into(),
+        _ => "NAME".into(),
+    }
+}
+
 /// A shorter way to write a row of a table.
 pub(crate) const fn key(
     name: &'static str,

@@ -29,9 +29,11 @@ pub fn chain<'r, 't>(
         let Some(slot) = fields.get("like") else {
             break;
         };
-        let base = slot.node.text().unwrap_or("").trim();
+        let Some(base) = slot.text(reader).map(str::trim) else {
+            break;
+        };
         let Some((key, next)) = all.get_key_value(base) else {
-            if complete && !base.is_empty() {
+            if complete {
                 unknown(reader, all, fields, base);
             }
             break;

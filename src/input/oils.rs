@@ -2,12 +2,14 @@
 
 mod build;
 mod facts;
+mod line;
 mod other;
+mod shear;
 mod viscosity;
 
 pub(super) use facts::{one, set};
 pub(super) use other::say_unusual;
-pub(super) use viscosity::stated_twice;
+pub(super) use shear::stated_twice;
 
 use super::fields::Fields;
 use super::keys::{is_private, oil::OIL};

@@ -131,6 +131,7 @@ const TOGETHER: &[&[&str]] = &[
     &["sump rise", "sump", "at ambient"],
     &["radial clearance", "diametral clearance"],
     &["power", "pinion torque"],
+    &["worm speed", "speed"],
 ];
 
 /// Puts one value in, in place of what stated the same.

@@ -8,6 +8,7 @@ mod kind;
 mod plain;
 
 use super::fields::Fields;
+use super::keys::Form;
 use super::overlay::{self, Overlay};
 use super::reader::Reader;
 use super::site::Scene;
@@ -94,6 +95,7 @@ fn records<'t>(
         let within = format!("{address}, {label}");
         let mut part = Fields::read(reader, node, key.record, &within);
         part.mark_inherited(slot.inherited.as_ref());
+        part.take_from_machine(fields, address);
         found.push((label, part));
     }
     found
@@ -105,6 +107,11 @@ fn part(
     fields: &Fields<'_>,
     scene: &Scene<'_, '_>,
 ) -> Option<Part> {
+    for slot in fields.in_file_order() {
+        if matches!(slot.key.form, Form::Label) {
+            slot.text(reader);
+        }
+    }
     let kind = kind(reader, fields, scene);
     let rule = rule(reader, fields, scene);
     let part_rise = fields.stated(reader, "part rise");
@@ -129,7 +136,7 @@ fn kind(reader: &mut Reader<'_>, fields: &Fields<'_>, scene: &Scene<'_, '_>) -> 
         "an open gear" => Some(PartKind::OpenGear(Box::new(gear::open(reader, fields)))),
         "a worm mesh" => Some(PartKind::WormMesh(Box::new(gear::worm(reader, fields)))),
         "a journal bearing" => {
-            let bearing = plain::journal(reader, fields)?;
+            let bearing = plain::journal(reader, fields);
             Some(PartKind::JournalBearing(Box::new(bearing)))
         }
         "a thrust bearing" => {
@@ -209,7 +216,26 @@ fn is_code(text: &str) -> bool {
     matches!(parts.as_slice(), [first, a, b] if (*first == "-" || number(first)) && number(a) && number(b))
 }
 
-impl Fields<'_> {
+/// What holds for every part of a machine that does not state it.
+const OF_THE_MACHINE: &[&str] = &["cleanliness"];
+
+impl<'t> Fields<'t> {
+    /// Takes what the machine states for its parts.
+    fn take_from_machine(&mut self, machine: &Fields<'t>, address: &str) {
+        for name in OF_THE_MACHINE {
+            let theirs = machine.get(name);
+            let Some(slot) = theirs.filter(|_| self.record.key(name).is_some()) else {
+                continue;
+            };
+            if self.lacks(name) {
+                let mut slot = slot.clone();
+                let from = format!("machine {address}");
+                slot.inherited.get_or_insert_with(|| from.into());
+                self.put(slot);
+            }
+        }
+    }
+
     /// Says of every value what the whole record was inherited from.
     fn mark_inherited(&mut self, from: Option<&Rc<str>>) {
         if let Some(from) = from {

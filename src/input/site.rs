@@ -1,12 +1,14 @@
 //! The site file into a site.
 
 mod accept;
+mod checks;
 mod facts;
 mod house;
 mod limits;
 mod machines;
 mod point;
 mod sump;
+mod values;
 
 pub(super) use accept::list_wanted;
 pub(super) use limits::read as limits;

@@ -73,21 +73,22 @@ fn words(file: &SourceFile, span: Span, syntax: &Syntax) -> (Code, String, Optio
             ),
             why("a line reads key: value, or begins with a dash"),
         ),
-        Syntax::Character(c) if c.is_control() || *c == '\u{feff}' => (
-            Code::YamlCharacter,
-            format!(
-                "the invisible character U+{:04X} in the text",
-                u32::from(*c)
-            ),
-            None,
-        ),
-        Syntax::Character(c) => (
-            Code::YamlCharacter,
-            format!("{c} may not begin a value"),
-            why("in single quotes it is text"),
-        ),
+        Syntax::Character(c) => character(*c),
         Syntax::Other(words) => (Code::YamlSyntax, words.clone(), None),
     }
+}
+
+fn character(c: char) -> (Code, String, Option<String>) {
+    if c.is_control() || c == '\u{feff}' {
+        let message = format!("the invisible character U+{:04X} in the text", u32::from(c));
+        return (Code::YamlCharacter, message, None);
+    }
+    let why = "in single quotes it is text".to_owned();
+    (
+        Code::YamlCharacter,
+        format!("{c} may not begin a value"),
+        Some(why),
+    )
 }
 
 fn bracket(open: Option<char>, close: Option<char>) -> String {
@@ -135,7 +136,7 @@ fn tabs(file: &SourceFile, span: Span) -> Option<Span> {
 fn proposals(file: &SourceFile, span: Span, syntax: &Syntax) -> Vec<Write> {
     let at = span.start as usize;
     let line = file.line_of(span.start);
-    let (start, end) = file.line_range(line);
+    let (_, end) = file.line_range(line);
     let insert = |at: usize, text: &str| Write::edit(file.span(at, at), text);
     match syntax {
         Syntax::Tab => tab_proposals(file, span),
@@ -147,24 +148,7 @@ fn proposals(file: &SourceFile, span: Span, syntax: &Syntax) -> Vec<Write> {
                 insert(end, mark),
             ]
         }
-        Syntax::QuoteTail | Syntax::Escape | Syntax::Colon => {
-            let from = value_start(file, start, at);
-            let to = before_comment(file, from, end);
-            let value = file.text[from..to].trim_end();
-            let whole = file.span(from, from + value.len());
-            let bare = value.trim_matches(['"', '\'']);
-            vec![
-                Write::edit(
-                    whole,
-                    single_quoted(if *syntax == Syntax::Escape {
-                        bare
-                    } else {
-                        value
-                    }),
-                ),
-                Write::edit(whole, single_quoted(bare)),
-            ]
-        }
+        Syntax::QuoteTail | Syntax::Escape | Syntax::Colon => quoted(file, span, syntax),
         Syntax::ColonSpace => {
             let colon = slice(file, span).find(':').unwrap_or(0);
             vec![insert(at + colon + 1, " ")]
@@ -186,19 +170,42 @@ fn proposals(file: &SourceFile, span: Span, syntax: &Syntax) -> Vec<Write> {
                 single_quoted(value),
             )]
         }
-        Syntax::KeyWanted | Syntax::Other(_) => {
-            let text = file.text[start..end].trim_start();
-            let from = end - text.len();
-            let value = value_start(file, start, end);
-            let to = before_comment(file, value, end);
-            let quoted = single_quoted(&file.text[value..to]);
-            let mut writes = vec![insert(from, "# ").remark("or key: value")];
-            if matches!(syntax, Syntax::Other(_)) && value > from {
-                writes.insert(0, Write::edit(file.span(value, to), quoted));
-            }
-            writes
-        }
+        Syntax::KeyWanted | Syntax::Other(_) => commented(file, line, syntax),
     }
+}
+
+/// The value of the line in single quotes.
+fn quoted(file: &SourceFile, span: Span, syntax: &Syntax) -> Vec<Write> {
+    let (start, end) = file.line_range(file.line_of(span.start));
+    let from = value_start(file, start, span.start as usize);
+    let to = before_comment(file, from, end);
+    let value = file.text[from..to].trim_end();
+    let whole = file.span(from, from + value.len());
+    let bare = value.trim_matches(['"', '\'']);
+    let first = if *syntax == Syntax::Escape {
+        bare
+    } else {
+        value
+    };
+    [first, bare]
+        .map(|text| Write::edit(whole, single_quoted(text)))
+        .to_vec()
+}
+
+/// The line as a comment; before that, its value in single quotes where that may help.
+fn commented(file: &SourceFile, line: usize, syntax: &Syntax) -> Vec<Write> {
+    let (start, end) = file.line_range(line);
+    let text = file.text[start..end].trim_start();
+    let from = end - text.len();
+    let value = value_start(file, start, end);
+    let to = before_comment(file, value, end);
+    let mut writes = Vec::new();
+    if matches!(syntax, Syntax::Other(_)) && value > from {
+        let text = single_quoted(&file.text[value..to]);
+        writes.push(Write::edit(file.span(value, to), text));
+    }
+    writes.push(Write::edit(file.span(from, from), "# ").remark("or key: value"));
+    writes
 }
 
 /// The line without one character and the blanks behind it.

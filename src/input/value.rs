@@ -14,11 +14,13 @@
 //! Nothing here knows of files: a failure is a [`Fault`] that marks bytes of the text it was
 //! given, and the reader carries it to its place.
 
+mod beside;
 pub mod body;
 pub mod clauses;
 pub mod date;
 pub mod fault;
 mod misread;
+mod range;
 pub mod want;
 
 pub use body::{Body, Deviation};

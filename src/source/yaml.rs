@@ -7,6 +7,7 @@
 
 mod build;
 mod fault;
+mod offence;
 
 pub use fault::{Fault, FaultKind, Syntax};
 

@@ -6,33 +6,39 @@ use rand_pcg::rand_core::{Rng, SeedableRng};
 use std::fmt::Write as _;
 
 /// A generator of its own seed.
-pub struct Chance(Pcg64);
+pub(crate) struct Chance(Pcg64);
 
 impl Chance {
     /// From a seed.
-    pub fn new(seed: u64) -> Self {
+    pub(crate) fn new(seed: u64) -> Self {
         Self(Pcg64::seed_from_u64(seed))
     }
 
     /// A number from 0 up to 1.
-    pub fn unit(&mut self) -> f64 {
+    pub(crate) fn unit(&mut self) -> f64 {
         (self.0.next_u64() >> 11) as f64 / (1_u64 << 53) as f64
     }
 
     /// A number between two.
-    pub fn between(&mut self, lo: f64, hi: f64) -> f64 {
+    pub(crate) fn between(&mut self, lo: f64, hi: f64) -> f64 {
         lo + (hi - lo) * self.unit()
     }
 
+    /// A whole number below another.
+    pub(crate) fn below(&mut self, count: usize) -> usize {
+        let many = u64::try_from(count).unwrap_or(u64::MAX);
+        usize::try_from(self.0.next_u64() % many).unwrap_or(0)
+    }
+
     /// One of several.
-    pub fn pick<'a, T>(&mut self, list: &'a [T]) -> &'a T {
-        let i = (self.unit() * list.len() as f64) as usize;
-        &list[i.min(list.len() - 1)]
+    pub(crate) fn pick<'a, T>(&mut self, list: &'a [T]) -> &'a T {
+        let i = self.below(list.len());
+        &list[i]
     }
 }
 
 /// Oils: every grade from 32 to 460 in mineral and PAO, one in ten polymer-thickened.
-pub fn oils(count: usize, seed: u64) -> String {
+pub(crate) fn oils(count: usize, seed: u64) -> String {
     let mut chance = Chance::new(seed);
     let mut text = String::from("file: oils 1\n");
     let grades = [32.0, 46.0, 68.0, 100.0, 150.0, 220.0, 320.0, 460.0];
@@ -41,7 +47,8 @@ pub fn oils(count: usize, seed: u64) -> String {
         let pao = i % 3 == 2;
         let thick = i % 10 == 9;
         // 100 degC from the usual run of the index: nu100 grows with nu40^0.77
-        let nu100 = nu40.powf(0.77) * if pao || thick { 0.415 } else { 0.312 };
+        let nu100 =
+            filmwright::numeric::math::pow(nu40, 0.77) * if pao || thick { 0.415 } else { 0.312 };
         let base = match (pao, thick) {
             (_, true) => "mineral I, polymer-thickened",
             (true, _) => "PAO, no polymer",
@@ -70,7 +77,7 @@ pub fn oils(count: usize, seed: u64) -> String {
 
 /// Machines with fixed limits: bearings, pitch-line speeds, stated start limits; every fact that
 /// suitability asks is stated. `films`: every tenth is a contact with a film ratio.
-pub fn site(machines: usize, oils: usize, seed: u64, films: bool) -> String {
+pub(crate) fn site(machines: usize, oils: usize, seed: u64, films: bool) -> String {
     let mut chance = Chance::new(seed);
     let mut text = String::from(
         "file: site 1\nsite: Generated works\nareas:\n  yard:\n    ambient: -18 .. 36 degC\n    exposure: outdoor\n  hall:\n    ambient: 5 .. 38 degC\n    exposure: indoor\nmachines:\n",
@@ -79,7 +86,7 @@ pub fn site(machines: usize, oils: usize, seed: u64, films: bool) -> String {
     for i in 0..machines {
         let area = if i % 3 == 0 { "hall" } else { "yard" };
         let rise = chance.between(12.0, 45.0);
-        let oil = (chance.unit() * oils as f64) as usize;
+        let oil = chance.below(oils);
         let _ = write!(
             text,
             "  MC-{i:06}:\n    area: {area}\n    lubrication: splash\n    oil now: OIL-{oil:03}\n    fill: {:.0} L\n    sump rise: {rise:.1} K\n    start limit: {:.0} mm2/s, maker\n    yellow metal: no\n    backstop: no\n    wet clutch: no\n    silver: no\n    zinc plated: no\n    breathing air: no\n    oxygen: no\n    water entry: no\n    seals: FKM\n    inside paint: two-part epoxy\n    sight glass: glass\n    parts:\n",

@@ -18,12 +18,12 @@ use filmwright::source::SourceSet;
 use filmwright::weighing::{Scales, Settings};
 
 /// The built-in rules.
-pub fn rules() -> Rulebook {
+pub(crate) fn rules() -> Rulebook {
     rulebook(&[assets::builtin_rules()]).unwrap_or_else(|f| panic!("{f:?}"))
 }
 
 /// A site from texts.
-pub fn site(site: &str, oils: &str, rules: &Rulebook) -> Site {
+pub(crate) fn site(site: &str, oils: &str, rules: &Rulebook) -> Site {
     let mut set = SourceSet::new();
     let mut problems = Problems::new();
     let trees = [

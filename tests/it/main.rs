@@ -9,6 +9,7 @@ mod judging;
 mod problems;
 mod properties_film;
 mod properties_oil;
+mod reader;
 mod reference_film;
 mod reference_journal;
 mod reference_oil;

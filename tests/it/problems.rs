@@ -155,6 +155,7 @@ fn mends(case: &str, files: &Files, set: &SourceSet, problem: &Problem) -> Vec<S
     let mut wrong = Vec::new();
     let (_, all_before) = found_in(files);
     let before: BTreeSet<Code> = all_before.sorted().iter().map(|p| p.code).collect();
+    let stood: Vec<_> = all_before.sorted().iter().map(|p| key(set, p)).collect();
     let code = problem.code;
     let by_edit = problem.write.iter().any(|w| !w.edits.is_empty());
     let says = problem.ask.is_some() || problem.why.is_some() || problem.so.is_some();
@@ -170,10 +171,10 @@ fn mends(case: &str, files: &Files, set: &SourceSet, problem: &Problem) -> Vec<S
         let gone = key(set, problem);
         let left: Vec<_> = after.sorted().iter().map(|p| key(&after_set, p)).collect();
         let text = all(&after_set, &after, Look::default());
-        assert!(
-            !left.contains(&gone),
-            "{case}: {code} way {way} leaves it:\n{text}"
-        );
+        let times = |keys: &[_]| keys.iter().filter(|k| **k == gone).count();
+        if times(&left) >= times(&stood) {
+            wrong.push(format!("{case}: {code} way {way} leaves it:\n{text}"));
+        }
         let broken = |c: Code| c.as_str().starts_with("yaml-") && !before.contains(&c);
         if after.sorted().iter().any(|p| broken(p.code)) {
             wrong.push(format!("{case}: {code} way {way} breaks the file:\n{text}"));

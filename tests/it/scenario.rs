@@ -5,7 +5,7 @@ use filmwright::cli::host::MemoryHost;
 use filmwright::cli::run::run;
 
 /// What a run gave.
-pub struct Ran {
+pub(crate) struct Ran {
     /// Exit code.
     pub exit: Exit,
     /// Standard output.
@@ -17,12 +17,12 @@ pub struct Ran {
 }
 
 /// Runs `filmwright ARGUMENTS`, split at spaces; a quoted argument keeps its spaces.
-pub fn filmwright(arguments: &str) -> Ran {
+pub(crate) fn filmwright(arguments: &str) -> Ran {
     on(MemoryHost::new(), arguments)
 }
 
 /// The same on a host with files.
-pub fn on(mut host: MemoryHost, arguments: &str) -> Ran {
+pub(crate) fn on(mut host: MemoryHost, arguments: &str) -> Ran {
     let exit = run(split(arguments), &mut host);
     Ran {
         exit,
@@ -62,7 +62,7 @@ fn split(arguments: &str) -> Vec<String> {
 
 impl Ran {
     /// The output as JSON.
-    pub fn json(&self) -> serde_json::Value {
+    pub(crate) fn json(&self) -> serde_json::Value {
         serde_json::from_str(&self.out)
             .unwrap_or_else(|e| panic!("not JSON: {e}\n{}\n{}", self.out, self.err))
     }

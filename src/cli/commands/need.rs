@@ -23,12 +23,12 @@ pub fn need(session: &mut Session<'_>, args: &Need) -> Exit {
 fn from_files(session: &mut Session<'_>, args: &Need) -> Result<Exit, Exit> {
     let loaded = session.load(&[])?;
     if args.list {
-        let lines: String = loaded
-            .site
-            .points
-            .iter()
-            .map(|p| format!("{}  {}\n", p.address(), p.title.as_deref().unwrap_or("")))
-            .collect();
+        let mut lines = String::new();
+        for p in &loaded.site.points {
+            let title = p.title.as_deref().unwrap_or("");
+            lines.push_str(format!("{}  {title}", p.address()).trim_end());
+            lines.push('\n');
+        }
         return Ok(session.result(&lines));
     }
     let points = session.points(&loaded.site, &args.tags)?;

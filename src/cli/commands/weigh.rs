@@ -44,8 +44,8 @@ fn run(
         .into_iter()
         .map(|p: &Point| scales.weigh(p))
         .collect();
-    let tripped =
-        args_gate(session).is_some_and(|gate| all.iter().any(|w| trips(w, gate, &wanted)));
+    let tripped = args_gate(session)
+        .is_some_and(|gate| all.iter().any(|w| trips(w, gate, wanted.as_deref())));
     for w in &mut all {
         w.candidates
             .retain(|c| wanted.as_ref().is_none_or(|o| o.contains(&c.oil)));
@@ -69,8 +69,8 @@ fn args_gate(session: &Session<'_>) -> Option<Gate> {
 }
 
 /// Whether the oil in use, or one asked for, is at the level or worse.
-fn trips(w: &Weighed<'_>, gate: Gate, wanted: &Option<Vec<usize>>) -> bool {
-    let looked_at = |oil: usize, in_use: bool| wanted.as_ref().map_or(in_use, |o| o.contains(&oil));
+fn trips(w: &Weighed<'_>, gate: Gate, wanted: Option<&[usize]>) -> bool {
+    let looked_at = |oil: usize, in_use: bool| wanted.map_or(in_use, |o| o.contains(&oil));
     let level = |v: Verdict| match v {
         Verdict::Holds => None,
         Verdict::Tight => Some(Gate::Tight),

@@ -23,12 +23,9 @@ const COLUMNS: [Column; 7] = [
 
 /// One machine.
 pub fn one(scales: &Scales<'_>, point: &Point, demands: &PointDemands, width: usize) -> String {
-    let mut out = format!(
-        "{}  {}\n",
-        point.address(),
-        point.title.as_deref().unwrap_or("")
-    );
-    out = out.trim_end().to_owned();
+    let title = point.title.as_deref().unwrap_or("");
+    let mut out = format!("{}  {title}", point.address());
+    out.truncate(out.trim_end().len());
     out.push_str("\n\n");
     needs(&mut out, scales, demands);
     out.push('\n');

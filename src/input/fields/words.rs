@@ -1,8 +1,8 @@
 //! Words, names, days and texts of a record.
 
 use super::misplaced::listed;
-use super::{Fields, Slot, example};
-use crate::input::keys::Form;
+use super::{Fields, Slot};
+use crate::input::keys::{Form, example};
 use crate::input::reader::{Reader, as_plain};
 use crate::input::value::fault::place_in;
 use crate::input::value::{self, Clauses, Fault, Mend, clauses, date};

@@ -184,6 +184,7 @@ pub static WORM_MESH: Record = part!("a worm mesh", &[
         key("centre distance", stated(LENGTH), "gap", "Distance between the shafts."),
         key("worm diameter", stated(LENGTH), "from the centre distance", "Reference diameter of the worm."),
         key("worm speed", stated(SPEED), "gap", "Speed of the worm."),
+    key("speed", stated(SPEED), "–", "The same as `worm speed`."),
         key("ratio", Form::Quantity(Want::stated(NUMBER).such_as("3.5")), "gap", "Speed of the worm over speed of the wheel."),
         key("lead angle", stated(ANGLE), "–", "Lead angle of the worm."),
         key("wheel", Form::Word(WHEEL), "gap", "Material of the wheel."),

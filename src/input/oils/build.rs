@@ -1,13 +1,15 @@
 //! One oil from its values.
 
-use super::{facts, other, viscosity};
+use super::{facts, other, shear, viscosity};
 use crate::input::convert::Dense;
 use crate::input::fields::Fields;
 use crate::input::reader::Reader;
 use crate::model::Oil;
-use crate::model::oil::{Grease, OilKind, Polymer};
+use crate::model::oil::{Grease, OilKind, PointsFrom, Polymer, Viscosity};
 use crate::model::rulebook::Rulebook;
+use crate::quantity::{MassDensity, ThermodynamicTemperature};
 use crate::relation::oil::base_stock::BaseStock;
+use crate::source::place::Given;
 use crate::source::yaml::Entry;
 
 /// The oil, unless its viscosity cannot be read: then that is reported.
@@ -21,18 +23,7 @@ pub(super) fn oil(
     let kind = kind(reader, fields);
     let (base, polymer) = other::base(reader, fields);
     let density = other::beside(reader, fields, "density");
-    let stock = base.as_ref().map_or(BaseStock::MineralI, |b| b.value);
-    let dense = Dense {
-        rho15: match &density {
-            Some(given) => other::at_15(given.value, stock),
-            None => rules.typical_density(stock),
-        },
-        law: stock.density_law(),
-    };
-    let dense = viscosity::Density {
-        dense,
-        assumed: density.is_none(),
-    };
+    let dense = dense(density.as_ref(), base.as_ref(), rules);
     let sheet = viscosity::Sheet {
         entry,
         fields,
@@ -40,7 +31,7 @@ pub(super) fn oil(
         has_base: base.is_some(),
     };
     let viscosity = viscosity::viscosity(reader, &sheet, &dense);
-    let shear = viscosity::shear(reader, fields, &dense, viscosity.as_ref());
+    let worn = shear::shear(reader, fields, &dense, viscosity.as_ref());
     let grease = (kind == OilKind::Grease).then(|| grease(reader, fields));
     let mut oil = Oil {
         id: id.to_owned(),
@@ -50,8 +41,9 @@ pub(super) fn oil(
         kind,
         base,
         polymer,
-        viscosity: viscosity?,
-        shear,
+        // Where it could not be read the oil is not kept, but the rest of it is read.
+        viscosity: viscosity.clone().unwrap_or(UNREAD),
+        shear: worn,
         formulation: None,
         cold_viscosity: other::cold(reader, fields, "cold viscosity"),
         ccs: other::cold(reader, fields, "CCS"),
@@ -78,9 +70,32 @@ pub(super) fn oil(
         .iter()
         .all(|k| fields.lacks(k));
     if polymer == Polymer::Thickened && silent {
-        viscosity::no_shear(reader, fields, &oil);
+        shear::no_shear(reader, fields, &oil);
     }
-    Some(oil)
+    viscosity.is_some().then_some(oil)
+}
+
+const UNREAD: Viscosity = Viscosity::Points {
+    points: Vec::new(),
+    from: PointsFrom::DataSheet,
+};
+
+/// The stated density, else one typical of the base.
+fn dense(
+    stated: Option<&Given<(MassDensity, ThermodynamicTemperature)>>,
+    base: Option<&Given<BaseStock>>,
+    rules: &Rulebook,
+) -> viscosity::Density {
+    let stock = base.map_or(BaseStock::MineralI, |b| b.value);
+    let rho15 = match stated {
+        Some(given) => other::at_15(given.value, stock),
+        None => rules.typical_density(stock),
+    };
+    let law = stock.density_law();
+    viscosity::Density {
+        dense: Dense { rho15, law },
+        assumed: stated.is_none(),
+    }
 }
 
 fn kind(reader: &mut Reader<'_>, fields: &Fields<'_>) -> OilKind {

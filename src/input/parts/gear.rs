@@ -9,6 +9,7 @@ use crate::model::part::{
 };
 use crate::problem::Code;
 use crate::source::place::Given;
+use crate::source::yaml::Node;
 
 pub(super) fn mesh(reader: &mut Reader<'_>, fields: &Fields<'_>) -> GearMesh {
     let word = fields.word(reader, "type").map(|w| w.value);
@@ -65,10 +66,14 @@ pub(super) fn worm(reader: &mut Reader<'_>, fields: &Fields<'_>) -> WormMesh {
         };
         Some(w.map(|_| material))
     });
+    if let (Some(worm), Some(speed)) = (fields.get("worm speed"), fields.get("speed")) {
+        stated_twice(reader, worm, speed, "both are the speed of the worm");
+    }
+    let worm_speed = fields.stated(reader, "worm speed");
     WormMesh {
         centre_distance: fields.stated(reader, "centre distance"),
         worm_diameter: fields.stated(reader, "worm diameter"),
-        worm_speed: fields.stated(reader, "worm speed"),
+        worm_speed: worm_speed.or_else(|| fields.stated(reader, "speed")),
         ratio: fields.stated(reader, "ratio"),
         lead_angle: fields.stated(reader, "lead angle"),
         wheel,
@@ -78,7 +83,14 @@ pub(super) fn worm(reader: &mut Reader<'_>, fields: &Fields<'_>) -> WormMesh {
 
 /// `19 / 68`: teeth of pinion and wheel.
 fn teeth(reader: &mut Reader<'_>, fields: &Fields<'_>) -> Option<Given<(u32, u32)>> {
-    let given = fields.given_text(reader, "teeth")?;
+    let listed = fields.get("teeth")?.node.items().map(|items| {
+        let texts: Vec<&str> = items.iter().filter_map(Node::text).collect();
+        texts.join(" / ")
+    });
+    let given = match (listed, fields.get("teeth")) {
+        (Some(text), Some(slot)) => Given::new(text.clone(), text, slot.bare_origin()),
+        _ => fields.given_text(reader, "teeth")?,
+    };
     match read_teeth(&given.value) {
         Ok(teeth) => Some(given.map(|_| teeth)),
         Err(fault) => {

@@ -95,11 +95,13 @@ fn kinds() -> String {
     format!("a part begins with one of {}", names.join(", "))
 }
 
-fn missing(reader: &mut Reader<'_>, node: &Node, entries: &[Entry], within: &str) {
+/// A kind that is only misspelt.
+fn misspelt(reader: &mut Reader<'_>, entries: &[Entry], within: &str) -> bool {
     let firsts = || KINDS.iter().map(|k| k.first);
     let meant = entries
         .iter()
         .find_map(|e| suggest::certain(&spelt(&e.key.text), firsts()).map(|m| (e, m)));
+    let found = meant.is_some();
     if let Some((entry, meant)) = meant {
         let problem = reader
             .at(
@@ -111,6 +113,12 @@ fn missing(reader: &mut Reader<'_>, node: &Node, entries: &[Entry], within: &str
             .did_you_mean(meant)
             .write(Write::edit(entry.key.span, meant));
         reader.report(problem);
+    }
+    found
+}
+
+fn missing(reader: &mut Reader<'_>, node: &Node, entries: &[Entry], within: &str) {
+    if misspelt(reader, entries, within) {
         return;
     }
     // The kind that has all the keys written, if one has.

@@ -9,7 +9,7 @@ use crate::quantity::convert::to_mm;
 use crate::quantity::{Length, Measure, Ratio};
 use crate::source::place::Given;
 
-pub(super) fn journal(reader: &mut Reader<'_>, fields: &Fields<'_>) -> Option<JournalBearing> {
+pub(super) fn journal(reader: &mut Reader<'_>, fields: &Fields<'_>) -> JournalBearing {
     let feed = fields.word(reader, "feed").and_then(|w| {
         let feed = match w.value {
             "pressure" => Feed::Pressure,
@@ -25,7 +25,6 @@ pub(super) fn journal(reader: &mut Reader<'_>, fields: &Fields<'_>) -> Option<Jo
     if let Some((radial, diametral)) = both {
         let why = "the diametral clearance is twice the radial one";
         stated_twice(reader, radial, diametral, why);
-        return None;
     }
     let diameter: Option<Stated<Length>> = fields.stated(reader, "diameter");
     let radial: Option<Stated<Length>> = fields.stated(reader, "radial clearance");
@@ -37,7 +36,7 @@ pub(super) fn journal(reader: &mut Reader<'_>, fields: &Fields<'_>) -> Option<Jo
         radial.as_ref(),
         diametral.as_ref(),
     );
-    Some(JournalBearing {
+    JournalBearing {
         diameter,
         width: fields.stated(reader, "width"),
         radial_clearance: radial.or(diametral.map(halved)),
@@ -49,7 +48,7 @@ pub(super) fn journal(reader: &mut Reader<'_>, fields: &Fields<'_>) -> Option<Jo
         casing_area: fields.stated(reader, "casing area"),
         shaft_roughness: fields.stated(reader, "shaft roughness"),
         lining: fields.given_text(reader, "lining"),
-    })
+    }
 }
 
 /// A diametral clearance as the radial one; the spelling stays the user's.

@@ -50,7 +50,10 @@ pub fn listing(layers: &[Layer]) -> Vec<Listed> {
 }
 
 fn entries(path: &str, text: &str) -> Vec<Listed> {
-    if let Some(front) = text.strip_prefix("---\n").filter(|_| path.ends_with(".md")) {
+    let is_page = std::path::Path::new(path)
+        .extension()
+        .is_some_and(|e| e == "md");
+    if let Some(front) = text.strip_prefix("---\n").filter(|_| is_page) {
         let (head, body) = front.split_once("\n---").unwrap_or((front, ""));
         let Ok(value) = serde_yaml::from_str::<Value>(head) else {
             return Vec::new();

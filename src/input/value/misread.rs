@@ -50,14 +50,7 @@ pub(super) fn fault(text: &str, kind: Kind, bad: &Bad, want: &Want) -> Fault {
             unit.trim_start_matches("deg").trim_start_matches('°').replace('C', "°C").replace('F', "°F")
         ))
         .mend(Mend::new(all, rise(number, unit))),
-        Bad::WhichGallon { number } => Fault::new(
-            Code::GallonWhich,
-            "a gallon may be the US or the UK one",
-            all.clone(),
-        )
-        .why("a UK gallon is a fifth larger: 4.55 L against 3.79 L")
-        .mend(Mend::new(all.clone(), gallons(text, number, "US")))
-        .mend(Mend::new(all, gallons(text, number, "UK"))),
+        Bad::WhichGallon { number } => which_gallon(text, number),
         Bad::Impossible { shown, .. } => instead(
             Fault::new(
                 Code::ValueImpossible,
@@ -76,6 +69,18 @@ fn rise(number: &str, unit: &str) -> String {
     } else {
         format!("{number} K")
     }
+}
+
+fn which_gallon(text: &str, number: &str) -> Fault {
+    let all = 0..text.len();
+    Fault::new(
+        Code::GallonWhich,
+        "a gallon may be the US or the UK one",
+        all.clone(),
+    )
+    .why("a UK gallon is a fifth larger: 4.55 L against 3.79 L")
+    .mend(Mend::new(all.clone(), gallons(text, number, "US")))
+    .mend(Mend::new(all, gallons(text, number, "UK")))
 }
 
 fn gallons(text: &str, number: &str, which: &str) -> String {
