@@ -16,6 +16,7 @@ pub mod sheet;
 pub mod spread;
 pub mod start;
 pub mod thinning;
+pub mod told;
 pub mod worn;
 
 pub use curve::Curve;

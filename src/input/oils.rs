@@ -2,6 +2,7 @@
 
 mod build;
 mod facts;
+mod formulation;
 mod line;
 mod other;
 mod shear;
@@ -27,9 +28,11 @@ const OF_ANOTHER_VISCOSITY: &[&str] = &[
     "points",
     "VI",
     "sheared",
+    "base oil",
     "cold viscosity",
     "CCS",
     "MRV",
+    "yield stress",
     "t150000",
     "HTHS",
     "alpha",

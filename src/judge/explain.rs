@@ -1,5 +1,6 @@
 //! The steps behind one verdict, by the relations the judge used, told to a recorder.
 
+mod curve;
 mod film;
 
 use super::margin::Ready;
@@ -7,22 +8,19 @@ use super::prepared::{PreparedOil, ReadyDemand, ReadyLimit, Setting, Variant};
 use super::weigh::Judgement;
 use crate::demand::{Demand, End};
 use crate::model::Oil;
-use crate::model::oil::{Shear, Viscosity, ViscosityPoint};
-use crate::oil::Worn;
 use crate::oil::thinning::End as ShearEnd;
+use crate::oil::told::LineSteps;
 use crate::quantity::convert::{celsius, kinematic, rise};
-use crate::quantity::show::{Toward, Units, quantity};
 use crate::quantity::{
     DynamicViscosity, KinematicViscosity, Measure, TemperatureInterval, ThermodynamicTemperature,
     VgStep,
 };
 use crate::relation::oil::tangent::TANGENT;
 use crate::relation::oil::vg_step::{ABOVE, BELOW, CARRIED, carried_to_40, steps};
-use crate::relation::oil::viscosity_temperature::VISCOSITY;
 use crate::relation::sump::{CEILING_MARGIN, POUR_MARGIN, USE_MARGIN};
 use crate::source::Origin;
 use crate::source::place::{Given, Whose};
-use crate::trace::{Both, Derivation, Known, Recorder, StepId};
+use crate::trace::{Derivation, Known, Recorder, StepId};
 
 /// The calculation behind one judgement.
 #[derive(Clone, Debug)]
@@ -55,6 +53,7 @@ pub struct Explained {
 /// Which of an oil's curves is meant.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
 enum Which {
+    New,
     Thin,
     Thick,
     Worn,
@@ -78,6 +77,7 @@ pub fn explain(
         ready: oil.1,
         worn: variant.worn.as_ref(),
         under_shear: variant.under_shear,
+        new: Ready::of(&oil.1.curves.new),
         points: Vec::new(),
     };
     for ready in &setting.demands {
@@ -100,14 +100,8 @@ struct Teller<'a> {
     ready: &'a PreparedOil,
     worn: Option<&'a Ready>,
     under_shear: ShearEnd,
-    points: Vec<(Which, CurveSteps)>,
-}
-
-/// Steps of the points a curve goes through.
-#[derive(Clone)]
-struct CurveSteps {
-    nu: Vec<(&'static str, Known<KinematicViscosity>)>,
-    at: Vec<(&'static str, Known<ThermodynamicTemperature>)>,
+    new: Ready,
+    points: Vec<(Which, LineSteps)>,
 }
 
 impl Teller<'_> {
@@ -159,6 +153,7 @@ impl Teller<'_> {
 
     fn curve(&self, which: Which) -> &Ready {
         match which {
+            Which::New => &self.new,
             Which::Thin => &self.ready.thin,
             Which::Thick => &self.ready.thick,
             Which::Worn => self.worn.unwrap_or(&self.ready.thin),
@@ -244,68 +239,6 @@ impl Teller<'_> {
             limit: Some(limit.value),
             t: t.value.base(),
             worn: which == Which::Worn,
-        }
-    }
-
-    fn nu_at(
-        &mut self,
-        d: &mut Derivation,
-        which: Which,
-        t: Known<ThermodynamicTemperature>,
-        says: &'static str,
-    ) -> Known<KinematicViscosity> {
-        let points = self.points_of(d, which);
-        let nu = KinematicViscosity::from_base(self.curve(which).nu(t.value.base()));
-        let mut at = points.at.clone();
-        at.push(("t", t));
-        d.law("nu", says, &VISCOSITY, Both(points.nu, at), |_| nu)
-    }
-
-    /// Records the points of a curve once.
-    fn points_of(&mut self, d: &mut Derivation, which: Which) -> CurveSteps {
-        if let Some((_, steps)) = self.points.iter().find(|(w, _)| *w == which) {
-            return steps.clone();
-        }
-        let steps = match which {
-            Which::Thin | Which::Thick => self.new_points(d, which),
-            Which::Worn => self.worn_points(d),
-        };
-        self.points.push((which, steps.clone()));
-        steps
-    }
-
-    fn new_points(&self, d: &mut Derivation, which: Which) -> CurveSteps {
-        let ends = match which {
-            Which::Thin => self.ready.curves.thin.is_some(),
-            _ => self.ready.curves.thick.is_some(),
-        };
-        match &self.oil.viscosity {
-            Viscosity::Points { points, .. } if !ends => stated(d, points),
-            _ => {
-                let why = match which {
-                    Which::Thin => "thin end of the grade or of the stated tolerance",
-                    _ => "thick end of the grade or of the stated tolerance",
-                };
-                read_off(d, self.curve(which), why)
-            }
-        }
-    }
-
-    fn worn_points(&self, d: &mut Derivation) -> CurveSteps {
-        match (&self.ready.curves.worn, &self.oil.shear) {
-            (Worn::Known(_), Some(Shear::Points { points, test })) if points.len() > 1 => {
-                let steps = stated(d, points);
-                if let Some(test) = test {
-                    d.note(|| format!("after {test}"));
-                }
-                steps
-            }
-            (Worn::Between { .. }, _) => read_off(
-                d,
-                self.curve(Which::Worn),
-                "after the greatest plausible loss of its kind: no sheared viscosity is stated",
-            ),
-            _ => read_off(d, self.curve(Which::Worn), "after the stated loss"),
         }
     }
 
@@ -459,26 +392,6 @@ fn temperature(
     }
 }
 
-/// A curve nobody stated point by point: its values at 40 and 100 °C.
-fn read_off(d: &mut Derivation, curve: &Ready, why: &'static str) -> CurveSteps {
-    let mut steps = CurveSteps {
-        nu: Vec::new(),
-        at: Vec::new(),
-    };
-    for (symbol, at_symbol, t) in [("nu_a", "t_a", 40.0), ("nu_b", "t_b", 100.0)] {
-        let at = celsius(t);
-        let nu = KinematicViscosity::from_base(curve.nu(at.base()));
-        steps.nu.push((
-            symbol,
-            d.assume("nu", "viscosity of the curve judged", nu, why),
-        ));
-        steps
-            .at
-            .push((at_symbol, d.assume("t", "its temperature", at, why)));
-    }
-    steps
-}
-
 /// A dynamic limit over the density.
 static DIVIDED: crate::relation::Law = crate::relation::Law {
     name: "kinematic-limit",
@@ -506,7 +419,7 @@ fn plain(
 
 fn says_at(which: Which) -> &'static str {
     match which {
-        Which::Thin => "viscosity of the oil there",
+        Which::New | Which::Thin => "viscosity of the oil there",
         Which::Thick => "viscosity of the new oil there",
         Which::Worn => "viscosity of the oil there, after permanent shear",
     }
@@ -521,32 +434,6 @@ fn known_limit(
         Some(step) => Known { value: nu, step },
         None => d.assume("nu_lim", "limit", nu, "rule"),
     }
-}
-
-fn stated(d: &mut Derivation, points: &[ViscosityPoint]) -> CurveSteps {
-    let symbols = [
-        ("nu_a", "t_a"),
-        ("nu_b", "t_b"),
-        ("nu_c", "t_c"),
-        ("nu_d", "t_d"),
-    ];
-    let mut steps = CurveSteps {
-        nu: Vec::new(),
-        at: Vec::new(),
-    };
-    for (i, point) in points.iter().enumerate() {
-        let (symbol, at_symbol) = symbols[i.min(symbols.len() - 1)];
-        let at = quantity(point.at.amount(), Units::Si, Toward::Nearest);
-        steps.nu.push((
-            symbol,
-            d.given("nu", "viscosity on the data sheet", &point.nu),
-        ));
-        let given = Given::new(point.at, at, point.nu.origin.clone());
-        steps
-            .at
-            .push((at_symbol, d.given("t", "its temperature", &given)));
-    }
-    steps
 }
 
 /// The judgement's own margins and the explained ones agree to the last bit; checked by tests.

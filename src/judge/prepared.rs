@@ -184,9 +184,17 @@ pub struct PreparedOil {
     cloud: Option<f64>,
     waxy: bool,
     coldest_measured: Option<f64>,
+    variants: Variants,
+}
+
+/// The ends of what is not known of an oil's polymer, the worse last.
+#[derive(Clone, Debug)]
+struct Variants {
+    /// In engines and hydraulics.
     mild: Vec<Variant>,
+    /// In gears and rolling bearings.
     severe: Vec<Variant>,
-    /// Whether the variants differ by what is lost under the shear of a film alone.
+    /// Whether they differ by what is lost under the shear of a film alone.
     film_only: bool,
 }
 
@@ -219,10 +227,11 @@ impl PreparedOil {
             .filter(|p| p.used != Used::Crosses)
             .map(|p| p.at.base())
             .min_by(f64::total_cmp);
-        let (mild, severe) = (
-            variants(&curves, false, worn),
-            variants(&curves, true, worn),
-        );
+        let variants = Variants {
+            mild: variants(&curves, false, worn),
+            severe: variants(&curves, true, worn),
+            film_only: !worn || curves.loss_range(true).is_none(),
+        };
         let stated_pour = oil.pour_point.as_ref().map(|p| p.value.figure().base());
         let pour = stated_pour
             .map(|p| (p, p))
@@ -243,9 +252,7 @@ impl PreparedOil {
             cloud: oil.cloud_point.as_ref().map(|c| c.value.figure().base()),
             waxy: stock.is_some_and(|s| s.wax_bearing),
             coldest_measured: measured,
-            film_only: !worn || curves.loss_range(true).is_none(),
-            mild,
-            severe,
+            variants,
             thin,
             thick,
             curves,
@@ -255,12 +262,8 @@ impl PreparedOil {
     /// The ends of what is not known of its polymer, the worse last: permanent loss, and
     /// temporary loss where the point asks for a film.
     pub fn variants(&self, point: &PreparedPoint) -> &[Variant] {
-        let all = if point.severe {
-            &self.severe
-        } else {
-            &self.mild
-        };
-        if self.film_only && !point.films {
+        let all = self.all(point);
+        if self.variants.film_only && !point.films {
             &all[all.len() - 1..]
         } else {
             all
@@ -269,12 +272,16 @@ impl PreparedOil {
 
     /// The worst of them.
     pub fn worst(&self, point: &PreparedPoint) -> &Variant {
-        let all = if point.severe {
-            &self.severe
-        } else {
-            &self.mild
-        };
+        let all = self.all(point);
         &all[all.len() - 1]
+    }
+
+    fn all(&self, point: &PreparedPoint) -> &[Variant] {
+        if point.severe {
+            &self.variants.severe
+        } else {
+            &self.variants.mild
+        }
     }
 
     /// Reserve asked, VG steps: half where the tolerance is judged already or points are measured.

@@ -2,7 +2,7 @@
 
 use super::stated::Bound;
 use crate::quantity::{
-    DynamicViscosity, KinematicViscosity, MassDensity, PressureViscosity, Ratio,
+    DynamicViscosity, KinematicViscosity, MassDensity, Pressure, PressureViscosity, Ratio,
     ThermodynamicTemperature, Volume,
 };
 use crate::relation::oil::base_stock::BaseStock;
@@ -38,6 +38,8 @@ pub struct Oil {
     pub ccs: Vec<Given<DynamicPoint>>,
     /// Mini-rotary viscosities.
     pub mrv: Vec<Given<DynamicPoint>>,
+    /// Yield stress seen in the mini-rotary test, and its temperature.
+    pub yield_stress: Option<Given<(Pressure, ThermodynamicTemperature)>>,
     /// Temperature of 150 000 mPa·s by ASTM D2983.
     pub t150000: Option<Given<ThermodynamicTemperature>>,
     /// Viscosity at 150 °C and 1e6 1/s.

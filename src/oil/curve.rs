@@ -76,6 +76,9 @@ impl Curve {
     /// The same curve after a loss, the same share at every temperature; where base and polymer
     /// are known, the same share of the polymer's contribution instead, with the loss meant at
     /// 100 °C, so that the base oil is never undercut.
+    ///
+    /// # Panics
+    /// Never: the share of the polymer lost is held between 0 and 1.
     #[must_use]
     pub fn after_loss(&self, loss: f64) -> Self {
         match self {

@@ -65,7 +65,7 @@ impl Graded {
 /// Grades in every system that suits the oil.
 pub fn grades(oil: &Oil, curves: &Curves) -> Vec<Graded> {
     let mut systems = vec![System::IsoVg];
-    let engine = oil.kind == OilKind::Engine || !oil.ccs.is_empty() || oil.hths.is_some();
+    let engine = oil.kind == OilKind::Engine || !oil.ccs.is_empty() || !oil.mrv.is_empty();
     let axle = oil.kind == OilKind::Axle || oil.t150000.is_some();
     if engine && !axle {
         systems.push(System::Engine);
@@ -119,7 +119,7 @@ fn named(system: System, oil: &Oil, nu: KinematicViscosity) -> Option<String> {
                 hths: oil.hths.as_ref().map(|h| h.value),
                 ccs: &ccs,
                 mrv: &mrv,
-                yield_stress: None,
+                yield_stress: oil.yield_stress.as_ref().map(|y| y.value.0),
             })
             .name()
         }

@@ -1,6 +1,7 @@
 //! The rows of the oil: viscosity and temperature, index, grades, density, blends,
 //! pressure-viscosity, polymer and shear.
 
+mod ageing;
 mod alpha;
 mod blend;
 pub(super) mod curve;
@@ -47,6 +48,10 @@ pub(super) static ROWS: &[Relation] = &[
     polymer::POLYMER_CURVE,
     polymer::POLYMER_SPLIT,
     polymer::TEMPORARY_SHEAR,
+    ageing::CONTACT_SHEAR_RATE,
+    ageing::SHEAR_IN_USE,
+    ageing::LINE_TOLERANCE,
+    ageing::OIL_LIFE,
 ];
 
 const GROUP: &str = "oil";

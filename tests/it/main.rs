@@ -10,6 +10,7 @@ mod problems;
 mod properties_film;
 mod properties_oil;
 mod reader;
+mod real_oil;
 mod reference_film;
 mod reference_journal;
 mod reference_oil;

@@ -71,6 +71,11 @@ fn hours(t: Time) -> String {
     )
 }
 
+/// A range, or the one value where both ends read alike.
+fn span(a: String, b: String) -> String {
+    if a == b { a } else { format!("{a} to {b}") }
+}
+
 /// The figure alone, to as many digits as it deserves: two where it is extrapolated.
 fn figure(base: f64, kind: Kind, units: Units, extrapolated: bool) -> String {
     let unit = unit_of(kind, units);
@@ -207,8 +212,7 @@ fn shear(out: &mut String, p: &PolymerSheet, units: Units, width: usize) {
         None => format!("base oil and polymer cannot be estimated{named}"),
         Some(ends) => {
             let at = |(thin, thick): (Known<KinematicViscosity>, Known<KinematicViscosity>)| {
-                let (a, b) = (viscosity(thin.value, units), viscosity(thick.value, units));
-                if a == b { a } else { format!("{a} to {b}") }
+                span(viscosity(thin.value, units), viscosity(thick.value, units))
             };
             format!(
                 "base oil {made}: {} at 40 degC, {} at 100 degC{named}",
@@ -218,11 +222,10 @@ fn shear(out: &mut String, p: &PolymerSheet, units: Units, width: usize) {
         }
     };
     if let Some((least, most)) = p.carries {
+        let carries = span(per_cent(least), per_cent(most));
         let _ = write!(
             says,
-            "; the polymer carries {} to {} of the viscosity at 100 degC",
-            per_cent(least),
-            per_cent(most)
+            "; the polymer carries {carries} of the viscosity at 100 degC"
         );
     }
     let (from, to) = p.window;
@@ -240,8 +243,7 @@ fn shear(out: &mut String, p: &PolymerSheet, units: Units, width: usize) {
         } else {
             "no HTHS stated, plausible"
         };
-        let (a, b) = (per_cent(least.value), per_cent(most.value));
-        let range = if a == b { a } else { format!("{a} to {b}") };
+        let range = span(per_cent(least.value), per_cent(most.value));
         let says = format!(
             "keeps {range} of its viscosity at 150 degC and 1e6 1/s ({by}); returns when the shear ends"
         );

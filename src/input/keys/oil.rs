@@ -57,6 +57,9 @@ const DENSITY: Want = Want::one(&[Kind::Density])
     .at(At::Must)
     .such_as("893 kg/m3 at 15 degC");
 const ALPHA: Want = Want::one(&[Kind::PressureViscosity]).at(At::Must);
+const YIELD: Want = Want::one(&[Kind::Pressure])
+    .at(At::Must)
+    .such_as("40 Pa at -35 degC");
 
 /// An oil or a grease.
 pub static OIL: Record = Record {
@@ -80,9 +83,11 @@ const OIL_KEYS: &[Key] = &[
     key("sheared", Form::Points, "plausible range of the class", "Viscosities after a shear test."),
     key("shear loss", Form::Quantity(LOSS), "plausible range of the class", "Share of the viscosity lost in a shear test."),
     key("PSSI", Form::Quantity(INDEX), "plausible range of the class", "Permanent shear stability index of the polymer."),
+    key("polymer", Form::Text, "any kind", "Kind of polymer: OCP, star polymer, PMA, shear-stable PMA, gear PMA, PIB."),
     key("cold viscosity", Form::ColdPoints, "–", "Viscosities measured cold, ASTM D2983 and the like."),
     key("CCS", Form::ColdPoints, "–", "Cranking simulator viscosities, ASTM D5293."),
     key("MRV", Form::ColdPoints, "–", "Mini-rotary viscosities, ASTM D4684."),
+    key("yield stress", Form::Quantity(YIELD), "none seen", "Yield stress in the mini-rotary test, ASTM D4684."),
     key("t150000", Form::Quantity(COLD), "–", "Temperature of 150 000 mPa.s, ASTM D2983."),
     key("HTHS", one(DYNAMIC), "plausible range of the class", "Viscosity at 150 °C under high shear, ASTM D4683."),
     key("pour point", Form::Quantity(BOUND), "gap", "Pour point, ASTM D97."),
@@ -105,7 +110,7 @@ const OIL_KEYS: &[Key] = &[
     key("in stock", one(VOLUME), "–", "How much is in store."),
     key("thickener", Form::Text, "gap", "Thickener of a grease."),
     key("NLGI", Form::Text, "gap", "Consistency of a grease, 000 to 6."),
-    key("base oil", Form::Points, "gap", "Viscosities of the base oil of a grease."),
+    key("base oil", Form::Points, "gap", "Viscosities of the base oil of a grease, or of an oil without its polymer."),
     key("dropping point", Form::Quantity(Want::one(TEMPERATURE).or_bound().such_as("above 250 degC")), "gap", "Dropping point of a grease, ISO 2176."),
     key("code", Form::Text, "–", "DIN 51502 code of a grease."),
 ];

@@ -1,6 +1,6 @@
 //! One oil from its values.
 
-use super::{facts, other, shear, viscosity};
+use super::{facts, formulation, other, shear, viscosity};
 use crate::input::convert::Dense;
 use crate::input::fields::Fields;
 use crate::input::reader::Reader;
@@ -32,6 +32,7 @@ pub(super) fn oil(
     };
     let viscosity = viscosity::viscosity(reader, &sheet, &dense);
     let worn = shear::shear(reader, fields, &dense, viscosity.as_ref());
+    let formulation = formulation::formulation(reader, fields, kind, &dense);
     let grease = (kind == OilKind::Grease).then(|| grease(reader, fields));
     let mut oil = Oil {
         id: id.to_owned(),
@@ -44,10 +45,11 @@ pub(super) fn oil(
         // Where it could not be read the oil is not kept, but the rest of it is read.
         viscosity: viscosity.clone().unwrap_or(UNREAD),
         shear: worn,
-        formulation: None,
+        formulation,
         cold_viscosity: other::cold(reader, fields, "cold viscosity"),
         ccs: other::cold(reader, fields, "CCS"),
         mrv: other::cold(reader, fields, "MRV"),
+        yield_stress: other::beside(reader, fields, "yield stress"),
         t150000: fields.given(reader, "t150000"),
         hths: fields.given(reader, "HTHS"),
         pour_point: fields.bound(reader, "pour point"),

@@ -149,9 +149,6 @@ fn facts(a: &Oil, b: &Oil) -> OilFacts {
         _ => None,
     };
     let both = |class: &&String| fb.classes.iter().any(|c| c.eq_ignore_ascii_case(class));
-    fn same<T: PartialEq + Copy>(x: Option<T>, y: Option<T>) -> Option<T> {
-        x.filter(|x| y == Some(*x))
-    }
     OilFacts {
         additives,
         classes: fa.classes.iter().filter(both).cloned().collect(),
@@ -161,4 +158,9 @@ fn facts(a: &Oil, b: &Oil) -> OilFacts {
         fire_class: same(fa.fire_class, fb.fire_class),
         ..OilFacts::default()
     }
+}
+
+/// What both declare alike.
+fn same<T: PartialEq + Copy>(x: Option<T>, y: Option<T>) -> Option<T> {
+    x.filter(|x| y == Some(*x))
 }

@@ -58,10 +58,12 @@ impl Part {
             .map(|(thin, thick)| if end == End::Thin { thin } else { thick })
     }
 
+    /// Base oil, never above the oil itself: an estimate may pass its line far from the points.
     fn base_at(&self, at: ThermodynamicTemperature, end: End) -> KinematicViscosity {
-        match self.made(end) {
-            Some(oil) => oil.base().nu_at(at),
-            None => self.new.nu_at(at),
+        let new = self.new.nu_at(at);
+        match self.made(end).map(|oil| oil.base().nu_at(at)) {
+            Some(base) if base < new => base,
+            _ => new,
         }
     }
 

@@ -6,7 +6,8 @@ use crate::model::rulebook::Rulebook;
 use crate::oil::cold::{ColdPoint, Used};
 use crate::oil::curves::Curves;
 use crate::quantity::Measure;
-use crate::quantity::show::{Toward, Units, quantity};
+use crate::quantity::show::{Toward, Units, quantity, significant};
+use crate::relation::oil::sae_engine::yield_limit;
 
 /// A measured viscosity further than this from the line is a finding; the reproducibility of the
 /// low-shear test is about 10 to 20 % (from memory).
@@ -16,7 +17,29 @@ pub(super) fn findings(found: &mut Vec<Finding>, oil: &Oil, curves: &Curves, rul
     for p in &curves.cold_points {
         one(found, p);
     }
+    yields(found, oil);
     gelling(found, oil, curves, rules);
+}
+
+/// An oil that yields does not flow to a pump by itself, whatever its viscosity.
+fn yields(found: &mut Vec<Finding>, oil: &Oil) {
+    let Some(given) = &oil.yield_stress else {
+        return;
+    };
+    let (stress, at) = given.value;
+    if stress < yield_limit() {
+        return;
+    }
+    let at = quantity(at.amount(), Units::Si, Toward::Nearest);
+    let pascals = significant(stress.base(), 2, Toward::Up);
+    found.push(finding(
+        "yields-cold",
+        format!(
+            "a yield stress of {pascals} Pa at {at} was measured: the oil does not flow to a pump \
+             by itself there, whatever its viscosity says"
+        ),
+        "keep the start warmer than that, or take another oil",
+    ));
 }
 
 fn one(found: &mut Vec<Finding>, p: &ColdPoint) {
@@ -71,7 +94,7 @@ fn times(ratio: f64) -> String {
 /// A waxy oil that stands cold may gel, whatever its viscosity says.
 fn gelling(found: &mut Vec<Finding>, oil: &Oil, curves: &Curves, rules: &Rulebook) {
     let waxy = rules.base_stock(curves.base).is_some_and(|s| s.wax_bearing);
-    if !waxy || !oil.mrv.is_empty() {
+    if !waxy || !oil.mrv.is_empty() || oil.yield_stress.is_some() {
         return;
     }
     let cloud = oil.cloud_point.as_ref().map(|c| c.value.figure());

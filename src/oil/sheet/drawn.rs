@@ -116,7 +116,10 @@ pub(super) fn lines(teller: &Teller<'_>) -> Vec<DrawnLine> {
     }
     let oils = curves.makeup.oils();
     for (oil, of) in oils.iter().zip([LineOf::BaseThin, LineOf::BaseThick]) {
-        all.push(draw(of, curves.lowest, &|at| oil.base().nu_at(at)));
+        let mut line = draw(of, curves.lowest, &|at| oil.base().nu_at(at));
+        // an estimate that passes the finished oil is not drawn on: there the line is too thin
+        line.readings.retain(|r| r.nu <= curves.new.nu_at(r.at));
+        all.push(line);
     }
     if let (Some(oil), None) = (oils.first(), &curves.cold) {
         all.push(draw(LineOf::ByParts, curves.lowest, &|at| oil.nu_at(at)));

@@ -6,7 +6,7 @@ use crate::oil::makeup::Makeup;
 use crate::oil::thinning::{End, Kept};
 use crate::quantity::convert::{celsius, number};
 use crate::quantity::{KinematicViscosity, Measure, Ratio, ShearRate, ThermodynamicTemperature};
-use crate::relation::oil::polymer::SPLIT;
+use crate::relation::oil::polymer::{SPLIT, ThickenedOil};
 use crate::relation::oil::shear::{LOSS, PSSI, stability_index};
 use crate::relation::oil::temporary_shear::{HIGH_SHEAR, RATIO};
 use crate::relation::oil::viscosity_temperature::ViscosityCurve;
@@ -78,7 +78,7 @@ impl Teller<'_> {
             .makeup
             .oils()
             .first()
-            .map_or_else(|| (celsius(0.0), celsius(100.0)), |oil| oil.window());
+            .map_or_else(|| (celsius(0.0), celsius(100.0)), ThickenedOil::window);
         let carries = self.curves.makeup.carried_at_100();
         let kept_150 = self.kept_150();
         Some(PolymerSheet {

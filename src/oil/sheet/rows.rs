@@ -1,25 +1,20 @@
 //! The oil at one temperature.
 
-use super::teller::{LineSteps, Teller};
+use super::teller::Teller;
 use super::{Row, SpreadOf};
-use crate::model::oil::Shear;
-use crate::oil::cold::Used;
 use crate::oil::curves::Capped;
 use crate::oil::spread::Spread;
 use crate::oil::start::Standing;
+use crate::oil::told::{lost, measured_cold, thickened};
 use crate::oil::{Curve, Worn};
-use crate::quantity::convert::{dynamic, kinematic, number};
+use crate::quantity::convert::{dynamic, number};
 use crate::quantity::show::{Toward, Units, quantity};
 use crate::quantity::{
-    DynamicViscosity, KinematicViscosity, MassDensity, Measure, PressureViscosity, Ratio,
-    ThermodynamicTemperature,
+    KinematicViscosity, MassDensity, Measure, PressureViscosity, Ratio, ThermodynamicTemperature,
 };
 use crate::relation::oil::density::DYNAMIC_VISCOSITY;
-use crate::relation::oil::piecewise::PIECEWISE;
-use crate::relation::oil::polymer::SHEARED;
-use crate::relation::oil::shear::UNIFORM;
 use crate::relation::oil::uncertainty::{CARRIED, REPRODUCIBILITY, of_one_result};
-use crate::relation::oil::viscosity_temperature::{VISCOSITY, ViscosityCurve};
+use crate::relation::oil::viscosity_temperature::VISCOSITY;
 use crate::trace::{Both, Known, Recorder};
 
 type Nu = Known<KinematicViscosity>;
@@ -88,42 +83,12 @@ impl Teller<'_> {
         if t.value >= joined.joint {
             return None;
         }
-        let nu = joined.below.nu_at(t.value);
         let joint = self.asked(joined.joint);
-        let mut steps = LineSteps {
-            nu: vec![(
-                "nu_joint",
-                self.nu_new(joint, "the new oil at the coldest point stated"),
-            )],
-            at: vec![("t_joint", joint)],
-        };
-        let points = self.curves.cold_points.clone();
-        for p in points.iter().filter(|p| p.used == Used::Yes) {
-            let at = self.asked(p.at);
-            let rho = self.density(at);
-            let eta = self
-                .d
-                .assume("eta", "viscosity measured cold", p.eta, p.test.word());
-            steps.nu.push((
-                "nu_cold",
-                self.d.law(
-                    "nu",
-                    "the same over the density",
-                    &DYNAMIC_VISCOSITY,
-                    (("eta", eta), ("rho", rho)),
-                    |(eta, rho): (DynamicViscosity, MassDensity)| kinematic(eta, rho),
-                ),
-            ));
-            steps.at.push(("t_cold", at));
-        }
-        steps.at.push(("t", t));
-        Some(self.d.law(
-            "nu",
-            "viscosity of the new oil through measured cold points",
-            &PIECEWISE,
-            Both(steps.nu, steps.at),
-            |_| nu,
-        ))
+        let at_joint = self.nu_new(joint, "the new oil at the coldest point stated");
+        let density = self.curves.density;
+        let cold = (joined.as_ref(), self.curves.cold_points.as_slice(), density);
+        let says = "viscosity of the new oil through measured cold points";
+        Some(measured_cold(&mut self.d, cold, (joint, at_joint), t, says))
     }
 
     /// Thin and thick: ends of the grade or of stated tolerances, else the tests' own spread.
@@ -211,23 +176,7 @@ impl Teller<'_> {
                 )
             }
             (Worn::Known(Curve::Thickened(made)), _) => {
-                let base = made.base().nu_at(t.value);
-                let base = self
-                    .d
-                    .assume("nu_base", "base oil", base, "base oil stated");
-                let left = self.d.assume(
-                    "P",
-                    "share of the polymer left after shear",
-                    made.share_at(t.value),
-                    "by the shear data stated",
-                );
-                self.d.law(
-                    "nu_worn",
-                    "viscosity after shear",
-                    &SHEARED,
-                    Both((("nu_base", base),), (("P", left),)),
-                    |_: ((KinematicViscosity,), (Ratio,))| nu,
-                )
+                thickened(&mut self.d, made, t, "viscosity after shear")
             }
             _ => {
                 let lost = 1.0 - nu.base() / new.value.base();
@@ -244,30 +193,29 @@ impl Teller<'_> {
 
     fn lost(&mut self, new: Nu, share: f64, worn: &Capped<'_>, t: At, why: &'static str) -> Nu {
         let nu = worn.nu_at(t.value);
-        let stated = match &self.oil.shear {
-            Some(Shear::Loss { loss, .. }) => Some(loss.clone()),
-            _ => None,
-        };
-        let share = match stated {
-            Some(given) => self.d.given("PVL", "loss by shear stated", &given),
-            None => self.d.assume("PVL", "loss by shear", number(share), why),
-        };
-        self.d.law(
-            "nu_worn",
-            "viscosity after shear",
-            &UNIFORM,
-            Both((("nu", new),), (("PVL", share),)),
-            |_: ((KinematicViscosity,), (Ratio,))| nu,
+        lost(
+            &mut self.d,
+            self.oil,
+            new,
+            (number(share), why),
+            ("viscosity after shear", nu),
         )
     }
 
+    /// Base oil, thinner and thicker, never above what shear leaves: where an estimate would
+    /// pass the line of the finished oil, it is the line that is too thin there.
     fn base(
         &self,
         at: ThermodynamicTemperature,
     ) -> Option<(KinematicViscosity, KinematicViscosity)> {
         let oils = self.curves.makeup.oils();
         let (first, last) = (oils.first()?, oils.last()?);
-        let (a, b) = (first.base().nu_at(at), last.base().nu_at(at));
+        let most = match self.curves.worn_range(true) {
+            Some((_, worn)) => worn.nu_at(at),
+            None => self.curves.nu_new(at),
+        };
+        let held = |nu: KinematicViscosity| if nu > most { most } else { nu };
+        let (a, b) = (held(first.base().nu_at(at)), held(last.base().nu_at(at)));
         Some(if a <= b { (a, b) } else { (b, a) })
     }
 

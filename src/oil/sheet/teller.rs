@@ -8,6 +8,7 @@ use crate::oil::curves::Curves;
 use crate::oil::grades::{Graded, System, Worn as WornGrade};
 use crate::oil::life::{LifeAt, LifeBasis};
 use crate::oil::spread::{Spread, spread};
+use crate::oil::told::{LineSteps, thickened};
 use crate::quantity::convert::celsius;
 use crate::quantity::show::{Toward, Units, quantity};
 use crate::quantity::{KinematicViscosity, Measure, Ratio, ThermodynamicTemperature, Time};
@@ -15,20 +16,12 @@ use crate::relation::Law;
 use crate::relation::oil::grade::ISO_3448;
 use crate::relation::oil::life::{ARRHENIUS, RULE_OF_TEN};
 use crate::relation::oil::piecewise::PIECEWISE;
-use crate::relation::oil::polymer::FINISHED;
 use crate::relation::oil::sae_engine::J300;
 use crate::relation::oil::sae_gear::J306;
 use crate::relation::oil::viscosity_index::{self, INDEX, NU100};
 use crate::relation::oil::viscosity_temperature::{VISCOSITY, ViscosityCurve};
 use crate::source::place::Given;
 use crate::trace::{Both, Derivation, Known, Recorder};
-
-/// The points of a line, recorded once.
-#[derive(Clone)]
-pub(super) struct LineSteps {
-    pub(super) nu: Vec<(&'static str, Known<KinematicViscosity>)>,
-    pub(super) at: Vec<(&'static str, Known<ThermodynamicTemperature>)>,
-}
 
 /// Tells one oil.
 pub(super) struct Teller<'a> {
@@ -88,13 +81,9 @@ impl<'a> Teller<'a> {
 
     /// The law a curve goes by.
     pub(super) fn law_of(curve: &Curve) -> &'static Law {
-        match curve {
-            Curve::Thickened(_) => &FINISHED,
-            _ if curve.is_bent() => &PIECEWISE,
-            _ => match curve.line() {
-                Some(_) => &VISCOSITY,
-                None => &PIECEWISE,
-            },
+        match curve.line() {
+            Some(_) => &VISCOSITY,
+            None => &PIECEWISE,
         }
     }
 
@@ -104,6 +93,9 @@ impl<'a> Teller<'a> {
         t: Known<ThermodynamicTemperature>,
         says: &'static str,
     ) -> Known<KinematicViscosity> {
+        if let Curve::Thickened(oil) = self.curves.new {
+            return thickened(&mut self.d, &oil, t, says);
+        }
         let nu = self.curves.new.nu_at(t.value);
         let mut at = self.new.at.clone();
         at.push(("t", t));

@@ -25,6 +25,11 @@ pub static J300: Law = Law {
 /// Yield stress from which the pumping test fails, Pa (from memory).
 const YIELD_LIMIT_PA: f64 = 35.0;
 
+/// Yield stress from which the pumping test fails.
+pub fn yield_limit() -> Pressure {
+    Pressure::from_base(YIELD_LIMIT_PA)
+}
+
 /// A winter grade: limits of cranking, pumping and viscosity at 100 °C.
 #[derive(Debug, PartialEq)]
 pub struct WinterGrade {

@@ -9,6 +9,7 @@ use crate::relation::oil::polymer::PolymerError;
 use crate::relation::oil::pressure_viscosity::NoAlpha;
 use crate::relation::oil::saybolt::SayboltError;
 use crate::relation::oil::shear::ShearError;
+use crate::relation::oil::shear_in_use::NoTrend;
 use crate::relation::oil::temporary_shear::RateError;
 use crate::relation::oil::viscosity_index::IndexError;
 use crate::relation::oil::viscosity_temperature::Misfit;
@@ -49,6 +50,11 @@ refusals! {
         WrightError::Blend(blend) => Self::from(*blend).name,
         WrightError::Line(misfit) => Self::from(*misfit).name,
         WrightError::Forms => "forms-mixed",
+    };
+    NoTrend: e => match e {
+        NoTrend::Order => "samples-order",
+        NoTrend::NotGrowing => "loss-not-growing",
+        NoTrend::Passed => "limit-passed",
     };
     SayboltError: e => match e {
         SayboltError::TooThin { .. } => "viscosity-out-of-range",
