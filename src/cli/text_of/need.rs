@@ -15,10 +15,10 @@ const COLUMNS: [Column; 7] = [
     Column::text("end", 0),
     Column::text("limit", 0),
     Column::text("at", 4),
-    Column::text("part", 2),
-    Column::text("asks", 3),
+    Column::text("", 3),
+    Column::text("part", 4),
     Column::text("confidence", 1),
-    Column::text("", 0),
+    Column::text("asks", 2),
 ];
 
 /// One machine.
@@ -27,7 +27,7 @@ pub fn one(scales: &Scales<'_>, point: &Point, demands: &PointDemands, width: us
     let mut out = format!("{}  {title}", point.address());
     out.truncate(out.trim_end().len());
     out.push_str("\n\n");
-    needs(&mut out, scales, demands);
+    needs(&mut out, scales, demands, width);
     out.push('\n');
     let rows: Vec<Vec<String>> = demands
         .middle
@@ -65,8 +65,8 @@ fn row(units: Units, demands: &PointDemands, i: usize, d: &Demand) -> Vec<String
     let state = match &d.standing {
         Standing::Judges if demands.middle.governing(d.end) == Some(i) => "governs".to_owned(),
         Standing::Judges => String::new(),
-        Standing::Replaced { by } => format!("replaced by {by}"),
-        Standing::Condition => "a condition where not met".to_owned(),
+        Standing::Replaced { .. } => "replaced".to_owned(),
+        Standing::Condition => "condition".to_owned(),
         Standing::Information => "information".to_owned(),
     };
     vec![
@@ -82,10 +82,10 @@ fn row(units: Units, demands: &PointDemands, i: usize, d: &Demand) -> Vec<String
                 )
             },
         ),
-        d.part.clone().unwrap_or_default(),
-        d.says.clone(),
-        confidence(d).to_owned(),
         state,
+        d.part.clone().unwrap_or_default(),
+        confidence(d).to_owned(),
+        d.says.clone(),
     ]
 }
 
