@@ -92,7 +92,7 @@ impl fmt::Display for Whose {
             Self::House => "house",
             Self::Assumed => "assumed",
             Self::Standard => "standard",
-            Self::NotStated => "not stated",
+            Self::NotStated => "given, no source stated",
         })
     }
 }
