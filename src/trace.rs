@@ -294,9 +294,8 @@ impl Derivation {
         amount: Amount,
         how: How,
     ) -> StepId {
-        let same = |s: &Step| {
-            s.symbol == symbol && s.says == says && s.amount == amount && s.how == how
-        };
+        let same =
+            |s: &Step| s.symbol == symbol && s.says == says && s.amount == amount && s.how == how;
         if let Some(at) = self.steps.iter().position(same) {
             self.latest = at;
             return self.steps[at].id;

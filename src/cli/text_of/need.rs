@@ -9,7 +9,6 @@ use crate::quantity::{Measure, ThermodynamicTemperature};
 use crate::results::need::{confidence, end_word, limit_amount};
 use crate::source::place::Place;
 use crate::weighing::Scales;
-use std::fmt::Write as _;
 
 const COLUMNS: [Column; 7] = [
     Column::text("end", 0),
@@ -138,17 +137,10 @@ pub fn origins(point: &Point, place: impl Fn(&Place) -> String) -> String {
                 Some(about) => format!("{about}, {}", line.key),
                 None => line.key.clone(),
             };
-            let mut whose = line.origin.whose.to_string();
-            for extra in [&line.origin.dated, &line.origin.note]
-                .into_iter()
-                .flatten()
-            {
-                let _ = write!(whose, ", {extra}");
-            }
             vec![
                 key,
                 line.written.clone(),
-                whose,
+                line.origin.words(),
                 line.origin.inherited.clone().unwrap_or_default(),
                 place(&line.origin.place),
             ]
