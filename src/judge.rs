@@ -8,6 +8,7 @@
 pub mod allowance;
 pub mod band;
 pub mod because;
+pub mod brief;
 pub mod explain;
 pub mod margin;
 pub mod numbers;

@@ -21,4 +21,5 @@ mod report_formulas;
 mod report_pages;
 mod rules;
 mod scenario;
+mod sound;
 mod work_journal;
