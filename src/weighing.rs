@@ -235,13 +235,29 @@ impl<'a> Scales<'a> {
             oil,
             judgement,
             conditions,
-            notes: eligible.notes.iter().map(condition).collect(),
+            notes: self.notes(oil, ready, eligible),
             facts_missing: eligible.gaps.iter().map(|g| g.says.clone()).collect(),
             because,
             brief,
             in_use,
             on_site: self.on_site.contains(&self.site.oils[oil].id),
         }
+    }
+
+    /// Remarks for the sheet: those of the rules, and a loss found in a test milder than the
+    /// machine.
+    fn notes(&self, oil: usize, ready: &PreparedPoint, eligible: &Eligibility) -> Vec<Condition> {
+        let mut notes: Vec<Condition> = eligible.notes.iter().map(condition).collect();
+        let mild = |f: &&crate::oil::findings::Finding| f.name == "shear-test-mild";
+        let found = self.oils[oil].curves.findings.iter().find(mild);
+        notes.extend(found.filter(|_| ready.severe).map(|f| Condition {
+            title: String::new(),
+            rule: f.name.to_owned(),
+            says: f.says.clone(),
+            act: f.act.clone(),
+            source: "rules, shear tests".to_owned(),
+        }));
+        notes
     }
 
     fn sort(&self, candidates: &mut [Candidate]) {

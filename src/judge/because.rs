@@ -208,9 +208,10 @@ impl Teller<'_> {
             format!("at {}", self.temperature(t))
         };
         let state = if sheared { ", after shear" } else { "" };
+        let taken = self.taken(limit, t, nu);
         let text = if floor {
             format!(
-                "too thin {there}{state}: {}, at least {} ({})",
+                "too thin {there}{state}: {}, at least {}{taken} ({})",
                 shown(nu, Toward::Down),
                 shown(need, Toward::Up),
                 demand.says
@@ -225,6 +226,21 @@ impl Teller<'_> {
         };
         let size = if floor { need / nu } else { nu / need };
         Some((size, text))
+    }
+
+    /// What the shear of a film takes for a while, in words; nothing for other limits.
+    fn taken(&self, limit: &ReadyLimit, t: f64, nu: f64) -> String {
+        let ReadyLimit::Film(film) = limit else {
+            return String::new();
+        };
+        let at = ThermodynamicTemperature::from_base(t);
+        let nu = KinematicViscosity::from_base(nu);
+        let end = self.oil.worst(self.ready).under_shear;
+        film.thinned(&self.oil.curves, nu, at, end)
+            .map_or_else(String::new, |kept| {
+                let lost = 100.0 * (1.0 - kept.viscosity.base());
+                format!(" at rest, of which the contact takes {lost:.0} % for a while")
+            })
     }
 
     fn worst_worn(&self) -> Option<&Ready> {

@@ -44,7 +44,9 @@ pub struct OilSheet {
     pub facts: Vec<(&'static str, String)>,
     /// Viscosity index by its viscosities, new and worn at the greatest loss.
     pub index: Option<Known<Ratio>>,
-    /// The same after shear.
+    /// How far the index of the new oil may be off by the tests; none where only ends are known.
+    pub index_spread: Option<Known<Ratio>>,
+    /// The index after shear.
     pub index_worn: Option<Known<Ratio>>,
     /// Grades, new and worn.
     pub grades: Vec<Graded>,
@@ -125,6 +127,7 @@ pub fn sheet(
     let temperatures = temperatures(&teller, asked);
     let rows = temperatures.iter().map(|t| teller.row(*t)).collect();
     let index = teller.index(false);
+    let index_spread = index.and_then(|index| teller.index_spread(index));
     let index_worn = teller.index(true);
     let grades = grades(oil, &curves);
     teller.grades(&grades);
@@ -141,6 +144,7 @@ pub fn sheet(
         because,
         facts: words::facts(oil, &curves),
         index,
+        index_spread,
         index_worn,
         grades,
         rows,

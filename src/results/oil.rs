@@ -96,6 +96,10 @@ pub fn value(sheet: &OilSheet, units: Units) -> Map<String, Value> {
     m.insert("facts".into(), Value::Object(facts));
     m.insert("vi".into(), sheet.index.map_or(Value::Null, plain));
     m.insert(
+        "vi_spread".into(),
+        sheet.index_spread.map_or(Value::Null, plain),
+    );
+    m.insert(
         "vi_worn".into(),
         sheet.index_worn.map_or(Value::Null, plain),
     );

@@ -168,6 +168,9 @@ fn grades(out: &mut String, sheet: &OilSheet, width: usize) {
         })
     };
     let mut says = format!("VI {}", vi(sheet.index));
+    if let Some(off) = sheet.index_spread {
+        let _ = write!(says, " +/- {}", fixed(off.value.base(), 0, Toward::Up));
+    }
     if sheet.index_worn.is_some() {
         let _ = write!(says, " new, {} worn", vi(sheet.index_worn));
     }

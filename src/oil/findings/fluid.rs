@@ -26,6 +26,15 @@ pub(super) fn findings(found: &mut Vec<Finding>, oil: &Oil, curves: &Curves) {
             "ask the supplier for the base stock",
         ));
     }
+    let density = curves.density;
+    if !density.law.covers(density.at15, celsius(15.0)) {
+        let rho = quantity(density.at15.amount(), Units::Si, Toward::Nearest);
+        found.push(finding(
+            "density-outside",
+            format!("{rho} at 15 degC is outside the tables its base is carried by"),
+            "check density and base",
+        ));
+    }
     scope(found, curves);
     if curves.pressure == PressureLaw::Unknown {
         found.push(finding(

@@ -9,7 +9,7 @@ use crate::oil::grades::{Graded, System, Worn as WornGrade};
 use crate::oil::life::{LifeAt, LifeBasis};
 use crate::oil::spread::{Spread, spread};
 use crate::oil::told::{LineSteps, thickened};
-use crate::quantity::convert::celsius;
+use crate::quantity::convert::{celsius, number};
 use crate::quantity::show::{Toward, Units, quantity};
 use crate::quantity::{KinematicViscosity, Measure, Ratio, ThermodynamicTemperature, Time};
 use crate::relation::Law;
@@ -18,6 +18,7 @@ use crate::relation::oil::life::{ARRHENIUS, RULE_OF_TEN};
 use crate::relation::oil::piecewise::PIECEWISE;
 use crate::relation::oil::sae_engine::J300;
 use crate::relation::oil::sae_gear::J306;
+use crate::relation::oil::uncertainty::{CARRIED, of_one_result};
 use crate::relation::oil::viscosity_index::{self, INDEX, NU100};
 use crate::relation::oil::viscosity_temperature::{VISCOSITY, ViscosityCurve};
 use crate::source::place::Given;
@@ -143,6 +144,34 @@ impl<'a> Teller<'a> {
                 |(u, y)| viscosity_index::index(u, y),
             )
             .ok()
+    }
+
+    /// How far the index of the new oil may be off by the tests it is worked out from.
+    pub(super) fn index_spread(&mut self, index: Known<Ratio>) -> Option<Known<Ratio>> {
+        let Some(Spread::Tests { .. }) = self.spread else {
+            return None;
+        };
+        let (t40, t100) = (celsius(40.0), celsius(100.0));
+        let (nu40, nu100) = (self.curves.nu_new(t40), self.curves.nu_new(t100));
+        let moved = |nu: KinematicViscosity, at| {
+            KinematicViscosity::from_base(nu.base() * (1.0 + of_one_result(at).base()))
+        };
+        let off = |u, y| {
+            let vi = viscosity_index::index(u, y).ok()?.base();
+            Some(vi - index.value.base())
+        };
+        let (by40, by100) = (
+            off(moved(nu40, t40), nu100)?,
+            off(nu40, moved(nu100, t100))?,
+        );
+        let value = number((by40 * by40 + by100 * by100).sqrt());
+        Some(self.d.law(
+            "u_VI",
+            "how far the index may be off by the tests",
+            &CARRIED,
+            (("VI", index),),
+            |_: (Ratio,)| value,
+        ))
     }
 
     /// A step for every grade.
