@@ -42,36 +42,156 @@ const fn pair(oil: &'static str, machine: &'static str, why: &'static str) -> Pa
 }
 
 const PAIRS: [Pair; 30] = [
-    pair("TO-32", "sump: held at 45 degC, start: 20 degC, parts: [{component: turbine_journal}]", "steam turbine on ISO VG 32 at a 45 degC header, ISO 8068"),
-    pair("TO-46", "sump: held at 48 degC, start: 22 degC, parts: [{component: turbine_journal}]", "geared turbine on ISO VG 46, ISO 8068"),
-    pair("TO-32", "sump: held at 45 degC, start: 20 degC, parts: [{component: comp_centrifugal}]", "centrifugal compressor on ISO VG 32, API 614 practice"),
-    pair("TO-68", "sump: held at 45 degC, start: 12 degC, parts: [{component: turbine_hydro}]", "hydro set on ISO VG 68"),
-    pair("HM-46", "sump: held at 50 degC, start: 15 degC, parts: [{component: hyd_pump_piston_axial, pressure: 210 bar}]", "axial piston pump on HM 46 indoors at 50 degC"),
-    pair("HM-32", "sump: held at 45 degC, start: 10 degC, parts: [{component: hyd_pump_piston_axial, pressure: 160 bar}]", "axial piston pump on HM 32 in a cool hall"),
-    pair("HM-46", "sump: held at 50 degC, start: 10 degC, parts: [{component: hyd_pump_vane, pressure: 140 bar}]", "vane pump on HM 46"),
-    pair("HM-46", "sump: held at 55 degC, start: 0 degC, parts: [{component: hyd_pump_gear_external, pressure: 180 bar}]", "gear pump on HM 46"),
-    pair("HM-68", "sump: held at 60 degC, start: 10 degC, parts: [{component: hyd_motor_orbit, pressure: 140 bar}]", "orbital motor on HM 68"),
-    pair("HM-46", "sump: held at 48 degC, start: 18 degC, parts: [{component: hyd_pump_piston_axial, pressure: 250 bar}, {component: hyd_valve_servo, pressure: 250 bar}]", "press with proportional valves on HM 46 started warm"),
-    pair("CI-68", "lubrication: bath, sump: held at 60 degC, start: 10 degC, parts: [{component: fan_bearing_bath}]", "fan bearings in a bath on VG 68"),
-    pair("CI-100", "lubrication: bath, sump: held at 65 degC, start: 15 degC, parts: [{component: fan_bearing_bath}]", "warm fan on VG 100"),
-    pair("CI-68", "lubrication: bath, sump: held at 60 degC, start: 10 degC, parts: [{component: pump_bearing_bath}]", "process pump bearings on VG 68"),
-    pair("TO-46", "lubrication: ring, sump: held at 55 degC, start: 12 degC, parts: [{component: brg_plain_ring_oiled}]", "ring-oiled motor bearing on VG 46"),
-    pair("TO-68", "lubrication: ring, sump: held at 60 degC, start: 12 degC, parts: [{component: brg_plain_ring_oiled}]", "ring-oiled fan bearing on VG 68"),
-    pair("CI-150", "lubrication: circulated, sump: held at 55 degC, start: 20 degC, parts: [{component: circ_general}]", "circulating system of a mill on VG 150"),
-    pair("PM-220", "lubrication: circulated, sump: held at 75 degC, start: 30 degC, parts: [{rolling bearing: 23160, speed: 220 r/min}]", "dryer roll bearings of a paper machine on VG 220"),
-    pair("PM-220", "lubrication: circulated, sump: held at 80 degC, start: 30 degC, parts: [{component: paper_dryer}]", "the same by its window"),
-    pair("EP-220", "lubrication: splash, backstop: no, sump: held at 60 degC, start: 5 degC, parts: [{gear mesh: low stage, pitch-line speed: 5 m/s}]", "industrial helical gearbox on VG 220 at 5 m/s, the usual grade of gear practice"),
-    pair("EP-150", "lubrication: splash, backstop: no, sump: held at 55 degC, start: 0 degC, parts: [{gear mesh: single stage, pitch-line speed: 12 m/s}]", "single-stage gearbox at 12 m/s on VG 150"),
-    pair("EP-320", "lubrication: splash, backstop: no, sump: held at 65 degC, start: 5 degC, parts: [{gear mesh: slow stage, pitch-line speed: 2.5 m/s}]", "slow mixer drive on VG 320"),
-    pair("SY-220", "lubrication: splash, backstop: no, sump: held at 70 degC, start: -20 degC, parts: [{gear mesh: low stage, pitch-line speed: 6 m/s}]", "outdoor conveyor gearbox on synthetic VG 220"),
-    pair("WG-460", "lubrication: splash, yellow metal: yes, wet: no, seals: FKM, sump: held at 80 degC, start: 5 degC, parts: [{component: gear_worm}]", "worm gear with bronze wheel on polyglycol VG 460"),
-    pair("SC-46", "lubrication: flooded, sump: held at 75 degC, start: 10 degC, parts: [{component: comp_screw_flooded_air}]", "screw compressor on VG 46 injected at 75 degC"),
-    pair("RC-100", "sump: held at 60 degC, start: 10 degC, parts: [{component: comp_recip_crankcase}]", "crankcase of a piston compressor on VG 100"),
-    pair("VP-100", "lubrication: flooded, sump: held at 70 degC, start: 15 degC, parts: [{component: vac_rotary_vane}]", "rotary vane vacuum pump on VG 100"),
-    pair("SW-68", "sump: held at 30 degC, start: 15 degC, parts: [{component: slideway_horizontal}]", "horizontal slideway on VG 68"),
-    pair("SP-10", "sump: held at 35 degC, start: 15 degC, parts: [{component: spindle_plain}]", "plain-bearing spindle on VG 10"),
-    pair("EP-220", "lubrication: splash, backstop: no, sump: held at 65 degC, start: 0 degC, parts: [{rolling bearing: 22220, speed: 400 r/min}]", "gearbox shaft bearing on VG 220, ISO 281 kappa above 1"),
-    pair("AX-90", "lubrication: splash, sump: held at 85 degC, start: -15 degC, parts: [{component: gear_hypoid_axle}]", "hypoid axle on SAE 90 in a mild winter"),
+    pair(
+        "TO-32",
+        "sump: held at 45 degC, start: 20 degC, parts: [{component: turbine_journal}]",
+        "steam turbine on ISO VG 32 at a 45 degC header, ISO 8068",
+    ),
+    pair(
+        "TO-46",
+        "sump: held at 48 degC, start: 22 degC, parts: [{component: turbine_journal}]",
+        "geared turbine on ISO VG 46, ISO 8068",
+    ),
+    pair(
+        "TO-32",
+        "sump: held at 45 degC, start: 20 degC, parts: [{component: comp_centrifugal}]",
+        "centrifugal compressor on ISO VG 32, API 614 practice",
+    ),
+    pair(
+        "TO-68",
+        "sump: held at 45 degC, start: 12 degC, parts: [{component: turbine_hydro}]",
+        "hydro set on ISO VG 68",
+    ),
+    pair(
+        "HM-46",
+        "sump: held at 50 degC, start: 15 degC, parts: [{component: hyd_pump_piston_axial, pressure: 210 bar}]",
+        "axial piston pump on HM 46 indoors at 50 degC",
+    ),
+    pair(
+        "HM-32",
+        "sump: held at 45 degC, start: 10 degC, parts: [{component: hyd_pump_piston_axial, pressure: 160 bar}]",
+        "axial piston pump on HM 32 in a cool hall",
+    ),
+    pair(
+        "HM-46",
+        "sump: held at 50 degC, start: 10 degC, parts: [{component: hyd_pump_vane, pressure: 140 bar}]",
+        "vane pump on HM 46",
+    ),
+    pair(
+        "HM-46",
+        "sump: held at 55 degC, start: 0 degC, parts: [{component: hyd_pump_gear_external, pressure: 180 bar}]",
+        "gear pump on HM 46",
+    ),
+    pair(
+        "HM-68",
+        "sump: held at 60 degC, start: 10 degC, parts: [{component: hyd_motor_orbit, pressure: 140 bar}]",
+        "orbital motor on HM 68",
+    ),
+    pair(
+        "HM-46",
+        "sump: held at 48 degC, start: 18 degC, parts: [{component: hyd_pump_piston_axial, pressure: 250 bar}, {component: hyd_valve_servo, pressure: 250 bar}]",
+        "press with proportional valves on HM 46 started warm",
+    ),
+    pair(
+        "CI-68",
+        "lubrication: bath, sump: held at 60 degC, start: 10 degC, parts: [{component: fan_bearing_bath}]",
+        "fan bearings in a bath on VG 68",
+    ),
+    pair(
+        "CI-100",
+        "lubrication: bath, sump: held at 65 degC, start: 15 degC, parts: [{component: fan_bearing_bath}]",
+        "warm fan on VG 100",
+    ),
+    pair(
+        "CI-68",
+        "lubrication: bath, sump: held at 60 degC, start: 10 degC, parts: [{component: pump_bearing_bath}]",
+        "process pump bearings on VG 68",
+    ),
+    pair(
+        "TO-46",
+        "lubrication: ring, sump: held at 55 degC, start: 12 degC, parts: [{component: brg_plain_ring_oiled}]",
+        "ring-oiled motor bearing on VG 46",
+    ),
+    pair(
+        "TO-68",
+        "lubrication: ring, sump: held at 60 degC, start: 12 degC, parts: [{component: brg_plain_ring_oiled}]",
+        "ring-oiled fan bearing on VG 68",
+    ),
+    pair(
+        "CI-150",
+        "lubrication: circulated, sump: held at 55 degC, start: 20 degC, parts: [{component: circ_general}]",
+        "circulating system of a mill on VG 150",
+    ),
+    pair(
+        "PM-220",
+        "lubrication: circulated, sump: held at 75 degC, start: 30 degC, parts: [{rolling bearing: 23160, speed: 220 r/min}]",
+        "dryer roll bearings of a paper machine on VG 220",
+    ),
+    pair(
+        "PM-220",
+        "lubrication: circulated, sump: held at 80 degC, start: 30 degC, parts: [{component: paper_dryer}]",
+        "the same by its window",
+    ),
+    pair(
+        "EP-220",
+        "lubrication: splash, backstop: no, sump: held at 60 degC, start: 5 degC, parts: [{gear mesh: low stage, pitch-line speed: 5 m/s}]",
+        "industrial helical gearbox on VG 220 at 5 m/s, the usual grade of gear practice",
+    ),
+    pair(
+        "EP-150",
+        "lubrication: splash, backstop: no, sump: held at 55 degC, start: 0 degC, parts: [{gear mesh: single stage, pitch-line speed: 12 m/s}]",
+        "single-stage gearbox at 12 m/s on VG 150",
+    ),
+    pair(
+        "EP-320",
+        "lubrication: splash, backstop: no, sump: held at 65 degC, start: 5 degC, parts: [{gear mesh: slow stage, pitch-line speed: 2.5 m/s}]",
+        "slow mixer drive on VG 320",
+    ),
+    pair(
+        "SY-220",
+        "lubrication: splash, backstop: no, sump: held at 70 degC, start: -20 degC, parts: [{gear mesh: low stage, pitch-line speed: 6 m/s}]",
+        "outdoor conveyor gearbox on synthetic VG 220",
+    ),
+    pair(
+        "WG-460",
+        "lubrication: splash, yellow metal: yes, wet: no, seals: FKM, sump: held at 80 degC, start: 5 degC, parts: [{component: gear_worm}]",
+        "worm gear with bronze wheel on polyglycol VG 460",
+    ),
+    pair(
+        "SC-46",
+        "lubrication: flooded, sump: held at 75 degC, start: 10 degC, parts: [{component: comp_screw_flooded_air}]",
+        "screw compressor on VG 46 injected at 75 degC",
+    ),
+    pair(
+        "RC-100",
+        "sump: held at 60 degC, start: 10 degC, parts: [{component: comp_recip_crankcase}]",
+        "crankcase of a piston compressor on VG 100",
+    ),
+    pair(
+        "VP-100",
+        "lubrication: flooded, sump: held at 70 degC, start: 15 degC, parts: [{component: vac_rotary_vane}]",
+        "rotary vane vacuum pump on VG 100",
+    ),
+    pair(
+        "SW-68",
+        "sump: held at 30 degC, start: 15 degC, parts: [{component: slideway_horizontal}]",
+        "horizontal slideway on VG 68",
+    ),
+    pair(
+        "SP-10",
+        "sump: held at 35 degC, start: 15 degC, parts: [{component: spindle_plain}]",
+        "plain-bearing spindle on VG 10",
+    ),
+    pair(
+        "EP-220",
+        "lubrication: splash, backstop: no, sump: held at 65 degC, start: 0 degC, parts: [{rolling bearing: 22220, speed: 400 r/min}]",
+        "gearbox shaft bearing on VG 220, ISO 281 kappa above 1",
+    ),
+    pair(
+        "AX-90",
+        "lubrication: splash, sump: held at 85 degC, start: -15 degC, parts: [{component: gear_hypoid_axle}]",
+        "hypoid axle on SAE 90 in a mild winter",
+    ),
 ];
 
 #[test]
