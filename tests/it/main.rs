@@ -3,6 +3,7 @@
 mod chance;
 mod checks;
 mod demo;
+mod exact;
 mod journal_heat;
 mod journal_table;
 mod judging;
