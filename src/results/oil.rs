@@ -1,16 +1,13 @@
 //! The sheet of one oil, with the machines it is weighed on and a blend of it.
 
 mod blend;
+mod cold;
 mod machines;
 
 use super::csv::{Cell, Table};
 use super::json::{self, Head, document, number, quantity, step_name};
-use crate::model::stated::{Bound, ViscosityLimit};
-use crate::oil::cold::Used;
 use crate::oil::grades::{Graded, Worn};
-use crate::oil::sheet::{
-    ColdSheet, DrawnLine, Loss, OilSheet, PolymerSheet, Row, SpreadOf, standing,
-};
+use crate::oil::sheet::{DrawnLine, Loss, OilSheet, PolymerSheet, Row, SpreadOf, standing};
 use crate::oil::start::Standing;
 use crate::quantity::show::{Units, unit_of};
 use crate::quantity::{Amount, Kind, KinematicViscosity, Measure, Ratio, ThermodynamicTemperature};
@@ -115,8 +112,8 @@ pub fn value(sheet: &OilSheet, units: Units) -> Map<String, Value> {
         "polymer".into(),
         polymer.map_or(Value::Null, |p| polymer_value(p, units)),
     );
-    m.insert("cold".into(), cold(&sheet.cold, units));
-    m.insert("life".into(), life(sheet, units));
+    m.insert("cold".into(), cold::cold(&sheet.cold, units));
+    m.insert("life".into(), cold::life(sheet, units));
     let findings = sheet.findings.iter();
     let findings = findings.map(|f| json!({ "name": f.name, "says": f.says, "act": f.act }));
     m.insert("findings".into(), findings.collect());
@@ -238,99 +235,6 @@ fn polymer_value(p: &PolymerSheet, units: Units) -> Value {
             "least": plain(a), "most": plain(b), "calibrated": p.calibrated,
         })),
     })
-}
-
-fn bound(b: Option<Bound<ThermodynamicTemperature>>, units: Units) -> Value {
-    match b {
-        None => Value::Null,
-        Some(Bound::Exactly(t)) => quantity(t, units),
-        Some(Bound::Below(t)) => json!({ "below": quantity(t, units) }),
-        Some(Bound::Above(t)) => json!({ "above": quantity(t, units) }),
-    }
-}
-
-fn limit(limit: ViscosityLimit, units: Units) -> Value {
-    match limit {
-        ViscosityLimit::Kinematic(nu) => quantity(nu, units),
-        ViscosityLimit::Dynamic(eta) => quantity(eta, units),
-    }
-}
-
-fn cold(c: &ColdSheet, units: Units) -> Value {
-    let measured: Vec<Value> = c
-        .measured
-        .iter()
-        .map(|r| {
-            json!({
-                "test": r.point.test.word(),
-                "temperature": quantity(r.point.at, units),
-                "dynamic": quantity(r.point.eta, units),
-                "nu": quantity(r.point.nu, units),
-                "line": quantity(r.point.line, units),
-                "measured_over_line": number(r.ratio.base()),
-                "used": r.point.used == Used::Yes,
-            })
-        })
-        .collect();
-    let starts: Vec<Value> = c
-        .starts
-        .iter()
-        .map(|s| {
-            json!({
-                "part": s.start.part,
-                "limit": limit(s.start.limit, units),
-                "temperature": known(s.at, units),
-                "standing": standing(s.start.standing),
-                "extrapolated": extrapolated(s.start.standing),
-                "rule": s.start.rule,
-                "source": s.start.source,
-            })
-        })
-        .collect();
-    let designation = c.designation.as_ref().map_or(Value::Null, |(d, t)| {
-        json!({
-            "t750": known(*t, units),
-            "measured": d.measured,
-            "grade": d.grade,
-            "designation": d.whole,
-            "lacks": d.lacks,
-        })
-    });
-    json!({
-        "pour_point": bound(c.pour, units),
-        "cloud_point": bound(c.cloud, units),
-        "coldest_known": quantity(c.coldest, units),
-        "measured": measured,
-        "start_limits": starts,
-        "d6080": designation,
-    })
-}
-
-fn life(sheet: &OilSheet, units: Units) -> Value {
-    match &sheet.life {
-        Err(why) => json!({ "why_not": why.to_string() }),
-        Ok((basis, rows)) => {
-            let rows: Vec<Value> = rows
-                .iter()
-                .map(|r| {
-                    let pair = |(a, b): (_, _)| json!([quantity(a, units), quantity(b, units)]);
-                    json!({
-                        "temperature": quantity(r.at, units),
-                        "equation": pair(r.equation),
-                        "rule_of_ten": pair(r.rule_of_ten),
-                    })
-                })
-                .collect();
-            json!({
-                "guidance": true,
-                "type": basis.oil,
-                "rule": basis.rule,
-                "against_mineral": number(basis.multiple.base()),
-                "calendar": basis.calendar.map(|c| quantity(c, units)),
-                "at": rows,
-            })
-        }
-    }
 }
 
 fn line(l: &DrawnLine, units: Units) -> Value {

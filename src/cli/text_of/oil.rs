@@ -1,13 +1,12 @@
 //! `oil`: one oil as text: what it is at temperatures, how far its data carry, what it shears to.
 
 mod blend;
+mod cold;
 mod machines;
 
 use crate::cli::text::{Column, folded, table};
-use crate::model::stated::{Bound, ViscosityLimit};
-use crate::oil::cold::Used;
 use crate::oil::grades::{Graded, Worn};
-use crate::oil::sheet::{ColdSheet, Loss, OilSheet, PolymerSheet, Row, SpreadOf};
+use crate::oil::sheet::{Loss, OilSheet, PolymerSheet, Row, SpreadOf};
 use crate::oil::start::Standing;
 use crate::quantity::kind::Kind;
 use crate::quantity::show::{Toward, Units, fixed, quantity, significant, unit_of};
@@ -32,8 +31,8 @@ pub fn text(sheet: &OilSheet, units: Units, width: usize) -> String {
     if let Some(polymer) = &sheet.polymer {
         shear(&mut out, polymer, units, width);
     }
-    cold(&mut out, &sheet.cold, units, width);
-    life(&mut out, sheet, units, width);
+    cold::cold(&mut out, &sheet.cold, units, width);
+    cold::life(&mut out, sheet, units, width);
     if !sheet.findings.is_empty() {
         out.push('\n');
     }
@@ -288,138 +287,4 @@ fn loss(p: &PolymerSheet) -> String {
     let order: Vec<&str> = p.severity.iter().map(|(name, _)| name.as_str()).collect();
     let _ = write!(says, ". Tests from mild to severe: {}", order.join("; "));
     says
-}
-
-fn bound(b: Option<Bound<ThermodynamicTemperature>>, units: Units) -> String {
-    match b {
-        None => "not stated".to_owned(),
-        Some(Bound::Exactly(t)) => temperature(t, units),
-        Some(Bound::Below(t)) => format!("below {}", temperature(t, units)),
-        Some(Bound::Above(t)) => format!("above {}", temperature(t, units)),
-    }
-}
-
-fn cold(out: &mut String, c: &ColdSheet, units: Units, width: usize) {
-    out.push('\n');
-    let mut says = format!("pour point {}", bound(c.pour, units));
-    if c.cloud.is_some() {
-        let _ = write!(says, ", cloud point {}", bound(c.cloud, units));
-    }
-    let _ = write!(says, "; known down to {}", temperature(c.coldest, units));
-    out.push_str(&entry("cold", &says, width));
-    for r in &c.measured {
-        let used = match r.point.used {
-            Used::Yes => "used",
-            Used::Within => "compared only: warmer than the coldest point stated",
-            Used::ThinnerThanLine => "not used: sheared fast, it reads low",
-            Used::Crosses => "not used: it does not fit the others",
-        };
-        let says = format!(
-            "{} at {} ({}), the line gives {}: {used}",
-            quantity(r.point.eta.amount(), units, Toward::Nearest),
-            temperature(r.point.at, units),
-            r.point.test.word(),
-            viscosity(r.point.line, units)
-        );
-        out.push_str(&entry("measured", &says, width));
-    }
-    starts(out, c, units, width);
-    if let Some((d, t)) = &c.designation {
-        let how = if d.measured {
-            "measured"
-        } else {
-            "read off the line, not measured"
-        };
-        let name = match (&d.whole, d.grade) {
-            (Some(whole), _) => whole.clone(),
-            (None, Some(grade)) => grade.to_owned(),
-            (None, None) => "no low-temperature grade".to_owned(),
-        };
-        let lacks = d
-            .lacks
-            .as_ref()
-            .map_or(String::new(), |l| format!("; whole designation: {l}"));
-        let says = format!(
-            "{name}: 750 mPa.s at {} ({how}){lacks}",
-            temperature(t.value, units)
-        );
-        out.push_str(&entry("ASTM D6080", &says, width));
-    }
-}
-
-/// Start temperatures are cold ends: rounded up.
-fn starts(out: &mut String, c: &ColdSheet, units: Units, width: usize) {
-    let unit = unit_of(Kind::Temperature, units);
-    let rows: Vec<Vec<String>> = c
-        .starts
-        .iter()
-        .map(|s| {
-            let limit = match s.start.limit {
-                ViscosityLimit::Kinematic(nu) => nu.amount(),
-                ViscosityLimit::Dynamic(eta) => eta.amount(),
-            };
-            let far = match s.start.standing {
-                Standing::Below(by) => format!("{by:.0} K"),
-                _ => String::new(),
-            };
-            let at = fixed(s.at.value.amount().in_unit(unit), 0, Toward::Up);
-            vec![
-                format!("{at} {}", unit.name),
-                quantity(limit, units, Toward::Nearest),
-                far,
-                s.start.part.clone(),
-            ]
-        })
-        .collect();
-    let columns = [
-        Column::number("reaches at", 0),
-        Column::number("limit", 0),
-        Column::number("extrapolated", 0),
-        Column::text("of", 1),
-    ];
-    if !rows.is_empty() {
-        out.push_str(&table(&columns, &rows, width));
-    }
-}
-
-fn life(out: &mut String, sheet: &OilSheet, units: Units, width: usize) {
-    out.push('\n');
-    let (basis, rows) = match &sheet.life {
-        Err(why) => {
-            out.push_str(&entry("life", &format!("no figure: {why}"), width));
-            return;
-        }
-        Ok(life) => life,
-    };
-    let calendar = basis.calendar.map_or(String::new(), |c| {
-        let years = c.base() / 31_556_952.0;
-        format!(
-            "; by the calendar at most {} years without analysis",
-            significant(years, 2, Toward::Down)
-        )
-    });
-    let says = format!(
-        "guidance, never a promise: {}, {} times mineral oil; the shorter figure is with free water \
-         and metal{calendar}",
-        basis.oil,
-        significant(basis.multiple.base(), 2, Toward::Nearest)
-    );
-    out.push_str(&entry("life", &says, width));
-    let columns = [
-        Column::text("runs at", 0),
-        Column::text("by the equation", 0),
-        Column::text("by the rule of ten", 0),
-    ];
-    let pair = |(a, b): (Time, Time)| format!("{} to {}", hours(a), hours(b));
-    let lines: Vec<Vec<String>> = rows
-        .iter()
-        .map(|r| {
-            vec![
-                temperature(r.at, units),
-                pair(r.equation),
-                pair(r.rule_of_ten),
-            ]
-        })
-        .collect();
-    out.push_str(&table(&columns, &lines, width));
 }
