@@ -3,10 +3,12 @@
 mod chance;
 mod checks;
 mod demo;
+mod determinism;
 mod exact;
 mod journal_heat;
 mod journal_table;
 mod judging;
+mod layers;
 mod problems;
 mod properties_film;
 mod properties_oil;

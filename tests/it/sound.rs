@@ -5,6 +5,7 @@
 use crate::judging::{rules, site};
 use filmwright::judge::Verdict;
 use filmwright::weighing::{Scales, Settings};
+use std::fmt::Write as _;
 
 const OILS: &str = "\
 file: oils 1
@@ -199,10 +200,11 @@ fn ordinary_pairs_do_not_fail() {
     let rules = rules();
     let mut machines = String::from("file: site 1\nmachines:\n");
     for (i, p) in PAIRS.iter().enumerate() {
-        machines.push_str(&format!(
-            "  P{i:02}: {{ ambient: 10 .. 30 degC, oil now: {}, {} }}\n",
+        let _ = writeln!(
+            machines,
+            "  P{i:02}: {{ ambient: 10 .. 30 degC, oil now: {}, {} }}",
             p.oil, p.machine
-        ));
+        );
     }
     let site = site(&machines, OILS, &rules);
     let scales = Scales::new(&site, &rules, Settings::default()).expect("curves");
