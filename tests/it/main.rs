@@ -3,6 +3,7 @@
 mod chance;
 mod checks;
 mod demo;
+mod hostile;
 mod journal_heat;
 mod journal_table;
 mod judging;
@@ -20,4 +21,5 @@ mod report_formulas;
 mod report_pages;
 mod rules;
 mod scenario;
+mod tables;
 mod work_journal;
