@@ -343,3 +343,14 @@ pub struct Help {
     /// The topic
     pub topic: Option<String>,
 }
+
+#[cfg(test)]
+mod tests {
+    use super::Cli;
+    use clap::CommandFactory as _;
+
+    #[test]
+    fn the_command_line_is_well_formed() {
+        Cli::command().debug_assert();
+    }
+}

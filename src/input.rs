@@ -1,5 +1,6 @@
 //! The reader: text into the checked model, with every problem of every file in one pass.
 
+pub mod bearing_table;
 pub mod convert;
 pub mod fields;
 pub mod file;

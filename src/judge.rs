@@ -7,6 +7,7 @@
 
 pub mod band;
 pub mod because;
+pub mod brief;
 pub mod explain;
 pub mod margin;
 pub mod numbers;

@@ -4,7 +4,6 @@
 //! these types, and the reverse. A number stated by somebody is a [`stated::Stated`]: known, known
 //! only to lie in a range, or unknown; `None` around it means that nobody wrote anything.
 
-pub mod bearing_table;
 pub mod facts;
 pub mod machine;
 pub mod oil;

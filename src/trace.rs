@@ -230,6 +230,7 @@ pub struct Derivation {
     steps: Vec<Step>,
     applied: Vec<(&'static Law, Vec<(&'static str, StepId)>)>,
     about: Option<String>,
+    latest: usize,
 }
 
 impl Derivation {
@@ -285,6 +286,7 @@ impl Derivation {
         offset
     }
 
+    /// Writes a step down, unless the very same stands already: one number, one step.
     fn push(
         &mut self,
         symbol: &'static str,
@@ -292,7 +294,14 @@ impl Derivation {
         amount: Amount,
         how: How,
     ) -> StepId {
+        let same =
+            |s: &Step| s.symbol == symbol && s.says == says && s.amount == amount && s.how == how;
+        if let Some(at) = self.steps.iter().position(same) {
+            self.latest = at;
+            return self.steps[at].id;
+        }
         let id = StepId(u32::try_from(self.steps.len()).unwrap_or(u32::MAX));
+        self.latest = self.steps.len();
         self.steps.push(Step {
             id,
             symbol,
@@ -388,8 +397,11 @@ impl Recorder for Derivation {
     }
 
     fn note(&mut self, remark: impl FnOnce() -> String) {
-        if let Some(step) = self.steps.last_mut() {
-            step.notes.push(remark());
+        if let Some(step) = self.steps.get_mut(self.latest) {
+            let remark = remark();
+            if !step.notes.contains(&remark) {
+                step.notes.push(remark);
+            }
         }
     }
 

@@ -4,6 +4,7 @@ pub mod facts;
 
 use crate::demand::{Demand, PointDemands, Standing, is_severe, point_demands, takes_grease};
 use crate::judge::because::because;
+use crate::judge::brief::brief;
 use crate::judge::explain::{Explanation, explain};
 use crate::judge::order::{Candidate as Ordered, compare, quantised, thousandths};
 use crate::judge::{Judgement, PreparedOil, PreparedPoint, Verdict, weigh};
@@ -22,6 +23,8 @@ use std::collections::BTreeSet;
 pub struct Condition {
     /// Id of the rule it comes from.
     pub rule: String,
+    /// Its title, where it stands for a rule of the rules folder.
+    pub title: String,
     /// What must be met, and why.
     pub says: String,
     /// What to do.
@@ -45,6 +48,8 @@ pub struct Candidate {
     pub facts_missing: Vec<String>,
     /// Why the word is what it is, the main reason first.
     pub because: Vec<String>,
+    /// The main reason in a few words.
+    pub brief: String,
     /// Whether it is the oil in use here.
     pub in_use: bool,
     /// Whether some point of the site holds it today.
@@ -218,6 +223,7 @@ impl<'a> Scales<'a> {
         let mut conditions: Vec<Condition> = eligible.conditions.iter().map(condition).collect();
         conditions.extend(asked(demands, &judgement));
         let because = because(demands, ready, &self.oils[oil], &judgement, self.units);
+        let brief = brief(demands, ready, &self.oils[oil], &judgement, self.units);
         Candidate {
             oil,
             judgement,
@@ -225,6 +231,7 @@ impl<'a> Scales<'a> {
             notes: eligible.notes.iter().map(condition).collect(),
             facts_missing: eligible.gaps.iter().map(|g| g.says.clone()).collect(),
             because,
+            brief,
             in_use,
             on_site: self.on_site.contains(&self.site.oils[oil].id),
         }
@@ -331,6 +338,7 @@ fn asked(demands: &PointDemands, judgement: &Judgement) -> Vec<Condition> {
             };
             Condition {
                 rule: demand.rule.clone(),
+                title: demand.says.clone(),
                 says: format!("{}: {why}", demand.says),
                 act: act.to_owned(),
                 source: demand.source.clone(),
@@ -343,6 +351,7 @@ fn asked(demands: &PointDemands, judgement: &Judgement) -> Vec<Condition> {
 fn condition(finding: &Finding) -> Condition {
     Condition {
         rule: finding.rule.clone(),
+        title: finding.title.clone(),
         says: finding.reason.clone(),
         act: finding.act.clone(),
         source: finding.source.join("; "),

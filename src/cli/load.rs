@@ -238,7 +238,12 @@ impl Session<'_> {
         let mut folders = Vec::new();
         if let Some(folder) = folder {
             let own = folder.join("rules");
-            if self.host.exists(&own) {
+            let beside_a_site = self.shared.site.is_some()
+                || !reader::default_files(FileKind::Site, |below| {
+                    self.names_in(&folder.join(below))
+                })
+                .is_empty();
+            if beside_a_site && self.host.exists(&own) {
                 folders.push(own.to_string_lossy().replace('\\', "/"));
             }
         }

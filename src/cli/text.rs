@@ -36,7 +36,11 @@ impl Column {
     }
 }
 
-/// A table as lines, each indented by two.
+/// Least width a last column is folded to; narrower, it runs on.
+const LEAST_FOLD: usize = 18;
+
+/// A table as lines, each indented by two. A last column that is never dropped is folded within
+/// the width.
 pub fn table(columns: &[Column], rows: &[Vec<String>], width: usize) -> String {
     let mut shown: Vec<usize> = (0..columns.len()).collect();
     let widths: Vec<usize> = (0..columns.len())
@@ -76,8 +80,24 @@ pub fn table(columns: &[Column], rows: &[Vec<String>], width: usize) -> String {
     if headings.iter().any(|h| !h.is_empty()) {
         line(&mut out, columns, &shown, &widths, &headings);
     }
+    let before: usize = shown.iter().rev().skip(1).map(|i| widths[*i] + 2).sum();
+    let left = width.saturating_sub(2 + before);
     for row in rows {
-        line(&mut out, columns, &shown, &widths, row);
+        let last = shown.last().copied().unwrap_or(0);
+        let cell = row.get(last).map_or("", String::as_str);
+        if columns[last].keep > 0 || left < LEAST_FOLD || cell.chars().count() <= left {
+            line(&mut out, columns, &shown, &widths, row);
+            continue;
+        }
+        let mut row = row.clone();
+        let text = folded(cell, "", left);
+        for (k, piece) in text.lines().enumerate() {
+            if k > 0 {
+                row.iter_mut().for_each(String::clear);
+            }
+            piece.clone_into(&mut row[last]);
+            line(&mut out, columns, &shown, &widths, &row);
+        }
     }
     out
 }
@@ -146,7 +166,28 @@ pub fn band(band: Band, units: Units) -> String {
     }
 }
 
-/// Words folded at a width, with a hanging indent.
+/// Words folded at a width behind a lead; further lines are indented as far as the lead reaches.
+pub fn hanging(lead: &str, text: &str, width: usize) -> String {
+    let indent = " ".repeat(lead.chars().count());
+    let body = folded(text, &indent, width);
+    format!("{lead}{}", body.get(indent.len()..).unwrap_or(""))
+}
+
+/// With a capital where the sentence begins and a stop where it ends.
+pub fn sentence(text: &str) -> String {
+    let text = text.trim();
+    let mut letters = text.chars();
+    let Some(first) = letters.next() else {
+        return String::new();
+    };
+    let mut out: String = first.to_uppercase().chain(letters).collect();
+    if !out.ends_with(['.', '?', '!']) {
+        out.push('.');
+    }
+    out
+}
+
+/// Words folded at a width, every line indented.
 pub fn folded(text: &str, indent: &str, width: usize) -> String {
     let mut out = String::new();
     let mut line = String::from(indent);

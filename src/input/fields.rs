@@ -28,6 +28,8 @@ pub struct Slot<'t> {
     pub inherited: Option<Rc<str>>,
     /// The machine, part or oil it was written in.
     pub within: Rc<str>,
+    /// What the record says its figures were taken from.
+    pub source: Option<Rc<str>>,
 }
 
 /// The values of one record, by key.
@@ -72,6 +74,7 @@ impl<'t> Fields<'t> {
                 for entry in entries {
                     fields.take(reader, entry);
                 }
+                fields.name_the_source();
             }
             NodeKind::Refused => fields.broken = true,
             _ if node.is_blank() => {}
@@ -81,6 +84,17 @@ impl<'t> Fields<'t> {
             }
         }
         fields
+    }
+
+    /// Tells every value what the record says its figures were taken from.
+    fn name_the_source(&mut self) {
+        let source = self.slots.get("source").and_then(|s| s.node.text());
+        let Some(source) = source.map(Rc::<str>::from) else {
+            return;
+        };
+        for slot in self.slots.values_mut() {
+            slot.source = Some(source.clone());
+        }
     }
 
     /// Takes one entry in.
@@ -115,6 +129,7 @@ impl<'t> Fields<'t> {
                 node: &entry.value,
                 inherited: None,
                 within: self.within.clone(),
+                source: None,
             },
         );
     }
@@ -236,7 +251,7 @@ impl Slot<'_> {
         Origin {
             whose: Whose::NotStated,
             dated: None,
-            note: None,
+            note: self.source.as_deref().map(str::to_owned),
             place: Place::Text(self.node.span),
             inherited: self.inherited.as_deref().map(str::to_owned),
         }

@@ -155,6 +155,7 @@ pub(super) fn put<'t>(fields: &mut Fields<'t>, entry: &'t Entry) {
             node: &entry.value,
             inherited: None,
             within: fields.within.clone(),
+            source: None,
         });
     }
 }

@@ -13,7 +13,7 @@ use super::value::{self, At, Body, Clauses, Deviation, Fault, Mend, Want};
 use crate::model::oil::{DynamicPoint, ViscosityPoint};
 use crate::problem::{Code, Write};
 use crate::quantity::{DynamicViscosity, Kind, Measure, Ratio};
-use crate::source::place::{Given, Whose};
+use crate::source::place::Given;
 use crate::source::{Origin, Span};
 
 const POINT: Want = Want::one(&[
@@ -280,12 +280,7 @@ fn without_tolerance(text: &str) -> String {
 
 /// The piece's own origin, else that of the whole list.
 fn origin(slot: &Slot<'_>, whole: &Clauses, own: &Clauses) -> Origin {
-    let origin = slot.origin(own);
-    if origin.whose == Whose::NotStated && origin.note.is_none() {
-        slot.origin(whole)
-    } else {
-        origin
-    }
+    slot.origin(if own.origin.is_some() { own } else { whole })
 }
 
 /// Reads dynamic viscosities measured cold.

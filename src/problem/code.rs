@@ -265,6 +265,8 @@ codes! {
     ReadingMissing = "reading-missing" Error,
     /// Running colder than at start.
     StartHotter = "start-hotter" Error,
+    /// A start colder than the coldest ambient.
+    StartColder = "start-colder" Warning,
     /// A bearing designation that is not in the table.
     BearingUnknown = "bearing-unknown" Error,
     /// Sizes of a bearing that contradict each other.

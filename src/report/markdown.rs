@@ -35,10 +35,24 @@ pub fn allowed(target: &str) -> bool {
         return false;
     }
     let lower = target.to_ascii_lowercase();
+    let rest = |scheme| lower.strip_prefix(scheme);
     target.starts_with('#')
-        || ["https://", "http://", "mailto:"]
-            .iter()
-            .any(|scheme| lower.starts_with(scheme))
+        || rest("mailto:").is_some_and(|address| address.contains('@'))
+        || rest("https://")
+            .or_else(|| rest("http://"))
+            .is_some_and(|rest| is_host(rest.split(['/', '?', '#']).next().unwrap_or("")))
+}
+
+/// A plain host name, with a port perhaps: letters, digits, points and hyphens.
+fn is_host(text: &str) -> bool {
+    let (name, port) = text.split_once(':').unwrap_or((text, "0"));
+    let plain = |part: &str| {
+        !part.is_empty()
+            && !part.starts_with('-')
+            && !part.ends_with('-')
+            && part.chars().all(|c| c.is_ascii_alphanumeric() || c == '-')
+    };
+    name.split('.').all(plain) && port.parse::<u16>().is_ok()
 }
 
 fn safe<'a>(event: Event<'a>, under: u8, open_links: &mut Vec<bool>) -> Option<Event<'a>> {

@@ -144,7 +144,7 @@ fn step(trace: &Derivation, step: &Step, units: Units) -> Value {
             if !written.is_empty() {
                 m.insert("written".into(), json!(written));
             }
-            m.insert("origin".into(), json!(origin.whose.to_string()));
+            m.insert("origin".into(), json!(origin.words()));
             if let Some(note) = &origin.note {
                 m.insert("note".into(), json!(note));
             }
@@ -187,7 +187,7 @@ fn input(step: &Step, units: Units) -> Value {
             m.insert("step".into(), json!(step_name(step.id)));
         }
         How::Given { origin, .. } => {
-            m.insert("origin".into(), json!(origin.whose.to_string()));
+            m.insert("origin".into(), json!(origin.words()));
             m.insert("step".into(), json!(step_name(step.id)));
         }
     }

@@ -92,7 +92,7 @@ impl fmt::Display for Whose {
             Self::House => "house",
             Self::Assumed => "assumed",
             Self::Standard => "standard",
-            Self::NotStated => "not stated",
+            Self::NotStated => "given, no source stated",
         })
     }
 }
@@ -113,6 +113,17 @@ pub struct Origin {
 }
 
 impl Origin {
+    /// Whose word it is, with its date and remark; a source named for the whole record stands
+    /// for itself.
+    pub fn words(&self) -> String {
+        let mut words = Vec::new();
+        if self.whose != Whose::NotStated || self.note.is_none() {
+            words.push(self.whose.to_string());
+        }
+        words.extend([&self.dated, &self.note].into_iter().flatten().cloned());
+        words.join(", ")
+    }
+
     /// A default of the program, with its reason.
     pub fn assumed(why: impl Into<String>) -> Self {
         Self {

@@ -84,7 +84,7 @@ fn site_text(args: &Need) -> String {
         );
     }
     if let Some(gear) = &args.gear {
-        part("gear mesh", "the mesh", Some(("pitch-line speed", gear)));
+        part("gear mesh", "as stated", Some(("pitch-line speed", gear)));
     }
     if let Some(component) = &args.component {
         part("component", component, None);
@@ -139,12 +139,9 @@ fn answer(session: &Session<'_>, demands: &PointDemands, args: &Need) -> String 
         );
         let part = demand.part.as_deref().unwrap_or("");
         let _ = writeln!(out, "  set by   {part}, {}", demand.says);
-        let _ = writeln!(
-            out,
-            "  rule     {}: {}",
-            demand.source,
-            formula(demands, demand)
-        );
+        let formula = formula(demands, demand);
+        let colon = if formula.is_empty() { "" } else { ": " };
+        let _ = writeln!(out, "  rule     {}{colon}{formula}", demand.source);
     }
     if out.is_empty() {
         out.push_str("nothing can be worked out from this\n\n");

@@ -41,7 +41,7 @@ pub fn rules(session: &mut Session<'_>, args: &Rules) -> Exit {
         return session.result(&text);
     }
     let text = if args.rules.is_empty() {
-        overview(&chosen)
+        overview(&chosen, session.width())
     } else {
         chosen
             .iter()
@@ -96,7 +96,7 @@ fn one_json(r: &Listed) -> serde_json::Value {
     serde_json::Value::Object(entry)
 }
 
-fn overview(rules: &[&Listed]) -> String {
+fn overview(rules: &[&Listed], width: usize) -> String {
     let mut out = String::from("Rules in force. filmwright rules ID prints one with its source.\n");
     let mut kind = "";
     for r in rules {
@@ -107,9 +107,41 @@ fn overview(rules: &[&Listed]) -> String {
         let sure = r
             .field("confidence")
             .map_or(String::new(), |c| format!("  [{c}]"));
-        let _ = writeln!(out, "    {:<34} {}{sure}", r.id, r.title);
+        let left = width.saturating_sub(39 + sure.len()).max(20);
+        let _ = writeln!(out, "    {:<34} {}{sure}", r.id, cut(gist(r), left));
     }
     out
+}
+
+/// The title, else the first thing an entry says in words.
+fn gist(r: &Listed) -> &str {
+    let words = |s: &&str| s.split_whitespace().count() > 3;
+    if r.title.is_empty() {
+        r.says
+            .iter()
+            .filter(|(key, _)| key != "source")
+            .map(|(_, says)| says.as_str())
+            .find(words)
+            .unwrap_or("")
+    } else {
+        &r.title
+    }
+}
+
+/// So many letters of a text at most, cut at a word.
+fn cut(text: &str, most: usize) -> String {
+    if text.chars().count() <= most {
+        return text.to_owned();
+    }
+    let mut short = String::new();
+    for word in text.split_whitespace() {
+        if short.chars().count() + word.chars().count() + 5 > most {
+            break;
+        }
+        short.push_str(word);
+        short.push(' ');
+    }
+    short + "..."
 }
 
 fn one(r: &Listed, width: usize) -> String {

@@ -9,16 +9,15 @@ use crate::quantity::{Measure, ThermodynamicTemperature};
 use crate::results::need::{confidence, end_word, limit_amount};
 use crate::source::place::Place;
 use crate::weighing::Scales;
-use std::fmt::Write as _;
 
 const COLUMNS: [Column; 7] = [
     Column::text("end", 0),
     Column::text("limit", 0),
     Column::text("at", 4),
-    Column::text("part", 2),
-    Column::text("asks", 3),
+    Column::text("", 3),
+    Column::text("part", 4),
     Column::text("confidence", 1),
-    Column::text("", 0),
+    Column::text("asks", 2),
 ];
 
 /// One machine.
@@ -27,7 +26,7 @@ pub fn one(scales: &Scales<'_>, point: &Point, demands: &PointDemands, width: us
     let mut out = format!("{}  {title}", point.address());
     out.truncate(out.trim_end().len());
     out.push_str("\n\n");
-    needs(&mut out, scales, demands);
+    needs(&mut out, scales, demands, width);
     out.push('\n');
     let rows: Vec<Vec<String>> = demands
         .middle
@@ -65,8 +64,8 @@ fn row(units: Units, demands: &PointDemands, i: usize, d: &Demand) -> Vec<String
     let state = match &d.standing {
         Standing::Judges if demands.middle.governing(d.end) == Some(i) => "governs".to_owned(),
         Standing::Judges => String::new(),
-        Standing::Replaced { by } => format!("replaced by {by}"),
-        Standing::Condition => "a condition where not met".to_owned(),
+        Standing::Replaced { .. } => "replaced".to_owned(),
+        Standing::Condition => "condition".to_owned(),
         Standing::Information => "information".to_owned(),
     };
     vec![
@@ -82,10 +81,10 @@ fn row(units: Units, demands: &PointDemands, i: usize, d: &Demand) -> Vec<String
                 )
             },
         ),
-        d.part.clone().unwrap_or_default(),
-        d.says.clone(),
-        confidence(d).to_owned(),
         state,
+        d.part.clone().unwrap_or_default(),
+        confidence(d).to_owned(),
+        d.says.clone(),
     ]
 }
 
@@ -138,17 +137,10 @@ pub fn origins(point: &Point, place: impl Fn(&Place) -> String) -> String {
                 Some(about) => format!("{about}, {}", line.key),
                 None => line.key.clone(),
             };
-            let mut whose = line.origin.whose.to_string();
-            for extra in [&line.origin.dated, &line.origin.note]
-                .into_iter()
-                .flatten()
-            {
-                let _ = write!(whose, ", {extra}");
-            }
             vec![
                 key,
                 line.written.clone(),
-                whose,
+                line.origin.words(),
                 line.origin.inherited.clone().unwrap_or_default(),
                 place(&line.origin.place),
             ]

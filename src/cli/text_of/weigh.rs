@@ -1,14 +1,14 @@
 //! `weigh`: candidate oils against what machines need, as text.
 
 use crate::cli::Marks;
-use crate::cli::text::{Column, band, folded, table, verdict};
+use crate::cli::text::{Column, band, hanging, sentence, table, verdict};
 use crate::demand::{Demand, End, PointDemands};
 use crate::judge::Verdict;
 use crate::judge::weigh::Margin;
 use crate::quantity::show::{Toward, margin, quantity};
 use crate::quantity::{Measure, ThermodynamicTemperature};
 use crate::results::need::limit_amount;
-use crate::weighing::{Candidate, Scales, Weighed};
+use crate::weighing::{Barred, Candidate, Condition, Scales, Weighed};
 use std::fmt::Write as _;
 
 /// How a weighing is printed.
@@ -20,21 +20,22 @@ pub struct Style {
     pub width: usize,
 }
 
-const COLUMNS: [Column; 7] = [
+const COLUMNS: [Column; 8] = [
     Column::text("", 0),
     Column::text("oil", 0),
     Column::text("verdict", 0),
+    Column::number("grade", 4),
     Column::number("hot", 4),
     Column::number("cold", 4),
     Column::text("holds in", 2),
-    Column::text("because", 1),
+    Column::text("because", 0),
 ];
 
 /// One machine.
 pub fn one(scales: &Scales<'_>, w: &Weighed<'_>, style: Style) -> String {
-    let mut out = headline(scales, w);
+    let mut out = headline(scales, w, style.width);
     out.push('\n');
-    needs(&mut out, scales, &w.demands);
+    needs(&mut out, scales, &w.demands, style.width);
     if w.candidates.is_empty() {
         out.push_str("\n  no oil is eligible here\n");
     } else {
@@ -45,7 +46,7 @@ pub fn one(scales: &Scales<'_>, w: &Weighed<'_>, style: Style) -> String {
             .enumerate()
             .map(|(i, c)| row(scales, i, c, style))
             .collect();
-        out.push_str(&table(&COLUMNS, &rows, style.width));
+        out.push_str(&candidates(&rows, style.width));
     }
     conditions(&mut out, scales, w, style);
     barred(&mut out, scales, w, style);
@@ -53,8 +54,20 @@ pub fn one(scales: &Scales<'_>, w: &Weighed<'_>, style: Style) -> String {
     out
 }
 
+/// The table of candidates, without the columns that say nothing here.
+fn candidates(rows: &[Vec<String>], width: usize) -> String {
+    let said = |i: usize| rows.iter().any(|r| r[i] != "-");
+    let kept: Vec<usize> = (0..COLUMNS.len()).filter(|i| said(*i)).collect();
+    let columns: Vec<Column> = kept.iter().map(|i| COLUMNS[*i]).collect();
+    let rows: Vec<Vec<String>> = rows
+        .iter()
+        .map(|r| kept.iter().map(|i| r[*i].clone()).collect())
+        .collect();
+    table(&columns, &rows, width)
+}
+
 /// The answer, first.
-fn headline(scales: &Scales<'_>, w: &Weighed<'_>) -> String {
+fn headline(scales: &Scales<'_>, w: &Weighed<'_>, width: usize) -> String {
     let address = w.point.address();
     let id = |c: &Candidate| scales.site.oils[c.oil].id.clone();
     let Some(best) = w.candidates.first() else {
@@ -85,11 +98,11 @@ fn headline(scales: &Scales<'_>, w: &Weighed<'_>) -> String {
                 best.judgement.reserve
             )
         }
-        Verdict::Open => format!(
-            "{address}  not decided: {} is open. {}\n",
-            id(best),
-            best.because.first().map_or("", String::as_str)
-        ),
+        Verdict::Open => {
+            let lead = format!("{address}  not decided: ");
+            let why = sentence(&format!("{} is open. {}", id(best), open_because(best)));
+            hanging(&lead, &why, width)
+        }
         Verdict::Fails => format!(
             "{address}  none of the {} oils weighed holds; the nearest is {}\n",
             w.candidates.len(),
@@ -98,11 +111,21 @@ fn headline(scales: &Scales<'_>, w: &Weighed<'_>) -> String {
     }
 }
 
+fn open_because(c: &Candidate) -> String {
+    c.because.first().map_or(String::new(), |b| sentence(b))
+}
+
 fn ends(c: &Candidate) -> String {
     let mut parts = Vec::new();
-    for (m, word) in [(c.judgement.hot, "hot"), (c.judgement.cold, "cold")] {
+    let j = &c.judgement;
+    for (m, word) in [
+        (j.maker, "on the maker's grade"),
+        (j.hot, "hot"),
+        (j.cold, "cold"),
+    ] {
         if let Some(m) = m {
-            parts.push(format!("{} step {word}", margin(m.value, 1)));
+            let step = if parts.is_empty() { " step" } else { "" };
+            parts.push(format!("{}{step} {word}", margin(m.value, 1)));
         }
     }
     if parts.is_empty() {
@@ -113,12 +136,13 @@ fn ends(c: &Candidate) -> String {
 }
 
 /// The governing demand of each end.
-pub fn needs(out: &mut String, scales: &Scales<'_>, demands: &PointDemands) {
+pub fn needs(out: &mut String, scales: &Scales<'_>, demands: &PointDemands, width: usize) {
     let mut first = true;
     for end in [
         End::HotFloor,
         End::RunningCeiling,
         End::StartCeiling,
+        End::MakerGrade,
         End::PourMargin,
     ] {
         let Some(i) = demands.middle.governing(end) else {
@@ -127,17 +151,19 @@ pub fn needs(out: &mut String, scales: &Scales<'_>, demands: &PointDemands) {
         let demand = &demands.middle.list[i];
         let lead = if first { "  needs  " } else { "         " };
         first = false;
-        let _ = writeln!(out, "{lead}{}", need_line(scales, demands, demand));
+        let (limit, whose) = need_line(scales, demands, demand);
+        out.push_str(&hanging(&format!("{lead}{limit:<28}  "), &whose, width));
     }
     for u in &demands.middle.undecided {
         let lead = if first { "  needs  " } else { "         " };
         first = false;
         let part = u.part.as_deref().unwrap_or("the point");
-        let _ = writeln!(out, "{lead}not decided: {part}: {}", u.because);
+        let text = format!("not decided: {part}: {}", u.because);
+        out.push_str(&hanging(lead, &text, width));
     }
 }
 
-fn need_line(scales: &Scales<'_>, demands: &PointDemands, demand: &Demand) -> String {
+fn need_line(scales: &Scales<'_>, demands: &PointDemands, demand: &Demand) -> (String, String) {
     let t = demands.middle.governing_temperature(demand);
     let (sign, toward) = match demand.end {
         End::HotFloor | End::MakerGrade | End::PourMargin => (">=", Toward::Up),
@@ -161,26 +187,30 @@ fn need_line(scales: &Scales<'_>, demands: &PointDemands, demand: &Demand) -> St
         .part
         .as_ref()
         .map_or(String::new(), |p| format!("{p}: "));
-    let text = format!("{sign} {limit}{at}");
     let source = if demand.says.contains(&demand.source) {
         String::new()
     } else {
         format!(", {}", demand.source)
     };
-    format!("{text:<34}{part}{}{source}", demand.says)
+    (
+        format!("{sign} {limit}{at}"),
+        format!("{part}{}{source}", demand.says),
+    )
 }
 
 fn row(scales: &Scales<'_>, i: usize, c: &Candidate, style: Style) -> Vec<String> {
     let j = &c.judgement;
     let shown = |m: Option<Margin>| m.map_or_else(|| "-".to_owned(), |m| margin(m.value, 2));
-    let mut because = c.because.first().cloned().unwrap_or_default();
-    if c.in_use {
-        because = format!("in use; {because}");
-    }
+    let because = if c.in_use {
+        format!("in use; {}", c.brief)
+    } else {
+        c.brief.clone()
+    };
     vec![
         letter(i),
         scales.site.oils[c.oil].id.clone(),
         verdict(j.verdict, style.marks),
+        shown(j.maker),
         shown(j.hot),
         shown(j.cold),
         band(j.band, scales.units),
@@ -207,26 +237,42 @@ fn conditions(out: &mut String, scales: &Scales<'_>, w: &Weighed<'_>, style: Sty
     }
     let _ = writeln!(out, "\n  conditions of {}", scales.site.oils[best.oil].id);
     for (i, c) in best.conditions.iter().enumerate() {
-        let text = format!("{}  {}. {}  [{}]", i + 1, c.says, c.act, c.rule);
-        out.push_str(&folded(&text, "     ", style.width));
+        let text = format!("{} {} [{}]", sentence(&c.says), sentence(&c.act), c.rule);
+        out.push_str(&hanging(&format!("  {:>3}  ", i + 1), &text, style.width));
     }
 }
 
+/// Barred oils by rule; the reason in full for the oil in use, and where there is one oil only.
 fn barred(out: &mut String, scales: &Scales<'_>, w: &Weighed<'_>, style: Style) {
     if w.barred.is_empty() {
         return;
     }
     let n = w.barred.len();
-    let _ = writeln!(
-        out,
-        "\n  {n} {} barred",
-        if n == 1 { "oil" } else { "oils" }
-    );
+    let oils = if n == 1 { "oil" } else { "oils" };
+    let _ = writeln!(out, "\n  {n} {oils} barred");
+    let mut groups: Vec<(&Condition, Vec<&Barred>)> = Vec::new();
     for b in &w.barred {
-        let id = &scales.site.oils[b.oil].id;
-        let now = if b.in_use { ", in use" } else { "" };
-        let text = format!("{id}{now}: {}  [{}]", b.by[0].says, b.by[0].rule);
-        out.push_str(&folded(&text, "     ", style.width));
+        let by = &b.by[0];
+        match groups.iter_mut().find(|(c, _)| c.rule == by.rule) {
+            Some((_, list)) => list.push(b),
+            None => groups.push((by, vec![b])),
+        }
+    }
+    for (rule, list) in groups {
+        let named: Vec<String> = list
+            .iter()
+            .map(|b| {
+                let now = if b.in_use { " (in use)" } else { "" };
+                format!("{}{now}", scales.site.oils[b.oil].id)
+            })
+            .collect();
+        let told = list.iter().find(|b| b.in_use || list.len() == 1);
+        let why = told.map_or_else(
+            || sentence(&rule.title),
+            |b| sentence(b.by[0].says.as_str()),
+        );
+        let text = format!("{}: {why} [{}]", named.join(", "), rule.rule);
+        out.push_str(&hanging("     ", &text, style.width));
     }
 }
 

@@ -57,12 +57,9 @@ fn one(
             more(law.source.to_owned());
         }
         How::Given { written, origin } => {
-            let mut from = origin.whose.to_string();
-            for extra in [&origin.dated, &origin.note, &origin.inherited]
-                .into_iter()
-                .flatten()
-            {
-                let _ = write!(from, ", {extra}");
+            let mut from = origin.words();
+            if let Some(inherited) = &origin.inherited {
+                let _ = write!(from, ", {inherited}");
             }
             let at = place(&origin.place);
             if !at.is_empty() {

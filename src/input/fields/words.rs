@@ -212,18 +212,25 @@ impl<'t> Slot<'t> {
         let proposals: Vec<&str> = match meant {
             Some(meant) => vec![meant],
             None if words.len() <= 3 => words.to_vec(),
-            None => words.first().copied().into_iter().collect(),
+            None => words.iter().copied().filter(|w| *w == "other").collect(),
         };
         for proposal in &proposals {
             let mend = Mend::new(at.clone(), *proposal);
-            let one_of_many = proposals.len() == 1 && meant.is_none();
-            fault = fault.mend(if one_of_many {
-                mend.remark("or another of these")
+            fault = fault.mend(if *proposal == "other" {
+                mend.remark("or one of these words")
             } else {
                 mend
             });
         }
+        let nothing_near = proposals.is_empty();
         let mut problem = reader.carried(self.node, fault, &self.within);
+        if nothing_near {
+            // to name one of many at random could state what is not true
+            let aside = Write::edit(self.name.span, format!("x-{}", self.key.name));
+            problem
+                .write
+                .push(aside.remark("keeps it as a remark; or write one of these words"));
+        }
         problem.did_you_mean = meant.map(str::to_owned);
         reader.report(problem);
         None

@@ -101,6 +101,45 @@ pub(super) fn start_hotter(
     reader.report(problem);
 }
 
+/// A start colder than the coldest ambient, which then counts.
+pub(super) fn start_colder(
+    reader: &mut Reader<'_>,
+    fields: &Fields<'_>,
+    ambient: Option<&Ambient>,
+    start: Option<&Start>,
+) {
+    let (Some(start), Some(ambient)) = (
+        start.and_then(Stated::known),
+        ambient.and_then(Stated::known),
+    ) else {
+        return;
+    };
+    let coldest = ambient.value.lo;
+    let Some(slot) = fields.get("start").filter(|_| start.value < coldest) else {
+        return;
+    };
+    let coldest = quantity(coldest.amount(), Units::Si, Toward::Nearest);
+    let private = format!("x-{}", slot.name.text);
+    let problem = reader
+        .at(
+            Code::StartColder,
+            format!(
+                "start at {} is colder than the coldest ambient, {coldest}",
+                start.written
+            ),
+            slot.node.span,
+            &slot.within,
+        )
+        .why(format!(
+            "the warmer of the two counts: starts are judged at {coldest}; if it does start colder, widen the ambient"
+        ))
+        .write(
+            Write::edit(slot.name.span, private)
+                .remark("the coldest ambient then counts; or a wider ambient"),
+        );
+    reader.report(problem);
+}
+
 /// What can be, but rarely is.
 pub(super) fn unusual(reader: &mut Reader<'_>, fields: &Fields<'_>, point: &Point) {
     if let Some(range) = point.ambient.as_ref().and_then(Stated::known) {

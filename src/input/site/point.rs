@@ -8,7 +8,7 @@ use crate::input::reader::Reader;
 use crate::model::machine::{InputLine, OilNow, Point, Sump};
 use crate::model::stated::{Between, Stated};
 use crate::problem::{Code, Write, suggest};
-use crate::quantity::ThermodynamicTemperature;
+use crate::quantity::{Measure, ThermodynamicTemperature};
 use crate::source::yaml::Entry;
 
 /// What a point is called and where it is written.
@@ -97,11 +97,14 @@ fn temperatures(
     reader: &mut Reader<'_>,
     fields: &Fields<'_>,
 ) -> (Option<Ambient>, Option<Sump>, Option<Start>) {
-    let ambient = fields.range(reader, "ambient");
-    let sump = sump::read(reader, fields);
+    let ambient: Option<Ambient> = fields.range(reader, "ambient");
+    let known = ambient.as_ref().and_then(Stated::known);
+    let hottest = known.map(|range| range.value.hi.base());
+    let sump = sump::read(reader, fields, hottest);
     let start = fields.stated(reader, "start");
     let stated = (ambient.as_ref(), sump.as_ref(), start.as_ref());
     checks::start_hotter(reader, fields, stated);
+    checks::start_colder(reader, fields, ambient.as_ref(), start.as_ref());
     (ambient, sump, start)
 }
 

@@ -11,8 +11,12 @@ use crate::quantity::convert::to_celsius;
 use crate::quantity::{Measure, TemperatureInterval, ThermodynamicTemperature};
 use crate::source::place::Given;
 
-/// The one of the four ways that is stated.
-pub(super) fn read(reader: &mut Reader<'_>, fields: &Fields<'_>) -> Option<Sump> {
+/// The one of the four ways that is stated; `hottest` is the hottest ambient, K, where known.
+pub(super) fn read(
+    reader: &mut Reader<'_>,
+    fields: &Fields<'_>,
+    hottest: Option<f64>,
+) -> Option<Sump> {
     if let (Some(rise), Some(sump)) = (fields.get("sump rise"), fields.get("sump")) {
         let why = "the rise and the reading each say how hot it runs; one of them counts";
         stated_twice(reader, rise, sump, why);
@@ -31,7 +35,7 @@ pub(super) fn read(reader: &mut Reader<'_>, fields: &Fields<'_>) -> Option<Sump>
         Body::Range { .. } => across(reader, slot, value),
         Body::Held(_) => held(slot, value),
         Body::One { .. } => reading(reader, fields, slot, value),
-        Body::Unknown(_) => unknown(reader, fields, value),
+        Body::Unknown(_) => unknown(reader, fields, value, hottest),
         Body::Bound { .. } => None,
     }
 }
@@ -137,18 +141,33 @@ fn without_ambient(reader: &mut Reader<'_>, slot: &Slot<'_>) {
     reader.report(problem);
 }
 
-/// An unknown reading at a known ambient is an unknown rise; alone it says nothing.
-fn unknown(reader: &mut Reader<'_>, fields: &Fields<'_>, value: Value) -> Option<Sump> {
+/// An unknown sump within a range is an unknown rise: over the ambient it was read at, else over
+/// the hottest ambient. Where neither is known it is taken as held.
+fn unknown(
+    reader: &mut Reader<'_>,
+    fields: &Fields<'_>,
+    value: Value,
+    hottest: Option<f64>,
+) -> Option<Sump> {
     let slot = fields.get("sump")?;
     let origin = slot.origin(&value.clauses);
-    let ambient = fields.given::<ThermodynamicTemperature>(reader, "at ambient");
-    let (Body::Unknown(Some((lo, hi))), Some(ambient)) = (&value.body, ambient) else {
+    let read_at = fields.given::<ThermodynamicTemperature>(reader, "at ambient");
+    let Body::Unknown(Some((lo, hi))) = &value.body else {
         return None;
     };
-    let above = |t: f64| TemperatureInterval::from_base(t - ambient.value.base());
+    let (lo, hi) = (lo.amount.base, hi.amount.base);
+    let read_at = read_at.map(|g| g.value.base());
+    let Some(ambient) = read_at.or(hottest) else {
+        let range = Between {
+            lo: ThermodynamicTemperature::from_base(lo),
+            hi: ThermodynamicTemperature::from_base(hi),
+        };
+        let given = Given::new(range, value.written, origin);
+        return Some(Sump::Held(Stated::Range(given, value.clauses.ask)));
+    };
     let rise = Between {
-        lo: above(lo.amount.base),
-        hi: above(hi.amount.base),
+        lo: TemperatureInterval::from_base(lo - ambient),
+        hi: TemperatureInterval::from_base(hi - ambient),
     };
     let given = Given::new(rise, value.written, origin);
     Some(Sump::Rise(Stated::Range(given, value.clauses.ask)))

@@ -1,6 +1,6 @@
 //! How big a bearing is and of which class, however it was said.
 
-use crate::model::bearing_table::designated;
+use crate::input::bearing_table::designated;
 use crate::quantity::Length;
 use crate::relation::bearing::class::RatingClass;
 use crate::relation::bearing::reference_viscosity::{PITCH_DIAMETER, pitch_diameter};
