@@ -28,6 +28,7 @@ pub mod report;
 pub mod results;
 pub mod source;
 pub mod suitability;
+pub mod table;
 pub mod trace;
 pub mod weighing;
 pub mod work;

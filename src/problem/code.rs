@@ -61,6 +61,20 @@ codes! {
     /// There is no file of a kind that is needed.
     FileMissing = "file-missing" Error,
 
+    // tables
+    /// A file that is no workbook and no text table.
+    TableKind = "table-kind" Error,
+    /// A workbook or text table that is damaged.
+    TableDamaged = "table-damaged" Error,
+    /// A table larger than is read.
+    TableTooLarge = "table-too-large" Error,
+    /// A table that holds nothing.
+    TableEmpty = "table-empty" Error,
+    /// A sheet that is not in the workbook.
+    TableSheet = "table-sheet" Error,
+    /// A text table in another encoding than stated.
+    TableEncoding = "table-encoding" Error,
+
     // the form of the text
     /// Text that the file format does not allow at this place.
     YamlSyntax = "yaml-syntax" Error,

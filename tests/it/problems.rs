@@ -33,6 +33,12 @@ const BY_WORDS: &[Code] = &[
 const ELSEWHERE: &[Code] = &[
     Code::FileTooLarge,
     Code::FileMissing,
+    Code::TableKind,
+    Code::TableDamaged,
+    Code::TableTooLarge,
+    Code::TableEmpty,
+    Code::TableSheet,
+    Code::TableEncoding,
     Code::SetForm,
     Code::SetWhich,
     Code::NothingToWeigh,
