@@ -28,7 +28,7 @@ use crate::quantity::{Amount, DynamicViscosity, KinematicViscosity, Measure};
 use crate::source::place::Whose;
 use crate::trace::{Recorder, StepId};
 use context::Context;
-pub use inputs::{Gap, GapKind, Inputs, Scenario};
+pub use inputs::{Gap, GapKind, Inputs, Instead, Scenario};
 pub use settings::{PointDemands, point_demands};
 pub use thermal::{AtAmbient, Thermal, thermal};
 
@@ -173,6 +173,8 @@ pub struct Demands {
     pub axes: Vec<Gap>,
     /// What is missing or assumed.
     pub gaps: Vec<Gap>,
+    /// Stated inputs with a tolerance.
+    pub tolerances: Vec<Gap>,
 }
 
 impl Demands {
@@ -245,6 +247,7 @@ pub fn demands<R: Recorder>(
         thermal,
         axes: inputs.axes,
         gaps: inputs.gaps,
+        tolerances: inputs.tolerances,
     }
 }
 

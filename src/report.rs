@@ -5,6 +5,7 @@
 //! ([`formula`]), makes users' prose safe ([`markdown`]) and lays the page out with Tera. Every
 //! figure is drawn from the model, so a figure and the table beside it cannot disagree.
 
+pub mod build;
 pub mod draw;
 pub mod escape;
 pub mod formula;

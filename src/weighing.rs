@@ -4,20 +4,24 @@ pub mod facts;
 pub mod top_up;
 pub mod uses;
 
-use crate::demand::{Demand, PointDemands, Standing, is_severe, point_demands, takes_grease};
+use crate::demand::{
+    Demand, PointDemands, Scenario, Standing, demands, is_severe, point_demands, takes_grease,
+};
 use crate::judge::because::because;
 use crate::judge::brief::brief;
 use crate::judge::explain::{Explanation, explain};
+use crate::judge::margin::Ready;
 use crate::judge::order::{Candidate as Ordered, compare, quantised, thousandths};
 use crate::judge::{Judgement, PreparedOil, PreparedPoint, Verdict, weigh};
 use crate::model::facts::{OilFacts, SumpNow};
 use crate::model::oil::Price;
-use crate::model::rulebook::Rulebook;
+use crate::model::rulebook::{Caution, Rulebook};
 use crate::model::{Oil, OilNow, Point, Site};
 use crate::quantity::Measure;
 use crate::quantity::show::Units;
 use crate::relation::oil::viscosity_temperature::Misfit;
 use crate::suitability::{Eligibility, Finding, Suitability};
+use crate::trace::{Derivation, Silent};
 use std::collections::BTreeSet;
 
 /// A numbered condition that rides with a verdict.
@@ -177,6 +181,39 @@ impl<'a> Scales<'a> {
     /// Weighs those oils on a point that are wanted, by their place in the list.
     pub fn weigh_where(&self, point: &'a Point, wanted: impl Fn(usize) -> bool) -> Weighed<'a> {
         let (demands, ready) = self.prepare(point);
+        self.weigh_on(point, demands, ready, wanted)
+    }
+
+    /// Weighs every oil on a point in a single setting of its unknowns, or with inputs taken at
+    /// other values, to see what they would change. Nothing is traced.
+    pub fn weigh_under(&self, point: &'a Point, setting: Scenario) -> Weighed<'a> {
+        let alone = demands(&mut Silent, point, &self.site.house, self.rules, &setting);
+        let demands = PointDemands {
+            trace: Derivation::new(),
+            middle: alone.clone(),
+            settings: vec![alone],
+            shares: vec![setting],
+        };
+        let ready = PreparedPoint::new(&demands.settings, is_severe(point), self.reserve);
+        self.weigh_on(point, demands, ready, |_| true)
+    }
+
+    /// The cautions that belong on the sheet of a point, with the oil proposed where there is one.
+    pub fn cautions(&self, weighed: &Weighed<'_>, oil: Option<usize>) -> Vec<&'a Caution> {
+        let now = self.in_use_facts(weighed.point);
+        let facts = facts::of_point(weighed.point, &weighed.demands, now);
+        let card = self.suitability.point(&facts);
+        let oil = oil.map(|i| self.suitability.oil(&self.facts[i]));
+        self.suitability.cautions(&card, oil.as_ref())
+    }
+
+    fn weigh_on(
+        &self,
+        point: &'a Point,
+        demands: PointDemands,
+        ready: PreparedPoint,
+        wanted: impl Fn(usize) -> bool,
+    ) -> Weighed<'a> {
         let grease = takes_grease(point);
         let facts = facts::of_point(point, &demands, self.in_use_facts(point));
         let card = self.suitability.point(&facts);
@@ -279,6 +316,12 @@ impl<'a> Scales<'a> {
         }
     }
 
+    /// The worn curve the floors of a point are judged on: after the greatest loss where the loss is
+    /// not known.
+    pub fn worn(&self, weighed: &Weighed<'_>, oil: usize) -> Option<&Ready> {
+        self.oils[oil].worst(&weighed.ready).worn.as_ref()
+    }
+
     /// The steps behind one candidate, in the setting of unknowns its worst margin comes from.
     pub fn explain(&self, weighed: &Weighed<'_>, candidate: &Candidate) -> Explanation {
         let j = &candidate.judgement;
@@ -302,13 +345,13 @@ impl Weighed<'_> {
         setting: usize,
         house: &crate::model::site::House,
         rules: &Rulebook,
-    ) -> (crate::trace::Derivation, Vec<Demand>) {
+    ) -> (Derivation, Vec<Demand>) {
         if setting == 0 {
             return (self.demands.trace.clone(), self.demands.middle.list.clone());
         }
-        let mut trace = crate::trace::Derivation::new();
+        let mut trace = Derivation::new();
         let shares = &self.demands.shares[setting];
-        let demands = crate::demand::demands(&mut trace, self.point, house, rules, shares);
+        let demands = demands(&mut trace, self.point, house, rules, shares);
         (trace, demands.list)
     }
 
@@ -317,11 +360,18 @@ impl Weighed<'_> {
         self.candidates.iter().find(|c| c.in_use)
     }
 
-    /// The proposed oil: the first candidate that holds or is tight.
+    /// The proposed oil: the first candidate that holds or is tight. Where nothing holds, an oil in
+    /// use that is tight stays: another tight one is no gain.
     pub fn proposed(&self) -> Option<&Candidate> {
-        self.candidates
-            .first()
-            .filter(|c| c.judgement.verdict <= Verdict::Tight)
+        let first = self.candidates.first()?;
+        match first.judgement.verdict {
+            Verdict::Holds => Some(first),
+            Verdict::Tight => self
+                .in_use()
+                .filter(|c| c.judgement.verdict == Verdict::Tight)
+                .or(Some(first)),
+            Verdict::Open | Verdict::Fails => None,
+        }
     }
 }
 

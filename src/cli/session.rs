@@ -114,20 +114,36 @@ impl<'h> Session<'h> {
 
     /// Writes a file of the program's own making.
     pub fn file(&mut self, path: &Path, bytes: &[u8]) -> Exit {
+        match self.may_write(path).and_then(|()| self.put(path, bytes)) {
+            Ok(()) => Exit::Done,
+            Err(exit) => exit,
+        }
+    }
+
+    /// Whether a file may be written: it is not there, the program made it, or the user said so.
+    ///
+    /// # Errors
+    /// It may not; that has been told.
+    pub fn may_write(&mut self, path: &Path) -> Result<(), Exit> {
         if !self.shared.replace && self.host.exists(path) && !self.is_ours(path) {
             self.fail(&format!(
                 "{} exists and was not made by filmwright\n  write  --replace to replace it, or another name after --out",
                 path.display()
             ));
-            return Exit::File;
+            return Err(Exit::File);
         }
-        match self.host.write(path, bytes) {
-            Ok(()) => Exit::Done,
-            Err(error) => {
-                self.fail(&format!("{} cannot be written: {error}", path.display()));
-                Exit::File
-            }
-        }
+        Ok(())
+    }
+
+    /// Writes a file that may be written.
+    ///
+    /// # Errors
+    /// It cannot be written; that has been told.
+    pub fn put(&mut self, path: &Path, bytes: &[u8]) -> Result<(), Exit> {
+        self.host.write(path, bytes).map_err(|error| {
+            self.fail(&format!("{} cannot be written: {error}", path.display()));
+            Exit::File
+        })
     }
 
     /// Whether a file carries the program's mark in its first or last kilobyte.

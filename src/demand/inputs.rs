@@ -2,6 +2,7 @@
 //! their range. What is missing or assumed is noted as a gap on the way.
 
 use crate::model::Stated;
+use crate::model::stated::Tolerance;
 use crate::quantity::{Amount, Measure};
 use crate::source::Origin;
 use crate::source::place::Given;
@@ -64,6 +65,19 @@ pub struct Wanted<'a> {
 pub struct Scenario {
     /// Shares from 0 (low end) to 1 (high end).
     pub shares: Vec<f64>,
+    /// Inputs taken at another value than the stated or usual one, to see what it would change.
+    pub instead: Vec<Instead>,
+}
+
+/// One input at another value.
+#[derive(Clone, Debug, PartialEq)]
+pub struct Instead {
+    /// The key as users write it.
+    pub key: String,
+    /// The part it belongs to, if to one.
+    pub about: Option<String>,
+    /// The value, base units.
+    pub base: f64,
 }
 
 impl Scenario {
@@ -75,6 +89,13 @@ impl Scenario {
     fn share(&self, axis: usize) -> f64 {
         self.shares.get(axis).copied().unwrap_or(0.5)
     }
+
+    fn instead<Q: Measure>(&self, wanted: Wanted<'_>) -> Option<Q> {
+        self.instead
+            .iter()
+            .find(|i| i.key == wanted.key && i.about.as_deref() == wanted.about)
+            .map(|i| Q::from_base(i.base))
+    }
 }
 
 /// Hands out inputs and remembers what was unknown.
@@ -85,6 +106,8 @@ pub struct Inputs<'s> {
     pub axes: Vec<Gap>,
     /// Assumed and missing inputs.
     pub gaps: Vec<Gap>,
+    /// Stated inputs with a tolerance. It judges nothing: the reserve covers it.
+    pub tolerances: Vec<Gap>,
 }
 
 impl<'s> Inputs<'s> {
@@ -94,6 +117,7 @@ impl<'s> Inputs<'s> {
             scenario,
             axes: Vec::new(),
             gaps: Vec::new(),
+            tolerances: Vec::new(),
         }
     }
 
@@ -105,7 +129,18 @@ impl<'s> Inputs<'s> {
         stated: Option<&Stated<Q>>,
     ) -> Option<Known<Q>> {
         match stated {
-            Some(Stated::Known(given, _)) => Some(r.given(wanted.symbol, wanted.says, given)),
+            Some(Stated::Known(given, tolerance)) => {
+                if let Some(tolerance) = tolerance {
+                    self.tolerate(wanted, given, tolerance);
+                }
+                Some(match self.scenario.instead(wanted) {
+                    None => r.given(wanted.symbol, wanted.says, given),
+                    Some(value) => {
+                        let other = given.clone().map(|_: Q| value);
+                        r.given(wanted.symbol, wanted.says, &other)
+                    }
+                })
+            }
             Some(Stated::Range(range, ask)) => {
                 let (lo, hi) = (range.value.lo.base(), range.value.hi.base());
                 let axis = self.axis(
@@ -163,7 +198,32 @@ impl<'s> Inputs<'s> {
         let ask = stated.and_then(Stated::ask).map(str::to_owned);
         let origin = stated.map(|s| s.origin().clone());
         self.note_gap(wanted, kind, ask, origin);
-        r.assume(wanted.symbol, wanted.says, usual.value, usual.why)
+        let value = self.scenario.instead(wanted).unwrap_or(usual.value);
+        r.assume(wanted.symbol, wanted.says, value, usual.why)
+    }
+
+    fn tolerate<Q: Measure>(
+        &mut self,
+        wanted: Wanted<'_>,
+        given: &Given<Q>,
+        tolerance: &Tolerance<Q>,
+    ) {
+        let value = given.value.base();
+        let by = match tolerance {
+            Tolerance::Of(by) => by.base().abs(),
+            Tolerance::Kelvins(by) => by.abs(),
+            Tolerance::Share(share) => (value * share).abs(),
+        };
+        let kind = GapKind::Assumed {
+            taken: given.value.amount(),
+            lo: Q::from_base(value - by).amount(),
+            hi: Q::from_base(value + by).amount(),
+        };
+        let found = gap(wanted, kind, None, Some(given.origin.clone()));
+        let same = |g: &Gap| g.key == found.key && g.about == found.about;
+        if !self.tolerances.iter().any(same) {
+            self.tolerances.push(found);
+        }
     }
 
     /// An unknown that nobody stated but whose plausible range is known.

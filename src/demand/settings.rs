@@ -47,9 +47,7 @@ pub fn point_demands(point: &Point, house: &House, rules: &Rulebook) -> PointDem
 
 /// The settings for so many unknowns, the middle first.
 pub fn settings(axes: usize) -> Vec<Scenario> {
-    let mut all = vec![Scenario {
-        shares: vec![0.5; axes],
-    }];
+    let mut all = vec![of_shares(vec![0.5; axes])];
     if axes == 0 {
         return all;
     }
@@ -70,6 +68,13 @@ pub fn settings(axes: usize) -> Vec<Scenario> {
     seen
 }
 
+fn of_shares(shares: Vec<f64>) -> Scenario {
+    Scenario {
+        shares,
+        instead: Vec::new(),
+    }
+}
+
 fn grid(axes: usize, levels: &[f64]) -> Vec<Scenario> {
     let mut all = vec![Vec::new()];
     for _ in 0..axes {
@@ -84,7 +89,7 @@ fn grid(axes: usize, levels: &[f64]) -> Vec<Scenario> {
             })
             .collect();
     }
-    all.into_iter().map(|shares| Scenario { shares }).collect()
+    all.into_iter().map(of_shares).collect()
 }
 
 /// Beyond six unknowns: all low, all high, and each alone at either end with the others at
@@ -93,14 +98,12 @@ fn grid(axes: usize, levels: &[f64]) -> Vec<Scenario> {
 fn one_at_a_time(axes: usize) -> Vec<Scenario> {
     let mut all = Vec::new();
     for rest in [0.0, 0.5, 1.0] {
-        all.push(Scenario {
-            shares: vec![rest; axes],
-        });
+        all.push(of_shares(vec![rest; axes]));
         for axis in 0..axes {
             for end in [0.0, 1.0] {
                 let mut shares = vec![rest; axes];
                 shares[axis] = end;
-                all.push(Scenario { shares });
+                all.push(of_shares(shares));
             }
         }
     }

@@ -23,6 +23,7 @@ mod refusals_oil;
 mod report_figures;
 mod report_formulas;
 mod report_pages;
+mod report_run;
 mod rules;
 mod scenario;
 mod sound;

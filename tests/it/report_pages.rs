@@ -4,7 +4,7 @@ pub(crate) mod fixtures;
 mod hostile;
 pub(crate) mod markup;
 mod others;
-mod structure;
+pub(crate) mod structure;
 
 use filmwright::report::model::Sheet;
 use filmwright::report::page::{Position, Templates};

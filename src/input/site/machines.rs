@@ -127,6 +127,8 @@ fn points_of<'t>(
         let more = if elsewhere { OF_THE_PLACE } else { &[] };
         let mut except = COPYING.except(&fields, more);
         except.push("points");
+        // the machine's name is that of its points; a sister machine's is not
+        except.retain(|key| *key != "name");
         fields.inherit(&machine, &format!("machine {tag}"), &except);
         inherit_area(reader, &mut fields, scene);
         let named = point::Named {

@@ -65,7 +65,11 @@ fn write(out: &mut String, node: &Node, figures: bool) {
     match node {
         Node::Number(n) => number(out, n),
         Node::Symbol(name) => symbol(out, name),
-        Node::Words(words) => tagged(out, "mtext", &format!("\u{a0}{words}\u{a0}")),
+        Node::Words(words) => tagged(
+            out,
+            "mtext",
+            &format!("\u{a0}{}\u{a0}", words.replace("mm2/s", "mm²/s")),
+        ),
         Node::Sign(sign) => tagged(out, "mo", sign),
         Node::Row(parts) => wrapped(out, "mrow", |out| {
             for part in parts {

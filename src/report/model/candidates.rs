@@ -27,6 +27,8 @@ pub struct Candidate {
     pub bars: MarginBars,
     /// The margins in words, for those who cannot see the bars.
     pub margins: String,
+    /// The margins in kelvins: `pour +8.0 K, oil's limit +33.0 K`.
+    pub kelvins: String,
     /// Numbers of the conditions that ride along.
     pub conditions: Vec<u32>,
     /// Why.
@@ -48,6 +50,8 @@ pub struct Candidates {
     pub order: String,
     /// Oils not weighed and why, by reason.
     pub not_weighed: Vec<NotWeighed>,
+    /// Remarks of suitability rules on the oils weighed.
+    pub notes: Vec<Phrase>,
 }
 
 /// Oils left out for one reason.

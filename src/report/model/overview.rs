@@ -30,8 +30,8 @@ pub struct Overview {
     pub lists: Option<ListFigure>,
     /// What the lists cost, and the like.
     pub list_notes: Vec<Phrase>,
-    /// Every oil on every machine.
-    pub matrix: Option<Matrix>,
+    /// Every oil on every machine, so many oils to a table as a page is wide.
+    pub matrix: Vec<Matrix>,
     /// What is missing.
     pub gaps: Gaps,
     /// Tight verdicts accepted by name.

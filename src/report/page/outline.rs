@@ -112,7 +112,7 @@ pub(super) fn outline(sheet: &Sheet) -> Outline {
 }
 
 fn overview(counter: &mut Counter<'_>, part: &mut Part, body: &Overview) {
-    let oils = !body.oils.is_empty() || body.lists.is_some() || body.matrix.is_some();
+    let oils = !body.oils.is_empty() || body.lists.is_some() || !body.matrix.is_empty();
     let gaps = !body.gaps.rows.is_empty() || !body.gaps.idle.is_empty();
     counter.sections(
         part,
@@ -155,7 +155,7 @@ fn overview(counter: &mut Counter<'_>, part: &mut Part, body: &Overview) {
             ("areas", !body.areas.is_empty()),
             ("machines", !body.machines.is_empty()),
             ("oils", !body.oils.is_empty()),
-            ("matrix", body.matrix.is_some()),
+            ("matrix", !body.matrix.is_empty()),
             ("gaps", !body.gaps.rows.is_empty()),
             ("accepted", !body.accepted.is_empty()),
         ],

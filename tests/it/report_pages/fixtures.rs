@@ -281,6 +281,7 @@ fn candidate(index: usize, oil: &Oil) -> Candidate {
             "hot {:+.2}, cold {:+.2} VG steps",
             oil.hot, oil.cold
         )),
+        kelvins: "pour +24.0 K, oil's limit +42.0 K".into(),
         conditions: if oil.letter == "A" {
             vec![1, 2]
         } else {
@@ -531,6 +532,7 @@ pub(crate) fn point() -> Point {
             cold_head: "mm²/s, −18 °C".into(),
             rows: OILS.iter().enumerate().map(|(i, o)| candidate(i, o)).collect(),
             order: "Order: verdict, then the oil in use if it holds, oils on site, fewer conditions, smallest excess over the floor, price, name.".into(),
+            notes: vec!["SG-220: the seals bear it.".into()],
             not_weighed: vec![NotWeighed { oils: vec!["GR-2".into()], because: "a grease".into() }],
         }),
         barred: vec![
@@ -1004,7 +1006,7 @@ pub(crate) fn overview() -> Sheet {
             ],
         }),
         list_notes: vec!["Four oils is proven shortest.".into()],
-        matrix: Some(Matrix {
+        matrix: vec![Matrix {
             oils: ["MH-46", "VH-46", "MT-68", "SG-150", "MG-220", "SG-220"].map(Into::into).to_vec(),
             rows: ["CV-104", "SC-220"]
                 .into_iter()
@@ -1020,7 +1022,7 @@ pub(crate) fn overview() -> Sheet {
                     ],
                 })
                 .collect(),
-        }),
+        }],
         gaps: {
             let mut gaps = point().gaps;
             gaps.rows[0].machine = Some(Phrase::new().tag("CV-104"));

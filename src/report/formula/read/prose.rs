@@ -46,6 +46,32 @@ fn wordlike(name: &str) -> bool {
         || JOINTS.contains(&name)
 }
 
+/// Units made of two, which would read as fractions.
+const UNITS: [(&str, &str); 5] = [
+    ("r", "min"),
+    ("rev", "s"),
+    ("m", "s"),
+    ("ft", "min"),
+    ("mm2", "s"),
+];
+
+/// Whether a stretch is a figure with such a unit, or the unit alone.
+fn unit(tokens: &[Placed]) -> bool {
+    let rest = match tokens {
+        [first, rest @ ..] if matches!(first.token, Token::Number(_)) => rest,
+        all => all,
+    };
+    match rest {
+        [a, stroke, b] => match (&a.token, &stroke.token, &b.token) {
+            (Token::Name(a), Token::Sign("/"), Token::Name(b)) => {
+                UNITS.contains(&(a.as_str(), b.as_str()))
+            }
+            _ => false,
+        },
+        _ => false,
+    }
+}
+
 /// Whether a stretch reads as prose: two words side by side, a word and a figure, or nothing but
 /// names with a word among them.
 pub(super) fn prose(tokens: &[Placed]) -> bool {
@@ -64,5 +90,5 @@ pub(super) fn prose(tokens: &[Placed]) -> bool {
             }
             _ => false,
         });
-    names || told
+    names || told || unit(tokens)
 }
