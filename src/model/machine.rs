@@ -4,7 +4,7 @@
 use super::part::Part;
 use super::stated::{Between, Stated, ViscosityLimit};
 use crate::quantity::{
-    Area, HeatTransfer, HoursPerYear, Mass, Power, TemperatureInterval, ThermodynamicTemperature,
+    Amount, Area, HeatTransfer, HoursPerYear, Mass, Power, TemperatureInterval, ThermodynamicTemperature,
     Time, Volume, VolumePerYear,
 };
 use crate::source::Origin;
@@ -67,6 +67,8 @@ pub struct Point {
     pub losses: Option<Losses>,
     /// Grease points: how they are regreased today.
     pub regrease: Option<Regrease>,
+    /// Limits of the oil in use stated for the point; they outrank those of practice.
+    pub used_oil: Vec<OwnLimit>,
     /// Codes of warnings silenced for this machine.
     pub allow: Vec<String>,
     /// What the point serves.
@@ -220,6 +222,19 @@ pub struct Regrease {
     pub amount: Option<Stated<Mass>>,
     /// Time between.
     pub interval: Option<Stated<Time>>,
+}
+
+/// A limit of the oil in use, by the maker or the house.
+#[derive(Clone, Debug, PartialEq)]
+pub struct OwnLimit {
+    /// What it is on.
+    pub on: Vec<super::rulebook::used_oil::Reading>,
+    /// From here on, watch.
+    pub watch: Amount,
+    /// From here on, act.
+    pub act: Amount,
+    /// Whose word it is.
+    pub origin: Origin,
 }
 
 /// What a heat balance needs beyond the parts.

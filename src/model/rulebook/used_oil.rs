@@ -65,6 +65,8 @@ pub struct Cleanliness {
     pub id: String,
     /// The part.
     pub part: String,
+    /// The same as conditions on the point; empty where no part of the program is this one.
+    pub when: Vec<Clause>,
     /// Below 140 bar, or at any pressure where the others are empty.
     pub low: String,
     /// 140 to 210 bar.

@@ -73,6 +73,7 @@ pub(super) fn cleanliness(f: &Fields<'_>) -> Cleanliness {
     Cleanliness {
         id: f.text("id"),
         part: f.text("part"),
+        when: f.clauses("when"),
         low: code(f, "target").unwrap_or_else(|| f.text("target")),
         middle: code(f, "140 to 210 bar"),
         high: code(f, "above 210 bar"),
