@@ -6,6 +6,7 @@
 
 pub mod bottle;
 pub mod causes;
+pub mod cross;
 pub mod findings;
 pub mod judged;
 pub mod limits;

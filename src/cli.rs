@@ -5,6 +5,7 @@ pub mod exit;
 pub mod host;
 pub mod load;
 pub mod run;
+pub mod samples;
 pub mod session;
 pub mod text;
 pub mod text_of;
@@ -186,6 +187,13 @@ pub enum Command {
         filmwright oil O-04 --with O-05 --target \"46.3 mm2/s at 40 degC\" --demo"
     )]
     Oil(Oil),
+    /// Samples of oils in use against their labels and against what the machines need
+    #[command(
+        after_help = "Examples:\n  filmwright audit --demo\n  filmwright audit --samples lab-2026-09.csv\n  \
+        filmwright audit --match \"Conv104 HD=CV-104\" --unmatched\n\
+        See also: weigh, report; filmwright help keys lists the columns"
+    )]
+    Audit(Audit),
     /// HTML sheets: overview, one sheet a machine
     #[command(
         after_help = "Examples:\n  filmwright report --demo\n  filmwright report -o out/\n  \
@@ -304,6 +312,34 @@ pub struct Oil {
     /// What the blend does to these machines; those that hold the oil where none is given
     #[arg(long, value_name = "TAG", requires = "with")]
     pub at_machine: Vec<String>,
+}
+
+/// `audit`
+#[derive(Debug, Args)]
+pub struct Audit {
+    /// Machines, by tag or pattern; all where none is given
+    pub tags: Vec<String>,
+    /// Only list the bottles that belong to no machine, with what may be meant
+    #[arg(long)]
+    pub unmatched: bool,
+    /// A name on bottles and the machine it means, as "NAME=TAG"
+    #[arg(long = "match", value_name = "NAME=TAG")]
+    pub matches: Vec<String>,
+    /// Lay the shear loss measured in one machine on the others with the same oil
+    #[arg(long)]
+    pub use_measured_shear: bool,
+    /// What parts whole and decimals in the laboratory's numbers (default: as the map says)
+    #[arg(long, value_enum, value_name = "SIGN")]
+    pub decimal: Option<Decimal>,
+}
+
+/// What parts whole and decimals.
+#[derive(Clone, Copy, Debug, PartialEq, Eq, ValueEnum)]
+pub enum Decimal {
+    /// 45.6
+    Point,
+    /// 45,6
+    Comma,
 }
 
 /// `report`

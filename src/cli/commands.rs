@@ -1,5 +1,6 @@
 //! One function a command, thin: load, call the room that does the work, print.
 
+pub mod audit;
 pub mod check;
 pub mod help;
 pub mod need;
@@ -12,6 +13,7 @@ pub mod weigh;
 pub mod why;
 pub mod work;
 
+pub use audit::audit;
 pub use check::check;
 pub use help::help;
 pub use need::need;
