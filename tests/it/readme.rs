@@ -2,6 +2,11 @@
 //!
 //! `README_UPDATE=1 cargo test --test it readme` writes the output anew; read the change.
 
+#![expect(
+    clippy::disallowed_methods,
+    reason = "the README is read where it stands, not through a host"
+)]
+
 use crate::scenario::on;
 use filmwright::cli::host::MemoryHost;
 use std::path::PathBuf;
