@@ -5,6 +5,7 @@ pub mod exit;
 pub mod host;
 pub mod load;
 pub mod run;
+pub mod select;
 pub mod session;
 pub mod text;
 pub mod text_of;
@@ -84,7 +85,7 @@ pub struct Shared {
     #[arg(long, value_enum, default_value_t = Marks::Plain, global = true)]
     pub marks: Marks,
     /// Date of judgement and of the outputs, as 2026-11-02
-    #[arg(long, value_name = "DATE", global = true)]
+    #[arg(long, value_name = "DATE", global = true, value_parser = day)]
     pub on: Option<String>,
     /// Folder of own rules on top of the built-in ones
     #[arg(long, value_name = "DIR", global = true)]
@@ -361,6 +362,15 @@ pub struct Work {
 pub struct Help {
     /// The topic
     pub topic: Option<String>,
+}
+
+/// A day of the calendar, as it stands in the files.
+fn day(text: &str) -> Result<String, String> {
+    text.parse::<jiff::civil::Date>()
+        .ok()
+        .filter(|day| day.to_string() == text)
+        .map(|_| text.to_owned())
+        .ok_or_else(|| "a day is written as 2026-11-02".to_owned())
 }
 
 #[cfg(test)]
