@@ -15,6 +15,7 @@ pub mod numbers;
 pub mod order;
 pub mod prepared;
 mod straight;
+pub mod tested;
 pub mod verdict;
 pub mod weigh;
 

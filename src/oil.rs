@@ -8,6 +8,7 @@ pub mod curves;
 pub mod density;
 pub mod findings;
 pub mod grades;
+pub mod grease_code;
 pub mod life;
 pub mod makeup;
 pub mod pressure;

@@ -58,6 +58,7 @@ pub fn as_viscosity(demand: &Demand, t: f64) -> Option<KinematicViscosity> {
         Limit::Kinematic(nu) => Some(*nu),
         Limit::Dynamic(eta) => Some(kinematic(*eta, mineral().at(at))),
         Limit::Film(film) => film_on_mineral(film, at),
+        Limit::Tested(limit) => Some(kinematic(limit.eta, mineral().at(at))),
         _ => None,
     }
 }
@@ -84,7 +85,11 @@ pub fn film_on_mineral(
             return f64::NAN;
         };
         film.contact
-            .film(dynamic(line.nu_at(at), density.at(at)), alpha)
+            .film_heated(
+                dynamic(line.nu_at(at), density.at(at)),
+                alpha,
+                line.beta(at),
+            )
             .map_or(f64::NAN, |h| ln(h.base() / film.wanted.base()))
     };
     let root = bracketed(ln(8e-6), ln(2e-2), excess).ok()?;

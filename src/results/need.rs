@@ -144,6 +144,7 @@ pub fn limit_amount(d: &Demand, t: Option<f64>) -> Option<Amount> {
     match &d.limit {
         Limit::Kinematic(nu) => Some(nu.amount()),
         Limit::Dynamic(eta) => Some(eta.amount()),
+        Limit::Tested(limit) => Some(limit.eta.amount()),
         Limit::Film(_) => crate::demand::governing::as_viscosity(d, t?).map(Measure::amount),
         Limit::Pour { least, .. } => Some(Amount {
             kind: Kind::Rise,
