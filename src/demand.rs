@@ -14,11 +14,13 @@ pub mod gear_film;
 pub mod gear_mesh;
 pub mod governing;
 pub mod inputs;
+pub mod journal;
 pub mod point;
 pub mod rolling_bearing;
 pub mod rules;
 pub mod settings;
 pub mod thermal;
+pub mod thrust;
 
 use crate::model::part::{Part, PartKind};
 use crate::model::rulebook::{Confidence, Rulebook};
@@ -257,12 +259,9 @@ fn of_part<R: Recorder>(cx: &mut Context<'_, '_, R>, part: &Part) {
         PartKind::GearMesh(m) => gear_mesh::add(cx, part, m),
         PartKind::Contact(c) => contact::add(cx, part, c),
         PartKind::Component(c) => component::add(cx, part, c),
-        PartKind::WormMesh(_)
-        | PartKind::OpenGear(_)
-        | PartKind::JournalBearing(_)
-        | PartKind::ThrustBearing(_)
-        | PartKind::Engine(_)
-        | PartKind::Axle(_) => {
+        PartKind::JournalBearing(b) => journal::add(cx, part, b),
+        PartKind::ThrustBearing(b) => thrust::add(cx, part, b),
+        PartKind::WormMesh(_) | PartKind::OpenGear(_) | PartKind::Engine(_) | PartKind::Axle(_) => {
             cx.undecided(
                 part,
                 End::HotFloor,

@@ -5,7 +5,7 @@ pub mod top_up;
 pub mod uses;
 
 use crate::demand::{
-    Demand, PointDemands, Scenario, Standing, demands, is_severe, point_demands, takes_grease,
+    Demand, End, PointDemands, Scenario, Standing, demands, is_severe, point_demands, takes_grease,
 };
 use crate::judge::because::because;
 use crate::judge::brief::brief;
@@ -395,6 +395,10 @@ fn asked(demands: &PointDemands, judgement: &Judgement) -> Vec<Condition> {
                 Standing::Replaced { by } => (
                     format!("stricter than {by} and not met"),
                     "confirm with the maker that the stated limit holds for this duty",
+                ),
+                Standing::Condition if demand.end == End::RunningCeiling => (
+                    "not met with this oil when it runs coldest".to_owned(),
+                    "watch how quietly the part runs, or take a thinner oil that meets the floor",
                 ),
                 Standing::Condition => (
                     "worth a review before the start, not met".to_owned(),

@@ -122,7 +122,7 @@ impl Teller<'_> {
                 let limit = self.dynamic_limit(d, demand, DynamicViscosity::from_base(*eta), t);
                 Some(self.viscosity(d, ready, limit, t))
             }
-            ReadyLimit::Film(film) => self.film(d, ready, film, t),
+            ReadyLimit::Film(film) => self.film(d, demand, ready, film, t),
             ReadyLimit::Pour { least, .. } => self.pour(d, ready, *least, t),
             ReadyLimit::OilsOwn => {
                 let (_, most) = self.ready.ceiling?;

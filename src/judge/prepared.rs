@@ -372,8 +372,7 @@ pub fn film_margin(
         let band = Band::by_root(true, |ambient| {
             let t = demand.at.at(ambient);
             let nu = KinematicViscosity::from_base(curve.nu(t));
-            film.film_of(met(t, curve), nu)
-                .map_or(-1.0, |h| h.base() - film.wanted.base())
+            film.excess_of(met(t, curve), nu).unwrap_or(-1.0)
         });
         best = Some(match best {
             Some((v, b, at)) if v <= value => (v, b.and(band), at),
