@@ -15,6 +15,7 @@ pub mod gear_mesh;
 pub mod governing;
 pub mod inputs;
 pub mod journal;
+pub mod losses;
 pub mod point;
 pub mod rolling_bearing;
 pub mod rules;
@@ -177,6 +178,8 @@ pub struct Demands {
     pub gaps: Vec<Gap>,
     /// Stated inputs with a tolerance.
     pub tolerances: Vec<Gap>,
+    /// What makes heat in the point, where all of it can be worked out.
+    pub losses: Option<losses::Losses>,
 }
 
 impl Demands {
@@ -236,6 +239,7 @@ pub fn demands<R: Recorder>(
     point::pour(&mut cx);
     point::ceiling(&mut cx);
     point::replace(&mut cx.list);
+    let losses = losses::losses(&mut cx);
     let Context {
         list,
         undecided,
@@ -250,6 +254,7 @@ pub fn demands<R: Recorder>(
         axes: inputs.axes,
         gaps: inputs.gaps,
         tolerances: inputs.tolerances,
+        losses,
     }
 }
 

@@ -9,7 +9,7 @@
 mod ceiling;
 mod findings;
 mod floor;
-mod shape;
+pub(super) mod shape;
 mod warm;
 
 use super::context::Context;

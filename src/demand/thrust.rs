@@ -54,14 +54,16 @@ fn wanted(key: &'static str, symbol: &'static str, says: &'static str) -> Wanted
 }
 
 /// One pad with its duty.
-struct Loaded {
-    length: Known<Length>,
-    width: Known<Length>,
-    load: Known<Force>,
-    speed: Known<Velocity>,
-    ratio: Known<Ratio>,
+pub(super) struct Loaded {
+    pub(super) length: Known<Length>,
+    pub(super) width: Known<Length>,
+    /// On one pad.
+    pub(super) load: Known<Force>,
+    pub(super) speed: Known<Velocity>,
+    pub(super) ratio: Known<Ratio>,
     mean_diameter: Known<Length>,
-    pad: Pad,
+    pub(super) pads: Known<Ratio>,
+    pub(super) pad: Pad,
 }
 
 /// Adds the demand of a thrust bearing.
@@ -148,7 +150,8 @@ fn asked<R: Recorder>(
     )
 }
 
-fn loaded<R: Recorder>(
+/// Reads the pads; what is missing altogether is noted, and the floor is undecided.
+pub(super) fn loaded<R: Recorder>(
     cx: &mut Context<'_, '_, R>,
     part: &Part,
     b: &ThrustBearing,
@@ -194,6 +197,7 @@ fn loaded<R: Recorder>(
             speed: u,
             ratio,
             mean_diameter,
+            pads,
             pad,
         }),
         Err(refused) => {

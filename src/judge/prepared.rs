@@ -2,6 +2,7 @@
 
 use super::band::Band;
 use super::margin::{Jaw, Ready};
+use super::own::{Own, Shift};
 use super::weigh::At;
 use crate::demand::film::FilmDemand;
 use crate::demand::{AtAmbient, Demand, Demands, End, For, Limit, Standing};
@@ -57,6 +58,8 @@ pub struct ReadyDemand {
     pub judges: bool,
     /// Whether an unmet one that does not judge becomes a condition.
     pub asks_when_unmet: bool,
+    /// What moved it to the temperature of an oil's own losses.
+    pub moved: Option<Shift>,
     only: For,
 }
 
@@ -82,6 +85,8 @@ pub struct Setting {
     pub start: Option<(f64, f64)>,
     /// Whether anything limits viscosity at start.
     pub has_start_ceiling: bool,
+    /// Losses that make each oil run at a temperature of its own.
+    pub own: Option<Box<Own>>,
 }
 
 /// A point made ready.
@@ -121,6 +126,7 @@ fn setting(demands: &Demands) -> Setting {
     Setting {
         has_start_ceiling: ready.iter().any(|d| d.end == End::StartCeiling && d.judges),
         demands: ready,
+        own: None,
         undecided: !demands.undecided.is_empty(),
         start: demands.thermal.start_coldest.map(|k| {
             let t = k.value.base();
@@ -152,6 +158,7 @@ fn ready(number: usize, demand: &Demand, demands: &Demands) -> Option<ReadyDeman
         t,
         low_confidence: demand.confidence == Confidence::Low,
         judges: demand.standing == Standing::Judges,
+        moved: None,
         asks_when_unmet: !matches!(demand.standing, Standing::Judges | Standing::Information),
         only: demand.only.clone(),
     })

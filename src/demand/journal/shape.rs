@@ -12,22 +12,22 @@ use crate::trace::{Known, Recorder};
 
 /// A bearing with its duty.
 #[derive(Clone, Copy)]
-pub(super) struct Shape {
-    pub(super) diameter: Known<Length>,
-    pub(super) width: Known<Length>,
-    pub(super) clearance: Known<Length>,
-    pub(super) load: Known<Force>,
-    pub(super) speed: Known<AngularVelocity>,
+pub(in crate::demand) struct Shape {
+    pub(in crate::demand) diameter: Known<Length>,
+    pub(in crate::demand) width: Known<Length>,
+    pub(in crate::demand) clearance: Known<Length>,
+    pub(in crate::demand) load: Known<Force>,
+    pub(in crate::demand) speed: Known<AngularVelocity>,
     /// Speed of the journal surface.
-    pub(super) surface: Known<Velocity>,
+    pub(in crate::demand) surface: Known<Velocity>,
     /// Load over the projected area.
-    pub(super) pressure: Known<Pressure>,
+    pub(in crate::demand) pressure: Known<Pressure>,
     /// By the Reynolds solution.
-    pub(super) bearing: Bearing,
+    pub(in crate::demand) bearing: Bearing,
 }
 
 /// What goes into every relation of the film, with its symbols.
-pub(super) type Sized = (
+pub(in crate::demand) type Sized = (
     (&'static str, Known<Force>),
     (&'static str, Known<Length>),
     (&'static str, Known<Length>),
@@ -37,7 +37,7 @@ pub(super) type Sized = (
 
 impl Shape {
     /// Load, diameter, width, clearance, speed.
-    pub(super) fn sized(&self) -> Sized {
+    pub(in crate::demand) fn sized(&self) -> Sized {
         (
             ("F", self.load),
             ("D", self.diameter),
@@ -47,11 +47,11 @@ impl Shape {
         )
     }
 
-    pub(super) fn geometry(&self) -> Geometry {
+    pub(in crate::demand) fn geometry(&self) -> Geometry {
         *self.bearing.geometry()
     }
 
-    pub(super) fn duty(&self) -> Duty {
+    pub(in crate::demand) fn duty(&self) -> Duty {
         *self.bearing.duty()
     }
 }
@@ -66,7 +66,7 @@ const PRESSURES: (f64, f64) = (0.5e6, 2.5e6);
 const DRAWING: &str = "bearing drawing, or a rule and a feeler gauge at the next overhaul";
 
 /// Reads the bearing; what is missing altogether is noted, and the floor is undecided.
-pub(super) fn shape<R: Recorder>(
+pub(in crate::demand) fn shape<R: Recorder>(
     cx: &mut Context<'_, '_, R>,
     part: &Part,
     b: &JournalBearing,
@@ -172,7 +172,7 @@ fn bearing(
 }
 
 /// Whether the short-bearing form stands behind the numbers, in words.
-pub(super) fn note_short<R: Recorder>(cx: &mut Context<'_, '_, R>, shape: &Shape) {
+pub(in crate::demand) fn note_short<R: Recorder>(cx: &mut Context<'_, '_, R>, shape: &Shape) {
     let ratio = shape.geometry().width_ratio();
     if shape.bearing.is_short() {
         cx.r.note(|| {
