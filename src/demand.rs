@@ -20,6 +20,8 @@ pub mod governing;
 mod grease_code;
 mod grease_point;
 pub mod inputs;
+pub mod journal;
+pub mod losses;
 pub mod open_gear;
 pub mod point;
 pub mod rolling_bearing;
@@ -27,6 +29,7 @@ pub mod rules;
 pub mod settings;
 pub mod tested;
 pub mod thermal;
+pub mod thrust;
 pub mod worm;
 
 use crate::model::part::{Part, PartKind};
@@ -198,6 +201,8 @@ pub struct Demands {
     pub gaps: Vec<Gap>,
     /// Stated inputs with a tolerance.
     pub tolerances: Vec<Gap>,
+    /// What makes heat in the point, where all of it can be worked out.
+    pub losses: Option<losses::Losses>,
 }
 
 impl Demands {
@@ -257,6 +262,7 @@ pub fn demands<R: Recorder>(
     point::pour(&mut cx);
     point::ceiling(&mut cx);
     point::replace(&mut cx.list);
+    let losses = losses::losses(&mut cx);
     let Context {
         list,
         undecided,
@@ -271,6 +277,7 @@ pub fn demands<R: Recorder>(
         axes: inputs.axes,
         gaps: inputs.gaps,
         tolerances: inputs.tolerances,
+        losses,
     }
 }
 
@@ -284,13 +291,8 @@ fn of_part<R: Recorder>(cx: &mut Context<'_, '_, R>, part: &Part) {
         PartKind::OpenGear(g) => open_gear::add(cx, part, g),
         PartKind::Engine(d) => drive::engine(cx, part, d),
         PartKind::Axle(d) => drive::axle(cx, part, d),
-        PartKind::JournalBearing(_) | PartKind::ThrustBearing(_) => {
-            cx.undecided(
-                part,
-                End::HotFloor,
-                "this kind of part is not worked out yet",
-            );
-        }
+        PartKind::JournalBearing(b) => journal::add(cx, part, b),
+        PartKind::ThrustBearing(b) => thrust::add(cx, part, b),
     }
 }
 

@@ -1,7 +1,7 @@
 //! Which demand governs an end where no oil is given yet: every limit is carried to 40 °C along
 //! a mineral oil of VI 95, and the strictest there governs.
 
-use super::film::FilmDemand;
+use super::film::{FilmContact, FilmDemand};
 use super::{Demand, Demands, End, Limit, Standing};
 use crate::numeric::math::{exp, ln};
 use crate::numeric::root::bracketed;
@@ -77,6 +77,9 @@ pub fn film_on_mineral(
     at: ThermodynamicTemperature,
 ) -> Option<KinematicViscosity> {
     let density = mineral();
+    if let FilmContact::Wedge(wedge) = film.contact {
+        return Some(kinematic(wedge.needs, density.at(at)));
+    }
     let excess = |ln40: f64| -> f64 {
         let Some(line) = line_of_vi_95(KinematicViscosity::from_base(exp(ln40))) else {
             return f64::NAN;

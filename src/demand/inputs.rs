@@ -240,6 +240,27 @@ impl<'s> Inputs<'s> {
         r.assume(wanted.symbol, wanted.says, value, why)
     }
 
+    /// A stated input, or its plausible range where nobody knows it: an axis of the settings.
+    pub fn or_plausible<Q: Measure, R: Recorder>(
+        &mut self,
+        r: &mut R,
+        wanted: Wanted<'_>,
+        stated: Option<&Stated<Q>>,
+        range: (Q, Q),
+        why: &'static str,
+    ) -> Known<Q> {
+        let unknown = matches!(stated, None | Some(Stated::Unknown(..)));
+        if !unknown && let Some(known) = self.take(r, wanted, stated) {
+            return known;
+        }
+        let ask = stated.and_then(Stated::ask).map(str::to_owned);
+        let origin = stated.map(|s| s.origin().clone());
+        let axis = self.axis(wanted, (range.0.amount(), range.1.amount()), ask, origin);
+        let (lo, hi) = (range.0.base(), range.1.base());
+        let value = Q::from_base(lo + (hi - lo) * self.scenario.share(axis));
+        r.assume(wanted.symbol, wanted.says, value, why)
+    }
+
     /// Notes that something is missing altogether.
     pub fn missing(&mut self, wanted: Wanted<'_>, ask: Option<String>, origin: Option<Origin>) {
         self.note_gap(wanted, GapKind::Missing, ask, origin);
