@@ -19,6 +19,7 @@ pub mod rolling_bearing;
 pub mod rules;
 pub mod settings;
 pub mod thermal;
+pub mod usual;
 
 use crate::model::part::{Part, PartKind};
 use crate::model::rulebook::{Confidence, Rulebook};
@@ -175,6 +176,8 @@ pub struct Demands {
     pub gaps: Vec<Gap>,
     /// Stated inputs with a tolerance.
     pub tolerances: Vec<Gap>,
+    /// Stated inputs without one, with the usual tolerance of their kind; only where asked for.
+    pub usual: Vec<Gap>,
 }
 
 impl Demands {
@@ -248,6 +251,7 @@ pub fn demands<R: Recorder>(
         axes: inputs.axes,
         gaps: inputs.gaps,
         tolerances: inputs.tolerances,
+        usual: inputs.usual,
     }
 }
 

@@ -1,8 +1,11 @@
 //! From a read site to weighed candidates: every point, every oil, eligibility first.
 
 pub mod facts;
+pub mod pair;
 pub mod top_up;
 pub mod uses;
+
+pub use pair::Pair;
 
 use crate::demand::{
     Demand, PointDemands, Scenario, Standing, demands, is_severe, point_demands, takes_grease,
@@ -52,6 +55,8 @@ pub struct Candidate {
     pub notes: Vec<Condition>,
     /// Facts that suitability rules need and nobody stated.
     pub facts_missing: Vec<String>,
+    /// The question to put for each of them, in the same order.
+    pub questions: Vec<String>,
     /// Why the word is what it is, the main reason first.
     pub because: Vec<String>,
     /// The main reason in a few words.
@@ -231,7 +236,8 @@ impl<'a> Scales<'a> {
                 barred.push(Barred { oil: i, by, in_use });
             } else {
                 let judged = weigh(&ready, &self.oils[i]);
-                candidates.push(self.candidate(&demands, &ready, i, judged, &eligible, in_use));
+                let state = (i, &self.oils[i]);
+                candidates.push(self.candidate(&demands, &ready, state, judged, &eligible, in_use));
             }
         }
         self.sort(&mut candidates);
@@ -259,21 +265,22 @@ impl<'a> Scales<'a> {
         &self,
         demands: &PointDemands,
         ready: &PreparedPoint,
-        oil: usize,
+        (oil, state): (usize, &PreparedOil),
         judgement: Judgement,
         eligible: &Eligibility,
         in_use: bool,
     ) -> Candidate {
         let mut conditions: Vec<Condition> = eligible.conditions.iter().map(condition).collect();
         conditions.extend(asked(demands, &judgement));
-        let because = because(demands, ready, &self.oils[oil], &judgement, self.units);
-        let brief = brief(demands, ready, &self.oils[oil], &judgement, self.units);
+        let because = because(demands, ready, state, &judgement, self.units);
+        let brief = brief(demands, ready, state, &judgement, self.units);
         Candidate {
             oil,
             judgement,
             conditions,
             notes: self.notes(oil, ready, eligible),
             facts_missing: eligible.gaps.iter().map(|g| g.says.clone()).collect(),
+            questions: eligible.gaps.iter().map(|g| g.question.clone()).collect(),
             because,
             brief,
             in_use,

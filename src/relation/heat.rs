@@ -1,3 +1,4 @@
 //! Losses and the temperature they lead to.
 
 pub mod balance;
+pub mod heater;
