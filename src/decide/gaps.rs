@@ -88,10 +88,10 @@ impl Found {
     /// What is missing, in words: `rolling bearing 6312: speed`.
     pub fn says(&self) -> String {
         match &self.missing {
-            Missing::Input(gap) => gap.about.as_ref().map_or_else(
-                || gap.key.clone(),
-                |about| format!("{about}: {}", gap.key),
-            ),
+            Missing::Input(gap) => gap
+                .about
+                .as_ref()
+                .map_or_else(|| gap.key.clone(), |about| format!("{about}: {}", gap.key)),
             Missing::Fact { says, .. } => says.clone(),
         }
     }

@@ -249,9 +249,7 @@ fn grade_of(trial: &Trial<'_>, changes: &[Change], target: Target) -> Option<Iso
         return None;
     }
     let nu40 = trial.nu40();
-    let steps = |g: &IsoGrade| {
-        6.0 * lg(g.midpoint().base() / nu40)
-    };
+    let steps = |g: &IsoGrade| 6.0 * lg(g.midpoint().base() / nu40);
     let mut able: Vec<IsoGrade> = IsoGrade::all()
         .filter(|g| steps(g) * only.to.signum() >= only.to.abs())
         .collect();
@@ -274,13 +272,26 @@ fn cheapest_pair(trial: &Trial<'_>, j: &Judgement, target: Target) -> Option<Men
         }
     }
     // a higher index mends one side, the machine the other
-    for machine in [Lever::Heater, Lever::ColdestStart, Lever::SumpRise, Lever::Cooler] {
-        pairs.push((Lever::Index.effort() + machine.effort(), Lever::Index, machine));
+    for machine in [
+        Lever::Heater,
+        Lever::ColdestStart,
+        Lever::SumpRise,
+        Lever::Cooler,
+    ] {
+        pairs.push((
+            Lever::Index.effort() + machine.effort(),
+            Lever::Index,
+            machine,
+        ));
     }
     // a neighbouring grade for one side, the machine for the other
     for machine in Lever::ALL {
         if matches!(machine.side(), Side::Hot | Side::Cold) && !machine.of_oil() {
-            pairs.push((Lever::Grade.effort() + machine.effort(), Lever::Grade, machine));
+            pairs.push((
+                Lever::Grade.effort() + machine.effort(),
+                Lever::Grade,
+                machine,
+            ));
         }
     }
     pairs.sort();

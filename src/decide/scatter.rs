@@ -243,7 +243,12 @@ fn of_oil(scales: &Scales<'_>, w: &Weighed<'_>, oil: usize) -> Vec<Sampled> {
     if let Worn::Between { .. } = curves.worn
         && let Some(range) = curves.loss_range(is_severe(w.point))
     {
-        all.push(sampled("permanent shear loss", range, Shape::Even, Role::Loss));
+        all.push(sampled(
+            "permanent shear loss",
+            range,
+            Shape::Even,
+            Role::Loss,
+        ));
     }
     all
 }

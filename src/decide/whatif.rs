@@ -183,10 +183,8 @@ fn oil_moved(
     } else {
         (without(&has, &had), without(&had, &has))
     };
-    let same = was == is
-        && margins.is_empty()
-        && conditions.0.is_empty()
-        && conditions.1.is_empty();
+    let same =
+        was == is && margins.is_empty() && conditions.0.is_empty() && conditions.1.is_empty();
     (!same).then(|| OilMoved {
         oil: id.to_owned(),
         in_use: new.or(old).is_some_and(|c| c.in_use),

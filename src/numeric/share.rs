@@ -37,7 +37,10 @@ mod tests {
             (0, 20, 0.0, 0.1611),
         ] {
             let (a, b) = interval(of, all);
-            assert!((a - low).abs() < 5e-5 && (b - high).abs() < 5e-5, "{of}: {a} {b}");
+            assert!(
+                (a - low).abs() < 5e-5 && (b - high).abs() < 5e-5,
+                "{of}: {a} {b}"
+            );
         }
         assert_eq!(interval(0, 0), (0.0, 1.0));
         assert!((interval(20, 20).1 - 1.0).abs() < f64::EPSILON);

@@ -126,12 +126,7 @@ fn fixes(gap: &Gap, axis: Option<usize>) -> Vec<(f64, Fix)> {
 }
 
 /// What a gap with a range would do to an oil; none where it has no range.
-pub fn effect<'a>(
-    scales: &Scales<'a>,
-    w: &Weighed<'a>,
-    gap: &Gap,
-    oil: usize,
-) -> Option<Effect> {
+pub fn effect<'a>(scales: &Scales<'a>, w: &Weighed<'a>, gap: &Gap, oil: usize) -> Option<Effect> {
     let axes = &w.demands.middle.axes;
     let axis = axes
         .iter()

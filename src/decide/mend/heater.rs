@@ -82,10 +82,14 @@ pub(super) fn advice(trial: &Trial<'_>, found: &Mended) -> Option<HeaterAdvice> 
     let of = ThermodynamicTemperature::from_base;
     let (from, to) = (of(change.from), of(change.to));
     let by = TemperatureInterval::from_base(change.to - change.from);
-    let volume = trial.point.fill.as_ref().and_then(|f| match f.known()?.value {
-        Fill::Oil(volume) => Some(volume),
-        Fill::Grease(_) => None,
-    });
+    let volume = trial
+        .point
+        .fill
+        .as_ref()
+        .and_then(|f| match f.known()?.value {
+            Fill::Oil(volume) => Some(volume),
+            Fill::Grease(_) => None,
+        });
     let within = Time::from_base(WITHIN_HOURS * 3600.0);
     let density = trial.density(from);
     let heat = specific_heat(trial);
@@ -108,9 +112,7 @@ pub(super) fn advice(trial: &Trial<'_>, found: &Mended) -> Option<HeaterAdvice> 
             time,
             area,
             density,
-            too_hot: density
-                .zip(limit)
-                .is_some_and(|(d, l)| d.base() > l.base()),
+            too_hot: density.zip(limit).is_some_and(|(d, l)| d.base() > l.base()),
             may_give: area.zip(limit).map(|(a, l)| heater::power_of_sheath(a, l)),
             needs: limit.map(|l| heater::sheath(p.value, l)),
         }
@@ -196,7 +198,8 @@ fn bears_cautiously(trial: &Trial<'_>) -> Option<(HeatFluxDensity, String)> {
     let card = scales.suitability.point(&point);
     let oil = scales.suitability.oil(&scales.facts[trial.oil]);
     let rules = scales.rules.heaters.iter().filter(|r| !r.when.is_empty());
-    let held = rules.filter(|r| scales.suitability.holds(&r.when, &card, Some(&oil)) == Truth::True);
+    let held =
+        rules.filter(|r| scales.suitability.holds(&r.when, &card, Some(&oil)) == Truth::True);
     held.min_by(|a, b| a.limit.base().total_cmp(&b.limit.base()))
         .map(|r| (r.limit, r.id.clone()))
 }

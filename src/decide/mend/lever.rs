@@ -141,7 +141,11 @@ pub fn excess(j: &Judgement, side: Side, target: Target) -> f64 {
         barred |= d.wax || d.pour_unknown;
         barred |= full && (d.far_below || d.window || d.pour_close);
     }
-    if barred { left.min(-1e-6) } else { left.min(1e9) }
+    if barred {
+        left.min(-1e-6)
+    } else {
+        left.min(1e9)
+    }
 }
 
 fn value(m: Option<crate::judge::weigh::Margin>) -> Option<f64> {

@@ -214,7 +214,8 @@ impl<'t> Trial<'t> {
         if !curves.thickened {
             return None;
         }
-        let at = ThermodynamicTemperature::from_base(j.at_hot.map_or(celsius(100.0).base(), |a| a.t));
+        let at =
+            ThermodynamicTemperature::from_base(j.at_hot.map_or(celsius(100.0).base(), |a| a.t));
         let severe = crate::demand::is_severe(&self.point);
         let (_, most) = curves.worn_range(severe)?;
         let from = 1.0 - most.nu_at(at).base() / curves.new.nu_at(at).base();
@@ -280,7 +281,11 @@ impl<'t> Trial<'t> {
         let (cold, hot) = self.ambient()?;
         if let Some(Sump::Across(range)) = &mut self.point.sump {
             let (a, b) = (range.value.lo.base(), range.value.hi.base());
-            let share = if hot > cold { (at - cold) / (hot - cold) } else { 1.0 };
+            let share = if hot > cold {
+                (at - cold) / (hot - cold)
+            } else {
+                1.0
+            };
             range.value.hi = ThermodynamicTemperature::from_base(a + (b - a) * share);
         }
         let given = Given::new(between(cold, at), "", Origin::flag(FLAG));

@@ -5,8 +5,8 @@ use super::{Change, Mend};
 use crate::numeric::math::exp;
 use crate::quantity::show::{Toward, Units, fixed, margin, quantity};
 use crate::quantity::{
-    Amount, Kind, KinematicViscosity, Measure, Ratio, TemperatureInterval, ThermodynamicTemperature,
-    VgStep,
+    Amount, Kind, KinematicViscosity, Measure, Ratio, TemperatureInterval,
+    ThermodynamicTemperature, VgStep,
 };
 use crate::relation::oil::grade::IsoGrade;
 
