@@ -74,6 +74,9 @@ pub struct Found {
     pub effect: Option<Effect>,
     /// What waits for it, where it has none.
     pub waits: Option<Waits>,
+    /// Whether it is about the oil the point is told by, or the point itself; a fact may be about
+    /// other oils alone.
+    pub of_lead: bool,
 }
 
 impl Found {
@@ -116,10 +119,11 @@ pub fn found<'a>(scales: &Scales<'a>, w: &Weighed<'a>, lead: Option<&Candidate>)
         .filter(|g| g.kind != GapKind::Fact)
         .map(|g| of_input(scales, w, lead, g))
         .collect();
-    all.extend(facts(w));
+    all.extend(facts(w, lead));
     all.sort_by(|a, b| {
         a.weight
             .cmp(&b.weight)
+            .then_with(|| b.of_lead.cmp(&a.of_lead))
             .then_with(|| b.moves().total_cmp(&a.moves()))
             .then_with(|| a.says().cmp(&b.says()))
     });
@@ -148,6 +152,7 @@ fn of_input<'a>(
         missing: Missing::Input(gap.clone()),
         effect,
         waits,
+        of_lead: true,
     }
 }
 
@@ -166,7 +171,7 @@ fn without_range(w: &Weighed<'_>, lead: Option<&Candidate>, gap: &Gap) -> (Weigh
 }
 
 /// Facts nobody stated that a suitability rule asks for, each once, with the oils it is about.
-fn facts(w: &Weighed<'_>) -> Vec<Found> {
+fn facts(w: &Weighed<'_>, lead: Option<&Candidate>) -> Vec<Found> {
     let mut seen: Vec<(&str, &str, Vec<usize>)> = Vec::new();
     for c in &w.candidates {
         for (fact, question) in c.facts_missing.iter().zip(&c.questions) {
@@ -179,6 +184,7 @@ fn facts(w: &Weighed<'_>) -> Vec<Found> {
     seen.into_iter()
         .map(|(says, question, oils)| Found {
             weight: Weight::Condition,
+            of_lead: lead.is_some_and(|c| oils.contains(&c.oil)),
             missing: Missing::Fact {
                 says: says.to_owned(),
                 question: question.to_owned(),
@@ -234,6 +240,7 @@ pub fn ranked(points: &[PointGaps<'_>]) -> Vec<Place> {
         let (x, y) = (of(a), of(b));
         x.weight
             .cmp(&y.weight)
+            .then_with(|| y.of_lead.cmp(&x.of_lead))
             .then_with(|| y.moves().total_cmp(&x.moves()))
     });
     all

@@ -44,6 +44,8 @@ pub struct Mend {
     pub grade: Option<IsoGrade>,
     /// The cold end of the range that a cooler or a hottest ambient is written with, K.
     pub cold_end: Option<f64>,
+    /// What is to be known of it.
+    pub caution: Option<String>,
 }
 
 /// Why a change was not enough alone.
@@ -51,7 +53,7 @@ pub struct Mend {
 pub struct Tried {
     /// The change.
     pub lever: Lever,
-    /// Why not, in a few words.
+    /// Why not, in a few words; empty where it does not act on the limits missed.
     pub because: String,
 }
 
@@ -144,7 +146,7 @@ fn single(
 ) -> Option<Result<Mend, String>> {
     let range = trial.range(lever, j, target)?;
     if !acts(j, lever, target) {
-        return Some(Err("the limits missed are not its own".to_owned()));
+        return Some(Err(String::new()));
     }
     let side = match lever {
         Lever::Grade if range.to > 0.0 => Side::Hot,
@@ -219,6 +221,7 @@ fn verified(trial: &Trial<'_>, changes: Vec<Change>, target: Target) -> Result<M
         Ok(then) if reached(then.judgement.verdict, target) => Ok(Mend {
             grade: grade_of(trial, &changes, target),
             cold_end: cold_end(&next, &changes),
+            caution: caution(trial, &changes),
             changes,
             target,
             then,
@@ -226,6 +229,21 @@ fn verified(trial: &Trial<'_>, changes: Vec<Change>, target: Target) -> Result<M
         Ok(then) => Err(then.brief),
         Err(barred) => Err(barred.by.first().map_or(String::new(), |c| c.says.clone())),
     }
+}
+
+/// What has to be known of a change: an index beyond the base means a polymer, a start limit is
+/// the maker's to give.
+fn caution(trial: &Trial<'_>, changes: &[Change]) -> Option<String> {
+    let of = |lever| changes.iter().find(|c| c.lever == lever);
+    if let Some(index) = of(Lever::Index) {
+        let natural = trial.natural_index().filter(|most| index.to > *most)?;
+        return Some(format!(
+            "the base stock alone gives a VI of {natural:.0} at most: a higher one needs another base, or a polymer whose shear loss then counts"
+        ));
+    }
+    of(Lever::StartLimit).map(|_| {
+        "only the maker can allow a thicker oil at start; until then the limit stands".to_owned()
+    })
 }
 
 /// The cold end of the range that a change of its hot end is written with.

@@ -235,7 +235,7 @@ fn of_oil(scales: &Scales<'_>, w: &Weighed<'_>, oil: usize) -> Vec<Sampled> {
         role,
     };
     let mut all = vec![sampled(
-        "viscosity, share of the stated",
+        "viscosity",
         (1.0 - by, 1.0 + by),
         shape,
         Role::Viscosity,

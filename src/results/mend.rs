@@ -32,7 +32,13 @@ pub fn document_of(scales: &Scales<'_>, cases: &[Case<'_>], head: &Head) -> Stri
         for t in &mended.tried {
             let mut m = place();
             m.insert("change".into(), json!(t.lever.word()));
-            m.insert("because".into(), json!(t.because));
+            let idle = t.because.is_empty();
+            let because = if idle {
+                "does not act on what is missed"
+            } else {
+                &t.because
+            };
+            m.insert("because".into(), json!(because));
             tried.push(Value::Object(m));
         }
         if let Some(advice) = &mended.heater {
@@ -70,6 +76,7 @@ fn fill(m: &mut Map<String, Value>, mend: &Mend, units: Units) {
     m.insert("changes".into(), Value::Array(changes));
     m.insert("says".into(), json!(mend.words(units)));
     m.insert("grade".into(), json!(mend.grade.map(|g| g.number())));
+    m.insert("caution".into(), json!(mend.caution));
     m.insert("set".into(), json!(mend.settings()));
     m.insert("verdict".into(), json!(mend.then.judgement.verdict.word()));
     m.insert("margins".into(), margins(&mend.then));

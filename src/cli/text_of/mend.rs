@@ -3,10 +3,10 @@
 use crate::cli::text::{Column, folded, hanging, sentence, table};
 use crate::decide::mend::heater::{Fitted, HeaterAdvice};
 use crate::decide::mend::lever::{Lever, Target};
-use crate::decide::mend::{Mend, Mended};
+use crate::decide::mend::{Mend, Mended, Tried};
 use crate::model::Point;
-use crate::quantity::show::{Toward, Units, margin, quantity};
-use crate::quantity::{Measure, ThermodynamicTemperature};
+use crate::quantity::show::{Toward, Units, margin, quantity, significant};
+use crate::quantity::{Area, Measure, Power, ThermodynamicTemperature};
 use crate::weighing::{Candidate, Scales};
 use std::fmt::Write as _;
 
@@ -49,6 +49,9 @@ pub fn one(scales: &Scales<'_>, point: &Point, mended: &Mended, width: usize) ->
     headline(&mut out, &lead, id, mended, target, units, width);
     out.push_str(&folded(&format!("today: {}", today(now)), "  ", width));
     singles(&mut out, mended, units, width);
+    for caution in cautions(mended) {
+        out.push_str(&hanging("  - ", caution, width));
+    }
     pairs(&mut out, mended, target, units, width);
     not_enough(&mut out, mended, width);
     if let Some(advice) = &mended.heater {
@@ -56,6 +59,17 @@ pub fn one(scales: &Scales<'_>, point: &Point, mended: &Mended, width: usize) ->
     }
     conditions(&mut out, mended, width);
     out
+}
+
+/// What is to be known of the changes, each once.
+fn cautions(mended: &Mended) -> Vec<&str> {
+    let mut all: Vec<&str> = Vec::new();
+    for mend in mended.single.iter().chain(&mended.pairs) {
+        if let Some(caution) = mend.caution.as_deref().filter(|c| !all.contains(c)) {
+            all.push(caution);
+        }
+    }
+    all
 }
 
 fn today(now: &Candidate) -> String {
@@ -177,16 +191,21 @@ fn pairs(out: &mut String, mended: &Mended, told: Target, units: Units, width: u
 
 fn not_enough(out: &mut String, mended: &Mended, width: usize) {
     let solved = |lever: Lever| mended.single.iter().any(|m| m.changes[0].lever == lever);
-    let tried: Vec<String> = mended
-        .tried
-        .iter()
-        .filter(|t| !solved(t.lever))
-        .map(|t| format!("{} ({})", t.lever.word(), t.because))
-        .collect();
-    if !tried.is_empty() {
-        let text = format!("{}.", tried.join("; "));
+    let tried = mended.tried.iter().filter(|t| !solved(t.lever));
+    let (idle, little): (Vec<&Tried>, Vec<&Tried>) = tried.partition(|t| t.because.is_empty());
+    if !little.is_empty() {
+        let each: Vec<String> = little
+            .iter()
+            .map(|t| format!("{} ({})", t.lever.word(), t.because))
+            .collect();
         out.push('\n');
+        let text = format!("{}.", each.join("; "));
         out.push_str(&hanging("  not enough alone: ", &text, width));
+    }
+    if !idle.is_empty() {
+        let each: Vec<&str> = idle.iter().map(|t| t.lever.word()).collect();
+        let text = format!("{}.", each.join(", "));
+        out.push_str(&hanging("  do not act on what is missed: ", &text, width));
     }
 }
 
@@ -200,7 +219,7 @@ fn heater(out: &mut String, h: &HeaterAdvice, units: Units, width: usize) {
             "{} {rise} within {} (assumed) takes {}{}",
             show(volume.amount(), Toward::Nearest),
             show(h.within.amount(), Toward::Nearest),
-            show(power.amount(), Toward::Up),
+            watts(power, Toward::Up),
             if h.loss.is_some() {
                 ", loss of the housing included"
             } else {
@@ -213,7 +232,7 @@ fn heater(out: &mut String, h: &HeaterAdvice, units: Units, width: usize) {
     out.push_str(&hanging("  heater  ", &format!("{text}."), width));
     if let Some((limit, rule, source)) = &h.bears {
         let sheath = h.sheath.map_or(String::new(), |a| {
-            format!(", so a sheath of {} at least", show(a.amount(), Toward::Up))
+            format!(", so a sheath of {} at least", sheath(a, Toward::Up))
         });
         let text = format!(
             "This oil bears {}{sheath} [{rule}; {source}].",
@@ -236,6 +255,16 @@ fn heater(out: &mut String, h: &HeaterAdvice, units: Units, width: usize) {
     }
 }
 
+/// A power in kW, two digits: a heater is bought in steps.
+fn watts(power: Power, toward: Toward) -> String {
+    format!("{} kW", significant(power.base() / 1e3, 2, toward))
+}
+
+/// A sheath in cm2, three digits.
+fn sheath(area: Area, toward: Toward) -> String {
+    format!("{} cm2", significant(area.base() * 1e4, 3, toward))
+}
+
 fn fitted_words(f: &Fitted, units: Units) -> String {
     let show = |a: crate::quantity::Amount, toward| quantity(a, units, toward);
     let mut text = format!(
@@ -251,12 +280,12 @@ fn fitted_words(f: &Fitted, units: Units) -> String {
         let _ = write!(
             text,
             "; on {} it gives {}",
-            show(area.amount(), Toward::Nearest),
+            sheath(area, Toward::Nearest),
             show(density.amount(), Toward::Up)
         );
         if f.too_hot {
-            let may = f.may_give.map(|p| show(p.amount(), Toward::Down));
-            let needs = f.needs.map(|a| show(a.amount(), Toward::Up));
+            let may = f.may_give.map(|p| watts(p, Toward::Down));
+            let needs = f.needs.map(|a| sheath(a, Toward::Up));
             let _ = write!(
                 text,
                 ", too hot for this oil: run it at {} or fit {} of sheath",

@@ -38,7 +38,10 @@ pub fn questions(
             title: of.weighed.point.title.clone(),
             text: text(scales, of, found),
         };
-        let same = |q: &Question| q.address == question.address && q.text == question.text;
+        // one question may stand for several facts
+        let asks = |text: &str| text.split(['?', '(']).next().map(str::to_owned);
+        let same =
+            |q: &Question| q.address == question.address && asks(&q.text) == asks(&question.text);
         if !all.iter().any(same) {
             all.push(question);
         }

@@ -66,6 +66,13 @@ impl<'t> Trial<'t> {
         self.curves().new.nu_at(celsius(40.0)).base()
     }
 
+    /// The highest index the base gives by itself; none where it gives any, or the oil has polymer.
+    pub(super) fn natural_index(&self) -> Option<f64> {
+        let curves = self.curves();
+        let most = crate::oil::curves::natural_index(curves.base)?;
+        (!curves.thickened).then_some(most)
+    }
+
     /// Margins and word.
     pub(super) fn judge(&self) -> Judgement {
         let oil = self.ready();
