@@ -180,6 +180,24 @@ pub enum Command {
     /// The traced steps behind one verdict
     #[command(after_help = "Example:\n  filmwright why M01 O-13 --demo")]
     Why(Why),
+    /// The smallest change that would make an oil hold on a machine
+    #[command(after_help = "Examples:\n  filmwright mend M02 O-13 --demo\n  \
+        filmwright mend CV-104 MG-320 --band -25..40degC\n\
+        Each amount is solved for and verified by weighing again. See also: whatif, why")]
+    Mend(Mend),
+    /// Weigh again with changed values, files untouched
+    #[command(
+        after_help = "Examples:\n  filmwright whatif M02 --set \"heater=10 degC\" --demo\n  \
+        filmwright whatif CV-104 --set \"sump rise=48 K\" --set \"rolling bearing 22220: speed=250 r/min\"\n\
+        Only what moves is printed. See also: mend, gaps"
+    )]
+    Whatif(Whatif),
+    /// Missing and assumed data, ranked by what it would decide
+    #[command(
+        after_help = "Examples:\n  filmwright gaps --demo\n  filmwright gaps --letter 5 --demo    the first five as questions\n\
+        See also: whatif, check"
+    )]
+    Gaps(Gaps),
     /// One oil: its line, viscosity at temperatures, grades, what does not add up
     #[command(
         after_help = "Example:\n  filmwright oil O-12 --at -15degC --at 85degC --demo\n  \
@@ -261,6 +279,9 @@ pub struct Weigh {
     /// Ambient instead of the area's, as -25..40degC
     #[arg(long, value_name = "LOW..HIGH", allow_hyphen_values = true)]
     pub band: Option<String>,
+    /// Also sample so many cases within the tolerances: the share in which every limit is met
+    #[arg(long, value_name = "CASES")]
+    pub scatter: Option<u32>,
 }
 
 /// Which curve floors are judged on.
@@ -280,6 +301,50 @@ pub struct Why {
     pub tag: String,
     /// The oil
     pub oil: String,
+}
+
+/// `mend`
+#[derive(Debug, Args)]
+pub struct Mend {
+    /// The machine, or machine/point
+    pub tag: String,
+    /// The oil, by id or pattern
+    pub oil: String,
+    /// Ambient instead of the area's, as -25..40degC
+    #[arg(long, value_name = "LOW..HIGH", allow_hyphen_values = true)]
+    pub band: Option<String>,
+}
+
+/// `whatif`
+#[derive(Debug, Args)]
+pub struct Whatif {
+    /// The machine, or machine/point
+    pub tag: String,
+    /// A value by the name it has in the file, as KEY=VALUE or PART: KEY=VALUE; several may be set
+    #[arg(
+        long,
+        value_name = "KEY=VALUE",
+        required = true,
+        allow_hyphen_values = true
+    )]
+    pub set: Vec<String>,
+    /// Print only these oils, by id or pattern
+    #[arg(long, value_name = "OIL")]
+    pub oil: Vec<String>,
+}
+
+/// `gaps`
+#[derive(Debug, Args)]
+pub struct Gaps {
+    /// Machines, by tag or pattern; all where none is given
+    pub tags: Vec<String>,
+    /// The first gaps as numbered questions in plain sentences, five unless another number is given
+    #[arg(long, value_name = "N", num_args = 0..=1)]
+    #[expect(clippy::option_option, reason = "absent, without a number, with one")]
+    pub letter: Option<Option<usize>>,
+    /// Every row, not only the first forty
+    #[arg(long)]
+    pub all: bool,
 }
 
 /// `oil`

@@ -30,6 +30,7 @@ pub mod settings;
 pub mod tested;
 pub mod thermal;
 pub mod thrust;
+pub mod usual;
 pub mod worm;
 
 use crate::model::part::{Part, PartKind};
@@ -203,6 +204,8 @@ pub struct Demands {
     pub tolerances: Vec<Gap>,
     /// What makes heat in the point, where all of it can be worked out.
     pub losses: Option<losses::Losses>,
+    /// Stated inputs without one, with the usual tolerance of their kind; only where asked for.
+    pub usual: Vec<Gap>,
 }
 
 impl Demands {
@@ -278,6 +281,7 @@ pub fn demands<R: Recorder>(
         gaps: inputs.gaps,
         tolerances: inputs.tolerances,
         losses,
+        usual: inputs.usual,
     }
 }
 

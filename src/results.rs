@@ -2,7 +2,11 @@
 //! renamed, within a format number.
 
 pub mod csv;
+pub mod gaps;
 pub mod json;
+pub mod mend;
 pub mod need;
 pub mod oil;
+pub mod scatter;
 pub mod weigh;
+pub mod whatif;

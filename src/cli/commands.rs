@@ -1,7 +1,9 @@
 //! One function a command, thin: load, call the room that does the work, print.
 
 pub mod check;
+pub mod gaps;
 pub mod help;
+pub mod mend;
 pub mod need;
 pub mod need_line;
 pub mod new;
@@ -9,16 +11,20 @@ pub mod oil;
 pub mod report;
 pub mod rules;
 pub mod weigh;
+pub mod whatif;
 pub mod why;
 pub mod work;
 
 pub use check::check;
+pub use gaps::gaps;
 pub use help::help;
+pub use mend::mend;
 pub use need::need;
 pub use new::new;
 pub use oil::oil;
 pub use report::report;
 pub use rules::rules;
 pub use weigh::weigh;
+pub use whatif::whatif;
 pub use why::why;
 pub use work::work;

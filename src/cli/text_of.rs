@@ -1,7 +1,11 @@
 //! Results as text for people.
 
+pub mod gaps;
+pub mod mend;
 pub mod need;
 pub mod oil;
+pub mod scatter;
 pub mod weigh;
+pub mod whatif;
 pub mod why;
 pub mod work;

@@ -2,6 +2,7 @@
 
 mod chance;
 mod checks;
+mod decide;
 mod demo;
 mod determinism;
 mod exact;
