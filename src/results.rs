@@ -5,4 +5,5 @@ pub mod csv;
 pub mod json;
 pub mod need;
 pub mod oil;
+pub mod pool;
 pub mod weigh;
