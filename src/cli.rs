@@ -330,7 +330,7 @@ pub struct Pool {
     #[arg(long)]
     pub never_tight: bool,
     /// What holding one oil on the site costs a year, in the site's unit of money
-    #[arg(long, value_name = "COST")]
+    #[arg(long, value_name = "COST", allow_hyphen_values = true)]
     pub site_price: Option<f64>,
     /// Nodes the search looks at before it prints a gap instead of an answer
     #[arg(long, value_name = "N", default_value_t = crate::decide::pool::case::NODES)]

@@ -43,10 +43,7 @@ pub fn document_of(
     if let Some(solved) = pool.solved() {
         let sums = pool.sums(scales.site, &solved.picks, &[]);
         top.insert("sums".into(), sums_of(scales, pool, &sums));
-        let step = |s: &Option<Step>| {
-            s.as_ref()
-                .map_or(Value::Null, |s| step_of(scales, pool, s))
-        };
+        let step = |s: &Option<Step>| s.as_ref().map_or(Value::Null, |s| step_of(scales, pool, s));
         top.insert("shorter".into(), step(&pool.shorter));
         top.insert("longer".into(), step(&pool.longer));
     }
@@ -139,9 +136,9 @@ pub fn of_stock<'p>(
     picks: &'p [Pick],
     stock: Stock,
 ) -> impl Iterator<Item = &'p Pick> + 'p {
-    picks.iter().filter(move |p| {
-        p.offer.oil == stock.oil && pool.places[p.place].fence == stock.fence
-    })
+    picks
+        .iter()
+        .filter(move |p| p.offer.oil == stock.oil && pool.places[p.place].fence == stock.fence)
 }
 
 /// Oils of today that an oil of the list takes the place of.
@@ -161,10 +158,10 @@ pub fn replaces(scales: &Scales<'_>, pool: &Pool<'_, '_>, picks: &[&Pick]) -> Ve
 fn stock(scales: &Scales<'_>, pool: &Pool<'_, '_>, picks: &[Pick], stock: Stock) -> Value {
     let oil = &scales.site.oils[stock.oil];
     let mine: Vec<&Pick> = of_stock(pool, picks, stock).collect();
-    let litres: f64 = mine
+    let litres = mine
         .iter()
         .filter_map(|p| litres_a_year(pool.point(p.place)))
-        .sum();
+        .fold(0.0, |sum, l| sum + l);
     json!({
         "oil": oil.id,
         "name": oil.name,
@@ -255,8 +252,19 @@ pub fn why_undecided(w: &Weighed<'_>) -> &'static str {
 /// One row a point: its oil on the list.
 pub fn table_of(scales: &Scales<'_>, pool: &Pool<'_, '_>) -> Table {
     let headings = [
-        "machine", "point", "fence", "oil", "verdict", "in_use", "oil_now", "hot_vg_step",
-        "cold_vg_step", "smallest_vg_step", "conditions", "litres_L_a_year", "cost_a_year",
+        "machine",
+        "point",
+        "fence",
+        "oil",
+        "verdict",
+        "in_use",
+        "oil_now",
+        "hot_vg_step",
+        "cold_vg_step",
+        "smallest_vg_step",
+        "conditions",
+        "litres_L_a_year",
+        "cost_a_year",
     ];
     let picks = pool.solved().map_or(&[][..], |s| &s.picks);
     Table {

@@ -38,7 +38,7 @@ fn run(session: &mut Session<'_>, args: &Args) -> Result<Exit, Exit> {
     };
     if found.places.is_empty() {
         session.fail(
-            "no machine can be decided: no oil holds or is tight on any of them  [list-empty-handed]\n  write  see why: filmwright weigh",
+            "no machine can be decided: no oil holds or is tight on any of them  [nothing-decided]\n  write  see why: filmwright weigh",
         );
         return Err(Exit::NoMatch);
     }
@@ -68,9 +68,8 @@ fn terms(session: &mut Session<'_>, args: &Args, loaded: &Loaded) -> Result<Term
         return Err(Exit::Usage);
     }
     if args.site_price.is_some_and(|p| !p.is_finite() || p < 0.0) {
-        session.fail(
-            "--site-price is a sum of money a year, not negative\n  write  --site-price 250",
-        );
+        session
+            .fail("--site-price is a sum of money a year, not negative\n  write  --site-price 250");
         return Err(Exit::Usage);
     }
     if args.at_most == Some(0) {

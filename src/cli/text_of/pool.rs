@@ -22,12 +22,7 @@ pub struct Style {
 }
 
 /// The answer.
-pub fn text(
-    scales: &Scales<'_>,
-    pool: &Pool<'_, '_>,
-    asked: &Asked<'_>,
-    style: Style,
-) -> String {
+pub fn text(scales: &Scales<'_>, pool: &Pool<'_, '_>, asked: &Asked<'_>, style: Style) -> String {
     match &pool.outcome {
         Outcome::Solved(solved) => solved_text(scales, pool, solved, asked, style),
         Outcome::Gap {
@@ -41,8 +36,9 @@ pub fn text(
 
 fn gap(bound: usize, known: usize, nodes: u64) -> String {
     format!(
-        "not proven: the shortest list has {bound} to {known} oils, a gap of {}\n  {nodes} nodes were looked at. More of them: filmwright pool --nodes {}\n",
+        "not proven: the shortest list has {bound} to {known} oils, a gap of {}\n  {} looked at. To look at more: filmwright pool --nodes {}\n",
         known - bound,
+        self::nodes(nodes),
         nodes.max(1).saturating_mul(10)
     )
 }
@@ -171,11 +167,15 @@ impl Told<'_, '_, '_> {
     fn row(&self, solved: &Solved, stock: Stock) -> Vec<String> {
         let mine: Vec<&Pick> = of_stock(self.pool, &solved.picks, stock).collect();
         let tight = mine.iter().any(|p| p.offer.tight);
-        let word = if tight { Verdict::Tight } else { Verdict::Holds };
-        let litres: f64 = mine
+        let word = if tight {
+            Verdict::Tight
+        } else {
+            Verdict::Holds
+        };
+        let litres = mine
             .iter()
             .filter_map(|p| litres_a_year(self.pool.point(p.place)))
-            .sum();
+            .fold(0.0, |sum, l| sum + l);
         let old = replaces(self.scales, self.pool, &mine);
         let serves: Vec<String> = mine
             .iter()
@@ -215,7 +215,11 @@ impl Told<'_, '_, '_> {
             .map_or_else(
                 || "-".to_owned(),
                 |(m, place)| {
-                    format!("{} {}", margin(m, 1), self.pool.point(place).point.address())
+                    format!(
+                        "{} {}",
+                        margin(m, 1),
+                        self.pool.point(place).point.address()
+                    )
                 },
             )
     }
@@ -242,7 +246,9 @@ impl Told<'_, '_, '_> {
             let Some(step) = step else {
                 continue;
             };
-            let sums = self.pool.sums(self.scales.site, &step.picks, &step.unserved);
+            let sums = self
+                .pool
+                .sums(self.scales.site, &step.picks, &step.unserved);
             let title = format!("{n} oils, {words} {}", self.id(step.stock.oil));
             rows.push(self.list_row(&title, &sums, n));
             under.extend(self.step_says(step, solved));
@@ -294,7 +300,7 @@ impl Told<'_, '_, '_> {
 
     fn money(&self, sums: &Sums, oils: usize) -> String {
         let mut text = format!(
-            "today {} a year, this list {}",
+            "at today's use: today {} a year, this list {}",
             self.sum(self.with_holding(sums.cost_today, self.pool.today.len())),
             self.sum(self.with_holding(sums.cost, oils))
         );
@@ -306,7 +312,11 @@ impl Told<'_, '_, '_> {
                 self.pool.today.len()
             );
         }
-        let _ = write!(text, "; {} L a year", fixed(sums.litres, 0, Toward::Nearest));
+        let _ = write!(
+            text,
+            "; {} L a year",
+            fixed(sums.litres, 0, Toward::Nearest)
+        );
         if sums.unpriced > 0 {
             let _ = write!(
                 text,
@@ -331,9 +341,11 @@ impl Told<'_, '_, '_> {
 
     fn margins(&self, sums: &Sums) -> String {
         let text = format!(
-            "Against the oils of today {} lose margin and {} gain; against the first choice of each point {} VG step are given up in all.",
+            "Against the oils of today {} {} margin and {} {}; against the first choice of each point {} VG step are given up in all.",
             self.count(sums.lose),
+            if sums.lose == 1 { "loses" } else { "lose" },
             sums.gain,
+            if sums.gain == 1 { "gains" } else { "gain" },
             fixed(sums.given_up, 1, Toward::Up)
         );
         folded(&text, "  ", self.style.width)
@@ -347,7 +359,7 @@ impl Told<'_, '_, '_> {
         }
         let _ = writeln!(
             out,
-            "\n  {} cannot be decided and are on no list:",
+            "\n  {} cannot be decided, on no list:",
             self.count(self.pool.undecided.len())
         );
         for i in &self.pool.undecided {
@@ -364,11 +376,17 @@ impl Told<'_, '_, '_> {
             "Not all lists of this length were compared: the nodes ran out among ties."
         };
         let text = format!(
-            "Proven: no list is shorter than {} ({} nodes). {ties} Every pair of the list was weighed again.",
-            solved.bound, solved.nodes
+            "Proven: no list is shorter than {} ({} looked at). {ties} Every pair of the list was weighed again.",
+            solved.bound,
+            nodes(solved.nodes)
         );
         format!("\n{}", folded(&text, "  ", self.style.width))
     }
+}
+
+/// `1 node`, `24 nodes`.
+fn nodes(n: u64) -> String {
+    format!("{n} {}", if n == 1 { "node" } else { "nodes" })
 }
 
 /// Oils that stand on the list more than once.

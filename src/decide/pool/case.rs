@@ -3,6 +3,7 @@
 use super::fence::Fence;
 use crate::decide::accept::accepted;
 use crate::judge::Verdict;
+use crate::judge::order::{self, Candidate as Ordered, compare, quantised};
 use crate::model::Site;
 use crate::model::machine::Fill;
 use crate::model::oil::Price;
@@ -83,10 +84,10 @@ pub struct Pick {
 /// The place a weighed point makes; none where no oil holds or is tight: it cannot be decided.
 pub fn place(site: &Site, weighed: &Weighed<'_>, on: &str) -> Option<Place> {
     let serves = |c: &&Candidate| matches!(c.judgement.verdict, Verdict::Holds | Verdict::Tight);
-    let offers: Vec<Offer> = weighed
-        .candidates
-        .iter()
-        .filter(serves)
+    let mut serving: Vec<&Candidate> = weighed.candidates.iter().filter(serves).collect();
+    serving.sort_by(|a, b| compare(&key(site, a), &key(site, b)));
+    let offers: Vec<Offer> = serving
+        .into_iter()
         .map(|c| Offer {
             oil: c.oil,
             tight: c.judgement.verdict == Verdict::Tight,
@@ -99,6 +100,22 @@ pub fn place(site: &Site, weighed: &Weighed<'_>, on: &str) -> Option<Place> {
         fence: Fence::of(weighed.point),
         offers: in_order(offers, accepted),
     })
+}
+
+/// What the order of the candidates goes by; every oil of a list is on the site.
+fn key<'s>(site: &'s Site, c: &Candidate) -> Ordered<'s> {
+    let oil = &site.oils[c.oil];
+    Ordered {
+        verdict: c.judgement.verdict,
+        in_use: c.in_use,
+        on_site: true,
+        conditions: c.conditions.len(),
+        excess: quantised(&c.judgement),
+        price: oil.price.as_ref().map(|p| match p.value {
+            Price::PerLitre(x) | Price::PerKilogram(x) => order::thousandths(x),
+        }),
+        id: &oil.id,
+    }
 }
 
 /// Offers in the order they would be taken in, from the order of the candidates: what holds

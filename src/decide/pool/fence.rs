@@ -1,8 +1,8 @@
 //! Ring fences: points whose lubricants are held apart, whatever would shorten the list.
 
+use crate::model::Point;
 use crate::model::facts::PointFacts;
 use crate::model::machine::Lubrication;
-use crate::model::Point;
 use crate::quantity::Measure;
 use crate::quantity::convert::celsius;
 
@@ -49,7 +49,10 @@ impl Fence {
             }
         };
         let yes = |fact: Option<bool>| fact == Some(true);
-        add(facts.food_class.is_some() || yes(facts.food_zone), Self::FOOD);
+        add(
+            facts.food_class.is_some() || yes(facts.food_zone),
+            Self::FOOD,
+        );
         add(fire(facts, lubrication), Self::FIRE);
         add(
             facts.environment.is_some() || yes(facts.water_protection),

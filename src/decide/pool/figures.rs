@@ -92,9 +92,7 @@ pub fn pool<'w, 'a>(
         less = shorter(&places, solved, terms);
         more = longer(&places, solved, terms);
     }
-    let in_use = |i: &usize| {
-        oil_in_use(weighed[*i].point).and_then(|id| oil_index(site, id))
-    };
+    let in_use = |i: &usize| oil_in_use(weighed[*i].point).and_then(|id| oil_index(site, id));
     let mut today: Vec<usize> = of_place.iter().filter_map(in_use).collect();
     let today_unknown = of_place.len() - today.len();
     today.sort_unstable();
@@ -177,7 +175,10 @@ impl<'w, 'a> Pool<'w, 'a> {
         {
             sums.smallest = Some((mine, pick.place));
         }
-        let first = self.places[pick.place].offers.first().and_then(|o| of(o.oil));
+        let first = self.places[pick.place]
+            .offers
+            .first()
+            .and_then(|o| of(o.oil));
         if let (Some(mine), Some(first)) = (mine, first) {
             sums.given_up += (first - mine).max(0.0);
         }

@@ -63,9 +63,7 @@ fn leave_out_weaker_oils(rows: &mut Rows) {
     }
     let weaker = |oil: usize, mine: &BTreeSet<usize>| {
         serves.iter().any(|(other, theirs)| {
-            *other != oil
-                && mine.is_subset(theirs)
-                && (mine.len() < theirs.len() || *other < oil)
+            *other != oil && mine.is_subset(theirs) && (mine.len() < theirs.len() || *other < oil)
         })
     };
     let out: BTreeSet<usize> = serves

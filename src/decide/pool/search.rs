@@ -390,10 +390,7 @@ pub fn ties(offers: &[Vec<Offer>], on: impl Fn(usize) -> bool, shared: usize) ->
         shared,
         ..Ties::default()
     };
-    for offer in offers
-        .iter()
-        .filter_map(|o| o.iter().find(|o| on(o.oil)))
-    {
+    for offer in offers.iter().filter_map(|o| o.iter().find(|o| on(o.oil))) {
         sum.changes += usize::from(offer.change);
         sum.unpriced += usize::from(offer.cost.is_none());
         sum.cost += offer.cost.unwrap_or(0);

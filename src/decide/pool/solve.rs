@@ -69,7 +69,9 @@ pub enum Outcome {
 /// Solves. `names`: the ids of all oils, in list order.
 pub fn solve(places: &[Place], names: &[&str], terms: &Terms) -> Outcome {
     let offers: Vec<Vec<Offer>> = places.iter().map(|p| terms.offers(p)).collect();
-    let unserved: Vec<usize> = (0..places.len()).filter(|i| offers[*i].is_empty()).collect();
+    let unserved: Vec<usize> = (0..places.len())
+        .filter(|i| offers[*i].is_empty())
+        .collect();
     if !unserved.is_empty() {
         return Outcome::Impossible(Impossible::Unserved(unserved));
     }
@@ -188,8 +190,11 @@ impl Whole<'_> {
         let mut picks: Vec<Pick> = Vec::new();
         let (mut ties, mut ties_proven) = (Ties::default(), true);
         for part in parts.iter() {
-            let offers: Vec<Vec<Offer>> =
-                part.places.iter().map(|i| self.offers[*i].clone()).collect();
+            let offers: Vec<Vec<Offer>> = part
+                .places
+                .iter()
+                .map(|i| self.offers[*i].clone())
+                .collect();
             let elsewhere: BTreeSet<usize> = stocks
                 .iter()
                 .filter(|s| s.fence != part.fence)
@@ -238,13 +243,10 @@ impl Whole<'_> {
 
 /// What a place takes from a list.
 pub fn pick(place: usize, offers: &[Offer], on: impl Fn(usize) -> bool) -> Option<Pick> {
-    offers
-        .iter()
-        .find(|o| on(o.oil))
-        .map(|offer| Pick {
-            place,
-            offer: *offer,
-        })
+    offers.iter().find(|o| on(o.oil)).map(|offer| Pick {
+        place,
+        offer: *offer,
+    })
 }
 
 /// Places of the oils in the order of their names.
