@@ -68,6 +68,7 @@ fn place(chance: &mut Chance, oils: usize) -> Place {
             oil,
             tight: verdict == Verdict::Tight,
             change: now != oil,
+            conditions,
             cost,
         };
         weighed.push((candidate, offer));
@@ -166,6 +167,7 @@ fn by_hand(
         let (_, tie, _, set) = best?;
         total.shared += tie.shared;
         total.changes += tie.changes;
+        total.conditions += tie.conditions;
         total.unpriced += tie.unpriced;
         total.cost += tie.cost;
         stocks.extend((0..oils).filter(|o| set >> o & 1 == 1).map(|o| (fence, o)));
@@ -312,6 +314,7 @@ fn without_nodes_a_gap_stands_in_place_of_an_answer() {
                     oil: *oil,
                     tight: false,
                     change: true,
+                    conditions: 0,
                     cost: Some(1),
                 })
                 .collect(),

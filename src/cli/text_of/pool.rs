@@ -371,7 +371,7 @@ impl Told<'_, '_, '_> {
 
     fn proof(&self, solved: &Solved) -> String {
         let ties = if solved.ties_proven {
-            "Ties: fewest changes from today, then cost, then name."
+            "Ties: fewest changes from today and conditions they bring, then cost, then name."
         } else {
             "Not all lists of this length were compared: the nodes ran out among ties."
         };

@@ -19,6 +19,8 @@ pub struct Offer {
     pub tight: bool,
     /// Whether taking it changes what is in the place today.
     pub change: bool,
+    /// Conditions that ride with it there.
+    pub conditions: usize,
     /// What it costs a year there, thousandths of the unit of money; none where not known.
     pub cost: Option<u64>,
 }
@@ -92,6 +94,7 @@ pub fn place(site: &Site, weighed: &Weighed<'_>, on: &str) -> Option<Place> {
             oil: c.oil,
             tight: c.judgement.verdict == Verdict::Tight,
             change: !c.in_use,
+            conditions: c.conditions.len(),
             cost: yearly(site, weighed, c.oil).map(thousandths),
         })
         .collect();

@@ -213,6 +213,8 @@ pub struct Ties {
     pub shared: usize,
     /// Places whose oil changes.
     pub changes: usize,
+    /// Conditions that ride with the oils taken: what the changes ask of those who make them.
+    pub conditions: usize,
     /// Places whose cost is not known.
     pub unpriced: usize,
     /// Cost a year, thousandths.
@@ -344,11 +346,13 @@ impl Tying<'_, '_> {
         };
         for offers in self.wanted.offers {
             let (mut change, mut unpriced, mut cost) = (true, true, u64::MAX);
+            let mut conditions = usize::MAX;
             for offer in offers {
                 if self.search.out[offer.oil] && !self.on[offer.oil] {
                     continue;
                 }
                 change &= offer.change;
+                conditions = conditions.min(offer.conditions);
                 unpriced &= offer.cost.is_none();
                 cost = cost.min(offer.cost.unwrap_or(0));
                 if self.on[offer.oil] {
@@ -356,6 +360,11 @@ impl Tying<'_, '_> {
                 }
             }
             least.changes += usize::from(change);
+            least.conditions += if conditions == usize::MAX {
+                0
+            } else {
+                conditions
+            };
             least.unpriced += usize::from(unpriced);
             least.cost += if cost == u64::MAX { 0 } else { cost };
         }
@@ -392,6 +401,7 @@ pub fn ties(offers: &[Vec<Offer>], on: impl Fn(usize) -> bool, shared: usize) ->
     };
     for offer in offers.iter().filter_map(|o| o.iter().find(|o| on(o.oil))) {
         sum.changes += usize::from(offer.change);
+        sum.conditions += offer.conditions;
         sum.unpriced += usize::from(offer.cost.is_none());
         sum.cost += offer.cost.unwrap_or(0);
     }

@@ -219,6 +219,7 @@ impl Whole<'_> {
             let here = super::search::ties(&offers, |oil| list.contains(&oil), shared);
             ties.shared += here.shared;
             ties.changes += here.changes;
+            ties.conditions += here.conditions;
             ties.unpriced += here.unpriced;
             ties.cost += here.cost;
             stocks.extend(list.into_iter().map(|oil| Stock {
