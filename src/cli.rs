@@ -205,6 +205,12 @@ pub enum Command {
         filmwright oil O-04 --with O-05 --target \"46.3 mm2/s at 40 degC\" --demo"
     )]
     Oil(Oil),
+    /// The shortest oil list that serves every machine, and what one shorter or longer costs
+    #[command(after_help = "Examples:\n  filmwright pool --demo\n  \
+        filmwright pool --drop O-13 --never-tight\n  \
+        filmwright pool --at-most 8 --site-price 250\n\
+        See also: weigh, mend, report")]
+    Pool(Pool),
     /// HTML sheets: overview, one sheet a machine
     #[command(
         after_help = "Examples:\n  filmwright report --demo\n  filmwright report -o out/\n  \
@@ -370,6 +376,31 @@ pub struct Oil {
     /// What the blend does to these machines; those that hold the oil where none is given
     #[arg(long, value_name = "TAG", requires = "with")]
     pub at_machine: Vec<String>,
+}
+
+/// `pool`
+#[derive(Debug, Args)]
+pub struct Pool {
+    /// Only these machines, by tag or pattern; all where none is given
+    pub tags: Vec<String>,
+    /// Oils that stay on the list, by id or pattern
+    #[arg(long, value_name = "OIL")]
+    pub keep: Vec<String>,
+    /// Oils that may not be on the list, by id or pattern
+    #[arg(long, value_name = "OIL")]
+    pub drop: Vec<String>,
+    /// The longest list wanted
+    #[arg(long, value_name = "N")]
+    pub at_most: Option<usize>,
+    /// Take no oil where it is tight
+    #[arg(long)]
+    pub never_tight: bool,
+    /// What holding one oil on the site costs a year, in the site's unit of money
+    #[arg(long, value_name = "COST", allow_hyphen_values = true)]
+    pub site_price: Option<f64>,
+    /// Nodes the search looks at before it prints a gap instead of an answer
+    #[arg(long, value_name = "N", default_value_t = crate::decide::pool::case::NODES)]
+    pub nodes: u64,
 }
 
 /// `report`

@@ -7,6 +7,7 @@ pub mod json;
 pub mod mend;
 pub mod need;
 pub mod oil;
+pub mod pool;
 pub mod scatter;
 pub mod weigh;
 pub mod whatif;

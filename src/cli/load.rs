@@ -12,7 +12,7 @@ use crate::input::rules::{RuleFault, rulebook};
 use crate::model::Site;
 use crate::model::rulebook::Rulebook;
 use crate::model::stated::{Between, Stated};
-use crate::problem::{self, Problems, Severity, render};
+use crate::problem::{self, Code, Problem, Problems, Severity, Write, render};
 use crate::quantity::{Kind, Measure, ThermodynamicTemperature};
 use crate::relation::bearing::designation::DimensionTable;
 use crate::relation::oil::viscosity_temperature::Misfit;
@@ -190,6 +190,9 @@ impl Session<'_> {
                 problems.allow(&point.machine, &point.allow);
             }
         }
+        if let Ok(site) = &site {
+            self.expired(site, &mut problems);
+        }
         if self.shared.strict {
             problems.make_strict();
         }
@@ -207,6 +210,27 @@ impl Session<'_> {
                 })
             }
             _ => Err(self.told(&sources, &problems)),
+        }
+    }
+
+    /// Warns of acceptances that have run out on the day of judgement.
+    fn expired(&self, site: &Site, problems: &mut Problems) {
+        let on = self.date(site.frame.reviewed.as_deref());
+        for a in site.accept.iter().filter(|a| a.expired(&on)) {
+            let until = a.until.as_deref().unwrap_or_default();
+            let (machine, oil) = (&a.machine.value, &a.oil.value);
+            problems.push(
+                Problem::new(
+                    Code::AcceptExpired,
+                    format!("the acceptance of {oil} on {machine} ran out on {until}"),
+                    a.machine.origin.place.clone(),
+                )
+                .within(machine.clone())
+                .so(format!("on {on} the verdict counts as open work again"))
+                .write(Write::words(
+                    "until: a later day, if somebody accepts it again; otherwise take it out",
+                )),
+            );
         }
     }
 

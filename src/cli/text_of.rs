@@ -4,6 +4,7 @@ pub mod gaps;
 pub mod mend;
 pub mod need;
 pub mod oil;
+pub mod pool;
 pub mod scatter;
 pub mod weigh;
 pub mod whatif;

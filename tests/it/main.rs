@@ -11,6 +11,7 @@ mod journal_heat;
 mod journal_table;
 mod judging;
 mod layers;
+mod pool;
 mod problems;
 mod properties_film;
 mod properties_oil;
