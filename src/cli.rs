@@ -5,6 +5,7 @@ pub mod exit;
 pub mod host;
 pub mod load;
 pub mod run;
+pub mod samples;
 pub mod select;
 pub mod session;
 pub mod text;
@@ -211,6 +212,13 @@ pub enum Command {
         filmwright pool --at-most 8 --site-price 250\n\
         See also: weigh, mend, report")]
     Pool(Pool),
+    /// Samples of oils in use against their labels and against what the machines need
+    #[command(
+        after_help = "Examples:\n  filmwright audit --demo\n  filmwright audit --samples lab-2026-09.csv\n  \
+        filmwright audit --match \"Conv104 HD=CV-104\" --unmatched\n\
+        See also: weigh, report; filmwright help keys lists the columns"
+    )]
+    Audit(Audit),
     /// HTML sheets: overview, one sheet a machine
     #[command(
         after_help = "Examples:\n  filmwright report --demo\n  filmwright report -o out/\n  \
@@ -401,6 +409,34 @@ pub struct Pool {
     /// Nodes the search looks at before it prints a gap instead of an answer
     #[arg(long, value_name = "N", default_value_t = crate::decide::pool::case::NODES)]
     pub nodes: u64,
+}
+
+/// `audit`
+#[derive(Debug, Args)]
+pub struct Audit {
+    /// Machines, by tag or pattern; all where none is given
+    pub tags: Vec<String>,
+    /// Only list the bottles that belong to no machine, with what may be meant
+    #[arg(long)]
+    pub unmatched: bool,
+    /// A name on bottles and the machine it means, as "NAME=TAG"
+    #[arg(long = "match", value_name = "NAME=TAG")]
+    pub matches: Vec<String>,
+    /// Lay the shear loss measured in one machine on the others with the same oil
+    #[arg(long)]
+    pub use_measured_shear: bool,
+    /// What parts whole and decimals in the laboratory's numbers (default: as the map says)
+    #[arg(long, value_enum, value_name = "SIGN")]
+    pub decimal: Option<Decimal>,
+}
+
+/// What parts whole and decimals.
+#[derive(Clone, Copy, Debug, PartialEq, Eq, ValueEnum)]
+pub enum Decimal {
+    /// 45.6
+    Point,
+    /// 45,6
+    Comma,
 }
 
 /// `report`

@@ -1,5 +1,6 @@
 //! One function a command, thin: load, call the room that does the work, print.
 
+pub mod audit;
 pub mod check;
 pub mod gaps;
 pub mod help;
@@ -16,6 +17,7 @@ pub mod whatif;
 pub mod why;
 pub mod work;
 
+pub use audit::audit;
 pub use check::check;
 pub use gaps::gaps;
 pub use help::help;

@@ -1,5 +1,6 @@
 //! Results as text for people.
 
+pub mod audit;
 pub mod gaps;
 pub mod mend;
 pub mod need;
