@@ -160,6 +160,15 @@ pub enum Command {
     /// Lay down a starter folder: three commented files and the editor schemas
     #[command(after_help = "Example:\n  filmwright new works/")]
     New(New),
+    /// Read a spreadsheet register or oil list, draft the site or oil file
+    #[command(
+        after_help = "Examples:\n  filmwright intake register.xlsx                 draft site.yaml, propose register.map.yaml\n  \
+        filmwright intake register.xlsx --map register.map.yaml -o site.yaml\n  \
+        filmwright intake oils.csv --makes oils --decimal comma\n  \
+        filmwright intake register.xlsx --accept        take the differences of site.yaml.proposed\n\
+        See also: check, gaps"
+    )]
+    Intake(Intake),
     /// Read all files, report errors and warnings, run nothing
     #[command(after_help = "Example:\n  filmwright check --strict")]
     Check,
@@ -213,6 +222,65 @@ pub struct New {
     /// Also write the built-in rules out for editing
     #[arg(long = "with-rules")]
     pub with_rules: bool,
+}
+
+/// `intake`
+#[derive(Debug, Args)]
+pub struct Intake {
+    /// The spreadsheet: xlsx, ods or csv
+    #[arg(value_name = "FILE")]
+    pub file: String,
+    /// Map of its columns; written where it is not there (default: FILE with .map.yaml)
+    #[arg(long, value_name = "FILE")]
+    pub map: Option<String>,
+    /// The sheet to read (default: the one that looks most like a register)
+    #[arg(long, value_name = "NAME")]
+    pub sheet: Option<String>,
+    /// What the table lists (default: by its headings)
+    #[arg(long, value_enum, value_name = "KIND")]
+    pub makes: Option<IntakeMakes>,
+    /// Decimal sign of its numbers (default: found from the cells)
+    #[arg(long, value_enum, value_name = "SIGN")]
+    pub decimal: Option<IntakeDecimal>,
+    /// Encoding of a CSV file, as windows-1252 (default: found)
+    #[arg(long, value_name = "NAME")]
+    pub encoding: Option<String>,
+    /// Delimiter of a CSV file: comma, semicolon, tab, bar (default: found)
+    #[arg(long, value_name = "SIGN")]
+    pub delimiter: Option<String>,
+    /// Which gallon a bare gal is (default: asked about)
+    #[arg(long, value_enum, value_name = "WHICH")]
+    pub gallon: Option<IntakeGallon>,
+    /// Take the differences proposed into the file
+    #[arg(long)]
+    pub accept: bool,
+}
+
+/// What a table lists.
+#[derive(Clone, Copy, Debug, PartialEq, Eq, ValueEnum)]
+pub enum IntakeMakes {
+    /// Machines: a site file.
+    Site,
+    /// Lubricants: an oil file.
+    Oils,
+}
+
+/// Decimal signs.
+#[derive(Clone, Copy, Debug, PartialEq, Eq, ValueEnum)]
+pub enum IntakeDecimal {
+    /// 52.0
+    Point,
+    /// 52,0
+    Comma,
+}
+
+/// Gallons.
+#[derive(Clone, Copy, Debug, PartialEq, Eq, ValueEnum)]
+pub enum IntakeGallon {
+    /// 3.785 L.
+    Us,
+    /// 4.546 L.
+    Uk,
 }
 
 /// `need`

@@ -17,6 +17,7 @@ pub mod assets;
 pub mod cli;
 pub mod demand;
 pub mod input;
+pub mod intake;
 pub mod judge;
 pub mod model;
 pub mod numeric;

@@ -2,6 +2,7 @@
 //! renamed, within a format number.
 
 pub mod csv;
+pub mod intake;
 pub mod json;
 pub mod need;
 pub mod oil;

@@ -2,6 +2,7 @@
 
 pub mod check;
 pub mod help;
+pub mod intake;
 pub mod need;
 pub mod need_line;
 pub mod new;
@@ -14,6 +15,7 @@ pub mod work;
 
 pub use check::check;
 pub use help::help;
+pub use intake::intake;
 pub use need::need;
 pub use new::new;
 pub use oil::oil;

@@ -21,6 +21,11 @@ pub trait Host {
     /// # Errors
     /// Whatever the system says.
     fn write(&mut self, path: &Path, bytes: &[u8]) -> io::Result<()>;
+    /// Removes a file the program made.
+    ///
+    /// # Errors
+    /// Whatever the system says.
+    fn remove(&mut self, path: &Path) -> io::Result<()>;
     /// Size of a file, bytes, without reading it.
     ///
     /// # Errors
@@ -121,6 +126,10 @@ impl Host for System {
         make_readable(file.as_file())?;
         file.persist(path).map_err(|e| e.error)?;
         Ok(())
+    }
+
+    fn remove(&mut self, path: &Path) -> io::Result<()> {
+        std::fs::remove_file(path)
     }
 
     fn size(&self, path: &Path) -> io::Result<u64> {
@@ -284,6 +293,11 @@ impl Host for MemoryHost {
     fn write(&mut self, path: &Path, bytes: &[u8]) -> io::Result<()> {
         self.files.insert(plain(path), bytes.to_vec());
         Ok(())
+    }
+
+    fn remove(&mut self, path: &Path) -> io::Result<()> {
+        let gone = self.files.remove(&plain(path));
+        gone.map(drop).ok_or_else(|| Self::missing(path))
     }
 
     fn size(&self, path: &Path) -> io::Result<u64> {

@@ -44,6 +44,7 @@ fn misunderstood(error: &clap::Error, host: &mut dyn Host) -> Exit {
 fn command(session: &mut Session<'_>, command: Command) -> Exit {
     match command {
         Command::New(args) => commands::new(session, &args),
+        Command::Intake(args) => commands::intake(session, &args),
         Command::Check => commands::check(session),
         Command::Need(args) => commands::need(session, &args),
         Command::Weigh(args) => commands::weigh(session, &args),

@@ -158,14 +158,20 @@ impl<'h> Session<'h> {
         bytes.is_empty() || has(head) || has(tail)
     }
 
-    /// A table in the dialect asked for.
-    pub fn table(&mut self, table: &Table) -> Exit {
+    /// A table as text in the dialect asked for.
+    pub fn csv(&self, table: &Table) -> String {
         let dialect = if self.shared.csv_excel {
             Dialect::Spreadsheet
         } else {
             Dialect::Plain
         };
-        self.result(&write(table, dialect))
+        write(table, dialect)
+    }
+
+    /// A table in the dialect asked for.
+    pub fn table(&mut self, table: &Table) -> Exit {
+        let text = self.csv(table);
+        self.result(&text)
     }
 
     /// Whether a format was asked for.
