@@ -134,6 +134,18 @@ pub struct Demand {
     pub from_window: bool,
 }
 
+impl Demand {
+    /// What it asks and of what: `gear mesh low-speed stage: …`. A window names its part itself.
+    pub fn asks(&self) -> String {
+        match &self.part {
+            Some(part) if !self.says.starts_with(part.as_str()) => {
+                format!("{part}: {}", self.says)
+            }
+            _ => self.says.clone(),
+        }
+    }
+}
+
 /// A figure worked out for a part that sets no limit.
 #[derive(Clone, Debug, PartialEq)]
 pub struct Information {

@@ -152,7 +152,7 @@ impl<'s> Inputs<'s> {
                 let value = Q::from_base(lo + (hi - lo) * self.scenario.share(axis));
                 let given = Given::new(value, range.written.clone(), range.origin.clone());
                 let known = r.given(wanted.symbol, wanted.says, &given);
-                r.note(|| format!("unknown: {}", range.written));
+                r.note(|| "not known: this is one setting of its range".to_owned());
                 Some(known)
             }
             Some(Stated::Unknown(ask, origin)) => {

@@ -14,6 +14,7 @@ mod problems;
 mod properties_film;
 mod properties_oil;
 mod reader;
+mod readme;
 mod real_oil;
 mod reference_film;
 mod reference_journal;

@@ -44,8 +44,11 @@ fn run(
         .into_iter()
         .map(|p: &Point| scales.weigh(p))
         .collect();
-    let tripped = args_gate(session)
-        .is_some_and(|gate| all.iter().any(|w| trips(w, gate, wanted.as_deref())));
+    let tripped: Vec<String> = session.shared.gate.map_or_else(Vec::new, |gate| {
+        all.iter()
+            .flat_map(|w| trips(&scales, w, gate, wanted.as_deref()))
+            .collect()
+    });
     for w in &mut all {
         w.candidates
             .retain(|c| wanted.as_ref().is_none_or(|o| o.contains(&c.oil)));
@@ -57,19 +60,28 @@ fn run(
         }
     }
     let exit = print(session, &scales, loaded, &all);
-    Ok(if exit == Exit::Done && tripped {
-        Exit::Gate
-    } else {
-        exit
-    })
+    if exit != Exit::Done || tripped.is_empty() {
+        return Ok(exit);
+    }
+    let more = match tripped.len() {
+        n if n > GATE_NAMED => format!(" and {} more", n - GATE_NAMED),
+        _ => String::new(),
+    };
+    let named = &tripped[..tripped.len().min(GATE_NAMED)];
+    session.note(&format!("gate tripped: {}{more}", named.join(", ")));
+    Ok(Exit::Gate)
 }
 
-fn args_gate(session: &Session<'_>) -> Option<Gate> {
-    session.shared.gate
-}
+/// So many oils are named when a gate is tripped; the table has them all.
+const GATE_NAMED: usize = 5;
 
-/// Whether the oil in use, or one asked for, is at the level or worse.
-fn trips(w: &Weighed<'_>, gate: Gate, wanted: Option<&[usize]>) -> bool {
+/// The oils in use, or those asked for, that are at the level or worse: `GB-1 GEAR-220 fails`.
+fn trips(
+    scales: &Scales<'_>,
+    w: &Weighed<'_>,
+    gate: Gate,
+    wanted: Option<&[usize]>,
+) -> Vec<String> {
     let looked_at = |oil: usize, in_use: bool| wanted.map_or(in_use, |o| o.contains(&oil));
     let level = |v: Verdict| match v {
         Verdict::Holds => None,
@@ -77,11 +89,27 @@ fn trips(w: &Weighed<'_>, gate: Gate, wanted: Option<&[usize]>) -> bool {
         Verdict::Open => Some(Gate::Open),
         Verdict::Fails => Some(Gate::Fails),
     };
-    w.candidates
+    let named = |oil: usize, word: &str| {
+        format!("{} {} {word}", w.point.address(), scales.site.oils[oil].id)
+    };
+    let judged = w
+        .candidates
         .iter()
         .filter(|c| looked_at(c.oil, c.in_use))
-        .any(|c| level(c.judgement.verdict).is_some_and(|l| l >= gate))
-        || w.barred.iter().any(|b| looked_at(b.oil, b.in_use))
+        .filter(|c| level(c.judgement.verdict).is_some_and(|l| l >= gate))
+        .map(|c| {
+            let verdict = c.judgement.verdict.word();
+            let is = if matches!(c.judgement.verdict, Verdict::Fails) {
+                ""
+            } else {
+                "is "
+            };
+            named(c.oil, &format!("{is}{verdict}"))
+        });
+    let barred = w.barred.iter().filter(|b| looked_at(b.oil, b.in_use));
+    judged
+        .chain(barred.map(|b| named(b.oil, "is barred")))
+        .collect()
 }
 
 fn print(

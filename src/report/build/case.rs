@@ -201,14 +201,7 @@ pub(super) fn compared(demand: &Demand) -> bool {
 
 /// What a demand asks and of what: `gear mesh low-speed stage: …`. A component's window names it.
 pub(super) fn asks(demand: &Demand) -> String {
-    match &demand.part {
-        Some(part)
-            if !part.starts_with("component ") && !demand.says.starts_with(part.as_str()) =>
-        {
-            say::set(&format!("{part}: {}", demand.says))
-        }
-        _ => say::set(&demand.says),
-    }
+    say::set(&demand.asks())
 }
 
 fn now<'r>(run: &Run<'_>, w: &'r Weighed<'_>) -> Now<'r> {
