@@ -198,7 +198,8 @@ pub enum Command {
     /// HTML sheets: overview, one sheet a machine
     #[command(
         after_help = "Examples:\n  filmwright report --demo\n  filmwright report -o out/\n  \
-        filmwright report --one-file -o review.html --only 'CV-*'"
+        filmwright report --one-file -o review.html --only 'CV-*'\n  \
+        filmwright report --xlsx annex.xlsx"
     )]
     Report(Report),
     /// The rules built in: formula, range of use, source, defaults
@@ -209,6 +210,22 @@ pub enum Command {
         filmwright work bearing-nu1 speed=\"236 r/min\" pitch_diameter=\"140 mm\"\n  \
         filmwright work --batch sums.jsonl")]
     Work(Work),
+    /// JSON Schemas for editors: completion and hover text for the files
+    #[command(
+        after_help = "Examples:\n  filmwright schema --write       into .filmwright/ of the folder\n  filmwright schema site"
+    )]
+    Schema(Schema),
+    /// Completions for a shell, with tags and oils of the working folder
+    #[command(
+        after_help = "Examples:\n  filmwright completions bash > ~/.local/share/bash-completion/completions/filmwright\n  \
+        filmwright completions fish > ~/.config/fish/completions/filmwright.fish"
+    )]
+    Completions(Completions),
+    /// Manual pages
+    #[command(
+        after_help = "Examples:\n  filmwright man | man -l -\n  filmwright man weigh\n  filmwright man -o man1/        all pages into a folder"
+    )]
+    Man(Man),
     /// Short texts: units, verdicts, files, keys, steps, or the name of a message
     #[command(after_help = "Example:\n  filmwright help verdicts")]
     Help(Help),
@@ -389,6 +406,9 @@ pub struct Report {
     /// Folder of own templates on top of the built-in ones
     #[arg(long, value_name = "DIR")]
     pub templates: Option<String>,
+    /// Write the results as a workbook as well
+    #[arg(long, value_name = "FILE")]
+    pub xlsx: Option<String>,
 }
 
 /// Paper sizes.
@@ -422,6 +442,61 @@ pub struct Work {
     /// JSON Lines in, JSON Lines out; '-' is standard input
     #[arg(long, value_name = "FILE")]
     pub batch: Option<String>,
+}
+
+/// `schema`
+#[derive(Debug, Args)]
+pub struct Schema {
+    /// Print the schema of this kind of file: site, oils, samples, events
+    #[arg(value_name = "KIND")]
+    pub kind: Option<String>,
+    /// Write all of them into .filmwright/ of the folder
+    #[arg(long)]
+    pub write: bool,
+}
+
+/// `completions`
+#[derive(Debug, Args)]
+pub struct Completions {
+    /// The shell
+    #[arg(value_enum, value_name = "SHELL", required_unless_present = "names")]
+    pub shell: Option<Shell>,
+    /// Print names of the working folder with what they are, a line each
+    #[arg(long, value_enum, value_name = "KIND", hide = true)]
+    pub names: Option<Names>,
+}
+
+/// Shells.
+#[derive(Clone, Copy, Debug, PartialEq, Eq, ValueEnum)]
+pub enum Shell {
+    /// bash.
+    Bash,
+    /// zsh.
+    Zsh,
+    /// fish.
+    Fish,
+    /// `PowerShell`.
+    #[value(name = "powershell")]
+    PowerShell,
+}
+
+/// Names that are completed.
+#[derive(Clone, Copy, Debug, PartialEq, Eq, ValueEnum)]
+pub enum Names {
+    /// Tags of machines and addresses of points.
+    Tags,
+    /// Ids of oils.
+    Oils,
+    /// Ids of rules.
+    Rules,
+}
+
+/// `man`
+#[derive(Debug, Args)]
+pub struct Man {
+    /// The page of one command; the program's own where none is given
+    #[arg(value_name = "COMMAND")]
+    pub command: Option<String>,
 }
 
 /// `help`

@@ -7,3 +7,4 @@ pub mod json;
 pub mod need;
 pub mod oil;
 pub mod weigh;
+pub mod xlsx;

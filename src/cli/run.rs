@@ -53,6 +53,9 @@ fn command(session: &mut Session<'_>, command: Command) -> Exit {
         Command::Report(args) => commands::report(session, &args),
         Command::Rules(args) => commands::rules(session, &args),
         Command::Work(args) => commands::work(session, &args),
+        Command::Schema(args) => commands::schema(session, &args),
+        Command::Completions(args) => commands::completions(session, &args),
+        Command::Man(args) => commands::man(session, &args),
         Command::Help(args) => commands::help(session, &args),
     }
 }

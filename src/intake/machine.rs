@@ -97,6 +97,17 @@ impl<'r, 'a> RowReader<'r, 'a> {
         self.join_ambient();
         self.parts();
         self.facts();
+        // The name comes first, as in files written by hand.
+        if let Some(at) = self
+            .machine
+            .record
+            .keys
+            .iter()
+            .position(|(k, _)| k == "name")
+        {
+            let name = self.machine.record.keys.remove(at);
+            self.machine.record.keys.insert(0, name);
+        }
         self.machine
     }
 
@@ -111,21 +122,13 @@ impl<'r, 'a> RowReader<'r, 'a> {
             says: says.into(),
         };
         if matches!(kind, Kind::NotUnderstood | Kind::Question) {
-            let quoted = if text.is_empty() {
+            let quoted = if text.is_empty() || column.is_none() {
                 String::new()
             } else {
-                format!(" \"{text}\"")
+                format!(" {} \"{text}\"", finding.heading)
             };
-            let what = if finding.heading.is_empty() {
-                "row".to_owned()
-            } else {
-                finding.heading.clone()
-            };
-            self.machine.record.notes.push(format!(
-                "{} {what}{quoted}: {}",
-                finding.cell(),
-                finding.says
-            ));
+            let note = format!("{}{quoted}: {}", finding.cell(), finding.says);
+            self.machine.record.notes.push(note);
         }
         self.reader.findings.push(finding);
     }
@@ -208,7 +211,7 @@ impl<'r, 'a> RowReader<'r, 'a> {
         if let Some(read_as) = reading
             .read_as
             .as_ref()
-            .filter(|_| !reading.unitless && reading.fault.is_none())
+            .filter(|_| !reading.unitless && reading.fault.is_none() && reading.ask.is_none())
         {
             self.say(Kind::ReadAs, Some(column), &text, read_as.clone());
         }

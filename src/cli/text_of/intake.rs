@@ -31,8 +31,11 @@ pub fn report(file: &str, draft: &Draft, outcome: &Outcome, width: usize) -> Str
         section(&mut out, draft, kind, title, width);
     }
     changes(&mut out, outcome, width);
+    if !outcome.written.is_empty() {
+        out.push('\n');
+    }
     for file in &outcome.written {
-        let _ = writeln!(out, "\nwrote {file}");
+        let _ = writeln!(out, "wrote {file}");
     }
     out
 }
