@@ -17,7 +17,7 @@ pub fn work(session: &mut Session<'_>, args: &Work) -> Exit {
         return if session.wants(Format::Json) {
             session.result(&text::register(&all))
         } else if session.wants(Format::Csv) {
-            session.table(&text::table(&all))
+            session.table(&text::csv_table(&all))
         } else {
             session.result(&text::list(&all))
         };

@@ -94,7 +94,7 @@ pub fn worked(worked: &Worked, units: Units, width: usize) -> String {
 }
 
 /// The relations as a table.
-pub fn table(relations: &[&Relation]) -> Table {
+pub fn csv_table(relations: &[&Relation]) -> Table {
     let headings = [
         "relation", "group", "title", "formula", "range", "source", "with", "gives",
     ];
