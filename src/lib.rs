@@ -16,8 +16,10 @@
 pub mod assets;
 pub mod audit;
 pub mod cli;
+pub mod decide;
 pub mod demand;
 pub mod input;
+pub mod intake;
 pub mod judge;
 pub mod model;
 pub mod numeric;

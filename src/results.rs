@@ -3,7 +3,14 @@
 
 pub mod audit;
 pub mod csv;
+pub mod gaps;
+pub mod intake;
 pub mod json;
+pub mod mend;
 pub mod need;
 pub mod oil;
+pub mod pool;
+pub mod scatter;
 pub mod weigh;
+pub mod whatif;
+pub mod xlsx;

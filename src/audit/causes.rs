@@ -81,7 +81,12 @@ impl Named {
 }
 
 fn order(evidence: &mut [Evidence]) {
-    evidence.sort_by(|a, b| b.weight.abs().total_cmp(&a.weight.abs()).then_with(|| a.on.cmp(&b.on)));
+    evidence.sort_by(|a, b| {
+        b.weight
+            .abs()
+            .total_cmp(&a.weight.abs())
+            .then_with(|| a.on.cmp(&b.on))
+    });
 }
 
 /// What the figures of a sample say.
@@ -126,7 +131,11 @@ impl Causes {
         };
         let settings = [false, true].into_iter().flat_map(|engine| {
             [false, true].into_iter().flat_map(move |gas| {
-                [false, true].into_iter().map(move |heated| Setting { engine, gas, heated })
+                [false, true].into_iter().map(move |heated| Setting {
+                    engine,
+                    gas,
+                    heated,
+                })
             })
         });
         let keys = settings.flat_map(|s| (0..profiles.len()).map(move |i| (i, s)));
@@ -169,7 +178,10 @@ impl Causes {
         let sample = Sample::new(figures, profile, &self.scatter);
         if sample.is_empty() {
             side.sort_by(by_strength);
-            return Diagnosis { causes: side, ..Diagnosis::default() };
+            return Diagnosis {
+                causes: side,
+                ..Diagnosis::default()
+            };
         }
         let fresh;
         let grid = match self.grids.get(&(oil, setting)) {
@@ -201,17 +213,31 @@ fn by_strength(a: &Named, b: &Named) -> std::cmp::Ordering {
 
 /// Viscosities that no oil and no mixture has.
 fn upside_down(figures: &Figures) -> Option<Named> {
-    let (nu40, nu100) = (figures.exact(Reading::Nu40)?, figures.exact(Reading::Nu100)?);
+    let (nu40, nu100) = (
+        figures.exact(Reading::Nu40)?,
+        figures.exact(Reading::Nu100)?,
+    );
     let vi = super::profile::index(nu40, nu100);
-    let sane = nu100 < 0.75 * nu40 && (nu100 < 2.0 || vi.is_some_and(|v| (-60.0..=450.0).contains(&v)));
+    let sane =
+        nu100 < 0.75 * nu40 && (nu100 < 2.0 || vi.is_some_and(|v| (-60.0..=450.0).contains(&v)));
     if sane {
         return None;
     }
     use crate::quantity::show::{Toward, fixed, significant};
     let show = |v| significant(v, 3, Toward::Nearest);
-    let index = vi.map_or("no viscosity index".to_owned(), |v| format!("a viscosity index of {}", fixed(v, 0, Toward::Nearest)));
-    let says = format!("{} mm2/s at 40 degC with {} at 100 degC have {index}, which no oil and no mixture of oils gives", show(nu40), show(nu100));
-    Some(Named::by_signs(Cause::LabError, 8.0, vec![Evidence::speaks_for("VI", says, 8.0)]))
+    let index = vi.map_or("no viscosity index".to_owned(), |v| {
+        format!("a viscosity index of {}", fixed(v, 0, Toward::Nearest))
+    });
+    let says = format!(
+        "{} mm2/s at 40 degC with {} at 100 degC have {index}, which no oil and no mixture of oils gives",
+        show(nu40),
+        show(nu100)
+    );
+    Some(Named::by_signs(
+        Cause::LabError,
+        8.0,
+        vec![Evidence::speaks_for("VI", says, 8.0)],
+    ))
 }
 
 /// A setting that was looked at.
@@ -237,8 +263,14 @@ fn bulk(grid: &Grid, sample: &Sample, profile: &Profile) -> Diagnosis {
     let mut looked = Vec::new();
     let mut best = f64::NEG_INFINITY;
     look(&grid.single, sample, &mut best, &mut looked);
-    let none = looked.iter().find(|l| l.theta.causes[0].is_none()).map_or(f64::NEG_INFINITY, |l| l.log);
-    let top = looked.iter().map(|l| l.log).fold(f64::NEG_INFINITY, f64::max);
+    let none = looked
+        .iter()
+        .find(|l| l.theta.causes[0].is_none())
+        .map_or(f64::NEG_INFINITY, |l| l.log);
+    let top = looked
+        .iter()
+        .map(|l| l.log)
+        .fold(f64::NEG_INFINITY, f64::max);
     if top > none + 1.0 {
         look(&grid.pairs, sample, &mut best, &mut looked);
     }
@@ -258,7 +290,12 @@ fn bulk(grid: &Grid, sample: &Sample, profile: &Profile) -> Diagnosis {
         for cause in l.theta.causes.into_iter().flatten() {
             *by_cause.entry(cause).or_default() += weight;
         }
-        if l.theta.causes.into_iter().flatten().any(Cause::is_other_oil) {
+        if l.theta
+            .causes
+            .into_iter()
+            .flatten()
+            .any(Cause::is_other_oil)
+        {
             other_oil += weight;
         }
     }
@@ -274,9 +311,14 @@ fn bulk(grid: &Grid, sample: &Sample, profile: &Profile) -> Diagnosis {
     // lost among its many names
     let likeliest = by_cause.values().copied().fold(0.0, f64::max) / total;
     found.undecided = likeliest < 0.5 && found.other_oil < 0.5;
-    let named = by_cause.into_iter().map(|(c, w)| (c, w / total)).filter(|(_, p)| *p >= NAMED);
+    let named = by_cause
+        .into_iter()
+        .map(|(c, w)| (c, w / total))
+        .filter(|(_, p)| *p >= NAMED);
     for (cause, likelihood) in named {
-        found.causes.push(name(cause, likelihood, none, &looked, sample, profile));
+        found
+            .causes
+            .push(name(cause, likelihood, none, &looked, sample, profile));
     }
     found.would_tell = would_tell(&found.causes, sample, profile);
     found
@@ -298,10 +340,23 @@ fn name(
     sample: &Sample,
     profile: &Profile,
 ) -> Named {
-    let with = looked.iter().filter(|l| l.theta.causes.contains(&Some(cause)));
-    let alone_first = |l: &&Looked<'_>| l.log + if l.theta.causes[1].is_none() { 1.0 } else { 0.0 };
-    let best = with.clone().max_by(|a, b| alone_first(a).total_cmp(&alone_first(b)));
-    let mut evidence = best.map_or(Vec::new(), |l| evidence::of(cause, l.theta, sample, profile));
+    let with = looked
+        .iter()
+        .filter(|l| l.theta.causes.contains(&Some(cause)));
+    let alone_first = |l: &&Looked<'_>| {
+        l.log
+            + if l.theta.causes[1].is_none() {
+                1.0
+            } else {
+                0.0
+            }
+    };
+    let best = with
+        .clone()
+        .max_by(|a, b| alone_first(a).total_cmp(&alone_first(b)));
+    let mut evidence = best.map_or(Vec::new(), |l| {
+        evidence::of(cause, l.theta, sample, profile)
+    });
     if cause == Cause::LabError && best.is_none() {
         evidence = vec![Evidence::speaks_for(
             "nu40",
@@ -316,7 +371,11 @@ fn name(
         strength: ln(likelihood / none).min(12.0),
         size: best.map(|l| l.theta.size),
         evidence,
-        oils: if cause.is_other_oil() { other_oils(with) } else { Vec::new() },
+        oils: if cause.is_other_oil() {
+            other_oils(with)
+        } else {
+            Vec::new()
+        },
     }
 }
 
@@ -332,7 +391,9 @@ fn other_oils<'l, 'g: 'l>(with: impl Iterator<Item = &'l Looked<'g>>) -> Vec<Oth
         };
         let weight = exp(l.log - top);
         total += weight;
-        let entry = all.entry((mixed.oil, mixed.says.clone())).or_insert((0.0, 0.0, 0.0));
+        let entry = all
+            .entry((mixed.oil, mixed.says.clone()))
+            .or_insert((0.0, 0.0, 0.0));
         entry.0 += weight;
         entry.1 += weight * (1.0 - l.theta.kept);
         entry.2 += weight;
@@ -346,14 +407,24 @@ fn other_oils<'l, 'g: 'l>(with: impl Iterator<Item = &'l Looked<'g>>) -> Vec<Oth
             likelihood: weight / total,
         })
         .collect();
-    oils.sort_by(|a, b| b.likelihood.total_cmp(&a.likelihood).then_with(|| a.says.cmp(&b.says)));
+    oils.sort_by(|a, b| {
+        b.likelihood
+            .total_cmp(&a.likelihood)
+            .then_with(|| a.says.cmp(&b.says))
+    });
     oils.truncate(3);
     oils
 }
 
 /// Readings that are missing and in which the named causes differ.
 fn would_tell(causes: &[Named], sample: &Sample, profile: &Profile) -> Vec<Reading> {
-    let has = |r: Reading| sample.others.iter().chain(&sample.additive).any(|s| s.reading == r);
+    let has = |r: Reading| {
+        sample
+            .others
+            .iter()
+            .chain(&sample.additive)
+            .any(|s| s.reading == r)
+    };
     let any = |list: &[Cause]| causes.iter().any(|n| list.contains(&n.cause));
     let other = causes.iter().any(|n| n.cause.is_other_oil());
     let mut missing = Vec::new();
@@ -363,12 +434,31 @@ fn would_tell(causes: &[Named], sample: &Sample, profile: &Profile) -> Vec<Readi
         }
     }
     let wanted = [
-        (Reading::Flash, any(&[Cause::Dilution, Cause::Cracking, Cause::LightEndLoss, Cause::Gas])),
+        (
+            Reading::Flash,
+            any(&[
+                Cause::Dilution,
+                Cause::Cracking,
+                Cause::LightEndLoss,
+                Cause::Gas,
+            ]),
+        ),
         (Reading::AcidNumber, any(&[Cause::Oxidation])),
         (Reading::Oxidation, any(&[Cause::Oxidation])),
-        (Reading::Zn, other && profile.figures.contains_key(&Reading::Zn)),
-        (Reading::P, other && profile.figures.contains_key(&Reading::P)),
+        (
+            Reading::Zn,
+            other && profile.figures.contains_key(&Reading::Zn),
+        ),
+        (
+            Reading::P,
+            other && profile.figures.contains_key(&Reading::P),
+        ),
     ];
-    missing.extend(wanted.into_iter().filter(|(r, w)| *w && !has(*r)).map(|(r, _)| r));
+    missing.extend(
+        wanted
+            .into_iter()
+            .filter(|(r, w)| *w && !has(*r))
+            .map(|(r, _)| r),
+    );
     missing
 }

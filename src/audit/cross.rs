@@ -56,7 +56,9 @@ pub fn rows(audit: &Audit, site: &Site) -> Vec<Row> {
             (Some(verdict), true) => format!(", {} as labelled", verdict.word()),
             (None, true) => ", oil unknown".to_owned(),
         };
-        rows[Whose::NotKnown as usize].open.push((name, format!("never sampled{as_labelled}")));
+        rows[Whose::NotKnown as usize]
+            .open
+            .push((name, format!("never sampled{as_labelled}")));
     }
     rows
 }
@@ -68,9 +70,15 @@ pub fn why_open(j: &Judged) -> String {
     } else if j.too_old {
         "sample too old".to_owned()
     } else if let Some(serves) = &j.serves {
-        serves.because.first().cloned().unwrap_or_else(|| "open".to_owned())
+        serves
+            .because
+            .first()
+            .cloned()
+            .unwrap_or_else(|| "open".to_owned())
     } else {
-        j.why_not_known.clone().unwrap_or_else(|| "no viscosity was measured".to_owned())
+        j.why_not_known
+            .clone()
+            .unwrap_or_else(|| "no viscosity was measured".to_owned())
     }
 }
 
@@ -80,15 +88,36 @@ pub fn answer(audit: &Audit, site: &Site) -> String {
     let failing: usize = rows.iter().map(|r| r.not.len()).sum();
     let serving: usize = rows.iter().map(|r| r.serves.len()).sum();
     let sampled = audit.units.len();
-    let other = rows[Whose::Another as usize].serves.len() + rows[Whose::Another as usize].not.len() + rows[Whose::Another as usize].open.len();
+    let other = rows[Whose::Another as usize].serves.len()
+        + rows[Whose::Another as usize].not.len()
+        + rows[Whose::Another as usize].open.len();
     if sampled == 0 {
         let n = audit.unsampled.len();
-        return format!("no fill was sampled; {n} {} judged as the label says", if n == 1 { "oil in use is" } else { "oils in use are" });
+        return format!(
+            "no fill was sampled; {n} {} judged as the label says",
+            if n == 1 {
+                "oil in use is"
+            } else {
+                "oils in use are"
+            }
+        );
     }
-    let fills = |n: usize| if n == 1 { "1 fill".to_owned() } else { format!("{n} fills") };
-    let mut says = format!("of {} sampled, {serving} serve and {failing} do not", fills(sampled));
+    let fills = |n: usize| {
+        if n == 1 {
+            "1 fill".to_owned()
+        } else {
+            format!("{n} fills")
+        }
+    };
+    let mut says = format!(
+        "of {} sampled, {serving} serve and {failing} do not",
+        fills(sampled)
+    );
     if other > 0 {
-        says.push_str(&format!("; {other} {} another oil than labelled", if other == 1 { "holds" } else { "hold" }));
+        says.push_str(&format!(
+            "; {other} {} another oil than labelled",
+            if other == 1 { "holds" } else { "hold" }
+        ));
     }
     says
 }

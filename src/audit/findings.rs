@@ -1,12 +1,12 @@
 //! What was found, in order of urgency, each with a proposal of what to do.
 
+use super::Audit;
 use super::causes::{Cause, Named};
 use super::judged::Judged;
 use super::limits::Level;
 use super::trend::Trend;
 use super::units::Unit;
 use super::whose::Whose;
-use super::Audit;
 use crate::judge::Verdict;
 use crate::quantity::show::{Toward, fixed, margin, significant};
 use crate::weighing::Scales;
@@ -56,20 +56,48 @@ fn of_unit(audit: &Audit, unit: &Unit, scales: &Scales<'_>) -> Vec<Finding> {
     };
     let j = &audit.judged[place];
     if j.twice {
-        return vec![plain(unit, place, "bottles-twice", Level::Watch, 60.0, "Two bottles of one day", 
-            format!("There are two bottles of {}. Which is right cannot be told, so neither is judged.", day(audit, j)),
-            "compare the bottles with the machine, or draw another sample")];
+        return vec![plain(
+            unit,
+            place,
+            "bottles-twice",
+            Level::Watch,
+            60.0,
+            "Two bottles of one day",
+            format!(
+                "There are two bottles of {}. Which is right cannot be told, so neither is judged.",
+                day(audit, j)
+            ),
+            "compare the bottles with the machine, or draw another sample",
+        )];
     }
     if audit.bottles[j.bottle].shifted {
-        return vec![plain(unit, place, "row-shifted", Level::Watch, 61.0, "Row not read",
-            "The cells of its row stand under other headings, so none of its figures is used.".to_owned(),
-            "mend the row of the laboratory's table and run the audit again")];
+        return vec![plain(
+            unit,
+            place,
+            "row-shifted",
+            Level::Watch,
+            61.0,
+            "Row not read",
+            "The cells of its row stand under other headings, so none of its figures is used."
+                .to_owned(),
+            "mend the row of the laboratory's table and run the audit again",
+        )];
     }
     if j.too_old {
         let days = j.age_days.unwrap_or(0);
-        return vec![plain(unit, place, "sample-old", Level::Watch, 62.0, "Sample too old",
-            format!("The last sample is of {}, {days} days ago, past the age the site allows. It says nothing of today.", day(audit, j)),
-            "draw a sample")];
+        return vec![plain(
+            unit,
+            place,
+            "sample-old",
+            Level::Watch,
+            62.0,
+            "Sample too old",
+            format!(
+                "The last sample is of {}, {days} days ago, past the age the site allows. It says nothing of today.",
+                day(audit, j)
+            ),
+            "draw a sample",
+        )];
     }
     let mut list = Vec::new();
     list.extend(service(audit, unit, place, scales));
@@ -123,7 +151,9 @@ fn label(j: &Judged, scales: &Scales<'_>) -> String {
 fn nu40(audit: &Audit, j: &Judged) -> String {
     use crate::model::sample::Reading;
     let figure = audit.bottles[j.bottle].figures.get(Reading::Nu40);
-    figure.map_or("not measured".to_owned(), |f| format!("{} mm2/s at 40 degC", f.written))
+    figure.map_or("not measured".to_owned(), |f| {
+        format!("{} mm2/s at 40 degC", f.written)
+    })
 }
 
 /// `needs at least 174 and at most 663 mm2/s at 40 degC`.
@@ -135,7 +165,11 @@ pub fn asks(j: &Judged) -> String {
     let down = |v: f64| significant(v, 3, Toward::Down);
     match (s.floor40, s.ceiling40) {
         (Some(f), Some(c)) if f > c => {
-            format!("at least {} and at most {} mm2/s: no value fits", up(f), down(c))
+            format!(
+                "at least {} and at most {} mm2/s: no value fits",
+                up(f),
+                down(c)
+            )
         }
         (Some(f), Some(c)) => format!("{} to {} mm2/s", up(f), down(c)),
         (Some(f), None) => format!("at least {} mm2/s", up(f)),
@@ -160,8 +194,14 @@ fn service(audit: &Audit, unit: &Unit, place: usize, scales: &Scales<'_>) -> Opt
                 Level::Act,
                 0.0,
                 "The labelled oil is barred here",
-                format!("The oil is {oil}{}; {oil} is barred on this machine: {}.", condition_words(j), by.join("; ")),
-                acts.first().copied().unwrap_or("choose another oil (filmwright weigh)"),
+                format!(
+                    "The oil is {oil}{}; {oil} is barred on this machine: {}.",
+                    condition_words(j),
+                    by.join("; ")
+                ),
+                acts.first()
+                    .copied()
+                    .unwrap_or("choose another oil (filmwright weigh)"),
             )
         });
     }
@@ -181,18 +221,58 @@ fn service(audit: &Audit, unit: &Unit, place: usize, scales: &Scales<'_>) -> Opt
                     "Right oil, wrong specification",
                     "change the specification, not only the oil (filmwright weigh)",
                 ),
-                (Whose::Another, _) => ("Another oil, and it does not serve", "drain and refill now, and find the source"),
-                (Whose::Changed, _) => ("Changed oil, and it does not serve", "change the oil now, and mend the cause"),
-                (Whose::NotKnown, _) => ("It does not serve", "take another sample at once and prepare an oil change"),
+                (Whose::Another, _) => (
+                    "Another oil, and it does not serve",
+                    "drain and refill now, and find the source",
+                ),
+                (Whose::Changed, _) => (
+                    "Changed oil, and it does not serve",
+                    "change the oil now, and mend the cause",
+                ),
+                (Whose::NotKnown, _) => (
+                    "It does not serve",
+                    "take another sample at once and prepare an oil change",
+                ),
             };
-            let first = if j.whose == Whose::AsLabelled { 20.0 } else { 0.0 };
-            Some(plain(unit, place, "does-not-serve", Level::Act, first + m, title,
-                format!("{found} under the label {oil}; the machine needs {need}. {}.", sentence(&why)), act))
+            let first = if j.whose == Whose::AsLabelled {
+                20.0
+            } else {
+                0.0
+            };
+            Some(plain(
+                unit,
+                place,
+                "does-not-serve",
+                Level::Act,
+                first + m,
+                title,
+                format!(
+                    "{found} under the label {oil}; the machine needs {need}. {}.",
+                    sentence(&why)
+                ),
+                act,
+            ))
         }
-        Verdict::Tight => Some(plain(unit, place, "tight", Level::Watch, 40.0, "Serves without the full reserve",
-            format!("{found}; the machine needs {need}. {}.", sentence(&why)), "sample again before the next season")),
-        Verdict::Open => Some(plain(unit, place, "open", Level::Watch, 50.0, "Whether it serves is open",
-            format!("{found}. {}.", sentence(&why)), "find the missing input (filmwright why names it)")),
+        Verdict::Tight => Some(plain(
+            unit,
+            place,
+            "tight",
+            Level::Watch,
+            40.0,
+            "Serves without the full reserve",
+            format!("{found}; the machine needs {need}. {}.", sentence(&why)),
+            "sample again before the next season",
+        )),
+        Verdict::Open => Some(plain(
+            unit,
+            place,
+            "open",
+            Level::Watch,
+            50.0,
+            "Whether it serves is open",
+            format!("{found}. {}.", sentence(&why)),
+            "find the missing input (filmwright why names it)",
+        )),
         Verdict::Holds => None,
     }
 }
@@ -208,7 +288,11 @@ fn condition_words(j: &Judged) -> &'static str {
 fn sentence(text: &str) -> String {
     let mut letters = text.chars();
     let first = letters.next().map(|c| c.to_uppercase().collect::<String>());
-    format!("{}{}", first.unwrap_or_default(), letters.as_str().trim_end_matches('.'))
+    format!(
+        "{}{}",
+        first.unwrap_or_default(),
+        letters.as_str().trim_end_matches('.')
+    )
 }
 
 /// Another oil, or the labelled one changed: what it is likely to be.
@@ -217,11 +301,21 @@ fn changed(audit: &Audit, unit: &Unit, place: usize, scales: &Scales<'_>) -> Opt
     let first = j.diagnosis.causes.first();
     let viscosity = j.against.iter().filter(|a| a.on.starts_with("viscosity"));
     let level = viscosity.map(|a| a.level).max().unwrap_or_default();
-    let named: Vec<&Named> = j.diagnosis.causes.iter().filter(|n| n.likelihood >= 0.5).collect();
+    let named: Vec<&Named> = j
+        .diagnosis
+        .causes
+        .iter()
+        .filter(|n| n.likelihood >= 0.5)
+        .collect();
     if first.is_none() && level == Level::Fine {
         return None;
     }
-    let urgent = named.iter().any(|n| matches!(n.cause, Cause::CopperAttack | Cause::CoolingWater | Cause::Cracking | Cause::Dilution));
+    let urgent = named.iter().any(|n| {
+        matches!(
+            n.cause,
+            Cause::CopperAttack | Cause::CoolingWater | Cause::Cracking | Cause::Dilution
+        )
+    });
     let level = match level {
         Level::Act => Level::Act,
         _ if urgent => Level::Act,
@@ -233,36 +327,74 @@ fn changed(audit: &Audit, unit: &Unit, place: usize, scales: &Scales<'_>) -> Opt
         None => "Changed, and no cause stands out".to_owned(),
     };
     let moved = match (j.change.nu40, j.change.nu100) {
-        (Some(a), Some(b)) => format!("{} at 40 degC, {} at 100 degC against new {}", share(a), share(b), label(j, scales)),
-        (Some(a), None) => format!("{} at 40 degC against new {}; 100 degC was not measured", share(a), label(j, scales)),
-        (None, Some(b)) => format!("{} at 100 degC against new {}; 40 degC was not measured", share(b), label(j, scales)),
+        (Some(a), Some(b)) => format!(
+            "{} at 40 degC, {} at 100 degC against new {}",
+            share(a),
+            share(b),
+            label(j, scales)
+        ),
+        (Some(a), None) => format!(
+            "{} at 40 degC against new {}; 100 degC was not measured",
+            share(a),
+            label(j, scales)
+        ),
+        (None, Some(b)) => format!(
+            "{} at 100 degC against new {}; 40 degC was not measured",
+            share(b),
+            label(j, scales)
+        ),
         (None, None) => "no viscosity was measured".to_owned(),
     };
     let mut text = format!("{}.", sentence(&moved));
     if j.diagnosis.undecided {
-        let names: Vec<String> = j.diagnosis.causes.iter().map(|n| n.cause.says().to_owned()).collect();
+        let names: Vec<String> = j
+            .diagnosis
+            .causes
+            .iter()
+            .map(|n| n.cause.says().to_owned())
+            .collect();
         text.push_str(&format!(" Not decided between {}.", names.join(", ")));
     }
     if let Some(oils) = first.map(|n| &n.oils).filter(|o| !o.is_empty()) {
-        let listed: Vec<String> = oils.iter().map(|o| format!("{} (about {} %)", o.says, fixed(100.0 * o.share, 0, Toward::Nearest))).collect();
+        let listed: Vec<String> = oils
+            .iter()
+            .map(|o| {
+                format!(
+                    "{} (about {} %)",
+                    o.says,
+                    fixed(100.0 * o.share, 0, Toward::Nearest)
+                )
+            })
+            .collect();
         text.push_str(&format!(" Likely mixed in: {}.", listed.join("; ")));
     }
     if !j.diagnosis.would_tell.is_empty() {
         let names: Vec<&str> = j.diagnosis.would_tell.iter().map(|r| r.says()).collect();
-        text.push_str(&format!(" Not measured, and would tell: {}.", names.join(", ")));
+        text.push_str(&format!(
+            " Not measured, and would tell: {}.",
+            names.join(", ")
+        ));
     }
     let act = match first {
-        Some(_) if j.diagnosis.undecided => "have the missing figures measured, or send the sample for infrared against new oil",
+        Some(_) if j.diagnosis.undecided => {
+            "have the missing figures measured, or send the sample for infrared against new oil"
+        }
         Some(n) => n.cause.act(),
         None => "sample again, with acid number, flash point and elements",
     };
     let urgency = if level == Level::Act { 10.0 } else { 30.0 };
-    Some(plain(unit, place, "changed", level, urgency, &title, text, act))
+    Some(plain(
+        unit, place, "changed", level, urgency, &title, text, act,
+    ))
 }
 
 fn share(x: f64) -> String {
     let text = fixed(100.0 * x, 1, Toward::Nearest);
-    if x > 0.0 && text != "0.0" { format!("+{text} %") } else { format!("{text} %") }
+    if x > 0.0 && text != "0.0" {
+        format!("+{text} %")
+    } else {
+        format!("{text} %")
+    }
 }
 
 /// Water, acids, cleanliness and the other figures against their limits.
@@ -276,15 +408,36 @@ fn condition(audit: &Audit, unit: &Unit, place: usize) -> Vec<Finding> {
         .collect();
     if let Some(level) = over.iter().map(|a| a.level).max() {
         let says: Vec<String> = over.iter().map(|a| limit_words(a)).collect();
-        let water_named = j.diagnosis.causes.iter().any(|n| matches!(n.cause, Cause::Water | Cause::CoolingWater));
-        let act = if water_named { Cause::Water.act() } else { "sample again soon; plan the oil change where it is confirmed" };
-        list.push(plain(unit, place, "over-limit", level, 15.0, "Figures over their limits", format!("{}.", sentence(&says.join("; "))), act));
+        let water_named = j
+            .diagnosis
+            .causes
+            .iter()
+            .any(|n| matches!(n.cause, Cause::Water | Cause::CoolingWater));
+        let act = if water_named {
+            Cause::Water.act()
+        } else {
+            "sample again soon; plan the oil change where it is confirmed"
+        };
+        list.push(plain(
+            unit,
+            place,
+            "over-limit",
+            level,
+            15.0,
+            "Figures over their limits",
+            format!("{}.", sentence(&says.join("; "))),
+            act,
+        ));
     }
     if let Some(clean) = j.clean.as_ref().filter(|c| c.level > Level::Fine)
         && let Some((target, part, _)) = &clean.target
     {
         let over = clean.over.unwrap_or(0);
-        let counted = if clean.from_counts { ", from counts" } else { "" };
+        let counted = if clean.from_counts {
+            ", from counts"
+        } else {
+            ""
+        };
         list.push(plain(unit, place, "cleanliness", clean.level, 25.0, "Dirtier than its strictest part asks",
             format!("Cleanliness {}{counted} against {target} ({part}): {over} codes over, each of which doubles the particles.", clean.code),
             &format!("filter to {target}; no oil change for that")));
@@ -293,20 +446,33 @@ fn condition(audit: &Audit, unit: &Unit, place: usize) -> Vec<Finding> {
 }
 
 fn limit_words(a: &super::readings::Against) -> String {
-    format!("{}: {} (rule {}, {})", a.says, a.level.word(), a.limit.rule, a.limit.source)
+    format!(
+        "{}: {} (rule {}, {})",
+        a.says,
+        a.level.word(),
+        a.limit.rule,
+        a.limit.source
+    )
 }
 
 /// The trend in a sentence.
 pub fn trend_words(trend: &Trend) -> String {
     match trend {
         Trend::TooFew { samples } => format!("{samples} of this fill: too few to say"),
-        Trend::Level { samples, .. } => format!("{samples} samples of this fill, no movement beyond the scatter of the test"),
+        Trend::Level { samples, .. } => {
+            format!("{samples} samples of this fill, no movement beyond the scatter of the test")
+        }
         Trend::Moves(m) => {
             let per_year = fixed(m.slope, 1, Toward::Nearest);
             let half = fixed(m.slope_half, 1, Toward::Up);
-            let mut says = format!("{per_year} mm2/s a year (+/- {half}, 95 %) over {} samples", m.samples);
+            let mut says = format!(
+                "{per_year} mm2/s a year (+/- {half}, 95 %) over {} samples",
+                m.samples
+            );
             if let Some(r) = &m.reaches {
-                let end = |d: Option<jiff::civil::Date>| d.map_or("not within a hundred years".to_owned(), |d| d.to_string());
+                let end = |d: Option<jiff::civil::Date>| {
+                    d.map_or("not within a hundred years".to_owned(), |d| d.to_string())
+                };
                 says.push_str(&format!(
                     "; reaches the {} of {} mm2/s about {} (between {} and {})",
                     r.limit,
@@ -325,9 +491,21 @@ fn trend(unit: &Unit, place: usize) -> Option<Finding> {
     let Trend::Moves(m) = &unit.trend else {
         return None;
     };
-    let title = if m.slope < 0.0 { "Thinning" } else { "Thickening" };
-    Some(plain(unit, place, "trend", Level::Watch, 35.0, title, format!("{}.", sentence(&trend_words(&unit.trend))),
-        "sample again in a quarter; plan the oil change before the earlier date"))
+    let title = if m.slope < 0.0 {
+        "Thinning"
+    } else {
+        "Thickening"
+    };
+    Some(plain(
+        unit,
+        place,
+        "trend",
+        Level::Watch,
+        35.0,
+        title,
+        format!("{}.", sentence(&trend_words(&unit.trend))),
+        "sample again in a quarter; plan the oil change before the earlier date",
+    ))
 }
 
 fn metals(unit: &Unit, place: usize) -> Option<Finding> {
@@ -335,19 +513,31 @@ fn metals(unit: &Unit, place: usize) -> Option<Finding> {
     let says: Vec<&str> = unit.rises.iter().map(|r| r.says.as_str()).collect();
     let urgent = unit.rises.iter().any(|r| r.urgent);
     let level = if urgent { Level::Act } else { Level::Watch };
-    Some(plain(unit, place, "metals", level, 33.0, &format!("{} rises", sentence(first.element.says())),
+    Some(plain(
+        unit,
+        place,
+        "metals",
+        level,
+        33.0,
+        &format!("{} rises", sentence(first.element.says())),
         format!("{}.", sentence(&says.join("; "))),
-        "look at the parts named; halve the sampling interval"))
+        "look at the parts named; halve the sampling interval",
+    ))
 }
 
 fn unsampled(audit: &Audit, scales: &Scales<'_>) -> Vec<Finding> {
     let mut list = Vec::new();
     for u in &audit.unsampled {
         let name = scales.site.points[u.point].address();
-        let oil = u.oil.map_or("an unknown oil".to_owned(), |o| scales.site.oils[o].id.clone());
+        let oil = u.oil.map_or("an unknown oil".to_owned(), |o| {
+            scales.site.oils[o].id.clone()
+        });
         let found = if u.barred.is_empty() {
             (u.verdict == Some(Verdict::Fails)).then(|| {
-                ("As labelled it does not serve", u.because.first().cloned().unwrap_or_default())
+                (
+                    "As labelled it does not serve",
+                    u.because.first().cloned().unwrap_or_default(),
+                )
             })
         } else {
             let by: Vec<&str> = u.barred.iter().map(|c| c.says.as_str()).collect();
@@ -361,7 +551,10 @@ fn unsampled(audit: &Audit, scales: &Scales<'_>) -> Vec<Finding> {
             level: Level::Act,
             machines: vec![name],
             title: format!("{title}, not sampled"),
-            text: format!("No sample; judged as the label says ({oil}). {}.", sentence(&why)),
+            text: format!(
+                "No sample; judged as the label says ({oil}). {}.",
+                sentence(&why)
+            ),
             act: "change the specification (filmwright weigh), and draw a sample".to_owned(),
             judged: None,
             urgency: 28.0,
@@ -372,13 +565,29 @@ fn unsampled(audit: &Audit, scales: &Scales<'_>) -> Vec<Finding> {
 
 fn unmatched(audit: &Audit, u: &super::Unmatched) -> Finding {
     let b = &audit.bottles[u.bottle];
-    let name = if b.machine.is_empty() { b.name() } else { b.machine.clone() };
+    let name = if b.machine.is_empty() {
+        b.name()
+    } else {
+        b.machine.clone()
+    };
     let judged = audit.judged.iter().position(|j| j.bottle == u.bottle);
     let causes = judged.map_or(String::new(), |p| {
-        let named: Vec<&str> = audit.judged[p].diagnosis.causes.iter().map(|n| n.cause.says()).collect();
-        if named.is_empty() { String::new() } else { format!(" Against its label: {}.", named.join(", ")) }
+        let named: Vec<&str> = audit.judged[p]
+            .diagnosis
+            .causes
+            .iter()
+            .map(|n| n.cause.says())
+            .collect();
+        if named.is_empty() {
+            String::new()
+        } else {
+            format!(" Against its label: {}.", named.join(", "))
+        }
     });
-    let meant = u.meant.as_ref().map_or(String::new(), |m| format!(" {m} may be meant."));
+    let meant = u
+        .meant
+        .as_ref()
+        .map_or(String::new(), |m| format!(" {m} may be meant."));
     Finding {
         kind: "unmatched",
         level: Level::Watch,

@@ -170,7 +170,10 @@ impl<'s, 'a> Auditor<'s, 'a> {
         let mut fresh: Vec<&Bottle> = new_oil.iter().map(|i| &bottles[*i]).collect();
         fresh.sort_by_key(|b| (b.drawn, b.place.row));
         for bottle in fresh {
-            let label = bottle.label.as_deref().and_then(|l| find_oil(&oils, site, l));
+            let label = bottle
+                .label
+                .as_deref()
+                .and_then(|l| find_oil(&oils, site, l));
             if let Some(oil) = label {
                 let from = From::NewOil(bottle.place.row);
                 profiles[oil] = profiles[oil].clone().with(&bottle.figures, from, &scatter);
@@ -204,7 +207,9 @@ impl<'s, 'a> Auditor<'s, 'a> {
     }
 
     fn label(&self, bottle: &Bottle, point: Option<&Point>) -> Label {
-        let holds = point.and_then(oil_in_use).and_then(|id| find_oil(&self.oils, self.scales.site, id));
+        let holds = point
+            .and_then(oil_in_use)
+            .and_then(|id| find_oil(&self.oils, self.scales.site, id));
         match &bottle.label {
             Some(written) => {
                 let oil = find_oil(&self.oils, self.scales.site, written);
@@ -235,7 +240,10 @@ impl<'s, 'a> Auditor<'s, 'a> {
             if b.new.is_empty() {
                 std::borrow::Cow::Borrowed(&self.profiles[oil])
             } else {
-                let beside = self.profiles[oil].clone().with(&b.new, From::Beside, self.causes.scatter());
+                let beside =
+                    self.profiles[oil]
+                        .clone()
+                        .with(&b.new, From::Beside, self.causes.scatter());
                 std::borrow::Cow::Owned(beside)
             }
         });
@@ -253,17 +261,30 @@ impl<'s, 'a> Auditor<'s, 'a> {
         let diagnosis = if b.shifted {
             Diagnosis::default()
         } else {
-            self.causes.weigh(&b.figures, weighed_with, pair.setting, &around)
+            self.causes
+                .weigh(&b.figures, weighed_with, pair.setting, &around)
         };
         let (whose, why_not_known) = match (profile, &label) {
             _ if b.shifted => (Whose::NotKnown, Some("the row was not read".to_owned())),
             (Some(_), _) => whose::of(&diagnosis, moved),
-            (None, Label { written: Some(w), .. }) => {
-                (Whose::NotKnown, Some(format!("the label \"{w}\" is not in the oil list")))
-            }
-            (None, _) => (Whose::NotKnown, Some("nobody knows the oil in use".to_owned())),
+            (
+                None,
+                Label {
+                    written: Some(w), ..
+                },
+            ) => (
+                Whose::NotKnown,
+                Some(format!("the label \"{w}\" is not in the oil list")),
+            ),
+            (None, _) => (
+                Whose::NotKnown,
+                Some("nobody knows the oil in use".to_owned()),
+            ),
         };
-        let age_days = b.drawn.and_then(|d| d.until(self.on).ok()).map(|s| s.get_days());
+        let age_days = b
+            .drawn
+            .and_then(|d| d.until(self.on).ok())
+            .map(|s| s.get_days());
         let oldest = site.house.sample_age.value.base() / 86_400.0;
         Judged {
             bottle,
@@ -285,7 +306,12 @@ impl<'s, 'a> Auditor<'s, 'a> {
         }
     }
 
-    fn around(&self, pair: &Pair<'_>, oil: Option<usize>, clean: Option<&Clean>) -> Around<'static> {
+    fn around(
+        &self,
+        pair: &Pair<'_>,
+        oil: Option<usize>,
+        clean: Option<&Clean>,
+    ) -> Around<'static> {
         let watch = |on: On| pair.limits.high(on).and_then(|l| l.watch.or(l.act));
         Around {
             water_watch: watch(On::Water).or(Some(GENERAL_WATER_PPM)),
@@ -341,9 +367,20 @@ impl<'s, 'a> Auditor<'s, 'a> {
         };
         let card = scales.suitability.point(&place);
         let oil_card = oil.map(|o| scales.suitability.oil(&scales.facts[o]));
-        let limits = Limits::of(scales.rules, &scales.suitability, &card, oil_card.as_ref(), at);
-        let low = limits.low(On::ViscosityChange40).or(limits.low(On::ViscosityChange100));
-        let allowed = low.and_then(|l| l.act).unwrap_or(PLAUSIBLE_LOSS_MILD).min(0.5);
+        let limits = Limits::of(
+            scales.rules,
+            &scales.suitability,
+            &card,
+            oil_card.as_ref(),
+            at,
+        );
+        let low = limits
+            .low(On::ViscosityChange40)
+            .or(limits.low(On::ViscosityChange100));
+        let allowed = low
+            .and_then(|l| l.act)
+            .unwrap_or(PLAUSIBLE_LOSS_MILD)
+            .min(0.5);
         let barred = weighed.as_ref().map_or(Vec::new(), |w| {
             w.barred.iter().flat_map(|b| b.by.iter().cloned()).collect()
         });
@@ -389,10 +426,18 @@ impl<'s, 'a> Auditor<'s, 'a> {
 const GENERAL_WATER_PPM: f64 = 500.0;
 
 /// An oil by its id, whatever the case.
-fn find_oil(oils: &BTreeMap<String, usize>, site: &crate::model::Site, written: &str) -> Option<usize> {
+fn find_oil(
+    oils: &BTreeMap<String, usize>,
+    site: &crate::model::Site,
+    written: &str,
+) -> Option<usize> {
     let written = written.trim();
     oils.get(&written.to_lowercase()).copied().or_else(|| {
-        let named = |o: &Oil| o.name.as_deref().is_some_and(|n| n.trim().eq_ignore_ascii_case(written));
+        let named = |o: &Oil| {
+            o.name
+                .as_deref()
+                .is_some_and(|n| n.trim().eq_ignore_ascii_case(written))
+        };
         site.oils.iter().position(named)
     })
 }
@@ -400,8 +445,10 @@ fn find_oil(oils: &BTreeMap<String, usize>, site: &crate::model::Site, written: 
 /// What of the machine and the oil makes a cause more or less to be expected.
 fn setting(point: Option<&Point>, oil: Option<&Oil>) -> Setting {
     use crate::model::PartKind;
-    let is = |f: &dyn Fn(&PartKind) -> bool| point.is_some_and(|p| p.parts.iter().any(|x| f(&x.kind)));
-    let component = |name: &str| is(&|k| matches!(k, PartKind::Component(c) if c.id.contains(name)));
+    let is =
+        |f: &dyn Fn(&PartKind) -> bool| point.is_some_and(|p| p.parts.iter().any(|x| f(&x.kind)));
+    let component =
+        |name: &str| is(&|k| matches!(k, PartKind::Component(c) if c.id.contains(name)));
     Setting {
         engine: is(&|k| matches!(k, PartKind::Engine(_)))
             || component("engine")
@@ -413,7 +460,10 @@ fn setting(point: Option<&Point>, oil: Option<&Oil>) -> Setting {
 
 fn clean(bottle: &Bottle, limits: &Limits) -> Option<Clean> {
     let (code, from_counts) = bottle.cleanliness?;
-    let over = limits.cleanliness.as_ref().and_then(|(target, ..)| code.over(*target));
+    let over = limits
+        .cleanliness
+        .as_ref()
+        .and_then(|(target, ..)| code.over(*target));
     let level = match over {
         Some(over) if over >= ACT_CODES => Level::Act,
         Some(over) if over > 0 => Level::Watch,
@@ -450,7 +500,9 @@ pub(super) fn tell_labels(judged: &[Judged], bottles: &[Bottle], problems: &mut 
         )
         .within(format!("row {}, {}", b.place.row, b.machine))
         .so("its samples are compared with no new oil")
-        .write(Write::words("the id of the oil as in oils.yaml, or a record of it there"));
+        .write(Write::words(
+            "the id of the oil as in oils.yaml, or a record of it there",
+        ));
         problems.push(problem);
     }
 }

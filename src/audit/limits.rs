@@ -173,7 +173,10 @@ impl Limits {
                 if on != On::OxidationStabilityShare {
                     self.high.insert(on.word(), levels.clone());
                 }
-                if matches!(on, On::ViscosityChange40 | On::ViscosityChange100 | On::OxidationStabilityShare) {
+                if matches!(
+                    on,
+                    On::ViscosityChange40 | On::ViscosityChange100 | On::OxidationStabilityShare
+                ) {
                     self.low.insert(on.word(), levels.clone());
                 }
             }
@@ -209,9 +212,16 @@ fn share_left(on: On) -> bool {
 
 /// What the site file says of the machine itself.
 fn stated_cleanliness(point: &Point) -> Option<(Code, String, String)> {
-    let own = point.inputs.iter().find(|i| i.key == "cleanliness" && i.about.is_none());
+    let own = point
+        .inputs
+        .iter()
+        .find(|i| i.key == "cleanliness" && i.about.is_none());
     let own = own.or_else(|| point.inputs.iter().find(|i| i.key == "cleanliness"))?;
-    Some((Code::read(&own.written)?, "stated for the machine".to_owned(), own.origin.words()))
+    Some((
+        Code::read(&own.written)?,
+        "stated for the machine".to_owned(),
+        own.origin.words(),
+    ))
 }
 
 /// The strictest target of the parts, by their pressure; what is commonly reached where a rule

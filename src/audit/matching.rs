@@ -22,7 +22,15 @@ pub enum Match {
 }
 
 /// Words for a sample of new oil in the place of a machine.
-const NEW: &[&str] = &["new oil", "new", "drum", "fresh oil", "unused", "reference", "baseline"];
+const NEW: &[&str] = &[
+    "new oil",
+    "new",
+    "drum",
+    "fresh oil",
+    "unused",
+    "reference",
+    "baseline",
+];
 
 /// What names are looked up in.
 pub struct Matcher<'s> {
@@ -32,7 +40,10 @@ pub struct Matcher<'s> {
 }
 
 fn key(name: &str) -> String {
-    name.split_whitespace().collect::<Vec<_>>().join(" ").to_lowercase()
+    name.split_whitespace()
+        .collect::<Vec<_>>()
+        .join(" ")
+        .to_lowercase()
 }
 
 impl<'s> Matcher<'s> {
@@ -47,8 +58,9 @@ impl<'s> Matcher<'s> {
             }
         }
         let maps = site.samples.iter().flat_map(|m| &m.aliases);
-        let mut aliases: BTreeMap<String, String> =
-            maps.map(|(name, to)| (key(name), to.value.clone())).collect();
+        let mut aliases: BTreeMap<String, String> = maps
+            .map(|(name, to)| (key(name), to.value.clone()))
+            .collect();
         aliases.extend(more.iter().map(|(name, to)| (key(name), to.clone())));
         Self {
             site,
@@ -66,7 +78,10 @@ impl<'s> Matcher<'s> {
                 why: "no machine on the bottle".to_owned(),
             };
         }
-        let name = self.aliases.get(&key(written)).map_or(written, String::as_str);
+        let name = self
+            .aliases
+            .get(&key(written))
+            .map_or(written, String::as_str);
         if NEW.contains(&key(name).as_str()) {
             return Match::NewOil;
         }
@@ -76,7 +91,11 @@ impl<'s> Matcher<'s> {
                 meant: None,
                 why: format!(
                     "{name} has several points: {}",
-                    several.iter().map(|i| self.site.points[*i].address()).collect::<Vec<_>>().join(", ")
+                    several
+                        .iter()
+                        .map(|i| self.site.points[*i].address())
+                        .collect::<Vec<_>>()
+                        .join(", ")
                 ),
             },
             None => Match::None {
@@ -105,7 +124,11 @@ impl<'s> Matcher<'s> {
                 shared > 0 && shared * 2 >= words.len()
             })
         })
-        .or_else(|| one_of(&addresses, |_, a| strsim::jaro_winkler(&key(name), &key(a)) > 0.9))
+        .or_else(|| {
+            one_of(&addresses, |_, a| {
+                strsim::jaro_winkler(&key(name), &key(a)) > 0.9
+            })
+        })
     }
 }
 
@@ -118,11 +141,16 @@ fn one_of(addresses: &[String], fits: impl Fn(usize, &str) -> bool) -> Option<St
 
 fn figures(text: &str) -> Vec<String> {
     let parts = text.split(|c: char| !c.is_ascii_digit());
-    let bare = parts.filter(|p| !p.is_empty()).map(|p| p.trim_start_matches('0'));
+    let bare = parts
+        .filter(|p| !p.is_empty())
+        .map(|p| p.trim_start_matches('0'));
     bare.filter(|p| !p.is_empty()).map(str::to_owned).collect()
 }
 
 fn words(text: &str) -> Vec<String> {
     let letters = text.split(|c: char| !c.is_alphabetic());
-    letters.filter(|w| w.chars().count() > 3).map(str::to_lowercase).collect()
+    letters
+        .filter(|w| w.chars().count() > 3)
+        .map(str::to_lowercase)
+        .collect()
 }

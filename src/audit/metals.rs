@@ -49,7 +49,9 @@ pub(super) fn rises(
 ) -> Vec<Rise> {
     let rose = |element: Reading| {
         let (from, to) = (before.exact(element)?, after.exact(element)?);
-        let scatter = scatter.sigma(element, from).hypot(scatter.sigma(element, to));
+        let scatter = scatter
+            .sigma(element, from)
+            .hypot(scatter.sigma(element, to));
         (to - from > 3.0 * scatter && to > 1.5 * from).then_some((element, from, to))
     };
     let all: Vec<_> = WEAR.into_iter().filter_map(rose).collect();
@@ -71,7 +73,10 @@ pub(super) fn rises(
 }
 
 fn sign_of(rules: &Rulebook, element: Reading) -> Option<&WearSign> {
-    rules.wear.iter().find(|s| s.elements.iter().any(|e| e == element.key()))
+    rules
+        .wear
+        .iter()
+        .find(|s| s.elements.iter().any(|e| e == element.key()))
 }
 
 fn says(
@@ -91,7 +96,9 @@ fn says(
         says.push_str(&format!(": from {}", sign.from));
         for (with, adds) in &sign.with {
             let companions: Vec<&str> = with.split(',').map(str::trim).collect();
-            let there = companions.iter().any(|c| risen.iter().any(|r| r.key() == *c));
+            let there = companions
+                .iter()
+                .any(|c| risen.iter().any(|r| r.key() == *c));
             if there {
                 says.push_str(&format!("; with {with} {adds}"));
             }

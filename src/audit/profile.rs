@@ -13,8 +13,8 @@ use crate::model::rulebook::Rulebook;
 use crate::model::sample::Reading;
 use crate::numeric::math::ln;
 use crate::oil::Curves;
-use crate::quantity::convert::{celsius, to_celsius, to_mm2_s};
 use crate::quantity::Measure;
+use crate::quantity::convert::{celsius, to_celsius, to_mm2_s};
 use crate::relation::oil::base_stock::BaseStock;
 use crate::relation::oil::viscosity_index;
 use crate::suitability::{Suitability, Truth};
@@ -147,13 +147,21 @@ impl Profile {
                 }
                 Reading::Nu40 | Reading::Nu100 | Reading::HoursOnOil | Reading::HoursOnMachine => {}
                 _ => {
-                    let value = if below { 0.5 * figure.value } else { figure.value };
+                    let value = if below {
+                        0.5 * figure.value
+                    } else {
+                        figure.value
+                    };
                     let spread = scatter.sigma(reading, figure.value).max(if below {
                         0.3 * figure.value
                     } else {
                         0.0
                     });
-                    let expected = Expected { value, spread, from };
+                    let expected = Expected {
+                        value,
+                        spread,
+                        from,
+                    };
                     self.figures.insert(reading, expected);
                 }
             }

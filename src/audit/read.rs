@@ -88,11 +88,25 @@ impl TableReader<'_> {
             match (what, how) {
                 (Column::InUse(reading), Some(how)) => {
                     let read = cell::read(content, *how, *column);
-                    self.figure(read, *reading, *column, content, &mut bottle.figures, &mut misfits);
+                    self.figure(
+                        read,
+                        *reading,
+                        *column,
+                        content,
+                        &mut bottle.figures,
+                        &mut misfits,
+                    );
                 }
                 (Column::New(reading), Some(how)) => {
                     let read = cell::read(content, *how, *column);
-                    self.figure(read, *reading, *column, content, &mut bottle.new, &mut misfits);
+                    self.figure(
+                        read,
+                        *reading,
+                        *column,
+                        content,
+                        &mut bottle.new,
+                        &mut misfits,
+                    );
                 }
                 _ => self.text(*what, *column, content, &mut bottle, &mut misfits),
             }
@@ -101,7 +115,8 @@ impl TableReader<'_> {
         let beyond = row.cells.iter().find(|c| c.column > self.headings.last);
         let elsewhere = misfits.iter().filter(|m| m.elsewhere).count();
         if beyond.is_some() || elsewhere >= 2 {
-            let column = beyond.map_or_else(|| misfits.first().map_or(1, |m| m.column), |c| c.column);
+            let column =
+                beyond.map_or_else(|| misfits.first().map_or(1, |m| m.column), |c| c.column);
             self.shifted(row, column, beyond.is_some(), &mut bottle);
             return Some(bottle);
         }
@@ -127,7 +142,11 @@ impl TableReader<'_> {
     }
 
     fn empty(&self, row: &Row) -> Bottle {
-        let machine = self.headings.columns.iter().find(|(_, c, _)| *c == Column::Machine);
+        let machine = self
+            .headings
+            .columns
+            .iter()
+            .find(|(_, c, _)| *c == Column::Machine);
         Bottle {
             number: None,
             machine: String::new(),
@@ -168,17 +187,29 @@ impl TableReader<'_> {
                 return;
             }
             Read::Placeholder => (
-                problem(Code::CellPlaceholder, format!("{written} for {} stands for nothing in many tables", reading.says()))
-                    .so("taken as not known")
-                    .ask("the laboratory whether it was measured"),
+                problem(
+                    Code::CellPlaceholder,
+                    format!(
+                        "{written} for {} stands for nothing in many tables",
+                        reading.says()
+                    ),
+                )
+                .so("taken as not known")
+                .ask("the laboratory whether it was measured"),
                 false,
             ),
             Read::OtherDecimal => {
-                let (sign, other) = if comma { ("point", "decimal: point") } else { ("comma", "decimal: comma") };
+                let (sign, other) = if comma {
+                    ("point", "decimal: point")
+                } else {
+                    ("comma", "decimal: comma")
+                };
                 (
                     problem(Code::CellUnread, format!("{written} has a decimal {sign}"))
                         .so("taken as not known")
-                        .write(Write::words(format!("{other} in the samples file, if the whole table is written so"))),
+                        .write(Write::words(format!(
+                            "{other} in the samples file, if the whole table is written so"
+                        ))),
                     false,
                 )
             }
@@ -186,32 +217,49 @@ impl TableReader<'_> {
                 let units = reading.kind().spec().units.iter();
                 let listed: Vec<&str> = units.map(|u| u.name).filter(|n| !n.is_empty()).collect();
                 (
-                    problem(Code::CellUnread, format!("{} is not given in \"{unit}\"", reading.says()))
-                        .so("taken as not known")
-                        .why(format!("units understood: {}", listed.join(", "))),
+                    problem(
+                        Code::CellUnread,
+                        format!("{} is not given in \"{unit}\"", reading.says()),
+                    )
+                    .so("taken as not known")
+                    .why(format!("units understood: {}", listed.join(", "))),
                     listed.is_empty(),
                 )
             }
             Read::Impossible => (
-                problem(Code::CellUnread, format!("{written} is no {} an oil can have", reading.says()))
-                    .so("taken as not known")
-                    .ask("the laboratory for the figure and its unit"),
+                problem(
+                    Code::CellUnread,
+                    format!("{written} is no {} an oil can have", reading.says()),
+                )
+                .so("taken as not known")
+                .ask("the laboratory for the figure and its unit"),
                 true,
             ),
             Read::NoValue => (
-                problem(Code::CellWithoutValue, format!("the formula {written} has no value stored"))
-                    .so("taken as not known")
-                    .write(Write::words("open the table in a spreadsheet program and save it, or put the value in")),
+                problem(
+                    Code::CellWithoutValue,
+                    format!("the formula {written} has no value stored"),
+                )
+                .so("taken as not known")
+                .write(Write::words(
+                    "open the table in a spreadsheet program and save it, or put the value in",
+                )),
                 false,
             ),
             Read::IsDate => (
-                problem(Code::CellUnread, format!("{written} is a date where {} belongs", reading.says()))
-                    .so("taken as not known"),
+                problem(
+                    Code::CellUnread,
+                    format!("{written} is a date where {} belongs", reading.says()),
+                )
+                .so("taken as not known"),
                 true,
             ),
             Read::NotUnderstood => (
-                problem(Code::CellUnread, format!("\"{written}\" is not understood as {}", reading.says()))
-                    .so("taken as not known and kept as a remark"),
+                problem(
+                    Code::CellUnread,
+                    format!("\"{written}\" is not understood as {}", reading.says()),
+                )
+                .so("taken as not known and kept as a remark"),
                 true,
             ),
         };
@@ -303,11 +351,15 @@ impl TableReader<'_> {
                 )
                 .so("the day is not known; dates that fit both orders are read as stated");
                 problem = if order.is_none() {
-                    problem.write(Write::words("dates: day-month-year in the samples file, or month-day-year"))
-                } else {
-                    problem.why("one table holds dates of two orders").write(Write::words(
-                        "one order in the whole table, best year-month-day",
+                    problem.write(Write::words(
+                        "dates: day-month-year in the samples file, or month-day-year",
                     ))
+                } else {
+                    problem
+                        .why("one table holds dates of two orders")
+                        .write(Write::words(
+                            "one order in the whole table, best year-month-day",
+                        ))
                 };
                 (problem, false)
             }
@@ -363,29 +415,43 @@ impl TableReader<'_> {
         .within(self.within(bottle))
         .why(why)
         .so("the row is listed, none of its figures is used")
-        .write(Write::words("quotation marks round a cell that holds the delimiter, or the missing cell"));
+        .write(Write::words(
+            "quotation marks round a cell that holds the delimiter, or the missing cell",
+        ));
         self.problems.push(problem);
     }
 
     /// Both viscosities exchanged in most rows: two columns under each other's heading.
     fn exchanged(&mut self, bottles: &[Bottle]) {
         let pairs = bottles.iter().filter_map(|b| {
-            let both = (b.figures.exact(Reading::Nu40)?, b.figures.exact(Reading::Nu100)?);
+            let both = (
+                b.figures.exact(Reading::Nu40)?,
+                b.figures.exact(Reading::Nu100)?,
+            );
             Some((b, both))
         });
         let all: Vec<_> = pairs.collect();
-        let wrong: Vec<_> = all.iter().filter(|(_, (nu40, nu100))| nu100 >= nu40).collect();
+        let wrong: Vec<_> = all
+            .iter()
+            .filter(|(_, (nu40, nu100))| nu100 >= nu40)
+            .collect();
         if wrong.len() < 2 || wrong.len() * 2 < all.len() {
             return;
         }
         let first = wrong[0].0;
         let mut problem = Problem::new(
             Code::CurveUpsideDown,
-            format!("viscosity rises with temperature in {} of {} rows", wrong.len(), all.len()),
+            format!(
+                "viscosity rises with temperature in {} of {} rows",
+                wrong.len(),
+                all.len()
+            ),
             self.about.at(first.place.row, first.place.column),
         )
         .why("the columns of 40 and 100 degC look exchanged")
-        .write(Write::words("nu40 and nu100 the other way round in `columns`"));
+        .write(Write::words(
+            "nu40 and nu100 the other way round in `columns`",
+        ));
         problem.severity = Severity::Warning;
         self.problems.push(problem);
     }

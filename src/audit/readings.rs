@@ -49,7 +49,11 @@ impl Change {
 
 fn signed(share: f64) -> String {
     let text = fixed(100.0 * share, 1, Toward::Nearest);
-    if share > 0.0 && text != "0.0" { format!("+{text} %") } else { format!("{text} %") }
+    if share > 0.0 && text != "0.0" {
+        format!("+{text} %")
+    } else {
+        format!("{text} %")
+    }
 }
 
 /// The movement of the viscosity against the practice limits of its class; `None` where neither
@@ -66,7 +70,11 @@ pub(super) fn viscosity(change: &Change, limits: &Limits) -> (Option<Level>, Vec
         let Some(moved) = moved else {
             continue;
         };
-        let limit = if moved >= 0.0 { limits.high(on) } else { limits.low(on) };
+        let limit = if moved >= 0.0 {
+            limits.high(on)
+        } else {
+            limits.low(on)
+        };
         let Some(limit) = limit else {
             continue;
         };
@@ -81,11 +89,22 @@ pub(super) fn viscosity(change: &Change, limits: &Limits) -> (Option<Level>, Vec
     if list.is_empty() {
         let moved = change.nu100.or(change.nu40).unwrap_or(0.0);
         let any = [On::ViscosityChange40, On::ViscosityChange100].into_iter();
-        let limit = any.filter_map(|on| if moved >= 0.0 { limits.high(on) } else { limits.low(on) }).next();
+        let limit = any
+            .filter_map(|on| {
+                if moved >= 0.0 {
+                    limits.high(on)
+                } else {
+                    limits.low(on)
+                }
+            })
+            .next();
         if let Some(limit) = limit {
             list.push(Against {
                 on: "viscosity change",
-                says: format!("viscosity {} against new oil, at the one temperature measured", signed(moved)),
+                says: format!(
+                    "viscosity {} against new oil, at the one temperature measured",
+                    signed(moved)
+                ),
                 level: limit.above(moved.abs()),
                 limit: limit.clone(),
             });
@@ -99,9 +118,17 @@ pub(super) fn viscosity(change: &Change, limits: &Limits) -> (Option<Level>, Vec
 pub(super) fn others(figures: &Figures, label: Option<&Profile>, limits: &Limits) -> Vec<Against> {
     let mut list = Vec::new();
     let mut push = |on: On, high: bool, value: f64, says: String| {
-        let limit = if high { limits.high(on) } else { limits.low(on) };
+        let limit = if high {
+            limits.high(on)
+        } else {
+            limits.low(on)
+        };
         if let Some(limit) = limit {
-            let level = if high { limit.above(value) } else { limit.below(value) };
+            let level = if high {
+                limit.above(value)
+            } else {
+                limit.below(value)
+            };
             list.push(Against {
                 on: crate::model::word::Word::word(on),
                 says,
@@ -122,15 +149,32 @@ pub(super) fn others(figures: &Figures, label: Option<&Profile>, limits: &Limits
     };
     let new = |reading: Reading| {
         let expected = label?.figures.get(&reading)?;
-        Some((expected.value, if expected.from == From::Usual { ", assumed" } else { "" }))
+        Some((
+            expected.value,
+            if expected.from == From::Usual {
+                ", assumed"
+            } else {
+                ""
+            },
+        ))
     };
     let two = |v: f64| fixed(v, 2, Toward::Nearest);
     let three = |v: f64| significant(v, 3, Toward::Nearest);
     if let Some(water) = value(Reading::Water, true) {
-        push(On::Water, true, water, format!("water {} ppm", three(water)));
+        push(
+            On::Water,
+            true,
+            water,
+            format!("water {} ppm", three(water)),
+        );
     }
     if let Some(acid) = value(Reading::AcidNumber, true) {
-        push(On::AcidNumber, true, acid, format!("acid number {} mg KOH/g", two(acid)));
+        push(
+            On::AcidNumber,
+            true,
+            acid,
+            format!("acid number {} mg KOH/g", two(acid)),
+        );
         if let Some((fresh, how)) = new(Reading::AcidNumber) {
             let says = format!(
                 "acid number {} mg KOH/g, up by {} (new {}{how})",
@@ -142,17 +186,27 @@ pub(super) fn others(figures: &Figures, label: Option<&Profile>, limits: &Limits
         }
     }
     if let (Some(flash), Some((fresh, _))) = (value(Reading::Flash, false), new(Reading::Flash)) {
-        let says = format!("flash point {} degC, {} K below new", fixed(flash, 0, Toward::Nearest), fixed(fresh - flash, 0, Toward::Nearest));
+        let says = format!(
+            "flash point {} degC, {} K below new",
+            fixed(flash, 0, Toward::Nearest),
+            fixed(fresh - flash, 0, Toward::Nearest)
+        );
         push(On::FlashDrop, true, fresh - flash, says);
     }
     if let Some(bands) = value(Reading::Oxidation, true) {
         let fresh = new(Reading::Oxidation).map_or(0.0, |(v, _)| v);
-        let says = format!("oxidation {} per cm over new", fixed(bands - fresh, 1, Toward::Nearest));
+        let says = format!(
+            "oxidation {} per cm over new",
+            fixed(bands - fresh, 1, Toward::Nearest)
+        );
         push(On::OxidationRise, true, bands - fresh, says);
     }
     if let Some(bands) = value(Reading::Nitration, true) {
         let fresh = new(Reading::Nitration).map_or(0.0, |(v, _)| v);
-        let says = format!("nitration {} per cm over new", fixed(bands - fresh, 1, Toward::Nearest));
+        let says = format!(
+            "nitration {} per cm over new",
+            fixed(bands - fresh, 1, Toward::Nearest)
+        );
         push(On::NitrationRise, true, bands - fresh, says);
     }
     if let Some(left) = value(Reading::OxidationLife, false) {
@@ -160,15 +214,30 @@ pub(super) fn others(figures: &Figures, label: Option<&Profile>, limits: &Limits
         push(On::OxidationStabilityShare, false, left / 100.0, says);
     }
     if let Some(fuel) = value(Reading::Fuel, true) {
-        push(On::Fuel, true, fuel, format!("fuel {} %", fixed(fuel, 1, Toward::Nearest)));
+        push(
+            On::Fuel,
+            true,
+            fuel,
+            format!("fuel {} %", fixed(fuel, 1, Toward::Nearest)),
+        );
     }
     if let Some(soot) = value(Reading::Soot, true) {
-        push(On::Soot, true, soot, format!("soot {} %", fixed(soot, 1, Toward::Nearest)));
+        push(
+            On::Soot,
+            true,
+            soot,
+            format!("soot {} %", fixed(soot, 1, Toward::Nearest)),
+        );
     }
-    if let (Some(base), Some((fresh, _))) = (value(Reading::BaseNumber, false), new(Reading::BaseNumber))
+    if let (Some(base), Some((fresh, _))) =
+        (value(Reading::BaseNumber, false), new(Reading::BaseNumber))
         && fresh > 0.0
     {
-        let says = format!("base number {} mg KOH/g of {} when new", two(base), two(fresh));
+        let says = format!(
+            "base number {} mg KOH/g of {} when new",
+            two(base),
+            two(fresh)
+        );
         push(On::BaseNumberShare, false, base / fresh, says);
     }
     list

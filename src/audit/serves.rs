@@ -138,11 +138,17 @@ pub(super) fn line(figures: &Figures, label: Option<&Curves>) -> Option<(Line, S
         }
         (Some(nu40), None) => {
             let slope = label?.new.line_at(celsius(40.0));
-            Some((slope.parallel_through(mm2_s(nu40), celsius(40.0)), Slope::OfLabel))
+            Some((
+                slope.parallel_through(mm2_s(nu40), celsius(40.0)),
+                Slope::OfLabel,
+            ))
         }
         (None, Some(nu100)) => {
             let slope = label?.new.line_at(celsius(100.0));
-            Some((slope.parallel_through(mm2_s(nu100), celsius(100.0)), Slope::OfLabel))
+            Some((
+                slope.parallel_through(mm2_s(nu100), celsius(100.0)),
+                Slope::OfLabel,
+            ))
         }
         (None, None) => None,
     }
@@ -191,7 +197,13 @@ pub(super) struct Against<'a> {
 }
 
 /// Judges a sample.
-pub(super) fn judge(frame: &Oil, line: Line, slope: Slope, row: &str, by: &Against<'_>) -> Option<Serves> {
+pub(super) fn judge(
+    frame: &Oil,
+    line: Line,
+    slope: Slope,
+    row: &str,
+    by: &Against<'_>,
+) -> Option<Serves> {
     let oil = as_oil(frame, line, row);
     let prepared = PreparedOil::new(&oil, by.rules, false).ok()?;
     let judgement = weigh(by.ready, &prepared);

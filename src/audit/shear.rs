@@ -80,13 +80,19 @@ fn greatest(oil: usize, units: &[Unit], judged: &[Judged], bottles: &[Bottle]) -
     let mut most: Option<Measured> = None;
     for unit in units {
         for j in unit.judged.iter().map(|j| &judged[*j]) {
-            let shear = j.diagnosis.causes.iter().find(|n| n.cause == Cause::PolymerShear);
+            let shear = j
+                .diagnosis
+                .causes
+                .iter()
+                .find(|n| n.cause == Cause::PolymerShear);
             let sure = shear.is_some_and(|n| n.likelihood >= 0.5);
             if j.label.oil != Some(oil) || !sure || j.twice {
                 continue;
             }
             let figures = &bottles[j.bottle].figures;
-            let nu = figures.exact(Reading::Nu40).zip(figures.exact(Reading::Nu100));
+            let nu = figures
+                .exact(Reading::Nu40)
+                .zip(figures.exact(Reading::Nu100));
             let (Some(nu), Some(moved)) = (nu, j.change.nu100) else {
                 continue;
             };
@@ -105,11 +111,21 @@ fn greatest(oil: usize, units: &[Unit], judged: &[Judged], bottles: &[Bottle]) -
 
 fn sheared(scales: &Scales<'_>, oil: usize, measured: &Measured) -> Option<PreparedOil> {
     let mut oil = scales.site.oils[oil].clone();
-    if !matches!(oil.viscosity, Viscosity::Points { from: PointsFrom::DataSheet | PointsFrom::Batch | PointsFrom::Measured, .. }) {
+    if !matches!(
+        oil.viscosity,
+        Viscosity::Points {
+            from: PointsFrom::DataSheet | PointsFrom::Batch | PointsFrom::Measured,
+            ..
+        }
+    ) {
         return None;
     }
     let point = |nu: f64, t: f64| ViscosityPoint {
-        nu: Given::new(mm2_s(nu), "", Origin::assumed(format!("measured in {}", measured.name))),
+        nu: Given::new(
+            mm2_s(nu),
+            "",
+            Origin::assumed(format!("measured in {}", measured.name)),
+        ),
         at: celsius(t),
         tolerance: None,
     };

@@ -150,7 +150,11 @@ impl Fit {
         if sxx <= 0.0 {
             return None;
         }
-        let sxy: f64 = xs.iter().zip(ys).map(|(x, y)| (x - mean_x) * (y - mean_y)).sum();
+        let sxy: f64 = xs
+            .iter()
+            .zip(ys)
+            .map(|(x, y)| (x - mean_x) * (y - mean_y))
+            .sum();
         let slope = sxy / sxx;
         let residual: f64 = xs
             .iter()
@@ -161,7 +165,11 @@ impl Fit {
         // the test cannot scatter less than between laboratories, however well few points lie
         let test = readings.iter().map(|r| r.sigma * r.sigma).sum::<f64>() / n;
         let degrees = xs.len().saturating_sub(2);
-        let scatter = if degrees > 0 { residual / degrees as f64 } else { 0.0 };
+        let scatter = if degrees > 0 {
+            residual / degrees as f64
+        } else {
+            0.0
+        };
         let (variance, quantile) = if scatter > test && degrees > 0 {
             (scatter, student(0.95, u32::try_from(degrees).ok()?)?)
         } else {
@@ -196,7 +204,10 @@ impl Fit {
         let limits = if falls {
             [("floor", ahead.floor), ("label limit", ahead.label_low)]
         } else {
-            [("ceiling", ahead.ceiling), ("label limit", ahead.label_high)]
+            [
+                ("ceiling", ahead.ceiling),
+                ("label limit", ahead.label_high),
+            ]
         };
         let now = self.at(last);
         let lies_ahead = |l: &f64| if falls { *l < now } else { *l > now };
@@ -222,7 +233,11 @@ impl Fit {
             let root = crate::numeric::root::bracketed(last, last + FARTHEST, gap);
             root.ok().map(|r| r.at)
         };
-        let (early, late) = if falls { (edge(-1.0), edge(1.0)) } else { (edge(1.0), edge(-1.0)) };
+        let (early, late) = if falls {
+            (edge(-1.0), edge(1.0))
+        } else {
+            (edge(1.0), edge(-1.0))
+        };
         Some(Reached {
             limit,
             nu40,
@@ -271,9 +286,18 @@ mod tests {
 
     #[test]
     fn scatter_is_no_trend_and_one_sample_is_too_few() {
-        let two = [reading("2026-01-01", 46.0, 0.3), reading("2026-07-01", 46.3, 0.3)];
-        assert!(matches!(of(&two, None, &Ahead::default()), Trend::Level { samples: 2, .. }));
-        assert_eq!(of(&two[..1], None, &Ahead::default()), Trend::TooFew { samples: 1 });
+        let two = [
+            reading("2026-01-01", 46.0, 0.3),
+            reading("2026-07-01", 46.3, 0.3),
+        ];
+        assert!(matches!(
+            of(&two, None, &Ahead::default()),
+            Trend::Level { samples: 2, .. }
+        ));
+        assert_eq!(
+            of(&two[..1], None, &Ahead::default()),
+            Trend::TooFew { samples: 1 }
+        );
     }
 
     /// A third of the fill replaced by new oil of 60 hides a third of a fall to 45: 50 is read.

@@ -69,9 +69,17 @@ pub(super) fn of(site: &Site, bottles: &[Bottle], rows: &[(usize, Option<usize>)
             let address = site.points[point].address();
             Unit {
                 point,
-                name: if own.is_empty() { address } else { format!("{address} ({own})") },
+                name: if own.is_empty() {
+                    address
+                } else {
+                    format!("{address} ({own})")
+                },
                 judged,
-                twice: days.into_iter().filter(|(_, n)| *n > 1).map(|(d, _)| d).collect(),
+                twice: days
+                    .into_iter()
+                    .filter(|(_, n)| *n > 1)
+                    .map(|(d, _)| d)
+                    .collect(),
                 trend: Trend::TooFew { samples: 0 },
                 of_this_fill: 0,
                 events: Vec::new(),
@@ -85,8 +93,13 @@ pub(super) fn of(site: &Site, bottles: &[Bottle], rows: &[(usize, Option<usize>)
 fn own_name(site: &Site, point: usize, bottle: &Bottle) -> String {
     let at = &site.points[point];
     let written = bottle.machine.trim();
-    let plain = written.eq_ignore_ascii_case(&at.machine) || written.eq_ignore_ascii_case(&at.address());
-    if at.count > 1 && !plain { written.to_owned() } else { String::new() }
+    let plain =
+        written.eq_ignore_ascii_case(&at.machine) || written.eq_ignore_ascii_case(&at.address());
+    if at.count > 1 && !plain {
+        written.to_owned()
+    } else {
+        String::new()
+    }
 }
 
 /// Two bottles of one machine and day: a problem, no coin toss.
@@ -197,13 +210,19 @@ fn events(
     let point = &site.points[unit.point];
     let address = point.address();
     let first = fill.first().and_then(|j| bottles[judged[*j].bottle].drawn);
-    let mut list: Vec<&crate::model::sample::Event> =
-        site.events.iter().filter(|e| e.machine.value == address).collect();
+    let mut list: Vec<&crate::model::sample::Event> = site
+        .events
+        .iter()
+        .filter(|e| e.machine.value == address)
+        .collect();
     list.sort_by_key(|e| e.date);
     list.into_iter()
         .filter(|e| e.what != Done::TopUp || first.is_none_or(|f| e.date >= f))
         .map(|e| {
-            let oil = e.oil.as_ref().map_or(String::new(), |o| format!(" with {}", o.value));
+            let oil = e
+                .oil
+                .as_ref()
+                .map_or(String::new(), |o| format!(" with {}", o.value));
             let amount = e.amount.map_or(String::new(), |a| {
                 use crate::quantity::show::{Toward, significant};
                 format!(", {} L", significant(a.base() * 1e3, 3, Toward::Nearest))
@@ -242,13 +261,24 @@ fn rises(
     let [.., before, after] = fill else {
         return Vec::new();
     };
-    let (before, after) = (&bottles[judged[*before].bottle], &bottles[judged[*after].bottle]);
+    let (before, after) = (
+        &bottles[judged[*before].bottle],
+        &bottles[judged[*after].bottle],
+    );
     let hours = |b: &Bottle| {
         let figures = &b.figures;
-        figures.exact(Reading::HoursOnOil).or(figures.exact(Reading::HoursOnMachine))
+        figures
+            .exact(Reading::HoursOnOil)
+            .or(figures.exact(Reading::HoursOnMachine))
     };
     let between = hours(before).zip(hours(after)).map(|(a, b)| b - a);
-    metals::rises(&before.figures, &after.figures, between, auditor.scales.rules, auditor.scatter())
+    metals::rises(
+        &before.figures,
+        &after.figures,
+        between,
+        auditor.scales.rules,
+        auditor.scatter(),
+    )
 }
 
 fn trend_of(
@@ -281,7 +311,11 @@ fn trend_of(
     let new = latest.label.oil.map(|o| auditor.profile(o).nu40());
     let limits = auditor.limits_of(Some(unit.point), latest.label.oil);
     let act = |low: bool| {
-        let side = if low { limits.low(On::ViscosityChange40) } else { limits.high(On::ViscosityChange40) };
+        let side = if low {
+            limits.low(On::ViscosityChange40)
+        } else {
+            limits.high(On::ViscosityChange40)
+        };
         side.and_then(|l| l.act)
     };
     let ahead = Ahead {

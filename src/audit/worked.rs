@@ -34,6 +34,7 @@ pub fn explanation<'a>(scales: &Scales<'a>, audit: &Audit, j: &Judged) -> Option
         weighed.ready.settings.first()?,
         (&oil, &prepared),
         prepared.worst(&weighed.ready),
+        None,
     );
     Some((told, weighed))
 }

@@ -37,7 +37,11 @@ impl Session<'_> {
     ///
     /// # Errors
     /// A table that cannot be read, or is none; everything wrong with it has been told.
-    pub fn bottles(&mut self, loaded: &mut Loaded, decimal_comma: Option<bool>) -> Result<Bottles, Exit> {
+    pub fn bottles(
+        &mut self,
+        loaded: &mut Loaded,
+        decimal_comma: Option<bool>,
+    ) -> Result<Bottles, Exit> {
         let wanted = self.wanted_tables(loaded);
         let mut found = Bottles::default();
         let mut problems = Problems::new();
@@ -81,12 +85,18 @@ impl Session<'_> {
             });
             return tables.collect();
         }
-        let with_table = maps.iter().enumerate().filter_map(|(i, m)| Some((i, m, m.read.as_ref()?)));
+        let with_table = maps
+            .iter()
+            .enumerate()
+            .filter_map(|(i, m)| Some((i, m, m.read.as_ref()?)));
         with_table
             .map(|(i, map, read)| Wanted {
                 map: Some(i),
                 name: read.value.clone(),
-                path: loaded.folder.as_ref().map(|folder| self.beside(folder, loaded, map).join(&read.value)),
+                path: loaded
+                    .folder
+                    .as_ref()
+                    .map(|folder| self.beside(folder, loaded, map).join(&read.value)),
             })
             .collect()
     }
@@ -96,9 +106,19 @@ impl Session<'_> {
         let Place::Text(span) = &map.origin.place else {
             return folder.to_path_buf();
         };
-        let name = loaded.sources.file(span.file).map_or("", |f| f.path.as_str());
-        let parent = Path::new(name).parent().map(Path::to_path_buf).unwrap_or_default();
-        if self.shared.samples.is_empty() { folder.join(parent) } else { parent }
+        let name = loaded
+            .sources
+            .file(span.file)
+            .map_or("", |f| f.path.as_str());
+        let parent = Path::new(name)
+            .parent()
+            .map(Path::to_path_buf)
+            .unwrap_or_default();
+        if self.shared.samples.is_empty() {
+            folder.join(parent)
+        } else {
+            parent
+        }
     }
 
     fn one_table(
@@ -117,14 +137,23 @@ impl Session<'_> {
         let bytes = match self.table_bytes(wanted) {
             Ok(Some(bytes)) => bytes,
             Ok(None) => {
-                let fault = Fault::TooLarge { limit: Limit::TextFileBytes, at: None };
+                let fault = Fault::TooLarge {
+                    limit: Limit::TextFileBytes,
+                    at: None,
+                };
                 problems.error(fault.problem(&wanted.name, place));
                 return Ok(());
             }
             Err(why) if matches!(place, Place::Text(_)) => {
                 problems.error(
-                    Problem::new(Code::FileMissing, format!("{} cannot be read: {why}", wanted.name), place)
-                        .write(Write::words("read: the path of the table, beside this file")),
+                    Problem::new(
+                        Code::FileMissing,
+                        format!("{} cannot be read: {why}", wanted.name),
+                        place,
+                    )
+                    .write(Write::words(
+                        "read: the path of the table, beside this file",
+                    )),
                 );
                 return Err(self.file_error(loaded, problems));
             }
@@ -175,9 +204,15 @@ impl Session<'_> {
     fn table_bytes(&self, wanted: &Wanted) -> Result<Option<Vec<u8>>, String> {
         let Some(path) = &wanted.path else {
             let text = assets::template(&format!("demo/{}", wanted.name));
-            return text.map(|t| Some(t.as_bytes().to_vec())).ok_or_else(|| "it is not there".to_owned());
+            return text
+                .map(|t| Some(t.as_bytes().to_vec()))
+                .ok_or_else(|| "it is not there".to_owned());
         };
-        if self.host.size(path).is_ok_and(|size| size > TEXT_FILE_BYTES as u64) {
+        if self
+            .host
+            .size(path)
+            .is_ok_and(|size| size > TEXT_FILE_BYTES as u64)
+        {
             return Ok(None);
         }
         self.host.read(path).map(Some).map_err(|e| e.to_string())

@@ -142,10 +142,13 @@ fn beside(
     complete: bool,
 ) -> Option<Site> {
     let (mut maps, mut events) = (Vec::new(), Vec::new());
-    let names = site.as_ref().filter(|_| complete).map(|site| samples::Names {
-        points: &site.points,
-        oils: site.oils.iter().map(|o| o.id.as_str()).collect(),
-    });
+    let names = site
+        .as_ref()
+        .filter(|_| complete)
+        .map(|site| samples::Names {
+            points: &site.points,
+            oils: site.oils.iter().map(|o| o.id.as_str()).collect(),
+        });
     for tree in trees {
         match (&tree.root, tree.kind) {
             (Some(root), FileKind::Samples) => {

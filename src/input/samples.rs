@@ -99,7 +99,9 @@ fn no_figure(reader: &mut Reader<'_>, named: &Fields<'_>, key: &str) {
             &slot.within,
         )
         .why("columns of new oil hold figures that are compared with those of the oil in use")
-        .write(Write::edit(slot.name.span, "Zn").remark("or another figure; `columns` takes the rest"));
+        .write(
+            Write::edit(slot.name.span, "Zn").remark("or another figure; `columns` takes the rest"),
+        );
     reader.report(problem);
 }
 
@@ -117,7 +119,11 @@ fn table<'t>(reader: &mut Reader<'_>, fields: &Fields<'t>, name: &str) -> Vec<Sl
         node: &entry.value,
         ..slot.clone()
     });
-    slots.collect::<Vec<_>>().into_iter().filter(|s| s.text(reader).is_some()).collect()
+    slots
+        .collect::<Vec<_>>()
+        .into_iter()
+        .filter(|s| s.text(reader).is_some())
+        .collect()
 }
 
 fn units(reader: &mut Reader<'_>, fields: &Fields<'_>) -> Vec<(Reading, &'static str)> {
@@ -157,9 +163,17 @@ fn unit_of_nothing(reader: &mut Reader<'_>, slot: &Slot<'_>, key: &str) {
 
 fn unit_unknown(reader: &mut Reader<'_>, slot: &Slot<'_>, reading: Reading, text: &str) {
     let units = reading.kind().spec().units;
-    let listed: Vec<&str> = units.iter().map(|u| u.name).filter(|n| !n.is_empty()).collect();
+    let listed: Vec<&str> = units
+        .iter()
+        .map(|u| u.name)
+        .filter(|n| !n.is_empty())
+        .collect();
     let right = units.first().map_or("", |u| u.name);
-    let instead = if reading.unit().is_empty() { right } else { reading.unit() };
+    let instead = if reading.unit().is_empty() {
+        right
+    } else {
+        reading.unit()
+    };
     let problem = reader
         .at(
             Code::UnitUnknown,
@@ -199,7 +213,12 @@ fn machine(reader: &mut Reader<'_>, slot: &Slot<'_>, text: &str, names: &Names<'
         return true;
     }
     let same = |(p, a): (&Point, &String)| (p.machine == text).then(|| a.clone());
-    let several: Vec<String> = names.points.iter().zip(&addresses).filter_map(same).collect();
+    let several: Vec<String> = names
+        .points
+        .iter()
+        .zip(&addresses)
+        .filter_map(same)
+        .collect();
     let problem = if several.is_empty() {
         let listed = addresses.iter().map(String::as_str);
         let meant = suggest::certain(text, listed.clone());

@@ -40,9 +40,12 @@ fn inside(t: f64, degrees: u32) -> f64 {
         sum += term;
         k += 2.0;
     }
-    if even { sin * sum } else { two_over_pi * (theta + sin * sum) }
+    if even {
+        sin * sum
+    } else {
+        two_over_pi * (theta + sin * sum)
+    }
 }
-
 
 #[cfg(test)]
 mod tests {
@@ -51,7 +54,15 @@ mod tests {
     /// Published table (Abramowitz and Stegun, table 26.10): t at 95 % two-sided.
     #[test]
     fn quantiles_are_those_of_the_table() {
-        for (n, t) in [(1, 12.706), (2, 4.303), (3, 3.182), (4, 2.776), (5, 2.571), (10, 2.228), (30, 2.042)] {
+        for (n, t) in [
+            (1, 12.706),
+            (2, 4.303),
+            (3, 3.182),
+            (4, 2.776),
+            (5, 2.571),
+            (10, 2.228),
+            (30, 2.042),
+        ] {
             let found = student(0.95, n).expect("a quantile");
             assert!((found - t).abs() < 6e-4, "{n}: {found}");
         }

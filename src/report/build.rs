@@ -7,10 +7,12 @@
 mod ambient;
 mod answer;
 mod assumed;
+mod audit;
 mod barred;
 mod candidates;
 mod case;
 mod caution;
+mod changes;
 mod curves;
 mod digest;
 mod eligible;
@@ -35,6 +37,7 @@ mod steps;
 mod store;
 mod vary;
 
+use crate::audit::Audit;
 use crate::demand::End;
 use crate::judge::{PreparedOil, Verdict};
 use crate::model::Point;
@@ -81,6 +84,8 @@ pub struct Run<'a> {
     options: Options,
     /// Thickened oils as new, by their place in the list.
     fresh: BTreeMap<usize, PreparedOil>,
+    /// The audit of the oils in use, where there are samples.
+    audit: Option<&'a Audit>,
 }
 
 impl<'a> Run<'a> {
@@ -107,7 +112,15 @@ impl<'a> Run<'a> {
             head,
             options,
             fresh,
+            audit: None,
         }
+    }
+
+    /// With an audit sheet.
+    #[must_use]
+    pub fn audited(mut self, audit: &'a Audit) -> Self {
+        self.audit = Some(audit);
+        self
     }
 
     /// An oil judged as new, where it is thickened.
@@ -160,7 +173,7 @@ pub struct Report<'a> {
 impl<'a> Report<'a> {
     /// Plans the sheets of these points.
     pub fn new(run: Run<'a>, points: &[&'a Point]) -> Self {
-        let plan = Plan::new(points, run.options.bundle);
+        let plan = Plan::new(points, run.options.bundle, run.audit.is_some());
         Self {
             run,
             plan,
@@ -214,6 +227,7 @@ impl<'a> Report<'a> {
         let areas = (0..self.plan.areas.len()).map(|i| machines::area(self, i));
         std::iter::once_with(|| overview::sheet(self))
             .chain(areas)
+            .chain(self.run.audit.and_then(|a| audit::sheet(self, a)))
             .chain(std::iter::once_with(|| reference::methods(self)))
             .chain(std::iter::once_with(|| reference::rules(self)))
             .chain(std::iter::once_with(|| reference::words(self)))

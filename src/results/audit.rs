@@ -29,11 +29,18 @@ pub fn document_of(scales: &Scales<'_>, audit: &Audit, head: &Head) -> String {
         })
         .collect();
     top.insert("two_by_two".into(), Value::Array(two_by_two));
-    let mut samples: Vec<Value> = audit.judged.iter().map(|j| sample(scales, audit, j)).collect();
+    let mut samples: Vec<Value> = audit
+        .judged
+        .iter()
+        .map(|j| sample(scales, audit, j))
+        .collect();
     samples.extend(audit.unsampled.iter().map(|u| unsampled(scales, u)));
     top.insert("samples".into(), Value::Array(samples));
     let findings = audit.findings.iter().enumerate();
-    top.insert("findings".into(), findings.map(|(i, f)| finding(audit, i, f)).collect());
+    top.insert(
+        "findings".into(),
+        findings.map(|(i, f)| finding(audit, i, f)).collect(),
+    );
     let unmatched: Vec<Value> = audit
         .unmatched
         .iter()
@@ -69,16 +76,24 @@ fn steps(value: Option<f64>) -> Value {
 }
 
 fn nu(value: Option<f64>) -> Value {
-    value.map_or(Value::Null, |v| json!({ "value": json::number(v), "unit": "mm2/s" }))
+    value.map_or(
+        Value::Null,
+        |v| json!({ "value": json::number(v), "unit": "mm2/s" }),
+    )
 }
 
 fn conditions(list: &[Condition]) -> Value {
-    let all = list.iter().map(|c| json!({ "rule": c.rule, "says": c.says, "act": c.act, "source": c.source }));
+    let all = list
+        .iter()
+        .map(|c| json!({ "rule": c.rule, "says": c.says, "act": c.act, "source": c.source }));
     Value::Array(all.collect())
 }
 
 fn percent(share: Option<f64>) -> Value {
-    share.map_or(Value::Null, |s| json!({ "value": json::number(100.0 * s), "unit": "%" }))
+    share.map_or(
+        Value::Null,
+        |s| json!({ "value": json::number(100.0 * s), "unit": "%" }),
+    )
 }
 
 /// One sample.
@@ -91,20 +106,40 @@ fn sample(scales: &Scales<'_>, audit: &Audit, j: &Judged) -> Value {
     m.insert("machine".into(), json!(point.map(|p| p.machine.clone())));
     m.insert("point".into(), json!(point.and_then(|p| p.point.clone())));
     m.insert("machine_as_written".into(), json!(b.machine));
-    m.insert("label".into(), json!(j.label.oil.map(|o| scales.site.oils[o].id.clone()).or(j.label.written.clone())));
+    m.insert(
+        "label".into(),
+        json!(
+            j.label
+                .oil
+                .map(|o| scales.site.oils[o].id.clone())
+                .or(j.label.written.clone())
+        ),
+    );
     m.insert("label_from_machine".into(), json!(j.label.from_machine));
-    m.insert("machine_holds".into(), json!(j.label.machine_holds.map(|o| scales.site.oils[o].id.clone())));
+    m.insert(
+        "machine_holds".into(),
+        json!(
+            j.label
+                .machine_holds
+                .map(|o| scales.site.oils[o].id.clone())
+        ),
+    );
     m.insert("drawn".into(), json!(b.drawn.map(|d| d.to_string())));
     m.insert("latest".into(), json!(j.latest));
     m.insert("as_labelled".into(), json!(j.whose.words()));
     m.insert("not_known_because".into(), json!(j.why_not_known));
-    m.insert("baseline".into(), json!(j.baseline.map(crate::audit::profile::From::words)));
+    m.insert(
+        "baseline".into(),
+        json!(j.baseline.map(crate::audit::profile::From::words)),
+    );
     m.insert("serves".into(), json!(j.word()));
     m.insert("because".into(), json!(because(j)));
     m.insert("barred_by".into(), conditions(&j.barred));
     let serves = j.serves.as_ref();
     let margin = |m: Option<crate::judge::Margin>| steps(m.map(|m| m.value));
-    let kelvins = |m: Option<crate::judge::Margin>| m.map_or(Value::Null, |m| json::kelvins_margin(m.value, None));
+    let kelvins = |m: Option<crate::judge::Margin>| {
+        m.map_or(Value::Null, |m| json::kelvins_margin(m.value, None))
+    };
     m.insert(
         "margins".into(),
         json!({
@@ -133,15 +168,31 @@ fn sample(scales: &Scales<'_>, audit: &Audit, j: &Judged) -> Value {
             "vi_new": vi_new.map(exact),
         }),
     );
-    m.insert("limits".into(), Value::Array(j.against.iter().map(against).collect()));
-    m.insert("causes".into(), Value::Array(j.diagnosis.causes.iter().map(|n| cause(scales, n)).collect()));
+    m.insert(
+        "limits".into(),
+        Value::Array(j.against.iter().map(against).collect()),
+    );
+    m.insert(
+        "causes".into(),
+        Value::Array(
+            j.diagnosis
+                .causes
+                .iter()
+                .map(|n| cause(scales, n))
+                .collect(),
+        ),
+    );
     m.insert("decided".into(), json!(!j.diagnosis.undecided));
     let tell: Vec<&str> = j.diagnosis.would_tell.iter().map(|r| r.key()).collect();
     m.insert("would_tell".into(), json!(tell));
     m.insert("cleanliness".into(), cleanliness(j));
     m.insert("readings".into(), readings(b));
     m.insert("flags".into(), json!(b.flags));
-    let unread: Vec<Value> = b.unread.iter().map(|(h, t)| json!({ "column": h, "cell": t })).collect();
+    let unread: Vec<Value> = b
+        .unread
+        .iter()
+        .map(|(h, t)| json!({ "column": h, "cell": t }))
+        .collect();
     m.insert("not_understood".into(), Value::Array(unread));
     Value::Object(m)
 }
@@ -174,7 +225,8 @@ fn against(a: &Against) -> Value {
 fn cause(scales: &Scales<'_>, n: &Named) -> Value {
     let lines = |sign: f64| -> Vec<Value> {
         let mine = n.evidence.iter().filter(|e| e.weight * sign > 0.0);
-        mine.map(|e| json!({ "on": e.on, "says": e.says, "weight": exact(e.weight) })).collect()
+        mine.map(|e| json!({ "on": e.on, "says": e.says, "weight": exact(e.weight) }))
+            .collect()
     };
     let oils: Vec<Value> = n
         .oils
@@ -238,7 +290,11 @@ fn readings(b: &Bottle) -> Value {
 
 fn unsampled(scales: &Scales<'_>, u: &Unsampled) -> Value {
     let point = &scales.site.points[u.point];
-    let serves = if u.barred.is_empty() { u.verdict.map(crate::judge::Verdict::word) } else { Some("barred") };
+    let serves = if u.barred.is_empty() {
+        u.verdict.map(crate::judge::Verdict::word)
+    } else {
+        Some("barred")
+    };
     json!({
         "sample": null,
         "machine": point.machine,
@@ -302,10 +358,35 @@ fn trend(scales: &Scales<'_>, u: &crate::audit::units::Unit) -> Value {
 /// A CSV table of the samples, the unsampled oils in use at the end.
 pub fn table_of(scales: &Scales<'_>, audit: &Audit) -> Table {
     let headings = [
-        "sample", "row", "machine", "point", "label", "drawn", "latest", "nu40_mm2_s", "nu100_mm2_s",
-        "change_nu40_percent", "change_nu100_percent", "vi", "vi_new", "as_labelled", "serves", "hot_vg_step",
-        "cold_vg_step", "floor_40_mm2_s", "ceiling_40_mm2_s", "floor_100_mm2_s", "ceiling_100_mm2_s",
-        "level", "cause", "likelihood", "more_causes", "cleanliness", "cleanliness_target", "flags", "because",
+        "sample",
+        "row",
+        "machine",
+        "point",
+        "label",
+        "drawn",
+        "latest",
+        "nu40_mm2_s",
+        "nu100_mm2_s",
+        "change_nu40_percent",
+        "change_nu100_percent",
+        "vi",
+        "vi_new",
+        "as_labelled",
+        "serves",
+        "hot_vg_step",
+        "cold_vg_step",
+        "floor_40_mm2_s",
+        "ceiling_40_mm2_s",
+        "floor_100_mm2_s",
+        "ceiling_100_mm2_s",
+        "level",
+        "cause",
+        "likelihood",
+        "more_causes",
+        "cleanliness",
+        "cleanliness_target",
+        "flags",
+        "because",
     ];
     let mut table = Table {
         headings: headings.map(str::to_owned).to_vec(),
@@ -332,10 +413,18 @@ fn row(scales: &Scales<'_>, audit: &Audit, j: &Judged) -> Vec<Cell> {
     let b = &audit.bottles[j.bottle];
     let point = j.point.map(|p| &scales.site.points[p]);
     let s = j.serves.as_ref();
-    let label = j.label.oil.map(|o| scales.site.oils[o].id.as_str()).or(j.label.written.as_deref());
+    let label = j
+        .label
+        .oil
+        .map(|o| scales.site.oils[o].id.as_str())
+        .or(j.label.written.as_deref());
     let causes = &j.diagnosis.causes;
     let more: Vec<&str> = causes.iter().skip(1).map(|n| n.cause.says()).collect();
-    let target = j.clean.as_ref().and_then(|c| c.target.as_ref()).map(|(t, ..)| t.to_string());
+    let target = j
+        .clean
+        .as_ref()
+        .and_then(|c| c.target.as_ref())
+        .map(|(t, ..)| t.to_string());
     let tag = point.map_or(b.machine.as_str(), |p| p.machine.as_str());
     vec![
         Cell::Text(b.name()),

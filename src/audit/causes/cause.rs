@@ -136,7 +136,9 @@ impl Cause {
             Self::Admixture => {
                 "take another sample for infrared; these oils do not mix with mineral oil: drain, flush and refill once it is certain"
             }
-            Self::LabError => "have the sample tested again, and compare the bottle with the machine",
+            Self::LabError => {
+                "have the sample tested again, and compare the bottle with the machine"
+            }
         }
     }
 }

@@ -69,7 +69,10 @@ fn viscosity(theta: &Theta, none: &Theta, sample: &Sample, label: &Profile) -> V
             continue;
         };
         let spread = |t: &Theta| (variance + sample.common + t.spread * t.spread).sqrt();
-        let (z, z0) = ((d - theta.d[i]) / spread(theta), (d - none.d[i]) / spread(none));
+        let (z, z0) = (
+            (d - theta.d[i]) / spread(theta),
+            (d - none.d[i]) / spread(none),
+        );
         let new = if i == 0 { label.nu40() } else { label.nu100() };
         let says = format!(
             "{} {} against new oil ({} mm2/s); about {} expected",
@@ -78,7 +81,13 @@ fn viscosity(theta: &Theta, none: &Theta, sample: &Sample, label: &Profile) -> V
             significant(new, 3, Toward::Nearest),
             per_cent(theta.d[i])
         );
-        list.extend(line(reading, says, z, z0, (theta.d[i] - none.d[i]).abs() > 0.01));
+        list.extend(line(
+            reading,
+            says,
+            z,
+            z0,
+            (theta.d[i] - none.d[i]).abs() > 0.01,
+        ));
     }
     list
 }
@@ -89,7 +98,10 @@ fn vi(cause: Cause, theta: &Theta, sample: &Sample, label: &Profile) -> Option<E
         return None;
     };
     let found = index(label.nu40() * exp(a), label.nu100() * exp(b))?;
-    let wanted = index(label.nu40() * exp(theta.d[0]), label.nu100() * exp(theta.d[1]))?;
+    let wanted = index(
+        label.nu40() * exp(theta.d[0]),
+        label.nu100() * exp(theta.d[1]),
+    )?;
     let whole = |v: f64| fixed(v, 0, Toward::Nearest);
     let says = format!(
         "VI {} against {} of new oil; about {} expected of {}",
@@ -101,7 +113,11 @@ fn vi(cause: Cause, theta: &Theta, sample: &Sample, label: &Profile) -> Option<E
     let (moved, expected) = (found - vi, wanted - vi);
     let off = (moved - expected).abs();
     if off <= 5.0_f64.max(0.35 * expected.abs()) {
-        Some(Evidence::speaks_for("VI", says, if expected.abs() > 4.0 { 1.0 } else { 0.3 }))
+        Some(Evidence::speaks_for(
+            "VI",
+            says,
+            if expected.abs() > 4.0 { 1.0 } else { 0.3 },
+        ))
     } else {
         Some(Evidence::against("VI", says, (off / 6.0).min(4.0)))
     }
@@ -126,7 +142,11 @@ fn figure(seen: &Seen, theta: &Theta, none: &Theta) -> Option<Evidence> {
         seen.reading.says(),
         digits(seen.value),
         digits(seen.new),
-        digits(mean.max(if seen.reading == Reading::Flash { -60.0 } else { 0.0 }))
+        digits(mean.max(if seen.reading == Reading::Flash {
+            -60.0
+        } else {
+            0.0
+        }))
     );
     let differs = (mean - unmoved).abs() > 1.0 * (seen.sigma + 0.3 * seen.spread).max(1e-9);
     line(seen.reading, says, z, z0, differs)
@@ -137,7 +157,11 @@ fn figure(seen: &Seen, theta: &Theta, none: &Theta) -> Option<Evidence> {
 fn line(reading: Reading, says: String, z: f64, z0: f64, differs: bool) -> Option<Evidence> {
     let gain = 4.0 * (ln(1.0 + z0 * z0 / 7.0) - ln(1.0 + z * z / 7.0));
     if z.abs() > FAR {
-        Some(Evidence::against(reading.key(), says, (0.5 * z * z).min(8.0)))
+        Some(Evidence::against(
+            reading.key(),
+            says,
+            (0.5 * z * z).min(8.0),
+        ))
     } else if differs && gain > 0.3 {
         Some(Evidence::speaks_for(reading.key(), says, gain))
     } else if differs && gain < -0.3 {
@@ -158,7 +182,10 @@ fn mixture(theta: &Theta, sample: &Sample, label: &Profile) -> Vec<Evidence> {
     if let Some((d, _)) = sample.nu[0]
         && let Some(x) = share_by_viscosity(label, &mixed.profile, label.nu40() * exp(d))
     {
-        let says = format!("{says_oil}: a share of about {} % gives this viscosity at 40 degC (blend relation)", share(x));
+        let says = format!(
+            "{says_oil}: a share of about {} % gives this viscosity at 40 degC (blend relation)",
+            share(x)
+        );
         list.push(Evidence::speaks_for("blend", says, 0.1));
     }
     for seen in &sample.additive {
@@ -170,7 +197,11 @@ fn mixture(theta: &Theta, sample: &Sample, label: &Profile) -> Vec<Evidence> {
         }
         let x = (seen.value - seen.new) / (other.value - seen.new);
         if (0.0..=1.2).contains(&x) && mixed.oil.is_some() {
-            let says = format!("{says_oil}: a share of about {} % gives this {}", share(x.min(1.0)), seen.reading.says());
+            let says = format!(
+                "{says_oil}: a share of about {} % gives this {}",
+                share(x.min(1.0)),
+                seen.reading.says()
+            );
             list.push(Evidence::speaks_for(seen.reading.key(), says, 0.1));
         }
     }

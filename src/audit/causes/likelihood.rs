@@ -72,7 +72,10 @@ impl Sample {
             Reading::Density,
         ];
         Self {
-            nu: [nu(Reading::Nu40, label.ln40), nu(Reading::Nu100, label.ln100)],
+            nu: [
+                nu(Reading::Nu40, label.ln40),
+                nu(Reading::Nu100, label.ln100),
+            ],
             common: batch * batch + DRIFT * DRIFT,
             others: others.into_iter().filter_map(seen).collect(),
             additive: ADDITIVE.into_iter().filter_map(seen).collect(),
@@ -90,7 +93,11 @@ impl Sample {
         match self.nu {
             [Some((a, va)), Some((b, vb))] => {
                 let (ra, rb) = (a - theta.d[0], b - theta.d[1]);
-                let (va, vb, c) = (va + model + self.common, vb + model + self.common, self.common);
+                let (va, vb, c) = (
+                    va + model + self.common,
+                    vb + model + self.common,
+                    self.common,
+                );
                 let det = va * vb - c * c;
                 let m = (vb * ra * ra - 2.0 * c * ra * rb + va * rb * rb) / det;
                 -0.5 * ln(det) - 4.5 * ln(1.0 + m / 7.0)
@@ -144,11 +151,17 @@ pub(super) fn expected(seen: &Seen, theta: &Theta) -> (f64, f64) {
     };
     let own = match seen.reading {
         Reading::Oxidation | Reading::Fuel => seen.new,
-        Reading::Flash | Reading::AcidNumber | Reading::Density if other.is_none() => seen.new - from_other,
+        Reading::Flash | Reading::AcidNumber | Reading::Density if other.is_none() => {
+            seen.new - from_other
+        }
         _ => own,
     };
     // additives deplete by some per cent in service
-    let service = if seen.reading.is_element() { 0.06 * seen.new } else { 0.0 };
+    let service = if seen.reading.is_element() {
+        0.06 * seen.new
+    } else {
+        0.0
+    };
     let spread = theta.kept * seen.spread;
     let variance = spread * spread
         + spread_other * spread_other

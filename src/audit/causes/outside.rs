@@ -30,15 +30,105 @@ const WIDE: &[f64] = &[
 ];
 
 const SORTS: &[Sort] = &[
-    Sort { name: "mineral oil without zinc", base: BaseStock::MineralI, vi: 98.0, zinc: 2.0, phosphorus: 40.0, calcium: 5.0, acid: 0.2, grades: WIDE, thickened: false },
-    Sort { name: "mineral hydraulic oil with zinc", base: BaseStock::MineralI, vi: 102.0, zinc: 420.0, phosphorus: 360.0, calcium: 40.0, acid: 0.6, grades: &[10.0, 15.0, 22.0, 32.0, 46.0, 68.0, 100.0, 150.0], thickened: false },
-    Sort { name: "mineral EP gear oil", base: BaseStock::MineralI, vi: 96.0, zinc: 5.0, phosphorus: 280.0, calcium: 5.0, acid: 0.8, grades: &[68.0, 100.0, 150.0, 220.0, 320.0, 460.0, 680.0], thickened: false },
-    Sort { name: "hydraulic oil of high viscosity index", base: BaseStock::MineralI, vi: 155.0, zinc: 380.0, phosphorus: 320.0, calcium: 40.0, acid: 0.6, grades: &[15.0, 22.0, 32.0, 46.0, 68.0, 100.0], thickened: true },
-    Sort { name: "synthetic oil (PAO)", base: BaseStock::Pao, vi: 145.0, zinc: 5.0, phosphorus: 150.0, calcium: 5.0, acid: 0.4, grades: WIDE, thickened: false },
-    Sort { name: "multigrade engine oil", base: BaseStock::MineralII, vi: 138.0, zinc: 1150.0, phosphorus: 1000.0, calcium: 2200.0, acid: 2.2, grades: &[70.0, 90.0, 108.0, 130.0], thickened: true },
-    Sort { name: "ester oil", base: BaseStock::PolyolEster, vi: 185.0, zinc: 2.0, phosphorus: 100.0, calcium: 3.0, acid: 0.5, grades: &[32.0, 46.0, 68.0, 100.0], thickened: false },
-    Sort { name: "polyglycol", base: BaseStock::PagWaterSoluble, vi: 225.0, zinc: 2.0, phosphorus: 60.0, calcium: 2.0, acid: 0.3, grades: &[68.0, 150.0, 220.0, 320.0, 460.0], thickened: false },
-    Sort { name: "vegetable oil", base: BaseStock::Vegetable, vi: 210.0, zinc: 2.0, phosphorus: 50.0, calcium: 3.0, acid: 0.8, grades: &[32.0, 46.0, 68.0], thickened: false },
+    Sort {
+        name: "mineral oil without zinc",
+        base: BaseStock::MineralI,
+        vi: 98.0,
+        zinc: 2.0,
+        phosphorus: 40.0,
+        calcium: 5.0,
+        acid: 0.2,
+        grades: WIDE,
+        thickened: false,
+    },
+    Sort {
+        name: "mineral hydraulic oil with zinc",
+        base: BaseStock::MineralI,
+        vi: 102.0,
+        zinc: 420.0,
+        phosphorus: 360.0,
+        calcium: 40.0,
+        acid: 0.6,
+        grades: &[10.0, 15.0, 22.0, 32.0, 46.0, 68.0, 100.0, 150.0],
+        thickened: false,
+    },
+    Sort {
+        name: "mineral EP gear oil",
+        base: BaseStock::MineralI,
+        vi: 96.0,
+        zinc: 5.0,
+        phosphorus: 280.0,
+        calcium: 5.0,
+        acid: 0.8,
+        grades: &[68.0, 100.0, 150.0, 220.0, 320.0, 460.0, 680.0],
+        thickened: false,
+    },
+    Sort {
+        name: "hydraulic oil of high viscosity index",
+        base: BaseStock::MineralI,
+        vi: 155.0,
+        zinc: 380.0,
+        phosphorus: 320.0,
+        calcium: 40.0,
+        acid: 0.6,
+        grades: &[15.0, 22.0, 32.0, 46.0, 68.0, 100.0],
+        thickened: true,
+    },
+    Sort {
+        name: "synthetic oil (PAO)",
+        base: BaseStock::Pao,
+        vi: 145.0,
+        zinc: 5.0,
+        phosphorus: 150.0,
+        calcium: 5.0,
+        acid: 0.4,
+        grades: WIDE,
+        thickened: false,
+    },
+    Sort {
+        name: "multigrade engine oil",
+        base: BaseStock::MineralII,
+        vi: 138.0,
+        zinc: 1150.0,
+        phosphorus: 1000.0,
+        calcium: 2200.0,
+        acid: 2.2,
+        grades: &[70.0, 90.0, 108.0, 130.0],
+        thickened: true,
+    },
+    Sort {
+        name: "ester oil",
+        base: BaseStock::PolyolEster,
+        vi: 185.0,
+        zinc: 2.0,
+        phosphorus: 100.0,
+        calcium: 3.0,
+        acid: 0.5,
+        grades: &[32.0, 46.0, 68.0, 100.0],
+        thickened: false,
+    },
+    Sort {
+        name: "polyglycol",
+        base: BaseStock::PagWaterSoluble,
+        vi: 225.0,
+        zinc: 2.0,
+        phosphorus: 60.0,
+        calcium: 2.0,
+        acid: 0.3,
+        grades: &[68.0, 150.0, 220.0, 320.0, 460.0],
+        thickened: false,
+    },
+    Sort {
+        name: "vegetable oil",
+        base: BaseStock::Vegetable,
+        vi: 210.0,
+        zinc: 2.0,
+        phosphorus: 50.0,
+        calcium: 3.0,
+        acid: 0.8,
+        grades: &[32.0, 46.0, 68.0],
+        thickened: false,
+    },
 ];
 
 /// The oils not on the site.
@@ -56,7 +146,14 @@ fn one(sort: &Sort, nu40: f64) -> Option<Arc<Mixed>> {
     let nu100 = to_mm2_s(viscosity_index::nu100(mm2_s(nu40), number(sort.vi)).ok()?);
     let mut figures = BTreeMap::new();
     let mut put = |reading, value: f64, spread: f64| {
-        figures.insert(reading, Expected { value, spread, from: From::Usual });
+        figures.insert(
+            reading,
+            Expected {
+                value,
+                spread,
+                from: From::Usual,
+            },
+        );
     };
     let about = |value: f64| 0.45 * value + 6.0;
     put(Reading::Zn, sort.zinc, about(sort.zinc));

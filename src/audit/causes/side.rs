@@ -27,7 +27,11 @@ pub struct Around<'a> {
     pub water_entry: Option<&'a str>,
 }
 
-pub(super) fn causes(figures: &Figures, label: Option<&Profile>, around: &Around<'_>) -> Vec<Named> {
+pub(super) fn causes(
+    figures: &Figures,
+    label: Option<&Profile>,
+    around: &Around<'_>,
+) -> Vec<Named> {
     let all = [
         water(figures, label, around),
         copper(figures, label, around),
@@ -73,16 +77,28 @@ fn water(figures: &Figures, label: Option<&Profile>, around: &Around<'_>) -> Opt
         ln(water / watch) + 3.0,
     )];
     // salts of cooling water; boron, calcium and magnesium may be additives and count only over new oil
-    let salts: Vec<(Reading, f64)> = [Reading::Na, Reading::K, Reading::B, Reading::Mg, Reading::Ca]
-        .into_iter()
-        .filter_map(|r| Some((r, rise(figures, label, r)?)))
-        .filter(|(r, up)| *up > 10.0_f64.max(0.3 * new_of(label, *r)))
-        .collect();
-    let salty = salts.iter().any(|(r, up)| matches!(r, Reading::Na | Reading::K) && *up > 15.0);
+    let salts: Vec<(Reading, f64)> = [
+        Reading::Na,
+        Reading::K,
+        Reading::B,
+        Reading::Mg,
+        Reading::Ca,
+    ]
+    .into_iter()
+    .filter_map(|r| Some((r, rise(figures, label, r)?)))
+    .filter(|(r, up)| *up > 10.0_f64.max(0.3 * new_of(label, *r)))
+    .collect();
+    let salty = salts
+        .iter()
+        .any(|(r, up)| matches!(r, Reading::Na | Reading::K) && *up > 15.0);
     for (reading, up) in &salts {
         evidence.push(Evidence::speaks_for(
             reading.key(),
-            format!("{} up by {}, as cooling water brings", reading.says(), ppm(*up)),
+            format!(
+                "{} up by {}, as cooling water brings",
+                reading.says(),
+                ppm(*up)
+            ),
             1.0,
         ));
     }
@@ -91,15 +107,26 @@ fn water(figures: &Figures, label: Option<&Profile>, around: &Around<'_>) -> Opt
     {
         evidence.push(Evidence::speaks_for(
             Reading::Na.key(),
-            format!("sodium up by no more than {}: condensate or steam rather than cooling water", ppm(na.max(0.0))),
+            format!(
+                "sodium up by no more than {}: condensate or steam rather than cooling water",
+                ppm(na.max(0.0))
+            ),
             0.3,
         ));
     }
     if let Some(entry) = around.water_entry {
-        evidence.push(Evidence::speaks_for("site", format!("water entry at the machine: {entry}"), 0.5));
+        evidence.push(Evidence::speaks_for(
+            "site",
+            format!("water entry at the machine: {entry}"),
+            0.5,
+        ));
     }
     let strength = 4.0 + 2.5 * ln(water / watch);
-    let cause = if salty && salts.len() >= 2 { Cause::CoolingWater } else { Cause::Water };
+    let cause = if salty && salts.len() >= 2 {
+        Cause::CoolingWater
+    } else {
+        Cause::Water
+    };
     Some(Named::by_signs(cause, strength.min(12.0), evidence))
 }
 
@@ -114,7 +141,11 @@ fn copper(figures: &Figures, label: Option<&Profile>, around: &Around<'_>) -> Op
         1.0 + ln(copper / 40.0),
     )];
     let mut signs = 0;
-    for (reading, alloy) in [(Reading::Sn, "bronze"), (Reading::Pb, "bronze or an overlay"), (Reading::Zn, "brass")] {
+    for (reading, alloy) in [
+        (Reading::Sn, "bronze"),
+        (Reading::Pb, "bronze or an overlay"),
+        (Reading::Zn, "brass"),
+    ] {
         if let Some(up) = rise(figures, label, reading)
             && up >= (0.03 * copper).max(5.0)
             && (reading != Reading::Zn || up >= 0.2 * copper)
@@ -129,7 +160,10 @@ fn copper(figures: &Figures, label: Option<&Profile>, around: &Around<'_>) -> Op
     {
         signs += 1;
         use crate::quantity::show::{Toward, fixed};
-        let says = format!("acid number up by {} mg KOH/g: corrosive", fixed(up, 2, Toward::Nearest));
+        let says = format!(
+            "acid number up by {} mg KOH/g: corrosive",
+            fixed(up, 2, Toward::Nearest)
+        );
         evidence.push(Evidence::speaks_for(Reading::AcidNumber.key(), says, 1.0));
     }
     if around.sulphur == Some(Sulphur::Active) {
@@ -141,7 +175,11 @@ fn copper(figures: &Figures, label: Option<&Profile>, around: &Around<'_>) -> Op
         ));
     }
     if around.yellow_metal == Some(true) {
-        evidence.push(Evidence::speaks_for("site", "copper alloys in the machine".to_owned(), 0.5));
+        evidence.push(Evidence::speaks_for(
+            "site",
+            "copper alloys in the machine".to_owned(),
+            0.5,
+        ));
     }
     if let Some(iron) = rise(figures, label, Reading::Fe) {
         // wear takes iron and copper together, attack takes copper alone
@@ -164,7 +202,8 @@ fn copper(figures: &Figures, label: Option<&Profile>, around: &Around<'_>) -> Op
         return None;
     }
     let strength: f64 = evidence.iter().map(|e| e.weight).sum();
-    (strength >= 3.0).then(|| Named::by_signs(Cause::CopperAttack, (1.5 * strength).min(12.0), evidence))
+    (strength >= 3.0)
+        .then(|| Named::by_signs(Cause::CopperAttack, (1.5 * strength).min(12.0), evidence))
 }
 
 fn dirt(figures: &Figures, label: Option<&Profile>, around: &Around<'_>) -> Option<Named> {
@@ -196,7 +235,11 @@ fn dirt(figures: &Figures, label: Option<&Profile>, around: &Around<'_>) -> Opti
         evidence.push(Evidence::speaks_for("iso4406", says, 1.0));
     }
     let strength: f64 = evidence.iter().map(|e| e.weight).sum();
-    Some(Named::by_signs(Cause::Dirt, (1.5 * strength).min(12.0), evidence))
+    Some(Named::by_signs(
+        Cause::Dirt,
+        (1.5 * strength).min(12.0),
+        evidence,
+    ))
 }
 
 fn soot(figures: &Figures, around: &Around<'_>) -> Option<Named> {

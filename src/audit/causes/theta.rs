@@ -64,9 +64,18 @@ impl Theta {
             d: [0.0, 0.0],
             spread: 0.003,
             flash: Shift::default(),
-            acid: Shift { by: 0.03, spread: 0.08 },
-            oxidation: Shift { by: 1.0, spread: 2.0 },
-            fuel: Shift { by: 0.1, spread: 0.2 },
+            acid: Shift {
+                by: 0.03,
+                spread: 0.08,
+            },
+            oxidation: Shift {
+                by: 1.0,
+                spread: 2.0,
+            },
+            fuel: Shift {
+                by: 0.1,
+                spread: 0.2,
+            },
             kept: 1.0,
             mixed: None,
             size: 0.0,
@@ -137,7 +146,11 @@ impl Grid {
             let n = (list.len().div_ceil(step.max(1)) as f64).max(1.0);
             let thin = (n / (list.len() as f64).max(1.0)).max(1e-9);
             let pick = list.iter().skip(step / 2).step_by(step.max(1)).cloned();
-            pick.map(|t| Theta { log_prior: t.log_prior - ln(thin), ..t }).collect()
+            pick.map(|t| Theta {
+                log_prior: t.log_prior - ln(thin),
+                ..t
+            })
+            .collect()
         };
         let (few_shear, few_dilution, few_oxidation) = (some(&shear, 3), some(&dilution, 3), some(&oxidation, 5));
         let few_wrong = some(&wrong, 4);
@@ -180,7 +193,9 @@ fn shared(mut thetas: Vec<Theta>, log_prior: f64) -> Vec<Theta> {
 /// temperature is 1.
 fn shear(label: &Profile) -> Vec<Theta> {
     let mut thetas = Vec::new();
-    for loss in [0.03, 0.045, 0.06, 0.08, 0.1, 0.13, 0.17, 0.22, 0.28, 0.36, 0.45] {
+    for loss in [
+        0.03, 0.045, 0.06, 0.08, 0.1, 0.13, 0.17, 0.22, 0.28, 0.36, 0.45,
+    ] {
         for ratio in [0.62, 0.75, 0.84, 0.93, 1.0] {
             let d100 = ln(1.0 - loss);
             thetas.push(Theta::of(Cause::PolymerShear, [ratio * d100, d100], loss));
@@ -195,7 +210,9 @@ const DILUENTS: [[f64; 2]; 3] = [[1.0, 0.55], [2.5, 1.05], [4.0, 1.45]];
 
 fn dilution(label: &Profile, setting: Setting) -> Vec<Theta> {
     let mut thetas = Vec::new();
-    for share in [0.01, 0.015, 0.02, 0.03, 0.04, 0.055, 0.075, 0.1, 0.14, 0.2, 0.3] {
+    for share in [
+        0.01, 0.015, 0.02, 0.03, 0.04, 0.055, 0.075, 0.1, 0.14, 0.2, 0.3,
+    ] {
         for diluent in DILUENTS {
             let Some(d) = blended(label, diluent, share) else {
                 continue;
@@ -204,8 +221,14 @@ fn dilution(label: &Profile, setting: Setting) -> Vec<Theta> {
             // further (common practice; 4.5 % took 52 K in the demonstration)
             let flash = -70.0 * (1.0 - exp(-share / 0.03));
             thetas.push(Theta {
-                flash: Shift { by: flash, spread: 15.0 },
-                fuel: Shift { by: 100.0 * share, spread: 25.0 * share + 0.3 },
+                flash: Shift {
+                    by: flash,
+                    spread: 15.0,
+                },
+                fuel: Shift {
+                    by: 100.0 * share,
+                    spread: 25.0 * share + 0.3,
+                },
                 kept: 1.0 - share,
                 spread: 0.006 + 0.08 * d[0].abs(),
                 ..Theta::of(Cause::Dilution, d, share)
@@ -221,7 +244,9 @@ fn blended(label: &Profile, other: [f64; 2], share: f64) -> Option<[f64; 2]> {
     let mut d = [0.0; 2];
     for i in 0..2 {
         let nus = [mm2_s(own[i]), mm2_s(other[i])];
-        let blend = Rule::Walther.blend(&[number(1.0 - share), number(share)], &nus).ok()?;
+        let blend = Rule::Walther
+            .blend(&[number(1.0 - share), number(share)], &nus)
+            .ok()?;
         d[i] = ln(to_mm2_s(blend) / own[i]);
     }
     Some(d)
@@ -235,9 +260,18 @@ fn oxidation() -> Vec<Theta> {
         for ratio in [0.4, 0.5, 0.6, 0.72] {
             for (acid, bands) in [(1.5, 45.0), (4.0, 80.0), (9.0, 130.0), (20.0, 300.0)] {
                 thetas.push(Theta {
-                    acid: Shift { by: acid * rise, spread: 0.35 * acid * rise + 0.05 },
-                    oxidation: Shift { by: bands * rise, spread: 0.35 * bands * rise + 1.0 },
-                    flash: Shift { by: 3.0, spread: 5.0 },
+                    acid: Shift {
+                        by: acid * rise,
+                        spread: 0.35 * acid * rise + 0.05,
+                    },
+                    oxidation: Shift {
+                        by: bands * rise,
+                        spread: 0.35 * bands * rise + 1.0,
+                    },
+                    flash: Shift {
+                        by: 3.0,
+                        spread: 5.0,
+                    },
                     ..Theta::of(Cause::Oxidation, [rise, ratio * rise], rise)
                 });
             }
@@ -248,10 +282,19 @@ fn oxidation() -> Vec<Theta> {
 
 fn light_ends() -> Vec<Theta> {
     let mut thetas = Vec::new();
-    for (rise, flash) in [(0.03, 6.0), (0.06, 12.0), (0.1, 18.0), (0.16, 25.0), (0.25, 35.0)] {
+    for (rise, flash) in [
+        (0.03, 6.0),
+        (0.06, 12.0),
+        (0.1, 18.0),
+        (0.16, 25.0),
+        (0.25, 35.0),
+    ] {
         for ratio in [0.72, 0.82, 0.92] {
             thetas.push(Theta {
-                flash: Shift { by: flash, spread: 6.0 },
+                flash: Shift {
+                    by: flash,
+                    spread: 6.0,
+                },
                 ..Theta::of(Cause::LightEndLoss, [rise, ratio * rise], rise)
             });
         }
@@ -261,11 +304,23 @@ fn light_ends() -> Vec<Theta> {
 
 fn cracking(setting: Setting) -> Vec<Theta> {
     let mut thetas = Vec::new();
-    for (fall, flash) in [(0.03, -25.0), (0.06, -40.0), (0.1, -55.0), (0.17, -70.0), (0.28, -85.0)] {
+    for (fall, flash) in [
+        (0.03, -25.0),
+        (0.06, -40.0),
+        (0.1, -55.0),
+        (0.17, -70.0),
+        (0.28, -85.0),
+    ] {
         for ratio in [0.78, 0.88] {
             thetas.push(Theta {
-                flash: Shift { by: flash, spread: 12.0 },
-                acid: Shift { by: 0.15, spread: 0.2 },
+                flash: Shift {
+                    by: flash,
+                    spread: 12.0,
+                },
+                acid: Shift {
+                    by: 0.15,
+                    spread: 0.2,
+                },
                 ..Theta::of(Cause::Cracking, [-fall, -ratio * fall], fall)
             });
         }
@@ -278,7 +333,10 @@ fn gas() -> Vec<Theta> {
     for fall in [0.06, 0.12, 0.2, 0.32, 0.5] {
         for ratio in [0.5, 0.65, 0.8] {
             thetas.push(Theta {
-                flash: Shift { by: -8.0, spread: 8.0 },
+                flash: Shift {
+                    by: -8.0,
+                    spread: 8.0,
+                },
                 ..Theta::of(Cause::Gas, [-fall, -ratio * fall], fall)
             });
         }
@@ -287,14 +345,18 @@ fn gas() -> Vec<Theta> {
 }
 
 /// Shares of another oil that are tried.
-const SHARES: [f64; 12] = [0.03, 0.05, 0.08, 0.11, 0.15, 0.2, 0.27, 0.35, 0.45, 0.6, 0.8, 1.0];
+const SHARES: [f64; 12] = [
+    0.03, 0.05, 0.08, 0.11, 0.15, 0.2, 0.27, 0.35, 0.45, 0.6, 0.8, 1.0,
+];
 
 /// Other oils: those of the site, and as likely in all one that is not on the site.
 fn wrong(label: &Profile, others: &[Arc<Mixed>]) -> Vec<Theta> {
     let (mut inside, mut outside) = (Vec::new(), Vec::new());
     for other in others {
         let profile = &other.profile;
-        let apart = (profile.ln40 - label.ln40).abs().max((profile.ln100 - label.ln100).abs());
+        let apart = (profile.ln40 - label.ln40)
+            .abs()
+            .max((profile.ln100 - label.ln100).abs());
         let alike = apart < 0.02 && profile.base == label.base && same_additives(label, profile);
         if alike {
             continue;
@@ -310,7 +372,11 @@ fn wrong(label: &Profile, others: &[Arc<Mixed>]) -> Vec<Theta> {
                 spread: 0.004 + 0.02 * d[0].abs().min(1.0) + 0.01 * (1.0 - share) * apart.min(1.0),
                 ..Theta::of(kind_of_other(label, profile), d, share)
             };
-            if other.oil.is_some() { inside.push(theta) } else { outside.push(theta) }
+            if other.oil.is_some() {
+                inside.push(theta)
+            } else {
+                outside.push(theta)
+            }
         }
     }
     let mut all = shared(inside, -2.8);
@@ -319,12 +385,12 @@ fn wrong(label: &Profile, others: &[Arc<Mixed>]) -> Vec<Theta> {
 }
 
 fn same_additives(a: &Profile, b: &Profile) -> bool {
-    super::super::profile::ADDITIVE.iter().all(|e| {
-        match (a.figures.get(e), b.figures.get(e)) {
+    super::super::profile::ADDITIVE
+        .iter()
+        .all(|e| match (a.figures.get(e), b.figures.get(e)) {
             (Some(a), Some(b)) => (a.value - b.value).abs() <= 2.0 * (a.spread + b.spread),
             _ => true,
-        }
-    })
+        })
 }
 
 /// What another oil is called beside the labelled one.

@@ -31,8 +31,29 @@ pub(super) enum Read {
 
 /// Words laboratories write where nothing was measured.
 const NOTHING: &[&str] = &[
-    "", "-", "--", "---", "n/a", "na", "n.a.", "nd", "n.d.", "nil", "none", "nr", "n.r.", "nt",
-    "n.t.", "not run", "not tested", "not measured", "not determined", "unknown", "?", ".", "x",
+    "",
+    "-",
+    "--",
+    "---",
+    "n/a",
+    "na",
+    "n.a.",
+    "nd",
+    "n.d.",
+    "nil",
+    "none",
+    "nr",
+    "n.r.",
+    "nt",
+    "n.t.",
+    "not run",
+    "not tested",
+    "not measured",
+    "not determined",
+    "unknown",
+    "?",
+    ".",
+    "x",
     "pending",
 ];
 
@@ -87,7 +108,13 @@ fn of_text(text: &str, how: How, column: u32) -> Read {
     let (number, unit) = rest.split_at(end);
     // the e of a number is not the first letter of a unit
     let (number, unit) = match number.find(['e', 'E']) {
-        Some(at) if !number[at + 1..].trim_start_matches(['+', '-']).starts_with(|c: char| c.is_ascii_digit()) => rest.split_at(at),
+        Some(at)
+            if !number[at + 1..]
+                .trim_start_matches(['+', '-'])
+                .starts_with(|c: char| c.is_ascii_digit()) =>
+        {
+            rest.split_at(at)
+        }
         _ => (number, unit),
     };
     let unit = unit.trim();
@@ -126,7 +153,9 @@ fn bound(text: &str) -> (Bounds, &str) {
 fn looks_like_date(text: &str) -> bool {
     let parts: Vec<&str> = text.split(['-', '/', '.']).collect();
     parts.len() == 3
-        && parts.iter().all(|p| !p.is_empty() && p.len() <= 4 && p.bytes().all(|b| b.is_ascii_digit()))
+        && parts
+            .iter()
+            .all(|p| !p.is_empty() && p.len() <= 4 && p.bytes().all(|b| b.is_ascii_digit()))
         && parts.iter().any(|p| p.len() == 4)
 }
 
@@ -146,7 +175,9 @@ fn decimal(text: &str, comma: bool) -> Result<f64, Read> {
         let grouped = whole.len() <= 3
             && !whole.trim_start_matches('-').is_empty()
             && !whole.starts_with('0')
-            && groups.iter().all(|g| g.len() == 3 && g.bytes().all(|b| b.is_ascii_digit()));
+            && groups
+                .iter()
+                .all(|g| g.len() == 3 && g.bytes().all(|b| b.is_ascii_digit()));
         // 1,250 alone may as well be 1.250: it is not guessed at
         let sure = grouped && (plain.contains(part) || groups.len() > 1);
         if !sure {
@@ -159,7 +190,10 @@ fn decimal(text: &str, comma: bool) -> Result<f64, Read> {
         .map(|c| if c == part { '.' } else { c })
         .collect();
     let value: Result<f64, _> = number.parse();
-    value.ok().filter(|v| v.is_finite()).ok_or(Read::NotUnderstood)
+    value
+        .ok()
+        .filter(|v| v.is_finite())
+        .ok_or(Read::NotUnderstood)
 }
 
 /// What an oil in use can have, in the unit of the reading: lowest and highest.
@@ -256,8 +290,14 @@ mod tests {
         assert_eq!(value(Reading::Nu40, "45,6", true), exactly(45.6));
         assert_eq!(value(Reading::Nu40, "45.6 cSt", false), exactly(45.6));
         assert_eq!(value(Reading::Fe, "<5", false), Some((5.0, Bounds::Below)));
-        assert_eq!(value(Reading::Fe, "> 200 ppm", false), Some((200.0, Bounds::Above)));
-        assert_eq!(value(Reading::HoursOnOil, "1,250.5", false), exactly(1250.5));
+        assert_eq!(
+            value(Reading::Fe, "> 200 ppm", false),
+            Some((200.0, Bounds::Above))
+        );
+        assert_eq!(
+            value(Reading::HoursOnOil, "1,250.5", false),
+            exactly(1250.5)
+        );
         assert_eq!(value(Reading::HoursOnOil, "1.250,5", true), exactly(1250.5));
         assert_eq!(value(Reading::Water, "1e3", false), exactly(1000.0));
         let water = value(Reading::Water, "0.02 %", false).expect("read");
@@ -268,7 +308,8 @@ mod tests {
 
     #[test]
     fn what_is_no_figure_is_told_apart() {
-        let text = |reading, t: &str, comma| read(Some(&Content::Text(t.into())), how(reading, comma), 1);
+        let text =
+            |reading, t: &str, comma| read(Some(&Content::Text(t.into())), how(reading, comma), 1);
         assert_eq!(text(Reading::Nu40, "n/a", false), Read::Nothing);
         assert_eq!(text(Reading::Nu40, "Not run", false), Read::Nothing);
         assert_eq!(text(Reading::Nu40, "45,6", false), Read::OtherDecimal);
@@ -278,11 +319,19 @@ mod tests {
         assert_eq!(text(Reading::Fe, "999", false), Read::Placeholder);
         assert!(matches!(text(Reading::Fe, "0", false), Read::Figure(_)));
         assert_eq!(text(Reading::Nu40, "12-10-2026", false), Read::IsDate);
-        assert_eq!(text(Reading::Nu40, "45 mPa.s", false), Read::OtherUnit("mPa.s".into()));
+        assert_eq!(
+            text(Reading::Nu40, "45 mPa.s", false),
+            Read::OtherUnit("mPa.s".into())
+        );
         assert_eq!(text(Reading::Nu40, "cloudy", false), Read::NotUnderstood);
         assert_eq!(text(Reading::Density, "12", false), Read::Impossible);
         assert_eq!(read(None, how(Reading::Nu40, false), 1), Read::Nothing);
-        let formula = Content::NoValue { formula: "=A1".into() };
-        assert_eq!(read(Some(&formula), how(Reading::Nu40, false), 1), Read::NoValue);
+        let formula = Content::NoValue {
+            formula: "=A1".into(),
+        };
+        assert_eq!(
+            read(Some(&formula), how(Reading::Nu40, false), 1),
+            Read::NoValue
+        );
     }
 }

@@ -37,7 +37,10 @@ pub(super) fn read(content: Option<&Content>, order: Option<DateOrder>) -> Day {
         [day] => day.split_once('T').map_or(*day, |(d, _)| d),
         _ => text,
     };
-    let pieces: Vec<&str> = text.split(['-', '/', '.', ' ']).filter(|p| !p.is_empty()).collect();
+    let pieces: Vec<&str> = text
+        .split(['-', '/', '.', ' '])
+        .filter(|p| !p.is_empty())
+        .collect();
     let [a, b, c] = pieces.as_slice() else {
         return Day::No;
     };
@@ -46,10 +49,19 @@ pub(super) fn read(content: Option<&Content>, order: Option<DateOrder>) -> Day {
     }
     // a year of four figures in front settles the order
     let stated = order.unwrap_or_default();
-    let order = if a.len() == 4 { DateOrder::YearMonthDay } else { stated };
+    let order = if a.len() == 4 {
+        DateOrder::YearMonthDay
+    } else {
+        stated
+    };
     match of(a, b, c, order) {
         Some(day) => Day::Is(day),
-        None if ORDERS.iter().any(|o| *o != order && of(a, b, c, *o).is_some()) => Day::OtherOrder,
+        None if ORDERS
+            .iter()
+            .any(|o| *o != order && of(a, b, c, *o).is_some()) =>
+        {
+            Day::OtherOrder
+        }
         None => Day::No,
     }
 }
@@ -105,7 +117,14 @@ mod tests {
     fn days_are_read_in_the_order_stated() {
         let the = Day::Is(Date::constant(2026, 10, 12));
         let dmy = Some(DateOrder::DayMonthYear);
-        for text in ["12-10-2026", "12.10.2026", "12/10/2026 08:30", "2026-10-12", "12 Oct 2026", "Oct 12, 2026"] {
+        for text in [
+            "12-10-2026",
+            "12.10.2026",
+            "12/10/2026 08:30",
+            "2026-10-12",
+            "12 Oct 2026",
+            "Oct 12, 2026",
+        ] {
             assert_eq!(day(text, dmy), the, "{text}");
         }
         assert_eq!(day("10/12/2026", Some(DateOrder::MonthDayYear)), the);
@@ -115,7 +134,10 @@ mod tests {
 
     #[test]
     fn days_of_another_order_are_not_guessed_at() {
-        assert_eq!(day("10/13/2026", Some(DateOrder::DayMonthYear)), Day::OtherOrder);
+        assert_eq!(
+            day("10/13/2026", Some(DateOrder::DayMonthYear)),
+            Day::OtherOrder
+        );
         assert_eq!(day("13-10-2026", None), Day::OtherOrder);
         assert_eq!(day("13-10-26", Some(DateOrder::DayMonthYear)), Day::No);
         assert_eq!(day("45.6", None), Day::No);

@@ -33,36 +33,180 @@ impl Headings {
 
 /// Other names under which a column is known, in the bare form of [`bare`].
 const KNOWN: &[(&str, &[&str])] = &[
-    ("bottle", &["sample", "sampleno", "sampleid", "samplenumber", "bottleno", "bottleid", "labno", "reportno"]),
-    ("machine", &["unit", "unitid", "tag", "equipment", "equipmentid", "asset", "assetid", "component", "machineid", "point"]),
-    ("label", &["oil", "oilname", "lubricant", "oilonlabel", "labelled", "product"]),
-    ("drawn", &["date", "sampledate", "datesampled", "sampled", "drawnon", "samplingdate", "datedrawn"]),
-    ("hours on oil", &["oilhours", "hrsonoil", "oilage", "oilhrs"]),
-    ("hours on machine", &["machinehours", "hours", "hrsonmachine", "unithours", "servicehours"]),
+    (
+        "bottle",
+        &[
+            "sample",
+            "sampleno",
+            "sampleid",
+            "samplenumber",
+            "bottleno",
+            "bottleid",
+            "labno",
+            "reportno",
+        ],
+    ),
+    (
+        "machine",
+        &[
+            "unit",
+            "unitid",
+            "tag",
+            "equipment",
+            "equipmentid",
+            "asset",
+            "assetid",
+            "component",
+            "machineid",
+            "point",
+        ],
+    ),
+    (
+        "label",
+        &[
+            "oil",
+            "oilname",
+            "lubricant",
+            "oilonlabel",
+            "labelled",
+            "product",
+        ],
+    ),
+    (
+        "drawn",
+        &[
+            "date",
+            "sampledate",
+            "datesampled",
+            "sampled",
+            "drawnon",
+            "samplingdate",
+            "datedrawn",
+        ],
+    ),
+    (
+        "hours on oil",
+        &["oilhours", "hrsonoil", "oilage", "oilhrs"],
+    ),
+    (
+        "hours on machine",
+        &[
+            "machinehours",
+            "hours",
+            "hrsonmachine",
+            "unithours",
+            "servicehours",
+        ],
+    ),
     ("topped up", &["topup", "oiladded", "makeup", "topupl"]),
-    ("nu40", &["kv40", "v40", "visc40", "visc40c", "viscosity40", "viscosity40c", "viscosity40degc", "kv40c", "viscat40c", "viscosityat40c", "viscosityat40degc", "vis40"]),
-    ("nu100", &["kv100", "v100", "visc100", "visc100c", "viscosity100", "viscosity100c", "viscosity100degc", "kv100c", "viscat100c", "viscosityat100c", "viscosityat100degc", "vis100"]),
-    ("density", &["density15", "density15c", "density15degc", "rho15"]),
-    ("flash", &["flashpoint", "flashcoc", "flashc", "flashpointc"]),
+    (
+        "nu40",
+        &[
+            "kv40",
+            "v40",
+            "visc40",
+            "visc40c",
+            "viscosity40",
+            "viscosity40c",
+            "viscosity40degc",
+            "kv40c",
+            "viscat40c",
+            "viscosityat40c",
+            "viscosityat40degc",
+            "vis40",
+        ],
+    ),
+    (
+        "nu100",
+        &[
+            "kv100",
+            "v100",
+            "visc100",
+            "visc100c",
+            "viscosity100",
+            "viscosity100c",
+            "viscosity100degc",
+            "kv100c",
+            "viscat100c",
+            "viscosityat100c",
+            "viscosityat100degc",
+            "vis100",
+        ],
+    ),
+    (
+        "density",
+        &["density15", "density15c", "density15degc", "rho15"],
+    ),
+    (
+        "flash",
+        &["flashpoint", "flashcoc", "flashc", "flashpointc"],
+    ),
     ("acid number", &["an", "tan", "acidno", "totalacidnumber"]),
     ("base number", &["bn", "tbn", "baseno", "totalbasenumber"]),
-    ("water", &["h2o", "watercontent", "waterppm", "karlfischer", "waterkf"]),
-    ("iso4406", &["iso", "isocode", "cleanliness", "cleanlinesscode", "particlecode"]),
-    ("oxidation", &["oxid", "ftiroxidation", "oxidationabscm", "ox"]),
+    (
+        "water",
+        &["h2o", "watercontent", "waterppm", "karlfischer", "waterkf"],
+    ),
+    (
+        "iso4406",
+        &[
+            "iso",
+            "isocode",
+            "cleanliness",
+            "cleanlinesscode",
+            "particlecode",
+        ],
+    ),
+    (
+        "oxidation",
+        &["oxid", "ftiroxidation", "oxidationabscm", "ox"],
+    ),
     ("nitration", &["nitr", "ftirnitration"]),
-    ("oxidation life left", &["rpvot", "rpvotofnew", "rulerofnew"]),
+    (
+        "oxidation life left",
+        &["rpvot", "rpvotofnew", "rulerofnew"],
+    ),
     ("fuel", &["fueldilution", "dilution"]),
     ("soot", &["sootcontent"]),
     ("count 4", &["particles4um", "c4um", "p4", "count4um"]),
     ("count 6", &["particles6um", "c6um", "p6", "count6um"]),
     ("count 14", &["particles14um", "c14um", "p14", "count14um"]),
-    ("flags", &["comments", "comment", "remarks", "remark", "note", "notes", "labcomment"]),
-    ("Fe", &["iron"]), ("Cu", &["copper"]), ("Pb", &["lead"]), ("Sn", &["tin"]), ("Sb", &["antimony"]),
-    ("Al", &["aluminium", "aluminum"]), ("Cr", &["chromium", "chrome"]), ("Ni", &["nickel"]),
-    ("Mo", &["molybdenum"]), ("Ag", &["silver"]), ("Ti", &["titanium"]), ("V", &["vanadium"]),
-    ("Mn", &["manganese"]), ("Si", &["silicon"]), ("Na", &["sodium"]), ("K", &["potassium"]),
-    ("Li", &["lithium"]), ("B", &["boron"]), ("Ca", &["calcium"]), ("Mg", &["magnesium"]),
-    ("Ba", &["barium"]), ("P", &["phosphorus"]), ("Zn", &["zinc"]), ("S", &["sulphur", "sulfur"]),
+    (
+        "flags",
+        &[
+            "comments",
+            "comment",
+            "remarks",
+            "remark",
+            "note",
+            "notes",
+            "labcomment",
+        ],
+    ),
+    ("Fe", &["iron"]),
+    ("Cu", &["copper"]),
+    ("Pb", &["lead"]),
+    ("Sn", &["tin"]),
+    ("Sb", &["antimony"]),
+    ("Al", &["aluminium", "aluminum"]),
+    ("Cr", &["chromium", "chrome"]),
+    ("Ni", &["nickel"]),
+    ("Mo", &["molybdenum"]),
+    ("Ag", &["silver"]),
+    ("Ti", &["titanium"]),
+    ("V", &["vanadium"]),
+    ("Mn", &["manganese"]),
+    ("Si", &["silicon"]),
+    ("Na", &["sodium"]),
+    ("K", &["potassium"]),
+    ("Li", &["lithium"]),
+    ("B", &["boron"]),
+    ("Ca", &["calcium"]),
+    ("Mg", &["magnesium"]),
+    ("Ba", &["barium"]),
+    ("P", &["phosphorus"]),
+    ("Zn", &["zinc"]),
+    ("S", &["sulphur", "sulfur"]),
 ];
 
 /// A heading without its unit, case and separators: `Visc. @ 40 °C (cSt)` is `visc40c`.
@@ -95,14 +239,22 @@ fn known(heading: &str) -> Option<Column> {
         return None;
     }
     let same = |key: &str| bare(key) == name;
-    let by_key = Column::TEXTS.iter().map(|(k, _)| *k).chain(Reading::ALL.iter().map(|r| r.key()));
+    let by_key = Column::TEXTS
+        .iter()
+        .map(|(k, _)| *k)
+        .chain(Reading::ALL.iter().map(|r| r.key()));
     if let Some(key) = by_key.clone().find(|k| same(k)) {
         return Column::of(key);
     }
-    if let Some((key, _)) = KNOWN.iter().find(|(_, names)| names.contains(&name.as_str())) {
+    if let Some((key, _)) = KNOWN
+        .iter()
+        .find(|(_, names)| names.contains(&name.as_str()))
+    {
         return Column::of(key);
     }
-    let new = name.strip_suffix("new").or_else(|| name.strip_prefix("new"))?;
+    let new = name
+        .strip_suffix("new")
+        .or_else(|| name.strip_prefix("new"))?;
     let reading = Reading::ALL.iter().find(|r| bare(r.key()) == new).copied();
     let also = || {
         let found = KNOWN.iter().find(|(_, names)| names.contains(&new))?;
@@ -177,7 +329,12 @@ pub(super) fn find(
 }
 
 fn same(a: &str, b: &str) -> bool {
-    let squeezed = |t: &str| t.split_whitespace().collect::<Vec<_>>().join(" ").to_lowercase();
+    let squeezed = |t: &str| {
+        t.split_whitespace()
+            .collect::<Vec<_>>()
+            .join(" ")
+            .to_lowercase()
+    };
     a == b || squeezed(a) == squeezed(b)
 }
 
@@ -191,7 +348,10 @@ fn columns(
     let named = map.map_or(&[][..], |m| &m.columns);
     let mut found: Vec<(u32, Column, Option<How>)> = Vec::new();
     for (column, heading) in named {
-        let at: Vec<&(u32, String)> = all.iter().filter(|(_, h)| same(h, &heading.value)).collect();
+        let at: Vec<&(u32, String)> = all
+            .iter()
+            .filter(|(_, h)| same(h, &heading.value))
+            .collect();
         match at.as_slice() {
             [] => told.push(missing(*column, heading, all, about)),
             [(at, text)] => found.push((*at, *column, how(map, *column, text))),
@@ -216,10 +376,15 @@ fn columns(
         told.push(
             Problem::new(
                 Code::ColumnMissing,
-                format!("{}: no column says which machine a sample is from", about.name),
+                format!(
+                    "{}: no column says which machine a sample is from",
+                    about.name
+                ),
                 about.at(row, 1),
             )
-            .write(Write::words("columns: { machine: HEADING } in the samples file")),
+            .write(Write::words(
+                "columns: { machine: HEADING } in the samples file",
+            )),
         );
     }
     found.sort_by_key(|(at, ..)| *at);
@@ -290,9 +455,16 @@ fn twice(heading: &str, row: u32, column: u32, about: &About<'_>) -> Problem {
 /// No row of headings: most often another delimiter than the file has.
 fn no_headings(about: &About<'_>) -> Problem {
     let first = about.sheet.rows.first();
-    let text = first.and_then(|r| r.cells.first()).map(|c| c.content.text());
+    let text = first
+        .and_then(|r| r.cells.first())
+        .map(|c| c.content.text());
     let text = text.unwrap_or_default();
-    let marks = [(';', "semicolon"), ('\t', "tab"), (',', "comma"), ('|', "stroke")];
+    let marks = [
+        (';', "semicolon"),
+        ('\t', "tab"),
+        (',', "comma"),
+        ('|', "stroke"),
+    ];
     let inside = marks.iter().max_by_key(|(m, _)| text.matches(*m).count());
     let inside = inside.filter(|(m, _)| text.matches(*m).count() >= 2);
     let row = first.map_or(1, |r| r.number);
@@ -323,9 +495,15 @@ mod tests {
         assert_eq!(known("Visc. @ 40 °C (cSt)"), None);
         assert_eq!(known("Visc 40C (cSt)"), Some(Column::InUse(Reading::Nu40)));
         assert_eq!(known("KV100 [mm²/s]"), Some(Column::InUse(Reading::Nu100)));
-        assert_eq!(known("hours_on_oil"), Some(Column::InUse(Reading::HoursOnOil)));
+        assert_eq!(
+            known("hours_on_oil"),
+            Some(Column::InUse(Reading::HoursOnOil))
+        );
         assert_eq!(known("Zn new"), Some(Column::New(Reading::Zn)));
-        assert_eq!(known("Acid number new"), Some(Column::New(Reading::AcidNumber)));
+        assert_eq!(
+            known("Acid number new"),
+            Some(Column::New(Reading::AcidNumber))
+        );
         assert_eq!(known("Sample date"), Some(Column::Drawn));
         assert_eq!(known("Colour"), None);
         assert_eq!(parted("Water, %"), ("Water", Some("%")));

@@ -24,13 +24,7 @@ pub fn audit(session: &mut Session<'_>, args: &Audit) -> Exit {
 fn run(session: &mut Session<'_>, args: &Audit) -> Result<Exit, Exit> {
     let mut loaded = session.load(&[])?;
     let settings = session.settings(true)?;
-    let points = session.points(&loaded.site, &args.tags)?;
-    let only = if args.tags.is_empty() {
-        Vec::new()
-    } else {
-        let place = |p: &crate::model::Point| loaded.site.points.iter().position(|q| std::ptr::eq(p, q));
-        points.into_iter().filter_map(place).collect()
-    };
+    let only = only(session, &loaded, &args.tags)?;
     let asked = Asked {
         on: day_of(session, &loaded)?,
         matches: matches(session, &loaded, &args.matches)?,
@@ -41,14 +35,39 @@ fn run(session: &mut Session<'_>, args: &Audit) -> Result<Exit, Exit> {
     let bottles = session.bottles(&mut loaded, comma)?;
     let scales = Scales::new(&loaded.site, &loaded.rules, settings)
         .map_err(|(oil, misfit)| session.misfit(&oil, &misfit))?;
-    let tables = Bottles { list: Vec::new(), tables: bottles.tables };
+    let tables = Bottles {
+        list: Vec::new(),
+        tables: bottles.tables,
+    };
     let mut problems = Vec::new();
     let audited = run_audit(&scales, bottles.list, &asked, &mut problems);
     session.bottle_problems(&loaded, problems)?;
     notes(session, &tables, &audited);
     let exit = print(session, args, &scales, &loaded, &audited);
-    let tripped = session.shared.gate.is_some_and(|gate| trips(&audited, gate));
-    Ok(if exit == Exit::Done && tripped { Exit::Gate } else { exit })
+    let tripped = session
+        .shared
+        .gate
+        .is_some_and(|gate| trips(&audited, gate));
+    Ok(if exit == Exit::Done && tripped {
+        Exit::Gate
+    } else {
+        exit
+    })
+}
+
+/// Places of the points wanted; none where all are.
+pub fn only(
+    session: &mut Session<'_>,
+    loaded: &Loaded,
+    tags: &[String],
+) -> Result<Vec<usize>, Exit> {
+    if tags.is_empty() {
+        return Ok(Vec::new());
+    }
+    let points = session.points(&loaded.site, tags)?;
+    let all = &loaded.site.points;
+    let place = |p: &crate::model::Point| all.iter().position(|q| std::ptr::eq(p, q));
+    Ok(points.into_iter().filter_map(place).collect())
 }
 
 /// The day of the audit.
@@ -61,11 +80,17 @@ pub fn day_of(session: &mut Session<'_>, loaded: &Loaded) -> Result<Date, Exit> 
 }
 
 /// `NAME=TAG`, each tag a point of the site.
-fn matches(session: &mut Session<'_>, loaded: &Loaded, list: &[String]) -> Result<Vec<(String, String)>, Exit> {
+fn matches(
+    session: &mut Session<'_>,
+    loaded: &Loaded,
+    list: &[String],
+) -> Result<Vec<(String, String)>, Exit> {
     let mut found = Vec::new();
     for text in list {
         let Some((name, tag)) = text.rsplit_once('=') else {
-            session.fail(&format!("--match {text} is no name and tag\n  write  --match \"Conv104 HD=CV-104\""));
+            session.fail(&format!(
+                "--match {text} is no name and tag\n  write  --match \"Conv104 HD=CV-104\""
+            ));
             return Err(Exit::Usage);
         };
         let (name, tag) = (name.trim(), tag.trim());
@@ -89,7 +114,9 @@ fn notes(session: &mut Session<'_>, bottles: &Bottles, audited: &Audited) {
     }
     let unread: usize = audited.bottles.iter().map(|b| b.unread.len()).sum();
     if unread > 0 {
-        session.note(&format!("{unread} cells not understood, kept as remarks of their bottles"));
+        session.note(&format!(
+            "{unread} cells not understood, kept as remarks of their bottles"
+        ));
     }
 }
 
@@ -121,7 +148,12 @@ fn print(
 fn suggest(session: &mut Session<'_>, scales: &Scales<'_>, audited: &Audited) {
     let demo = if session.shared.demo { " --demo" } else { "" };
     let failing = |j: &&Judged| j.latest && matches!(j.word(), Some("fails" | "barred"));
-    let first = audited.findings.iter().filter_map(|f| f.judged).map(|p| &audited.judged[p]).find(failing);
+    let first = audited
+        .findings
+        .iter()
+        .filter_map(|f| f.judged)
+        .map(|p| &audited.judged[p])
+        .find(failing);
     if let Some(point) = first.and_then(|j| j.point) {
         let address = scales.site.points[point].address();
         session.note(&format!("next: filmwright weigh {address}{demo}"));
@@ -138,6 +170,11 @@ fn trips(audited: &Audited, gate: Gate) -> bool {
     };
     let reached = |v: Option<Verdict>| v.and_then(level).is_some_and(|l| l >= gate);
     let latest = audited.judged.iter().filter(|j| j.latest);
-    latest.clone().any(|j| (j.is_barred() && !j.too_old && !j.twice) || reached(j.verdict()))
-        || audited.unsampled.iter().any(|u| !u.barred.is_empty() || reached(u.verdict))
+    latest
+        .clone()
+        .any(|j| (j.is_barred() && !j.too_old && !j.twice) || reached(j.verdict()))
+        || audited
+            .unsampled
+            .iter()
+            .any(|u| !u.barred.is_empty() || reached(u.verdict))
 }

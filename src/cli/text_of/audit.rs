@@ -24,7 +24,11 @@ pub fn whole(scales: &Scales<'_>, audit: &Audit, style: Style) -> String {
 }
 
 fn names(list: &[String]) -> String {
-    if list.is_empty() { "0".to_owned() } else { format!("{}  {}", list.len(), list.join(", ")) }
+    if list.is_empty() {
+        "0".to_owned()
+    } else {
+        format!("{}  {}", list.len(), list.join(", "))
+    }
 }
 
 fn two_by_two(out: &mut String, scales: &Scales<'_>, audit: &Audit, width: usize) {
@@ -33,7 +37,11 @@ fn two_by_two(out: &mut String, scales: &Scales<'_>, audit: &Audit, width: usize
         out.push_str(&hanging("  serves          ", &names(&row.serves), width));
         out.push_str(&hanging("  does not serve  ", &names(&row.not), width));
         if !row.open.is_empty() {
-            let open: Vec<String> = row.open.iter().map(|(m, why)| format!("{m} ({why})")).collect();
+            let open: Vec<String> = row
+                .open
+                .iter()
+                .map(|(m, why)| format!("{m} ({why})"))
+                .collect();
             out.push_str(&hanging("  open            ", &names(&open), width));
         }
     }
@@ -48,10 +56,19 @@ fn two_by_two(out: &mut String, scales: &Scales<'_>, audit: &Audit, width: usize
 
 fn unmatched_line(audit: &Audit, u: &Unmatched) -> String {
     let b = &audit.bottles[u.bottle];
-    let meant = u.meant.as_ref().map_or("add an alias or use --match".to_owned(), |m| {
-        format!("did you mean {m}? add an alias or use --match")
-    });
-    format!("\"{}\" ({}, row {})  {}; {meant}", b.machine, b.name(), b.place.row, u.why)
+    let meant = u
+        .meant
+        .as_ref()
+        .map_or("add an alias or use --match".to_owned(), |m| {
+            format!("did you mean {m}? add an alias or use --match")
+        });
+    format!(
+        "\"{}\" ({}, row {})  {}; {meant}",
+        b.machine,
+        b.name(),
+        b.place.row,
+        u.why
+    )
 }
 
 /// Only the bottles without a machine.
@@ -60,7 +77,10 @@ pub fn unmatched(audit: &Audit) -> String {
         return "every bottle belongs to a machine\n".to_owned();
     }
     let n = audit.unmatched.len();
-    let mut out = format!("{n} of {} bottles belong to no machine\n", audit.bottles.len());
+    let mut out = format!(
+        "{n} of {} bottles belong to no machine\n",
+        audit.bottles.len()
+    );
     for u in &audit.unmatched {
         let _ = writeln!(out, "  {}", unmatched_line(audit, u));
     }
@@ -91,9 +111,17 @@ fn causes(out: &mut String, scales: &Scales<'_>, audit: &Audit, f: &Finding, wid
         return;
     }
     for named in &j.diagnosis.causes {
-        let word = format!("{} ({}, {} %)", named.cause.says(), named.word(), fixed(100.0 * named.likelihood, 0, Toward::Down));
+        let word = format!(
+            "{} ({}, {} %)",
+            named.cause.says(),
+            named.word(),
+            fixed(100.0 * named.likelihood, 0, Toward::Down)
+        );
         out.push_str(&hanging("            ", &word, width));
-        for (lead, sign) in [("              for      ", 1.0), ("              against  ", -1.0)] {
+        for (lead, sign) in [
+            ("              for      ", 1.0),
+            ("              against  ", -1.0),
+        ] {
             let lines: Vec<&str> = weighty(named, sign);
             if !lines.is_empty() {
                 out.push_str(&hanging(lead, &lines.join("; "), width));
@@ -147,17 +175,32 @@ fn samples(out: &mut String, scales: &Scales<'_>, audit: &Audit, style: Style) {
 
 fn row(scales: &Scales<'_>, audit: &Audit, j: &Judged) -> Vec<String> {
     let b = &audit.bottles[j.bottle];
-    let figure = |r: Reading| b.figures.get(r).map_or("-".to_owned(), |f| f.written.to_string());
-    let label = j.label.oil.map(|o| scales.site.oils[o].id.clone()).or_else(|| j.label.written.clone());
-    let machine = j.point.map_or(format!("\"{}\"", b.machine), |p| scales.site.points[p].address());
+    let figure = |r: Reading| {
+        b.figures
+            .get(r)
+            .map_or("-".to_owned(), |f| f.written.to_string())
+    };
+    let label = j
+        .label
+        .oil
+        .map(|o| scales.site.oils[o].id.clone())
+        .or_else(|| j.label.written.clone());
+    let machine = j.point.map_or(format!("\"{}\"", b.machine), |p| {
+        scales.site.points[p].address()
+    });
     let margins = j.serves.as_ref().map_or("-".to_owned(), |s| {
-        format!("{}, {}", steps(s.judgement.hot.map(|m| m.value)), steps(s.judgement.cold.map(|m| m.value)))
+        format!(
+            "{}, {}",
+            steps(s.judgement.hot.map(|m| m.value)),
+            steps(s.judgement.cold.map(|m| m.value))
+        )
     });
     vec![
         b.name(),
         machine,
         label.unwrap_or_else(|| "-".to_owned()),
-        b.drawn.map_or_else(|| b.drawn_written.clone(), |d| d.to_string()),
+        b.drawn
+            .map_or_else(|| b.drawn_written.clone(), |d| d.to_string()),
         figure(Reading::Nu40),
         figure(Reading::Nu100),
         j.whose.words().to_owned(),
@@ -175,7 +218,11 @@ fn trends(out: &mut String, audit: &Audit, width: usize) {
     }
     out.push_str("\ntrend of the viscosity at 40 degC since the last oil change\n");
     for unit in several {
-        out.push_str(&hanging(&format!("  {}  ", unit.name), &trend_words(&unit.trend), width));
+        out.push_str(&hanging(
+            &format!("  {}  ", unit.name),
+            &trend_words(&unit.trend),
+            width,
+        ));
         for event in &unit.events {
             let _ = writeln!(out, "    {event}");
         }

@@ -164,6 +164,10 @@ pub(super) fn regrease(reader: &mut Reader<'_>, fields: &Fields<'_>) -> Option<R
     Some(Regrease {
         amount: inner.stated(reader, "amount"),
         interval: inner.stated(reader, "interval"),
+        position: inner.word(reader, "position").map(|w| w.map(str::to_owned)),
+        vibration: inner
+            .word(reader, "vibration")
+            .map(|w| w.map(str::to_owned)),
     })
 }
 
@@ -176,11 +180,35 @@ pub(super) fn used_oil(reader: &mut Reader<'_>, fields: &Fields<'_>) -> Vec<OwnL
     let mut found = Vec::new();
     let viscosity = vec![On::ViscosityChange40, On::ViscosityChange100];
     own_limit::<Ratio>(reader, &inner, "viscosity change", viscosity, &mut found);
-    own_limit::<AcidNumber>(reader, &inner, "acid number rise", vec![On::AcidNumberRise], &mut found);
-    own_limit::<AcidNumber>(reader, &inner, "acid number", vec![On::AcidNumber], &mut found);
+    own_limit::<AcidNumber>(
+        reader,
+        &inner,
+        "acid number rise",
+        vec![On::AcidNumberRise],
+        &mut found,
+    );
+    own_limit::<AcidNumber>(
+        reader,
+        &inner,
+        "acid number",
+        vec![On::AcidNumber],
+        &mut found,
+    );
     own_limit::<Ratio>(reader, &inner, "water", vec![On::Water], &mut found);
-    own_limit::<TemperatureInterval>(reader, &inner, "flash drop", vec![On::FlashDrop], &mut found);
-    own_limit::<Ratio>(reader, &inner, "oxidation rise", vec![On::OxidationRise], &mut found);
+    own_limit::<TemperatureInterval>(
+        reader,
+        &inner,
+        "flash drop",
+        vec![On::FlashDrop],
+        &mut found,
+    );
+    own_limit::<Ratio>(
+        reader,
+        &inner,
+        "oxidation rise",
+        vec![On::OxidationRise],
+        &mut found,
+    );
     own_limit::<Ratio>(reader, &inner, "fuel", vec![On::Fuel], &mut found);
     own_limit::<Ratio>(reader, &inner, "soot", vec![On::Soot], &mut found);
     found

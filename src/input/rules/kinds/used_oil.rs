@@ -162,7 +162,10 @@ fn figure(f: &Fields<'_>, key: &str, text: &str) -> Figure {
 /// An amount that must be there.
 fn amount(f: &Fields<'_>, key: &'static str, kind: Kind) -> Amount {
     f.opt_amount(key, kind).unwrap_or_else(|| {
-        f.fault(format!("no {key}"), format!("{key}: {}", kind.spec().example));
+        f.fault(
+            format!("no {key}"),
+            format!("{key}: {}", kind.spec().example),
+        );
         Amount { kind, base: 1.0 }
     })
 }
@@ -194,14 +197,21 @@ pub(super) fn scatter(f: &Fields<'_>) -> TestScatter {
     let scatter = TestScatter {
         id: f.text("id"),
         reading,
-        also: f.texts("also").iter().map(|t| figure(f, "also", t)).collect(),
+        also: f
+            .texts("also")
+            .iter()
+            .map(|t| figure(f, "also", t))
+            .collect(),
         test: f.text("test"),
         share: f.opt("share"),
         least: f.opt_amount("at least", least),
         provenance: f.provenance(),
     };
     if scatter.share.is_none() && scatter.least.is_none() {
-        f.fault("neither share nor at least", "share: 25 %, or at least: 3 ppm");
+        f.fault(
+            "neither share nor at least",
+            "share: 25 %, or at least: 3 ppm",
+        );
     }
     scatter
 }
