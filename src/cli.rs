@@ -192,6 +192,12 @@ pub enum Command {
         filmwright report --one-file -o review.html --only 'CV-*'"
     )]
     Report(Report),
+    /// Label sheets for the fill points, as plain text
+    #[command(
+        after_help = "Examples:\n  filmwright labels --demo\n  filmwright labels 'CV-*' -o labels.txt\n\
+        See also: report, weigh"
+    )]
+    Labels(Labels),
     /// The rules built in: formula, range of use, source, defaults
     #[command(after_help = "Examples:\n  filmwright rules\n  filmwright rules gear_parallel_bevel")]
     Rules(Rules),
@@ -321,6 +327,13 @@ pub struct Report {
     /// Folder of own templates on top of the built-in ones
     #[arg(long, value_name = "DIR")]
     pub templates: Option<String>,
+}
+
+/// `labels`
+#[derive(Debug, Args)]
+pub struct Labels {
+    /// Machines, by tag or pattern; all where none is given
+    pub tags: Vec<String>,
 }
 
 /// Paper sizes.

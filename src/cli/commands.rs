@@ -2,6 +2,7 @@
 
 pub mod check;
 pub mod help;
+pub mod labels;
 pub mod need;
 pub mod need_line;
 pub mod new;
@@ -14,6 +15,7 @@ pub mod work;
 
 pub use check::check;
 pub use help::help;
+pub use labels::labels;
 pub use need::need;
 pub use new::new;
 pub use oil::oil;

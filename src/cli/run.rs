@@ -50,6 +50,7 @@ fn command(session: &mut Session<'_>, command: Command) -> Exit {
         Command::Why(args) => commands::why(session, &args),
         Command::Oil(args) => commands::oil(session, &args),
         Command::Report(args) => commands::report(session, &args),
+        Command::Labels(args) => commands::labels(session, &args),
         Command::Rules(args) => commands::rules(session, &args),
         Command::Work(args) => commands::work(session, &args),
         Command::Help(args) => commands::help(session, &args),

@@ -1,5 +1,6 @@
 //! Results as text for people.
 
+pub mod labels;
 pub mod need;
 pub mod oil;
 pub mod weigh;

@@ -200,14 +200,14 @@ pub(super) fn compared(demand: &Demand) -> bool {
 }
 
 /// What a demand asks and of what: `gear mesh low-speed stage: …`. A component's window names it.
-pub(super) fn asks(demand: &Demand) -> String {
+pub(super) fn asks(demand: &Demand, units: Units) -> String {
     match &demand.part {
         Some(part)
             if !part.starts_with("component ") && !demand.says.starts_with(part.as_str()) =>
         {
-            say::set(&format!("{part}: {}", demand.says))
+            say::told(&format!("{part}: {}", demand.says), units)
         }
-        _ => say::set(&demand.says),
+        _ => say::told(&demand.says, units),
     }
 }
 

@@ -280,7 +280,7 @@ fn facts(case: &Case<'_, '_>, numbers: &Numbers) -> Vec<Found> {
                     bar: None,
                     range: String::new(),
                     decides,
-                    ask: asking.map_or(String::new(), |(_, c)| say::set(&c.act)),
+                    ask: asking.map_or(String::new(), |(_, c)| say::told(&c.act, case.units())),
                 },
                 effect: None,
                 input: (String::new(), None),

@@ -10,7 +10,7 @@ use super::eligible::{Numbers, conditions};
 use super::gaps::{self, Found};
 use super::inputs;
 use super::needs::needs;
-use super::steps::steps;
+use super::steps::{Steps, steps};
 use super::vary::Tolerances;
 use super::{answer, machine, say};
 use crate::relation::Law;
@@ -34,16 +34,16 @@ pub(super) struct Told {
     pub(super) laws: BTreeMap<&'static str, &'static Law>,
 }
 
-/// Tells a point; `named` where its machine has several.
+/// Tells a point; `named` where its machine has several, with the first of them beside the others.
 pub(super) fn point(
     case: &Case<'_, '_>,
     numbers: &mut Numbers,
     counts: &mut Counts,
-    named: bool,
+    (named, first): (bool, Option<&Point>),
 ) -> Told {
     let conditions = conditions(case, numbers);
     let tolerances = Tolerances::new(case);
-    let steps = steps(case);
+    let (steps, steps_as) = calculation(case, first);
     let found = gaps::found(case, numbers, &mut counts.gaps);
     let assumptions = assumptions(case, &found, &mut counts.assumptions);
     let address = case.w.point.address();
@@ -71,6 +71,7 @@ pub(super) fn point(
         change_over: Vec::new(),
         steps_command: command(case, &address),
         steps: steps.list,
+        steps_as,
         assumptions,
         gaps: gaps::table(case, &found),
     };
@@ -79,6 +80,20 @@ pub(super) fn point(
         gaps: found,
         laws: steps.laws,
     }
+}
+
+/// The steps of a point; none where they are those of the first point of its machine, figure for
+/// figure, which is then named.
+fn calculation(case: &Case<'_, '_>, first: Option<&Point>) -> (Steps, Option<String>) {
+    if let Some(first) = first {
+        let mut as_first = steps(case, &first.key);
+        if !first.steps.is_empty() && as_first.list == first.steps {
+            as_first.list.clear();
+            let name = first.name.clone().unwrap_or_else(|| first.key.clone());
+            return (as_first, Some(name));
+        }
+    }
+    (steps(case, &case.key), None)
 }
 
 /// The command that prints the steps again.
