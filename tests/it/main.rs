@@ -1,5 +1,6 @@
 //! Everything tested from outside the crate, in one binary.
 
+mod audit;
 mod chance;
 mod checks;
 mod decide;
