@@ -10,6 +10,8 @@ mod journal_heat;
 mod journal_table;
 mod judging;
 mod layers;
+mod part_kinds;
+mod practice_parts;
 mod problems;
 mod properties_film;
 mod properties_oil;
