@@ -20,6 +20,8 @@ pub mod governing;
 mod grease_code;
 mod grease_point;
 pub mod inputs;
+pub mod journal;
+pub mod losses;
 pub mod open_gear;
 pub mod point;
 pub mod rolling_bearing;
@@ -27,6 +29,8 @@ pub mod rules;
 pub mod settings;
 pub mod tested;
 pub mod thermal;
+pub mod thrust;
+pub mod usual;
 pub mod worm;
 
 use crate::model::part::{Part, PartKind};
@@ -145,6 +149,18 @@ pub struct Demand {
     pub from_window: bool,
 }
 
+impl Demand {
+    /// What it asks and of what: `gear mesh low-speed stage: …`. A window names its part itself.
+    pub fn asks(&self) -> String {
+        match &self.part {
+            Some(part) if !self.says.starts_with(part.as_str()) => {
+                format!("{part}: {}", self.says)
+            }
+            _ => self.says.clone(),
+        }
+    }
+}
+
 /// A figure worked out for a part that sets no limit.
 #[derive(Clone, Debug, PartialEq)]
 pub struct Information {
@@ -186,6 +202,10 @@ pub struct Demands {
     pub gaps: Vec<Gap>,
     /// Stated inputs with a tolerance.
     pub tolerances: Vec<Gap>,
+    /// What makes heat in the point, where all of it can be worked out.
+    pub losses: Option<losses::Losses>,
+    /// Stated inputs without one, with the usual tolerance of their kind; only where asked for.
+    pub usual: Vec<Gap>,
 }
 
 impl Demands {
@@ -245,6 +265,7 @@ pub fn demands<R: Recorder>(
     point::pour(&mut cx);
     point::ceiling(&mut cx);
     point::replace(&mut cx.list);
+    let losses = losses::losses(&mut cx);
     let Context {
         list,
         undecided,
@@ -259,6 +280,8 @@ pub fn demands<R: Recorder>(
         axes: inputs.axes,
         gaps: inputs.gaps,
         tolerances: inputs.tolerances,
+        losses,
+        usual: inputs.usual,
     }
 }
 
@@ -272,13 +295,8 @@ fn of_part<R: Recorder>(cx: &mut Context<'_, '_, R>, part: &Part) {
         PartKind::OpenGear(g) => open_gear::add(cx, part, g),
         PartKind::Engine(d) => drive::engine(cx, part, d),
         PartKind::Axle(d) => drive::axle(cx, part, d),
-        PartKind::JournalBearing(_) | PartKind::ThrustBearing(_) => {
-            cx.undecided(
-                part,
-                End::HotFloor,
-                "this kind of part is not worked out yet",
-            );
-        }
+        PartKind::JournalBearing(b) => journal::add(cx, part, b),
+        PartKind::ThrustBearing(b) => thrust::add(cx, part, b),
     }
 }
 

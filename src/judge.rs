@@ -13,6 +13,7 @@ pub mod explain;
 pub mod margin;
 pub mod numbers;
 pub mod order;
+pub mod own;
 pub mod prepared;
 mod straight;
 pub mod tested;

@@ -14,6 +14,7 @@ pub mod makeup;
 pub mod pressure;
 pub mod shape;
 pub mod sheet;
+pub mod slid;
 pub mod spread;
 pub mod start;
 pub mod thinning;

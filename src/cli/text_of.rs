@@ -1,7 +1,13 @@
 //! Results as text for people.
 
+pub mod audit;
+pub mod gaps;
+pub mod mend;
 pub mod need;
 pub mod oil;
+pub mod pool;
+pub mod scatter;
 pub mod weigh;
+pub mod whatif;
 pub mod why;
 pub mod work;

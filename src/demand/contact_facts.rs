@@ -114,10 +114,11 @@ fn sliding<R: Recorder>(
         cx.inform(part, says, None);
         return;
     }
-    let Some(p) = film.pressure() else { return };
+    let (Some(p), Some(e)) = (film.pressure(), film.modulus()) else {
+        return;
+    };
     let p =
         cx.r.assume("p_max", "largest pressure", p, "of this contact, by Hertz");
-    let e = film.modulus();
     let e = cx.r.assume("E", "reduced modulus", e, "of this contact");
     let phi = cx.r.attempt(
         "phi_T",

@@ -57,6 +57,20 @@ pub enum FilmContact {
     },
     /// Teeth at the pitch point, minimum film in the form of ISO/TS 6336-22.
     Tooth(ToothContact),
+    /// A shaft or a pad on a wedge of oil.
+    Wedge(Wedge),
+}
+
+/// A hydrodynamic film: its pressures are too low to thicken the oil, so the viscosity it needs
+/// is the same for every oil and known beforehand.
+#[derive(Clone, Copy, Debug, PartialEq)]
+pub struct Wedge {
+    /// Viscosity at which the film reaches what is wanted.
+    pub needs: DynamicViscosity,
+    /// Sliding speed.
+    pub speed: Velocity,
+    /// The relation it comes from.
+    pub law: &'static Law,
 }
 
 /// A film asked for.
@@ -76,29 +90,34 @@ impl FilmContact {
             Self::Ellipse { .. } => &ellipse::MINIMUM,
             Self::Race { .. } => &bearing::FILM,
             Self::Tooth(_) => &tooth::MINIMUM,
+            Self::Wedge(wedge) => wedge.law,
         }
     }
 
-    /// Reduced modulus of the contact.
-    pub fn modulus(self) -> Pressure {
+    /// Reduced modulus of the contact; `None` for a wedge, whose surfaces do not give way.
+    pub fn modulus(self) -> Option<Pressure> {
         match self {
-            Self::Line { load, .. } => load.modulus,
-            Self::Ellipse { load, .. } => load.modulus,
-            Self::Race { modulus, .. } => modulus,
-            Self::Tooth(contact) => contact.modulus,
+            Self::Line { load, .. } => Some(load.modulus),
+            Self::Ellipse { load, .. } => Some(load.modulus),
+            Self::Race { modulus, .. } => Some(modulus),
+            Self::Tooth(contact) => Some(contact.modulus),
+            Self::Wedge(_) => None,
         }
     }
 
-    /// Mean speed of the surfaces, which draws the oil in; `None` for a geometry without one.
+    /// Speed that shears the oil: mean speed of the surfaces that draw it in, sliding speed of a
+    /// wedge; `None` for a geometry without one.
     pub fn speed(self) -> Option<Velocity> {
         match self {
             Self::Line { speed, .. } | Self::Ellipse { speed, .. } => Some(speed),
             Self::Race { inside, speed, .. } => inside.rolling_speed(speed).ok(),
             Self::Tooth(contact) => Some(Velocity::from_base(0.5 * contact.sum_speed.base())),
+            Self::Wedge(wedge) => Some(wedge.speed),
         }
     }
 
-    /// Film at a viscosity and pressure-viscosity coefficient.
+    /// Film at a viscosity and pressure-viscosity coefficient. That of a wedge is never asked
+    /// for: only whether it has the viscosity it needs.
     ///
     /// # Errors
     /// Inputs outside the relation.
@@ -144,6 +163,10 @@ impl FilmContact {
                 let pitch_point = crate::quantity::convert::number(1.0);
                 Ok(tooth::minimum(groups, contact.rho_n, pitch_point))
             }
+            Self::Wedge(_) => Err(Outside::NoAnswer {
+                what: "the film of a wedge",
+                why: "its need is told as a viscosity",
+            }),
         }
     }
 }
@@ -178,7 +201,7 @@ impl FilmContact {
                 let groups = of_ellipse(Inlet { eta, alpha, speed }, load).ok()?;
                 regime::ellipse(groups, load.radii.ratio().ok()?, load.radii.x).ok()?
             }
-            Self::Race { .. } | Self::Tooth(_) => return None,
+            Self::Race { .. } | Self::Tooth(_) | Self::Wedge(_) => return None,
         };
         Some(by.regime)
     }
@@ -212,7 +235,7 @@ impl FilmContact {
             Self::Ellipse { load, .. } => hertz::ellipse(load.load, load.radii, load.modulus)
                 .ok()
                 .map(|c| c.max_pressure),
-            Self::Race { .. } | Self::Tooth(_) => None,
+            Self::Race { .. } | Self::Tooth(_) | Self::Wedge(_) => None,
         }
     }
 
@@ -301,11 +324,23 @@ impl FilmDemand {
             .ok()
     }
 
+    /// Positive where the oil of that viscosity at rest reaches the wanted film, negative where
+    /// it does not; `None` as for [`FilmDemand::film_of`].
+    pub fn excess_of(&self, met: InContact<'_>, nu: KinematicViscosity) -> Option<f64> {
+        if let FilmContact::Wedge(wedge) = self.contact {
+            return Some(ln(nu.base() / wedge_need(wedge, met).base()));
+        }
+        self.film_of(met, nu).map(|h| h.base() - self.wanted.base())
+    }
+
     /// The kinematic viscosity at rest this oil would need, slid without turning. The film is
     /// close to a power of the viscosity, so a few secant steps in the logarithms settle it;
     /// where they do not, the bracketed solution of the same equation stands (a test compares
     /// the two).
     pub fn viscosity_needed(&self, met: InContact<'_>) -> Option<KinematicViscosity> {
+        if let FilmContact::Wedge(wedge) = self.contact {
+            return Some(wedge_need(wedge, met));
+        }
         let excess = |ln_nu: f64| -> Option<f64> {
             let nu = KinematicViscosity::from_base(exp(ln_nu));
             self.film_of(met, nu)
@@ -332,6 +367,12 @@ impl FilmDemand {
         .ok()
         .map(|eta| kinematic(eta, rho))
     }
+}
+
+/// What a wedge needs of an oil at rest: the more, the more it loses under shear.
+fn wedge_need(wedge: Wedge, met: InContact<'_>) -> KinematicViscosity {
+    let under_shear = kinematic(wedge.needs, met.oil.density.at(met.at));
+    KinematicViscosity::from_base(under_shear.base() / met.kept.base())
 }
 
 /// Secant steps from a start; `None` where they do not settle within a dozen.

@@ -2,6 +2,7 @@
 
 use super::band::Band;
 use super::margin::{Jaw, Ready};
+use super::own::{Own, Shift};
 use super::tested::{TestedPoint, points};
 use super::weigh::At;
 use crate::demand::film::FilmDemand;
@@ -61,6 +62,8 @@ pub struct ReadyDemand {
     pub judges: bool,
     /// Whether an unmet one that does not judge becomes a condition.
     pub asks_when_unmet: bool,
+    /// What moved it to the temperature of an oil's own losses.
+    pub moved: Option<Shift>,
     only: For,
 }
 
@@ -86,6 +89,8 @@ pub struct Setting {
     pub start: Option<(f64, f64)>,
     /// Whether anything limits viscosity at start that is read from the oil's curve.
     pub has_start_ceiling: bool,
+    /// Losses that make each oil run at a temperature of its own.
+    pub own: Option<Box<Own>>,
 }
 
 /// A point made ready.
@@ -128,6 +133,7 @@ fn setting(demands: &Demands) -> Setting {
             d.end == End::StartCeiling && d.judges && by_line
         }),
         demands: ready,
+        own: None,
         undecided: !demands.undecided.is_empty(),
         start: demands.thermal.start_coldest.map(|k| {
             let t = k.value.base();
@@ -160,6 +166,7 @@ fn ready(number: usize, demand: &Demand, demands: &Demands) -> Option<ReadyDeman
         t,
         low_confidence: demand.confidence == Confidence::Low,
         judges: demand.standing == Standing::Judges,
+        moved: None,
         asks_when_unmet: !matches!(demand.standing, Standing::Judges | Standing::Information),
         only: demand.only.clone(),
     })
@@ -383,8 +390,7 @@ pub fn film_margin(
         let band = Band::by_root(true, |ambient| {
             let t = demand.at.at(ambient);
             let nu = KinematicViscosity::from_base(curve.nu(t));
-            film.film_of(met(t, curve), nu)
-                .map_or(-1.0, |h| h.base() - film.wanted.base())
+            film.excess_of(met(t, curve), nu).unwrap_or(-1.0)
         });
         best = Some(match best {
             Some((v, b, at)) if v <= value => (v, b.and(band), at),

@@ -131,6 +131,7 @@ pub fn weigh_generally(point: &PreparedPoint, oil: &PreparedOil) -> Judgement {
 }
 
 fn weigh_by(point: &PreparedPoint, oil: &PreparedOil, short_cut: bool) -> Judgement {
+    let point = &*point.for_oil(oil);
     let mut total: Option<Judgement> = None;
     let variants = oil.variants(point);
     for (number, setting) in point.settings.iter().enumerate() {

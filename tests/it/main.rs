@@ -2,6 +2,7 @@
 
 mod chance;
 mod checks;
+mod decide;
 mod demo;
 mod determinism;
 mod exact;
@@ -12,10 +13,12 @@ mod judging;
 mod layers;
 mod part_kinds;
 mod practice_parts;
+mod pool;
 mod problems;
 mod properties_film;
 mod properties_oil;
 mod reader;
+mod readme;
 mod real_oil;
 mod reference_film;
 mod reference_journal;

@@ -32,6 +32,7 @@ const NOT_INPUTS: &[&str] = &[
     "register row",
     "losses",
     "regrease",
+    "used oil",
 ];
 
 pub(super) fn read<'t>(
@@ -87,6 +88,7 @@ pub(super) fn read<'t>(
         facts,
         losses: values::losses(reader, &fields),
         regrease: values::regrease(reader, &fields),
+        used_oil: values::used_oil(reader, &fields),
         allow: values::allow(reader, &fields),
         inputs: inputs(reader, &fields),
         parts: std::mem::take(&mut parts.list),
