@@ -14,6 +14,8 @@ mod journal_heat;
 mod journal_table;
 mod judging;
 mod layers;
+mod part_kinds;
+mod practice_parts;
 mod pool;
 mod problems;
 mod properties_film;
