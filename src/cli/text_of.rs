@@ -2,6 +2,7 @@
 
 pub mod need;
 pub mod oil;
+pub mod running;
 pub mod weigh;
 pub mod why;
 pub mod work;

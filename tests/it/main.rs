@@ -10,6 +10,7 @@ mod journal_heat;
 mod journal_table;
 mod judging;
 mod layers;
+mod plain;
 mod problems;
 mod properties_film;
 mod properties_oil;

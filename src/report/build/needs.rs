@@ -190,5 +190,6 @@ fn notes(case: &Case<'_, '_>) -> Vec<Phrase> {
         let text = format!("{part}{}{figure}", say::set(&info.says));
         notes.push(say::stopped(&say::sentence(&text)).into());
     }
+    notes.extend(super::running::running(case));
     notes
 }

@@ -72,6 +72,7 @@ pub(super) fn steps(case: &Case<'_, '_>) -> Steps {
     };
     if let (Some(told), Some(lead)) = (&case.told, case.lead) {
         let mut results: Vec<StepId> = told.margins.iter().map(|e| e.step).collect();
+        results.extend(&told.running);
         results.sort_unstable();
         out.trace(told, &results, lead, true);
     } else {
@@ -87,6 +88,7 @@ pub(super) fn steps(case: &Case<'_, '_>) -> Steps {
         let bare = Explanation {
             trace: case.w.demands.trace.clone(),
             margins: Vec::new(),
+            running: Vec::new(),
         };
         out.steps_of(&bare.trace, &results, None);
     }
