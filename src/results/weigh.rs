@@ -94,6 +94,12 @@ fn running(r: &Running, told: &Explanation, units: Units) -> Value {
     for (kind, power) in &r.drag.by_kind {
         by_kind.insert(kind.word().into(), watts(power.base()));
     }
+    let films: Vec<Value> = r
+        .drag
+        .films
+        .iter()
+        .map(|(part, film)| json!({ "part": part, "at": t(Some(film.base())) }))
+        .collect();
     json!({
         "stated": t(r.stated),
         "by_losses": t(r.by_losses),
@@ -102,6 +108,7 @@ fn running(r: &Running, told: &Explanation, units: Units) -> Value {
         "drag": {
             "value": r.drag.total.base(), "unit": "W", "by": by_kind,
             "ambient": t(Some(r.drag.ambient.base())), "at": t(Some(r.drag.t.base())),
+            "films": films,
             "over_in_use": r.over_in_use.map(watts),
             "energy": r.energy_kwh.map(|e| json!({ "value": e, "unit": "kWh a year" })),
         },

@@ -6,12 +6,13 @@ use crate::quantity::show::{Toward, Units, quantity, significant};
 use crate::quantity::{Measure, Power, ThermodynamicTemperature};
 use crate::weighing::{Scales, Weighed};
 
-const COLUMNS: [Column; 8] = [
+const COLUMNS: [Column; 9] = [
     Column::text("", 0),
     Column::text("oil", 0),
     Column::text("as read", 3),
     Column::text("by losses", 0),
     Column::text("judged at", 1),
+    Column::text("film", 2),
     Column::text("drag", 0),
     Column::text("over today", 2),
     Column::text("a year", 1),
@@ -52,10 +53,17 @@ pub fn running(out: &mut String, scales: &Scales<'_>, w: &Weighed<'_>, width: us
             cells
         })
         .collect();
-    out.push_str(&table(&COLUMNS, &rows, width));
+    let said = |i: usize| rows.iter().any(|r| r[i] != "-");
+    let kept: Vec<usize> = (0..COLUMNS.len()).filter(|i| said(*i)).collect();
+    let columns: Vec<Column> = kept.iter().map(|i| COLUMNS[*i]).collect();
+    let rows: Vec<Vec<String>> = rows
+        .iter()
+        .map(|r| kept.iter().map(|i| r[*i].clone()).collect())
+        .collect();
+    out.push_str(&table(&columns, &rows, width));
 }
 
-fn row(r: &Running, units: Units) -> [String; 6] {
+fn row(r: &Running, units: Units) -> [String; 7] {
     let watts = |w: f64| quantity(Power::from_base(w).amount(), units, Toward::Nearest);
     let over = r.over_in_use.filter(|w| w.abs() > 0.0).map_or_else(
         || "-".to_owned(),
@@ -68,10 +76,13 @@ fn row(r: &Running, units: Units) -> [String; 6] {
         || "-".to_owned(),
         |kwh| format!("{} kWh", significant(kwh, 3, Toward::Up)),
     );
+    let films = r.drag.films.iter().map(|(_, t)| t.base());
+    let warmest = films.max_by(f64::total_cmp);
     [
         temperature(r.stated, units),
         temperature(r.by_losses, units),
         temperature(r.used(), units),
+        temperature(warmest, units),
         watts(r.drag.total.base()),
         over,
         energy,

@@ -61,6 +61,10 @@ fn one(case: &Case<'_, '_>, r: &Running) -> String {
     if kinds.len() > 1 {
         drag = format!("{drag} ({})", kinds.join(", "));
     }
+    for (part, t) in &r.drag.films {
+        let t = say::temperature(t.base(), units);
+        parts.push(format!("film of {} at {t}", case.part_name(part)));
+    }
     if let Some(over) = r.over_in_use.filter(|w| w.abs() > 0.0) {
         let word = if over < 0.0 { "less" } else { "more" };
         drag = format!("{drag}, {} {word} than the oil in use", watts(over.abs()));
