@@ -134,14 +134,20 @@ impl Limits {
                     continue;
                 }
                 let seen = most.entry((rule.reading.word(), high)).or_default();
-                let map = if high { &mut limits.high } else { &mut limits.low };
+                let map = if high {
+                    &mut limits.high
+                } else {
+                    &mut limits.low
+                };
                 let found = of_rule(rule);
                 // of equally particular rules the strictest counts
                 let known = map.get(rule.reading.word());
                 let better = match known {
                     None => true,
                     Some(_) if rule.when.len() != *seen => rule.when.len() > *seen,
-                    Some(known) => found.is_stricter(known, rule.side == Side::Low && share_left(rule.reading)),
+                    Some(known) => {
+                        found.is_stricter(known, rule.side == Side::Low && share_left(rule.reading))
+                    }
                 };
                 if better {
                     *seen = rule.when.len();
@@ -207,7 +213,10 @@ fn of_rule(rule: &UsedOilLimit) -> Levels {
 
 /// Readings that say what is left of new oil.
 fn share_left(on: On) -> bool {
-    matches!(on, On::BaseNumberShare | On::AntioxidantShare | On::OxidationStabilityShare)
+    matches!(
+        on,
+        On::BaseNumberShare | On::AntioxidantShare | On::OxidationStabilityShare
+    )
 }
 
 /// What the site file says of the machine itself.

@@ -152,7 +152,8 @@ impl Grid {
             })
             .collect()
         };
-        let (few_shear, few_dilution, few_oxidation) = (some(&shear, 3), some(&dilution, 3), some(&oxidation, 5));
+        let (few_shear, few_dilution, few_oxidation) =
+            (some(&shear, 3), some(&dilution, 3), some(&oxidation, 5));
         let few_wrong = some(&wrong, 4);
         cross(&few_shear, &few_oxidation, &mut pairs);
         cross(&few_shear, &few_dilution, &mut pairs);

@@ -1,7 +1,7 @@
 //! Which sheets there will be, where each stands and what it is called, before any is made: their
 //! number and their links are needed on the first.
 
-use crate::model::Point;
+use crate::model::{Oil, Point};
 use crate::report::model::NavLink;
 use crate::report::names::{Bundle, Href, Names, Place};
 use std::collections::BTreeMap;
@@ -44,6 +44,10 @@ pub(super) struct Plan<'a> {
     pub(super) overview: Fixed,
     pub(super) areas: Vec<Area>,
     pub(super) machines: Vec<Machine<'a>>,
+    /// The oils' sheets, in the order of the list.
+    pub(super) oils: Vec<Fixed>,
+    /// Their ids, for the bar of links.
+    oil_ids: Vec<String>,
     /// The audit, where there are samples.
     pub(super) audit: Option<Fixed>,
     pub(super) methods: Fixed,
@@ -59,6 +63,7 @@ pub(super) enum On {
     Overview,
     Area(usize),
     Machine(usize),
+    Oil(usize),
     Audit,
     Methods,
     Rules,
@@ -67,7 +72,7 @@ pub(super) enum On {
 
 impl<'a> Plan<'a> {
     /// Plans the sheets for these points, in their order.
-    pub(super) fn new(points: &[&'a Point], bundle: Bundle, audited: bool) -> Self {
+    pub(super) fn new(points: &[&'a Point], oils: &[Oil], bundle: Bundle, audited: bool) -> Self {
         let mut names = Names::new();
         let mut number = 0;
         let mut next = || {
@@ -90,6 +95,14 @@ impl<'a> Plan<'a> {
                 number: next(),
             })
             .collect();
+        let oil_ids: Vec<String> = oils.iter().map(|o| o.id.clone()).collect();
+        let oils = oil_ids
+            .iter()
+            .map(|id| Fixed {
+                place: Place::new(&mut names, "oil", id),
+                number: next(),
+            })
+            .collect();
         let audit = audited.then(|| fixed(&mut names, "audit", next()));
         let methods = fixed(&mut names, "methods", next());
         let rules = fixed(&mut names, "rules", next());
@@ -100,6 +113,8 @@ impl<'a> Plan<'a> {
             overview,
             areas,
             machines,
+            oils,
+            oil_ids,
             audit,
             methods,
             rules,
@@ -116,6 +131,7 @@ impl<'a> Plan<'a> {
             .map(|f| &f.place)
             .chain(self.areas.iter().map(|a| &a.place))
             .chain(self.machines.iter().map(|m| &m.place))
+            .chain(self.oils.iter().map(|o| &o.place))
             .map(Place::file)
             .collect()
     }
@@ -148,6 +164,17 @@ impl<'a> Plan<'a> {
                 bar.push(link(m.tag.to_owned(), &m.place, true));
                 if let Some(m) = self.machines.get(i + 1) {
                     bar.push(link(format!("Next: {}", m.tag), &m.place, false));
+                }
+            }
+            On::Oil(i) => {
+                if let Some(before) = i.checked_sub(1) {
+                    let text = format!("Before: {}", self.oil_ids[before]);
+                    bar.push(link(text, &self.oils[before].place, false));
+                }
+                bar.push(link(self.oil_ids[i].clone(), &self.oils[i].place, true));
+                if let Some(next) = self.oils.get(i + 1) {
+                    let text = format!("Next: {}", self.oil_ids[i + 1]);
+                    bar.push(link(text, &next.place, false));
                 }
             }
             _ => {}

@@ -10,7 +10,11 @@ fn audit(table: &str, map: &str) -> Ran {
 }
 
 fn told(ran: &Ran, code: &str) {
-    assert!(ran.err.contains(&format!("[{code}]")), "no {code} in:\n{}", ran.err);
+    assert!(
+        ran.err.contains(&format!("[{code}]")),
+        "no {code} in:\n{}",
+        ran.err
+    );
 }
 
 const GOOD: &str = "machine,label,drawn,nu40,nu100\nHP-1,H46,2026-10-01,45.9,6.80\nGB-104,G220,2026-10-02,221,19.0\n";
@@ -75,7 +79,8 @@ fn two_bottles_of_one_day_are_no_coin_toss() {
 
 #[test]
 fn odd_cells_are_unknown_and_named() {
-    let table = "machine,label,drawn,nu40,nu100,flash,Fe,Cu\nHP-1,H46,2026-10-01,\"45,9\",6.80,0,<5,999\n";
+    let table =
+        "machine,label,drawn,nu40,nu100,flash,Fe,Cu\nHP-1,H46,2026-10-01,\"45,9\",6.80,0,<5,999\n";
     let ran = audit(table, "");
     told(&ran, "cell-unread");
     told(&ran, "cell-placeholder");
@@ -84,7 +89,10 @@ fn odd_cells_are_unknown_and_named() {
     assert_eq!(readings["nu40"], serde_json::Value::Null);
     assert_eq!(readings["Fe"]["bound"], "below");
     assert_eq!(readings["Cu"], serde_json::Value::Null);
-    let comma = on(with(&table.replace("6.80", "\"6,80\""), "decimal: comma\n"), "audit -f json");
+    let comma = on(
+        with(&table.replace("6.80", "\"6,80\""), "decimal: comma\n"),
+        "audit -f json",
+    );
     let nu40 = &comma.json()["samples"][0]["readings"]["nu40"]["value"];
     assert_eq!(nu40.as_f64(), Some(45.9));
 }
@@ -99,10 +107,22 @@ fn bottles_of_nobody_are_listed_with_what_may_be_meant() {
     assert_eq!(unmatched.len(), 2);
     assert_eq!(unmatched[0]["did_you_mean"], "GB-104");
     assert_eq!(document["samples"].as_array().map(Vec::len), Some(3 + 2));
-    let matched = on(with(table, ""), "audit -f json --match \"Conv104 HD=GB-104\"");
-    assert_eq!(matched.json()["unmatched"].as_array().map(Vec::len), Some(1));
-    assert_eq!(on(with(table, ""), "audit --match \"Conv104 HD\"").exit, Exit::Usage);
-    assert_eq!(on(with(table, ""), "audit --match \"Conv104 HD=GB-999\"").exit, Exit::NoMatch);
+    let matched = on(
+        with(table, ""),
+        "audit -f json --match \"Conv104 HD=GB-104\"",
+    );
+    assert_eq!(
+        matched.json()["unmatched"].as_array().map(Vec::len),
+        Some(1)
+    );
+    assert_eq!(
+        on(with(table, ""), "audit --match \"Conv104 HD\"").exit,
+        Exit::Usage
+    );
+    assert_eq!(
+        on(with(table, ""), "audit --match \"Conv104 HD=GB-999\"").exit,
+        Exit::NoMatch
+    );
 }
 
 /// A formula cell whose value was never stored is no 0.
@@ -115,8 +135,14 @@ fn a_formula_without_value_is_named() {
     told(&ran, "cell-without-value");
     let document = ran.json();
     assert_eq!(document["samples"].as_array().map(Vec::len), Some(1 + 2));
-    assert_eq!(document["samples"][0]["readings"]["nu40"], serde_json::Value::Null);
-    assert_eq!(document["samples"][0]["readings"]["nu100"]["value"].as_f64(), Some(6.8));
+    assert_eq!(
+        document["samples"][0]["readings"]["nu40"],
+        serde_json::Value::Null
+    );
+    assert_eq!(
+        document["samples"][0]["readings"]["nu100"]["value"].as_f64(),
+        Some(6.8)
+    );
 }
 
 #[test]
@@ -130,7 +156,8 @@ fn a_table_of_100_megabytes_is_refused_unread() {
     host.files.remove(std::path::Path::new("lab.csv"));
     assert_eq!(on(host, "audit").exit, Exit::File);
     let mut host = with(GOOD, "");
-    host.files.insert("lab.csv".into(), b"\x00\x01binary".to_vec());
+    host.files
+        .insert("lab.csv".into(), b"\x00\x01binary".to_vec());
     told(&on(host, "audit"), "table-kind");
 }
 

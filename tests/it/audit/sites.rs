@@ -58,5 +58,8 @@ pub(crate) fn with(table: &str, map: &str) -> MemoryHost {
         .with("site.yaml", SITE)
         .with("oils.yaml", OILS)
         .with("lab.csv", table)
-        .with("samples.yaml", &format!("file: samples 1\nread: lab.csv\n{map}"))
+        .with(
+            "samples.yaml",
+            &format!("file: samples 1\nread: lab.csv\n{map}"),
+        )
 }

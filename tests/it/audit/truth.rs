@@ -46,10 +46,15 @@ const OUTSIDE: &[([f64; 2], f64, f64, [f64; 3])] = &[
 
 /// Figures in the order of [`HEADINGS`].
 type Figures = [f64; 9];
-const HEADINGS: &str = "bottle,machine,label,drawn,nu40,nu100,flash,acid number,oxidation,water,Zn,P,Ca\n";
+const HEADINGS: &str =
+    "bottle,machine,label,drawn,nu40,nu100,flash,acid number,oxidation,water,Zn,P,Ca\n";
 
 fn w(nu: f64) -> f64 {
-    let low = if nu < 2.0 { libm::exp(-1.47 - 1.84 * nu - 0.51 * nu * nu) } else { 0.0 };
+    let low = if nu < 2.0 {
+        libm::exp(-1.47 - 1.84 * nu - 0.51 * nu * nu)
+    } else {
+        0.0
+    };
     libm::log10(libm::log10(nu + 0.7 + low))
 }
 
@@ -70,7 +75,13 @@ enum Truth {
     Water,
 }
 
-const TRUTHS: [Truth; 5] = [Truth::Shear, Truth::Dilution, Truth::Mixed, Truth::Oxidation, Truth::Water];
+const TRUTHS: [Truth; 5] = [
+    Truth::Shear,
+    Truth::Dilution,
+    Truth::Mixed,
+    Truth::Oxidation,
+    Truth::Water,
+];
 
 impl Truth {
     fn word(self) -> &'static str {
@@ -103,7 +114,9 @@ fn one_of<T: Copy>(chance: &mut Chance, list: &[T]) -> T {
 
 fn fresh(oil: &Oil) -> Figures {
     let [zn, p, ca] = oil.elements;
-    [oil.nu[0], oil.nu[1], oil.flash, oil.acid, 0.5, 60.0, zn, p, ca]
+    [
+        oil.nu[0], oil.nu[1], oil.flash, oil.acid, 0.5, 60.0, zn, p, ca,
+    ]
 }
 
 /// What a cause does to the figures; returns its size.
@@ -201,7 +214,14 @@ fn table(count: usize, seed: u64) -> (String, BTreeMap<String, Drawn>) {
     let mut text = HEADINGS.to_owned();
     for oil in OILS {
         let f = read(&fresh(oil), &mut chance);
-        row(&mut text, &format!("new-{}", oil.id), "new oil", oil.id, &f, &[true; 9]);
+        row(
+            &mut text,
+            &format!("new-{}", oil.id),
+            "new oil",
+            oil.id,
+            &f,
+            &[true; 9],
+        );
     }
     let mut all = BTreeMap::new();
     for n in 0..count {
@@ -221,8 +241,10 @@ fn table(count: usize, seed: u64) -> (String, BTreeMap<String, Drawn>) {
             .collect();
         let oil = &OILS[one_of(&mut chance, &fitting)];
         let mut f = fresh(oil);
-        let truths: Vec<(Truth, f64)> =
-            truths.into_iter().map(|t| (t, befalls(t, &mut f, oil, &mut chance))).collect();
+        let truths: Vec<(Truth, f64)> = truths
+            .into_iter()
+            .map(|t| (t, befalls(t, &mut f, oil, &mut chance)))
+            .collect();
         let f = read(&f, &mut chance);
         let mut there = [true; 9];
         for t in &mut there {
@@ -284,10 +306,22 @@ struct Score {
 impl Score {
     fn take(&mut self, drawn: &Drawn, first: Option<&str>) {
         let truth = first.and_then(Truth::named);
-        let said = truth.map_or_else(|| first.unwrap_or("nothing").to_owned(), |t| t.word().to_owned());
+        let said = truth.map_or_else(
+            || first.unwrap_or("nothing").to_owned(),
+            |t| t.word().to_owned(),
+        );
         let names: Vec<&str> = drawn.truths.iter().map(|(t, _)| t.word()).collect();
-        let is = if names.is_empty() { "clean".to_owned() } else { names.join(" and ") };
-        *self.confusion.entry(is).or_default().entry(said).or_default() += 1;
+        let is = if names.is_empty() {
+            "clean".to_owned()
+        } else {
+            names.join(" and ")
+        };
+        *self
+            .confusion
+            .entry(is)
+            .or_default()
+            .entry(said)
+            .or_default() += 1;
         if drawn.truths.is_empty() {
             self.clean += 1;
             self.accused += u32::from(first.is_some());
@@ -301,7 +335,10 @@ impl Score {
             self.right_where_told += hit;
         }
         if let [(t, size)] = drawn.truths.as_slice() {
-            let entry = self.by_size.entry(format!("{} {size}", t.word())).or_default();
+            let entry = self
+                .by_size
+                .entry(format!("{} {size}", t.word()))
+                .or_default();
             entry.0 += hit;
             entry.1 += 1;
         }
@@ -332,7 +369,10 @@ impl Score {
     }
 }
 
-#[expect(clippy::print_stdout, reason = "the confusion table is part of the test's output")]
+#[expect(
+    clippy::print_stdout,
+    reason = "the confusion table is part of the test's output"
+)]
 #[test]
 fn first_named_causes_are_right_and_clean_samples_are_left_alone() {
     let (text, all) = table(1000, 20_261_201);
@@ -349,7 +389,19 @@ fn first_named_causes_are_right_and_clean_samples_are_left_alone() {
     println!("{}", score.print());
     assert_eq!(seen, 1000);
     let share = |a: u32, b: u32| f64::from(a) / f64::from(b.max(1));
-    assert!(share(score.right_where_told, score.told) >= 0.85, "{}", score.print());
-    assert!(share(score.right, score.causes) >= 0.78, "{}", score.print());
-    assert!(share(score.accused, score.clean) <= 0.03, "{}", score.print());
+    assert!(
+        share(score.right_where_told, score.told) >= 0.85,
+        "{}",
+        score.print()
+    );
+    assert!(
+        share(score.right, score.causes) >= 0.78,
+        "{}",
+        score.print()
+    );
+    assert!(
+        share(score.accused, score.clean) <= 0.03,
+        "{}",
+        score.print()
+    );
 }
