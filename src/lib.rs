@@ -15,6 +15,7 @@
 
 pub mod assets;
 pub mod cli;
+pub mod decide;
 pub mod demand;
 pub mod input;
 pub mod intake;

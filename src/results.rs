@@ -2,9 +2,14 @@
 //! renamed, within a format number.
 
 pub mod csv;
+pub mod gaps;
 pub mod intake;
 pub mod json;
+pub mod mend;
 pub mod need;
 pub mod oil;
+pub mod pool;
+pub mod scatter;
 pub mod weigh;
+pub mod whatif;
 pub mod xlsx;

@@ -1,8 +1,13 @@
 //! Results as text for people.
 
+pub mod gaps;
 pub mod intake;
+pub mod mend;
 pub mod need;
 pub mod oil;
+pub mod pool;
+pub mod scatter;
 pub mod weigh;
+pub mod whatif;
 pub mod why;
 pub mod work;

@@ -61,6 +61,10 @@ pub struct Point {
     pub limits: Limits,
     /// Temperature the bulk oil must not pass.
     pub oil_limit: Option<Given<ThermodynamicTemperature>>,
+    /// How clean the oil is kept: an ISO 4406 code or a word of ISO 281.
+    pub cleanliness: Option<Given<String>>,
+    /// How dusty the place is: `yes`, `no`, `high`.
+    pub dust: Option<Given<String>>,
     /// Materials, environment and duty that suitability rules ask about.
     pub facts: super::facts::PointFacts,
     /// For the heat balance.
@@ -220,6 +224,10 @@ pub struct Regrease {
     pub amount: Option<Stated<Mass>>,
     /// Time between.
     pub interval: Option<Stated<Time>>,
+    /// How the shaft lies: `horizontal`, `sloping`, `vertical`.
+    pub position: Option<Given<String>>,
+    /// How much it vibrates: `low`, `medium`, `high`.
+    pub vibration: Option<Given<String>>,
 }
 
 /// What a heat balance needs beyond the parts.

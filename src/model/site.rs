@@ -117,6 +117,20 @@ pub struct Acceptance {
     pub because: Option<String>,
 }
 
+impl Acceptance {
+    /// Whether it is in force on a day; ISO dates compare as text.
+    pub fn stands(&self, on: &str) -> bool {
+        let begun = self.on.as_deref().is_none_or(|from| from <= on);
+        let lasts = self.until.as_deref().is_none_or(|until| on <= until);
+        begun && lasts
+    }
+
+    /// Whether it has run out by a day.
+    pub fn expired(&self, on: &str) -> bool {
+        self.until.as_deref().is_some_and(|until| until < on)
+    }
+}
+
 /// A verdict the user expects; `check` fails where the judge says otherwise.
 #[derive(Clone, Debug, PartialEq)]
 pub struct Expectation {

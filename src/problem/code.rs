@@ -307,6 +307,10 @@ codes! {
     SetWhich = "set-which" Error,
     /// Nothing matches what was asked.
     NothingToWeigh = "nothing-to-weigh" Error,
+    /// No oil list keeps the terms asked for.
+    ListImpossible = "list-impossible" Error,
+    /// No machine can be decided, so there is nothing to make a list from.
+    NothingDecided = "nothing-decided" Error,
     /// A rule used outside the range it was made for.
     RuleRange = "rule-range" Warning,
     /// An acceptance that has run out.

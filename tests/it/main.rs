@@ -2,6 +2,7 @@
 
 mod chance;
 mod checks;
+mod decide;
 mod demo;
 mod determinism;
 mod editor;
@@ -12,6 +13,7 @@ mod journal_heat;
 mod journal_table;
 mod judging;
 mod layers;
+mod pool;
 mod problems;
 mod properties_film;
 mod properties_oil;

@@ -42,6 +42,8 @@ const ELSEWHERE: &[Code] = &[
     Code::SetForm,
     Code::SetWhich,
     Code::NothingToWeigh,
+    Code::ListImpossible,
+    Code::NothingDecided,
     Code::RuleRange,
     Code::AcceptExpired,
 ];

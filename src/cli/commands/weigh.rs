@@ -3,11 +3,13 @@
 use crate::cli::exit::Exit;
 use crate::cli::load::Loaded;
 use crate::cli::session::Session;
+use crate::cli::text_of::scatter::told;
 use crate::cli::text_of::weigh::{Style, one};
 use crate::cli::{AsState, Format, Gate, Weigh};
+use crate::decide::scatter::scatter;
 use crate::judge::Verdict;
 use crate::model::Point;
-use crate::results::weigh::{document_of, table_of};
+use crate::results::weigh::{Scatters, document_of, table_of};
 use crate::weighing::{Scales, Settings, Weighed};
 
 /// Runs `weigh`.
@@ -63,7 +65,11 @@ fn run(
             w.barred.retain(|b| b.in_use);
         }
     }
-    let exit = print(session, &scales, loaded, &all);
+    let scatters = match args.scatter {
+        Some(cases) => sampled(session, &scales, &all, cases)?,
+        None => Scatters::new(),
+    };
+    let exit = print(session, &scales, loaded, &all, &scatters);
     if exit != Exit::Done || tripped.is_empty() {
         return Ok(exit);
     }
@@ -74,6 +80,33 @@ fn run(
     let named = &tripped[..tripped.len().min(GATE_NAMED)];
     session.note(&format!("gate tripped: {}{more}", named.join(", ")));
     Ok(Exit::Gate)
+}
+
+/// Most cases sampled for one oil.
+const MOST_CASES: u32 = 1_000_000;
+
+/// Samples every oil that is printed.
+fn sampled(
+    session: &mut Session<'_>,
+    scales: &Scales<'_>,
+    all: &[Weighed<'_>],
+    cases: u32,
+) -> Result<Scatters, Exit> {
+    if cases == 0 || cases > MOST_CASES {
+        session.fail(&format!(
+            "--scatter {cases} is not a number of cases from 1 to {MOST_CASES}\n  write  --scatter 1000"
+        ));
+        return Err(Exit::Usage);
+    }
+    let mut found = Scatters::new();
+    for (n, w) in all.iter().enumerate() {
+        for c in &w.candidates {
+            if let Some(s) = scatter(scales, w, c.oil, cases) {
+                found.insert((n, c.oil), s);
+            }
+        }
+    }
+    Ok(found)
 }
 
 /// So many oils are named when a gate is tripped; the table has them all.
@@ -121,19 +154,28 @@ fn print(
     scales: &Scales<'_>,
     loaded: &Loaded,
     all: &[Weighed<'_>],
+    scatters: &Scatters,
 ) -> Exit {
     match session.shared.format {
         Format::Json => {
             let head = session.head(loaded);
-            session.result(&document_of(scales, all, &head))
+            session.result(&document_of(scales, all, scatters, &head))
         }
-        Format::Csv => session.table(&table_of(scales, all)),
+        Format::Csv => session.table(&table_of(scales, all, scatters)),
         Format::Text => {
             let style = Style {
                 marks: session.marks(),
                 width: session.width(),
             };
-            let text: Vec<String> = all.iter().map(|w| one(scales, w, style)).collect();
+            let text: Vec<String> = all
+                .iter()
+                .enumerate()
+                .map(|(n, w)| {
+                    let mut text = one(scales, w, style);
+                    text.push_str(&told(scales, (n, w), scatters, style.width));
+                    text
+                })
+                .collect();
             suggest(session, scales, all);
             session.result(&text.join("\n"))
         }

@@ -11,6 +11,10 @@ use crate::quantity::Kind;
 pub const EXPOSURE: &[&str] = &["outdoor", "sheltered", "indoor"];
 /// Words for dust besides yes and no.
 pub const DUST: &[&str] = &["high"];
+/// How a shaft lies.
+pub const POSITION: &[&str] = &["horizontal", "sloping", "vertical"];
+/// How much a bearing vibrates.
+pub const VIBRATION: &[&str] = &["low", "medium", "high"];
 /// Ways of lubrication.
 pub const LUBRICATION: &[&str] = &[
     "splash",
@@ -165,5 +169,7 @@ pub static REGREASE: Record = Record {
     keys: &[
         key("amount", stated(MASS), "gap", "Grease put in each time."),
         key("interval", Form::Quantity(Want::stated(TIME).such_as("2000 h")), "gap", "Time between."),
+        key("position", Form::Word(POSITION), "horizontal", "How the shaft lies."),
+        key("vibration", Form::Word(VIBRATION), "low", "How much the bearing vibrates: low below 5 mm/s, medium to 10 mm/s, high above."),
     ],
 };

@@ -162,6 +162,10 @@ pub(super) fn regrease(reader: &mut Reader<'_>, fields: &Fields<'_>) -> Option<R
     Some(Regrease {
         amount: inner.stated(reader, "amount"),
         interval: inner.stated(reader, "interval"),
+        position: inner.word(reader, "position").map(|w| w.map(str::to_owned)),
+        vibration: inner
+            .word(reader, "vibration")
+            .map(|w| w.map(str::to_owned)),
     })
 }
 
