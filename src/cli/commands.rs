@@ -2,6 +2,7 @@
 
 pub mod audit;
 pub mod check;
+pub mod compare;
 pub mod gaps;
 pub mod help;
 pub mod mend;
@@ -19,6 +20,7 @@ pub mod work;
 
 pub use audit::audit;
 pub use check::check;
+pub use compare::compare;
 pub use gaps::gaps;
 pub use help::help;
 pub use mend::mend;

@@ -18,6 +18,7 @@ mod eligible;
 mod first;
 mod gaps;
 mod inputs;
+mod lists;
 mod machine;
 mod machines;
 mod needs;
@@ -27,14 +28,18 @@ mod plan;
 mod point;
 mod reference;
 mod register;
+mod revision;
 mod rules;
 mod say;
+mod season;
 mod sign;
 mod site_gaps;
 mod state;
 mod steps;
 mod store;
 mod vary;
+
+pub use revision::Since;
 
 use crate::demand::End;
 use crate::judge::{PreparedOil, Verdict};
@@ -72,6 +77,8 @@ pub struct Options {
     pub warning: Option<String>,
     /// What the commands printed on the sheets need behind them to find the same site.
     pub flags: String,
+    /// An older state, and what moved since.
+    pub since: Option<Since>,
 }
 
 /// What a report is made from.
@@ -161,7 +168,7 @@ pub struct Report<'a> {
 impl<'a> Report<'a> {
     /// Plans the sheets of these points.
     pub fn new(run: Run<'a>, points: &[&'a Point]) -> Self {
-        let plan = Plan::new(points, run.options.bundle);
+        let plan = Plan::new(points, run.options.bundle, run.options.since.is_some());
         Self {
             run,
             plan,
@@ -215,9 +222,20 @@ impl<'a> Report<'a> {
         let areas = (0..self.plan.areas.len()).map(|i| machines::area(self, i));
         std::iter::once_with(|| overview::sheet(self))
             .chain(areas)
+            .chain(self.changes())
             .chain(std::iter::once_with(|| reference::methods(self)))
             .chain(std::iter::once_with(|| reference::rules(self)))
             .chain(std::iter::once_with(|| reference::words(self)))
+    }
+
+    /// The page of what moved, where an older state was named.
+    fn changes(&self) -> Option<Sheet> {
+        let (fixed, since) = self
+            .plan
+            .revision
+            .as_ref()
+            .zip(self.run.options.since.as_ref())?;
+        Some(revision::sheet(self, fixed, since))
     }
 
     /// The links of the bar of a document that holds all sheets.

@@ -44,6 +44,8 @@ pub(super) struct Plan<'a> {
     pub(super) overview: Fixed,
     pub(super) areas: Vec<Area>,
     pub(super) machines: Vec<Machine<'a>>,
+    /// What moved, where an older state is named.
+    pub(super) revision: Option<Fixed>,
     pub(super) methods: Fixed,
     pub(super) rules: Fixed,
     pub(super) glossary: Fixed,
@@ -57,6 +59,7 @@ pub(super) enum On {
     Overview,
     Area(usize),
     Machine(usize),
+    Revision,
     Methods,
     Rules,
     Glossary,
@@ -64,7 +67,7 @@ pub(super) enum On {
 
 impl<'a> Plan<'a> {
     /// Plans the sheets for these points, in their order.
-    pub(super) fn new(points: &[&'a Point], bundle: Bundle) -> Self {
+    pub(super) fn new(points: &[&'a Point], bundle: Bundle, revised: bool) -> Self {
         let mut names = Names::new();
         let mut number = 0;
         let mut next = || {
@@ -87,6 +90,7 @@ impl<'a> Plan<'a> {
                 number: next(),
             })
             .collect();
+        let revision = revised.then(|| fixed(&mut names, "changes", next()));
         let methods = fixed(&mut names, "methods", next());
         let rules = fixed(&mut names, "rules", next());
         let glossary = fixed(&mut names, "words", next());
@@ -96,6 +100,7 @@ impl<'a> Plan<'a> {
             overview,
             areas,
             machines,
+            revision,
             methods,
             rules,
             glossary,
@@ -107,6 +112,7 @@ impl<'a> Plan<'a> {
         let fixed = [&self.overview, &self.methods, &self.rules, &self.glossary];
         fixed
             .into_iter()
+            .chain(&self.revision)
             .map(|f| &f.place)
             .chain(self.areas.iter().map(|a| &a.place))
             .chain(self.machines.iter().map(|m| &m.place))
@@ -145,6 +151,10 @@ impl<'a> Plan<'a> {
                 }
             }
             _ => {}
+        }
+        if let Some(revision) = &self.revision {
+            let current = on == On::Revision;
+            bar.push(link("Changes".into(), &revision.place, current));
         }
         bar.push(link(
             "Methods".into(),

@@ -118,7 +118,7 @@ pub(super) fn notes(report: &Report<'_>) -> Vec<Phrase> {
         .flatten()
         .any(|d| d.oil.is_some());
     if any {
-        vec!["Each oil is the first choice of its machines. Whether a shorter list would serve all of them is not looked for on this sheet.".into()]
+        vec!["The table names for each machine its own first choice. A shorter list for all of them together is told below the figure.".into()]
     } else {
         Vec::new()
     }
