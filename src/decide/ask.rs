@@ -13,6 +13,8 @@ mod trial;
 use crate::demand::takes_grease;
 use crate::judge::{Judgement, Verdict};
 use crate::model::rulebook::Rulebook;
+use crate::quantity::Measure;
+use crate::quantity::show::{Toward, Units, quantity};
 use crate::relation::oil::base_stock::BaseStock;
 use crate::relation::oil::grade::IsoGrade;
 use crate::weighing::{Scales, Weighed};
@@ -33,6 +35,9 @@ pub struct Specification {
     /// Permanent loss of viscosity at 100 degC at most, a share; none where nothing worn is
     /// judged.
     pub loss: Option<f64>,
+    /// Viscosity to be measured at the coldest start, where the data sheet alone does not carry
+    /// that far: K, and Pa·s at most.
+    pub cold: Option<(f64, f64)>,
     /// Whether shear is that of gears and rolling bearings.
     pub severe: bool,
     /// What it has to declare and what it must not contain.
@@ -85,12 +90,15 @@ pub fn ask(scales: &Scales<'_>, weighed: &Weighed<'_>) -> Ask {
         if contents.barred {
             continue;
         }
-        let trial = Trial::new(scales, weighed, base, &contents);
-        let Some((grade, vi)) = plainest(&trial, index) else {
-            continue;
-        };
-        if let Some(found) = complete(&trial, grade, vi, &contents) {
-            return Ask::Specification(Box::new(found));
+        // a data sheet alone may not reach down to the start: then the oil is to be measured there
+        for measured_cold in [false, true] {
+            let trial = Trial::new(scales, weighed, base, &contents, measured_cold);
+            let Some((grade, vi)) = plainest(&trial, index) else {
+                continue;
+            };
+            if let Some(found) = complete(&trial, grade, vi, &contents) {
+                return Ask::Specification(Box::new(found));
+            }
         }
     }
     Ask::NoRoom { vi: most }
@@ -156,6 +164,7 @@ fn complete(
         vi,
         pour,
         loss,
+        cold: trial.cold_viscosity(grade, vi),
         severe: trial.severe(),
         contents: contents.clone(),
         judgement,
@@ -220,6 +229,14 @@ impl Specification {
             self.pour
                 .map(|p| format!("pour point at most {}", degrees(p))),
         );
+        lines.extend(self.cold.map(|(t, eta)| {
+            let most = crate::quantity::DynamicViscosity::from_base(eta).amount();
+            format!(
+                "viscosity measured at {} (ASTM D2983) at most {}",
+                degrees(t),
+                quantity(most, Units::Si, Toward::Down)
+            )
+        }));
         lines.extend(self.loss.map(|loss| {
             if loss > 0.0 {
                 format!(

@@ -81,6 +81,9 @@ fn specification(scales: &Scales<'_>, m: &mut Map<String, Value>, spec: &Specifi
                 "value": json::number(l * 100.0), "unit": "%", "at": "100 degC",
                 "test": spec.shear_test(scales.rules),
             })),
+            "cold_viscosity_at_most": spec.cold.map_or(Value::Null, |(t, eta)| json!({
+                "value": json::number(eta * 1e3), "unit": "mPa.s", "at": json::temperature(t, scales.units),
+            })),
             "base": spec.base.word(),
             "classes": c.classes,
             "additives": c.additives.iter().map(|a| a.word()).collect::<Vec<_>>(),

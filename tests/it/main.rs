@@ -2,6 +2,7 @@
 
 mod chance;
 mod checks;
+mod compare;
 mod decide;
 mod demo;
 mod determinism;
@@ -29,6 +30,7 @@ mod report_pages;
 mod report_run;
 mod rules;
 mod scenario;
+mod season;
 mod sound;
 mod tables;
 mod work_journal;

@@ -4,10 +4,10 @@ use super::contents::Contents;
 use crate::demand::End;
 use crate::judge::{Judgement, PreparedOil, Verdict, weigh};
 use crate::model::Oil;
-use crate::model::oil::{GradeOnly, OilKind, Polymer, Shear, Viscosity};
+use crate::model::oil::{DynamicPoint, GradeOnly, OilKind, Polymer, Shear, Viscosity};
 use crate::model::stated::Bound;
 use crate::quantity::convert::{celsius, number};
-use crate::quantity::{Measure, ThermodynamicTemperature};
+use crate::quantity::{DynamicViscosity, Measure, ThermodynamicTemperature};
 use crate::relation::oil::base_stock::BaseStock;
 use crate::source::Origin;
 use crate::source::place::Given;
@@ -19,6 +19,8 @@ pub(super) struct Trial<'t, 'a> {
     weighed: &'t Weighed<'a>,
     pub(super) base: BaseStock,
     contents: &'t Contents,
+    /// Whether its viscosity is measured at the coldest start as well.
+    measured_cold: bool,
 }
 
 impl<'t, 'a> Trial<'t, 'a> {
@@ -27,13 +29,33 @@ impl<'t, 'a> Trial<'t, 'a> {
         weighed: &'t Weighed<'a>,
         base: BaseStock,
         contents: &'t Contents,
+        measured_cold: bool,
     ) -> Self {
         Self {
             scales,
             weighed,
             base,
             contents,
+            measured_cold,
         }
+    }
+
+    /// The coldest start, K; none where nothing is judged there.
+    pub(super) fn coldest_start(&self) -> Option<f64> {
+        let settings = self.weighed.ready.settings.iter();
+        settings
+            .filter(|s| s.has_start_ceiling)
+            .filter_map(|s| s.start.map(|(t, _)| t))
+            .min_by(f64::total_cmp)
+    }
+
+    /// Viscosity of such an oil at the coldest start, at its thick end, Pa·s.
+    pub(super) fn cold_viscosity(&self, grade: u32, vi: f64) -> Option<(f64, f64)> {
+        let t = self.coldest_start().filter(|_| self.measured_cold)?;
+        let oil = self.oil(grade, vi, None, None, None);
+        let ready = PreparedOil::new(&oil, self.scales.rules, true).ok()?;
+        let at = ThermodynamicTemperature::from_base(t);
+        Some((t, ready.thick.nu(t) * ready.curves.density.at(at).base()))
     }
 
     /// Whether shear on the point is that of gears and rolling bearings.
@@ -72,12 +94,26 @@ impl<'t, 'a> Trial<'t, 'a> {
         pour: Option<f64>,
         loss: Option<f64>,
     ) -> Option<Judgement> {
-        let oil = self.oil(grade, vi, pour, loss);
+        let cold = self.cold_viscosity(grade, vi);
+        let oil = self.oil(grade, vi, pour, loss, cold);
         let ready = PreparedOil::new(&oil, self.scales.rules, true).ok()?;
         Some(weigh(&self.weighed.ready, &ready))
     }
 
-    fn oil(&self, grade: u32, vi: f64, pour: Option<f64>, loss: Option<f64>) -> Oil {
+    fn oil(
+        &self,
+        grade: u32,
+        vi: f64,
+        pour: Option<f64>,
+        loss: Option<f64>,
+        cold: Option<(f64, f64)>,
+    ) -> Oil {
+        let measured = cold.map(|(t, eta)| {
+            asked(DynamicPoint {
+                eta: DynamicViscosity::from_base(eta),
+                at: ThermodynamicTemperature::from_base(t),
+            })
+        });
         let pour = pour.map_or_else(|| celsius(-90.0), ThermodynamicTemperature::from_base);
         Oil {
             id: "the oil asked for".to_owned(),
@@ -101,7 +137,7 @@ impl<'t, 'a> Trial<'t, 'a> {
                 test: None,
             }),
             formulation: None,
-            cold_viscosity: Vec::new(),
+            cold_viscosity: measured.into_iter().collect(),
             ccs: Vec::new(),
             mrv: Vec::new(),
             yield_stress: None,
