@@ -21,6 +21,7 @@ mod first;
 mod gaps;
 mod inputs;
 mod labels;
+mod lists;
 mod machine;
 mod machines;
 mod needs;
@@ -33,9 +34,11 @@ mod plan;
 mod point;
 mod reference;
 mod register;
+mod revision;
 mod rules;
 mod running;
 mod say;
+mod season;
 mod sign;
 mod site_gaps;
 mod state;
@@ -45,6 +48,8 @@ mod uses;
 mod vary;
 
 use crate::audit::Audit;
+pub use revision::Since;
+
 use crate::demand::End;
 use crate::judge::{PreparedOil, Verdict};
 use crate::model::Point;
@@ -81,6 +86,8 @@ pub struct Options {
     pub warning: Option<String>,
     /// What the commands printed on the sheets need behind them to find the same site.
     pub flags: String,
+    /// An older state, and what moved since.
+    pub since: Option<Since>,
 }
 
 /// What a report is made from.
@@ -199,6 +206,7 @@ impl<'a> Report<'a> {
             &run.scales.site.oils,
             run.options.bundle,
             run.audit.is_some(),
+            run.options.since.is_some(),
         );
         let mut run = run;
         run.oil_sheets = plan.oils.iter().map(|o| plan.href(&o.place)).collect();
@@ -259,9 +267,20 @@ impl<'a> Report<'a> {
             .chain(areas)
             .chain(oils)
             .chain(self.run.audit.and_then(|a| audit::sheet(self, a)))
+            .chain(self.changes())
             .chain(std::iter::once_with(|| reference::methods(self)))
             .chain(std::iter::once_with(|| reference::rules(self)))
             .chain(std::iter::once_with(|| reference::words(self)))
+    }
+
+    /// The page of what moved, where an older state was named.
+    fn changes(&self) -> Option<Sheet> {
+        let (fixed, since) = self
+            .plan
+            .revision
+            .as_ref()
+            .zip(self.run.options.since.as_ref())?;
+        Some(revision::sheet(self, fixed, since))
     }
 
     /// The links of the bar of a document that holds all sheets.

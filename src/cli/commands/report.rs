@@ -8,13 +8,15 @@ use crate::cli::load::Loaded;
 use crate::cli::samples::Bottles;
 use crate::cli::session::Session;
 use crate::cli::{Format, Gate, Paper, Report as Args};
+use crate::compare::compare;
 use crate::judge::Verdict;
-use crate::report::build::{Options, Report, Run};
+use crate::report::build::{Options, Report, Run, Since};
 use crate::report::model::{Image, LOGO_LIMIT, Paper as Size};
 use crate::report::names::Bundle;
 use crate::report::page::Templates;
 use crate::results::csv::{self, Cell, Dialect, Table};
 use crate::results::json;
+use crate::source::SourceSet;
 use crate::weighing::Scales;
 use pages::{Answer, Target};
 use serde_json::{Value, json};
@@ -41,7 +43,10 @@ fn run(session: &mut Session<'_>, args: &Args) -> Result<Exit, Exit> {
     let settings = session.settings(true)?;
     let points = session.points(&loaded.site, &args.only)?;
     let templates = templates(session, args, &loaded)?;
-    let options = options(session, args, &loaded)?;
+    let mut options = options(session, args, &loaded)?;
+    if let Some(old) = &args.since {
+        options.since = Some(since(session, old)?);
+    }
     let scales = Scales::new(&loaded.site, &loaded.rules, settings)
         .map_err(|(oil, misfit)| session.misfit(&oil, &misfit))?;
     let head = session.head(&loaded);
@@ -93,6 +98,21 @@ fn audit(
     Ok(Some(audited))
 }
 
+/// What moved since an older state.
+fn since(session: &mut Session<'_>, old: &str) -> Result<Since, Exit> {
+    let mut set = SourceSet::new();
+    let before = session.state(&mut set, old)?;
+    let now = session.state_now(&mut set)?;
+    let found = compare(&set, &before.state, &now.state).map_err(|unread| {
+        session.fail(&format!("{old} cannot be compared with the site: {unread}"));
+        Exit::Input
+    })?;
+    Ok(Since {
+        name: before.name,
+        found,
+    })
+}
+
 /// Where the pages go.
 fn target(session: &mut Session<'_>, args: &Args) -> Result<Target, Exit> {
     match (session.shared.out.as_deref(), args.one_file) {
@@ -135,6 +155,7 @@ fn options(session: &mut Session<'_>, args: &Args, loaded: &Loaded) -> Result<Op
                 .to_owned()
         }),
         flags,
+        since: None,
     })
 }
 

@@ -50,6 +50,8 @@ pub(super) struct Plan<'a> {
     oil_ids: Vec<String>,
     /// The audit, where there are samples.
     pub(super) audit: Option<Fixed>,
+    /// What moved, where an older state is named.
+    pub(super) revision: Option<Fixed>,
     pub(super) methods: Fixed,
     pub(super) rules: Fixed,
     pub(super) glossary: Fixed,
@@ -65,6 +67,7 @@ pub(super) enum On {
     Machine(usize),
     Oil(usize),
     Audit,
+    Revision,
     Methods,
     Rules,
     Glossary,
@@ -72,7 +75,13 @@ pub(super) enum On {
 
 impl<'a> Plan<'a> {
     /// Plans the sheets for these points, in their order.
-    pub(super) fn new(points: &[&'a Point], oils: &[Oil], bundle: Bundle, audited: bool) -> Self {
+    pub(super) fn new(
+        points: &[&'a Point],
+        oils: &[Oil],
+        bundle: Bundle,
+        audited: bool,
+        revised: bool,
+    ) -> Self {
         let mut names = Names::new();
         let mut number = 0;
         let mut next = || {
@@ -104,6 +113,7 @@ impl<'a> Plan<'a> {
             })
             .collect();
         let audit = audited.then(|| fixed(&mut names, "audit", next()));
+        let revision = revised.then(|| fixed(&mut names, "changes", next()));
         let methods = fixed(&mut names, "methods", next());
         let rules = fixed(&mut names, "rules", next());
         let glossary = fixed(&mut names, "words", next());
@@ -116,6 +126,7 @@ impl<'a> Plan<'a> {
             oils,
             oil_ids,
             audit,
+            revision,
             methods,
             rules,
             glossary,
@@ -128,6 +139,7 @@ impl<'a> Plan<'a> {
         fixed
             .into_iter()
             .chain(self.audit.as_ref())
+            .chain(&self.revision)
             .map(|f| &f.place)
             .chain(self.areas.iter().map(|a| &a.place))
             .chain(self.machines.iter().map(|m| &m.place))
@@ -181,6 +193,10 @@ impl<'a> Plan<'a> {
         }
         if let Some(audit) = &self.audit {
             bar.push(link("Audit".into(), &audit.place, on == On::Audit));
+        }
+        if let Some(revision) = &self.revision {
+            let current = on == On::Revision;
+            bar.push(link("Changes".into(), &revision.place, current));
         }
         bar.push(link(
             "Methods".into(),
