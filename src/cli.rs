@@ -490,7 +490,7 @@ pub struct Oil {
 /// `compare`
 #[derive(Debug, Args)]
 pub struct Compare {
-    /// The old state: a site's folder, or a file of `weigh -f json`
+    /// The old state: a site's folder, a file of `weigh -f json`, or one of `audit -f json`
     pub old: String,
     /// The new state
     pub new: String,

@@ -385,7 +385,9 @@ fn name(
 
 /// Oils that would do, each at its likeliest share; three at most.
 fn other_oils<'l, 'g: 'l>(with: impl Iterator<Item = &'l Looked<'g>>) -> Vec<OtherOil> {
-    let mut all: BTreeMap<(Option<usize>, Arc<str>), (f64, f64, f64)> = BTreeMap::new();
+    /// Weight, weight times share, weight again for the mean.
+    type Sums = (f64, f64, f64);
+    let mut all: BTreeMap<(Option<usize>, Arc<str>), Sums> = BTreeMap::new();
     let list: Vec<&Looked<'_>> = with.collect();
     let top = list.iter().map(|l| l.log).fold(f64::NEG_INFINITY, f64::max);
     let mut total = 0.0;

@@ -135,6 +135,9 @@ struct Pair<'a> {
     water_entry: Option<&'static str>,
 }
 
+/// Pairs by the places of point and labelled oil.
+type Pairs<'a> = BTreeMap<(Option<usize>, Option<usize>), Arc<Pair<'a>>>;
+
 /// Judges bottles.
 pub struct Auditor<'s, 'a> {
     /// Oils and rules made ready.
@@ -143,7 +146,7 @@ pub struct Auditor<'s, 'a> {
     profiles: Vec<Profile>,
     causes: Causes,
     on: Date,
-    pairs: RwLock<BTreeMap<(Option<usize>, Option<usize>), Arc<Pair<'a>>>>,
+    pairs: RwLock<Pairs<'a>>,
     oils: BTreeMap<String, usize>,
 }
 
@@ -393,7 +396,7 @@ impl<'s, 'a> Auditor<'s, 'a> {
             frame: serves::frame(label),
             setting: setting(at, label),
             yellow_metal: place.yellow_metal,
-            water_entry: at.and(place.water_entry).map(|w| w.word()),
+            water_entry: at.and(place.water_entry).map(Word::word),
             weighed,
         }
     }

@@ -374,9 +374,9 @@ fn wrong(label: &Profile, others: &[Arc<Mixed>]) -> Vec<Theta> {
                 ..Theta::of(kind_of_other(label, profile), d, share)
             };
             if other.oil.is_some() {
-                inside.push(theta)
+                inside.push(theta);
             } else {
-                outside.push(theta)
+                outside.push(theta);
             }
         }
     }
