@@ -13,8 +13,10 @@ pub mod explain;
 pub mod margin;
 pub mod numbers;
 pub mod order;
+pub mod own;
 pub mod prepared;
 mod straight;
+pub mod tested;
 pub mod verdict;
 pub mod weigh;
 

@@ -1,22 +1,27 @@
 //! From a read site to weighed candidates: every point, every oil, eligibility first.
 
 pub mod facts;
+pub mod pair;
 pub mod top_up;
 pub mod uses;
 
+pub use pair::Pair;
+
 use crate::demand::{
-    Demand, PointDemands, Scenario, Standing, demands, is_severe, point_demands, takes_grease,
+    Demands, End, PointDemands, Scenario, Standing, demands, is_severe, point_demands, takes_grease,
 };
 use crate::judge::because::because;
 use crate::judge::brief::brief;
 use crate::judge::explain::{Explanation, explain};
 use crate::judge::margin::Ready;
 use crate::judge::order::{Candidate as Ordered, compare, quantised, thousandths};
+use crate::judge::own::{Own, OwnSteps, Running, running};
 use crate::judge::{Judgement, PreparedOil, PreparedPoint, Verdict, weigh};
 use crate::model::facts::{OilFacts, SumpNow};
 use crate::model::oil::Price;
 use crate::model::rulebook::{Caution, Rulebook};
 use crate::model::{Oil, OilNow, Point, Site};
+use crate::oil::Curves;
 use crate::quantity::Measure;
 use crate::quantity::show::Units;
 use crate::relation::oil::viscosity_temperature::Misfit;
@@ -52,6 +57,8 @@ pub struct Candidate {
     pub notes: Vec<Condition>,
     /// Facts that suitability rules need and nobody stated.
     pub facts_missing: Vec<String>,
+    /// The question to put for each of them, in the same order.
+    pub questions: Vec<String>,
     /// Why the word is what it is, the main reason first.
     pub because: Vec<String>,
     /// The main reason in a few words.
@@ -60,6 +67,8 @@ pub struct Candidate {
     pub in_use: bool,
     /// Whether some point of the site holds it today.
     pub on_site: bool,
+    /// How hot it runs and what it costs, where the losses of the point are known.
+    pub running: Option<Running>,
 }
 
 /// One oil that a suitability rule bars.
@@ -169,8 +178,22 @@ impl<'a> Scales<'a> {
     /// The demands of a point, ready to be judged.
     pub fn prepare(&self, point: &Point) -> (PointDemands, PreparedPoint) {
         let demands = point_demands(point, &self.site.house, self.rules);
-        let ready = PreparedPoint::new(&demands.settings, is_severe(point), self.reserve);
+        let ready = self.made_ready(point, &demands, self.reserve);
         (demands, ready)
+    }
+
+    fn made_ready(&self, point: &Point, demands: &PointDemands, reserve: f64) -> PreparedPoint {
+        let mut ready = PreparedPoint::new(&demands.settings, is_severe(point), reserve);
+        if let Some(in_use) = self.in_use_curves(point) {
+            ready.run_by_losses(&demands.settings, in_use);
+        }
+        ready
+    }
+
+    /// The curves of the oil a point holds, where it is of the list.
+    fn in_use_curves(&self, point: &Point) -> Option<&Curves> {
+        let at = oil_index(self.site, oil_in_use(point)?)?;
+        Some(&self.oils[at].curves)
     }
 
     /// Weighs every oil on a point.
@@ -194,7 +217,7 @@ impl<'a> Scales<'a> {
             settings: vec![alone],
             shares: vec![setting],
         };
-        let ready = PreparedPoint::new(&demands.settings, is_severe(point), self.reserve);
+        let ready = self.made_ready(point, &demands, self.reserve);
         self.weigh_on(point, demands, ready, |_| true)
     }
 
@@ -231,7 +254,10 @@ impl<'a> Scales<'a> {
                 barred.push(Barred { oil: i, by, in_use });
             } else {
                 let judged = weigh(&ready, &self.oils[i]);
-                candidates.push(self.candidate(&demands, &ready, i, judged, &eligible, in_use));
+                let state = (i, &self.oils[i]);
+                let mut found = self.candidate(&demands, &ready, state, judged, &eligible, in_use);
+                found.running = self.running(point, &demands, i);
+                candidates.push(found);
             }
         }
         self.sort(&mut candidates);
@@ -259,26 +285,39 @@ impl<'a> Scales<'a> {
         &self,
         demands: &PointDemands,
         ready: &PreparedPoint,
-        oil: usize,
+        (oil, state): (usize, &PreparedOil),
         judgement: Judgement,
         eligible: &Eligibility,
         in_use: bool,
     ) -> Candidate {
         let mut conditions: Vec<Condition> = eligible.conditions.iter().map(condition).collect();
         conditions.extend(asked(demands, &judgement));
-        let because = because(demands, ready, &self.oils[oil], &judgement, self.units);
-        let brief = brief(demands, ready, &self.oils[oil], &judgement, self.units);
+        let ready = &*ready.for_oil(state);
+        let because = because(demands, ready, state, &judgement, self.units);
+        let brief = brief(demands, ready, state, &judgement, self.units);
         Candidate {
             oil,
             judgement,
             conditions,
             notes: self.notes(oil, ready, eligible),
             facts_missing: eligible.gaps.iter().map(|g| g.says.clone()).collect(),
+            questions: eligible.gaps.iter().map(|g| g.question.clone()).collect(),
             because,
             brief,
             in_use,
             on_site: self.on_site.contains(&self.site.oils[oil].id),
+            running: None,
         }
+    }
+
+    /// How an oil runs at a point, every unknown in the middle of its range.
+    fn running(&self, point: &Point, demands: &PointDemands, oil: usize) -> Option<Running> {
+        demands.middle.losses.as_ref()?;
+        let in_use = self.in_use_curves(point);
+        let own = in_use.and_then(|in_use| Own::of(&demands.middle, in_use));
+        let hours = point.running_hours.as_ref().and_then(|h| h.known());
+        let hours = hours.map(|h| h.value.0);
+        running(&demands.middle, own.as_ref(), &self.oils[oil].curves, hours)
     }
 
     /// Remarks for the sheet: those of the rules, and a loss found in a test milder than the
@@ -327,13 +366,19 @@ impl<'a> Scales<'a> {
         let j = &candidate.judgement;
         let setting = usize::from(j.hot.or(j.cold).or(j.pour).map_or(0, |m| m.setting));
         let oil = &self.oils[candidate.oil];
-        let trace = weighed.trace_of(setting, &self.site.house, self.rules);
+        let (trace, demands) = weighed.trace_of(setting, &self.site.house, self.rules);
+        let ready = weighed.ready.for_oil(oil);
+        let own = self.in_use_curves(weighed.point).map(|in_use| OwnSteps {
+            demands: &demands,
+            in_use,
+        });
         explain(
-            &trace.0,
-            &trace.1,
-            &weighed.ready.settings[setting],
+            &trace,
+            &demands.list,
+            &ready.settings[setting],
             (&self.site.oils[candidate.oil], oil),
             oil.worst(&weighed.ready),
+            own.as_ref(),
         )
     }
 }
@@ -345,14 +390,14 @@ impl Weighed<'_> {
         setting: usize,
         house: &crate::model::site::House,
         rules: &Rulebook,
-    ) -> (Derivation, Vec<Demand>) {
+    ) -> (Derivation, Demands) {
         if setting == 0 {
-            return (self.demands.trace.clone(), self.demands.middle.list.clone());
+            return (self.demands.trace.clone(), self.demands.middle.clone());
         }
         let mut trace = Derivation::new();
         let shares = &self.demands.shares[setting];
         let demands = demands(&mut trace, self.point, house, rules, shares);
-        (trace, demands.list)
+        (trace, demands)
     }
 
     /// The candidate that is the oil in use, where it was weighed.
@@ -395,6 +440,10 @@ fn asked(demands: &PointDemands, judgement: &Judgement) -> Vec<Condition> {
                 Standing::Replaced { by } => (
                     format!("stricter than {by} and not met"),
                     "confirm with the maker that the stated limit holds for this duty",
+                ),
+                Standing::Condition if demand.end == End::RunningCeiling => (
+                    "not met with this oil when it runs coldest".to_owned(),
+                    "watch how quietly the part runs, or take a thinner oil that meets the floor",
                 ),
                 Standing::Condition => (
                     "worth a review before the start, not met".to_owned(),

@@ -151,6 +151,8 @@ impl Host for System {
     }
 
     fn err(&mut self, text: &str) {
+        // Where both go to one place, what was said first stands first.
+        self.finish();
         drop(io::Write::write_all(&mut io::stderr(), text.as_bytes()));
     }
 

@@ -75,7 +75,7 @@ impl<'h> Session<'h> {
         }
         let epoch = self
             .host
-            .variable("`SOURCE_DATE_EPOCH`")
+            .variable("SOURCE_DATE_EPOCH")
             .and_then(|v| v.trim().parse().ok());
         match epoch {
             Some(seconds) => super::host::date_of(seconds),

@@ -5,10 +5,10 @@ use super::thermal::Thermal;
 use super::{AtAmbient, Demand, End, For, Information, Limit, Standing, Undecided};
 use crate::model::part::Part;
 use crate::model::rulebook::{Confidence, Rulebook};
-use crate::model::site::{House, HouseRule};
+use crate::model::site::{House, HouseLimit, HouseRule};
 use crate::model::{Point, Stated};
 use crate::quantity::convert::celsius;
-use crate::quantity::{Amount, Measure, ThermodynamicTemperature};
+use crate::quantity::{Amount, Length, Measure, TemperatureInterval, ThermodynamicTemperature};
 use crate::relation::sump;
 use crate::source::Origin;
 use crate::source::place::{Given, Whose};
@@ -23,6 +23,32 @@ pub struct HotAt {
     pub hottest: Option<Known<ThermodynamicTemperature>>,
     /// At the coldest ambient.
     pub coldest: Option<Known<ThermodynamicTemperature>>,
+}
+
+impl HotAt {
+    /// Raised by so much at every ambient.
+    #[must_use]
+    pub fn raised<R: Recorder>(
+        self,
+        r: &mut R,
+        says: &'static str,
+        by: Known<TemperatureInterval>,
+    ) -> Self {
+        let raise = |r: &mut R, t: Known<ThermodynamicTemperature>| {
+            r.law(
+                "t_part",
+                says,
+                &sump::PART,
+                (("t", t), ("Delta_t_part", by)),
+                |(t, d)| sump::running(t, d),
+            )
+        };
+        Self {
+            at: self.at.map(|at| at.raised(by.value.base())),
+            hottest: self.hottest.map(|t| raise(r, t)),
+            coldest: self.coldest.map(|t| raise(r, t)),
+        }
+    }
 }
 
 /// The surroundings of a part's demands.
@@ -100,6 +126,19 @@ impl<R: Recorder> Context<'_, '_, R> {
             .or_assume(self.r, Self::key(part, wanted), stated, usual)
     }
 
+    /// An input of a part, or its plausible range where nobody knows it.
+    pub fn or_plausible<Q: Measure>(
+        &mut self,
+        part: &Part,
+        wanted: Wanted<'_>,
+        stated: Option<&Stated<Q>>,
+        range: (Q, Q),
+        why: &'static str,
+    ) -> Known<Q> {
+        self.inputs
+            .or_plausible(self.r, Self::key(part, wanted), stated, range, why)
+    }
+
     /// A value read from a rule.
     pub fn rule_value<Q: Measure>(
         &mut self,
@@ -123,12 +162,18 @@ impl<R: Recorder> Context<'_, '_, R> {
 
     /// Running temperature of a part, its own rise included.
     pub fn hot_at(&mut self, part: &Part) -> HotAt {
+        let sump = HotAt {
+            at: self.thermal.running,
+            hottest: self.thermal.hottest,
+            coldest: self.thermal.coldest,
+        };
+        self.raised(part, sump)
+    }
+
+    /// The temperature of a part over that of the oil around it, its own rise included.
+    pub fn raised(&mut self, part: &Part, oil: HotAt) -> HotAt {
         let Some(rise) = &part.part_rise else {
-            return HotAt {
-                at: self.thermal.running,
-                hottest: self.thermal.hottest,
-                coldest: self.thermal.coldest,
-            };
+            return oil;
         };
         let wanted = Wanted {
             key: "part rise",
@@ -144,20 +189,7 @@ impl<R: Recorder> Context<'_, '_, R> {
                 coldest: None,
             };
         };
-        let raise = |r: &mut R, t: Known<ThermodynamicTemperature>| {
-            r.law(
-                "t_part",
-                "running temperature of the part",
-                &sump::PART,
-                (("t", t), ("Delta_t_part", by)),
-                |(t, d)| sump::running(t, d),
-            )
-        };
-        HotAt {
-            at: self.thermal.running.map(|at| at.raised(by.value.base())),
-            hottest: self.thermal.hottest.map(|t| raise(self.r, t)),
-            coldest: self.thermal.coldest.map(|t| raise(self.r, t)),
-        }
+        oil.raised(self.r, "running temperature of the part", by)
     }
 
     /// A hot floor with nothing filled in but its place.
@@ -226,6 +258,21 @@ impl<R: Recorder> Context<'_, '_, R> {
             let replaces = rule.replaces.as_ref().is_some_and(|r| r.value == replaced);
             (takes && replaces).then(|| (i + 1, rule.clone()))
         })
+    }
+
+    /// The film height a house rule asks for on a part that takes it, with its source.
+    pub fn house_film(&mut self, part: &Part) -> Option<(Known<Length>, String, String)> {
+        let named = part.rule.as_ref().map(|r| r.value.as_str());
+        let found = self.house.rules.iter().enumerate();
+        let (number, rule, height) = found
+            .filter(|(_, rule)| named == Some(rule.name.as_str()))
+            .find_map(|(i, rule)| match rule.limit {
+                HouseLimit::FilmHeight(height) => Some((i + 1, rule.clone(), height)),
+                _ => None,
+            })?;
+        let known = self.rule_value("h_house", "film of the house rule", height, &rule.name);
+        let source = rule.source.unwrap_or_else(|| "house rule".to_owned());
+        Some((known, format!("H-{number} {}", rule.name), source))
     }
 
     /// A figure that sets no limit.

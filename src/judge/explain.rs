@@ -2,8 +2,10 @@
 
 mod curve;
 mod film;
+mod tested;
 
 use super::margin::Ready;
+use super::own::{OwnSteps, OwnTemperatures};
 use super::prepared::{PreparedOil, ReadyDemand, ReadyLimit, Setting, Variant};
 use super::weigh::Judgement;
 use crate::demand::{Demand, End};
@@ -67,15 +69,22 @@ pub fn explain(
     setting: &Setting,
     oil: (&Oil, &PreparedOil),
     variant: &Variant,
+    own: Option<&OwnSteps<'_>>,
 ) -> Explanation {
     let mut told = Explanation {
         trace: trace.clone(),
         margins: Vec::new(),
     };
+    let moves = setting.demands.iter().any(|d| d.moved.is_some());
+    let own = own
+        .filter(|_| moves)
+        .and_then(|own| own.tell(&mut told.trace, oil.1));
     let mut teller = Teller {
+        own,
         oil: oil.0,
         ready: oil.1,
         worn: variant.worn.as_ref(),
+        variant,
         under_shear: variant.under_shear,
         new: Ready::of(&oil.1.curves.new),
         points: Vec::new(),
@@ -96,9 +105,11 @@ pub fn explain(
 }
 
 struct Teller<'a> {
+    own: Option<OwnTemperatures>,
     oil: &'a Oil,
     ready: &'a PreparedOil,
     worn: Option<&'a Ready>,
+    variant: &'a Variant,
     under_shear: ShearEnd,
     new: Ready,
     points: Vec<(Which, LineSteps)>,
@@ -111,7 +122,7 @@ impl Teller<'_> {
         demand: &Demand,
         ready: &ReadyDemand,
     ) -> Option<Explained> {
-        let t = temperature(d, demand, ready);
+        let t = self.temperature(d, demand, ready);
         match &ready.limit {
             ReadyLimit::Jaw(jaw) => {
                 let nu = KinematicViscosity::from_base(jaw.nu);
@@ -122,7 +133,7 @@ impl Teller<'_> {
                 let limit = self.dynamic_limit(d, demand, DynamicViscosity::from_base(*eta), t);
                 Some(self.viscosity(d, ready, limit, t))
             }
-            ReadyLimit::Film(film) => self.film(d, ready, film, t),
+            ReadyLimit::Film(film) => self.film(d, demand, ready, film, t),
             ReadyLimit::Pour { least, .. } => self.pour(d, ready, *least, t),
             ReadyLimit::OilsOwn => {
                 let (_, most) = self.ready.ceiling?;
@@ -130,6 +141,7 @@ impl Teller<'_> {
             }
             ReadyLimit::AtMost(most) => Some(self.ceiling(d, ready, *most, t)),
             ReadyLimit::UseLow => self.use_low(d, ready, t),
+            ReadyLimit::Tested(limit) => self.tested(d, demand, ready, *limit, t),
         }
     }
 
@@ -374,13 +386,50 @@ impl Teller<'_> {
     }
 }
 
+impl Teller<'_> {
+    /// The temperature of a demand, moved to that of the oil's own losses where that is the
+    /// warmer.
+    fn temperature(
+        &self,
+        d: &mut Derivation,
+        demand: &Demand,
+        ready: &ReadyDemand,
+    ) -> Known<ThermodynamicTemperature> {
+        let Some((shift, own)) = ready.moved.zip(self.own) else {
+            return temperature(d, demand, ready.t);
+        };
+        let before = temperature(d, demand, shift.before);
+        let after = ThermodynamicTemperature::from_base(ready.t);
+        d.law(
+            "t",
+            "temperature there with this oil, the warmer",
+            &MOVED,
+            (
+                ("t", before),
+                ("t_losses", own.by_losses),
+                ("t_read", own.by_reading),
+            ),
+            |_: (
+                ThermodynamicTemperature,
+                ThermodynamicTemperature,
+                ThermodynamicTemperature,
+            )| after,
+        )
+    }
+}
+
+/// A temperature moved from that of the reading to that of the losses.
+static MOVED: crate::relation::Law = crate::relation::Law {
+    name: "temperature-by-losses",
+    title: "Temperature with an oil that runs hotter than the one the reading was taken with",
+    formula: "t = t + t_losses - t_read",
+    range: "where the losses give the warmer",
+    source: "heat balance calibrated on the reading",
+};
+
 /// The temperature of a demand, by its own step where it has one.
-fn temperature(
-    d: &mut Derivation,
-    demand: &Demand,
-    ready: &ReadyDemand,
-) -> Known<ThermodynamicTemperature> {
-    let value = ThermodynamicTemperature::from_base(ready.t);
+fn temperature(d: &mut Derivation, demand: &Demand, t: f64) -> Known<ThermodynamicTemperature> {
+    let value = ThermodynamicTemperature::from_base(t);
     match demand.at_step {
         Some(step) => Known { value, step },
         None => d.assume(

@@ -19,6 +19,7 @@ pub mod table;
 pub mod temperature_rise;
 pub mod transition;
 pub mod viscosity;
+pub mod warming;
 
 use crate::quantity::convert::{number, pascals};
 use crate::quantity::{AngularVelocity, Area, Force, Length, Measure, Pressure, Ratio, Velocity};
@@ -31,6 +32,15 @@ pub static SPECIFIC_LOAD: Law = Law {
     formula: "P = F/(D B)",
     range: "any journal bearing",
     source: "definition, ISO 7902-1",
+};
+
+/// Speed of the journal surface.
+pub static SURFACE_SPEED: Law = Law {
+    name: "journal-surface-speed",
+    title: "speed of the surface of a journal",
+    formula: "U = omega D/2",
+    range: "any journal bearing",
+    source: "definition",
 };
 
 /// Relative clearance.

@@ -5,3 +5,4 @@ pub mod pad;
 pub mod series;
 pub mod shape;
 pub mod slider;
+pub mod warming;

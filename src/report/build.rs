@@ -11,6 +11,7 @@ mod barred;
 mod candidates;
 mod case;
 mod caution;
+mod changes;
 mod checked;
 mod curves;
 mod digest;

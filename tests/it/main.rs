@@ -2,6 +2,7 @@
 
 mod chance;
 mod checks;
+mod decide;
 mod demo;
 mod determinism;
 mod exact;
@@ -10,10 +11,12 @@ mod journal_heat;
 mod journal_table;
 mod judging;
 mod layers;
+mod pool;
 mod problems;
 mod properties_film;
 mod properties_oil;
 mod reader;
+mod readme;
 mod real_oil;
 mod reference_film;
 mod reference_journal;

@@ -43,10 +43,10 @@ pub fn check(session: &mut Session<'_>) -> Exit {
         session.result(&text);
     } else {
         let mut text = format!(
-            "{} machines with {} lubrication points, {} oils read\n",
-            loaded.machines(),
-            site.points.len(),
-            site.oils.len()
+            "{} with {}, {} read\n",
+            counted(loaded.machines(), "machine"),
+            counted(site.points.len(), "lubrication point"),
+            counted(site.oils.len(), "oil")
         );
         for line in &unmet {
             let _ = writeln!(text, "not as expected  {line}");
@@ -70,4 +70,9 @@ pub fn word_of(scales: &Scales<'_>, weighed: &Weighed<'_>, oil: &str) -> String 
         return "barred".to_owned();
     }
     "not weighed".to_owned()
+}
+
+fn counted(n: usize, of: &str) -> String {
+    let s = if n == 1 { "" } else { "s" };
+    format!("{n} {of}{s}")
 }

@@ -1,7 +1,7 @@
 //! `rules`: what is in force, entry by entry, and the rules the program works limits out by.
 
 use crate::cli::exit::Exit;
-use crate::cli::load::matches;
+use crate::cli::select::matches;
 use crate::cli::session::Session;
 use crate::cli::text::folded;
 use crate::cli::{Format, Rules};
@@ -27,9 +27,18 @@ pub fn rules(session: &mut Session<'_>, args: &Rules) -> Exit {
     if chosen.is_empty() {
         let mut kinds: Vec<&str> = all.iter().map(|r| r.kind.as_str()).collect();
         kinds.dedup();
+        let what = match (&args.kind, args.rules.is_empty()) {
+            (Some(kind), true) => format!("no rules are of the kind '{kind}'"),
+            (Some(kind), false) => {
+                format!(
+                    "no rule of the kind '{kind}' matches {}",
+                    args.rules.join(", ")
+                )
+            }
+            (None, _) => format!("no rule matches {}", args.rules.join(", ")),
+        };
         session.fail(&format!(
-            "no rule matches {}\n  filmwright rules lists them; kinds: {}",
-            args.rules.join(", "),
+            "{what}\n  filmwright rules lists them; kinds: {}",
             kinds.join(", ")
         ));
         return Exit::NoMatch;

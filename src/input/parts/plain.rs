@@ -5,6 +5,7 @@ use crate::input::oils::{say_unusual, stated_twice};
 use crate::input::reader::Reader;
 use crate::model::part::{Feed, JournalBearing, PadType, ThrustBearing};
 use crate::model::stated::{Between, Stated, Tolerance};
+use crate::problem::{Code, Write};
 use crate::quantity::convert::to_mm;
 use crate::quantity::{Length, Measure, Ratio};
 use crate::source::place::Given;
@@ -36,12 +37,43 @@ pub(super) fn journal(reader: &mut Reader<'_>, fields: &Fields<'_>) -> JournalBe
         radial.as_ref(),
         diametral.as_ref(),
     );
+    let sound = |reader: &mut Reader<'_>, name, stated: Option<Stated<Length>>| {
+        above_zero(reader, fields, name, stated, SHAFT)
+    };
+    let radial = sound(reader, "radial clearance", radial);
+    let diametral = sound(reader, "diametral clearance", diametral);
+    let diameter = sound(reader, "diameter", diameter);
+    let width = fields.stated(reader, "width");
+    let (speed, load) = (
+        fields.stated(reader, "speed"),
+        fields.stated(reader, "load"),
+    );
     JournalBearing {
+        radial_clearance: radial
+            .filter(|c| {
+                fits(
+                    reader,
+                    fields,
+                    ("radial clearance", 1.0),
+                    c,
+                    diameter.as_ref(),
+                )
+            })
+            .or(diametral
+                .filter(|c| {
+                    fits(
+                        reader,
+                        fields,
+                        ("diametral clearance", 2.0),
+                        c,
+                        diameter.as_ref(),
+                    )
+                })
+                .map(halved)),
+        width: sound(reader, "width", width),
         diameter,
-        width: fields.stated(reader, "width"),
-        radial_clearance: radial.or(diametral.map(halved)),
-        speed: fields.stated(reader, "speed"),
-        load: fields.stated(reader, "load"),
+        speed: above_zero(reader, fields, "speed", speed, STANDS),
+        load: above_zero(reader, fields, "load", load, LOAD),
         feed,
         feed_temperature: fields.stated(reader, "feed temperature"),
         feed_pressure: fields.stated(reader, "feed pressure"),
@@ -49,6 +81,99 @@ pub(super) fn journal(reader: &mut Reader<'_>, fields: &Fields<'_>) -> JournalBe
         shaft_roughness: fields.stated(reader, "shaft roughness"),
         lining: fields.given_text(reader, "lining"),
     }
+}
+
+/// What is said of a value that is not above zero, and what may be written instead.
+type Instead = (&'static str, &'static str);
+
+const SHAFT: Instead = ("a bearing has a size", "0.08 mm");
+const PAD: Instead = ("a pad has a size", "60 mm");
+const STANDS: Instead = (
+    "a standing shaft draws no oil into the film; give the speed it turns at",
+    "1480 r/min",
+);
+const LOAD: Instead = (
+    "without a load the film says nothing; give the load, or `unknown` with a range",
+    "10 kN",
+);
+
+/// The value, refused unless it is above zero.
+fn above_zero<Q: Measure>(
+    reader: &mut Reader<'_>,
+    fields: &Fields<'_>,
+    name: &str,
+    stated: Option<Stated<Q>>,
+    (why, instead): Instead,
+) -> Option<Stated<Q>> {
+    let least = match stated.as_ref()? {
+        Stated::Known(given, _) => given.value.base(),
+        Stated::Range(range, _) => range.value.lo.base(),
+        Stated::Unknown(..) => return stated,
+    };
+    if least > 0.0 {
+        return stated;
+    }
+    let what = format!("{name} must be above zero");
+    impossible(
+        reader,
+        fields,
+        name,
+        what,
+        why.to_owned(),
+        instead.to_owned(),
+    );
+    None
+}
+
+/// Says that a value cannot be, and why.
+fn impossible(
+    reader: &mut Reader<'_>,
+    fields: &Fields<'_>,
+    name: &str,
+    what: String,
+    why: String,
+    instead: String,
+) {
+    let Some(slot) = fields.get(name) else { return };
+    let problem = reader
+        .at(Code::ValueImpossible, what, slot.node.span, &slot.within)
+        .why(why)
+        .write(Write::edit(slot.node.span, instead).remark("with the right figure"));
+    reader.report(problem);
+}
+
+/// Whether a clearance leaves a shaft in the bore.
+fn fits(
+    reader: &mut Reader<'_>,
+    fields: &Fields<'_>,
+    (name, times): (&str, f64),
+    clearance: &Stated<Length>,
+    diameter: Option<&Stated<Length>>,
+) -> bool {
+    let most = match clearance {
+        Stated::Known(given, _) => given.value,
+        Stated::Range(range, _) => range.value.hi,
+        Stated::Unknown(..) => return true,
+    };
+    let smallest = match diameter {
+        Some(Stated::Known(given, _)) => given.value,
+        Some(Stated::Range(range, _)) => range.value.lo,
+        _ => return true,
+    };
+    let bound = smallest.base() / 2.0 * times;
+    if most.base() < bound {
+        return true;
+    }
+    let of = if times > 1.0 { "diameter" } else { "radius" };
+    let what = format!("{name} as large as the {of} of the shaft");
+    let usual = to_mm(smallest) * 0.0015 / 2.0 * times;
+    let why = format!(
+        "{} against a {of} of {}; usual is 0.1 to 0.2 % of the diameter, across the diameter",
+        shown(to_mm(most)),
+        shown(bound * 1e3)
+    );
+    impossible(reader, fields, name, what, why, shown(usual));
+    false
 }
 
 /// A diametral clearance as the radial one; the spelling stays the user's.
@@ -140,16 +265,62 @@ pub(super) fn thrust(reader: &mut Reader<'_>, fields: &Fields<'_>) -> ThrustBear
         };
         Some(w.map(|_| kind))
     });
-    ThrustBearing {
-        pads: number(fields.whole(reader, "pads")),
-        pad_length: fields.stated(reader, "pad length"),
-        pad_width: fields.stated(reader, "pad width"),
-        mean_diameter: fields.stated(reader, "mean diameter"),
-        speed: fields.stated(reader, "speed"),
-        load: fields.stated(reader, "load"),
-        kind,
-        ratio: fields.stated(reader, "ratio"),
+    let mut size = |name| {
+        let stated = fields.stated(reader, name);
+        above_zero(reader, fields, name, stated, PAD)
+    };
+    let (pad_length, pad_width) = (size("pad length"), size("pad width"));
+    let mean_diameter = size("mean diameter");
+    let (speed, load) = (
+        fields.stated(reader, "speed"),
+        fields.stated(reader, "load"),
+    );
+    let pads = number(fields.whole(reader, "pads"));
+    if pads.as_ref().is_some_and(|n| n.value.base() < 1.0) {
+        let what = "pads must be above zero".to_owned();
+        let why = "a thrust bearing has at least one pad".to_owned();
+        impossible(reader, fields, "pads", what, why, "8".to_owned());
     }
+    let ratio: Option<Stated<Ratio>> = fields.stated(reader, "ratio");
+    ThrustBearing {
+        pads,
+        pad_length,
+        pad_width,
+        mean_diameter,
+        speed: above_zero(reader, fields, "speed", speed, STANDS),
+        load: above_zero(reader, fields, "load", load, LOAD),
+        kind,
+        ratio: ratio.filter(|ratio| narrows(reader, fields, ratio)),
+    }
+}
+
+/// Whether films narrow at all: ratio 1 carries nothing.
+fn narrows(reader: &mut Reader<'_>, fields: &Fields<'_>, ratio: &Stated<Ratio>) -> bool {
+    let least = match ratio {
+        Stated::Known(given, _) => given.value.base(),
+        Stated::Range(range, _) => range.value.lo.base(),
+        Stated::Unknown(..) => return true,
+    };
+    if least > 1.0 {
+        return true;
+    }
+    let what = if (least - 1.0).abs() < 1e-12 {
+        "ratio 1 means films that do not narrow"
+    } else {
+        "ratio is inlet over outlet film and must lie above 1"
+    };
+    let why = "with one viscosity and flat faces such a pad carries nothing; usual is 2 to 3, and \
+               without a ratio the best is taken";
+    let instead = "2.2".to_owned();
+    impossible(
+        reader,
+        fields,
+        "ratio",
+        what.to_owned(),
+        why.to_owned(),
+        instead,
+    );
+    false
 }
 
 fn number(whole: Option<Given<u32>>) -> Option<Given<Ratio>> {

@@ -2,7 +2,8 @@
 //! contact, and the viscosity that gives it.
 
 use super::{Explained, Teller, Which};
-use crate::demand::film::FilmDemand;
+use crate::demand::Demand;
+use crate::demand::film::{FilmContact, FilmDemand, Wedge};
 use crate::judge::margin::Jaw;
 use crate::judge::prepared::ReadyDemand;
 use crate::oil::thinning::{End, Kept};
@@ -11,6 +12,7 @@ use crate::quantity::{
     KinematicViscosity, Length, PressureViscosity, Ratio, ShearRate, ThermodynamicTemperature,
     Velocity,
 };
+use crate::relation::Law;
 use crate::relation::film::inverse;
 use crate::relation::oil::polymer::SHARE;
 use crate::relation::oil::shear::THICKENING;
@@ -18,6 +20,15 @@ use crate::relation::oil::temporary_shear::{
     CONTACT_RATE, CROSS, RATIO, contact_rate, viscosity_ratio,
 };
 use crate::trace::{Derivation, Known, Recorder};
+
+/// What an oil that thins under shear must have at rest.
+static AT_REST: Law = Law {
+    name: "film-viscosity-at-rest",
+    title: "Viscosity at rest of an oil that thins under the shear of a film",
+    formula: "nu_min = nu / kept",
+    range: "the share kept at the film asked for",
+    source: "definition of the share kept",
+};
 
 /// The curve judged, what it needs, and what it keeps there.
 struct Judged {
@@ -31,11 +42,15 @@ impl Teller<'_> {
     pub(super) fn film(
         &mut self,
         d: &mut Derivation,
+        demand: &Demand,
         ready: &ReadyDemand,
         film: &FilmDemand,
         t: Known<ThermodynamicTemperature>,
     ) -> Option<Explained> {
         let judged = self.judged(film, t.value)?;
+        if let FilmContact::Wedge(wedge) = film.contact {
+            return Some(self.wedge(d, (demand, ready), (film, wedge), t, judged));
+        }
         let line = self.curve(judged.which).at(t.value.base()).line;
         let oil = &self.ready.curves;
         let there = line.parallel_through(judged.need, t.value);
@@ -77,6 +92,36 @@ impl Teller<'_> {
         };
         d.note(|| format!("film by {}", film.contact.law().source));
         Some(self.viscosity_on(d, ready, limit, t, judged.which))
+    }
+
+    /// A wedge: the dynamic viscosity it needs is at hand, the oil's density makes it kinematic,
+    /// and what its polymer loses under shear it must have over.
+    fn wedge(
+        &mut self,
+        d: &mut Derivation,
+        (demand, ready): (&Demand, &ReadyDemand),
+        (film, wedge): (&FilmDemand, Wedge),
+        t: Known<ThermodynamicTemperature>,
+        judged: Judged,
+    ) -> Explained {
+        let under_shear = self.dynamic_limit(d, demand, wedge.needs, t);
+        let kept = judged.thinned.and_then(|kept| {
+            let why = "film of the part";
+            let wanted = d.assume("h_wanted", "film asked for", film.wanted, why);
+            self.temporary(d, film, wanted, judged.which, t, kept)
+        });
+        let need = judged.need;
+        let limit = match kept {
+            None => under_shear,
+            Some(kept) => d.law(
+                "nu_min",
+                "viscosity at rest the film needs, with this oil",
+                &AT_REST,
+                (("nu", under_shear), ("kept", kept)),
+                |_: (KinematicViscosity, Ratio)| need,
+            ),
+        };
+        self.viscosity_on(d, ready, limit, t, judged.which)
     }
 
     /// Thin end or worn, whichever has the smaller margin, as the judge finds it.

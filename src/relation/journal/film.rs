@@ -123,6 +123,15 @@ pub struct Bearing {
     cut: Option<Cut>,
 }
 
+impl PartialEq for Bearing {
+    /// The cut follows from the geometry.
+    fn eq(&self, other: &Self) -> bool {
+        self.geometry == other.geometry
+            && self.duty == other.duty
+            && self.cut.is_some() == other.cut.is_some()
+    }
+}
+
 impl Bearing {
     /// Chooses the solution.
     ///

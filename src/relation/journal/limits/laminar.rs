@@ -23,6 +23,25 @@ pub static LAW: Law = Law {
     source: "Taylor 1923; ISO 7902-1 (from memory)",
 };
 
+/// Viscosity from which on the film is laminar.
+pub static VISCOSITY: Law = Law {
+    name: "journal-laminar-viscosity",
+    title: "viscosity from which on the film of a journal bearing is laminar",
+    formula: "eta = rho omega R c/(41.3 sqrt(R/c))",
+    range: "as for the limit of the Reynolds number",
+    source: "Taylor 1923; ISO 7902-1 (from memory)",
+};
+
+/// Viscosity of [`VISCOSITY`].
+pub fn viscosity(
+    geometry: &Geometry,
+    speed: AngularVelocity,
+    density: MassDensity,
+) -> DynamicViscosity {
+    let unit = reynolds_number(geometry, speed, density, DynamicViscosity::from_base(1.0));
+    DynamicViscosity::from_base(unit.base() / limit(geometry).base())
+}
+
 /// Reynolds number of [`REYNOLDS_NUMBER`].
 pub fn reynolds_number(
     geometry: &Geometry,

@@ -52,6 +52,22 @@ impl Lining {
     }
 }
 
+/// The lining of a word or two as users write them: `white metal`, `babbitt`, `CuSn`.
+pub fn lining_of(written: &str) -> Option<Lining> {
+    let word = written.trim().to_ascii_lowercase().replace([' ', '_'], "-");
+    let named = Lining::ALL.into_iter().find(|l| word == l.name());
+    named.or(match word.as_str() {
+        "babbitt" | "white-metal-tin" | "white-metal-lead" | "whitemetal" | "pbsn" | "snpb" => {
+            Some(Lining::WhiteMetal)
+        }
+        "cupb" | "lead-bronze" => Some(Lining::CopperLead),
+        "cusn" | "bronze" | "tin-bronze" => Some(Lining::CopperTin),
+        "alsn" => Some(Lining::AluminiumTin),
+        "alzn" => Some(Lining::AluminiumZinc),
+        _ => None,
+    })
+}
+
 /// Largest specific load in general use, and in special cases, [`LAW`].
 pub fn permissible(lining: Lining) -> (Pressure, Pressure) {
     let (general, special) = match lining {
