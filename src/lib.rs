@@ -19,6 +19,7 @@ pub mod cli;
 pub mod decide;
 pub mod demand;
 pub mod input;
+pub mod intake;
 pub mod judge;
 pub mod model;
 pub mod numeric;

@@ -4,6 +4,7 @@
 pub mod audit;
 pub mod csv;
 pub mod gaps;
+pub mod intake;
 pub mod json;
 pub mod mend;
 pub mod need;
@@ -12,3 +13,4 @@ pub mod pool;
 pub mod scatter;
 pub mod weigh;
 pub mod whatif;
+pub mod xlsx;

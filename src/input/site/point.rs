@@ -27,6 +27,7 @@ const NOT_INPUTS: &[&str] = &[
     "parts",
     "allow",
     "register row",
+    "notes",
     "losses",
     "regrease",
     "used oil",
@@ -89,7 +90,7 @@ pub(super) fn read<'t>(
         allow: values::allow(reader, &fields),
         inputs: inputs(reader, &fields),
         parts: std::mem::take(&mut parts.list),
-        notes: Vec::new(),
+        notes: fields.text(reader, "notes").into_iter().collect(),
         origin: fields.origin(),
     };
     point.inputs.append(&mut parts.inputs);

@@ -92,10 +92,12 @@ fn sheet(
     let plan = &report.plan.machines[place];
     let first = cases[0].w.point;
     let title = first.title.as_deref().unwrap_or("");
-    let notes: Vec<&str> = cases
+    let mut notes: Vec<&str> = cases
         .iter()
         .flat_map(|c| c.w.point.notes.iter().map(String::as_str))
         .collect();
+    // Points share the notes of their machine.
+    notes.dedup();
     let body = MachineSheet {
         answer,
         caution: caution::caution(cases),
