@@ -8,6 +8,7 @@ pub mod mend;
 pub mod need;
 pub mod oil;
 pub mod pool;
+pub mod running;
 pub mod scatter;
 pub mod weigh;
 pub mod whatif;

@@ -33,6 +33,7 @@ mod point;
 mod reference;
 mod register;
 mod rules;
+mod running;
 mod say;
 mod sign;
 mod site_gaps;

@@ -34,8 +34,8 @@ pub(super) fn machine(report: &Report<'_>, place: usize) -> OfMachine {
     let (mut numbers, mut counts) = (Numbers::new(run.scales.rules), Counts::default());
     let mut laws = BTreeMap::new();
     let (mut points, mut digests): (Vec<Point>, _) = (Vec::new(), Vec::new());
-    let of = (cases.len() > 1, report.plan.machines.len());
     for case in &cases {
+        let of = (cases.len() > 1, report.plan.machines.len());
         let told = point(case, &mut numbers, &mut counts, of, points.first());
         laws.extend(told.laws);
         let local = (cases.len() > 1).then_some(case.key.as_str());

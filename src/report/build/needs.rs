@@ -193,5 +193,6 @@ fn notes(case: &Case<'_, '_>) -> Vec<Phrase> {
         let text = format!("{part}{}{figure}", say::told(&info.says, case.units()));
         notes.push(say::stopped(&say::sentence(&text)).into());
     }
+    notes.extend(super::running::running(case));
     notes
 }

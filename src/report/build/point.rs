@@ -35,8 +35,8 @@ pub(super) struct Told {
     pub(super) laws: BTreeMap<&'static str, &'static Law>,
 }
 
-/// Tells a point; `named` where its machine has several, with how many machines the report has;
-/// the machine's first point beside the others.
+/// Tells a point; `named` where its machine has several, with how many machines the report has and
+/// the first of its points beside the others.
 pub(super) fn point(
     case: &Case<'_, '_>,
     numbers: &mut Numbers,

@@ -73,6 +73,7 @@ pub(super) fn steps(case: &Case<'_, '_>, key: &str) -> Steps {
     };
     if let (Some(told), Some(lead)) = (&case.told, case.lead) {
         let mut results: Vec<StepId> = told.margins.iter().map(|e| e.step).collect();
+        results.extend(&told.running);
         results.sort_unstable();
         out.trace(told, &results, lead, true);
     } else {
@@ -88,6 +89,7 @@ pub(super) fn steps(case: &Case<'_, '_>, key: &str) -> Steps {
         let bare = Explanation {
             trace: case.w.demands.trace.clone(),
             margins: Vec::new(),
+            running: Vec::new(),
         };
         out.steps_of(&bare.trace, &results, None);
     }
