@@ -27,6 +27,8 @@ pub enum Alternative<'a> {
 #[derive(Clone, Debug)]
 pub struct Canvas {
     out: String,
+    /// The lines of the grid, behind everything, as one path.
+    grid: String,
     width: f64,
     height: f64,
     taken: Vec<Rect>,
@@ -48,6 +50,7 @@ impl Canvas {
     pub fn new(width: f64, height: f64) -> Self {
         Self {
             out: String::new(),
+            grid: String::new(),
             width,
             height,
             taken: Vec::new(),
@@ -75,6 +78,18 @@ impl Canvas {
     pub fn line(&mut self, a: Pt, b: Pt, class: &str) {
         let ends = [("x1", a.x), ("y1", a.y), ("x2", b.x), ("y2", b.y)];
         self.element("line", &ends, &[("class", class)]);
+    }
+
+    /// A line of the grid.
+    pub fn grid_line(&mut self, a: Pt, b: Pt) {
+        let _ = write!(
+            self.grid,
+            "M{} {}L{} {}",
+            px(a.x),
+            px(a.y),
+            px(b.x),
+            px(b.y)
+        );
     }
 
     /// A line through points.
@@ -306,6 +321,9 @@ impl Canvas {
                 svg.told("title", &format!("{uid}-t"), title);
                 svg.told("desc", &format!("{uid}-d"), description);
             }
+        }
+        if !self.grid.is_empty() {
+            svg.element("path", &[], &[("d", &self.grid), ("class", "grid")]);
         }
         svg.out.push_str(&self.out);
         svg.out.push_str("</svg>");

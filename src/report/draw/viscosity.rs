@@ -226,7 +226,8 @@ impl ViscosityFigure {
         let top = if ceiling > 0.0 {
             ceiling * 5.0
         } else {
-            thickest * 1.5
+            // no machine starts in oil thicker than this; beyond it only figures of the axis grow
+            (thickest * 1.5).min(1.5e6)
         };
         let bottom = if bottom.is_finite() {
             bottom.max(0.6)
