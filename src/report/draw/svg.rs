@@ -34,6 +34,9 @@ pub struct Canvas {
     taken: Vec<Rect>,
 }
 
+/// Air on both sides of a label that looks for a place, px.
+const AIR: f64 = 2.0;
+
 /// A pixel figure with at most two decimals.
 fn px(value: f64) -> String {
     let text = format!("{value:.2}");
@@ -156,10 +159,9 @@ impl Canvas {
         }
         self.taken.push(text_box(at, anchor, style, text));
         let _ = write!(self.out, "<text x=\"{}\" y=\"{}\"", px(at.x), px(at.y));
-        self.attr("class", style.class());
-        // the anchor of SVG where none is said
-        if anchor != Anchor::Start {
-            self.attr("text-anchor", anchor.word());
+        match anchor.class() {
+            Some(anchor) => self.attr("class", &format!("{} {anchor}", style.class())),
+            None => self.attr("class", style.class()),
         }
         self.out.push('>');
         push_text(&mut self.out, text);
@@ -171,7 +173,11 @@ impl Canvas {
     pub fn place(&mut self, style: Style, text: &str, places: &[(Pt, Anchor)]) {
         let mut best: Option<(f64, Pt, Anchor)> = None;
         for (at, anchor) in places {
-            let cost = self.cost(text_box(*at, *anchor, style, text));
+            // letters run a little wider or narrower than measured: a hair of air on both sides
+            let mut r = text_box(*at, *anchor, style, text);
+            r.x -= AIR;
+            r.w += 2.0 * AIR;
+            let cost = self.cost(r);
             if best.is_none_or(|(least, ..)| cost < least) {
                 best = Some((cost, *at, *anchor));
             }
@@ -222,8 +228,15 @@ impl Canvas {
             px(at.x),
             px(at.y + 4.4)
         );
-        self.attr("class", if picked { "t-bal t-pick" } else { "t-bal" });
-        self.out.push_str(" text-anchor=\"middle\">");
+        self.attr(
+            "class",
+            if picked {
+                "t-bal am t-pick"
+            } else {
+                "t-bal am"
+            },
+        );
+        self.out.push('>');
         push_text(&mut self.out, letter);
         self.out.push_str("</text>");
     }
