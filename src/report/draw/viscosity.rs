@@ -296,6 +296,7 @@ fn label_jaw(canvas: &mut Canvas, axes: &Axes, jaw: &Jaw) {
     let y = axes.y.px(jaw.nu_mm2_s);
     let near = if jaw.floor { y + 23.0 } else { y - 14.0 };
     let far = if jaw.floor { y + 39.0 } else { y - 30.0 };
+    let farther = if jaw.floor { y + 55.0 } else { y - 46.0 };
     // on the side that serves, where the forbidden one has no room left
     let other = if jaw.floor { y - 8.0 } else { y + 17.0 };
     let inside = axes.frame().x + 4.0;
@@ -309,6 +310,9 @@ fn label_jaw(canvas: &mut Canvas, axes: &Axes, jaw: &Jaw) {
         (pt(b, far), Anchor::End),
         (pt(axes.frame().right() - 4.0, near), Anchor::End),
         (pt(axes.frame().right() - 4.0, far), Anchor::End),
+        (pt(f64::midpoint(a, b), farther), Anchor::Middle),
+        (pt(inside, farther), Anchor::Start),
+        (pt(axes.frame().right() - 4.0, farther), Anchor::End),
         (pt(f64::midpoint(a, b), other), Anchor::Middle),
         (pt(inside, other), Anchor::Start),
         (pt(axes.frame().right() - 4.0, other), Anchor::End),
