@@ -5,7 +5,7 @@ use filmwright::demand::rules::CALCULATED;
 use filmwright::input::file::FileKind;
 use filmwright::input::load::{Tree, With, load, load_oils, take};
 use filmwright::input::rules::rulebook;
-use filmwright::input::samples::{events, map};
+use filmwright::input::samples;
 use filmwright::model::rulebook::Rulebook;
 use filmwright::problem::render::{Look, all};
 use filmwright::problem::{Code, Problem, Problems, Severity};
@@ -140,8 +140,13 @@ fn found_in(files: &Files) -> (SourceSet, Problems) {
         for tree in &trees {
             if let Some(root) = &tree.root {
                 match tree.kind {
-                    FileKind::Events => drop(events(&mut reader, root, None)),
-                    _ => drop(map(&mut reader, root, None)),
+                    FileKind::Samples => {
+                        drop(samples::map(&mut reader, root, None));
+                    }
+                    FileKind::Events => {
+                        drop(samples::events(&mut reader, root, None));
+                    }
+                    FileKind::Site | FileKind::Oils => {}
                 }
             }
         }
