@@ -74,6 +74,12 @@ fn fill(m: &mut Map<String, Value>, mend: &Mend, units: Units) {
     m.insert("for".into(), json!(mend.target.word()));
     let changes: Vec<Value> = mend.changes.iter().map(|c| change(c, units)).collect();
     m.insert("changes".into(), Value::Array(changes));
+    if let [only] = mend.changes.as_slice() {
+        // a single change stands plainly beside the list
+        if let Value::Object(alone) = change(only, units) {
+            m.extend(alone);
+        }
+    }
     m.insert("says".into(), json!(mend.words(units)));
     m.insert("grade".into(), json!(mend.grade.map(|g| g.number())));
     m.insert("caution".into(), json!(mend.caution));

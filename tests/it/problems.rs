@@ -138,7 +138,12 @@ fn found_in(files: &Files) -> (SourceSet, Problems) {
         let mut reader = filmwright::input::reader::Reader::new(&set, &mut problems);
         for tree in &trees {
             if let Some(root) = &tree.root {
-                filmwright::input::samples::check(&mut reader, tree.kind, root);
+                // as the reader does where there is no site to name machines of
+                if tree.kind == FileKind::Samples {
+                    filmwright::input::samples::map(&mut reader, root, None);
+                } else {
+                    filmwright::input::samples::events(&mut reader, root, None);
+                }
             }
         }
     }

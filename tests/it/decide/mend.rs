@@ -208,7 +208,7 @@ fn a_heater_is_solved_and_sized_as_by_hand() {
     );
     let to = number(&advice["to"]);
     let from = number(&advice["from"]);
-    let rho = ran_density(from);
+    let rho = density_by_hand(from);
     let kw = 100.0 * rho * 2.0 * (to - from) / (3600.0 * 8.0);
     assert!(
         (number(&advice["power"]) / kw - 1.0).abs() < 2e-3,
@@ -218,7 +218,7 @@ fn a_heater_is_solved_and_sized_as_by_hand() {
 
 /// Density of the oil by hand, kg/L: about 0.00065 kg/L less for each kelvin above 15 degC
 /// (common practice for mineral oil of 880 kg/m3); good to 0.2 %.
-fn ran_density(t_c: f64) -> f64 {
+fn density_by_hand(t_c: f64) -> f64 {
     0.880 - 0.00065 * (t_c - 15.0)
 }
 
