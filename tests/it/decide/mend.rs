@@ -64,7 +64,9 @@ fn scale(lever: Lever) -> f64 {
 fn with(plant: &Plant, changes: &[Change], short: usize, share: f64) -> Plant {
     let mut next = plant.clone();
     for (i, c) in changes.iter().enumerate() {
-        let back = if i == short { share } else { -1e-9 };
+        // each a hair beyond, a later one by more: it stands on those before it
+        let hair = -1e-9 * pow(100.0, i as f64);
+        let back = if i == short { share } else { hair };
         let toward = (c.from - c.to).signum();
         next = changed(&next, c.lever, c.to + toward * back * scale(c.lever));
     }
