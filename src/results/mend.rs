@@ -9,6 +9,7 @@ use crate::judge::weigh::Margin;
 use crate::model::Point;
 use crate::quantity::Measure;
 use crate::quantity::show::{Units, unit_of};
+use crate::relation::oil::grade::IsoGrade;
 use crate::weighing::{Candidate, Scales};
 use serde_json::{Map, Value, json};
 
@@ -81,7 +82,7 @@ fn fill(m: &mut Map<String, Value>, mend: &Mend, units: Units) {
         }
     }
     m.insert("says".into(), json!(mend.words(units)));
-    m.insert("grade".into(), json!(mend.grade.map(|g| g.number())));
+    m.insert("grade".into(), json!(mend.grade.map(IsoGrade::number)));
     m.insert("caution".into(), json!(mend.caution));
     m.insert("set".into(), json!(mend.settings()));
     m.insert("verdict".into(), json!(mend.then.judgement.verdict.word()));

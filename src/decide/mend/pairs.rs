@@ -39,14 +39,13 @@ pub(super) fn cheapest(trial: &Trial<'_>, j: &Judgement, target: Target) -> Opti
         }
     }
     pairs.sort();
-    let found = pairs.into_iter().find_map(|(_, first, second)| {
+    pairs.into_iter().find_map(|(_, first, second)| {
         let changes = match first {
             Lever::Grade | Lever::Index => after_other(trial, j, first, second, target),
             _ => one_after_other(trial, j, first, second, target),
         };
         verified(trial, changes?, target).ok()
-    });
-    found
+    })
 }
 
 /// Solves each of two changes for its own side, the second on top of the first.
