@@ -570,6 +570,9 @@ pub struct Report {
     /// Folder of own templates on top of the built-in ones
     #[arg(long, value_name = "DIR")]
     pub templates: Option<String>,
+    /// Say on each sheet in what share of so many cases within the tolerances every limit is met
+    #[arg(long, value_name = "CASES")]
+    pub scatter: Option<u32>,
     /// Write the results as a workbook as well
     #[arg(long, value_name = "FILE")]
     pub xlsx: Option<String>,

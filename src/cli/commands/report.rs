@@ -155,6 +155,10 @@ fn options(session: &mut Session<'_>, args: &Args, loaded: &Loaded) -> Result<Op
                 .to_owned()
         }),
         flags,
+        scatter: match args.scatter {
+            Some(cases) => Some(session.cases(cases)?),
+            None => None,
+        },
         since: None,
     })
 }
