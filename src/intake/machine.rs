@@ -3,7 +3,7 @@
 use super::cell::{Expect, Reading, quantity, text_of};
 use super::describe::{component, is_food, is_geared, is_motor_speed};
 use super::draft::Record;
-use super::finding::{Finding, Kind};
+use super::finding::{Finding, Kind, letters};
 use super::layout::Column;
 use super::lubricant::Lubricant;
 use super::site::Reader;
@@ -93,6 +93,13 @@ impl<'r, 'a> RowReader<'r, 'a> {
                     }
                 }
             }
+        }
+        for comment in line.comments() {
+            let cell = format!("{}{}", letters(comment.column), comment.row);
+            self.machine
+                .record
+                .notes
+                .push(format!("{cell} comment: {}", comment.text));
         }
         self.join_ambient();
         self.parts();
