@@ -145,7 +145,8 @@ impl<'t> Reading<'t> {
                 }
                 Next::Open(tag) if APART.contains(&tag.name.as_str()) => {
                     self.apart = 1;
-                    self.comment = (tag.name == "annotation" && self.open.is_some()).then(String::new);
+                    self.comment =
+                        (tag.name == "annotation" && self.open.is_some()).then(String::new);
                 }
                 Next::Open(tag) => self.opens(&tag),
                 Next::Close(name) if name == "table" => break,

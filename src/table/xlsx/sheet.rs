@@ -67,6 +67,7 @@ pub(super) fn read(
             Next::End => break,
         }
     }
+    drop(xml);
     let mut gather = reading.gather;
     let relations = super::parts::relations(archive, path)?;
     if let Some(part) = relations.of_kind("comments") {
