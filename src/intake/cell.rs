@@ -183,6 +183,17 @@ pub fn quantity(content: &Content, expect: &Expect<'_>, rules: &Rules) -> Readin
     let Some(parsed) = parse(&text, expect.want.kinds) else {
         return Reading::fault(format!("{} is wanted", expect.want.noun()));
     };
+    // 999 stands for nothing known whatever unit a number format prints behind it; so does 0, but
+    // for a temperature that says its scale.
+    let scale = parsed.unit.is_some() && expect.want.kinds.contains(&Kind::Temperature);
+    let alone = parsed.second.is_none() && parsed.bound.is_none();
+    let none = placeholder(&parsed.number, !scale && !zero_counts(expect.key));
+    if alone && none == Some(Placeholder::Number) {
+        return Reading {
+            read_as: Some("taken as not known".into()),
+            ..Reading::missing()
+        };
+    }
     conclude(&parsed, expect, rules)
 }
 

@@ -96,7 +96,7 @@ fn unit_in(text: &str) -> (String, Option<String>) {
 
 /// A temperature in a heading about viscosity: `KV40`, `visc. 100 °C`, `V 210F`.
 fn temperature_in(lower: &str) -> Option<f64> {
-    let viscous = ["visc", "kv", "nu", "v40", "v100", "cst"]
+    let viscous = ["visc", "visk", "kv", "nu", "v40", "v100", "cst"]
         .iter()
         .any(|w| lower.contains(w));
     if !viscous {

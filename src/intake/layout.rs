@@ -30,6 +30,8 @@ pub struct Column {
     pub samples: Vec<String>,
     /// Whether it is hidden.
     pub hidden: bool,
+    /// The heading of the column that already holds what this one seems to hold.
+    pub twice: Option<String>,
 }
 
 /// A table found.
@@ -229,6 +231,7 @@ fn column(
         unit: found,
         samples,
         hidden: sheet.hidden_columns.contains(&number),
+        twice: None,
     }
 }
 
@@ -243,11 +246,13 @@ fn once(columns: &mut [Column], makes: Makes) {
         }
         match holder.get(&columns[i].target.word()).copied() {
             Some(held) if columns[i].sure > columns[held].sure => {
+                columns[held].twice = Some(columns[i].heading.clone());
                 columns[held].target = Target::Note;
                 columns[held].sure = 0;
                 holder.insert(columns[i].target.word(), i);
             }
-            Some(_) => {
+            Some(held) => {
+                columns[i].twice = Some(columns[held].heading.clone());
                 columns[i].target = Target::Note;
                 columns[i].sure = 0;
             }

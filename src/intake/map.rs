@@ -142,6 +142,7 @@ pub fn propose(head: &Head, layout: &Layout) -> String {
 
 fn column(out: &mut String, c: &Column) {
     let how = match c.sure {
+        0 if c.twice.is_some() => "   # another column holds the same",
         0 => "   # not recognised: kept as a note",
         1 => "   # guessed from a similar word",
         2 => "   # guessed from the words",
@@ -226,6 +227,7 @@ pub fn apply(map: &Map, layout: &mut Layout) -> Differs {
             Some(at) => {
                 taken[at] = true;
                 let column = &mut layout.columns[at];
+                column.twice = None;
                 column.target = stated.target;
                 column.sure = 4;
                 if let Some((unit, written)) = &stated.unit {

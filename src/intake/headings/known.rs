@@ -5,7 +5,7 @@
 pub(super) const SITE: &[(&str, &str)] = &[
     (
         "tag",
-        "tag|tag no|tag number|asset|asset no|asset number|asset id|asset tag|equipment no|equipment id|equipment number|equipment|functional location|machine no|machine tag|machine|item no|position no",
+        "anlage|anlagen nr|anlagennummer|maschine|maschinen nr|technischer platz|repère|équipement|equipo|tag|tag no|tag number|asset|asset no|asset number|asset id|asset tag|equipment no|equipment id|equipment number|equipment|functional location|machine no|machine tag|machine|item no|position no",
     ),
     (
         "row number",
@@ -17,15 +17,15 @@ pub(super) const SITE: &[(&str, &str)] = &[
     ),
     (
         "name",
-        "desc|description|asset description|equipment description|machine name|name|designation|service|function",
+        "bezeichnung|benennung|beschreibung|désignation|descripción|desc|description|asset description|equipment description|machine name|name|designation|service|function",
     ),
     (
         "area",
-        "area|location|department|plant area|building|section|site area|zone",
+        "bereich|standort|abteilung|zone|área|area|location|department|plant area|building|section|site area|zone",
     ),
     (
         "count",
-        "count|quantity of machines|number of machines|no of machines|pieces|pcs|number off|no off",
+        "anzahl|stückzahl|count|quantity of machines|number of machines|no of machines|pieces|pcs|number off|no off",
     ),
     (
         "lubrication",
@@ -33,7 +33,7 @@ pub(super) const SITE: &[(&str, &str)] = &[
     ),
     (
         "fill",
-        "fill|fill quantity|fill volume|sump|sump volume|sump size|sump capacity|capacity|oil capacity|oil quantity|oil volume|volume|tank|tank volume|litres|liters|charge|qty oil",
+        "füllung|füllmenge|ölmenge|ölfüllung|quantité d huile|cantidad de aceite|fill|fill quantity|fill volume|sump|sump volume|sump size|sump capacity|capacity|oil capacity|oil quantity|oil volume|volume|tank|tank volume|litres|liters|charge|qty oil",
     ),
     (
         "annual use",
@@ -45,7 +45,7 @@ pub(super) const SITE: &[(&str, &str)] = &[
     ),
     (
         "oil now",
-        "oil|lubricant|oil now|current oil|present oil|oil in use|oil type|lubricant type|lubricant in use|product|oil grade|lube|grease",
+        "schmierstoff|öl|ölsorte|schmieröl|lubrifiant|huile|lubricante|aceite|oil|lubricant|oil now|current oil|present oil|oil in use|oil type|lubricant type|lubricant in use|product|oil grade|lube|grease",
     ),
     (
         "asks for",
@@ -83,7 +83,7 @@ pub(super) const SITE: &[(&str, &str)] = &[
     ),
     (
         "sump",
-        "temp|temperature|oil temp|oil temperature|sump temp|sump temperature|operating temperature|operating temp|running temperature|running temp|running temperature of oil|bulk oil temperature|t oil|working temperature",
+        "öltemp|öltemperatur|temperatur|betriebstemperatur|température|température huile|temperatura|temperatura aceite|temp|temperature|oil temp|oil temperature|sump temp|sump temperature|operating temperature|operating temp|running temperature|running temp|running temperature of oil|bulk oil temperature|t oil|working temperature",
     ),
     (
         "floor",
@@ -108,7 +108,10 @@ pub(super) const SITE: &[(&str, &str)] = &[
     ("backstop", "backstop|holdback|back stop"),
     ("wet clutch", "wet clutch|clutch in oil"),
     ("water entry", "water entry|water ingress|water"),
-    ("seals", "seals|seal material|seal|elastomer|seal materials"),
+    (
+        "seals",
+        "dichtung|dichtungen|seals|seal material|seal|elastomer|seal materials",
+    ),
     ("inside paint", "inside paint|internal paint|paint inside"),
     ("sight glass", "sight glass|level gauge"),
     ("food class", "food class|food grade|nsf class"),
@@ -125,7 +128,7 @@ pub(super) const SITE: &[(&str, &str)] = &[
     ("food zone", "food zone|food area"),
     (
         "motor speed",
-        "motor speed|motor rpm|drive speed|motor n|n motor|speed motor",
+        "motordrehzahl|motor speed|motor rpm|drive speed|motor n|n motor|speed motor",
     ),
     (
         "gear mesh: pinion speed",
@@ -133,7 +136,7 @@ pub(super) const SITE: &[(&str, &str)] = &[
     ),
     (
         "gear mesh: ratio",
-        "ratio|gear ratio|reduction ratio|reduction",
+        "übersetzung|ratio|gear ratio|reduction ratio|reduction",
     ),
     (
         "gear mesh: centre distance",
@@ -146,18 +149,18 @@ pub(super) const SITE: &[(&str, &str)] = &[
     ),
     (
         "gear mesh: power",
-        "power|motor power|drive power|rated power",
+        "leistung|puissance|potencia|power|motor power|drive power|rated power",
     ),
     ("gear mesh: type", "gear type|type of gear|gearing"),
     ("gear mesh: normal module", "module|normal module"),
     (
         "rolling bearing",
-        "bearing|bearing no|bearing number|bearing type|bearing designation|bearing de|bearing nde|bearing drive end|bearing non drive end|de bearing|nde bearing|bearings",
+        "lager|wälzlager|lagerbezeichnung|roulement|rodamiento|bearing|bearing no|bearing number|bearing type|bearing designation|bearing de|bearing nde|bearing drive end|bearing non drive end|de bearing|nde bearing|bearings",
     ),
     ("rolling bearing: load", "bearing load|equivalent load"),
     (
         "component: pressure",
-        "pressure|working pressure|system pressure|operating pressure",
+        "druck|betriebsdruck|pression|presión|pressure|working pressure|system pressure|operating pressure",
     ),
     (
         "component",
@@ -165,9 +168,12 @@ pub(super) const SITE: &[(&str, &str)] = &[
     ),
     (
         "speed",
-        "speed|shaft speed|n|speed n|rotational speed|bearing speed|output speed|rpm",
+        "drehzahl|vitesse|velocidad|speed|shaft speed|n|speed n|rotational speed|bearing speed|output speed|rpm",
     ),
-    ("note", "note|notes|remark|remarks|comment|comments"),
+    (
+        "note",
+        "bemerkung|bemerkungen|anmerkung|remarque|remarques|observaciones|note|notes|remark|remarks|comment|comments",
+    ),
     ("path", "path"),
     ("as written", "as written"),
     ("file kind", "file kind"),
@@ -181,7 +187,7 @@ pub(super) const OILS: &[(&str, &str)] = &[
     ),
     (
         "name",
-        "name|oil|product|lubricant|description|oil name|product name|trade name",
+        "bezeichnung|produkt|schmierstoff|désignation|producto|name|oil|product|lubricant|description|oil name|product name|trade name",
     ),
     ("kind", "kind|application|use|category|oil type|type"),
     (
@@ -190,11 +196,14 @@ pub(super) const OILS: &[(&str, &str)] = &[
     ),
     ("base", "base|base oil type|base stock|base fluid"),
     ("VI", "vi|viscosity index"),
-    ("pour point", "pour point|pour|pourpoint|pp"),
+    (
+        "pour point",
+        "stockpunkt|point d écoulement|pour point|pour|pourpoint|pp",
+    ),
     ("cloud point", "cloud point"),
     (
         "flash point",
-        "flash point|flash|flashpoint|flash coc|flash point coc",
+        "flammpunkt|point d éclair|flash point|flash|flashpoint|flash coc|flash point coc",
     ),
     (
         "oil limit",
@@ -202,7 +211,7 @@ pub(super) const OILS: &[(&str, &str)] = &[
     ),
     (
         "density",
-        "density|density at 15 c|density 15|specific gravity|density 15 c",
+        "dichte|densité|densidad|density|density at 15 c|density 15|specific gravity|density 15 c",
     ),
     ("additives", "additives|additive|additive type"),
     ("sulphur", "sulphur activity|sulfur activity|sulphur"),
@@ -213,7 +222,7 @@ pub(super) const OILS: &[(&str, &str)] = &[
     ("FZG stage", "fzg|fzg stage|fzg load stage"),
     ("air release", "air release"),
     ("demulsibility", "demulsibility|water separation"),
-    ("price", "price|cost|unit price"),
+    ("price", "preis|prix|precio|price|cost|unit price"),
     ("in stock", "stock|in stock|stock quantity"),
     ("thickener", "thickener|soap"),
     ("NLGI", "nlgi|nlgi class|consistency|nlgi grade"),
@@ -223,7 +232,10 @@ pub(super) const OILS: &[(&str, &str)] = &[
         "iso vg|vg|grade|viscosity grade|viscosity class|iso grade",
     ),
     ("source", "source|data sheet|sheet date"),
-    ("note", "note|notes|remark|remarks|comment|comments"),
+    (
+        "note",
+        "bemerkung|bemerkungen|remarque|observaciones|note|notes|remark|remarks|comment|comments",
+    ),
     ("path", "path"),
     ("as written", "as written"),
     ("file kind", "file kind"),

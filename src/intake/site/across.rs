@@ -50,7 +50,10 @@ pub(super) fn of_columns(reader: &mut Reader<'_>) {
             name: None,
             heading: column.heading.clone(),
             text: String::new(),
-            says: "the heading was not recognised: every cell is kept as a note; the map can say what it is".into(),
+            says: match &column.twice {
+                Some(other) => format!("\"{other}\" holds the same already: every cell is kept as a note; the map can choose the other"),
+                None => "the heading was not recognised: every cell is kept as a note; the map can say what it is".into(),
+            },
         };
         reader.findings.push(finding);
     }
