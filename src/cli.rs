@@ -5,6 +5,7 @@ pub mod exit;
 pub mod host;
 pub mod load;
 pub mod run;
+pub mod samples;
 pub mod select;
 pub mod session;
 pub mod text;
@@ -220,6 +221,13 @@ pub enum Command {
         filmwright pool --at-most 8 --site-price 250\n\
         See also: weigh, mend, report")]
     Pool(Pool),
+    /// Samples of oils in use against their labels and against what the machines need
+    #[command(
+        after_help = "Examples:\n  filmwright audit --demo\n  filmwright audit --samples lab-2026-09.csv\n  \
+        filmwright audit --match \"Conv104 HD=CV-104\" --unmatched\n\
+        See also: weigh, report; filmwright help keys lists the columns"
+    )]
+    Audit(Audit),
     /// HTML sheets: overview, one sheet a machine
     #[command(
         after_help = "Examples:\n  filmwright report --demo\n  filmwright report -o out/\n  \
@@ -227,6 +235,12 @@ pub enum Command {
         filmwright report --xlsx annex.xlsx"
     )]
     Report(Report),
+    /// Label sheets for the fill points, as plain text
+    #[command(
+        after_help = "Examples:\n  filmwright labels --demo\n  filmwright labels 'CV-*' -o labels.txt\n\
+        See also: report, weigh"
+    )]
+    Labels(Labels),
     /// The rules built in: formula, range of use, source, defaults
     #[command(after_help = "Examples:\n  filmwright rules\n  filmwright rules gear_parallel_bevel")]
     Rules(Rules),
@@ -283,7 +297,7 @@ pub struct Intake {
     pub makes: Option<IntakeMakes>,
     /// Decimal sign of its numbers (default: found from the cells)
     #[arg(long, value_enum, value_name = "SIGN")]
-    pub decimal: Option<IntakeDecimal>,
+    pub decimal: Option<Decimal>,
     /// Encoding of a CSV file, as windows-1252 (default: found)
     #[arg(long, value_name = "NAME")]
     pub encoding: Option<String>,
@@ -305,15 +319,6 @@ pub enum IntakeMakes {
     Site,
     /// Lubricants: an oil file.
     Oils,
-}
-
-/// Decimal signs.
-#[derive(Clone, Copy, Debug, PartialEq, Eq, ValueEnum)]
-pub enum IntakeDecimal {
-    /// 52.0
-    Point,
-    /// 52,0
-    Comma,
 }
 
 /// Gallons.
@@ -488,6 +493,34 @@ pub struct Pool {
     pub nodes: u64,
 }
 
+/// `audit`
+#[derive(Debug, Args)]
+pub struct Audit {
+    /// Machines, by tag or pattern; all where none is given
+    pub tags: Vec<String>,
+    /// Only list the bottles that belong to no machine, with what may be meant
+    #[arg(long)]
+    pub unmatched: bool,
+    /// A name on bottles and the machine it means, as "NAME=TAG"
+    #[arg(long = "match", value_name = "NAME=TAG")]
+    pub matches: Vec<String>,
+    /// Lay the shear loss measured in one machine on the others with the same oil
+    #[arg(long)]
+    pub use_measured_shear: bool,
+    /// What parts whole and decimals in the laboratory's numbers (default: as the map says)
+    #[arg(long, value_enum, value_name = "SIGN")]
+    pub decimal: Option<Decimal>,
+}
+
+/// What parts whole and decimals.
+#[derive(Clone, Copy, Debug, PartialEq, Eq, ValueEnum)]
+pub enum Decimal {
+    /// 45.6
+    Point,
+    /// 45,6
+    Comma,
+}
+
 /// `report`
 #[derive(Debug, Args)]
 pub struct Report {
@@ -506,6 +539,13 @@ pub struct Report {
     /// Write the results as a workbook as well
     #[arg(long, value_name = "FILE")]
     pub xlsx: Option<String>,
+}
+
+/// `labels`
+#[derive(Debug, Args)]
+pub struct Labels {
+    /// Machines, by tag or pattern; all where none is given
+    pub tags: Vec<String>,
 }
 
 /// Paper sizes.

@@ -14,6 +14,7 @@
 //! The pipeline runs in one direction; nothing reaches back. The rooms, in the order of the arrows:
 
 pub mod assets;
+pub mod audit;
 pub mod cli;
 pub mod decide;
 pub mod demand;

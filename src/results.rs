@@ -1,6 +1,7 @@
 //! Results for machines and spreadsheets: JSON documents and CSV tables. Fields are added, never
 //! renamed, within a format number.
 
+pub mod audit;
 pub mod csv;
 pub mod gaps;
 pub mod intake;

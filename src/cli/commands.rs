@@ -1,9 +1,11 @@
 //! One function a command, thin: load, call the room that does the work, print.
 
+pub mod audit;
 pub mod check;
 pub mod gaps;
 pub mod help;
 pub mod intake;
+pub mod labels;
 pub mod mend;
 pub mod need;
 pub mod need_line;
@@ -20,10 +22,12 @@ pub mod why;
 pub mod work;
 mod workbook;
 
+pub use audit::audit;
 pub use check::check;
 pub use gaps::gaps;
 pub use help::help;
 pub use intake::intake;
+pub use labels::labels;
 pub use mend::mend;
 pub use need::need;
 pub use new::new;

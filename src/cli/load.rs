@@ -307,7 +307,9 @@ impl Session<'_> {
                 FileKind::Events => Vec::new(),
             };
             let yaml: Vec<String> = named.iter().filter(|n| is_yaml(n)).cloned().collect();
-            let files: Vec<(PathBuf, String)> = if named.is_empty() {
+            // a laboratory's table named alone is read by the map of the folder
+            let tables_only = *kind == FileKind::Samples && yaml.is_empty();
+            let files: Vec<(PathBuf, String)> = if named.is_empty() || tables_only {
                 reader::default_files(*kind, |below| self.names_in(&folder.join(below)))
                     .into_iter()
                     .map(|name| (folder.join(&name), name))
@@ -369,7 +371,7 @@ impl Session<'_> {
     }
 
     /// Warnings and notes go to standard error; the last line counts them.
-    fn warn(&mut self, sources: &SourceSet, problems: &Problems) {
+    pub(super) fn warn(&mut self, sources: &SourceSet, problems: &Problems) {
         if self.shared.quiet || problems.is_empty() {
             return;
         }
@@ -472,6 +474,14 @@ fn demo(sources: &mut SourceSet, problems: &mut Problems, hash: &mut Sha256) -> 
         }
     }
     trees
+}
+
+/// Takes another input into a fingerprint already made.
+pub(super) fn feed_fingerprint(fingerprint: &mut String, kind: &str, bytes: &[u8]) {
+    let mut hash = Sha256::new();
+    feed(&mut hash, "before", fingerprint.as_bytes());
+    feed(&mut hash, kind, bytes);
+    *fingerprint = hex(&hash.finalize());
 }
 
 /// Feeds one input into the fingerprint: its kind, its length, its bytes.

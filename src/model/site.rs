@@ -2,6 +2,7 @@
 
 use super::machine::Point;
 use super::oil::Oil;
+use super::sample::{Event, SampleMap};
 use crate::quantity::{Ratio, TemperatureInterval, Time, VgStep};
 use crate::source::Origin;
 use crate::source::place::Given;
@@ -21,6 +22,10 @@ pub struct Site {
     pub accept: Vec<Acceptance>,
     /// Verdicts the user expects.
     pub expect: Vec<Expectation>,
+    /// Maps to laboratory tables.
+    pub samples: Vec<SampleMap>,
+    /// What was done to the oils, in file order.
+    pub events: Vec<Event>,
 }
 
 impl Site {

@@ -34,7 +34,11 @@ pub fn report(session: &mut Session<'_>, args: &Args) -> Exit {
 
 fn run(session: &mut Session<'_>, args: &Args) -> Result<Exit, Exit> {
     let target = target(session, args)?;
-    let loaded = session.load(&[])?;
+    let mut loaded = session.load(&[])?;
+    let bottles = match &args.xlsx {
+        Some(_) => Some(session.bottles(&mut loaded, None)?),
+        None => None,
+    };
     let settings = session.settings(true)?;
     let points = session.points(&loaded.site, &args.only)?;
     let templates = templates(session, args, &loaded)?;
@@ -47,8 +51,8 @@ fn run(session: &mut Session<'_>, args: &Args) -> Result<Exit, Exit> {
     let written = pages::write(session, &mut report, &templates, &target)?;
     let head = session.head(&loaded);
     tell(session, &head, &target, &written);
-    if let Some(path) = &args.xlsx {
-        super::workbook::write(session, &scales, &loaded, &points, Path::new(path))?;
+    if let (Some(path), Some(bottles)) = (&args.xlsx, bottles) {
+        super::workbook::write(session, &scales, &loaded, &points, bottles, Path::new(path))?;
     }
     let tripped = session.shared.gate.is_some_and(|gate| {
         let level = |v: Verdict| match v {

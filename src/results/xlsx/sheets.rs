@@ -314,10 +314,15 @@ fn of_table(name: &'static str, table: csv::Table) -> Sheet {
         _ => 14.0,
     };
     let column = |heading: &String| {
-        let (words, unit) = match heading.strip_suffix("_vg_step") {
-            Some(words) => (words, "VG step"),
-            None => (heading.as_str(), ""),
-        };
+        const UNITS: [(&str, &str); 3] = [
+            ("_vg_step", "VG step"),
+            ("_mm2_s", "mm2/s"),
+            ("_percent", "%"),
+        ];
+        let found = UNITS
+            .iter()
+            .find_map(|(end, unit)| Some((heading.strip_suffix(end)?, *unit)));
+        let (words, unit) = found.unwrap_or((heading.as_str(), ""));
         let mut words = words.replace('_', " ");
         if let Some(first) = words.get_mut(..1) {
             first.make_ascii_uppercase();
