@@ -1,13 +1,10 @@
 //! The workbook of `report --xlsx`.
 
-use crate::audit::{Asked, audit};
 use crate::cli::exit::Exit;
 use crate::cli::load::Loaded;
-use crate::cli::samples::Bottles;
 use crate::cli::session::Session;
 use crate::decide::gaps::{PointGaps, of_points};
 use crate::model::Point;
-use crate::results::audit::table_of;
 use crate::results::csv::Table;
 use crate::results::xlsx::{Content, workbook};
 use crate::weighing::Scales;
@@ -22,7 +19,7 @@ pub(super) fn write<'s>(
     scales: &Scales<'s>,
     loaded: &Loaded,
     points: &[&'s Point],
-    bottles: Bottles,
+    samples: Option<Table>,
     path: &Path,
 ) -> Result<(), Exit> {
     session.may_write_book(path)?;
@@ -32,7 +29,6 @@ pub(super) fn write<'s>(
         session.progress("weighing for the workbook", weighed.len(), points.len());
     }
     session.host.progress_end();
-    let samples = samples(session, scales, loaded, points, bottles)?;
     let head = session.head(loaded);
     let content = Content {
         scales,
@@ -53,28 +49,4 @@ pub(super) fn write<'s>(
         .host
         .out(&format!("workbook in {}\n", path.display()));
     Ok(())
-}
-
-/// Samples against label and need, as `audit -f csv` has them; none where none were read.
-fn samples(
-    session: &mut Session<'_>,
-    scales: &Scales<'_>,
-    loaded: &Loaded,
-    points: &[&Point],
-    bottles: Bottles,
-) -> Result<Option<Table>, Exit> {
-    if bottles.list.is_empty() {
-        return Ok(None);
-    }
-    let place = |p: &&Point| loaded.site.points.iter().position(|q| std::ptr::eq(*p, q));
-    let asked = Asked {
-        on: super::audit::day_of(session, loaded)?,
-        matches: Vec::new(),
-        measured_shear: false,
-        only: points.iter().filter_map(place).collect(),
-    };
-    let mut problems = Vec::new();
-    let audited = audit(scales, bottles.list, &asked, &mut problems);
-    session.bottle_problems(loaded, problems)?;
-    Ok(Some(table_of(scales, &audited)))
 }
