@@ -304,7 +304,7 @@ pub struct Intake {
     pub makes: Option<IntakeMakes>,
     /// Decimal sign of its numbers (default: found from the cells)
     #[arg(long, value_enum, value_name = "SIGN")]
-    pub decimal: Option<IntakeDecimal>,
+    pub decimal: Option<Decimal>,
     /// Encoding of a CSV file, as windows-1252 (default: found)
     #[arg(long, value_name = "NAME")]
     pub encoding: Option<String>,
@@ -326,15 +326,6 @@ pub enum IntakeMakes {
     Site,
     /// Lubricants: an oil file.
     Oils,
-}
-
-/// Decimal signs.
-#[derive(Clone, Copy, Debug, PartialEq, Eq, ValueEnum)]
-pub enum IntakeDecimal {
-    /// 52.0
-    Point,
-    /// 52,0
-    Comma,
 }
 
 /// Gallons.
