@@ -21,6 +21,7 @@ pub mod shear;
 pub mod trend;
 pub mod units;
 pub mod whose;
+pub mod worked;
 
 use crate::judge::Verdict;
 use crate::model::Site;
@@ -31,6 +32,7 @@ use findings::Finding;
 use jiff::civil::Date;
 use judged::{Auditor, Judged};
 use matching::{Match, Matcher};
+use rayon::prelude::*;
 use shear::Fed;
 use units::Unit;
 
@@ -126,7 +128,7 @@ pub fn audit(
     units::tell_twice(&units, &bottles, problems);
     let auditor = Auditor::new(scales, &bottles, &new_oil, asked.on);
     let mut judged: Vec<Judged> = rows
-        .iter()
+        .par_iter()
         .map(|(bottle, point)| auditor.judge(*bottle, *point))
         .collect();
     judged::tell_labels(&judged, &bottles, problems);

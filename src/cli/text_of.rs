@@ -3,10 +3,12 @@
 pub mod audit;
 pub mod gaps;
 pub mod intake;
+pub mod labels;
 pub mod mend;
 pub mod need;
 pub mod oil;
 pub mod pool;
+pub mod running;
 pub mod scatter;
 pub mod weigh;
 pub mod whatif;

@@ -110,7 +110,7 @@ fn push<R: Recorder>(
         cx.undecided(part, End::HotFloor, because);
         return;
     }
-    let wanted = match cx.house_film(part) {
+    let wanted = match cx.house_film(part, CONTACT_RULE) {
         Some((height, rule, source)) if contact.film_ratio.is_none() => Asked {
             height: height.value,
             step: height.step,

@@ -74,9 +74,19 @@ pub fn engine<R: Recorder>(cx: &mut Context<'_, '_, R>, part: &Part, drive: &Dri
     if let Some(w) = own {
         let cranks = w.cranking();
         let at = AtAmbient::held(cranks.at.base());
-        let says = format!("cranking viscosity of SAE {} at its own temperature", w.name);
+        let says = format!(
+            "cranking viscosity of SAE {} at its own temperature",
+            w.name
+        );
         let words = (ENGINE_RULE, says, "SAE J300");
-        tested(cx, part, GradeTest::Cranking, cranks.eta, (Some(at), None), words);
+        tested(
+            cx,
+            part,
+            GradeTest::Cranking,
+            cranks.eta,
+            (Some(at), None),
+            words,
+        );
     }
     let word = asked.map_or(BY_DUTY, |g| word_of(g, "SAE J300"));
     let by_duty = least.and_then(|eta| {

@@ -1,5 +1,6 @@
 //! Everything tested from outside the crate, in one binary.
 
+mod audit;
 mod chance;
 mod checks;
 mod decide;
@@ -14,6 +15,7 @@ mod journal_table;
 mod judging;
 mod layers;
 mod part_kinds;
+mod plain;
 mod pool;
 mod practice_parts;
 mod problems;

@@ -96,7 +96,10 @@ fn steps_agree(judgement: &Value) {
         let step = steps.iter().find(|s| s["id"] == margin["step"]);
         let step = step.unwrap_or_else(|| panic!("{end}: no step in {judgement}"));
         let told = step["result"]["value"].as_f64().expect("a number");
-        assert!((told - value).abs() < 1e-9, "{end}: {told} told, {value} judged");
+        assert!(
+            (told - value).abs() < 1e-9,
+            "{end}: {told} told, {value} judged"
+        );
     }
 }
 
@@ -548,7 +551,10 @@ fn the_makers_w_grade_counts_at_its_own_temperature() {
     let asked = engine("5 degC", "  hot grade: SAE 10W-40\n", &oil);
     assert_eq!(asked["verdict"], "fails", "{asked}");
     let own = engine("5 degC", "  hot grade: SAE 15W-40\n", &oil);
-    assert!(matches!(own["verdict"].as_str(), Some("holds" | "tight")), "{own}");
+    assert!(
+        matches!(own["verdict"].as_str(), Some("holds" | "tight")),
+        "{own}"
+    );
 }
 
 #[test]

@@ -1,7 +1,7 @@
 //! Which sheets there will be, where each stands and what it is called, before any is made: their
 //! number and their links are needed on the first.
 
-use crate::model::Point;
+use crate::model::{Oil, Point};
 use crate::report::model::NavLink;
 use crate::report::names::{Bundle, Href, Names, Place};
 use std::collections::BTreeMap;
@@ -44,6 +44,12 @@ pub(super) struct Plan<'a> {
     pub(super) overview: Fixed,
     pub(super) areas: Vec<Area>,
     pub(super) machines: Vec<Machine<'a>>,
+    /// The oils' sheets, in the order of the list.
+    pub(super) oils: Vec<Fixed>,
+    /// Their ids, for the bar of links.
+    oil_ids: Vec<String>,
+    /// The audit, where there are samples.
+    pub(super) audit: Option<Fixed>,
     pub(super) methods: Fixed,
     pub(super) rules: Fixed,
     pub(super) glossary: Fixed,
@@ -57,6 +63,8 @@ pub(super) enum On {
     Overview,
     Area(usize),
     Machine(usize),
+    Oil(usize),
+    Audit,
     Methods,
     Rules,
     Glossary,
@@ -64,7 +72,7 @@ pub(super) enum On {
 
 impl<'a> Plan<'a> {
     /// Plans the sheets for these points, in their order.
-    pub(super) fn new(points: &[&'a Point], bundle: Bundle) -> Self {
+    pub(super) fn new(points: &[&'a Point], oils: &[Oil], bundle: Bundle, audited: bool) -> Self {
         let mut names = Names::new();
         let mut number = 0;
         let mut next = || {
@@ -87,6 +95,15 @@ impl<'a> Plan<'a> {
                 number: next(),
             })
             .collect();
+        let oil_ids: Vec<String> = oils.iter().map(|o| o.id.clone()).collect();
+        let oils = oil_ids
+            .iter()
+            .map(|id| Fixed {
+                place: Place::new(&mut names, "oil", id),
+                number: next(),
+            })
+            .collect();
+        let audit = audited.then(|| fixed(&mut names, "audit", next()));
         let methods = fixed(&mut names, "methods", next());
         let rules = fixed(&mut names, "rules", next());
         let glossary = fixed(&mut names, "words", next());
@@ -96,6 +113,9 @@ impl<'a> Plan<'a> {
             overview,
             areas,
             machines,
+            oils,
+            oil_ids,
+            audit,
             methods,
             rules,
             glossary,
@@ -107,9 +127,11 @@ impl<'a> Plan<'a> {
         let fixed = [&self.overview, &self.methods, &self.rules, &self.glossary];
         fixed
             .into_iter()
+            .chain(self.audit.as_ref())
             .map(|f| &f.place)
             .chain(self.areas.iter().map(|a| &a.place))
             .chain(self.machines.iter().map(|m| &m.place))
+            .chain(self.oils.iter().map(|o| &o.place))
             .map(Place::file)
             .collect()
     }
@@ -144,7 +166,21 @@ impl<'a> Plan<'a> {
                     bar.push(link(format!("Next: {}", m.tag), &m.place, false));
                 }
             }
+            On::Oil(i) => {
+                if let Some(before) = i.checked_sub(1) {
+                    let text = format!("Before: {}", self.oil_ids[before]);
+                    bar.push(link(text, &self.oils[before].place, false));
+                }
+                bar.push(link(self.oil_ids[i].clone(), &self.oils[i].place, true));
+                if let Some(next) = self.oils.get(i + 1) {
+                    let text = format!("Next: {}", self.oil_ids[i + 1]);
+                    bar.push(link(text, &next.place, false));
+                }
+            }
             _ => {}
+        }
+        if let Some(audit) = &self.audit {
+            bar.push(link("Audit".into(), &audit.place, on == On::Audit));
         }
         bar.push(link(
             "Methods".into(),
