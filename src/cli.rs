@@ -5,6 +5,8 @@ pub mod exit;
 pub mod host;
 pub mod load;
 pub mod run;
+pub mod samples;
+pub mod select;
 pub mod session;
 pub mod text;
 pub mod text_of;
@@ -84,7 +86,7 @@ pub struct Shared {
     #[arg(long, value_enum, default_value_t = Marks::Plain, global = true)]
     pub marks: Marks,
     /// Date of judgement and of the outputs, as 2026-11-02
-    #[arg(long, value_name = "DATE", global = true)]
+    #[arg(long, value_name = "DATE", global = true, value_parser = day)]
     pub on: Option<String>,
     /// Folder of own rules on top of the built-in ones
     #[arg(long, value_name = "DIR", global = true)]
@@ -160,6 +162,15 @@ pub enum Command {
     /// Lay down a starter folder: three commented files and the editor schemas
     #[command(after_help = "Example:\n  filmwright new works/")]
     New(New),
+    /// Read a spreadsheet register or oil list, draft the site or oil file
+    #[command(
+        after_help = "Examples:\n  filmwright intake register.xlsx                 draft site.yaml, propose register.map.yaml\n  \
+        filmwright intake register.xlsx --map register.map.yaml -o site.yaml\n  \
+        filmwright intake oils.csv --makes oils --decimal comma\n  \
+        filmwright intake register.xlsx --accept        take the differences of site.yaml.proposed\n\
+        See also: check, gaps"
+    )]
+    Intake(Intake),
     /// Read all files, report errors and warnings, run nothing
     #[command(after_help = "Example:\n  filmwright check --strict")]
     Check,
@@ -179,6 +190,24 @@ pub enum Command {
     /// The traced steps behind one verdict
     #[command(after_help = "Example:\n  filmwright why M01 O-13 --demo")]
     Why(Why),
+    /// The smallest change that would make an oil hold on a machine
+    #[command(after_help = "Examples:\n  filmwright mend M02 O-13 --demo\n  \
+        filmwright mend CV-104 MG-320 --band -25..40degC\n\
+        Each amount is solved for and verified by weighing again. See also: whatif, why")]
+    Mend(Mend),
+    /// Weigh again with changed values, files untouched
+    #[command(
+        after_help = "Examples:\n  filmwright whatif M02 --set \"heater=10 degC\" --demo\n  \
+        filmwright whatif CV-104 --set \"sump rise=48 K\" --set \"rolling bearing 22220: speed=250 r/min\"\n\
+        Only what moves is printed. See also: mend, gaps"
+    )]
+    Whatif(Whatif),
+    /// Missing and assumed data, ranked by what it would decide
+    #[command(
+        after_help = "Examples:\n  filmwright gaps --demo\n  filmwright gaps --letter 5 --demo    the first five as questions\n\
+        See also: whatif, check"
+    )]
+    Gaps(Gaps),
     /// One oil: its line, viscosity at temperatures, grades, what does not add up
     #[command(
         after_help = "Example:\n  filmwright oil O-12 --at -15degC --at 85degC --demo\n  \
@@ -186,10 +215,24 @@ pub enum Command {
         filmwright oil O-04 --with O-05 --target \"46.3 mm2/s at 40 degC\" --demo"
     )]
     Oil(Oil),
+    /// The shortest oil list that serves every machine, and what one shorter or longer costs
+    #[command(after_help = "Examples:\n  filmwright pool --demo\n  \
+        filmwright pool --drop O-13 --never-tight\n  \
+        filmwright pool --at-most 8 --site-price 250\n\
+        See also: weigh, mend, report")]
+    Pool(Pool),
+    /// Samples of oils in use against their labels and against what the machines need
+    #[command(
+        after_help = "Examples:\n  filmwright audit --demo\n  filmwright audit --samples lab-2026-09.csv\n  \
+        filmwright audit --match \"Conv104 HD=CV-104\" --unmatched\n\
+        See also: weigh, report; filmwright help keys lists the columns"
+    )]
+    Audit(Audit),
     /// HTML sheets: overview, one sheet a machine
     #[command(
         after_help = "Examples:\n  filmwright report --demo\n  filmwright report -o out/\n  \
-        filmwright report --one-file -o review.html --only 'CV-*'"
+        filmwright report --one-file -o review.html --only 'CV-*'\n  \
+        filmwright report --xlsx annex.xlsx"
     )]
     Report(Report),
     /// The rules built in: formula, range of use, source, defaults
@@ -200,6 +243,22 @@ pub enum Command {
         filmwright work bearing-nu1 speed=\"236 r/min\" pitch_diameter=\"140 mm\"\n  \
         filmwright work --batch sums.jsonl")]
     Work(Work),
+    /// JSON Schemas for editors: completion and hover text for the files
+    #[command(
+        after_help = "Examples:\n  filmwright schema --write       into .filmwright/ of the folder\n  filmwright schema site"
+    )]
+    Schema(Schema),
+    /// Completions for a shell, with tags and oils of the working folder
+    #[command(
+        after_help = "Examples:\n  filmwright completions bash > ~/.local/share/bash-completion/completions/filmwright\n  \
+        filmwright completions fish > ~/.config/fish/completions/filmwright.fish"
+    )]
+    Completions(Completions),
+    /// Manual pages
+    #[command(
+        after_help = "Examples:\n  filmwright man | man -l -\n  filmwright man weigh\n  filmwright man -o man1/        all pages into a folder"
+    )]
+    Man(Man),
     /// Short texts: units, verdicts, files, keys, steps, or the name of a message
     #[command(after_help = "Example:\n  filmwright help verdicts")]
     Help(Help),
@@ -213,6 +272,65 @@ pub struct New {
     /// Also write the built-in rules out for editing
     #[arg(long = "with-rules")]
     pub with_rules: bool,
+}
+
+/// `intake`
+#[derive(Debug, Args)]
+pub struct Intake {
+    /// The spreadsheet: xlsx, ods or csv
+    #[arg(value_name = "FILE")]
+    pub file: String,
+    /// Map of its columns; written where it is not there (default: FILE with .map.yaml)
+    #[arg(long, value_name = "FILE")]
+    pub map: Option<String>,
+    /// The sheet to read (default: the one that looks most like a register)
+    #[arg(long, value_name = "NAME")]
+    pub sheet: Option<String>,
+    /// What the table lists (default: by its headings)
+    #[arg(long, value_enum, value_name = "KIND")]
+    pub makes: Option<IntakeMakes>,
+    /// Decimal sign of its numbers (default: found from the cells)
+    #[arg(long, value_enum, value_name = "SIGN")]
+    pub decimal: Option<IntakeDecimal>,
+    /// Encoding of a CSV file, as windows-1252 (default: found)
+    #[arg(long, value_name = "NAME")]
+    pub encoding: Option<String>,
+    /// Delimiter of a CSV file: comma, semicolon, tab, bar (default: found)
+    #[arg(long, value_name = "SIGN")]
+    pub delimiter: Option<String>,
+    /// Which gallon a bare gal is (default: asked about)
+    #[arg(long, value_enum, value_name = "WHICH")]
+    pub gallon: Option<IntakeGallon>,
+    /// Take the differences proposed into the file
+    #[arg(long)]
+    pub accept: bool,
+}
+
+/// What a table lists.
+#[derive(Clone, Copy, Debug, PartialEq, Eq, ValueEnum)]
+pub enum IntakeMakes {
+    /// Machines: a site file.
+    Site,
+    /// Lubricants: an oil file.
+    Oils,
+}
+
+/// Decimal signs.
+#[derive(Clone, Copy, Debug, PartialEq, Eq, ValueEnum)]
+pub enum IntakeDecimal {
+    /// 52.0
+    Point,
+    /// 52,0
+    Comma,
+}
+
+/// Gallons.
+#[derive(Clone, Copy, Debug, PartialEq, Eq, ValueEnum)]
+pub enum IntakeGallon {
+    /// 3.785 L.
+    Us,
+    /// 4.546 L.
+    Uk,
 }
 
 /// `need`
@@ -260,6 +378,9 @@ pub struct Weigh {
     /// Ambient instead of the area's, as -25..40degC
     #[arg(long, value_name = "LOW..HIGH", allow_hyphen_values = true)]
     pub band: Option<String>,
+    /// Also sample so many cases within the tolerances: the share in which every limit is met
+    #[arg(long, value_name = "CASES")]
+    pub scatter: Option<u32>,
 }
 
 /// Which curve floors are judged on.
@@ -279,6 +400,50 @@ pub struct Why {
     pub tag: String,
     /// The oil
     pub oil: String,
+}
+
+/// `mend`
+#[derive(Debug, Args)]
+pub struct Mend {
+    /// The machine, or machine/point
+    pub tag: String,
+    /// The oil, by id or pattern
+    pub oil: String,
+    /// Ambient instead of the area's, as -25..40degC
+    #[arg(long, value_name = "LOW..HIGH", allow_hyphen_values = true)]
+    pub band: Option<String>,
+}
+
+/// `whatif`
+#[derive(Debug, Args)]
+pub struct Whatif {
+    /// The machine, or machine/point
+    pub tag: String,
+    /// A value by the name it has in the file, as KEY=VALUE or PART: KEY=VALUE; several may be set
+    #[arg(
+        long,
+        value_name = "KEY=VALUE",
+        required = true,
+        allow_hyphen_values = true
+    )]
+    pub set: Vec<String>,
+    /// Print only these oils, by id or pattern
+    #[arg(long, value_name = "OIL")]
+    pub oil: Vec<String>,
+}
+
+/// `gaps`
+#[derive(Debug, Args)]
+pub struct Gaps {
+    /// Machines, by tag or pattern; all where none is given
+    pub tags: Vec<String>,
+    /// The first gaps as numbered questions in plain sentences, five unless another number is given
+    #[arg(long, value_name = "N", num_args = 0..=1)]
+    #[expect(clippy::option_option, reason = "absent, without a number, with one")]
+    pub letter: Option<Option<usize>>,
+    /// Every row, not only the first forty
+    #[arg(long)]
+    pub all: bool,
 }
 
 /// `oil`
@@ -306,6 +471,59 @@ pub struct Oil {
     pub at_machine: Vec<String>,
 }
 
+/// `pool`
+#[derive(Debug, Args)]
+pub struct Pool {
+    /// Only these machines, by tag or pattern; all where none is given
+    pub tags: Vec<String>,
+    /// Oils that stay on the list, by id or pattern
+    #[arg(long, value_name = "OIL")]
+    pub keep: Vec<String>,
+    /// Oils that may not be on the list, by id or pattern
+    #[arg(long, value_name = "OIL")]
+    pub drop: Vec<String>,
+    /// The longest list wanted
+    #[arg(long, value_name = "N")]
+    pub at_most: Option<usize>,
+    /// Take no oil where it is tight
+    #[arg(long)]
+    pub never_tight: bool,
+    /// What holding one oil on the site costs a year, in the site's unit of money
+    #[arg(long, value_name = "COST", allow_hyphen_values = true)]
+    pub site_price: Option<f64>,
+    /// Nodes the search looks at before it prints a gap instead of an answer
+    #[arg(long, value_name = "N", default_value_t = crate::decide::pool::case::NODES)]
+    pub nodes: u64,
+}
+
+/// `audit`
+#[derive(Debug, Args)]
+pub struct Audit {
+    /// Machines, by tag or pattern; all where none is given
+    pub tags: Vec<String>,
+    /// Only list the bottles that belong to no machine, with what may be meant
+    #[arg(long)]
+    pub unmatched: bool,
+    /// A name on bottles and the machine it means, as "NAME=TAG"
+    #[arg(long = "match", value_name = "NAME=TAG")]
+    pub matches: Vec<String>,
+    /// Lay the shear loss measured in one machine on the others with the same oil
+    #[arg(long)]
+    pub use_measured_shear: bool,
+    /// What parts whole and decimals in the laboratory's numbers (default: as the map says)
+    #[arg(long, value_enum, value_name = "SIGN")]
+    pub decimal: Option<Decimal>,
+}
+
+/// What parts whole and decimals.
+#[derive(Clone, Copy, Debug, PartialEq, Eq, ValueEnum)]
+pub enum Decimal {
+    /// 45.6
+    Point,
+    /// 45,6
+    Comma,
+}
+
 /// `report`
 #[derive(Debug, Args)]
 pub struct Report {
@@ -321,6 +539,9 @@ pub struct Report {
     /// Folder of own templates on top of the built-in ones
     #[arg(long, value_name = "DIR")]
     pub templates: Option<String>,
+    /// Write the results as a workbook as well
+    #[arg(long, value_name = "FILE")]
+    pub xlsx: Option<String>,
 }
 
 /// Paper sizes.
@@ -356,11 +577,75 @@ pub struct Work {
     pub batch: Option<String>,
 }
 
+/// `schema`
+#[derive(Debug, Args)]
+pub struct Schema {
+    /// Print the schema of this kind of file: site, oils, samples, events
+    #[arg(value_name = "KIND")]
+    pub kind: Option<String>,
+    /// Write all of them into .filmwright/ of the folder
+    #[arg(long)]
+    pub write: bool,
+}
+
+/// `completions`
+#[derive(Debug, Args)]
+pub struct Completions {
+    /// The shell
+    #[arg(value_enum, value_name = "SHELL", required_unless_present = "names")]
+    pub shell: Option<Shell>,
+    /// Print names of the working folder with what they are, a line each
+    #[arg(long, value_enum, value_name = "KIND", hide = true)]
+    pub names: Option<Names>,
+}
+
+/// Shells.
+#[derive(Clone, Copy, Debug, PartialEq, Eq, ValueEnum)]
+pub enum Shell {
+    /// bash.
+    Bash,
+    /// zsh.
+    Zsh,
+    /// fish.
+    Fish,
+    /// `PowerShell`.
+    #[value(name = "powershell")]
+    PowerShell,
+}
+
+/// Names that are completed.
+#[derive(Clone, Copy, Debug, PartialEq, Eq, ValueEnum)]
+pub enum Names {
+    /// Tags of machines and addresses of points.
+    Tags,
+    /// Ids of oils.
+    Oils,
+    /// Ids of rules.
+    Rules,
+}
+
+/// `man`
+#[derive(Debug, Args)]
+pub struct Man {
+    /// The page of one command; the program's own where none is given
+    #[arg(value_name = "COMMAND")]
+    pub command: Option<String>,
+}
+
 /// `help`
 #[derive(Debug, Args)]
 pub struct Help {
     /// The topic
     pub topic: Option<String>,
+}
+
+/// A day of the calendar, as it stands in the files.
+fn day(text: &str) -> Result<String, String> {
+    text.parse::<jiff::civil::Date>()
+        .ok()
+        .filter(|day| day.to_string() == text)
+        .map(|_| text.to_owned())
+        .ok_or_else(|| "a day is written as 2026-11-02".to_owned())
 }
 
 #[cfg(test)]

@@ -4,24 +4,34 @@
 //! step of the calculation behind it. Each part yields demands; the point's list is their union,
 //! and the strictest at each end governs.
 
+mod bearing_facts;
 pub mod bearing_film;
 pub mod component;
 pub mod contact;
+mod contact_facts;
 pub mod context;
+pub mod drive;
 pub mod feed;
 pub mod film;
+pub mod gear_bevel;
 pub mod gear_film;
 pub mod gear_mesh;
 pub mod governing;
+mod grease_code;
+mod grease_point;
 pub mod inputs;
 pub mod journal;
 pub mod losses;
+pub mod open_gear;
 pub mod point;
 pub mod rolling_bearing;
 pub mod rules;
 pub mod settings;
+pub mod tested;
 pub mod thermal;
 pub mod thrust;
+pub mod usual;
+pub mod worm;
 
 use crate::model::part::{Part, PartKind};
 use crate::model::rulebook::{Confidence, Rulebook};
@@ -74,6 +84,8 @@ pub enum Limit {
     Temperature(f64),
     /// The low end of a grease's use range.
     UseLow,
+    /// A viscosity that a test measures: cranking, pumping, high shear.
+    Tested(tested::TestedLimit),
 }
 
 /// Which oils a demand speaks of.
@@ -137,6 +149,18 @@ pub struct Demand {
     pub from_window: bool,
 }
 
+impl Demand {
+    /// What it asks and of what: `gear mesh low-speed stage: …`. A window names its part itself.
+    pub fn asks(&self) -> String {
+        match &self.part {
+            Some(part) if !self.says.starts_with(part.as_str()) => {
+                format!("{part}: {}", self.says)
+            }
+            _ => self.says.clone(),
+        }
+    }
+}
+
 /// A figure worked out for a part that sets no limit.
 #[derive(Clone, Debug, PartialEq)]
 pub struct Information {
@@ -180,6 +204,8 @@ pub struct Demands {
     pub tolerances: Vec<Gap>,
     /// What makes heat in the point, where all of it can be worked out.
     pub losses: Option<losses::Losses>,
+    /// Stated inputs without one, with the usual tolerance of their kind; only where asked for.
+    pub usual: Vec<Gap>,
 }
 
 impl Demands {
@@ -255,6 +281,7 @@ pub fn demands<R: Recorder>(
         gaps: inputs.gaps,
         tolerances: inputs.tolerances,
         losses,
+        usual: inputs.usual,
     }
 }
 
@@ -264,15 +291,12 @@ fn of_part<R: Recorder>(cx: &mut Context<'_, '_, R>, part: &Part) {
         PartKind::GearMesh(m) => gear_mesh::add(cx, part, m),
         PartKind::Contact(c) => contact::add(cx, part, c),
         PartKind::Component(c) => component::add(cx, part, c),
+        PartKind::WormMesh(m) => worm::add(cx, part, m),
+        PartKind::OpenGear(g) => open_gear::add(cx, part, g),
+        PartKind::Engine(d) => drive::engine(cx, part, d),
+        PartKind::Axle(d) => drive::axle(cx, part, d),
         PartKind::JournalBearing(b) => journal::add(cx, part, b),
         PartKind::ThrustBearing(b) => thrust::add(cx, part, b),
-        PartKind::WormMesh(_) | PartKind::OpenGear(_) | PartKind::Engine(_) | PartKind::Axle(_) => {
-            cx.undecided(
-                part,
-                End::HotFloor,
-                "this kind of part is not worked out yet",
-            );
-        }
     }
 }
 
@@ -285,6 +309,7 @@ pub fn is_severe(point: &Point) -> bool {
                 | PartKind::GearMesh(_)
                 | PartKind::WormMesh(_)
                 | PartKind::OpenGear(_)
+                | PartKind::Axle(_)
         )
     })
 }

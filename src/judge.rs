@@ -16,6 +16,7 @@ pub mod order;
 pub mod own;
 pub mod prepared;
 mod straight;
+pub mod tested;
 pub mod verdict;
 pub mod weigh;
 

@@ -14,9 +14,12 @@
 //! The pipeline runs in one direction; nothing reaches back. The rooms, in the order of the arrows:
 
 pub mod assets;
+pub mod audit;
 pub mod cli;
+pub mod decide;
 pub mod demand;
 pub mod input;
+pub mod intake;
 pub mod judge;
 pub mod model;
 pub mod numeric;

@@ -9,6 +9,7 @@ pub mod machine;
 pub mod oil;
 pub mod part;
 pub mod rulebook;
+pub mod sample;
 pub mod site;
 pub mod stated;
 pub mod word;

@@ -12,3 +12,4 @@ pub mod interpolate;
 pub mod math;
 pub mod maximum;
 pub mod root;
+pub mod share;

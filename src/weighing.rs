@@ -1,8 +1,11 @@
 //! From a read site to weighed candidates: every point, every oil, eligibility first.
 
 pub mod facts;
+pub mod pair;
 pub mod top_up;
 pub mod uses;
+
+pub use pair::Pair;
 
 use crate::demand::{
     Demands, End, PointDemands, Scenario, Standing, demands, is_severe, point_demands, takes_grease,
@@ -54,6 +57,8 @@ pub struct Candidate {
     pub notes: Vec<Condition>,
     /// Facts that suitability rules need and nobody stated.
     pub facts_missing: Vec<String>,
+    /// The question to put for each of them, in the same order.
+    pub questions: Vec<String>,
     /// Why the word is what it is, the main reason first.
     pub because: Vec<String>,
     /// The main reason in a few words.
@@ -173,12 +178,12 @@ impl<'a> Scales<'a> {
     /// The demands of a point, ready to be judged.
     pub fn prepare(&self, point: &Point) -> (PointDemands, PreparedPoint) {
         let demands = point_demands(point, &self.site.house, self.rules);
-        let ready = self.ready(point, &demands);
+        let ready = self.made_ready(point, &demands, self.reserve);
         (demands, ready)
     }
 
-    fn ready(&self, point: &Point, demands: &PointDemands) -> PreparedPoint {
-        let mut ready = PreparedPoint::new(&demands.settings, is_severe(point), self.reserve);
+    fn made_ready(&self, point: &Point, demands: &PointDemands, reserve: f64) -> PreparedPoint {
+        let mut ready = PreparedPoint::new(&demands.settings, is_severe(point), reserve);
         if let Some(in_use) = self.in_use_curves(point) {
             ready.run_by_losses(&demands.settings, in_use);
         }
@@ -212,7 +217,7 @@ impl<'a> Scales<'a> {
             settings: vec![alone],
             shares: vec![setting],
         };
-        let ready = self.ready(point, &demands);
+        let ready = self.made_ready(point, &demands, self.reserve);
         self.weigh_on(point, demands, ready, |_| true)
     }
 
@@ -252,7 +257,8 @@ impl<'a> Scales<'a> {
                 barred.push(Barred { oil: i, by, in_use });
             } else {
                 let judged = weigh(&ready, &self.oils[i]);
-                let mut found = self.candidate(&demands, &ready, i, judged, &eligible, in_use);
+                let state = (i, &self.oils[i]);
+                let mut found = self.candidate(&demands, &ready, state, judged, &eligible, in_use);
                 found.running = self
                     .running(point, &demands, i)
                     .map(|r| r.over(now.as_ref()));
@@ -284,22 +290,23 @@ impl<'a> Scales<'a> {
         &self,
         demands: &PointDemands,
         ready: &PreparedPoint,
-        oil: usize,
+        (oil, state): (usize, &PreparedOil),
         judgement: Judgement,
         eligible: &Eligibility,
         in_use: bool,
     ) -> Candidate {
         let mut conditions: Vec<Condition> = eligible.conditions.iter().map(condition).collect();
         conditions.extend(asked(demands, &judgement));
-        let ready = &*ready.for_oil(&self.oils[oil]);
-        let because = because(demands, ready, &self.oils[oil], &judgement, self.units);
-        let brief = brief(demands, ready, &self.oils[oil], &judgement, self.units);
+        let ready = &*ready.for_oil(state);
+        let because = because(demands, ready, state, &judgement, self.units);
+        let brief = brief(demands, ready, state, &judgement, self.units);
         Candidate {
             oil,
             judgement,
             conditions,
             notes: self.notes(oil, ready, eligible),
             facts_missing: eligible.gaps.iter().map(|g| g.says.clone()).collect(),
+            questions: eligible.gaps.iter().map(|g| g.question.clone()).collect(),
             because,
             brief,
             in_use,

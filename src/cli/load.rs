@@ -9,10 +9,10 @@ use crate::input::file::FileKind;
 use crate::input::load::{self as reader, Tree, With};
 use crate::input::overlay;
 use crate::input::rules::{RuleFault, rulebook};
+use crate::model::Site;
 use crate::model::rulebook::Rulebook;
 use crate::model::stated::{Between, Stated};
-use crate::model::{Point, Site};
-use crate::problem::{self, Problems, Severity, render};
+use crate::problem::{self, Code, Problem, Problems, Severity, Write, render};
 use crate::quantity::{Kind, Measure, ThermodynamicTemperature};
 use crate::relation::bearing::designation::DimensionTable;
 use crate::relation::oil::viscosity_temperature::Misfit;
@@ -190,6 +190,9 @@ impl Session<'_> {
                 problems.allow(&point.machine, &point.allow);
             }
         }
+        if let Ok(site) = &site {
+            self.expired(site, &mut problems);
+        }
         if self.shared.strict {
             problems.make_strict();
         }
@@ -207,6 +210,27 @@ impl Session<'_> {
                 })
             }
             _ => Err(self.told(&sources, &problems)),
+        }
+    }
+
+    /// Warns of acceptances that have run out on the day of judgement.
+    fn expired(&self, site: &Site, problems: &mut Problems) {
+        let on = self.date(site.frame.reviewed.as_deref());
+        for a in site.accept.iter().filter(|a| a.expired(&on)) {
+            let until = a.until.as_deref().unwrap_or_default();
+            let (machine, oil) = (&a.machine.value, &a.oil.value);
+            problems.push(
+                Problem::new(
+                    Code::AcceptExpired,
+                    format!("the acceptance of {oil} on {machine} ran out on {until}"),
+                    a.machine.origin.place.clone(),
+                )
+                .within(machine.clone())
+                .so(format!("on {on} the verdict counts as open work again"))
+                .write(Write::words(
+                    "until: a later day, if somebody accepts it again; otherwise take it out",
+                )),
+            );
         }
     }
 
@@ -283,7 +307,9 @@ impl Session<'_> {
                 FileKind::Events => Vec::new(),
             };
             let yaml: Vec<String> = named.iter().filter(|n| is_yaml(n)).cloned().collect();
-            let files: Vec<(PathBuf, String)> = if named.is_empty() {
+            // a laboratory's table named alone is read by the map of the folder
+            let tables_only = *kind == FileKind::Samples && yaml.is_empty();
+            let files: Vec<(PathBuf, String)> = if named.is_empty() || tables_only {
                 reader::default_files(*kind, |below| self.names_in(&folder.join(below)))
                     .into_iter()
                     .map(|name| (folder.join(&name), name))
@@ -345,7 +371,7 @@ impl Session<'_> {
     }
 
     /// Warnings and notes go to standard error; the last line counts them.
-    fn warn(&mut self, sources: &SourceSet, problems: &Problems) {
+    pub(super) fn warn(&mut self, sources: &SourceSet, problems: &Problems) {
         if self.shared.quiet || problems.is_empty() {
             return;
         }
@@ -403,87 +429,6 @@ impl Session<'_> {
         })
     }
 
-    /// Points by tag, address or pattern; all where none is given.
-    ///
-    /// # Errors
-    /// Nothing matches; near names are suggested.
-    pub fn points<'s>(&mut self, site: &'s Site, tags: &[String]) -> Result<Vec<&'s Point>, Exit> {
-        let mut found: Vec<&Point> = Vec::new();
-        for tag in tags {
-            let matching: Vec<&Point> = site
-                .points
-                .iter()
-                .filter(|p| matches(tag, &p.machine) || matches(tag, &p.address()))
-                .collect();
-            if matching.is_empty() {
-                return Err(self.no_match(
-                    "machine",
-                    tag,
-                    site.points.iter().map(|p| p.machine.as_str()),
-                ));
-            }
-            for point in matching {
-                if !found.iter().any(|f| f.address() == point.address()) {
-                    found.push(point);
-                }
-            }
-        }
-        if tags.is_empty() {
-            found = site.points.iter().collect();
-        }
-        Ok(found)
-    }
-
-    /// Places of oils by id or pattern; `None` where all are meant.
-    ///
-    /// # Errors
-    /// Nothing matches; near names are suggested.
-    pub fn oils(&mut self, site: &Site, ids: &[String]) -> Result<Option<Vec<usize>>, Exit> {
-        if ids.is_empty() {
-            return Ok(None);
-        }
-        let mut found = Vec::new();
-        for id in ids {
-            let matching: Vec<usize> = site
-                .oils
-                .iter()
-                .enumerate()
-                .filter(|(_, o)| matches(id, &o.id))
-                .map(|(i, _)| i)
-                .collect();
-            if matching.is_empty() {
-                return Err(self.no_match("oil", id, site.oils.iter().map(|o| o.id.as_str())));
-            }
-            found.extend(matching);
-        }
-        found.sort_unstable();
-        found.dedup();
-        Ok(Some(found))
-    }
-
-    fn no_match<'c>(
-        &mut self,
-        what: &str,
-        name: &str,
-        known: impl Iterator<Item = &'c str> + Clone,
-    ) -> Exit {
-        let near = problem::suggest::certain(name, known.clone());
-        let hint = near.map_or(String::new(), |n| format!(". Did you mean {n}?"));
-        let mut all: Vec<&str> = known.collect();
-        all.dedup();
-        let n = all.len();
-        let list = if what == "machine" {
-            "  filmwright need --list"
-        } else {
-            ""
-        };
-        let plural = if n == 1 { "" } else { "s" };
-        self.fail(&format!(
-            "nothing weighed  [nothing-to-weigh]\n  no {what} matches '{name}'{hint}  {n} {what}{plural}{list}"
-        ));
-        Exit::NoMatch
-    }
-
     /// An oil whose points make no curve; the reader refuses such oils, so this is a defect.
     pub fn misfit(&mut self, oil: &str, misfit: &Misfit) -> Exit {
         self.fail(&format!(
@@ -500,22 +445,6 @@ fn steps(text: &str) -> Option<f64> {
     read.ok()
         .map(|r| r.amount.base)
         .filter(|s| (0.0..=10.0).contains(s))
-}
-
-/// Shell-style patterns: `*` for any letters, `?` for one.
-pub fn matches(pattern: &str, name: &str) -> bool {
-    fn walk(p: &[char], n: &[char]) -> bool {
-        match (p.first(), n.first()) {
-            (None, None) => true,
-            (Some('*'), _) => walk(&p[1..], n) || (!n.is_empty() && walk(p, &n[1..])),
-            (Some('?'), Some(_)) => walk(&p[1..], &n[1..]),
-            (Some(a), Some(b)) if a == b => walk(&p[1..], &n[1..]),
-            _ => false,
-        }
-    }
-    let p: Vec<char> = pattern.chars().collect();
-    let n: Vec<char> = name.chars().collect();
-    walk(&p, &n)
 }
 
 fn rules_in_words(rules: &Rulebook) -> String {
@@ -547,7 +476,24 @@ fn demo(sources: &mut SourceSet, problems: &mut Problems, hash: &mut Sha256) -> 
     trees
 }
 
+/// Takes another input into a fingerprint already made.
+pub(super) fn feed_fingerprint(fingerprint: &mut String, kind: &str, bytes: &[u8]) {
+    let mut hash = Sha256::new();
+    feed(&mut hash, "before", fingerprint.as_bytes());
+    feed(&mut hash, kind, bytes);
+    *fingerprint = hex(&hash.finalize());
+}
+
 /// Feeds one input into the fingerprint: its kind, its length, its bytes.
+/// Fingerprint of some texts, sha-256.
+pub fn fingerprint(parts: &[&[u8]]) -> String {
+    let mut hash = Sha256::new();
+    for part in parts {
+        feed(&mut hash, "part", part);
+    }
+    hex(&hash.finalize())
+}
+
 fn feed(hash: &mut Sha256, kind: &str, bytes: &[u8]) {
     hash.update(kind.as_bytes());
     hash.update((bytes.len() as u64).to_le_bytes());
@@ -574,19 +520,5 @@ fn shown(folder: &Path) -> String {
         ".".to_owned()
     } else {
         text
-    }
-}
-
-#[cfg(test)]
-mod tests {
-    use super::*;
-
-    #[test]
-    fn patterns_match_as_in_a_shell() {
-        assert!(matches("CV-*", "CV-104"));
-        assert!(matches("*", ""));
-        assert!(matches("M0?", "M01"));
-        assert!(!matches("CV-*", "FN-402"));
-        assert!(!matches("cv-104", "CV-104"));
     }
 }

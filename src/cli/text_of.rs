@@ -1,8 +1,15 @@
 //! Results as text for people.
 
+pub mod audit;
+pub mod gaps;
+pub mod intake;
+pub mod mend;
 pub mod need;
 pub mod oil;
+pub mod pool;
 pub mod running;
+pub mod scatter;
 pub mod weigh;
+pub mod whatif;
 pub mod why;
 pub mod work;

@@ -7,9 +7,14 @@ use super::{Demand, End, Limit};
 use crate::model::part::{InnerGeometry, Part, RollingBearing};
 use crate::model::rulebook::Confidence;
 use crate::quantity::convert::{degrees, number, um};
-use crate::quantity::{Angle, AngularVelocity, Force, Length, Measure, Ratio};
+use crate::quantity::{
+    Angle, AngularVelocity, Force, KinematicViscosity, Length, Measure, Ratio,
+    ThermodynamicTemperature,
+};
 use crate::relation::bearing::film::Element;
 use crate::relation::bearing::kinematics::{Clearance, ELEMENT_LOAD, Inside, Race, element_load};
+use crate::relation::bearing::reference_viscosity::{VISCOSITY_RATIO, viscosity_ratio};
+use crate::relation::film::inverse;
 use crate::relation::film::roughness::{COMPOSITE, composite};
 use crate::trace::{Known, Recorder};
 
@@ -67,6 +72,58 @@ pub fn add<R: Recorder>(
         confidence: Confidence::Medium,
         ..cx.blank(part, at)
     });
+}
+
+/// The film of a bearing that asks for none: what a mineral oil would need for a film ratio of 1
+/// at the hardest loaded element, and the viscosity ratio it would then have.
+pub(super) fn inform<R: Recorder>(
+    cx: &mut Context<'_, '_, R>,
+    part: &Part,
+    bearing: &RollingBearing,
+    speed: Known<AngularVelocity>,
+    nu1: Known<KinematicViscosity>,
+) {
+    let Some(inner) = bearing.inner.as_ref() else {
+        return;
+    };
+    if bearing.load.is_none() {
+        return;
+    }
+    let Some(t) = cx.hot_at(part).hottest else {
+        return;
+    };
+    let Some(contact) = contact(cx, part, bearing, inner, Some(speed)) else {
+        return;
+    };
+    let sigma = sigma(cx, part, inner);
+    let film = FilmDemand {
+        contact,
+        wanted: sigma.value,
+    };
+    let Some(nu) = super::governing::film_on_mineral(&film, t.value) else {
+        return;
+    };
+    let need = cx.r.law(
+        "nu",
+        "viscosity a film ratio of 1 would need of a mineral oil",
+        &inverse::VISCOSITY,
+        (("sigma", sigma), ("t", t)),
+        |_: (Length, ThermodynamicTemperature)| nu,
+    );
+    let says = "viscosity a mineral oil of VI 95 needs for a film ratio of 1 at the hardest \
+                loaded element (Hamrock and Dowson)";
+    cx.inform(part, says, Some((nu.amount(), need.step)));
+    let kappa = cx.r.attempt(
+        "kappa",
+        "viscosity ratio of that oil",
+        &VISCOSITY_RATIO,
+        (("nu", need), ("nu1", nu1)),
+        |(nu, nu1)| viscosity_ratio(nu, nu1),
+    );
+    if let Ok(kappa) = kappa {
+        let says = "viscosity ratio of that oil, against 1 by kappa = Lambda^1.3";
+        cx.inform(part, says, Some((kappa.value.amount(), kappa.step)));
+    }
 }
 
 fn contact<R: Recorder>(

@@ -19,6 +19,7 @@ pub fn add<R: Recorder>(cx: &mut Context<'_, '_, R>, part: &Part, component: &Co
     if let Some(base) = window.base_oil {
         grease_window(cx, part, &window, (base.lo, base.hi));
     }
+    super::open_gear::grades(cx, part, &window.id);
     if let Some(prefer) = window.prefer {
         let ends = [prefer.lo, prefer.hi].map(shown);
         cx.inform(
@@ -58,7 +59,19 @@ fn ratio_is_known<R: Recorder>(cx: &Context<'_, '_, R>) -> bool {
     })
 }
 
-fn window_demands<R: Recorder>(cx: &mut Context<'_, '_, R>, part: &Part, window: &Window) {
+/// The window of one component, for a part that is of its kind.
+pub(super) fn by_id<R: Recorder>(cx: &mut Context<'_, '_, R>, part: &Part, id: &str) {
+    if let Some(window) = cx.rules.components.get(id).cloned() {
+        window_demands(cx, part, &window);
+    }
+}
+
+/// Adds the limits of a window: floor, running ceiling, start ceiling.
+pub(super) fn window_demands<R: Recorder>(
+    cx: &mut Context<'_, '_, R>,
+    part: &Part,
+    window: &Window,
+) {
     let informs = window.restates && ratio_is_known(cx);
     let hot = cx.hot_at(part);
     let start = (cx.thermal.start, cx.thermal.start_coldest.map(|k| k.step));

@@ -9,9 +9,10 @@ use crate::model::part::{Contact, Part};
 use crate::model::rulebook::Confidence;
 use crate::model::site::HouseLimit;
 use crate::quantity::convert::{number, um};
-use crate::quantity::{Length, Measure, Pressure, Ratio};
+use crate::quantity::{Angle, Length, Measure, Pressure, Ratio};
 use crate::relation::film::body::{
-    Material, REDUCED_MODULUS, REDUCED_RADIUS, Radii, reduced_modulus, reduced_radius,
+    Material, Principal, REDUCED_MODULUS, REDUCED_RADIUS, Radii, SKEWED_RADII, reduced_modulus,
+    reduced_radius, skewed,
 };
 use crate::relation::film::groups::{LineLoad, PointLoad};
 use crate::relation::film::roughness::{COMPOSITE, composite};
@@ -63,6 +64,7 @@ pub fn add<R: Recorder>(cx: &mut Context<'_, '_, R>, part: &Part, contact: &Cont
             },
         }),
         (Some((rx, Some(ry))), (_, Some(f))) => Some(FilmContact::Ellipse {
+            meniscus: meniscus(cx, part, contact).map(|m| m.value),
             speed: speed.value,
             load: PointLoad {
                 load: f.value,
@@ -105,12 +107,22 @@ fn push<R: Recorder>(
 ) {
     let (target, whose, source) = asked(cx, part, contact);
     let at = cx.hot_at(part);
+    let asked_for = FilmDemand {
+        contact: film,
+        wanted: Length::from_base(sigma.value.base() * target.base()),
+    };
+    if film.film_at_all().is_err() {
+        cx.undecided(
+            part,
+            End::HotFloor,
+            "film: a speed, load or radius is not above zero",
+        );
+        return;
+    }
+    super::contact_facts::add(cx, part, contact, &asked_for, at);
     cx.push(Demand {
         end: End::HotFloor,
-        limit: Limit::Film(Box::new(FilmDemand {
-            contact: film,
-            wanted: Length::from_base(sigma.value.base() * target.base()),
-        })),
+        limit: Limit::Film(Box::new(asked_for)),
         limit_step: Some(sigma.step),
         rule: CONTACT_RULE.to_owned(),
         says: format!("film ratio lambda >= {}", target.base()),
@@ -192,6 +204,20 @@ fn modulus<R: Recorder>(
     .ok()
 }
 
+/// Where the oil stands before the contact, if somebody measured it.
+fn meniscus<R: Recorder>(
+    cx: &mut Context<'_, '_, R>,
+    part: &Part,
+    contact: &Contact,
+) -> Option<Known<Length>> {
+    let key = wanted(
+        "inlet distance",
+        "m",
+        "distance of the meniscus from the centre of the contact",
+    );
+    cx.maybe(part, key, contact.inlet_distance.as_ref())
+}
+
 type ReducedRadii = (Known<Length>, Option<Known<Length>>);
 
 /// Reduced radii: stated as such, or from the radii of the bodies.
@@ -220,6 +246,10 @@ fn radii<R: Recorder>(
         );
         return Some((rx, ry));
     }
+    let turned = wanted("angle", "theta", "angle between the planes of the bodies");
+    if let Some(angle) = cx.maybe(part, turned, contact.angle.as_ref()) {
+        return skewed_radii(cx, part, contact, angle);
+    }
     let rx = pair(
         cx,
         part,
@@ -237,6 +267,49 @@ fn radii<R: Recorder>(
         "reduced radius across rolling",
     );
     Some((rx, ry))
+}
+
+/// Reduced radii of bodies turned against each other; a body's second radius is flat where it is
+/// not stated, and rolling is taken along the smaller reduced radius.
+fn skewed_radii<R: Recorder>(
+    cx: &mut Context<'_, '_, R>,
+    part: &Part,
+    contact: &Contact,
+    angle: Known<Angle>,
+) -> Option<ReducedRadii> {
+    let mut of = |i: usize, key: &'static str, says: &'static str| match &contact.bodies[i] {
+        Some(stated) => cx.take(part, wanted(key, key, says), Some(stated)),
+        None => {
+            let flat = Length::from_base(f64::INFINITY);
+            Some(cx.r.assume(key, says, flat, "flat, none stated"))
+        }
+    };
+    let a1 = of(0, "r1x", "radius of the first body")?;
+    let a2 = of(2, "r1y", "radius of the first body, in its other plane")?;
+    let b1 = of(1, "r2x", "radius of the second body")?;
+    let b2 = of(3, "r2y", "radius of the second body, in its other plane")?;
+    let made =
+        cx.r.attempt_all(
+            &SKEWED_RADII,
+            (
+                ("r1", a1),
+                ("r1'", a2),
+                ("r2", b1),
+                ("r2'", b2),
+                ("theta", angle),
+            ),
+            |(a1, a2, b1, b2, theta): (Length, Length, Length, Length, Angle)| {
+                let body = |first, second| Principal { first, second };
+                skewed(body(a1, a2), body(b1, b2), theta)
+            },
+        )
+        .ok()?;
+    let x =
+        cx.r.take(&made, "Rx", "smaller reduced radius", |r: Radii| r.x);
+    cx.r.note(|| "rolling is taken along the smaller reduced radius".to_owned());
+    let y =
+        cx.r.take(&made, "Ry", "larger reduced radius", |r: Radii| r.y);
+    Some((x, Some(y)))
 }
 
 fn pair<R: Recorder>(

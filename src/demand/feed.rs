@@ -1,13 +1,18 @@
 //! Chains: how the oil is brought limits the speed, and the ambient names a grade.
 
+use super::End;
 use super::context::Context;
 use super::inputs::Wanted;
 use crate::model::Lubrication;
+use crate::model::facts::PartGroup;
 use crate::model::part::{Component, Part};
 use crate::model::rulebook::component::Component as Window;
 use crate::quantity::convert::to_celsius;
 use crate::quantity::{Measure, ThermodynamicTemperature};
 use crate::trace::Recorder;
+
+/// The component that holds the ways of feeding a chain.
+const METHODS: &str = "chain_methods";
 
 /// Adds what a window says of feeding and of grades by ambient.
 pub fn add<R: Recorder>(
@@ -16,8 +21,14 @@ pub fn add<R: Recorder>(
     component: &Component,
     window: &Window,
 ) {
-    if !window.feeds.is_empty() {
-        methods(cx, part, component, window);
+    let chain = window.group == PartGroup::Chain;
+    let feeds = if window.feeds.is_empty() && chain {
+        cx.rules.components.get(METHODS).cloned()
+    } else {
+        (!window.feeds.is_empty()).then(|| window.clone())
+    };
+    if let Some(feeds) = feeds {
+        methods(cx, part, component, &feeds);
     }
     by_ambient(cx, part, window);
 }
@@ -54,8 +65,17 @@ fn methods<R: Recorder>(
         format!("feeds that serve this speed: {}", serving.join("; ")),
         figure,
     );
-    if cx.lubrication() == Some(Lubrication::Drip) && !serving.iter().any(|s| s.contains("drip")) {
-        cx.inform(part, "drip feed does not serve this speed", figure);
+    let word = match cx.lubrication() {
+        Some(Lubrication::Drip) => "drip",
+        Some(Lubrication::Bath | Lubrication::Splash) => "dip",
+        Some(Lubrication::PressureFed | Lubrication::Circulated) => "spray",
+        _ => return,
+    };
+    if !serving.iter().any(|s| s.contains(word)) {
+        let says = format!("{word} feed does not serve a chain at {v} m/s");
+        cx.inform(part, says.clone(), figure);
+        // no oil mends it, so no oil fails by it; nor can one be said to hold
+        cx.undecided(part, End::HotFloor, &says);
     }
 }
 

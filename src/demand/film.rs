@@ -7,13 +7,15 @@ use crate::oil::thinning::{End as ShearEnd, Kept};
 use crate::quantity::convert::{dynamic, kinematic, number};
 use crate::quantity::{
     AngularVelocity, DynamicViscosity, Force, KinematicViscosity, Length, Measure, Pressure,
-    PressureViscosity, Ratio, ShearRate, ThermodynamicTemperature, Velocity,
+    PressureViscosity, Ratio, ShearRate, TemperatureCoefficient, ThermodynamicTemperature,
+    Velocity,
 };
 use crate::relation::Law;
 use crate::relation::bearing::film::{self as bearing, Duty, Element, at_race};
 use crate::relation::bearing::kinematics::{Inside, Race};
 use crate::relation::film::groups::{Inlet, LineLoad, PointLoad, of_ellipse, of_line};
-use crate::relation::film::{ellipse, inverse, line};
+use crate::relation::film::regime::{self, Regime};
+use crate::relation::film::{ellipse, hertz, inverse, line, starvation, thermal};
 use crate::relation::gear::film::{self as tooth, ToothContact};
 use crate::relation::oil::temporary_shear::contact_rate;
 use crate::relation::oil::viscosity_temperature::Line;
@@ -35,6 +37,8 @@ pub enum FilmContact {
         speed: Velocity,
         /// Load, radii, modulus.
         load: PointLoad,
+        /// Distance of the meniscus from the centre of the contact; flooded where none.
+        meniscus: Option<Length>,
     },
     /// The hardest loaded element of a rolling bearing at one race.
     Race {
@@ -90,6 +94,17 @@ impl FilmContact {
         }
     }
 
+    /// Reduced modulus of the contact; `None` for a wedge, whose surfaces do not give way.
+    pub fn modulus(self) -> Option<Pressure> {
+        match self {
+            Self::Line { load, .. } => Some(load.modulus),
+            Self::Ellipse { load, .. } => Some(load.modulus),
+            Self::Race { modulus, .. } => Some(modulus),
+            Self::Tooth(contact) => Some(contact.modulus),
+            Self::Wedge(_) => None,
+        }
+    }
+
     /// Speed that shears the oil: mean speed of the surfaces that draw it in, sliding speed of a
     /// wedge; `None` for a geometry without one.
     pub fn speed(self) -> Option<Velocity> {
@@ -108,14 +123,18 @@ impl FilmContact {
     /// Inputs outside the relation.
     pub fn film(self, eta: DynamicViscosity, alpha: PressureViscosity) -> Result<Length, Outside> {
         match self {
-            Self::Line { speed, load } => {
-                let groups = of_line(Inlet { eta, alpha, speed }, load)?;
-                Ok(line::minimum_1968(groups, load.radius))
-            }
-            Self::Ellipse { speed, load } => {
-                let groups = of_ellipse(Inlet { eta, alpha, speed }, load)?;
-                let k = ellipse::ellipticity(load.radii)?;
-                Ok(ellipse::minimum(groups, k, load.radii.x))
+            Self::Line { speed, load } => Ok(line_film(Inlet { eta, alpha, speed }, load)?.0),
+            Self::Ellipse {
+                speed,
+                load,
+                meniscus,
+            } => {
+                let inlet = Inlet { eta, alpha, speed };
+                let (film, _) = ellipse_film(inlet, load)?;
+                match meniscus {
+                    Some(distance) => Ok(starved_film(inlet, load, film, distance)?),
+                    None => Ok(film),
+                }
             }
             Self::Race {
                 inside,
@@ -144,6 +163,104 @@ impl FilmContact {
                 why: "its need is told as a viscosity",
             }),
         }
+    }
+}
+
+/// Minimum film of a line contact: the largest of the four regimes.
+fn line_film(inlet: Inlet, load: LineLoad) -> Result<(Length, Regime), Outside> {
+    let groups = of_line(inlet, load)?;
+    let by = regime::line(groups, load.radius)?;
+    Ok(by.with_hard(line::minimum_1968(groups, load.radius)))
+}
+
+/// Minimum film of a point contact: the largest of the four regimes.
+fn ellipse_film(inlet: Inlet, load: PointLoad) -> Result<(Length, Regime), Outside> {
+    let groups = of_ellipse(inlet, load)?;
+    let k = ellipse::ellipticity(load.radii)?;
+    let by = regime::ellipse(groups, load.radii.ratio()?, load.radii.x)?;
+    Ok(by.with_hard(ellipse::minimum(groups, k, load.radii.x)))
+}
+
+/// What is left of a minimum film with the meniscus so far from the centre.
+fn starved_film(
+    inlet: Inlet,
+    load: PointLoad,
+    minimum: Length,
+    distance: Length,
+) -> Result<Length, Outside> {
+    let groups = of_ellipse(inlet, load)?;
+    let k = ellipse::ellipticity(load.radii)?;
+    let central = ellipse::central(groups, k, load.radii.x);
+    let contact = hertz::ellipse(load.load, load.radii, load.modulus)?;
+    let flooded = starvation::Films { central, minimum };
+    let needed = starvation::flooded_distance(flooded, load.radii.x, contact.a_x)?;
+    let m = number(distance.base() / contact.a_x.base());
+    Ok(starvation::starved(flooded, needed, m)?.minimum)
+}
+
+impl FilmContact {
+    /// The regime that shapes the film; `None` for contacts that are always worked out by the
+    /// formula of their standard.
+    pub fn regime(self, eta: DynamicViscosity, alpha: PressureViscosity) -> Option<Regime> {
+        match self {
+            Self::Line { speed, load } => line_film(Inlet { eta, alpha, speed }, load).ok(),
+            Self::Ellipse { speed, load, .. } => {
+                ellipse_film(Inlet { eta, alpha, speed }, load).ok()
+            }
+            Self::Race { .. } | Self::Tooth(_) | Self::Wedge(_) => None,
+        }
+        .map(|(_, regime)| regime)
+    }
+
+    /// Thermal loading parameter of the inlet; `None` for contacts whose standard leaves heating
+    /// out.
+    pub fn heating(self, eta: DynamicViscosity, beta: TemperatureCoefficient) -> Option<Ratio> {
+        let (Self::Line { speed, .. } | Self::Ellipse { speed, .. }) = self else {
+            return None;
+        };
+        thermal::parameter(beta, eta, speed, thermal::usual_conductivity()).ok()
+    }
+
+    /// Whether speed, load and size make a film at all, whatever the oil.
+    ///
+    /// # Errors
+    /// What is not above zero.
+    pub fn film_at_all(self) -> Result<Length, Outside> {
+        self.film(
+            DynamicViscosity::from_base(0.02),
+            PressureViscosity::from_base(2e-8),
+        )
+    }
+
+    /// Largest pressure of the contact.
+    pub fn pressure(self) -> Option<Pressure> {
+        match self {
+            Self::Line { load, .. } => hertz::line(load.load, load.radius, load.modulus)
+                .ok()
+                .map(|c| c.max_pressure),
+            Self::Ellipse { load, .. } => hertz::ellipse(load.load, load.radii, load.modulus)
+                .ok()
+                .map(|c| c.max_pressure),
+            Self::Race { .. } | Self::Tooth(_) | Self::Wedge(_) => None,
+        }
+    }
+
+    /// Film at a viscosity, thinned by the heating of the inlet after Murch and Wilson, who keep
+    /// it rising with viscosity everywhere.
+    ///
+    /// # Errors
+    /// Inputs outside the relation.
+    pub fn film_heated(
+        self,
+        eta: DynamicViscosity,
+        alpha: PressureViscosity,
+        beta: TemperatureCoefficient,
+    ) -> Result<Length, Outside> {
+        let film = self.film(eta, alpha)?;
+        Ok(match self.heating(eta, beta) {
+            Some(l) => thermal::thinned(film, thermal::murch_wilson(l)),
+            None => film,
+        })
     }
 }
 
@@ -201,12 +318,15 @@ impl FilmDemand {
     /// coefficient is not known.
     pub fn film_of(&self, met: InContact<'_>, nu: KinematicViscosity) -> Option<Length> {
         let (oil, at) = (met.oil, met.at);
-        let alpha = oil
-            .pressure
-            .alpha(met.line.parallel_through(nu, at), oil.density, at)?;
+        let line = met.line.parallel_through(nu, at);
+        let alpha = oil.pressure.alpha(line, oil.density, at)?;
         let under_shear = KinematicViscosity::from_base(nu.base() * met.kept.base());
         self.contact
-            .film(dynamic(under_shear, oil.density.at(at)), alpha)
+            .film_heated(
+                dynamic(under_shear, oil.density.at(at)),
+                alpha,
+                line.beta(at),
+            )
             .ok()
     }
 

@@ -99,7 +99,6 @@ struct PitchPoint {
 /// Adds the film of a mesh: information always, a demand where a ratio is asked for.
 pub fn add<R: Recorder>(cx: &mut Context<'_, '_, R>, part: &Part, mesh: &GearMesh) {
     let asked = asked(cx, part, mesh);
-    let bevel = matches!(mesh.kind, Some(GearType::Bevel | GearType::SpiralBevel));
     let Some(point) = pitch_point(cx, part, mesh) else {
         if asked.is_some() {
             cx.undecided(
@@ -110,9 +109,6 @@ pub fn add<R: Recorder>(cx: &mut Context<'_, '_, R>, part: &Part, mesh: &GearMes
         }
         return;
     };
-    if bevel {
-        cx.r.note(|| "bevel: taken at the mid-face as a cylindrical pair".to_owned());
-    }
     let at = tooth_temperature(cx, part);
     for target in [0.7, 1.0] {
         inform(cx, part, &point, target, at);
@@ -264,28 +260,65 @@ fn inform<R: Recorder>(
 /// Density of a mineral oil near running temperature, for figures that go with no particular oil.
 const REFERENCE_DENSITY: f64 = 860.0;
 
-fn pitch_point<R: Recorder>(
+/// Two cylindrical gears in mesh, as far as speed and load go.
+pub(super) struct Pair {
+    pub(super) ratio: Known<Ratio>,
+    pub(super) speed: Known<crate::quantity::AngularVelocity>,
+    pub(super) distance: Known<Length>,
+    pub(super) width: Known<Length>,
+    pub(super) torque: Known<Torque>,
+}
+
+/// The pair as the nameplate gives it.
+fn cylindrical<R: Recorder>(
     cx: &mut Context<'_, '_, R>,
     part: &Part,
     mesh: &GearMesh,
-) -> Option<PitchPoint> {
-    let u = ratio(cx, part, mesh)?;
-    let n = pinion_speed(cx, part, mesh)?;
+) -> Option<Pair> {
+    let ratio = ratio(cx, part, mesh)?;
+    let speed = pinion_speed(cx, part, mesh)?;
     let centre = wanted(
         "centre distance",
         "a",
         "centre distance",
         "drawing or a rule",
     );
-    let a = match cx.maybe(part, centre, mesh.centre_distance.as_ref()) {
+    let distance = match cx.maybe(part, centre, mesh.centre_distance.as_ref()) {
         Some(a) => a,
-        None => distance(cx, part, mesh, u)?,
+        None => distance(cx, part, mesh, ratio)?,
     };
     let face = wanted("face width", "b", "face width", "drawing or a rule");
-    let b = cx.maybe(part, face, mesh.face_width.as_ref())?;
-    let torque = torque(cx, part, mesh, n)?;
+    let width = cx.maybe(part, face, mesh.face_width.as_ref())?;
+    let torque = torque(cx, part, mesh, speed)?;
+    Some(Pair {
+        ratio,
+        speed,
+        distance,
+        width,
+        torque,
+    })
+}
+
+fn pitch_point<R: Recorder>(
+    cx: &mut Context<'_, '_, R>,
+    part: &Part,
+    mesh: &GearMesh,
+) -> Option<PitchPoint> {
     let beta = helix(cx, part, mesh);
     let an = pressure_angle(cx, part, mesh);
+    let bevel = matches!(mesh.kind, Some(GearType::Bevel | GearType::SpiralBevel));
+    let pair = if bevel {
+        super::gear_bevel::pair(cx, part, mesh, (beta, an))?
+    } else {
+        cylindrical(cx, part, mesh)?
+    };
+    let (u, n, a, b, torque) = (
+        pair.ratio,
+        pair.speed,
+        pair.distance,
+        pair.width,
+        pair.torque,
+    );
     let d1 =
         cx.r.attempt(
             "d1",
@@ -354,7 +387,7 @@ fn distance<R: Recorder>(
     ))
 }
 
-fn torque<R: Recorder>(
+pub(super) fn torque<R: Recorder>(
     cx: &mut Context<'_, '_, R>,
     part: &Part,
     mesh: &GearMesh,

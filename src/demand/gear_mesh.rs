@@ -19,6 +19,8 @@ use crate::trace::{Known, Recorder};
 
 /// Id of the rule.
 pub const PITCH_LINE_RULE: &str = "gear-pitch-line";
+/// The component of practice whose window a hypoid mesh takes beside it.
+pub const HYPOID: &str = "gear_hypoid_axle";
 
 fn wanted(
     key: &'static str,
@@ -51,14 +53,20 @@ pub fn add<R: Recorder>(cx: &mut Context<'_, '_, R>, part: &Part, mesh: &GearMes
         }
     }
     if mesh.kind == Some(GearType::Hypoid) {
-        cx.inform(
-            part,
-            "hypoid: lengthwise sliding rules; the film of a cylindrical mesh says nothing here",
-            None,
-        );
+        hypoid(cx, part);
         return;
     }
     super::gear_film::add(cx, part, mesh);
+}
+
+/// A hypoid mesh slides along its teeth: the film of a cylindrical mesh says nothing, the window
+/// of hypoid axles stands beside the pitch-line rule, and its cold limit starves the pinion
+/// bearings.
+fn hypoid<R: Recorder>(cx: &mut Context<'_, '_, R>, part: &Part) {
+    let says = "hypoid: sliding along the teeth rules; the film of a cylindrical mesh says \
+                nothing here, the EP level of the oil decides";
+    cx.inform(part, says, None);
+    super::component::by_id(cx, part, HYPOID);
 }
 
 /// Stated, or from pinion speed and pitch diameter.

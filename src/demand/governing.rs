@@ -8,7 +8,9 @@ use crate::numeric::root::bracketed;
 use crate::oil::density::Density;
 use crate::oil::pressure::PressureLaw;
 use crate::quantity::convert::{celsius, dynamic, kinematic, number};
-use crate::quantity::{KinematicViscosity, MassDensity, Measure, ThermodynamicTemperature};
+use crate::quantity::{
+    Amount, Kind, KinematicViscosity, MassDensity, Measure, ThermodynamicTemperature,
+};
 use crate::relation::Law;
 use crate::relation::oil::base_stock::BaseStock;
 use crate::relation::oil::pressure_viscosity::Family;
@@ -58,7 +60,27 @@ pub fn as_viscosity(demand: &Demand, t: f64) -> Option<KinematicViscosity> {
         Limit::Kinematic(nu) => Some(*nu),
         Limit::Dynamic(eta) => Some(kinematic(*eta, mineral().at(at))),
         Limit::Film(film) => film_on_mineral(film, at),
+        Limit::Tested(limit) => Some(kinematic(limit.eta, mineral().at(at))),
         _ => None,
+    }
+}
+
+/// The figure of a limit; a film's as the viscosity a mineral oil would need.
+pub fn limit_amount(d: &Demand, t: Option<f64>) -> Option<Amount> {
+    match &d.limit {
+        Limit::Kinematic(nu) => Some(nu.amount()),
+        Limit::Dynamic(eta) => Some(eta.amount()),
+        Limit::Tested(limit) => Some(limit.eta.amount()),
+        Limit::Film(_) => as_viscosity(d, t?).map(Measure::amount),
+        Limit::Pour { least, .. } => Some(Amount {
+            kind: Kind::Rise,
+            base: *least,
+        }),
+        Limit::Temperature(t) => Some(Amount {
+            kind: Kind::Temperature,
+            base: *t,
+        }),
+        Limit::OilsOwn | Limit::UseLow => None,
     }
 }
 
@@ -87,7 +109,11 @@ pub fn film_on_mineral(
             return f64::NAN;
         };
         film.contact
-            .film(dynamic(line.nu_at(at), density.at(at)), alpha)
+            .film_heated(
+                dynamic(line.nu_at(at), density.at(at)),
+                alpha,
+                line.beta(at),
+            )
             .map_or(f64::NAN, |h| ln(h.base() / film.wanted.base()))
     };
     let root = bracketed(ln(8e-6), ln(2e-2), excess).ok()?;

@@ -67,6 +67,8 @@ pub struct Scenario {
     pub shares: Vec<f64>,
     /// Inputs taken at another value than the stated or usual one, to see what it would change.
     pub instead: Vec<Instead>,
+    /// Whether stated inputs without a tolerance are listed with the usual one of their kind.
+    pub list_usual: bool,
 }
 
 /// One input at another value.
@@ -108,6 +110,8 @@ pub struct Inputs<'s> {
     pub gaps: Vec<Gap>,
     /// Stated inputs with a tolerance. It judges nothing: the reserve covers it.
     pub tolerances: Vec<Gap>,
+    /// Stated inputs without one, with the usual tolerance of their kind; only where asked for.
+    pub usual: Vec<Gap>,
 }
 
 impl<'s> Inputs<'s> {
@@ -118,6 +122,45 @@ impl<'s> Inputs<'s> {
             axes: Vec::new(),
             gaps: Vec::new(),
             tolerances: Vec::new(),
+            usual: Vec::new(),
+        }
+    }
+
+    /// A value that is stated as such, without tolerance: an end of the ambient, a reading.
+    pub fn read<Q: Measure, R: Recorder>(
+        &mut self,
+        r: &mut R,
+        wanted: Wanted<'_>,
+        given: &Given<Q>,
+    ) -> Known<Q> {
+        self.note_usual(wanted, given);
+        match self.scenario.instead(wanted) {
+            None => r.given(wanted.symbol, wanted.says, given),
+            Some(value) => {
+                let other = given.clone().map(|_: Q| value);
+                r.given(wanted.symbol, wanted.says, &other)
+            }
+        }
+    }
+
+    /// Lists a stated input with the usual tolerance of its kind, where that is asked for.
+    fn note_usual<Q: Measure>(&mut self, wanted: Wanted<'_>, given: &Given<Q>) {
+        if !self.scenario.list_usual {
+            return;
+        }
+        let taken = given.value.amount();
+        let Some(by) = super::usual::tolerance(wanted.key, taken) else {
+            return;
+        };
+        let kind = GapKind::Assumed {
+            taken,
+            lo: Q::from_base(taken.base - by).amount(),
+            hi: Q::from_base(taken.base + by).amount(),
+        };
+        let found = gap(wanted, kind, None, Some(given.origin.clone()));
+        let same = |g: &Gap| g.key == found.key && g.about == found.about;
+        if !self.usual.iter().any(same) {
+            self.usual.push(found);
         }
     }
 
@@ -130,8 +173,9 @@ impl<'s> Inputs<'s> {
     ) -> Option<Known<Q>> {
         match stated {
             Some(Stated::Known(given, tolerance)) => {
-                if let Some(tolerance) = tolerance {
-                    self.tolerate(wanted, given, tolerance);
+                match tolerance {
+                    Some(tolerance) => self.tolerate(wanted, given, tolerance),
+                    None => self.note_usual(wanted, given),
                 }
                 Some(match self.scenario.instead(wanted) {
                     None => r.given(wanted.symbol, wanted.says, given),
@@ -152,7 +196,7 @@ impl<'s> Inputs<'s> {
                 let value = Q::from_base(lo + (hi - lo) * self.scenario.share(axis));
                 let given = Given::new(value, range.written.clone(), range.origin.clone());
                 let known = r.given(wanted.symbol, wanted.says, &given);
-                r.note(|| format!("unknown: {}", range.written));
+                r.note(|| "not known: this is one setting of its range".to_owned());
                 Some(known)
             }
             Some(Stated::Unknown(ask, origin)) => {

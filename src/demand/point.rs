@@ -4,7 +4,7 @@
 use super::context::{Context, forty};
 use super::{AtAmbient, Demand, End, Limit, Standing};
 use crate::model::machine::Limits;
-use crate::model::part::Part;
+use crate::model::part::{Part, PartKind};
 use crate::model::rulebook::start::{Role, StatedBy};
 use crate::model::rulebook::{Confidence, Entry};
 use crate::model::{Lubrication, ViscosityLimit};
@@ -145,6 +145,9 @@ pub fn start<R: Recorder>(cx: &mut Context<'_, '_, R>) {
     if grease(cx.point.lubrication.as_ref().map(|l| l.value)) {
         return;
     }
+    if by_grade(cx) {
+        return;
+    }
     let lubrication = cx.lubrication();
     let at = cx.thermal.start;
     let step = cx.thermal.start_coldest.map(|k| k.step);
@@ -200,11 +203,21 @@ fn grease(lubrication: Option<Lubrication>) -> bool {
     lubrication == Some(Lubrication::Grease)
 }
 
+/// Whether an engine or an axle is served, whose cold end is a matter of W grades: neither what a
+/// pump may take nor the pour point is the criterion (SAE J300, SAE J306).
+fn by_grade<R: Recorder>(cx: &Context<'_, '_, R>) -> bool {
+    let graded = |p: &Part| matches!(p.kind, PartKind::Engine(_) | PartKind::Axle(_));
+    cx.point.parts.iter().any(graded)
+}
+
 /// Start temperature over pour point: the house's, or by lubrication.
 pub fn pour<R: Recorder>(cx: &mut Context<'_, '_, R>) {
     let lubrication = cx.lubrication();
     if grease(lubrication) {
         use_low(cx);
+        return;
+    }
+    if cx.house.pour_margin.is_none() && by_grade(cx) {
         return;
     }
     let (least, preferred, rule, source, confidence, whose) = match &cx.house.pour_margin {

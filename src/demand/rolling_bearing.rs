@@ -26,7 +26,7 @@ pub fn add<R: Recorder>(cx: &mut Context<'_, '_, R>, part: &Part, bearing: &Roll
     let size = size(cx, part, bearing);
     let speed = cx.maybe(part, speed_wanted(), bearing.speed.as_ref());
     match (size, speed) {
-        (Some(dm), Some(n)) => ratio(cx, part, dm, n),
+        (Some(dm), Some(n)) => ratio(cx, part, bearing, (dm, n)),
         _ => minimum(cx, part, bearing),
     }
     if bearing.film_ratio.is_some() {
@@ -85,8 +85,8 @@ fn size<R: Recorder>(
 fn ratio<R: Recorder>(
     cx: &mut Context<'_, '_, R>,
     part: &Part,
-    dm: Known<Length>,
-    n: Known<AngularVelocity>,
+    bearing: &RollingBearing,
+    (dm, n): (Known<Length>, Known<AngularVelocity>),
 ) {
     let nu1 = cx.r.attempt(
         "nu1",
@@ -103,6 +103,8 @@ fn ratio<R: Recorder>(
         );
         return;
     };
+    super::bearing_facts::add(cx, part, bearing, (dm, n), nu1);
+    super::grease_point::add(cx, part, bearing, (dm, n));
     match cx.house_rule(part, KAPPA_RULE) {
         Some((number_of, rule)) => house(cx, part, nu1, number_of, &rule),
         None => floor(cx, part, nu1, KAPPA, None, For::All),

@@ -45,6 +45,24 @@ pub fn point_demands(point: &Point, house: &House, rules: &Rulebook) -> PointDem
     }
 }
 
+/// The same without the calculation written down: for points that are tried many times.
+pub fn untraced(point: &Point, house: &House, rules: &Rulebook) -> PointDemands {
+    let middle = demands(&mut Silent, point, house, rules, &Scenario::middle());
+    let shares = settings(middle.axes.len());
+    let mut all = vec![middle.clone()];
+    all.extend(
+        shares[1..]
+            .iter()
+            .map(|s| demands(&mut Silent, point, house, rules, s)),
+    );
+    PointDemands {
+        trace: Derivation::new(),
+        middle,
+        settings: all,
+        shares,
+    }
+}
+
 /// The settings for so many unknowns, the middle first.
 pub fn settings(axes: usize) -> Vec<Scenario> {
     let mut all = vec![of_shares(vec![0.5; axes])];
@@ -71,7 +89,7 @@ pub fn settings(axes: usize) -> Vec<Scenario> {
 fn of_shares(shares: Vec<f64>) -> Scenario {
     Scenario {
         shares,
-        instead: Vec::new(),
+        ..Scenario::default()
     }
 }
 

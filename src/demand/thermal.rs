@@ -122,8 +122,12 @@ fn ambient<R: Recorder>(
             let end = |value| {
                 crate::source::place::Given::new(value, range.written.clone(), range.origin.clone())
             };
-            let cold = r.given("t_amb_cold", "coldest ambient", &end(range.value.lo));
-            let hot = r.given("t_amb_hot", "hottest ambient", &end(range.value.hi));
+            let ends = (
+                read("coldest ambient", "t_amb_cold", "coldest ambient"),
+                read("hottest ambient", "t_amb_hot", "hottest ambient"),
+            );
+            let cold = inputs.read(r, ends.0, &end(range.value.lo));
+            let hot = inputs.read(r, ends.1, &end(range.value.hi));
             Some((cold, hot))
         }
         Some(other) => {
@@ -153,14 +157,16 @@ fn running<R: Recorder>(
             let held = inputs.take(r, wanted_sump("sump"), Some(stated))?;
             return Some((AtAmbient::held(held.value.base()), Some(held), Some(held)));
         }
-        Some(Sump::Across(range)) => return Some(across(r, ambient, range)),
+        Some(Sump::Across(range)) => return Some(across(r, inputs, ambient, range)),
         Some(Sump::Rise(stated)) => stated_rise(r, inputs, point, stated),
         Some(Sump::Reading {
             sump: read,
             ambient: taken,
         }) => {
-            let read = r.given("t_sump", "sump, as read", read);
-            let taken = r.given("t_amb", "ambient at the reading", taken);
+            let sump = self::read("sump", "t_sump", "sump, as read");
+            let at = self::read("at ambient", "t_amb", "ambient at the reading");
+            let read = inputs.read(r, sump, read);
+            let taken = inputs.read(r, at, taken);
             r.law(
                 "Delta_t",
                 "rise over ambient",
@@ -187,6 +193,17 @@ fn running<R: Recorder>(
     let cold = ambient.map(|(cold, _)| at(r, cold, "running temperature at the coldest ambient"));
     let hot = ambient.map(|(_, hot)| at(r, hot, "running temperature at the hottest ambient"));
     Some((curve, cold, hot))
+}
+
+/// A temperature of the point that is read as such.
+fn read(key: &'static str, symbol: &'static str, says: &'static str) -> Wanted<'static> {
+    Wanted {
+        key,
+        about: None,
+        symbol,
+        says,
+        how: SUMP_HOW,
+    }
 }
 
 fn wanted_sump(key: &'static str) -> Wanted<'static> {
@@ -244,22 +261,25 @@ fn usual_rise(lubrication: Option<Lubrication>) -> (f64, f64) {
 
 fn across<R: Recorder>(
     r: &mut R,
+    inputs: &mut Inputs<'_>,
     ambient: Option<(Temperature, Temperature)>,
     range: &crate::source::place::Given<crate::model::Between<ThermodynamicTemperature>>,
 ) -> (AtAmbient, Option<Temperature>, Option<Temperature>) {
     let end = |value| {
         crate::source::place::Given::new(value, range.written.clone(), range.origin.clone())
     };
-    let t_cold = r.given(
+    let cold = read(
+        "sump, coldest ambient",
         "t_cold",
         "running temperature at the coldest ambient",
-        &end(range.value.lo),
     );
-    let t_hot = r.given(
+    let hot = read(
+        "sump, hottest ambient",
         "t_hot",
         "running temperature at the hottest ambient",
-        &end(range.value.hi),
     );
+    let t_cold = inputs.read(r, cold, &end(range.value.lo));
+    let t_hot = inputs.read(r, hot, &end(range.value.hi));
     let curve = match ambient {
         Some((a, b)) if b.value.base() > a.value.base() => {
             let slope =

@@ -1,6 +1,5 @@
 //! The boundary dimensions of rolling bearings, as read from their rule file.
 
-use crate::model::part::BearingClass;
 use crate::quantity::Length;
 use crate::quantity::convert::mm;
 use crate::relation::bearing::class::BearingKind;
@@ -122,42 +121,6 @@ fn series(
         }
     }
     Ok(all)
-}
-
-impl From<BearingKind> for BearingClass {
-    fn from(kind: BearingKind) -> Self {
-        match kind {
-            BearingKind::DeepGrooveBall => Self::DeepGrooveBall,
-            BearingKind::AngularContactBall | BearingKind::DoubleRowAngularContactBall => {
-                Self::AngularContactBall
-            }
-            BearingKind::SelfAligningBall => Self::SelfAligningBall,
-            BearingKind::CylindricalRoller => Self::CylindricalRoller,
-            BearingKind::NeedleRoller => Self::NeedleRoller,
-            BearingKind::SphericalRoller => Self::SphericalRoller,
-            BearingKind::TaperedRoller => Self::TaperedRoller,
-            BearingKind::ThrustBall => Self::ThrustBall,
-            BearingKind::CylindricalRollerThrust => Self::CylindricalRollerThrust,
-            BearingKind::SphericalRollerThrust => Self::SphericalRollerThrust,
-        }
-    }
-}
-
-impl From<BearingClass> for BearingKind {
-    fn from(class: BearingClass) -> Self {
-        match class {
-            BearingClass::DeepGrooveBall => Self::DeepGrooveBall,
-            BearingClass::AngularContactBall => Self::AngularContactBall,
-            BearingClass::SelfAligningBall => Self::SelfAligningBall,
-            BearingClass::CylindricalRoller => Self::CylindricalRoller,
-            BearingClass::NeedleRoller => Self::NeedleRoller,
-            BearingClass::SphericalRoller => Self::SphericalRoller,
-            BearingClass::TaperedRoller => Self::TaperedRoller,
-            BearingClass::ThrustBall => Self::ThrustBall,
-            BearingClass::CylindricalRollerThrust => Self::CylindricalRollerThrust,
-            BearingClass::SphericalRollerThrust => Self::SphericalRollerThrust,
-        }
-    }
 }
 
 #[cfg(test)]

@@ -120,6 +120,7 @@ pub fn records() -> Vec<&'static Record> {
         &machine::MACHINE,
         &machine::LOSSES,
         &machine::REGREASE,
+        &machine::USED_OIL,
         &part::PART,
         &part::GEAR,
         &part::DRIVE,

@@ -113,14 +113,6 @@ pub fn load<'t>(
     let complete = |kind: FileKind| trees.iter().filter(|t| t.kind == kind).all(|t| t.complete);
     let mut reader = Reader::new(set, problems);
     let oils = oils_of(&mut reader, trees, with.rules);
-    for tree in trees
-        .iter()
-        .filter(|t| t.kind == FileKind::Samples || t.kind == FileKind::Events)
-    {
-        if let Some(root) = &tree.root {
-            samples::check(&mut reader, tree.kind, root);
-        }
-    }
     let known = Known {
         rules: with.rules,
         bearings: with.bearings,
@@ -134,11 +126,45 @@ pub fn load<'t>(
         let overlays: Vec<Overlay<'_>> = overlays.to_vec();
         site::read(&mut reader, &root, oils, &known, &overlays)
     });
+    let site = beside(&mut reader, trees, site, known.complete && known.has_oils);
     match (problems.failed(), site) {
         (Some(reported), _) => Err(reported),
         (None, Some(site)) => Ok(site),
         (None, None) => Err(problems.error(missing(FileKind::Site, "the folder"))),
     }
+}
+
+/// Reads the maps of samples and the events, and puts them into the site where there is one.
+fn beside(
+    reader: &mut Reader<'_>,
+    trees: &[Tree],
+    site: Option<Site>,
+    complete: bool,
+) -> Option<Site> {
+    let (mut maps, mut events) = (Vec::new(), Vec::new());
+    let names = site
+        .as_ref()
+        .filter(|_| complete)
+        .map(|site| samples::Names {
+            points: &site.points,
+            oils: site.oils.iter().map(|o| o.id.as_str()).collect(),
+        });
+    for tree in trees {
+        match (&tree.root, tree.kind) {
+            (Some(root), FileKind::Samples) => {
+                maps.push(samples::map(reader, root, names.as_ref()));
+            }
+            (Some(root), FileKind::Events) => {
+                events.extend(samples::events(reader, root, names.as_ref()));
+            }
+            _ => {}
+        }
+    }
+    drop(names);
+    let mut site = site?;
+    site.samples = maps;
+    site.events = events;
+    Some(site)
 }
 
 /// Reads only the oils.

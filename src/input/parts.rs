@@ -117,12 +117,22 @@ fn part(
     let part_rise = fields.stated(reader, "part rise");
     let limits = super::site::limits(reader, fields);
     let name = fields.text(reader, "name");
+    let kind = kind?;
+    let label = name.unwrap_or_else(|| match &kind {
+        PartKind::Component(c) => scene
+            .known
+            .rules
+            .components
+            .get(&c.id)
+            .map_or_else(|| label.to_owned(), |window| window.name.clone()),
+        _ => label.to_owned(),
+    });
     Some(Part {
-        label: name.unwrap_or_else(|| label.to_owned()),
+        label,
         rule,
         part_rise,
         limits,
-        kind: kind?,
+        kind,
         origin: fields.origin(),
     })
 }

@@ -91,6 +91,8 @@ pub fn read<'t>(
         oils,
         accept,
         expect,
+        samples: Vec::new(),
+        events: Vec::new(),
     }
 }
 

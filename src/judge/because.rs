@@ -1,11 +1,12 @@
 //! One sentence for each reason behind a verdict: limit, amount, end.
 
 use super::margin::Ready;
-use super::prepared::{PreparedOil, PreparedPoint, ReadyLimit, Setting};
+use super::prepared::{PreparedOil, PreparedPoint, ReadyDemand, ReadyLimit, Setting};
 use super::verdict::Verdict;
 use super::weigh::{Judgement, Margin};
+use crate::demand::tested::{GradeTest, TestedLimit};
 use crate::demand::{Demand, End, PointDemands};
-use crate::quantity::convert::celsius;
+use crate::quantity::convert::{celsius, dynamic};
 use crate::quantity::show::{Toward, Units, margin, quantity};
 use crate::quantity::{Amount, Kind, KinematicViscosity, Measure, ThermodynamicTemperature};
 
@@ -155,6 +156,7 @@ impl Teller<'_> {
                         format!("colder than the {low} its thickener is good for"),
                     )
                 }
+                ReadyLimit::Tested(limit) => self.tested(*limit, ready, demand),
                 limit => self.viscosity(limit, ready.end, ready.t, demand)?,
             };
             if worst.as_ref().is_none_or(|(s, _)| size > *s) {
@@ -162,6 +164,30 @@ impl Teller<'_> {
             }
         }
         worst
+    }
+
+    /// A viscosity by a test, in the unit of the test.
+    fn tested(&self, limit: TestedLimit, ready: &ReadyDemand, demand: &Demand) -> (f64, String) {
+        let worst = self.oil.worst(self.ready);
+        let found = super::tested::measure(ready, limit, self.oil, worst);
+        let at = ThermodynamicTemperature::from_base(ready.t);
+        let eta = dynamic(found.nu, self.oil.curves.density.at(at));
+        let hot = limit.test == GradeTest::HighShear;
+        let (less, own, need) = if hot {
+            ("at least", Toward::Down, Toward::Up)
+        } else {
+            ("at most", Toward::Up, Toward::Down)
+        };
+        let text = format!(
+            "{} at {}: {}, {less} {} ({})",
+            limit.test.fault(),
+            self.temperature(ready.t),
+            quantity(eta.amount(), self.units, own),
+            quantity(limit.eta.amount(), self.units, need),
+            demand.says
+        );
+        let ratio = eta.base() / limit.eta.base();
+        (if hot { 1.0 / ratio } else { ratio }, text)
     }
 
     fn viscosity(
@@ -287,11 +313,38 @@ impl Teller<'_> {
         if d.pour_unknown {
             reasons.push("the pour point is not stated and would decide".to_owned());
         }
+        if d.untested {
+            reasons.extend(self.untested());
+        }
         if d.alpha_unknown {
             reasons.push(
                 "a film is asked for and the pressure-viscosity coefficient of this oil is not known"
                     .to_owned(),
             );
+        }
+        reasons
+    }
+
+    /// What must be asked for where only a test decides.
+    fn untested(&self) -> Vec<String> {
+        let worst = self.oil.worst(self.ready);
+        let mut reasons = Vec::new();
+        for ready in &self.ready.settings {
+            for demand in &ready.demands {
+                let ReadyLimit::Tested(limit) = &demand.limit else {
+                    continue;
+                };
+                if super::tested::measure(demand, *limit, self.oil, worst).unknown {
+                    let says = format!(
+                        "{} is not stated, and the line of a polymer-thickened oil says nothing \
+                         of it: ask the supplier",
+                        limit.test.ask()
+                    );
+                    if !reasons.contains(&says) {
+                        reasons.push(says);
+                    }
+                }
+            }
         }
         reasons
     }

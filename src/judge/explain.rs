@@ -2,6 +2,7 @@
 
 mod curve;
 mod film;
+mod tested;
 
 use super::margin::Ready;
 use super::own::{OwnSteps, OwnTemperatures};
@@ -87,6 +88,7 @@ pub fn explain(
         oil: oil.0,
         ready: oil.1,
         worn: variant.worn.as_ref(),
+        variant,
         under_shear: variant.under_shear,
         new: Ready::of(&oil.1.curves.new),
         points: Vec::new(),
@@ -111,6 +113,7 @@ struct Teller<'a> {
     oil: &'a Oil,
     ready: &'a PreparedOil,
     worn: Option<&'a Ready>,
+    variant: &'a Variant,
     under_shear: ShearEnd,
     new: Ready,
     points: Vec<(Which, LineSteps)>,
@@ -142,6 +145,7 @@ impl Teller<'_> {
             }
             ReadyLimit::AtMost(most) => Some(self.ceiling(d, ready, *most, t)),
             ReadyLimit::UseLow => self.use_low(d, ready, t),
+            ReadyLimit::Tested(limit) => self.tested(d, demand, ready, *limit, t),
         }
     }
 

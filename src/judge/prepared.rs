@@ -3,15 +3,17 @@
 use super::band::Band;
 use super::margin::{Jaw, Ready};
 use super::own::{Own, Shift};
+use super::tested::{TestedPoint, points};
 use super::weigh::At;
 use crate::demand::film::FilmDemand;
+use crate::demand::tested::TestedLimit;
 use crate::demand::{AtAmbient, Demand, Demands, End, For, Limit, Standing};
 use crate::model::Oil;
 use crate::model::oil::OilKind;
 use crate::model::rulebook::{Confidence, Rulebook};
 use crate::oil::cold::Used;
 use crate::oil::thinning::End as ShearEnd;
-use crate::oil::{Curves, curves};
+use crate::oil::{Curves, curves, grease_code};
 use crate::quantity::{KinematicViscosity, Measure, ThermodynamicTemperature};
 use crate::relation::oil::viscosity_temperature::Misfit;
 
@@ -37,6 +39,8 @@ pub enum ReadyLimit {
     AtMost(f64),
     /// The low end of a grease's use range.
     UseLow,
+    /// A viscosity that a test measures.
+    Tested(TestedLimit),
 }
 
 /// A demand made ready.
@@ -83,7 +87,7 @@ pub struct Setting {
     pub undecided: bool,
     /// Oil temperature at the coldest start, K, and its logarithm.
     pub start: Option<(f64, f64)>,
-    /// Whether anything limits viscosity at start.
+    /// Whether anything limits viscosity at start that is read from the oil's curve.
     pub has_start_ceiling: bool,
     /// Losses that make each oil run at a temperature of its own.
     pub own: Option<Box<Own>>,
@@ -124,7 +128,10 @@ fn setting(demands: &Demands) -> Setting {
         .filter_map(|(n, d)| ready(n, d, demands))
         .collect();
     Setting {
-        has_start_ceiling: ready.iter().any(|d| d.end == End::StartCeiling && d.judges),
+        has_start_ceiling: ready.iter().any(|d| {
+            let by_line = !matches!(d.limit, ReadyLimit::Tested(_));
+            d.end == End::StartCeiling && d.judges && by_line
+        }),
         demands: ready,
         own: None,
         undecided: !demands.undecided.is_empty(),
@@ -149,6 +156,7 @@ fn ready(number: usize, demand: &Demand, demands: &Demands) -> Option<ReadyDeman
         Limit::OilsOwn => ReadyLimit::OilsOwn,
         Limit::Temperature(most) => ReadyLimit::AtMost(*most),
         Limit::UseLow => ReadyLimit::UseLow,
+        Limit::Tested(limit) => ReadyLimit::Tested(*limit),
     };
     Some(ReadyDemand {
         number: u16::try_from(number).unwrap_or(u16::MAX),
@@ -187,6 +195,8 @@ pub struct PreparedOil {
     pub use_range: Option<(f64, f64)>,
     /// Whether it is a grease.
     pub grease: bool,
+    /// What it says by the tests that grades are made by.
+    pub tested: Vec<TestedPoint>,
     tags: Vec<String>,
     cloud: Option<f64>,
     waxy: bool,
@@ -253,8 +263,9 @@ impl PreparedOil {
             pour,
             pour_stated: stated_pour.is_some(),
             ceiling,
-            use_range: rules.use_range(oil).map(|(lo, hi)| (lo.base(), hi.base())),
+            use_range: grease_code::use_range(oil, rules).map(|(lo, hi)| (lo.base(), hi.base())),
             grease: oil.kind == OilKind::Grease,
+            tested: points(oil),
             tags: tags(oil),
             cloud: oil.cloud_point.as_ref().map(|c| c.value.figure().base()),
             waxy: stock.is_some_and(|s| s.wax_bearing),

@@ -7,6 +7,7 @@ use super::prepared::{PreparedOil, PreparedPoint, ReadyDemand, ReadyLimit, Setti
 use super::straight;
 use super::verdict::Verdict;
 use crate::demand::End;
+use crate::demand::tested::TestedLimit;
 use crate::quantity::{KinematicViscosity, Measure, ThermodynamicTemperature};
 
 /// A margin with the demand it belongs to.
@@ -89,6 +90,8 @@ pub struct Doubts {
     pub pour_close: bool,
     /// Above the base's continuous limit.
     pub above_continuous: bool,
+    /// A viscosity that only a test gives would decide, and the oil does not state it.
+    pub untested: bool,
 }
 
 /// One setting's result.
@@ -212,8 +215,8 @@ fn word(j: &Judgement) -> Verdict {
         return Verdict::Fails;
     }
     let d = j.doubts;
-    if failing > 0 || d.undecided || d.low_confidence || d.wax || d.pour_unknown || d.alpha_unknown
-    {
+    let unknown = d.pour_unknown || d.alpha_unknown || d.untested;
+    if failing > 0 || d.undecided || d.low_confidence || d.wax || unknown {
         return Verdict::Open;
     }
     let smallest = [j.hot, j.cold]
@@ -240,6 +243,7 @@ impl Doubts {
             alpha_unknown: self.alpha_unknown || other.alpha_unknown,
             pour_close: self.pour_close || other.pour_close,
             above_continuous: self.above_continuous || other.above_continuous,
+            untested: self.untested || other.untested,
         }
     }
 }
@@ -405,6 +409,7 @@ fn measure(
             band: Band::at_most(demand.at, *most),
             at: None,
         }),
+        ReadyLimit::Tested(limit) => tested(demand, *limit, oil, variant, doubts),
         ReadyLimit::UseLow => {
             let low = oil.use_range?.0;
             Some(Found {
@@ -415,6 +420,28 @@ fn measure(
             })
         }
     }
+}
+
+/// A viscosity by a test; where only a line that says nothing of it is at hand, the oil is neither
+/// failed nor passed by it.
+fn tested(
+    demand: &ReadyDemand,
+    limit: TestedLimit,
+    oil: &PreparedOil,
+    variant: &Variant,
+    doubts: &mut Doubts,
+) -> Option<Found> {
+    let found = super::tested::measure(demand, limit, oil, variant);
+    doubts.untested |= found.unknown;
+    (!found.unknown).then_some(Found {
+        value: found.value,
+        steps: true,
+        band: found.band,
+        at: (demand.end == End::HotFloor).then_some(At {
+            nu: found.nu.base(),
+            t: demand.t,
+        }),
+    })
 }
 
 /// Floors are judged on the thinner of thin end and worn.

@@ -4,8 +4,8 @@
 use super::part::Part;
 use super::stated::{Between, Stated, ViscosityLimit};
 use crate::quantity::{
-    Area, HeatTransfer, HoursPerYear, Mass, Power, TemperatureInterval, ThermodynamicTemperature,
-    Time, Volume, VolumePerYear,
+    Amount, Area, HeatTransfer, HoursPerYear, Mass, Power, TemperatureInterval,
+    ThermodynamicTemperature, Time, Volume, VolumePerYear,
 };
 use crate::source::Origin;
 use crate::source::place::Given;
@@ -61,12 +61,18 @@ pub struct Point {
     pub limits: Limits,
     /// Temperature the bulk oil must not pass.
     pub oil_limit: Option<Given<ThermodynamicTemperature>>,
+    /// How clean the oil is kept: an ISO 4406 code or a word of ISO 281.
+    pub cleanliness: Option<Given<String>>,
+    /// How dusty the place is: `yes`, `no`, `high`.
+    pub dust: Option<Given<String>>,
     /// Materials, environment and duty that suitability rules ask about.
     pub facts: super::facts::PointFacts,
     /// For the heat balance.
     pub losses: Option<Losses>,
     /// Grease points: how they are regreased today.
     pub regrease: Option<Regrease>,
+    /// Limits of the oil in use stated for the point; they outrank those of practice.
+    pub used_oil: Vec<OwnLimit>,
     /// Codes of warnings silenced for this machine.
     pub allow: Vec<String>,
     /// What the point serves.
@@ -220,6 +226,23 @@ pub struct Regrease {
     pub amount: Option<Stated<Mass>>,
     /// Time between.
     pub interval: Option<Stated<Time>>,
+    /// How the shaft lies: `horizontal`, `sloping`, `vertical`.
+    pub position: Option<Given<String>>,
+    /// How much it vibrates: `low`, `medium`, `high`.
+    pub vibration: Option<Given<String>>,
+}
+
+/// A limit of the oil in use, by the maker or the house.
+#[derive(Clone, Debug, PartialEq)]
+pub struct OwnLimit {
+    /// What it is on.
+    pub on: Vec<super::rulebook::used_oil::Reading>,
+    /// From here on, watch.
+    pub watch: Amount,
+    /// From here on, act.
+    pub act: Amount,
+    /// Whose word it is.
+    pub origin: Origin,
 }
 
 /// What a heat balance needs beyond the parts.

@@ -52,73 +52,7 @@ pub enum PartKind {
 }
 
 /// Class of a rolling bearing, as far as the rules distinguish.
-#[derive(Clone, Copy, Debug, PartialEq, Eq, PartialOrd, Ord)]
-pub enum BearingClass {
-    /// Deep groove ball.
-    DeepGrooveBall,
-    /// Angular contact ball, one or two rows.
-    AngularContactBall,
-    /// Self-aligning ball.
-    SelfAligningBall,
-    /// Cylindrical roller.
-    CylindricalRoller,
-    /// Needle roller.
-    NeedleRoller,
-    /// Spherical roller.
-    SphericalRoller,
-    /// Tapered roller.
-    TaperedRoller,
-    /// Thrust ball.
-    ThrustBall,
-    /// Cylindrical roller thrust.
-    CylindricalRollerThrust,
-    /// Spherical roller thrust.
-    SphericalRollerThrust,
-}
-
-impl BearingClass {
-    /// The words users write for `type`.
-    pub const WRITTEN: &'static [(&'static str, Self)] = &[
-        ("deep groove ball", Self::DeepGrooveBall),
-        ("angular contact ball", Self::AngularContactBall),
-        ("double row angular contact ball", Self::AngularContactBall),
-        ("self-aligning ball", Self::SelfAligningBall),
-        ("cylindrical roller", Self::CylindricalRoller),
-        ("needle roller", Self::NeedleRoller),
-        ("spherical roller", Self::SphericalRoller),
-        ("tapered roller", Self::TaperedRoller),
-        ("thrust ball", Self::ThrustBall),
-        ("cylindrical roller thrust", Self::CylindricalRollerThrust),
-        ("spherical roller thrust", Self::SphericalRollerThrust),
-    ];
-
-    /// The word users write.
-    pub fn word(self) -> &'static str {
-        Self::WRITTEN
-            .iter()
-            .find(|(_, c)| *c == self)
-            .map_or("", |(w, _)| w)
-    }
-
-    /// Whether its rolling elements are balls.
-    pub fn is_ball(self) -> bool {
-        matches!(
-            self,
-            Self::DeepGrooveBall
-                | Self::AngularContactBall
-                | Self::SelfAligningBall
-                | Self::ThrustBall
-        )
-    }
-
-    /// Whether it carries thrust only or mainly.
-    pub fn is_thrust(self) -> bool {
-        matches!(
-            self,
-            Self::ThrustBall | Self::CylindricalRollerThrust | Self::SphericalRollerThrust
-        )
-    }
-}
+pub use crate::relation::bearing::class::BearingKind as BearingClass;
 
 /// Rolling bearing.
 #[derive(Clone, Debug, PartialEq)]
@@ -378,6 +312,10 @@ pub struct Contact {
     pub roughness: [Option<Stated<Length>>; 2],
     /// Film ratio asked for; 1 where none is.
     pub film_ratio: Option<Given<Ratio>>,
+    /// Angle between the principal planes of the bodies; none where they coincide.
+    pub angle: Option<Stated<Angle>>,
+    /// Distance of the oil's meniscus from the centre of the contact; flooded where none.
+    pub inlet_distance: Option<Stated<Length>>,
 }
 
 /// A component with a practice window.

@@ -34,7 +34,8 @@ pub use start::{AirReleaseLimit, HeaterDensity, PourMargin, StartLimit};
 pub use suitability::{Level, SuitabilityRule, WhenUnknown};
 pub use table::{Entry, Table};
 pub use used_oil::{
-    ChangeInterval, Cleanliness, Diagnosis, SamplingInterval, UsedOilLimit, WearSign,
+    ChangeInterval, Cleanliness, Diagnosis, NewOilReading, SamplingInterval, TestScatter,
+    UsedOilLimit, WearSign,
 };
 
 /// Everything the rule files say.
@@ -86,6 +87,10 @@ pub struct Rulebook {
     pub wear: Table<WearSign>,
     /// What the joint movement of the readings means.
     pub diagnosis: Table<Diagnosis>,
+    /// What new oil reads where nobody says.
+    pub new_oil: Table<NewOilReading>,
+    /// How far laboratories differ.
+    pub scatter: Table<TestScatter>,
     /// How often to sample.
     pub sampling: Table<SamplingInterval>,
     /// When to change.
@@ -166,6 +171,8 @@ impl Rulebook {
             cleanliness: "cleanliness",
             wear: "wear",
             diagnosis: "diagnosis",
+            new_oil: "new-oil readings",
+            scatter: "test scatter",
             sampling: "sampling",
             changes: "change intervals",
             thickeners: "thickeners",

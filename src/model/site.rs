@@ -2,6 +2,7 @@
 
 use super::machine::Point;
 use super::oil::Oil;
+use super::sample::{Event, SampleMap};
 use crate::quantity::{Ratio, TemperatureInterval, Time, VgStep};
 use crate::source::Origin;
 use crate::source::place::Given;
@@ -21,6 +22,10 @@ pub struct Site {
     pub accept: Vec<Acceptance>,
     /// Verdicts the user expects.
     pub expect: Vec<Expectation>,
+    /// Maps to laboratory tables.
+    pub samples: Vec<SampleMap>,
+    /// What was done to the oils, in file order.
+    pub events: Vec<Event>,
 }
 
 impl Site {
@@ -115,6 +120,20 @@ pub struct Acceptance {
     pub until: Option<String>,
     /// Why.
     pub because: Option<String>,
+}
+
+impl Acceptance {
+    /// Whether it is in force on a day; ISO dates compare as text.
+    pub fn stands(&self, on: &str) -> bool {
+        let begun = self.on.as_deref().is_none_or(|from| from <= on);
+        let lasts = self.until.as_deref().is_none_or(|until| on <= until);
+        begun && lasts
+    }
+
+    /// Whether it has run out by a day.
+    pub fn expired(&self, on: &str) -> bool {
+        self.until.as_deref().is_some_and(|until| until < on)
+    }
 }
 
 /// A verdict the user expects; `check` fails where the judge says otherwise.

@@ -136,7 +136,7 @@ impl Capped<'_> {
 }
 
 /// Highest VI a base gives by itself; `None` where it gives any.
-pub(super) fn natural_index(base: BaseStock) -> Option<f64> {
+pub fn natural_index(base: BaseStock) -> Option<f64> {
     match base {
         BaseStock::MineralI | BaseStock::MineralII => Some(120.0),
         BaseStock::Naphthenic => Some(120.0),

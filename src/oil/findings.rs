@@ -2,6 +2,7 @@
 
 mod cold;
 mod fluid;
+mod grease;
 mod polymer;
 
 use super::curves::{Curves, implies_polymer, natural_index};
@@ -63,6 +64,7 @@ pub(super) fn findings(
     polymer::findings(&mut found, oil, curves, data, rules);
     cold::findings(&mut found, oil, curves, rules);
     fluid::findings(&mut found, oil, curves);
+    grease::findings(&mut found, oil, rules);
     found
 }
 

@@ -75,6 +75,28 @@ codes! {
     /// A text table in another encoding than stated.
     TableEncoding = "table-encoding" Error,
 
+    // samples
+    /// A column that the map names and the table has not.
+    ColumnMissing = "column-missing" Error,
+    /// Two columns that could be the same.
+    ColumnTwice = "column-twice" Error,
+    /// A table without a row of headings that are understood.
+    ColumnsUnknown = "columns-unknown" Error,
+    /// A row whose cells stand under other headings.
+    RowShifted = "row-shifted" Warning,
+    /// A cell of a laboratory's table that is not understood.
+    CellUnread = "cell-unread" Warning,
+    /// A cell with a formula whose value was never stored.
+    CellWithoutValue = "cell-without-value" Warning,
+    /// A figure that stands for nothing in many tables.
+    CellPlaceholder = "cell-placeholder" Warning,
+    /// A date in another order of figures than stated.
+    DateMixed = "date-mixed" Warning,
+    /// Two bottles of one machine and day.
+    BottleTwice = "bottle-twice" Warning,
+    /// The oil on a label is not in the oil list.
+    LabelUnknown = "label-unknown" Warning,
+
     // the form of the text
     /// Text that the file format does not allow at this place.
     YamlSyntax = "yaml-syntax" Error,
@@ -307,6 +329,10 @@ codes! {
     SetWhich = "set-which" Error,
     /// Nothing matches what was asked.
     NothingToWeigh = "nothing-to-weigh" Error,
+    /// No oil list keeps the terms asked for.
+    ListImpossible = "list-impossible" Error,
+    /// No machine can be decided, so there is nothing to make a list from.
+    NothingDecided = "nothing-decided" Error,
     /// A rule used outside the range it was made for.
     RuleRange = "rule-range" Warning,
     /// An acceptance that has run out.

@@ -15,3 +15,4 @@ pub mod pitch_point;
 pub mod temperature;
 pub mod viscosity_rule;
 pub mod worm;
+pub mod worm_grades;

@@ -22,6 +22,7 @@ pub mod sae_gear;
 pub mod saybolt;
 pub mod shear;
 pub mod shear_in_use;
+pub mod slide;
 pub mod start_limit;
 pub mod tangent;
 pub mod temporary_shear;

@@ -11,6 +11,7 @@ mod barred;
 mod candidates;
 mod case;
 mod caution;
+mod changes;
 mod curves;
 mod digest;
 mod eligible;

@@ -2,10 +2,11 @@
 
 use super::csv::{Cell, Table};
 use super::json::{self, Head, document};
-use crate::demand::{Demand, End, Information, Limit, PointDemands, Standing};
+pub use crate::demand::governing::limit_amount;
+use crate::demand::{Demand, End, Information, PointDemands, Standing};
 use crate::model::Point;
 use crate::quantity::show::{Units, unit_of};
-use crate::quantity::{Amount, Kind, Measure};
+use crate::quantity::{Amount, Kind};
 use serde_json::{Map, Value, json};
 
 /// The word of an end in documents.
@@ -136,24 +137,6 @@ fn limit(demands: &PointDemands, d: &Demand, units: Units) -> Value {
         }
         (Some(a), _) => json::amount(a, units),
         (None, _) => Value::Null,
-    }
-}
-
-/// The figure of a limit; a film's as the viscosity a mineral oil would need.
-pub fn limit_amount(d: &Demand, t: Option<f64>) -> Option<Amount> {
-    match &d.limit {
-        Limit::Kinematic(nu) => Some(nu.amount()),
-        Limit::Dynamic(eta) => Some(eta.amount()),
-        Limit::Film(_) => crate::demand::governing::as_viscosity(d, t?).map(Measure::amount),
-        Limit::Pour { least, .. } => Some(Amount {
-            kind: Kind::Rise,
-            base: *least,
-        }),
-        Limit::Temperature(t) => Some(Amount {
-            kind: Kind::Temperature,
-            base: *t,
-        }),
-        Limit::OilsOwn | Limit::UseLow => None,
     }
 }
 

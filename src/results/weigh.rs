@@ -2,6 +2,7 @@
 
 use super::csv::{Cell, Table};
 use super::json::{self, Head, document};
+use crate::decide::scatter::Scatter;
 use crate::demand::Demand;
 use crate::judge::explain::Explanation;
 use crate::judge::own::Running;
@@ -11,14 +12,27 @@ use crate::quantity::{Kind, Measure};
 use crate::trace::{Derivation, StepId};
 use crate::weighing::{Barred, Candidate, Condition, Scales, Weighed};
 use serde_json::{Map, Value, json};
+use std::collections::BTreeMap;
+
+/// Samplings by point, in the order weighed, and oil; empty unless asked for.
+pub type Scatters = BTreeMap<(usize, usize), Scatter>;
 
 /// A JSON document of all judgements.
-pub fn document_of(scales: &Scales<'_>, weighed: &[Weighed<'_>], head: &Head) -> String {
+pub fn document_of(
+    scales: &Scales<'_>,
+    weighed: &[Weighed<'_>],
+    scatters: &Scatters,
+    head: &Head,
+) -> String {
     let mut top = document("weigh", head);
     let mut list = Vec::new();
-    for w in weighed {
+    for (n, w) in weighed.iter().enumerate() {
         for candidate in &w.candidates {
-            list.push(judgement(scales, w, candidate));
+            let mut value = judgement(scales, w, candidate);
+            if let (Value::Object(m), Some(s)) = (&mut value, scatters.get(&(n, candidate.oil))) {
+                m.insert("scatter".into(), super::scatter::value(s, scales.units));
+            }
+            list.push(value);
         }
         for barred in &w.barred {
             list.push(barred_row(scales, w, barred));
@@ -190,7 +204,7 @@ fn governing(w: &Weighed<'_>, hot: Option<Margin>, cold: Option<Margin>) -> Valu
 }
 
 /// The same as a table.
-pub fn table_of(scales: &Scales<'_>, weighed: &[Weighed<'_>]) -> Table {
+pub fn table_of(scales: &Scales<'_>, weighed: &[Weighed<'_>], scatters: &Scatters) -> Table {
     let units = scales.units;
     let nu_unit = unit_of(Kind::KinematicViscosity, units)
         .name
@@ -219,9 +233,20 @@ pub fn table_of(scales: &Scales<'_>, weighed: &[Weighed<'_>]) -> Table {
         headings: headings.to_vec(),
         rows: Vec::new(),
     };
-    for w in weighed {
+    if !scatters.is_empty() {
+        let more = ["met_share", "met_share_low", "met_share_high"];
+        table.headings.extend(more.map(str::to_owned));
+    }
+    for (n, w) in weighed.iter().enumerate() {
         for c in &w.candidates {
-            table.rows.push(row(scales, w, c, units));
+            let mut row = row(scales, w, c, units);
+            if !scatters.is_empty() {
+                let s = scatters.get(&(n, c.oil));
+                row.push(Cell::number(s.map(Scatter::share)));
+                row.push(Cell::number(s.map(|s| s.interval.0)));
+                row.push(Cell::number(s.map(|s| s.interval.1)));
+            }
+            table.rows.push(row);
         }
         for b in &w.barred {
             let mut row = first_cells(w, &scales.site.oils[b.oil].id, b.in_use, "barred");
@@ -232,6 +257,9 @@ pub fn table_of(scales: &Scales<'_>, weighed: &[Weighed<'_>]) -> Table {
                     .map(|c| format!("{}: {}", c.rule, c.says))
                     .collect();
             row.push(Cell::Text(by.join("; ")));
+            if !scatters.is_empty() {
+                row.extend((0..3).map(|_| Cell::Empty));
+            }
             table.rows.push(row);
         }
     }

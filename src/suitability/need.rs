@@ -156,7 +156,7 @@ impl Want {
             rule: text.rule,
             level,
             reason: format!("{}: {}; {}", text.title, facts[0], text.why),
-            title: text.title,
+            title: text.short,
             facts,
             act: sentence(&text.act),
             source: text.source,

@@ -9,6 +9,8 @@ use crate::model::word::Word;
 pub(super) struct Text {
     pub(super) rule: String,
     pub(super) title: String,
+    /// The same where many oils are told of at once.
+    pub(super) short: String,
     pub(super) why: String,
     pub(super) act: String,
     pub(super) source: Vec<String>,
@@ -41,6 +43,7 @@ impl Asked {
         Text {
             rule: "class-asked".into(),
             title: format!("{} asked for", self.written),
+            short: format!("{} asked for", self.written),
             why: match how {
                 How::Short => "none of it serves".into(),
                 How::Leave if self.numbered => "another grade of the same scale".into(),
@@ -60,6 +63,7 @@ pub(super) fn need_text(need: &Need, oil: &OilCard<'_>, how: How) -> Text {
     Text {
         rule: need.id.clone(),
         title: need.title.clone(),
+        short: format!("not declared to serve as {}", lower_first(&need.title)),
         why: match how {
             How::Short => format!(
                 "none of {} is among them; {}",
@@ -83,6 +87,17 @@ pub(super) fn need_text(need: &Need, oil: &OilCard<'_>, how: How) -> Text {
         source: need.provenance.source.clone(),
         basis: need.provenance.basis,
         confidence: need.provenance.confidence,
+    }
+}
+
+/// As the middle of a sentence has it; what begins with two capitals stays.
+fn lower_first(text: &str) -> String {
+    let mut chars = text.chars();
+    match (chars.next(), chars.next()) {
+        (Some(a), Some(b)) if !b.is_uppercase() => {
+            format!("{}{b}{}", a.to_lowercase(), chars.as_str())
+        }
+        _ => text.to_owned(),
     }
 }
 

@@ -86,8 +86,16 @@ fn part_implies(facts: &mut PointFacts, kind: &PartKind) {
             facts.components.push(c.id.clone());
             return;
         }
-        PartKind::Engine(_) => PartGroup::Engine,
-        PartKind::Axle(_) => PartGroup::Axle,
+        PartKind::Engine(d) | PartKind::Axle(d) => {
+            facts
+                .asks_for
+                .extend(d.level.iter().map(|l| l.value.clone()));
+            if matches!(kind, PartKind::Engine(_)) {
+                PartGroup::Engine
+            } else {
+                PartGroup::Axle
+            }
+        }
     };
     facts.serves.insert(group);
 }

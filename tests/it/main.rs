@@ -2,19 +2,24 @@
 
 mod chance;
 mod checks;
+mod decide;
 mod demo;
 mod determinism;
+mod editor;
 mod exact;
 mod hostile;
+mod intake;
 mod journal_heat;
 mod journal_table;
 mod judging;
 mod layers;
 mod plain;
+mod pool;
 mod problems;
 mod properties_film;
 mod properties_oil;
 mod reader;
+mod readme;
 mod real_oil;
 mod reference_film;
 mod reference_journal;

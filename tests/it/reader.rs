@@ -385,7 +385,9 @@ fn around(record: &'static Record, key: &Key, value: &str) -> (&'static str, Str
         "an area" => format!("file: site 1\nareas: {{ yard: {{ {line} }} }}\n"),
         "a machine" if key.name == "parts" => machine(&line),
         "a machine" => machine(&format!("{line}, {parts}")),
-        "losses" | "regrease" => machine(&format!("{}: {{ {line} }}, {parts}", record.name)),
+        "losses" | "regrease" | "used oil" => {
+            machine(&format!("{}: {{ {line} }}, {parts}", record.name))
+        }
         "the sizes of a rolling bearing" => {
             machine(&format!("parts: [{{ rolling bearing: {{ {line} }} }}]"))
         }
@@ -424,6 +426,7 @@ fn records() -> Vec<&'static Record> {
         &machine::MACHINE,
         &machine::LOSSES,
         &machine::REGREASE,
+        &machine::USED_OIL,
         &part::BEARING_SIZES,
         &oil::OIL,
         &samples::SAMPLES,

@@ -2,7 +2,9 @@
 
 use crate::cli::Format;
 use crate::cli::exit::Exit;
+use crate::cli::load::Loaded;
 use crate::cli::session::Session;
+use crate::results::csv::{Cell, Table};
 use crate::weighing::{Scales, Settings, Weighed};
 use std::fmt::Write as _;
 
@@ -41,12 +43,14 @@ pub fn check(session: &mut Session<'_>) -> Exit {
     if session.wants(Format::Json) {
         let text = loaded.problems_json(&unmet);
         session.result(&text);
+    } else if session.wants(Format::Csv) {
+        session.table(&table(&loaded, &unmet));
     } else {
         let mut text = format!(
-            "{} machines with {} lubrication points, {} oils read\n",
-            loaded.machines(),
-            site.points.len(),
-            site.oils.len()
+            "{} with {}, {} read\n",
+            counted(loaded.machines(), "machine"),
+            counted(site.points.len(), "lubrication point"),
+            counted(site.oils.len(), "oil")
         );
         for line in &unmet {
             let _ = writeln!(text, "not as expected  {line}");
@@ -60,6 +64,37 @@ pub fn check(session: &mut Session<'_>) -> Exit {
     }
 }
 
+/// Problems and unmet expectations as a table.
+fn table(loaded: &Loaded, unmet: &[String]) -> Table {
+    let maybe = |t: &Option<String>| Cell::maybe(t.as_deref());
+    let mut rows: Vec<Vec<Cell>> = loaded
+        .problems
+        .sorted()
+        .into_iter()
+        .map(|p| {
+            vec![
+                Cell::from(p.severity.word()),
+                Cell::from(p.code.as_str()),
+                Cell::from(loaded.place(&p.place).as_str()),
+                maybe(&p.within),
+                Cell::from(p.message.as_str()),
+                maybe(&p.why),
+            ]
+        })
+        .collect();
+    rows.extend(unmet.iter().map(|line| {
+        let mut row = vec![Cell::from("not as expected")];
+        row.extend([Cell::Empty, Cell::Empty, Cell::Empty]);
+        row.extend([Cell::from(line.as_str()), Cell::Empty]);
+        row
+    }));
+    let headings = ["severity", "name", "place", "within", "message", "why"];
+    Table {
+        headings: headings.map(str::to_owned).to_vec(),
+        rows,
+    }
+}
+
 /// The word of one oil on a weighed point.
 pub fn word_of(scales: &Scales<'_>, weighed: &Weighed<'_>, oil: &str) -> String {
     let is = |i: usize| scales.site.oils[i].id == oil;
@@ -70,4 +105,9 @@ pub fn word_of(scales: &Scales<'_>, weighed: &Weighed<'_>, oil: &str) -> String 
         return "barred".to_owned();
     }
     "not weighed".to_owned()
+}
+
+fn counted(n: usize, of: &str) -> String {
+    let s = if n == 1 { "" } else { "s" };
+    format!("{n} {of}{s}")
 }

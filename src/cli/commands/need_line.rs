@@ -3,6 +3,7 @@
 
 use crate::cli::exit::Exit;
 use crate::cli::session::Session;
+use crate::cli::text::hanging;
 use crate::cli::{Format, Need};
 use crate::demand::{Demand, End, PointDemands, point_demands};
 use crate::input::file::FileKind;
@@ -137,11 +138,14 @@ fn answer(session: &Session<'_>, demands: &PointDemands, args: &Need) -> String 
             "needs at least {} at {temperature}\n",
             quantity(limit, units, Toward::Up)
         );
-        let part = demand.part.as_deref().unwrap_or("");
-        let _ = writeln!(out, "  set by   {part}, {}", demand.says);
-        let formula = formula(demands, demand);
-        let colon = if formula.is_empty() { "" } else { ": " };
-        let _ = writeln!(out, "  rule     {}{colon}{formula}", demand.source);
+        let width = session.width();
+        out.push_str(&hanging("  set by   ", &demand.asks(), width));
+        let mut lead = "  rule     ";
+        for line in formulas(demands, demand) {
+            out.push_str(&hanging(lead, &line, width));
+            lead = "           ";
+        }
+        out.push_str(&hanging("  source   ", &demand.source, width));
     }
     if out.is_empty() {
         out.push_str("nothing can be worked out from this\n\n");
@@ -157,7 +161,7 @@ fn answer(session: &Session<'_>, demands: &PointDemands, args: &Need) -> String 
         absent.push("cold start: add --start");
     }
     if !absent.is_empty() {
-        let _ = writeln!(out, "  not in   {}", absent.join(", "));
+        out.push_str(&hanging("  not in   ", &absent.join(", "), session.width()));
     }
     out
 }
@@ -178,10 +182,11 @@ fn governs_without_temperature(demands: &PointDemands, i: usize, demand: &Demand
             .all(|d| figure(d) <= mine)
 }
 
-/// The formula of a limit with its numbers put in.
-fn formula(demands: &PointDemands, demand: &Demand) -> String {
+/// The formulas behind a limit with their numbers put in.
+fn formulas(demands: &PointDemands, demand: &Demand) -> Vec<String> {
+    let fixed = || vec!["a fixed limit".to_owned()];
     let Some(step) = demand.limit_step.and_then(|s| demands.trace.step(s)) else {
-        return "limit of the rule".to_owned();
+        return fixed();
     };
     let mut shown = Vec::new();
     for step in demands.trace.behind(&[step.id]) {
@@ -199,5 +204,8 @@ fn formula(demands: &PointDemands, demand: &Demand) -> String {
             shown.push(format!("{} with {}", law.formula, inputs.join(", ")));
         }
     }
-    shown.join("\n           ")
+    if shown.is_empty() {
+        return fixed();
+    }
+    shown
 }

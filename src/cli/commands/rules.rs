@@ -1,12 +1,13 @@
 //! `rules`: what is in force, entry by entry, and the rules the program works limits out by.
 
 use crate::cli::exit::Exit;
-use crate::cli::load::matches;
+use crate::cli::select::matches;
 use crate::cli::session::Session;
 use crate::cli::text::folded;
 use crate::cli::{Format, Rules};
 use crate::demand::rules::CALCULATED;
 use crate::input::rules::listing::{Listed, listing};
+use crate::results::csv::{Cell, Table};
 use serde_json::json;
 use std::fmt::Write as _;
 
@@ -27,9 +28,18 @@ pub fn rules(session: &mut Session<'_>, args: &Rules) -> Exit {
     if chosen.is_empty() {
         let mut kinds: Vec<&str> = all.iter().map(|r| r.kind.as_str()).collect();
         kinds.dedup();
+        let what = match (&args.kind, args.rules.is_empty()) {
+            (Some(kind), true) => format!("no rules are of the kind '{kind}'"),
+            (Some(kind), false) => {
+                format!(
+                    "no rule of the kind '{kind}' matches {}",
+                    args.rules.join(", ")
+                )
+            }
+            (None, _) => format!("no rule matches {}", args.rules.join(", ")),
+        };
         session.fail(&format!(
-            "no rule matches {}\n  filmwright rules lists them; kinds: {}",
-            args.rules.join(", "),
+            "{what}\n  filmwright rules lists them; kinds: {}",
             kinds.join(", ")
         ));
         return Exit::NoMatch;
@@ -39,6 +49,9 @@ pub fn rules(session: &mut Session<'_>, args: &Rules) -> Exit {
         let mut text = serde_json::to_string_pretty(&json!({ "rules": list })).unwrap_or_default();
         text.push('\n');
         return session.result(&text);
+    }
+    if session.wants(Format::Csv) {
+        return session.table(&table(&chosen));
     }
     let text = if args.rules.is_empty() {
         overview(&chosen, session.width())
@@ -50,6 +63,26 @@ pub fn rules(session: &mut Session<'_>, args: &Rules) -> Exit {
             .join("\n")
     };
     session.result(&text)
+}
+
+/// A row a field, so that entries of different kinds share a table.
+fn table(chosen: &[&Listed]) -> Table {
+    let mut rows = Vec::new();
+    for r in chosen {
+        for (field, says) in &r.says {
+            rows.push(
+                [&r.kind, &r.id, &r.title, field, says, &r.file]
+                    .map(|t| Cell::from(t.as_str()))
+                    .to_vec(),
+            );
+        }
+    }
+    Table {
+        headings: ["kind", "id", "title", "field", "says", "file"]
+            .map(str::to_owned)
+            .to_vec(),
+        rows,
+    }
 }
 
 fn folded_name(name: &str) -> String {

@@ -3,11 +3,13 @@
 use crate::cli::exit::Exit;
 use crate::cli::load::Loaded;
 use crate::cli::session::Session;
+use crate::cli::text_of::scatter::told;
 use crate::cli::text_of::weigh::{Style, one};
 use crate::cli::{AsState, Format, Gate, Weigh};
+use crate::decide::scatter::scatter;
 use crate::judge::Verdict;
 use crate::model::Point;
-use crate::results::weigh::{document_of, table_of};
+use crate::results::weigh::{Scatters, document_of, table_of};
 use crate::weighing::{Scales, Settings, Weighed};
 
 /// Runs `weigh`.
@@ -40,12 +42,19 @@ fn run(
     let wanted = session.oils(&loaded.site, &args.oil)?;
     let scales = Scales::new(&loaded.site, &loaded.rules, settings)
         .map_err(|(oil, misfit)| session.misfit(&oil, &misfit))?;
-    let mut all: Vec<Weighed<'_>> = points
-        .into_iter()
-        .map(|p: &Point| scales.weigh(p))
-        .collect();
-    let tripped = args_gate(session)
-        .is_some_and(|gate| all.iter().any(|w| trips(w, gate, wanted.as_deref())));
+    let of = points.len();
+    let mut all: Vec<Weighed<'_>> = Vec::with_capacity(of);
+    for point in points {
+        let point: &Point = point;
+        all.push(scales.weigh(point));
+        session.progress("weighing points", all.len(), of);
+    }
+    session.host.progress_end();
+    let tripped: Vec<String> = session.shared.gate.map_or_else(Vec::new, |gate| {
+        all.iter()
+            .flat_map(|w| trips(&scales, w, gate, wanted.as_deref()))
+            .collect()
+    });
     for w in &mut all {
         w.candidates
             .retain(|c| wanted.as_ref().is_none_or(|o| o.contains(&c.oil)));
@@ -56,20 +65,60 @@ fn run(
             w.barred.retain(|b| b.in_use);
         }
     }
-    let exit = print(session, &scales, loaded, &all);
-    Ok(if exit == Exit::Done && tripped {
-        Exit::Gate
-    } else {
-        exit
-    })
+    let scatters = match args.scatter {
+        Some(cases) => sampled(session, &scales, &all, cases)?,
+        None => Scatters::new(),
+    };
+    let exit = print(session, &scales, loaded, &all, &scatters);
+    if exit != Exit::Done || tripped.is_empty() {
+        return Ok(exit);
+    }
+    let more = match tripped.len() {
+        n if n > GATE_NAMED => format!(" and {} more", n - GATE_NAMED),
+        _ => String::new(),
+    };
+    let named = &tripped[..tripped.len().min(GATE_NAMED)];
+    session.note(&format!("gate tripped: {}{more}", named.join(", ")));
+    Ok(Exit::Gate)
 }
 
-fn args_gate(session: &Session<'_>) -> Option<Gate> {
-    session.shared.gate
+/// Most cases sampled for one oil.
+const MOST_CASES: u32 = 1_000_000;
+
+/// Samples every oil that is printed.
+fn sampled(
+    session: &mut Session<'_>,
+    scales: &Scales<'_>,
+    all: &[Weighed<'_>],
+    cases: u32,
+) -> Result<Scatters, Exit> {
+    if cases == 0 || cases > MOST_CASES {
+        session.fail(&format!(
+            "--scatter {cases} is not a number of cases from 1 to {MOST_CASES}\n  write  --scatter 1000"
+        ));
+        return Err(Exit::Usage);
+    }
+    let mut found = Scatters::new();
+    for (n, w) in all.iter().enumerate() {
+        for c in &w.candidates {
+            if let Some(s) = scatter(scales, w, c.oil, cases) {
+                found.insert((n, c.oil), s);
+            }
+        }
+    }
+    Ok(found)
 }
 
-/// Whether the oil in use, or one asked for, is at the level or worse.
-fn trips(w: &Weighed<'_>, gate: Gate, wanted: Option<&[usize]>) -> bool {
+/// So many oils are named when a gate is tripped; the table has them all.
+const GATE_NAMED: usize = 5;
+
+/// The oils in use, or those asked for, that are at the level or worse: `GB-1 GEAR-220 fails`.
+fn trips(
+    scales: &Scales<'_>,
+    w: &Weighed<'_>,
+    gate: Gate,
+    wanted: Option<&[usize]>,
+) -> Vec<String> {
     let looked_at = |oil: usize, in_use: bool| wanted.map_or(in_use, |o| o.contains(&oil));
     let level = |v: Verdict| match v {
         Verdict::Holds => None,
@@ -77,11 +126,27 @@ fn trips(w: &Weighed<'_>, gate: Gate, wanted: Option<&[usize]>) -> bool {
         Verdict::Open => Some(Gate::Open),
         Verdict::Fails => Some(Gate::Fails),
     };
-    w.candidates
+    let named = |oil: usize, word: &str| {
+        format!("{} {} {word}", w.point.address(), scales.site.oils[oil].id)
+    };
+    let judged = w
+        .candidates
         .iter()
         .filter(|c| looked_at(c.oil, c.in_use))
-        .any(|c| level(c.judgement.verdict).is_some_and(|l| l >= gate))
-        || w.barred.iter().any(|b| looked_at(b.oil, b.in_use))
+        .filter(|c| level(c.judgement.verdict).is_some_and(|l| l >= gate))
+        .map(|c| {
+            let verdict = c.judgement.verdict.word();
+            let is = if matches!(c.judgement.verdict, Verdict::Fails) {
+                ""
+            } else {
+                "is "
+            };
+            named(c.oil, &format!("{is}{verdict}"))
+        });
+    let barred = w.barred.iter().filter(|b| looked_at(b.oil, b.in_use));
+    judged
+        .chain(barred.map(|b| named(b.oil, "is barred")))
+        .collect()
 }
 
 fn print(
@@ -89,19 +154,28 @@ fn print(
     scales: &Scales<'_>,
     loaded: &Loaded,
     all: &[Weighed<'_>],
+    scatters: &Scatters,
 ) -> Exit {
     match session.shared.format {
         Format::Json => {
             let head = session.head(loaded);
-            session.result(&document_of(scales, all, &head))
+            session.result(&document_of(scales, all, scatters, &head))
         }
-        Format::Csv => session.table(&table_of(scales, all)),
+        Format::Csv => session.table(&table_of(scales, all, scatters)),
         Format::Text => {
             let style = Style {
                 marks: session.marks(),
                 width: session.width(),
             };
-            let text: Vec<String> = all.iter().map(|w| one(scales, w, style)).collect();
+            let text: Vec<String> = all
+                .iter()
+                .enumerate()
+                .map(|(n, w)| {
+                    let mut text = one(scales, w, style);
+                    text.push_str(&told(scales, (n, w), scatters, style.width));
+                    text
+                })
+                .collect();
             suggest(session, scales, all);
             session.result(&text.join("\n"))
         }

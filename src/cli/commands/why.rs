@@ -2,7 +2,7 @@
 
 use crate::cli::exit::Exit;
 use crate::cli::session::Session;
-use crate::cli::text::{folded, verdict};
+use crate::cli::text::{folded, hanging, sentence, verdict};
 use crate::cli::text_of::why::steps;
 use crate::cli::{Format, Why};
 use crate::quantity::show::margin;
@@ -89,15 +89,18 @@ fn told(
         let _ = writeln!(out, "    {shown:<12} {} ({step})", demand.says);
     }
     for (i, condition) in c.conditions.iter().enumerate() {
+        if i == 0 {
+            out.push_str("\n  conditions\n");
+        }
         let text = format!(
-            "condition {}  {}. {}  [{}]",
-            i + 1,
-            condition.says,
-            condition.act,
+            "{} {} [{}]",
+            sentence(&condition.says),
+            sentence(&condition.act),
             condition.rule
         );
-        out.push_str(&folded(&text, "  ", width));
+        out.push_str(&hanging(&format!("    {}  ", i + 1), &text, width));
     }
+    out.push_str("\n  steps\n");
     let mut results: Vec<StepId> = told.margins.iter().map(|e| e.step).collect();
     results.sort();
     out.push_str(&steps(&told.trace, &results, scales.units, width, place));
@@ -108,7 +111,13 @@ fn barred(session: &Session<'_>, scales: &Scales<'_>, w: &Weighed<'_>, b: &Barre
     let id = &scales.site.oils[b.oil].id;
     let mut out = format!("{} with {id}: barred, no verdict\n", w.point.address());
     for by in &b.by {
-        let text = format!("{}. {}  [{}; {}]", by.says, by.act, by.rule, by.source);
+        let text = format!(
+            "{} {} [{}; {}]",
+            sentence(&by.says),
+            sentence(&by.act),
+            by.rule,
+            by.source
+        );
         out.push_str(&folded(&text, "  ", session.width()));
     }
     out

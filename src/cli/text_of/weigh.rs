@@ -184,10 +184,6 @@ fn need_line(scales: &Scales<'_>, demands: &PointDemands, demand: &Demand) -> (S
             )
         )
     });
-    let part = demand
-        .part
-        .as_ref()
-        .map_or(String::new(), |p| format!("{p}: "));
     let source = if demand.says.contains(&demand.source) {
         String::new()
     } else {
@@ -195,7 +191,7 @@ fn need_line(scales: &Scales<'_>, demands: &PointDemands, demand: &Demand) -> (S
     };
     (
         format!("{sign} {limit}{at}"),
-        format!("{part}{}{source}", demand.says),
+        format!("{}{source}", demand.asks()),
     )
 }
 

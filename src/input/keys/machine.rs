@@ -11,6 +11,10 @@ use crate::quantity::Kind;
 pub const EXPOSURE: &[&str] = &["outdoor", "sheltered", "indoor"];
 /// Words for dust besides yes and no.
 pub const DUST: &[&str] = &["high"];
+/// How a shaft lies.
+pub const POSITION: &[&str] = &["horizontal", "sloping", "vertical"];
+/// How much a bearing vibrates.
+pub const VIBRATION: &[&str] = &["low", "medium", "high"];
 /// Ways of lubrication.
 pub const LUBRICATION: &[&str] = &[
     "splash",
@@ -137,8 +141,10 @@ const MACHINE_KEYS: &[Key] = &[
     key("cleanliness", Form::Cleanliness, "gap; plausible by system", "How clean the oil is kept."),
     key("losses", Form::Record(&LOSSES), "for information only", "What a heat balance needs."),
     key("regrease", Form::Record(&REGREASE), "gap", "How a grease point is looked after today."),
+    key("used oil", Form::Record(&USED_OIL), "practice by class (rules, used-oil limits)", "Limits of the oil in use by the maker or the house: watch .. act."),
     key("parts", Form::Parts, "error if empty", "What the fill serves; on the machine or on its points."),
     key("allow", Form::Names, "–", "Names of warnings silenced for this machine."),
+    key("notes", Form::Markdown, "–", "Remarks for its sheet, and what was not understood of its register row."),
     key("register row", Form::Whole, "–", "Row of the register it was taken from."),
 ];
 
@@ -155,6 +161,29 @@ pub static LOSSES: Record = Record {
     ],
 };
 
+/// Limits of the oil in use, watch and act.
+#[rustfmt::skip]
+pub static USED_OIL: Record = Record {
+    name: "used oil",
+    also: &[],
+    must: &[],
+    keys: &[
+        key("viscosity change", levels(&[Kind::Ratio], "8 .. 12 %"), "by class", "How far the viscosity may move from new oil, up or down."),
+        key("acid number rise", levels(&[Kind::AcidNumber], "0.3 .. 0.6 mg KOH/g"), "by class", "How far the acid number may rise over new oil."),
+        key("acid number", levels(&[Kind::AcidNumber], "1.5 .. 2.0 mg KOH/g"), "by class", "How high the acid number may be."),
+        key("water", levels(&[Kind::Ratio], "200 .. 500 ppm"), "by class", "How much water there may be."),
+        key("flash drop", levels(&[Kind::Rise], "15 .. 30 K"), "by class", "How far the flash point may fall from new oil."),
+        key("oxidation rise", levels(&[Kind::Ratio], "10 .. 20"), "by class", "How far oxidation by infrared may rise, absorbance per cm."),
+        key("fuel", levels(&[Kind::Ratio], "2 .. 5 %"), "by class", "How much fuel there may be."),
+        key("soot", levels(&[Kind::Ratio], "2 .. 4 %"), "by class", "How much soot there may be."),
+    ],
+};
+
+/// Two levels, `watch .. act`.
+const fn levels(kinds: &'static [Kind], example: &'static str) -> Form {
+    Form::Quantity(Want::one(kinds).ends(Ends::Range).such_as(example))
+}
+
 /// How a grease point is looked after.
 #[rustfmt::skip]
 pub static REGREASE: Record = Record {
@@ -164,5 +193,7 @@ pub static REGREASE: Record = Record {
     keys: &[
         key("amount", stated(MASS), "gap", "Grease put in each time."),
         key("interval", Form::Quantity(Want::stated(TIME).such_as("2000 h")), "gap", "Time between."),
+        key("position", Form::Word(POSITION), "horizontal", "How the shaft lies."),
+        key("vibration", Form::Word(VIBRATION), "low", "How much the bearing vibrates: low below 5 mm/s, medium to 10 mm/s, high above."),
     ],
 };

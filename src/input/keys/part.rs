@@ -248,6 +248,8 @@ pub static CONTACT: Record = part!("a contact", &[
         key("roughness 1", rough(Roughness::Rq), "gap", "Rq of the first body."),
         key("roughness 2", rough(Roughness::Rq), "gap", "Rq of the second body."),
         key("film ratio", one(NUMBER), "1", "Film ratio asked for."),
+        key("angle", Form::Quantity(Want::stated(ANGLE).such_as("30 deg")), "0 deg", "Angle between the principal planes of the bodies."),
+        key("inlet distance", stated(LENGTH), "flooded", "Distance of the oil's meniscus from the centre of the contact."),
     ]
 );
 

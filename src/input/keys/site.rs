@@ -69,15 +69,15 @@ pub static HOUSE_RULE: Record = Record {
 pub static ACCEPT: Record = Record {
     name: "an acceptance",
     also: &[],
-    must: &["machine", "oil"],
+    must: &["machine", "oil", "by", "on", "until", "because"],
     keys: &[
         key("machine", Form::Name(Refers::Point), "error", "The point accepted."),
         key("oil", Form::Name(Refers::Oil), "error", "The oil accepted on it."),
         key("verdict", Form::Word(&["tight"]), "tight", "The verdict accepted."),
-        key("by", Form::Text, "–", "Who accepts it."),
-        key("on", Form::Day, "–", "From which day."),
-        key("until", Form::Day, "no end", "Until which day."),
-        key("because", Form::Text, "–", "Why it can be lived with."),
+        key("by", Form::Text, "error", "Who accepts it, by name or role."),
+        key("on", Form::Day, "error", "From which day."),
+        key("until", Form::Day, "error", "Until which day; then the machine is open work again."),
+        key("because", Form::Text, "error", "Why it can be lived with."),
     ],
 };
 

@@ -11,7 +11,6 @@ use crate::model::stated::Stated;
 use crate::problem::{Code, Write};
 use crate::quantity::convert::to_mm;
 use crate::quantity::{Length, Measure, Ratio};
-use crate::relation::bearing::class::BearingKind;
 use crate::relation::bearing::designation::{self, Designated};
 use crate::source::Origin;
 use crate::source::place::{Given, Whose};
@@ -164,19 +163,11 @@ fn designated(head: &str, found: &Designated) -> Sizes {
     };
     Sizes {
         designation: Some(head.to_owned()),
-        class: class_of(found.kind),
+        class: Some(found.kind),
         bore: size(found.bore),
         outside: size(found.outside),
         width: None,
     }
-}
-
-/// The class of the model that a kind of the table is.
-fn class_of(kind: BearingKind) -> Option<BearingClass> {
-    BearingClass::WRITTEN
-        .iter()
-        .find(|(word, _)| *word == kind.name())
-        .map(|(_, class)| *class)
 }
 
 fn unknown(
@@ -241,13 +232,6 @@ mod tests {
             ("230/500", false),
         ] {
             assert_eq!(has_fraction(text), want, "{text}");
-        }
-    }
-
-    #[test]
-    fn every_kind_of_the_table_has_a_class() {
-        for (kind, _, _) in &DimensionTable::built_in().series {
-            assert!(class_of(*kind).is_some(), "{}", kind.name());
         }
     }
 }

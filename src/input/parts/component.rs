@@ -36,7 +36,7 @@ pub(super) fn read(
             slot.node.span,
             &slot.within,
         )
-        .why("the components are listed by: filmwright rules --kind parts");
+        .why("the components are listed by: filmwright rules --kind components");
     problem = match meant {
         Some(meant) => problem
             .did_you_mean(meant.clone())
@@ -63,7 +63,7 @@ fn alike(name: &str, text: &str) -> bool {
     let name = name.to_lowercase();
     let text = text.to_lowercase();
     let words = text.split(|c: char| !c.is_alphanumeric());
-    words.filter(|w| w.len() > 4).any(|w| name.contains(w))
+    words.filter(|w| w.len() > 3).any(|w| name.contains(w))
 }
 
 pub(super) fn drive(reader: &mut Reader<'_>, fields: &Fields<'_>) -> Drive {

@@ -18,5 +18,7 @@ pub(super) fn read(reader: &mut Reader<'_>, fields: &Fields<'_>) -> Contact {
         poisson: ["poisson1", "poisson2"].map(|name| fields.stated(reader, name)),
         roughness: ["roughness 1", "roughness 2"].map(|name| fields.stated(reader, name)),
         film_ratio: fields.given(reader, "film ratio"),
+        angle: fields.stated(reader, "angle"),
+        inlet_distance: fields.stated(reader, "inlet distance"),
     }
 }

@@ -48,6 +48,8 @@ const KINDS: &[(&str, Reader)] = &[
     ("cleanliness", reader!(cleanliness, used_oil::cleanliness)),
     ("wear", reader!(wear, used_oil::wear)),
     ("diagnosis", reader!(diagnosis, used_oil::diagnosis)),
+    ("new-oil readings", reader!(new_oil, used_oil::new_oil)),
+    ("test scatter", reader!(scatter, used_oil::scatter)),
     ("sampling", reader!(sampling, used_oil::sampling)),
     ("change intervals", reader!(changes, used_oil::change)),
     ("thickeners", reader!(thickeners, grease::thickener)),

@@ -10,6 +10,7 @@ use crate::model::part::{GearType, PartKind, WheelMaterial};
 use crate::model::stated::{Between, Stated};
 use crate::model::word::Word;
 use crate::quantity::ThermodynamicTemperature;
+use crate::source::place::Given;
 
 /// The facts stated for a point; its parts add theirs with [`from_parts`].
 pub(super) fn of(
@@ -27,7 +28,6 @@ pub(super) fn of(
     let (wet, food_zone) = (yes("wet"), yes("food zone"));
     let (water_protection, fire_zone) = (yes("water protection"), yes("fire zone"));
     fields.word(reader, "shock");
-    cleanliness(reader, fields);
     check_area(reader, fields);
     PointFacts {
         oil_now: sump_now(scene, oil_now),
@@ -58,15 +58,18 @@ pub(super) fn of(
 /// What an area states about its surroundings.
 pub(super) fn check_area(reader: &mut Reader<'_>, fields: &Fields<'_>) {
     fields.word(reader, "exposure");
-    fields.yes_no_or(reader, "dust");
+    dust(reader, fields);
     for name in ["wet", "food zone", "water protection", "fire zone"] {
         fields.yes_no(reader, name);
     }
     hot_surface(reader, fields);
 }
 
-fn cleanliness(reader: &mut Reader<'_>, fields: &Fields<'_>) {
-    crate::input::parts::cleanliness(reader, fields);
+/// How dusty the place is.
+pub(super) fn dust(reader: &mut Reader<'_>, fields: &Fields<'_>) -> Option<Given<String>> {
+    fields
+        .yes_no_or(reader, "dust")
+        .map(|g| g.map(str::to_owned))
 }
 
 fn hot_surface(

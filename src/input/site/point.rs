@@ -27,8 +27,10 @@ const NOT_INPUTS: &[&str] = &[
     "parts",
     "allow",
     "register row",
+    "notes",
     "losses",
     "regrease",
+    "used oil",
 ];
 
 pub(super) fn read<'t>(
@@ -52,6 +54,8 @@ pub(super) fn read<'t>(
     let asks_for = fields.names(reader, "asks for");
     let oil_now = oil_now(reader, &fields, scene);
     let facts = facts::of(reader, &fields, scene, &oil_now);
+    let cleanliness = parts::cleanliness(reader, &fields);
+    let dust = facts::dust(reader, &fields);
     let mut point = Point {
         machine: named.machine.to_owned(),
         point: named.point.map(str::to_owned),
@@ -77,13 +81,16 @@ pub(super) fn read<'t>(
         gravity_return: values::yes(reader, &fields, "gravity return"),
         limits: limits::read(reader, &fields),
         oil_limit: fields.given(reader, "oil limit"),
+        cleanliness,
+        dust,
         facts,
         losses: values::losses(reader, &fields),
         regrease: values::regrease(reader, &fields),
+        used_oil: values::used_oil(reader, &fields),
         allow: values::allow(reader, &fields),
         inputs: inputs(reader, &fields),
         parts: std::mem::take(&mut parts.list),
-        notes: Vec::new(),
+        notes: fields.text(reader, "notes").into_iter().collect(),
         origin: fields.origin(),
     };
     point.inputs.append(&mut parts.inputs);

@@ -2,14 +2,16 @@
 
 use crate::input::fields::{Fields, Slot, quantities};
 use crate::input::keys::Form;
-use crate::input::keys::machine::{LOSSES, REGREASE};
+use crate::input::keys::machine::{LOSSES, REGREASE, USED_OIL};
 use crate::input::points::{Piece, grade_of};
 use crate::input::reader::Reader;
-use crate::model::machine::{Fill, Losses, Lubrication, MakerGrade, Regrease};
+use crate::model::machine::{Fill, Losses, Lubrication, MakerGrade, OwnLimit, Regrease};
+use crate::model::rulebook::used_oil::Reading as On;
 use crate::model::stated::{Between, Stated};
 use crate::problem::{Code, Write, suggest};
 use crate::quantity::{
-    Amount, HoursPerYear, Kind, Mass, Measure, ThermodynamicTemperature, Volume, VolumePerYear,
+    AcidNumber, Amount, HoursPerYear, Kind, Mass, Measure, Ratio, TemperatureInterval,
+    ThermodynamicTemperature, Volume, VolumePerYear,
 };
 use crate::source::place::Given;
 
@@ -162,7 +164,71 @@ pub(super) fn regrease(reader: &mut Reader<'_>, fields: &Fields<'_>) -> Option<R
     Some(Regrease {
         amount: inner.stated(reader, "amount"),
         interval: inner.stated(reader, "interval"),
+        position: inner.word(reader, "position").map(|w| w.map(str::to_owned)),
+        vibration: inner
+            .word(reader, "vibration")
+            .map(|w| w.map(str::to_owned)),
     })
+}
+
+/// Limits of the oil in use: `watch .. act` of each reading.
+pub(super) fn used_oil(reader: &mut Reader<'_>, fields: &Fields<'_>) -> Vec<OwnLimit> {
+    let Some(slot) = fields.get("used oil") else {
+        return Vec::new();
+    };
+    let inner = Fields::read(reader, slot.node, &USED_OIL, &slot.within);
+    let mut found = Vec::new();
+    let viscosity = vec![On::ViscosityChange40, On::ViscosityChange100];
+    own_limit::<Ratio>(reader, &inner, "viscosity change", viscosity, &mut found);
+    own_limit::<AcidNumber>(
+        reader,
+        &inner,
+        "acid number rise",
+        vec![On::AcidNumberRise],
+        &mut found,
+    );
+    own_limit::<AcidNumber>(
+        reader,
+        &inner,
+        "acid number",
+        vec![On::AcidNumber],
+        &mut found,
+    );
+    own_limit::<Ratio>(reader, &inner, "water", vec![On::Water], &mut found);
+    own_limit::<TemperatureInterval>(
+        reader,
+        &inner,
+        "flash drop",
+        vec![On::FlashDrop],
+        &mut found,
+    );
+    own_limit::<Ratio>(
+        reader,
+        &inner,
+        "oxidation rise",
+        vec![On::OxidationRise],
+        &mut found,
+    );
+    own_limit::<Ratio>(reader, &inner, "fuel", vec![On::Fuel], &mut found);
+    own_limit::<Ratio>(reader, &inner, "soot", vec![On::Soot], &mut found);
+    found
+}
+
+fn own_limit<Q: Measure>(
+    reader: &mut Reader<'_>,
+    fields: &Fields<'_>,
+    name: &str,
+    on: Vec<On>,
+    into: &mut Vec<OwnLimit>,
+) {
+    if let Some(Stated::Known(given, _)) = fields.range::<Q>(reader, name) {
+        into.push(OwnLimit {
+            on,
+            watch: given.value.lo.amount(),
+            act: given.value.hi.amount(),
+            origin: given.origin,
+        });
+    }
 }
 
 /// Names of warnings; one that does not exist would silence nothing.

@@ -3,9 +3,10 @@
 use super::condition::Clause;
 use super::provenance::Provenance;
 use super::table::entry;
+use crate::model::sample::Reading as Figure;
 use crate::model::stated::Between;
 use crate::model::word::words;
-use crate::quantity::{Amount, Time};
+use crate::quantity::{Amount, Ratio, Time};
 
 words! {
     /// What a limit is on.
@@ -64,6 +65,8 @@ pub struct Cleanliness {
     pub id: String,
     /// The part.
     pub part: String,
+    /// The same as conditions on the point; empty where no part of the program is this one.
+    pub when: Vec<Clause>,
     /// Below 140 bar, or at any pressure where the others are empty.
     pub low: String,
     /// 140 to 210 bar.
@@ -164,3 +167,41 @@ pub struct ChangeInterval {
     pub provenance: Provenance,
 }
 entry!(ChangeInterval);
+
+/// What new oil of a kind reads, where neither a new-oil sample nor the data sheet says.
+#[derive(Clone, Debug, PartialEq)]
+pub struct NewOilReading {
+    /// Its id.
+    pub id: String,
+    /// The figure.
+    pub reading: Figure,
+    /// Conditions on the oil; of several that apply, the one with the most conditions counts.
+    pub when: Vec<Clause>,
+    /// Usual value.
+    pub value: Amount,
+    /// How far it lies from that: two oils in three.
+    pub spread: Amount,
+    /// Source, basis, confidence.
+    pub provenance: Provenance,
+}
+entry!(NewOilReading);
+
+/// How far two laboratories differ in a figure, 19 times in 20.
+#[derive(Clone, Debug, PartialEq)]
+pub struct TestScatter {
+    /// Its id.
+    pub id: String,
+    /// The figure.
+    pub reading: Figure,
+    /// Elements it holds for as well.
+    pub also: Vec<Figure>,
+    /// The test method.
+    pub test: String,
+    /// Reproducibility as a share of the value.
+    pub share: Option<Ratio>,
+    /// Never less than this.
+    pub least: Option<Amount>,
+    /// Source, basis, confidence.
+    pub provenance: Provenance,
+}
+entry!(TestScatter);

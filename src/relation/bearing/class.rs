@@ -85,6 +85,19 @@ impl BearingKind {
         ("spherical roller thrust", Self::SphericalRollerThrust),
     ];
 
+    /// The words users write for `type`.
+    pub const WRITTEN: &'static [(&'static str, Self)] = Self::NAMES;
+
+    /// The word users write.
+    pub fn word(self) -> &'static str {
+        self.name()
+    }
+
+    /// Whether its rolling elements are balls.
+    pub fn is_ball(self) -> bool {
+        self.class().is_ball()
+    }
+
     /// Its name.
     pub fn name(self) -> &'static str {
         Self::NAMES

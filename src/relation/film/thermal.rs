@@ -48,6 +48,12 @@ pub static GREENWOOD_KAUZLARICH: Law = Law {
     source: "after Greenwood and Kauzlarich 1973 (from memory, not confirmed)",
 };
 
+/// Thermal conductivity of lubricating oils, where nobody measured it (common practice: 0.13 to
+/// 0.15 W/(m·K) for mineral oils).
+pub fn usual_conductivity() -> ThermalConductivity {
+    ThermalConductivity::from_base(0.14)
+}
+
 /// Largest thermal loading parameter for which Gupta's factor is used.
 pub const GUPTA_LARGEST: f64 = 25.0;
 

@@ -25,6 +25,14 @@ pub const AGMA_NUMBERS: &[(&str, u32)] = &[
     ("9", 1500),
 ];
 
+/// AGMA numbers of open-gear compounds and what they are at 100 °C before any diluent, mm²/s
+/// (public reprints of AGMA 9005).
+pub const AGMA_OPEN: &[(&str, f64, f64)] = &[
+    ("13", 190.0, 220.0),
+    ("14R", 428.5, 857.0),
+    ("15R", 857.0, 1714.0),
+];
+
 /// How sure we are of a cell recalled from memory.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
 pub enum Sureness {

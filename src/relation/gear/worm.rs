@@ -3,7 +3,7 @@
 //! Sources: textbook mechanics (Jindal, *Machine Design*, ch. 28); friction curve of AGMA 6034 and
 //! viscosity guide from memory.
 
-use crate::numeric::math::{cos, exp, pow, tan};
+use crate::numeric::math::{atan, cos, exp, pow, tan};
 use crate::quantity::convert::mm2_s;
 use crate::quantity::{
     Angle, AngularVelocity, Area, HeatTransfer, KinematicViscosity, Length, Measure, Power, Ratio,
@@ -19,6 +19,33 @@ pub static SLIDING: Law = Law {
     formula: "v_g = pi d1 n1 / cos(gamma)",
     range: "at the mean diameter of the worm",
     source: "Jindal, Machine Design, ch. 28",
+};
+
+/// Usual diameter of a worm.
+pub static USUAL_DIAMETER: Law = Law {
+    name: "worm-usual-diameter",
+    title: "Usual mean diameter of a worm by centre distance",
+    formula: "d1 = a^0.875 / 2.2; between a^0.875 / 3.0 and a^0.875 / 1.7",
+    range: "in inches; where nobody knows the worm itself",
+    source: "AGMA 6022 (from memory)",
+};
+
+/// Lead angle.
+pub static LEAD: Law = Law {
+    name: "worm-lead-angle",
+    title: "Lead angle of a worm from centre distance and ratio",
+    formula: "tan(gamma) = (2 a - d1) / (u d1)",
+    range: "shafts at right angles; mean diameter of the worm",
+    source: "geometry: z2 m = 2 a - d1, z1 m = d1 tan(gamma)",
+};
+
+/// Power lost in the mesh.
+pub static LOSS: Law = Law {
+    name: "worm-loss",
+    title: "Power lost in a worm mesh",
+    formula: "P_V = P (1 - eta)",
+    range: "worm driving; tooth friction only",
+    source: "definition of efficiency",
 };
 
 /// Coefficient of friction.
@@ -70,6 +97,43 @@ pub fn sliding_speed(
     let omega = positive("the speed", speed)?;
     let gamma = lead(lead_angle)?;
     Ok(Velocity::from_base(d / 2.0 * omega / cos(gamma)))
+}
+
+/// Usual mean diameter: the middle, and the ends of what is usual.
+///
+/// # Errors
+/// A centre distance that is not above zero.
+pub fn usual_diameter(centre_distance: Length) -> Result<(Length, Length, Length), Outside> {
+    let inches = positive("the centre distance", centre_distance)? / 0.0254;
+    let over = |k: f64| Length::from_base(0.0254 * pow(inches, 0.875) / k);
+    Ok((over(2.2), over(3.0), over(1.7)))
+}
+
+/// Lead angle of a worm.
+///
+/// # Errors
+/// A length or ratio that is not above zero, or a worm too thick for the centre distance.
+pub fn lead_angle(
+    centre_distance: Length,
+    worm_diameter: Length,
+    ratio: Ratio,
+) -> Result<Angle, Outside> {
+    let a = positive("the centre distance", centre_distance)?;
+    let d = positive("the worm diameter", worm_diameter)?;
+    let u = positive("the ratio", ratio)?;
+    let wheel = 2.0 * a - d;
+    if wheel <= 0.0 {
+        return Err(Outside::NoAnswer {
+            what: "the lead angle",
+            why: "the worm is thicker than twice the centre distance",
+        });
+    }
+    Ok(Angle::from_base(atan(wheel / (u * d))))
+}
+
+/// Power lost in the mesh.
+pub fn loss(power: Power, efficiency: Ratio) -> Power {
+    Power::from_base(power.base() * (1.0 - efficiency.base()))
 }
 
 fn lead(angle: Angle) -> Result<f64, Outside> {
@@ -141,4 +205,27 @@ pub fn housing_rise(
     Ok(TemperatureInterval::from_base(
         p * (1.0 - efficiency.base()) / (k * a),
     ))
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use crate::quantity::convert::{mm, number, to_mm};
+
+    /// A worm of 80 mm, 200 mm centre distance, ratio 40: the wheel is 320 mm, so the lead is
+    /// 8 mm on 80 mm of diameter, and tan(gamma) = 0.1. By hand.
+    #[test]
+    fn the_lead_follows_from_the_wheel() {
+        let gamma = lead_angle(mm(200.0), mm(80.0), number(40.0)).expect("a worm");
+        assert!((tan(gamma.base()) - 0.1).abs() < 1e-12);
+        assert!(lead_angle(mm(40.0), mm(80.0), number(40.0)).is_err());
+    }
+
+    /// 4 inches between the shafts: 4^0.875 = 3.3636 inches over 2.2, 38.83 mm. By hand.
+    #[test]
+    fn the_usual_worm() {
+        let (d, lo, hi) = usual_diameter(mm(101.6)).expect("a distance");
+        assert!((to_mm(d) - 38.834).abs() < 0.01, "{}", to_mm(d));
+        assert!(lo < d && d < hi);
+    }
 }

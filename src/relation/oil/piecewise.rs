@@ -43,6 +43,22 @@ impl Pieces {
         Ok(Self { points, lines })
     }
 
+    /// Every line changed alike, each between the same temperatures.
+    ///
+    /// # Errors
+    /// What the change returned.
+    pub fn each_line(&self, f: impl Fn(Line) -> Result<Line, Misfit>) -> Result<Self, Misfit> {
+        let lines: Vec<Line> = self.lines.iter().map(|l| f(*l)).collect::<Result<_, _>>()?;
+        let points = self.points.iter().enumerate().map(|(i, p)| {
+            let line = lines[i.min(lines.len() - 1)];
+            Point::new(p.at, line.nu_at(p.at))
+        });
+        Ok(Self {
+            points: points.collect(),
+            lines,
+        })
+    }
+
     /// The line that serves at a temperature.
     pub fn line_at(&self, at: ThermodynamicTemperature) -> Line {
         let inner = &self.points[1..self.points.len() - 1];
@@ -119,6 +135,17 @@ impl Curve {
             Self::Line(_) => Ok(Self::Line(Line::fit(&moved, Weights::PerCent)?)),
             Self::Pieces(_) => Ok(Self::Pieces(Pieces::through(&moved)?)),
         }
+    }
+
+    /// Every line changed alike.
+    ///
+    /// # Errors
+    /// What the change returned.
+    pub fn each_line(&self, f: impl Fn(Line) -> Result<Line, Misfit>) -> Result<Self, Misfit> {
+        Ok(match self {
+            Self::Line(line) => Self::Line(f(*line)?),
+            Self::Pieces(pieces) => Self::Pieces(pieces.each_line(f)?),
+        })
     }
 
     /// The line that serves at a temperature.

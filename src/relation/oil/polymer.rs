@@ -265,6 +265,12 @@ impl ThickenedOil {
         Ok(Self { left, ..self })
     }
 
+    /// The same polymer in another base oil.
+    #[must_use]
+    pub fn on(self, base: Line) -> Self {
+        Self { base, ..self }
+    }
+
     /// Its base oil.
     pub fn base(&self) -> Line {
         self.base

@@ -130,7 +130,7 @@ fn otherwise(
     let gap = gaps.iter().find(same)?;
     let effect = gap.effect.as_ref()?;
     let id = case.lead.map_or("", |c| case.id(c.oil));
-    let range = effect.range();
+    let range = super::vary::range(effect);
     let margin = if range.is_empty() {
         String::new()
     } else {
@@ -141,6 +141,6 @@ fn otherwise(
     } else {
         format!(". See {}", gap.row.id)
     };
-    let words = effect.words();
+    let words = crate::decide::gaps::effect::words(&effect.verdicts);
     Some(format!("{}: {id} {words}{margin}{see}", gap.row.plausible))
 }

@@ -2,6 +2,7 @@
 
 use super::Run;
 use super::say;
+use crate::decide::accept::accepted;
 use crate::demand::{Demand, takes_grease};
 use crate::judge::explain::{Explained, Explanation};
 use crate::judge::margin::Ready;
@@ -61,17 +62,10 @@ pub(super) fn mark(verdict: Verdict) -> Mark {
     }
 }
 
-/// Whether an acceptance is in force on a day; ISO dates compare as text.
-pub(super) fn stands(acceptance: &Acceptance, on: &str) -> bool {
-    let begun = acceptance.on.as_deref().is_none_or(|from| from <= on);
-    let lasts = acceptance.until.as_deref().is_none_or(|until| on <= until);
-    begun && lasts
-}
-
 impl<'r, 'a> Case<'r, 'a> {
     pub(super) fn new(run: &'r Run<'a>, w: &'r Weighed<'a>, key: String, place: &'r Place) -> Self {
         let now = now(run, w);
-        let accepted = accepted(run, w);
+        let accepted = accepted(run.scales.site, w, &run.head.date);
         let kept = w.in_use().filter(|_| accepted.is_some());
         let proposal = kept.or_else(|| w.proposed());
         let lead = proposal.or_else(|| w.candidates.first());
@@ -201,14 +195,7 @@ pub(super) fn compared(demand: &Demand) -> bool {
 
 /// What a demand asks and of what: `gear mesh low-speed stage: …`. A component's window names it.
 pub(super) fn asks(demand: &Demand) -> String {
-    match &demand.part {
-        Some(part)
-            if !part.starts_with("component ") && !demand.says.starts_with(part.as_str()) =>
-        {
-            say::set(&format!("{part}: {}", demand.says))
-        }
-        _ => say::set(&demand.says),
-    }
+    say::set(&demand.asks())
 }
 
 fn now<'r>(run: &Run<'_>, w: &'r Weighed<'_>) -> Now<'r> {
@@ -228,18 +215,4 @@ fn now<'r>(run: &Run<'_>, w: &'r Weighed<'_>) -> Now<'r> {
             }
         }
     }
-}
-
-/// The acceptance in force for the oil in use, where it is tight.
-fn accepted<'a>(run: &Run<'a>, w: &Weighed<'_>) -> Option<&'a Acceptance> {
-    let c = w.in_use()?;
-    if c.judgement.verdict != Verdict::Tight {
-        return None;
-    }
-    let id = &run.scales.site.oils[c.oil].id;
-    let address = w.point.address();
-    run.scales.site.accept.iter().find(|a| {
-        let here = a.machine.value == address || a.machine.value == w.point.machine;
-        here && a.oil.value == *id && stands(a, &run.head.date)
-    })
 }

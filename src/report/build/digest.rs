@@ -7,7 +7,7 @@ use super::next::next;
 use super::say;
 use super::sign;
 use super::state::{self, Pressing, State};
-use super::vary::smallest;
+use crate::decide::gaps::effect::smallest;
 use crate::judge::Verdict;
 use crate::judge::weigh::Margin;
 use crate::quantity::{Measure, Volume};

@@ -3,29 +3,16 @@
 use super::case::Case;
 use super::eligible::{Numbers, shortened};
 use super::say;
-use super::vary::{Effect, effect, smallest};
+use super::vary::range;
+pub(super) use crate::decide::gaps::Weight;
+use crate::decide::gaps::effect::{Effect, smallest, words};
+use crate::decide::gaps::{self as decide, Missing, Waits};
 use crate::demand::{Gap, GapKind};
-use crate::judge::Verdict;
 use crate::quantity::Amount;
 use crate::quantity::show::Toward;
 use crate::report::draw::gap_bars::GapBar;
 use crate::report::model::{GapRow, Gaps, Phrase};
 use crate::report::names::Href;
-
-/// What a gap would decide, the most telling first.
-#[derive(Clone, Copy, Debug, PartialEq, Eq, PartialOrd, Ord)]
-pub(super) enum Weight {
-    /// Which oil.
-    Oil,
-    /// A verdict, or whether there is one at all.
-    Verdict,
-    /// A condition.
-    Condition,
-    /// The margin by more than the reserve.
-    Margin,
-    /// Nothing.
-    Nothing,
-}
 
 /// One gap with its weight and effect.
 #[derive(Clone, Debug)]
@@ -41,22 +28,14 @@ pub(super) struct Found {
 
 /// The gaps of a point, the most telling first; their numbers go on from `last` on the sheet.
 pub(super) fn found(case: &Case<'_, '_>, numbers: &Numbers, last: &mut u32) -> Vec<Found> {
-    let middle = &case.w.demands.middle;
-    let mut all: Vec<Found> = middle
-        .axes
-        .iter()
-        .chain(&middle.gaps)
-        .filter(|g| g.kind != GapKind::Fact)
-        .map(|g| of_input(case, g))
+    let scales = case.run.scales;
+    let mut all: Vec<Found> = decide::found(scales, case.w, case.lead)
+        .into_iter()
+        .map(|found| match &found.missing {
+            Missing::Input(gap) => of_input(case, gap, &found),
+            Missing::Fact { says, oils, .. } => of_fact(case, numbers, says, oils),
+        })
         .collect();
-    all.extend(facts(case, numbers));
-    all.sort_by(|a, b| {
-        let moves = |f: &Found| f.effect.as_ref().map_or(0.0, Effect::moves);
-        a.weight
-            .cmp(&b.weight)
-            .then_with(|| moves(b).total_cmp(&moves(a)))
-            .then_with(|| a.row.missing.cmp(&b.row.missing))
-    });
     for gap in all.iter_mut().filter(|g| g.weight != Weight::Nothing) {
         *last += 1;
         gap.row.id = format!("G-{last}");
@@ -122,11 +101,11 @@ fn missing(case: &Case<'_, '_>, gap: &Gap) -> String {
     )
 }
 
-fn of_input(case: &Case<'_, '_>, gap: &Gap) -> Found {
-    let effect = case.lead.and_then(|c| effect(case, gap, c.oil));
-    let (weight, decides) = match (&effect, &gap.kind) {
-        (Some(e), _) => decided(case, e),
-        (None, _) => without_range(case, gap),
+fn of_input(case: &Case<'_, '_>, gap: &Gap, found: &decide::Found) -> Found {
+    let (effect, weight) = (found.effect.clone(), found.weight);
+    let decides = match &effect {
+        Some(e) => decided(case, e, weight),
+        None => without_range(found.waits),
     };
     let bar = effect
         .as_ref()
@@ -148,7 +127,7 @@ fn of_input(case: &Case<'_, '_>, gap: &Gap) -> Found {
             missing: missing(case, gap),
             plausible: plausible(case, gap),
             bar,
-            range: effect.as_ref().map(Effect::range).unwrap_or_default(),
+            range: effect.as_ref().map(range).unwrap_or_default(),
             decides,
             ask: gap.ask.clone().unwrap_or_else(|| gap.how.to_owned()),
         },
@@ -189,103 +168,74 @@ fn plausible(case: &Case<'_, '_>, gap: &Gap) -> String {
     }
 }
 
-fn decided(case: &Case<'_, '_>, e: &Effect) -> (Weight, Phrase) {
+fn decided(case: &Case<'_, '_>, e: &Effect, weight: Weight) -> Phrase {
     let id = case.lead.map_or("", |c| case.id(c.oil));
-    if e.picks() {
-        let names: Vec<&str> = e
-            .proposed
-            .iter()
-            .map(|o| o.map_or("none", |o| case.id(o)))
-            .collect();
-        let says = Phrase::new().strong("which oil: ").and(names.join(" or "));
-        return (Weight::Oil, says);
+    match weight {
+        Weight::Oil => {
+            let names: Vec<&str> = e
+                .proposed
+                .iter()
+                .map(|o| o.map_or("none", |o| case.id(o)))
+                .collect();
+            Phrase::new().strong("which oil: ").and(names.join(" or "))
+        }
+        Weight::Verdict => match case.w.in_use() {
+            Some(now) if e.verdicts.len() < 2 => Phrase::new()
+                .strong(case.id(now.oil))
+                .and(format!(": {}", words(&e.in_use))),
+            _ => Phrase::new()
+                .strong(id)
+                .and(format!(": {}", words(&e.verdicts))),
+        },
+        _ => {
+            let words = format!("nothing: {id} is {} either way", words(&e.verdicts));
+            let words = words
+                .replace(" is holds", " holds")
+                .replace(" is fails", " fails");
+            if weight == Weight::Margin {
+                return Phrase::new().and(format!(
+                    "{words}; the margin moves by more than the reserve"
+                ));
+            }
+            words.into()
+        }
     }
-    if e.turns() {
-        let says = Phrase::new().strong(id).and(format!(": {}", e.words()));
-        return (Weight::Verdict, says);
-    }
-    let reserve = case.run.scales.reserve;
-    let words = format!("nothing: {id} is {} either way", e.words());
-    let words = words
-        .replace(" is holds", " holds")
-        .replace(" is fails", " fails");
-    if e.moves() > reserve {
-        let says = Phrase::new().and(format!(
-            "{words}; the margin moves by more than the reserve"
-        ));
-        return (Weight::Margin, says);
-    }
-    (Weight::Nothing, words.into())
 }
 
 /// An input without a range: it leaves the verdict open where a limit needs it.
-fn without_range(case: &Case<'_, '_>, gap: &Gap) -> (Weight, Phrase) {
-    let open = case
-        .lead
-        .is_none_or(|c| c.judgement.verdict == Verdict::Open);
-    let waits = case
-        .w
-        .demands
-        .middle
-        .undecided
-        .iter()
-        .any(|u| gap.about.is_none() || u.part == gap.about);
-    if waits && open {
-        (
-            Weight::Verdict,
-            Phrase::new().strong("whether there is a verdict at all"),
-        )
-    } else if waits {
-        (
-            Weight::Margin,
-            "a further limit, not worked out without it".into(),
-        )
-    } else {
-        (
-            Weight::Nothing,
-            "nothing: a figure beside the limits".into(),
-        )
+fn without_range(waits: Option<Waits>) -> Phrase {
+    match waits {
+        Some(Waits::Verdict) => Phrase::new().strong("whether there is a verdict at all"),
+        Some(Waits::Limit) => "a further limit, not worked out without it".into(),
+        Some(Waits::Nothing) | None => "nothing: a figure beside the limits".into(),
     }
 }
 
-/// Facts nobody stated that a suitability rule asks for, each once, with the oils it is about.
-fn facts(case: &Case<'_, '_>, numbers: &Numbers) -> Vec<Found> {
-    let mut seen: Vec<(String, Vec<&str>)> = Vec::new();
-    for c in &case.w.candidates {
-        for fact in &c.facts_missing {
-            let id = case.id(c.oil);
-            match seen.iter_mut().find(|(f, _)| f == fact) {
-                Some((_, oils)) => oils.push(id),
-                None => seen.push((fact.clone(), vec![id])),
-            }
+/// A fact nobody stated that a suitability rule asks for, with the oils it is about.
+fn of_fact(case: &Case<'_, '_>, numbers: &Numbers, fact: &str, oils: &[usize]) -> Found {
+    let oils: Vec<&str> = oils.iter().map(|o| case.id(*o)).collect();
+    let asking = numbers.asking(fact);
+    let decides = match asking {
+        Some((number, _)) => {
+            let id = case.place.id(&case.local(&format!("condition-{number}")));
+            Phrase::new().link(format!("condition {number}"), Href::here(&id))
         }
+        None => "a condition".into(),
+    };
+    Found {
+        weight: Weight::Condition,
+        row: GapRow {
+            id: String::new(),
+            machine: None,
+            missing: fact.to_owned(),
+            plausible: format!("not stated; for {}", shortened(&oils)),
+            bar: None,
+            range: String::new(),
+            decides,
+            ask: asking.map_or(String::new(), |(_, c)| say::set(&c.act)),
+        },
+        effect: None,
+        input: (String::new(), None),
+        taken: None,
     }
-    seen.into_iter()
-        .map(|(fact, oils)| {
-            let asking = numbers.asking(&fact);
-            let decides = match asking {
-                Some((number, _)) => {
-                    let id = case.place.id(&case.local(&format!("condition-{number}")));
-                    Phrase::new().link(format!("condition {number}"), Href::here(&id))
-                }
-                None => "a condition".into(),
-            };
-            Found {
-                weight: Weight::Condition,
-                row: GapRow {
-                    id: String::new(),
-                    machine: None,
-                    missing: fact,
-                    plausible: format!("not stated; for {}", shortened(&oils)),
-                    bar: None,
-                    range: String::new(),
-                    decides,
-                    ask: asking.map_or(String::new(), |(_, c)| say::set(&c.act)),
-                },
-                effect: None,
-                input: (String::new(), None),
-                taken: None,
-            }
-        })
-        .collect()
 }

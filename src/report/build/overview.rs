@@ -275,7 +275,7 @@ fn accepted(report: &Report<'_>) -> Vec<AcceptRow> {
                 by: known(&a.by),
                 dates: format!("{} to {}", known(&a.on), known(&a.until)),
                 because: a.because.clone().unwrap_or_default(),
-                stands: super::case::stands(a, &run.head.date),
+                stands: a.stands(&run.head.date),
             }
         })
         .collect()

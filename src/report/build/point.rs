@@ -5,6 +5,7 @@ use super::assumed::assumptions;
 use super::barred::barred;
 use super::candidates::{bars, candidates};
 use super::case::{Case, mark};
+use super::changes::changes;
 use super::curves::curves;
 use super::eligible::{Numbers, conditions};
 use super::gaps::{self, Found};
@@ -34,12 +35,12 @@ pub(super) struct Told {
     pub(super) laws: BTreeMap<&'static str, &'static Law>,
 }
 
-/// Tells a point; `named` where its machine has several.
+/// Tells a point; `named` where its machine has several, with how many machines the report has.
 pub(super) fn point(
     case: &Case<'_, '_>,
     numbers: &mut Numbers,
     counts: &mut Counts,
-    named: bool,
+    (named, machines): (bool, usize),
 ) -> Told {
     let conditions = conditions(case, numbers);
     let tolerances = Tolerances::new(case);
@@ -67,7 +68,7 @@ pub(super) fn point(
         barred: barred(case),
         conditions,
         ambient: ambient(case),
-        changes: None,
+        changes: changes(case, &found, machines),
         change_over: Vec::new(),
         steps_command: command(case, &address),
         steps: steps.list,

@@ -3,9 +3,11 @@
 use crate::input::rules::fields::Fields;
 use crate::model::rulebook::used_oil::{Movement, Reading, Side};
 use crate::model::rulebook::{
-    ChangeInterval, Cleanliness, Diagnosis, SamplingInterval, UsedOilLimit, WearSign,
+    ChangeInterval, Cleanliness, Diagnosis, NewOilReading, SamplingInterval, TestScatter,
+    UsedOilLimit, WearSign,
 };
-use crate::quantity::Kind;
+use crate::model::sample::Reading as Figure;
+use crate::quantity::{Amount, Kind};
 
 /// The kind a limit of a reading is written in.
 fn kind_of(reading: Reading) -> Kind {
@@ -71,6 +73,7 @@ pub(super) fn cleanliness(f: &Fields<'_>) -> Cleanliness {
     Cleanliness {
         id: f.text("id"),
         part: f.text("part"),
+        when: f.clauses("when"),
         low: code(f, "target").unwrap_or_else(|| f.text("target")),
         middle: code(f, "140 to 210 bar"),
         high: code(f, "above 210 bar"),
@@ -143,4 +146,72 @@ pub(super) fn change(f: &Fields<'_>) -> ChangeInterval {
         calendar: f.opt_text("calendar"),
         provenance: f.provenance(),
     }
+}
+
+/// A figure of a laboratory by its key.
+fn figure(f: &Fields<'_>, key: &str, text: &str) -> Figure {
+    Figure::of(text).unwrap_or_else(|| {
+        f.fault(
+            format!("{key}: `{text}` is no figure of a laboratory"),
+            format!("{key}: Zn"),
+        );
+        Figure::Zn
+    })
+}
+
+/// An amount that must be there.
+fn amount(f: &Fields<'_>, key: &'static str, kind: Kind) -> Amount {
+    f.opt_amount(key, kind).unwrap_or_else(|| {
+        f.fault(
+            format!("no {key}"),
+            format!("{key}: {}", kind.spec().example),
+        );
+        Amount { kind, base: 1.0 }
+    })
+}
+
+pub(super) fn new_oil(f: &Fields<'_>) -> NewOilReading {
+    let reading = figure(f, "reading", &f.text("reading"));
+    let spread = if reading.kind() == Kind::Temperature {
+        Kind::Rise
+    } else {
+        reading.kind()
+    };
+    NewOilReading {
+        id: f.text("id"),
+        reading,
+        when: f.clauses("when"),
+        value: amount(f, "value", reading.kind()),
+        spread: amount(f, "spread", spread),
+        provenance: f.provenance(),
+    }
+}
+
+pub(super) fn scatter(f: &Fields<'_>) -> TestScatter {
+    let reading = figure(f, "reading", &f.text("reading"));
+    let least = if reading.kind() == Kind::Temperature {
+        Kind::Rise
+    } else {
+        reading.kind()
+    };
+    let scatter = TestScatter {
+        id: f.text("id"),
+        reading,
+        also: f
+            .texts("also")
+            .iter()
+            .map(|t| figure(f, "also", t))
+            .collect(),
+        test: f.text("test"),
+        share: f.opt("share"),
+        least: f.opt_amount("at least", least),
+        provenance: f.provenance(),
+    };
+    if scatter.share.is_none() && scatter.least.is_none() {
+        f.fault(
+            "neither share nor at least",
+            "share: 25 %, or at least: 3 ppm",
+        );
+    }
+    scatter
 }

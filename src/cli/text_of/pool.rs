@@ -1,0 +1,400 @@
+//! `pool`: the shortest oil list, as text.
+
+use crate::cli::Marks;
+use crate::cli::text::{Column, folded, hanging, table, verdict};
+use crate::decide::pool::case::{Pick, litres_a_year};
+use crate::decide::pool::figures::{Pool, Sums, smallest};
+use crate::decide::pool::step::Step;
+use crate::decide::pool::{Outcome, Solved, Stock};
+use crate::judge::Verdict;
+use crate::quantity::show::{Toward, fixed, margin};
+use crate::results::pool::{Asked, of_stock, replaces, why_undecided};
+use crate::weighing::Scales;
+use std::fmt::Write as _;
+
+/// How the list is printed.
+#[derive(Clone, Copy, Debug)]
+pub struct Style {
+    /// Verdict marks.
+    pub marks: Marks,
+    /// Columns of the terminal.
+    pub width: usize,
+}
+
+/// The answer.
+pub fn text(scales: &Scales<'_>, pool: &Pool<'_, '_>, asked: &Asked<'_>, style: Style) -> String {
+    match &pool.outcome {
+        Outcome::Solved(solved) => solved_text(scales, pool, solved, asked, style),
+        Outcome::Gap {
+            bound,
+            known,
+            nodes,
+        } => gap(*bound, *known, *nodes),
+        Outcome::Impossible(_) => String::new(),
+    }
+}
+
+fn gap(bound: usize, known: usize, nodes: u64) -> String {
+    format!(
+        "not proven: the shortest list has {bound} to {known} oils, a gap of {}\n  {} looked at. To look at more: filmwright pool --nodes {}\n",
+        known - bound,
+        self::nodes(nodes),
+        nodes.max(1).saturating_mul(10)
+    )
+}
+
+fn solved_text(
+    scales: &Scales<'_>,
+    pool: &Pool<'_, '_>,
+    solved: &Solved,
+    asked: &Asked<'_>,
+    style: Style,
+) -> String {
+    let sums = pool.sums(scales.site, &solved.picks, &[]);
+    let told = Told {
+        scales,
+        pool,
+        asked,
+        style,
+    };
+    let mut out = told.dearer(&sums, solved.stocks.len());
+    out.push_str(&told.headline(solved));
+    out.push('\n');
+    out.push_str(&told.oils(solved));
+    out.push('\n');
+    out.push_str(&told.lists(solved, &sums));
+    out.push_str(&told.money(&sums, solved.stocks.len()));
+    out.push_str(&told.margins(&sums));
+    out.push_str(&told.left_out());
+    out.push_str(&told.proof(solved));
+    out
+}
+
+struct Told<'t, 'w, 'a> {
+    scales: &'t Scales<'a>,
+    pool: &'t Pool<'w, 'a>,
+    asked: &'t Asked<'t>,
+    style: Style,
+}
+
+impl Told<'_, '_, '_> {
+    fn id(&self, oil: usize) -> &str {
+        &self.scales.site.oils[oil].id
+    }
+
+    fn currency(&self) -> String {
+        let unit = self.scales.site.frame.currency.as_deref();
+        unit.map_or(String::new(), |u| format!(" {u}"))
+    }
+
+    /// A sum of money a year.
+    fn sum(&self, x: f64) -> String {
+        format!("{}{}", fixed(x, 0, Toward::Nearest), self.currency())
+    }
+
+    /// Cost with what holding the oils costs, where that is given.
+    fn with_holding(&self, cost: f64, oils: usize) -> f64 {
+        cost + self.asked.site_price.unwrap_or(0.0) * oils as f64
+    }
+
+    /// `17 lubrication points`, `14 machines`.
+    fn count(&self, n: usize) -> String {
+        let several = self.pool.weighed.iter().any(|w| w.point.point.is_some());
+        let (one, many) = if several {
+            ("lubrication point", "lubrication points")
+        } else {
+            ("machine", "machines")
+        };
+        format!("{n} {}", if n == 1 { one } else { many })
+    }
+
+    /// A list that costs more says so before anything else.
+    fn dearer(&self, sums: &Sums, oils: usize) -> String {
+        let cost = self.with_holding(sums.cost, oils);
+        let today = self.with_holding(sums.cost_today, self.pool.today.len());
+        if cost <= today {
+            return String::new();
+        }
+        format!(
+            "this list costs more: {} a year where today's oils cost {}\n",
+            self.sum(cost),
+            self.sum(today)
+        )
+    }
+
+    fn headline(&self, solved: &Solved) -> String {
+        let n = solved.stocks.len();
+        let oils = if n == 1 { "oil covers" } else { "oils cover" };
+        let twice = repeated(&solved.stocks);
+        let mut text = format!(
+            "{n} {oils} all {} that can be decided ({} in use today)\n",
+            self.count(self.pool.places.len()),
+            self.pool.today.len()
+        );
+        for oil in twice {
+            let _ = writeln!(
+                text,
+                "  {} stands on the list twice: stocks on two sides of a ring fence are never one",
+                self.id(oil)
+            );
+        }
+        text
+    }
+
+    /// The oils with what they serve.
+    fn oils(&self, solved: &Solved) -> String {
+        let fenced = solved.stocks.iter().any(|s| s.fence.stands());
+        let mut columns = vec![
+            Column::text("oil", 0),
+            Column::text("fenced", 0),
+            Column::text("verdict", 0),
+            Column::text("tightest", 4),
+            Column::number("L a year", 3),
+            Column::text("replaces", 2),
+            Column::text("serves", 0),
+        ];
+        let rows = solved.stocks.iter().map(|s| self.row(solved, *s));
+        let mut rows: Vec<Vec<String>> = rows.collect();
+        if !fenced {
+            columns.remove(1);
+            for row in &mut rows {
+                row.remove(1);
+            }
+        }
+        table(&columns, &rows, self.style.width)
+    }
+
+    fn row(&self, solved: &Solved, stock: Stock) -> Vec<String> {
+        let mine: Vec<&Pick> = of_stock(self.pool, &solved.picks, stock).collect();
+        let tight = mine.iter().any(|p| p.offer.tight);
+        let word = if tight {
+            Verdict::Tight
+        } else {
+            Verdict::Holds
+        };
+        let litres = mine
+            .iter()
+            .filter_map(|p| litres_a_year(self.pool.point(p.place)))
+            .fold(0.0, |sum, l| sum + l);
+        let old = replaces(self.scales, self.pool, &mine);
+        let serves: Vec<String> = mine
+            .iter()
+            .map(|p| self.pool.point(p.place).point.address())
+            .collect();
+        let fence = if stock.fence.stands() {
+            stock.fence.words()
+        } else {
+            "-".to_owned()
+        };
+        vec![
+            self.id(stock.oil).to_owned(),
+            fence,
+            if mine.is_empty() {
+                "kept, serves nothing".to_owned()
+            } else {
+                verdict(word, self.style.marks)
+            },
+            self.tightest(&mine),
+            fixed(litres, 0, Toward::Nearest),
+            if old.is_empty() {
+                "-".to_owned()
+            } else {
+                old.join(" ")
+            },
+            serves.join(", "),
+        ]
+    }
+
+    fn tightest(&self, mine: &[&Pick]) -> String {
+        mine.iter()
+            .filter_map(|p| {
+                let c = self.pool.candidate(p.place, p.offer.oil)?;
+                Some((smallest(&c.judgement)?, p.place))
+            })
+            .min_by(|a, b| a.0.total_cmp(&b.0))
+            .map_or_else(
+                || "-".to_owned(),
+                |(m, place)| {
+                    format!(
+                        "{} {}",
+                        margin(m, 1),
+                        self.pool.point(place).point.address()
+                    )
+                },
+            )
+    }
+
+    /// The list, one shorter and one longer, side by side.
+    fn lists(&self, solved: &Solved, sums: &Sums) -> String {
+        let columns = [
+            Column::text("list", 0),
+            Column::number("holds", 0),
+            Column::number("tight", 0),
+            Column::number("without", 0),
+            Column::number("changed", 3),
+            Column::number("L filled", 2),
+            Column::number("cost a year", 5),
+            Column::number("smallest", 4),
+        ];
+        let n = solved.stocks.len();
+        let mut rows = vec![self.list_row(&format!("{n} oils, shortest"), sums, n)];
+        let mut under = Vec::new();
+        for (step, words, n) in [
+            (&self.pool.shorter, "without", n.saturating_sub(1)),
+            (&self.pool.longer, "with", n + 1),
+        ] {
+            let Some(step) = step else {
+                continue;
+            };
+            let sums = self
+                .pool
+                .sums(self.scales.site, &step.picks, &step.unserved);
+            let title = format!("{n} oils, {words} {}", self.id(step.stock.oil));
+            rows.push(self.list_row(&title, &sums, n));
+            under.extend(self.step_says(step, solved));
+        }
+        let mut out = table(&columns, &rows, self.style.width);
+        for line in under {
+            out.push_str(&hanging("  ", &line, self.style.width));
+        }
+        if self.pool.longer.is_none() {
+            out.push_str("  one oil more gains nothing\n");
+        }
+        out
+    }
+
+    fn list_row(&self, title: &str, sums: &Sums, oils: usize) -> Vec<String> {
+        vec![
+            title.to_owned(),
+            sums.words[0].to_string(),
+            sums.words[1].to_string(),
+            sums.words[2].to_string(),
+            sums.changes.to_string(),
+            fixed(sums.filled, 0, Toward::Up),
+            self.sum(self.with_holding(sums.cost, oils)),
+            sums.smallest
+                .map_or_else(|| "-".to_owned(), |(m, _)| margin(m, 2)),
+        ]
+    }
+
+    /// Which points a step leaves without an oil, or lifts from tight.
+    fn step_says(&self, step: &Step, solved: &Solved) -> Option<String> {
+        let id = self.id(step.stock.oil);
+        let address = |place: usize| self.pool.point(place).point.address();
+        if !step.unserved.is_empty() {
+            let lost: Vec<String> = step.unserved.iter().map(|p| address(*p)).collect();
+            return Some(format!("without {id} no oil serves {}", lost.join(", ")));
+        }
+        let tight = |place: usize| {
+            let before = solved.picks.iter().find(|p| p.place == place);
+            before.is_some_and(|p| p.offer.tight)
+        };
+        let gains: Vec<String> = step
+            .picks
+            .iter()
+            .filter(|p| tight(p.place) && !p.offer.tight)
+            .map(|p| address(p.place))
+            .collect();
+        (!gains.is_empty()).then(|| format!("with {id} {} hold instead of tight", gains.join(", ")))
+    }
+
+    fn money(&self, sums: &Sums, oils: usize) -> String {
+        let mut text = format!(
+            "at today's use: today {} a year, this list {}",
+            self.sum(self.with_holding(sums.cost_today, self.pool.today.len())),
+            self.sum(self.with_holding(sums.cost, oils))
+        );
+        if let Some(price) = self.asked.site_price {
+            let _ = write!(
+                text,
+                ", {} a year for each oil held included ({} today, {oils} then)",
+                self.sum(price),
+                self.pool.today.len()
+            );
+        }
+        let _ = write!(
+            text,
+            "; {} L a year",
+            fixed(sums.litres, 0, Toward::Nearest)
+        );
+        if sums.unpriced > 0 {
+            let _ = write!(
+                text,
+                ". Left out of both sums, price or use not stated: {}",
+                self.count(sums.unpriced)
+            );
+        }
+        if sums.changes > 0 {
+            let _ = write!(
+                text,
+                ". To change over: {}, {} L to be filled",
+                self.count(sums.changes),
+                fixed(sums.filled, 0, Toward::Up)
+            );
+        }
+        if sums.fills_unknown > 0 {
+            let _ = write!(text, " ({} not stated)", sums.fills_unknown);
+        }
+        text.push('.');
+        format!("\n{}", folded(&text, "  ", self.style.width))
+    }
+
+    fn margins(&self, sums: &Sums) -> String {
+        let text = format!(
+            "Against the oils of today {} {} margin and {} {}; against the first choice of each point {} VG step are given up in all.",
+            self.count(sums.lose),
+            if sums.lose == 1 { "loses" } else { "lose" },
+            sums.gain,
+            if sums.gain == 1 { "gains" } else { "gain" },
+            fixed(sums.given_up, 1, Toward::Up)
+        );
+        folded(&text, "  ", self.style.width)
+    }
+
+    /// Points without an answer, and why.
+    fn left_out(&self) -> String {
+        let mut out = String::new();
+        if self.pool.undecided.is_empty() {
+            return out;
+        }
+        let _ = writeln!(
+            out,
+            "\n  {} cannot be decided, on no list:",
+            self.count(self.pool.undecided.len())
+        );
+        for i in &self.pool.undecided {
+            let w = &self.pool.weighed[*i];
+            let _ = writeln!(out, "    {}: {}", w.point.address(), why_undecided(w));
+        }
+        out
+    }
+
+    fn proof(&self, solved: &Solved) -> String {
+        let ties = if solved.ties_proven {
+            "Ties: fewest changes from today and conditions they bring, then cost, then name."
+        } else {
+            "Not all lists of this length were compared: the nodes ran out among ties."
+        };
+        let text = format!(
+            "Proven: no list is shorter than {} ({} looked at). {ties} Every pair of the list was weighed again.",
+            solved.bound,
+            nodes(solved.nodes)
+        );
+        format!("\n{}", folded(&text, "  ", self.style.width))
+    }
+}
+
+/// `1 node`, `24 nodes`.
+fn nodes(n: u64) -> String {
+    format!("{n} {}", if n == 1 { "node" } else { "nodes" })
+}
+
+/// Oils that stand on the list more than once.
+fn repeated(stocks: &[Stock]) -> Vec<usize> {
+    let mut oils: Vec<usize> = stocks.iter().map(|s| s.oil).collect();
+    oils.sort_unstable();
+    let twice = oils.windows(2).filter(|w| w[0] == w[1]).map(|w| w[0]);
+    let mut found: Vec<usize> = twice.collect();
+    found.dedup();
+    found
+}

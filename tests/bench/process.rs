@@ -1,0 +1,66 @@
+//! What whole commands cost, from start to exit, beside a process that does nothing.
+//!
+//! `cargo bench --bench process`
+
+#![expect(clippy::print_stdout, reason = "a benchmark prints its figures")]
+
+use std::process::{Command, Stdio};
+use std::time::Instant;
+
+const BIN: &str = env!("CARGO_BIN_EXE_filmwright");
+
+/// Milliseconds of one run: the best of several, which a busy machine lengthens least, and the
+/// median.
+fn times(rounds: usize, command: &mut Command) -> (f64, f64) {
+    let mut all: Vec<f64> = (0..rounds).map(|_| once(command)).collect();
+    all.sort_by(f64::total_cmp);
+    (all[0], all[rounds / 2])
+}
+
+fn once(command: &mut Command) -> f64 {
+    let start = now();
+    let status = command
+        .stdout(Stdio::null())
+        .stderr(Stdio::null())
+        .status()
+        .expect("the command is there");
+    let ms = start.elapsed().as_secs_f64() * 1e3;
+    assert!(
+        status.success(),
+        "{command:?} ended with {status}: its time says nothing"
+    );
+    ms
+}
+
+#[expect(clippy::disallowed_methods, reason = "a benchmark measures time")]
+fn now() -> Instant {
+    Instant::now()
+}
+
+fn main() {
+    let folder = tempfile::tempdir().expect("a folder for the pages");
+    let (empty, usual) = times(101, &mut Command::new("true"));
+    println!("an empty process: {empty:.2} ms at best, {usual:.2} ms usually");
+    println!("command             best, ms   x empty   median, ms   aim");
+    let rows: [(&str, &[&str], usize, &str); 6] = [
+        ("--version", &["--version"], 51, ""),
+        ("need --demo M01", &["need", "--demo", "M01"], 31, ""),
+        ("weigh --demo M01", &["weigh", "--demo", "M01"], 31, "30 ms"),
+        ("weigh --demo", &["weigh", "--demo"], 31, ""),
+        ("oil --demo O-05", &["oil", "--demo", "O-05"], 31, "30 ms"),
+        (
+            "report --demo",
+            &["report", "--demo", "--replace"],
+            11,
+            "1 s",
+        ),
+    ];
+    for (name, args, rounds, aim) in rows {
+        let command = &mut Command::new(BIN);
+        let (best, usual) = times(rounds, command.args(args).current_dir(folder.path()));
+        println!(
+            "{name:<19} {best:>8.1} {:>9.1} {usual:>12.1}   {aim}",
+            best / empty
+        );
+    }
+}

@@ -1,0 +1,138 @@
+//! The first gap really decides: the oil proposed is another at one end of its range, found out by
+//! setting the value and weighing.
+
+use crate::scenario::{filmwright, on};
+use filmwright::cli::exit::Exit;
+use filmwright::cli::host::MemoryHost;
+use serde_json::Value;
+
+/// A gearbox with a sump rise as written, and three oils of one slope.
+pub(crate) fn host(rise: &str) -> MemoryHost {
+    let site = format!(
+        "file: site 1\nsite: Test works\nmachines:\n  M1:\n    name: Conveyor drive\n    ambient: -15 .. 35 degC\n    lubrication: splash\n    oil now: B-220\n    sump rise: {rise}\n    start limit: 25000 mm2/s, maker\n    parts:\n      - rolling bearing: 22220\n        speed: 236 r/min\n      - gear mesh: stage\n        pitch-line speed: 6 m/s\n"
+    );
+    let oil = |id: &str, nu40: f64, nu100: f64| {
+        format!(
+            "{id}:\n  kind: gear\n  base: PAO, no polymer\n  classes: [CKC]\n  additives: [EP]\n  sulphur: inactive\n  viscosity: [{nu40} mm2/s at 40 degC, {nu100} mm2/s at 100 degC]\n  pour point: -45 degC\n  density: 860 kg/m3 at 15 degC\n"
+        )
+    };
+    let oils = format!(
+        "file: oils 1\n{}{}{}",
+        oil("A-150", 150.0, 19.5),
+        oil("B-220", 220.0, 26.4),
+        oil("C-320", 320.0, 35.0)
+    );
+    MemoryHost::new()
+        .with("site.yaml", &site)
+        .with("oils.yaml", &oils)
+}
+
+fn proposed(rise: &str) -> Option<String> {
+    let json = on(host(rise), "weigh M1 -f json -q").json();
+    let all = json["judgements"].as_array().expect("a list");
+    let best = all.iter().find(|j| j["verdict"] == "holds")?;
+    best["oil"].as_str().map(str::to_owned)
+}
+
+#[test]
+fn the_first_gap_flips_the_decision_at_one_end() {
+    let rise = "unknown (20 .. 75 K), ask \"plant\"";
+    let json = on(host(rise), "gaps -f json -q").json();
+    let first = &json["gaps"][0];
+    assert_eq!(first["key"], "sump rise", "{json}");
+    assert_eq!(first["decides"], "which oil");
+    let told: Vec<Option<&str>> = first["proposed"]
+        .as_array()
+        .expect("a list")
+        .iter()
+        .map(Value::as_str)
+        .collect();
+    let (low, high) = (proposed("20 K"), proposed("75 K"));
+    assert_ne!(low, high, "the ends propose the same oil");
+    for end in [low, high] {
+        assert!(told.contains(&end.as_deref()), "{end:?} not in {told:?}");
+    }
+}
+
+#[test]
+fn a_gap_that_changes_nothing_says_so() {
+    // 30 to 31 K: every oil keeps its word and the margins hardly move
+    let json = on(host("unknown (30 .. 31 K)"), "gaps -f json -q").json();
+    let gap = json["gaps"]
+        .as_array()
+        .expect("a list")
+        .iter()
+        .find(|g| g["key"] == "sump rise")
+        .expect("listed");
+    assert_eq!(gap["decides"], "nothing", "{gap}");
+}
+
+#[test]
+fn ranks_never_rise_down_the_list() {
+    let order = [
+        "which oil",
+        "a verdict",
+        "a condition",
+        "a margin",
+        "nothing",
+    ];
+    let json = filmwright("gaps --demo -f json -q").json();
+    let ranks: Vec<usize> = json["gaps"]
+        .as_array()
+        .expect("a list")
+        .iter()
+        .map(|g| {
+            let word = g["decides"].as_str().expect("a word");
+            order.iter().position(|o| *o == word).expect("known")
+        })
+        .collect();
+    assert!(ranks.len() > 20, "{} gaps", ranks.len());
+    assert!(ranks.windows(2).all(|w| w[0] <= w[1]), "{ranks:?}");
+}
+
+#[test]
+fn the_letter_asks_in_sentences() {
+    let rise = "unknown (20 .. 75 K), ask \"plant, thermometer in the sump\"";
+    let ran = on(host(rise), "gaps --letter 2 -q");
+    assert_eq!(ran.exit, Exit::Done);
+    let text = ran.out.split_whitespace().collect::<Vec<_>>().join(" ");
+    assert!(
+        text.contains("1. M1, Conveyor drive. What is the rise of the oil over the ambient"),
+        "{text}"
+    );
+    assert!(
+        text.contains("anything from 20 K to 75 K is taken as possible"),
+        "{text}"
+    );
+    assert!(
+        text.contains("To ask: plant, thermometer in the sump."),
+        "{text}"
+    );
+    assert!(text.contains("It decides which oil:"), "{text}");
+    assert!(!text.contains(" 3. "), "{text}");
+    let json = on(host(rise), "gaps --letter -f json -q").json();
+    assert_eq!(json["questions"][0]["number"], 1);
+    let none = on(host(rise), "gaps --letter 0");
+    assert_eq!(none.exit, Exit::Usage);
+    let csv = on(host(rise), "gaps -f csv -q").out;
+    assert!(csv.starts_with("number,machine,point,part,missing,how_known,low,high,unit,decides"));
+}
+
+#[test]
+fn an_unknown_without_a_range_waits_for_the_verdict() {
+    let json = on(host("40 K"), "gaps -f json -q").json();
+    assert!(
+        json["gaps"]
+            .as_array()
+            .is_some_and(|g| g.iter().all(|g| g["key"] != "sump rise"))
+    );
+    let site = "file: site 1\nmachines:\n  M1:\n    ambient: -5 .. 35 degC\n    sump rise: 30 K\n    lubrication: splash\n    parts:\n      - rolling bearing: 22220\n        speed: unknown\n";
+    let oils = "file: oils 1\nX:\n  kind: gear\n  base: PAO\n  viscosity: [220 mm2/s at 40 degC, 26.4 mm2/s at 100 degC]\n";
+    let host = MemoryHost::new()
+        .with("site.yaml", site)
+        .with("oils.yaml", oils);
+    let json = on(host, "gaps -f json -q").json();
+    let first = &json["gaps"][0];
+    assert_eq!(first["key"], "speed", "{json}");
+    assert_eq!(first["decides"], "a verdict");
+}
