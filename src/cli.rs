@@ -235,6 +235,12 @@ pub enum Command {
         filmwright report --xlsx annex.xlsx"
     )]
     Report(Report),
+    /// Label sheets for the fill points, as plain text
+    #[command(
+        after_help = "Examples:\n  filmwright labels --demo\n  filmwright labels 'CV-*' -o labels.txt\n\
+        See also: report, weigh"
+    )]
+    Labels(Labels),
     /// The rules built in: formula, range of use, source, defaults
     #[command(after_help = "Examples:\n  filmwright rules\n  filmwright rules gear_parallel_bevel")]
     Rules(Rules),
@@ -542,6 +548,13 @@ pub struct Report {
     /// Write the results as a workbook as well
     #[arg(long, value_name = "FILE")]
     pub xlsx: Option<String>,
+}
+
+/// `labels`
+#[derive(Debug, Args)]
+pub struct Labels {
+    /// Machines, by tag or pattern; all where none is given
+    pub tags: Vec<String>,
 }
 
 /// Paper sizes.

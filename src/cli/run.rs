@@ -56,6 +56,7 @@ fn command(session: &mut Session<'_>, command: Command) -> Exit {
         Command::Pool(args) => commands::pool(session, &args),
         Command::Audit(args) => commands::audit(session, &args),
         Command::Report(args) => commands::report(session, &args),
+        Command::Labels(args) => commands::labels(session, &args),
         Command::Rules(args) => commands::rules(session, &args),
         Command::Work(args) => commands::work(session, &args),
         Command::Schema(args) => commands::schema(session, &args),

@@ -3,6 +3,7 @@
 pub mod audit;
 pub mod gaps;
 pub mod intake;
+pub mod labels;
 pub mod mend;
 pub mod need;
 pub mod oil;

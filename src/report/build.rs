@@ -12,16 +12,21 @@ mod candidates;
 mod case;
 mod caution;
 mod changes;
+mod checked;
 mod curves;
 mod digest;
 mod eligible;
 mod first;
 mod gaps;
 mod inputs;
+mod labels;
 mod machine;
 mod machines;
 mod needs;
 mod next;
+mod oil_says;
+mod oil_steps;
+mod oils;
 mod overview;
 mod plan;
 mod point;
@@ -35,6 +40,7 @@ mod site_gaps;
 mod state;
 mod steps;
 mod store;
+mod uses;
 mod vary;
 
 use crate::demand::End;
@@ -42,8 +48,8 @@ use crate::judge::{PreparedOil, Verdict};
 use crate::model::Point;
 use crate::quantity::show::Units;
 use crate::relation::Law;
-use crate::report::model::{Body, Frame, Image, NavLink, Paper, Sheet};
-use crate::report::names::{Bundle, plain};
+use crate::report::model::{Body, Frame, Image, NavLink, Paper, Phrase, Sheet};
+use crate::report::names::{Bundle, Href, plain};
 use crate::results::json::Head;
 use crate::source::SourceSet;
 use crate::source::place::Place;
@@ -83,6 +89,8 @@ pub struct Run<'a> {
     options: Options,
     /// Thickened oils as new, by their place in the list.
     fresh: BTreeMap<usize, PreparedOil>,
+    /// Where the oils' sheets stand.
+    oil_sheets: Vec<Href>,
 }
 
 impl<'a> Run<'a> {
@@ -109,6 +117,16 @@ impl<'a> Run<'a> {
             head,
             options,
             fresh,
+            oil_sheets: Vec::new(),
+        }
+    }
+
+    /// An oil's id, leading to its sheet.
+    fn oil_link(&self, oil: usize) -> Phrase {
+        let id = &self.scales.site.oils[oil].id;
+        match self.oil_sheets.get(oil) {
+            Some(href) => Phrase::new().tag_link(id, href.clone()),
+            None => Phrase::new().tag(id),
         }
     }
 
@@ -131,6 +149,8 @@ impl<'a> Run<'a> {
 struct Kept {
     /// Digests of their points, by machine in the plan.
     machines: Vec<Vec<Digest>>,
+    /// Every oil on every point, by oil.
+    uses: Vec<Vec<uses::Use>>,
     /// Relations used, by name, and the machines they were used on.
     laws: BTreeMap<&'static str, (&'static Law, Vec<usize>)>,
     /// What was judged, and on how many machines.
@@ -162,7 +182,9 @@ pub struct Report<'a> {
 impl<'a> Report<'a> {
     /// Plans the sheets of these points.
     pub fn new(run: Run<'a>, points: &[&'a Point]) -> Self {
-        let plan = Plan::new(points, run.options.bundle);
+        let plan = Plan::new(points, &run.scales.site.oils, run.options.bundle);
+        let mut run = run;
+        run.oil_sheets = plan.oils.iter().map(|o| plan.href(&o.place)).collect();
         Self {
             run,
             plan,
@@ -192,6 +214,7 @@ impl<'a> Report<'a> {
             return None;
         }
         let mut of = machine::machine(self, place);
+        uses::keep(&mut self.kept.uses, place, &of.digests);
         if self.plan.machines.len() > store::MATRIX {
             // the table of every oil on every machine is left out: its cells need not be kept
             for digest in &mut of.digests {
@@ -214,8 +237,10 @@ impl<'a> Report<'a> {
     /// before.
     pub fn others(&self) -> impl Iterator<Item = Sheet> + '_ {
         let areas = (0..self.plan.areas.len()).map(|i| machines::area(self, i));
+        let oils = (0..self.plan.oils.len()).filter_map(|i| oils::oil(self, i));
         std::iter::once_with(|| overview::sheet(self))
             .chain(areas)
+            .chain(oils)
             .chain(std::iter::once_with(|| reference::methods(self)))
             .chain(std::iter::once_with(|| reference::rules(self)))
             .chain(std::iter::once_with(|| reference::words(self)))

@@ -1,5 +1,6 @@
 //! Everything tested from outside the crate, in one binary.
 
+mod audit;
 mod chance;
 mod checks;
 mod decide;
@@ -13,8 +14,10 @@ mod journal_heat;
 mod journal_table;
 mod judging;
 mod layers;
+mod part_kinds;
 mod plain;
 mod pool;
+mod practice_parts;
 mod problems;
 mod properties_film;
 mod properties_oil;

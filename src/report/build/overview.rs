@@ -24,15 +24,17 @@ pub(super) fn sheet(report: &Report<'_>) -> Sheet {
     } else {
         machines::rows(report, &all)
     };
+    let (answer, first, caution) = (
+        answer(report),
+        first::first(report),
+        caution_of_site(report),
+    );
+    let room = register::on_first_page(report.run.options.paper, &answer, &first, &caution);
     let body = Overview {
-        answer: answer(report),
-        first: first::first(report),
-        caution: caution_of_site(report),
-        groups: register::groups(
-            report,
-            &all,
-            Some(register::on_first_page(report.run.options.paper)),
-        ),
+        answer,
+        first,
+        caution,
+        groups: register::groups(report, &all, Some(room)),
         areas: areas(report),
         machines: rows,
         band_axis,

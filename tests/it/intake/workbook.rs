@@ -124,7 +124,8 @@ fn unpacked(bytes: &[u8]) -> Vec<(String, String)> {
             let mut part = archive.by_index(i).expect("a part");
             let mut text = String::new();
             let _ = std::io::Read::read_to_string(&mut part, &mut text);
-            (part.name().to_owned(), text)
+            let name = part.name().expect("a name").into_owned();
+            (name, text)
         })
         .collect()
 }
