@@ -313,8 +313,11 @@ fn one(
         }
     }
     let (house, point) = (&scales.site.house, w.point);
-    let all = demands(&mut Silent, point, house, scales.rules, &setting);
-    let ready = PreparedPoint::new(&[all], is_severe(point), 0.0);
+    let all = [demands(&mut Silent, point, house, scales.rules, &setting)];
+    let mut ready = PreparedPoint::new(&all, is_severe(point), 0.0);
+    if let Some(in_use) = scales.in_use_curves(point) {
+        ready.run_by_losses(&all, in_use);
+    }
     weigh(&ready, &state(scales, oil, times, loss))
 }
 
