@@ -31,6 +31,7 @@ use findings::Finding;
 use jiff::civil::Date;
 use judged::{Auditor, Judged};
 use matching::{Match, Matcher};
+use rayon::prelude::*;
 use shear::Fed;
 use units::Unit;
 
@@ -126,7 +127,7 @@ pub fn audit(
     units::tell_twice(&units, &bottles, problems);
     let auditor = Auditor::new(scales, &bottles, &new_oil, asked.on);
     let mut judged: Vec<Judged> = rows
-        .iter()
+        .par_iter()
         .map(|(bottle, point)| auditor.judge(*bottle, *point))
         .collect();
     judged::tell_labels(&judged, &bottles, problems);

@@ -163,6 +163,15 @@ pub enum Command {
     /// Lay down a starter folder: three commented files and the editor schemas
     #[command(after_help = "Example:\n  filmwright new works/")]
     New(New),
+    /// Read a spreadsheet register or oil list, draft the site or oil file
+    #[command(
+        after_help = "Examples:\n  filmwright intake register.xlsx                 draft site.yaml, propose register.map.yaml\n  \
+        filmwright intake register.xlsx --map register.map.yaml -o site.yaml\n  \
+        filmwright intake oils.csv --makes oils --decimal comma\n  \
+        filmwright intake register.xlsx --accept        take the differences of site.yaml.proposed\n\
+        See also: check, gaps"
+    )]
+    Intake(Intake),
     /// Read all files, report errors and warnings, run nothing
     #[command(after_help = "Example:\n  filmwright check --strict")]
     Check,
@@ -229,9 +238,16 @@ pub enum Command {
     /// HTML sheets: overview, one sheet a machine
     #[command(
         after_help = "Examples:\n  filmwright report --demo\n  filmwright report -o out/\n  \
-        filmwright report --one-file -o review.html --only 'CV-*'"
+        filmwright report --one-file -o review.html --only 'CV-*'\n  \
+        filmwright report --xlsx annex.xlsx"
     )]
     Report(Report),
+    /// Label sheets for the fill points, as plain text
+    #[command(
+        after_help = "Examples:\n  filmwright labels --demo\n  filmwright labels 'CV-*' -o labels.txt\n\
+        See also: report, weigh"
+    )]
+    Labels(Labels),
     /// The rules built in: formula, range of use, source, defaults
     #[command(after_help = "Examples:\n  filmwright rules\n  filmwright rules gear_parallel_bevel")]
     Rules(Rules),
@@ -240,6 +256,22 @@ pub enum Command {
         filmwright work bearing-nu1 speed=\"236 r/min\" pitch_diameter=\"140 mm\"\n  \
         filmwright work --batch sums.jsonl")]
     Work(Work),
+    /// JSON Schemas for editors: completion and hover text for the files
+    #[command(
+        after_help = "Examples:\n  filmwright schema --write       into .filmwright/ of the folder\n  filmwright schema site"
+    )]
+    Schema(Schema),
+    /// Completions for a shell, with tags and oils of the working folder
+    #[command(
+        after_help = "Examples:\n  filmwright completions bash > ~/.local/share/bash-completion/completions/filmwright\n  \
+        filmwright completions fish > ~/.config/fish/completions/filmwright.fish"
+    )]
+    Completions(Completions),
+    /// Manual pages
+    #[command(
+        after_help = "Examples:\n  filmwright man | man -l -\n  filmwright man weigh\n  filmwright man -o man1/        all pages into a folder"
+    )]
+    Man(Man),
     /// Short texts: units, verdicts, files, keys, steps, or the name of a message
     #[command(after_help = "Example:\n  filmwright help verdicts")]
     Help(Help),
@@ -253,6 +285,65 @@ pub struct New {
     /// Also write the built-in rules out for editing
     #[arg(long = "with-rules")]
     pub with_rules: bool,
+}
+
+/// `intake`
+#[derive(Debug, Args)]
+pub struct Intake {
+    /// The spreadsheet: xlsx, ods or csv
+    #[arg(value_name = "FILE")]
+    pub file: String,
+    /// Map of its columns; written where it is not there (default: FILE with .map.yaml)
+    #[arg(long, value_name = "FILE")]
+    pub map: Option<String>,
+    /// The sheet to read (default: the one that looks most like a register)
+    #[arg(long, value_name = "NAME")]
+    pub sheet: Option<String>,
+    /// What the table lists (default: by its headings)
+    #[arg(long, value_enum, value_name = "KIND")]
+    pub makes: Option<IntakeMakes>,
+    /// Decimal sign of its numbers (default: found from the cells)
+    #[arg(long, value_enum, value_name = "SIGN")]
+    pub decimal: Option<IntakeDecimal>,
+    /// Encoding of a CSV file, as windows-1252 (default: found)
+    #[arg(long, value_name = "NAME")]
+    pub encoding: Option<String>,
+    /// Delimiter of a CSV file: comma, semicolon, tab, bar (default: found)
+    #[arg(long, value_name = "SIGN")]
+    pub delimiter: Option<String>,
+    /// Which gallon a bare gal is (default: asked about)
+    #[arg(long, value_enum, value_name = "WHICH")]
+    pub gallon: Option<IntakeGallon>,
+    /// Take the differences proposed into the file
+    #[arg(long)]
+    pub accept: bool,
+}
+
+/// What a table lists.
+#[derive(Clone, Copy, Debug, PartialEq, Eq, ValueEnum)]
+pub enum IntakeMakes {
+    /// Machines: a site file.
+    Site,
+    /// Lubricants: an oil file.
+    Oils,
+}
+
+/// Decimal signs.
+#[derive(Clone, Copy, Debug, PartialEq, Eq, ValueEnum)]
+pub enum IntakeDecimal {
+    /// 52.0
+    Point,
+    /// 52,0
+    Comma,
+}
+
+/// Gallons.
+#[derive(Clone, Copy, Debug, PartialEq, Eq, ValueEnum)]
+pub enum IntakeGallon {
+    /// 3.785 L.
+    Us,
+    /// 4.546 L.
+    Uk,
 }
 
 /// `need`
@@ -479,6 +570,16 @@ pub struct Report {
     /// Folder of own templates on top of the built-in ones
     #[arg(long, value_name = "DIR")]
     pub templates: Option<String>,
+    /// Write the results as a workbook as well
+    #[arg(long, value_name = "FILE")]
+    pub xlsx: Option<String>,
+}
+
+/// `labels`
+#[derive(Debug, Args)]
+pub struct Labels {
+    /// Machines, by tag or pattern; all where none is given
+    pub tags: Vec<String>,
 }
 
 /// Paper sizes.
@@ -512,6 +613,61 @@ pub struct Work {
     /// JSON Lines in, JSON Lines out; '-' is standard input
     #[arg(long, value_name = "FILE")]
     pub batch: Option<String>,
+}
+
+/// `schema`
+#[derive(Debug, Args)]
+pub struct Schema {
+    /// Print the schema of this kind of file: site, oils, samples, events
+    #[arg(value_name = "KIND")]
+    pub kind: Option<String>,
+    /// Write all of them into .filmwright/ of the folder
+    #[arg(long)]
+    pub write: bool,
+}
+
+/// `completions`
+#[derive(Debug, Args)]
+pub struct Completions {
+    /// The shell
+    #[arg(value_enum, value_name = "SHELL", required_unless_present = "names")]
+    pub shell: Option<Shell>,
+    /// Print names of the working folder with what they are, a line each
+    #[arg(long, value_enum, value_name = "KIND", hide = true)]
+    pub names: Option<Names>,
+}
+
+/// Shells.
+#[derive(Clone, Copy, Debug, PartialEq, Eq, ValueEnum)]
+pub enum Shell {
+    /// bash.
+    Bash,
+    /// zsh.
+    Zsh,
+    /// fish.
+    Fish,
+    /// `PowerShell`.
+    #[value(name = "powershell")]
+    PowerShell,
+}
+
+/// Names that are completed.
+#[derive(Clone, Copy, Debug, PartialEq, Eq, ValueEnum)]
+pub enum Names {
+    /// Tags of machines and addresses of points.
+    Tags,
+    /// Ids of oils.
+    Oils,
+    /// Ids of rules.
+    Rules,
+}
+
+/// `man`
+#[derive(Debug, Args)]
+pub struct Man {
+    /// The page of one command; the program's own where none is given
+    #[arg(value_name = "COMMAND")]
+    pub command: Option<String>,
 }
 
 /// `help`

@@ -20,6 +20,7 @@ pub mod compare;
 pub mod decide;
 pub mod demand;
 pub mod input;
+pub mod intake;
 pub mod judge;
 pub mod model;
 pub mod numeric;

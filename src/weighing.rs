@@ -241,6 +241,9 @@ impl<'a> Scales<'a> {
         let facts = facts::of_point(point, &demands, self.in_use_facts(point));
         let card = self.suitability.point(&facts);
         let (mut candidates, mut barred) = (Vec::new(), Vec::new());
+        let now = oil_in_use(point)
+            .and_then(|id| oil_index(self.site, id))
+            .and_then(|i| self.running(point, &demands, i));
         for (i, oil) in self.site.oils.iter().enumerate() {
             if self.oils[i].grease != grease || !wanted(i) {
                 continue;
@@ -256,7 +259,9 @@ impl<'a> Scales<'a> {
                 let judged = weigh(&ready, &self.oils[i]);
                 let state = (i, &self.oils[i]);
                 let mut found = self.candidate(&demands, &ready, state, judged, &eligible, in_use);
-                found.running = self.running(point, &demands, i);
+                found.running = self
+                    .running(point, &demands, i)
+                    .map(|r| r.over(now.as_ref()));
                 candidates.push(found);
             }
         }
@@ -368,17 +373,17 @@ impl<'a> Scales<'a> {
         let oil = &self.oils[candidate.oil];
         let (trace, demands) = weighed.trace_of(setting, &self.site.house, self.rules);
         let ready = weighed.ready.for_oil(oil);
-        let own = self.in_use_curves(weighed.point).map(|in_use| OwnSteps {
+        let own = OwnSteps {
             demands: &demands,
-            in_use,
-        });
+            in_use: self.in_use_curves(weighed.point),
+        };
         explain(
             &trace,
             &demands.list,
             &ready.settings[setting],
             (&self.site.oils[candidate.oil], oil),
             oil.worst(&weighed.ready),
-            own.as_ref(),
+            Some(&own),
         )
     }
 }

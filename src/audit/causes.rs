@@ -23,9 +23,8 @@ use super::scatter::Scatter;
 use crate::model::sample::Reading;
 use crate::numeric::math::{exp, ln};
 use likelihood::Sample;
-use std::cell::OnceCell;
 use std::collections::BTreeMap;
-use std::rc::Rc;
+use std::sync::{Arc, OnceLock};
 use theta::{Grid, Mixed, Theta};
 
 /// Another oil that fits, with the share of it.
@@ -105,14 +104,14 @@ pub struct Diagnosis {
 
 /// The grids of the labelled oils of a site, made when first asked for.
 pub struct Causes {
-    oils: Vec<Rc<Mixed>>,
-    outside: Vec<Rc<Mixed>>,
-    grids: BTreeMap<(usize, Setting), OnceCell<Grid>>,
+    oils: Vec<Arc<Mixed>>,
+    outside: Vec<Arc<Mixed>>,
+    grids: BTreeMap<(usize, Setting), OnceLock<Grid>>,
     scatter: Scatter,
 }
 
 /// Below this likelihood of the unchanged oil something is the matter.
-const CHANGED: f64 = 0.12;
+const CHANGED: f64 = 0.55;
 /// Causes less likely than this are not named.
 const NAMED: f64 = 0.12;
 /// Settings whose viscosities fit so much worse than the best are not looked at further.
@@ -123,8 +122,8 @@ impl Causes {
     pub fn new(profiles: &[(String, Profile, bool)], scatter: Scatter) -> Self {
         let mixed = |(i, (name, profile, grease)): (usize, &(String, Profile, bool))| {
             (!grease).then(|| {
-                Rc::new(Mixed {
-                    profile: Rc::new(profile.clone()),
+                Arc::new(Mixed {
+                    profile: Arc::new(profile.clone()),
                     oil: Some(i),
                     says: name.as_str().into(),
                 })
@@ -143,7 +142,7 @@ impl Causes {
         Self {
             oils: profiles.iter().enumerate().filter_map(mixed).collect(),
             outside: outside::oils(),
-            grids: keys.map(|k| (k, OnceCell::new())).collect(),
+            grids: keys.map(|k| (k, OnceLock::new())).collect(),
             scatter,
         }
     }
@@ -200,14 +199,15 @@ impl Causes {
     }
 
     fn grid(&self, profile: &Profile, setting: Setting) -> Grid {
-        let others: Vec<Rc<Mixed>> = self.oils.iter().chain(&self.outside).cloned().collect();
+        let others: Vec<Arc<Mixed>> = self.oils.iter().chain(&self.outside).cloned().collect();
         Grid::new(profile, setting, &others)
     }
 }
 
 fn by_strength(a: &Named, b: &Named) -> std::cmp::Ordering {
-    b.strength
-        .total_cmp(&a.strength)
+    b.likelihood
+        .total_cmp(&a.likelihood)
+        .then_with(|| b.strength.total_cmp(&a.strength))
         .then_with(|| a.cause.cmp(&b.cause))
 }
 
@@ -381,7 +381,7 @@ fn name(
 
 /// Oils that would do, each at its likeliest share; three at most.
 fn other_oils<'l, 'g: 'l>(with: impl Iterator<Item = &'l Looked<'g>>) -> Vec<OtherOil> {
-    let mut all: BTreeMap<(Option<usize>, Rc<str>), (f64, f64, f64)> = BTreeMap::new();
+    let mut all: BTreeMap<(Option<usize>, Arc<str>), (f64, f64, f64)> = BTreeMap::new();
     let list: Vec<&Looked<'_>> = with.collect();
     let top = list.iter().map(|l| l.log).fold(f64::NEG_INFINITY, f64::max);
     let mut total = 0.0;

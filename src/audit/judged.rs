@@ -21,9 +21,8 @@ use crate::quantity::Measure;
 use crate::source::Place;
 use crate::weighing::{Condition, Scales, Weighed, facts, oil_in_use};
 use jiff::civil::Date;
-use std::cell::RefCell;
 use std::collections::BTreeMap;
-use std::rc::Rc;
+use std::sync::{Arc, PoisonError, RwLock};
 
 /// Which oil a bottle is said to hold.
 #[derive(Clone, Debug, Default, PartialEq, Eq)]
@@ -144,7 +143,7 @@ pub struct Auditor<'s, 'a> {
     profiles: Vec<Profile>,
     causes: Causes,
     on: Date,
-    pairs: RefCell<BTreeMap<(Option<usize>, Option<usize>), Rc<Pair<'a>>>>,
+    pairs: RwLock<BTreeMap<(Option<usize>, Option<usize>), Arc<Pair<'a>>>>,
     oils: BTreeMap<String, usize>,
 }
 
@@ -192,7 +191,7 @@ impl<'s, 'a> Auditor<'s, 'a> {
             causes: Causes::new(&named, scatter),
             profiles,
             on,
-            pairs: RefCell::new(BTreeMap::new()),
+            pairs: RwLock::new(BTreeMap::new()),
             oils,
         }
     }
@@ -343,13 +342,15 @@ impl<'s, 'a> Auditor<'s, 'a> {
     }
 
     /// What the bottles of a point and a label share.
-    fn pair(&self, point: Option<usize>, oil: Option<usize>) -> Rc<Pair<'a>> {
-        if let Some(pair) = self.pairs.borrow().get(&(point, oil)) {
+    fn pair(&self, point: Option<usize>, oil: Option<usize>) -> Arc<Pair<'a>> {
+        let known = self.pairs.read().unwrap_or_else(PoisonError::into_inner);
+        if let Some(pair) = known.get(&(point, oil)) {
             return pair.clone();
         }
-        let pair = Rc::new(self.make_pair(point, oil));
-        self.pairs.borrow_mut().insert((point, oil), pair.clone());
-        pair
+        drop(known);
+        let pair = Arc::new(self.make_pair(point, oil));
+        let mut known = self.pairs.write().unwrap_or_else(PoisonError::into_inner);
+        known.entry((point, oil)).or_insert(pair).clone()
     }
 
     fn make_pair(&self, point: Option<usize>, oil: Option<usize>) -> Pair<'a> {

@@ -66,6 +66,17 @@ impl Levels {
         }
     }
 
+    /// Whether it speaks earlier than another; `left`: both are shares left, bad when low.
+    fn is_stricter(&self, other: &Self, left: bool) -> bool {
+        let mine = self.watch.or(self.act);
+        let other = other.watch.or(other.act);
+        match (mine, other) {
+            (Some(a), Some(b)) if left => a > b,
+            (Some(a), Some(b)) => a < b,
+            _ => mine.is_some(),
+        }
+    }
+
     /// The level of a value that is bad when low.
     pub fn below(&self, value: f64) -> Level {
         let at = |limit: Option<f64>| limit.is_some_and(|l| value <= l);
@@ -119,17 +130,29 @@ impl Limits {
                     Side::High => high,
                     Side::Low => !high,
                 };
-                let seen = most.entry((rule.reading.word(), high)).or_default();
-                if !looks || (*seen > 0 && rule.when.len() < *seen) {
+                if !looks {
                     continue;
                 }
-                *seen = rule.when.len().max(1);
+                let seen = most.entry((rule.reading.word(), high)).or_default();
                 let map = if high {
                     &mut limits.high
                 } else {
                     &mut limits.low
                 };
-                map.insert(rule.reading.word(), of_rule(rule));
+                let found = of_rule(rule);
+                // of equally particular rules the strictest counts
+                let known = map.get(rule.reading.word());
+                let better = match known {
+                    None => true,
+                    Some(_) if rule.when.len() != *seen => rule.when.len() > *seen,
+                    Some(known) => {
+                        found.is_stricter(known, rule.side == Side::Low && share_left(rule.reading))
+                    }
+                };
+                if better {
+                    *seen = rule.when.len();
+                    map.insert(rule.reading.word(), found);
+                }
             }
         }
         if let Some(point) = point {
@@ -186,6 +209,14 @@ fn of_rule(rule: &UsedOilLimit) -> Levels {
         source: rule.provenance.cited(),
         confidence: rule.provenance.confidence.word(),
     }
+}
+
+/// Readings that say what is left of new oil.
+fn share_left(on: On) -> bool {
+    matches!(
+        on,
+        On::BaseNumberShare | On::AntioxidantShare | On::OxidationStabilityShare
+    )
 }
 
 /// What the site file says of the machine itself.

@@ -180,11 +180,11 @@ impl Profile {
         crate::numeric::math::exp(self.ln100)
     }
 
-    /// Batches of new oil differ from a data sheet; a sample of the oil itself does not.
+    /// Batches of new oil differ from a data sheet; a sample of the oil itself only by its test.
     pub fn batch_spread(&self) -> f64 {
         match self.viscosity_from {
             From::DataSheet | From::Usual => BATCH,
-            From::Beside | From::NewOil(_) => 0.003,
+            From::Beside | From::NewOil(_) => 0.005,
         }
     }
 }

@@ -21,6 +21,11 @@ pub trait Host {
     /// # Errors
     /// Whatever the system says.
     fn write(&mut self, path: &Path, bytes: &[u8]) -> io::Result<()>;
+    /// Removes a file the program made.
+    ///
+    /// # Errors
+    /// Whatever the system says.
+    fn remove(&mut self, path: &Path) -> io::Result<()>;
     /// Size of a file, bytes, without reading it.
     ///
     /// # Errors
@@ -51,6 +56,10 @@ pub trait Host {
     fn input(&mut self) -> io::Result<Vec<u8>>;
     /// Milliseconds since the run began, for progress only.
     fn elapsed_ms(&self) -> u128;
+    /// Shows how far the run is, in one line rewritten in place.
+    fn progress(&mut self, says: &str, done: usize, of: usize);
+    /// Takes that line away.
+    fn progress_end(&mut self);
 }
 
 /// The real machine.
@@ -58,6 +67,7 @@ pub struct System {
     began: std::time::Instant,
     out: io::BufWriter<io::Stdout>,
     broken: bool,
+    bar: Option<indicatif::ProgressBar>,
 }
 
 #[expect(
@@ -72,6 +82,7 @@ impl System {
             began: std::time::Instant::now(),
             out,
             broken: false,
+            bar: None,
         }
     }
 
@@ -121,6 +132,10 @@ impl Host for System {
         make_readable(file.as_file())?;
         file.persist(path).map_err(|e| e.error)?;
         Ok(())
+    }
+
+    fn remove(&mut self, path: &Path) -> io::Result<()> {
+        std::fs::remove_file(path)
     }
 
     fn size(&self, path: &Path) -> io::Result<u64> {
@@ -183,6 +198,26 @@ impl Host for System {
     fn elapsed_ms(&self) -> u128 {
         self.began.elapsed().as_millis()
     }
+
+    fn progress(&mut self, says: &str, done: usize, of: usize) {
+        let bar = self.bar.get_or_insert_with(|| {
+            let target = indicatif::ProgressDrawTarget::stderr_with_hz(5);
+            let bar = indicatif::ProgressBar::with_draw_target(None, target);
+            bar.with_style(
+                indicatif::ProgressStyle::with_template("{msg} {pos} of {len}")
+                    .unwrap_or_else(|_| indicatif::ProgressStyle::default_bar()),
+            )
+        });
+        bar.set_length(of as u64);
+        bar.set_message(says.to_owned());
+        bar.set_position(done as u64);
+    }
+
+    fn progress_end(&mut self) {
+        if let Some(bar) = self.bar.take() {
+            bar.finish_and_clear();
+        }
+    }
 }
 
 /// A temporary file is private by default; a report is to be read by others.
@@ -220,6 +255,12 @@ pub struct MemoryHost {
     pub stdin: Vec<u8>,
     /// Today.
     pub date: String,
+    /// Whether standard error is a terminal.
+    pub terminal: bool,
+    /// What the clock shows, ms.
+    pub clock_ms: u128,
+    /// Progress shown.
+    pub shown: Vec<String>,
 }
 
 impl MemoryHost {
@@ -288,6 +329,11 @@ impl Host for MemoryHost {
         Ok(())
     }
 
+    fn remove(&mut self, path: &Path) -> io::Result<()> {
+        let gone = self.files.remove(&plain(path));
+        gone.map(drop).ok_or_else(|| Self::missing(path))
+    }
+
     fn size(&self, path: &Path) -> io::Result<u64> {
         self.read(path).map(|b| b.len() as u64)
     }
@@ -318,7 +364,7 @@ impl Host for MemoryHost {
     }
 
     fn err_is_terminal(&self) -> bool {
-        false
+        self.terminal
     }
 
     fn out_is_terminal(&self) -> bool {
@@ -334,6 +380,12 @@ impl Host for MemoryHost {
     }
 
     fn elapsed_ms(&self) -> u128 {
-        0
+        self.clock_ms
     }
+
+    fn progress(&mut self, says: &str, done: usize, of: usize) {
+        self.shown.push(format!("{says} {done} of {of}"));
+    }
+
+    fn progress_end(&mut self) {}
 }

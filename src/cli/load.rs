@@ -528,6 +528,15 @@ pub(super) fn feed_nothing() -> Sha256 {
 }
 
 /// Feeds one input into the fingerprint: its kind, its length, its bytes.
+/// Fingerprint of some texts, sha-256.
+pub fn fingerprint(parts: &[&[u8]]) -> String {
+    let mut hash = Sha256::new();
+    for part in parts {
+        feed(&mut hash, "part", part);
+    }
+    hex(&hash.finalize())
+}
+
 fn feed(hash: &mut Sha256, kind: &str, bytes: &[u8]) {
     hash.update(kind.as_bytes());
     hash.update((bytes.len() as u64).to_le_bytes());

@@ -44,6 +44,7 @@ fn misunderstood(error: &clap::Error, host: &mut dyn Host) -> Exit {
 fn command(session: &mut Session<'_>, command: Command) -> Exit {
     match command {
         Command::New(args) => commands::new(session, &args),
+        Command::Intake(args) => commands::intake(session, &args),
         Command::Check => commands::check(session),
         Command::Need(args) => commands::need(session, &args),
         Command::Weigh(args) => commands::weigh(session, &args),
@@ -56,8 +57,12 @@ fn command(session: &mut Session<'_>, command: Command) -> Exit {
         Command::Pool(args) => commands::pool(session, &args),
         Command::Audit(args) => commands::audit(session, &args),
         Command::Report(args) => commands::report(session, &args),
+        Command::Labels(args) => commands::labels(session, &args),
         Command::Rules(args) => commands::rules(session, &args),
         Command::Work(args) => commands::work(session, &args),
+        Command::Schema(args) => commands::schema(session, &args),
+        Command::Completions(args) => commands::completions(session, &args),
+        Command::Man(args) => commands::man(session, &args),
         Command::Help(args) => commands::help(session, &args),
     }
 }

@@ -135,6 +135,18 @@ impl<'h> Session<'h> {
         Ok(())
     }
 
+    /// Whether a workbook may be written; it carries the program's mark inside.
+    ///
+    /// # Errors
+    /// It may not; that has been told.
+    pub fn may_write_book(&mut self, path: &Path) -> Result<(), Exit> {
+        let packed = self
+            .host
+            .read(path)
+            .is_ok_and(|b| crate::results::xlsx::is_ours(&b));
+        if packed { Ok(()) } else { self.may_write(path) }
+    }
+
     /// Writes a file that may be written.
     ///
     /// # Errors
@@ -158,14 +170,30 @@ impl<'h> Session<'h> {
         bytes.is_empty() || has(head) || has(tail)
     }
 
-    /// A table in the dialect asked for.
-    pub fn table(&mut self, table: &Table) -> Exit {
+    /// A table as text in the dialect asked for.
+    pub fn csv(&self, table: &Table) -> String {
         let dialect = if self.shared.csv_excel {
             Dialect::Spreadsheet
         } else {
             Dialect::Plain
         };
-        self.result(&write(table, dialect))
+        write(table, dialect)
+    }
+
+    /// A table in the dialect asked for.
+    pub fn table(&mut self, table: &Table) -> Exit {
+        let text = self.csv(table);
+        self.result(&text)
+    }
+
+    /// Shows how far the run is: on a terminal, after two seconds, in one line.
+    pub fn progress(&mut self, says: &str, done: usize, of: usize) {
+        /// Runs shorter than this show no progress, ms.
+        const PATIENCE: u128 = 2000;
+        let quiet = self.shared.quiet || !self.host.err_is_terminal();
+        if !quiet && self.host.elapsed_ms() > PATIENCE {
+            self.host.progress(says, done, of);
+        }
     }
 
     /// Whether a format was asked for.

@@ -24,8 +24,10 @@ pub(super) fn add<R: Recorder>(
     nu1: Known<KinematicViscosity>,
 ) {
     speed(cx, part, bearing, (dm, n));
-    equivalent(cx, part);
     ep(cx, part, bearing, dm);
+    if bearing.inner.is_some() {
+        equivalent(cx, part);
+    }
     if bearing.film_ratio.is_none() && bearing.inner.is_some() {
         super::bearing_film::inform(cx, part, bearing, n, nu1);
     }

@@ -20,6 +20,8 @@ pub fn add<R: Recorder>(cx: &mut Context<'_, '_, R>, part: &Part, component: &Co
         grease_window(cx, part, &window, (base.lo, base.hi));
     }
     super::open_gear::grades(cx, part, &window.id);
+    needs_a_part(cx, part, &window);
+    typical(cx, part, &window);
     if let Some(prefer) = window.prefer {
         let ends = [prefer.lo, prefer.hi].map(shown);
         cx.inform(
@@ -32,6 +34,55 @@ pub fn add<R: Recorder>(cx: &mut Context<'_, '_, R>, part: &Part, component: &Co
         cx.inform(part, format!("chosen by: {way}"), None);
     }
     super::feed::add(cx, part, component, &window);
+}
+
+/// A window that hangs on figures only a part of its kind carries says so, where no such part
+/// stands beside it: without them it would limit nothing in silence.
+fn needs_a_part<R: Recorder>(cx: &mut Context<'_, '_, R>, part: &Part, window: &Window) {
+    let meshes = |p: &Part| matches!(p.kind, PartKind::GearMesh(_));
+    let by_speed = matches!(window.min, Some(WindowLimit::TimesReference { .. }));
+    if by_speed && !cx.point.parts.iter().any(meshes) {
+        let because = "its window follows the pitch-line speed: describe it as `gear mesh` with \
+                       `pitch-line speed`";
+        cx.undecided(part, End::HotFloor, because);
+    }
+    let says_nothing =
+        window.min.is_none() && window.base_oil.is_none() && window.typical_vg.is_empty();
+    let only_ratio = says_nothing && window.formula.as_deref() == Some("bearing-kappa");
+    if only_ratio && !ratio_is_known(cx) {
+        let because = "it is judged by its viscosity ratio: describe it as `rolling bearing` with \
+                       sizes and speed";
+        cx.undecided(part, End::HotFloor, because);
+    }
+}
+
+/// Usual grades, printed.
+fn typical<R: Recorder>(cx: &mut Context<'_, '_, R>, part: &Part, window: &Window) {
+    let numbers: Vec<String> = window.typical_vg.iter().map(u32::to_string).collect();
+    if !numbers.is_empty() {
+        let says = format!("usual grades: ISO VG {}", numbers.join(", "));
+        cx.inform(part, says, None);
+    }
+    if !window.typical.is_empty() {
+        let says = format!("usual grades: {}", window.typical.join(", "));
+        cx.inform(part, says, None);
+    }
+    if let Some(least) = window.short_term_min {
+        let says =
+            "least for minutes only, at low pressure and limited speed, by leave of the maker";
+        let known = cx.rule_value("nu_short", "least for minutes", least, &window.id);
+        cx.inform(part, says, Some((least.amount(), known.step)));
+    }
+    if let Some(most) = window.short_term_start {
+        let says = "greatest at start for minutes only, by leave of the maker";
+        let known = cx.rule_value(
+            "nu_short",
+            "greatest at start for minutes",
+            most,
+            &window.id,
+        );
+        cx.inform(part, says, Some((most.amount(), known.step)));
+    }
 }
 
 fn shown(limit: WindowLimit) -> String {

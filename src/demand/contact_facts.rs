@@ -33,8 +33,10 @@ pub(super) fn add<R: Recorder>(
     };
     if let Some(regime) = film.contact.regime(eta, alpha) {
         let says = format!(
-            "regime {} for the mineral oil of VI {COMPARED_VI} that just meets the film",
-            regime.words()
+            "regime {} by the chart of four, for the mineral oil of VI {COMPARED_VI} that just \
+             meets the film; the film counted is that of {}",
+            regime.words(),
+            film.contact.law().source
         );
         cx.inform(part, says, None);
     }

@@ -261,11 +261,16 @@ impl<R: Recorder> Context<'_, '_, R> {
     }
 
     /// The film height a house rule asks for on a part that takes it, with its source.
-    pub fn house_film(&mut self, part: &Part) -> Option<(Known<Length>, String, String)> {
+    pub fn house_film(
+        &mut self,
+        part: &Part,
+        replaced: &str,
+    ) -> Option<(Known<Length>, String, String)> {
         let named = part.rule.as_ref().map(|r| r.value.as_str());
         let found = self.house.rules.iter().enumerate();
         let (number, rule, height) = found
             .filter(|(_, rule)| named == Some(rule.name.as_str()))
+            .filter(|(_, rule)| rule.replaces.as_ref().is_none_or(|r| r.value == replaced))
             .find_map(|(i, rule)| match rule.limit {
                 HouseLimit::FilmHeight(height) => Some((i + 1, rule.clone(), height)),
                 _ => None,

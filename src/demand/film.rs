@@ -123,14 +123,19 @@ impl FilmContact {
     /// Inputs outside the relation.
     pub fn film(self, eta: DynamicViscosity, alpha: PressureViscosity) -> Result<Length, Outside> {
         match self {
-            Self::Line { speed, load } => Ok(line_film(Inlet { eta, alpha, speed }, load)?.0),
+            Self::Line { speed, load } => {
+                let groups = of_line(Inlet { eta, alpha, speed }, load)?;
+                Ok(line::minimum_1968(groups, load.radius))
+            }
             Self::Ellipse {
                 speed,
                 load,
                 meniscus,
             } => {
                 let inlet = Inlet { eta, alpha, speed };
-                let (film, _) = ellipse_film(inlet, load)?;
+                let groups = of_ellipse(inlet, load)?;
+                let k = ellipse::ellipticity(load.radii)?;
+                let film = ellipse::minimum(groups, k, load.radii.x);
                 match meniscus {
                     Some(distance) => Ok(starved_film(inlet, load, film, distance)?),
                     None => Ok(film),
@@ -166,21 +171,6 @@ impl FilmContact {
     }
 }
 
-/// Minimum film of a line contact: the largest of the four regimes.
-fn line_film(inlet: Inlet, load: LineLoad) -> Result<(Length, Regime), Outside> {
-    let groups = of_line(inlet, load)?;
-    let by = regime::line(groups, load.radius)?;
-    Ok(by.with_hard(line::minimum_1968(groups, load.radius)))
-}
-
-/// Minimum film of a point contact: the largest of the four regimes.
-fn ellipse_film(inlet: Inlet, load: PointLoad) -> Result<(Length, Regime), Outside> {
-    let groups = of_ellipse(inlet, load)?;
-    let k = ellipse::ellipticity(load.radii)?;
-    let by = regime::ellipse(groups, load.radii.ratio()?, load.radii.x)?;
-    Ok(by.with_hard(ellipse::minimum(groups, k, load.radii.x)))
-}
-
 /// What is left of a minimum film with the meniscus so far from the centre.
 fn starved_film(
     inlet: Inlet,
@@ -199,17 +189,21 @@ fn starved_film(
 }
 
 impl FilmContact {
-    /// The regime that shapes the film; `None` for contacts that are always worked out by the
-    /// formula of their standard.
+    /// The regime the film belongs to by the charts, where the largest of four films counts;
+    /// `None` for contacts whose standard has but one formula.
     pub fn regime(self, eta: DynamicViscosity, alpha: PressureViscosity) -> Option<Regime> {
-        match self {
-            Self::Line { speed, load } => line_film(Inlet { eta, alpha, speed }, load).ok(),
-            Self::Ellipse { speed, load, .. } => {
-                ellipse_film(Inlet { eta, alpha, speed }, load).ok()
+        let by = match self {
+            Self::Line { speed, load } => {
+                let groups = of_line(Inlet { eta, alpha, speed }, load).ok()?;
+                regime::line(groups, load.radius).ok()?
             }
-            Self::Race { .. } | Self::Tooth(_) | Self::Wedge(_) => None,
-        }
-        .map(|(_, regime)| regime)
+            Self::Ellipse { speed, load, .. } => {
+                let groups = of_ellipse(Inlet { eta, alpha, speed }, load).ok()?;
+                regime::ellipse(groups, load.radii.ratio().ok()?, load.radii.x).ok()?
+            }
+            Self::Race { .. } | Self::Tooth(_) | Self::Wedge(_) => return None,
+        };
+        Some(by.regime)
     }
 
     /// Thermal loading parameter of the inlet; `None` for contacts whose standard leaves heating

@@ -85,11 +85,11 @@ fn quantity<R: Recorder>(cx: &mut Context<'_, '_, R>, part: &Part, bearing: &Rol
     let share = share(cx, (now.value.base(), now), (need.value.base(), need));
     let times = share.value.base();
     let says = if times > 1.5 {
-        "times the amount needed is put in today: too much grease heats a bearing"
+        "put in today over needed (too much grease heats a bearing)"
     } else if times < 0.67 {
-        "times the amount needed is put in today: too little"
+        "put in today over needed (too little)"
     } else {
-        "times the amount needed is put in today: right"
+        "put in today over needed"
     };
     cx.inform(part, says, Some((share.value.amount(), share.step)));
 }
@@ -238,11 +238,11 @@ fn today<R: Recorder>(cx: &mut Context<'_, '_, R>, part: &Part, due: Known<Time>
     };
     let share = share(cx, (now.value.base(), now), (due.value.base(), due));
     let says = if share.value.base() > 1.0 {
-        "times the interval is waited today: too long"
+        "interval today over the one needed (too long)"
     } else if share.value.base() < 0.5 {
-        "times the interval is waited today: oftener than needed"
+        "interval today over the one needed (oftener than needed)"
     } else {
-        "times the interval is waited today"
+        "interval today over the one needed"
     };
     cx.inform(part, says, Some((share.value.amount(), share.step)));
 }

@@ -10,7 +10,7 @@ mod ceiling;
 mod findings;
 mod floor;
 pub(super) mod shape;
-mod warm;
+pub(super) mod warm;
 
 use super::context::Context;
 use super::inputs::Wanted;

@@ -23,8 +23,9 @@ use crate::relation::gear::loss::{self, mesh_friction};
 use crate::relation::gear::temperature::{Friction, OilKind, oil_factor};
 use crate::relation::heat::balance::conductance;
 use crate::relation::heat::seal;
+use crate::relation::journal::feed::{Coolant, Feed};
 use crate::relation::journal::film::{Bearing, POWER as JOURNAL_POWER};
-use crate::relation::journal::heat::still_air;
+use crate::relation::journal::heat::{Cooling, settled, still_air};
 use crate::relation::oil::base_stock::BaseStock;
 use crate::relation::oil::viscosity_temperature::ViscosityCurve;
 use crate::relation::thrust::pad::{LAW as PAD_LAW, Pad};
@@ -98,7 +99,10 @@ enum Form {
         speed: AngularVelocity,
         pitch_diameter: Length,
     },
-    Journal(Box<Bearing>),
+    Journal {
+        bearing: Box<Bearing>,
+        inlet: Inlet,
+    },
     Pads {
         pad: Pad,
         ratio: Ratio,
@@ -107,14 +111,63 @@ enum Form {
     Seal(Power),
 }
 
+/// The oil that reaches a journal bearing.
+#[derive(Clone, Copy, Debug, PartialEq)]
+enum Inlet {
+    /// The film is as warm as the sump around it.
+    Sump,
+    /// Oil as warm as the sump is fed, and carries the heat.
+    FedAsSump,
+    /// Oil of this temperature is fed, and carries the heat.
+    Fed(ThermodynamicTemperature),
+}
+
+impl Inlet {
+    /// The settled film, with an oil whose sump is that warm.
+    fn film(
+        self,
+        bearing: &Bearing,
+        oil: &Curves,
+        sump: ThermodynamicTemperature,
+    ) -> Option<(ThermodynamicTemperature, Power)> {
+        let eta = |t| dynamic(oil.new.nu_at(t), oil.density.at(t));
+        let inlet = match self {
+            Self::Sump => return bearing.film(eta(sump)).ok().map(|f| (sump, f.power)),
+            Self::FedAsSump => sump,
+            Self::Fed(t) => t,
+        };
+        let cooling = Cooling::Oil {
+            inlet,
+            feed: Feed::Drawn,
+            coolant: Coolant::iso7902(),
+        };
+        let found = settled(bearing, &cooling, eta).ok()?;
+        Some((found.t_effective, found.film.power))
+    }
+}
+
 impl Source {
+    /// Temperature of its film, where oil is fed to it.
+    fn film_at(
+        &self,
+        oil: &Curves,
+        t: ThermodynamicTemperature,
+    ) -> Option<ThermodynamicTemperature> {
+        match &self.form {
+            Form::Journal { bearing, inlet } if *inlet != Inlet::Sump => {
+                inlet.film(bearing, oil, t).map(|(film, _)| film)
+            }
+            _ => None,
+        }
+    }
+
     /// The relation.
     pub fn law(&self) -> &'static Law {
         match self.form {
             Form::Mesh { .. } => &loss::MESH,
             Form::Churning(_) => &churning::POWER,
             Form::Rolling { .. } => &BEARING_POWER,
-            Form::Journal(_) => &JOURNAL_POWER,
+            Form::Journal { .. } => &JOURNAL_POWER,
             Form::Pads { .. } => &PAD_LAW,
             Form::Seal(_) => &seal::LAW,
         }
@@ -149,7 +202,9 @@ impl Source {
                 pitch_diameter,
             } => friction::viscous(*f0, nu, *speed, *pitch_diameter)
                 .map_or(f64::NAN, |m| friction::power(m, *load, *speed).base()),
-            Form::Journal(bearing) => bearing.film(eta()).map_or(f64::NAN, |f| f.power.base()),
+            Form::Journal { bearing, inlet } => inlet
+                .film(bearing, oil, t)
+                .map_or(f64::NAN, |(_, power)| power.base()),
             Form::Pads { pad, ratio, count } => pad
                 .film(Shape::Ratio(*ratio), eta())
                 .map_or(f64::NAN, |f| f.power.base() * count),
@@ -263,9 +318,9 @@ fn reading<R: Recorder>(cx: &mut Context<'_, '_, R>) -> Option<Reading> {
     })
 }
 
-type Cooling = (Option<Known<ThermalConductance>>, Option<Known<Power>>);
+type Cools = (Option<Known<ThermalConductance>>, Option<Known<Power>>);
 
-fn cooling<R: Recorder>(cx: &mut Context<'_, '_, R>) -> Cooling {
+fn cooling<R: Recorder>(cx: &mut Context<'_, '_, R>) -> Cools {
     let stated = cx.point.losses.clone().unwrap_or_default();
     let of_bearing = cx.point.parts.iter().find_map(|p| match &p.kind {
         PartKind::JournalBearing(b) => b.casing_area.clone(),
@@ -320,7 +375,7 @@ static CONDUCTANCE: Law = Law {
     source: "definition",
 };
 
-/// Adds the seals of a shaft: one lip, where the seals are known to be of rubber.
+/// Adds the seals of a shaft: one lip, where the seals of the housing are known to be of rubber.
 fn sealed<R: Recorder>(
     cx: &mut Context<'_, '_, R>,
     part: &Part,
@@ -328,7 +383,7 @@ fn sealed<R: Recorder>(
     speed: Known<AngularVelocity>,
     out: &mut Vec<Source>,
 ) {
-    let lips = cx.point.facts.seals.as_ref().is_some_and(has_lips);
+    let lips = housed(cx) && cx.point.facts.seals.as_ref().is_some_and(has_lips);
     let Ok(power) = seal::loss(shaft.value, speed.value) else {
         return;
     };
@@ -363,6 +418,16 @@ impl Losses {
                 (kind, Power::from_base(sum))
             })
             .collect()
+    }
+
+    /// Temperature of the films that oil is fed to, by part.
+    pub fn films(
+        &self,
+        oil: &Curves,
+        t: ThermodynamicTemperature,
+    ) -> Vec<(String, ThermodynamicTemperature)> {
+        let of = |s: &Source| Some((s.part.clone(), s.film_at(oil, t)?));
+        self.sources.iter().filter_map(of).collect()
     }
 
     /// Viscosity of the oil at a temperature, as the losses take it: new.

@@ -124,7 +124,7 @@ fn asked<R: Recorder>(
 ) -> (Known<Length>, String, String, String, Whose) {
     use crate::quantity::show::{Toward, fixed};
     let shown = |film: Length| fixed(to_um(film), 1, Toward::Up);
-    if let Some((film, rule, source)) = cx.house_film(part) {
+    if let Some((film, rule, source)) = cx.house_film(part, FILM_RULE) {
         let says = format!("film >= {} um", shown(film.value));
         return (film, says, rule, source, Whose::House);
     }

@@ -31,6 +31,8 @@ pub struct Explanation {
     pub trace: Derivation,
     /// Margin of each demand that judges or asks: demand number, value, its step.
     pub margins: Vec<Explained>,
+    /// Steps of how the oil runs: its temperature by losses, and the losses.
+    pub running: Vec<StepId>,
 }
 
 /// One margin explained.
@@ -74,13 +76,15 @@ pub fn explain(
     let mut told = Explanation {
         trace: trace.clone(),
         margins: Vec::new(),
+        running: Vec::new(),
     };
-    let moves = setting.demands.iter().any(|d| d.moved.is_some());
-    let own = own
-        .filter(|_| moves)
-        .and_then(|own| own.tell(&mut told.trace, oil.1));
+    told.trace
+        .about(|| Some(format!("{} by its losses", oil.0.id)));
+    let running = own.map(|own| own.tell(&mut told.trace, &oil.1.curves));
+    let running = running.unwrap_or_default();
+    told.running = running.shown;
     let mut teller = Teller {
-        own,
+        own: running.temperatures,
         oil: oil.0,
         ready: oil.1,
         worn: variant.worn.as_ref(),

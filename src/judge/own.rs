@@ -8,7 +8,7 @@ use crate::demand::{AtAmbient, Demands, End};
 use crate::oil::Curves;
 use crate::quantity::{KinematicViscosity, Measure, ThermodynamicTemperature};
 use crate::relation::heat::balance::NoBalance;
-use crate::trace::{Known, Recorder};
+use crate::trace::{Known, Recorder, StepId};
 use std::borrow::Cow;
 
 /// Losses of a point, calibrated on the reading with the oil in use.
@@ -176,9 +176,19 @@ pub struct Running {
     pub drag: Drag,
     /// Energy a year, kWh, where the running hours are stated.
     pub energy_kwh: Option<f64>,
+    /// Drag over that of the oil in use, W.
+    pub over_in_use: Option<f64>,
 }
 
 impl Running {
+    /// With what it costs over the oil in use.
+    #[must_use]
+    pub fn over(mut self, in_use: Option<&Self>) -> Self {
+        let mine = self.drag.total.base();
+        self.over_in_use = in_use.map(|now| mine - now.drag.total.base());
+        self
+    }
+
     /// The temperature floors are judged at, K.
     pub fn used(&self) -> Option<f64> {
         match (self.stated, self.by_losses) {
@@ -222,6 +232,7 @@ pub fn running(
         stated,
         by_losses,
         calibrated: own.is_some(),
+        over_in_use: None,
         energy_kwh: hours_a_year.map(|h| drag.total.base() * h / 1000.0),
         drag,
     })
@@ -231,8 +242,8 @@ pub fn running(
 pub struct OwnSteps<'a> {
     /// The demands whose steps stand in the record.
     pub demands: &'a Demands,
-    /// The oil the reading was taken with.
-    pub in_use: &'a Curves,
+    /// The oil in use, with which the reading was taken.
+    pub in_use: Option<&'a Curves>,
 }
 
 /// Both temperatures of a candidate at the hottest ambient, with their steps.
@@ -244,21 +255,59 @@ pub struct OwnTemperatures {
     pub by_losses: Known<ThermodynamicTemperature>,
 }
 
+/// What was told of how a candidate runs.
+#[derive(Clone, Debug, Default, PartialEq)]
+pub struct Told {
+    /// Both temperatures, where the losses are calibrated.
+    pub temperatures: Option<OwnTemperatures>,
+    /// The steps of what is shown: temperature by losses, losses together.
+    pub shown: Vec<StepId>,
+}
+
 impl OwnSteps<'_> {
-    /// Tells the losses of the oil in use at the reading, the cooling that follows, and the
-    /// temperature this oil settles at.
-    pub fn tell<R: Recorder>(&self, r: &mut R, oil: &PreparedOil) -> Option<OwnTemperatures> {
-        let own = Own::of(self.demands, self.in_use)?;
+    /// Tells the losses of the oil in use at the reading, the cooling that follows, the
+    /// temperature this oil settles at in the hottest ambient, and what it costs in the middle.
+    pub fn tell<R: Recorder>(&self, r: &mut R, oil: &Curves) -> Told {
+        self.told(r, oil).unwrap_or_default()
+    }
+
+    fn told<R: Recorder>(&self, r: &mut R, oil: &Curves) -> Option<Told> {
         let losses = self.demands.losses.as_ref()?;
-        let cooling = losses.tell_cooling(r, self.in_use, own.calibrated())?;
-        let moved = own.temperatures(&oil.curves).ok()?;
-        let (_, hot) = self.demands.thermal.ambient?;
-        let t = ThermodynamicTemperature::from_base(moved.losses);
-        let by_losses = losses.tell_settled(r, cooling, hot, t);
-        losses.tell(r, &oil.curves, by_losses);
-        Some(OwnTemperatures {
-            by_reading: self.demands.thermal.hottest?,
-            by_losses,
-        })
+        let (cold, hot) = self.demands.thermal.ambient?;
+        let own = self.in_use.and_then(|oil| Own::of(self.demands, oil));
+        let cooling = match (&own, self.in_use) {
+            (Some(own), Some(in_use)) => losses.tell_cooling(r, in_use, own.calibrated()),
+            _ => losses.by_surface,
+        };
+        let mut told = Told::default();
+        let middle =
+            ThermodynamicTemperature::from_base(f64::midpoint(cold.value.base(), hot.value.base()));
+        let says = "middle of the ambient range";
+        let middle = r.assume("t_amb", says, middle, "for what oils cost over a year");
+        let settle = |ambient: ThermodynamicTemperature| {
+            let settled = losses.settle(oil, cooling?.value, ambient);
+            settled.ok().map(|s| s.t)
+        };
+        if let (Some(cooling), Some(t)) = (cooling, settle(hot.value)) {
+            let by_losses = losses.tell_settled(r, cooling, hot, t);
+            told.shown.push(by_losses.step);
+            told.temperatures =
+                own.and(self.demands.thermal.hottest)
+                    .map(|by_reading| OwnTemperatures {
+                        by_reading,
+                        by_losses,
+                    });
+        }
+        let there = match (cooling, settle(middle.value)) {
+            (Some(cooling), Some(t)) => losses.tell_settled(r, cooling, middle, t),
+            _ => {
+                let at = self.demands.thermal.running?.at(middle.value.base());
+                let t = ThermodynamicTemperature::from_base(at);
+                let says = "running temperature in the middle of the ambient range";
+                r.assume("t", says, t, "as stated for the sump")
+            }
+        };
+        told.shown.push(losses.tell(r, oil, there).step);
+        Some(told)
     }
 }

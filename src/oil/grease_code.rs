@@ -356,8 +356,8 @@ mod tests {
         assert_eq!(code.lowest(), Some(celsius(-30.0)));
         assert_eq!(
             code.says(&BOOK),
-            "bearings, plain and rolling, and slides, EP or antiwear, NLGI 2, to 120 degC, water \
-             0-90 or 1-90, down to -30 degC"
+            "bearings, plain and rolling, and slides, mineral oil, EP or antiwear, NLGI 2, to 120 \
+             degC, water 0-90 or 1-90, down to -30 degC"
         );
     }
 

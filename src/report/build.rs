@@ -12,17 +12,22 @@ mod candidates;
 mod case;
 mod caution;
 mod changes;
+mod checked;
 mod curves;
 mod digest;
 mod eligible;
 mod first;
 mod gaps;
 mod inputs;
+mod labels;
 mod lists;
 mod machine;
 mod machines;
 mod needs;
 mod next;
+mod oil_says;
+mod oil_steps;
+mod oils;
 mod overview;
 mod plan;
 mod point;
@@ -30,6 +35,7 @@ mod reference;
 mod register;
 mod revision;
 mod rules;
+mod running;
 mod say;
 mod season;
 mod sign;
@@ -37,6 +43,7 @@ mod site_gaps;
 mod state;
 mod steps;
 mod store;
+mod uses;
 mod vary;
 
 pub use revision::Since;
@@ -46,8 +53,8 @@ use crate::judge::{PreparedOil, Verdict};
 use crate::model::Point;
 use crate::quantity::show::Units;
 use crate::relation::Law;
-use crate::report::model::{Body, Frame, Image, NavLink, Paper, Sheet};
-use crate::report::names::{Bundle, plain};
+use crate::report::model::{Body, Frame, Image, NavLink, Paper, Phrase, Sheet};
+use crate::report::names::{Bundle, Href, plain};
 use crate::results::json::Head;
 use crate::source::SourceSet;
 use crate::source::place::Place;
@@ -89,6 +96,8 @@ pub struct Run<'a> {
     options: Options,
     /// Thickened oils as new, by their place in the list.
     fresh: BTreeMap<usize, PreparedOil>,
+    /// Where the oils' sheets stand.
+    oil_sheets: Vec<Href>,
 }
 
 impl<'a> Run<'a> {
@@ -115,6 +124,16 @@ impl<'a> Run<'a> {
             head,
             options,
             fresh,
+            oil_sheets: Vec::new(),
+        }
+    }
+
+    /// An oil's id, leading to its sheet.
+    fn oil_link(&self, oil: usize) -> Phrase {
+        let id = &self.scales.site.oils[oil].id;
+        match self.oil_sheets.get(oil) {
+            Some(href) => Phrase::new().tag_link(id, href.clone()),
+            None => Phrase::new().tag(id),
         }
     }
 
@@ -137,6 +156,8 @@ impl<'a> Run<'a> {
 struct Kept {
     /// Digests of their points, by machine in the plan.
     machines: Vec<Vec<Digest>>,
+    /// Every oil on every point, by oil.
+    uses: Vec<Vec<uses::Use>>,
     /// Relations used, by name, and the machines they were used on.
     laws: BTreeMap<&'static str, (&'static Law, Vec<usize>)>,
     /// What was judged, and on how many machines.
@@ -168,7 +189,10 @@ pub struct Report<'a> {
 impl<'a> Report<'a> {
     /// Plans the sheets of these points.
     pub fn new(run: Run<'a>, points: &[&'a Point]) -> Self {
-        let plan = Plan::new(points, run.options.bundle, run.options.since.is_some());
+        let revised = run.options.since.is_some();
+        let plan = Plan::new(points, &run.scales.site.oils, run.options.bundle, revised);
+        let mut run = run;
+        run.oil_sheets = plan.oils.iter().map(|o| plan.href(&o.place)).collect();
         Self {
             run,
             plan,
@@ -198,6 +222,7 @@ impl<'a> Report<'a> {
             return None;
         }
         let mut of = machine::machine(self, place);
+        uses::keep(&mut self.kept.uses, place, &of.digests);
         if self.plan.machines.len() > store::MATRIX {
             // the table of every oil on every machine is left out: its cells need not be kept
             for digest in &mut of.digests {
@@ -220,9 +245,11 @@ impl<'a> Report<'a> {
     /// before.
     pub fn others(&self) -> impl Iterator<Item = Sheet> + '_ {
         let areas = (0..self.plan.areas.len()).map(|i| machines::area(self, i));
+        let oils = (0..self.plan.oils.len()).filter_map(|i| oils::oil(self, i));
         std::iter::once_with(|| overview::sheet(self))
             .chain(areas)
             .chain(self.changes())
+            .chain(oils)
             .chain(std::iter::once_with(|| reference::methods(self)))
             .chain(std::iter::once_with(|| reference::rules(self)))
             .chain(std::iter::once_with(|| reference::words(self)))

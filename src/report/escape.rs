@@ -53,6 +53,27 @@ pub fn text(raw: &str) -> String {
     out
 }
 
+/// Longer names may break at their dashes.
+const WHOLE: usize = 24;
+
+/// Text for a heading: names such as `O-12` are not broken at their dashes.
+pub(in crate::report) fn whole(raw: &str) -> Markup {
+    let mut out = String::with_capacity(raw.len() + 32);
+    for (i, word) in raw.split(' ').enumerate() {
+        if i > 0 {
+            out.push(' ');
+        }
+        if word.contains('-') && word.chars().count() <= WHOLE {
+            out.push_str("<span class=\"nw\">");
+            push_text(&mut out, word);
+            out.push_str("</span>");
+        } else {
+            push_text(&mut out, word);
+        }
+    }
+    Markup::trusted(out)
+}
+
 /// A CSS string in quotes. Everything but letters, digits and spaces is written by its number, so
 /// that neither the string nor the style element can be closed from inside.
 pub fn css_string(raw: &str) -> String {

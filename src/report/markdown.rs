@@ -15,8 +15,12 @@ pub fn to_html(text: &str, under: u8) -> Markup {
         .collect();
     let options = Options::ENABLE_TABLES | Options::ENABLE_STRIKETHROUGH;
     let mut open_links = Vec::new();
-    let events =
-        Parser::new_ext(&cleaned, options).filter_map(|event| safe(event, under, &mut open_links));
+    let mut levels = Levels {
+        under: usize::from(under),
+        open: Vec::new(),
+    };
+    let events = Parser::new_ext(&cleaned, options)
+        .filter_map(|event| safe(event, &mut levels, &mut open_links));
     let mut out = String::new();
     html::push_html(&mut out, events);
     Markup::trusted(out)
@@ -55,7 +59,11 @@ fn is_host(text: &str) -> bool {
     name.split('.').all(plain) && port.parse::<u16>().is_ok()
 }
 
-fn safe<'a>(event: Event<'a>, under: u8, open_links: &mut Vec<bool>) -> Option<Event<'a>> {
+fn safe<'a>(
+    event: Event<'a>,
+    levels: &mut Levels,
+    open_links: &mut Vec<bool>,
+) -> Option<Event<'a>> {
     match event {
         Event::Html(raw) | Event::InlineHtml(raw) => Some(Event::Text(raw)),
         Event::Start(Tag::HtmlBlock) => Some(Event::Start(Tag::Paragraph)),
@@ -86,7 +94,7 @@ fn safe<'a>(event: Event<'a>, under: u8, open_links: &mut Vec<bool>) -> Option<E
             .unwrap_or(false)
             .then_some(Event::End(TagEnd::Link)),
         Event::Start(Tag::Heading { level, .. }) => {
-            let level = lowered(level, under);
+            let level = levels.lowered(level);
             Some(Event::Start(Tag::Heading {
                 level,
                 id: None,
@@ -94,9 +102,7 @@ fn safe<'a>(event: Event<'a>, under: u8, open_links: &mut Vec<bool>) -> Option<E
                 attrs: Vec::new(),
             }))
         }
-        Event::End(TagEnd::Heading(level)) => {
-            Some(Event::End(TagEnd::Heading(lowered(level, under))))
-        }
+        Event::End(TagEnd::Heading(_)) => Some(Event::End(TagEnd::Heading(levels.latest()))),
         // aligned columns would need style attributes, which the page's policy does not let in
         Event::Start(Tag::Table(columns)) => Some(Event::Start(Tag::Table(
             vec![pulldown_cmark::Alignment::None; columns.len()],
@@ -108,10 +114,29 @@ fn safe<'a>(event: Event<'a>, under: u8, open_links: &mut Vec<bool>) -> Option<E
     }
 }
 
-/// A heading's level, kept below the one the prose stands under.
-fn lowered(level: HeadingLevel, under: u8) -> HeadingLevel {
-    let wanted = usize::from(under) + level as usize;
-    HeadingLevel::try_from(wanted.min(6)).unwrap_or(HeadingLevel::H6)
+/// Headings of users' prose, set below the one it stands under, without a jump downwards.
+struct Levels {
+    under: usize,
+    /// The user's own levels that are open, outermost first.
+    open: Vec<usize>,
+}
+
+impl Levels {
+    fn lowered(&mut self, level: HeadingLevel) -> HeadingLevel {
+        let own = level as usize;
+        while self.open.last().is_some_and(|outer| *outer >= own) {
+            self.open.pop();
+        }
+        self.open.push(own);
+        let wanted = self.under + self.open.len();
+        HeadingLevel::try_from(wanted.min(6)).unwrap_or(HeadingLevel::H6)
+    }
+
+    /// The level the latest heading was set at.
+    fn latest(&self) -> HeadingLevel {
+        let level = self.under + self.open.len();
+        HeadingLevel::try_from(level.min(6)).unwrap_or(HeadingLevel::H6)
+    }
 }
 
 #[cfg(test)]
@@ -130,6 +155,10 @@ mod tests {
             "<p>a <em>b</em> <strong>c</strong></p>\n"
         );
         assert_eq!(html("# x"), "<h3>x</h3>\n");
+        assert_eq!(
+            html("### x\n# y\n### z"),
+            "<h3>x</h3>\n<h3>y</h3>\n<h4>z</h4>\n"
+        );
         assert_eq!(
             html("[a](https://example.org)"),
             "<p><a href=\"https://example.org\">a</a></p>\n"

@@ -10,6 +10,7 @@ mod audit;
 mod calculation;
 mod candidates;
 mod frame;
+mod label;
 mod machine;
 mod oil;
 mod overview;
@@ -22,8 +23,9 @@ pub use audit::{AuditSheet, CrossCell, CrossRow, Evidence, Finding, Panel, Sampl
 pub use calculation::{Assumption, CalcStep, GapRow, Gaps, Put};
 pub use candidates::{Barred, Candidate, Candidates, ChangeRow, Changes, NotWeighed};
 pub use frame::{Body, Frame, Image, ImageProblem, LOGO_LIMIT, NavLink, Paper, Sheet};
+pub use label::FillLabel;
 pub use machine::{Ambient, Curves, InputLine, MachineSheet, NeedRow, Needs, Point, Summary};
-pub use oil::{OilPoint, OilSheet, OilUse};
+pub use oil::{OilLife, OilPoint, OilSheet, OilStart, OilUse};
 pub use overview::{AcceptRow, Matrix, MatrixCell, MatrixRow, OilRow, Overview};
 pub use reference::{
     Glossary, HouseRule, Method, MethodAppendix, RevisionPage, RevisionRow, RuleRow, RulesPage,

@@ -115,6 +115,9 @@ impl Templates {
         tera.register_filter("formula", |text: &str, _: Kwargs, _: &State<'_>| {
             safe(&formula::mathml(text))
         });
+        tera.register_filter("whole", |text: &str, _: Kwargs, _: &State<'_>| {
+            safe(&escape::whole(text))
+        });
         tera.register_filter(
             "markdown",
             |text: &str, options: Kwargs, _: &State<'_>| -> TeraResult<Value> {

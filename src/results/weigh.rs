@@ -5,9 +5,10 @@ use super::json::{self, Head, document};
 use crate::decide::scatter::Scatter;
 use crate::demand::Demand;
 use crate::judge::explain::Explanation;
+use crate::judge::own::Running;
 use crate::judge::weigh::{At, Margin};
-use crate::quantity::Kind;
 use crate::quantity::show::{Units, unit_of};
+use crate::quantity::{Kind, Measure};
 use crate::trace::{Derivation, StepId};
 use crate::weighing::{Barred, Candidate, Condition, Scales, Weighed};
 use serde_json::{Map, Value, json};
@@ -90,16 +91,50 @@ pub fn judgement(scales: &Scales<'_>, w: &Weighed<'_>, c: &Candidate) -> Value {
         json!({ "hot": temperature(j.at_hot, units), "start": temperature(j.at_start, units) }),
     );
     m.insert("governing".into(), governing(w, j.hot, j.cold));
+    if let Some(r) = &c.running {
+        m.insert("running".into(), running(r, &told, units));
+    }
     m.insert("conditions".into(), conditions(&c.conditions));
     m.insert("notes".into(), conditions(&c.notes));
     m.insert("because".into(), json!(c.because));
     let mut results: Vec<StepId> = told.margins.iter().map(|e| e.step).collect();
+    results.extend(&told.running);
     results.dedup();
     m.insert(
         "steps".into(),
         Value::Array(json::steps(&told.trace, &results, units)),
     );
     Value::Object(m)
+}
+
+/// How hot an oil runs by the reading and by its losses, and what it costs.
+fn running(r: &Running, told: &Explanation, units: Units) -> Value {
+    let t = |t: Option<f64>| t.map_or(Value::Null, |t| json::temperature(t, units));
+    let watts = |w: f64| json!({ "value": w, "unit": "W" });
+    let mut by_kind = Map::new();
+    for (kind, power) in &r.drag.by_kind {
+        by_kind.insert(kind.word().into(), watts(power.base()));
+    }
+    let films: Vec<Value> = r
+        .drag
+        .films
+        .iter()
+        .map(|(part, film)| json!({ "part": part, "at": t(Some(film.base())) }))
+        .collect();
+    json!({
+        "stated": t(r.stated),
+        "by_losses": t(r.by_losses),
+        "judged_at": t(r.used()),
+        "calibrated": r.calibrated,
+        "drag": {
+            "value": r.drag.total.base(), "unit": "W", "by": by_kind,
+            "ambient": t(Some(r.drag.ambient.base())), "at": t(Some(r.drag.t.base())),
+            "films": films,
+            "over_in_use": r.over_in_use.map(watts),
+            "energy": r.energy_kwh.map(|e| json!({ "value": e, "unit": "kWh a year" })),
+        },
+        "steps": told.running.iter().map(|s| json::step_name(*s)).collect::<Vec<_>>(),
+    })
 }
 
 /// A barred oil.

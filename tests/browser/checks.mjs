@@ -8,9 +8,10 @@ import { labels, numbers } from './figures.mjs';
 import { marks, forced, pictures } from './looks.mjs';
 import { paper } from './paper.mjs';
 import { valid, same, scale } from './files.mjs';
+import { states, sober } from './words.mjs';
 
 const checks = {
-  valid, same, accessible, keyboard, reflow, quiet, policy, hostile, labels, numbers, marks, forced, paper, scale, pictures,
+  valid, same, states, sober, accessible, keyboard, reflow, quiet, policy, hostile, labels, numbers, marks, forced, paper, scale, pictures,
 };
 
 const wanted = process.argv.slice(2);
@@ -19,6 +20,7 @@ mkdirSync(shots, { recursive: true });
 mkdirSync(papers, { recursive: true });
 const started = Date.now();
 if (!process.env.KEEP_PAGES) make();
+const most = Number(process.env.FAULTS ?? 25);
 let failed = 0;
 await withBrowser(async (context) => {
   for (const [name, check] of chosen) {
@@ -33,8 +35,8 @@ await withBrowser(async (context) => {
     const seconds = ((Date.now() - began) / 1000).toFixed(1);
     const bad = finding.faults.length;
     console.log(`${bad ? 'FAIL' : 'ok  '} ${name}: ${finding.looked} looked at, ${bad} faults, ${seconds} s${finding.note ? `; ${finding.note}` : ''}`);
-    for (const fault of finding.faults.slice(0, 25)) console.log(`     ${fault}`);
-    if (bad > 25) console.log(`     and ${bad - 25} more`);
+    for (const fault of finding.faults.slice(0, most)) console.log(`     ${fault}`);
+    if (bad > most) console.log(`     and ${bad - most} more`);
     failed += bad ? 1 : 0;
   }
 });

@@ -76,6 +76,7 @@ function readBack() {
     const minis = rows.map((r) => r.querySelector('svg.mini')).filter(Boolean);
     const last = minis.at(-1);
     const scale = last && marks(last, 'middle').find((m) => m.value !== 0);
+    const reach = last && Math.max(...marks(last, 'middle').map((m) => Math.abs(m.value)));
     rows.forEach((row) => {
       const svg = row.querySelector('svg.mini');
       if (!svg) return;
@@ -92,8 +93,9 @@ function readBack() {
         const right = left + at(bar, 'width');
         const length = (Math.abs(right - zero) > Math.abs(left - zero) ? right - zero : left - zero) / perStep;
         const said = num(shown[i]);
-        const end = Math.abs(length) >= 0.98 * Math.abs((228 - zero) / perStep);
-        ask(end || (said <= length + 0.011 && length - said < 0.02), `a bar of ${length.toFixed(3)} steps is called ${shown[i]}`);
+        // a bar longer than the axis ends with it
+        const cut = Math.abs(length) >= reach - 0.01 && Math.abs(said) >= reach - 0.02;
+        ask(cut || (said <= length + 0.011 && length - said < 0.02), `a bar of ${length.toFixed(3)} steps is called ${shown[i]}`);
       });
     });
   }

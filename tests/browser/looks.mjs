@@ -17,7 +17,7 @@ export async function marks(context, finding) {
       await tab.emulateMedia({ colorScheme });
       await tab.goto(url(page('demo', 'words.html')));
       await session.send('Emulation.setEmulatedVisionDeficiency', { type });
-      await session.send('Emulation.setPageScaleFactor', { pageScaleFactor: 1 });
+      await tab.bringToFront();
       for (const word of words) {
         const png = await tab.locator(`.words .vd-${word} .mk`).screenshot({ path: path.join(shots, `mark-${word}-${type}-${colorScheme}.png`) });
         seen.push({ word, where: `${type} ${colorScheme}`, shape: await lens.evaluate(shape, png.toString('base64')) });
@@ -84,8 +84,9 @@ function visible() {
   }
   for (const t of document.querySelectorAll('svg text')) {
     looked += 1;
-    const box = t.closest('g')?.querySelector('.bal-pick');
-    if (getComputedStyle(t).fill === ground && !box && !t.classList.contains('t-in')) faults.add(`the label ${t.textContent} cannot be seen`);
+    // these stand on a filled mark
+    const filled = t.classList.contains('t-pick') || t.classList.contains('t-in');
+    if (getComputedStyle(t).fill === ground && !filled) faults.add(`the label ${t.textContent} cannot be seen`);
   }
   return { looked, faults: [...faults] };
 }

@@ -22,14 +22,17 @@ function boxes(pdf) {
   });
 }
 
-const text = (pdf, ...more) => run('pdftotext', '-layout', ...more, pdf, '-');
+// in the order of the page and in that of its lines: words in columns stand together in one of them
+const text = (pdf, ...more) => run('pdftotext', ...more, pdf, '-') + run('pdftotext', '-layout', ...more, pdf, '-');
 const squeeze = (t) => t.replace(/[\s\u202f\u00a0\u00ad]+/g, '').replace(/-/g, '\u2010');
 
 /** Puts marks of one pixel into heads, rows and figures, to find on paper where each begins and ends. */
 function plant() {
   let n = 0;
   const mark = (into, first, word) => {
-    const e = document.createElement('span');
+    // at the end a block of its own, so that it stands below all else at the left of its cell
+    const e = document.createElement(first ? 'span' : 'div');
+    e.style.textAlign = 'left';
     e.textContent = word;
     e.style.fontSize = '1px';
     e.style.lineHeight = '0';
@@ -54,12 +57,12 @@ function plant() {
   for (const svg of document.querySelectorAll('figure svg.fig-svg, .panels svg')) {
     n += 1;
     const box = svg.viewBox.baseVal;
-    for (const [word, y] of [[`qf${n}q`, box.y + 1], [`qg${n}q`, box.y + box.height]]) {
+    for (const [word, y] of [[`qf${n}q`, box.y + 2], [`qg${n}q`, box.y + box.height - 1]]) {
       const t = document.createElementNS('http://www.w3.org/2000/svg', 'text');
       t.textContent = word;
       t.setAttribute('x', box.x);
       t.setAttribute('y', y);
-      t.style.fontSize = '1px';
+      t.style.fontSize = '2px';
       svg.append(t);
     }
     made.figures.push({ n, name: svg.querySelector('title')?.textContent ?? '' });
@@ -69,7 +72,9 @@ function plant() {
 
 /** What the sheet says that its paper must hold. */
 function said() {
-  const t = (s) => [...document.querySelectorAll(s)].map((e) => e.textContent.trim()).filter(Boolean);
+  // words for those who cannot see a mark stand for the mark, which is printed
+  const seen = (e) => { const copy = e.cloneNode(true); copy.querySelectorAll('.sr').forEach((s) => s.remove()); return copy.textContent.trim(); };
+  const t = (s) => [...document.querySelectorAll(s)].map(seen).filter(Boolean);
   const governing = [...document.querySelectorAll('tr.pick td[data-l="Limit"] b')].map((e) => e.textContent.trim());
   const margins = [...document.querySelectorAll('tr.pick td[data-l="Margins"] text.t-dim')].map((e) => e.textContent);
   const results = [...document.querySelectorAll('.calc .gov .r b')].map((e) => e.textContent.trim());

@@ -1,18 +1,24 @@
 //! Everything tested from outside the crate, in one binary.
 
+mod audit;
 mod chance;
 mod checks;
 mod compare;
 mod decide;
 mod demo;
 mod determinism;
+mod editor;
 mod exact;
 mod hostile;
+mod intake;
 mod journal_heat;
 mod journal_table;
 mod judging;
 mod layers;
+mod part_kinds;
+mod plain;
 mod pool;
+mod practice_parts;
 mod problems;
 mod properties_film;
 mod properties_oil;

@@ -128,11 +128,13 @@ impl Read {
             };
             if open.is("text") {
                 let attr = |name| open.attr(name).expect("set").to_owned();
+                // the anchor of SVG where none is said
+                let anchor = open.attr("text-anchor").unwrap_or("start").to_owned();
                 out.push(Word {
                     x: open.num("x"),
                     y: open.num("y"),
                     class: attr("class"),
-                    anchor: attr("text-anchor"),
+                    anchor,
                     text: text.clone(),
                 });
             }

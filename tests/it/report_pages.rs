@@ -97,7 +97,8 @@ fn several_sheets_in_one_file_keep_their_ids_apart() {
     structure::headings_descend("bundle", &tags);
 }
 
-/// `cargo test -- --ignored write_pages` puts every page into `target/report-pages`, to be looked at.
+/// `cargo test -- --ignored write_pages` puts every page into `target/report-pages`, or into the
+/// folder of `FILMWRIGHT_PAGES`, to be looked at and to be opened by the browser's checks.
 #[test]
 #[ignore = "writes files to look at"]
 #[expect(
@@ -105,8 +106,9 @@ fn several_sheets_in_one_file_keep_their_ids_apart() {
     reason = "a tool for looking at the pages, not part of the program"
 )]
 fn write_pages() {
-    let folder = concat!(env!("CARGO_MANIFEST_DIR"), "/target/report-pages");
-    std::fs::create_dir_all(folder).expect("a folder");
+    let usual = concat!(env!("CARGO_MANIFEST_DIR"), "/target/report-pages");
+    let folder = std::env::var("FILMWRIGHT_PAGES").unwrap_or_else(|_| usual.to_owned());
+    std::fs::create_dir_all(&folder).expect("a folder");
     for (name, sheet) in all() {
         let page = templates().page(&fixtures::frame(), &sheet).expect(name);
         std::fs::write(format!("{folder}/{name}.html"), page).expect("written");

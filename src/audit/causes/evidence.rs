@@ -5,7 +5,7 @@ use super::likelihood::{Sample, Seen, apart, expected};
 use super::theta::{Theta, share_by_viscosity};
 use crate::audit::profile::{Profile, index};
 use crate::model::sample::Reading;
-use crate::numeric::math::exp;
+use crate::numeric::math::{exp, ln};
 use crate::quantity::show::{Toward, fixed, significant};
 
 /// One line of evidence.
@@ -155,9 +155,7 @@ fn figure(seen: &Seen, theta: &Theta, none: &Theta) -> Option<Evidence> {
 /// For where the cause explains what unchanged oil would not; against where it expects another
 /// figure; a figure that stays as the cause leaves it counts a little.
 fn line(reading: Reading, says: String, z: f64, z0: f64, differs: bool) -> Option<Evidence> {
-    let gain = 2.5
-        * (crate::numeric::math::ln(1.0 + 0.25 * z0 * z0)
-            - crate::numeric::math::ln(1.0 + 0.25 * z * z));
+    let gain = 4.0 * (ln(1.0 + z0 * z0 / 7.0) - ln(1.0 + z * z / 7.0));
     if z.abs() > FAR {
         Some(Evidence::against(
             reading.key(),

@@ -1,6 +1,6 @@
 //! How well the figures of a sample fit a setting of a cause.
 //!
-//! Figures are compared by a distribution with heavy tails (Student, four degrees of freedom): one
+//! Figures are compared by a distribution with heavy tails (Student, seven degrees of freedom): one
 //! odd figure does not outweigh the others. The two viscosities share what moves both alike, the
 //! batch and the drift of service, so that their ratio counts more than either.
 
@@ -38,7 +38,7 @@ pub(super) struct Sample {
 }
 
 /// Drift of service that is no cause, one standard deviation as a share.
-const DRIFT: f64 = 0.008;
+const DRIFT: f64 = 0.006;
 
 impl Sample {
     pub(super) fn new(figures: &Figures, label: &Profile, scatter: &Scatter) -> Self {
@@ -100,7 +100,7 @@ impl Sample {
                 );
                 let det = va * vb - c * c;
                 let m = (vb * ra * ra - 2.0 * c * ra * rb + va * rb * rb) / det;
-                -0.5 * ln(det) - 3.0 * ln(1.0 + 0.25 * m)
+                -0.5 * ln(det) - 4.5 * ln(1.0 + m / 7.0)
             }
             [Some((a, v)), None] => student(a - theta.d[0], v + model + self.common),
             [None, Some((b, v))] => student(b - theta.d[1], v + model + self.common),
@@ -115,9 +115,9 @@ impl Sample {
     }
 }
 
-/// Log of the density of a Student distribution of four degrees of freedom, without its constant.
+/// Log of the density of a Student distribution of seven degrees of freedom, without its constant.
 fn student(r: f64, variance: f64) -> f64 {
-    -0.5 * ln(variance) - 2.5 * ln(1.0 + 0.25 * r * r / variance)
+    -0.5 * ln(variance) - 4.0 * ln(1.0 + r * r / (7.0 * variance))
 }
 
 /// The value a setting expects of a figure, and its variance without that of the test.

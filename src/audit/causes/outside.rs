@@ -9,7 +9,7 @@ use crate::quantity::convert::{mm2_s, number, to_mm2_s};
 use crate::relation::oil::base_stock::BaseStock;
 use crate::relation::oil::viscosity_index;
 use std::collections::BTreeMap;
-use std::rc::Rc;
+use std::sync::Arc;
 
 /// A kind of oil: name, base, viscosity index, zinc, phosphorus and calcium in ppm, acid number
 /// and flash point rising from the thin grades to the thick (common practice, orders of size).
@@ -132,7 +132,7 @@ const SORTS: &[Sort] = &[
 ];
 
 /// The oils not on the site.
-pub(super) fn oils() -> Vec<Rc<Mixed>> {
+pub(super) fn oils() -> Vec<Arc<Mixed>> {
     let mut all = Vec::new();
     for sort in SORTS {
         for grade in sort.grades {
@@ -142,7 +142,7 @@ pub(super) fn oils() -> Vec<Rc<Mixed>> {
     all
 }
 
-fn one(sort: &Sort, nu40: f64) -> Option<Rc<Mixed>> {
+fn one(sort: &Sort, nu40: f64) -> Option<Arc<Mixed>> {
     let nu100 = to_mm2_s(viscosity_index::nu100(mm2_s(nu40), number(sort.vi)).ok()?);
     let mut figures = BTreeMap::new();
     let mut put = |reading, value: f64, spread: f64| {
@@ -169,8 +169,8 @@ fn one(sort: &Sort, nu40: f64) -> Option<Rc<Mixed>> {
     };
     put(Reading::Density, density.0, density.1);
     let says = format!("{}, VG {nu40}", sort.name);
-    Some(Rc::new(Mixed {
-        profile: Rc::new(Profile {
+    Some(Arc::new(Mixed {
+        profile: Arc::new(Profile {
             ln40: ln(nu40),
             ln100: ln(nu100),
             viscosity_from: From::Usual,

@@ -11,7 +11,7 @@ use crate::numeric::math::{exp, ln};
 use crate::quantity::Measure;
 use crate::quantity::convert::{mm2_s, number, to_mm2_s};
 use crate::relation::oil::blend::Rule;
-use std::rc::Rc;
+use std::sync::Arc;
 
 /// A shift of a figure, with how far it may lie from it.
 #[derive(Clone, Copy, Debug, Default, PartialEq)]
@@ -24,11 +24,11 @@ pub(super) struct Shift {
 #[derive(Clone, Debug)]
 pub(super) struct Mixed {
     /// Its profile.
-    pub(super) profile: Rc<Profile>,
+    pub(super) profile: Arc<Profile>,
     /// Its place in the oil list; none for an oil that is not on the site.
     pub(super) oil: Option<usize>,
     /// What it is, where it is not on the site.
-    pub(super) says: Rc<str>,
+    pub(super) says: Arc<str>,
 }
 
 /// One setting of one cause, or of two at once.
@@ -51,7 +51,7 @@ pub(super) struct Theta {
     /// Share of the labelled oil left.
     pub(super) kept: f64,
     /// The oil mixed in; its share is what is not kept.
-    pub(super) mixed: Option<Rc<Mixed>>,
+    pub(super) mixed: Option<Arc<Mixed>>,
     /// How far it has gone: a share lost, a share mixed in, a rise.
     pub(super) size: f64,
 }
@@ -136,7 +136,7 @@ pub struct Setting {
 }
 
 impl Grid {
-    pub(super) fn new(label: &Profile, setting: Setting, others: &[Rc<Mixed>]) -> Self {
+    pub(super) fn new(label: &Profile, setting: Setting, others: &[Arc<Mixed>]) -> Self {
         let shear = shear(label);
         let dilution = dilution(label, setting);
         let oxidation = oxidation();
@@ -154,7 +154,7 @@ impl Grid {
         };
         let (few_shear, few_dilution, few_oxidation) =
             (some(&shear, 3), some(&dilution, 3), some(&oxidation, 5));
-        let few_wrong = some(&wrong, 2);
+        let few_wrong = some(&wrong, 4);
         cross(&few_shear, &few_oxidation, &mut pairs);
         cross(&few_shear, &few_dilution, &mut pairs);
         cross(&few_dilution, &few_oxidation, &mut pairs);
@@ -351,7 +351,7 @@ const SHARES: [f64; 12] = [
 ];
 
 /// Other oils: those of the site, and as likely in all one that is not on the site.
-fn wrong(label: &Profile, others: &[Rc<Mixed>]) -> Vec<Theta> {
+fn wrong(label: &Profile, others: &[Arc<Mixed>]) -> Vec<Theta> {
     let (mut inside, mut outside) = (Vec::new(), Vec::new());
     for other in others {
         let profile = &other.profile;

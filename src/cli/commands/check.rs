@@ -2,7 +2,9 @@
 
 use crate::cli::Format;
 use crate::cli::exit::Exit;
+use crate::cli::load::Loaded;
 use crate::cli::session::Session;
+use crate::results::csv::{Cell, Table};
 use crate::weighing::{Scales, Settings, Weighed};
 use std::fmt::Write as _;
 
@@ -41,6 +43,8 @@ pub fn check(session: &mut Session<'_>) -> Exit {
     if session.wants(Format::Json) {
         let text = loaded.problems_json(&unmet);
         session.result(&text);
+    } else if session.wants(Format::Csv) {
+        session.table(&table(&loaded, &unmet));
     } else {
         let mut text = format!(
             "{} with {}, {} read\n",
@@ -57,6 +61,37 @@ pub fn check(session: &mut Session<'_>) -> Exit {
         Exit::Done
     } else {
         Exit::Input
+    }
+}
+
+/// Problems and unmet expectations as a table.
+fn table(loaded: &Loaded, unmet: &[String]) -> Table {
+    let maybe = |t: &Option<String>| Cell::maybe(t.as_deref());
+    let mut rows: Vec<Vec<Cell>> = loaded
+        .problems
+        .sorted()
+        .into_iter()
+        .map(|p| {
+            vec![
+                Cell::from(p.severity.word()),
+                Cell::from(p.code.as_str()),
+                Cell::from(loaded.place(&p.place).as_str()),
+                maybe(&p.within),
+                Cell::from(p.message.as_str()),
+                maybe(&p.why),
+            ]
+        })
+        .collect();
+    rows.extend(unmet.iter().map(|line| {
+        let mut row = vec![Cell::from("not as expected")];
+        row.extend([Cell::Empty, Cell::Empty, Cell::Empty]);
+        row.extend([Cell::from(line.as_str()), Cell::Empty]);
+        row
+    }));
+    let headings = ["severity", "name", "place", "within", "message", "why"];
+    Table {
+        headings: headings.map(str::to_owned).to_vec(),
+        rows,
     }
 }
 

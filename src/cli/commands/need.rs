@@ -8,6 +8,7 @@ use crate::cli::{Format, Need};
 use crate::decide::ask::{Ask, ask};
 use crate::demand::{PointDemands, point_demands};
 use crate::model::Point;
+use crate::results::csv::{Cell, Table};
 use crate::results::decided::ask as ask_value;
 use crate::results::need::{document_of, table_of};
 use crate::weighing::{Scales, Settings, Weighed};
@@ -25,6 +26,23 @@ pub fn need(session: &mut Session<'_>, args: &Need) -> Exit {
 
 fn from_files(session: &mut Session<'_>, args: &Need) -> Result<Exit, Exit> {
     let loaded = session.load(&[])?;
+    if args.list && session.wants(Format::Csv) {
+        let rows = loaded.site.points.iter().map(|p| {
+            vec![
+                Cell::from(p.machine.as_str()),
+                Cell::maybe(p.point.as_deref()),
+                Cell::maybe(p.title.as_deref()),
+                Cell::maybe(p.area.as_deref()),
+            ]
+        });
+        let table = Table {
+            headings: ["machine", "point", "name", "area"]
+                .map(str::to_owned)
+                .to_vec(),
+            rows: rows.collect(),
+        };
+        return Ok(session.table(&table));
+    }
     if args.list {
         let mut lines = String::new();
         for p in &loaded.site.points {

@@ -52,6 +52,9 @@ fn run(session: &mut Session<'_>, args: &Args) -> Result<Exit, Exit> {
     let written = pages::write(session, &mut report, &templates, &target)?;
     let head = session.head(&loaded);
     tell(session, &head, &target, &written);
+    if let Some(path) = &args.xlsx {
+        super::workbook::write(session, &scales, &loaded, &points, Path::new(path))?;
+    }
     let tripped = session.shared.gate.is_some_and(|gate| {
         let level = |v: Verdict| match v {
             Verdict::Holds => None,

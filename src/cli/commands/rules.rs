@@ -7,6 +7,7 @@ use crate::cli::text::folded;
 use crate::cli::{Format, Rules};
 use crate::demand::rules::CALCULATED;
 use crate::input::rules::listing::{Listed, listing};
+use crate::results::csv::{Cell, Table};
 use serde_json::json;
 use std::fmt::Write as _;
 
@@ -49,6 +50,9 @@ pub fn rules(session: &mut Session<'_>, args: &Rules) -> Exit {
         text.push('\n');
         return session.result(&text);
     }
+    if session.wants(Format::Csv) {
+        return session.table(&table(&chosen));
+    }
     let text = if args.rules.is_empty() {
         overview(&chosen, session.width())
     } else {
@@ -59,6 +63,26 @@ pub fn rules(session: &mut Session<'_>, args: &Rules) -> Exit {
             .join("\n")
     };
     session.result(&text)
+}
+
+/// A row a field, so that entries of different kinds share a table.
+fn table(chosen: &[&Listed]) -> Table {
+    let mut rows = Vec::new();
+    for r in chosen {
+        for (field, says) in &r.says {
+            rows.push(
+                [&r.kind, &r.id, &r.title, field, says, &r.file]
+                    .map(|t| Cell::from(t.as_str()))
+                    .to_vec(),
+            );
+        }
+    }
+    Table {
+        headings: ["kind", "id", "title", "field", "says", "file"]
+            .map(str::to_owned)
+            .to_vec(),
+        rows,
+    }
 }
 
 fn folded_name(name: &str) -> String {

@@ -44,10 +44,14 @@ fn run(
     let wanted = session.oils(&loaded.site, &args.oil)?;
     let scales = Scales::new(&loaded.site, &loaded.rules, settings)
         .map_err(|(oil, misfit)| session.misfit(&oil, &misfit))?;
-    let mut all: Vec<Weighed<'_>> = points
-        .into_iter()
-        .map(|p: &Point| scales.weigh(p))
-        .collect();
+    let of = points.len();
+    let mut all: Vec<Weighed<'_>> = Vec::with_capacity(of);
+    for point in points {
+        let point: &Point = point;
+        all.push(scales.weigh(point));
+        session.progress("weighing points", all.len(), of);
+    }
+    session.host.progress_end();
     let tripped: Vec<String> = session.shared.gate.map_or_else(Vec::new, |gate| {
         all.iter()
             .flat_map(|w| trips(&scales, w, gate, wanted.as_deref()))

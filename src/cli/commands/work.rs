@@ -16,6 +16,8 @@ pub fn work(session: &mut Session<'_>, args: &Work) -> Exit {
         let all: Vec<_> = relations().collect();
         return if session.wants(Format::Json) {
             session.result(&text::register(&all))
+        } else if session.wants(Format::Csv) {
+            session.table(&text::csv_table(&all))
         } else {
             session.result(&text::list(&all))
         };

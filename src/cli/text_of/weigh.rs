@@ -48,6 +48,7 @@ pub fn one(scales: &Scales<'_>, w: &Weighed<'_>, style: Style) -> String {
             .collect();
         out.push_str(&candidates(&rows, style.width));
     }
+    super::running::running(&mut out, scales, w, style.width);
     conditions(&mut out, scales, w, style);
     barred(&mut out, scales, w, style);
     ambient(&mut out, scales, w);

@@ -3,6 +3,7 @@
 use super::why;
 use crate::cli::text::{Column, folded, table};
 use crate::quantity::show::{Units, significant};
+use crate::results::csv::{Cell, Table};
 use crate::work::{Need, Relation, Value, Worked};
 use std::fmt::Write as _;
 
@@ -90,6 +91,31 @@ pub fn worked(worked: &Worked, units: Units, width: usize) -> String {
         String::new()
     }));
     out
+}
+
+/// The relations as a table.
+pub fn csv_table(relations: &[&Relation]) -> Table {
+    let headings = [
+        "relation", "group", "title", "formula", "range", "source", "with", "gives",
+    ];
+    let rows = relations.iter().map(|r| {
+        let with: Vec<&str> = r.with.iter().map(|i| i.name).collect();
+        let gives: Vec<&str> = r.gives.iter().map(|(n, _)| *n).collect();
+        vec![
+            Cell::from(r.name),
+            Cell::from(r.group),
+            Cell::from(r.law.title),
+            Cell::from(r.law.formula),
+            Cell::from(r.law.range),
+            Cell::from(r.law.source),
+            Cell::from(with.join(", ").as_str()),
+            Cell::from(gives.join(", ").as_str()),
+        ]
+    });
+    Table {
+        headings: headings.map(str::to_owned).to_vec(),
+        rows: rows.collect(),
+    }
 }
 
 /// The register as JSON: what each relation takes and gives.

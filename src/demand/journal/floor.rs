@@ -101,7 +101,7 @@ fn asked<R: Recorder>(
     b: &JournalBearing,
     shape: &Shape,
 ) -> (Known<Length>, String, String, String, Whose) {
-    if let Some((film, rule, source)) = cx.house_film(part) {
+    if let Some((film, rule, source)) = cx.house_film(part, FILM_RULE) {
         let says = format!("film >= {} um", shown(film.value));
         return (film, says, rule, source, Whose::House);
     }

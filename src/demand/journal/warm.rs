@@ -16,7 +16,7 @@ use crate::trace::{Known, Recorder};
 
 /// What takes the heat of the film away.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
-pub(super) enum Cooled {
+pub(in crate::demand) enum Cooled {
     /// The oil fed.
     ByOil,
     /// The housing, which is as warm as its sump.
@@ -25,19 +25,19 @@ pub(super) enum Cooled {
 
 /// The oil that reaches the film.
 #[derive(Clone, Copy)]
-pub(super) struct Oil {
+pub(in crate::demand) struct Oil {
     /// Its temperature; that of the film, where the rise of the part is stated.
-    pub(super) at: HotAt,
+    pub(in crate::demand) at: HotAt,
     /// Whether the rise of the part is stated and already in it.
-    pub(super) risen: bool,
+    pub(in crate::demand) risen: bool,
     /// What cools the film.
-    pub(super) cooled: Cooled,
+    pub(in crate::demand) cooled: Cooled,
 }
 
 const FEED_HOW: &str = "look at the bearing: supply line, ring, or dipping";
 
 /// Reads how the oil gets in and how warm it is there.
-pub(super) fn oil<R: Recorder>(
+pub(in crate::demand) fn oil<R: Recorder>(
     cx: &mut Context<'_, '_, R>,
     part: &Part,
     b: &JournalBearing,

@@ -1,8 +1,9 @@
 //! Losses of rolling and plain bearings.
 
-use super::{Form, LossKind, Source, Unknown, With, known, sealed};
+use super::{Form, Inlet, LossKind, Source, Unknown, With, known, sealed};
 use crate::demand::context::Context;
 use crate::demand::inputs::Wanted;
+use crate::demand::journal::warm::Cooled;
 use crate::model::Lubrication;
 use crate::model::part::{BearingClass, JournalBearing, Part, RollingBearing, ThrustBearing};
 use crate::quantity::convert::number;
@@ -162,6 +163,13 @@ pub(super) fn journal<R: Recorder>(
         .flatten();
     cx.undecided.truncate(said);
     let shape = shape.ok_or("sizes, load or speed of a journal bearing are missing")?;
+    let oil = crate::demand::journal::warm::oil(cx, part, b);
+    let fed = oil.at.hottest.filter(|_| b.feed_temperature.is_some());
+    let inlet = match (oil.cooled, fed) {
+        (Cooled::ByHousing, _) => Inlet::Sump,
+        (Cooled::ByOil, Some(t)) => Inlet::Fed(t.value),
+        (Cooled::ByOil, None) => Inlet::FedAsSump,
+    };
     let (f, d, w, c, n) = shape.sized();
     let with = vec![
         (f.0, f.1.step),
@@ -174,7 +182,10 @@ pub(super) fn journal<R: Recorder>(
         kind: LossKind::Bearing,
         part: part.label.clone(),
         with: With(with),
-        form: Form::Journal(Box::new(shape.bearing)),
+        form: Form::Journal {
+            bearing: Box::new(shape.bearing),
+            inlet,
+        },
     });
     sealed(cx, part, shape.diameter, shape.speed, out);
     Ok(())

@@ -70,79 +70,35 @@ fn pair<R: Recorder>(
     part: &Part,
     m: &GearMesh,
 ) -> Result<Pair, Unknown> {
-    let (z1, z2) = m
-        .teeth
-        .as_ref()
-        .ok_or("the teeth of a gear mesh are missing")?
-        .value;
-    let module = cx.maybe(
-        part,
-        wanted("normal module", "m_n", "normal module"),
-        known(m.normal_module.as_ref()),
-    );
-    let module = module.ok_or("the module of a gear mesh is missing")?;
-    let width = cx.maybe(
-        part,
-        wanted("face width", "b", "face width"),
-        known(m.face_width.as_ref()),
-    );
-    let width = width.ok_or("the face width of a gear mesh is missing")?;
-    let speed = cx.maybe(
-        part,
-        wanted("pinion speed", "n1", "pinion speed"),
-        known(m.pinion_speed.as_ref()),
-    );
-    let speed = speed.ok_or("the pinion speed of a gear mesh is missing")?;
-    let angle = |cx: &mut Context<'_, '_, R>, key, symbol, stated, usual: f64| -> Angle {
-        let known: Option<Known<Angle>> = cx.maybe(part, wanted(key, symbol, key), stated);
-        known.map_or(degrees(usual), |k| k.value)
-    };
-    let usual = if m.kind == Some(GearType::Helical) {
-        12.0
-    } else {
-        0.0
-    };
-    let helix = angle(cx, "helix", "beta", known(m.helix.as_ref()), usual);
-    let pressure = angle(
-        cx,
-        "pressure angle",
-        "alpha",
-        known(m.pressure_angle.as_ref()),
-        20.0,
-    );
-    let teeth = Teeth {
-        z1: number(f64::from(z1)),
-        z2: number(f64::from(z2)),
-        normal_module: module.value,
-        helix,
-        pressure_angle: pressure,
-    };
-    let none = "the teeth of a gear mesh do not fit its centre distance";
-    let standard = Mesh::standard(teeth).map_err(|_| none)?;
-    let stated = cx.maybe(
-        part,
-        wanted("centre distance", "a", "centre distance"),
-        known(m.centre_distance.as_ref()),
-    );
-    let mesh = match &stated {
-        Some(a) => Mesh::new(teeth, a.value).map_err(|_| none)?,
-        None => standard,
-    };
-    let path = Path::new(&mesh, Tips::standard(&mesh)).map_err(|_| none)?;
     let given = m
         .teeth
         .as_ref()
-        .map(|t| t.clone().map(|(z1, _)| number(f64::from(z1))));
-    let z: Option<Known<Ratio>> = given.map(|z| cx.r.given("z1", "teeth of the pinion", &z));
+        .ok_or("the teeth of a gear mesh are missing")?;
+    let key = wanted("normal module", "m_n", "normal module");
+    let module = cx.maybe(part, key, known(m.normal_module.as_ref()));
+    let module = module.ok_or("the module of a gear mesh is missing")?;
+    let key = wanted("face width", "b", "face width");
+    let width = cx.maybe(part, key, known(m.face_width.as_ref()));
+    let width = width.ok_or("the face width of a gear mesh is missing")?;
+    let key = wanted("pinion speed", "n1", "pinion speed");
+    let speed = cx.maybe(part, key, known(m.pinion_speed.as_ref()));
+    let speed = speed.ok_or("the pinion speed of a gear mesh is missing")?;
+    let teeth = teeth(cx, part, m, (given.value, module.value));
+    let key = wanted("centre distance", "a", "centre distance");
+    let stated: Option<Known<Length>> = cx.maybe(part, key, known(m.centre_distance.as_ref()));
+    let mesh = match &stated {
+        Some(a) => Mesh::new(teeth, a.value),
+        None => Mesh::standard(teeth),
+    };
+    let path = mesh.and_then(|mesh| Ok((mesh, Path::new(&mesh, Tips::standard(&mesh))?)));
+    let (mesh, path) =
+        path.map_err(|_| "the teeth of a gear mesh do not fit its centre distance")?;
+    let z = given.clone().map(|_| teeth.z1);
+    let z: Known<Ratio> = cx.r.given("z1", "teeth of the pinion", &z);
     let centre = stated.unwrap_or_else(|| {
-        let z = z.unwrap_or(Known {
-            value: teeth.z1,
-            step: module.step,
-        });
         let says = "centre distance without profile shift";
-        cx.r.law("a", says, &MESH, (("m_n", module), ("z1", z)), |_| {
-            mesh.centre_distance
-        })
+        let with = (("m_n", module), ("z1", z));
+        cx.r.law("a", says, &MESH, with, |_| mesh.centre_distance)
     });
     Ok(Pair {
         mesh,
@@ -152,6 +108,36 @@ fn pair<R: Recorder>(
         module,
         centre,
     })
+}
+
+/// The teeth, with usual angles where none are stated.
+fn teeth<R: Recorder>(
+    cx: &mut Context<'_, '_, R>,
+    part: &Part,
+    m: &GearMesh,
+    ((z1, z2), normal_module): ((u32, u32), Length),
+) -> Teeth {
+    let mut angle = |key, symbol, stated, usual: f64| -> Angle {
+        let known: Option<Known<Angle>> = cx.maybe(part, wanted(key, symbol, key), stated);
+        known.map_or(degrees(usual), |k| k.value)
+    };
+    let usual = if m.kind == Some(GearType::Helical) {
+        12.0
+    } else {
+        0.0
+    };
+    Teeth {
+        z1: number(f64::from(z1)),
+        z2: number(f64::from(z2)),
+        normal_module,
+        helix: angle("helix", "beta", known(m.helix.as_ref()), usual),
+        pressure_angle: angle(
+            "pressure angle",
+            "alpha",
+            known(m.pressure_angle.as_ref()),
+            20.0,
+        ),
+    }
 }
 
 fn rubbing<R: Recorder>(

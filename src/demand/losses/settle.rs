@@ -49,6 +49,8 @@ pub struct Drag {
     pub by_kind: Vec<(LossKind, Power)>,
     /// Losses together.
     pub total: Power,
+    /// Temperature of the films that oil is fed to, by part.
+    pub films: Vec<(String, ThermodynamicTemperature)>,
 }
 
 impl Losses {
@@ -123,6 +125,7 @@ impl Losses {
             t: at.t,
             by_kind,
             total: Power::from_base(total),
+            films: self.films(oil, at.t),
         }
     }
 

@@ -144,6 +144,7 @@ const MACHINE_KEYS: &[Key] = &[
     key("used oil", Form::Record(&USED_OIL), "practice by class (rules, used-oil limits)", "Limits of the oil in use by the maker or the house: watch .. act."),
     key("parts", Form::Parts, "error if empty", "What the fill serves; on the machine or on its points."),
     key("allow", Form::Names, "–", "Names of warnings silenced for this machine."),
+    key("notes", Form::Markdown, "–", "Remarks for its sheet, and what was not understood of its register row."),
     key("register row", Form::Whole, "–", "Row of the register it was taken from."),
 ];
 

@@ -222,7 +222,7 @@ pub static THRUST_BEARING: Record = part!("a thrust bearing", &[
         key("speed", stated(SPEED), "gap", "Speed of the collar."),
         key("load", stated(FORCE), "gap", "Load on all pads together."),
         key("type", Form::Word(PAD_TYPE), "gap", "Whether the pads tilt."),
-        key("ratio", stated(NUMBER), "the best", "Film at the inlet over film at the outlet."),
+        key("ratio", Form::Quantity(Want::stated(NUMBER).such_as("2.2")), "2.2, close to the best", "Film at the inlet over film at the outlet."),
     ]
 );
 

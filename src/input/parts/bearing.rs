@@ -220,7 +220,6 @@ fn inner(reader: &mut Reader<'_>, fields: &Fields<'_>) -> Option<InnerGeometry> 
 #[cfg(test)]
 mod tests {
     use super::*;
-    use crate::relation::bearing::designation::DimensionTable;
 
     #[test]
     fn a_fraction_is_no_suffix() {

@@ -276,11 +276,6 @@ pub(super) fn thrust(reader: &mut Reader<'_>, fields: &Fields<'_>) -> ThrustBear
         fields.stated(reader, "load"),
     );
     let pads = number(fields.whole(reader, "pads"));
-    if pads.as_ref().is_some_and(|n| n.value.base() < 1.0) {
-        let what = "pads must be above zero".to_owned();
-        let why = "a thrust bearing has at least one pad".to_owned();
-        impossible(reader, fields, "pads", what, why, "8".to_owned());
-    }
     let ratio: Option<Stated<Ratio>> = fields.stated(reader, "ratio");
     ThrustBearing {
         pads,

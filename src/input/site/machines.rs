@@ -25,7 +25,7 @@ const OF_THE_PLACE: &[&str] = &[
 ];
 
 const COPYING: Copying = Copying {
-    never: &["like", "name", "register row"],
+    never: &["like", "name", "notes", "register row"],
     together: &[SUMP],
 };
 
@@ -127,8 +127,8 @@ fn points_of<'t>(
         let more = if elsewhere { OF_THE_PLACE } else { &[] };
         let mut except = COPYING.except(&fields, more);
         except.push("points");
-        // the machine's name is that of its points; a sister machine's is not
-        except.retain(|key| *key != "name");
+        // name, notes and row of the machine are those of its points; a sister machine's are not
+        except.retain(|key| !matches!(*key, "name" | "notes" | "register row"));
         fields.inherit(&machine, &format!("machine {tag}"), &except);
         inherit_area(reader, &mut fields, scene);
         let named = point::Named {

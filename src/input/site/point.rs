@@ -5,10 +5,13 @@ use crate::input::fields::{Fields, Slot};
 use crate::input::overlay;
 use crate::input::parts;
 use crate::input::reader::Reader;
-use crate::model::machine::{InputLine, OilNow, Point, Sump};
+use crate::model::machine::{InputLine, Lubrication, OilNow, Point, Sump};
+use crate::model::part::PartKind;
 use crate::model::stated::{Between, Stated};
 use crate::problem::{Code, Write, suggest};
 use crate::quantity::{Measure, ThermodynamicTemperature};
+use crate::source::Origin;
+use crate::source::place::{Given, Whose};
 use crate::source::yaml::Entry;
 
 /// What a point is called and where it is written.
@@ -27,6 +30,7 @@ const NOT_INPUTS: &[&str] = &[
     "parts",
     "allow",
     "register row",
+    "notes",
     "losses",
     "regrease",
     "used oil",
@@ -89,13 +93,34 @@ pub(super) fn read<'t>(
         allow: values::allow(reader, &fields),
         inputs: inputs(reader, &fields),
         parts: std::mem::take(&mut parts.list),
-        notes: Vec::new(),
+        notes: fields.text(reader, "notes").into_iter().collect(),
         origin: fields.origin(),
     };
     point.inputs.append(&mut parts.inputs);
     facts::from_parts(&mut point);
+    greased_by_component(&mut point, scene);
     checks::unusual(reader, &fields, &point);
     point
+}
+
+/// A component that only grease serves makes a grease point of one whose lubrication nobody
+/// states.
+fn greased_by_component(point: &mut Point, scene: &Scene<'_, '_>) {
+    if point.lubrication.is_some() {
+        return;
+    }
+    let components = &scene.known.rules.components;
+    let found = point.parts.iter().find_map(|part| match &part.kind {
+        PartKind::Component(c) => {
+            let window = components.get(&c.id)?;
+            (window.lubrication == Some(Lubrication::Grease)).then(|| window.id.clone())
+        }
+        _ => None,
+    });
+    if let Some(id) = found {
+        let origin = Origin::rule(id, Whose::Standard);
+        point.lubrication = Some(Given::new(Lubrication::Grease, "grease", origin));
+    }
 }
 
 /// Ambient, running and start temperatures, compared with each other.

@@ -75,37 +75,6 @@ pub struct ByRegime {
     pub piezoviscous_elastic: Ratio,
 }
 
-impl ByRegime {
-    /// The larger of a film by a closer formula of the piezoviscous-elastic regime and the films
-    /// of the other three, with the regime it belongs to.
-    pub fn with_hard(self, hard: Length) -> (Length, Regime) {
-        let scale = self.film.base() / self.largest();
-        let others = [
-            (self.isoviscous_rigid, Regime::IsoviscousRigid),
-            (self.piezoviscous_rigid, Regime::PiezoviscousRigid),
-            (self.isoviscous_elastic, Regime::IsoviscousElastic),
-        ];
-        let mut best = (hard, Regime::PiezoviscousElastic);
-        for (parameter, regime) in others {
-            let film = Length::from_base(parameter.base() * scale);
-            if film > best.0 {
-                best = (film, regime);
-            }
-        }
-        best
-    }
-
-    fn largest(&self) -> f64 {
-        let all = [
-            self.isoviscous_rigid,
-            self.piezoviscous_rigid,
-            self.isoviscous_elastic,
-            self.piezoviscous_elastic,
-        ];
-        all.iter().map(|p| p.base()).fold(0.0, f64::max)
-    }
-}
-
 /// The film of a line contact; `scale` turns a film parameter into a length.
 ///
 /// # Errors

@@ -112,7 +112,7 @@ mod tests {
         Bearing::new(geometry, duty, Route::Iso7902).unwrap()
     }
 
-    /// The turbine bearing of `film_checks.json`, jb-51: 19.71 mPa s, T_eff 56.45 °C at 45 °C fed.
+    /// The turbine bearing of `film_checks.json`, jb-51: 19.71 mPa s, film at 56.45 °C, fed at 45 °C.
     #[test]
     fn the_rise_is_that_of_the_settled_bearing() {
         let eta = DynamicViscosity::from_base(0.019_708_7);

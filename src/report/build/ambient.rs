@@ -6,6 +6,7 @@ use super::season::{by_season, season, seasons};
 use crate::decide::season::pair;
 use crate::judge::Band as Judged;
 use crate::quantity::Measure;
+use crate::quantity::show::Units;
 use crate::report::draw::band::{Band, BandFigure, BandRow, MiniBand};
 use crate::report::model::{Ambient, Mark};
 use crate::weighing::Candidate;
@@ -117,23 +118,28 @@ fn row(case: &Case<'_, '_>, c: &Candidate, need: (f64, f64)) -> BandRow {
         picked: case.picked(c),
         mark: mark(c.judgement.verdict),
         band,
-        says: says(band, need),
+        says: says(band, need, case.units()),
     }
 }
 
 /// What a bar says: how many kelvins it is short, and where.
-fn says(band: Option<Band>, need: (f64, f64)) -> String {
+fn says(band: Option<Band>, need: (f64, f64), units: Units) -> String {
     let Some(band) = band else {
         return "nowhere".to_owned();
     };
     let cold = band.low_c.map_or(0.0, |low| low - need.0);
     let hot = band.high_c.map_or(0.0, |high| need.1 - high);
-    let short = |k: f64| crate::quantity::show::fixed(k, 0, crate::quantity::show::Toward::Up);
+    let short = |kelvins: f64| say::shortfall(kelvins, units);
+    let unit = say::difference(units);
     match (cold > 1e-9, hot > 1e-9) {
         (false, false) => "covers the place".to_owned(),
-        (true, false) => format!("{}\u{202f}K short when cold", short(cold)),
-        (false, true) => format!("{}\u{202f}K short when hot", short(hot)),
-        (true, true) => format!("short {} K cold, {} K hot", short(cold), short(hot)),
+        (true, false) => format!("{}\u{202f}{unit} short when cold", short(cold)),
+        (false, true) => format!("{}\u{202f}{unit} short when hot", short(hot)),
+        (true, true) => format!(
+            "short {}\u{202f}{unit} cold, {}\u{202f}{unit} hot",
+            short(cold),
+            short(hot)
+        ),
     }
 }
 

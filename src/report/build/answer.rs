@@ -6,7 +6,7 @@ use crate::demand::End;
 use crate::judge::Verdict;
 use crate::judge::weigh::Margin;
 use crate::quantity::Measure;
-use crate::quantity::show::{Toward, fixed};
+use crate::quantity::show::{Toward, Units, fixed};
 use crate::report::model::{Answer, Mark, Phrase};
 use crate::weighing::Candidate;
 
@@ -96,17 +96,17 @@ fn of_lead(case: &Case<'_, '_>, lead: &Candidate, out: &mut Vec<Phrase>) {
         Verdict::Holds => out.push(ends(case, lead)),
         Verdict::Tight => {
             out.push(ends(case, lead));
-            out.extend(why_tight(lead));
+            out.extend(why_tight(lead, case.units()));
         }
         Verdict::Open => {
             for why in lead.because.iter().take(3) {
-                out.push(say::stopped(&say::sentence(&say::set(why))).into());
+                out.push(say::stopped(&say::sentence(&say::told(why, case.units()))).into());
             }
         }
         Verdict::Fails => {
             let near = Phrase::new().and("Nearest is ").tag(case.id(lead.oil));
             let why = lead.because.first().map_or("", String::as_str);
-            out.push(near.and(say::stopped(&format!(": {}", say::set(why)))));
+            out.push(near.and(say::stopped(&format!(": {}", say::told(why, case.units())))));
             let barred = case.w.barred.len();
             if barred > 0 {
                 let n = say::count(barred, "more oil is", "more oils are");
@@ -117,7 +117,7 @@ fn of_lead(case: &Case<'_, '_>, lead: &Candidate, out: &mut Vec<Phrase>) {
 }
 
 /// Why it is tight: the margins are told already, the reserve and whatever else is not.
-fn why_tight(lead: &Candidate) -> Vec<Phrase> {
+fn why_tight(lead: &Candidate, units: Units) -> Vec<Phrase> {
     let told = |b: &&String| b.starts_with("hot margin ") || b.starts_with("cold margin ");
     let mut says: Vec<Phrase> = Vec::new();
     if lead.because.iter().any(|b| told(&b)) {
@@ -125,7 +125,7 @@ fn why_tight(lead: &Candidate) -> Vec<Phrase> {
         says.push(format!("The reserve asked is {reserve} step.").into());
     }
     let others = lead.because.iter().filter(|b| !told(b));
-    says.extend(others.map(|b| say::stopped(&say::sentence(&say::set(b))).into()));
+    says.extend(others.map(|b| say::stopped(&say::sentence(&say::told(b, units))).into()));
     says
 }
 
@@ -141,7 +141,7 @@ fn ends(case: &Case<'_, '_>, lead: &Candidate) -> Phrase {
         parts.push(format!(
             "new and at its thin end it lies {} step from the maker's grade ({})",
             say::steps(m.value, 1),
-            asks(demand)
+            asks(demand, case.units())
         ));
     }
     if parts.is_empty() {
@@ -172,25 +172,28 @@ fn end(case: &Case<'_, '_>, m: Margin) -> String {
     match demand.end {
         End::HotFloor if compared(demand) => format!(
             "compared{at}, it has {steps}{unit} over the floor{limit} ({})",
-            asks(demand)
+            asks(demand, case.units())
         ),
         _ if compared(demand) => format!(
             "{steps}{unit} under the ceiling{limit}{at} ({})",
-            asks(demand)
+            asks(demand, case.units())
         ),
         End::HotFloor => format!(
             "running hot{at}, it has {steps}{unit} over the floor{limit} ({})",
-            asks(demand)
+            asks(demand, case.units())
         ),
         End::StartCeiling => format!(
             "at the coldest start{at}, {steps}{unit} under the ceiling{limit} ({})",
-            asks(demand)
+            asks(demand, case.units())
         ),
         End::RunningCeiling => format!(
             "running cold{at}, {steps}{unit} under the ceiling{limit} ({})",
-            asks(demand)
+            asks(demand, case.units())
         ),
-        _ => format!("{steps}{unit} from the limit{limit}{at} ({})", asks(demand)),
+        _ => format!(
+            "{steps}{unit} from the limit{limit}{at} ({})",
+            asks(demand, case.units())
+        ),
     }
 }
 
@@ -203,7 +206,7 @@ fn of_now(case: &Case<'_, '_>) -> Option<Phrase> {
                 Verdict::Fails => "fails".to_owned(),
                 other => format!("is {}", other.word()),
             };
-            let why: Vec<String> = c.because.iter().take(2).map(|b| say::set(b)).collect();
+            let why: Vec<String> = c.because.iter().take(2).map(|b| say::told(b, case.units())).collect();
             let mut says = Phrase::new()
                 .strong(format!("{}, in the machine now, {word}", case.id(c.oil)))
                 .and(say::stopped(&format!(": {}", why.join("; "))));
@@ -215,7 +218,7 @@ fn of_now(case: &Case<'_, '_>) -> Option<Phrase> {
         Now::Barred(b) => Some(
             Phrase::new()
                 .strong(format!("{}, in the machine now, is barred", case.id(b.oil)))
-                .and(say::stopped(&format!(": {}", say::set(&b.by[0].says)))),
+                .and(say::stopped(&format!(": {}", say::told(&b.by[0].says, case.units())))),
         ),
         Now::Other(id) => Some(Phrase::new().tag(id).and(
             ", named as what is in it now, is of the other sort, oil or grease, and is not weighed.",

@@ -112,9 +112,9 @@ fn of_oil(case: &Case<'_, '_>) -> Vec<Assumption> {
         .filter(|f| OF_OIL.contains(&f.name))
         .map(|f| Assumption {
             id: String::new(),
-            taken: format!("{id}: {}", say::set(&f.says)).into(),
+            taken: format!("{id}: {}", say::told(&f.says, case.units())).into(),
             because: "nothing is stated".to_owned(),
-            otherwise: say::sentence(&say::set(&f.act)),
+            otherwise: say::sentence(&say::told(&f.act, case.units())),
         })
         .collect()
 }

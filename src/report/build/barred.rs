@@ -40,18 +40,18 @@ fn row(case: &Case<'_, '_>, group: &[&Barred]) -> Row {
         let says: Vec<String> = first
             .by
             .iter()
-            .map(|by| say::stopped(&say::set(&by.says)))
+            .map(|by| say::stopped(&say::told(&by.says, case.units())))
             .collect();
         reason = reason.and(says.join(" "));
     } else {
         let says: Vec<String> = common(case, first)
             .into_iter()
-            .map(|(_, words)| say::stopped(&say::set(&words)))
+            .map(|(_, words)| say::stopped(&say::told(&words, case.units())))
             .collect();
         let own: Vec<String> = group.iter().flat_map(|b| own(case, b)).collect();
         reason = reason.and(says.join(" "));
         if !own.is_empty() {
-            let own = say::stopped(&say::set(&own.join("; ")));
+            let own = say::stopped(&say::told(&own.join("; "), case.units()));
             reason = reason.with(RunKind::Quiet, format!(" {own}"));
         }
     }

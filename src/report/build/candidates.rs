@@ -7,7 +7,7 @@ use super::vary::Tolerances;
 use crate::judge::order::IN_WORDS;
 use crate::judge::weigh::{At, Margin, weigh};
 use crate::quantity::Measure;
-use crate::quantity::show::{Toward, fixed};
+use crate::quantity::show::{Toward, Units, fixed};
 use crate::report::draw::margin_bars::{MarginBar, MarginBars};
 use crate::report::model::{Candidate as Row, Candidates, Phrase, RunKind, minus};
 use crate::weighing::Candidate;
@@ -90,7 +90,7 @@ fn row(
     let oil = case.oil(c.oil);
     let letter = case.letter(c);
     Row {
-        oil: Phrase::new().tag(&oil.id),
+        oil: case.run.oil_link(c.oil),
         name: oil.name.clone().unwrap_or_default(),
         picked: case.picked(c),
         in_use: c.in_use,
@@ -99,9 +99,9 @@ fn row(
         cold: reading(case, j.at_start, cold, Toward::Up),
         bars: bars(case, c, case.local(&format!("bars-{letter}")), tolerances),
         margins: in_words(c),
-        kelvins: kelvins(c),
+        kelvins: kelvins(c, case.units()),
         conditions: eligible::numbers_of(c, numbers),
-        reason: reason(c),
+        reason: reason(c, case.units()),
         letter,
     }
 }
@@ -184,28 +184,28 @@ fn in_words(c: &Candidate) -> String {
 }
 
 /// The margins in kelvins: pour point and the oil's own limit.
-fn kelvins(c: &Candidate) -> String {
+fn kelvins(c: &Candidate, units: Units) -> String {
     let j = &c.judgement;
     let mut parts = Vec::new();
     for (m, word) in [(j.pour, "pour"), (j.oil, "oil's limit")] {
         if let Some(m) = m {
-            parts.push(format!("{word} {}", say::kelvins(m.value)));
+            parts.push(format!("{word} {}", say::kelvins(m.value, units)));
         }
     }
     minus(&parts.join(", "))
 }
 
-fn reason(c: &Candidate) -> Phrase {
+fn reason(c: &Candidate, units: Units) -> Phrase {
     let mut phrase = Phrase::new();
     if c.in_use {
         phrase = phrase.strong("In use. ");
     }
     let mut because = c.because.iter();
     if let Some(first) = because.next() {
-        phrase = phrase.and(say::stopped(&say::sentence(&say::set(first))));
+        phrase = phrase.and(say::stopped(&say::sentence(&say::told(first, units))));
     }
     for more in because.take(2) {
-        let text = format!(" {}", say::stopped(&say::sentence(&say::set(more))));
+        let text = format!(" {}", say::stopped(&say::sentence(&say::told(more, units))));
         phrase = phrase.with(RunKind::Quiet, text);
     }
     phrase

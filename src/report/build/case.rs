@@ -194,8 +194,8 @@ pub(super) fn compared(demand: &Demand) -> bool {
 }
 
 /// What a demand asks and of what: `gear mesh low-speed stage: …`. A component's window names it.
-pub(super) fn asks(demand: &Demand) -> String {
-    say::set(&demand.asks())
+pub(super) fn asks(demand: &Demand, units: Units) -> String {
+    say::told(&demand.asks(), units)
 }
 
 fn now<'r>(run: &Run<'_>, w: &'r Weighed<'_>) -> Now<'r> {

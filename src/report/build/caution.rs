@@ -82,7 +82,7 @@ fn undecided(case: &Case<'_, '_>) -> Vec<String> {
         .iter()
         .map(|u| {
             let part = u.part.as_deref().map_or("the point", |p| case.part_name(p));
-            format!("{part} ({})", say::set(&u.because))
+            format!("{part} ({})", say::told(&u.because, case.units()))
         })
         .collect()
 }

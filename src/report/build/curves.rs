@@ -248,7 +248,7 @@ fn detail(case: &Case<'_, '_>, lead: &Candidate, hot: bool) -> Option<Detail> {
         }
         .to_owned(),
         description: format!("At {at} {id} lies {side} the {kind} of {figure}: {steps}."),
-        caption: say::stopped(&say::sentence(&asks(demand))),
+        caption: say::stopped(&say::sentence(&asks(demand, case.units()))),
         at_c: say::celsius(told.t),
         limit_mm2_s: say::mm2_s(limit.base()),
         floor,

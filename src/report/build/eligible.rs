@@ -99,7 +99,7 @@ pub(super) fn notes(case: &Case<'_, '_>) -> Vec<Phrase> {
             let text = format!(
                 "{} {}",
                 words(case, found),
-                say::stopped(&say::set(&found.act))
+                say::stopped(&say::told(&found.act, case.units()))
             );
             let id = case.id(c.oil).to_owned();
             match list.iter_mut().find(|(known, _)| *known == text) {
@@ -138,14 +138,17 @@ fn words(case: &Case<'_, '_>, found: &Found) -> String {
         ),
         None => found.says.clone(),
     };
-    say::stopped(&say::sentence(&say::set(&says)))
+    say::stopped(&say::sentence(&say::told(&says, case.units())))
 }
 
 fn told(case: &Case<'_, '_>, found: &Found) -> Phrase {
     Phrase::new()
         .and(words(case, found))
         .and(" ")
-        .strong(say::stopped(&say::sentence(&say::set(&found.act))))
+        .strong(say::stopped(&say::sentence(&say::told(
+            &found.act,
+            case.units(),
+        ))))
 }
 
 fn cited(found: &Found) -> String {

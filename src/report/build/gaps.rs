@@ -232,7 +232,7 @@ fn of_fact(case: &Case<'_, '_>, numbers: &Numbers, fact: &str, oils: &[usize]) -
             bar: None,
             range: String::new(),
             decides,
-            ask: asking.map_or(String::new(), |(_, c)| say::set(&c.act)),
+            ask: asking.map_or(String::new(), |(_, c)| say::told(&c.act, case.units())),
         },
         effect: None,
         input: (String::new(), None),

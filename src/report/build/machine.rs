@@ -33,10 +33,10 @@ pub(super) fn machine(report: &Report<'_>, place: usize) -> OfMachine {
         .collect();
     let (mut numbers, mut counts) = (Numbers::new(run.scales.rules), Counts::default());
     let mut laws = BTreeMap::new();
-    let (mut points, mut digests) = (Vec::new(), Vec::new());
-    let of = (cases.len() > 1, report.plan.machines.len());
+    let (mut points, mut digests): (Vec<Point>, _) = (Vec::new(), Vec::new());
     for case in &cases {
-        let told = point(case, &mut numbers, &mut counts, of);
+        let of = (cases.len() > 1, report.plan.machines.len());
+        let told = point(case, &mut numbers, &mut counts, of, points.first());
         laws.extend(told.laws);
         let local = (cases.len() > 1).then_some(case.key.as_str());
         let href = plan.place.href(report.plan.bundle, local);
@@ -92,10 +92,12 @@ fn sheet(
     let plan = &report.plan.machines[place];
     let first = cases[0].w.point;
     let title = first.title.as_deref().unwrap_or("");
-    let notes: Vec<&str> = cases
+    let mut notes: Vec<&str> = cases
         .iter()
         .flat_map(|c| c.w.point.notes.iter().map(String::as_str))
         .collect();
+    // Points share the notes of their machine.
+    notes.dedup();
     let body = MachineSheet {
         answer,
         caution: caution::caution(cases),

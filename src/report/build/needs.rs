@@ -6,7 +6,7 @@ use super::say;
 use super::steps::Steps;
 use crate::demand::{Demand, End, For, Limit, Standing};
 use crate::model::rulebook::Confidence;
-use crate::quantity::show::Toward;
+use crate::quantity::show::{Toward, Units};
 use crate::quantity::{Amount, Kind, Measure};
 use crate::report::model::{NeedRow, Needs, Phrase, RunKind};
 use crate::results::need::{confidence, end_word, limit_amount};
@@ -45,7 +45,7 @@ fn row(case: &Case<'_, '_>, steps: &Steps, i: usize) -> NeedRow {
     let d = &middle.list[i];
     let t = middle.governing_temperature(d);
     let (limit, unit) = limit(case, i);
-    let mut set_by = Phrase::new().and(asks(d));
+    let mut set_by = Phrase::new().and(asks(d, case.units()));
     match &d.only {
         For::All => {}
         For::With(tag) => set_by = quiet(set_by, &format!(" for oils with {tag} only")),
@@ -75,7 +75,7 @@ fn row(case: &Case<'_, '_>, steps: &Steps, i: usize) -> NeedRow {
             |t| say::temperature_figure(t, case.units()),
         ),
         set_by,
-        rule: rule(d, steps),
+        rule: rule(d, steps, case.units()),
         origin: Some(origin(d.whose)),
         confidence: (d.confidence != Confidence::High)
             .then(|| format!("confidence {}", confidence(d))),
@@ -101,7 +101,7 @@ fn quiet(phrase: Phrase, words: &str) -> Phrase {
 }
 
 /// Source, what became of the limit, and the step it comes from.
-fn rule(d: &Demand, steps: &Steps) -> Phrase {
+fn rule(d: &Demand, steps: &Steps, units: Units) -> Phrase {
     let mut phrase = Phrase::new().and(say::set(&d.source));
     if let Some((number, href)) = d.limit_step.and_then(|step| steps.of_demand(step)) {
         phrase = phrase
@@ -112,7 +112,7 @@ fn rule(d: &Demand, steps: &Steps) -> Phrase {
         Standing::Judges => phrase,
         Standing::Replaced { by } => phrase.and(format!(
             "; replaced by {}: a condition where not met",
-            say::set(by)
+            say::told(by, units)
         )),
         Standing::Condition => phrase.and("; a condition where not met"),
         Standing::Information => phrase.and("; printed only"),
@@ -176,7 +176,10 @@ fn notes(case: &Case<'_, '_>) -> Vec<Phrase> {
         notes.push(
             Phrase::new()
                 .strong("Not worked out: ")
-                .and(say::stopped(&format!("{part}: {}", say::set(&u.because)))),
+                .and(say::stopped(&format!(
+                    "{part}: {}",
+                    say::told(&u.because, case.units())
+                ))),
         );
     }
     for info in &middle.information {
@@ -187,8 +190,9 @@ fn notes(case: &Case<'_, '_>) -> Vec<Phrase> {
         let figure = info.amount.map_or(String::new(), |a| {
             format!(": {}", say::amount(a, case.units(), Toward::Nearest))
         });
-        let text = format!("{part}{}{figure}", say::set(&info.says));
+        let text = format!("{part}{}{figure}", say::told(&info.says, case.units()));
         notes.push(say::stopped(&say::sentence(&text)).into());
     }
+    notes.extend(super::running::running(case));
     notes
 }

@@ -27,15 +27,17 @@ pub(super) fn sheet(report: &Report<'_>) -> Sheet {
     let lists = lists::lists(report);
     let mut list_notes = store::notes(report);
     list_notes.extend(lists.iter().flat_map(|l| l.notes(report)));
+    let (answer, first, caution) = (
+        answer(report),
+        first::first(report),
+        caution_of_site(report),
+    );
+    let room = register::on_first_page(report.run.options.paper, &answer, &first, &caution);
     let body = Overview {
-        answer: answer(report),
-        first: first::first(report),
-        caution: caution_of_site(report),
-        groups: register::groups(
-            report,
-            &all,
-            Some(register::on_first_page(report.run.options.paper)),
-        ),
+        answer,
+        first,
+        caution,
+        groups: register::groups(report, &all, Some(room)),
         areas: areas(report),
         machines: rows,
         band_axis,

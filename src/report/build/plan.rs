@@ -1,7 +1,7 @@
 //! Which sheets there will be, where each stands and what it is called, before any is made: their
 //! number and their links are needed on the first.
 
-use crate::model::Point;
+use crate::model::{Oil, Point};
 use crate::report::model::NavLink;
 use crate::report::names::{Bundle, Href, Names, Place};
 use std::collections::BTreeMap;
@@ -46,6 +46,10 @@ pub(super) struct Plan<'a> {
     pub(super) machines: Vec<Machine<'a>>,
     /// What moved, where an older state is named.
     pub(super) revision: Option<Fixed>,
+    /// The oils' sheets, in the order of the list.
+    pub(super) oils: Vec<Fixed>,
+    /// Their ids, for the bar of links.
+    oil_ids: Vec<String>,
     pub(super) methods: Fixed,
     pub(super) rules: Fixed,
     pub(super) glossary: Fixed,
@@ -60,6 +64,7 @@ pub(super) enum On {
     Area(usize),
     Machine(usize),
     Revision,
+    Oil(usize),
     Methods,
     Rules,
     Glossary,
@@ -67,7 +72,7 @@ pub(super) enum On {
 
 impl<'a> Plan<'a> {
     /// Plans the sheets for these points, in their order.
-    pub(super) fn new(points: &[&'a Point], bundle: Bundle, revised: bool) -> Self {
+    pub(super) fn new(points: &[&'a Point], oils: &[Oil], bundle: Bundle, revised: bool) -> Self {
         let mut names = Names::new();
         let mut number = 0;
         let mut next = || {
@@ -91,6 +96,14 @@ impl<'a> Plan<'a> {
             })
             .collect();
         let revision = revised.then(|| fixed(&mut names, "changes", next()));
+        let oil_ids: Vec<String> = oils.iter().map(|o| o.id.clone()).collect();
+        let oils = oil_ids
+            .iter()
+            .map(|id| Fixed {
+                place: Place::new(&mut names, "oil", id),
+                number: next(),
+            })
+            .collect();
         let methods = fixed(&mut names, "methods", next());
         let rules = fixed(&mut names, "rules", next());
         let glossary = fixed(&mut names, "words", next());
@@ -101,6 +114,8 @@ impl<'a> Plan<'a> {
             areas,
             machines,
             revision,
+            oils,
+            oil_ids,
             methods,
             rules,
             glossary,
@@ -116,6 +131,7 @@ impl<'a> Plan<'a> {
             .map(|f| &f.place)
             .chain(self.areas.iter().map(|a| &a.place))
             .chain(self.machines.iter().map(|m| &m.place))
+            .chain(self.oils.iter().map(|o| &o.place))
             .map(Place::file)
             .collect()
     }
@@ -148,6 +164,17 @@ impl<'a> Plan<'a> {
                 bar.push(link(m.tag.to_owned(), &m.place, true));
                 if let Some(m) = self.machines.get(i + 1) {
                     bar.push(link(format!("Next: {}", m.tag), &m.place, false));
+                }
+            }
+            On::Oil(i) => {
+                if let Some(before) = i.checked_sub(1) {
+                    let text = format!("Before: {}", self.oil_ids[before]);
+                    bar.push(link(text, &self.oils[before].place, false));
+                }
+                bar.push(link(self.oil_ids[i].clone(), &self.oils[i].place, true));
+                if let Some(next) = self.oils.get(i + 1) {
+                    let text = format!("Next: {}", self.oil_ids[i + 1]);
+                    bar.push(link(text, &next.place, false));
                 }
             }
             _ => {}

@@ -11,7 +11,7 @@ use super::eligible::{Numbers, conditions};
 use super::gaps::{self, Found};
 use super::inputs;
 use super::needs::needs;
-use super::steps::steps;
+use super::steps::{Steps, steps};
 use super::vary::Tolerances;
 use super::{answer, machine, say};
 use crate::relation::Law;
@@ -35,16 +35,18 @@ pub(super) struct Told {
     pub(super) laws: BTreeMap<&'static str, &'static Law>,
 }
 
-/// Tells a point; `named` where its machine has several, with how many machines the report has.
+/// Tells a point; `named` where its machine has several, with how many machines the report has and
+/// the first of its points beside the others.
 pub(super) fn point(
     case: &Case<'_, '_>,
     numbers: &mut Numbers,
     counts: &mut Counts,
     (named, machines): (bool, usize),
+    first: Option<&Point>,
 ) -> Told {
     let conditions = conditions(case, numbers);
     let tolerances = Tolerances::new(case);
-    let steps = steps(case);
+    let (steps, steps_as) = calculation(case, first);
     let found = gaps::found(case, numbers, &mut counts.gaps);
     let assumptions = assumptions(case, &found, &mut counts.assumptions);
     let address = case.w.point.address();
@@ -72,6 +74,7 @@ pub(super) fn point(
         change_over: Vec::new(),
         steps_command: command(case, &address),
         steps: steps.list,
+        steps_as,
         assumptions,
         gaps: gaps::table(case, &found),
     };
@@ -80,6 +83,20 @@ pub(super) fn point(
         gaps: found,
         laws: steps.laws,
     }
+}
+
+/// The steps of a point; none where they are those of the first point of its machine, figure for
+/// figure, which is then named.
+fn calculation(case: &Case<'_, '_>, first: Option<&Point>) -> (Steps, Option<String>) {
+    if let Some(first) = first {
+        let mut as_first = steps(case, &first.key);
+        if !first.steps.is_empty() && as_first.list == first.steps {
+            as_first.list.clear();
+            let name = first.name.clone().unwrap_or_else(|| first.key.clone());
+            return (as_first, Some(name));
+        }
+    }
+    (steps(case, &case.key), None)
 }
 
 /// The command that prints the steps again.

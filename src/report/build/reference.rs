@@ -1,31 +1,31 @@
 //! The sheets to look things up on: the relations used, the rules used, the words.
 
 use super::plan::On;
-use super::{Report, rules, say};
+use super::{Report, checked, oils, rules, say};
 use crate::quantity::show::{Toward, fixed};
+use crate::relation::Law;
 use crate::report::model::{
     Body, Glossary, Method, MethodAppendix, Phrase, RulesPage, Sheet, Term,
 };
 use crate::report::names::plain;
+use std::collections::BTreeMap;
 
 /// Machines named beside a method or a rule at most.
 const NAMED: usize = 10;
 
 /// The relations used in this run.
 pub(super) fn methods(report: &Report<'_>) -> Sheet {
-    let methods = report
-        .kept
-        .laws
+    let methods = used(report)
         .values()
-        .map(|(law, machines)| Method {
+        .map(|(law, machines, oils)| Method {
             id: format!("law-{}", plain(law.name)),
             name: law.name.to_owned(),
             title: say::set(law.title),
             formula: law.formula.to_owned(),
             range: say::set(law.range),
             source: say::set(law.source),
-            validation: String::new(),
-            used_by: named(report, machines),
+            validation: checked::against(law.name).to_owned(),
+            used_by: users(report, machines, oils),
         })
         .collect();
     let fixed = &report.plan.methods;
@@ -39,6 +39,54 @@ pub(super) fn methods(report: &Report<'_>) -> Sheet {
         title: "Methods: relations used, with range and source".to_owned(),
         nav: report.plan.nav(On::Methods),
         body: Body::Methods(Box::new(MethodAppendix { methods })),
+    }
+}
+
+/// A relation, and the machines and oils whose sheets stand on it.
+type Used = (&'static Law, Vec<usize>, Vec<usize>);
+
+/// The relations of all sheets, by name.
+fn used(report: &Report<'_>) -> BTreeMap<&'static str, Used> {
+    let machines = report.kept.laws.iter();
+    let mut all: BTreeMap<&'static str, Used> = machines
+        .map(|(name, (law, machines))| (*name, (*law, machines.clone(), Vec::new())))
+        .collect();
+    for oil in 0..report.plan.oils.len() {
+        for (name, law) in oils::laws(report, oil) {
+            let entry = all.entry(name).or_insert((law, Vec::new(), Vec::new()));
+            entry.2.push(oil);
+        }
+    }
+    all
+}
+
+/// Machines, then oils: those of all sheets in words, few by name.
+fn users(report: &Report<'_>, machines: &[usize], oils: &[usize]) -> Phrase {
+    let mut phrase = named(report, machines);
+    if oils.is_empty() {
+        return phrase;
+    }
+    if !machines.is_empty() {
+        phrase = phrase.and("; ");
+    }
+    if oils.len() == report.plan.oils.len() && oils.len() > 1 {
+        return phrase.and("every oil's sheet");
+    }
+    phrase = phrase.and(if oils.len() == 1 {
+        "the sheet of "
+    } else {
+        "the sheets of "
+    });
+    for (i, oil) in oils.iter().take(NAMED).enumerate() {
+        if i > 0 {
+            phrase = phrase.and(", ");
+        }
+        let fixed = &report.plan.oils[*oil];
+        phrase = phrase.tag_link(report.oil_id(*oil), report.plan.href(&fixed.place));
+    }
+    match oils.len().saturating_sub(NAMED) {
+        0 => phrase,
+        n => phrase.and(format!(" and {n} more")),
     }
 }
 

@@ -5,14 +5,40 @@ use super::answer::badness;
 use super::digest::Digest;
 use super::overview::of_machine;
 use super::state::{Pressing, State};
-use crate::report::model::{Mark, Paper, Phrase, RegisterGroup, RegisterRow};
+use crate::report::model::{Answer, Caution, Mark, Paper, Phrase, RegisterGroup, RegisterRow};
 
-/// Lines of the list that the first printed page has room for.
-pub(super) fn on_first_page(paper: Paper) -> usize {
-    match paper {
-        Paper::A4 => 21,
-        Paper::Letter => 17,
-    }
+/// Lines of the list that the first printed page has room for, beside the answer with what to do
+/// first and the caution.
+pub(super) fn on_first_page(
+    paper: Paper,
+    answer: &Answer,
+    first: &[Phrase],
+    caution: &Caution,
+) -> usize {
+    let folded = |text: &str, wide: usize| text.chars().count().div_ceil(wide).max(1);
+    let said: usize = answer
+        .sentences
+        .iter()
+        .map(|p| p.text().chars().count())
+        .sum();
+    let left = 2 * folded(&answer.headline, 36) + said.div_ceil(62);
+    let right = 1 + first.iter().map(|p| folded(&p.text(), 58)).sum::<usize>();
+    let defer: String = caution.defer.iter().map(Phrase::text).collect();
+    let before: String = caution.before.iter().map(Phrase::text).collect();
+    let cautions: usize = [
+        caution.judged.join("; "),
+        caution.not_judged.join("; "),
+        defer,
+        before,
+    ]
+    .iter()
+    .map(|text| folded(text, 112))
+    .sum();
+    let all = match paper {
+        Paper::A4 => 37,
+        Paper::Letter => 31,
+    };
+    usize::saturating_sub(all, left.max(right) + cautions).max(3)
 }
 
 /// Lines a row takes in print: the columns for the name and the move are so many letters wide.

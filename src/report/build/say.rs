@@ -88,9 +88,25 @@ pub(super) fn steps(value: f64, decimals: i32) -> String {
     minus(&show::margin(value, decimals))
 }
 
-/// A margin in kelvins, rounded down.
-pub(super) fn kelvins(value: f64) -> String {
-    format!("{}{TIE}K", minus(&show::margin(value, 1)))
+/// A margin in kelvins, or in the degrees of the output, rounded down.
+pub(super) fn kelvins(value: f64, units: Units) -> String {
+    let figure = minus(&show::margin(
+        unit_of(Kind::Rise, units).from_base(value),
+        1,
+    ));
+    format!("{figure}{TIE}{}", difference(units))
+}
+
+/// How far something is short, in kelvins or in the degrees of the output, rounded up.
+pub(super) fn shortfall(kelvins: f64, units: Units) -> String {
+    let short = unit_of(Kind::Rise, units).from_base(kelvins);
+    show::fixed(short, 0, Toward::Up)
+}
+
+/// The unit of a difference of temperatures where the words around say that it is one.
+pub(super) fn difference(units: Units) -> String {
+    let unit = unit_of(Kind::Rise, units);
+    pretty_unit(unit.name.trim_end_matches(" difference"))
 }
 
 /// A band in words, its ends rounded inwards.
@@ -155,27 +171,78 @@ pub(super) fn list(items: &[String]) -> String {
 /// A sentence of the program's own, set for the page: `kappa >= 1 at 78 degC` becomes
 /// `κ ≥ 1 at 78 °C` with the figure tied to its unit.
 pub(super) fn set(text: &str) -> String {
-    let mut out = String::with_capacity(text.len() + 8);
+    told(text, Units::Si)
+}
+
+/// The same in the units of the output: a figure whose unit is another there is converted, and so
+/// is the other end of its range.
+pub(super) fn told(text: &str, units: Units) -> String {
     let words: Vec<&str> = text.split(' ').collect();
+    let mut set: Vec<String> = Vec::with_capacity(words.len());
     for (i, word) in words.iter().enumerate() {
         let before = i.checked_sub(1).map_or("", |p| words[p]);
         let (core, tail) = trailing(word);
-        let tied = is_figure(before) && is_unit(core);
-        if i > 0 {
-            out.push(if tied { TIE } else { ' ' });
-        }
-        if tied {
-            out.push_str(&pretty_unit(core));
-            out.push_str(tail);
+        if is_figure(before) && is_unit(core) {
+            let unit = convert(&words, i, core, units, &mut set);
+            let figure = set.pop().unwrap_or_default();
+            set.push(format!("{figure}{TIE}{unit}{tail}"));
         } else {
             let after = words.get(i + 1).copied().unwrap_or("");
             let bare = core.trim_start_matches('(');
-            out.push_str(&core[..core.len() - bare.len()]);
-            out.push_str(symbol(bare, before, after));
-            out.push_str(tail);
+            let open = &core[..core.len() - bare.len()];
+            set.push(format!("{open}{}{tail}", symbol(bare, before, after)));
         }
     }
-    minus(&out)
+    minus(&set.join(" "))
+}
+
+/// The unit a figure is told in; the figure before it, and the one at the other end of a range,
+/// are put into that unit where it is another than the one written.
+fn convert(words: &[&str], at: usize, unit: &str, units: Units, set: &mut [String]) -> String {
+    let (Units::Us, Some((kind, from))) = (units, unit_called(unit)) else {
+        return pretty_unit(unit);
+    };
+    let to = unit_of(kind, units);
+    if to.name == from.name {
+        return pretty_unit(unit);
+    }
+    let mut places = vec![at - 1];
+    let between = at.checked_sub(2).map_or("", |i| words[i]);
+    if ["to", "..", "x", "and"].contains(&between) && at >= 3 && is_figure(words[at - 3]) {
+        places.push(at - 3);
+    }
+    for place in places {
+        let (text, digits) = (words[place], words[place].trim_start_matches('('));
+        let open = &text[..text.len() - digits.len()];
+        let plain = digits.replace(['\u{202f}'], "").replace('\u{2212}', "-");
+        let Ok(value) = plain.parse::<f64>() else {
+            return pretty_unit(unit);
+        };
+        let converted = to.from_base(from.to_base(value));
+        let figure = match kind {
+            Kind::Temperature | Kind::Rise => {
+                let decimals = i32::from(plain.contains('.'));
+                show::fixed(converted, decimals, Toward::Nearest)
+            }
+            _ => show::significant(converted, 3, Toward::Nearest),
+        };
+        set[place] = format!("{open}{figure}");
+    }
+    // a difference reads as one from the words around it
+    pretty_unit(to.name.trim_end_matches(" difference"))
+}
+
+/// The unit of that name, and what it measures. Kelvins in a sentence are a difference.
+fn unit_called(name: &str) -> Option<(Kind, &'static Unit)> {
+    let first = if name == "K" {
+        Kind::Rise
+    } else {
+        Kind::Temperature
+    };
+    std::iter::once(&first).chain(Kind::ALL).find_map(|kind| {
+        let found = kind.spec().units.iter().find(|u| u.name == name)?;
+        Some((*kind, found))
+    })
 }
 
 /// A word and the punctuation behind it.
@@ -194,9 +261,7 @@ fn is_figure(word: &str) -> bool {
 
 fn is_unit(word: &str) -> bool {
     word.starts_with(|c: char| c.is_ascii_alphabetic() || matches!(c, '1' | '%'))
-        && Kind::ALL
-            .iter()
-            .any(|kind| kind.spec().units.iter().any(|u| u.name == word))
+        && unit_called(word).is_some()
 }
 
 /// Signs and Greek letters, where the words around show that they are meant.
@@ -228,6 +293,22 @@ mod tests {
             set("kappa mill, bay 3 m east"),
             "kappa mill, bay 3\u{202f}m east"
         );
+    }
+
+    #[test]
+    fn sentences_follow_the_units_of_the_output() {
+        let us = |text: &str| told(text, Units::Us);
+        assert_eq!(
+            us("too thin at 85 degC: 9.31 mm2/s"),
+            "too thin at 185\u{202f}°F: 9.31\u{202f}mm²/s"
+        );
+        assert_eq!(
+            us("start at least 10 K above the pour point"),
+            "start at least 18\u{202f}°F above the pour point"
+        );
+        assert_eq!(us("ambient -10 .. 35 degC"), "ambient 14 .. 95\u{202f}°F");
+        assert_eq!(us("(-40 degC)"), "(−40\u{202f}°F)");
+        assert_eq!(set("ambient -10 .. 35 degC"), "ambient −10 .. 35\u{202f}°C");
     }
 
     #[test]

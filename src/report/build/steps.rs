@@ -62,16 +62,18 @@ const AS_SHOWN: [&str; 19] = [
 /// Relations that read an oil's line.
 const READINGS: [&str; 2] = ["viscosity-at", "viscosity-piecewise"];
 
-/// The steps of the lead in full, then those that sink the oil in use.
-pub(super) fn steps(case: &Case<'_, '_>) -> Steps {
+/// The steps of the lead in full, then those that sink the oil in use; their ids begin with `key`.
+pub(super) fn steps(case: &Case<'_, '_>, key: &str) -> Steps {
     let mut out = Writer {
         case,
+        key,
         steps: Steps::default(),
         known: BTreeMap::new(),
         shown: Vec::new(),
     };
     if let (Some(told), Some(lead)) = (&case.told, case.lead) {
         let mut results: Vec<StepId> = told.margins.iter().map(|e| e.step).collect();
+        results.extend(&told.running);
         results.sort_unstable();
         out.trace(told, &results, lead, true);
     } else {
@@ -87,6 +89,7 @@ pub(super) fn steps(case: &Case<'_, '_>) -> Steps {
         let bare = Explanation {
             trace: case.w.demands.trace.clone(),
             margins: Vec::new(),
+            running: Vec::new(),
         };
         out.steps_of(&bare.trace, &results, None);
     }
@@ -113,6 +116,8 @@ fn sinking(told: &Explanation, c: &Candidate) -> Vec<StepId> {
 
 struct Writer<'c, 'r, 'a> {
     case: &'c Case<'r, 'a>,
+    /// Key of the ids of the steps on the sheet.
+    key: &'c str,
     steps: Steps,
     /// What a step works out, and from what, against its place in the list.
     known: BTreeMap<String, usize>,
@@ -175,11 +180,14 @@ impl Writer<'_, '_, '_> {
             .collect();
         let puts = used
             .iter()
-            .map(|(symbol, step)| self.put(law, symbol, step, places))
+            .map(|(symbol, step)| {
+                let link = places.get(&step.id).map(|at| self.link(*at));
+                put((units, law), symbol, step, link)
+            })
             .collect();
-        let mut notes: Vec<String> = step.notes.iter().map(|n| say::set(n)).collect();
+        let mut notes: Vec<String> = step.notes.iter().map(|n| say::told(n, units)).collect();
         for (_, given) in &used {
-            notes.extend(remarks(given));
+            notes.extend(remarks(given, units));
         }
         notes.extend(of.and_then(|c| self.carried_on(law, &used, c)));
         notes.extend(of.and_then(|c| self.points_from(law, c)));
@@ -189,9 +197,9 @@ impl Writer<'_, '_, '_> {
             .as_ref()
             .map_or(String::new(), |a| format!("{a}: "));
         CalcStep {
-            id: self.case.local(&format!("s{number}")),
+            id: format!("{}-s{number}", self.key),
             number: number.to_string(),
-            title: say::sentence(&say::set(&format!("{about}{}", step.says))),
+            title: say::sentence(&say::told(&format!("{about}{}", step.says), units)),
             formula: Some(applied(law, &used)),
             with: puts,
             result: say::amount(step.amount, units, Toward::Nearest),
@@ -200,32 +208,6 @@ impl Writer<'_, '_, '_> {
             notes,
             carried: false,
             governs: false,
-        }
-    }
-
-    fn put(&self, law: &Law, symbol: &str, step: &Step, places: &BTreeMap<StepId, usize>) -> Put {
-        let units = self.case.units();
-        let (figure, _) = say::parts(step.amount, units, Toward::Nearest);
-        let as_shown = units == Units::Si && AS_SHOWN.contains(&law.name);
-        let number = match figure.strip_prefix('\u{2212}') {
-            Some(_) if as_shown => format!("({figure})"),
-            _ if as_shown => figure,
-            _ => String::new(),
-        };
-        let mut shown = say::amount(step.amount, units, Toward::Nearest);
-        let mut from = None;
-        if let How::Given { written, origin: o } = &step.how {
-            from = Some(origin(o.whose));
-            if converted(step.amount, written) {
-                shown = format!("{shown}, written {}", say::set(written));
-            }
-        }
-        Put {
-            symbol: symbol.to_owned(),
-            number,
-            shown,
-            origin: from,
-            step: places.get(&step.id).map(|at| self.link(*at)),
         }
     }
 
@@ -322,7 +304,7 @@ fn place_of(told: &Explanation, m: Margin, places: &BTreeMap<StepId, usize>) -> 
 
 /// The branch of a formula that was used, where its text has several: the whole text stands on the
 /// sheet of methods.
-fn applied(law: &Law, used: &[(&'static str, &Step)]) -> String {
+pub(super) fn applied(law: &Law, used: &[(&'static str, &Step)]) -> String {
     let number = |symbol: &str| {
         let step = used.iter().find(|(s, _)| *s == symbol)?.1;
         Some(
@@ -372,12 +354,43 @@ fn identity(
     key
 }
 
+/// One number put into a formula, with where it comes from: a step, or somebody's word.
+pub(super) fn put(
+    (units, law): (Units, &Law),
+    symbol: &str,
+    step: &Step,
+    link: Option<(String, Href)>,
+) -> Put {
+    let (figure, _) = say::parts(step.amount, units, Toward::Nearest);
+    let as_shown = units == Units::Si && AS_SHOWN.contains(&law.name);
+    let number = match figure.strip_prefix('\u{2212}') {
+        Some(_) if as_shown => format!("({figure})"),
+        _ if as_shown => figure,
+        _ => String::new(),
+    };
+    let mut shown = say::amount(step.amount, units, Toward::Nearest);
+    let mut from = None;
+    if let How::Given { written, origin: o } = &step.how {
+        from = Some(origin(o.whose));
+        if converted(step.amount, written) {
+            shown = format!("{shown}, written {}", say::set(written));
+        }
+    }
+    Put {
+        symbol: symbol.to_owned(),
+        number,
+        shown,
+        origin: from,
+        step: link,
+    }
+}
+
 /// What the origin of a value as given says that the reader should know.
-fn remarks(step: &Step) -> Vec<String> {
+pub(super) fn remarks(step: &Step, units: Units) -> Vec<String> {
     let How::Given { origin, .. } = &step.how else {
         return Vec::new();
     };
-    let mut notes: Vec<String> = step.notes.iter().map(|n| say::set(n)).collect();
+    let mut notes: Vec<String> = step.notes.iter().map(|n| say::told(n, units)).collect();
     if origin.whose == Whose::Assumed
         && let Some(why) = &origin.note
     {

@@ -53,7 +53,7 @@ fn row(report: &Report<'_>, oil: usize, points: &[(usize, &Digest)]) -> OilRow {
     replaced.sort_unstable();
     replaced.dedup();
     OilRow {
-        oil: Phrase::new().tag(&site.oils[oil].id),
+        oil: report.run.oil_link(oil),
         name: site.oils[oil].name.clone().unwrap_or_default(),
         machines: machines(report, points),
         fill: fills(report, points),
@@ -109,19 +109,25 @@ fn fills(report: &Report<'_>, points: &[(usize, &Digest)]) -> String {
     }
 }
 
-/// What the list is and is not.
+/// What the list is and is not, and where every oil's own sheet is.
 pub(super) fn notes(report: &Report<'_>) -> Vec<Phrase> {
-    let any = report
-        .kept
-        .machines
-        .iter()
-        .flatten()
-        .any(|d| d.oil.is_some());
-    if any {
-        vec!["The table names for each machine its own first choice. A shorter list for all of them together is told below the figure.".into()]
-    } else {
-        Vec::new()
+    let mut points = report.kept.machines.iter().flatten();
+    let mut notes: Vec<Phrase> = Vec::new();
+    if points.any(|d| d.oil.is_some()) {
+        notes.push("The table names for each machine its own first choice. A shorter list for all of them together is told below.".into());
     }
+    if !report.plan.oils.is_empty() {
+        let mut all = Phrase::new().strong("Sheets of all oils: ");
+        for oil in 0..report.plan.oils.len() {
+            if oil > 0 {
+                all = all.and(", ");
+            }
+            let fixed = &report.plan.oils[oil];
+            all = all.tag_link(report.oil_id(oil), report.plan.href(&fixed.place));
+        }
+        notes.push(all.and("."));
+    }
+    notes
 }
 
 /// Every oil on every machine, in tables of so many oils; none on large sites.

@@ -142,7 +142,10 @@ impl Canvas {
         self.taken.push(text_box(at, anchor, style, text));
         let _ = write!(self.out, "<text x=\"{}\" y=\"{}\"", px(at.x), px(at.y));
         self.attr("class", style.class());
-        self.attr("text-anchor", anchor.word());
+        // the anchor of SVG where none is said
+        if anchor != Anchor::Start {
+            self.attr("text-anchor", anchor.word());
+        }
         self.out.push('>');
         push_text(&mut self.out, text);
         self.out.push_str("</text>");
@@ -294,7 +297,6 @@ impl Canvas {
         match alternative {
             Alternative::Beside => {
                 svg.attr("aria-hidden", "true");
-                svg.attr("focusable", "false");
                 svg.out.push('>');
             }
             Alternative::Told { title, description } => {

@@ -295,6 +295,8 @@ fn label_jaw(canvas: &mut Canvas, axes: &Axes, jaw: &Jaw) {
     let y = axes.y.px(jaw.nu_mm2_s);
     let near = if jaw.floor { y + 23.0 } else { y - 14.0 };
     let far = if jaw.floor { y + 39.0 } else { y - 30.0 };
+    // on the side that serves, where the forbidden one has no room left
+    let other = if jaw.floor { y - 8.0 } else { y + 17.0 };
     let inside = axes.frame().x + 4.0;
     let places = [
         (pt(f64::midpoint(a, b), near), Anchor::Middle),
@@ -306,6 +308,9 @@ fn label_jaw(canvas: &mut Canvas, axes: &Axes, jaw: &Jaw) {
         (pt(b, far), Anchor::End),
         (pt(axes.frame().right() - 4.0, near), Anchor::End),
         (pt(axes.frame().right() - 4.0, far), Anchor::End),
+        (pt(f64::midpoint(a, b), other), Anchor::Middle),
+        (pt(inside, other), Anchor::Start),
+        (pt(axes.frame().right() - 4.0, other), Anchor::End),
     ];
     let label = fit(&jaw.label, Style::Strong, axes.frame().w - 8.0);
     canvas.place(Style::Strong, &label, &places);

@@ -187,13 +187,22 @@ fn symbol(out: &mut String, name: &str) {
 
 fn base(out: &mut String, symbol: &Symbol) {
     if symbol.primes.is_empty() {
-        return tagged(out, "mi", &symbol.base);
+        return letter(out, &symbol.base);
     }
     // side by side: as a superscript the prime would be raised twice
     wrapped(out, "mrow", |out| {
-        tagged(out, "mi", &symbol.base);
+        letter(out, &symbol.base);
         out.push_str("<mo form=\"postfix\" lspace=\"0em\" rspace=\"0em\">");
         push_text(out, &symbol.primes);
         out.push_str("</mo>");
     });
+}
+
+/// A letter. A slanted v cannot be told from ν in many fonts: it stands upright.
+fn letter(out: &mut String, base: &str) {
+    if base == "v" {
+        out.push_str("<mi mathvariant=\"normal\">v</mi>");
+    } else {
+        tagged(out, "mi", base);
+    }
 }

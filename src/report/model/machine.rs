@@ -144,6 +144,8 @@ pub struct Point {
     pub change_over: Vec<Phrase>,
     /// The calculation.
     pub steps: Vec<CalcStep>,
+    /// The point whose calculation it shares, figure for figure.
+    pub steps_as: Option<String>,
     /// The command that prints it.
     pub steps_command: String,
     /// What is taken as true.

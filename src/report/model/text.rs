@@ -104,6 +104,17 @@ impl Phrase {
         self.with(RunKind::Tag, text)
     }
 
+    /// Adds a tag or an oil's name that leads to its sheet.
+    #[must_use]
+    pub fn tag_link(mut self, text: impl Into<String>, href: Href) -> Self {
+        self.runs.push(Run {
+            text: text.into(),
+            kind: RunKind::Tag,
+            href: Some(href),
+        });
+        self
+    }
+
     /// Adds words that lead somewhere.
     #[must_use]
     pub fn link(mut self, text: impl Into<String>, href: Href) -> Self {

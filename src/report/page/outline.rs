@@ -204,6 +204,14 @@ fn oil(counter: &mut Counter<'_>, part: &mut Part, body: &OilSheet) {
                 body.curves.is_some() || !body.points.is_empty(),
             ),
             (
+                "grades",
+                "Grades and shear",
+                "Grades",
+                !body.grades.is_empty(),
+            ),
+            ("cold", "The cold end", "Cold", !body.cold.is_empty()),
+            ("life", "Life", "Life", !body.life.is_empty()),
+            (
                 "uses",
                 "Where it is weighed",
                 "Machines",
@@ -216,6 +224,8 @@ fn oil(counter: &mut Counter<'_>, part: &mut Part, body: &OilSheet) {
         part,
         &[
             ("points", !body.points.is_empty()),
+            ("starts", !body.starts.is_empty()),
+            ("lives", !body.lives.is_empty()),
             ("uses", !body.uses.is_empty()),
         ],
     );

@@ -4,13 +4,29 @@ use crate::report::escape::{base64, css_string};
 use crate::report::model::{Frame, Sheet};
 use sha2::{Digest, Sha256};
 
-/// The style sheet without indentation, empty lines and comments on lines of their own.
+/// The style sheet without indentation, empty lines, comments on lines of their own, and the
+/// spaces that only people need.
 pub(super) fn close_set(css: &str) -> String {
     let mut out = String::with_capacity(css.len());
     for line in css.lines().map(str::trim) {
         let comment = line.starts_with("/*") && line.ends_with("*/");
-        if !line.is_empty() && !comment {
-            out.push_str(line);
+        if line.is_empty() || comment {
+            continue;
+        }
+        let mut close = line.to_owned();
+        for (wide, narrow) in [
+            (" {", "{"),
+            ("{ ", "{"),
+            (" }", "}"),
+            ("; ", ";"),
+            (": ", ":"),
+            (", ", ","),
+            (";}", "}"),
+        ] {
+            close = close.replace(wide, narrow);
+        }
+        out.push_str(&close);
+        if !close.ends_with([';', '{', '}', ',']) {
             out.push('\n');
         }
     }
@@ -81,9 +97,6 @@ mod tests {
 
     #[test]
     fn comments_and_indentation_go() {
-        assert_eq!(
-            close_set("/* a */\n\n  p {\n  x: y;\n}\n"),
-            "p {\nx: y;\n}\n"
-        );
+        assert_eq!(close_set("/* a */\n\n  p {\n  x: y;\n}\n"), "p{x:y;}");
     }
 }

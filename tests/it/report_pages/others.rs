@@ -179,6 +179,24 @@ pub(crate) fn oil() -> Sheet {
     };
     let body = OilSheet {
         headline: "PAO EP gear oil of ISO VG 220, VI 155.".into(),
+        because: "Stated at two temperatures, 40 to 100 °C.".into(),
+        grades: vec![("ISO VG".into(), "220 new, 220 worn.".into())],
+        cold: vec![("Pour point".into(), "−42 °C.".into())],
+        starts: vec![OilStart {
+            at: "−19 °C".into(),
+            limit: "25\u{202f}000 mm²/s".into(),
+            below: "59 K".into(),
+            of: "splash lubrication".into(),
+            step: "9".into(),
+        }],
+        life: vec![("Guidance".into(), "never a promise.".into())],
+        lives: vec![OilLife {
+            at: "80 °C".into(),
+            equation: "2900 h to 12\u{202f}000 h".into(),
+            rule_of_ten: "3000 h to 11\u{202f}000 h".into(),
+            remark: String::new(),
+        }],
+        more_uses: "Three more lubrication points stand on the sheets of their machines.".into(),
         facts: vec![
             ("Base".into(), "PAO".into()),
             ("Additives".into(), "EP".into()),

@@ -1,6 +1,6 @@
 //! Sites in memory, and what their pages say in every state a machine can be in.
 
-use super::pages::{Pages, written};
+use super::pages::{Pages, articles, written};
 use crate::scenario::on;
 use filmwright::cli::host::MemoryHost;
 
@@ -127,9 +127,9 @@ fn a_tolerance_becomes_a_whisker_and_judges_nothing() {
     assert!(with["machine-G-1.html"].contains("class=\"whisker\""));
     assert!(!without["machine-G-1.html"].contains("class=\"whisker\""));
     let answer = "Keep T-220. It holds";
-    assert!(
-        with["machine-G-1.html"].contains(answer) && without["machine-G-1.html"].contains(answer)
-    );
+    for pages in [&with, &without] {
+        assert!(articles(&pages["machine-G-1.html"])[0].contains(answer));
+    }
 }
 
 #[test]

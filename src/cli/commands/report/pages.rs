@@ -84,9 +84,13 @@ fn into_folder(
         one(session, templates, &frame, &made.sheet, folder)?;
         written.pages.push(page.clone());
         written.answers.push(answer(made, page));
-        progress(session, written.answers.len(), report.machines());
+        session.progress(
+            "writing sheets of machines",
+            written.answers.len(),
+            report.machines(),
+        );
     }
-    progress_end(session);
+    session.host.progress_end();
     for sheet in report.others() {
         one(session, templates, &frame, &sheet, folder)?;
         take_headline(&mut written, &sheet);
@@ -123,9 +127,13 @@ fn in_one(
         middle.push(laid.map_err(|problem| template(session, &problem))?);
         let page = format!("#{}", made.sheet.place.id("sheet"));
         written.answers.push(answer(made, page));
-        progress(session, written.answers.len(), report.machines());
+        session.progress(
+            "writing sheets of machines",
+            written.answers.len(),
+            report.machines(),
+        );
     }
-    progress_end(session);
+    session.host.progress_end();
     let title = frame.site.clone();
     let mut page = templates
         .open(&frame, &title, None, &report.nav())
@@ -172,27 +180,4 @@ fn take_headline(written: &mut Written, sheet: &Sheet) {
     if let Body::Overview(body) = &sheet.body {
         written.headline.clone_from(&body.answer.headline);
     }
-}
-
-/// Runs shorter than this show no progress, ms.
-const PATIENCE: u128 = 2000;
-
-/// One line rewritten in place, on a terminal and after two seconds only.
-fn progress(session: &mut Session<'_>, done: usize, of: usize) {
-    if shows_progress(session) && done.is_multiple_of(20) {
-        session
-            .host
-            .err(&format!("\rwriting sheet {done} of {of} machines"));
-    }
-}
-
-fn progress_end(session: &mut Session<'_>) {
-    if shows_progress(session) {
-        session.host.err("\r\u{1b}[K");
-    }
-}
-
-fn shows_progress(session: &Session<'_>) -> bool {
-    let host = &session.host;
-    !session.shared.quiet && host.err_is_terminal() && host.elapsed_ms() > PATIENCE
 }

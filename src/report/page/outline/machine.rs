@@ -82,7 +82,7 @@ fn numbered(counter: &mut Counter<'_>, part: &mut Part, under: &str, point: &Poi
                 "calc",
                 "Calculation",
                 "Calculation",
-                !point.steps.is_empty(),
+                !point.steps.is_empty() || point.steps_as.is_some(),
             ),
             ("basis", "Assumed and missing", "Assumed", basis),
         ],
