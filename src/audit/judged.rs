@@ -16,7 +16,7 @@ use crate::model::rulebook::used_oil::Reading as On;
 use crate::model::word::Word;
 use crate::model::{Oil, Point};
 use crate::oil::worn::PLAUSIBLE_LOSS_MILD;
-use crate::problem::{Code as ProblemCode, Problem, Write, suggest};
+use crate::problem::{Code as ProblemCode, Problem, Write};
 use crate::quantity::Measure;
 use crate::source::Place;
 use crate::weighing::{Condition, Scales, Weighed, facts, oil_in_use};
@@ -505,9 +505,4 @@ pub(super) fn tell_labels(judged: &[Judged], bottles: &[Bottle], problems: &mut 
         ));
         problems.push(problem);
     }
-}
-
-/// The oil certainly meant by a label that is none.
-pub fn label_meant<'o>(written: &str, oils: impl IntoIterator<Item = &'o str>) -> Option<&'o str> {
-    suggest::certain(written, oils)
 }

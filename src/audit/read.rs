@@ -111,7 +111,7 @@ impl TableReader<'_> {
                 _ => self.text(*what, *column, content, &mut bottle, &mut misfits),
             }
         }
-        self.counts(&mut bottle);
+        Self::counts(&mut bottle);
         let beyond = row.cells.iter().find(|c| c.column > self.headings.last);
         let elsewhere = misfits.iter().filter(|m| m.elsewhere).count();
         if beyond.is_some() || elsewhere >= 2 {
@@ -382,7 +382,7 @@ impl TableReader<'_> {
     }
 
     /// A code from counts where none is given.
-    fn counts(&self, bottle: &mut Bottle) {
+    fn counts(bottle: &mut Bottle) {
         if bottle.cleanliness.is_none() {
             let count = |r| bottle.figures.exact(r);
             let counts = [Reading::Count4, Reading::Count6, Reading::Count14].map(count);

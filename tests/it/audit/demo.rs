@@ -250,7 +250,7 @@ fn the_makers_limits_outrank_those_of_practice() {
     assert_eq!(water(with(table, ""))["level"], "watch");
     let site = super::sites::SITE.replace(
         "    cleanliness: 18/16/13\n",
-        "    cleanliness: 18/16/13\n    used oil: { water: 100 .. 300 ppm, maker }\n",
+        "    cleanliness: 18/16/13\n    used oil: { water: 100 ppm .. 300 ppm, maker }\n",
     );
     let own = water(with(table, "").with("site.yaml", &site));
     assert_eq!(
