@@ -304,7 +304,7 @@ pub struct Intake {
     pub makes: Option<IntakeMakes>,
     /// Decimal sign of its numbers (default: found from the cells)
     #[arg(long, value_enum, value_name = "SIGN")]
-    pub decimal: Option<IntakeDecimal>,
+    pub decimal: Option<Decimal>,
     /// Encoding of a CSV file, as windows-1252 (default: found)
     #[arg(long, value_name = "NAME")]
     pub encoding: Option<String>,
@@ -326,15 +326,6 @@ pub enum IntakeMakes {
     Site,
     /// Lubricants: an oil file.
     Oils,
-}
-
-/// Decimal signs.
-#[derive(Clone, Copy, Debug, PartialEq, Eq, ValueEnum)]
-pub enum IntakeDecimal {
-    /// 52.0
-    Point,
-    /// 52,0
-    Comma,
 }
 
 /// Gallons.
@@ -570,6 +561,9 @@ pub struct Report {
     /// Folder of own templates on top of the built-in ones
     #[arg(long, value_name = "DIR")]
     pub templates: Option<String>,
+    /// Say on each sheet in what share of so many cases within the tolerances every limit is met
+    #[arg(long, value_name = "CASES")]
+    pub scatter: Option<u32>,
     /// Write the results as a workbook as well
     #[arg(long, value_name = "FILE")]
     pub xlsx: Option<String>,

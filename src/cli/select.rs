@@ -5,7 +5,24 @@ use super::session::Session;
 use crate::model::{Point, Site};
 use crate::problem::suggest;
 
+/// Most cases sampled for one oil.
+const MOST_CASES: u32 = 1_000_000;
+
 impl Session<'_> {
+    /// A number of cases to sample.
+    ///
+    /// # Errors
+    /// None, or more than can be sampled in a run.
+    pub fn cases(&mut self, cases: u32) -> Result<u32, Exit> {
+        if (1..=MOST_CASES).contains(&cases) {
+            return Ok(cases);
+        }
+        self.fail(&format!(
+            "--scatter {cases} is not a number of cases from 1 to {MOST_CASES}\n  write  --scatter 1000"
+        ));
+        Err(Exit::Usage)
+    }
+
     /// Points by tag, address or pattern; all where none is given.
     ///
     /// # Errors

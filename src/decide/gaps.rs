@@ -2,9 +2,12 @@
 
 pub mod effect;
 pub mod letter;
+pub mod oils;
 
 use crate::demand::{Gap, GapKind};
 use crate::judge::Verdict;
+use crate::quantity::Amount;
+use crate::quantity::show::{Toward, Units, fixed, quantity};
 use crate::weighing::{Candidate, Scales, Weighed};
 use effect::Effect;
 
@@ -119,6 +122,7 @@ pub fn found<'a>(scales: &Scales<'a>, w: &Weighed<'a>, lead: Option<&Candidate>)
         .filter(|g| g.kind != GapKind::Fact)
         .map(|g| of_input(scales, w, lead, g))
         .collect();
+    all.extend(oils::found(scales, w, lead));
     all.extend(facts(w, lead));
     all.sort_by(|a, b| {
         a.weight
@@ -138,10 +142,7 @@ fn of_input<'a>(
 ) -> Found {
     let effect = lead.and_then(|c| effect::effect(scales, w, gap, c.oil));
     let (weight, waits) = match &effect {
-        Some(e) if e.picks() => (Weight::Oil, None),
-        Some(e) if e.turns() => (Weight::Verdict, None),
-        Some(e) if e.moves() > scales.reserve => (Weight::Margin, None),
-        Some(_) => (Weight::Nothing, None),
+        Some(e) => (weight_of(e, scales.reserve), None),
         None => {
             let (weight, waits) = without_range(w, lead, gap);
             (weight, Some(waits))
@@ -154,6 +155,27 @@ fn of_input<'a>(
         waits,
         of_lead: true,
     }
+}
+
+/// What an effect decides.
+fn weight_of(effect: &Effect, reserve: f64) -> Weight {
+    if effect.picks() {
+        Weight::Oil
+    } else if effect.turns() {
+        Weight::Verdict
+    } else if effect.moves() > reserve {
+        Weight::Margin
+    } else {
+        Weight::Nothing
+    }
+}
+
+/// The figure of a gap as people write it: a loss in per cent.
+pub fn figure(gap: &Gap, a: Amount, units: Units) -> String {
+    if gap.key == oils::SHEAR_LOSS {
+        return format!("{} %", fixed(100.0 * a.base, 0, Toward::Nearest));
+    }
+    quantity(a, units, Toward::Nearest)
 }
 
 /// An input without a range: it leaves the verdict open where a limit needs it.

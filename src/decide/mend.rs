@@ -6,6 +6,7 @@
 
 pub mod heater;
 pub mod lever;
+mod pairs;
 mod trial;
 pub mod words;
 
@@ -130,7 +131,7 @@ pub fn mend(scales: &Scales<'_>, point: &Point, oil: usize) -> Mended {
             }
         }
         if !found.single.iter().any(|m| m.target == target) {
-            found.pairs.extend(cheapest_pair(&trial, &j, target));
+            found.pairs.extend(pairs::cheapest(&trial, &j, target));
         }
     }
     found.heater = heater::advice(&trial, &found);
@@ -180,6 +181,10 @@ fn smallest(
     let left = |at: f64| trial.excess(lever, at, side, target);
     if left(range.to) < 0.0 {
         return None;
+    }
+    if left(range.from) >= 0.0 {
+        // the change itself does, as small as can be: a cooler where each oil heats by itself
+        return Some(range.from);
     }
     let root = bracketed(range.from, range.to, left).ok()?;
     // of the last two neighbours the one that does
@@ -277,112 +282,4 @@ fn grade_of(trial: &Trial<'_>, changes: &[Change], target: Target) -> Option<Iso
     outcome
         .is_ok_and(|c| reached(c.judgement.verdict, target))
         .then_some(nearest)
-}
-
-/// Two changes, one for each side; of those that do, the pair of least trouble.
-fn cheapest_pair(trial: &Trial<'_>, j: &Judgement, target: Target) -> Option<Mend> {
-    let mut pairs: Vec<(u8, Lever, Lever)> = Vec::new();
-    for hot in Lever::ALL {
-        for cold in Lever::ALL {
-            if matches!(hot.side(), Side::Hot) && matches!(cold.side(), Side::Cold) {
-                pairs.push((hot.effort() + cold.effort(), hot, cold));
-            }
-        }
-    }
-    // a higher index mends one side, the machine the other
-    for machine in [
-        Lever::Heater,
-        Lever::ColdestStart,
-        Lever::SumpRise,
-        Lever::Cooler,
-    ] {
-        pairs.push((
-            Lever::Index.effort() + machine.effort(),
-            Lever::Index,
-            machine,
-        ));
-    }
-    // a neighbouring grade for one side, the machine for the other
-    for machine in Lever::ALL {
-        if matches!(machine.side(), Side::Hot | Side::Cold) && !machine.of_oil() {
-            pairs.push((
-                Lever::Grade.effort() + machine.effort(),
-                Lever::Grade,
-                machine,
-            ));
-        }
-    }
-    pairs.sort();
-    let found = pairs.into_iter().find_map(|(_, first, second)| {
-        let changes = match first {
-            Lever::Grade | Lever::Index => after_other(trial, j, first, second, target),
-            _ => one_after_other(trial, j, first, second, target),
-        };
-        verified(trial, changes?, target).ok()
-    });
-    found
-}
-
-/// Solves each of two changes for its own side, the second on top of the first.
-fn one_after_other(
-    trial: &Trial<'_>,
-    j: &Judgement,
-    first: Lever,
-    second: Lever,
-    target: Target,
-) -> Option<Vec<Change>> {
-    let range = trial.range(first, j, target)?;
-    if !acts(j, first, target) {
-        return None;
-    }
-    let one = Change {
-        lever: first,
-        from: range.from,
-        to: smallest(trial, first, range, first.side(), target)?,
-    };
-    let next = trial.with(first, one.to)?;
-    Some(vec![one, on_top(&next, second, target)?])
-}
-
-/// Solves a change on top of another.
-fn on_top(next: &Trial<'_>, lever: Lever, target: Target) -> Option<Change> {
-    let j = next.judge();
-    let range = next.range(lever, &j, target)?;
-    if !acts(&j, lever, target) {
-        return None;
-    }
-    Some(Change {
-        lever,
-        from: range.from,
-        to: smallest(next, lever, range, lever.side(), target)?,
-    })
-}
-
-/// A change of the oil for the side the machine's change does not act on, then the machine's.
-fn after_other(
-    trial: &Trial<'_>,
-    j: &Judgement,
-    oil: Lever,
-    machine: Lever,
-    target: Target,
-) -> Option<Vec<Change>> {
-    let (side, to) = match machine.side() {
-        Side::Cold => (Side::Hot, 3.0),
-        Side::Hot => (Side::Cold, -3.0),
-        Side::Both => return None,
-    };
-    if excess(j, side, target) >= 0.0 {
-        return None;
-    }
-    let range = match oil {
-        Lever::Grade => Range { from: 0.0, to },
-        _ => trial.range(oil, j, target)?,
-    };
-    let one = Change {
-        lever: oil,
-        from: range.from,
-        to: smallest(trial, oil, range, side, target)?,
-    };
-    let next = trial.with(oil, one.to)?;
-    Some(vec![one, on_top(&next, machine, target)?])
 }

@@ -98,6 +98,8 @@ pub struct Change {
     pub proposed: Option<(Option<String>, Option<String>)>,
     /// Oils weighed or barred that do not move.
     pub still: usize,
+    /// Whether no oil of the list is of the sort the point takes.
+    pub empty: bool,
 }
 
 impl Change {
@@ -142,8 +144,13 @@ pub fn change(before: (&Scales<'_>, &Weighed<'_>), after: (&Scales<'_>, &Weighed
         limits: limits(before.1, after.1),
         oils,
         proposed: (was != is).then_some((was, is)),
+        empty: oils_at_all(before.1) + oils_at_all(after.1) == 0,
         still,
     }
+}
+
+fn oils_at_all(w: &Weighed<'_>) -> usize {
+    w.candidates.len() + w.barred.len()
 }
 
 /// A candidate and where it stands.

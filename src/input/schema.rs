@@ -29,14 +29,15 @@ pub fn schema(kind: FileKind) -> Value {
 
 /// Every schema with the name of its file: `site.schema.json`.
 pub fn files() -> Vec<(String, String)> {
-    FileKind::ALL
-        .iter()
-        .map(|kind| {
-            let mut text = serde_json::to_string_pretty(&schema(*kind)).unwrap_or_default();
-            text.push('\n');
-            (format!("{}.schema.json", kind.word()), text)
-        })
-        .collect()
+    let kinds = FileKind::ALL.iter();
+    let mut all: Vec<(&str, Value)> = kinds.map(|kind| (kind.word(), schema(*kind))).collect();
+    all.push(("rules", super::rules::schema::schema()));
+    let printed = |(word, schema): (&str, Value)| {
+        let mut text = serde_json::to_string_pretty(&schema).unwrap_or_default();
+        text.push('\n');
+        (format!("{word}.schema.json"), text)
+    };
+    all.into_iter().map(printed).collect()
 }
 
 /// The records a kind of file can reach, by name.

@@ -86,6 +86,8 @@ pub struct Options {
     pub warning: Option<String>,
     /// What the commands printed on the sheets need behind them to find the same site.
     pub flags: String,
+    /// Cases sampled for the oil each sheet tells of; none unless asked for.
+    pub scatter: Option<u32>,
     /// An older state, and what moved since.
     pub since: Option<Since>,
 }

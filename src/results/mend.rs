@@ -9,6 +9,7 @@ use crate::judge::weigh::Margin;
 use crate::model::Point;
 use crate::quantity::Measure;
 use crate::quantity::show::{Units, unit_of};
+use crate::relation::oil::grade::IsoGrade;
 use crate::weighing::{Candidate, Scales};
 use serde_json::{Map, Value, json};
 
@@ -74,8 +75,14 @@ fn fill(m: &mut Map<String, Value>, mend: &Mend, units: Units) {
     m.insert("for".into(), json!(mend.target.word()));
     let changes: Vec<Value> = mend.changes.iter().map(|c| change(c, units)).collect();
     m.insert("changes".into(), Value::Array(changes));
+    if let [only] = mend.changes.as_slice() {
+        // a single change stands plainly beside the list
+        if let Value::Object(alone) = change(only, units) {
+            m.extend(alone);
+        }
+    }
     m.insert("says".into(), json!(mend.words(units)));
-    m.insert("grade".into(), json!(mend.grade.map(|g| g.number())));
+    m.insert("grade".into(), json!(mend.grade.map(IsoGrade::number)));
     m.insert("caution".into(), json!(mend.caution));
     m.insert("set".into(), json!(mend.settings()));
     m.insert("verdict".into(), json!(mend.then.judgement.verdict.word()));

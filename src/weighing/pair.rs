@@ -90,6 +90,19 @@ impl Scales<'_> {
 }
 
 impl<'a> Scales<'a> {
+    /// A weighed point with one oil of the list in another state among the others.
+    pub fn weigh_with_oil(&self, w: &Weighed<'a>, oil: usize, state: &PreparedOil) -> Weighed<'a> {
+        let mut next = w.clone();
+        next.candidates.retain(|c| c.oil != oil);
+        next.barred.retain(|b| b.oil != oil);
+        match self.pair(w.point, oil, Some(state), self.reserve).outcome {
+            Ok(candidate) => next.candidates.push(candidate),
+            Err(barred) => next.barred.push(barred),
+        }
+        self.sort(&mut next.candidates);
+        next
+    }
+
     /// Weighs every oil on a point as if one thing were found out: each of its settings changed
     /// by `closed`. Nothing is traced.
     pub fn weigh_closed(

@@ -5,4 +5,5 @@ pub(crate) mod gaps;
 mod mend;
 mod plant;
 mod scatter;
+mod sheet;
 mod whatif;

@@ -4,7 +4,7 @@ use crate::cli::exit::Exit;
 use crate::cli::session::Session;
 use crate::cli::text_of::mend::one;
 use crate::cli::{Format, Mend};
-use crate::decide::mend::mend as solve;
+use crate::decide::mend::{Mend as Mended, mend as solve};
 use crate::demand::takes_grease;
 use crate::results::mend::{Case, document_of, table_of};
 use crate::weighing::Scales;
@@ -68,7 +68,7 @@ fn suggest(session: &mut Session<'_>, cases: &[Case<'_>], banded: bool) {
     let first = mended.missing().first().copied();
     let mend = first.and_then(|target| mended.of(target).find(|m| m.settings().is_some()));
     // a what-if weighs the place as it is, not another ambient
-    if let Some(settings) = mend.and_then(|m| m.settings()).filter(|_| !banded) {
+    if let Some(settings) = mend.and_then(Mended::settings).filter(|_| !banded) {
         let set: Vec<String> = settings.iter().map(|s| format!("--set \"{s}\"")).collect();
         let address = quoted(&point.address());
         session.note(&format!(

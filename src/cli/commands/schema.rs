@@ -21,7 +21,8 @@ pub fn schema(session: &mut Session<'_>, args: &Schema) -> Exit {
         session.host.out(&out);
         return Exit::Done;
     }
-    let words: Vec<&str> = FileKind::ALL.iter().map(|k| k.word()).collect();
+    let mut words: Vec<&str> = FileKind::ALL.iter().map(|k| k.word()).collect();
+    words.push("rules");
     let Some(kind) = &args.kind else {
         session.fail(&format!(
             "no kind of file is named\n  write  filmwright schema KIND, one of {}; or filmwright schema --write",

@@ -90,9 +90,6 @@ fn run(
     Ok(Exit::Gate)
 }
 
-/// Most cases sampled for one oil.
-const MOST_CASES: u32 = 1_000_000;
-
 /// Samples every oil that is printed.
 fn sampled(
     session: &mut Session<'_>,
@@ -100,12 +97,7 @@ fn sampled(
     all: &[Weighed<'_>],
     cases: u32,
 ) -> Result<Scatters, Exit> {
-    if cases == 0 || cases > MOST_CASES {
-        session.fail(&format!(
-            "--scatter {cases} is not a number of cases from 1 to {MOST_CASES}\n  write  --scatter 1000"
-        ));
-        return Err(Exit::Usage);
-    }
+    let cases = session.cases(cases)?;
     let mut found = Scatters::new();
     for (n, w) in all.iter().enumerate() {
         for c in &w.candidates {

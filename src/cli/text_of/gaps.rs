@@ -3,11 +3,11 @@
 use crate::cli::text::{Column, hanging, table};
 use crate::decide::gaps::effect::words;
 use crate::decide::gaps::letter::Question;
-use crate::decide::gaps::{Found, Missing, Place, PointGaps, Waits, Weight};
+use crate::decide::gaps::{Found, Missing, Place, PointGaps, Waits, Weight, figure};
 use crate::demand::GapKind;
 use crate::model::Site;
 use crate::quantity::Amount;
-use crate::quantity::show::{Toward, margin, quantity};
+use crate::quantity::show::margin;
 use crate::weighing::Scales;
 use std::fmt::Write as _;
 
@@ -141,7 +141,7 @@ fn value(scales: &Scales<'_>, found: &Found) -> String {
     let Some(gap) = found.input() else {
         return String::new();
     };
-    let show = |a: Amount| quantity(a, scales.units, Toward::Nearest);
+    let show = |a: Amount| figure(gap, a, scales.units);
     match &gap.kind {
         GapKind::Range(lo, hi) => format!("{} .. {}", show(*lo), show(*hi)),
         GapKind::Assumed { taken, lo, hi } => {

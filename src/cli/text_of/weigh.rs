@@ -67,12 +67,26 @@ fn candidates(rows: &[Vec<String>], width: usize) -> String {
     table(&columns, &rows, width)
 }
 
+/// What is said where the list holds nothing of the sort a point takes.
+pub fn nothing_to_weigh(w: &Weighed<'_>) -> String {
+    let sort = if crate::demand::takes_grease(w.point) {
+        "grease"
+    } else {
+        "oil"
+    };
+    format!("nothing weighed: the oil list holds no {sort}  [nothing-to-weigh]")
+}
+
 /// The answer, first.
 fn headline(scales: &Scales<'_>, w: &Weighed<'_>, width: usize) -> String {
     let address = w.point.address();
     let id = |c: &Candidate| scales.site.oils[c.oil].id.clone();
     let Some(best) = w.candidates.first() else {
-        return format!("{address}  every oil is barred here\n");
+        return if w.barred.is_empty() {
+            format!("{address}  {}\n", nothing_to_weigh(w))
+        } else {
+            format!("{address}  every oil is barred here\n")
+        };
     };
     let ends = ends(best);
     match best.judgement.verdict {

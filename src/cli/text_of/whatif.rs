@@ -25,6 +25,10 @@ pub fn text(changes: &[Change], units: Units, width: usize) -> String {
 
 fn one(change: &Change, units: Units, width: usize) -> String {
     let lead = format!("{}  ", change.address);
+    if change.empty {
+        let text = "nothing weighed: the oil list holds nothing of the sort this point takes  [nothing-to-weigh]";
+        return hanging(&lead, text, width);
+    }
     if change.nothing() {
         return hanging(&lead, "nothing changes", width);
     }

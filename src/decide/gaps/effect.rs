@@ -32,7 +32,7 @@ pub fn smallest(c: &Candidate) -> Option<f64> {
 }
 
 impl Effect {
-    fn take(&mut self, w: &Weighed<'_>, oil: usize, now: Option<usize>, at: f64) {
+    pub(super) fn take(&mut self, w: &Weighed<'_>, oil: usize, now: Option<usize>, at: f64) {
         let found = w.candidate(oil);
         if let Some(m) = found.and_then(smallest) {
             let (lo, hi) = self.margin.unwrap_or((m, m));

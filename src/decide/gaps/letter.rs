@@ -1,10 +1,10 @@
 //! The gaps as questions in plain sentences, for a letter to the plant.
 
 use super::effect::words;
-use super::{Found, Missing, Place, PointGaps, Waits, Weight};
+use super::{Found, Missing, Place, PointGaps, Waits, Weight, figure};
 use crate::demand::{Gap, GapKind};
 use crate::quantity::Amount;
-use crate::quantity::show::{Toward, Units, quantity};
+use crate::quantity::show::Units;
 use crate::weighing::Scales;
 
 /// One question.
@@ -73,12 +73,12 @@ fn fact(says: &str, question: &str) -> String {
 
 fn input(gap: &Gap, units: Units) -> Vec<String> {
     let what = asked(&gap.key);
-    let of = gap
-        .about
-        .as_ref()
-        .map_or(String::new(), |about| format!(" of the {about}"));
+    let of = gap.about.as_ref().map_or(String::new(), |about| {
+        let part = about.contains(' ');
+        format!(" of {}{about}", if part { "the " } else { "" })
+    });
     let mut all = vec![format!("What is {what}{of}?")];
-    let show = |a: Amount| quantity(a, units, Toward::Nearest);
+    let show = |a: Amount| figure(gap, a, units);
     match &gap.kind {
         GapKind::Range(lo, hi) => all.push(format!(
             "Until we know, anything from {} to {} is taken as possible.",
@@ -109,6 +109,7 @@ fn asked(key: &str) -> String {
         "part rise" => "the rise over the oil".to_owned(),
         "start" => "the oil temperature at the coldest start".to_owned(),
         "heater" => "the setting of the sump heater".to_owned(),
+        super::oils::SHEAR_LOSS => "the permanent shear loss".to_owned(),
         other => format!("the {other}"),
     }
 }

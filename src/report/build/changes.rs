@@ -8,10 +8,12 @@ use crate::decide::ask::{Ask, Specification, ask};
 use crate::decide::gaps::effect::words;
 use crate::decide::mend::lever::Target;
 use crate::decide::mend::{Mended, mend};
+use crate::decide::scatter::scatter;
 use crate::judge::Verdict;
-use crate::quantity::show::Toward;
+use crate::quantity::show::{Toward, fixed};
 use crate::quantity::{Measure, ThermodynamicTemperature};
 use crate::report::model::{ChangeRow, Changes, Phrase};
+use crate::results::scatter::named;
 use crate::weighing::Candidate;
 
 /// Oils told of on a sheet at most.
@@ -183,6 +185,7 @@ fn unsettles(case: &Case<'_, '_>, gaps: &[Found]) -> Vec<Phrase> {
         let ends = ends.join(" or ");
         all.push(format!("An ambient {ends}: {id} no longer meets every limit.").into());
     }
+    all.extend(sampled(case, lead));
     for gap in gaps.iter().filter(|g| g.weight <= Weight::Verdict) {
         let Some(effect) = &gap.effect else { continue };
         let turned = if gap.weight == Weight::Oil {
@@ -201,4 +204,35 @@ fn unsettles(case: &Case<'_, '_>, gaps: &[Found]) -> Vec<Phrase> {
         all.push(say::sentence(&says).into());
     }
     all
+}
+
+/// How sure the verdict is, where cases are to be sampled.
+fn sampled(case: &Case<'_, '_>, lead: &Candidate) -> Option<Phrase> {
+    let cases = case.run.options.scatter?;
+    let s = scatter(case.run.scales, case.w, lead.oil, cases)?;
+    let percent = |share: f64, toward| fixed(100.0 * share, 1, toward);
+    let most: Vec<String> = s
+        .most()
+        .iter()
+        .map(|i| {
+            format!(
+                "{} ({}\u{202f}%)",
+                named(i),
+                percent(i.matters, Toward::Nearest)
+            )
+        })
+        .collect();
+    let matters = if most.is_empty() {
+        String::new()
+    } else {
+        format!(" What matters most: {}.", say::list(&most))
+    };
+    let text = format!(
+        "Of {cases} cases within the tolerances, stated or usual, {} meets every limit in {}\u{202f}% (95\u{202f}% interval {} to {}\u{202f}%).{matters} The verdict stands as it is.",
+        case.id(lead.oil),
+        percent(s.share(), Toward::Down),
+        percent(s.interval.0, Toward::Down),
+        percent(s.interval.1, Toward::Up),
+    );
+    Some(text.into())
 }

@@ -6,6 +6,7 @@ use super::say;
 use super::vary::range;
 pub(super) use crate::decide::gaps::Weight;
 use crate::decide::gaps::effect::{Effect, smallest, words};
+use crate::decide::gaps::oils::SHEAR_LOSS;
 use crate::decide::gaps::{self as decide, Missing, Waits};
 use crate::demand::{Gap, GapKind};
 use crate::quantity::Amount;
@@ -150,7 +151,12 @@ fn used(case: &Case<'_, '_>, gap: &Gap) -> Option<f64> {
 }
 
 fn plausible(case: &Case<'_, '_>, gap: &Gap) -> String {
-    let show = |a: Amount| say::amount(a, case.units(), Toward::Nearest);
+    let show = |a: Amount| {
+        if gap.key == SHEAR_LOSS {
+            return say::set(&decide::figure(gap, a, case.units()));
+        }
+        say::amount(a, case.units(), Toward::Nearest)
+    };
     let range = |lo, hi| format!("{} to {}", show(lo), show(hi));
     match &gap.kind {
         GapKind::Range(lo, hi) => {

@@ -136,3 +136,44 @@ fn an_unknown_without_a_range_waits_for_the_verdict() {
     assert_eq!(first["key"], "speed", "{json}");
     assert_eq!(first["decides"], "a verdict");
 }
+
+#[test]
+fn an_unknown_shear_loss_is_a_gap_that_turns_the_verdict() {
+    // VG 220 polymer-thickened, 0 to 25 % in gears (common practice); floor 20 mm2/s at 80 degC:
+    // the new oil has about 44 there, so it is the floor of the maker that is put between
+    let site = "file: site 1\nmachines:\n  M1:\n    ambient: 5 .. 35 degC\n    lubrication: splash\n    oil now: X\n    sump: held at 80 degC\n    start limit: 100000 mm2/s, maker\n    floor: 40 mm2/s, maker\n    parts:\n      - gear mesh: stage\n        pitch-line speed: 30 m/s\n";
+    let oils = |loss: &str| {
+        format!(
+            "file: oils 1\nX:\n  kind: gear\n  base: mineral I, polymer-thickened\n  classes: [CKC]\n  additives: [EP]\n  sulphur: inactive\n  viscosity: [220 mm2/s at 40 degC, 25.9 mm2/s at 100 degC]\n{loss}  density: 890 kg/m3 at 15 degC\n"
+        )
+    };
+    let host = |loss: &str| {
+        MemoryHost::new()
+            .with("site.yaml", site)
+            .with("oils.yaml", &oils(loss))
+    };
+    let json = on(host(""), "gaps -f json -q").json();
+    let all = json["gaps"].as_array().expect("a list");
+    let gap = all
+        .iter()
+        .find(|g| g["key"] == "shear loss")
+        .unwrap_or_else(|| panic!("{json}"));
+    assert_eq!(gap["value"]["range"][1], 0.25, "{gap}");
+    assert!(
+        matches!(gap["decides"].as_str(), Some("which oil" | "a verdict")),
+        "{gap}"
+    );
+    // the two ends stated in the file give the two words
+    let word = |loss: &str| {
+        let json = on(host(loss), "weigh M1 -f json -q").json();
+        json["judgements"][0]["verdict"].as_str().map(str::to_owned)
+    };
+    let (none, most) = (
+        word("  shear loss: 1 % at 100 degC, test \"20 h tapered roller bearing\"\n"),
+        word("  shear loss: 25 % at 100 degC, test \"20 h tapered roller bearing\"\n"),
+    );
+    assert_ne!(none, most);
+    assert_eq!(most.as_deref(), Some("fails"));
+    // the pour point is not stated either: its base's range is a gap
+    assert!(all.iter().any(|g| g["key"] == "pour point"), "{json}");
+}

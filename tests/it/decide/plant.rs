@@ -39,7 +39,8 @@ impl Plant {
     pub(super) fn by_chance(seed: u64) -> Self {
         let mut chance = Chance::seeded(seed);
         let grades = [32.0, 46.0, 68.0, 100.0, 150.0, 220.0, 320.0, 460.0];
-        let which = chance.between(0.0, 7.999) as usize;
+        let at = chance.between(0.0, 8.0);
+        let which = (1..8).filter(|i| at >= f64::from(*i)).count();
         let nu40 = grades[which] * chance.between(0.95, 1.05);
         let factor = chance.between(0.30, 0.42);
         let thickened = chance.between(0.0, 1.0) < 0.3;

@@ -82,7 +82,7 @@ fn only_what_moves_is_printed_and_files_stay() {
 fn several_values_are_set_at_once_and_parts_by_name() {
     let ran = on(
         crate::decide::gaps::host("40 K"),
-        "whatif M1 --set \"rolling bearing 22220: speed=400 r/min\" --set \"heater=0 degC\" -f json -q",
+        "whatif M1 --set \"gear mesh stage: pitch-line speed=3 m/s\" --set \"heater=0 degC\" -f json -q",
     );
     let json = ran.json();
     let ends: Vec<&str> = json["limits"]
