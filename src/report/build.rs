@@ -7,6 +7,7 @@
 mod ambient;
 mod answer;
 mod assumed;
+mod audit;
 mod barred;
 mod candidates;
 mod case;
@@ -46,6 +47,7 @@ mod store;
 mod uses;
 mod vary;
 
+use crate::audit::Audit;
 pub use revision::Since;
 
 use crate::demand::End;
@@ -96,6 +98,8 @@ pub struct Run<'a> {
     options: Options,
     /// Thickened oils as new, by their place in the list.
     fresh: BTreeMap<usize, PreparedOil>,
+    /// The audit of the oils in use, where there are samples.
+    audit: Option<&'a Audit>,
     /// Where the oils' sheets stand.
     oil_sheets: Vec<Href>,
 }
@@ -125,6 +129,7 @@ impl<'a> Run<'a> {
             options,
             fresh,
             oil_sheets: Vec::new(),
+            audit: None,
         }
     }
 
@@ -135,6 +140,13 @@ impl<'a> Run<'a> {
             Some(href) => Phrase::new().tag_link(id, href.clone()),
             None => Phrase::new().tag(id),
         }
+    }
+
+    /// With an audit sheet.
+    #[must_use]
+    pub fn audited(mut self, audit: &'a Audit) -> Self {
+        self.audit = Some(audit);
+        self
     }
 
     /// An oil judged as new, where it is thickened.
@@ -189,8 +201,13 @@ pub struct Report<'a> {
 impl<'a> Report<'a> {
     /// Plans the sheets of these points.
     pub fn new(run: Run<'a>, points: &[&'a Point]) -> Self {
-        let revised = run.options.since.is_some();
-        let plan = Plan::new(points, &run.scales.site.oils, run.options.bundle, revised);
+        let plan = Plan::new(
+            points,
+            &run.scales.site.oils,
+            run.options.bundle,
+            run.audit.is_some(),
+            run.options.since.is_some(),
+        );
         let mut run = run;
         run.oil_sheets = plan.oils.iter().map(|o| plan.href(&o.place)).collect();
         Self {
@@ -248,8 +265,9 @@ impl<'a> Report<'a> {
         let oils = (0..self.plan.oils.len()).filter_map(|i| oils::oil(self, i));
         std::iter::once_with(|| overview::sheet(self))
             .chain(areas)
-            .chain(self.changes())
             .chain(oils)
+            .chain(self.run.audit.and_then(|a| audit::sheet(self, a)))
+            .chain(self.changes())
             .chain(std::iter::once_with(|| reference::methods(self)))
             .chain(std::iter::once_with(|| reference::rules(self)))
             .chain(std::iter::once_with(|| reference::words(self)))

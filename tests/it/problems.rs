@@ -5,6 +5,7 @@ use filmwright::demand::rules::CALCULATED;
 use filmwright::input::file::FileKind;
 use filmwright::input::load::{Tree, With, load, load_oils, take};
 use filmwright::input::rules::rulebook;
+use filmwright::input::samples;
 use filmwright::model::rulebook::Rulebook;
 use filmwright::problem::render::{Look, all};
 use filmwright::problem::{Code, Problem, Problems, Severity};
@@ -138,7 +139,15 @@ fn found_in(files: &Files) -> (SourceSet, Problems) {
         let mut reader = filmwright::input::reader::Reader::new(&set, &mut problems);
         for tree in &trees {
             if let Some(root) = &tree.root {
-                filmwright::input::samples::check(&mut reader, tree.kind, root);
+                match tree.kind {
+                    FileKind::Samples => {
+                        drop(samples::map(&mut reader, root, None));
+                    }
+                    FileKind::Events => {
+                        drop(samples::events(&mut reader, root, None));
+                    }
+                    FileKind::Site | FileKind::Oils => {}
+                }
             }
         }
     }

@@ -44,12 +44,14 @@ pub(super) struct Plan<'a> {
     pub(super) overview: Fixed,
     pub(super) areas: Vec<Area>,
     pub(super) machines: Vec<Machine<'a>>,
-    /// What moved, where an older state is named.
-    pub(super) revision: Option<Fixed>,
     /// The oils' sheets, in the order of the list.
     pub(super) oils: Vec<Fixed>,
     /// Their ids, for the bar of links.
     oil_ids: Vec<String>,
+    /// The audit, where there are samples.
+    pub(super) audit: Option<Fixed>,
+    /// What moved, where an older state is named.
+    pub(super) revision: Option<Fixed>,
     pub(super) methods: Fixed,
     pub(super) rules: Fixed,
     pub(super) glossary: Fixed,
@@ -63,8 +65,9 @@ pub(super) enum On {
     Overview,
     Area(usize),
     Machine(usize),
-    Revision,
     Oil(usize),
+    Audit,
+    Revision,
     Methods,
     Rules,
     Glossary,
@@ -72,7 +75,13 @@ pub(super) enum On {
 
 impl<'a> Plan<'a> {
     /// Plans the sheets for these points, in their order.
-    pub(super) fn new(points: &[&'a Point], oils: &[Oil], bundle: Bundle, revised: bool) -> Self {
+    pub(super) fn new(
+        points: &[&'a Point],
+        oils: &[Oil],
+        bundle: Bundle,
+        audited: bool,
+        revised: bool,
+    ) -> Self {
         let mut names = Names::new();
         let mut number = 0;
         let mut next = || {
@@ -95,7 +104,6 @@ impl<'a> Plan<'a> {
                 number: next(),
             })
             .collect();
-        let revision = revised.then(|| fixed(&mut names, "changes", next()));
         let oil_ids: Vec<String> = oils.iter().map(|o| o.id.clone()).collect();
         let oils = oil_ids
             .iter()
@@ -104,6 +112,8 @@ impl<'a> Plan<'a> {
                 number: next(),
             })
             .collect();
+        let audit = audited.then(|| fixed(&mut names, "audit", next()));
+        let revision = revised.then(|| fixed(&mut names, "changes", next()));
         let methods = fixed(&mut names, "methods", next());
         let rules = fixed(&mut names, "rules", next());
         let glossary = fixed(&mut names, "words", next());
@@ -113,9 +123,10 @@ impl<'a> Plan<'a> {
             overview,
             areas,
             machines,
-            revision,
             oils,
             oil_ids,
+            audit,
+            revision,
             methods,
             rules,
             glossary,
@@ -127,6 +138,7 @@ impl<'a> Plan<'a> {
         let fixed = [&self.overview, &self.methods, &self.rules, &self.glossary];
         fixed
             .into_iter()
+            .chain(self.audit.as_ref())
             .chain(&self.revision)
             .map(|f| &f.place)
             .chain(self.areas.iter().map(|a| &a.place))
@@ -178,6 +190,9 @@ impl<'a> Plan<'a> {
                 }
             }
             _ => {}
+        }
+        if let Some(audit) = &self.audit {
+            bar.push(link("Audit".into(), &audit.place, on == On::Audit));
         }
         if let Some(revision) = &self.revision {
             let current = on == On::Revision;
