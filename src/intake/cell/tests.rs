@@ -1,4 +1,5 @@
 use super::*;
+use crate::input::value::Ends;
 
 const FILL: Want = Want::stated(&[Kind::Volume, Kind::Mass]);
 const SUMP: Want = Want::stated(&[Kind::Temperature]).ends(Ends::Either);
