@@ -170,7 +170,7 @@ fn shape(form: &Form) -> Value {
         }
         Form::Name(refers) => json!({"type": text, "title": refers.says()}),
         Form::Points | Form::ColdPoints => {
-            json!({"type": "array", "items": {"type": "string"}, "examples": [form.says()]})
+            json!({"type": "array", "minItems": 1, "items": {"type": "string"}, "examples": [form.says()]})
         }
         Form::Grade
         | Form::Cleanliness
@@ -191,7 +191,9 @@ fn shape(form: &Form) -> Value {
             json!({"type": "object", "additionalProperties": {"$ref": "#/definitions/machine"}})
         }
         Form::List(record) => json!({"type": "array", "items": refers_to(record)}),
-        Form::Parts => json!({"type": "array", "items": {"$ref": "#/definitions/any_part"}}),
+        Form::Parts => {
+            json!({"type": "array", "minItems": 1, "items": {"$ref": "#/definitions/any_part"}})
+        }
         Form::Table => json!({"type": "object", "additionalProperties": {"type": text}}),
     }
 }

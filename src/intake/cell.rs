@@ -37,6 +37,10 @@ pub struct Expect<'a> {
 }
 
 /// A cell read.
+#[expect(
+    clippy::struct_excessive_bools,
+    reason = "each is one thing a cell may say"
+)]
 #[derive(Clone, Debug, Default, PartialEq)]
 pub struct Reading {
     /// What to write behind the key, without whose word it is.
@@ -99,15 +103,18 @@ impl Reading {
     }
 }
 
-/// What stands in a cell as text, or why nothing can be read from it.
-pub fn text_of(content: &Content) -> Result<String, Reading> {
+/// What stands in a cell as text.
+///
+/// # Errors
+/// Why nothing can be read from it: a formula without a value, a fault of the spreadsheet.
+pub fn text_of(content: &Content) -> Result<String, String> {
     match content {
-        Content::NoValue { formula } => Err(Reading::fault(format!(
+        Content::NoValue { formula } => Err(format!(
             "the formula {formula} has no stored value; open the workbook in a spreadsheet program, let it calculate, save it"
-        ))),
-        Content::Fault(fault) => Err(Reading::fault(format!(
+        )),
+        Content::Fault(fault) => Err(format!(
             "the spreadsheet itself could not work it out: {fault}"
-        ))),
+        )),
         other => Ok(other.text()),
     }
 }
@@ -160,7 +167,7 @@ fn usual(kinds: &[Kind], grease: bool, number: &str) -> Option<&'static str> {
 pub fn quantity(content: &Content, expect: &Expect<'_>, rules: &Rules) -> Reading {
     let text = match text_of(content) {
         Ok(text) => text,
-        Err(reading) => return reading,
+        Err(why) => return Reading::fault(why),
     };
     if let Content::Date(_) | Content::Truth(_) = content {
         return Reading::fault(format!(
@@ -211,17 +218,17 @@ fn conclude(parsed: &Parsed, expect: &Expect<'_>, rules: &Rules) -> Reading {
     }
     let number = |token: &str| match number::read(token, rules.decimal) {
         Read::Is(number) => Ok(number),
-        Read::Either(a, b) => Err(Reading::fault(format!(
+        Read::Either(a, b) => Err(format!(
             "{a} or {b}? No other cell tells decimal point from comma; state it with --decimal"
-        ))),
+        )),
     };
     let first = match number(&parsed.number) {
         Ok(n) => n,
-        Err(r) => return r,
+        Err(why) => return Reading::fault(why),
     };
     let second = match parsed.second.as_deref().map(number).transpose() {
         Ok(n) => n,
-        Err(r) => return r,
+        Err(why) => return Reading::fault(why),
     };
     let mut reading = in_unit(parsed, expect, rules, (first, second));
     reading.each = parsed.each;

@@ -148,10 +148,10 @@ impl<'r, 'a> RowReader<'r, 'a> {
             Target::Path | Target::AsWritten | Target::FileKind => {}
             Target::Note | Target::ViscosityAt(_) => self.note(column, content),
             Target::AmbientLow => {
-                self.ambient[0] = self.quantity(column, content, "ambient low", &TEMPERATURE)
+                self.ambient[0] = self.quantity(column, content, "ambient low", &TEMPERATURE);
             }
             Target::AmbientHigh => {
-                self.ambient[1] = self.quantity(column, content, "ambient high", &TEMPERATURE)
+                self.ambient[1] = self.quantity(column, content, "ambient high", &TEMPERATURE);
             }
             Target::MotorSpeed => self.motor_speed(column, content),
             Target::Speed => {
@@ -181,8 +181,7 @@ impl<'r, 'a> RowReader<'r, 'a> {
                 };
                 self.machine.record.notes.push(format!("{heading}: {text}"));
             }
-            Err(reading) => {
-                let why = reading.fault.unwrap_or_default();
+            Err(why) => {
                 self.say(Kind::NotUnderstood, Some(column), &content.text(), why);
             }
         }
@@ -264,8 +263,8 @@ impl<'r, 'a> RowReader<'r, 'a> {
     ) -> Option<(Reading, String)> {
         let text = match text_of(content) {
             Ok(text) => text,
-            Err(reading) => {
-                self.tell(column, content, reading);
+            Err(why) => {
+                self.tell(column, content, Reading::fault(why));
                 return None;
             }
         };

@@ -59,7 +59,7 @@ struct Oils<'a> {
 /// One oil as its row is read.
 struct Row<'o, 'a> {
     all: &'o mut Oils<'a>,
-    row: u32,
+    number: u32,
     record: Record,
     points: Vec<(f64, String)>,
     grade: Option<String>,
@@ -78,7 +78,7 @@ impl Oils<'_> {
         let name = text(|t| matches!(t, Target::Key(k) if k.name == "name"));
         let id = text(|t| matches!(t, Target::Name)).or_else(|| name.clone());
         let Some(id) = id.filter(|i| !i.is_empty()) else {
-            let finding = self.about(
+            let finding = about(
                 line.number,
                 Kind::LeftOut,
                 "",
@@ -90,7 +90,7 @@ impl Oils<'_> {
         if self.records.iter().any(|r| r.name == id) {
             let says =
                 format!("the oil {id} stands in an earlier row as well: this row is not carried");
-            let finding = self.about(line.number, Kind::LeftOut, &id, &says);
+            let finding = about(line.number, Kind::LeftOut, &id, &says);
             self.findings.push(finding);
             return;
         }
@@ -102,7 +102,7 @@ impl Oils<'_> {
         };
         let mut row = Row {
             all: self,
-            row: line.number,
+            number: line.number,
             record,
             points: Vec::new(),
             grade: None,
@@ -117,18 +117,6 @@ impl Oils<'_> {
             }
         }
         row.finish();
-    }
-
-    fn about(&self, row: u32, kind: Kind, name: &str, says: &str) -> Finding {
-        Finding {
-            kind,
-            row: Some(row),
-            column: None,
-            name: Some(name.to_owned()).filter(|n| !n.is_empty()),
-            heading: String::new(),
-            text: String::new(),
-            says: says.to_owned(),
-        }
     }
 
     fn write(&self) -> String {
@@ -157,7 +145,7 @@ impl Row<'_, '_> {
     fn say(&mut self, kind: Kind, column: Option<&Column>, text: &str, says: impl Into<String>) {
         let finding = Finding {
             kind,
-            row: Some(self.row),
+            row: Some(self.number),
             column: column.map(|c| c.number),
             name: Some(self.record.name.clone()),
             heading: column.map(|c| c.heading.clone()).unwrap_or_default(),
@@ -236,8 +224,8 @@ impl Row<'_, '_> {
     fn grade(&mut self, column: &Column, content: &Content) {
         let text = match text_of(content) {
             Ok(text) => text,
-            Err(reading) => {
-                self.tell(column, content, reading);
+            Err(why) => {
+                self.tell(column, content, Reading::fault(why));
                 return;
             }
         };
@@ -385,4 +373,17 @@ fn base(text: &str) -> Option<String> {
         }
     };
     Some(plain.to_owned())
+}
+
+/// A finding about a whole row.
+fn about(row: u32, kind: Kind, name: &str, says: &str) -> Finding {
+    Finding {
+        kind,
+        row: Some(row),
+        column: None,
+        name: Some(name.to_owned()).filter(|n| !n.is_empty()),
+        heading: String::new(),
+        text: String::new(),
+        says: says.to_owned(),
+    }
 }

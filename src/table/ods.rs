@@ -81,6 +81,10 @@ fn encrypted(archive: &mut Archive<'_>) -> Result<bool, Fault> {
 }
 
 /// A sheet as far as it was read.
+#[expect(
+    clippy::struct_excessive_bools,
+    reason = "each says where in the file the reading stands"
+)]
 struct Reading<'t> {
     gather: Gather<'t>,
     skip: bool,

@@ -125,7 +125,7 @@ fn child(what: &str) {
         Some((_, n)) => {
             let n: usize = n.parse().expect("a number");
             let case = hostile::all().into_iter().nth(n).expect("a case");
-            (format!("{}", case.file), case.bytes)
+            (case.file.to_owned(), case.bytes)
         }
         None => return,
     };

@@ -52,7 +52,7 @@ struct Opened {
 fn run(session: &mut Session<'_>, args: &Intake) -> Result<Exit, Exit> {
     let opened = open(session, args)?;
     let target = target(session, opened.layout.makes);
-    let mut draft = drafted(session, &opened, &target)?;
+    let mut draft = drafted(session, &opened, target.as_deref())?;
     draft.how = how(&opened);
     let mut outcome = Outcome::default();
     if !opened.map_there {
@@ -252,10 +252,9 @@ fn target(session: &Session<'_>, makes: Makes) -> Option<PathBuf> {
 fn drafted(
     session: &mut Session<'_>,
     opened: &Opened,
-    target: &Option<PathBuf>,
+    target: Option<&Path>,
 ) -> Result<Draft, Exit> {
     let folder = target
-        .as_ref()
         .and_then(|t| t.parent().map(Path::to_path_buf))
         .unwrap_or_else(|| session.folder());
     let rules = session.rules(Some(&folder))?;

@@ -5,6 +5,7 @@ use crate::cli::exit::Exit;
 use crate::cli::session::Session;
 use crate::input::file::FileKind;
 use crate::input::schema::files;
+use std::fmt::Write as _;
 
 /// Runs `schema`.
 pub fn schema(session: &mut Session<'_>, args: &Schema) -> Exit {
@@ -16,7 +17,7 @@ pub fn schema(session: &mut Session<'_>, args: &Schema) -> Exit {
             if let Err(exit) = session.put(&path, text.as_bytes()) {
                 return exit;
             }
-            out.push_str(&format!("wrote {}\n", path.display()));
+            let _ = writeln!(out, "wrote {}", path.display());
         }
         session.host.out(&out);
         return Exit::Done;

@@ -2,7 +2,7 @@
 
 use super::{Loose, RowReader, SPEED};
 use crate::input::keys::Form;
-use crate::intake::cell::text_of;
+use crate::intake::cell::{Reading, text_of};
 use crate::intake::finding::Kind;
 use crate::intake::layout::Column;
 use crate::intake::words;
@@ -23,8 +23,8 @@ impl<'r> RowReader<'r, '_> {
     pub(super) fn bearing(&mut self, column: &Column, content: &Content) {
         let text = match text_of(content) {
             Ok(text) => text,
-            Err(reading) => {
-                self.tell(column, content, reading);
+            Err(why) => {
+                self.tell(column, content, Reading::fault(why));
                 return;
             }
         };

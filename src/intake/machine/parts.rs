@@ -121,7 +121,12 @@ impl<'r> RowReader<'r, '_> {
                 let says = format!("no part is named: {} is taken from {by}", taken.id);
                 self.machine.record.notes.push(format!("parts: {says}"));
                 self.say(Kind::ReadAs, None, description, says);
-                vec![("component".into(), taken.id.into())]
+                // Gears and worms are worked out as such, and their missing figures are gaps.
+                match taken.id {
+                    "gear_worm" => vec![("worm mesh".into(), "not stated".into())],
+                    "gear_parallel_bevel" => vec![("gear mesh".into(), "not stated".into())],
+                    id => vec![("component".into(), id.into())],
+                }
             }
             None => {
                 self.say(Kind::Question, None, description, "what does its lubricant serve? No part is named and the description tells none");

@@ -6,8 +6,8 @@ use crate::intake::number::Decimal;
 use crate::intake::target::{Makes, OTHERS, Target};
 use crate::intake::units::unit;
 use crate::problem::suggest;
-use crate::source::yaml::{Entry, Node, read};
-use crate::source::{FileId, SourceFile, SourceSet};
+use crate::source::yaml::{Entry, Node};
+use crate::source::{SourceFile, SourceSet};
 
 const KEYS: &[&str] = &[
     "file",
@@ -41,13 +41,10 @@ pub fn parse(path: &str, text: &str) -> Result<Map, Fault> {
     };
     let file = set.file(id).ok_or_else(missing)?;
     let reading = Reading { path, file };
-    let gated = read(FileId(id.0), &file.text);
-    if let Some(fault) = gated.faults.first() {
-        return Err(reading.fault(
-            fault.span.start,
-            format!("the map does not read as YAML here: {:?}", fault.kind),
-            "a line as in the proposed map",
-        ));
+    let (gated, problems) = crate::input::gate::open(file);
+    if let (Some(fault), Some(problem)) = (gated.faults.first(), problems.first()) {
+        let says = format!("the map does not read as YAML here: {}", problem.message);
+        return Err(reading.fault(fault.span.start, says, "a line as in the proposed map"));
     }
     let root = gated.root.ok_or_else(missing)?;
     let entries = root.entries().ok_or_else(|| {

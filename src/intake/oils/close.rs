@@ -1,6 +1,6 @@
 //! An oil when its row is read: its viscosity, and what its name tells.
 
-use super::Row;
+use super::{Row, about};
 use crate::intake::finding::Kind;
 use crate::intake::lubricant;
 use crate::intake::yaml::item;
@@ -96,9 +96,14 @@ impl Row<'_, '_> {
         self.record.write(&mut text, 0);
         self.all
             .without
-            .push(text.lines().map(|l| format!("# {l}\n")).collect());
-        let finding = self.all.about(
-            self.row,
+            .push(text.lines().fold(String::new(), |all, line| {
+                all + "# "
+                    + line
+                    + "
+"
+            }));
+        let finding = about(
+            self.number,
             Kind::LeftOut,
             &self.record.name.clone(),
             "carried as a remark only, for want of a viscosity",

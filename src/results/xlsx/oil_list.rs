@@ -65,7 +65,7 @@ fn oil_row(content: &Content<'_, '_>, index: usize, oil: &Oil, s: &Shown) -> Vec
         .count();
     let from = match &oil.viscosity {
         Viscosity::Points { .. } => "points",
-        _ => "grade",
+        Viscosity::Grade(_) => "grade",
     };
     vec![
         Cell::text(oil.id.clone()),

@@ -157,7 +157,7 @@ fn row_4_doubts_itself_and_is_no_oil_in_use() {
         &[
             "oil now: unknown",
             "AGMA 7 Comp?",
-            "component: gear_worm",
+            "worm mesh: not stated",
             "22 L, assumed",
         ],
     );

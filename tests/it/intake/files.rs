@@ -1,4 +1,4 @@
-//! Real files of openpyxl and LibreOffice, text tables of other encodings, and files made to do
+//! Real files of two spreadsheet programs, text tables of other encodings, and files made to do
 //! harm, through the command.
 
 use super::dirty::{file, machine};
@@ -81,7 +81,7 @@ fn workbooks_of_other_programs_are_read_alike() {
         let other = intake(name);
         let alike = |t: &str, name: &str| {
             let own = t.replace(name, "FILE");
-            // LibreOffice has worked the formula out.
+            // The other program has worked the formula out.
             let lines = own
                 .lines()
                 .filter(|l| !l.contains("3.785") && !l.contains("12.15"));
