@@ -446,7 +446,6 @@ pub struct Gaps {
     pub tags: Vec<String>,
     /// The first gaps as numbered questions in plain sentences, five unless another number is given
     #[arg(long, value_name = "N", num_args = 0..=1)]
-    #[expect(clippy::option_option, reason = "absent, without a number, with one")]
     pub letter: Option<Option<usize>>,
     /// Every row, not only the first forty
     #[arg(long)]
