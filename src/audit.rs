@@ -21,6 +21,7 @@ pub mod shear;
 pub mod trend;
 pub mod units;
 pub mod whose;
+pub mod worked;
 
 use crate::judge::Verdict;
 use crate::model::Site;

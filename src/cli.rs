@@ -8,6 +8,7 @@ pub mod run;
 pub mod samples;
 pub mod select;
 pub mod session;
+pub mod states;
 pub mod text;
 pub mod text_of;
 
@@ -228,6 +229,12 @@ pub enum Command {
         See also: weigh, report; filmwright help keys lists the columns"
     )]
     Audit(Audit),
+    /// What moved between two states of a site, and why
+    #[command(after_help = "Examples:\n  filmwright compare works-2025/ works/\n  \
+        filmwright compare old.json new.json --all\n\
+        A result file to compare: filmwright weigh -f json -o old.json\n\
+        See also: whatif, report --since")]
+    Compare(Compare),
     /// HTML sheets: overview, one sheet a machine
     #[command(
         after_help = "Examples:\n  filmwright report --demo\n  filmwright report -o out/\n  \
@@ -347,6 +354,9 @@ pub struct Need {
     /// List the machines and stop
     #[arg(long)]
     pub list: bool,
+    /// Also the oil to ask a supplier for: the smallest specification that holds
+    #[arg(long)]
+    pub ask: bool,
     /// A rolling bearing, without any file: its designation, or bore x outside as "100x180 mm"
     #[arg(long, value_name = "BEARING")]
     pub bearing: Option<String>,
@@ -477,6 +487,18 @@ pub struct Oil {
     pub at_machine: Vec<String>,
 }
 
+/// `compare`
+#[derive(Debug, Args)]
+pub struct Compare {
+    /// The old state: a site's folder, or a file of `weigh -f json`
+    pub old: String,
+    /// The new state
+    pub new: String,
+    /// List also what changed without moving anything
+    #[arg(long)]
+    pub all: bool,
+}
+
 /// `pool`
 #[derive(Debug, Args)]
 pub struct Pool {
@@ -539,6 +561,9 @@ pub struct Report {
     /// Only these machines, by tag or pattern
     #[arg(long, value_name = "TAG")]
     pub only: Vec<String>,
+    /// An older state to tell the changes from: a site's folder, or a file of `weigh -f json`
+    #[arg(long, value_name = "OLD")]
+    pub since: Option<String>,
     /// Paper the print style is laid out for
     #[arg(long, value_enum, default_value_t = Paper::A4)]
     pub paper: Paper,

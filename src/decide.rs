@@ -3,8 +3,10 @@
 //! ask for.
 
 pub mod accept;
+pub mod ask;
 pub mod gaps;
 pub mod mend;
 pub mod pool;
 pub mod scatter;
+pub mod season;
 pub mod whatif;

@@ -16,6 +16,7 @@
 pub mod assets;
 pub mod audit;
 pub mod cli;
+pub mod compare;
 pub mod decide;
 pub mod demand;
 pub mod input;

@@ -2,7 +2,9 @@
 //! renamed, within a format number.
 
 pub mod audit;
+pub mod compare;
 pub mod csv;
+pub mod decided;
 pub mod gaps;
 pub mod intake;
 pub mod json;

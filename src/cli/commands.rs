@@ -2,6 +2,7 @@
 
 pub mod audit;
 pub mod check;
+pub mod compare;
 pub mod gaps;
 pub mod help;
 pub mod intake;
@@ -24,6 +25,7 @@ mod workbook;
 
 pub use audit::audit;
 pub use check::check;
+pub use compare::compare;
 pub use gaps::gaps;
 pub use help::help;
 pub use intake::intake;

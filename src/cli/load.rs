@@ -16,9 +16,9 @@ use crate::problem::{self, Code, Problem, Problems, Severity, Write, render};
 use crate::quantity::{Kind, Measure, ThermodynamicTemperature};
 use crate::relation::bearing::designation::DimensionTable;
 use crate::relation::oil::viscosity_temperature::Misfit;
-use crate::results::json::Head;
+use crate::results::json::{Head, InputFile};
 use crate::source::place::{Given, Place};
-use crate::source::{Origin, SourceSet};
+use crate::source::{FileId, Origin, SourceSet};
 use crate::weighing::Settings;
 use sha2::{Digest, Sha256};
 use std::path::{Path, PathBuf};
@@ -35,6 +35,10 @@ pub struct Loaded {
     pub fingerprint: String,
     /// Warnings and notes.
     pub problems: Problems,
+    /// Whether an option changed what the files say.
+    pub changed: bool,
+    /// Files read, by kind.
+    pub files: Vec<(FileKind, FileId)>,
     /// The folder it was read from; none for the demonstration.
     pub folder: Option<PathBuf>,
 }
@@ -92,6 +96,7 @@ impl Loaded {
             let given = Given::new(range, text, Origin::flag("--band"));
             point.ambient = Some(Stated::Known(given, None));
         }
+        self.changed = true;
         Ok(())
     }
 }
@@ -206,6 +211,8 @@ impl Session<'_> {
                     sources,
                     fingerprint,
                     problems,
+                    changed: !set.is_empty(),
+                    files: trees.iter().map(|t| (t.kind, t.file)).collect(),
                     folder,
                 })
             }
@@ -291,7 +298,10 @@ impl Session<'_> {
     }
 
     /// Takes the files of a folder in, or those named on the command line.
-    fn trees(
+    ///
+    /// # Errors
+    /// A file that cannot be read.
+    pub(super) fn trees(
         &mut self,
         folder: &Path,
         sources: &mut SourceSet,
@@ -384,12 +394,35 @@ impl Session<'_> {
         }
     }
 
+    /// The texts a run was made from, to be carried in its results: the files of the site, and own
+    /// rules. None where an option changed what the files say: the texts would not give the results.
+    pub fn carried(&self, loaded: &Loaded) -> Vec<InputFile> {
+        if loaded.changed {
+            return Vec::new();
+        }
+        let of = |(kind, file): &(FileKind, FileId)| {
+            loaded.sources.file(*file).map(|f| InputFile {
+                kind: kind.word(),
+                name: f.path.clone(),
+                text: f.text.clone(),
+            })
+        };
+        let own = self.layers(loaded.folder.as_deref()).into_iter().skip(1);
+        let rules = own.flat_map(|l| l.files).map(|f| InputFile {
+            kind: "rules",
+            name: f.path,
+            text: f.text,
+        });
+        loaded.files.iter().filter_map(of).chain(rules).collect()
+    }
+
     /// What stands at the head of documents.
     pub fn head(&self, loaded: &Loaded) -> Head {
         Head {
             inputs: loaded.fingerprint.clone(),
             rules: rules_in_words(&loaded.rules),
             date: self.date(loaded.site.frame.reviewed.as_deref()),
+            ..Head::default()
         }
     }
 
@@ -402,6 +435,7 @@ impl Session<'_> {
             inputs: hex(&hash.finalize()),
             rules: "built in".to_owned(),
             date: self.date(site.frame.reviewed.as_deref()),
+            ..Head::default()
         }
     }
 
@@ -456,7 +490,11 @@ fn rules_in_words(rules: &Rulebook) -> String {
     }
 }
 
-fn demo(sources: &mut SourceSet, problems: &mut Problems, hash: &mut Sha256) -> Vec<Tree> {
+pub(super) fn demo(
+    sources: &mut SourceSet,
+    problems: &mut Problems,
+    hash: &mut Sha256,
+) -> Vec<Tree> {
     let mut trees = Vec::new();
     for file in assets::templates("demo") {
         let name = file.path.trim_start_matches("demo/").to_owned();
@@ -482,6 +520,11 @@ pub(super) fn feed_fingerprint(fingerprint: &mut String, kind: &str, bytes: &[u8
     feed(&mut hash, "before", fingerprint.as_bytes());
     feed(&mut hash, kind, bytes);
     *fingerprint = hex(&hash.finalize());
+}
+
+/// A fingerprint nobody asks for.
+pub(super) fn feed_nothing() -> Sha256 {
+    Sha256::new()
 }
 
 /// Feeds one input into the fingerprint: its kind, its length, its bytes.

@@ -53,6 +53,7 @@ fn command(session: &mut Session<'_>, command: Command) -> Exit {
         Command::Whatif(args) => commands::whatif(session, &args),
         Command::Gaps(args) => commands::gaps(session, &args),
         Command::Oil(args) => commands::oil(session, &args),
+        Command::Compare(args) => commands::compare(session, &args),
         Command::Pool(args) => commands::pool(session, &args),
         Command::Audit(args) => commands::audit(session, &args),
         Command::Report(args) => commands::report(session, &args),

@@ -1,6 +1,8 @@
 //! Results as text for people.
 
 pub mod audit;
+pub mod compare;
+pub mod decided;
 pub mod gaps;
 pub mod intake;
 pub mod labels;

@@ -2,7 +2,7 @@
 //! which every limit is met. It never replaces the verdict; the reserve does not come into it.
 
 use crate::demand::{Gap, GapKind, Instead, Scenario, demands, is_severe};
-use crate::judge::{Judgement, PreparedOil, PreparedPoint, weigh};
+use crate::judge::{Judgement, PreparedOil};
 use crate::model::oil::{PointsFrom, Viscosity};
 use crate::numeric::math::lg;
 use crate::numeric::share::interval;
@@ -312,13 +312,8 @@ fn one(
             Role::Loss => loss = Some(*x),
         }
     }
-    let (house, point) = (&scales.site.house, w.point);
-    let all = [demands(&mut Silent, point, house, scales.rules, &setting)];
-    let mut ready = PreparedPoint::new(&all, is_severe(point), 0.0);
-    if let Some(in_use) = scales.in_use_curves(point) {
-        ready.run_by_losses(&all, in_use);
-    }
-    weigh(&ready, &state(scales, oil, times, loss))
+    let drawn = state(scales, oil, times, loss);
+    scales.judge_under(w.point, setting, &drawn, 0.0)
 }
 
 /// The oil as drawn: its own viscosity, without tolerance, with a loss of its own.

@@ -7,6 +7,7 @@
 mod ambient;
 mod answer;
 mod assumed;
+mod audit;
 mod barred;
 mod candidates;
 mod case;
@@ -20,6 +21,7 @@ mod first;
 mod gaps;
 mod inputs;
 mod labels;
+mod lists;
 mod machine;
 mod machines;
 mod needs;
@@ -32,9 +34,11 @@ mod plan;
 mod point;
 mod reference;
 mod register;
+mod revision;
 mod rules;
 mod running;
 mod say;
+mod season;
 mod sign;
 mod site_gaps;
 mod state;
@@ -42,6 +46,9 @@ mod steps;
 mod store;
 mod uses;
 mod vary;
+
+use crate::audit::Audit;
+pub use revision::Since;
 
 use crate::demand::End;
 use crate::judge::{PreparedOil, Verdict};
@@ -79,6 +86,8 @@ pub struct Options {
     pub warning: Option<String>,
     /// What the commands printed on the sheets need behind them to find the same site.
     pub flags: String,
+    /// An older state, and what moved since.
+    pub since: Option<Since>,
 }
 
 /// What a report is made from.
@@ -89,6 +98,8 @@ pub struct Run<'a> {
     options: Options,
     /// Thickened oils as new, by their place in the list.
     fresh: BTreeMap<usize, PreparedOil>,
+    /// The audit of the oils in use, where there are samples.
+    audit: Option<&'a Audit>,
     /// Where the oils' sheets stand.
     oil_sheets: Vec<Href>,
 }
@@ -118,6 +129,7 @@ impl<'a> Run<'a> {
             options,
             fresh,
             oil_sheets: Vec::new(),
+            audit: None,
         }
     }
 
@@ -128,6 +140,13 @@ impl<'a> Run<'a> {
             Some(href) => Phrase::new().tag_link(id, href.clone()),
             None => Phrase::new().tag(id),
         }
+    }
+
+    /// With an audit sheet.
+    #[must_use]
+    pub fn audited(mut self, audit: &'a Audit) -> Self {
+        self.audit = Some(audit);
+        self
     }
 
     /// An oil judged as new, where it is thickened.
@@ -182,7 +201,13 @@ pub struct Report<'a> {
 impl<'a> Report<'a> {
     /// Plans the sheets of these points.
     pub fn new(run: Run<'a>, points: &[&'a Point]) -> Self {
-        let plan = Plan::new(points, &run.scales.site.oils, run.options.bundle);
+        let plan = Plan::new(
+            points,
+            &run.scales.site.oils,
+            run.options.bundle,
+            run.audit.is_some(),
+            run.options.since.is_some(),
+        );
         let mut run = run;
         run.oil_sheets = plan.oils.iter().map(|o| plan.href(&o.place)).collect();
         Self {
@@ -241,9 +266,21 @@ impl<'a> Report<'a> {
         std::iter::once_with(|| overview::sheet(self))
             .chain(areas)
             .chain(oils)
+            .chain(self.run.audit.and_then(|a| audit::sheet(self, a)))
+            .chain(self.changes())
             .chain(std::iter::once_with(|| reference::methods(self)))
             .chain(std::iter::once_with(|| reference::rules(self)))
             .chain(std::iter::once_with(|| reference::words(self)))
+    }
+
+    /// The page of what moved, where an older state was named.
+    fn changes(&self) -> Option<Sheet> {
+        let (fixed, since) = self
+            .plan
+            .revision
+            .as_ref()
+            .zip(self.run.options.since.as_ref())?;
+        Some(revision::sheet(self, fixed, since))
     }
 
     /// The links of the bar of a document that holds all sheets.

@@ -16,6 +16,23 @@ pub struct Head {
     pub rules: String,
     /// Date of judgement, ISO form.
     pub date: String,
+    /// Texts the results were made from, where they are to be weighed again later.
+    pub files: Vec<InputFile>,
+    /// Reserve asked for by an option, VG steps.
+    pub reserve: Option<f64>,
+    /// Whether floors were judged as new, on request.
+    pub as_new: bool,
+}
+
+/// A text the results were made from.
+#[derive(Clone, Debug, Default, PartialEq, Eq)]
+pub struct InputFile {
+    /// `site`, `oils`, `samples`, `events`, `rules`.
+    pub kind: &'static str,
+    /// Its path as shown.
+    pub name: String,
+    /// The text.
+    pub text: String,
 }
 
 /// A document of a format, with its lists still to be added.
@@ -29,6 +46,13 @@ pub fn document(format: &str, head: &Head) -> Map<String, Value> {
     top.insert("rules".into(), json!(head.rules));
     top.insert("inputs".into(), json!(head.inputs));
     top.insert("date".into(), json!(head.date));
+    if !head.files.is_empty() {
+        let options = json!({ "reserve": head.reserve, "worn": !head.as_new });
+        top.insert("options".into(), options);
+        let files = head.files.iter();
+        let files = files.map(|f| json!({ "kind": f.kind, "name": f.name, "text": f.text }));
+        top.insert("files".into(), Value::Array(files.collect()));
+    }
     top
 }
 

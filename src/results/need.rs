@@ -32,7 +32,12 @@ pub fn standing_word(standing: &Standing) -> &'static str {
 }
 
 /// A JSON document of the demands of points.
-pub fn document_of(points: &[(&Point, PointDemands)], head: &Head, units: Units) -> String {
+pub fn document_of(
+    points: &[(&Point, PointDemands)],
+    asks: Option<Vec<Value>>,
+    head: &Head,
+    units: Units,
+) -> String {
     let mut top = document("need", head);
     let mut list = Vec::new();
     for (point, demands) in points {
@@ -69,6 +74,9 @@ pub fn document_of(points: &[(&Point, PointDemands)], head: &Head, units: Units)
         })
         .collect();
     top.insert("steps".into(), Value::Array(steps));
+    if let Some(asks) = asks {
+        top.insert("ask".into(), Value::Array(asks));
+    }
     json::text(top)
 }
 

@@ -17,11 +17,15 @@ use std::collections::BTreeMap;
 /// Samplings by point, in the order weighed, and oil; empty unless asked for.
 pub type Scatters = BTreeMap<(usize, usize), Scatter>;
 
+/// Pairs of oils by season, by point in the order weighed; only where no single oil holds.
+pub type Seasons = BTreeMap<usize, crate::decide::season::Pair>;
+
 /// A JSON document of all judgements.
 pub fn document_of(
     scales: &Scales<'_>,
     weighed: &[Weighed<'_>],
     scatters: &Scatters,
+    seasons: &Seasons,
     head: &Head,
 ) -> String {
     let mut top = document("weigh", head);
@@ -39,6 +43,9 @@ pub fn document_of(
         }
     }
     top.insert("judgements".into(), Value::Array(list));
+    let pairs = seasons.iter();
+    let pairs = pairs.map(|(n, pair)| super::decided::season(scales, &weighed[*n], pair));
+    top.insert("seasons".into(), Value::Array(pairs.collect()));
     json::text(top)
 }
 

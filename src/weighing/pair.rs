@@ -31,6 +31,24 @@ impl Scales<'_> {
         weigh(&self.ready(point, reserve), oil)
     }
 
+    /// The same in a single setting of the unknowns, with inputs taken at other values.
+    pub fn judge_under(
+        &self,
+        point: &Point,
+        setting: Scenario,
+        oil: &PreparedOil,
+        reserve: f64,
+    ) -> Judgement {
+        let alone = demands(&mut Silent, point, &self.site.house, self.rules, &setting);
+        let demands = PointDemands {
+            trace: Derivation::new(),
+            middle: alone.clone(),
+            settings: vec![alone],
+            shares: vec![setting],
+        };
+        weigh(&self.made_ready(point, &demands, reserve), oil)
+    }
+
     /// One oil of the list on a point that may be changed, in a state of its own where `instead`
     /// is given, judged in full: eligibility, conditions, verdict and reasons.
     pub fn pair(

@@ -30,6 +30,7 @@ const ROOMS: &[&str] = &[
     "decide",
     "audit",
     "intake",
+    "compare",
     "results",
     "work",
     "report",

@@ -3,6 +3,7 @@
 mod audit;
 mod chance;
 mod checks;
+mod compare;
 mod decide;
 mod demo;
 mod determinism;
@@ -35,6 +36,7 @@ mod report_pages;
 mod report_run;
 mod rules;
 mod scenario;
+mod season;
 mod sound;
 mod tables;
 mod work_journal;

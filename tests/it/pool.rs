@@ -442,3 +442,20 @@ fn an_acceptance_that_ran_out_is_told_and_reopens_the_machine() {
     assert!(after.err.contains("[accept-expired]"), "{}", after.err);
     assert!(after.err.contains("ran out on 2026-12-31"), "{}", after.err);
 }
+
+#[test]
+fn the_overview_draws_the_lists_and_says_what_they_cost() {
+    let page = filmwright("report --demo --one-file -o - -q").out;
+    assert!(
+        page.contains("How many lubrication points each oil list serves"),
+        "the figure"
+    );
+    assert!(
+        page.contains("The shortest list costs more:"),
+        "the cost first"
+    );
+    assert!(
+        page.contains("Proven: no list is shorter than 9."),
+        "the bound"
+    );
+}

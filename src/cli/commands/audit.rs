@@ -24,14 +24,7 @@ pub fn audit(session: &mut Session<'_>, args: &Audit) -> Exit {
 fn run(session: &mut Session<'_>, args: &Audit) -> Result<Exit, Exit> {
     let mut loaded = session.load(&[])?;
     let settings = session.settings(true)?;
-    let points = session.points(&loaded.site, &args.tags)?;
-    let only = if args.tags.is_empty() {
-        Vec::new()
-    } else {
-        let place =
-            |p: &crate::model::Point| loaded.site.points.iter().position(|q| std::ptr::eq(p, q));
-        points.into_iter().filter_map(place).collect()
-    };
+    let only = only(session, &loaded, &args.tags)?;
     let asked = Asked {
         on: day_of(session, &loaded)?,
         matches: matches(session, &loaded, &args.matches)?,
@@ -60,6 +53,21 @@ fn run(session: &mut Session<'_>, args: &Audit) -> Result<Exit, Exit> {
     } else {
         exit
     })
+}
+
+/// Places of the points wanted; none where all are.
+pub fn only(
+    session: &mut Session<'_>,
+    loaded: &Loaded,
+    tags: &[String],
+) -> Result<Vec<usize>, Exit> {
+    if tags.is_empty() {
+        return Ok(Vec::new());
+    }
+    let points = session.points(&loaded.site, tags)?;
+    let all = &loaded.site.points;
+    let place = |p: &crate::model::Point| all.iter().position(|q| std::ptr::eq(p, q));
+    Ok(points.into_iter().filter_map(place).collect())
 }
 
 /// The day of the audit.

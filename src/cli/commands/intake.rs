@@ -378,6 +378,7 @@ fn tell(
                 inputs: fingerprint(&[&opened.bytes]),
                 rules: "built in".to_owned(),
                 date: session.date(None),
+                ..json::Head::default()
             };
             document_of(&head, &opened.name, draft, outcome)
         }

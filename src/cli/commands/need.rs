@@ -2,13 +2,16 @@
 
 use crate::cli::exit::Exit;
 use crate::cli::session::Session;
+use crate::cli::text_of::decided::ask as ask_text;
 use crate::cli::text_of::need::{one, origins};
 use crate::cli::{Format, Need};
-use crate::demand::point_demands;
+use crate::decide::ask::{Ask, ask};
+use crate::demand::{PointDemands, point_demands};
 use crate::model::Point;
 use crate::results::csv::{Cell, Table};
+use crate::results::decided::ask as ask_value;
 use crate::results::need::{document_of, table_of};
-use crate::weighing::{Scales, Settings};
+use crate::weighing::{Scales, Settings, Weighed};
 
 /// Runs `need`.
 pub fn need(session: &mut Session<'_>, args: &Need) -> Exit {
@@ -60,19 +63,32 @@ fn from_files(session: &mut Session<'_>, args: &Need) -> Result<Exit, Exit> {
         .into_iter()
         .map(|p| (p, point_demands(p, &loaded.site.house, &loaded.rules)))
         .collect();
+    let asked = if args.ask {
+        asked(&scales, &all)
+    } else {
+        Vec::new()
+    };
     Ok(match session.shared.format {
         Format::Json => {
             let head = session.head(&loaded);
-            session.result(&document_of(&all, &head, session.units()))
+            let asks: Vec<_> = asked
+                .iter()
+                .map(|(w, a)| ask_value(&scales, w, a))
+                .collect();
+            let asks = args.ask.then_some(asks);
+            session.result(&document_of(&all, asks, &head, session.units()))
         }
         Format::Csv => session.table(&table_of(&all, session.units())),
         Format::Text => {
             let width = session.width();
             let mut parts: Vec<String> = Vec::new();
-            for (point, demands) in &all {
+            for (n, (point, demands)) in all.iter().enumerate() {
                 let mut text = one(&scales, point, demands, width);
                 if session.shared.verbose {
                     text.push_str(&origins(point, |place| loaded.place(place)));
+                }
+                if let Some((weighed, found)) = asked.get(n) {
+                    text.push_str(&ask_text(&scales, weighed, found, width));
                 }
                 parts.push(text);
             }
@@ -83,4 +99,15 @@ fn from_files(session: &mut Session<'_>, args: &Need) -> Result<Exit, Exit> {
             session.result(&parts.join("\n"))
         }
     })
+}
+
+/// The oil to ask for on each point.
+fn asked<'a>(scales: &Scales<'a>, all: &[(&'a Point, PointDemands)]) -> Vec<(Weighed<'a>, Ask)> {
+    all.iter()
+        .map(|(point, _)| {
+            let weighed = scales.weigh(point);
+            let found = ask(scales, &weighed);
+            (weighed, found)
+        })
+        .collect()
 }

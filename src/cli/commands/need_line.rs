@@ -51,7 +51,12 @@ fn run(session: &mut Session<'_>, args: &Need) -> Result<Exit, Exit> {
     Ok(match session.shared.format {
         Format::Json => {
             let head = session.head_of(&site, &text);
-            session.result(&document_of(&[(point, demands)], &head, session.units()))
+            session.result(&document_of(
+                &[(point, demands)],
+                None,
+                &head,
+                session.units(),
+            ))
         }
         Format::Csv => session.table(&table_of(&[(point, demands)], session.units())),
         Format::Text => {

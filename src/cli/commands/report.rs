@@ -2,17 +2,21 @@
 
 mod pages;
 
+use crate::audit::{Asked, Audit};
 use crate::cli::exit::Exit;
 use crate::cli::load::Loaded;
+use crate::cli::samples::Bottles;
 use crate::cli::session::Session;
 use crate::cli::{Format, Gate, Paper, Report as Args};
+use crate::compare::compare;
 use crate::judge::Verdict;
-use crate::report::build::{Options, Report, Run};
+use crate::report::build::{Options, Report, Run, Since};
 use crate::report::model::{Image, LOGO_LIMIT, Paper as Size};
 use crate::report::names::Bundle;
 use crate::report::page::Templates;
 use crate::results::csv::{self, Cell, Dialect, Table};
 use crate::results::json;
+use crate::source::SourceSet;
 use crate::weighing::Scales;
 use pages::{Answer, Target};
 use serde_json::{Value, json};
@@ -34,15 +38,23 @@ pub fn report(session: &mut Session<'_>, args: &Args) -> Exit {
 
 fn run(session: &mut Session<'_>, args: &Args) -> Result<Exit, Exit> {
     let target = target(session, args)?;
-    let loaded = session.load(&[])?;
+    let mut loaded = session.load(&[])?;
+    let bottles = session.bottles(&mut loaded, None)?;
     let settings = session.settings(true)?;
     let points = session.points(&loaded.site, &args.only)?;
     let templates = templates(session, args, &loaded)?;
-    let options = options(session, args, &loaded)?;
+    let mut options = options(session, args, &loaded)?;
+    if let Some(old) = &args.since {
+        options.since = Some(since(session, old)?);
+    }
     let scales = Scales::new(&loaded.site, &loaded.rules, settings)
         .map_err(|(oil, misfit)| session.misfit(&oil, &misfit))?;
     let head = session.head(&loaded);
-    let run = Run::new(&scales, &loaded.sources, head, options);
+    let audited = audit(session, args, &loaded, &scales, bottles)?;
+    let mut run = Run::new(&scales, &loaded.sources, head, options);
+    if let Some(audited) = &audited {
+        run = run.audited(audited);
+    }
     let mut report = Report::new(run, &points);
     let written = pages::write(session, &mut report, &templates, &target)?;
     let head = session.head(&loaded);
@@ -61,6 +73,44 @@ fn run(session: &mut Session<'_>, args: &Args) -> Result<Exit, Exit> {
         gates.any(|v| level(v).is_some_and(|l| l >= gate))
     });
     Ok(if tripped { Exit::Gate } else { Exit::Done })
+}
+
+/// The audit of the machines wanted, where there are samples.
+fn audit(
+    session: &mut Session<'_>,
+    args: &Args,
+    loaded: &Loaded,
+    scales: &Scales<'_>,
+    bottles: Bottles,
+) -> Result<Option<Audit>, Exit> {
+    if bottles.list.is_empty() {
+        return Ok(None);
+    }
+    let asked = Asked {
+        on: super::audit::day_of(session, loaded)?,
+        matches: Vec::new(),
+        measured_shear: false,
+        only: super::audit::only(session, loaded, &args.only)?,
+    };
+    let mut problems = Vec::new();
+    let audited = crate::audit::audit(scales, bottles.list, &asked, &mut problems);
+    session.bottle_problems(loaded, problems)?;
+    Ok(Some(audited))
+}
+
+/// What moved since an older state.
+fn since(session: &mut Session<'_>, old: &str) -> Result<Since, Exit> {
+    let mut set = SourceSet::new();
+    let before = session.state(&mut set, old)?;
+    let now = session.state_now(&mut set)?;
+    let found = compare(&set, &before.state, &now.state).map_err(|unread| {
+        session.fail(&format!("{old} cannot be compared with the site: {unread}"));
+        Exit::Input
+    })?;
+    Ok(Since {
+        name: before.name,
+        found,
+    })
 }
 
 /// Where the pages go.
@@ -105,6 +155,7 @@ fn options(session: &mut Session<'_>, args: &Args, loaded: &Loaded) -> Result<Op
                 .to_owned()
         }),
         flags,
+        since: None,
     })
 }
 

@@ -3,13 +3,15 @@
 use crate::cli::exit::Exit;
 use crate::cli::load::Loaded;
 use crate::cli::session::Session;
+use crate::cli::text_of::decided::season;
 use crate::cli::text_of::scatter::told;
 use crate::cli::text_of::weigh::{Style, one};
 use crate::cli::{AsState, Format, Gate, Weigh};
 use crate::decide::scatter::scatter;
+use crate::decide::season::pair;
 use crate::judge::Verdict;
 use crate::model::Point;
-use crate::results::weigh::{Scatters, document_of, table_of};
+use crate::results::weigh::{Scatters, Seasons, document_of, table_of};
 use crate::weighing::{Scales, Settings, Weighed};
 
 /// Runs `weigh`.
@@ -55,6 +57,7 @@ fn run(
             .flat_map(|w| trips(&scales, w, gate, wanted.as_deref()))
             .collect()
     });
+    let seasons = seasons(&scales, &all, args.now || wanted.is_some());
     for w in &mut all {
         w.candidates
             .retain(|c| wanted.as_ref().is_none_or(|o| o.contains(&c.oil)));
@@ -69,7 +72,12 @@ fn run(
         Some(cases) => sampled(session, &scales, &all, cases)?,
         None => Scatters::new(),
     };
-    let exit = print(session, &scales, loaded, &all, &scatters);
+    let found = Found {
+        all: &all,
+        scatters: &scatters,
+        seasons: &seasons,
+    };
+    let exit = print(session, &scales, loaded, found, settings);
     if exit != Exit::Done || tripped.is_empty() {
         return Ok(exit);
     }
@@ -149,17 +157,44 @@ fn trips(
         .collect()
 }
 
+/// The pairs by season, where no single oil holds and all oils were weighed.
+fn seasons(scales: &Scales<'_>, all: &[Weighed<'_>], only_some: bool) -> Seasons {
+    if only_some {
+        return Seasons::new();
+    }
+    let pairs = all.iter().enumerate();
+    pairs
+        .filter_map(|(n, w)| Some((n, pair(scales, w)?)))
+        .collect()
+}
+
+/// Everything to be printed.
+#[derive(Clone, Copy)]
+struct Found<'f, 'a> {
+    all: &'f [Weighed<'a>],
+    scatters: &'f Scatters,
+    seasons: &'f Seasons,
+}
+
 fn print(
     session: &mut Session<'_>,
     scales: &Scales<'_>,
     loaded: &Loaded,
-    all: &[Weighed<'_>],
-    scatters: &Scatters,
+    found: Found<'_, '_>,
+    settings: Settings,
 ) -> Exit {
+    let Found {
+        all,
+        scatters,
+        seasons,
+    } = found;
     match session.shared.format {
         Format::Json => {
-            let head = session.head(loaded);
-            session.result(&document_of(scales, all, scatters, &head))
+            let mut head = session.head(loaded);
+            head.files = session.carried(loaded);
+            head.reserve = settings.reserve;
+            head.as_new = !settings.worn;
+            session.result(&document_of(scales, all, scatters, seasons, &head))
         }
         Format::Csv => session.table(&table_of(scales, all, scatters)),
         Format::Text => {
@@ -173,6 +208,9 @@ fn print(
                 .map(|(n, w)| {
                     let mut text = one(scales, w, style);
                     text.push_str(&told(scales, (n, w), scatters, style.width));
+                    if let Some(pair) = seasons.get(&n) {
+                        text.push_str(&season(scales, pair, style.width));
+                    }
                     text
                 })
                 .collect();

@@ -3,9 +3,10 @@
 use crate::cli::exit::Exit;
 use crate::cli::load::Loaded;
 use crate::cli::session::Session;
+use crate::decide::gaps::{PointGaps, of_points};
 use crate::model::Point;
 use crate::results::xlsx::{Content, workbook};
-use crate::weighing::{Scales, Weighed};
+use crate::weighing::Scales;
 use std::path::Path;
 
 /// Weighs the points and writes the workbook.
@@ -20,19 +21,19 @@ pub(super) fn write<'s>(
     path: &Path,
 ) -> Result<(), Exit> {
     session.may_write_book(path)?;
-    let mut weighed: Vec<Weighed<'s>> = Vec::with_capacity(points.len());
+    let mut weighed: Vec<PointGaps<'s>> = Vec::with_capacity(points.len());
     for point in points {
-        weighed.push(scales.weigh(point));
+        weighed.extend(of_points(scales, [*point]));
         session.progress("weighing for the workbook", weighed.len(), points.len());
     }
     session.host.progress_end();
     let head = session.head(loaded);
     let content = Content {
         scales,
-        weighed: &weighed,
+        points: &weighed,
         sources: &loaded.sources,
         head: &head,
-        samples: Vec::new(),
+        samples: None,
         warning: session.shared.demo.then_some(
             "Demonstration: works, machines and oils are invented. No number here is for use.",
         ),

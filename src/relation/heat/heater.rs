@@ -75,7 +75,7 @@ mod tests {
         let (v, rho) = (Volume::from_base(0.6), MassDensity::from_base(880.0));
         let c = SpecificHeatCapacity::from_base(2000.0);
         let p = power(v, rho, c, kelvins(20.0), Time::from_base(4.0 * 3600.0));
-        assert!((p.base() - 1466.666_666_7).abs() < 1e-6);
+        assert!((p.base() - 1_466.666_666_7).abs() < 1e-6);
         assert!((time(v, rho, c, kelvins(20.0), p).base() - 14_400.0).abs() < 1e-9);
     }
 

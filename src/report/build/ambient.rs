@@ -2,11 +2,12 @@
 
 use super::case::{Case, mark};
 use super::say;
+use super::season::{by_season, season, seasons};
+use crate::decide::season::pair;
 use crate::judge::Band as Judged;
 use crate::quantity::Measure;
 use crate::quantity::show::Units;
 use crate::report::draw::band::{Band, BandFigure, BandRow, MiniBand};
-use crate::report::draw::season::{Season, SeasonFigure};
 use crate::report::model::{Ambient, Mark};
 use crate::weighing::Candidate;
 
@@ -61,10 +62,14 @@ pub(super) fn ambient(case: &Case<'_, '_>) -> Option<Ambient> {
         need: words,
         rows,
     };
+    let pair = pair(case.run.scales, case.w);
     Some(Ambient {
         bands: Some(figure),
-        season: season(case, lead),
-        notes: Vec::new(),
+        season: match &pair {
+            Some(pair) => seasons(case, pair),
+            None => season(case, lead),
+        },
+        notes: pair.iter().map(|p| by_season(case, p)).collect(),
     })
 }
 
@@ -136,43 +141,6 @@ fn says(band: Option<Band>, need: (f64, f64), units: Units) -> String {
             short(hot)
         ),
     }
-}
-
-/// The year between the lead's limits, where the months are known.
-fn season(case: &Case<'_, '_>, lead: &Candidate) -> Option<SeasonFigure> {
-    let months = case.w.point.monthly_ambient.as_ref()?;
-    let band = drawn(lead.judgement.band)?;
-    let id = case.id(lead.oil);
-    let months_c = months
-        .iter()
-        .map(|m| {
-            (
-                say::celsius(m.value.lo.base()),
-                say::celsius(m.value.hi.base()),
-            )
-        })
-        .collect();
-    Some(SeasonFigure {
-        id: case.local("fig-year"),
-        title: format!(
-            "The year of {} between the limits of {id}",
-            case.where_it_stands()
-        ),
-        description: format!(
-            "{id} holds {}.",
-            say::band(lead.judgement.band, case.degrees())
-        ),
-        caption: "Columns: coldest and warmest of each month.".to_owned(),
-        degrees: case.degrees(),
-        months_c,
-        seasons: vec![Season {
-            first: 1,
-            last: 12,
-            low_c: band.low_c,
-            high_c: band.high_c,
-            label: format!("{} {id}", case.letter(lead)),
-        }],
-    })
 }
 
 /// The small band of a row or a summary.

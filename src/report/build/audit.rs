@@ -18,8 +18,8 @@ use crate::quantity::convert::{celsius, to_mm2_s};
 use crate::quantity::show::{Toward, fixed, unit_of};
 use crate::report::draw::trend::{TrendPanel, TrendSample};
 use crate::report::model::{
-    Answer, AuditSheet, Body, CalcStep, Caution, CrossCell, CrossRow, Evidence, Finding, Mark, Panel,
-    Phrase, Put, SampleRow, Sheet, SignBox, SignOff,
+    Answer, AuditSheet, Body, CalcStep, Caution, CrossCell, CrossRow, Evidence, Finding, Mark,
+    Panel, Phrase, Put, SampleRow, Sheet, SignBox, SignOff,
 };
 use crate::report::names::plain;
 use crate::trace::{How, StepId};
@@ -70,11 +70,20 @@ fn answer(report: &Report<'_>, audit: &Audit) -> Answer {
     let first = audit.findings.first();
     let mut sentences: Vec<Phrase> = Vec::new();
     if let Some(f) = first {
-        sentences.push(Phrase::new().and("Most pressing: ").tag(f.machines.join(", ")).and(format!(". {}.", f.title)));
+        sentences.push(
+            Phrase::new()
+                .and("Most pressing: ")
+                .tag(f.machines.join(", "))
+                .and(format!(". {}.", f.title)),
+        );
     }
     if !audit.unmatched.is_empty() {
         let n = say::count(audit.unmatched.len(), "bottle belongs", "bottles belong");
-        sentences.push(format!("{} to no machine of the site.", say::sentence(&n)).as_str().into());
+        sentences.push(
+            format!("{} to no machine of the site.", say::sentence(&n))
+                .as_str()
+                .into(),
+        );
     }
     Answer {
         mark: None,
@@ -86,7 +95,10 @@ fn answer(report: &Report<'_>, audit: &Audit) -> Answer {
 fn caution_of(audit: &Audit) -> Caution {
     let any = |f: &dyn Fn(&Judged) -> bool| audit.judged.iter().any(f);
     let mut judged = vec!["viscosity of the oil in use against label and machine".to_owned()];
-    for (on, says) in [(On40::Water, "water"), (On40::AcidNumberRise, "acid number")] {
+    for (on, says) in [
+        (On40::Water, "water"),
+        (On40::AcidNumberRise, "acid number"),
+    ] {
         if any(&|j| j.against.iter().any(|a| a.on == on.word())) {
             judged.push(says.to_owned());
         }
@@ -123,7 +135,11 @@ fn cell(names: &[String], means: &str) -> CrossCell {
     CrossCell {
         count: u32::try_from(names.len()).unwrap_or(u32::MAX),
         machines,
-        means: if names.is_empty() { String::new() } else { means.to_owned() },
+        means: if names.is_empty() {
+            String::new()
+        } else {
+            means.to_owned()
+        },
     }
 }
 
@@ -133,12 +149,28 @@ fn cross_rows(report: &Report<'_>, audit: &Audit) -> Vec<CrossRow> {
     let mut open: Vec<String> = Vec::new();
     for row in cross::rows(audit, site) {
         let (note, leave, act) = match row.whose {
-            Whose::AsLabelled => ("within the limits of its class", "Leave alone.", "The specification is wrong, not the oil. Change the specification."),
-            Whose::Changed => ("moved beyond the limits of its class", "Find out why. No hurry to drain.", "Change the oil, and mend the cause."),
-            Whose::Another => ("another oil, or one mixed in", "Find the source; correct at the next change.", "Act now, and find the source."),
+            Whose::AsLabelled => (
+                "within the limits of its class",
+                "Leave alone.",
+                "The specification is wrong, not the oil. Change the specification.",
+            ),
+            Whose::Changed => (
+                "moved beyond the limits of its class",
+                "Find out why. No hurry to drain.",
+                "Change the oil, and mend the cause.",
+            ),
+            Whose::Another => (
+                "another oil, or one mixed in",
+                "Find the source; correct at the next change.",
+                "Act now, and find the source.",
+            ),
             Whose::NotKnown => ("", "", "Find out what is in it."),
         };
-        open.extend(row.open.iter().map(|(name, why)| format!("{name} ({})", say::set(why))));
+        open.extend(
+            row.open
+                .iter()
+                .map(|(name, why)| format!("{name} ({})", say::set(why))),
+        );
         if row.whose == Whose::NotKnown && row.serves.is_empty() && row.not.is_empty() {
             continue;
         }
@@ -161,7 +193,12 @@ fn cross_rows(report: &Report<'_>, audit: &Audit) -> Vec<CrossRow> {
 }
 
 fn findings(audit: &Audit) -> Vec<Finding> {
-    audit.findings.iter().enumerate().map(|(i, f)| finding(audit, i, f)).collect()
+    audit
+        .findings
+        .iter()
+        .enumerate()
+        .map(|(i, f)| finding(audit, i, f))
+        .collect()
 }
 
 fn finding(audit: &Audit, i: usize, f: &Found) -> Finding {
@@ -191,7 +228,9 @@ fn finding(audit: &Audit, i: usize, f: &Found) -> Finding {
         title: format!("{}: {}", f.machines.join(", "), f.title),
         text: say::set(&f.text).as_str().into(),
         causes,
-        what: say::stopped(&say::sentence(&say::set(&f.act))).as_str().into(),
+        what: say::stopped(&say::sentence(&say::set(&f.act)))
+            .as_str()
+            .into(),
     }
 }
 
@@ -214,11 +253,23 @@ fn panels(report: &Report<'_>, audit: &Audit) -> Vec<Panel> {
     let (Some(first), Some(last)) = (first, last) else {
         return Vec::new();
     };
-    let ends = [(first.to_string(), day_number(first)), (last.to_string(), day_number(last))];
-    audit.units.iter().filter_map(|u| panel(report, audit, u, &ends)).collect()
+    let ends = [
+        (first.to_string(), day_number(first)),
+        (last.to_string(), day_number(last)),
+    ];
+    audit
+        .units
+        .iter()
+        .filter_map(|u| panel(report, audit, u, &ends))
+        .collect()
 }
 
-fn panel(report: &Report<'_>, audit: &Audit, unit: &Unit, ends: &[(String, f64); 2]) -> Option<Panel> {
+fn panel(
+    report: &Report<'_>,
+    audit: &Audit,
+    unit: &Unit,
+    ends: &[(String, f64); 2],
+) -> Option<Panel> {
     let scales = report.run.scales;
     let latest = &audit.judged[unit.latest()?];
     let oil = latest.label.oil?;
@@ -237,7 +288,10 @@ fn panel(report: &Report<'_>, audit: &Audit, unit: &Unit, ends: &[(String, f64);
     let floor = serves.and_then(|s| s.floor40);
     let ceiling = serves.and_then(|s| s.ceiling40);
     let id = &scales.site.oils[oil].id;
-    let moved: Vec<String> = readings.iter().map(|(_, nu)| steps(Some(above(*nu)))).collect();
+    let moved: Vec<String> = readings
+        .iter()
+        .map(|(_, nu)| steps(Some(above(*nu))))
+        .collect();
     Some(Panel {
         tag: unit.name.clone(),
         label: id.clone(),
@@ -254,7 +308,10 @@ fn panel(report: &Report<'_>, audit: &Audit, unit: &Unit, ends: &[(String, f64);
             ),
             samples: readings
                 .iter()
-                .map(|(day, nu)| TrendSample { day: day_number(*day), steps: above(*nu) })
+                .map(|(day, nu)| TrendSample {
+                    day: day_number(*day),
+                    steps: above(*nu),
+                })
                 .collect(),
             tolerance: GRADE,
             floor: floor.map(above),
@@ -277,7 +334,9 @@ fn caption(audit: &Audit) -> String {
 fn samples(report: &Report<'_>, audit: &Audit) -> Vec<SampleRow> {
     let site = report.run.scales.site;
     let latest = audit.units.iter().filter_map(|u| Some((u, u.latest()?)));
-    let mut rows: Vec<SampleRow> = latest.map(|(u, p)| sample(report, audit, &u.name, &audit.judged[p])).collect();
+    let mut rows: Vec<SampleRow> = latest
+        .map(|(u, p)| sample(report, audit, &u.name, &audit.judged[p]))
+        .collect();
     for u in &audit.unmatched {
         let name = format!("\u{201c}{}\u{201d}", audit.bottles[u.bottle].machine);
         if let Some(j) = audit.judged.iter().find(|j| j.bottle == u.bottle) {
@@ -295,7 +354,9 @@ fn samples(report: &Report<'_>, audit: &Audit) -> Vec<SampleRow> {
         };
         rows.push(SampleRow {
             machine: Phrase::new().tag(site.points[u.point].address()),
-            label: u.oil.map_or_else(|| "unknown".to_owned(), |o| site.oils[o].id.clone()),
+            label: u
+                .oil
+                .map_or_else(|| "unknown".to_owned(), |o| site.oils[o].id.clone()),
             mark: match (u.barred.is_empty(), u.verdict) {
                 (false, _) | (true, Some(Verdict::Fails)) => Mark::Fails,
                 (true, Some(v)) => mark(v),
@@ -311,7 +372,11 @@ fn samples(report: &Report<'_>, audit: &Audit) -> Vec<SampleRow> {
 fn sample(report: &Report<'_>, audit: &Audit, name: &str, j: &Judged) -> SampleRow {
     let site = report.run.scales.site;
     let b = &audit.bottles[j.bottle];
-    let figure = |r: Reading| b.figures.get(r).map_or("not run".to_owned(), |f| f.written.to_string());
+    let figure = |r: Reading| {
+        b.figures
+            .get(r)
+            .map_or("not run".to_owned(), |f| f.written.to_string())
+    };
     let moved = j.change.nu40.map_or(String::new(), |x| {
         let text = fixed(100.0 * x, 1, Toward::Nearest);
         let sign = if x > 0.0 && text != "0.0" { "+" } else { "" };
@@ -319,18 +384,38 @@ fn sample(report: &Report<'_>, audit: &Audit, name: &str, j: &Judged) -> SampleR
     });
     let missing = match (&b, j) {
         (_, j) if j.twice => "two bottles of one day: neither is judged".to_owned(),
-        (b, j) if j.too_old => format!("last sample {}, past the age the site allows", b.drawn_written),
-        (b, _) if b.shifted => "the row was not read: its cells stand under other headings".to_owned(),
+        (b, j) if j.too_old => format!(
+            "last sample {}, past the age the site allows",
+            b.drawn_written
+        ),
+        (b, _) if b.shifted => {
+            "the row was not read: its cells stand under other headings".to_owned()
+        }
         _ => String::new(),
     };
     let margins = j.serves.as_ref().map_or(Vec::new(), |s| {
-        let one = |m: Option<crate::judge::Margin>, word: &str| m.map(|m| format!("{} {word}", say::steps(m.value, 1)));
-        [one(s.judgement.hot, "hot"), one(s.judgement.cold, "cold")].into_iter().flatten().collect()
+        let one = |m: Option<crate::judge::Margin>, word: &str| {
+            m.map(|m| format!("{} {word}", say::steps(m.value, 1)))
+        };
+        [one(s.judgement.hot, "hot"), one(s.judgement.cold, "cold")]
+            .into_iter()
+            .flatten()
+            .collect()
     });
     SampleRow {
         machine: Phrase::new().tag(name),
-        label: j.label.oil.map(|o| site.oils[o].id.clone()).or(j.label.written.clone()).unwrap_or_else(|| "unknown".to_owned()),
-        drawn: format!("{}, row {}", b.drawn.map_or_else(|| b.drawn_written.clone(), |d| d.to_string()), b.place.row),
+        label: j
+            .label
+            .oil
+            .map(|o| site.oils[o].id.clone())
+            .or(j.label.written.clone())
+            .unwrap_or_else(|| "unknown".to_owned()),
+        drawn: format!(
+            "{}, row {}",
+            b.drawn
+                .map_or_else(|| b.drawn_written.clone(), |d| d.to_string()),
+            b.place.row
+        ),
         nu40: figure(Reading::Nu40),
         nu100: figure(Reading::Nu100),
         as_labelled: format!("{}{moved}", j.whose.words()),
@@ -369,8 +454,16 @@ fn with_steps(report: &Report<'_>, audit: &Audit, mut body: AuditSheet) -> Audit
             let used = told.trace.step(*id)?;
             let link = places.get(id).map(|at| {
                 let made: &CalcStep = &body.steps[*at];
-                let place = report.plan.audit.as_ref().map(|f| f.place.id(&made.id)).unwrap_or_default();
-                (made.number.clone(), crate::report::names::Href::here(&place))
+                let place = report
+                    .plan
+                    .audit
+                    .as_ref()
+                    .map(|f| f.place.id(&made.id))
+                    .unwrap_or_default();
+                (
+                    made.number.clone(),
+                    crate::report::names::Href::here(&place),
+                )
             });
             let from = match &used.how {
                 How::Given { origin, .. } => Some(super::inputs::origin(origin.whose)),
@@ -394,14 +487,20 @@ fn with_steps(report: &Report<'_>, audit: &Audit, mut body: AuditSheet) -> Audit
             formula: Some(law.formula.to_owned()),
             with,
             result: say::amount(step.amount, scales.units, Toward::Nearest),
-            aside: if governs { "margin of the sample".to_owned() } else { String::new() },
+            aside: if governs {
+                "margin of the sample".to_owned()
+            } else {
+                String::new()
+            },
             source: say::set(law.source),
             notes: step.notes.iter().map(|n| say::set(n)).collect(),
             carried: !governs,
             governs,
         });
     }
-    let address = j.point.map_or(String::new(), |p| scales.site.points[p].address());
+    let address = j
+        .point
+        .map_or(String::new(), |p| scales.site.points[p].address());
     body.steps_title = format!(
         "{address}, bottle {}: the same steps give every row of the table. Unit of margins: {}.",
         audit.bottles[j.bottle].name(),
@@ -419,7 +518,11 @@ fn trust(audit: &Audit) -> Vec<Phrase> {
     let guides = audit
         .judged
         .iter()
-        .filter(|j| j.serves.as_ref().is_some_and(|s| s.slope == crate::audit::serves::Slope::OfLabel))
+        .filter(|j| {
+            j.serves
+                .as_ref()
+                .is_some_and(|s| s.slope == crate::audit::serves::Slope::OfLabel)
+        })
         .count();
     let mut list: Vec<Phrase> = vec![
         format!(
@@ -436,20 +539,39 @@ fn trust(audit: &Audit) -> Vec<Phrase> {
         list.push(format!("One viscosity was not run for {}: the slope of the labelled oil is used there, as a guide.", say::count(guides, "sample", "samples")).as_str().into());
     }
     if single > 0 {
-        list.push(format!("{} sampled once: no trend.", say::sentence(&say::count(single, "fill was", "fills were"))).as_str().into());
+        list.push(
+            format!(
+                "{} sampled once: no trend.",
+                say::sentence(&say::count(single, "fill was", "fills were"))
+            )
+            .as_str()
+            .into(),
+        );
     }
     list
 }
 
 fn sign(report: &Report<'_>, audit: &Audit) -> SignOff {
     let client = report.run.scales.site.frame.client.as_deref();
-    let act = audit.findings.iter().filter(|f| f.level == crate::audit::limits::Level::Act).count();
+    let act = audit
+        .findings
+        .iter()
+        .filter(|f| f.level == crate::audit::limits::Level::Act)
+        .count();
     let bottles = say::count(audit.bottles.len(), "bottle", "bottles");
     SignOff {
         meaning: "Accepting the findings is not a release for oil changes.".to_owned(),
         boxes: vec![
-            SignBox { role: "Audited".to_owned(), accepts: format!("Samples and labels as found, {bottles}.").as_str().into() },
-            SignBox { role: "Checked".to_owned(), accepts: "The table against the laboratory's report.".into() },
+            SignBox {
+                role: "Audited".to_owned(),
+                accepts: format!("Samples and labels as found, {bottles}.")
+                    .as_str()
+                    .into(),
+            },
+            SignBox {
+                role: "Checked".to_owned(),
+                accepts: "The table against the laboratory's report.".into(),
+            },
             SignBox {
                 role: client.map_or_else(|| "Accepted".to_owned(), |c| format!("Accepted for {c}")),
                 accepts: format!(

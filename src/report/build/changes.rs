@@ -4,10 +4,13 @@
 use super::case::Case;
 use super::gaps::{Found, Weight};
 use super::say;
+use crate::decide::ask::{Ask, Specification, ask};
 use crate::decide::gaps::effect::words;
 use crate::decide::mend::lever::Target;
 use crate::decide::mend::{Mended, mend};
 use crate::judge::Verdict;
+use crate::quantity::show::Toward;
+use crate::quantity::{Measure, ThermodynamicTemperature};
 use crate::report::model::{ChangeRow, Changes, Phrase};
 use crate::weighing::Candidate;
 
@@ -25,11 +28,58 @@ pub(super) fn changes(case: &Case<'_, '_>, gaps: &[Found], machines: usize) -> O
         .filter_map(|c| row(case, c))
         .collect();
     let unsettles = unsettles(case, gaps);
-    (!rows.is_empty() || !unsettles.is_empty()).then(|| Changes {
+    let ask_for = ask_for(case, machines);
+    let any = !rows.is_empty() || !unsettles.is_empty() || !ask_for.is_empty();
+    any.then_some(Changes {
         rows,
         unsettles,
-        ask_for: Vec::new(),
+        ask_for,
     })
+}
+
+/// The oil to ask for, where no oil on the list holds; on large sites the command tells it.
+fn ask_for(case: &Case<'_, '_>, machines: usize) -> Vec<Phrase> {
+    let holds = |c: &Candidate| c.judgement.verdict == Verdict::Holds;
+    if case.w.candidates.iter().any(holds) {
+        return Vec::new();
+    }
+    let command = format!("filmwright need {} --ask", case.w.point.address());
+    if machines > FULL {
+        return vec![format!("Printed by: {command}").into()];
+    }
+    match ask(case.run.scales, case.w) {
+        Ask::Specification(spec) => specification(case, &spec),
+        Ask::Undecided(why) => {
+            let text = format!("nothing yet, this has to be known first: {}", say::set(&why));
+            vec![say::stopped(&say::sentence(&text)).into()]
+        }
+        Ask::NoRoom { vi } => vec![
+            format!("No oil of one grade holds here, up to a viscosity index of {vi:.0}: the limits leave no room.").into(),
+        ],
+        Ask::Grease => Vec::new(),
+    }
+}
+
+/// A specification in sentences; it was weighed on the point and holds.
+fn specification(case: &Case<'_, '_>, spec: &Specification) -> Vec<Phrase> {
+    let test = spec.shear_test(case.run.scales.rules);
+    let degrees = |t: f64| {
+        let at = ThermodynamicTemperature::from_base(t).amount();
+        say::amount(at, case.units(), Toward::Down)
+    };
+    let lines = spec.lines(&test, degrees).into_iter();
+    let lines = lines.map(|l| say::stopped(&say::sentence(&say::set(&l))));
+    let conditions = spec.contents.conditions.iter().map(|(_, says)| {
+        say::stopped(&say::sentence(&format!(
+            "on the condition: {}",
+            say::set(says)
+        )))
+    });
+    lines
+        .chain(conditions)
+        .chain(["Such an oil was weighed here and holds, reserve kept.".to_owned()])
+        .map(Phrase::from)
+        .collect()
 }
 
 /// The oils worth mending, in the order of the table: those that do not hold.

@@ -8,13 +8,15 @@ use super::say;
 use super::sign;
 use super::state::{self, Pressing, State};
 use crate::decide::gaps::effect::smallest;
+use crate::decide::pool::Place as PoolPlace;
+use crate::decide::pool::case as pool;
 use crate::judge::Verdict;
 use crate::judge::weigh::Margin;
 use crate::quantity::{Measure, Volume};
 use crate::report::draw::band::Band;
 use crate::report::model::{GapRow, Mark, Phrase};
 use crate::report::names::Href;
-use crate::weighing::Candidate;
+use crate::weighing::{Candidate, oil_in_use, oil_index};
 use std::collections::BTreeSet;
 use std::fmt::Write as _;
 
@@ -62,6 +64,12 @@ pub(super) struct Digest {
     pub(super) idle: usize,
     pub(super) cells: Vec<Cell>,
     pub(super) fill: Option<Volume>,
+    /// Its address.
+    pub(super) address: String,
+    /// The oils that may serve it, for the shortest list; none where it cannot be decided.
+    pub(super) place_on_list: Option<PoolPlace>,
+    /// What its oil of today costs a year, where that is known.
+    pub(super) cost_now: Option<f64>,
     /// Rules that set a limit here or spoke on an oil.
     pub(super) rules: BTreeSet<String>,
 }
@@ -99,8 +107,17 @@ pub(super) fn digest(case: &Case<'_, '_>, gaps: &[Found], href: Href) -> Digest 
         idle: gaps.iter().filter(|g| g.weight > Weight::Condition).count(),
         cells: cells(case),
         fill: sign::volume(case),
+        address: case.w.point.address(),
+        place_on_list: pool::place(case.run.scales.site, case.w, &case.run.head.date),
+        cost_now: cost_now(case),
         rules: rules(case),
     }
+}
+
+fn cost_now(case: &Case<'_, '_>) -> Option<f64> {
+    let site = case.run.scales.site;
+    let oil = oil_index(site, oil_in_use(case.w.point)?)?;
+    pool::yearly(site, case.w, oil)
 }
 
 fn in_it(case: &Case<'_, '_>) -> (String, Option<Mark>, Option<Band>) {

@@ -3,7 +3,7 @@
 use super::digest::Digest;
 use super::plan::On;
 use super::state::{Pressing, State};
-use super::{Report, caution, first, machines, register, say, site_gaps, store};
+use super::{Report, caution, first, lists, machines, register, say, site_gaps, store};
 use crate::model::rulebook::caution::CautionKind;
 use crate::quantity::show::{Toward, fixed};
 use crate::report::model::{
@@ -24,6 +24,9 @@ pub(super) fn sheet(report: &Report<'_>) -> Sheet {
     } else {
         machines::rows(report, &all)
     };
+    let lists = lists::lists(report);
+    let mut list_notes = store::notes(report);
+    list_notes.extend(lists.iter().flat_map(|l| l.notes(report)));
     let (answer, first, caution) = (
         answer(report),
         first::first(report),
@@ -39,8 +42,8 @@ pub(super) fn sheet(report: &Report<'_>) -> Sheet {
         machines: rows,
         band_axis,
         oils: store::oils(report),
-        lists: None,
-        list_notes: store::notes(report),
+        lists: lists.as_ref().and_then(|l| l.figure(report)),
+        list_notes,
         matrix: store::matrix(report),
         gaps: site_gaps::gaps(report),
         accepted: accepted(report),

@@ -48,6 +48,10 @@ pub(super) struct Plan<'a> {
     pub(super) oils: Vec<Fixed>,
     /// Their ids, for the bar of links.
     oil_ids: Vec<String>,
+    /// The audit, where there are samples.
+    pub(super) audit: Option<Fixed>,
+    /// What moved, where an older state is named.
+    pub(super) revision: Option<Fixed>,
     pub(super) methods: Fixed,
     pub(super) rules: Fixed,
     pub(super) glossary: Fixed,
@@ -62,6 +66,8 @@ pub(super) enum On {
     Area(usize),
     Machine(usize),
     Oil(usize),
+    Audit,
+    Revision,
     Methods,
     Rules,
     Glossary,
@@ -69,7 +75,13 @@ pub(super) enum On {
 
 impl<'a> Plan<'a> {
     /// Plans the sheets for these points, in their order.
-    pub(super) fn new(points: &[&'a Point], oils: &[Oil], bundle: Bundle) -> Self {
+    pub(super) fn new(
+        points: &[&'a Point],
+        oils: &[Oil],
+        bundle: Bundle,
+        audited: bool,
+        revised: bool,
+    ) -> Self {
         let mut names = Names::new();
         let mut number = 0;
         let mut next = || {
@@ -100,6 +112,8 @@ impl<'a> Plan<'a> {
                 number: next(),
             })
             .collect();
+        let audit = audited.then(|| fixed(&mut names, "audit", next()));
+        let revision = revised.then(|| fixed(&mut names, "changes", next()));
         let methods = fixed(&mut names, "methods", next());
         let rules = fixed(&mut names, "rules", next());
         let glossary = fixed(&mut names, "words", next());
@@ -111,6 +125,8 @@ impl<'a> Plan<'a> {
             machines,
             oils,
             oil_ids,
+            audit,
+            revision,
             methods,
             rules,
             glossary,
@@ -122,6 +138,8 @@ impl<'a> Plan<'a> {
         let fixed = [&self.overview, &self.methods, &self.rules, &self.glossary];
         fixed
             .into_iter()
+            .chain(self.audit.as_ref())
+            .chain(&self.revision)
             .map(|f| &f.place)
             .chain(self.areas.iter().map(|a| &a.place))
             .chain(self.machines.iter().map(|m| &m.place))
@@ -172,6 +190,13 @@ impl<'a> Plan<'a> {
                 }
             }
             _ => {}
+        }
+        if let Some(audit) = &self.audit {
+            bar.push(link("Audit".into(), &audit.place, on == On::Audit));
+        }
+        if let Some(revision) = &self.revision {
+            let current = on == On::Revision;
+            bar.push(link("Changes".into(), &revision.place, current));
         }
         bar.push(link(
             "Methods".into(),

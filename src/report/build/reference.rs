@@ -135,7 +135,7 @@ pub(super) fn words(report: &Report<'_>) -> Sheet {
     };
     let body = Glossary {
         reserve: format!("{site} of a step"),
-        audit: false,
+        audit: report.plan.audit.is_some(),
         terms: vec![
             term(
                 "viscosity ratio κ",

@@ -114,7 +114,7 @@ pub(super) fn notes(report: &Report<'_>) -> Vec<Phrase> {
     let mut points = report.kept.machines.iter().flatten();
     let mut notes: Vec<Phrase> = Vec::new();
     if points.any(|d| d.oil.is_some()) {
-        notes.push("Each oil is the first choice of its machines. Whether a shorter list would serve all of them is not looked for on this sheet.".into());
+        notes.push("The table names for each machine its own first choice. A shorter list for all of them together is told below the figure.".into());
     }
     if !report.plan.oils.is_empty() {
         let mut all = Phrase::new().strong("Sheets of all oils: ");

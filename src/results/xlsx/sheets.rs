@@ -1,15 +1,17 @@
 //! The sheets of the workbook, in their order.
 
 use super::{Cell, Sheet, columns, inputs, write};
+use crate::decide::gaps::{PointGaps, ranked};
 use crate::demand::End;
-use crate::demand::inputs::{Gap, GapKind};
 use crate::judge::weigh::Margin;
 use crate::model::oil::{Oil, Viscosity};
 use crate::model::stated::Stated;
 use crate::model::{OilNow, Point};
 use crate::quantity::kind::Unit;
 use crate::quantity::show::{Toward, Units, quantity, unit_of};
-use crate::quantity::{Amount, Kind, Measure};
+use crate::quantity::{Kind, Measure};
+use crate::results::csv;
+use crate::results::gaps::table_of;
 use crate::results::json::Head;
 use crate::results::need::limit_amount;
 use crate::source::SourceSet;
@@ -21,16 +23,22 @@ use rust_xlsxwriter::XlsxError;
 pub struct Content<'c, 's> {
     /// The scales everything was weighed with.
     pub scales: &'c Scales<'s>,
-    /// Every point with its candidates.
-    pub weighed: &'c [Weighed<'s>],
+    /// Every point with its candidates and gaps.
+    pub points: &'c [PointGaps<'s>],
     /// The files read.
     pub sources: &'c SourceSet,
     /// Fingerprint, rules and date.
     pub head: &'c Head,
-    /// Results of samples against label and need, a row each, where there are any.
-    pub samples: Vec<(Vec<(String, String)>, Vec<Vec<String>>)>,
+    /// Samples against label and need, a row each, where there are any.
+    pub samples: Option<csv::Table>,
     /// Said on every page.
     pub warning: Option<&'c str>,
+}
+
+impl<'s> Content<'_, 's> {
+    fn weighed(&self) -> impl Iterator<Item = &Weighed<'s>> {
+        self.points.iter().map(|p| &p.weighed)
+    }
 }
 
 /// The workbook.
@@ -103,7 +111,7 @@ fn machines(content: &Content<'_, '_>) -> Sheet {
     let s = Shown::of(content.scales.units);
     let (nu, t) = (s.nu.name, s.t.name);
     let mut rows = Vec::new();
-    for w in content.weighed {
+    for w in content.weighed() {
         let p = w.point;
         let best = w.candidates.first();
         let mut row = point_cells(p).to_vec();
@@ -244,20 +252,17 @@ fn oil_row(content: &Content<'_, '_>, index: usize, oil: &Oil, s: &Shown) -> Vec
     };
     let count = |is: &dyn Fn(&Candidate) -> bool| {
         let n = content
-            .weighed
-            .iter()
+            .weighed()
             .filter(|w| w.candidates.iter().any(|c| c.oil == index && is(c)))
             .count();
         Cell::number(Some(n as f64), 0)
     };
     let held = content
-        .weighed
-        .iter()
+        .weighed()
         .filter(|w| matches!(&w.point.oil_now, OilNow::Oil(id) if id.value == oil.id))
         .count();
     let barred = content
-        .weighed
-        .iter()
+        .weighed()
         .filter(|w| w.barred.iter().any(|b| b.oil == index))
         .count();
     let from = match &oil.viscosity {
@@ -319,7 +324,7 @@ fn pairs(content: &Content<'_, '_>) -> Sheet {
     let s = Shown::of(content.scales.units);
     let (nu, t) = (s.nu.name, s.t.name);
     let mut rows = Vec::new();
-    for w in content.weighed {
+    for w in content.weighed() {
         for c in &w.candidates {
             rows.push(pair(content, w, c, &s));
         }
@@ -405,126 +410,67 @@ fn pair(content: &Content<'_, '_>, w: &Weighed<'_>, c: &Candidate, s: &Shown) ->
     row
 }
 
+/// The gaps in their order, as `gaps -f csv` has them.
 fn gaps(content: &Content<'_, '_>) -> Sheet {
-    let mut rows = Vec::new();
-    for w in content.weighed {
-        let open = w
-            .candidates
-            .iter()
-            .filter(|c| c.judgement.verdict.word() == "open")
-            .count();
-        for gap in w.demands.middle.axes.iter().chain(&w.demands.middle.gaps) {
-            let [machine, point] = point_cells(w.point);
-            let mut row = vec![
-                machine,
-                point,
-                Cell::maybe(gap.about.as_deref()),
-                Cell::text(gap.key.clone()),
-            ];
-            row.extend(extent(gap, content.scales.units));
-            row.push(Cell::number(Some(open as f64), 0));
-            row.push(Cell::text(
-                gap.ask.clone().unwrap_or_else(|| gap.how.to_owned()),
-            ));
-            rows.push(row);
+    let table = table_of(content.scales, content.points, &ranked(content.points));
+    of_table("Gaps", table)
+}
+
+/// A table as a sheet: the unit at the end of a heading stands below it.
+fn of_table(name: &'static str, table: csv::Table) -> Sheet {
+    let wide = |heading: &str| match heading {
+        "ask" | "because" | "says" => 60.0,
+        "missing" | "part" | "verdicts" | "proposed" | "causes" => 28.0,
+        _ => 14.0,
+    };
+    let column = |heading: &String| {
+        let (words, unit) = match heading.strip_suffix("_vg_step") {
+            Some(words) => (words, "VG step"),
+            None => (heading.as_str(), ""),
+        };
+        let mut words = words.replace('_', " ");
+        if let Some(first) = words.get_mut(..1) {
+            first.make_ascii_uppercase();
         }
-        for c in w.candidates.iter().take(1) {
-            for missing in &c.facts_missing {
-                let [machine, point] = point_cells(w.point);
-                rows.push(vec![
-                    machine,
-                    point,
-                    Cell::Empty,
-                    Cell::text(missing.clone()),
-                    Cell::Empty,
-                    Cell::Empty,
-                    Cell::Empty,
-                    Cell::text("a suitability rule asks"),
-                    Cell::Empty,
-                    Cell::Empty,
-                ]);
-            }
-        }
-    }
+        (words, unit.to_owned(), wide(heading))
+    };
     Sheet {
-        name: "Gaps",
-        columns: columns(&[
-            ("Machine", "", 14.0),
-            ("Point", "", 12.0),
-            ("Part", "", 24.0),
-            ("Missing", "", 30.0),
-            ("Least plausible", "in the unit column", 10.0),
-            ("Greatest plausible", "in the unit column", 10.0),
-            ("Unit", "", 9.0),
-            ("State", "", 22.0),
-            ("Oils left open here", "", 10.0),
-            ("How to find out", "", 60.0),
-        ]),
-        rows,
+        name,
+        columns: table.headings.iter().map(column).collect(),
+        rows: table
+            .rows
+            .into_iter()
+            .map(|row| row.into_iter().map(of_csv).collect())
+            .collect(),
     }
 }
 
-fn extent(gap: &Gap, units: Units) -> [Cell; 4] {
-    let between = |lo: Amount, hi: Amount, state: String| {
-        let unit = unit_of(lo.kind, units);
-        [
-            Cell::number(Some(lo.in_unit(unit)), 2),
-            Cell::number(Some(hi.in_unit(unit)), 2),
-            Cell::text(unit.name),
-            Cell::text(state),
-        ]
-    };
-    match &gap.kind {
-        GapKind::Range(lo, hi) => between(*lo, *hi, "unknown within a range".into()),
-        GapKind::Assumed { taken, lo, hi } => between(
-            *lo,
-            *hi,
-            format!("{} assumed", quantity(*taken, units, Toward::Nearest)),
-        ),
-        _ => [
-            Cell::Empty,
-            Cell::Empty,
-            Cell::Empty,
-            Cell::text("not stated"),
-        ],
+fn of_csv(cell: csv::Cell) -> Cell {
+    match cell {
+        csv::Cell::Text(text) => Cell::Text(text),
+        csv::Cell::Number(x) => {
+            let whole = (x - x.round()).abs() < f64::EPSILON;
+            Cell::Number(x, if whole { 0 } else { 2 })
+        }
+        csv::Cell::Empty => Cell::Empty,
     }
 }
 
 fn samples(content: &Content<'_, '_>) -> Sheet {
-    let mut sheet = Sheet {
-        name: "Samples",
-        columns: columns(&[("Sample", "", 14.0), ("State", "", 60.0)]),
-        rows: Vec::new(),
-    };
-    if let Some((headings, rows)) = content.samples.first() {
-        sheet.columns = headings
-            .iter()
-            .map(|(h, u)| (h.clone(), u.clone(), 14.0))
-            .collect();
-        sheet.rows = rows
-            .iter()
-            .map(|r| r.iter().map(|c| figure_or_text(c)).collect())
-            .collect();
-    } else {
-        sheet
-            .rows
-            .push(vec![Cell::Empty, Cell::text("no samples were read")]);
-    }
-    sheet
-}
-
-fn figure_or_text(text: &str) -> Cell {
-    match text.parse::<f64>() {
-        Ok(x) if x.is_finite() => Cell::Number(x, 2),
-        _ if text.is_empty() => Cell::Empty,
-        _ => Cell::text(text),
+    match &content.samples {
+        Some(table) => of_table("Samples", table.clone()),
+        None => Sheet {
+            name: "Samples",
+            columns: columns(&[("Sample", "", 14.0), ("State", "", 60.0)]),
+            rows: vec![vec![Cell::Empty, Cell::text("no samples were read")]],
+        },
     }
 }
 
 /// The steps behind the oil in use and the oil proposed.
 fn steps(content: &Content<'_, '_>) -> Sheet {
     let mut rows = Vec::new();
-    for w in content.weighed {
+    for w in content.weighed() {
         let shown = w
             .candidates
             .iter()
