@@ -304,7 +304,7 @@ pub struct Intake {
     pub makes: Option<IntakeMakes>,
     /// Decimal sign of its numbers (default: found from the cells)
     #[arg(long, value_enum, value_name = "SIGN")]
-    pub decimal: Option<IntakeDecimal>,
+    pub decimal: Option<Decimal>,
     /// Encoding of a CSV file, as windows-1252 (default: found)
     #[arg(long, value_name = "NAME")]
     pub encoding: Option<String>,
@@ -326,15 +326,6 @@ pub enum IntakeMakes {
     Site,
     /// Lubricants: an oil file.
     Oils,
-}
-
-/// Decimal signs.
-#[derive(Clone, Copy, Debug, PartialEq, Eq, ValueEnum)]
-pub enum IntakeDecimal {
-    /// 52.0
-    Point,
-    /// 52,0
-    Comma,
 }
 
 /// Gallons.
@@ -489,7 +480,7 @@ pub struct Oil {
 /// `compare`
 #[derive(Debug, Args)]
 pub struct Compare {
-    /// The old state: a site's folder, or a file of `weigh -f json`
+    /// The old state: a site's folder, a file of `weigh -f json`, or one of `audit -f json`
     pub old: String,
     /// The new state
     pub new: String,

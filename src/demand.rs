@@ -147,6 +147,8 @@ pub struct Demand {
     pub standing: Standing,
     /// Whether it is a practice window's.
     pub from_window: bool,
+    /// Where the limit itself moves with the ambient: the figure is that of the hottest.
+    pub heat: Option<Box<journal::HeatCeiling>>,
 }
 
 impl Demand {

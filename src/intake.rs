@@ -4,6 +4,7 @@
 
 pub mod cell;
 pub mod compare;
+pub mod decimals;
 pub mod describe;
 pub mod draft;
 pub mod finding;

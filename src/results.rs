@@ -2,6 +2,7 @@
 //! renamed, within a format number.
 
 pub mod audit;
+pub mod audit_change;
 pub mod compare;
 pub mod csv;
 pub mod decided;

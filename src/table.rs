@@ -68,6 +68,8 @@ pub struct Sheet {
     pub merged: Vec<Merged>,
     /// Hidden columns, counted from one.
     pub hidden_columns: Vec<u32>,
+    /// Comments, in the order of the file.
+    pub comments: Vec<Comment>,
 }
 
 /// A row that holds anything.
@@ -88,6 +90,17 @@ pub struct Cell {
     pub column: u32,
     /// What it holds.
     pub content: Content,
+}
+
+/// A comment on a cell.
+#[derive(Clone, Debug, PartialEq, Eq)]
+pub struct Comment {
+    /// Row of the cell.
+    pub row: u32,
+    /// Column of the cell.
+    pub column: u32,
+    /// What it says.
+    pub text: String,
 }
 
 /// A cell that spans others.

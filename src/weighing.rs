@@ -191,7 +191,7 @@ impl<'a> Scales<'a> {
     }
 
     /// The curves of the oil a point holds, where it is of the list.
-    fn in_use_curves(&self, point: &Point) -> Option<&Curves> {
+    pub fn in_use_curves(&self, point: &Point) -> Option<&Curves> {
         let at = oil_index(self.site, oil_in_use(point)?)?;
         Some(&self.oils[at].curves)
     }

@@ -119,42 +119,43 @@ impl std::fmt::Display for Code {
     }
 }
 
+/// Upper counts in a millilitre of codes 1 to 28, ISO 4406:2017 table 1
+const UPPER: [f64; 28] = [
+    0.02,
+    0.04,
+    0.08,
+    0.16,
+    0.32,
+    0.64,
+    1.3,
+    2.5,
+    5.0,
+    10.0,
+    20.0,
+    40.0,
+    80.0,
+    160.0,
+    320.0,
+    640.0,
+    1300.0,
+    2500.0,
+    5000.0,
+    10_000.0,
+    20_000.0,
+    40_000.0,
+    80_000.0,
+    160_000.0,
+    320_000.0,
+    640_000.0,
+    1_300_000.0,
+    2_500_000.0,
+];
+
 /// The code of a count: the upper count doubles from code to code, 80 to 160 is 14.
 fn number_of(count: f64) -> Option<u8> {
     if !(count.is_finite() && count >= 0.0) {
         return None;
     }
-    // upper counts in a millilitre of codes 1 to 28, ISO 4406:2017 table 1
-    const UPPER: [f64; 28] = [
-        0.02,
-        0.04,
-        0.08,
-        0.16,
-        0.32,
-        0.64,
-        1.3,
-        2.5,
-        5.0,
-        10.0,
-        20.0,
-        40.0,
-        80.0,
-        160.0,
-        320.0,
-        640.0,
-        1300.0,
-        2500.0,
-        5000.0,
-        10_000.0,
-        20_000.0,
-        40_000.0,
-        80_000.0,
-        160_000.0,
-        320_000.0,
-        640_000.0,
-        1_300_000.0,
-        2_500_000.0,
-    ];
     let at = UPPER.iter().position(|upper| count <= *upper);
     Some(at.map_or(29, |at| u8::try_from(at + 1).unwrap_or(29)))
 }

@@ -22,6 +22,7 @@ use super::profile::Profile;
 use super::scatter::Scatter;
 use crate::model::sample::Reading;
 use crate::numeric::math::{exp, ln};
+use crate::quantity::show::{Toward, fixed, significant};
 use likelihood::Sample;
 use std::collections::BTreeMap;
 use std::sync::{Arc, OnceLock};
@@ -111,11 +112,11 @@ pub struct Causes {
 }
 
 /// Below this likelihood of the unchanged oil something is the matter.
-const CHANGED: f64 = 0.55;
+const CHANGED: f64 = 0.7;
 /// Causes less likely than this are not named.
 const NAMED: f64 = 0.12;
 /// Settings whose viscosities fit so much worse than the best are not looked at further.
-const REACH: f64 = 18.0;
+const REACH: f64 = 12.0;
 
 impl Causes {
     /// From the profiles of the site's oils, with their names.
@@ -223,7 +224,6 @@ fn upside_down(figures: &Figures) -> Option<Named> {
     if sane {
         return None;
     }
-    use crate::quantity::show::{Toward, fixed, significant};
     let show = |v| significant(v, 3, Toward::Nearest);
     let index = vi.map_or("no viscosity index".to_owned(), |v| {
         format!("a viscosity index of {}", fixed(v, 0, Toward::Nearest))
@@ -248,6 +248,10 @@ struct Looked<'g> {
 
 fn look<'g>(thetas: &'g [Theta], sample: &Sample, best: &mut f64, into: &mut Vec<Looked<'g>>) {
     for theta in thetas {
+        // the unchanged oil is always weighed
+        if theta.causes[0].is_some() && sample.is_far(theta) {
+            continue;
+        }
         let nu = theta.log_prior + sample.viscosity(theta);
         if nu < *best - REACH {
             continue;
@@ -381,7 +385,9 @@ fn name(
 
 /// Oils that would do, each at its likeliest share; three at most.
 fn other_oils<'l, 'g: 'l>(with: impl Iterator<Item = &'l Looked<'g>>) -> Vec<OtherOil> {
-    let mut all: BTreeMap<(Option<usize>, Arc<str>), (f64, f64, f64)> = BTreeMap::new();
+    /// Weight, weight times share, weight again for the mean.
+    type Sums = (f64, f64, f64);
+    let mut all: BTreeMap<(Option<usize>, Arc<str>), Sums> = BTreeMap::new();
     let list: Vec<&Looked<'_>> = with.collect();
     let top = list.iter().map(|l| l.log).fold(f64::NEG_INFINITY, f64::max);
     let mut total = 0.0;

@@ -5,6 +5,7 @@ use super::judged::Judged;
 use super::whose::Whose;
 use crate::judge::Verdict;
 use crate::model::Site;
+use std::fmt::Write as _;
 
 /// One row of the table.
 #[derive(Clone, Debug, PartialEq, Eq)]
@@ -114,10 +115,11 @@ pub fn answer(audit: &Audit, site: &Site) -> String {
         fills(sampled)
     );
     if other > 0 {
-        says.push_str(&format!(
+        let _ = write!(
+            says,
             "; {other} {} another oil than labelled",
             if other == 1 { "holds" } else { "hold" }
-        ));
+        );
     }
     says
 }

@@ -10,6 +10,7 @@ use super::whose::Whose;
 use crate::judge::Verdict;
 use crate::quantity::show::{Toward, fixed, margin, significant};
 use crate::weighing::Scales;
+use std::fmt::Write as _;
 
 /// A finding.
 #[derive(Clone, Debug, PartialEq)]
@@ -179,6 +180,7 @@ pub fn asks(j: &Judged) -> String {
 }
 
 /// Whether it serves.
+#[expect(clippy::too_many_lines, reason = "one arm for each verdict")]
 fn service(audit: &Audit, unit: &Unit, place: usize, scales: &Scales<'_>) -> Option<Finding> {
     let j = &audit.judged[place];
     let oil = label(j, scales);
@@ -296,6 +298,7 @@ fn sentence(text: &str) -> String {
 }
 
 /// Another oil, or the labelled one changed: what it is likely to be.
+#[expect(clippy::too_many_lines, reason = "one sentence after the other")]
 fn changed(audit: &Audit, unit: &Unit, place: usize, scales: &Scales<'_>) -> Option<Finding> {
     let j = &audit.judged[place];
     let first = j.diagnosis.causes.first();
@@ -353,7 +356,7 @@ fn changed(audit: &Audit, unit: &Unit, place: usize, scales: &Scales<'_>) -> Opt
             .iter()
             .map(|n| n.cause.says().to_owned())
             .collect();
-        text.push_str(&format!(" Not decided between {}.", names.join(", ")));
+        let _ = write!(text, " Not decided between {}.", names.join(", "));
     }
     if let Some(oils) = first.map(|n| &n.oils).filter(|o| !o.is_empty()) {
         let listed: Vec<String> = oils
@@ -366,14 +369,11 @@ fn changed(audit: &Audit, unit: &Unit, place: usize, scales: &Scales<'_>) -> Opt
                 )
             })
             .collect();
-        text.push_str(&format!(" Likely mixed in: {}.", listed.join("; ")));
+        let _ = write!(text, " Likely mixed in: {}.", listed.join("; "));
     }
     if !j.diagnosis.would_tell.is_empty() {
         let names: Vec<&str> = j.diagnosis.would_tell.iter().map(|r| r.says()).collect();
-        text.push_str(&format!(
-            " Not measured, and would tell: {}.",
-            names.join(", ")
-        ));
+        let _ = write!(text, " Not measured, and would tell: {}.", names.join(", "));
     }
     let act = match first {
         Some(_) if j.diagnosis.undecided => {
@@ -473,14 +473,15 @@ pub fn trend_words(trend: &Trend) -> String {
                 let end = |d: Option<jiff::civil::Date>| {
                     d.map_or("not within a hundred years".to_owned(), |d| d.to_string())
                 };
-                says.push_str(&format!(
+                let _ = write!(
+                    says,
                     "; reaches the {} of {} mm2/s about {} (between {} and {})",
                     r.limit,
                     significant(r.nu40, 3, Toward::Nearest),
                     r.on,
                     end(r.between.0),
                     end(r.between.1)
-                ));
+                );
             }
             says
         }

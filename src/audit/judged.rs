@@ -16,7 +16,7 @@ use crate::model::rulebook::used_oil::Reading as On;
 use crate::model::word::Word;
 use crate::model::{Oil, Point};
 use crate::oil::worn::PLAUSIBLE_LOSS_MILD;
-use crate::problem::{Code as ProblemCode, Problem, Write, suggest};
+use crate::problem::{Code as ProblemCode, Problem, Write};
 use crate::quantity::Measure;
 use crate::source::Place;
 use crate::weighing::{Condition, Scales, Weighed, facts, oil_in_use};
@@ -135,6 +135,9 @@ struct Pair<'a> {
     water_entry: Option<&'static str>,
 }
 
+/// Pairs by the places of point and labelled oil.
+type Pairs<'a> = BTreeMap<(Option<usize>, Option<usize>), Arc<Pair<'a>>>;
+
 /// Judges bottles.
 pub struct Auditor<'s, 'a> {
     /// Oils and rules made ready.
@@ -143,7 +146,7 @@ pub struct Auditor<'s, 'a> {
     profiles: Vec<Profile>,
     causes: Causes,
     on: Date,
-    pairs: RwLock<BTreeMap<(Option<usize>, Option<usize>), Arc<Pair<'a>>>>,
+    pairs: RwLock<Pairs<'a>>,
     oils: BTreeMap<String, usize>,
 }
 
@@ -393,7 +396,7 @@ impl<'s, 'a> Auditor<'s, 'a> {
             frame: serves::frame(label),
             setting: setting(at, label),
             yellow_metal: place.yellow_metal,
-            water_entry: at.and(place.water_entry).map(|w| w.word()),
+            water_entry: at.and(place.water_entry).map(Word::word),
             weighed,
         }
     }
@@ -505,9 +508,4 @@ pub(super) fn tell_labels(judged: &[Judged], bottles: &[Bottle], problems: &mut 
         ));
         problems.push(problem);
     }
-}
-
-/// The oil certainly meant by a label that is none.
-pub fn label_meant<'o>(written: &str, oils: impl IntoIterator<Item = &'o str>) -> Option<&'o str> {
-    suggest::certain(written, oils)
 }

@@ -120,7 +120,7 @@ impl Limits {
     ) -> Self {
         let mut limits = Self::default();
         let mut most: BTreeMap<(&'static str, bool), usize> = BTreeMap::new();
-        for rule in rules.used_oil.iter() {
+        for rule in &rules.used_oil {
             if suitability.holds(&rule.when, card, oil) != Truth::True {
                 continue;
             }

@@ -6,6 +6,7 @@ use super::scatter::Scatter;
 use crate::model::rulebook::{Rulebook, WearSign};
 use crate::model::sample::Reading;
 use crate::quantity::show::{Toward, significant};
+use std::fmt::Write as _;
 
 /// A metal that rose.
 #[derive(Clone, Debug, PartialEq)]
@@ -49,9 +50,8 @@ pub(super) fn rises(
 ) -> Vec<Rise> {
     let rose = |element: Reading| {
         let (from, to) = (before.exact(element)?, after.exact(element)?);
-        let scatter = scatter
-            .sigma(element, from)
-            .hypot(scatter.sigma(element, to));
+        let (a, b) = (scatter.sigma(element, from), scatter.sigma(element, to));
+        let scatter = (a * a + b * b).sqrt();
         (to - from > 3.0 * scatter && to > 1.5 * from).then_some((element, from, to))
     };
     let all: Vec<_> = WEAR.into_iter().filter_map(rose).collect();
@@ -90,17 +90,17 @@ fn says(
     let show = |v: f64| significant(v, 2, Toward::Nearest);
     let mut says = format!("{} from {} to {} ppm", element.says(), show(from), show(to));
     if let Some(rate) = rate {
-        says.push_str(&format!(" ({} in 1000 h)", show(rate)));
+        let _ = write!(says, " ({} in 1000 h)", show(rate));
     }
     if let Some(sign) = sign {
-        says.push_str(&format!(": from {}", sign.from));
+        let _ = write!(says, ": from {}", sign.from);
         for (with, adds) in &sign.with {
             let companions: Vec<&str> = with.split(',').map(str::trim).collect();
             let there = companions
                 .iter()
                 .any(|c| risen.iter().any(|r| r.key() == *c));
             if there {
-                says.push_str(&format!("; with {with} {adds}"));
+                let _ = write!(says, "; with {with} {adds}");
             }
         }
     }

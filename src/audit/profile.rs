@@ -220,7 +220,7 @@ fn usual(
     let nowhere = PointFacts::default();
     let (point, oil) = (suitability.point(&nowhere), suitability.oil(facts));
     let mut best: BTreeMap<Reading, (usize, Expected)> = BTreeMap::new();
-    for rule in rules.new_oil.iter() {
+    for rule in &rules.new_oil {
         let n = rule.when.len();
         let better = best.get(&rule.reading).is_none_or(|(most, _)| n >= *most);
         if !better || suitability.holds(&rule.when, &point, Some(&oil)) != Truth::True {

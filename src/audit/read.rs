@@ -111,7 +111,7 @@ impl TableReader<'_> {
                 _ => self.text(*what, *column, content, &mut bottle, &mut misfits),
             }
         }
-        self.counts(&mut bottle);
+        Self::counts(&mut bottle);
         let beyond = row.cells.iter().find(|c| c.column > self.headings.last);
         let elsewhere = misfits.iter().filter(|m| m.elsewhere).count();
         if beyond.is_some() || elsewhere >= 2 {
@@ -126,13 +126,13 @@ impl TableReader<'_> {
             bottle.unread.push((heading, text));
             self.problems.extend(misfit.problem.map(|mut p| {
                 p.place = self.about.at(row.number, misfit.column);
-                p.within(self.within(&bottle))
+                p.within(Self::within(&bottle))
             }));
         }
         Some(bottle)
     }
 
-    fn within(&self, bottle: &Bottle) -> String {
+    fn within(bottle: &Bottle) -> String {
         let about = if bottle.machine.is_empty() {
             String::new()
         } else {
@@ -167,6 +167,10 @@ impl TableReader<'_> {
         }
     }
 
+    #[expect(
+        clippy::too_many_lines,
+        reason = "one arm for each thing a cell may be"
+    )]
     fn figure(
         &self,
         read: Read,
@@ -382,7 +386,7 @@ impl TableReader<'_> {
     }
 
     /// A code from counts where none is given.
-    fn counts(&self, bottle: &mut Bottle) {
+    fn counts(bottle: &mut Bottle) {
         if bottle.cleanliness.is_none() {
             let count = |r| bottle.figures.exact(r);
             let counts = [Reading::Count4, Reading::Count6, Reading::Count14].map(count);
@@ -412,7 +416,7 @@ impl TableReader<'_> {
             "the cells of this row stand under other headings",
             self.about.at(row.number, column),
         )
-        .within(self.within(bottle))
+        .within(Self::within(bottle))
         .why(why)
         .so("the row is listed, none of its figures is used")
         .write(Write::words(

@@ -88,16 +88,14 @@ pub(super) fn viscosity(change: &Change, limits: &Limits) -> (Option<Level>, Vec
     // without a reading at the temperature of the limit the other one stands in
     if list.is_empty() {
         let moved = change.nu100.or(change.nu40).unwrap_or(0.0);
-        let any = [On::ViscosityChange40, On::ViscosityChange100].into_iter();
-        let limit = any
-            .filter_map(|on| {
-                if moved >= 0.0 {
-                    limits.high(on)
-                } else {
-                    limits.low(on)
-                }
-            })
-            .next();
+        let mut any = [On::ViscosityChange40, On::ViscosityChange100].into_iter();
+        let limit = any.find_map(|on| {
+            if moved >= 0.0 {
+                limits.high(on)
+            } else {
+                limits.low(on)
+            }
+        });
         if let Some(limit) = limit {
             list.push(Against {
                 on: "viscosity change",
@@ -115,6 +113,7 @@ pub(super) fn viscosity(change: &Change, limits: &Limits) -> (Option<Level>, Vec
 }
 
 /// Every other figure that has a limit here.
+#[expect(clippy::too_many_lines, reason = "one paragraph for each figure")]
 pub(super) fn others(figures: &Figures, label: Option<&Profile>, limits: &Limits) -> Vec<Against> {
     let mut list = Vec::new();
     let mut push = |on: On, high: bool, value: f64, says: String| {

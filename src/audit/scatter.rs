@@ -22,7 +22,7 @@ impl Scatter {
     /// From the rules.
     pub fn new(rules: &Rulebook) -> Self {
         let mut tests = BTreeMap::new();
-        for rule in rules.scatter.iter() {
+        for rule in &rules.scatter {
             let share = rule.share.map_or(0.0, crate::quantity::Measure::base);
             let least = rule.least.map_or(0.0, |a| in_unit(rule.reading, a));
             for reading in std::iter::once(&rule.reading).chain(&rule.also) {

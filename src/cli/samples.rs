@@ -55,10 +55,16 @@ impl Session<'_> {
             return Err(self.told(&loaded.sources, &problems));
         }
         self.warn(&loaded.sources, &problems);
+        for problem in problems.sorted() {
+            loaded.problems.push(problem.clone());
+        }
         Ok(found)
     }
 
     /// Tells problems that were found with the bottles.
+    ///
+    /// # Errors
+    /// One of them is an error, or counts as one; all have been told.
     pub fn bottle_problems(&mut self, loaded: &Loaded, list: Vec<Problem>) -> Result<(), Exit> {
         let mut problems = Problems::new();
         for problem in list {

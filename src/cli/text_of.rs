@@ -10,6 +10,7 @@ pub mod mend;
 pub mod need;
 pub mod oil;
 pub mod pool;
+mod pool_lists;
 pub mod running;
 pub mod scatter;
 pub mod weigh;

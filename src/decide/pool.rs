@@ -22,6 +22,7 @@ pub mod reduce;
 pub mod search;
 pub mod solve;
 pub mod step;
+pub mod ties;
 
 pub use case::{Offer, Pick, Place, Terms};
 pub use fence::Fence;

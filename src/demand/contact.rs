@@ -17,7 +17,7 @@ use crate::relation::film::body::{
 use crate::relation::film::groups::{LineLoad, PointLoad};
 use crate::relation::film::roughness::{COMPOSITE, composite};
 use crate::source::place::Whose;
-use crate::trace::{Known, Recorder};
+use crate::trace::{Known, Recorder, StepId};
 
 /// Id of the rule.
 pub const CONTACT_RULE: &str = "contact-film";
@@ -105,32 +105,66 @@ fn push<R: Recorder>(
     film: FilmContact,
     sigma: Known<Length>,
 ) {
-    let (target, whose, source) = asked(cx, part, contact);
+    if film.film_at_all().is_err() {
+        let because = "film: a speed, load or radius is not above zero";
+        cx.undecided(part, End::HotFloor, because);
+        return;
+    }
+    let wanted = match cx.house_film(part, CONTACT_RULE) {
+        Some((height, rule, source)) if contact.film_ratio.is_none() => Asked {
+            height: height.value,
+            step: height.step,
+            says: "film height asked for by the house".to_owned(),
+            rule,
+            whose: Whose::House,
+            source,
+        },
+        _ => by_ratio(cx, part, contact, sigma),
+    };
     let at = cx.hot_at(part);
     let asked_for = FilmDemand {
         contact: film,
-        wanted: Length::from_base(sigma.value.base() * target.base()),
+        wanted: wanted.height,
     };
-    if film.film_at_all().is_err() {
-        cx.undecided(
-            part,
-            End::HotFloor,
-            "film: a speed, load or radius is not above zero",
-        );
-        return;
-    }
     super::contact_facts::add(cx, part, contact, &asked_for, at);
     cx.push(Demand {
         end: End::HotFloor,
         limit: Limit::Film(Box::new(asked_for)),
-        limit_step: Some(sigma.step),
-        rule: CONTACT_RULE.to_owned(),
-        says: format!("film ratio lambda >= {}", target.base()),
-        source,
-        whose,
+        limit_step: Some(wanted.step),
+        rule: wanted.rule,
+        says: wanted.says,
+        source: wanted.source,
+        whose: wanted.whose,
         confidence: Confidence::Medium,
         ..cx.blank(part, at)
     });
+}
+
+/// A film asked for, and by whom.
+struct Asked {
+    height: Length,
+    step: StepId,
+    says: String,
+    rule: String,
+    whose: Whose,
+    source: String,
+}
+
+fn by_ratio<R: Recorder>(
+    cx: &Context<'_, '_, R>,
+    part: &Part,
+    contact: &Contact,
+    sigma: Known<Length>,
+) -> Asked {
+    let (target, whose, source) = asked(cx, part, contact);
+    Asked {
+        height: Length::from_base(sigma.value.base() * target.base()),
+        step: sigma.step,
+        says: format!("film ratio lambda >= {}", target.base()),
+        rule: CONTACT_RULE.to_owned(),
+        whose,
+        source,
+    }
 }
 
 /// Film ratio on the part, by a house rule, or 1.

@@ -223,6 +223,7 @@ impl<R: Recorder> Context<'_, '_, R> {
             only: For::All,
             standing: Standing::Judges,
             from_window: false,
+            heat: None,
         }
     }
 

@@ -68,6 +68,26 @@ pub fn engine<R: Recorder>(cx: &mut Context<'_, '_, R>, part: &Part, drive: &Dri
         let because = format!("hot grade {} is no grade of SAE J300", given.value);
         cx.undecided(part, End::HotFloor, &because);
     }
+    let own = asked
+        .and_then(|g| winter_part(&g.value))
+        .and_then(|name| sae_engine::WINTER.iter().find(|w| w.name == name));
+    if let Some(w) = own {
+        let cranks = w.cranking();
+        let at = AtAmbient::held(cranks.at.base());
+        let says = format!(
+            "cranking viscosity of SAE {} at its own temperature",
+            w.name
+        );
+        let words = (ENGINE_RULE, says, "SAE J300");
+        tested(
+            cx,
+            part,
+            GradeTest::Cranking,
+            cranks.eta,
+            (Some(at), None),
+            words,
+        );
+    }
     let word = asked.map_or(BY_DUTY, |g| word_of(g, "SAE J300"));
     let by_duty = least.and_then(|eta| {
         let enough = |h: &&sae_engine::HotGrade| h.hths_least(winter).base() >= eta.base() - 1e-9;

@@ -19,6 +19,7 @@ use crate::model::part::{JournalBearing, Part};
 use crate::model::rulebook::Confidence;
 use crate::quantity::DynamicViscosity;
 use crate::trace::{Known, Recorder};
+pub use ceiling::HeatCeiling;
 
 /// Id of the rule of the least film.
 pub const FILM_RULE: &str = "journal-film";

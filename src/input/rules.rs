@@ -10,6 +10,8 @@ mod fields;
 mod kinds;
 mod links;
 pub mod listing;
+mod probe;
+pub mod schema;
 
 pub use condition::clause;
 pub use fault::RuleFault;
@@ -41,6 +43,7 @@ pub fn rulebook(layers: &[Layer]) -> Result<Rulebook, Vec<RuleFault>> {
                 seen: &mut seen,
                 faults: &faults,
                 file,
+                probe: None,
             };
             filling.file(&read);
         }
@@ -92,6 +95,8 @@ struct Filling<'a> {
     seen: &'a mut BTreeSet<(&'static str, String)>,
     faults: &'a Faults,
     file: &'a TextFile,
+    /// Who is told which keys are asked for; none when files are read.
+    probe: Option<&'a probe::Probe>,
 }
 
 impl Filling<'_> {

@@ -29,14 +29,15 @@ pub fn schema(kind: FileKind) -> Value {
 
 /// Every schema with the name of its file: `site.schema.json`.
 pub fn files() -> Vec<(String, String)> {
-    FileKind::ALL
-        .iter()
-        .map(|kind| {
-            let mut text = serde_json::to_string_pretty(&schema(*kind)).unwrap_or_default();
-            text.push('\n');
-            (format!("{}.schema.json", kind.word()), text)
-        })
-        .collect()
+    let kinds = FileKind::ALL.iter();
+    let mut all: Vec<(&str, Value)> = kinds.map(|kind| (kind.word(), schema(*kind))).collect();
+    all.push(("rules", super::rules::schema::schema()));
+    let printed = |(word, schema): (&str, Value)| {
+        let mut text = serde_json::to_string_pretty(&schema).unwrap_or_default();
+        text.push('\n');
+        (format!("{word}.schema.json"), text)
+    };
+    all.into_iter().map(printed).collect()
 }
 
 /// The records a kind of file can reach, by name.
@@ -169,7 +170,7 @@ fn shape(form: &Form) -> Value {
         }
         Form::Name(refers) => json!({"type": text, "title": refers.says()}),
         Form::Points | Form::ColdPoints => {
-            json!({"type": "array", "items": {"type": "string"}, "examples": [form.says()]})
+            json!({"type": "array", "minItems": 1, "items": {"type": "string"}, "examples": [form.says()]})
         }
         Form::Grade
         | Form::Cleanliness
@@ -190,7 +191,9 @@ fn shape(form: &Form) -> Value {
             json!({"type": "object", "additionalProperties": {"$ref": "#/definitions/machine"}})
         }
         Form::List(record) => json!({"type": "array", "items": refers_to(record)}),
-        Form::Parts => json!({"type": "array", "items": {"$ref": "#/definitions/any_part"}}),
+        Form::Parts => {
+            json!({"type": "array", "minItems": 1, "items": {"$ref": "#/definitions/any_part"}})
+        }
         Form::Table => json!({"type": "object", "additionalProperties": {"type": text}}),
     }
 }

@@ -1,13 +1,16 @@
 //! What a cell says of a key: a value for the draft, a question, or why it was not understood.
 
+mod volumes;
+
 use super::number::{self, Decimal, Read};
 use super::parsed::{Parsed, Placeholder, parse, placeholder};
 use super::units::Unit;
 use super::yaml;
-use crate::input::value::{At, Ends, Want};
+use crate::input::value::Want;
 use crate::quantity::Kind;
 use crate::quantity::show::{Toward, significant};
 use crate::table::Content;
+use volumes::{gallons, range, weighed};
 
 /// How the cells of a file are read.
 #[derive(Clone, Copy, Debug)]
@@ -34,6 +37,10 @@ pub struct Expect<'a> {
 }
 
 /// A cell read.
+#[expect(
+    clippy::struct_excessive_bools,
+    reason = "each is one thing a cell may say"
+)]
 #[derive(Clone, Debug, Default, PartialEq)]
 pub struct Reading {
     /// What to write behind the key, without whose word it is.
@@ -96,15 +103,18 @@ impl Reading {
     }
 }
 
-/// What stands in a cell as text, or why nothing can be read from it.
-pub fn text_of(content: &Content) -> Result<String, Reading> {
+/// What stands in a cell as text.
+///
+/// # Errors
+/// Why nothing can be read from it: a formula without a value, a fault of the spreadsheet.
+pub fn text_of(content: &Content) -> Result<String, String> {
     match content {
-        Content::NoValue { formula } => Err(Reading::fault(format!(
+        Content::NoValue { formula } => Err(format!(
             "the formula {formula} has no stored value; open the workbook in a spreadsheet program, let it calculate, save it"
-        ))),
-        Content::Fault(fault) => Err(Reading::fault(format!(
+        )),
+        Content::Fault(fault) => Err(format!(
             "the spreadsheet itself could not work it out: {fault}"
-        ))),
+        )),
         other => Ok(other.text()),
     }
 }
@@ -157,7 +167,7 @@ fn usual(kinds: &[Kind], grease: bool, number: &str) -> Option<&'static str> {
 pub fn quantity(content: &Content, expect: &Expect<'_>, rules: &Rules) -> Reading {
     let text = match text_of(content) {
         Ok(text) => text,
-        Err(reading) => return reading,
+        Err(why) => return Reading::fault(why),
     };
     if let Content::Date(_) | Content::Truth(_) = content {
         return Reading::fault(format!(
@@ -180,6 +190,17 @@ pub fn quantity(content: &Content, expect: &Expect<'_>, rules: &Rules) -> Readin
     let Some(parsed) = parse(&text, expect.want.kinds) else {
         return Reading::fault(format!("{} is wanted", expect.want.noun()));
     };
+    // 999 stands for nothing known whatever unit a number format prints behind it; so does 0, but
+    // for a temperature that says its scale.
+    let scale = parsed.unit.is_some() && expect.want.kinds.contains(&Kind::Temperature);
+    let alone = parsed.second.is_none() && parsed.bound.is_none();
+    let none = placeholder(&parsed.number, !scale && !zero_counts(expect.key));
+    if alone && none == Some(Placeholder::Number) {
+        return Reading {
+            read_as: Some("taken as not known".into()),
+            ..Reading::missing()
+        };
+    }
     conclude(&parsed, expect, rules)
 }
 
@@ -197,17 +218,17 @@ fn conclude(parsed: &Parsed, expect: &Expect<'_>, rules: &Rules) -> Reading {
     }
     let number = |token: &str| match number::read(token, rules.decimal) {
         Read::Is(number) => Ok(number),
-        Read::Either(a, b) => Err(Reading::fault(format!(
+        Read::Either(a, b) => Err(format!(
             "{a} or {b}? No other cell tells decimal point from comma; state it with --decimal"
-        ))),
+        )),
     };
     let first = match number(&parsed.number) {
         Ok(n) => n,
-        Err(r) => return r,
+        Err(why) => return Reading::fault(why),
     };
     let second = match parsed.second.as_deref().map(number).transpose() {
         Ok(n) => n,
-        Err(r) => return r,
+        Err(why) => return Reading::fault(why),
     };
     let mut reading = in_unit(parsed, expect, rules, (first, second));
     reading.each = parsed.each;
@@ -456,105 +477,6 @@ fn bare(
     reading
 }
 
-/// Gallons: both, unless the file states which.
-fn gallons(expect: &Expect<'_>, rules: &Rules, first: &str, second: Option<&str>) -> Reading {
-    if !expect
-        .want
-        .kinds
-        .iter()
-        .any(|k| matches!(k, Kind::Volume | Kind::VolumePerYear))
-    {
-        return Reading::fault(format!("gal is a volume, {} is wanted", expect.want.noun()));
-    }
-    let yearly = expect.want.kinds[0] == Kind::VolumePerYear;
-    let tail = if yearly { " a year" } else { "" };
-    if let Some(gallon) = rules.gallon
-        && second.is_none()
-    {
-        return Reading {
-            value: Some(format!("{first} {gallon}{tail}")),
-            remark: Some(format!("{first} gal, the map states {gallon}")),
-            candidates: to_base(Kind::Volume, gallon, first)
-                .map(|b| vec![(format!("{first} {gallon}"), b)])
-                .unwrap_or_default(),
-            ..Reading::default()
-        };
-    }
-    let litres = |n: &str, unit: &str| to_base(Kind::Volume, unit, n).map(|m3| m3 * 1e3);
-    let (Some(us), Some(uk)) = (
-        litres(first, "gal(US)"),
-        litres(second.unwrap_or(first), "gal(UK)"),
-    ) else {
-        return Reading::fault("the number is not finite");
-    };
-    let (lo, hi) = (
-        significant(us, 3, Toward::Nearest),
-        significant(uk, 3, Toward::Nearest),
-    );
-    let which = format!("{first} gal: US ({lo} L) or UK ({hi} L)?");
-    Reading {
-        value: Some(format!(
-            "unknown ({lo} .. {hi} L{tail}), ask {}",
-            yaml::remark(&which)
-        )),
-        ask: Some(which),
-        candidates: vec![
-            (format!("{first} gal(US)"), us * 1e-3),
-            (format!("{first} gal(UK)"), uk * 1e-3),
-        ],
-        ..Reading::default()
-    }
-}
-
-/// A mass of oil as a volume.
-fn weighed(expect: &Expect<'_>, rules: &Rules, first: &str, unit: &'static str) -> Reading {
-    let Some(kg) = to_base(Kind::Mass, unit, first) else {
-        return Reading::fault("the number is not finite");
-    };
-    let rho = rules.density_kg_m3;
-    let litres = significant(kg / rho * 1e3, 3, Toward::Nearest);
-    Reading {
-        value: Some(format!("{litres} L")),
-        assumed: true,
-        remark: Some(format!("register: {first} {unit}, at {rho} kg/m3")),
-        read_as: Some(format!(
-            "{first} {unit} of oil is about {litres} L at {rho} kg/m3"
-        )),
-        ask: Some(format!(
-            "{first} {unit} stands for {}: how many litres?",
-            expect.key
-        )),
-        candidates: vec![(format!("{litres} L"), kg / rho)],
-        ..Reading::default()
-    }
-}
-
-/// Two numbers: a range where the key takes one, else not known within it.
-fn range(expect: &Expect<'_>, (kind, unit): (Kind, &'static str), (a, b): (&str, &str)) -> Reading {
-    let (Some(low), Some(high)) = (to_base(kind, unit, a), to_base(kind, unit, b)) else {
-        return Reading::fault("the number is not finite");
-    };
-    if low > high {
-        return Reading::fault(format!("{a} to {b} runs downwards"));
-    }
-    let both = format!("{a} .. {b} {unit}").trim_end().to_owned();
-    if expect.want.ends == Ends::Range {
-        return Reading {
-            value: Some(both),
-            ..Reading::default()
-        };
-    }
-    if !expect.want.unknown || expect.want.at == At::Must {
-        return Reading::fault(format!("a range, {} is wanted", expect.want.noun()));
-    }
-    let which = format!("{a} to {b} {unit} in the register: which holds?");
-    Reading {
-        value: Some(format!("unknown ({both}), ask {}", yaml::remark(&which))),
-        ask: Some(which),
-        ..Reading::default()
-    }
-}
-
 /// A number in a unit of a kind, base units.
 pub fn to_base(kind: Kind, unit: &str, number: &str) -> Option<f64> {
     let value: f64 = number.parse().ok()?;
@@ -563,81 +485,4 @@ pub fn to_base(kind: Kind, unit: &str, number: &str) -> Option<f64> {
 }
 
 #[cfg(test)]
-mod tests {
-    use super::*;
-
-    const FILL: Want = Want::stated(&[Kind::Volume, Kind::Mass]);
-    const SUMP: Want = Want::stated(&[Kind::Temperature]).ends(Ends::Either);
-
-    fn read(key: &str, want: &Want, text: &str, unit: Option<Unit>) -> Reading {
-        let expect = Expect {
-            key,
-            want,
-            unit,
-            grease: false,
-        };
-        let rules = Rules {
-            decimal: Some(Decimal::Comma),
-            gallon: None,
-            density_kg_m3: 890.0,
-        };
-        quantity(&Content::Text(text.into()), &expect, &rules)
-    }
-
-    fn value(key: &str, want: &Want, text: &str) -> String {
-        let r = read(key, want, text, None);
-        r.written(text).unwrap_or_else(|| format!("{r:?}"))
-    }
-
-    #[test]
-    fn fills_of_a_dirty_register() {
-        // 3.785411784 and 4.54609 L a gallon: NIST SP 811 table B.8 and the UK Units of
-        // Measurement Regulations 1995
-        assert_eq!(
-            value("fill", &FILL, "15 gal"),
-            "unknown (56.8 .. 68.2 L), ask \"15 gal: US (56.8 L) or UK (68.2 L)?\""
-        );
-        assert_eq!(value("fill", &FILL, "68 l"), "68 L, register \"68 l\"");
-        assert_eq!(
-            value("fill", &FILL, "1.200"),
-            "1200 L, assumed \"register: 1200 without a unit\""
-        );
-        assert_eq!(
-            value("fill", &FILL, "1,2 L ea"),
-            "1.2 L, register \"1,2 L ea\""
-        );
-        // 9 kg at 890 kg/m3 is 10.1 L
-        assert_eq!(
-            value("fill", &FILL, "9 kg"),
-            "10.1 L, assumed \"register: 9 kg, at 890 kg/m3\""
-        );
-        assert!(read("fill", &FILL, "999", None).missing);
-        assert!(read("fill", &FILL, "see plate", None).fault.is_some());
-    }
-
-    #[test]
-    fn temperatures_are_told_by_their_unit_alone() {
-        assert_eq!(value("sump", &SUMP, "113F"), "113 degF, register \"113F\"");
-        assert_eq!(
-            value("sump", &SUMP, "52,0"),
-            "52.0 degC, assumed \"register: 52.0 without a unit\""
-        );
-        let r = read("sump", &SUMP, "140", None);
-        assert_eq!(r.value.as_deref(), Some("140 degF"));
-        assert!(r.assumed && r.ask.is_some(), "{r:?}");
-        let r = read(
-            "sump",
-            &SUMP,
-            "140",
-            Some(Unit::Of(Kind::Temperature, "degC")),
-        );
-        assert!(r.value.is_none() && r.ask.is_some(), "{r:?}");
-        let r = read("sump", &SUMP, "92 (discharge)", None);
-        assert!(r.value.is_none() && r.ask.is_some(), "{r:?}");
-        let r = read("start", &SUMP, "-15°", None);
-        assert_eq!(r.value.as_deref(), Some("-15 degC"));
-        assert!(r.assumed && r.fault.is_some(), "{r:?}");
-        assert!(read("sump", &SUMP, "0", None).missing);
-        assert!(!read("start", &SUMP, "0", None).missing);
-    }
-}
+mod tests;

@@ -5,9 +5,12 @@
 //! changed and nobody touched is taken over; a key changed by hand stays as it is, and what the
 //! register now says is told.
 
+mod records;
+
 use super::yaml::scalar;
-use crate::source::yaml::{Entry, Node, NodeKind, read};
-use crate::source::{FileId, Span};
+use crate::source::Span;
+use crate::source::yaml::Entry;
+use records::{Path, Read};
 use std::collections::BTreeMap;
 
 /// What happened to a key or record.
@@ -72,116 +75,6 @@ pub enum Unmerged {
     /// The changes cannot be written into the file as it is written.
     #[error("the differences cannot be written into this file as it is laid out")]
     Layout,
-}
-
-/// A file as records with keys.
-struct Read<'t> {
-    text: &'t str,
-    root: Vec<Entry>,
-}
-
-/// Path of a key: section, record, key. Keys of the top have no record.
-type Path = (String, String, String);
-
-impl<'t> Read<'t> {
-    fn new(text: &'t str, what: &'static str) -> Result<Self, Unmerged> {
-        let gated = read(FileId(0), text);
-        let root = match gated.root.map(|r| r.kind) {
-            Some(NodeKind::Map(entries)) if gated.faults.is_empty() => entries,
-            None if gated.faults.is_empty() => Vec::new(),
-            _ => return Err(Unmerged::NotRead(what)),
-        };
-        Ok(Self { text, root })
-    }
-
-    /// Sections that hold records by name; an oil file is one such section itself.
-    fn sections(&self) -> Vec<(String, &[Entry])> {
-        if self.is_oils() {
-            return vec![(String::new(), self.root.as_slice())];
-        }
-        let named = |e: &&Entry| matches!(e.key.text.as_str(), "machines" | "areas");
-        self.root
-            .iter()
-            .filter(named)
-            .map(|e| (e.key.text.clone(), e.value.entries().unwrap_or(&[])))
-            .collect()
-    }
-
-    fn is_oils(&self) -> bool {
-        let file = self.root.iter().find(|e| e.key.text == "file");
-        file.and_then(|e| e.value.text())
-            .is_some_and(|t| t.trim().starts_with("oils"))
-    }
-
-    /// Records in order: section and name.
-    fn records(&self) -> Vec<(String, String)> {
-        let mut out = Vec::new();
-        for (section, entries) in self.sections() {
-            for e in entries.iter().filter(|e| e.key.text != "file") {
-                out.push((section.clone(), e.key.text.clone()));
-            }
-        }
-        out
-    }
-
-    fn record(&self, section: &str, name: &str) -> Option<&Entry> {
-        let (_, entries) = self.sections().into_iter().find(|(s, _)| s == section)?;
-        entries.iter().find(|e| e.key.text == name)
-    }
-
-    fn key(&self, (section, record, key): &Path) -> Option<&Entry> {
-        let entries = self.record(section, record)?.value.entries()?;
-        entries.iter().find(|e| e.key.text == *key)
-    }
-
-    /// Every key of every record with its value, told without its layout.
-    fn values(&self) -> BTreeMap<Path, String> {
-        let mut out = BTreeMap::new();
-        for (section, entries) in self.sections() {
-            for record in entries {
-                for entry in record.value.entries().unwrap_or(&[]) {
-                    let path = (
-                        section.clone(),
-                        record.key.text.clone(),
-                        entry.key.text.clone(),
-                    );
-                    out.insert(path, told(&entry.value));
-                }
-            }
-        }
-        out
-    }
-
-    fn slice(&self, span: Span) -> &'t str {
-        self.text
-            .get(span.start as usize..span.end as usize)
-            .unwrap_or("")
-    }
-
-    /// Column of a byte.
-    fn column(&self, byte: u32) -> usize {
-        let before = self.text.get(..byte as usize).unwrap_or("");
-        before.len() - before.rfind('\n').map_or(0, |at| at + 1)
-    }
-}
-
-/// A value without its layout.
-fn told(node: &Node) -> String {
-    match &node.kind {
-        NodeKind::Scalar(s) => s.text.trim().to_owned(),
-        NodeKind::Seq(items) => format!(
-            "[{}]",
-            items.iter().map(told).collect::<Vec<_>>().join(", ")
-        ),
-        NodeKind::Map(entries) => {
-            let keys: Vec<String> = entries
-                .iter()
-                .map(|e| format!("{}: {}", e.key.text, told(&e.value)))
-                .collect();
-            format!("{{ {} }}", keys.join(", "))
-        }
-        NodeKind::Refused => String::new(),
-    }
 }
 
 /// A change of text: bytes of the file in use and what comes in their place.
@@ -519,114 +412,4 @@ fn moved(block: &str, from: usize, to: usize) -> String {
 }
 
 #[cfg(test)]
-mod tests {
-    use super::*;
-
-    const FIRST: &str = "file: site 1\n\nmachines:\n  A-1:\n    register row: 2\n    fill: 46 L, register\n    oil now: unknown\n    parts:\n      - component: gear_worm\n\n  B-1:\n    fill: 3 L, register\n    parts:\n      - rolling bearing: 22220\n";
-
-    #[test]
-    fn nothing_new_changes_nothing() {
-        let merged = merge(Some(FIRST), FIRST, FIRST).expect("reads");
-        assert_eq!(merged.text, FIRST);
-        assert!(merged.changes.is_empty() && merged.by_hand == 0);
-    }
-
-    #[test]
-    fn hand_edits_stay_and_the_register_moves_the_rest() {
-        let hand = FIRST
-            .replace(
-                "oil now: unknown",
-                "oil now: SG-220   # drum label, 2026-07",
-            )
-            .replace("22220\n", "22222   # seen\n        speed: 236 r/min\n");
-        let new = FIRST.replace("46 L", "48 L").replace(
-            "  B-1:\n    fill: 3 L, register\n",
-            "  B-1:\n    fill: 3 L, register\n    seals: NBR\n",
-        ) + "\n  C-1:\n    fill: 9 L, register\n    parts:\n      - component: gear_worm\n";
-        let merged = merge(Some(FIRST), &hand, &new).expect("merges");
-        assert!(
-            merged.text.contains("fill: 48 L, register\n"),
-            "{}",
-            merged.text
-        );
-        assert!(
-            merged
-                .text
-                .contains("oil now: SG-220   # drum label, 2026-07"),
-            "{}",
-            merged.text
-        );
-        assert!(merged.text.contains("22222   # seen"), "{}", merged.text);
-        assert!(
-            merged.text.contains("    seals: NBR\n    parts:"),
-            "{}",
-            merged.text
-        );
-        assert!(
-            merged.text.contains("\n  C-1:\n    fill: 9 L"),
-            "{}",
-            merged.text
-        );
-        let told: Vec<(What, &str, Option<&str>)> = merged
-            .changes
-            .iter()
-            .map(|c| (c.what, c.record.as_str(), c.key.as_deref()))
-            .collect();
-        assert_eq!(
-            told,
-            [
-                (What::Added, "C-1", None),
-                (What::Changed, "A-1", Some("fill")),
-                (What::Added, "B-1", Some("seals")),
-            ]
-        );
-        assert_eq!(merged.by_hand, 2);
-    }
-
-    #[test]
-    fn a_key_changed_on_both_sides_keeps_the_hand() {
-        let hand = FIRST.replace("46 L, register", "50 L, measured 2026-07-01");
-        let new = FIRST.replace("46 L", "48 L");
-        let merged = merge(Some(FIRST), &hand, &new).expect("merges");
-        assert_eq!(merged.text, hand);
-        assert_eq!(merged.changes[0].what, What::Both);
-        assert_eq!(merged.changes[0].now.as_deref(), Some("48 L, register"));
-    }
-
-    #[test]
-    fn what_leaves_the_register_is_told_and_a_key_goes() {
-        let new = FIRST
-            .replace("    fill: 46 L, register\n", "")
-            .split("\n  B-1:")
-            .next()
-            .map(str::to_owned)
-            .expect("a part");
-        let merged = merge(Some(FIRST), FIRST, &new).expect("merges");
-        assert!(!merged.text.contains("46 L"));
-        assert!(
-            merged.text.contains("B-1"),
-            "a machine is not deleted: {}",
-            merged.text
-        );
-        assert!(
-            merged
-                .changes
-                .iter()
-                .any(|c| c.what == What::Gone && c.record == "B-1" && c.key.is_none())
-        );
-        assert!(
-            merged
-                .changes
-                .iter()
-                .any(|c| c.what == What::Gone && c.key.as_deref() == Some("fill"))
-        );
-    }
-
-    #[test]
-    fn without_a_last_draft_what_stands_is_kept() {
-        let hand = FIRST.replace("46 L", "50 L");
-        let merged = merge(None, &hand, FIRST).expect("merges");
-        assert_eq!(merged.text, hand);
-        assert_eq!(merged.changes.len(), 1);
-    }
-}
+mod tests;

@@ -25,6 +25,11 @@ const COMPONENTS: &[(&[&str], &str)] = &[
     (&["power pack"], "hyd_any_general"),
     (&["chain"], "chain_roller_drip_bath"),
     (&["open gear"], "gear_open_bath"),
+    (&["getriebe"], "gear_parallel_bevel"),
+    (&["réducteur"], "gear_parallel_bevel"),
+    (&["hydraulik"], "hyd_any_general"),
+    (&["pumpe"], "pump_bearing_bath"),
+    (&["ventilator"], "fan_bearing_bath"),
     (&["gearbox"], "gear_parallel_bevel"),
     (&["gear box"], "gear_parallel_bevel"),
     (&["gearmotor"], "gear_parallel_bevel"),
@@ -62,7 +67,8 @@ pub fn component(description: &str, tag: &str, lubricant: Option<&Lubricant>) ->
         let greased = *id == "motor_grease_brg";
         let oiled_bearing = matches!(*id, "fan_bearing_bath" | "pump_bearing_bath");
         // A motor with oil and a fan with grease are other points than the rules' own.
-        if !(greased && lubricant.is_some() && !grease) && !(oiled_bearing && grease) {
+        let other_point = (oiled_bearing && grease) || (greased && lubricant.is_some() && !grease);
+        if !other_point {
             return Some(Taken {
                 id,
                 by_lubricant: false,

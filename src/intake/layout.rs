@@ -1,8 +1,6 @@
 //! Where a table stands in a file: its sheet, its headings, its columns.
 
-use super::finding::letters;
 use super::headings::{Guess, apart, guess};
-use super::number::{Decimal, evidence, split};
 use super::target::{Makes, Target};
 use super::units::{Unit, unit};
 use crate::table::{Book, Content, Sheet};
@@ -32,6 +30,8 @@ pub struct Column {
     pub samples: Vec<String>,
     /// Whether it is hidden.
     pub hidden: bool,
+    /// The heading of the column that already holds what this one seems to hold.
+    pub twice: Option<String>,
 }
 
 /// A table found.
@@ -231,6 +231,7 @@ fn column(
         unit: found,
         samples,
         hidden: sheet.hidden_columns.contains(&number),
+        twice: None,
     }
 }
 
@@ -245,11 +246,13 @@ fn once(columns: &mut [Column], makes: Makes) {
         }
         match holder.get(&columns[i].target.word()).copied() {
             Some(held) if columns[i].sure > columns[held].sure => {
+                columns[held].twice = Some(columns[i].heading.clone());
                 columns[held].target = Target::Note;
                 columns[held].sure = 0;
                 holder.insert(columns[i].target.word(), i);
             }
-            Some(_) => {
+            Some(held) => {
+                columns[i].twice = Some(columns[held].heading.clone());
                 columns[i].target = Target::Note;
                 columns[i].sure = 0;
             }
@@ -266,127 +269,4 @@ fn once(columns: &mut [Column], makes: Makes) {
             columns[*i].target = Target::Name;
         }
     }
-}
-
-/// The rule of decimals of a table, and the cell that shows it.
-#[derive(Clone, Debug, PartialEq, Eq)]
-pub enum Decimals {
-    /// The user states it.
-    Stated(Decimal),
-    /// A cell can only be read this way.
-    Found {
-        /// The rule.
-        rule: Decimal,
-        /// The cell.
-        cell: String,
-        /// What stands in it.
-        text: String,
-        /// How many cells show it.
-        cells: usize,
-    },
-    /// Cells contradict each other; each is read by itself.
-    Mixed {
-        /// A cell with a decimal point.
-        point: String,
-        /// A cell with a decimal comma.
-        comma: String,
-    },
-    /// No cell shows it.
-    Nothing,
-}
-
-impl Decimals {
-    /// The rule, where there is one.
-    pub fn rule(&self) -> Option<Decimal> {
-        match self {
-            Self::Stated(rule) | Self::Found { rule, .. } => Some(*rule),
-            Self::Mixed { .. } | Self::Nothing => None,
-        }
-    }
-
-    /// In words.
-    pub fn says(&self) -> String {
-        match self {
-            Self::Stated(rule) => format!("decimal {}, as stated", rule.word()),
-            Self::Found {
-                rule,
-                cell,
-                text,
-                cells,
-            } => {
-                let n = if *cells == 1 {
-                    "1 cell".into()
-                } else {
-                    format!("{cells} cells")
-                };
-                format!(
-                    "decimal {}, found from {n}, the first {cell} \"{text}\"",
-                    rule.word()
-                )
-            }
-            Self::Mixed { point, comma } => {
-                format!(
-                    "decimal point and comma both occur ({point}, {comma}); numbers either rule can read are asked about"
-                )
-            }
-            Self::Nothing => "no cell tells decimal point from comma".into(),
-        }
-    }
-}
-
-/// Finds the rule of decimals from the texts of the columns that hold quantities.
-pub fn decimals(sheet: &Sheet, layout: &Layout) -> Decimals {
-    let below = layout.unit_row.unwrap_or(layout.heading_row);
-    let mut found: BTreeMap<&'static str, (Decimal, String, String, usize)> = BTreeMap::new();
-    for column in layout
-        .columns
-        .iter()
-        .filter(|c| !c.target.kinds().is_empty())
-    {
-        for row in sheet.rows.iter().filter(|r| r.number > below) {
-            let Some(Content::Text(text)) = row.at(column.number) else {
-                continue;
-            };
-            let Some(parsed) = super::parsed::parse(text, column.target.kinds()) else {
-                continue;
-            };
-            for token in std::iter::once(&parsed.number).chain(&parsed.second) {
-                if let Some(rule) = evidence(token).filter(|_| split(token).is_some()) {
-                    let cell = format!("{}{}", letters(column.number), row.number);
-                    let entry =
-                        found
-                            .entry(rule.word())
-                            .or_insert((rule, cell.clone(), text.clone(), 0));
-                    entry.3 += 1;
-                    // The first cell in the order of rows is the one shown.
-                    let earlier = row_of(&entry.1) > row.number;
-                    if earlier {
-                        entry.1 = cell;
-                        entry.2.clone_from(text);
-                    }
-                }
-            }
-        }
-    }
-    match (found.get("point"), found.get("comma")) {
-        (Some(p), Some(c)) => Decimals::Mixed {
-            point: format!("{} \"{}\"", p.1, p.2),
-            comma: format!("{} \"{}\"", c.1, c.2),
-        },
-        (Some((rule, cell, text, cells)), None) | (None, Some((rule, cell, text, cells))) => {
-            Decimals::Found {
-                rule: *rule,
-                cell: cell.clone(),
-                text: text.clone(),
-                cells: *cells,
-            }
-        }
-        (None, None) => Decimals::Nothing,
-    }
-}
-
-fn row_of(cell: &str) -> u32 {
-    cell.trim_start_matches(|c: char| c.is_ascii_alphabetic())
-        .parse()
-        .unwrap_or(0)
 }

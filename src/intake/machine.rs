@@ -1,19 +1,21 @@
 //! One row of a register as a machine: its keys, its parts, its notes.
 
+mod of_parts;
+mod oil;
+mod parts;
+
 use super::cell::{Expect, Reading, quantity, text_of};
-use super::describe::{component, is_food, is_geared, is_motor_speed};
 use super::draft::Record;
-use super::finding::{Finding, Kind};
+use super::finding::{Finding, Kind, letters};
 use super::layout::Column;
 use super::lubricant::Lubricant;
 use super::site::Reader;
 use super::table::Line;
 use super::target::Target;
-use super::{lubricant, words};
+use super::words;
 use crate::input::keys::Form;
 use crate::input::value::Want;
 use crate::quantity::Kind as Measure;
-use crate::relation::bearing::designation::{DimensionTable, read as designated};
 use crate::table::Content;
 
 const TEMPERATURE: Want = Want::stated(&[Measure::Temperature]);
@@ -94,6 +96,13 @@ impl<'r, 'a> RowReader<'r, 'a> {
                 }
             }
         }
+        for comment in line.comments() {
+            let cell = format!("{}{}", letters(comment.column), comment.row);
+            self.machine
+                .record
+                .notes
+                .push(format!("{cell} comment: {}", comment.text));
+        }
         self.join_ambient();
         self.parts();
         self.facts();
@@ -139,10 +148,10 @@ impl<'r, 'a> RowReader<'r, 'a> {
             Target::Path | Target::AsWritten | Target::FileKind => {}
             Target::Note | Target::ViscosityAt(_) => self.note(column, content),
             Target::AmbientLow => {
-                self.ambient[0] = self.quantity(column, content, "ambient low", &TEMPERATURE)
+                self.ambient[0] = self.quantity(column, content, "ambient low", &TEMPERATURE);
             }
             Target::AmbientHigh => {
-                self.ambient[1] = self.quantity(column, content, "ambient high", &TEMPERATURE)
+                self.ambient[1] = self.quantity(column, content, "ambient high", &TEMPERATURE);
             }
             Target::MotorSpeed => self.motor_speed(column, content),
             Target::Speed => {
@@ -172,8 +181,7 @@ impl<'r, 'a> RowReader<'r, 'a> {
                 };
                 self.machine.record.notes.push(format!("{heading}: {text}"));
             }
-            Err(reading) => {
-                let why = reading.fault.unwrap_or_default();
+            Err(why) => {
                 self.say(Kind::NotUnderstood, Some(column), &content.text(), why);
             }
         }
@@ -255,8 +263,8 @@ impl<'r, 'a> RowReader<'r, 'a> {
     ) -> Option<(Reading, String)> {
         let text = match text_of(content) {
             Ok(text) => text,
-            Err(reading) => {
-                self.tell(column, content, reading);
+            Err(why) => {
+                self.tell(column, content, Reading::fault(why));
                 return None;
             }
         };
@@ -283,112 +291,6 @@ impl<'r, 'a> RowReader<'r, 'a> {
         self.machine.record.set(name, written);
     }
 
-    fn motor_speed(&mut self, column: &Column, content: &Content) {
-        if let Some(reading) = self.quantity(column, content, "motor speed", &SPEED) {
-            let value = reading.value.unwrap_or_default();
-            let says = format!(
-                "the motor runs at {value}: what is the ratio, and how fast does the driven shaft turn?"
-            );
-            self.say(Kind::Question, Some(column), &content.text(), says);
-        }
-    }
-
-    fn bearing(&mut self, column: &Column, content: &Content) {
-        let text = match text_of(content) {
-            Ok(text) => text,
-            Err(reading) => {
-                self.tell(column, content, reading);
-                return;
-            }
-        };
-        let form = Form::Text;
-        let Some(reading) = words::read(&form, &text) else {
-            return;
-        };
-        let Some(reading) = self.tell(column, content, reading) else {
-            return;
-        };
-        let value = reading.value.unwrap_or_default();
-        let table = DimensionTable::built_in();
-        let whole = [value.clone()];
-        let apart: Vec<String> = value
-            .split(['/', ',', ';', '+'])
-            .map(|t| t.trim().to_owned())
-            .collect();
-        let known = |list: &[String]| list.iter().all(|t| designated(table, t).is_ok());
-        let list: &[String] = if !known(&whole) && apart.len() > 1 && known(&apart) {
-            &apart
-        } else {
-            &whole
-        };
-        for one in list {
-            match designated(table, one) {
-                Ok(_) => self.bearings.push((one.clone(), String::new())),
-                Err(why) => {
-                    self.say(Kind::NotUnderstood, Some(column), &text, why.to_string());
-                    self.bearings.push((
-                        "{ bore: unknown, outside: unknown }".into(),
-                        format!("bearing {one}"),
-                    ));
-                }
-            }
-        }
-    }
-
-    fn part(
-        &mut self,
-        column: &'r Column,
-        content: &Content,
-        part: &'static str,
-        key: &'static str,
-        form: &Form,
-    ) {
-        let text = content.text();
-        let written = match form {
-            Form::Quantity(want) => {
-                let word = format!("{part}: {key}");
-                self.quantity(column, content, &word, want)
-                    .and_then(|r| r.written(&text))
-            }
-            Form::Component => {
-                self.component_named(column, &text);
-                return;
-            }
-            form => self.words(column, content, form).and_then(|(r, text)| {
-                if matches!(form, Form::Text | Form::Label | Form::Whole) {
-                    r.value
-                } else {
-                    r.written(&text)
-                }
-            }),
-        };
-        if let Some(written) = written {
-            self.loose.push(Loose {
-                column,
-                part,
-                key,
-                written,
-            });
-        }
-    }
-
-    fn component_named(&mut self, column: &'r Column, text: &str) {
-        match self.reader.component(text) {
-            Some(id) => self.loose.push(Loose {
-                column,
-                part: "component",
-                key: "component",
-                written: id,
-            }),
-            None => {
-                self.machine
-                    .record
-                    .notes
-                    .push(format!("{}: {text}", column.heading));
-            }
-        }
-    }
-
     fn join_ambient(&mut self) {
         let [low, high] = std::mem::take(&mut self.ambient);
         let value = |r: &Option<Reading>| r.as_ref().and_then(|r| r.value.clone());
@@ -411,254 +313,6 @@ impl<'r, 'a> RowReader<'r, 'a> {
                 self.say(Kind::Question, None, "", says);
             }
             (None, None) => {}
-        }
-    }
-
-    fn lubricant(&mut self, text: Option<&str>) {
-        let column = self.reader.oil_column();
-        let Some(text) = text.filter(|t| !t.trim().is_empty()) else {
-            self.machine.record.set("oil now", "unknown");
-            return;
-        };
-        let column = column.as_ref();
-        if let Some(id) = self.reader.oil_in_list(text) {
-            self.machine.record.set("oil now", id);
-            return;
-        }
-        self.machine.record.set("oil now", "unknown");
-        let empty = words::read(&Form::Text, text).is_none_or(|r| r.value.is_none());
-        if empty {
-            let elsewhere = words::read(&Form::Text, text).is_some_and(|r| r.fault.is_some());
-            self.reader.missing += 1;
-            if elsewhere {
-                self.say(
-                    Kind::NotUnderstood,
-                    column,
-                    text,
-                    "unknown; it stands elsewhere",
-                );
-            }
-            return;
-        }
-        let read = lubricant::read(text);
-        let says = read.says();
-        let understood = if says.is_empty() {
-            String::new()
-        } else {
-            format!("{says}; ")
-        };
-        if read.doubtful {
-            self.say(
-                Kind::NotUnderstood,
-                column,
-                text,
-                format!(
-                    "{understood}the register doubts it itself: kept as note; oil now: unknown"
-                ),
-            );
-        } else if says.is_empty() {
-            self.say(
-                Kind::NotUnderstood,
-                column,
-                text,
-                "kept as note; oil now: unknown; no oil of the list has this name or id",
-            );
-        } else if read.viscosity_for_name {
-            self.say(
-                Kind::Question,
-                column,
-                text,
-                format!("a viscosity stands in place of a name: {says}; which oil is it?"),
-            );
-        } else if read.or_equivalent {
-            self.say(
-                Kind::Question,
-                column,
-                text,
-                format!("{says}; \"or equivalent\" is no name: which oil is in it?"),
-            );
-        } else {
-            self.machine
-                .record
-                .notes
-                .push(format!("oil in the register \"{text}\": {says}"));
-            self.say(
-                Kind::ReadAs,
-                column,
-                text,
-                format!("{says}; oil now: unknown until an oil of the list is named"),
-            );
-        }
-        self.oil = Some(read);
-    }
-
-    fn facts(&mut self) {
-        let texts: Vec<String> = self.machine.record.notes.clone();
-        let description = self.machine.record.get("name").unwrap_or("").to_owned();
-        let mut all: Vec<&str> = texts
-            .iter()
-            .filter(|t| !t.starts_with("oil in the register"))
-            .map(String::as_str)
-            .collect();
-        all.push(&description);
-        if is_food(&all)
-            && self.machine.record.get("food zone").is_none()
-            && self.machine.record.get("food class").is_none()
-        {
-            self.machine.record.set(
-                "food zone",
-                format!("yes, register \"row {}\"", self.line.number),
-            );
-            self.say(
-                Kind::Question,
-                None,
-                "",
-                "the row speaks of food, and no food class is given: is H1 required?",
-            );
-        }
-    }
-
-    /// The parts of the row: what is stated of them, else what the description says.
-    fn parts(&mut self) {
-        let description = self.machine.record.get("name").unwrap_or("").to_owned();
-        let mut parts: Vec<Vec<(String, String)>> = Vec::new();
-        for (designation, label) in std::mem::take(&mut self.bearings) {
-            let mut part = vec![("rolling bearing".to_owned(), designation)];
-            if !label.is_empty() {
-                part.push(("name".into(), label));
-            }
-            parts.push(part);
-        }
-        self.speeds(&mut parts, &description);
-        self.stated_parts(&mut parts, &description);
-        if parts.is_empty() {
-            parts.push(self.described(&description));
-        }
-        for loose in std::mem::take(&mut self.loose) {
-            self.late(&mut parts, loose);
-        }
-        self.machine.record.parts = parts;
-    }
-
-    fn speeds(&mut self, parts: &mut [Vec<(String, String)>], description: &str) {
-        let Some((reading, column, text)) = self.speed.take() else {
-            return;
-        };
-        let rpm = reading.candidates.first().map(|(_, base)| {
-            crate::quantity::convert::to_rpm(crate::quantity::Measure::from_base(*base))
-        });
-        let motor = rpm.is_some_and(is_motor_speed) && is_geared(description, &self.name);
-        if motor {
-            let says = format!(
-                "{} is the speed of a motor; a machine such as this is driven through a gear: is it the speed of the driven shaft?",
-                reading.value.clone().unwrap_or_default()
-            );
-            self.say(Kind::Question, Some(column), &text, says);
-        }
-        let Some(written) = reading.written(&text) else {
-            return;
-        };
-        if parts.is_empty() {
-            if !motor {
-                let says =
-                    "no bearing is named that this speed could belong to: of which shaft is it?";
-                self.say(Kind::Question, Some(column), &text, says);
-            }
-            return;
-        }
-        for part in parts {
-            part.push(("speed".into(), written.clone()));
-        }
-    }
-
-    /// Gears, components and others whose keys have columns of their own.
-    fn stated_parts(&mut self, parts: &mut Vec<Vec<(String, String)>>, description: &str) {
-        let loose = std::mem::take(&mut self.loose);
-        let kinds: Vec<&'static str> = loose.iter().fold(Vec::new(), |mut kinds, l| {
-            if !kinds.contains(&l.part) {
-                kinds.push(l.part);
-            }
-            kinds
-        });
-        let geared = is_geared(description, &self.name);
-        let mut rest = Vec::new();
-        let mut by_kind: Vec<(&'static str, Vec<Loose<'r>>)> =
-            kinds.iter().map(|k| (*k, Vec::new())).collect();
-        for one in loose {
-            if let Some((_, list)) = by_kind.iter_mut().find(|(k, _)| *k == one.part) {
-                list.push(one);
-            }
-        }
-        for (kind, list) in by_kind {
-            let first = list
-                .iter()
-                .find(|l| l.key == kind)
-                .map(|l| l.written.clone());
-            let proves = |l: &Loose<'_>| !matches!(l.key, "power" | "speed" | "pressure" | "load");
-            let stands = match kind {
-                "component" => first.is_some(),
-                "rolling bearing" => first.is_some() || !parts.is_empty(),
-                _ => list.iter().any(proves) || (geared && kind == "gear mesh" && list.len() > 1),
-            };
-            if !stands {
-                rest.extend(list);
-                continue;
-            }
-            if kind == "rolling bearing" && first.is_none() {
-                for part in parts.iter_mut().filter(|p| p[0].0 == "rolling bearing") {
-                    part.extend(list.iter().map(|l| (l.key.to_owned(), l.written.clone())));
-                }
-                continue;
-            }
-            let label = first.unwrap_or_else(|| "as in the register".into());
-            let mut part = vec![(kind.to_owned(), label)];
-            part.extend(
-                list.iter()
-                    .filter(|l| l.key != kind)
-                    .map(|l| (l.key.to_owned(), l.written.clone())),
-            );
-            parts.push(part);
-        }
-        self.loose = rest;
-    }
-
-    /// A part from the words of the row; a contact of which nothing is known where there are none.
-    fn described(&mut self, description: &str) -> Vec<(String, String)> {
-        match component(description, &self.name, self.oil.as_ref()) {
-            Some(taken) => {
-                let by = if taken.by_lubricant {
-                    "its lubricant".to_owned()
-                } else {
-                    format!("\"{description}\"")
-                };
-                let says = format!("no part is named: {} is taken from {by}", taken.id);
-                self.machine.record.notes.push(format!("parts: {says}"));
-                self.say(Kind::ReadAs, None, description, says);
-                vec![("component".into(), taken.id.into())]
-            }
-            None => {
-                self.say(Kind::Question, None, description, "what does its lubricant serve? No part is named and the description tells none");
-                vec![("contact".into(), "not stated".into())]
-            }
-        }
-    }
-
-    /// A value whose part is none of its own: to a part that takes it, else a note.
-    fn late(&mut self, parts: &mut [Vec<(String, String)>], loose: Loose<'_>) {
-        let takes = |part: &Vec<(String, String)>| {
-            part[0].0 == loose.part
-                && !part.iter().any(|(k, _)| k == loose.key)
-                && !(loose.part == "component"
-                    && loose.key == "pressure"
-                    && !part[0].1.starts_with("hyd_"))
-        };
-        if let Some(part) = parts.iter_mut().find(|p| takes(p)) {
-            part.push((loose.key.to_owned(), loose.written));
-        } else {
-            self.machine
-                .record
-                .notes
-                .push(format!("{}: {}", loose.column.heading, loose.written));
         }
     }
 }

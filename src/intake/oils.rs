@@ -1,16 +1,16 @@
 //! A list of oils into an oil file.
 
+mod close;
+
 use super::cell::{Expect, Reading, quantity, text_of};
 use super::draft::{Counts, Draft, Record};
 use super::finding::{Finding, Kind};
 use super::layout::Column;
-use super::lubricant;
 use super::machine::counted;
 use super::site::Context;
 use super::table::{Line, Table};
 use super::target::Target;
 use super::words;
-use super::yaml::item;
 use crate::input::keys::Form;
 use crate::input::value::{At, Want};
 use crate::quantity::Kind as Measure;
@@ -59,7 +59,7 @@ struct Oils<'a> {
 /// One oil as its row is read.
 struct Row<'o, 'a> {
     all: &'o mut Oils<'a>,
-    row: u32,
+    number: u32,
     record: Record,
     points: Vec<(f64, String)>,
     grade: Option<String>,
@@ -78,7 +78,7 @@ impl Oils<'_> {
         let name = text(|t| matches!(t, Target::Key(k) if k.name == "name"));
         let id = text(|t| matches!(t, Target::Name)).or_else(|| name.clone());
         let Some(id) = id.filter(|i| !i.is_empty()) else {
-            let finding = self.about(
+            let finding = about(
                 line.number,
                 Kind::LeftOut,
                 "",
@@ -90,7 +90,7 @@ impl Oils<'_> {
         if self.records.iter().any(|r| r.name == id) {
             let says =
                 format!("the oil {id} stands in an earlier row as well: this row is not carried");
-            let finding = self.about(line.number, Kind::LeftOut, &id, &says);
+            let finding = about(line.number, Kind::LeftOut, &id, &says);
             self.findings.push(finding);
             return;
         }
@@ -102,7 +102,7 @@ impl Oils<'_> {
         };
         let mut row = Row {
             all: self,
-            row: line.number,
+            number: line.number,
             record,
             points: Vec::new(),
             grade: None,
@@ -117,18 +117,6 @@ impl Oils<'_> {
             }
         }
         row.finish();
-    }
-
-    fn about(&self, row: u32, kind: Kind, name: &str, says: &str) -> Finding {
-        Finding {
-            kind,
-            row: Some(row),
-            column: None,
-            name: Some(name.to_owned()).filter(|n| !n.is_empty()),
-            heading: String::new(),
-            text: String::new(),
-            says: says.to_owned(),
-        }
     }
 
     fn write(&self) -> String {
@@ -157,7 +145,7 @@ impl Row<'_, '_> {
     fn say(&mut self, kind: Kind, column: Option<&Column>, text: &str, says: impl Into<String>) {
         let finding = Finding {
             kind,
-            row: Some(self.row),
+            row: Some(self.number),
             column: column.map(|c| c.number),
             name: Some(self.record.name.clone()),
             heading: column.map(|c| c.heading.clone()).unwrap_or_default(),
@@ -236,8 +224,8 @@ impl Row<'_, '_> {
     fn grade(&mut self, column: &Column, content: &Content) {
         let text = match text_of(content) {
             Ok(text) => text,
-            Err(reading) => {
-                self.tell(column, content, reading);
+            Err(why) => {
+                self.tell(column, content, Reading::fault(why));
                 return;
             }
         };
@@ -351,106 +339,6 @@ impl Row<'_, '_> {
             }
         }
     }
-
-    /// Viscosity from points, else from a grade; families and bases the name tells.
-    fn finish(mut self) {
-        self.points.sort_by(|a, b| a.0.total_cmp(&b.0));
-        let read = lubricant::read(&self.name);
-        if self.record.get("additives").is_none() && !read.families.is_empty() {
-            self.record
-                .set("additives", format!("[{}]", read.families.join(", ")));
-            let says = format!(
-                "additives {} are taken from the name",
-                read.families.join(", ")
-            );
-            let name = self.name.clone();
-            self.say(Kind::ReadAs, None, &name, says);
-        }
-        let mut base = self
-            .record
-            .get("base")
-            .map(str::to_owned)
-            .or_else(|| read.base.map(str::to_owned));
-        if base.as_deref() == Some("PAG") {
-            let name = self.name.clone();
-            self.say(
-                Kind::Question,
-                None,
-                &name,
-                "a PAG: water-soluble or oil-soluble? The base stays unknown",
-            );
-            base = None;
-        }
-        let grade = self
-            .grade
-            .clone()
-            .or_else(|| read.grade.map(|g| format!("ISO VG {g}")));
-        let viscosity = match (self.points.as_slice(), grade, &self.vi) {
-            ([_, _, ..], ..) => {
-                let points: Vec<String> = self.points.iter().map(|(_, p)| item(p)).collect();
-                Some(format!("[{}]", points.join(", ")))
-            }
-            ([(_, one)], _, Some(vi)) => Some(format!("[{}, VI {vi}]", item(one))),
-            (_, Some(grade), Some(vi)) => Some(format!("[{grade}, VI {vi}]")),
-            (_, Some(grade), None) => {
-                if base.is_none() {
-                    self.say(Kind::Question, None, "", format!("only {grade} is known; mineral is assumed: which base is it, and what is its index?"));
-                    self.record.set("base", "mineral");
-                }
-                Some(format!("[{grade}]"))
-            }
-            ([(_, one)], None, None) => {
-                let one = one.clone();
-                self.say(
-                    Kind::Question,
-                    None,
-                    &one,
-                    "one viscosity makes no curve: what is the other, or the viscosity index?",
-                );
-                None
-            }
-            ([], None, _) => {
-                self.say(
-                    Kind::Question,
-                    None,
-                    "",
-                    "no viscosity and no grade: it cannot be weighed; ask for the data sheet",
-                );
-                None
-            }
-        };
-        if let Some(base) = base {
-            self.record.set("base", base);
-        }
-        self.close(viscosity);
-    }
-
-    fn close(mut self, viscosity: Option<String>) {
-        let notes = std::mem::take(&mut self.record.notes);
-        if !notes.is_empty() {
-            let note = notes.join("; ");
-            self.record.set("note", note);
-        }
-        if let Some(viscosity) = viscosity {
-            self.record.set("viscosity", viscosity);
-            self.all.counts.carried += 1;
-            let record = std::mem::take(&mut self.record);
-            self.all.records.push(record);
-            return;
-        }
-        let mut text = String::new();
-        self.record.write(&mut text, 0);
-        self.all
-            .without
-            .push(text.lines().map(|l| format!("# {l}\n")).collect());
-        let finding = self.all.about(
-            self.row,
-            Kind::LeftOut,
-            &self.record.name.clone(),
-            "carried as a remark only, for want of a viscosity",
-        );
-        self.all.findings.push(finding);
-    }
 }
 
 /// A base stock of a list, in the reader's words.
@@ -485,4 +373,17 @@ fn base(text: &str) -> Option<String> {
         }
     };
     Some(plain.to_owned())
+}
+
+/// A finding about a whole row.
+fn about(row: u32, kind: Kind, name: &str, says: &str) -> Finding {
+    Finding {
+        kind,
+        row: Some(row),
+        column: None,
+        name: Some(name.to_owned()).filter(|n| !n.is_empty()),
+        heading: String::new(),
+        text: String::new(),
+        says: says.to_owned(),
+    }
 }

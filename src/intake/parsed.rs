@@ -189,7 +189,7 @@ fn unit_and_remark(text: &str, wanted: &[Kind], out: &mut Parsed) {
     if let (Some(open), true) = (text.find('('), text.ends_with(')')) {
         let inside = text[open + 1..text.len() - 1].trim().to_owned();
         text.truncate(open);
-        text = text.trim_end().to_owned();
+        text.truncate(text.trim_end().len());
         if text.is_empty()
             && let Some(found) = unit(&inside, wanted)
         {
@@ -202,7 +202,8 @@ fn unit_and_remark(text: &str, wanted: &[Kind], out: &mut Parsed) {
         let padded = format!(" {text}");
         if let Some(before) = padded.to_lowercase().strip_suffix(word) {
             out.each = true;
-            text = padded[..before.len()].trim().to_owned();
+            let kept = padded.get(..before.len()).unwrap_or("");
+            kept.trim().clone_into(&mut text);
             break;
         }
     }

@@ -1,18 +1,23 @@
 //! A register into a site file.
 
+mod across;
+mod refer;
+mod write;
+
 use super::cell::{Reading, Rules};
 use super::describe::is_gone;
-use super::draft::{Counts, Draft, Record};
+use super::draft::{Counts, Draft};
 use super::finding::{Finding, Kind, letters};
 use super::layout::{Column, Layout};
-use super::machine::{Machine, RowReader, counted};
+use super::machine::{Machine, RowReader};
 use super::table::{Line, Table};
-use super::tags::{self, Reference};
+use super::tags;
 use super::target::Target;
-use super::yaml::scalar;
 use crate::model::rulebook::Rulebook;
+use across::{alike, named_once, of_columns};
+use refer::resolved;
 use std::collections::BTreeMap;
-use std::fmt::Write as _;
+use write::write;
 
 /// What the rows of a register are read against.
 pub struct Context<'a> {
@@ -308,69 +313,6 @@ fn of_row(
         .collect()
 }
 
-/// The text of the lubricant cell, references followed.
-fn resolved(reader: &mut Reader<'_>, outlines: &[Outline], from: usize) -> Option<String> {
-    let mut at = from;
-    let mut seen = vec![from];
-    loop {
-        let text = outlines[at].oil.clone()?;
-        let Some(reference) = tags::reference(&text) else {
-            if at != from {
-                let to = &outlines[at];
-                let says = format!("{} of row {}: \"{text}\"", to.tag, to.row);
-                let mut finding = about_row(&outlines[from], Kind::ReadAs, says);
-                finding.column = reader.oil_column().map(|c| c.number);
-                finding.text = outlines[from].oil.clone().unwrap_or_default();
-                reader.findings.push(finding);
-            }
-            return Some(text);
-        };
-        let next = target_of(&reference, outlines, at);
-        match next.filter(|n| !seen.contains(n)) {
-            Some(next) => {
-                seen.push(next);
-                at = next;
-            }
-            None => {
-                let why = match next {
-                    Some(_) => "the rows refer to each other in a circle".to_owned(),
-                    None => "no one row answers to this reference".to_owned(),
-                };
-                let mut finding = about_row(&outlines[from], Kind::NotUnderstood, why);
-                finding.column = reader.oil_column().map(|c| c.number);
-                finding.heading = reader.oil_column().map(|c| c.heading).unwrap_or_default();
-                finding.text = text;
-                reader.findings.push(finding);
-                return outlines[from].oil.clone();
-            }
-        }
-    }
-}
-
-fn target_of(reference: &Reference, outlines: &[Outline], at: usize) -> Option<usize> {
-    match reference {
-        Reference::Above => at.checked_sub(1),
-        Reference::Row(n) => {
-            let numbered = outlines.iter().any(|o| o.number.is_some());
-            let is = |o: &Outline| {
-                if numbered {
-                    o.number == Some(*n)
-                } else {
-                    o.row == *n
-                }
-            };
-            outlines.iter().position(is)
-        }
-        Reference::Named(word) => {
-            let mut found = (0..outlines.len())
-                .filter(|i| *i != at)
-                .filter(|i| tags::answers(word, &outlines[*i].tag, &outlines[*i].description));
-            let first = found.next();
-            first.filter(|_| found.next().is_none())
-        }
-    }
-}
-
 fn about_row(one: &Outline, kind: Kind, says: impl Into<String>) -> Finding {
     Finding {
         kind,
@@ -402,240 +344,4 @@ fn listed(rows: &[u32]) -> String {
         shown.push(format!("and {} more", rows.len() - SHOWN));
     }
     shown.join(", ")
-}
-
-/// What is to be said of whole columns.
-fn of_columns(reader: &mut Reader<'_>) {
-    for (number, (n, cell, read_as)) in std::mem::take(&mut reader.bare) {
-        let column = reader.layout.columns.iter().find(|c| c.number == number);
-        let heading = column.map(|c| c.heading.clone()).unwrap_or_default();
-        let cells = if n == 1 {
-            "1 number".to_owned()
-        } else {
-            format!("{n} numbers")
-        };
-        reader.findings.push(Finding {
-            kind: Kind::Question,
-            row: None,
-            column: Some(number),
-            name: None,
-            heading,
-            text: String::new(),
-            says: format!("{cells} without a unit, the first in {cell}, {read_as} and so on, as assumed: which unit? State it in the map"),
-        });
-    }
-    if reader.sumps > 0 && reader.context.at_ambient.is_none() {
-        let n = reader.sumps;
-        let mut finding = of_file(format!(
-            "{n} oil temperatures are given without the ambient they were read at; 20 degC is assumed: state it in the map or at the machine"
-        ));
-        finding.kind = Kind::Question;
-        reader.findings.push(finding);
-    }
-    let unread: Vec<&Column> = reader
-        .layout
-        .columns
-        .iter()
-        .filter(|c| c.sure == 0 && matches!(c.target, Target::Note))
-        .collect();
-    for column in unread {
-        let finding = Finding {
-            kind: Kind::ReadAs,
-            row: None,
-            column: Some(column.number),
-            name: None,
-            heading: column.heading.clone(),
-            text: String::new(),
-            says: "the heading was not recognised: every cell is kept as a note; the map can say what it is".into(),
-        };
-        reader.findings.push(finding);
-    }
-    let hidden: Vec<String> = reader
-        .layout
-        .columns
-        .iter()
-        .filter(|c| c.hidden && counted(&c.target))
-        .map(|c| c.heading.clone())
-        .collect();
-    if !hidden.is_empty() {
-        reader.findings.push(of_file(format!(
-            "hidden columns are carried as well: {}",
-            hidden.join(", ")
-        )));
-    }
-}
-
-/// Machines that may be one.
-fn alike(reader: &mut Reader<'_>, machines: &mut [Machine]) {
-    let names: Vec<String> = machines.iter().map(|m| m.record.name.clone()).collect();
-    let names: Vec<&str> = names.iter().map(String::as_str).collect();
-    for (a, b) in tags::duplicates(&names) {
-        if names[a] == names[b] || machines[a].record.row == machines[b].record.row {
-            continue;
-        }
-        let mut says = format!(
-            "{} of row {} and {} of row {} may be the same machine: look, and delete one",
-            names[a], machines[a].record.row, names[b], machines[b].record.row
-        );
-        for (what, x, y) in [
-            ("fill", &machines[a].fill, &machines[b].fill),
-            ("temperature", &machines[a].sump, &machines[b].sump),
-        ] {
-            if let Some(more) = agreement(what, x, y) {
-                says.push_str("; ");
-                says.push_str(&more);
-            }
-        }
-        for i in [a, b] {
-            machines[i].record.notes.push(says.clone());
-        }
-        reader.findings.push(Finding {
-            kind: Kind::Question,
-            row: Some(machines[b].record.row),
-            column: None,
-            name: Some(names[b].to_owned()),
-            heading: String::new(),
-            text: names[b].to_owned(),
-            says,
-        });
-    }
-}
-
-/// Whether readings of two rows agree, and which of several then.
-fn agreement(what: &str, a: &[(String, f64)], b: &[(String, f64)]) -> Option<String> {
-    if a.is_empty() || b.is_empty() {
-        return None;
-    }
-    // Half a per cent apart are two roundings of one value.
-    let same = |x: f64, y: f64| (x - y).abs() <= 0.005 * x.abs().max(y.abs());
-    let pairs = a.iter().flat_map(|x| b.iter().map(move |y| (x, y)));
-    let agree: Vec<_> = pairs.clone().filter(|(x, y)| same(x.1, y.1)).collect();
-    Some(match agree.first() {
-        Some((x, y)) if x.0 == y.0 => format!("their {what} agrees, {}", x.0),
-        Some((x, y)) => format!("their {what} agrees as {} and {}", x.0, y.0),
-        None => {
-            let (x, y) = pairs.into_iter().next()?;
-            format!("their {what} differs, {} and {}", x.0, y.0)
-        }
-    })
-}
-
-/// Machines of one tag: points where the register names points, else machines of their own.
-fn named_once(reader: &mut Reader<'_>, machines: Vec<Machine>) -> Vec<Vec<Machine>> {
-    let mut groups: Vec<Vec<Machine>> = Vec::new();
-    let mut at: BTreeMap<String, usize> = BTreeMap::new();
-    for mut machine in machines {
-        let name = machine.record.name.clone();
-        match at.get(&name).copied() {
-            None => {
-                at.insert(name, groups.len());
-                groups.push(vec![machine]);
-            }
-            Some(first) => {
-                let new = machine.point.as_ref().is_some_and(|p| {
-                    groups[first]
-                        .iter()
-                        .all(|m| m.point.as_ref().is_some_and(|q| q != p))
-                });
-                if new {
-                    groups[first].push(machine);
-                    continue;
-                }
-                let row = machine.record.row;
-                let other = groups[first][0].record.row;
-                let says = format!(
-                    "the tag {name} stands in row {other} and row {row}: the same machine, or several points of it? Written as {name} (row {row})"
-                );
-                reader.findings.push(Finding {
-                    kind: Kind::Question,
-                    row: Some(row),
-                    column: None,
-                    name: Some(name.clone()),
-                    heading: String::new(),
-                    text: name.clone(),
-                    says: says.clone(),
-                });
-                machine.record.notes.push(says);
-                machine.record.name = format!("{name} (row {row})");
-                at.insert(machine.record.name.clone(), groups.len());
-                groups.push(vec![machine]);
-            }
-        }
-    }
-    groups
-}
-
-fn write(reader: &Reader<'_>, machines: &[Vec<Machine>], left_out: &[String]) -> String {
-    let mut out = format!(
-        "# yaml-language-server: $schema=./.filmwright/site.schema.json\n\
-         # Drafted by filmwright intake from {}. Values carry `register` where they stand there,\n\
-         # `assumed` where something had to be added; cells that were not understood are notes.\n\
-         file: site 1\n",
-        reader.context.file
-    );
-    if !reader.areas.is_empty() {
-        out.push_str("\nareas:\n");
-        for area in &reader.areas {
-            let _ = writeln!(
-                out,
-                "  {}: {{}}                  # ambient: coldest .. hottest",
-                scalar(area)
-            );
-        }
-    }
-    if machines.is_empty() {
-        out.push_str("\nmachines: {}\n");
-    } else {
-        out.push_str("\nmachines:\n");
-    }
-    for group in machines {
-        match group.as_slice() {
-            [one] => one.record.write(&mut out, 2),
-            several => points(&mut out, several),
-        }
-        out.push('\n');
-    }
-    if !left_out.is_empty() {
-        out.push_str("# Rows of the register that were not carried:\n");
-        for line in left_out {
-            let _ = writeln!(
-                out,
-                "# {}",
-                line.split_whitespace().collect::<Vec<_>>().join(" ")
-            );
-        }
-    }
-    out
-}
-
-/// A machine with several points.
-fn points(out: &mut String, several: &[Machine]) {
-    let shared = ["name", "area", "register row"];
-    let first = &several[0].record;
-    let mut head = Record {
-        name: first.name.clone(),
-        ..Record::default()
-    };
-    for key in shared {
-        let value = first.get(key);
-        if let Some(value) = value.filter(|v| several.iter().all(|m| m.record.get(key) == Some(*v)))
-        {
-            head.set(key, value);
-        }
-    }
-    head.write(out, 2);
-    out.push_str("    points:\n");
-    for machine in several {
-        let mut record = machine.record.clone();
-        if head.get("register row").is_none() {
-            // The row of a point stands in its notes: a machine has one row.
-            record.keys.retain(|(k, _)| k != "register row");
-            record
-                .notes
-                .insert(0, format!("row {} of the register", record.row));
-        }
-        record.name = machine.point.clone().unwrap_or_default();
-        record.keys.retain(|(k, _)| head.get(k).is_none());
-        record.write(out, 6);
-    }
 }

@@ -58,6 +58,11 @@ impl<'b> Table<'b> {
         }
     }
 
+    /// Comments on the cells of a row.
+    pub fn comments(&self, row: u32) -> impl Iterator<Item = &'b crate::table::Comment> {
+        self.sheet.comments.iter().filter(move |c| c.row == row)
+    }
+
     /// Its rows below the headings, those that hold anything.
     pub fn lines(&'b self) -> impl Iterator<Item = Line<'b>> {
         let below = self.layout.unit_row.unwrap_or(self.layout.heading_row);
@@ -104,6 +109,11 @@ impl<'b> Line<'b> {
             .columns
             .iter()
             .filter_map(|c| self.field(c))
+    }
+
+    /// Comments on its cells.
+    pub fn comments(&self) -> impl Iterator<Item = &'b crate::table::Comment> {
+        self.table.comments(self.number)
     }
 
     /// Whether a row holds one text only, over a table of several columns: a heading between rows.

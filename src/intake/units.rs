@@ -97,7 +97,7 @@ fn spelt(kind: Kind, text: &str, lower: &str) -> Option<Unit> {
     let found = spec
         .units
         .iter()
-        .find(|u| std::iter::once(&u.name).chain(u.also).any(|s| fits(s)));
+        .find(|u| std::iter::once(&u.name).chain(u.also).any(&fits));
     found.map(|u| Unit::Of(kind, u.name))
 }
 

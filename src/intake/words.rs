@@ -167,10 +167,10 @@ fn cleanliness(text: &str) -> Reading {
         .trim_start_matches("4406")
         .trim();
     let parts: Vec<&str> = code.split('/').map(str::trim).collect();
-    let number = |p: &&str| {
-        *p == "-" || (!p.is_empty() && p.len() <= 2 && p.bytes().all(|b| b.is_ascii_digit()))
+    let number = |p: &str| {
+        p == "-" || (!p.is_empty() && p.len() <= 2 && p.bytes().all(|b| b.is_ascii_digit()))
     };
-    if (parts.len() == 2 || parts.len() == 3) && parts.iter().all(|p| number(&p)) {
+    if (parts.len() == 2 || parts.len() == 3) && parts.iter().all(|p| number(p)) {
         let three = if parts.len() == 2 {
             format!("-/{}", parts.join("/"))
         } else {

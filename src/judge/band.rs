@@ -135,6 +135,27 @@ impl Band {
     }
 }
 
+impl Band {
+    /// The ambients around one at which a margin is not negative, for margins that may fall
+    /// towards both ends. Nowhere, where it is negative there.
+    pub fn around(middle: f64, margin: impl Fn(f64) -> f64) -> Self {
+        if margin(middle).is_nan() || margin(middle) < 0.0 {
+            return Self::NOWHERE;
+        }
+        let end = |from: f64| {
+            if margin(from) >= 0.0 {
+                return None;
+            }
+            let (cold, hot) = (from.min(middle), from.max(middle));
+            bracketed(cold, hot, &margin).ok().map(|root| root.at)
+        };
+        Self {
+            low: end(COLDEST).unwrap_or(f64::NEG_INFINITY),
+            high: end(HOTTEST).unwrap_or(f64::INFINITY),
+        }
+    }
+}
+
 #[cfg(test)]
 mod tests {
     use super::*;
@@ -177,6 +198,9 @@ mod tests {
         let band = Band::by_root(true, |a| 300.0 - a);
         assert!((band.high - 300.0).abs() < 1e-9);
         assert!(Band::by_root(true, |_| -1.0).is_nowhere());
+        let both = Band::around(290.0, |a| 10.0 - (a - 290.0).abs());
+        assert!((both.low - 280.0).abs() < 1e-9 && (both.high - 300.0).abs() < 1e-9);
+        assert!(Band::around(310.0, |a| 10.0 - (a - 290.0).abs()).is_nowhere());
         assert_eq!(Band::by_root(false, |_| 1.0), Band::OPEN);
     }
 }

@@ -6,6 +6,7 @@ use super::own::{Own, Shift};
 use super::tested::{TestedPoint, points};
 use super::weigh::At;
 use crate::demand::film::FilmDemand;
+use crate::demand::journal::HeatCeiling;
 use crate::demand::tested::TestedLimit;
 use crate::demand::{AtAmbient, Demand, Demands, End, For, Limit, Standing};
 use crate::model::Oil;
@@ -62,6 +63,8 @@ pub struct ReadyDemand {
     pub judges: bool,
     /// Whether an unmet one that does not judge becomes a condition.
     pub asks_when_unmet: bool,
+    /// Where the limit itself moves with the ambient.
+    pub heat: Option<Box<HeatCeiling>>,
     /// What moved it to the temperature of an oil's own losses.
     pub moved: Option<Shift>,
     only: For,
@@ -167,6 +170,7 @@ fn ready(number: usize, demand: &Demand, demands: &Demands) -> Option<ReadyDeman
         low_confidence: demand.confidence == Confidence::Low,
         judges: demand.standing == Standing::Judges,
         moved: None,
+        heat: demand.heat.clone(),
         asks_when_unmet: !matches!(demand.standing, Standing::Judges | Standing::Information),
         only: demand.only.clone(),
     })

@@ -7,7 +7,9 @@ use super::prepared::{PreparedOil, PreparedPoint, ReadyDemand, ReadyLimit, Setti
 use super::straight;
 use super::verdict::Verdict;
 use crate::demand::End;
+use crate::demand::journal::HeatCeiling;
 use crate::demand::tested::TestedLimit;
+use crate::quantity::convert::dynamic;
 use crate::quantity::{KinematicViscosity, Measure, ThermodynamicTemperature};
 
 /// A margin with the demand it belongs to.
@@ -388,7 +390,10 @@ fn measure(
             let jaw = Jaw::new(nu, at);
             Some(match demand.end {
                 End::HotFloor => floor(demand, &jaw, &oil.thin, worn),
-                _ => ceiling(demand, &jaw, &oil.thick),
+                _ => match &demand.heat {
+                    Some(heat) => heated(&jaw, heat, oil),
+                    None => ceiling(demand, &jaw, &oil.thick),
+                },
             })
         }
         ReadyLimit::Film(film) => {
@@ -486,6 +491,20 @@ fn ceiling(demand: &ReadyDemand, jaw: &Jaw, thick: &Ready) -> Found {
         value: -thick.above(jaw).0,
         steps: true,
         band,
+        at: None,
+    }
+}
+
+/// A bearing that gets too hot: fed hot it has little room, fed cold the oil is thick.
+fn heated(jaw: &Jaw, heat: &HeatCeiling, oil: &PreparedOil) -> Found {
+    let eta = |t: ThermodynamicTemperature| {
+        let nu = KinematicViscosity::from_base(oil.thick.nu(t.base()));
+        dynamic(nu, oil.curves.density.at(t))
+    };
+    Found {
+        value: -oil.thick.above(jaw).0,
+        steps: true,
+        band: Band::around(heat.ambient, |ambient| heat.excess(ambient, eta)),
         at: None,
     }
 }

@@ -3,7 +3,9 @@
 //! as a formula does is stored as the text it is, and stays text when it is edited.
 
 mod inputs;
+mod oil_list;
 mod sheets;
+mod steps;
 
 pub use sheets::{Content, workbook};
 

@@ -1,7 +1,7 @@
 //! Gathers cells into rows and counts them against the limits.
 
 use super::limits::{self, Limit};
-use super::{Cell, Content, Fault, Merged, Row, Sheet};
+use super::{Cell, Comment, Content, Fault, Merged, Row, Sheet};
 
 /// What all sheets of a file have taken together.
 #[derive(Debug, Default)]
@@ -113,6 +113,22 @@ impl<'t> Gather<'t> {
 
     pub(super) fn merged(&mut self, merged: Merged) {
         self.sheet.merged.push(merged);
+    }
+
+    /// A comment on a cell; its text counts as that of cells does.
+    pub(super) fn comment(&mut self, row: u32, column: u32, text: String) -> Result<(), Fault> {
+        let content = Content::Text(text);
+        if let Some(limit) = self.count(&content) {
+            return Err(self.over(limit, row));
+        }
+        if let (Content::Text(text), false) = (&content, content.is_blank()) {
+            self.sheet.comments.push(Comment {
+                row,
+                column,
+                text: text.trim().to_owned(),
+            });
+        }
+        Ok(())
     }
 
     pub(super) fn hide_columns(&mut self, first: u32, last: u32) {

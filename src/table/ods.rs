@@ -81,6 +81,10 @@ fn encrypted(archive: &mut Archive<'_>) -> Result<bool, Fault> {
 }
 
 /// A sheet as far as it was read.
+#[expect(
+    clippy::struct_excessive_bools,
+    reason = "each says where in the file the reading stands"
+)]
 struct Reading<'t> {
     gather: Gather<'t>,
     skip: bool,
@@ -95,6 +99,9 @@ struct Reading<'t> {
     open: Option<Open>,
     /// Depth below the element that is left out: a comment, a drawing, a table in a cell.
     apart: usize,
+    /// The comment at hand, and whether its own text stands here.
+    comment: Option<String>,
+    in_comment: bool,
 }
 
 /// Elements inside a table that are no cells of it.
@@ -122,16 +129,29 @@ impl<'t> Reading<'t> {
             columns: 0,
             open: None,
             apart: 0,
+            comment: None,
+            in_comment: false,
         }
     }
 
     fn sheet<R: std::io::BufRead>(mut self, xml: &mut Xml<R>) -> Result<Sheet, Fault> {
         loop {
             match xml.next()? {
-                Next::Open(_) if self.apart > 0 => self.apart += 1,
-                Next::Close(_) if self.apart > 0 => self.apart -= 1,
-                Next::Text(_) if self.apart > 0 => {}
-                Next::Open(tag) if APART.contains(&tag.name.as_str()) => self.apart = 1,
+                Next::Open(tag) if self.apart > 0 => {
+                    self.apart += 1;
+                    self.in_comment |= tag.name == "p";
+                }
+                Next::Close(name) if self.apart > 0 => self.leaves(&name)?,
+                Next::Text(piece) if self.apart > 0 => {
+                    if let (true, Some(text)) = (self.in_comment, &mut self.comment) {
+                        text.push_str(&piece);
+                    }
+                }
+                Next::Open(tag) if APART.contains(&tag.name.as_str()) => {
+                    self.apart = 1;
+                    self.comment =
+                        (tag.name == "annotation" && self.open.is_some()).then(String::new);
+                }
                 Next::Open(tag) => self.opens(&tag),
                 Next::Close(name) if name == "table" => break,
                 Next::Close(name) => self.closes(&name)?,
@@ -146,6 +166,25 @@ impl<'t> Reading<'t> {
         let mut sheet = self.gather.done();
         sheet.read = !self.skip;
         Ok(sheet)
+    }
+
+    /// An element inside one that is no cell ends, or that one itself.
+    fn leaves(&mut self, name: &str) -> Result<(), Fault> {
+        self.apart -= 1;
+        if name == "p" {
+            self.in_comment = false;
+            if let Some(text) = &mut self.comment {
+                text.push('\n');
+            }
+        }
+        if self.apart == 0
+            && !self.skip
+            && let Some(text) = self.comment.take()
+        {
+            let column = self.column.saturating_add(1);
+            self.gather.comment(self.row, column, text)?;
+        }
+        Ok(())
     }
 
     fn opens(&mut self, tag: &Tag) {

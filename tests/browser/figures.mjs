@@ -1,11 +1,11 @@
 // Figures: no label on another, and the numbers of the drawings are those of the tables.
 import { short, url } from './tools.mjs';
-import { every, kinds } from './kinds.mjs';
+import { every, kinds, most } from './kinds.mjs';
 
 /** No label lies on another or leaves its figure, as Chromium sets them, on screen and on paper. */
 export async function labels(context, finding) {
   const tab = await context.newPage();
-  const files = [...new Set([...kinds().map(([, f]) => f), ...every().filter((f) => /machine-|oil-/.test(f))])];
+  const files = [...new Set([...kinds().map(([, f]) => f), ...most().filter((f) => /machine-|oil-/.test(f))])];
   for (const file of files) {
     await tab.goto(url(file));
     for (const media of ['screen', 'print']) {
@@ -66,7 +66,7 @@ function readBack() {
   const at = (e, name) => Number(e.getAttribute(name));
   const ask = (sound, words) => { read += 1; if (!sound) faults.push(words); };
   const marks = (svg, anchor) => [...svg.querySelectorAll('text.t-tick')]
-    .filter((t) => t.getAttribute('text-anchor') === anchor && Number.isFinite(num(t.textContent)))
+    .filter((t) => getComputedStyle(t).textAnchor === anchor && Number.isFinite(num(t.textContent)))
     .map((t) => ({ value: num(t.textContent), x: at(t, 'x'), y: at(t, 'y') - 4.2 }));
   const printed = (text) => [...text.matchAll(/(hot|cold|grade|start|pour)\s+([+\u2212]\d+\.\d+)/g)].map((m) => m[2]);
 

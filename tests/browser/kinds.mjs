@@ -34,6 +34,12 @@ export function ofStates(states) {
     .filter((f) => /^(machine-|index)/.test(path.basename(f))));
 }
 
+/** Every page made but those that differ from another only in their oil or their units. */
+export function most() {
+  const spare = /demo\/oil-(?!O-0[15]|O-12|G-1)|demo-us\/(?!index|machine-M0[24]|machine-M12|oil-O-05|methods)/;
+  return every().filter((f) => !spare.test(f));
+}
+
 /** Every page made, those with hostile words and the thousand machines aside. */
 export function every() {
   return readdirSync(pagesDir).filter((d) => !/^(hostile|tame|large|again)/.test(d)).sort().flatMap(pagesIn);

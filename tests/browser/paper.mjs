@@ -24,7 +24,8 @@ function boxes(pdf) {
 
 // in the order of the page and in that of its lines: words in columns stand together in one of them
 const text = (pdf, ...more) => run('pdftotext', ...more, pdf, '-') + run('pdftotext', '-layout', ...more, pdf, '-');
-const squeeze = (t) => t.replace(/[\s\u202f\u00a0\u00ad]+/g, '').replace(/-/g, '\u2010');
+// names broken at a dash lose it when the text is taken out of the page
+const squeeze = (t) => t.replace(/[\s\u202f\u00a0\u00ad\u2010-]+/g, '');
 
 /** Puts marks of one pixel into heads, rows and figures, to find on paper where each begins and ends. */
 function plant() {

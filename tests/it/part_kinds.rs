@@ -78,7 +78,29 @@ fn near(got: f64, want: f64, tolerance: f64) {
 fn judged(machine: &str, parts: &str, oils: &str) -> Value {
     let ran = on(host(machine, parts, oils), "weigh -f json -q");
     assert!(!ran.out.is_empty(), "{}\n{parts}", ran.err);
-    ran.json()["judgements"][0].clone()
+    let judgement = ran.json()["judgements"][0].clone();
+    steps_agree(&judgement);
+    judgement
+}
+
+/// A margin printed is the margin of its step.
+fn steps_agree(judgement: &Value) {
+    let Some(steps) = judgement["steps"].as_array() else {
+        return;
+    };
+    for end in ["hot", "cold"] {
+        let margin = &judgement["margins"][end];
+        let Some(value) = margin["value"].as_f64() else {
+            continue;
+        };
+        let step = steps.iter().find(|s| s["id"] == margin["step"]);
+        let step = step.unwrap_or_else(|| panic!("{end}: no step in {judgement}"));
+        let told = step["result"]["value"].as_f64().expect("a number");
+        assert!(
+            (told - value).abs() < 1e-9,
+            "{end}: {told} told, {value} judged"
+        );
+    }
 }
 
 // --- worm ------------------------------------------------------------------------------------
@@ -519,6 +541,19 @@ fn a_declared_multigrade_starts_as_cold_as_its_grade() {
     assert!(
         cold["because"].to_string().contains("too thick to crank"),
         "{cold}"
+    );
+}
+
+/// A maker who asks for 10W-40 is not served by a 15W-40, however warm the start.
+#[test]
+fn the_makers_w_grade_counts_at_its_own_temperature() {
+    let oil = multigrade("  classes: [SAE 15W-40]\n  HTHS: 3.8 mPa.s\n");
+    let asked = engine("5 degC", "  hot grade: SAE 10W-40\n", &oil);
+    assert_eq!(asked["verdict"], "fails", "{asked}");
+    let own = engine("5 degC", "  hot grade: SAE 15W-40\n", &oil);
+    assert!(
+        matches!(own["verdict"].as_str(), Some("holds" | "tight")),
+        "{own}"
     );
 }
 

@@ -128,13 +128,18 @@ impl Read {
             };
             if open.is("text") {
                 let attr = |name| open.attr(name).expect("set").to_owned();
-                // the anchor of SVG where none is said
-                let anchor = open.attr("text-anchor").unwrap_or("start").to_owned();
+                let classes = attr("class");
+                let (class, rest) = classes.split_once(' ').unwrap_or((&classes, ""));
+                let anchor = match rest.split(' ').next() {
+                    Some("am") => "middle",
+                    Some("ae") => "end",
+                    _ => "start",
+                };
                 out.push(Word {
                     x: open.num("x"),
                     y: open.num("y"),
-                    class: attr("class"),
-                    anchor,
+                    class: class.to_owned(),
+                    anchor: anchor.to_owned(),
                     text: text.clone(),
                 });
             }

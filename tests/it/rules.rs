@@ -4,6 +4,7 @@ mod facts;
 mod fixtures;
 mod needs;
 mod pairs;
+mod schema;
 
 use filmwright::assets::{Layer, TextFile, builtin_rules};
 use filmwright::input::rules::{RuleFault, rulebook};

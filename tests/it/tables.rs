@@ -54,6 +54,13 @@ fn sheet(out: &mut String, sheet: &Sheet) {
             m.row, m.column, m.last_row, m.last_column
         );
     }
+    for c in &sheet.comments {
+        let _ = writeln!(
+            out,
+            "  comment row {} column {} {:?}",
+            c.row, c.column, c.text
+        );
+    }
     for row in &sheet.rows {
         let hidden = if row.hidden { ", hidden" } else { "" };
         let _ = writeln!(out, "  row {}{hidden}", row.number);

@@ -56,7 +56,7 @@ pub(super) fn of(cause: Cause, theta: &Theta, sample: &Sample, label: &Profile) 
     let mut list = viscosity(theta, &none, sample, label);
     list.extend(vi(cause, theta, sample, label));
     for seen in sample.others.iter().chain(&sample.additive) {
-        list.extend(figure(seen, theta, &none));
+        list.push(figure(seen, theta, &none));
     }
     list.extend(mixture(theta, sample, label));
     list
@@ -81,7 +81,7 @@ fn viscosity(theta: &Theta, none: &Theta, sample: &Sample, label: &Profile) -> V
             significant(new, 3, Toward::Nearest),
             per_cent(theta.d[i])
         );
-        list.extend(line(
+        list.push(line(
             reading,
             says,
             z,
@@ -123,7 +123,7 @@ fn vi(cause: Cause, theta: &Theta, sample: &Sample, label: &Profile) -> Option<E
     }
 }
 
-fn figure(seen: &Seen, theta: &Theta, none: &Theta) -> Option<Evidence> {
+fn figure(seen: &Seen, theta: &Theta, none: &Theta) -> Evidence {
     let (mean, _) = expected(seen, theta);
     let (unmoved, _) = expected(seen, none);
     let (z, z0) = (apart(seen, theta), apart(seen, none));
@@ -154,20 +154,16 @@ fn figure(seen: &Seen, theta: &Theta, none: &Theta) -> Option<Evidence> {
 
 /// For where the cause explains what unchanged oil would not; against where it expects another
 /// figure; a figure that stays as the cause leaves it counts a little.
-fn line(reading: Reading, says: String, z: f64, z0: f64, differs: bool) -> Option<Evidence> {
+fn line(reading: Reading, says: String, z: f64, z0: f64, differs: bool) -> Evidence {
     let gain = 4.0 * (ln(1.0 + z0 * z0 / 7.0) - ln(1.0 + z * z / 7.0));
     if z.abs() > FAR {
-        Some(Evidence::against(
-            reading.key(),
-            says,
-            (0.5 * z * z).min(8.0),
-        ))
+        Evidence::against(reading.key(), says, (0.5 * z * z).min(8.0))
     } else if differs && gain > 0.3 {
-        Some(Evidence::speaks_for(reading.key(), says, gain))
+        Evidence::speaks_for(reading.key(), says, gain)
     } else if differs && gain < -0.3 {
-        Some(Evidence::against(reading.key(), says, -gain))
+        Evidence::against(reading.key(), says, -gain)
     } else {
-        Some(Evidence::speaks_for(reading.key(), says, 0.2))
+        Evidence::speaks_for(reading.key(), says, 0.2)
     }
 }
 

@@ -37,6 +37,9 @@ pub(super) struct Sample {
     pub(super) additive: Vec<Seen>,
 }
 
+/// Square of the standard deviations beyond which a setting is not weighed.
+const FAR_SQUARED: f64 = 90.0;
+
 /// Drift of service that is no cause, one standard deviation as a share.
 const DRIFT: f64 = 0.006;
 
@@ -85,6 +88,19 @@ impl Sample {
     /// Whether there is anything to weigh.
     pub(super) fn is_empty(&self) -> bool {
         self.nu.iter().all(Option::is_none) && self.others.is_empty() && self.additive.is_empty()
+    }
+
+    /// Whether a viscosity lies so far from a setting that it need not be weighed.
+    #[inline]
+    pub(super) fn is_far(&self, theta: &Theta) -> bool {
+        let model = theta.spread * theta.spread + self.common;
+        let far = |i: usize| {
+            self.nu[i].is_some_and(|(d, v)| {
+                let r = d - theta.d[i];
+                r * r > FAR_SQUARED * (v + model)
+            })
+        };
+        far(0) || far(1)
     }
 
     /// Log-likelihood of the viscosities.

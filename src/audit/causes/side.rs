@@ -7,6 +7,7 @@ use crate::audit::profile::Profile;
 use crate::model::facts::Sulphur;
 use crate::model::sample::Reading;
 use crate::numeric::math::ln;
+use crate::quantity::show::{Toward, fixed, significant};
 
 /// What is known around a sample.
 #[derive(Clone, Copy, Debug, Default)]
@@ -61,7 +62,6 @@ fn rise(figures: &Figures, label: Option<&Profile>, reading: Reading) -> Option<
 }
 
 fn ppm(value: f64) -> String {
-    use crate::quantity::show::{Toward, significant};
     format!("{} ppm", significant(value, 3, Toward::Nearest))
 }
 
@@ -159,7 +159,6 @@ fn copper(figures: &Figures, label: Option<&Profile>, around: &Around<'_>) -> Op
         && up >= around.acid_watch.unwrap_or(0.5)
     {
         signs += 1;
-        use crate::quantity::show::{Toward, fixed};
         let says = format!(
             "acid number up by {} mg KOH/g: corrosive",
             fixed(up, 2, Toward::Nearest)
@@ -246,7 +245,6 @@ fn soot(figures: &Figures, around: &Around<'_>) -> Option<Named> {
     let soot = amount(figures, Reading::Soot)?;
     let watch = around.soot_watch?;
     (soot >= watch).then(|| {
-        use crate::quantity::show::{Toward, fixed};
         let says = format!(
             "soot {} %, watch from {} %",
             fixed(soot, 1, Toward::Nearest),

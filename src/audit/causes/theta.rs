@@ -243,12 +243,12 @@ fn dilution(label: &Profile, setting: Setting) -> Vec<Theta> {
 fn blended(label: &Profile, other: [f64; 2], share: f64) -> Option<[f64; 2]> {
     let own = [label.nu40(), label.nu100()];
     let mut d = [0.0; 2];
-    for i in 0..2 {
-        let nus = [mm2_s(own[i]), mm2_s(other[i])];
+    for ((d, own), other) in d.iter_mut().zip(own).zip(other) {
+        let nus = [mm2_s(own), mm2_s(other)];
         let blend = Rule::Walther
             .blend(&[number(1.0 - share), number(share)], &nus)
             .ok()?;
-        d[i] = ln(to_mm2_s(blend) / own[i]);
+        *d = ln(to_mm2_s(blend) / own);
     }
     Some(d)
 }
@@ -374,9 +374,9 @@ fn wrong(label: &Profile, others: &[Arc<Mixed>]) -> Vec<Theta> {
                 ..Theta::of(kind_of_other(label, profile), d, share)
             };
             if other.oil.is_some() {
-                inside.push(theta)
+                inside.push(theta);
             } else {
-                outside.push(theta)
+                outside.push(theta);
             }
         }
     }

@@ -326,8 +326,9 @@ mod tests {
         assert_eq!(text(Reading::Nu40, "cloudy", false), Read::NotUnderstood);
         assert_eq!(text(Reading::Density, "12", false), Read::Impossible);
         assert_eq!(read(None, how(Reading::Nu40, false), 1), Read::Nothing);
+        let written = "=A1";
         let formula = Content::NoValue {
-            formula: "=A1".into(),
+            formula: written.into(),
         };
         assert_eq!(
             read(Some(&formula), how(Reading::Nu40, false), 1),

@@ -56,6 +56,9 @@ fn run(session: &mut Session<'_>, args: &Audit) -> Result<Exit, Exit> {
 }
 
 /// Places of the points wanted; none where all are.
+///
+/// # Errors
+/// Nothing matches; that has been told.
 pub fn only(
     session: &mut Session<'_>,
     loaded: &Loaded,
@@ -71,6 +74,9 @@ pub fn only(
 }
 
 /// The day of the audit.
+///
+/// # Errors
+/// A date that is no day; that has been told.
 pub fn day_of(session: &mut Session<'_>, loaded: &Loaded) -> Result<Date, Exit> {
     let text = session.date(loaded.site.frame.reviewed.as_deref());
     text.parse().map_err(|_| {

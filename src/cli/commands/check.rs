@@ -10,10 +10,13 @@ use std::fmt::Write as _;
 
 /// Runs `check`.
 pub fn check(session: &mut Session<'_>) -> Exit {
-    let loaded = match session.load(&[]) {
+    let mut loaded = match session.load(&[]) {
         Ok(loaded) => loaded,
         Err(exit) => return exit,
     };
+    if let Err(exit) = session.bottles(&mut loaded, None) {
+        return exit;
+    }
     let site = &loaded.site;
     let mut unmet = Vec::new();
     if !site.expect.is_empty() {

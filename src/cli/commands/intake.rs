@@ -6,10 +6,11 @@ use crate::cli::exit::Exit;
 use crate::cli::load::fingerprint;
 use crate::cli::session::Session;
 use crate::cli::text_of::intake::report;
-use crate::cli::{Format, Intake, IntakeDecimal, IntakeGallon, IntakeMakes};
+use crate::cli::{Decimal as CliDecimal, Format, Intake, IntakeGallon, IntakeMakes};
 use crate::intake::cell::Rules;
+use crate::intake::decimals::{Decimals, decimals};
 use crate::intake::draft::Draft;
-use crate::intake::layout::{Decimals, Layout, Where, decimals, find};
+use crate::intake::layout::{Layout, Where, find};
 use crate::intake::map::{self, Head, Map};
 use crate::intake::number::Decimal;
 use crate::intake::site::Context;
@@ -51,7 +52,7 @@ struct Opened {
 fn run(session: &mut Session<'_>, args: &Intake) -> Result<Exit, Exit> {
     let opened = open(session, args)?;
     let target = target(session, opened.layout.makes);
-    let mut draft = drafted(session, &opened, &target)?;
+    let mut draft = drafted(session, &opened, target.as_deref())?;
     draft.how = how(&opened);
     let mut outcome = Outcome::default();
     if !opened.map_there {
@@ -214,8 +215,8 @@ fn overrule(session: &mut Session<'_>, args: &Intake, map: &mut Map) -> Result<(
     }
     if let Some(decimal) = args.decimal {
         map.decimal = Some(match decimal {
-            IntakeDecimal::Point => Decimal::Point,
-            IntakeDecimal::Comma => Decimal::Comma,
+            CliDecimal::Point => Decimal::Point,
+            CliDecimal::Comma => Decimal::Comma,
         });
     }
     if let Some(gallon) = args.gallon {
@@ -251,10 +252,9 @@ fn target(session: &Session<'_>, makes: Makes) -> Option<PathBuf> {
 fn drafted(
     session: &mut Session<'_>,
     opened: &Opened,
-    target: &Option<PathBuf>,
+    target: Option<&Path>,
 ) -> Result<Draft, Exit> {
     let folder = target
-        .as_ref()
         .and_then(|t| t.parent().map(Path::to_path_buf))
         .unwrap_or_else(|| session.folder());
     let rules = session.rules(Some(&folder))?;

@@ -60,7 +60,10 @@ fn run(session: &mut Session<'_>, args: &Args) -> Result<Exit, Exit> {
     let head = session.head(&loaded);
     tell(session, &head, &target, &written);
     if let Some(path) = &args.xlsx {
-        super::workbook::write(session, &scales, &loaded, &points, Path::new(path))?;
+        let samples = audited
+            .as_ref()
+            .map(|a| crate::results::audit::table_of(&scales, a));
+        super::workbook::write(session, &scales, &loaded, &points, samples, Path::new(path))?;
     }
     let tripped = session.shared.gate.is_some_and(|gate| {
         let level = |v: Verdict| match v {

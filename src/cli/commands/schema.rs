@@ -5,6 +5,7 @@ use crate::cli::exit::Exit;
 use crate::cli::session::Session;
 use crate::input::file::FileKind;
 use crate::input::schema::files;
+use std::fmt::Write as _;
 
 /// Runs `schema`.
 pub fn schema(session: &mut Session<'_>, args: &Schema) -> Exit {
@@ -16,12 +17,13 @@ pub fn schema(session: &mut Session<'_>, args: &Schema) -> Exit {
             if let Err(exit) = session.put(&path, text.as_bytes()) {
                 return exit;
             }
-            out.push_str(&format!("wrote {}\n", path.display()));
+            let _ = writeln!(out, "wrote {}", path.display());
         }
         session.host.out(&out);
         return Exit::Done;
     }
-    let words: Vec<&str> = FileKind::ALL.iter().map(|k| k.word()).collect();
+    let mut words: Vec<&str> = FileKind::ALL.iter().map(|k| k.word()).collect();
+    words.push("rules");
     let Some(kind) = &args.kind else {
         session.fail(&format!(
             "no kind of file is named\n  write  filmwright schema KIND, one of {}; or filmwright schema --write",

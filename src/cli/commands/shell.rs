@@ -7,6 +7,7 @@ use crate::cli::exit::Exit;
 use crate::cli::session::Session;
 use crate::cli::{Cli, Completions, Man, Names};
 use clap::CommandFactory as _;
+use std::fmt::Write as _;
 use std::path::PathBuf;
 
 /// Runs `completions`.
@@ -54,7 +55,7 @@ pub fn man(session: &mut Session<'_>, args: &Man) -> Exit {
             if let Err(exit) = session.put(&path, text.as_bytes()) {
                 return exit;
             }
-            out.push_str(&format!("wrote {}\n", path.display()));
+            let _ = writeln!(out, "wrote {}", path.display());
         }
         session.host.out(&out);
         return Exit::Done;

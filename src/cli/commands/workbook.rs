@@ -5,6 +5,7 @@ use crate::cli::load::Loaded;
 use crate::cli::session::Session;
 use crate::decide::gaps::{PointGaps, of_points};
 use crate::model::Point;
+use crate::results::csv::Table;
 use crate::results::xlsx::{Content, workbook};
 use crate::weighing::Scales;
 use std::path::Path;
@@ -18,6 +19,7 @@ pub(super) fn write<'s>(
     scales: &Scales<'s>,
     loaded: &Loaded,
     points: &[&'s Point],
+    samples: Option<Table>,
     path: &Path,
 ) -> Result<(), Exit> {
     session.may_write_book(path)?;
@@ -33,7 +35,7 @@ pub(super) fn write<'s>(
         points: &weighed,
         sources: &loaded.sources,
         head: &head,
-        samples: None,
+        samples,
         warning: session.shared.demo.then_some(
             "Demonstration: works, machines and oils are invented. No number here is for use.",
         ),

@@ -16,7 +16,7 @@ use std::fmt::Write as _;
 pub fn whole(scales: &Scales<'_>, audit: &Audit, style: Style) -> String {
     let mut out = format!("{}\n\n", cross::answer(audit, scales.site));
     two_by_two(&mut out, scales, audit, style.width);
-    findings(&mut out, scales, audit, style.width);
+    findings(&mut out, audit, style.width);
     samples(&mut out, scales, audit, style);
     trends(&mut out, audit, style.width);
     fed(&mut out, scales, audit);
@@ -87,7 +87,7 @@ pub fn unmatched(audit: &Audit) -> String {
     out
 }
 
-fn findings(out: &mut String, scales: &Scales<'_>, audit: &Audit, width: usize) {
+fn findings(out: &mut String, audit: &Audit, width: usize) {
     if audit.findings.is_empty() {
         out.push_str("\nno findings\n");
         return;
@@ -97,13 +97,13 @@ fn findings(out: &mut String, scales: &Scales<'_>, audit: &Audit, width: usize) 
         let lead = format!("{:>3}  {:<5}  ", i + 1, f.level.word());
         let head = format!("{}: {}. {}", f.machines.join(", "), f.title, f.text);
         out.push_str(&hanging(&lead, &head, width));
-        causes(out, scales, audit, f, width);
+        causes(out, audit, f, width);
         out.push_str(&hanging("            do   ", &f.act, width));
     }
 }
 
 /// The evidence of the causes a finding rests on.
-fn causes(out: &mut String, scales: &Scales<'_>, audit: &Audit, f: &Finding, width: usize) {
+fn causes(out: &mut String, audit: &Audit, f: &Finding, width: usize) {
     let Some(j) = f.judged.map(|p| &audit.judged[p]) else {
         return;
     };
@@ -127,7 +127,6 @@ fn causes(out: &mut String, scales: &Scales<'_>, audit: &Audit, f: &Finding, wid
                 out.push_str(&hanging(lead, &lines.join("; "), width));
             }
         }
-        let _ = scales;
     }
 }
 

@@ -1,10 +1,9 @@
 //! `pool`: the shortest oil list, as text.
 
 use crate::cli::Marks;
-use crate::cli::text::{Column, folded, hanging, table, verdict};
+use crate::cli::text::{Column, folded, table, verdict};
 use crate::decide::pool::case::{Pick, litres_a_year};
 use crate::decide::pool::figures::{Pool, Sums, smallest};
-use crate::decide::pool::step::Step;
 use crate::decide::pool::{Outcome, Solved, Stock};
 use crate::judge::Verdict;
 use crate::quantity::show::{Toward, fixed, margin};
@@ -70,15 +69,15 @@ fn solved_text(
     out
 }
 
-struct Told<'t, 'w, 'a> {
-    scales: &'t Scales<'a>,
-    pool: &'t Pool<'w, 'a>,
-    asked: &'t Asked<'t>,
-    style: Style,
+pub(super) struct Told<'t, 'w, 'a> {
+    pub(super) scales: &'t Scales<'a>,
+    pub(super) pool: &'t Pool<'w, 'a>,
+    pub(super) asked: &'t Asked<'t>,
+    pub(super) style: Style,
 }
 
 impl Told<'_, '_, '_> {
-    fn id(&self, oil: usize) -> &str {
+    pub(super) fn id(&self, oil: usize) -> &str {
         &self.scales.site.oils[oil].id
     }
 
@@ -88,17 +87,17 @@ impl Told<'_, '_, '_> {
     }
 
     /// A sum of money a year.
-    fn sum(&self, x: f64) -> String {
+    pub(super) fn sum(&self, x: f64) -> String {
         format!("{}{}", fixed(x, 0, Toward::Nearest), self.currency())
     }
 
     /// Cost with what holding the oils costs, where that is given.
-    fn with_holding(&self, cost: f64, oils: usize) -> f64 {
+    pub(super) fn with_holding(&self, cost: f64, oils: usize) -> f64 {
         cost + self.asked.site_price.unwrap_or(0.0) * oils as f64
     }
 
     /// `17 lubrication points`, `14 machines`.
-    fn count(&self, n: usize) -> String {
+    pub(super) fn count(&self, n: usize) -> String {
         let several = self.pool.weighed.iter().any(|w| w.point.point.is_some());
         let (one, many) = if several {
             ("lubrication point", "lubrication points")
@@ -222,133 +221,6 @@ impl Told<'_, '_, '_> {
                     )
                 },
             )
-    }
-
-    /// The list, one shorter and one longer, side by side.
-    fn lists(&self, solved: &Solved, sums: &Sums) -> String {
-        let columns = [
-            Column::text("list", 0),
-            Column::number("holds", 0),
-            Column::number("tight", 0),
-            Column::number("without", 0),
-            Column::number("changed", 3),
-            Column::number("L filled", 2),
-            Column::number("cost a year", 5),
-            Column::number("smallest", 4),
-        ];
-        let n = solved.stocks.len();
-        let mut rows = vec![self.list_row(&format!("{n} oils, shortest"), sums, n)];
-        let mut under = Vec::new();
-        for (step, words, n) in [
-            (&self.pool.shorter, "without", n.saturating_sub(1)),
-            (&self.pool.longer, "with", n + 1),
-        ] {
-            let Some(step) = step else {
-                continue;
-            };
-            let sums = self
-                .pool
-                .sums(self.scales.site, &step.picks, &step.unserved);
-            let title = format!("{n} oils, {words} {}", self.id(step.stock.oil));
-            rows.push(self.list_row(&title, &sums, n));
-            under.extend(self.step_says(step, solved));
-        }
-        let mut out = table(&columns, &rows, self.style.width);
-        for line in under {
-            out.push_str(&hanging("  ", &line, self.style.width));
-        }
-        if self.pool.longer.is_none() {
-            out.push_str("  one oil more gains nothing\n");
-        }
-        out
-    }
-
-    fn list_row(&self, title: &str, sums: &Sums, oils: usize) -> Vec<String> {
-        vec![
-            title.to_owned(),
-            sums.words[0].to_string(),
-            sums.words[1].to_string(),
-            sums.words[2].to_string(),
-            sums.changes.to_string(),
-            fixed(sums.filled, 0, Toward::Up),
-            self.sum(self.with_holding(sums.cost, oils)),
-            sums.smallest
-                .map_or_else(|| "-".to_owned(), |(m, _)| margin(m, 2)),
-        ]
-    }
-
-    /// Which points a step leaves without an oil, or lifts from tight.
-    fn step_says(&self, step: &Step, solved: &Solved) -> Option<String> {
-        let id = self.id(step.stock.oil);
-        let address = |place: usize| self.pool.point(place).point.address();
-        if !step.unserved.is_empty() {
-            let lost: Vec<String> = step.unserved.iter().map(|p| address(*p)).collect();
-            return Some(format!("without {id} no oil serves {}", lost.join(", ")));
-        }
-        let tight = |place: usize| {
-            let before = solved.picks.iter().find(|p| p.place == place);
-            before.is_some_and(|p| p.offer.tight)
-        };
-        let gains: Vec<String> = step
-            .picks
-            .iter()
-            .filter(|p| tight(p.place) && !p.offer.tight)
-            .map(|p| address(p.place))
-            .collect();
-        (!gains.is_empty()).then(|| format!("with {id} {} hold instead of tight", gains.join(", ")))
-    }
-
-    fn money(&self, sums: &Sums, oils: usize) -> String {
-        let mut text = format!(
-            "at today's use: today {} a year, this list {}",
-            self.sum(self.with_holding(sums.cost_today, self.pool.today.len())),
-            self.sum(self.with_holding(sums.cost, oils))
-        );
-        if let Some(price) = self.asked.site_price {
-            let _ = write!(
-                text,
-                ", {} a year for each oil held included ({} today, {oils} then)",
-                self.sum(price),
-                self.pool.today.len()
-            );
-        }
-        let _ = write!(
-            text,
-            "; {} L a year",
-            fixed(sums.litres, 0, Toward::Nearest)
-        );
-        if sums.unpriced > 0 {
-            let _ = write!(
-                text,
-                ". Left out of both sums, price or use not stated: {}",
-                self.count(sums.unpriced)
-            );
-        }
-        if sums.changes > 0 {
-            let _ = write!(
-                text,
-                ". To change over: {}, {} L to be filled",
-                self.count(sums.changes),
-                fixed(sums.filled, 0, Toward::Up)
-            );
-        }
-        if sums.fills_unknown > 0 {
-            let _ = write!(text, " ({} not stated)", sums.fills_unknown);
-        }
-        text.push('.');
-        format!("\n{}", folded(&text, "  ", self.style.width))
-    }
-
-    fn margins(&self, sums: &Sums) -> String {
-        let text = format!(
-            "Against the oils of today {} {} margin and {} {}; against the first choice of each point {} VG step are given up in all.",
-            self.count(sums.lose),
-            if sums.lose == 1 { "loses" } else { "lose" },
-            sums.gain,
-            if sums.gain == 1 { "gains" } else { "gain" },
-            fixed(sums.given_up, 1, Toward::Up)
-        );
-        folded(&text, "  ", self.style.width)
     }
 
     /// Points without an answer, and why.

@@ -3,7 +3,8 @@
 use super::case::{Offer, Pick, Place, Terms};
 use super::fence::Fence;
 use super::reduce::{Rows, components};
-use super::search::{Best, Budget, Ties, Wanted, best, fewest, greedy};
+use super::search::{Budget, fewest, greedy};
+use super::ties::{Best, Ties, Wanted, best, ties};
 use std::collections::{BTreeMap, BTreeSet};
 
 /// An oil of the list, for the points behind one fence.
@@ -188,7 +189,7 @@ impl Whole<'_> {
     fn settle(&self, parts: &mut [Part], bound: usize, budget: &mut Budget) -> Solved {
         let mut stocks: BTreeSet<Stock> = BTreeSet::new();
         let mut picks: Vec<Pick> = Vec::new();
-        let (mut ties, mut ties_proven) = (Ties::default(), true);
+        let (mut sum, mut ties_proven) = (Ties::default(), true);
         for part in parts.iter() {
             let offers: Vec<Vec<Offer>> = part
                 .places
@@ -216,12 +217,12 @@ impl Whole<'_> {
                 picks.extend(pick(*place, offers, |oil| list.contains(&oil)));
             }
             let shared = list.intersection(&elsewhere).count();
-            let here = super::search::ties(&offers, |oil| list.contains(&oil), shared);
-            ties.shared += here.shared;
-            ties.changes += here.changes;
-            ties.conditions += here.conditions;
-            ties.unpriced += here.unpriced;
-            ties.cost += here.cost;
+            let here = ties(&offers, |oil| list.contains(&oil), shared);
+            sum.shared += here.shared;
+            sum.changes += here.changes;
+            sum.conditions += here.conditions;
+            sum.unpriced += here.unpriced;
+            sum.cost += here.cost;
             stocks.extend(list.into_iter().map(|oil| Stock {
                 fence: part.fence,
                 oil,
@@ -235,7 +236,7 @@ impl Whole<'_> {
             stocks,
             picks,
             nodes: budget.used,
-            ties,
+            ties: sum,
             ties_proven,
             greedy: parts.iter().map(|p| p.greedy).sum(),
         }

@@ -1,8 +1,8 @@
 //! The list one shorter and one longer: what each costs and gains.
 
 use super::case::{Offer, Pick, Place, Terms};
-use super::search::{Ties, ties};
 use super::solve::{Solved, Stock, pick};
+use super::ties::{Ties, ties};
 
 /// A list one step from the shortest.
 #[derive(Clone, Debug, PartialEq, Eq)]

@@ -8,14 +8,17 @@ use crate::demand::thermal::AtAmbient;
 use crate::demand::{Demand, End, Standing};
 use crate::model::part::{JournalBearing, Part};
 use crate::model::{Fill, Stated};
+use crate::numeric::math::ln;
 use crate::quantity::convert::{rise, to_celsius};
 use crate::quantity::{
-    Area, HeatTransfer, Measure, Power, TemperatureInterval, ThermodynamicTemperature,
+    Area, DynamicViscosity, HeatTransfer, Measure, Power, TemperatureInterval,
+    ThermodynamicTemperature,
 };
 use crate::relation::Law;
 use crate::relation::heat::balance::conductance;
 use crate::relation::journal::Route;
 use crate::relation::journal::feed::Coolant;
+use crate::relation::journal::film::Bearing;
 use crate::relation::journal::heat::still_air;
 use crate::relation::journal::limits::temperature::{LAW as LIMIT, Supply, permissible};
 use crate::relation::journal::limits::whirl;
@@ -32,6 +35,46 @@ static HALF_WAY: Law = Law {
     range: "steady running, the oil carries the heat",
     source: "ISO 7902-1 (from memory)",
 };
+
+/// A largest temperature at feeds that follow the ambient.
+#[derive(Clone, Debug, PartialEq)]
+pub struct HeatCeiling {
+    bearing: Bearing,
+    inlet: AtAmbient,
+    limit: ThermodynamicTemperature,
+    /// Ambient the figure is worked out at, K.
+    pub ambient: f64,
+}
+
+impl HeatCeiling {
+    /// Positive where an oil keeps the bearing under its largest temperature at an ambient,
+    /// negative where it does not.
+    pub fn excess(
+        &self,
+        ambient: f64,
+        eta: impl Fn(ThermodynamicTemperature) -> DynamicViscosity,
+    ) -> f64 {
+        let inlet = ThermodynamicTemperature::from_base(self.inlet.at(ambient));
+        let room = rise(self.limit, inlet).base() / 2.0;
+        if room <= 0.0 {
+            return -1.0;
+        }
+        // half way between feed and limit the film rises by less than the way there just where
+        // the settled bearing leaves cooler than the limit
+        let coolant = Coolant::iso7902();
+        let there = eta(half_way(inlet, self.limit));
+        let found = rise_at(&self.bearing, there, coolant)
+            .or_else(|_| rise_at(&self.bearing, thinnest(&self.bearing), coolant));
+        found.map_or(1.0, |rise| ln(room / rise.base()))
+    }
+}
+
+fn half_way(
+    inlet: ThermodynamicTemperature,
+    limit: ThermodynamicTemperature,
+) -> ThermodynamicTemperature {
+    ThermodynamicTemperature::from_base(f64::midpoint(inlet.base(), limit.base()))
+}
 
 /// Surface speed from which on a shaft is taken as fast, m/s. Common practice.
 const FAST: f64 = 10.0;
@@ -76,21 +119,40 @@ pub(super) fn temperature<R: Recorder>(
     shape: &Shape,
     oil: Oil,
 ) {
-    let Some(hottest) = oil.at.hottest.filter(|_| !oil.risen) else {
+    if oil.risen {
         return;
-    };
-    match oil.cooled {
-        Cooled::ByOil => by_oil(cx, part, shape, hottest),
-        Cooled::ByHousing => by_housing(cx, part, b, shape),
+    }
+    if oil.cooled == Cooled::ByHousing {
+        by_housing(cx, part, b, shape);
+        return;
+    }
+    // a feed that follows the ambient is judged at both ends: fed cold the oil is thick
+    let follows = oil.at.at.is_some_and(|at| at.slope != 0.0);
+    let ambient = cx.thermal.ambient.map(|(c, h)| (c.value, h.value));
+    let hot = (oil.at.hottest, ambient.map(|a| a.1), "hottest");
+    let cold = (oil.at.coldest, ambient.map(|a| a.0), "coldest");
+    for (inlet, ambient, word) in [hot, cold].into_iter().take(1 + usize::from(follows)) {
+        if let Some(inlet) = inlet {
+            let feed = Fed {
+                at: oil.at.at.filter(|_| follows).zip(ambient),
+                inlet,
+                word,
+            };
+            by_oil(cx, part, shape, feed);
+        }
     }
 }
 
-fn by_oil<R: Recorder>(
-    cx: &mut Context<'_, '_, R>,
-    part: &Part,
-    shape: &Shape,
+/// The oil fed at one end of the ambient range.
+struct Fed {
+    /// As a function of ambient, where it follows it, with the ambient of that end.
+    at: Option<(AtAmbient, ThermodynamicTemperature)>,
     inlet: Known<ThermodynamicTemperature>,
-) {
+    word: &'static str,
+}
+
+fn by_oil<R: Recorder>(cx: &mut Context<'_, '_, R>, part: &Part, shape: &Shape, fed: Fed) {
+    let inlet = fed.inlet;
     let limit = limit(cx, supply(cx, shape));
     let coolant = Coolant::iso7902();
     let room = TemperatureInterval::from_base(rise(limit.value, inlet.value).base() / 2.0);
@@ -113,29 +175,49 @@ fn by_oil<R: Recorder>(
     let eta = cx.r.law("eta_max", says, &THICKEST, with, |_| found);
     let with = (("T_in", inlet), ("T_lim", limit));
     let says = "temperature of the film then";
-    let there = cx.r.law("T_eff", says, &HALF_WAY, with, |(i, l)| {
-        ThermodynamicTemperature::from_base(f64::midpoint(i.base(), l.base()))
+    let there =
+        cx.r.law("T_eff", says, &HALF_WAY, with, |(i, l)| half_way(i, l));
+    let heat = fed.at.map(|(inlet, ambient)| {
+        Box::new(HeatCeiling {
+            bearing: shape.bearing,
+            inlet,
+            limit: limit.value,
+            ambient: ambient.base(),
+        })
     });
-    push(cx, part, eta, there, limit, Standing::Judges);
+    push(
+        cx,
+        part,
+        (eta, there, limit),
+        (Standing::Judges, fed.word),
+        heat,
+    );
 }
+
+/// The viscosity, the temperature of the film then, and the largest temperature.
+type Ceiling = (
+    Known<DynamicViscosity>,
+    Known<ThermodynamicTemperature>,
+    Known<ThermodynamicTemperature>,
+);
 
 fn push<R: Recorder>(
     cx: &mut Context<'_, '_, R>,
     part: &Part,
-    eta: Known<crate::quantity::DynamicViscosity>,
-    there: Known<ThermodynamicTemperature>,
-    limit: Known<ThermodynamicTemperature>,
-    standing: Standing,
+    (eta, there, limit): Ceiling,
+    (standing, word): (Standing, &str),
+    heat: Option<Box<HeatCeiling>>,
 ) {
     let at = Some(AtAmbient::held(there.value.base()));
     let blank = cx.blank_at(Some(part.label.clone()), at, Some(there.step));
     cx.push(Demand {
         says: format!(
-            "bearing at most {:.0} degC at the hottest ambient",
+            "bearing at most {:.0} degC at the {word} ambient",
             to_celsius(limit.value)
         ),
         source: "after ISO 7902-3 (from memory, unsure)".to_owned(),
         standing,
+        heat,
         ..dynamic(End::RunningCeiling, eta, TEMPERATURE_RULE, blank)
     });
 }
@@ -217,5 +299,11 @@ fn by_housing<R: Recorder>(
     );
     let says = "viscosity at which it reaches its largest temperature";
     let eta = cx.r.law("eta_max", says, &THICKEST_IN_AIR, with, |_| found);
-    push(cx, part, eta, limit, limit, Standing::Information);
+    push(
+        cx,
+        part,
+        (eta, limit, limit),
+        (Standing::Information, "hottest"),
+        None,
+    );
 }

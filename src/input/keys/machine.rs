@@ -168,14 +168,14 @@ pub static USED_OIL: Record = Record {
     also: &[],
     must: &[],
     keys: &[
-        key("viscosity change", levels(&[Kind::Ratio], "8 .. 12 %"), "by class", "How far the viscosity may move from new oil, up or down."),
+        key("viscosity change", levels(&[Kind::Ratio], "8 % .. 12 %"), "by class", "How far the viscosity may move from new oil, up or down."),
         key("acid number rise", levels(&[Kind::AcidNumber], "0.3 .. 0.6 mg KOH/g"), "by class", "How far the acid number may rise over new oil."),
         key("acid number", levels(&[Kind::AcidNumber], "1.5 .. 2.0 mg KOH/g"), "by class", "How high the acid number may be."),
-        key("water", levels(&[Kind::Ratio], "200 .. 500 ppm"), "by class", "How much water there may be."),
+        key("water", levels(&[Kind::Ratio], "200 ppm .. 500 ppm"), "by class", "How much water there may be."),
         key("flash drop", levels(&[Kind::Rise], "15 .. 30 K"), "by class", "How far the flash point may fall from new oil."),
         key("oxidation rise", levels(&[Kind::Ratio], "10 .. 20"), "by class", "How far oxidation by infrared may rise, absorbance per cm."),
-        key("fuel", levels(&[Kind::Ratio], "2 .. 5 %"), "by class", "How much fuel there may be."),
-        key("soot", levels(&[Kind::Ratio], "2 .. 4 %"), "by class", "How much soot there may be."),
+        key("fuel", levels(&[Kind::Ratio], "2 % .. 5 %"), "by class", "How much fuel there may be."),
+        key("soot", levels(&[Kind::Ratio], "2 % .. 4 %"), "by class", "How much soot there may be."),
     ],
 };
 

@@ -5,6 +5,7 @@ mod quantities;
 
 use super::condition;
 use super::fault::Faults;
+use super::probe::{Probe, Shape};
 use crate::model::rulebook::{Basis, Clause, Confidence, Provenance};
 use crate::model::word::{Word, known};
 use serde_yaml::{Mapping, Value};
@@ -19,11 +20,18 @@ pub(super) struct Fields<'a> {
     /// Where the block stands in the entry, empty at the top.
     block: String,
     asked: RefCell<Vec<&'static str>>,
+    /// Who is told which keys are asked for, where the reader is run to learn that.
+    probe: Option<&'a Probe>,
 }
 
 impl<'a> Fields<'a> {
     /// The fields of an entry; its id is read first, so that faults can name it.
-    pub(super) fn of(value: &'a Value, file: &'a str, faults: &'a Faults) -> Option<Self> {
+    pub(super) fn of(
+        value: &'a Value,
+        file: &'a str,
+        faults: &'a Faults,
+        probe: Option<&'a Probe>,
+    ) -> Option<Self> {
         let Some(map) = value.as_mapping() else {
             faults.add(file, None, "an entry without keys", "id: NAME and its keys");
             return None;
@@ -36,6 +44,7 @@ impl<'a> Fields<'a> {
             id: id.to_owned(),
             block: String::new(),
             asked: RefCell::default(),
+            probe,
         })
     }
 
@@ -66,7 +75,17 @@ impl<'a> Fields<'a> {
         self.map.get(key).filter(|v| !v.is_null())
     }
 
+    /// Tells the probe what a key is read as.
+    fn told(&self, key: &str, shape: impl FnOnce() -> Shape) {
+        if let Some(probe) = self.probe {
+            probe.shape(&self.block, key, shape());
+        }
+    }
+
     fn missing(&self, key: &str, example: &str) {
+        if let Some(probe) = self.probe {
+            probe.must(&self.block, key);
+        }
         let key = self.path(key);
         self.fault(format!("no `{key}`"), format!("{key}: {example}"));
     }
@@ -123,12 +142,14 @@ impl<'a> Fields<'a> {
 
     /// A text that may be there.
     pub(super) fn opt_text(&self, key: &'static str) -> Option<String> {
+        self.told(key, || Shape::Text);
         let text = self.scalar(key, self.take(key)?)?.trim();
         (!text.is_empty()).then(|| text.to_owned())
     }
 
     /// Texts, one or a list of them.
     pub(super) fn texts(&self, key: &'static str) -> Vec<String> {
+        self.told(key, || Shape::Texts);
         self.scalars(key).into_iter().map(str::to_owned).collect()
     }
 
@@ -148,6 +169,7 @@ impl<'a> Fields<'a> {
 
     /// A word of a closed list that may be there.
     pub(super) fn opt_word<W: Word>(&self, key: &'static str) -> Option<W> {
+        self.told(key, || Shape::Word(known::<W>()));
         self.read_word(key, self.scalar(key, self.take(key)?)?)
     }
 
@@ -161,6 +183,7 @@ impl<'a> Fields<'a> {
 
     /// Words of a closed list.
     pub(super) fn words<W: Word>(&self, key: &'static str) -> Vec<W> {
+        self.told(key, || Shape::Words(known::<W>()));
         self.scalars(key)
             .into_iter()
             .filter_map(|text| self.read_word(key, text))
@@ -169,6 +192,7 @@ impl<'a> Fields<'a> {
 
     /// Yes or no; no where it is not there.
     pub(super) fn flag(&self, key: &'static str) -> bool {
+        self.told(key, || Shape::Flag);
         match self.take(key) {
             Some(Value::Bool(b)) => *b,
             Some(_) => {
@@ -190,6 +214,7 @@ impl<'a> Fields<'a> {
 
     /// A whole number that may be there.
     pub(super) fn opt_count(&self, key: &'static str) -> Option<u32> {
+        self.told(key, || Shape::Count);
         self.read_count(key, self.take(key)?)
     }
 
@@ -203,6 +228,7 @@ impl<'a> Fields<'a> {
 
     /// Whole numbers.
     pub(super) fn counts(&self, key: &'static str) -> Vec<u32> {
+        self.told(key, || Shape::Counts);
         match self.take(key) {
             None => Vec::new(),
             Some(Value::Sequence(list)) => list
@@ -215,6 +241,7 @@ impl<'a> Fields<'a> {
 
     /// Conditions, all of which must hold.
     pub(super) fn clauses(&self, key: &'static str) -> Vec<Clause> {
+        self.told(key, || Shape::Texts);
         self.scalars(key)
             .into_iter()
             .filter_map(|text| match condition::clause(text) {
@@ -229,6 +256,7 @@ impl<'a> Fields<'a> {
 
     /// A block of names and texts, in the order written.
     pub(super) fn pairs(&self, key: &'static str) -> Vec<(String, String)> {
+        self.told(key, || Shape::Pairs);
         let Some(value) = self.take(key) else {
             return Vec::new();
         };
@@ -257,6 +285,14 @@ impl<'a> Fields<'a> {
 
     /// A list of blocks.
     pub(super) fn children(&self, key: &'static str) -> Vec<Self> {
+        if let Some(probe) = self.probe {
+            self.told(key, || Shape::Blocks);
+            return probe
+                .empty()
+                .into_iter()
+                .map(|map| self.inner(key, map))
+                .collect();
+        }
         let list: Vec<&Value> = match self.take(key) {
             None => Vec::new(),
             Some(Value::Sequence(list)) => list.iter().collect(),
@@ -275,6 +311,10 @@ impl<'a> Fields<'a> {
 
     /// A block, where it is one; `None` for anything else.
     pub(super) fn child(&self, key: &'static str) -> Option<Self> {
+        if let Some(probe) = self.probe {
+            self.told(key, || Shape::Blocks);
+            return probe.empty().map(|map| self.inner(key, map));
+        }
         let map = self.take(key)?.as_mapping()?;
         Some(self.inner(key, map))
     }
@@ -287,6 +327,7 @@ impl<'a> Fields<'a> {
             id: self.id.clone(),
             block: self.path(key),
             asked: RefCell::default(),
+            probe: self.probe,
         }
     }
 

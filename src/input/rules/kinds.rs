@@ -112,7 +112,7 @@ fn fill<T: Entry>(
 ) {
     for value in entries {
         let path = &filling.file.path;
-        let Some(fields) = Fields::of(value, path, filling.faults) else {
+        let Some(fields) = Fields::of(value, path, filling.faults, filling.probe) else {
             continue;
         };
         let entry = read(&fields);

@@ -9,6 +9,7 @@ use crate::model::site::{House, HouseLimit, HouseRule};
 use crate::problem::{Code, suggest};
 use crate::quantity::parse::parse;
 use crate::quantity::{Kind, Length, Measure, Ratio, Time, VgStep};
+use crate::relation::bearing::reference_viscosity::SMALLEST_KAPPA;
 use crate::source::Origin;
 use crate::source::place::Given;
 
@@ -135,7 +136,23 @@ fn read_limit(text: &str) -> Result<HouseLimit, Fault> {
             .map(|v| HouseLimit::ShareOfReference(Ratio::from_base(v))),
         _ => None,
     };
-    found.ok_or_else(|| no_limit(text))
+    match found {
+        Some(HouseLimit::Kappa(kappa)) if kappa < SMALLEST_KAPPA => Err(below_range(text, kappa)),
+        found => found.ok_or_else(|| no_limit(text)),
+    }
+}
+
+/// Below 0.1 the standard covers nothing: a bearing there is judged by static rules, not by a
+/// smaller ratio.
+fn below_range(text: &str, kappa: f64) -> Fault {
+    let all = 0..text.len();
+    Fault::new(
+        Code::ValueImpossible,
+        format!("a viscosity ratio of {kappa} is outside ISO 281"),
+        all.clone(),
+    )
+    .why("ISO 281 covers kappa from 0.1 on; below it there is no film to speak of")
+    .mend(Mend::new(all, format!("kappa >= {SMALLEST_KAPPA}")))
 }
 
 fn no_limit(text: &str) -> Fault {
@@ -194,5 +211,14 @@ mod tests {
             let mended = fault.mends[0].applied(text);
             assert!(read_limit(&mended).is_ok(), "{text} -> {mended}");
         }
+    }
+
+    /// ISO 281 covers viscosity ratios from 0.1 on.
+    #[test]
+    fn a_ratio_outside_the_standard_is_refused() {
+        let fault = read_limit("kappa >= 0.05").expect_err("below 0.1");
+        assert_eq!(fault.code, Code::ValueImpossible);
+        assert_eq!(fault.mends[0].applied("kappa >= 0.05"), "kappa >= 0.1");
+        assert!(read_limit("kappa >= 0.1").is_ok());
     }
 }

@@ -84,11 +84,12 @@ fn own(case: &Case<'_, '_>, gaps: &[Found]) -> Vec<Assumption> {
         found.push(Assumption {
             id: String::new(),
             taken: taken.into(),
-            because: say::set(
+            because: say::told(
                 origin
                     .note
                     .as_deref()
                     .unwrap_or("the program's own default"),
+                case.units(),
             ),
             otherwise: by_gap.unwrap_or_else(|| {
                 "not tried: part of the method; a house rule or a maker's limit takes its place"

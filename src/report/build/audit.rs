@@ -6,6 +6,7 @@ use super::{Report, caution, say};
 use crate::audit::cross;
 use crate::audit::findings::{Finding as Found, asks, steps, trend_words};
 use crate::audit::judged::Judged;
+use crate::audit::profile::From;
 use crate::audit::units::Unit;
 use crate::audit::whose::Whose;
 use crate::audit::{Audit, worked};
@@ -393,7 +394,7 @@ fn sample(report: &Report<'_>, audit: &Audit, name: &str, j: &Judged) -> SampleR
         }
         _ => String::new(),
     };
-    let margins = j.serves.as_ref().map_or(Vec::new(), |s| {
+    let mut margins: Vec<String> = j.serves.as_ref().map_or(Vec::new(), |s| {
         let one = |m: Option<crate::judge::Margin>, word: &str| {
             m.map(|m| format!("{} {word}", say::steps(m.value, 1)))
         };
@@ -402,6 +403,9 @@ fn sample(report: &Report<'_>, audit: &Audit, name: &str, j: &Judged) -> SampleR
             .flatten()
             .collect()
     });
+    if j.is_barred() {
+        margins.push("barred here".to_owned());
+    }
     SampleRow {
         machine: Phrase::new().tag(name),
         label: j
@@ -511,7 +515,6 @@ fn with_steps(report: &Report<'_>, audit: &Audit, mut body: AuditSheet) -> Audit
 
 fn trust(audit: &Audit) -> Vec<Phrase> {
     let baselines = |f: &dyn Fn(&Judged) -> bool| audit.judged.iter().filter(|j| f(j)).count();
-    use crate::audit::profile::From;
     let sheets = baselines(&|j| matches!(j.baseline, Some(From::DataSheet | From::Usual)));
     let samples = baselines(&|j| matches!(j.baseline, Some(From::Beside | From::NewOil(_))));
     let single = audit.units.iter().filter(|u| u.judged.len() < 2).count();

@@ -80,6 +80,10 @@ const FAMILIES: [(&[&str], &str); 13] = [
         &[
             "oil-life",
             "heat-",
+            "losses-",
+            "seal-",
+            "temperature-by-losses",
+            "kinematic-limit",
             "sump-across",
             "viscosity-reproducibility",
             "line-tolerance",

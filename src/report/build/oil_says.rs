@@ -21,11 +21,11 @@ fn said(key: &str, text: &str) -> Said {
     (say::sentence(key), say::stopped(text))
 }
 
-/// `, step 7`.
+/// ` (step 7)`.
 fn step(steps: &OilSteps, id: StepId) -> String {
     steps
         .number(id)
-        .map_or(String::new(), |n| format!(", step {n}"))
+        .map_or(String::new(), |n| format!(" (step {n})"))
 }
 
 fn viscosity(nu: KinematicViscosity, units: Units) -> String {

@@ -280,6 +280,10 @@ impl Columns {
         }
         values.push(figure(r.dynamic.value.amount(), units, far));
         let (origin, mut says) = standing(r.standing, units);
+        // a remark that says how far a figure is carried says more than its standing
+        if r.remarks.iter().any(|s| s.starts_with("extrapolated")) {
+            says.clear();
+        }
         says.extend(r.remarks.iter().map(|s| say::told(s, units)));
         if let Some(number) = steps.number(r.new.step) {
             says.push(format!("step {number}"));

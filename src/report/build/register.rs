@@ -35,8 +35,8 @@ pub(super) fn on_first_page(
     .map(|text| folded(text, 112))
     .sum();
     let all = match paper {
-        Paper::A4 => 37,
-        Paper::Letter => 31,
+        Paper::A4 => 33,
+        Paper::Letter => 27,
     };
     usize::saturating_sub(all, left.max(right) + cautions).max(3)
 }

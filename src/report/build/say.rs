@@ -179,13 +179,16 @@ pub(super) fn set(text: &str) -> String {
 pub(super) fn told(text: &str, units: Units) -> String {
     let words: Vec<&str> = text.split(' ').collect();
     let mut set: Vec<String> = Vec::with_capacity(words.len());
+    // whether a word stands tied to the one before it
+    let mut tied: Vec<bool> = Vec::with_capacity(words.len());
     for (i, word) in words.iter().enumerate() {
         let before = i.checked_sub(1).map_or("", |p| words[p]);
         let (core, tail) = trailing(word);
-        if is_figure(before) && is_unit(core) {
+        let unit = is_figure(before) && is_unit(core);
+        tied.push(unit);
+        if unit {
             let unit = convert(&words, i, core, units, &mut set);
-            let figure = set.pop().unwrap_or_default();
-            set.push(format!("{figure}{TIE}{unit}{tail}"));
+            set.push(format!("{unit}{tail}"));
         } else {
             let after = words.get(i + 1).copied().unwrap_or("");
             let bare = core.trim_start_matches('(');
@@ -193,7 +196,14 @@ pub(super) fn told(text: &str, units: Units) -> String {
             set.push(format!("{open}{}{tail}", symbol(bare, before, after)));
         }
     }
-    minus(&set.join(" "))
+    let mut out = String::with_capacity(text.len() + 8);
+    for (i, (word, tied)) in set.iter().zip(tied).enumerate() {
+        if i > 0 {
+            out.push(if tied { TIE } else { ' ' });
+        }
+        out.push_str(word);
+    }
+    minus(&out)
 }
 
 /// The unit a figure is told in; the figure before it, and the one at the other end of a range,
@@ -308,6 +318,10 @@ mod tests {
         );
         assert_eq!(us("ambient -10 .. 35 degC"), "ambient 14 .. 95\u{202f}°F");
         assert_eq!(us("(-40 degC)"), "(−40\u{202f}°F)");
+        assert_eq!(
+            us("from 5 K and 10 K to 60 degC: 3 to 8 K"),
+            "from 9\u{202f}°F and 18\u{202f}°F to 140\u{202f}°F: 5 to 14\u{202f}°F"
+        );
         assert_eq!(set("ambient -10 .. 35 degC"), "ambient −10 .. 35\u{202f}°C");
     }
 

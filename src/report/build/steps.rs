@@ -204,7 +204,7 @@ impl Writer<'_, '_, '_> {
             with: puts,
             result: say::amount(step.amount, units, Toward::Nearest),
             aside: String::new(),
-            source: say::set(law.source),
+            source: say::told(law.source, units),
             notes,
             carried: false,
             governs: false,
@@ -394,7 +394,11 @@ pub(super) fn remarks(step: &Step, units: Units) -> Vec<String> {
     if origin.whose == Whose::Assumed
         && let Some(why) = &origin.note
     {
-        notes.push(format!("{}: {}.", say::sentence(&step.says), say::set(why)));
+        notes.push(format!(
+            "{}: {}.",
+            say::sentence(&step.says),
+            say::told(why, units)
+        ));
     }
     notes
 }

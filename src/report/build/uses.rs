@@ -1,8 +1,8 @@
 //! Every machine an oil was weighed on or barred from, kept small while the sheets are made.
 
-use super::Report;
 use super::digest::Digest;
-use super::say;
+use super::reference::named;
+use super::{Report, say};
 use crate::report::model::{Mark, OilUse, Phrase};
 
 /// Rows of the table on an oil's sheet at most.
@@ -68,22 +68,35 @@ fn rank(mark: Option<Mark>) -> u8 {
     }
 }
 
-/// The table of an oil's sheet, and what it leaves out.
-pub(super) fn of_oil(report: &Report<'_>, oil: usize) -> (Vec<OilUse>, String) {
-    let mut all: Vec<Use> = report.kept.uses.get(oil).cloned().unwrap_or_default();
-    all.sort_by_key(|u| (u.role, rank(u.mark), u.machine, u.point));
-    let left = all.len().saturating_sub(ROWS);
-    let more = match left {
-        0 => String::new(),
-        n => format!(
-            "{} more stand on the sheets of their machines.",
-            say::sentence(&say::count(n, "lubrication point", "lubrication points"))
-        ),
-    };
-    (
-        all.iter().take(ROWS).map(|u| row(report, u)).collect(),
-        more,
-    )
+/// The table of an oil's sheet, and in words what it leaves out: the machines the oil is barred
+/// from, and those the table has no room for.
+pub(super) fn of_oil(report: &Report<'_>, oil: usize) -> (Vec<OilUse>, Phrase) {
+    let all: Vec<Use> = report.kept.uses.get(oil).cloned().unwrap_or_default();
+    let (barred, mut told): (Vec<Use>, Vec<Use>) =
+        all.into_iter().partition(|u| u.role == Role::Barred);
+    told.sort_by_key(|u| (u.role, rank(u.mark), u.machine, u.point));
+    let mut more = Phrase::new();
+    let left = told.len().saturating_sub(ROWS);
+    if left > 0 {
+        let n = say::count(left, "lubrication point", "lubrication points");
+        more = more.and(format!(
+            "{} more stand on the sheets of their machines. ",
+            say::sentence(&n)
+        ));
+    }
+    if !barred.is_empty() {
+        let mut machines: Vec<usize> = barred
+            .iter()
+            .filter_map(|u| usize::try_from(u.machine).ok())
+            .collect();
+        machines.dedup();
+        more = more
+            .and("Barred by a rule, which each sheet names, on ")
+            .join(named(report, &machines))
+            .and(".");
+    }
+    let rows = told.iter().take(ROWS).map(|u| row(report, u)).collect();
+    (rows, more)
 }
 
 fn row(report: &Report<'_>, u: &Use) -> OilUse {

@@ -263,7 +263,7 @@ impl Draw for BandFigure {
         let mut canvas = Canvas::new(WIDTH, bottom + 24.0);
         for (t, label) in self.degrees.ticks(&axis, 40.0) {
             let x = axis.px(t);
-            canvas.line(pt(x, TOP - 6.0), pt(x, bottom), "grid");
+            canvas.grid_line(pt(x, TOP - 6.0), pt(x, bottom));
             canvas.text(pt(x, bottom + 16.0), Anchor::Middle, Style::Tick, &label);
         }
         canvas.text(
@@ -316,7 +316,7 @@ impl Draw for MiniBand {
                     &[(pt(axis.px(t), 11.0), Anchor::Middle)],
                 );
             } else {
-                canvas.line(pt(axis.px(t), 1.0), pt(axis.px(t), height - 1.0), "grid");
+                canvas.grid_line(pt(axis.px(t), 1.0), pt(axis.px(t), height - 1.0));
             }
         }
         if self.head {

@@ -17,12 +17,12 @@ pub enum Anchor {
 }
 
 impl Anchor {
-    /// The SVG word.
-    pub fn word(self) -> &'static str {
+    /// The class that anchors it; none where SVG does so by itself.
+    pub fn class(self) -> Option<&'static str> {
         match self {
-            Anchor::Start => "start",
-            Anchor::Middle => "middle",
-            Anchor::End => "end",
+            Anchor::Start => None,
+            Anchor::Middle => Some("am"),
+            Anchor::End => Some("ae"),
         }
     }
 }

@@ -126,7 +126,7 @@ impl Draw for SeasonFigure {
         let mut canvas = Canvas::new(WIDTH, TOP + HEIGHT + 24.0);
         for (t, label) in self.degrees.ticks(&axis, 34.0) {
             let y = axis.px(t);
-            canvas.line(pt(LEFT, y), pt(WIDTH, y), "grid");
+            canvas.grid_line(pt(LEFT, y), pt(WIDTH, y));
             canvas.text(pt(LEFT - 6.0, y + 4.2), Anchor::End, Style::Tick, &label);
         }
         canvas.text(

@@ -27,10 +27,15 @@ pub enum Alternative<'a> {
 #[derive(Clone, Debug)]
 pub struct Canvas {
     out: String,
+    /// The lines of the grid, behind everything, as one path.
+    grid: String,
     width: f64,
     height: f64,
     taken: Vec<Rect>,
 }
+
+/// Air on both sides of a label that looks for a place, px.
+const AIR: f64 = 2.0;
 
 /// A pixel figure with at most two decimals.
 fn px(value: f64) -> String {
@@ -48,6 +53,7 @@ impl Canvas {
     pub fn new(width: f64, height: f64) -> Self {
         Self {
             out: String::new(),
+            grid: String::new(),
             width,
             height,
             taken: Vec::new(),
@@ -75,6 +81,18 @@ impl Canvas {
     pub fn line(&mut self, a: Pt, b: Pt, class: &str) {
         let ends = [("x1", a.x), ("y1", a.y), ("x2", b.x), ("y2", b.y)];
         self.element("line", &ends, &[("class", class)]);
+    }
+
+    /// A line of the grid.
+    pub fn grid_line(&mut self, a: Pt, b: Pt) {
+        let _ = write!(
+            self.grid,
+            "M{} {}L{} {}",
+            px(a.x),
+            px(a.y),
+            px(b.x),
+            px(b.y)
+        );
     }
 
     /// A line through points.
@@ -141,10 +159,9 @@ impl Canvas {
         }
         self.taken.push(text_box(at, anchor, style, text));
         let _ = write!(self.out, "<text x=\"{}\" y=\"{}\"", px(at.x), px(at.y));
-        self.attr("class", style.class());
-        // the anchor of SVG where none is said
-        if anchor != Anchor::Start {
-            self.attr("text-anchor", anchor.word());
+        match anchor.class() {
+            Some(anchor) => self.attr("class", &format!("{} {anchor}", style.class())),
+            None => self.attr("class", style.class()),
         }
         self.out.push('>');
         push_text(&mut self.out, text);
@@ -156,7 +173,11 @@ impl Canvas {
     pub fn place(&mut self, style: Style, text: &str, places: &[(Pt, Anchor)]) {
         let mut best: Option<(f64, Pt, Anchor)> = None;
         for (at, anchor) in places {
-            let cost = self.cost(text_box(*at, *anchor, style, text));
+            // letters run a little wider or narrower than measured: a hair of air on both sides
+            let mut r = text_box(*at, *anchor, style, text);
+            r.x -= AIR;
+            r.w += 2.0 * AIR;
+            let cost = self.cost(r);
             if best.is_none_or(|(least, ..)| cost < least) {
                 best = Some((cost, *at, *anchor));
             }
@@ -207,8 +228,15 @@ impl Canvas {
             px(at.x),
             px(at.y + 4.4)
         );
-        self.attr("class", if picked { "t-bal t-pick" } else { "t-bal" });
-        self.out.push_str(" text-anchor=\"middle\">");
+        self.attr(
+            "class",
+            if picked {
+                "t-bal am t-pick"
+            } else {
+                "t-bal am"
+            },
+        );
+        self.out.push('>');
         push_text(&mut self.out, letter);
         self.out.push_str("</text>");
     }
@@ -306,6 +334,9 @@ impl Canvas {
                 svg.told("title", &format!("{uid}-t"), title);
                 svg.told("desc", &format!("{uid}-d"), description);
             }
+        }
+        if !self.grid.is_empty() {
+            svg.element("path", &[], &[("d", &self.grid), ("class", "grid")]);
         }
         svg.out.push_str(&self.out);
         svg.out.push_str("</svg>");

@@ -77,7 +77,7 @@ impl TrendPanel {
         let frame = axes.frame();
         for steps in super::axes::round_ticks(&axes.y, 24.0) {
             let y = axes.y.px(steps);
-            canvas.line(pt(frame.x, y), pt(frame.right(), y), "grid");
+            canvas.grid_line(pt(frame.x, y), pt(frame.right(), y));
             let sign = if steps > 0.0 { "+" } else { "" };
             let label = format!("{sign}{}", grouped(steps));
             canvas.text(pt(frame.x - 6.0, y + 4.2), Anchor::End, Style::Tick, &label);

@@ -226,7 +226,8 @@ impl ViscosityFigure {
         let top = if ceiling > 0.0 {
             ceiling * 5.0
         } else {
-            thickest * 1.5
+            // no machine starts in oil thicker than this; beyond it only figures of the axis grow
+            (thickest * 1.5).min(1.5e6)
         };
         let bottom = if bottom.is_finite() {
             bottom.max(0.6)
@@ -295,6 +296,7 @@ fn label_jaw(canvas: &mut Canvas, axes: &Axes, jaw: &Jaw) {
     let y = axes.y.px(jaw.nu_mm2_s);
     let near = if jaw.floor { y + 23.0 } else { y - 14.0 };
     let far = if jaw.floor { y + 39.0 } else { y - 30.0 };
+    let farther = if jaw.floor { y + 55.0 } else { y - 46.0 };
     // on the side that serves, where the forbidden one has no room left
     let other = if jaw.floor { y - 8.0 } else { y + 17.0 };
     let inside = axes.frame().x + 4.0;
@@ -308,6 +310,9 @@ fn label_jaw(canvas: &mut Canvas, axes: &Axes, jaw: &Jaw) {
         (pt(b, far), Anchor::End),
         (pt(axes.frame().right() - 4.0, near), Anchor::End),
         (pt(axes.frame().right() - 4.0, far), Anchor::End),
+        (pt(f64::midpoint(a, b), farther), Anchor::Middle),
+        (pt(inside, farther), Anchor::Start),
+        (pt(axes.frame().right() - 4.0, farther), Anchor::End),
         (pt(f64::midpoint(a, b), other), Anchor::Middle),
         (pt(inside, other), Anchor::Start),
         (pt(axes.frame().right() - 4.0, other), Anchor::End),

@@ -34,8 +34,8 @@ pub struct OilSheet {
     pub lives: Vec<OilLife>,
     /// Where it is weighed.
     pub uses: Vec<OilUse>,
-    /// How many machines are left out of that table, in words.
-    pub more_uses: String,
+    /// What that table leaves out: machines the oil is barred from, and rows without room.
+    pub more_uses: Phrase,
     /// The calculation.
     pub steps: Vec<CalcStep>,
 }

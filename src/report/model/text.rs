@@ -115,6 +115,13 @@ impl Phrase {
         self
     }
 
+    /// Adds another phrase.
+    #[must_use]
+    pub fn join(mut self, other: Phrase) -> Self {
+        self.runs.extend(other.runs);
+        self
+    }
+
     /// Adds words that lead somewhere.
     #[must_use]
     pub fn link(mut self, text: impl Into<String>, href: Href) -> Self {

@@ -33,7 +33,7 @@ pub(super) fn sheet(sources: &SourceSet) -> Sheet {
             ("Name", "", 16.0),
             ("Part", "", 6.0),
             ("Key", "", 20.0),
-            ("Value", "as in the next column", 12.0),
+            ("Value", "", 12.0),
             ("Unit", "", 10.0),
             ("Whose word", "", 28.0),
             ("As written", "", 50.0),

@@ -1,10 +1,11 @@
 //! The sheets of the workbook, in their order.
 
+use super::oil_list::oil_list;
+use super::steps::{about, steps};
 use super::{Cell, Sheet, columns, inputs, write};
 use crate::decide::gaps::{PointGaps, ranked};
 use crate::demand::End;
 use crate::judge::weigh::Margin;
-use crate::model::oil::{Oil, Viscosity};
 use crate::model::stated::Stated;
 use crate::model::{OilNow, Point};
 use crate::quantity::kind::Unit;
@@ -15,7 +16,6 @@ use crate::results::gaps::table_of;
 use crate::results::json::Head;
 use crate::results::need::limit_amount;
 use crate::source::SourceSet;
-use crate::trace::{How, StepId};
 use crate::weighing::{Candidate, Scales, Weighed};
 use rust_xlsxwriter::XlsxError;
 
@@ -36,7 +36,7 @@ pub struct Content<'c, 's> {
 }
 
 impl<'s> Content<'_, 's> {
-    fn weighed(&self) -> impl Iterator<Item = &Weighed<'s>> {
+    pub(super) fn weighed(&self) -> impl Iterator<Item = &Weighed<'s>> {
         self.points.iter().map(|p| &p.weighed)
     }
 }
@@ -61,14 +61,14 @@ pub fn workbook(content: &Content<'_, '_>) -> Result<Vec<u8>, XlsxError> {
     write(&sheets, title, &content.head.date)
 }
 
-struct Shown {
-    nu: &'static Unit,
-    t: &'static Unit,
-    volume: &'static Unit,
+pub(super) struct Shown {
+    pub(super) nu: &'static Unit,
+    pub(super) t: &'static Unit,
+    pub(super) volume: &'static Unit,
 }
 
 impl Shown {
-    fn of(units: Units) -> Self {
+    pub(super) fn of(units: Units) -> Self {
         Self {
             nu: unit_of(Kind::KinematicViscosity, units),
             t: unit_of(Kind::Temperature, units),
@@ -77,7 +77,7 @@ impl Shown {
     }
 }
 
-fn point_cells(point: &Point) -> [Cell; 2] {
+pub(super) fn point_cells(point: &Point) -> [Cell; 2] {
     [
         Cell::text(point.machine.clone()),
         Cell::maybe(point.point.as_deref()),
@@ -210,116 +210,6 @@ fn governing(w: &Weighed<'_>, end: End, s: &Shown) -> [Cell; 3] {
     ]
 }
 
-fn oil_list(content: &Content<'_, '_>) -> Sheet {
-    let s = Shown::of(content.scales.units);
-    let site = content.scales.site;
-    let rows = site
-        .oils
-        .iter()
-        .enumerate()
-        .map(|(i, oil)| oil_row(content, i, oil, &s))
-        .collect();
-    Sheet {
-        name: "Oil list",
-        columns: columns(&[
-            ("Oil", "", 12.0),
-            ("Name", "", 40.0),
-            ("Kind", "", 11.0),
-            ("Base", "", 16.0),
-            ("Viscosity at 40", s.nu.name, 11.0),
-            ("Viscosity at 100", s.nu.name, 11.0),
-            ("Points", "", 16.0),
-            ("Pour point", s.t.name, 10.0),
-            ("Flash point", s.t.name, 10.0),
-            ("In stock", s.volume.name, 9.0),
-            ("Points that hold it today", "", 10.0),
-            ("Holds or tight on", "points", 10.0),
-            ("Fails on", "points", 10.0),
-            ("Open on", "points", 10.0),
-            ("Barred on", "points", 10.0),
-            ("Source", "", 34.0),
-            ("Note", "", 40.0),
-        ]),
-        rows,
-    }
-}
-
-fn oil_row(content: &Content<'_, '_>, index: usize, oil: &Oil, s: &Shown) -> Vec<Cell> {
-    use crate::judge::Verdict;
-    let curve = |t: f64| {
-        let at = crate::quantity::convert::celsius(t);
-        Some(s.nu.from_base(content.scales.oils[index].curves.nu_new(at).base()))
-    };
-    let count = |is: &dyn Fn(&Candidate) -> bool| {
-        let n = content
-            .weighed()
-            .filter(|w| w.candidates.iter().any(|c| c.oil == index && is(c)))
-            .count();
-        Cell::number(Some(n as f64), 0)
-    };
-    let held = content
-        .weighed()
-        .filter(|w| matches!(&w.point.oil_now, OilNow::Oil(id) if id.value == oil.id))
-        .count();
-    let barred = content
-        .weighed()
-        .filter(|w| w.barred.iter().any(|b| b.oil == index))
-        .count();
-    let from = match &oil.viscosity {
-        Viscosity::Points { .. } => "points",
-        _ => "grade",
-    };
-    vec![
-        Cell::text(oil.id.clone()),
-        Cell::maybe(oil.name.as_deref()),
-        Cell::text(oil.kind.word()),
-        Cell::text(
-            oil.base
-                .as_ref()
-                .map_or("not stated".to_owned(), |b| b.written.clone()),
-        ),
-        Cell::number(curve(40.0), 2),
-        Cell::number(curve(100.0), 3),
-        Cell::text(from),
-        bound(oil.pour_point.as_ref().map(|g| g.written.as_str()), s.t),
-        bound(
-            oil.flash_point.as_ref().map(|(g, _)| g.written.as_str()),
-            s.t,
-        ),
-        Cell::number(
-            oil.in_stock
-                .as_ref()
-                .map(|g| s.volume.from_base(g.value.base())),
-            0,
-        ),
-        Cell::number(Some(held as f64), 0),
-        count(&|c| matches!(c.judgement.verdict, Verdict::Holds | Verdict::Tight)),
-        count(&|c| c.judgement.verdict == Verdict::Fails),
-        count(&|c| c.judgement.verdict == Verdict::Open),
-        Cell::number(Some(barred as f64), 0),
-        Cell::maybe(oil.source.as_deref()),
-        Cell::maybe(oil.note.as_deref()),
-    ]
-}
-
-/// A temperature as a number; a bound, which is none, as text.
-fn bound(written: Option<&str>, unit: &Unit) -> Cell {
-    let Some(written) = written else {
-        return Cell::Empty;
-    };
-    match crate::quantity::parse::parse(
-        Kind::Temperature,
-        written
-            .split(" COC")
-            .next()
-            .unwrap_or(written)
-            .trim_end_matches(" PMCC"),
-    ) {
-        Ok(read) => Cell::number(Some(unit.from_base(read.amount.base)), 0),
-        Err(_) => Cell::text(written),
-    }
-}
-
 fn pairs(content: &Content<'_, '_>) -> Sheet {
     let s = Shown::of(content.scales.units);
     let (nu, t) = (s.nu.name, s.t.name);
@@ -424,10 +314,15 @@ fn of_table(name: &'static str, table: csv::Table) -> Sheet {
         _ => 14.0,
     };
     let column = |heading: &String| {
-        let (words, unit) = match heading.strip_suffix("_vg_step") {
-            Some(words) => (words, "VG step"),
-            None => (heading.as_str(), ""),
-        };
+        const UNITS: [(&str, &str); 3] = [
+            ("_vg_step", "VG step"),
+            ("_mm2_s", "mm2/s"),
+            ("_percent", "%"),
+        ];
+        let found = UNITS
+            .iter()
+            .find_map(|(end, unit)| Some((heading.strip_suffix(end)?, *unit)));
+        let (words, unit) = found.unwrap_or((heading.as_str(), ""));
         let mut words = words.replace('_', " ");
         if let Some(first) = words.get_mut(..1) {
             first.make_ascii_uppercase();
@@ -464,151 +359,5 @@ fn samples(content: &Content<'_, '_>) -> Sheet {
             columns: columns(&[("Sample", "", 14.0), ("State", "", 60.0)]),
             rows: vec![vec![Cell::Empty, Cell::text("no samples were read")]],
         },
-    }
-}
-
-/// The steps behind the oil in use and the oil proposed.
-fn steps(content: &Content<'_, '_>) -> Sheet {
-    let mut rows = Vec::new();
-    for w in content.weighed() {
-        let shown = w
-            .candidates
-            .iter()
-            .enumerate()
-            .filter(|(i, c)| *i == 0 || c.in_use);
-        for (_, c) in shown {
-            let told = content.scales.explain(w, c);
-            let mut results: Vec<StepId> = told.margins.iter().map(|e| e.step).collect();
-            results.dedup();
-            for step in told.trace.behind(&results) {
-                rows.push(step_row(content, w, c, step, &told.trace));
-            }
-        }
-    }
-    Sheet {
-        name: "Steps",
-        columns: columns(&[
-            ("Machine", "", 14.0),
-            ("Point", "", 12.0),
-            ("Oil", "", 12.0),
-            ("Step", "", 7.0),
-            ("What", "", 44.0),
-            ("About", "", 24.0),
-            ("Symbol", "", 10.0),
-            ("Result", "in the next column", 12.0),
-            ("Unit", "", 10.0),
-            ("Formula, or value as written", "", 50.0),
-            ("With", "", 30.0),
-            ("Source", "", 40.0),
-            ("Remarks", "", 40.0),
-        ]),
-        rows,
-    }
-}
-
-fn step_row(
-    content: &Content<'_, '_>,
-    w: &Weighed<'_>,
-    c: &Candidate,
-    step: &crate::trace::Step,
-    trace: &crate::trace::Derivation,
-) -> Vec<Cell> {
-    let [machine, point] = point_cells(w.point);
-    let unit = unit_of(step.amount.kind, content.scales.units);
-    let name = |id: &StepId| format!("s{}", id.0 + 1);
-    let (formula, with, source) = match &step.how {
-        How::Law { law, with } => {
-            let with: Vec<String> = with
-                .iter()
-                .filter(|(_, id)| trace.step(*id).is_some())
-                .map(|(symbol, id)| format!("{symbol} = {}", name(id)))
-                .collect();
-            (
-                law.formula.to_owned(),
-                with.join(", "),
-                law.source.to_owned(),
-            )
-        }
-        How::Given { written, origin } => (written.clone(), String::new(), origin.words()),
-    };
-    vec![
-        machine,
-        point,
-        Cell::text(content.scales.site.oils[c.oil].id.clone()),
-        Cell::text(name(&step.id)),
-        Cell::text(step.says.to_string()),
-        Cell::maybe(step.about.as_deref()),
-        Cell::text(step.symbol),
-        Cell::number(Some(step.amount.in_unit(unit)), 3),
-        Cell::text(unit.name),
-        Cell::text(formula),
-        Cell::text(with),
-        Cell::text(source),
-        Cell::text(step.notes.join("; ")),
-    ]
-}
-
-fn about(content: &Content<'_, '_>) -> Sheet {
-    let frame = &content.scales.site.frame;
-    let mut rows: Vec<Vec<Cell>> = Vec::new();
-    let mut say = |what: &str, text: Option<String>| {
-        if let Some(text) = text {
-            rows.push(vec![Cell::text(what), Cell::text(text)]);
-        }
-    };
-    say("Site", frame.site.clone());
-    say("Client", frame.client.clone());
-    say("Document", frame.document.clone());
-    say("Revision", frame.revision.clone());
-    say("Author", frame.author.clone());
-    say("Status", frame.status.clone());
-    say("Warning", content.warning.map(str::to_owned));
-    say("Date of judgement", Some(content.head.date.clone()));
-    say(
-        "Program",
-        Some(concat!("filmwright ", env!("CARGO_PKG_VERSION")).to_owned()),
-    );
-    say("Rules", Some(content.head.rules.clone()));
-    say(
-        "Fingerprint of all inputs and rules",
-        Some(content.head.inputs.clone()),
-    );
-    for file in content.sources.files() {
-        say("File read", Some(file.path.clone()));
-    }
-    for (word, means) in [
-        (
-            "holds",
-            "every limit is met over the whole ambient band, and the reserve is kept",
-        ),
-        ("tight", "every limit is met, the reserve is not kept"),
-        ("fails", "at least one limit is not met"),
-        (
-            "open",
-            "an input is missing, and its plausible range lies on both sides of a limit",
-        ),
-        (
-            "barred",
-            "a suitability rule bars the oil here; it is not weighed",
-        ),
-        (
-            "VG step",
-            "one grade of ISO 3448; margins are slid along the oil's own line and read at 40 degC",
-        ),
-    ] {
-        say(word, Some(means.to_owned()));
-    }
-    say(
-        "Numbers",
-        Some("unrounded; the number format rounds what is shown".to_owned()),
-    );
-    say(
-        "Putting the files together again",
-        Some("filmwright intake THIS.xlsx --sheet Inputs -o site.yaml; with --makes oils -o oils.yaml".to_owned()),
-    );
-    Sheet {
-        name: "About",
-        columns: columns(&[("What", "", 34.0), ("", "", 100.0)]),
-        rows,
     }
 }

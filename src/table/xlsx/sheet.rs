@@ -64,7 +64,47 @@ pub(super) fn read(
             Next::Open(tag) => reading.opens(&tag)?,
             Next::Close(name) => reading.closes(&name)?,
             Next::Text(piece) => reading.text(&piece),
-            Next::End => return Ok(reading.gather.done()),
+            Next::End => break,
+        }
+    }
+    drop(xml);
+    let mut gather = reading.gather;
+    let relations = super::parts::relations(archive, path)?;
+    if let Some(part) = relations.of_kind("comments") {
+        comments(archive, part, &mut gather)?;
+    }
+    Ok(gather.done())
+}
+
+/// The comments of a sheet.
+fn comments(archive: &mut Archive<'_>, path: &str, gather: &mut Gather<'_>) -> Result<(), Fault> {
+    let left = archive.left();
+    let Some(part) = archive.part(path)? else {
+        return Ok(());
+    };
+    let mut xml = Xml::new(part, path, left);
+    let mut open: Option<((u32, u32), String)> = None;
+    let mut inside = false;
+    loop {
+        match xml.next()? {
+            Next::Open(tag) if tag.name == "comment" => {
+                let at = tag.get("ref").and_then(place);
+                open = at.map(|at| (at, String::new()));
+            }
+            Next::Open(tag) if tag.name == "t" => inside = true,
+            Next::Text(piece) if inside => {
+                if let Some((_, text)) = &mut open {
+                    text.push_str(&piece);
+                }
+            }
+            Next::Close(name) if name == "t" => inside = false,
+            Next::Close(name) if name == "comment" => {
+                if let Some(((row, column), text)) = open.take() {
+                    gather.comment(row, column, plain(&text))?;
+                }
+            }
+            Next::End => return Ok(()),
+            _ => {}
         }
     }
 }

@@ -250,11 +250,26 @@ fn the_makers_limits_outrank_those_of_practice() {
     assert_eq!(water(with(table, ""))["level"], "watch");
     let site = super::sites::SITE.replace(
         "    cleanliness: 18/16/13\n",
-        "    cleanliness: 18/16/13\n    used oil: { water: 100 .. 300 ppm, maker }\n",
+        "    cleanliness: 18/16/13\n    used oil:\n      water: 100 ppm .. 300 ppm, maker\n",
     );
     let own = water(with(table, "").with("site.yaml", &site));
     assert_eq!(
         (&own["level"], &own["rule"]),
         (&"act".into(), &"used oil".into())
     );
+}
+
+#[test]
+fn findings_closed_since_the_last_audit_are_listed() {
+    let wet = "machine,label,drawn,nu40,nu100,water\nHP-1,H46,2026-06-01,46.1,6.8,900\n";
+    let dry = "machine,label,drawn,nu40,nu100,water\nHP-1,H46,2026-10-01,46.1,6.8,60\n";
+    let old = on(with(wet, ""), "audit -f json").out;
+    let new = on(with(dry, ""), "audit -f json").out;
+    let host = with(dry, "").with("old.json", &old).with("new.json", &new);
+    let ran = on(host, "compare old.json new.json");
+    assert!(ran.out.contains("closed\n"), "{}{}", ran.out, ran.err);
+    assert!(ran.out.contains("HP-1: Water entry"), "{}", ran.out);
+    let host = with(dry, "").with("old.json", &old).with("new.json", &new);
+    let document = on(host, "compare old.json new.json -f json").json();
+    assert_eq!(document["changes"][0]["finding"], "closed");
 }

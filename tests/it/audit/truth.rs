@@ -107,6 +107,11 @@ impl Truth {
     }
 }
 
+#[expect(
+    clippy::cast_possible_truncation,
+    clippy::cast_sign_loss,
+    reason = "a place in a short list"
+)]
 fn one_of<T: Copy>(chance: &mut Chance, list: &[T]) -> T {
     let at = (chance.between(0.0, 1.0) * list.len() as f64) as usize;
     list[at.min(list.len() - 1)]
@@ -158,8 +163,8 @@ fn befalls(truth: Truth, f: &mut Figures, label: &Oil, chance: &mut Chance) -> f
             let part = |own: f64, other: f64| (1.0 - share) * own + share * other;
             f[2] = part(f[2], flash);
             f[3] = part(f[3], acid);
-            for i in 0..3 {
-                f[6 + i] = part(f[6 + i], elements[i]);
+            for (own, other) in f[6..].iter_mut().zip(elements) {
+                *own = part(*own, other);
             }
             share
         }

@@ -157,7 +157,7 @@ fn row_4_doubts_itself_and_is_no_oil_in_use() {
         &[
             "oil now: unknown",
             "AGMA 7 Comp?",
-            "component: gear_worm",
+            "worm mesh: not stated",
             "22 L, assumed",
         ],
     );
@@ -269,6 +269,8 @@ fn the_draft_is_a_site_that_reads_and_weighs() {
     let host = ran.host.with("oils.yaml", "file: oils 1\nG:\n  kind: gear\n  viscosity: [220 mm2/s at 40 degC, 19 mm2/s at 100 degC]\n");
     let checked = on(host.clone(), "check --strict");
     assert_eq!(checked.exit, Exit::Done, "{}", checked.err);
+    let mut host = host;
+    host.stdout.clear();
     let weighed = on(host, "weigh -f json -q");
     assert_eq!(weighed.exit, Exit::Done, "{}", weighed.err);
     let all = weighed.json();

@@ -2,7 +2,7 @@
 
 use super::{demand, judged, near, needs, ran, step};
 use crate::judging::{rules, site};
-use filmwright::quantity::convert::{celsius, dynamic, mm, number, rpm, to_celsius, to_um};
+use filmwright::quantity::convert::{celsius, dynamic, mm, rpm, to_celsius, to_um};
 use filmwright::quantity::{Force, Measure};
 use filmwright::relation::journal::feed::{Coolant, Feed};
 use filmwright::relation::journal::film::Bearing;
@@ -166,6 +166,38 @@ fn too_thick_an_oil_does_not_hold() {
     }
 }
 
+/// Fed with oil that follows the ambient, the bearing gets too hot above some ambient: at that end
+/// of the band the oil settles just at the largest temperature.
+#[test]
+fn the_hot_end_of_the_band_is_where_the_bearing_gets_too_hot() {
+    let machine = "  J:\n    ambient: 10 .. 30 degC\n    lubrication: pressure-fed\n    oil now: TU-100\n    sump rise: 20 K\n    parts:\n      - journal bearing: end\n        diameter: 200 mm\n        width: 150 mm\n        radial clearance: 0.16 mm\n        speed: 3000 r/min\n        load: 40 kN\n        feed: pressure\n";
+    let found = ran("", machine, "weigh -f json -q").json();
+    let high = judged(&found, "TU-100")["band"]["high"]["value"].as_f64();
+    let high = high.expect("a hot end");
+    let geometry = Geometry::new(mm(200.0), mm(150.0), mm(0.16)).unwrap();
+    let duty = Duty::new(Force::from_base(40e3), rpm(3000.0)).unwrap();
+    let bearing = Bearing::new(geometry, duty, Route::Reynolds).unwrap();
+    let text = format!("file: site 1\nmachines:\n{machine}");
+    let (rules, oils) = (rules(), super::oils());
+    let site = site(&text, &oils, &rules);
+    let scales = Scales::new(&site, &rules, Settings::default()).expect("curves");
+    let at = site
+        .oils
+        .iter()
+        .position(|o| o.id == "TU-100")
+        .expect("listed");
+    let curves = &scales.oils[at].curves;
+    let cooling = Cooling::Oil {
+        inlet: celsius(high + 20.0),
+        feed: Feed::Drawn,
+        coolant: Coolant::iso7902(),
+    };
+    let eta = |t| dynamic(curves.new.nu_at(t), curves.density.at(t));
+    let settled = settled(&bearing, &cooling, eta).expect("a film");
+    let outlet = to_celsius(settled.outlet.expect("cooled by oil").0);
+    assert!((outlet - 90.0).abs() < 0.01, "{high} {outlet}");
+}
+
 /// Temporary shear counts in the film of a journal and is a step; without polymer nothing is lost.
 #[test]
 fn a_thickened_oil_needs_more_at_rest() {
@@ -266,5 +298,4 @@ fn what_no_oil_mends_is_said() {
             .contains("width over diameter is 2.50"),
         "{found}"
     );
-    let _ = number(1.0);
 }

@@ -9,7 +9,7 @@ use crate::intake::compare::{Merged, What, merge};
 use crate::intake::draft::Draft;
 use crate::results::intake::Outcome;
 use crate::source::FileId;
-use crate::source::yaml::read;
+use crate::source::yaml::{Node, read};
 use std::path::{Path, PathBuf};
 
 /// Ids and names of the oils of a folder.
@@ -31,7 +31,7 @@ pub(super) fn oils(session: &Session<'_>, folder: &Path) -> Vec<(String, Option<
         };
         let text = String::from_utf8_lossy(&bytes).into_owned();
         let root = read(FileId(0), &text).root;
-        for entry in root.iter().filter_map(|r| r.entries()).flatten() {
+        for entry in root.iter().filter_map(Node::entries).flatten() {
             let keys = entry.value.entries();
             let name = keys.and_then(|k| k.iter().find(|e| e.key.text == "name"));
             if entry.key.text != "file" && keys.is_some() {

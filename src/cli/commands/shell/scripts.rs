@@ -25,8 +25,11 @@ fn names_of(arg: &Arg) -> Option<&'static str> {
     }
 }
 
+/// A command, what names its positional arguments take, and its options.
+type Place = (String, Vec<&'static str>, Vec<(String, &'static str)>);
+
 /// Commands with the names their arguments take: positional, and by option.
-fn places(command: &Command) -> Vec<(String, Vec<&'static str>, Vec<(String, &'static str)>)> {
+fn places(command: &Command) -> Vec<Place> {
     command
         .get_subcommands()
         .map(|sub| {

@@ -1,6 +1,7 @@
 //! Quantities and ranges of an entry.
 
 use super::Fields;
+use crate::input::rules::probe::Shape;
 use crate::model::stated::Between;
 use crate::quantity::{Amount, Kind, Measure, parse};
 use serde_yaml::Value;
@@ -22,6 +23,7 @@ impl Fields<'_> {
         key: &'static str,
         kind: Kind,
     ) -> Option<Amount> {
+        self.told(key, || Shape::Quantity(kind));
         match self.take(key)? {
             Value::Number(n) if kind.spec().bare => n.as_f64().map(|base| Amount { kind, base }),
             other => self
@@ -48,6 +50,7 @@ impl Fields<'_> {
         &self,
         key: &'static str,
     ) -> Option<(Option<Q>, Option<Q>)> {
+        self.told(key, || Shape::Range(Q::KIND));
         let text = self.scalar(key, self.take(key)?)?;
         self.read_open(key, text)
     }
@@ -87,6 +90,7 @@ impl Fields<'_> {
         &self,
         key: &'static str,
     ) -> Option<Between<Q>> {
+        self.told(key, || Shape::Range(Q::KIND));
         let text = self.scalar(key, self.take(key)?)?;
         let (lo, hi) = self.read_open(key, text)?;
         if let (Some(lo), Some(hi)) = (lo, hi)

@@ -45,7 +45,7 @@ impl Plot {
         let frame = self.axes.frame();
         for nu in nus {
             let y = self.axes.y.px(*nu);
-            canvas.line(pt(frame.x, y), pt(frame.right(), y), "grid");
+            canvas.grid_line(pt(frame.x, y), pt(frame.right(), y));
             canvas.text(
                 pt(frame.x - 7.0, y + 4.2),
                 Anchor::End,
@@ -55,7 +55,7 @@ impl Plot {
         }
         for (t, label) in temps {
             let x = self.axes.x.px(*t);
-            canvas.line(pt(x, frame.y), pt(x, frame.bottom()), "grid");
+            canvas.grid_line(pt(x, frame.y), pt(x, frame.bottom()));
             let at = pt(x, frame.bottom() + self.tick_row);
             canvas.text(at, Anchor::Middle, Style::Tick, label);
         }
