@@ -13,7 +13,7 @@ use crate::relation::Law;
 pub static SLIDE: Law = Law {
     name: "d341-slide",
     title: "Line slid and turned about 40 degC in the coordinates of ASTM D341",
-    formula: "ln ln Z' = ln ln Z + rise + turn (ln T - ln 313.15)",
+    formula: "ln ln Z_2 = ln ln Z_1 + r + s (ln T - ln 313.15)",
     range: "while the line still falls",
     source: "ASTM D341; a parallel keeps the slope B, a turn about 40 degC keeps the grade",
 };
