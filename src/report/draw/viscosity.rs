@@ -146,6 +146,9 @@ impl Draw for ViscosityFigure {
         for jaw in &self.jaws {
             label_jaw(&mut canvas, &axes, jaw);
         }
+        for detail in &self.details {
+            detail.letter(&mut canvas, self, &axes);
+        }
         self.draw_bands(&mut canvas, &axes, below);
         let told = Alternative::Told {
             title: &self.title,

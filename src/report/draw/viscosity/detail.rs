@@ -87,13 +87,22 @@ impl Detail {
 
     /// Marks its window on the main figure.
     pub(super) fn outline(&self, canvas: &mut Canvas, figure: &ViscosityFigure, main: &Axes) {
+        canvas.rect(self.outlined(figure, main), "window");
+    }
+
+    /// The part of the main figure that the view enlarges.
+    fn outlined(&self, figure: &ViscosityFigure, main: &Axes) -> Rect {
         let (low, high) = self.window(figure);
         let x = |t: f64| main.x.px_inside(t);
         let y = |nu: f64| main.y.px_inside(nu);
         let a = pt(x(self.at_c - HALF_WINDOW), y(high));
         let b = pt(x(self.at_c + HALF_WINDOW), y(low));
-        let window = Rect::between(a, b);
-        canvas.rect(window, "window");
+        Rect::between(a, b)
+    }
+
+    /// Its letter on the main figure, set after the labels of the limits, which have fewer places.
+    pub(super) fn letter(&self, canvas: &mut Canvas, figure: &ViscosityFigure, main: &Axes) {
+        let window = self.outlined(figure, main);
         let places = [
             (pt(window.right() + 4.0, window.y + 12.0), Anchor::Start),
             (pt(window.x - 4.0, window.bottom() - 2.0), Anchor::End),
@@ -103,6 +112,12 @@ impl Detail {
                 Anchor::Start,
             ),
             (pt(window.x + 4.0, window.y - 4.0), Anchor::Start),
+            (pt(window.x + 4.0, window.bottom() + 14.0), Anchor::Start),
+            (
+                pt(window.right() - 4.0, window.bottom() + 14.0),
+                Anchor::End,
+            ),
+            (pt(window.right() + 4.0, window.y - 4.0), Anchor::Start),
         ];
         canvas.place(Style::Head, &self.letter, &places);
     }
