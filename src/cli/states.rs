@@ -31,9 +31,9 @@ impl Session<'_> {
         let is_file =
             self.host.size(Path::new(path)).is_ok() && self.host.read(Path::new(path)).is_ok();
         let found = if is_file {
-            self.from_results(set, path)?
+            self.state_of_results(set, path)?
         } else {
-            self.from_folder(set, path)?
+            self.state_of_folder(set, path)?
         };
         let (trees, rules, own, settings, problems) = found;
         if problems.failed().is_some() {
@@ -68,7 +68,7 @@ impl Session<'_> {
         })
     }
 
-    fn from_folder(&mut self, set: &mut SourceSet, path: &str) -> Result<Parts, Exit> {
+    fn state_of_folder(&mut self, set: &mut SourceSet, path: &str) -> Result<Parts, Exit> {
         let folder = Path::new(path);
         if !self.host.exists(folder) {
             self.fail(&format!(
@@ -84,7 +84,7 @@ impl Session<'_> {
         Ok((trees, rules, own_rules(&layers), settings, problems))
     }
 
-    fn from_results(&mut self, set: &mut SourceSet, path: &str) -> Result<Parts, Exit> {
+    fn state_of_results(&mut self, set: &mut SourceSet, path: &str) -> Result<Parts, Exit> {
         let bytes = self.host.read(Path::new(path)).map_err(|e| {
             self.fail(&format!("{path} cannot be read: {e}"));
             Exit::File

@@ -76,7 +76,24 @@ pub(super) fn pair<R: Recorder>(
         v.effective_width
     });
     cx.r.note(|| "shafts at right angles; mid-face, straight or spiral teeth".to_owned());
-    let v = made.value;
+    let (speed, torque) = duty(cx, made.value, ratio, n, torque);
+    Some(Pair {
+        ratio,
+        speed,
+        distance,
+        width,
+        torque,
+    })
+}
+
+/// Speed and torque of the virtual pinion.
+fn duty<R: Recorder>(
+    cx: &mut Context<'_, '_, R>,
+    v: Virtual,
+    ratio: Known<Ratio>,
+    n: Known<AngularVelocity>,
+    torque: Known<Torque>,
+) -> (Known<AngularVelocity>, Known<Torque>) {
     let speed = cx.r.law(
         "n_v1",
         "speed of the virtual pinion",
@@ -91,13 +108,7 @@ pub(super) fn pair<R: Recorder>(
         (("T1", torque), ("u_v", ratio)),
         |(t, _): (Torque, Ratio)| v.torque(t),
     );
-    Some(Pair {
-        ratio,
-        speed,
-        distance,
-        width,
-        torque,
-    })
+    (speed, torque)
 }
 
 /// Pitch diameters of the virtual gears, m.

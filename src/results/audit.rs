@@ -96,6 +96,33 @@ fn percent(share: Option<f64>) -> Value {
     )
 }
 
+/// How it serves: its margins, and what the machine asks of it at 40 and 100 °C.
+fn service(m: &mut Map<String, Value>, j: &Judged) {
+    let serves = j.serves.as_ref();
+    let margin = |m: Option<crate::judge::Margin>| steps(m.map(|m| m.value));
+    let kelvins = |m: Option<crate::judge::Margin>| {
+        m.map_or(Value::Null, |m| json::kelvins_margin(m.value, None))
+    };
+    m.insert(
+        "margins".into(),
+        json!({
+            "hot": margin(serves.and_then(|s| s.judgement.hot)),
+            "cold": margin(serves.and_then(|s| s.judgement.cold)),
+            "pour": kelvins(serves.and_then(|s| s.judgement.pour)),
+            "oil": kelvins(serves.and_then(|s| s.judgement.oil)),
+        }),
+    );
+    m.insert(
+        "asks".into(),
+        json!({
+            "at_40": { "floor": nu(serves.and_then(|s| s.floor40)), "ceiling": nu(serves.and_then(|s| s.ceiling40)) },
+            "at_100": { "floor": nu(serves.and_then(|s| s.floor100)), "ceiling": nu(serves.and_then(|s| s.ceiling100)) },
+            "no_value_fits": serves.is_some_and(crate::audit::serves::Serves::no_value_fits),
+            "slope": serves.map(|s| match s.slope { Slope::Own => "the sample's own", Slope::OfLabel => "the labelled oil's" }),
+        }),
+    );
+}
+
 /// One sample.
 fn sample(scales: &Scales<'_>, audit: &Audit, j: &Judged) -> Value {
     let b = &audit.bottles[j.bottle];
@@ -135,29 +162,7 @@ fn sample(scales: &Scales<'_>, audit: &Audit, j: &Judged) -> Value {
     m.insert("serves".into(), json!(j.word()));
     m.insert("because".into(), json!(because(j)));
     m.insert("barred_by".into(), conditions(&j.barred));
-    let serves = j.serves.as_ref();
-    let margin = |m: Option<crate::judge::Margin>| steps(m.map(|m| m.value));
-    let kelvins = |m: Option<crate::judge::Margin>| {
-        m.map_or(Value::Null, |m| json::kelvins_margin(m.value, None))
-    };
-    m.insert(
-        "margins".into(),
-        json!({
-            "hot": margin(serves.and_then(|s| s.judgement.hot)),
-            "cold": margin(serves.and_then(|s| s.judgement.cold)),
-            "pour": kelvins(serves.and_then(|s| s.judgement.pour)),
-            "oil": kelvins(serves.and_then(|s| s.judgement.oil)),
-        }),
-    );
-    m.insert(
-        "asks".into(),
-        json!({
-            "at_40": { "floor": nu(serves.and_then(|s| s.floor40)), "ceiling": nu(serves.and_then(|s| s.ceiling40)) },
-            "at_100": { "floor": nu(serves.and_then(|s| s.floor100)), "ceiling": nu(serves.and_then(|s| s.ceiling100)) },
-            "no_value_fits": serves.is_some_and(crate::audit::serves::Serves::no_value_fits),
-            "slope": serves.map(|s| match s.slope { Slope::Own => "the sample's own", Slope::OfLabel => "the labelled oil's" }),
-        }),
-    );
+    service(&mut m, j);
     let (vi, vi_new) = j.change.vi;
     m.insert(
         "change".into(),

@@ -4,7 +4,7 @@ use super::json;
 use super::weigh::band;
 use crate::decide::ask::{Ask, Specification};
 use crate::decide::season::{Pair, Season};
-use crate::model::word::Word as _;
+use crate::model::word::Word;
 use crate::weighing::{Scales, Weighed};
 use serde_json::{Map, Value, json};
 
@@ -87,9 +87,9 @@ fn specification(scales: &Scales<'_>, m: &mut Map<String, Value>, spec: &Specifi
             "base": spec.base.word(),
             "classes": c.classes,
             "additives": c.additives.iter().map(|a| a.word()).collect::<Vec<_>>(),
-            "food_class": c.facts.food_class.map(|f| f.word()),
-            "environment": c.facts.environment.map(|f| f.word()),
-            "fire_class": c.facts.fire_class.map(|f| f.word()),
+            "food_class": c.facts.food_class.map(Word::word),
+            "environment": c.facts.environment.map(Word::word),
+            "fire_class": c.facts.fire_class.map(Word::word),
             "without": without,
             "conditions": c.conditions.iter().map(|(rule, says)| json!({ "rule": rule, "says": says })).collect::<Vec<_>>(),
             "verdict": spec.judgement.verdict.word(),

@@ -8,7 +8,7 @@ use filmwright::cli::exit::Exit;
 use filmwright::cli::host::MemoryHost;
 use serde_json::Value;
 
-const SITE: &str = r#"file: site 1
+const SITE: &str = r"file: site 1
 site: Small works
 reviewed: 2026-11-02
 revision: A
@@ -79,9 +79,9 @@ machines:
     parts:
       - rolling bearing: { bore: 120 mm, outside: 215 mm, type: spherical roller }
         speed: 980 r/min
-"#;
+";
 
-const OILS: &str = r#"file: oils 1
+const OILS: &str = r"file: oils 1
 M-220:
   name: Mineral EP 220
   kind: gear
@@ -124,7 +124,7 @@ H-46:
   pour point: -30 degC
   density: 870 kg/m3 at 15 degC
   price: 2.10 per L
-"#;
+";
 
 /// Text in a file, what it is replaced by, and the name of that input.
 type Edit = (&'static str, &'static str, &'static str);

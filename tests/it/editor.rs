@@ -208,7 +208,7 @@ fn every_shell_has_a_script_that_asks_for_the_names() {
         for want in wanted {
             assert!(ran.out.contains(want), "{shell}: {want}\n{}", ran.out);
         }
-        assert!(!ran.out.contains("\r"));
+        assert!(!ran.out.contains('\r'));
     }
 }
 

@@ -18,10 +18,13 @@ fn host(machine: &str, parts: &str, oils: &str) -> MemoryHost {
 }
 
 fn indented(text: &str, by: usize) -> String {
-    text.lines()
-        .filter(|l| !l.trim().is_empty())
-        .map(|l| format!("{}{l}\n", " ".repeat(by)))
-        .collect()
+    let mut out = String::new();
+    for line in text.lines().filter(|l| !l.trim().is_empty()) {
+        out.push_str(&" ".repeat(by));
+        out.push_str(line);
+        out.push('\n');
+    }
+    out
 }
 
 const OIL: &str = "X-1:

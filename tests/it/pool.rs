@@ -42,7 +42,7 @@ fn place(chance: &mut Chance, oils: usize) -> Place {
     let fence = fences[below(chance, fences.len())];
     let now = below(chance, oils + 2);
     let mut weighed: Vec<(Candidate<'_>, Offer)> = Vec::new();
-    for oil in 0..oils {
+    for (oil, id) in NAMES.iter().enumerate().take(oils) {
         let barred = yes(chance, 0.35);
         let words = [
             Verdict::Holds,
@@ -61,9 +61,9 @@ fn place(chance: &mut Chance, oils: usize) -> Place {
             in_use: now == oil,
             on_site: true,
             conditions,
-            excess: below(chance, 5) as i64,
+            excess: i64::try_from(below(chance, 5)).expect("small"),
             price: None,
-            id: NAMES[oil],
+            id,
         };
         let offer = Offer {
             oil,
@@ -122,12 +122,11 @@ fn home(places: &[Place], terms: &Terms, oil: usize, fences: &[Fence]) -> Fence 
     best[0]
 }
 
+/// Its length, what decides between lists of that length, and its oils by fence.
+type Shortest = (usize, Ties, Vec<(Fence, usize)>);
+
 /// The best list by looking at every subset, fence by fence; `None` where there is none.
-fn by_hand(
-    places: &[Place],
-    oils: usize,
-    terms: &Terms,
-) -> Option<(usize, Ties, Vec<(Fence, usize)>)> {
+fn by_hand(places: &[Place], oils: usize, terms: &Terms) -> Option<Shortest> {
     let mut fences: Vec<Fence> = places.iter().map(|p| p.fence).collect();
     fences.sort_unstable();
     fences.dedup();

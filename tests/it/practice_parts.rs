@@ -5,6 +5,11 @@
 //! Source of the limits: the entries of `rules/parts`, each with its own. The oils are made for
 //! the purpose, with lines of one slope (ASTM D341, B = 3.55).
 
+#![expect(
+    clippy::disallowed_methods,
+    reason = "the oils of the tests need no bits that are the same everywhere"
+)]
+
 use crate::scenario::on;
 use filmwright::assets::builtin_rules;
 use filmwright::cli::host::MemoryHost;

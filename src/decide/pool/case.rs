@@ -69,7 +69,8 @@ impl Default for Terms {
 impl Terms {
     /// What is left of the offers of a place under these terms.
     pub fn offers(&self, place: &Place) -> Vec<Offer> {
-        let allowed = |o: &&Offer| !(self.never_tight && o.tight) && !self.drop.contains(&o.oil);
+        let too_tight = |o: &Offer| self.never_tight && o.tight;
+        let allowed = |o: &&Offer| !too_tight(o) && !self.drop.contains(&o.oil);
         place.offers.iter().filter(allowed).copied().collect()
     }
 }

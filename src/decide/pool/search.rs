@@ -113,7 +113,7 @@ impl Search {
     }
 
     /// Oils of a row not left out.
-    pub(super) fn open<'s>(&'s self, row: usize) -> impl Iterator<Item = usize> + 's {
+    pub(super) fn open(&self, row: usize) -> impl Iterator<Item = usize> + '_ {
         self.rows[row].iter().copied().filter(|o| !self.out[*o])
     }
 

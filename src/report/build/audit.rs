@@ -237,7 +237,7 @@ fn finding(audit: &Audit, i: usize, f: &Found) -> Finding {
 
 fn day_number(day: Date) -> f64 {
     let from = Date::constant(2000, 1, 1);
-    f64::from(from.until(day).map(|s| s.get_days()).unwrap_or(0))
+    f64::from(from.until(day).map_or(0, |s| s.get_days()))
 }
 
 fn mark_of(j: &Judged) -> Mark {

@@ -103,7 +103,7 @@ fn unit_width(c: char) -> f64 {
     }
 }
 
-/// How much wider the widest letter of the list of fonts runs (DejaVu Sans, Verdana): labels are
+/// How much wider the widest letter of the list of fonts runs (`DejaVu Sans`, Verdana): labels are
 /// kept apart by it, so that they stay apart with every font of the list. Measured in a browser.
 const WIDER: f64 = 1.13;
 

@@ -367,7 +367,9 @@ proptest::proptest! {
         let mut text = String::from("tag;desc;lubricant;fill;temp\n");
         for (tag, desc, oil, fill) in &cells {
             let q = |t: &str| format!("\"{}\"", t.replace('"', "\"\""));
-            text.push_str(&format!("{};{};{};{};{}\n", q(tag), q(desc), q(oil), q(fill), q(fill)));
+            let row = [q(tag), q(desc), q(oil), q(fill), q(fill)].join(";");
+            text.push_str(&row);
+            text.push('\n');
         }
         let ran = read(&text, "-q --delimiter semicolon");
         proptest::prop_assert_eq!(ran.exit, Exit::Done, "{}", ran.err);

@@ -33,7 +33,7 @@ fn a_textbook_bearing_needs_the_viscosity_of_its_chart_reading() {
     assert_eq!(demand(&found, "film")["confidence"], "medium");
 }
 
-/// film_checks.json, jb-61: 40 kN on 200 x 150 mm, psi 1.6 per mille, 3000 r/min, film of 20 um:
+/// `film_checks.json`, jb-61: 40 kN on 200 x 150 mm, psi 1.6 per mille, 3000 r/min, film of 20 um:
 /// 2.04682 mPa s by an independent solver, 2.0966 by the closed forms of ISO 7902-2 (from memory).
 #[test]
 fn the_turbine_bearing_needs_what_the_independent_solver_says() {
@@ -46,7 +46,7 @@ fn the_turbine_bearing_needs_what_the_independent_solver_says() {
     near(step(&found, "P"), 13.3333, 1e-4);
 }
 
-/// h_lim 14 um at 200 mm and 31.4 m/s (ISO 7902-3, from memory, film_checks.json jb-7); Trumpler's
+/// `h_lim` 14 um at 200 mm and 31.4 m/s (ISO 7902-3, from memory, `film_checks.json` jb-7); Trumpler's
 /// 0.0002 in + 0.00004 D (from memory, jb-81), 13.08 um there; the greatest of them is asked for.
 #[test]
 fn the_greatest_film_is_asked_for() {
@@ -216,7 +216,7 @@ fn a_thickened_oil_needs_more_at_rest() {
     assert!(kept("TU-46").is_none());
 }
 
-/// film_checks.json, th-2-fin-m2-LB1: W* = 0.0692519 for a square pad at ratio 2. By hand for 8
+/// `film_checks.json`, th-2-fin-m2-LB1: W* = 0.0692519 for a square pad at ratio 2. By hand for 8
 /// pads of 60 x 60 mm under 60 kN at 1000 r/min on 250 mm: W = 7500 N, U = 13.090 m/s,
 /// eta = 7500 (10e-6)^2/(0.0692519 13.090 0.06^2 0.06) = 3.830 mPa s.
 #[test]
