@@ -211,6 +211,20 @@ pub struct Demands {
 }
 
 impl Demands {
+    /// Limits whose temperature follows an ambient that is not stated.
+    fn placeless(&self) -> Vec<Undecided> {
+        let judges = |d: &&Demand| d.standing == Standing::Judges && d.end != End::OilCeiling;
+        let judged = self.list.iter().filter(judges);
+        judged
+            .filter(|d| !d.at.is_unknown() && self.governing_temperature(d).is_none())
+            .map(|d| Undecided {
+                end: d.end,
+                part: d.part.clone(),
+                because: format!("{}: the ambient range is not stated", d.says),
+            })
+            .collect()
+    }
+
     /// Temperature a demand is judged at: running floors and the oil's ceiling at the hottest
     /// ambient, all others at the coldest. `None` where it is not known.
     pub fn governing_temperature(&self, demand: &Demand) -> Option<f64> {
@@ -267,6 +281,7 @@ pub fn demands<R: Recorder>(
     point::pour(&mut cx);
     point::ceiling(&mut cx);
     point::replace(&mut cx.list);
+    limited_at_all(&mut cx);
     let losses = losses::losses(&mut cx);
     let Context {
         list,
@@ -274,7 +289,7 @@ pub fn demands<R: Recorder>(
         information,
         ..
     } = cx;
-    Demands {
+    let mut demands = Demands {
         list,
         undecided,
         information,
@@ -284,6 +299,30 @@ pub fn demands<R: Recorder>(
         tolerances: inputs.tolerances,
         losses,
         usual: inputs.usual,
+    };
+    let placeless = demands.placeless();
+    demands.undecided.extend(placeless);
+    demands
+}
+
+/// A point of which nothing limits the viscosity is not decided by that: no oil may hold on it.
+fn limited_at_all<R: Recorder>(cx: &mut Context<'_, '_, R>) {
+    let limits = |d: &Demand| {
+        let end = matches!(
+            d.end,
+            End::HotFloor | End::RunningCeiling | End::StartCeiling | End::MakerGrade
+        );
+        end && matches!(d.standing, Standing::Judges)
+    };
+    // A component of the rules without a window is known to ask for none.
+    let component = |p: &Part| matches!(p.kind, PartKind::Component(_));
+    let known = cx.point.parts.iter().any(component);
+    if !known && cx.undecided.is_empty() && !cx.list.iter().any(limits) {
+        cx.undecided.push(Undecided {
+            end: End::HotFloor,
+            part: None,
+            because: "nothing stated limits the viscosity: a part with its duty, or the maker's floor, ceiling or grade, is missing".to_owned(),
+        });
     }
 }
 

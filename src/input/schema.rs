@@ -142,6 +142,13 @@ fn fields(value: Value) -> Map<String, Value> {
     }
 }
 
+/// A word with what stands behind it: `FKM, maker`.
+fn sourced(words: &[&str]) -> Value {
+    let plain = |w: &&str| w.replace('+', "\\+").replace('.', "\\.");
+    let words: Vec<String> = words.iter().map(plain).collect();
+    json!({"type": "string", "pattern": format!("^({}) *,", words.join("|"))})
+}
+
 /// What the reader takes as text may look like a number or a truth value to an editor.
 fn shape(form: &Form) -> Value {
     let text = json!(["string", "number", "boolean"]);
@@ -151,9 +158,10 @@ fn shape(form: &Form) -> Value {
         }
         Form::FileKind => json!({"type": "string"}),
         Form::Whole => json!({"type": ["integer", "string"]}),
-        Form::Word(words) => json!({"enum": words}),
+        Form::Word(words) => json!({"anyOf": [{"enum": words}, sourced(words)]}),
         Form::Words(words) => json!({"anyOf": [
             {"enum": words},
+            sourced(words),
             {"type": "array", "items": {"enum": words}},
         ]}),
         Form::Names => json!({"type": ["string", "array"], "items": {"type": text}}),

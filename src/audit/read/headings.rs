@@ -492,7 +492,10 @@ mod tests {
 
     #[test]
     fn headings_are_known_without_unit_and_case() {
-        assert_eq!(known("Visc. @ 40 °C (cSt)"), None);
+        assert_eq!(
+            known("Visc. @ 40 °C (cSt)"),
+            Some(Column::InUse(Reading::Nu40))
+        );
         assert_eq!(known("Visc 40C (cSt)"), Some(Column::InUse(Reading::Nu40)));
         assert_eq!(known("KV100 [mm²/s]"), Some(Column::InUse(Reading::Nu100)));
         assert_eq!(

@@ -21,9 +21,8 @@ fn a_label_for_every_point_with_an_oil() {
         "a label is 56 wide"
     );
     assert!(
-        ran.out.contains(
-            "M04\nWheeled loaders, vane and axial piston pumps\n\n  Fill with  O-12, 180"
-        ),
+        ran.out
+            .contains("M04\nWheeled loaders, vane and axial piston pumps\n\n  Fill with O-12, 180"),
         "{}",
         ran.out
     );

@@ -36,7 +36,7 @@ pub struct Detail {
 }
 
 const WIDTH: f64 = 384.0;
-const LEFT: f64 = 60.0;
+const LEFT: f64 = 67.0;
 const RIGHT: f64 = 66.0;
 const TOP: f64 = 34.0;
 const HEIGHT: f64 = 186.0;
