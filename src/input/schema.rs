@@ -144,7 +144,15 @@ fn fields(value: Value) -> Map<String, Value> {
 
 /// A word with what stands behind it: `FKM, maker`.
 fn sourced(words: &[&str]) -> Value {
-    let plain = |w: &&str| w.replace('+', "\\+").replace('.', "\\.");
+    let plain = |w: &&str| {
+        w.chars().fold(String::new(), |mut out, c| {
+            if r"\^$.*+?()[]{}|".contains(c) {
+                out.push('\\');
+            }
+            out.push(c);
+            out
+        })
+    };
     let words: Vec<String> = words.iter().map(plain).collect();
     json!({"type": "string", "pattern": format!("^({}) *,", words.join("|"))})
 }

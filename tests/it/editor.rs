@@ -36,7 +36,7 @@ fn yaml_below(folder: &Path) -> Vec<PathBuf> {
 
 /// The validator for a file, by what its first line of content says it is.
 fn validator(yaml: &str) -> Option<jsonschema::Validator> {
-    let head = yaml.lines().find_map(|l| l.strip_prefix("file:"))?;
+    let (_, head) = yaml.split_once("file:")?;
     let kind = head.split_whitespace().next()?;
     let schema = text(
         &Path::new(ROOT)
