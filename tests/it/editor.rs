@@ -40,7 +40,7 @@ fn validator(yaml: &str) -> Option<jsonschema::Validator> {
     let kind = head.split_whitespace().next()?;
     let schema = text(
         &Path::new(ROOT)
-            .join(".filmwright")
+            .join("tests/schemas/.filmwright")
             .join(format!("{kind}.schema.json")),
     );
     let schema: serde_json::Value = serde_json::from_str(&schema).expect("JSON");
@@ -62,8 +62,8 @@ fn the_committed_schemas_are_those_of_the_reader() {
         let name = format!(".filmwright/{kind}.schema.json");
         let made = String::from_utf8(ran.host.files[Path::new(&name)].clone()).expect("UTF-8");
         assert!(
-            made == text(&Path::new(ROOT).join(&name)),
-            "{name}: filmwright schema --write -C . writes it anew"
+            made == text(&Path::new(ROOT).join("tests/schemas").join(&name)),
+            "{name}: filmwright schema --write -C tests/schemas writes it anew"
         );
         let printed = on(MemoryHost::new(), &format!("schema {kind}"));
         assert!(printed.out == made);
@@ -124,7 +124,7 @@ fn every_case_of_a_bad_shape_fails() {
             } else {
                 "site"
             };
-            let schema = text(&Path::new(ROOT).join(format!(".filmwright/{kind}.schema.json")));
+            let schema = text(&Path::new(ROOT).join(format!("tests/schemas/.filmwright/{kind}.schema.json")));
             let schema: serde_json::Value = serde_json::from_str(&schema).expect("JSON");
             let validator = jsonschema::draft7::new(&schema).expect("a schema of draft 7");
             seen += 1;
