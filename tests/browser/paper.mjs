@@ -189,7 +189,7 @@ async function legible(tab, finding) {
     const result = await tab.evaluate(() => globalThis.axe.run(document, { runOnly: ['color-contrast'] }));
     finding.look(result.passes.length);
     for (const v of result.violations) finding.faults.push(`${short(file)} in print: ${v.nodes[0].target} ${v.nodes[0].any[0]?.message}`);
-    const grey = await tab.evaluate(() => [...new Set([...document.querySelectorAll('main *')].map((e) => getComputedStyle(e).color))]
+    const grey = await tab.evaluate(() => [...new Set([...document.querySelectorAll('main *')].filter((e) => [...e.childNodes].some((n) => n.nodeType === 3 && n.textContent.trim() !== '')).map((e) => getComputedStyle(e).color))]
       .map((c) => c.match(/[\d.]+/g).map(Number)).map(([r, g, b]) => ({ r, g, b })));
     for (const { r, g, b } of grey) {
       const part = (v) => (v / 255 <= 0.03928 ? v / 255 / 12.92 : ((v / 255 + 0.055) / 1.055) ** 2.4);

@@ -124,7 +124,9 @@ fn every_case_of_a_bad_shape_fails() {
             } else {
                 "site"
             };
-            let schema = text(&Path::new(ROOT).join(format!("tests/schemas/.filmwright/{kind}.schema.json")));
+            let schema = text(
+                &Path::new(ROOT).join(format!("tests/schemas/.filmwright/{kind}.schema.json")),
+            );
             let schema: serde_json::Value = serde_json::from_str(&schema).expect("JSON");
             let validator = jsonschema::draft7::new(&schema).expect("a schema of draft 7");
             seen += 1;

@@ -15,8 +15,8 @@ use crate::relation::Law;
 pub static J300: Law = Law {
     name: "sae-engine-grade",
     title: "SAE viscosity grade of an engine oil",
-    formula: "W grade: the coldest whose CCS, MRV (without yield stress) and nu100 limits hold; \
-              hot grade: the highest whose nu100 window and HTHS minimum hold",
+    formula: "W grade: the coldest whose CCS, MRV and nu100 limits hold; \
+              hot grade: the highest whose nu100 and HTHS hold",
     range: "new oil; CCS and MRV measured at the temperature of the grade",
     source: "SAE J300, limits of the 2015 to 2024 editions; choice among overlapping grades and \
              the limit of yield stress from memory",
