@@ -16,7 +16,7 @@ use crate::weighing::{Scales, Settings, Weighed};
 
 /// Runs `weigh`.
 pub fn weigh(session: &mut Session<'_>, args: &Weigh) -> Exit {
-    let mut loaded = match session.load(&[]) {
+    let mut loaded = match session.load(None) {
         Ok(loaded) => loaded,
         Err(exit) => return exit,
     };
