@@ -38,8 +38,9 @@ pub struct Settings {
     pub root: Node,
     /// The name before the key of each value, in the order of the entries.
     names: Vec<Option<String>>,
-    /// The part of a value that is for a point; none for a value that went into the trees.
-    of_points: Vec<Option<Option<String>>>,
+    /// What each value is for, once that has been found; those for anything else than the points
+    /// have gone into the trees.
+    aims: Vec<Aim>,
 }
 
 impl Settings {
@@ -48,13 +49,14 @@ impl Settings {
         let entries = self.root.entries().unwrap_or_default();
         entries
             .iter()
-            .zip(&self.of_points)
-            .filter_map(|(entry, part)| {
-                Some(Overlay {
+            .zip(&self.aims)
+            .filter_map(|(entry, aim)| match aim {
+                Aim::Point(part) => Some(Overlay {
                     targets: targets.to_vec(),
-                    part: part.clone()?,
+                    part: part.clone(),
                     entry,
-                })
+                }),
+                _ => None,
             })
             .collect()
     }
@@ -75,14 +77,10 @@ impl Settings {
         for (entry, name) in entries.iter().zip(&self.names) {
             let value = set.slice(entry.value.span);
             let found = aim::aim(problems, (name.as_deref(), entry), value, (about, trees));
-            self.of_points.push(match found {
-                Some(Aim::Point(part)) => Some(part),
-                Some(other) => {
-                    aim::put(trees, &other, entry);
-                    None
-                }
-                None => None,
-            });
+            if let Some(aim) = found {
+                aim::put(trees, &aim, entry);
+                self.aims.push(aim);
+            }
         }
         problems.failed().map_or(Ok(()), Err)
     }
@@ -130,7 +128,7 @@ pub fn settings(
                 file,
                 root,
                 names,
-                of_points: Vec::new(),
+                aims: Vec::new(),
             })
         }
         _ => Err(problems.error(no_pair(&texts.join(" ")))),

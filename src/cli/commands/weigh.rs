@@ -186,7 +186,8 @@ fn print(
             head.files = session.carried(loaded);
             head.reserve = settings.reserve;
             head.as_new = !settings.worn;
-            session.result(&document_of(scales, all, scatters, seasons, &head))
+            let mut parts = document_of(scales, all, scatters, seasons, &head);
+            session.result_in_parts(&mut parts)
         }
         Format::Csv => session.table(&table_of(scales, all, scatters)),
         Format::Text => {

@@ -29,7 +29,7 @@ pub struct About {
 
 /// What a value is for.
 #[derive(Clone, Debug, PartialEq, Eq)]
-pub(super) enum Aim {
+pub enum Aim {
     /// The points of the run, or the part of that name.
     Point(Option<String>),
     /// An oil.
@@ -151,7 +151,7 @@ fn named(name: &str, about: &About, names: &Names) -> Vec<Aim> {
             found.push(aim);
         }
     };
-    let after = |word: &str| name.strip_prefix(word).map(str::trim).unwrap_or(name);
+    let after = |word: &str| name.strip_prefix(word).map_or(name, str::trim);
     let known = |list: &[String], word: &str| {
         let wanted = after(word);
         list.iter().any(|n| n == wanted).then(|| wanted.to_owned())

@@ -88,11 +88,14 @@ fn the_stated_value_of_an_oil_an_area_or_the_house_changes_nothing() {
     assert!(set > 40, "only {set} values were set");
 }
 
+/// A site where everything that has a name states something.
+const NAMED: &str = "file: site 1\nsite: Test works\nhouse:\n  reserve: 0.5 step\n  rules:\n    slow, EP:\n      replaces: iso281-kappa\n      limit: kappa >= 0.9\n      for: EP\nareas:\n  yard:\n    ambient: -15 .. 35 degC\nmachines:\n  M1:\n    area: yard\n    lubrication: splash\n    oil now: B-220\n    sump rise: 40 K\n    start limit: 25000 mm2/s, maker\n    parts:\n      - rolling bearing: 22220\n        speed: 236 r/min\n        rule: slow, EP\n  M2:\n    like: M1\n";
+const NAMED_OILS: &str = "file: oils 1\nB-220:\n  kind: gear\n  base: PAO, no polymer\n  classes: [CKC]\n  additives: [EP]\n  viscosity: [220 mm2/s at 40 degC, 26.4 mm2/s at 100 degC]\n  pour point: -45 degC\n  density: 860 kg/m3 at 15 degC\nC-320:\n  like: B-220\n  viscosity: [320 mm2/s at 40 degC, 35 mm2/s at 100 degC]\n";
+
 /// A value on the command line does what the same value in the file does.
 #[test]
 fn any_input_by_its_name_is_as_if_the_file_said_so() {
-    let site = "file: site 1\nsite: Test works\nhouse:\n  reserve: 0.5 step\n  rules:\n    slow, EP:\n      replaces: iso281-kappa\n      limit: kappa >= 0.9\n      for: EP\nareas:\n  yard:\n    ambient: -15 .. 35 degC\nmachines:\n  M1:\n    area: yard\n    lubrication: splash\n    oil now: B-220\n    sump rise: 40 K\n    start limit: 25000 mm2/s, maker\n    parts:\n      - rolling bearing: 22220\n        speed: 236 r/min\n        rule: slow, EP\n  M2:\n    like: M1\n";
-    let oils = "file: oils 1\nB-220:\n  kind: gear\n  base: PAO, no polymer\n  classes: [CKC]\n  additives: [EP]\n  viscosity: [220 mm2/s at 40 degC, 26.4 mm2/s at 100 degC]\n  pour point: -45 degC\n  density: 860 kg/m3 at 15 degC\nC-320:\n  like: B-220\n  viscosity: [320 mm2/s at 40 degC, 35 mm2/s at 100 degC]\n";
+    let (site, oils) = (NAMED, NAMED_OILS);
     let host = |site: &str, oils: &str| {
         MemoryHost::new()
             .with("site.yaml", site)
