@@ -25,6 +25,8 @@ pub enum File {
     Rules,
     /// An option of the run: the reserve.
     Option,
+    /// An option of the run: whether oils are judged as new.
+    As,
 }
 
 /// One place at which the two states differ.

@@ -29,7 +29,7 @@ pub struct About {
 
 /// What a value is for.
 #[derive(Clone, Debug, PartialEq, Eq)]
-pub enum Aim {
+pub(super) enum Aim {
     /// The points of the run, or the part of that name.
     Point(Option<String>),
     /// An oil.
