@@ -157,6 +157,25 @@ fn the_oil_asked_for_holds_and_one_short_of_it_does_not() {
     };
     assert_ne!(by_line(vi - 2.0), "holds", "a lower index: {spec}");
     assert_ne!(word(vi, pour + 2.0), "holds", "a warmer pour point: {spec}");
+    // as a table
+    let table = on(host(&text, OILS), "need G-1 --ask -f csv -q").out;
+    let mut read = csv::Reader::from_reader(table.as_bytes());
+    let heads = read.headers().expect("headings").clone();
+    let cells = read.records().next().expect("a row").expect("of cells");
+    let cell = |head: &str| {
+        let place = heads.iter().position(|h| h == head);
+        place.and_then(|i| cells.get(i))
+    };
+    assert_eq!(
+        cell("iso_vg").map(str::to_owned),
+        Some(spec["iso_vg"].to_string())
+    );
+    assert_eq!(cell("vi_at_least").and_then(|c| c.parse().ok()), Some(vi));
+    assert_eq!(
+        cell("pour_at_most_degC").and_then(|c| c.parse().ok()),
+        Some(pour)
+    );
+    assert_eq!(cell("base"), spec["base"].as_str());
     // as text for a supplier, and on the sheet
     let told = on(host(&text, OILS), "need G-1 --ask -q").out;
     let figure = format!(
@@ -173,6 +192,8 @@ fn what_leaves_no_room_says_so() {
     let text = site("    start limit: 500 mm2/s, maker\n");
     let told = on(host(&text, OILS), "need G-1 --ask -q").out;
     assert!(told.contains("leave no room"), "{told}");
+    let csv = on(host(&text, OILS), "need G-1 --ask -f csv -q").out;
+    assert!(csv.contains("the limits leave no room"), "{csv}");
 }
 
 #[test]
