@@ -3,7 +3,7 @@
 use super::csv::{Cell, Table};
 use super::json;
 use super::weigh::band;
-use crate::decide::ask::{Ask, Specification};
+use crate::decide::ask::{Ask, NO_GREASE, Specification};
 use crate::decide::season::{Pair, Season};
 use crate::model::word::Word;
 use crate::quantity::Kind;
@@ -50,7 +50,7 @@ pub fn why_not(ask: &Ask) -> Option<String> {
         Ask::NoRoom { vi } => Some(format!(
             "the limits leave no room up to a viscosity index of {vi:.0}"
         )),
-        Ask::Grease => Some("greases are not solved for".to_owned()),
+        Ask::NoGrease => Some(NO_GREASE.to_owned()),
     }
 }
 
@@ -68,6 +68,9 @@ pub fn asks_table(scales: &Scales<'_>, asked: &[(Weighed<'_>, Ask)]) -> Table {
         "cold_viscosity_at_most_mpa_s",
         &format!("cold_viscosity_at_{}", t_unit.name),
         "base",
+        "thickeners",
+        "base_oil_low_mm2_s_at_40_degC",
+        "base_oil_high_mm2_s_at_40_degC",
         "classes",
         "additives",
         "food_class",
@@ -93,7 +96,7 @@ fn asks_row(scales: &Scales<'_>, w: &Weighed<'_>, ask: &Ask) -> Vec<Cell> {
         Cell::maybe(w.point.point.as_deref()),
     ];
     let Ask::Specification(spec) = ask else {
-        row.extend((0..16).map(|_| Cell::Empty));
+        row.extend((0..19).map(|_| Cell::Empty));
         row.push(Cell::maybe(why_not(ask).as_deref()));
         return row;
     };
@@ -102,7 +105,7 @@ fn asks_row(scales: &Scales<'_>, w: &Weighed<'_>, ask: &Ask) -> Vec<Cell> {
     let c = &spec.contents;
     let joined = |list: Vec<&str>| Cell::Text(list.join("; "));
     row.extend([
-        Cell::Number(f64::from(spec.grade)),
+        Cell::number(spec.grade.map(f64::from)),
         Cell::Number(spec.vi),
         Cell::number(spec.pour.map(t)),
         Cell::number(spec.loss.map(|l| l * 100.0)),
@@ -110,6 +113,14 @@ fn asks_row(scales: &Scales<'_>, w: &Weighed<'_>, ask: &Ask) -> Vec<Cell> {
         Cell::number(spec.cold.map(|(_, eta)| eta * 1e3)),
         Cell::number(spec.cold.map(|(at, _)| t(at))),
         Cell::from(spec.base.word()),
+        Cell::maybe(
+            spec.grease
+                .as_ref()
+                .map(|g| g.thickeners.join("; "))
+                .as_deref(),
+        ),
+        Cell::number(spec.grease.as_ref().map(|g| g.nu40.0 * 1e6)),
+        Cell::number(spec.grease.as_ref().map(|g| g.nu40.1 * 1e6)),
         joined(c.classes.iter().map(String::as_str).collect()),
         joined(c.additives.iter().map(|a| a.word()).collect()),
         Cell::maybe(c.facts.food_class.map(Word::word)),
@@ -160,6 +171,15 @@ fn specification(scales: &Scales<'_>, m: &mut Map<String, Value>, spec: &Specifi
                 "value": json::number(eta * 1e3), "unit": "mPa.s", "at": json::temperature(t, scales.units),
             })),
             "base": spec.base.word(),
+            "base_oil": spec.grease.as_ref().map(|g| json!({
+                "low": json::viscosity(g.nu40.0, scales.units), "high": json::viscosity(g.nu40.1, scales.units),
+                "at": "40 degC",
+            })),
+            "thickeners": spec.grease.as_ref().map(|g| &g.thickeners),
+            "fit_for": spec.grease.as_ref().map(|g| {
+                let t = |k: Option<f64>| k.map_or(Value::Null, |k| json::temperature(k, scales.units));
+                json!({ "low": t(g.fit_for.0), "high": t(g.fit_for.1) })
+            }),
             "classes": c.classes,
             "additives": c.additives.iter().map(|a| a.word()).collect::<Vec<_>>(),
             "food_class": c.facts.food_class.map(Word::word),
