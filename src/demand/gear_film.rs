@@ -70,7 +70,11 @@ pub(super) fn reference_diameter<R: Recorder>(
     .ok()
 }
 
-fn helix<R: Recorder>(cx: &mut Context<'_, '_, R>, part: &Part, mesh: &GearMesh) -> Known<Angle> {
+pub(super) fn helix<R: Recorder>(
+    cx: &mut Context<'_, '_, R>,
+    part: &Part,
+    mesh: &GearMesh,
+) -> Known<Angle> {
     let key = wanted("helix", "beta", "helix angle", "drawing");
     let usual = match mesh.kind {
         Some(GearType::Spur | GearType::Bevel) | None => (0.0, "straight teeth unless stated"),
@@ -308,7 +312,7 @@ fn pitch_point<R: Recorder>(
     let an = pressure_angle(cx, part, mesh);
     let bevel = matches!(mesh.kind, Some(GearType::Bevel | GearType::SpiralBevel));
     let pair = if bevel {
-        super::gear_bevel::pair(cx, part, mesh, (beta, an))?
+        super::gear_bevel::pair(cx, part, mesh)?
     } else {
         cylindrical(cx, part, mesh)?
     };
@@ -414,7 +418,7 @@ pub(super) fn torque<R: Recorder>(
     .ok()
 }
 
-fn pressure_angle<R: Recorder>(
+pub(super) fn pressure_angle<R: Recorder>(
     cx: &mut Context<'_, '_, R>,
     part: &Part,
     mesh: &GearMesh,
