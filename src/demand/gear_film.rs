@@ -76,15 +76,22 @@ pub(super) fn helix<R: Recorder>(
     mesh: &GearMesh,
 ) -> Known<Angle> {
     let key = wanted("helix", "beta", "helix angle", "drawing");
-    let usual = match mesh.kind {
-        Some(GearType::Spur | GearType::Bevel) | None => (0.0, "straight teeth unless stated"),
-        Some(_) => (12.0, "helical, usual angle"),
+    let (value, hi, why) = match mesh.kind {
+        Some(GearType::Spur | GearType::Bevel) | None => {
+            (0.0, 30.0, "straight teeth unless stated")
+        }
+        Some(GearType::Helical) => (12.0, 30.0, "helical, usual angle"),
+        Some(_) => (
+            35.0,
+            45.0,
+            "spiral, usual angle at mid-face; common practice",
+        ),
     };
     let usual = Usual {
-        value: degrees(usual.0),
+        value: degrees(value),
         lo: degrees(0.0),
-        hi: degrees(30.0),
-        why: usual.1,
+        hi: degrees(hi),
+        why,
     };
     match &mesh.helix {
         Some(_) => cx.or_assume(part, key, mesh.helix.as_ref(), usual),

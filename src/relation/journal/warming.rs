@@ -27,7 +27,7 @@ pub static RISE: Law = Law {
 pub static THICKEST: Law = Law {
     name: "journal-viscosity-for-rise",
     title: "viscosity at which the oil leaves a journal bearing at its largest temperature",
-    formula: "P_f(eta)/(2 rho c_p (Q3 + Q_p)(eta)) = (T_lim - T_in)/2, solved for eta",
+    formula: "P_f/(2 rho c_p (Q3 + Q_p)) = (T_lim - T_in)/2, solved for eta",
     range: "as for the rise of the film; thicker oil runs hotter",
     source: "ISO 7902-1 for the balance and its rho c_p of 1.8 MJ/(m3 K) (from memory)",
 };
