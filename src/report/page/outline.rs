@@ -167,20 +167,12 @@ fn area(counter: &mut Counter<'_>, part: &mut Part, body: &AreaSheet) {
     counter.sections(
         part,
         "",
-        &[
-            (
-                "register",
-                "Parts list",
-                "Parts list",
-                !body.groups.is_empty(),
-            ),
-            (
-                "machines",
-                "Machine by machine",
-                "Machines",
-                !body.machines.is_empty(),
-            ),
-        ],
+        &[(
+            "machines",
+            "Machine by machine",
+            "Machines",
+            !body.machines.is_empty(),
+        )],
     );
     counter.tables(part, &[("machines", !body.machines.is_empty())]);
 }
