@@ -325,8 +325,10 @@ codes! {
     // the command line and the judging
     /// An option's value that is not KEY=VALUE.
     SetForm = "set-form" Error,
-    /// A key that several parts have.
+    /// A key that several things have.
     SetWhich = "set-which" Error,
+    /// A value for something that is not there.
+    SetWhose = "set-whose" Error,
     /// Nothing matches what was asked.
     NothingToWeigh = "nothing-to-weigh" Error,
     /// No oil list keeps the terms asked for.

@@ -52,6 +52,7 @@ const ELSEWHERE: &[Code] = &[
     Code::LabelUnknown,
     Code::SetForm,
     Code::SetWhich,
+    Code::SetWhose,
     Code::NothingToWeigh,
     Code::ListImpossible,
     Code::NothingDecided,

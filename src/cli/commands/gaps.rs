@@ -24,7 +24,7 @@ fn run(session: &mut Session<'_>, args: &Gaps) -> Result<Exit, Exit> {
         session.fail("--letter 0 would ask nothing\n  write  --letter 5");
         return Err(Exit::Usage);
     }
-    let loaded = session.load(&[])?;
+    let loaded = session.load(None)?;
     let settings = session.settings(true)?;
     let scales = Scales::new(&loaded.site, &loaded.rules, settings)
         .map_err(|(oil, misfit)| session.misfit(&oil, &misfit))?;

@@ -25,7 +25,7 @@ pub fn need(session: &mut Session<'_>, args: &Need) -> Exit {
 }
 
 fn from_files(session: &mut Session<'_>, args: &Need) -> Result<Exit, Exit> {
-    let loaded = session.load(&[])?;
+    let loaded = session.load(None)?;
     if args.list && session.wants(Format::Csv) {
         let rows = loaded.site.points.iter().map(|p| {
             vec![

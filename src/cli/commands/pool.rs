@@ -18,7 +18,7 @@ pub fn pool(session: &mut Session<'_>, args: &Args) -> Exit {
 }
 
 fn run(session: &mut Session<'_>, args: &Args) -> Result<Exit, Exit> {
-    let loaded = session.load(&[])?;
+    let loaded = session.load(None)?;
     let settings = session.settings(true)?;
     let points = session.points(&loaded.site, &args.tags)?;
     let terms = terms(session, args, &loaded)?;
