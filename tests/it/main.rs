@@ -15,6 +15,7 @@ mod journal_heat;
 mod journal_table;
 mod judging;
 mod layers;
+mod nonsense;
 mod part_kinds;
 mod plain;
 mod pool;
