@@ -40,4 +40,5 @@ mod scenario;
 mod season;
 mod sound;
 mod tables;
+mod work_heat;
 mod work_journal;
