@@ -5,8 +5,7 @@ use crate::demand::inputs::Wanted;
 use crate::model::part::PartKind;
 use crate::model::{Lubrication, Stated, Sump};
 use crate::quantity::{Area, HeatTransfer, Power, ThermalConductance, ThermodynamicTemperature};
-use crate::relation::Law;
-use crate::relation::heat::balance::conductance;
+use crate::relation::heat::balance::{CONDUCTANCE, conductance};
 use crate::relation::journal::heat::still_air;
 use crate::trace::{Known, Recorder};
 
@@ -18,15 +17,6 @@ pub struct Reading {
     /// The ambient.
     pub ambient: Known<ThermodynamicTemperature>,
 }
-
-/// Heat a surface gives off.
-static CONDUCTANCE: Law = Law {
-    name: "heat-conductance",
-    title: "heat a surface gives off for every kelvin",
-    formula: "kA = k A",
-    range: "one temperature throughout the housing",
-    source: "definition",
-};
 
 /// Whether the housing cools the oil: not where a tank and a cooler elsewhere do.
 pub(super) fn housed<R: Recorder>(cx: &Context<'_, '_, R>) -> bool {
