@@ -333,6 +333,8 @@ codes! {
     NothingToWeigh = "nothing-to-weigh" Error,
     /// No oil list keeps the terms asked for.
     ListImpossible = "list-impossible" Error,
+    /// An oil is to stay on the list that no machine can take.
+    KeepIdle = "keep-idle" Warning,
     /// No machine can be decided, so there is nothing to make a list from.
     NothingDecided = "nothing-decided" Error,
     /// A rule used outside the range it was made for.

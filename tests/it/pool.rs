@@ -496,10 +496,48 @@ fn terms_that_cannot_be_kept_are_named() {
             "--site-price",
         ),
         ("pool M02 --demo -q", Exit::NoMatch, "[nothing-decided]"),
+        (
+            "pool --demo -q --drop O-*",
+            Exit::NoMatch,
+            "M06, M07 and 8 more have no oil left with --drop O-01",
+        ),
+        // the terms can be kept, and the list is longer than it need be
+        (
+            "pool --demo --keep O-03",
+            Exit::Done,
+            "O-03 is kept and serves nothing: it is barred on 9 of 17",
+        ),
     ] {
         let ran = filmwright(arguments);
         assert_eq!(ran.exit, exit, "{arguments}: {}", ran.err);
         assert!(ran.err.contains(words), "{arguments}: {}", ran.err);
+    }
+    let site = "file: site 1\nmachines:\n  M1:\n    ambient: -5 .. 35 degC\n    sump rise: 30 K\n    lubrication: splash\n    parts:\n      - rolling bearing: 22220\n        speed: 236 r/min\n";
+    for (command, exit, words) in [
+        (
+            "pool",
+            Exit::NoMatch,
+            "no list can be made: the oil list holds no oil",
+        ),
+        (
+            "weigh",
+            Exit::Done,
+            "nothing weighed: the oil list holds no oil",
+        ),
+        ("gaps", Exit::Done, "the oil list holds no oil"),
+        ("mend M1 X", Exit::NoMatch, "no oil matches 'X'"),
+        (
+            "whatif M1 --set \"sump rise=40 K\"",
+            Exit::Done,
+            "nothing weighed: the oil list",
+        ),
+    ] {
+        let host = MemoryHost::new().with("site.yaml", site);
+        let ran = on(host, command);
+        assert_eq!(ran.exit, exit, "{command}: {}", ran.err);
+        let told = format!("{}{}", ran.out, ran.err);
+        assert!(told.contains(words), "{command}: {told}");
+        assert!(told.contains("[nothing-to-weigh]"), "{command}: {told}");
     }
 }
 

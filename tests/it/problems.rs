@@ -55,6 +55,7 @@ const ELSEWHERE: &[Code] = &[
     Code::SetWhose,
     Code::NothingToWeigh,
     Code::ListImpossible,
+    Code::KeepIdle,
     Code::NothingDecided,
     Code::RuleRange,
     Code::AcceptExpired,

@@ -4,7 +4,7 @@
 use super::case::Case;
 use super::gaps::{Found, Weight};
 use super::say;
-use crate::decide::ask::{Ask, Specification, ask};
+use crate::decide::ask::{Ask, NO_GREASE, Specification, ask};
 use crate::decide::gaps::effect::words;
 use crate::decide::mend::lever::Target;
 use crate::decide::mend::{Mended, mend};
@@ -58,7 +58,7 @@ fn ask_for(case: &Case<'_, '_>, machines: usize) -> Vec<Phrase> {
         Ask::NoRoom { vi } => vec![
             format!("No oil of one grade holds here, up to a viscosity index of {vi:.0}: the limits leave no room.").into(),
         ],
-        Ask::Grease => Vec::new(),
+        Ask::NoGrease => vec![say::stopped(&say::sentence(NO_GREASE)).into()],
     }
 }
 
