@@ -260,10 +260,18 @@ fn elsewhere_measured(key: &str, remark: Option<&str>) -> Option<Reading> {
         "gas",
         "shell",
         "skin",
+        "gehäuse",
+        "druckseite",
+        "raum",
     ]
     .into_iter()
     .find(|p| remark.contains(p))?;
-    let place = if place == "disch" { "discharge" } else { place };
+    let place = match place {
+        "disch" | "druckseite" => "discharge",
+        "gehäuse" => "housing",
+        "raum" => "room",
+        place => place,
+    };
     (key == "sump").then(|| Reading {
         ask: Some(format!(
             "the {place} temperature is given; which is that of the oil?"

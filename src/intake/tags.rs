@@ -156,12 +156,25 @@ pub fn reference(text: &str) -> Option<Reference> {
     let lower = plain.to_lowercase();
     if matches!(
         lower.as_str(),
-        "ditto" | "do" | "dto" | "\"" | "''" | "\u{3003}" | "same" | "as above" | "same as above"
+        "ditto"
+            | "dito"
+            | "do"
+            | "dto"
+            | "idem"
+            | "wie oben"
+            | "s. o"
+            | "s.o"
+            | "\""
+            | "''"
+            | "\u{3003}"
+            | "same"
+            | "as above"
+            | "same as above"
     ) {
         return Some(Reference::Above);
     }
     let skip = [
-        "same as ", "as per ", "as for ", "like ", "see row ", "as row ",
+        "same as ", "as per ", "as for ", "like ", "see row ", "as row ", "wie ", "siehe ",
     ]
     .into_iter()
     .find(|w| lower.starts_with(w))?;
@@ -170,6 +183,7 @@ pub fn reference(text: &str) -> Option<Reference> {
     let number = lower
         .strip_prefix("row ")
         .or_else(|| lower.strip_prefix("line "))
+        .or_else(|| lower.strip_prefix("zeile "))
         .or_else(|| lower.strip_prefix("no. "))
         .map_or(lower.as_str(), str::trim);
     let row_word = skip.ends_with("row ") || number != lower;
@@ -262,6 +276,7 @@ mod tests {
             Some(Reference::Named("TURB-1".into()))
         );
         assert_eq!(reference("ditto"), Some(Reference::Above));
+        assert_eq!(reference("wie Zeile 6"), Some(Reference::Row(6)));
         assert_eq!(reference("ISO 68"), None);
         assert_eq!(bare("TURB-1"), bare("turb 1"));
         let words: Vec<String> = name_words("Press pumps, north").collect();
