@@ -178,14 +178,14 @@ impl<'a> Scales<'a> {
     /// The demands of a point, ready to be judged.
     pub fn prepare(&self, point: &Point) -> (PointDemands, PreparedPoint) {
         let demands = point_demands(point, &self.site.house, self.rules);
-        let ready = self.made_ready(point, &demands, self.reserve);
+        let ready = self.made_ready(point, &demands.settings, self.reserve);
         (demands, ready)
     }
 
-    fn made_ready(&self, point: &Point, demands: &PointDemands, reserve: f64) -> PreparedPoint {
-        let mut ready = PreparedPoint::new(&demands.settings, is_severe(point), reserve);
+    fn made_ready(&self, point: &Point, settings: &[Demands], reserve: f64) -> PreparedPoint {
+        let mut ready = PreparedPoint::new(settings, is_severe(point), reserve);
         if let Some(in_use) = self.in_use_curves(point) {
-            ready.run_by_losses(&demands.settings, in_use);
+            ready.run_by_losses(settings, in_use);
         }
         ready
     }
@@ -217,7 +217,7 @@ impl<'a> Scales<'a> {
             settings: vec![alone],
             shares: vec![setting],
         };
-        let ready = self.made_ready(point, &demands, self.reserve);
+        let ready = self.made_ready(point, &demands.settings, self.reserve);
         self.weigh_on(point, demands, ready, |_| true)
     }
 

@@ -5,6 +5,7 @@
 //! and everything is weighed again; what does not come out is not an answer.
 
 pub mod heater;
+mod laid;
 pub mod lever;
 mod pairs;
 mod trial;
@@ -18,6 +19,7 @@ use crate::quantity::Measure;
 use crate::relation::oil::grade::IsoGrade;
 use crate::weighing::{Barred, Candidate, Scales};
 use heater::HeaterAdvice;
+use laid::Laid;
 use lever::{Lever, Side, Target, excess};
 use trial::{Range, Trial};
 
@@ -178,7 +180,8 @@ fn smallest(
     side: Side,
     target: Target,
 ) -> Option<f64> {
-    let left = |at: f64| trial.excess(lever, at, side, target);
+    let mut laid = Laid::new(trial, lever);
+    let mut left = |at: f64| laid.excess(at, side, target);
     if left(range.to) < 0.0 {
         return None;
     }
@@ -186,7 +189,7 @@ fn smallest(
         // the change itself does, as small as can be: a cooler where each oil heats by itself
         return Some(range.from);
     }
-    let root = bracketed(range.from, range.to, left).ok()?;
+    let root = bracketed(range.from, range.to, &mut left).ok()?;
     // of the last two neighbours the one that does
     let toward = (range.to - range.from).signum();
     let mut reach = 0.0;

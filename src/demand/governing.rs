@@ -123,17 +123,19 @@ pub fn film_on_mineral(
 impl Demands {
     /// The number of the demand that governs an end, where no oil is given.
     pub fn governing(&self, end: End) -> Option<usize> {
-        let judged = self
+        let judged: Vec<(usize, &Demand, f64)> = self
             .list
             .iter()
             .enumerate()
-            .filter(|(_, d)| d.end == end && d.standing == Standing::Judges);
+            .filter(|(_, d)| d.end == end && d.standing == Standing::Judges)
+            .filter_map(|(i, d)| Some((i, d, self.governing_temperature(d)?)))
+            .collect();
+        // limits at one temperature keep their order when carried to another
+        let first = judged.first()?.2;
+        let carry = judged.iter().any(|(_, _, t)| t.total_cmp(&first).is_ne());
         let mut best: Option<(usize, f64)> = None;
-        for (i, demand) in judged {
-            let Some(t) = self.governing_temperature(demand) else {
-                continue;
-            };
-            let Some(strictness) = strictness(demand, t) else {
+        for (i, demand, t) in judged {
+            let Some(strictness) = strictness(demand, t, carry) else {
                 continue;
             };
             if best.is_none_or(|(_, s)| strictness > s) {
@@ -144,19 +146,18 @@ impl Demands {
     }
 }
 
-/// The greater the stricter: a floor's viscosity at 40 °C, a ceiling's turned round.
-fn strictness(demand: &Demand, t: f64) -> Option<f64> {
+/// The greater the stricter: a floor's viscosity, a ceiling's turned round; at 40 °C where the
+/// limits compared are to be carried there.
+fn strictness(demand: &Demand, t: f64, carry: bool) -> Option<f64> {
+    let compared = || -> Option<f64> {
+        let nu = as_viscosity(demand, t)?;
+        let at = ThermodynamicTemperature::from_base(t);
+        let carried = carry.then(|| carried_on_vi_95(nu, at)).flatten();
+        Some(carried.map_or(nu.base(), Measure::base))
+    };
     match demand.end {
-        End::HotFloor | End::MakerGrade => {
-            let nu = as_viscosity(demand, t)?;
-            let at = ThermodynamicTemperature::from_base(t);
-            Some(carried_on_vi_95(nu, at).map_or(nu.base(), Measure::base))
-        }
-        End::RunningCeiling | End::StartCeiling => {
-            let nu = as_viscosity(demand, t)?;
-            let at = ThermodynamicTemperature::from_base(t);
-            Some(1.0 / carried_on_vi_95(nu, at).map_or(nu.base(), Measure::base))
-        }
+        End::HotFloor | End::MakerGrade => compared(),
+        End::RunningCeiling | End::StartCeiling => Some(1.0 / compared()?),
         End::PourMargin => match demand.limit {
             Limit::Pour { least, .. } => Some(least),
             _ => Some(0.0),

@@ -47,20 +47,30 @@ pub fn point_demands(point: &Point, house: &House, rules: &Rulebook) -> PointDem
 
 /// The same without the calculation written down: for points that are tried many times.
 pub fn untraced(point: &Point, house: &House, rules: &Rulebook) -> PointDemands {
+    let (settings, shares) = every_setting(point, house, rules);
+    PointDemands {
+        trace: Derivation::new(),
+        middle: settings[0].clone(),
+        settings,
+        shares,
+    }
+}
+
+/// The demands in every setting of the unknowns and the shares of each, the middle first.
+pub fn every_setting(
+    point: &Point,
+    house: &House,
+    rules: &Rulebook,
+) -> (Vec<Demands>, Vec<Scenario>) {
     let middle = demands(&mut Silent, point, house, rules, &Scenario::middle());
     let shares = settings(middle.axes.len());
-    let mut all = vec![middle.clone()];
+    let mut all = vec![middle];
     all.extend(
         shares[1..]
             .iter()
             .map(|s| demands(&mut Silent, point, house, rules, s)),
     );
-    PointDemands {
-        trace: Derivation::new(),
-        middle,
-        settings: all,
-        shares,
-    }
+    (all, shares)
 }
 
 /// The settings for so many unknowns, the middle first.

@@ -63,6 +63,7 @@ use crate::source::place::Place;
 use crate::weighing::Scales;
 use digest::Digest;
 use plan::{On, Plan};
+use rayon::iter::{IntoParallelIterator, ParallelIterator};
 use std::collections::BTreeMap;
 
 /// The ends whose governing limits are told in one line.
@@ -234,13 +235,21 @@ impl<'a> Report<'a> {
         self.plan.of
     }
 
-    /// Makes the sheet of the next machine; none after the last.
-    pub fn next_machine(&mut self) -> Option<Made> {
+    /// Makes the sheets of the next machines, so many at a time side by side; none after the last.
+    pub fn next_machines(&mut self, most: usize) -> Vec<Made> {
+        let from = self.kept.machines.len();
+        let to = self.plan.machines.len().min(from.saturating_add(most));
+        let this = &*self;
+        let made: Vec<machine::OfMachine> = (from..to)
+            .into_par_iter()
+            .map(|place| machine::machine(this, place))
+            .collect();
+        made.into_iter().map(|of| self.keep(of)).collect()
+    }
+
+    /// Keeps of a machine what the other sheets need.
+    fn keep(&mut self, mut of: machine::OfMachine) -> Made {
         let place = self.kept.machines.len();
-        if place >= self.plan.machines.len() {
-            return None;
-        }
-        let mut of = machine::machine(self, place);
         uses::keep(&mut self.kept.uses, place, &of.digests);
         if self.plan.machines.len() > store::MATRIX {
             // the table of every oil on every machine is left out: its cells need not be kept
@@ -257,7 +266,7 @@ impl<'a> Report<'a> {
             tally(&mut self.kept.judged, &body.caution.judged);
             tally(&mut self.kept.not_judged, &body.caution.not_judged);
         }
-        Some(of.made)
+        of.made
     }
 
     /// The sheets beside those of the machines, the overview first. All machines are to be made

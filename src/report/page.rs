@@ -25,6 +25,8 @@ const PREFIX: &str = "builtin/";
 #[derive(Debug)]
 pub struct Templates {
     tera: Tera,
+    /// The style sheet, close set: the same on every page.
+    style: String,
 }
 
 /// What is wrong with a template, and where.
@@ -138,7 +140,11 @@ impl Templates {
         let all: Vec<(String, &str)> = built_in.chain(own).collect();
         tera.add_raw_templates(all)
             .map_err(|e| TemplateProblem::new(&e, "templates"))?;
-        Ok(Self { tera })
+        let css = tera
+            .render("style.css", &Context::new())
+            .map_err(|e| TemplateProblem::new(&e, "style.css"))?;
+        let style = style::close_set(&css);
+        Ok(Self { tera, style })
     }
 
     /// Names of the built-in templates, sorted.
@@ -173,7 +179,7 @@ impl Templates {
         only: Option<&Sheet>,
         nav: &[NavLink],
     ) -> Result<String, TemplateProblem> {
-        let style = self.style(frame, only)?;
+        let style = format!("{}{}", self.style, style::paper(frame, only));
         let mut context = Context::new();
         insert(&mut context, "frame", frame)?;
         insert(&mut context, "nav", nav)?;
@@ -238,15 +244,6 @@ impl Templates {
     }
 
     /// The style sheet, with the paper and the foot of the printed page.
-    fn style(&self, frame: &Frame, only: Option<&Sheet>) -> Result<String, TemplateProblem> {
-        let css = self.render("style.css", &Context::new())?;
-        Ok(format!(
-            "{}{}",
-            style::close_set(&css),
-            style::paper(frame, only)
-        ))
-    }
-
     fn render(&self, name: &str, context: &Context) -> Result<String, TemplateProblem> {
         self.tera
             .render(name, context)

@@ -4,6 +4,7 @@ use super::csv::{Cell, Table};
 use super::json::{self, Head, document};
 use crate::decide::scatter::Scatter;
 use crate::demand::Demand;
+use crate::demand::losses::Uncounted;
 use crate::judge::explain::Explanation;
 use crate::judge::own::Running;
 use crate::judge::weigh::{At, Margin};
@@ -130,6 +131,7 @@ fn running(r: &Running, told: &Explanation, units: Units) -> Value {
         "by_losses": t(r.by_losses),
         "judged_at": t(r.used()),
         "calibrated": r.calibrated,
+        "not_counted": r.uncounted.iter().map(not_counted).collect::<Vec<_>>(),
         "drag": {
             "value": r.drag.total.base(), "unit": "W", "by": by_kind,
             "ambient": t(Some(r.drag.ambient.base())), "at": t(Some(r.drag.t.base())),
@@ -139,6 +141,11 @@ fn running(r: &Running, told: &Explanation, units: Units) -> Value {
         },
         "steps": told.running.iter().map(|s| json::step_name(*s)).collect::<Vec<_>>(),
     })
+}
+
+/// A share of the losses that is not in the sum.
+fn not_counted(u: &Uncounted) -> Value {
+    json!({ "part": u.part, "share": u.share, "because": u.because })
 }
 
 /// A barred oil.
@@ -239,6 +246,10 @@ pub fn table_of(scales: &Scales<'_>, weighed: &[Weighed<'_>], scatters: &Scatter
         format!("band_high_{t_unit}"),
         "conditions".to_owned(),
         "because".to_owned(),
+        format!("t_by_losses_{t_unit}"),
+        "drag_w".to_owned(),
+        "drag_over_in_use_w".to_owned(),
+        "drag_energy_kwh_a_year".to_owned(),
     ];
     let mut table = Table {
         headings: headings.to_vec(),
@@ -268,6 +279,7 @@ pub fn table_of(scales: &Scales<'_>, weighed: &[Weighed<'_>], scatters: &Scatter
                     .map(|c| format!("{}: {}", c.rule, c.says))
                     .collect();
             row.push(Cell::Text(by.join("; ")));
+            row.extend((0..4).map(|_| Cell::Empty));
             if !scatters.is_empty() {
                 row.extend((0..3).map(|_| Cell::Empty));
             }
@@ -306,6 +318,12 @@ fn row(scales: &Scales<'_>, w: &Weighed<'_>, c: &Candidate, units: Units) -> Vec
     }
     row.push(Cell::Number(c.conditions.len() as f64));
     row.push(Cell::Text(c.because.join("; ")));
+    let running = c.running.as_ref();
+    let by_losses = running.and_then(|r| r.by_losses);
+    row.push(Cell::number(by_losses.map(|at| t.from_base(at))));
+    row.push(Cell::number(running.map(|r| r.drag.total.base())));
+    row.push(Cell::number(running.and_then(|r| r.over_in_use)));
+    row.push(Cell::number(running.and_then(|r| r.energy_kwh)));
     row
 }
 

@@ -2,7 +2,7 @@
 
 use super::facts;
 use super::{Barred, Candidate, Scales, Weighed, condition, oil_in_use};
-use crate::demand::settings::untraced;
+use crate::demand::settings::{every_setting, untraced};
 use crate::demand::{Demands, PointDemands, Scenario, demands};
 use crate::judge::{Judgement, PreparedOil, PreparedPoint, weigh};
 use crate::model::Point;
@@ -22,8 +22,8 @@ pub struct Pair {
 impl Scales<'_> {
     /// A point made ready without a trace, with a reserve of its own.
     pub fn ready(&self, point: &Point, reserve: f64) -> PreparedPoint {
-        let demands = untraced(point, &self.site.house, self.rules);
-        self.made_ready(point, &demands, reserve)
+        let (settings, _) = every_setting(point, &self.site.house, self.rules);
+        self.made_ready(point, &settings, reserve)
     }
 
     /// Margins and word alone, for a point and an oil that may both be changed.
@@ -40,13 +40,7 @@ impl Scales<'_> {
         reserve: f64,
     ) -> Judgement {
         let alone = demands(&mut Silent, point, &self.site.house, self.rules, &setting);
-        let demands = PointDemands {
-            trace: Derivation::new(),
-            middle: alone.clone(),
-            settings: vec![alone],
-            shares: vec![setting],
-        };
-        weigh(&self.made_ready(point, &demands, reserve), oil)
+        weigh(&self.made_ready(point, &[alone], reserve), oil)
     }
 
     /// One oil of the list on a point that may be changed, in a state of its own where `instead`
@@ -59,7 +53,7 @@ impl Scales<'_> {
         reserve: f64,
     ) -> Pair {
         let demands = untraced(point, &self.site.house, self.rules);
-        let ready = self.made_ready(point, &demands, reserve);
+        let ready = self.made_ready(point, &demands.settings, reserve);
         let facts = facts::of_point(point, &demands, self.in_use_facts(point));
         let card = self.suitability.point(&facts);
         let described = &self.site.oils[oil];
@@ -127,7 +121,7 @@ impl<'a> Scales<'a> {
             settings,
             shares,
         };
-        let ready = self.made_ready(point, &demands, self.reserve);
+        let ready = self.made_ready(point, &demands.settings, self.reserve);
         self.weigh_on(point, demands, ready, |_| true)
     }
 }

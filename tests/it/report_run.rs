@@ -219,7 +219,7 @@ fn models_are_as_agreed() {
         Options::default(),
     );
     let mut report = Report::new(run, &points);
-    while let Some(made) = report.next_machine() {
+    for made in report.next_machines(usize::MAX) {
         if ["M07", "M14"].contains(&made.tag.as_str()) {
             let model = serde_json::to_string_pretty(&made.sheet).expect("writes");
             let mut settings = insta::Settings::clone_current();

@@ -1,6 +1,7 @@
 //! A point and an oil with changes laid over them.
 
 use super::lever::{Lever, Side, Target, excess};
+use crate::demand::settings::every_setting;
 use crate::demand::{Demands, End, Standing, takes_grease};
 use crate::judge::{Judgement, PreparedOil};
 use crate::model::stated::{Between, ViscosityLimit};
@@ -53,7 +54,7 @@ impl<'t> Trial<'t> {
         }
     }
 
-    fn ready(&self) -> &PreparedOil {
+    pub(super) fn ready(&self) -> &PreparedOil {
         self.state.as_ref().unwrap_or(&self.scales.oils[self.oil])
     }
 
@@ -85,19 +86,8 @@ impl<'t> Trial<'t> {
         self.scales.pair(&self.point, self.oil, state, self.reserve)
     }
 
-    /// What is left over a target on one side; far below where a change makes no sense.
-    pub(super) fn excess(&self, lever: Lever, at: f64, side: Side, target: Target) -> f64 {
-        self.with(lever, at)
-            .map_or(-1e9, |t| excess(&t.judge(), side, target))
-    }
-
     fn demands(&self) -> Vec<Demands> {
-        let all = crate::demand::settings::untraced(
-            &self.point,
-            &self.scales.site.house,
-            self.scales.rules,
-        );
-        all.settings
+        every_setting(&self.point, &self.scales.site.house, self.scales.rules).0
     }
 
     /// The range of a change; `None` where there is nothing to change.
@@ -251,7 +241,21 @@ impl<'t> Trial<'t> {
     /// With one change; `None` where it makes no sense.
     pub(super) fn with(&self, lever: Lever, at: f64) -> Option<Self> {
         let mut next = self.clone();
-        let point = &mut next.point;
+        next.set(self, lever, at, self.coldest_running(lever))?;
+        Some(next)
+    }
+
+    /// Lays one change of `base` over this copy of it, in the place of the last of the same lever;
+    /// `cold` is [`coldest_running`](Self::coldest_running) of the base. `None` where it makes no
+    /// sense.
+    pub(super) fn set(
+        &mut self,
+        base: &Self,
+        lever: Lever,
+        at: f64,
+        cold: Option<f64>,
+    ) -> Option<()> {
+        let point = &mut self.point;
         match lever {
             Lever::Heater => point.heater = Some(known(at)),
             Lever::ColdestStart => point.start = Some(known(at)),
@@ -268,14 +272,31 @@ impl<'t> Trial<'t> {
                 let rise: Stated<TemperatureInterval> = known(at);
                 point.sump = Some(Sump::Rise(rise));
             }
-            Lever::HottestAmbient => next.set_hottest(at)?,
-            Lever::Cooler => next.set_cooler(at)?,
-            Lever::ShearLoss => next.state = Some(self.remade(self.curves().with_loss(at))),
-            Lever::Grade => next.state = Some(self.remade(self.curves().thicker_by(at).ok()?)),
-            Lever::Index => next.state = Some(self.remade(self.curves().with_index(at)?)),
-            Lever::Reserve => next.reserve = at,
+            Lever::HottestAmbient => self.set_hottest(base, at)?,
+            Lever::Cooler => {
+                point.sump = Some(match base.point.sump {
+                    Some(Sump::Held(_)) => Sump::Held(known(at)),
+                    _ => {
+                        let ends = between(cold?.min(at), at);
+                        Sump::Across(Given::new(ends, "", Origin::flag(FLAG)))
+                    }
+                });
+            }
+            Lever::ShearLoss => self.state = Some(base.remade(base.curves().with_loss(at))),
+            Lever::Grade => self.state = Some(base.remade(base.curves().thicker_by(at).ok()?)),
+            Lever::Index => self.state = Some(base.remade(base.curves().with_index(at)?)),
+            Lever::Reserve => self.reserve = at,
         }
-        Some(next)
+        Some(())
+    }
+
+    /// Running temperature at the coldest ambient, which a cooler leaves where it is.
+    pub(super) fn coldest_running(&self, lever: Lever) -> Option<f64> {
+        let held = matches!(self.point.sump, Some(Sump::Held(_)));
+        if lever != Lever::Cooler || held {
+            return None;
+        }
+        self.running().map(|(_, cold)| cold)
     }
 
     fn remade(&self, curves: Curves) -> PreparedOil {
@@ -284,10 +305,12 @@ impl<'t> Trial<'t> {
     }
 
     /// Another hottest ambient; a sump stated at both ends keeps its line.
-    fn set_hottest(&mut self, at: f64) -> Option<()> {
-        let (cold, hot) = self.ambient()?;
-        if let Some(Sump::Across(range)) = &mut self.point.sump {
-            let (a, b) = (range.value.lo.base(), range.value.hi.base());
+    fn set_hottest(&mut self, base: &Self, at: f64) -> Option<()> {
+        let (cold, hot) = base.ambient()?;
+        if let (Some(Sump::Across(range)), Some(Sump::Across(was))) =
+            (&mut self.point.sump, &base.point.sump)
+        {
+            let (a, b) = (was.value.lo.base(), was.value.hi.base());
             let share = if hot > cold {
                 (at - cold) / (hot - cold)
             } else {
@@ -297,19 +320,6 @@ impl<'t> Trial<'t> {
         }
         let given = Given::new(between(cold, at), "", Origin::flag(FLAG));
         self.point.ambient = Some(Stated::Known(given, None));
-        Some(())
-    }
-
-    /// A sump that runs no hotter than a temperature.
-    fn set_cooler(&mut self, at: f64) -> Option<()> {
-        self.point.sump = Some(match self.point.sump {
-            Some(Sump::Held(_)) => Sump::Held(known(at)),
-            _ => {
-                let (_, cold) = self.running()?;
-                let ends = between(cold.min(at), at);
-                Sump::Across(Given::new(ends, "", Origin::flag(FLAG)))
-            }
-        });
         Some(())
     }
 }

@@ -11,6 +11,12 @@ use crate::quantity::show::{Toward, Units, fixed};
 use crate::report::draw::margin_bars::{MarginBar, MarginBars};
 use crate::report::model::{Candidate as Row, Candidates, Phrase, RunKind, minus};
 use crate::weighing::Candidate;
+use std::fmt::Write as _;
+
+/// A list of so many oils is told with bars and every reason.
+const ALL_IN_FULL: usize = 16;
+/// Of a longer one so many, the rest in figures, so that a sheet stays one to read.
+const FIRST_IN_FULL: usize = 8;
 
 /// The table; none where nothing was weighed.
 pub(super) fn candidates(
@@ -21,22 +27,43 @@ pub(super) fn candidates(
     let lead = case.lead?;
     let (hot, cold) = (lead.judgement.at_hot, lead.judgement.at_start);
     let all = &case.w.candidates;
+    let in_full = if all.len() > ALL_IN_FULL {
+        FIRST_IN_FULL
+    } else {
+        ALL_IN_FULL
+    };
     let mut rows: Vec<Row> = all
         .iter()
-        .map(|c| row(case, c, (hot, cold), numbers, tolerances))
+        .enumerate()
+        .map(|(i, c)| {
+            let mut row = row(case, c, (hot, cold), numbers, tolerances);
+            if i >= in_full && !row.picked && !row.in_use {
+                row.reason = reason(c, 1, case.units());
+                row.bars.bars.clear();
+            }
+            row
+        })
         .collect();
     let span = MarginBars::span_of(rows.iter().flat_map(|r| &r.bars.bars));
-    let last = rows.len().saturating_sub(1);
+    let last = rows.iter().rposition(|r| !r.bars.bars.is_empty());
     for (i, row) in rows.iter_mut().enumerate() {
         row.bars.span = span;
-        row.bars.axis = i == last;
+        row.bars.axis = Some(i) == last;
+    }
+    let mut order = format!("{IN_WORDS} Sheared oils by their worn line when hot.");
+    if rows.len() > in_full {
+        let _ = write!(
+            order,
+            " From the {}th oil on the margins stand in figures, and the main reason alone.",
+            in_full + 1
+        );
     }
     Some(Candidates {
         limits: limits(case),
         hot_head: head(case, hot),
         cold_head: head(case, cold),
         rows,
-        order: format!("{IN_WORDS} Sheared oils by their worn line when hot."),
+        order,
         not_weighed: Vec::new(),
         notes: eligible::notes(case),
     })
@@ -101,7 +128,7 @@ fn row(
         margins: in_words(c),
         kelvins: kelvins(c, case.units()),
         conditions: eligible::numbers_of(c, numbers),
-        reason: reason(c, case.units()),
+        reason: reason(c, 3, case.units()),
         letter,
     }
 }
@@ -195,7 +222,8 @@ fn kelvins(c: &Candidate, units: Units) -> String {
     minus(&parts.join(", "))
 }
 
-fn reason(c: &Candidate, units: Units) -> Phrase {
+/// The main reason and others, so many in all.
+fn reason(c: &Candidate, most: usize, units: Units) -> Phrase {
     let mut phrase = Phrase::new();
     if c.in_use {
         phrase = phrase.strong("In use. ");
@@ -204,7 +232,7 @@ fn reason(c: &Candidate, units: Units) -> Phrase {
     if let Some(first) = because.next() {
         phrase = phrase.and(say::stopped(&say::sentence(&say::told(first, units))));
     }
-    for more in because.take(2) {
+    for more in because.take(most.saturating_sub(1)) {
         let text = format!(" {}", say::stopped(&say::sentence(&say::told(more, units))));
         phrase = phrase.with(RunKind::Quiet, text);
     }

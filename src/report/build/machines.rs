@@ -8,8 +8,21 @@ use super::{Report, ambient, caution, register, say};
 use crate::report::draw::band::MiniBand;
 use crate::report::model::{AreaSheet, Body, Caution, MachineRow, Mark, Phrase, Sheet};
 
+/// The sheet a row stands on.
+#[derive(Clone, Copy, PartialEq, Eq)]
+pub(super) enum Within {
+    /// Of the whole site.
+    Site,
+    /// Of one area, whose name need not be told again.
+    Area,
+}
+
 /// The rows by state, and the axis of their bands.
-pub(super) fn rows(report: &Report<'_>, machines: &[usize]) -> (Vec<MachineRow>, Option<MiniBand>) {
+pub(super) fn rows(
+    report: &Report<'_>,
+    machines: &[usize],
+    within: Within,
+) -> (Vec<MachineRow>, Option<MiniBand>) {
     let digests = |m: &usize| report.kept.machines[*m].iter();
     let axis = ambient::axis(machines.iter().flat_map(digests).filter_map(|d| d.place));
     let mut rows = Vec::new();
@@ -25,7 +38,13 @@ pub(super) fn rows(report: &Report<'_>, machines: &[usize]) -> (Vec<MachineRow>,
             for digest in &report.kept.machines[m] {
                 let group = first.then(|| say::sentence(state.title()));
                 first = false;
-                rows.push(row(report, (m, digest), rows.len(), axis, group));
+                let named = match within {
+                    Within::Site => [digest.title.as_str(), digest.area.as_str()],
+                    Within::Area => [digest.title.as_str(), ""],
+                };
+                let mut row = row(report, (m, digest), rows.len(), axis, group);
+                row.name = joined(&named);
+                rows.push(row);
             }
         }
     }
@@ -38,6 +57,11 @@ pub(super) fn rows(report: &Report<'_>, machines: &[usize]) -> (Vec<MachineRow>,
             ..band.clone()
         });
     (rows, head)
+}
+
+fn joined(names: &[&str]) -> String {
+    let told: Vec<&str> = names.iter().copied().filter(|s| !s.is_empty()).collect();
+    told.join(", ")
 }
 
 fn row(
@@ -62,12 +86,10 @@ fn row(
         degrees: say::degrees(report.run.scales.units),
         ..ambient::mini(format!("band-{n}"), need, (band_now, proposed), mark, axis)
     });
-    let name = [d.title.as_str(), d.area.as_str()];
-    let name: Vec<&str> = name.into_iter().filter(|s| !s.is_empty()).collect();
     MachineRow {
         group,
         tag: Phrase::new().link(tag, d.href.clone()),
-        name: name.join(", "),
+        name: String::new(),
         needs: d.needs.clone(),
         oil: oil.unwrap_or_else(|| register::no_oil(d.mark).to_owned()),
         now: if other { d.now.clone() } else { String::new() },
@@ -88,9 +110,8 @@ pub(super) fn area(report: &Report<'_>, place: usize) -> Sheet {
         number,
         machines,
     } = &plan.areas[place];
-    let (rows, band_axis) = rows(report, machines);
+    let (rows, band_axis) = rows(report, machines, Within::Area);
     let body = AreaSheet {
-        groups: register::groups(report, machines, None),
         machines: rows,
         band_axis,
         caution: Caution {

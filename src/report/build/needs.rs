@@ -10,18 +10,34 @@ use crate::quantity::show::{Toward, Units};
 use crate::quantity::{Amount, Kind, Measure};
 use crate::report::model::{NeedRow, Needs, Phrase, RunKind};
 use crate::results::need::{confidence, end_word, limit_amount};
+use std::collections::{BTreeMap, BTreeSet};
 
 /// The limits of a point.
 pub(super) fn needs(case: &Case<'_, '_>, steps: &Steps) -> Needs {
     let middle = &case.w.demands.middle;
+    let governing: BTreeMap<End, usize> = middle
+        .list
+        .iter()
+        .map(|d| d.end)
+        .collect::<BTreeSet<End>>()
+        .into_iter()
+        .filter_map(|end| Some((end, middle.governing(end)?)))
+        .collect();
+    let governs = |i: usize| governing.get(&middle.list[i].end) == Some(&i);
     let mut order: Vec<usize> = (0..middle.list.len()).collect();
     order.sort_by_key(|i| {
         let d = &middle.list[*i];
-        (d.end, middle.governing(d.end) != Some(*i), rank(d), *i)
+        (d.end, !governs(*i), rank(d), *i)
     });
     Needs {
         degrees: case.degrees().unit().to_owned(),
-        rows: order.into_iter().map(|i| row(case, steps, i)).collect(),
+        rows: order
+            .into_iter()
+            .map(|i| NeedRow {
+                governs: governs(i),
+                ..row(case, steps, i)
+            })
+            .collect(),
         notes: notes(case),
     }
 }
@@ -79,7 +95,7 @@ fn row(case: &Case<'_, '_>, steps: &Steps, i: usize) -> NeedRow {
         origin: Some(origin(d.whose)),
         confidence: (d.confidence != Confidence::High)
             .then(|| format!("confidence {}", confidence(d))),
-        governs: middle.governing(d.end) == Some(i),
+        governs: false,
     }
 }
 

@@ -22,7 +22,7 @@ pub(super) fn sheet(report: &Report<'_>) -> Sheet {
     let (rows, band_axis) = if large {
         (Vec::new(), None)
     } else {
-        machines::rows(report, &all)
+        machines::rows(report, &all, machines::Within::Site)
     };
     let lists = lists::lists(report);
     let mut list_notes = store::notes(report);

@@ -8,8 +8,12 @@ use std::collections::BTreeMap;
 
 /// Sites of more machines than this are parted into sheets by area.
 pub(super) const ON_OVERVIEW: usize = 60;
-/// Machines on one sheet of an area.
-pub(super) const ON_AREA: usize = 100;
+/// Rows on one sheet of an area.
+const ON_AREA: usize = 100;
+/// Letters of a row as written, beside those of its tag and name.
+const ROW: usize = 1_250;
+/// Letters of all rows on one sheet: with what stands around them a page stays below 150 kB.
+const LETTERS: usize = 118_000;
 
 /// One machine with its sheet.
 #[derive(Clone, Debug)]
@@ -227,7 +231,7 @@ fn by_machine<'a>(points: &[&'a Point]) -> Vec<(&'a str, Vec<&'a Point>)> {
     grouped
 }
 
-/// Large sites: areas in the order of their first machine, at most a hundred machines a sheet.
+/// Large sites: areas in the order of their first machine, at most a hundred rows a sheet.
 fn areas(
     names: &mut Names,
     machines: &[(&str, Vec<&Point>)],
@@ -248,20 +252,42 @@ fn areas(
     }
     let mut sheets = Vec::new();
     for (name, all) in found {
-        let parts = all.len().div_ceil(ON_AREA);
-        for (part, machines) in all.chunks(ON_AREA).enumerate() {
-            let title = if parts == 1 {
+        let parts = by_page(machines, &all);
+        let of = parts.len();
+        for (part, machines) in parts.into_iter().enumerate() {
+            let title = if of == 1 {
                 name.to_owned()
             } else {
-                format!("{name}, sheet {} of {parts}", part + 1)
+                format!("{name}, sheet {} of {of}", part + 1)
             };
             sheets.push(Area {
                 place: Place::new(names, "area", &title),
                 name: title,
                 number: next(),
-                machines: machines.to_vec(),
+                machines,
             });
         }
     }
     sheets
+}
+
+/// Parts the machines of an area into pages, by their rows and the letters of those.
+fn by_page(machines: &[(&str, Vec<&Point>)], all: &[usize]) -> Vec<Vec<usize>> {
+    let (mut pages, mut page) = (Vec::new(), Vec::new());
+    let (mut rows, mut letters) = (0, 0);
+    for machine in all {
+        let (tag, points) = &machines[*machine];
+        let title = |p: &&Point| p.title.as_ref().map_or(0, String::len);
+        let named: usize = points.iter().map(|p| 4 * tag.len() + title(p)).sum();
+        let more = (points.len(), points.len() * ROW + named);
+        if rows > 0 && (rows + more.0 > ON_AREA || letters + more.1 > LETTERS) {
+            pages.push(std::mem::take(&mut page));
+            (rows, letters) = (0, 0);
+        }
+        rows += more.0;
+        letters += more.1;
+        page.push(*machine);
+    }
+    pages.push(page);
+    pages
 }

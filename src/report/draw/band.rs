@@ -340,13 +340,8 @@ impl Draw for MiniBand {
             (pt(0.0, y), &class),
             self.need_c,
         );
-        for t in [self.need_c.0, self.need_c.1] {
-            canvas.line(
-                pt(axis.px_inside(t), 1.0),
-                pt(axis.px_inside(t), height - 1.0),
-                "need",
-            );
-        }
+        let need = [self.need_c.0, self.need_c.1].map(|t| axis.px_inside(t));
+        canvas.uprights(&need, (1.0, height - 1.0), "need");
         canvas.finish(uid, "mini", Alternative::Beside)
     }
 }

@@ -37,15 +37,13 @@ pub struct Canvas {
 /// Air on both sides of a label that looks for a place, px.
 const AIR: f64 = 2.0;
 
-/// A pixel figure with at most two decimals.
+/// A pixel figure to a tenth: finer than paper shows, and a page holds thousands of them.
 fn px(value: f64) -> String {
-    let text = format!("{value:.2}");
-    let text = text.trim_end_matches('0').trim_end_matches('.');
-    if text == "-0" {
-        "0".into()
-    } else {
-        text.into()
+    let mut text = format!("{value:.1}");
+    if text.ends_with(".0") {
+        text.truncate(text.len() - 2);
     }
+    if text == "-0" { "0".into() } else { text }
 }
 
 impl Canvas {
@@ -83,16 +81,23 @@ impl Canvas {
         self.element("line", &ends, &[("class", class)]);
     }
 
+    /// Upright lines of one kind from `top` to `bottom`.
+    pub fn uprights(&mut self, at: &[f64], (top, bottom): (f64, f64), class: &str) {
+        let mut d = String::new();
+        for x in at {
+            let _ = write!(d, "M{} {}V{}", px(*x), px(top), px(bottom));
+        }
+        self.element("path", &[], &[("d", &d), ("class", class)]);
+    }
+
     /// A line of the grid.
     pub fn grid_line(&mut self, a: Pt, b: Pt) {
-        let _ = write!(
-            self.grid,
-            "M{} {}L{} {}",
-            px(a.x),
-            px(a.y),
-            px(b.x),
-            px(b.y)
-        );
+        let _ = write!(self.grid, "M{} {}", px(a.x), px(a.y));
+        let _ = match (px(a.x) == px(b.x), px(a.y) == px(b.y)) {
+            (true, _) => write!(self.grid, "V{}", px(b.y)),
+            (_, true) => write!(self.grid, "H{}", px(b.x)),
+            _ => write!(self.grid, "L{} {}", px(b.x), px(b.y)),
+        };
     }
 
     /// A line through points.

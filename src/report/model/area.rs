@@ -90,9 +90,7 @@ pub struct AreaRow {
 /// The sheet of an area, at most a hundred machines.
 #[derive(Clone, Debug, Default, PartialEq, Serialize, Deserialize)]
 pub struct AreaSheet {
-    /// The parts list.
-    pub groups: Vec<RegisterGroup>,
-    /// Needs and bands.
+    /// Needs and bands, by state.
     pub machines: Vec<MachineRow>,
     /// The axis of the bands.
     pub band_axis: Option<MiniBand>,

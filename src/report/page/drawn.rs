@@ -85,7 +85,7 @@ impl Drawn<'_> {
         self.summary(point.summary.as_ref());
         self.curves(point.curves.as_ref());
         for row in point.candidates.iter().flat_map(|c| &c.rows) {
-            self.figure(Some(&row.bars));
+            self.figure((!row.bars.bars.is_empty()).then_some(&row.bars));
         }
         if let Some(Ambient { bands, season, .. }) = &point.ambient {
             self.figure(bands.as_ref());

@@ -167,20 +167,12 @@ fn area(counter: &mut Counter<'_>, part: &mut Part, body: &AreaSheet) {
     counter.sections(
         part,
         "",
-        &[
-            (
-                "register",
-                "Parts list",
-                "Parts list",
-                !body.groups.is_empty(),
-            ),
-            (
-                "machines",
-                "Machine by machine",
-                "Machines",
-                !body.machines.is_empty(),
-            ),
-        ],
+        &[(
+            "machines",
+            "Machine by machine",
+            "Machines",
+            !body.machines.is_empty(),
+        )],
     );
     counter.tables(part, &[("machines", !body.machines.is_empty())]);
 }
@@ -193,7 +185,7 @@ fn oil(counter: &mut Counter<'_>, part: &mut Part, body: &OilSheet) {
             ("facts", "What is stated", "Stated", !body.facts.is_empty()),
             (
                 "findings",
-                "What does not add up",
+                "What to know of it",
                 "Findings",
                 !body.findings.is_empty(),
             ),

@@ -247,7 +247,6 @@ pub(crate) fn area() -> Sheet {
         panic!("an overview")
     };
     let body = AreaSheet {
-        groups: body.groups,
         machines: body.machines,
         band_axis: body.band_axis,
         caution: caution(),

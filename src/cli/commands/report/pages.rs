@@ -6,7 +6,11 @@ use crate::judge::Verdict;
 use crate::report::build::{Made, Report};
 use crate::report::model::{Body, Frame, Sheet};
 use crate::report::page::{Position, TemplateProblem, Templates};
+use rayon::iter::{IntoParallelRefIterator, ParallelIterator};
 use std::path::{Path, PathBuf};
+
+/// Sheets of machines made side by side: enough for the processor, few enough for the memory.
+const SIDE_BY_SIDE: usize = 32;
 
 /// Where the pages go.
 #[derive(Clone, Debug, PartialEq, Eq)]
@@ -79,18 +83,18 @@ fn into_folder(
     }
     let frame = report.frame();
     let mut written = begun(report);
-    while let Some(made) = report.next_machine() {
-        let page = made.sheet.place.file();
-        one(session, templates, &frame, &made.sheet, folder)?;
-        written.pages.push(page.clone());
-        written.answers.push(answer(made, page));
-        session.progress(
-            "writing sheets of machines",
-            written.answers.len(),
-            report.machines(),
-        );
-    }
-    session.host.progress_end();
+    each_machine(
+        session,
+        report,
+        |sheet| templates.page(&frame, sheet),
+        |session, made, page| {
+            let file = made.sheet.place.file();
+            session.put(&folder.join(&file), page.as_bytes())?;
+            written.pages.push(file.clone());
+            written.answers.push(answer(made, file));
+            Ok(())
+        },
+    )?;
     for sheet in report.others() {
         one(session, templates, &frame, &sheet, folder)?;
         take_headline(&mut written, &sheet);
@@ -98,6 +102,30 @@ fn into_folder(
     }
     written.pages.sort();
     Ok(written)
+}
+
+/// Makes and lays out the sheets of the machines, so many side by side, and hands them on in
+/// their order.
+fn each_machine(
+    session: &mut Session<'_>,
+    report: &mut Report<'_>,
+    lay: impl Fn(&Sheet) -> Result<String, TemplateProblem> + Sync,
+    mut take: impl FnMut(&mut Session<'_>, Made, String) -> Result<(), Exit>,
+) -> Result<(), Exit> {
+    let (mut done, all) = (0, report.machines());
+    while done < all {
+        let made = report.next_machines(SIDE_BY_SIDE);
+        let laid: Vec<Result<String, TemplateProblem>> =
+            made.par_iter().map(|made| lay(&made.sheet)).collect();
+        for (made, page) in made.into_iter().zip(laid) {
+            let page = page.map_err(|problem| template(session, &problem))?;
+            take(session, made, page)?;
+            done += 1;
+        }
+        session.progress("writing sheets of machines", done, all);
+    }
+    session.host.progress_end();
+    Ok(())
 }
 
 fn one(
@@ -122,18 +150,17 @@ fn in_one(
     let frame = report.frame();
     let mut written = begun(report);
     let mut middle = Vec::new();
-    while let Some(made) = report.next_machine() {
-        let laid = templates.sheet(&frame, &made.sheet, Position::Following);
-        middle.push(laid.map_err(|problem| template(session, &problem))?);
-        let page = format!("#{}", made.sheet.place.id("sheet"));
-        written.answers.push(answer(made, page));
-        session.progress(
-            "writing sheets of machines",
-            written.answers.len(),
-            report.machines(),
-        );
-    }
-    session.host.progress_end();
+    each_machine(
+        session,
+        report,
+        |sheet| templates.sheet(&frame, sheet, Position::Following),
+        |_, made, laid| {
+            middle.push(laid);
+            let page = format!("#{}", made.sheet.place.id("sheet"));
+            written.answers.push(answer(made, page));
+            Ok(())
+        },
+    )?;
     let title = frame.site.clone();
     let mut page = templates
         .open(&frame, &title, None, &report.nav())
