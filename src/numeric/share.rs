@@ -48,7 +48,7 @@ mod tests {
 
     /// How often the interval holds the true share, summed exactly over the binomial distribution.
     ///
-    /// Source: Brown, Cai, DasGupta, Statistical Science 16 (2001) 101, section 4: on average over
+    /// Source: Brown, Cai and Dasgupta, Statistical Science 16 (2001) 101, section 4: on average over
     /// all shares the score interval holds close to 95 %, and away from the ends it is never far
     /// below; the least near the ends is about 0.83 (from memory). Agresti and Coull, The American
     /// Statistician 52 (1998) 119.

@@ -82,14 +82,14 @@ fn every_expected_answer_comes_out() {
 }
 
 /// The choice of M01 stands first among its candidates; those of the other machines are choices of
-/// the whole list and come out of the shortest one. M02 waits for its heater.
+/// the whole list and come out of the shortest one. M02 waits for its heater: then its choice
+/// holds, beside an oil that is on the site.
 #[test]
 fn the_choices_come_out() {
     let first = |machine: &str| judgements().into_iter().find(|j| j["machine"] == machine);
     assert_eq!(first("M01").expect("weighed")["oil"], "O-16");
     let ran = filmwright("whatif M02 --set \"heater=10 degC\" --demo -f json -q");
     let json = ran.json();
-    assert_eq!(json["proposed"][0]["after"], "O-13", "{json}");
     let moved = json["changes"].as_array().expect("a list");
     let o13 = moved.iter().find(|c| c["oil"] == "O-13").expect("moves");
     assert_eq!(
