@@ -68,6 +68,24 @@ impl Aim {
         }
     }
 
+    /// The same, where the key says from what a machine inherits or copies: that is put into its
+    /// record, before anything is inherited.
+    pub(super) fn of_records(self, entry: &Entry, about: &About) -> Vec<Self> {
+        let inherits = matches!(spelt(&entry.key.text).as_str(), "area" | "like");
+        if self != Self::Point(None) || !inherits {
+            return vec![self];
+        }
+        let mut tags: Vec<&str> = about
+            .targets
+            .iter()
+            .map(|t| t.split('/').next().unwrap_or(t))
+            .collect();
+        tags.dedup();
+        tags.into_iter()
+            .map(|tag| Self::Machine(tag.to_owned()))
+            .collect()
+    }
+
     /// As it is written before the key.
     fn written(&self) -> String {
         match self {
