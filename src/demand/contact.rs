@@ -78,6 +78,12 @@ pub fn add<R: Recorder>(cx: &mut Context<'_, '_, R>, part: &Part, contact: &Cont
         _ => None,
     };
     let Some(film) = found else {
+        lacks(
+            cx,
+            part,
+            radii.map(|(_, across)| across.is_some()),
+            (loads.0.is_some(), loads.1.is_some()),
+        );
         cx.undecided(
             part,
             End::HotFloor,
@@ -96,6 +102,22 @@ pub fn add<R: Recorder>(cx: &mut Context<'_, '_, R>, part: &Part, contact: &Cont
         return;
     }
     push(cx, part, contact, film, sigma);
+}
+
+/// Notes what a line or a point contact still needs: its radii, or the load of its kind.
+fn lacks<R: Recorder>(
+    cx: &mut Context<'_, '_, R>,
+    part: &Part,
+    point: Option<bool>,
+    (per_length, load): (bool, bool),
+) {
+    let lacking = match point {
+        None if load && !per_length => wanted("rx", "R_x", "reduced radius along rolling"),
+        None => wanted("radius", "R", "reduced radius"),
+        Some(false) => wanted("load per length", "w", "load per length"),
+        Some(true) => wanted("load", "F", "load"),
+    };
+    cx.missing(part, lacking, None);
 }
 
 fn push<R: Recorder>(
