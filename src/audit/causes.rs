@@ -7,6 +7,7 @@
 
 mod cause;
 mod evidence;
+mod grid;
 mod likelihood;
 mod outside;
 mod side;
@@ -14,19 +15,21 @@ mod theta;
 
 pub use cause::Cause;
 pub use evidence::Evidence;
+pub use grid::Setting;
 pub use side::Around;
-pub use theta::Setting;
 
 use super::bottle::Figures;
 use super::profile::Profile;
 use super::scatter::Scatter;
+use crate::model::rulebook::{CauseSize, Rulebook};
 use crate::model::sample::Reading;
 use crate::numeric::math::{exp, ln};
 use crate::quantity::show::{Toward, fixed, significant};
+use grid::Grid;
 use likelihood::Sample;
 use std::collections::BTreeMap;
 use std::sync::{Arc, OnceLock};
-use theta::{Grid, Mixed, Theta};
+use theta::{Mixed, Theta};
 
 /// Another oil that fits, with the share of it.
 #[derive(Clone, Debug, PartialEq)]
@@ -107,20 +110,24 @@ pub struct Diagnosis {
 pub struct Causes {
     oils: Vec<Arc<Mixed>>,
     outside: Vec<Arc<Mixed>>,
+    sizes: Vec<CauseSize>,
     grids: BTreeMap<(usize, Setting), OnceLock<Grid>>,
     scatter: Scatter,
 }
 
-/// Below this likelihood of the unchanged oil something is the matter.
+/// Odds against the unchanged oil from which on something is the matter.
 const CHANGED: f64 = 0.7;
+/// How many times the figures must have raised those odds: what was to be expected before any
+/// figure was looked at accuses nobody.
+const RAISED: f64 = 1.8;
 /// Causes less likely than this are not named.
 const NAMED: f64 = 0.12;
 /// Settings whose viscosities fit so much worse than the best are not looked at further.
 const REACH: f64 = 12.0;
 
 impl Causes {
-    /// From the profiles of the site's oils, with their names.
-    pub fn new(profiles: &[(String, Profile, bool)], scatter: Scatter) -> Self {
+    /// From the profiles of the site's oils, with their names and whether they are greases.
+    pub fn new(profiles: &[(String, Profile, bool)], scatter: Scatter, rules: &Rulebook) -> Self {
         let mixed = |(i, (name, profile, grease)): (usize, &(String, Profile, bool))| {
             (!grease).then(|| {
                 Arc::new(Mixed {
@@ -142,7 +149,8 @@ impl Causes {
         let keys = settings.flat_map(|s| (0..profiles.len()).map(move |i| (i, s)));
         Self {
             oils: profiles.iter().enumerate().filter_map(mixed).collect(),
-            outside: outside::oils(),
+            outside: outside::oils(rules.foreign_oils.iter()),
+            sizes: rules.cause_sizes.iter().cloned().collect(),
             grids: keys.map(|k| (k, OnceLock::new())).collect(),
             scatter,
         }
@@ -201,7 +209,7 @@ impl Causes {
 
     fn grid(&self, profile: &Profile, setting: Setting) -> Grid {
         let others: Vec<Arc<Mixed>> = self.oils.iter().chain(&self.outside).cloned().collect();
-        Grid::new(profile, setting, &others)
+        Grid::new(profile, setting, &others, &self.sizes)
     }
 }
 
@@ -308,7 +316,8 @@ fn bulk(grid: &Grid, sample: &Sample, profile: &Profile) -> Diagnosis {
         other_oil: other_oil / total,
         ..Diagnosis::default()
     };
-    if none > CHANGED {
+    let odds = (1.0 - none) / none;
+    if odds < CHANGED || odds < RAISED * grid.odds {
         return found;
     }
     // lighter, heavier and strange oils together against the rest, so that one wrong oil is not

@@ -191,7 +191,7 @@ impl<'s, 'a> Auditor<'s, 'a> {
         Self {
             scales,
             bottles,
-            causes: Causes::new(&named, scatter),
+            causes: Causes::new(&named, scatter, scales.rules),
             profiles,
             on,
             pairs: RwLock::new(BTreeMap::new()),

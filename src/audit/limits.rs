@@ -4,6 +4,7 @@ use super::bottle::Code;
 use super::scatter::in_unit;
 use crate::model::facts::PartGroup;
 use crate::model::oil::OilKind;
+use crate::model::rulebook::condition::{Fact, OilFact};
 use crate::model::rulebook::used_oil::{Reading as On, Side};
 use crate::model::rulebook::{Cleanliness, Rulebook, UsedOilLimit};
 use crate::model::sample::Reading;
@@ -119,11 +120,13 @@ impl Limits {
         point: Option<&Point>,
     ) -> Self {
         let mut limits = Self::default();
-        let mut most: BTreeMap<(&'static str, bool), usize> = BTreeMap::new();
+        // a limit for this base outranks one for the place of any oil, then the more particular
+        let mut most: BTreeMap<(&'static str, bool), (bool, usize)> = BTreeMap::new();
         for rule in &rules.used_oil {
             if suitability.holds(&rule.when, card, oil) != Truth::True {
                 continue;
             }
+            let particular = (speaks_of_base(rule), rule.when.len());
             for high in [false, true] {
                 let looks = match rule.side {
                     Side::Both => true,
@@ -144,13 +147,13 @@ impl Limits {
                 let known = map.get(rule.reading.word());
                 let better = match known {
                     None => true,
-                    Some(_) if rule.when.len() != *seen => rule.when.len() > *seen,
+                    Some(_) if particular != *seen => particular > *seen,
                     Some(known) => {
                         found.is_stricter(known, rule.side == Side::Low && share_left(rule.reading))
                     }
                 };
                 if better {
-                    *seen = rule.when.len();
+                    *seen = particular;
                     map.insert(rule.reading.word(), found);
                 }
             }
@@ -209,6 +212,13 @@ fn of_rule(rule: &UsedOilLimit) -> Levels {
         source: rule.provenance.cited(),
         confidence: rule.provenance.confidence.word(),
     }
+}
+
+/// Whether a limit is one for oils of some base: a polyglycol holds ten times the water of a
+/// mineral oil wherever it runs.
+fn speaks_of_base(rule: &UsedOilLimit) -> bool {
+    let mut facts = rule.when.iter().flat_map(|c| &c.any).map(|c| c.fact);
+    facts.any(|fact| fact == Fact::Oil(OilFact::Base))
 }
 
 /// Readings that say what is left of new oil.

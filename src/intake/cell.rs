@@ -248,6 +248,7 @@ fn elsewhere_measured(key: &str, remark: Option<&str>) -> Option<Reading> {
     let remark = remark?.to_lowercase();
     let place = [
         "discharge",
+        "disch",
         "housing",
         "surface",
         "casing",
@@ -259,9 +260,18 @@ fn elsewhere_measured(key: &str, remark: Option<&str>) -> Option<Reading> {
         "gas",
         "shell",
         "skin",
+        "gehäuse",
+        "druckseite",
+        "raum",
     ]
     .into_iter()
     .find(|p| remark.contains(p))?;
+    let place = match place {
+        "disch" | "druckseite" => "discharge",
+        "gehäuse" => "housing",
+        "raum" => "room",
+        place => place,
+    };
     (key == "sump").then(|| Reading {
         ask: Some(format!(
             "the {place} temperature is given; which is that of the oil?"
@@ -295,7 +305,9 @@ fn in_unit(
     }
     let from_column = parsed.unit.is_none();
     let unit = match parsed.unit.or(expect.unit) {
-        Some(Unit::Gallon) => return gallons(expect, rules, &first, second.as_deref()),
+        Some(Unit::Gallon(part)) => {
+            return gallons(expect, rules, part, (&first, second.as_deref()));
+        }
         Some(Unit::Of(kind, unit)) if kinds.contains(&kind) => Some((kind, unit)),
         Some(Unit::Of(kind, unit)) if same_dimension(kind, kinds) => {
             Some((kinds[0], respelt(kind, unit)))

@@ -25,11 +25,15 @@ const COMPONENTS: &[(&[&str], &str)] = &[
     (&["power pack"], "hyd_any_general"),
     (&["chain"], "chain_roller_drip_bath"),
     (&["open gear"], "gear_open_bath"),
-    (&["getriebe"], "gear_parallel_bevel"),
     (&["réducteur"], "gear_parallel_bevel"),
-    (&["hydraulik"], "hyd_any_general"),
-    (&["pumpe"], "pump_bearing_bath"),
-    (&["ventilator"], "fan_bearing_bath"),
+    (&["*schnecke"], "gear_worm"),
+    (&["*getriebe"], "gear_parallel_bevel"),
+    (&["*hydraulik"], "hyd_any_general"),
+    (&["*schraubenverdichter"], "comp_screw_flooded_air"),
+    (&["*schraubenkompressor"], "comp_screw_flooded_air"),
+    (&["*pumpe"], "pump_bearing_bath"),
+    (&["*ventilator"], "fan_bearing_bath"),
+    (&["*gebläse"], "fan_bearing_bath"),
     (&["gearbox"], "gear_parallel_bevel"),
     (&["gear box"], "gear_parallel_bevel"),
     (&["gearmotor"], "gear_parallel_bevel"),
@@ -58,7 +62,11 @@ pub struct Taken {
 /// The component a description names; else the one its lubricant is for.
 pub fn component(description: &str, tag: &str, lubricant: Option<&Lubricant>) -> Option<Taken> {
     let words = words(&format!("{description} {tag}"));
-    let holds = |w: &str| words.contains(&format!(" {w} "));
+    // German writes compounds as one word: behind a star stands a part of one
+    let holds = |w: &str| match w.strip_prefix('*') {
+        Some(part) => words.contains(part),
+        None => words.contains(&format!(" {w} ")),
+    };
     let grease = lubricant.is_some_and(Lubricant::is_grease);
     let found = COMPONENTS
         .iter()

@@ -5,6 +5,7 @@ mod known;
 use super::target::{Makes, Target};
 use super::units::{Unit, unit};
 use known::{OILS, SITE};
+use std::sync::LazyLock;
 
 /// A heading taken apart.
 #[derive(Clone, Debug, PartialEq)]
@@ -134,14 +135,26 @@ pub fn guess(makes: Makes, heading: &Heading, samples: &[String]) -> Option<Gues
         };
         return Target::of(makes, word).map(|target| Guess { target, sure: 2 });
     }
+    let best = by_words(makes, &heading.words, heading.unit)
+        .or_else(|| by_unit(makes, heading))
+        .or_else(|| by_words(makes, &heading.words, None));
+    best.and_then(|(sure, word)| Target::of(makes, word).map(|target| Guess { target, sure }))
+}
+
+/// The phrase a heading is likest to, of what may hold the unit in it.
+fn by_words(makes: Makes, words: &str, unit: Option<Unit>) -> Option<(u8, &'static str)> {
     let table = match makes {
-        Makes::Site => SITE,
-        Makes::Oils => OILS,
+        Makes::Site => &*SITE_IN_FULL,
+        Makes::Oils => &*OILS_IN_FULL,
     };
-    let mut best: Option<(u8, usize, &str)> = None;
+    let words = in_full(words);
+    let mut best: Option<(u8, usize, &'static str)> = None;
     for (word, phrases) in table {
-        for phrase in phrases.split('|') {
-            let sure = likeness(&heading.words, phrase);
+        if unit.is_some_and(|u| !may_hold(makes, word, u)) {
+            continue;
+        }
+        for phrase in phrases {
+            let sure = likeness(&words, phrase);
             let better =
                 best.is_none_or(|(s, len, _)| sure > s || (sure == s && phrase.len() > len));
             if sure > 0 && better {
@@ -149,13 +162,116 @@ pub fn guess(makes: Makes, heading: &Heading, samples: &[String]) -> Option<Gues
             }
         }
     }
-    let (sure, _, word) = best?;
-    Target::of(makes, word).map(|target| Guess { target, sure })
+    best.map(|(sure, _, word)| (sure, word))
 }
+
+/// Whether a column of that unit may hold this: litres are no temperature and no name.
+fn may_hold(makes: Makes, word: &str, unit: Unit) -> bool {
+    use crate::quantity::Kind;
+    let Some(target) = Target::of(makes, word) else {
+        return false;
+    };
+    let kinds = target.kinds();
+    match unit {
+        _ if matches!(target, Target::Note) => true,
+        Unit::Gallon(_) => kinds.contains(&Kind::Volume) || kinds.contains(&Kind::VolumePerYear),
+        Unit::Of(Kind::Mass, _) => kinds.contains(&Kind::Volume) || kinds.contains(&Kind::Mass),
+        Unit::Of(Kind::Volume, _) => {
+            kinds.contains(&Kind::Volume) || kinds.contains(&Kind::VolumePerYear)
+        }
+        Unit::Of(Kind::Time, _) => {
+            kinds.contains(&Kind::Time) || kinds.contains(&Kind::HoursPerYear)
+        }
+        Unit::Of(Kind::Temperature, _) => {
+            kinds.contains(&Kind::Temperature) || kinds.contains(&Kind::Rise)
+        }
+        Unit::Of(kind, _) => kinds.contains(&kind),
+    }
+}
+
+/// What a unit alone tells of a column of a register: litres are a fill, kilowatts a power.
+fn by_unit(makes: Makes, heading: &Heading) -> Option<(u8, &'static str)> {
+    use crate::quantity::Kind;
+    if makes != Makes::Site {
+        return None;
+    }
+    let has = |w: &str| in_full(&heading.words).split(' ').any(|one| one == w);
+    let word = match heading.unit? {
+        Unit::Gallon(_) | Unit::Of(Kind::Volume, _) => "fill",
+        Unit::Of(Kind::RotationalSpeed, _) if has("motor") => "motor speed",
+        Unit::Of(Kind::RotationalSpeed, _) => "speed",
+        Unit::Of(Kind::Power, _) => "gear mesh: power",
+        Unit::Of(Kind::Temperature, _) if has("oil") || has("sump") => "sump",
+        _ => return None,
+    };
+    Some((1, word))
+}
+
+/// Words of headings cut short, and in full (common practice of registers).
+const SHORT: &[(&str, &str)] = &[
+    ("equip", "equipment"),
+    ("eqpt", "equipment"),
+    ("eqp", "equipment"),
+    ("mach", "machine"),
+    ("brg", "bearing"),
+    ("brgs", "bearing"),
+    ("brng", "bearing"),
+    ("bearings", "bearing"),
+    ("desc", "description"),
+    ("descr", "description"),
+    ("descrip", "description"),
+    ("no", "number"),
+    ("nr", "number"),
+    ("num", "number"),
+    ("nbr", "number"),
+    ("vol", "volume"),
+    ("qty", "quantity"),
+    ("qnty", "quantity"),
+    ("temp", "temperature"),
+    ("temps", "temperature"),
+    ("oper", "operating"),
+    ("op", "operating"),
+    ("amb", "ambient"),
+    ("min", "minimum"),
+    ("max", "maximum"),
+    ("cap", "capacity"),
+    ("lub", "lubricant"),
+    ("lubr", "lubricant"),
+    ("mtr", "motor"),
+    ("spd", "speed"),
+    ("pwr", "power"),
+    ("visc", "viscosity"),
+    ("spec", "specification"),
+    ("specs", "specification"),
+    ("loc", "location"),
+    ("dept", "department"),
+    ("hrs", "hours"),
+    ("rem", "remarks"),
+    ("assy", "assembly"),
+];
+
+/// A heading or phrase with its short words written out.
+fn in_full(words: &str) -> String {
+    let one = |w| SHORT.iter().find(|(s, _)| *s == w).map_or(w, |(_, f)| *f);
+    words.split(' ').map(one).collect::<Vec<_>>().join(" ")
+}
+
+/// A word of the map file with the phrases it is known by, in full.
+type Phrases = Vec<(&'static str, Vec<String>)>;
+
+fn phrases_of(table: &'static [(&'static str, &'static str)]) -> Phrases {
+    let one = |(word, phrases): &(&'static str, &'static str)| {
+        (*word, phrases.split('|').map(in_full).collect())
+    };
+    table.iter().map(one).collect()
+}
+
+static SITE_IN_FULL: LazyLock<Phrases> = LazyLock::new(|| phrases_of(SITE));
+static OILS_IN_FULL: LazyLock<Phrases> = LazyLock::new(|| phrases_of(OILS));
 
 fn of_volume(heading: &Heading, samples: &[String]) -> bool {
     use crate::quantity::Kind;
-    let volume = |u: Unit| matches!(u, Unit::Gallon | Unit::Of(Kind::Volume | Kind::Mass, _));
+    let volume = |u: Unit| matches!(u, Unit::Gallon(_) | Unit::Of(Kind::Volume | Kind::Mass, _));
     if heading.unit.is_some_and(volume) {
         return true;
     }

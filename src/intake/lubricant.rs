@@ -3,7 +3,7 @@
 
 use crate::input::points::{Grade, read_grade};
 use crate::quantity::convert::{celsius, mm2_s, to_mm2_s};
-use crate::quantity::show::{Toward, significant};
+use crate::quantity::show::{Toward, fixed, significant};
 use crate::quantity::{Efflux, KinematicViscosity, Measure, Ratio};
 use crate::relation::oil::grade::IsoGrade;
 use crate::relation::oil::{saybolt, viscosity_index};
@@ -112,6 +112,7 @@ pub fn read(text: &str) -> Lubricant {
     let plain = text.replace(['?', ',', ';', '(', ')'], " ");
     let mut words: Vec<String> = plain.split_whitespace().map(str::to_owned).collect();
     equivalent(&mut words, &mut out);
+    consistency(&mut words, &mut out);
     viscosity(&mut words, &mut out);
     agma(&mut words, &mut out);
     sae(&mut words, &mut out);
@@ -134,6 +135,36 @@ fn equivalent(words: &mut Vec<String>, out: &mut Lubricant) {
         };
         words.drain(from..=at);
     }
+}
+
+/// A grease by its consistency: `EP2`, `EP 2`, `Lithium 2`, `MP-00`. No EP oil is thinner than
+/// VG 10, so a number so small behind it is one of NLGI.
+fn consistency(words: &mut Vec<String>, out: &mut Lubricant) {
+    const NLGI: [&str; 6] = ["000", "00", "0", "1", "2", "3"];
+    const LEADS: [&str; 8] = ["EP", "MP", "LI", "LITHIUM", "CALCIUM", "GREASE", "LX", "HT"];
+    let upper: Vec<String> = words.iter().map(|w| w.to_uppercase()).collect();
+    if upper.iter().any(|w| w == "NLGI" || w.starts_with("AGMA")) {
+        return;
+    }
+    let found = upper.iter().enumerate().find_map(|(i, w)| {
+        let letters = w.trim_end_matches(|c: char| c.is_ascii_digit());
+        let (lead, number) = (letters.trim_end_matches('-'), &w[letters.len()..]);
+        if LEADS.contains(&lead) && NLGI.contains(&number) {
+            return Some((i, i + 1, number.to_owned()));
+        }
+        let next = upper.get(i + 1)?;
+        (number.is_empty() && LEADS.contains(&lead) && NLGI.contains(&next.as_str()))
+            .then(|| (i, i + 2, next.clone()))
+    });
+    let Some((from, to, number)) = found else {
+        return;
+    };
+    if upper[from].starts_with("EP") && !out.families.contains(&"EP") {
+        out.families.push("EP");
+    }
+    out.nlgi = Some(number);
+    out.kind = Some("grease");
+    words.drain(from..to);
 }
 
 /// A viscosity: `315 SUS`, `68 cSt`, `220 mm2/s at 40`.
@@ -164,43 +195,100 @@ fn viscosity(words: &mut Vec<String>, out: &mut Lubricant) {
     let Ok(value) = number.replace(',', ".").parse::<f64>() else {
         return;
     };
-    let temperature = temperature_behind(words, at + n);
-    let said =
-        words[at..(at + n + usize::from(temperature.is_some()) * 2).min(words.len())].join(" ");
+    let (stated, taken) = match temperature_behind(words, at + n, unit) {
+        Some((t, taken)) => (Some(t), taken),
+        None => (None, 0),
+    };
+    let t = stated.unwrap_or(if unit == "SUS" { FAHRENHEIT_100 } else { 40.0 });
     let nu = if unit == "SUS" {
         let reading: Efflux = Efflux::from_base(value);
-        saybolt::from_universal(reading, celsius(37.777_8)).ok()
+        saybolt::from_universal(reading, celsius(t)).ok()
     } else {
         (value > 0.0).then(|| mm2_s(value))
     };
     let Some(nu) = nu else { return };
-    let at_text = if unit == "SUS" { "100 degF" } else { "40 degC" };
-    let shown = significant(to_mm2_s(nu), 3, Toward::Nearest);
+    let end = (at + n + taken).min(words.len());
+    let said = words[at..end].join(" ");
     out.viscosity_for_name = true;
-    out.grade = nearest(nu);
-    let about = out
-        .grade
-        .map(|g| format!(", about ISO VG {g}"))
-        .unwrap_or_default();
-    let assumed = if temperature.is_some() {
-        ""
-    } else {
-        ", the temperature assumed"
-    };
-    out.grade_as = Some(format!(
-        "{said} at {at_text} is {shown} mm2/s{about}{assumed}"
-    ));
-    let end = at + n + usize::from(temperature.is_some()) * 2;
-    words.drain(at..end.min(words.len()));
+    let (grade, by) = about_grade(nu, t);
+    out.grade = grade;
+    let shown = significant(to_mm2_s(nu), 3, Toward::Nearest);
+    let about = grade.map_or_else(String::new, |g| format!(", about ISO VG {g}{by}"));
+    let degrees = fixed(
+        t,
+        if (t - t.round()).abs() < 0.05 { 0 } else { 1 },
+        Toward::Nearest,
+    );
+    out.grade_as = Some(match (stated, unit) {
+        (Some(_), _) => format!("{said} is {shown} mm2/s at {degrees} degC{about}"),
+        (None, "SUS") => {
+            format!("{said} at 100 degF is {shown} mm2/s{about}, the temperature assumed")
+        }
+        (None, _) => {
+            format!("{said} at 40 degC is {shown} mm2/s{about}, the temperature assumed")
+        }
+    });
+    words.drain(at..end);
 }
 
-/// `at 40`, `@ 100F`.
-fn temperature_behind(words: &[String], from: usize) -> Option<&str> {
+/// 100 °F in °C, where Saybolt readings of oils are taken.
+const FAHRENHEIT_100: f64 = 37.777_8;
+
+/// The grade of a viscosity at a temperature; by an index of 95 where it was taken hot.
+fn about_grade(nu: KinematicViscosity, t: f64) -> (Option<u32>, &'static str) {
+    match t {
+        t if (37.0..=41.0).contains(&t) => (nearest(nu), ""),
+        t if (98.0..=100.5).contains(&t) => {
+            let nu40 = viscosity_index::nu40(nu, Ratio::from_base(95.0)).ok();
+            (nu40.and_then(nearest), " by an index of 95")
+        }
+        _ => (None, ""),
+    }
+}
+
+/// `at 40`, `@ 100F`, `@210 °F`: the temperature in °C, and how many words it takes. Saybolt
+/// readings are in °F, mm²/s in °C, where no scale is named.
+fn temperature_behind(words: &[String], from: usize, unit: &str) -> Option<(f64, usize)> {
     let sign = words.get(from)?;
-    (sign.eq_ignore_ascii_case("at") || sign == "@").then_some(())?;
-    let t = words.get(from + 1)?;
-    t.starts_with(|c: char| c.is_ascii_digit())
-        .then_some(t.as_str())
+    let (text, mut taken) = match sign.strip_prefix('@') {
+        Some("") => (words.get(from + 1)?.as_str(), 2),
+        Some(glued) => (glued, 1),
+        None if sign.eq_ignore_ascii_case("at") => (words.get(from + 1)?.as_str(), 2),
+        None => return None,
+    };
+    let digits = text
+        .find(|c: char| !(c.is_ascii_digit() || c == '.'))
+        .unwrap_or(text.len());
+    let number: f64 = text[..digits].parse().ok()?;
+    let scale_of = |t: &str| {
+        let plain = t
+            .to_lowercase()
+            .replace(['°', 'º', '.'], "")
+            .replace("deg", "");
+        match plain.as_str() {
+            "c" => Some('c'),
+            "f" => Some('f'),
+            _ => None,
+        }
+    };
+    let mut scale = scale_of(&text[digits..]);
+    let degree = |w: &String| matches!(w.to_lowercase().as_str(), "deg" | "deg." | "°");
+    if scale.is_none() && words.get(from + taken).is_some_and(degree) {
+        taken += 1;
+    }
+    if scale.is_none()
+        && let Some(found) = words.get(from + taken).and_then(|w| scale_of(w))
+    {
+        scale = Some(found);
+        taken += 1;
+    }
+    let fahrenheit = scale.map_or(unit == "SUS", |s| s == 'f');
+    let t = if fahrenheit {
+        (number - 32.0) / 1.8
+    } else {
+        number
+    };
+    Some((t, taken))
 }
 
 /// The ISO grade whose middle lies nearest.
@@ -301,11 +389,23 @@ fn sae(words: &mut Vec<String>, out: &mut Lubricant) {
         Some((cold, hot)) if !hot.is_empty() => format!("{cold}W-{}", hot.trim_start_matches('-')),
         _ => number,
     };
-    let Ok(grade) = read_grade(&format!("SAE {hot}")) else {
-        return;
-    };
-    of_grade(out, grade, &words[from..to].join(" "));
+    let written = words[from..to].join(" ");
+    match read_grade(&format!("SAE {hot}")) {
+        Ok(grade) => of_grade(out, grade, &written),
+        Err(_) if is_winter(&hot) => {
+            out.grade_as = Some(format!(
+                "{written} says how the oil starts in the cold, not how thick it is when hot"
+            ));
+        }
+        Err(_) => return,
+    }
     words.drain(from..to);
+}
+
+/// A W grade without a hot one: `10W`.
+fn is_winter(grade: &str) -> bool {
+    let number = grade.strip_suffix('W').unwrap_or("");
+    !number.is_empty() && number.bytes().all(|b| b.is_ascii_digit())
 }
 
 /// Takes a grade over: what it says at 40 °C, and about which ISO grades that is.

@@ -267,6 +267,10 @@ impl Row<'_, '_> {
                     None => value,
                 }
             }
+            Form::Base if is_pag(&text) => {
+                self.say(Kind::Question, Some(column), &text, WHICH_PAG);
+                "PAG water-soluble".to_owned()
+            }
             Form::Base => match base(&text) {
                 Some(base) => base,
                 None => {
@@ -306,9 +310,17 @@ impl Row<'_, '_> {
         let text = content.text();
         let heading = column.heading.to_lowercase();
         let litre = |t: &str| {
-            ["per l", "/l", "/ l", "a litre"].iter().any(|w| {
-                t.ends_with(w) || t.contains(&format!("{w} ")) || t.contains(&format!("{w})"))
-            })
+            [
+                "per l",
+                "/l",
+                "/ l",
+                "a litre",
+                "per litre",
+                "per liter",
+                "per ltr",
+            ]
+            .iter()
+            .any(|w| t.ends_with(w) || t.contains(&format!("{w} ")) || t.contains(&format!("{w})")))
         };
         let mass = |t: &str| ["per kg", "/kg", "/ kg"].iter().any(|w| t.contains(w));
         let per = match (text.to_lowercase(), heading) {
@@ -339,6 +351,19 @@ impl Row<'_, '_> {
             }
         }
     }
+}
+
+/// Said of a polyglycol of which nobody states the kind. It must not pass for a mineral oil: the
+/// two neither mix nor have a slope alike.
+const WHICH_PAG: &str =
+    "a PAG: water-soluble or oil-soluble? Water-soluble, the commoner, is assumed";
+
+fn is_pag(text: &str) -> bool {
+    let lower = text.trim().to_lowercase();
+    matches!(
+        lower.as_str(),
+        "pag" | "pg" | "polyglycol" | "polyalkylene glycol" | "polyalkyleneglycol"
+    )
 }
 
 /// A base stock of a list, in the reader's words.

@@ -264,7 +264,11 @@ mod tests {
         let p = parse("113F", TEMPERATURE).expect("a number");
         assert_eq!(p.unit, Some(Unit::Of(Kind::Temperature, "degF")));
         let p = parse("ca. 15 gal?", VOLUME).expect("a number");
-        assert!(p.about && p.doubtful && p.unit == Some(Unit::Gallon));
+        assert!(
+            p.about
+                && p.doubtful
+                && p.unit == Some(Unit::Gallon(crate::intake::units::Part::Whole))
+        );
         let p = parse("15 gal (US)", VOLUME).expect("a number");
         assert_eq!(p.unit, Some(Unit::Of(Kind::Volume, "gal(US)")));
         let p = parse("< -40 °C", TEMPERATURE).expect("a number");

@@ -15,8 +15,8 @@ use super::tags;
 use super::target::Target;
 use crate::model::rulebook::Rulebook;
 use across::{alike, named_once, of_columns};
-use refer::resolved;
-use std::collections::BTreeMap;
+use refer::Ends;
+use std::collections::{BTreeMap, BTreeSet};
 use write::write;
 
 /// What the rows of a register are read against.
@@ -44,7 +44,7 @@ pub(super) struct Reader<'a> {
     /// Columns with bare numbers: how many, the first cell, what it was read as.
     bare: BTreeMap<u32, (usize, String, String)>,
     /// Merged cells said.
-    merged: Vec<(u32, u32)>,
+    merged: BTreeSet<(u32, u32)>,
     sumps: usize,
 }
 
@@ -77,10 +77,9 @@ impl<'a> Reader<'a> {
     }
 
     pub(super) fn merged(&mut self, column: &Column, from: u32, row: u32) {
-        if self.merged.contains(&(column.number, from)) {
+        if !self.merged.insert((column.number, from)) {
             return;
         }
-        self.merged.push((column.number, from));
         let quantity = !column.target.kinds().is_empty();
         self.findings.push(Finding {
             kind: if quantity { Kind::Question } else { Kind::ReadAs },
@@ -134,11 +133,14 @@ struct Outline {
     oil: Option<String>,
     number: Option<u32>,
     row: u32,
-    texts: Vec<String>,
 }
 
-/// Drafts a site file from a register.
-pub fn draft(table: &Table<'_>, context: &Context<'_>) -> Draft {
+/// Drafts a site file from a register; `told` hears how many rows of how many are read.
+pub fn draft(
+    table: &Table<'_>,
+    context: &Context<'_>,
+    told: &mut dyn FnMut(usize, usize),
+) -> Draft {
     let mut reader = Reader {
         context,
         layout: table.layout,
@@ -147,20 +149,23 @@ pub fn draft(table: &Table<'_>, context: &Context<'_>) -> Draft {
         missing: 0,
         areas: Vec::new(),
         bare: BTreeMap::new(),
-        merged: Vec::new(),
+        merged: BTreeSet::new(),
         sumps: 0,
     };
     let lines: Vec<Line<'_>> = table.lines().collect();
     let outlines: Vec<Outline> = lines.iter().map(|l| outline(l, table.layout)).collect();
+    let ends = Ends::of(&outlines);
     let mut machines: Vec<Machine> = Vec::new();
     let mut left_out: Vec<String> = Vec::new();
     let mut counts = Counts::default();
     let mut hidden = Vec::new();
     for (i, line) in lines.iter().enumerate() {
         counts.rows += 1;
+        told(i, lines.len());
         let one = &outlines[i];
         if let Some(why) = not_carried(line, one, table.layout) {
-            left_out.push(format!("row {}: {}", one.row, one.texts.join(" | ")));
+            let texts: Vec<String> = line.fields().map(|f| f.content.text()).collect();
+            left_out.push(format!("row {}: {}", one.row, texts.join(" | ")));
             reader.findings.push(about_row(one, Kind::LeftOut, why));
             continue;
         }
@@ -168,7 +173,7 @@ pub fn draft(table: &Table<'_>, context: &Context<'_>) -> Draft {
         if line.hidden {
             hidden.push(line.number);
         }
-        machines.extend(of_row(&mut reader, line, &outlines, i));
+        machines.extend(of_row(&mut reader, line, (&outlines, &ends), i));
     }
     if !hidden.is_empty() {
         reader.findings.push(of_file(format!(
@@ -176,6 +181,7 @@ pub fn draft(table: &Table<'_>, context: &Context<'_>) -> Draft {
             listed(&hidden)
         )));
     }
+    drop((lines, outlines, ends));
     counts.missing = reader.missing;
     counts.records = machines.len();
     of_columns(&mut reader);
@@ -205,7 +211,6 @@ fn outline(line: &Line<'_>, layout: &Layout) -> Outline {
         oil: text(&|t| is_key(t, "oil now")),
         number,
         row: line.number,
-        texts: line.fields().map(|f| f.content.text()).collect(),
     }
 }
 
@@ -222,18 +227,25 @@ fn not_carried(line: &Line<'_>, one: &Outline, layout: &Layout) -> Option<String
     if line.is_heading() && !figures {
         return Some("one text alone, taken as a heading between rows".into());
     }
-    let said = |t: &Target| {
-        is_key(t, "name") || matches!(t, Target::Note | Target::Name) || t.word() == "note"
+    let texts = |wanted: &dyn Fn(&Target) -> bool| -> Vec<String> {
+        let columns = layout.columns.iter().filter(|c| wanted(&c.target));
+        columns
+            .filter_map(|c| line.field(c))
+            .map(|f| f.content.text())
+            .collect()
     };
-    let texts: Vec<String> = layout
-        .columns
+    let names = texts(&|t| is_key(t, "name") || matches!(t, Target::Name));
+    // a remark may say of a filter that it was removed; of the machine it says so at once
+    let remarks = texts(&|t| matches!(t, Target::Note) || t.word() == "note");
+    let first_words = remarks
         .iter()
-        .filter(|c| said(&c.target))
-        .filter_map(|c| line.field(c))
-        .map(|f| f.content.text())
+        .map(|t| t.split_whitespace().next().unwrap_or(""));
+    let said: Vec<&str> = names
+        .iter()
+        .map(String::as_str)
+        .chain(first_words)
         .collect();
-    let texts: Vec<&str> = texts.iter().map(String::as_str).collect();
-    is_gone(&texts).map(|word| {
+    is_gone(&said).map(|word| {
         format!("the register says \"{word}\": not carried, kept as a remark in the file")
     })
 }
@@ -241,11 +253,11 @@ fn not_carried(line: &Line<'_>, one: &Outline, layout: &Layout) -> Option<String
 fn of_row(
     reader: &mut Reader<'_>,
     line: &Line<'_>,
-    outlines: &[Outline],
+    (outlines, ends): (&[Outline], &Ends),
     at: usize,
 ) -> Vec<Machine> {
     let one = &outlines[at];
-    let oil = resolved(reader, outlines, at);
+    let oil = ends.resolved(reader, outlines, at);
     let mut tag = one.tag.clone();
     if tag.is_empty() {
         tag = format!("row {}", one.row);

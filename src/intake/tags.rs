@@ -5,6 +5,9 @@ use std::collections::BTreeMap;
 /// The machines of a tag such as `P-210 A/B/C`; itself alone where it is one.
 pub fn machines(tag: &str) -> Vec<String> {
     let tag = tag.trim();
+    if let Some(several) = numbered(tag) {
+        return several;
+    }
     let parts: Vec<&str> = tag.split(['/', ',', '&', '+']).map(str::trim).collect();
     if parts.len() < 2 || parts.len() > 26 || parts.iter().any(|p| p.is_empty()) {
         return vec![tag.to_owned()];
@@ -153,12 +156,25 @@ pub fn reference(text: &str) -> Option<Reference> {
     let lower = plain.to_lowercase();
     if matches!(
         lower.as_str(),
-        "ditto" | "do" | "dto" | "\"" | "''" | "\u{3003}" | "same" | "as above" | "same as above"
+        "ditto"
+            | "dito"
+            | "do"
+            | "dto"
+            | "idem"
+            | "wie oben"
+            | "s. o"
+            | "s.o"
+            | "\""
+            | "''"
+            | "\u{3003}"
+            | "same"
+            | "as above"
+            | "same as above"
     ) {
         return Some(Reference::Above);
     }
     let skip = [
-        "same as ", "as per ", "as for ", "like ", "see row ", "as row ",
+        "same as ", "as per ", "as for ", "like ", "see row ", "as row ", "wie ", "siehe ",
     ]
     .into_iter()
     .find(|w| lower.starts_with(w))?;
@@ -167,6 +183,7 @@ pub fn reference(text: &str) -> Option<Reference> {
     let number = lower
         .strip_prefix("row ")
         .or_else(|| lower.strip_prefix("line "))
+        .or_else(|| lower.strip_prefix("zeile "))
         .or_else(|| lower.strip_prefix("no. "))
         .map_or(lower.as_str(), str::trim);
     let row_word = skip.ends_with("row ") || number != lower;
@@ -177,21 +194,38 @@ pub fn reference(text: &str) -> Option<Reference> {
     }
 }
 
-/// Whether a tag or description answers to a word of a reference.
-pub fn answers(reference: &str, tag: &str, description: &str) -> bool {
-    let bare = |t: &str| -> String {
-        t.to_lowercase()
-            .chars()
-            .filter(|c| c.is_alphanumeric())
-            .collect()
-    };
-    let wanted = bare(reference);
-    let word = |text: &str| {
-        text.split(|c: char| !c.is_alphanumeric())
-            .any(|w| w.to_lowercase().trim_end_matches('s') == wanted.trim_end_matches('s'))
-    };
-    !wanted.is_empty()
-        && (bare(tag) == wanted || bare(description) == wanted || word(tag) || word(description))
+/// A name in lower case without anything between its letters and figures.
+pub fn bare(text: &str) -> String {
+    let kept = text.chars().filter(|c| c.is_alphanumeric());
+    kept.flat_map(char::to_lowercase).collect()
+}
+
+/// The words of a tag or description that a reference may name it by, in lower case and singular.
+pub fn name_words(text: &str) -> impl Iterator<Item = String> + '_ {
+    text.split(|c: char| !c.is_alphanumeric())
+        .map(|w| w.to_lowercase().trim_end_matches('s').to_owned())
+        .filter(|w| !w.is_empty())
+}
+
+/// Tags of machines numbered from one to another: `AG-1 to AG-4`, `P-101 thru 104`.
+fn numbered(tag: &str) -> Option<Vec<String>> {
+    const MOST: u32 = 26;
+    let lower = tag.to_ascii_lowercase();
+    let words = [" to ", " thru ", " through ", " bis ", "..", "\u{2026}"];
+    let (first, last) = words.iter().find_map(|w| {
+        let at = lower.find(w)?;
+        Some((tag.get(..at)?.trim(), tag.get(at + w.len()..)?.trim()))
+    })?;
+    let figures = |t: &str| t.bytes().rev().take_while(u8::is_ascii_digit).count();
+    let (stem, from) = first.split_at(first.len() - figures(first));
+    let (end_stem, to) = last.split_at(last.len() - figures(last));
+    let same = end_stem.is_empty() || end_stem.eq_ignore_ascii_case(stem);
+    let (a, b): (u32, u32) = (from.parse().ok()?, to.parse().ok()?);
+    if stem.is_empty() || !same || b <= a || b - a >= MOST {
+        return None;
+    }
+    let width = from.len();
+    Some((a..=b).map(|n| format!("{stem}{n:0width$}")).collect())
 }
 
 #[cfg(test)]
@@ -204,6 +238,10 @@ mod tests {
         assert_eq!(machines("P-101A/B"), ["P-101A", "P-101B"]);
         assert_eq!(machines("P-210/211/212"), ["P-210", "P-211", "P-212"]);
         assert_eq!(machines("FN-1/2"), ["FN-1", "FN-2"]);
+        assert_eq!(machines("AG-1 to AG-4"), ["AG-1", "AG-2", "AG-3", "AG-4"]);
+        assert_eq!(machines("P-099 thru 101"), ["P-099", "P-100", "P-101"]);
+        assert_eq!(machines("road to mill 4"), ["road to mill 4"]);
+        assert_eq!(machines("CV-4 to CV-1"), ["CV-4 to CV-1"]);
         assert_eq!(machines("A/C unit"), ["A/C unit"]);
         assert_eq!(machines("CV-101 GBX"), ["CV-101 GBX"]);
         assert_eq!(machines("PUMP/MOTOR"), ["PUMP/MOTOR"]);
@@ -238,9 +276,10 @@ mod tests {
             Some(Reference::Named("TURB-1".into()))
         );
         assert_eq!(reference("ditto"), Some(Reference::Above));
+        assert_eq!(reference("wie Zeile 6"), Some(Reference::Row(6)));
         assert_eq!(reference("ISO 68"), None);
-        assert!(answers("turbine", "TURB-1", "turbine"));
-        assert!(answers("turb-1", "TURB-1", ""));
-        assert!(!answers("turbine", "CMP-2", "compressor"));
+        assert_eq!(bare("TURB-1"), bare("turb 1"));
+        let words: Vec<String> = name_words("Press pumps, north").collect();
+        assert_eq!(words, ["pre", "pump", "north"]);
     }
 }

@@ -7,8 +7,48 @@ use crate::quantity::Kind;
 pub enum Unit {
     /// A unit of a kind, in the program's spelling.
     Of(Kind, &'static str),
-    /// A gallon of which nobody said whether US or UK.
-    Gallon,
+    /// A gallon, or a part of it, of which nobody said whether US or UK.
+    Gallon(Part),
+}
+
+/// What of a gallon.
+#[derive(Clone, Copy, Debug, PartialEq, Eq)]
+pub enum Part {
+    /// The whole.
+    Whole,
+    /// A quart, the fourth part.
+    Quart,
+    /// A pint, the eighth part.
+    Pint,
+}
+
+impl Part {
+    /// Its sign.
+    pub const fn sign(self) -> &'static str {
+        match self {
+            Self::Whole => "gal",
+            Self::Quart => "qt",
+            Self::Pint => "pt",
+        }
+    }
+
+    /// How many make a gallon.
+    pub const fn in_a_gallon(self) -> f64 {
+        match self {
+            Self::Whole => 1.0,
+            Self::Quart => 4.0,
+            Self::Pint => 8.0,
+        }
+    }
+}
+
+fn of_gallon(lower: &str) -> Option<Part> {
+    Some(match lower {
+        "gal" | "gals" | "gallon" | "gallons" => Part::Whole,
+        "qt" | "qts" | "quart" | "quarts" => Part::Quart,
+        "pt" | "pts" | "pint" | "pints" => Part::Pint,
+        _ => return None,
+    })
 }
 
 /// Spellings of registers beside those of the reader, in lower case.
@@ -77,8 +117,8 @@ pub fn unit(text: &str, wanted: &[Kind]) -> Option<Unit> {
     if matches!(lower.as_str(), "\u{b0}" | "deg") && !wanted.contains(&Kind::Angle) {
         return None;
     }
-    if matches!(lower.as_str(), "gal" | "gals" | "gallon" | "gallons") {
-        return Some(Unit::Gallon);
+    if let Some(part) = of_gallon(&lower) {
+        return Some(Unit::Gallon(part));
     }
     let of = |kinds: &[Kind]| kinds.iter().find_map(|k| spelt(*k, text, &lower));
     of(wanted).or_else(|| of(Kind::ALL))
@@ -117,7 +157,8 @@ mod tests {
     fn spellings_of_registers_are_known() {
         let of = |text, kind| unit(text, &[kind]);
         assert_eq!(of("l", Kind::Volume), Some(Unit::Of(Kind::Volume, "L")));
-        assert_eq!(of("gal", Kind::Volume), Some(Unit::Gallon));
+        assert_eq!(of("gal", Kind::Volume), Some(Unit::Gallon(Part::Whole)));
+        assert_eq!(of("pints", Kind::Volume), Some(Unit::Gallon(Part::Pint)));
         assert_eq!(
             of("US gal", Kind::Volume),
             Some(Unit::Of(Kind::Volume, "gal(US)"))

@@ -154,8 +154,14 @@ fn grade(text: &str) -> Reading {
             ..value(format!("ISO VG {}", grade.number()))
         };
     }
+    // engine grades are often written without their SAE
+    let sae = format!("SAE {text}");
     match read_grade(text) {
         Ok(_) => value(text),
+        Err(_) if text.to_uppercase().contains('W') && read_grade(&sae).is_ok() => Reading {
+            read_as: Some(format!("read as {sae}")),
+            ..value(sae)
+        },
         Err(_) => Reading::fault("a grade is wanted, as ISO VG 220, AGMA 5 EP or SAE 90"),
     }
 }

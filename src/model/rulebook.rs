@@ -7,6 +7,7 @@
 
 pub mod advice;
 pub mod base_stock;
+pub mod cause;
 pub mod caution;
 pub mod class;
 pub mod compatibility;
@@ -23,6 +24,7 @@ pub mod used_oil;
 
 pub use advice::{Advice, GradeCrossing, LifeFigure, LifeRule};
 pub use base_stock::BaseStockRule;
+pub use cause::{CauseSize, ForeignOil};
 pub use caution::Caution;
 pub use class::{Because, Class, Contains, Need, Serving};
 pub use compatibility::{MixRule, PaintRule, ResidualRule, SealRule};
@@ -89,6 +91,10 @@ pub struct Rulebook {
     pub diagnosis: Table<Diagnosis>,
     /// What new oil reads where nobody says.
     pub new_oil: Table<NewOilReading>,
+    /// How far causes go, and what they do on their way.
+    pub cause_sizes: Table<CauseSize>,
+    /// Oils a site may hold though they are not on its list.
+    pub foreign_oils: Table<ForeignOil>,
     /// How far laboratories differ.
     pub scatter: Table<TestScatter>,
     /// How often to sample.
@@ -172,6 +178,8 @@ impl Rulebook {
             wear: "wear",
             diagnosis: "diagnosis",
             new_oil: "new-oil readings",
+            cause_sizes: "cause sizes",
+            foreign_oils: "foreign oils",
             scatter: "test scatter",
             sampling: "sampling",
             changes: "change intervals",

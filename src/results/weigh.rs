@@ -21,33 +21,37 @@ pub type Scatters = BTreeMap<(usize, usize), Scatter>;
 /// Pairs of oils by season, by point in the order weighed; only where no single oil holds.
 pub type Seasons = BTreeMap<usize, crate::decide::season::Pair>;
 
-/// A JSON document of all judgements.
-pub fn document_of(
-    scales: &Scales<'_>,
-    weighed: &[Weighed<'_>],
-    scatters: &Scatters,
-    seasons: &Seasons,
+/// A JSON document of all judgements, in parts: of a large site it is far larger than what it is
+/// made from.
+pub fn document_of<'d>(
+    scales: &'d Scales<'_>,
+    weighed: &'d [Weighed<'_>],
+    scatters: &'d Scatters,
+    seasons: &'d Seasons,
     head: &Head,
-) -> String {
-    let mut top = document("weigh", head);
-    let mut list = Vec::new();
-    for (n, w) in weighed.iter().enumerate() {
-        for candidate in &w.candidates {
+) -> impl Iterator<Item = String> + 'd {
+    let of_point = move |(n, w): (usize, &'d Weighed<'_>)| {
+        let judged = w.candidates.iter().map(move |candidate| {
             let mut value = judgement(scales, w, candidate);
             if let (Value::Object(m), Some(s)) = (&mut value, scatters.get(&(n, candidate.oil))) {
                 m.insert("scatter".into(), super::scatter::value(s, scales.units));
             }
-            list.push(value);
-        }
-        for barred in &w.barred {
-            list.push(barred_row(scales, w, barred));
-        }
-    }
-    top.insert("judgements".into(), Value::Array(list));
+            value
+        });
+        judged.chain(w.barred.iter().map(move |b| barred_row(scales, w, b)))
+    };
     let pairs = seasons.iter();
-    let pairs = pairs.map(|(n, pair)| super::decided::season(scales, &weighed[*n], pair));
-    top.insert("seasons".into(), Value::Array(pairs.collect()));
-    json::text(top)
+    let pairs = pairs.map(move |(n, pair)| super::decided::season(scales, &weighed[*n], pair));
+    json::in_parts(
+        document("weigh", head),
+        vec![
+            (
+                "judgements",
+                Box::new(weighed.iter().enumerate().flat_map(of_point)),
+            ),
+            ("seasons", Box::new(pairs)),
+        ],
+    )
 }
 
 fn place(w: &Weighed<'_>, oil: &str) -> Map<String, Value> {

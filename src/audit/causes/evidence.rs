@@ -1,8 +1,9 @@
 //! What speaks for a cause and against it, figure by figure.
 
 use super::Cause;
+use super::grid::share_by_viscosity;
 use super::likelihood::{Sample, Seen, apart, expected};
-use super::theta::{Theta, share_by_viscosity};
+use super::theta::Theta;
 use crate::audit::profile::{Profile, index};
 use crate::model::sample::Reading;
 use crate::numeric::math::{exp, ln};

@@ -6,10 +6,10 @@
 
 use super::theta::Theta;
 use crate::audit::bottle::{Bounds, Figures};
-use crate::audit::profile::{ADDITIVE, Profile};
+use crate::audit::profile::{ADDITIVE, From, Profile};
 use crate::audit::scatter::Scatter;
 use crate::model::sample::Reading;
-use crate::numeric::math::ln;
+use crate::numeric::math::{exp, ln};
 
 /// What a figure is and what is expected of new oil.
 #[derive(Clone, Copy, Debug)]
@@ -22,6 +22,8 @@ pub(super) struct Seen {
     pub(super) spread: f64,
     /// Standard deviation of the test.
     pub(super) sigma: f64,
+    /// Whether new oil is only what oils of its kind usually read.
+    pub(super) assumed: bool,
 }
 
 /// The figures of a sample, ready to be weighed.
@@ -43,6 +45,10 @@ const FAR_SQUARED: f64 = 90.0;
 /// Drift of service that is no cause, one standard deviation as a share.
 const DRIFT: f64 = 0.006;
 
+/// How often the additives of an oil are not those usual for its kind. Where nobody has measured
+/// the new oil, an element out of place may be the oil's own and accuses little.
+const UNUSUAL: f64 = 0.05;
+
 impl Sample {
     pub(super) fn new(figures: &Figures, label: &Profile, scatter: &Scatter) -> Self {
         let nu = |reading, ln_new: f64| {
@@ -53,9 +59,9 @@ impl Sample {
         let batch = label.batch_spread();
         let seen = |reading: Reading| {
             let figure = figures.get(reading)?;
-            let (new, spread) = match (label.figures.get(&reading), reading) {
-                (Some(e), _) => (e.value, e.spread),
-                (None, Reading::Fuel) => (0.0, 0.1),
+            let (new, spread, assumed) = match (label.figures.get(&reading), reading) {
+                (Some(e), _) => (e.value, e.spread, e.from == From::Usual),
+                (None, Reading::Fuel) => (0.0, 0.1, false),
                 (None, _) => return None,
             };
             Some(Seen {
@@ -64,6 +70,7 @@ impl Sample {
                 bounds: figure.bounds,
                 new,
                 spread,
+                assumed,
                 sigma: scatter.sigma(reading, figure.value.abs().max(new.abs())),
             })
         };
@@ -194,7 +201,14 @@ fn fit(seen: &Seen, theta: &Theta) -> f64 {
         Bounds::Below => (mean.min(seen.value), 0.4 * seen.value),
         Bounds::Above => (mean.max(seen.value), seen.sigma),
     };
-    student(value - mean, variance + sigma * sigma)
+    let log = student(value - mean, variance + sigma * sigma);
+    if !(seen.assumed && seen.reading.is_element()) {
+        return log;
+    }
+    let anything = 100.0 + 0.5 * seen.value;
+    let unusual = ln(UNUSUAL) + student(0.0, anything * anything);
+    let top = log.max(unusual);
+    top + ln(exp(log - top) + exp(unusual - top))
 }
 
 /// Standard deviations between a figure and what a setting expects.

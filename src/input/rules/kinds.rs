@@ -1,6 +1,7 @@
 //! Which kinds of rule file there are, and what reads each.
 
 mod advice;
+mod causes;
 mod classes;
 mod grease;
 mod parts;
@@ -49,6 +50,8 @@ const KINDS: &[(&str, Reader)] = &[
     ("wear", reader!(wear, used_oil::wear)),
     ("diagnosis", reader!(diagnosis, used_oil::diagnosis)),
     ("new-oil readings", reader!(new_oil, used_oil::new_oil)),
+    ("cause sizes", reader!(cause_sizes, causes::size)),
+    ("foreign oils", reader!(foreign_oils, causes::foreign)),
     ("test scatter", reader!(scatter, used_oil::scatter)),
     ("sampling", reader!(sampling, used_oil::sampling)),
     ("change intervals", reader!(changes, used_oil::change)),

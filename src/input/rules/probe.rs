@@ -31,6 +31,8 @@ pub(super) enum Shape {
     Pairs,
     /// A quantity.
     Quantity(Kind),
+    /// A quantity, or a list of them.
+    Quantities(Kind),
     /// A range of one.
     Range(Kind),
     /// A block of keys, or a list of them.

@@ -86,6 +86,7 @@ fn form(all: &Keys, path: &str, shape: &Shape) -> Value {
             json!({ "type": "object", "additionalProperties": { "type": "string" } })
         }
         Shape::Quantity(kind) => quantity(*kind),
+        Shape::Quantities(kind) => list(quantity(*kind)),
         Shape::Range(kind) => {
             let example = kind.spec().example;
             json!({ "type": "string", "pattern": "\\.\\.",

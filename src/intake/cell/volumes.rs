@@ -2,51 +2,56 @@
 
 use super::{Expect, Reading, Rules, to_base};
 use crate::input::value::{At, Ends};
+use crate::intake::units::Part;
 use crate::intake::yaml;
 use crate::quantity::Kind;
 use crate::quantity::show::{Toward, significant};
 
-/// Gallons: both, unless the file states which.
+/// Gallons, quarts and pints: both kinds, unless the file states which.
 pub(super) fn gallons(
     expect: &Expect<'_>,
     rules: &Rules,
-    first: &str,
-    second: Option<&str>,
+    part: Part,
+    (first, second): (&str, Option<&str>),
 ) -> Reading {
-    if !expect
-        .want
-        .kinds
-        .iter()
-        .any(|k| matches!(k, Kind::Volume | Kind::VolumePerYear))
-    {
-        return Reading::fault(format!("gal is a volume, {} is wanted", expect.want.noun()));
+    let sign = part.sign();
+    let volume = |k: &Kind| matches!(k, Kind::Volume | Kind::VolumePerYear);
+    if !expect.want.kinds.iter().any(volume) {
+        let noun = expect.want.noun();
+        return Reading::fault(format!("{sign} is a volume, {noun} is wanted"));
     }
     let yearly = expect.want.kinds[0] == Kind::VolumePerYear;
     let tail = if yearly { " a year" } else { "" };
+    let in_m3 =
+        |n: &str, unit: &str| to_base(Kind::Volume, unit, n).map(|m3| m3 / part.in_a_gallon());
     if let Some(gallon) = rules.gallon
         && second.is_none()
     {
+        let Some(m3) = in_m3(first, gallon) else {
+            return Reading::fault("the number is not finite");
+        };
+        let value = match part {
+            Part::Whole => format!("{first} {gallon}"),
+            Part::Quart | Part::Pint => {
+                format!("{} L", significant(m3 * 1e3, 4, Toward::Nearest))
+            }
+        };
         return Reading {
-            value: Some(format!("{first} {gallon}{tail}")),
-            remark: Some(format!("{first} gal, the map states {gallon}")),
-            candidates: to_base(Kind::Volume, gallon, first)
-                .map(|b| vec![(format!("{first} {gallon}"), b)])
-                .unwrap_or_default(),
+            candidates: vec![(value.clone(), m3)],
+            value: Some(format!("{value}{tail}")),
+            remark: Some(format!("{first} {sign}, the map states {gallon}")),
             ..Reading::default()
         };
     }
-    let litres = |n: &str, unit: &str| to_base(Kind::Volume, unit, n).map(|m3| m3 * 1e3);
     let (Some(us), Some(uk)) = (
-        litres(first, "gal(US)"),
-        litres(second.unwrap_or(first), "gal(UK)"),
+        in_m3(first, "gal(US)"),
+        in_m3(second.unwrap_or(first), "gal(UK)"),
     ) else {
         return Reading::fault("the number is not finite");
     };
-    let (lo, hi) = (
-        significant(us, 3, Toward::Nearest),
-        significant(uk, 3, Toward::Nearest),
-    );
-    let which = format!("{first} gal: US ({lo} L) or UK ({hi} L)?");
+    let litres = |m3: f64| significant(m3 * 1e3, 3, Toward::Nearest);
+    let (lo, hi) = (litres(us), litres(uk));
+    let which = format!("{first} {sign}: US ({lo} L) or UK ({hi} L)?");
     Reading {
         value: Some(format!(
             "unknown ({lo} .. {hi} L{tail}), ask {}",
@@ -54,8 +59,8 @@ pub(super) fn gallons(
         )),
         ask: Some(which),
         candidates: vec![
-            (format!("{first} gal(US)"), us * 1e-3),
-            (format!("{first} gal(UK)"), uk * 1e-3),
+            (format!("{first} {sign}(US)"), us),
+            (format!("{first} {sign}(UK)"), uk),
         ],
         ..Reading::default()
     }

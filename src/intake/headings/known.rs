@@ -5,7 +5,7 @@
 pub(super) const SITE: &[(&str, &str)] = &[
     (
         "tag",
-        "anlage|anlagen nr|anlagennummer|maschine|maschinen nr|technischer platz|repère|équipement|equipo|tag|tag no|tag number|asset|asset no|asset number|asset id|asset tag|equipment no|equipment id|equipment number|equipment|functional location|machine no|machine tag|machine|item no|position no",
+        "anlage|anlagen nr|anlagennummer|maschine|maschinen nr|technischer platz|repère|équipement|equipo|tag|tag no|tag number|asset|asset no|asset number|asset id|asset tag|equipment no|equipment code|equipment tag|equip tag|tag id|asset code|machine id|machine code|unit no|unit id|plant no|plant item|kks|kks code|equipment id|equipment number|equipment|functional location|machine no|machine tag|machine|item no|position no",
     ),
     (
         "row number",
@@ -17,7 +17,7 @@ pub(super) const SITE: &[(&str, &str)] = &[
     ),
     (
         "name",
-        "bezeichnung|benennung|beschreibung|désignation|descripción|desc|description|asset description|equipment description|machine name|name|designation|service|function",
+        "bezeichnung|benennung|beschreibung|désignation|descripción|machine description|item description|tag description|equipment name|asset name|what it is|desc|description|asset description|equipment description|machine name|name|designation|service|function",
     ),
     (
         "area",
@@ -33,7 +33,7 @@ pub(super) const SITE: &[(&str, &str)] = &[
     ),
     (
         "fill",
-        "füllung|füllmenge|ölmenge|ölfüllung|quantité d huile|cantidad de aceite|fill|fill quantity|fill volume|sump|sump volume|sump size|sump capacity|capacity|oil capacity|oil quantity|oil volume|volume|tank|tank volume|litres|liters|charge|qty oil",
+        "füllung|füllmenge|ölmenge|ölfüllung|quantité d huile|cantidad de aceite|fill|fill quantity|fill volume|sump|sump volume|sump size|sump capacity|oil fill|oil charge|lubricant quantity|lubricant volume|lube quantity|reservoir|reservoir volume|reservoir size|capacity|oil capacity|oil quantity|oil volume|volume|tank|tank volume|litres|liters|charge|qty oil",
     ),
     (
         "annual use",
@@ -45,7 +45,7 @@ pub(super) const SITE: &[(&str, &str)] = &[
     ),
     (
         "oil now",
-        "schmierstoff|öl|ölsorte|schmieröl|lubrifiant|huile|lubricante|aceite|oil|lubricant|oil now|current oil|present oil|oil in use|oil type|lubricant type|lubricant in use|product|oil grade|lube|grease",
+        "schmierstoff|öl|ölsorte|schmieröl|lubrifiant|huile|lubricante|aceite|oil|lubricant|oil now|current oil|present oil|oil in use|oil type|lubricant type|lubricant in use|product|oil grade|lube|lube type|lube in use|present lubricant|current lubricant|oil used|lubricant used|oil name|lubricant name|lubricant grade|grease",
     ),
     (
         "asks for",
@@ -83,7 +83,7 @@ pub(super) const SITE: &[(&str, &str)] = &[
     ),
     (
         "sump",
-        "öltemp|öltemperatur|temperatur|betriebstemperatur|température|température huile|temperatura|temperatura aceite|temp|temperature|oil temp|oil temperature|sump temp|sump temperature|operating temperature|operating temp|running temperature|running temp|running temperature of oil|bulk oil temperature|t oil|working temperature",
+        "öltemp|öltemperatur|temperatur|betriebstemperatur|température|température huile|temperatura|temperatura aceite|temp|temperature|oil temp|oil temperature|sump temp|sump temperature|operating temperature|operating temp|running temperature|running temp|running temperature of oil|bulk oil temperature|t oil|working temperature|oil operating temperature|lubricant temperature|normal oil temperature",
     ),
     (
         "floor",
@@ -149,7 +149,7 @@ pub(super) const SITE: &[(&str, &str)] = &[
     ),
     (
         "gear mesh: power",
-        "leistung|puissance|potencia|power|motor power|drive power|rated power",
+        "leistung|puissance|potencia|kw|hp|motor kw|motor hp|motor size|motor rating|power|motor power|drive power|rated power",
     ),
     ("gear mesh: type", "gear type|type of gear|gearing"),
     ("gear mesh: normal module", "module|normal module"),
@@ -172,7 +172,7 @@ pub(super) const SITE: &[(&str, &str)] = &[
     ),
     (
         "note",
-        "bemerkung|bemerkungen|anmerkung|remarque|remarques|observaciones|note|notes|remark|remarks|comment|comments",
+        "bemerkung|bemerkungen|anmerkung|remarque|remarques|observaciones|note|notes|remark|remarks|comment|comments|last oil change|oil change|last change|next oil change|oil change interval|change interval|interval|last sample|sample date|date|serial number|manufacturer|make|model|criticality|drawing number|oil supplier|supplier|oil price|oil cost|filter|oil filter|oil pump|breather",
     ),
     ("path", "path"),
     ("as written", "as written"),

@@ -26,6 +26,20 @@ fn headings_of_registers_are_known() {
         ("Lubricnt", "oil now"),
         ("Seal material", "seals"),
         ("Colour of the fence", "none"),
+        ("Equip. No", "tag"),
+        ("Equip. description", "name"),
+        ("Brg no.", "rolling bearing"),
+        ("Motor kW", "gear mesh: power"),
+        ("kW", "gear mesh: power"),
+        ("Oil vol (ltr)", "fill"),
+        ("Oil (L)", "fill"),
+        ("Oper. temp (°F)", "sump"),
+        ("Sump (degC)", "sump"),
+        ("Sump (L)", "fill"),
+        ("Motor rpm", "motor speed"),
+        ("Last oil change", "note"),
+        ("Oil supplier", "note"),
+        ("Building C", "area"),
     ] {
         assert_eq!(word(Makes::Site, text), want, "{text}");
     }
@@ -44,7 +58,10 @@ fn headings_of_registers_are_known() {
 fn units_in_headings_are_found() {
     let u = |t: &str| apart(t).unit;
     assert_eq!(u("Fill (L)"), Some(Unit::Of(Kind::Volume, "L")));
-    assert_eq!(u("Fill (gal)"), Some(Unit::Gallon));
+    assert_eq!(
+        u("Fill (gal)"),
+        Some(Unit::Gallon(crate::intake::units::Part::Whole))
+    );
     assert_eq!(
         u("Speed rpm"),
         Some(Unit::Of(Kind::RotationalSpeed, "r/min"))

@@ -64,3 +64,50 @@ fn names_of_products_stay_whole() {
     assert_eq!(r.rest, ["Quillmere", "Special", "X"]);
     assert_eq!(r.says(), "");
 }
+
+#[test]
+fn the_temperature_of_a_viscosity_is_the_one_stated() {
+    // 150 SUS at 210 degF is 31.8 mm2/s at 98.9 degC: ASTM D2161, from memory; of VG 460 at an
+    // index of 95
+    for text in [
+        "150 SUS @ 210F",
+        "150 SUS @210 °F",
+        "150 SUS at 210",
+        "150SUS at 210 deg F",
+    ] {
+        let r = read(text);
+        let says = r.says();
+        assert!(
+            says.contains("31.") && says.contains("mm2/s at 99 degC") || says.contains("98.9 degC"),
+            "{text}: {says}"
+        );
+        assert_eq!(r.grade, Some(460), "{text}: {says}");
+        assert!(r.rest.is_empty(), "{text}: {:?}", r.rest);
+    }
+    // at 50 degC nobody knows the grade without the slope
+    assert_eq!(read("30 cSt at 50").grade, None);
+    assert_eq!(read("68 cSt at 40 C").grade, Some(68));
+}
+
+#[test]
+fn a_small_number_behind_ep_is_a_consistency() {
+    // NLGI consistency numbers (common practice): EP 2 is the commonest name of a grease
+    for (text, want) in [
+        ("EP2 grease", "2"),
+        ("EP 2", "2"),
+        ("Lithium EP2", "2"),
+        ("MP-00", "00"),
+    ] {
+        let r = read(text);
+        assert_eq!((r.nlgi.as_deref(), r.grade), (Some(want), None), "{text}");
+        assert!(r.is_grease());
+    }
+    assert_eq!(read("EP 220").grade, Some(220));
+    assert_eq!(read("AGMA 2 EP").nlgi, None);
+}
+
+#[test]
+fn a_winter_grade_alone_is_said_to_be_one() {
+    // SAE J300: W grades are of cold starting
+    assert!(read("SAE 10W").says().contains("starts in the cold"));
+}

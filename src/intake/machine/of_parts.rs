@@ -43,7 +43,7 @@ impl<'r> RowReader<'r, '_> {
             .map(|t| t.trim().to_owned())
             .collect();
         let known = |list: &[String]| list.iter().all(|t| designated(table, t).is_ok());
-        let list: &[String] = if !known(&whole) && apart.len() > 1 && known(&apart) {
+        let list: &[String] = if apart.len() > 1 && known(&apart) {
             &apart
         } else {
             &whole

@@ -27,13 +27,8 @@ impl Row<'_, '_> {
             .or_else(|| read.base.map(str::to_owned));
         if base.as_deref() == Some("PAG") {
             let name = self.name.clone();
-            self.say(
-                Kind::Question,
-                None,
-                &name,
-                "a PAG: water-soluble or oil-soluble? The base stays unknown",
-            );
-            base = None;
+            self.say(Kind::Question, None, &name, super::WHICH_PAG);
+            base = Some("PAG water-soluble".to_owned());
         }
         let grade = self
             .grade
@@ -41,12 +36,19 @@ impl Row<'_, '_> {
             .or_else(|| read.grade.map(|g| format!("ISO VG {g}")));
         let viscosity = match (self.points.as_slice(), grade, &self.vi) {
             ([_, _, ..], ..) => {
+                self.rises();
                 let points: Vec<String> = self.points.iter().map(|(_, p)| item(p)).collect();
                 Some(format!("[{}]", points.join(", ")))
             }
             ([(_, one)], _, Some(vi)) => Some(format!("[{}, VI {vi}]", item(one))),
             (_, Some(grade), Some(vi)) => Some(format!("[{grade}, VI {vi}]")),
-            (_, Some(grade), None) => {
+            (points, Some(grade), None) => {
+                if let [(_, one)] = points {
+                    let says = format!(
+                        "{one} alone gives no slope: {grade} stands in its place; what is the other viscosity, or the index?"
+                    );
+                    self.say(Kind::Question, None, "", says);
+                }
                 if base.is_none() {
                     self.say(Kind::Question, None, "", format!("only {grade} is known; mineral is assumed: which base is it, and what is its index?"));
                     self.record.set("base", "mineral");
@@ -77,6 +79,20 @@ impl Row<'_, '_> {
             self.record.set("base", base);
         }
         self.close(viscosity);
+    }
+
+    /// Viscosities that rise with temperature are asked about: columns may be exchanged or shifted.
+    fn rises(&mut self) {
+        let figure = |text: &str| text.split(' ').next()?.parse::<f64>().ok();
+        let same_unit = |a: &str, b: &str| a.split(' ').nth(1) == b.split(' ').nth(1);
+        let found = self.points.windows(2).find_map(|pair| {
+            let ((_, a), (_, b)) = (&pair[0], &pair[1]);
+            let rises = same_unit(a, b) && figure(b)? >= figure(a)?;
+            rises.then(|| format!("{a} and {b}: an oil is thinner when hotter; are the two exchanged, or the columns of this row shifted?"))
+        });
+        if let Some(says) = found {
+            self.say(Kind::Question, None, "", says);
+        }
     }
 
     fn close(mut self, viscosity: Option<String>) {

@@ -400,7 +400,7 @@ fn first_named_causes_are_right_and_clean_samples_are_left_alone() {
         score.print()
     );
     assert!(
-        share(score.right, score.causes) >= 0.78,
+        share(score.right, score.causes) >= 0.85,
         "{}",
         score.print()
     );

@@ -45,6 +45,16 @@ impl Fields<'_> {
         self.opt(key).unwrap_or(Q::from_base(1.0))
     }
 
+    /// Quantities, one or a list of them.
+    pub(in crate::input::rules) fn quantities<Q: Measure>(&self, key: &'static str) -> Vec<Q> {
+        self.told(key, || Shape::Quantities(Q::KIND));
+        self.scalars(key)
+            .into_iter()
+            .filter_map(|text| self.read_amount(key, Q::KIND, text))
+            .map(|read| Q::from_base(read.amount.base))
+            .collect()
+    }
+
     /// A range `a .. b unit`; either end may be left open.
     pub(in crate::input::rules) fn open<Q: Measure>(
         &self,

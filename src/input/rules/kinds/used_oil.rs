@@ -149,7 +149,7 @@ pub(super) fn change(f: &Fields<'_>) -> ChangeInterval {
 }
 
 /// A figure of a laboratory by its key.
-fn figure(f: &Fields<'_>, key: &str, text: &str) -> Figure {
+pub(super) fn figure(f: &Fields<'_>, key: &str, text: &str) -> Figure {
     Figure::of(text).unwrap_or_else(|| {
         f.fault(
             format!("{key}: `{text}` is no figure of a laboratory"),
@@ -160,7 +160,7 @@ fn figure(f: &Fields<'_>, key: &str, text: &str) -> Figure {
 }
 
 /// An amount that must be there.
-fn amount(f: &Fields<'_>, key: &'static str, kind: Kind) -> Amount {
+pub(super) fn amount(f: &Fields<'_>, key: &'static str, kind: Kind) -> Amount {
     f.opt_amount(key, kind).unwrap_or_else(|| {
         f.fault(
             format!("no {key}"),
@@ -170,30 +170,28 @@ fn amount(f: &Fields<'_>, key: &'static str, kind: Kind) -> Amount {
     })
 }
 
+/// The kind of a difference between two values of a figure.
+pub(super) fn spread_of(reading: Figure) -> Kind {
+    match reading.kind() {
+        Kind::Temperature => Kind::Rise,
+        kind => kind,
+    }
+}
+
 pub(super) fn new_oil(f: &Fields<'_>) -> NewOilReading {
     let reading = figure(f, "reading", &f.text("reading"));
-    let spread = if reading.kind() == Kind::Temperature {
-        Kind::Rise
-    } else {
-        reading.kind()
-    };
     NewOilReading {
         id: f.text("id"),
         reading,
         when: f.clauses("when"),
         value: amount(f, "value", reading.kind()),
-        spread: amount(f, "spread", spread),
+        spread: amount(f, "spread", spread_of(reading)),
         provenance: f.provenance(),
     }
 }
 
 pub(super) fn scatter(f: &Fields<'_>) -> TestScatter {
     let reading = figure(f, "reading", &f.text("reading"));
-    let least = if reading.kind() == Kind::Temperature {
-        Kind::Rise
-    } else {
-        reading.kind()
-    };
     let scatter = TestScatter {
         id: f.text("id"),
         reading,
@@ -204,7 +202,7 @@ pub(super) fn scatter(f: &Fields<'_>) -> TestScatter {
             .collect(),
         test: f.text("test"),
         share: f.opt("share"),
-        least: f.opt_amount("at least", least),
+        least: f.opt_amount("at least", spread_of(reading)),
         provenance: f.provenance(),
     };
     if scatter.share.is_none() && scatter.least.is_none() {
