@@ -89,3 +89,37 @@ fn what_a_film_asked_for_still_needs_is_a_gap() {
     lacks(inner, "element length", "  element length: 11 mm\n");
     lacks(inner, "\"load\"", "  load: 5 kN\n");
 }
+
+/// ISO 281 covers viscosity ratios from 0.1 and counts none above 4: an oil far off either way is
+/// told so, beside its verdict.
+#[test]
+fn a_viscosity_ratio_far_off_is_remarked_on() {
+    let site = "file: site 1\nsite: Test yard\nmachines:\n  M-1:\n    ambient: 20 .. 20 degC\n    lubrication: bath\n    sump: held at 70 degC\n    oil now: THIN\n    parts:\n      - rolling bearing: 22320\n        speed: 10 r/min\n";
+    let oils = "file: oils 1\nTHIN: { kind: circulating, base: mineral II, viscosity: [32 mm2/s at 40 degC, 5.4 mm2/s at 100 degC], pour point: -30 degC }\nMIDDLE: { kind: circulating, base: mineral II, viscosity: [4000 mm2/s at 40 degC, 140 mm2/s at 100 degC], pour point: 0 degC }\nTHICK: { kind: circulating, base: mineral II, viscosity: [40000 mm2/s at 40 degC, 700 mm2/s at 100 degC], pour point: 0 degC }\n";
+    let host = || {
+        MemoryHost::new()
+            .with("site.yaml", site)
+            .with("oils.yaml", oils)
+    };
+    let judged = on(host(), "weigh -f json -q").json()["judgements"].clone();
+    let of = |oil: &str| {
+        let all = judged.as_array().expect("a list");
+        let found = all.iter().find(|j| j["oil"] == oil).expect("weighed");
+        (found["verdict"].clone(), found["notes"].to_string())
+    };
+    let (verdict, notes) = of("THIN");
+    assert_eq!(verdict, "fails");
+    assert!(notes.contains("viscosity ratio kappa below 0.1"), "{notes}");
+    assert!(notes.contains("Outside ISO 281"), "{notes}");
+    assert!(!of("MIDDLE").1.contains("viscosity ratio"));
+    let thick = of("THICK").1;
+    assert!(thick.contains("viscosity ratio kappa above 4"), "{thick}");
+    let made = on(host(), "report -q -o out");
+    let page = made
+        .host
+        .files
+        .iter()
+        .find(|(p, _)| p.ends_with("machine-M-1.html"));
+    let page = String::from_utf8_lossy(page.expect("a sheet").1).into_owned();
+    assert!(page.contains("below 0.1 with this oil"));
+}
