@@ -201,7 +201,7 @@ impl Causes {
                 &fresh
             }
         };
-        let mut found = bulk(grid, &sample, profile);
+        let mut found = bulk(grid, &sample, figures, profile);
         found.causes.extend(side);
         found.causes.sort_by(by_strength);
         found
@@ -271,7 +271,7 @@ fn look<'g>(thetas: &'g [Theta], sample: &Sample, best: &mut f64, into: &mut Vec
 }
 
 /// The causes that change the oil itself.
-fn bulk(grid: &Grid, sample: &Sample, profile: &Profile) -> Diagnosis {
+fn bulk(grid: &Grid, sample: &Sample, figures: &Figures, profile: &Profile) -> Diagnosis {
     let mut looked = Vec::new();
     let mut best = f64::NEG_INFINITY;
     look(&grid.single, sample, &mut best, &mut looked);
@@ -333,7 +333,7 @@ fn bulk(grid: &Grid, sample: &Sample, profile: &Profile) -> Diagnosis {
             .causes
             .push(name(cause, likelihood, none, &looked, sample, profile));
     }
-    found.would_tell = would_tell(&found.causes, sample, profile);
+    found.would_tell = would_tell(&found.causes, figures, profile);
     found
 }
 
@@ -432,19 +432,13 @@ fn other_oils<'l, 'g: 'l>(with: impl Iterator<Item = &'l Looked<'g>>) -> Vec<Oth
 }
 
 /// Readings that are missing and in which the named causes differ.
-fn would_tell(causes: &[Named], sample: &Sample, profile: &Profile) -> Vec<Reading> {
-    let has = |r: Reading| {
-        sample
-            .others
-            .iter()
-            .chain(&sample.additive)
-            .any(|s| s.reading == r)
-    };
+fn would_tell(causes: &[Named], figures: &Figures, profile: &Profile) -> Vec<Reading> {
+    let has = |r: Reading| figures.get(r).is_some();
     let any = |list: &[Cause]| causes.iter().any(|n| list.contains(&n.cause));
     let other = causes.iter().any(|n| n.cause.is_other_oil());
     let mut missing = Vec::new();
-    for (i, reading) in [Reading::Nu40, Reading::Nu100].into_iter().enumerate() {
-        if sample.nu[i].is_none() {
+    for reading in [Reading::Nu40, Reading::Nu100] {
+        if figures.exact(reading).is_none() {
             missing.push(reading);
         }
     }
