@@ -199,7 +199,9 @@ pub enum Command {
     /// Weigh again with changed values, files untouched
     #[command(
         after_help = "Examples:\n  filmwright whatif M02 --set \"heater=10 degC\" --demo\n  \
-        filmwright whatif CV-104 --set \"sump rise=48 K\" --set \"rolling bearing 22220: speed=250 r/min\"\n\
+        filmwright whatif CV-104 --set \"sump rise=48 K\" --set \"rolling bearing 22220: speed=250 r/min\"\n  \
+        filmwright whatif CV-104 --set \"oil MG-220: pour point=-30 degC\" --set \"area yard: ambient=-25 .. 36 degC\"\n  \
+        filmwright whatif CV-104 --set \"house: reserve=0.4 step\"\n\
         Only what moves is printed. See also: mend, gaps"
     )]
     Whatif(Whatif),
@@ -426,7 +428,8 @@ pub struct Mend {
 pub struct Whatif {
     /// The machine, or machine/point
     pub tag: String,
-    /// A value by the name it has in the file, as KEY=VALUE or PART: KEY=VALUE; several may be set
+    /// A value by the name it has in the file, as KEY=VALUE, or NAME: KEY=VALUE with the name
+    /// of a part, an oil, an area, another machine, `house` or a house rule; several may be set
     #[arg(
         long,
         value_name = "KEY=VALUE",

@@ -10,6 +10,7 @@ mod bearing;
 mod contact;
 mod film;
 mod gear;
+mod heat;
 mod journal;
 mod json;
 mod oil;
@@ -27,6 +28,7 @@ static GROUPS: &[&[Relation]] = &[
     bearing::ROWS,
     gear::ROWS,
     journal::ROWS,
+    heat::ROWS,
 ];
 
 /// Every relation, in the order they are listed.

@@ -21,6 +21,15 @@ pub trait Host {
     /// # Errors
     /// Whatever the system says.
     fn write(&mut self, path: &Path, bytes: &[u8]) -> io::Result<()>;
+    /// Writes a whole file that comes in parts, in the same way.
+    ///
+    /// # Errors
+    /// Whatever the system says.
+    fn write_in_parts(
+        &mut self,
+        path: &Path,
+        parts: &mut dyn Iterator<Item = String>,
+    ) -> io::Result<()>;
     /// Removes a file the program made.
     ///
     /// # Errors
@@ -122,16 +131,22 @@ impl Host for System {
     }
 
     fn write(&mut self, path: &Path, bytes: &[u8]) -> io::Result<()> {
-        let folder = match path.parent() {
-            Some(p) if !p.as_os_str().is_empty() => p.to_path_buf(),
-            _ => PathBuf::from("."),
-        };
-        std::fs::create_dir_all(&folder)?;
-        let mut file = tempfile::NamedTempFile::new_in(&folder)?;
+        let mut file = temporary(path)?;
         io::Write::write_all(&mut file, bytes)?;
-        make_readable(file.as_file())?;
-        file.persist(path).map_err(|e| e.error)?;
-        Ok(())
+        keep(file, path)
+    }
+
+    fn write_in_parts(
+        &mut self,
+        path: &Path,
+        parts: &mut dyn Iterator<Item = String>,
+    ) -> io::Result<()> {
+        let mut file = io::BufWriter::with_capacity(1 << 16, temporary(path)?);
+        for part in parts {
+            io::Write::write_all(&mut file, part.as_bytes())?;
+        }
+        let file = file.into_inner().map_err(io::IntoInnerError::into_error)?;
+        keep(file, path)
     }
 
     fn remove(&mut self, path: &Path) -> io::Result<()> {
@@ -218,6 +233,27 @@ impl Host for System {
             bar.finish_and_clear();
         }
     }
+}
+
+/// A file beside the one to be written, in a folder that is made where it is not there.
+#[expect(
+    clippy::disallowed_methods,
+    reason = "the Host is where files, clock and environment are"
+)]
+fn temporary(path: &Path) -> io::Result<tempfile::NamedTempFile> {
+    let folder = match path.parent() {
+        Some(p) if !p.as_os_str().is_empty() => p.to_path_buf(),
+        _ => PathBuf::from("."),
+    };
+    std::fs::create_dir_all(&folder)?;
+    tempfile::NamedTempFile::new_in(&folder)
+}
+
+/// Gives a written file its name.
+fn keep(file: tempfile::NamedTempFile, path: &Path) -> io::Result<()> {
+    make_readable(file.as_file())?;
+    file.persist(path).map_err(|e| e.error)?;
+    Ok(())
 }
 
 /// A temporary file is private by default; a report is to be read by others.
@@ -327,6 +363,15 @@ impl Host for MemoryHost {
     fn write(&mut self, path: &Path, bytes: &[u8]) -> io::Result<()> {
         self.files.insert(plain(path), bytes.to_vec());
         Ok(())
+    }
+
+    fn write_in_parts(
+        &mut self,
+        path: &Path,
+        parts: &mut dyn Iterator<Item = String>,
+    ) -> io::Result<()> {
+        let whole: String = parts.collect();
+        self.write(path, whole.as_bytes())
     }
 
     fn remove(&mut self, path: &Path) -> io::Result<()> {

@@ -7,7 +7,7 @@ use crate::assets::{self, Files, Unread};
 use crate::demand::rules::CALCULATED;
 use crate::input::file::FileKind;
 use crate::input::load::{self as reader, Tree, With};
-use crate::input::overlay;
+use crate::input::overlay::{self, About};
 use crate::input::rules::{RuleFault, rulebook};
 use crate::model::Site;
 use crate::model::rulebook::Rulebook;
@@ -160,28 +160,34 @@ impl Session<'_> {
     ///
     /// # Errors
     /// The exit code; everything wrong has been told on standard error.
-    pub fn load(&mut self, set: &[(Vec<String>, Vec<String>)]) -> Result<Loaded, Exit> {
+    pub fn load(&mut self, set: Option<(&About, &[String])>) -> Result<Loaded, Exit> {
         let folder = (!self.shared.demo).then(|| self.folder());
         let rules = self.rules(folder.as_deref())?;
         let mut sources = SourceSet::new();
         let mut problems = Problems::new();
         let mut hash = Sha256::new();
-        let trees = match &folder {
+        let mut trees = match &folder {
             None => demo(&mut sources, &mut problems, &mut hash),
             Some(folder) => self.trees(folder, &mut sources, &mut problems, &mut hash)?,
         };
         self.hash_rules(&mut hash, folder.as_deref());
-        let mut settings = Vec::new();
-        for (targets, texts) in set {
-            match overlay::settings(&mut sources, texts, &mut problems) {
-                Ok(read) => settings.push((targets, read)),
-                Err(_) => return Err(self.told(&sources, &problems)),
+        let settings = match set {
+            None => None,
+            Some((about, texts)) => {
+                let read = overlay::settings(&mut sources, texts, &mut problems);
+                let put = read.and_then(|mut read| {
+                    read.put(&sources, &mut trees, about, &mut problems)?;
+                    Ok(read)
+                });
+                match put {
+                    Ok(read) => Some((about, read)),
+                    Err(_) => return Err(self.told(&sources, &problems)),
+                }
             }
-        }
-        let overlays: Vec<_> = settings
-            .iter()
-            .flat_map(|(targets, read)| read.over(targets))
-            .collect();
+        };
+        let overlays = settings
+            .as_ref()
+            .map_or(Vec::new(), |(about, read)| read.over(&about.targets));
         let calculated: Vec<&str> = CALCULATED.iter().map(|rule| rule.0).collect();
         let with = With {
             rules: &rules,
@@ -211,7 +217,7 @@ impl Session<'_> {
                     sources,
                     fingerprint,
                     problems,
-                    changed: !set.is_empty(),
+                    changed: set.is_some(),
                     files: trees.iter().map(|t| (t.kind, t.file)).collect(),
                     folder,
                 })

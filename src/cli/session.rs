@@ -112,6 +112,33 @@ impl<'h> Session<'h> {
         }
     }
 
+    /// Writes results that come in parts.
+    pub fn result_in_parts(&mut self, parts: &mut dyn Iterator<Item = String>) -> Exit {
+        match self.shared.out.clone() {
+            Some(path) if path != "-" => {
+                let path = Path::new(&path);
+                if let Err(exit) = self.may_write(path) {
+                    return exit;
+                }
+                match self.host.write_in_parts(path, parts) {
+                    Ok(()) => Exit::Done,
+                    Err(error) => self.unwritten(path, &error),
+                }
+            }
+            _ => {
+                for part in parts {
+                    self.host.out(&part);
+                }
+                Exit::Done
+            }
+        }
+    }
+
+    fn unwritten(&mut self, path: &Path, error: &std::io::Error) -> Exit {
+        self.fail(&format!("{} cannot be written: {error}", path.display()));
+        Exit::File
+    }
+
     /// Writes a file of the program's own making.
     pub fn file(&mut self, path: &Path, bytes: &[u8]) -> Exit {
         match self.may_write(path).and_then(|()| self.put(path, bytes)) {
@@ -152,10 +179,8 @@ impl<'h> Session<'h> {
     /// # Errors
     /// It cannot be written; that has been told.
     pub fn put(&mut self, path: &Path, bytes: &[u8]) -> Result<(), Exit> {
-        self.host.write(path, bytes).map_err(|error| {
-            self.fail(&format!("{} cannot be written: {error}", path.display()));
-            Exit::File
-        })
+        let written = self.host.write(path, bytes);
+        written.map_err(|error| self.unwritten(path, &error))
     }
 
     /// Whether a file carries the program's mark in its first or last kilobyte.

@@ -40,7 +40,7 @@ impl Column {
 const LEAST_FOLD: usize = 18;
 
 /// A table as lines, each indented by two. A last column that is never dropped is folded within
-/// the width.
+/// the width; what is dropped is named below.
 pub fn table(columns: &[Column], rows: &[Vec<String>], width: usize) -> String {
     let mut shown: Vec<usize> = (0..columns.len()).collect();
     let widths: Vec<usize> = (0..columns.len())
@@ -80,6 +80,16 @@ pub fn table(columns: &[Column], rows: &[Vec<String>], width: usize) -> String {
     if headings.iter().any(|h| !h.is_empty()) {
         line(&mut out, columns, &shown, &widths, &headings);
     }
+    let left_out: Vec<&str> = (0..columns.len())
+        .filter(|i| {
+            !shown.contains(i)
+                && rows
+                    .iter()
+                    .any(|r| r.get(*i).is_some_and(|c| !c.is_empty()))
+        })
+        .map(|i| columns[i].heading)
+        .filter(|h| !h.is_empty())
+        .collect();
     let before: usize = shown.iter().rev().skip(1).map(|i| widths[*i] + 2).sum();
     let left = width.saturating_sub(2 + before);
     for row in rows {
@@ -98,6 +108,13 @@ pub fn table(columns: &[Column], rows: &[Vec<String>], width: usize) -> String {
             piece.clone_into(&mut row[last]);
             line(&mut out, columns, &shown, &widths, &row);
         }
+    }
+    if !left_out.is_empty() {
+        let text = format!(
+            "left out for width: {}; -f json has all",
+            left_out.join(", ")
+        );
+        out.push_str(&folded(&text, "  ", width));
     }
     out
 }
@@ -228,6 +245,12 @@ mod tests {
         assert!(table(&columns, &rows, 80).contains("-22..42 degC"));
         let narrow = table(&columns, &rows, 18);
         assert!(!narrow.contains("-22..") && narrow.contains("+0.67"));
+        let words: Vec<&str> = narrow.split_whitespace().collect();
+        assert!(
+            words
+                .join(" ")
+                .contains("left out for width: band; -f json has all")
+        );
     }
 
     #[test]

@@ -1,9 +1,10 @@
 //! What moved, and the inputs that moved it, found by weighing again.
 
 use super::diff::Change;
-use super::outcome::{Outcome, Shown, What};
+use super::outcome::{Book, Outcome, Shown, What};
 use super::state::{State, Unread};
 use crate::source::SourceSet;
+use std::cell::RefCell;
 use std::collections::BTreeSet;
 
 /// One thing that moved.
@@ -58,8 +59,11 @@ impl Comparison {
 /// One of them is refused by the reader.
 pub fn compare(set: &SourceSet, old: &State, new: &State) -> Result<Comparison, Unread> {
     let changes = old.changes(set, new);
-    let before = old.outcome_with(set, &[], new).ok_or(Unread::Wrong)?;
-    let after = new.outcome_with(set, &[], old).ok_or(Unread::Wrong)?;
+    let mut book = Book::default();
+    let before = old.outcome_with(set, &[], new, &mut book);
+    let before = before.ok_or(Unread::Wrong)?;
+    let after = new.outcome_with(set, &[], old, &mut book);
+    let after = after.ok_or(Unread::Wrong)?;
     let mut moved = moves(&before, &after);
     if !moved.is_empty() {
         let finder = Finder {
@@ -69,6 +73,7 @@ pub fn compare(set: &SourceSet, old: &State, new: &State) -> Result<Comparison, 
             changes: &changes,
             before: &before,
             after: &after,
+            book: RefCell::new(book),
         };
         finder.causes(&mut moved);
     }
@@ -119,6 +124,7 @@ struct Finder<'f> {
     changes: &'f [Change],
     before: &'f Outcome,
     after: &'f Outcome,
+    book: RefCell<Book>,
 }
 
 impl Finder<'_> {
@@ -127,7 +133,9 @@ impl Finder<'_> {
             .filter(|i| which(*i))
             .map(|i| &self.changes[i])
             .collect();
-        self.old.outcome_with(self.set, &chosen, self.new)
+        let mut book = self.book.borrow_mut();
+        self.old
+            .outcome_with(self.set, &chosen, self.new, &mut book)
     }
 
     fn causes(&self, moved: &mut [Moved]) {

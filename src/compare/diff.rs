@@ -1,7 +1,7 @@
 //! The inputs that differ between two trees, each with the way to it, and trees with some of the
 //! differences put in.
 
-use crate::input::keys::spelt;
+use crate::input::keys::{TOGETHER, spelt};
 use crate::source::yaml::{Entry, Node, NodeKind};
 use crate::source::{SourceSet, Span};
 
@@ -25,6 +25,8 @@ pub enum File {
     Rules,
     /// An option of the run: the reserve.
     Option,
+    /// An option of the run: whether oils are judged as new.
+    As,
 }
 
 /// One place at which the two states differ.
@@ -50,14 +52,6 @@ pub struct Change {
     pub span: Option<Span>,
     edits: Vec<Edit>,
 }
-
-/// Groups of keys that state one thing: they are changed together.
-const TOGETHER: [&[&str]; 4] = [
-    &["sump rise", "sump", "at ambient"],
-    &["radial clearance", "diametral clearance"],
-    &["power", "pinion torque"],
-    &["worm speed", "speed"],
-];
 
 impl Change {
     /// A change of the rules or of an option, which stands in no tree.

@@ -3,12 +3,13 @@
 
 use crate::demand::governing::limit_amount;
 use crate::demand::{Demands, End};
-use crate::model::Site;
 use crate::model::rulebook::Rulebook;
+use crate::model::site::House;
+use crate::model::{Oil, Point, Site};
 use crate::quantity::show::{Toward, Units, exact, quantity};
 use crate::quantity::{Measure, ThermodynamicTemperature};
-use crate::weighing::{Scales, Settings};
-use std::collections::BTreeMap;
+use crate::weighing::{Scales, Settings, oil_in_use};
+use std::collections::{BTreeMap, BTreeSet};
 
 /// One thing that may move.
 #[derive(Clone, Debug, PartialEq, Eq, PartialOrd, Ord)]
@@ -96,36 +97,120 @@ const ENDS: [(End, &str); 5] = [
     (End::PourMargin, "pour margin"),
 ];
 
-/// Weighs every oil on every point; none where an oil makes no curve.
-pub fn outcome(site: &Site, rules: &Rulebook, settings: Settings) -> Option<Outcome> {
-    let scales = Scales::new(site, rules, settings).ok()?;
-    let mut found = Outcome::new();
-    for point in &site.points {
-        let w = scales.weigh(point);
-        let address = point.address();
-        let id = |oil: usize| site.oils[oil].id.clone();
-        let mut put = |what: What, says: Shown| {
-            found.insert((address.clone(), what), says);
-        };
-        put(What::Point, Shown::word("there"));
-        let proposed = w.proposed().map_or("none".to_owned(), |c| id(c.oil));
-        put(What::Oil, Shown::word(proposed));
-        for c in &w.candidates {
-            put(
-                What::Verdict(id(c.oil)),
-                Shown::word(c.judgement.verdict.word()),
-            );
+/// What everything on a site is weighed with: two points that read alike come out alike under it.
+#[derive(PartialEq)]
+struct Terms {
+    oils: Vec<Oil>,
+    house: House,
+    /// The oils in use somewhere on the site: the order of candidates goes by them.
+    on_site: BTreeSet<String>,
+    own_rules: String,
+    reserve: Option<f64>,
+    worn: bool,
+    units: Units,
+}
+
+/// A point that was weighed, with what came out.
+struct Known {
+    terms: usize,
+    point: Point,
+    found: Vec<(What, Shown)>,
+}
+
+/// Everything weighed so far. States that differ in one input agree in most points; a point is
+/// weighed again only where it, or what it is weighed with, is another.
+#[derive(Default)]
+pub struct Book {
+    terms: Vec<Terms>,
+    known: BTreeMap<String, Vec<Known>>,
+    /// Points weighed, not found in the book.
+    pub weighed: usize,
+}
+
+/// The rules in force, with the user's own as one text: what tells two of them apart.
+#[derive(Clone, Copy)]
+pub struct Rules<'r> {
+    /// All of them.
+    pub all: &'r Rulebook,
+    /// The user's own.
+    pub own: &'r str,
+}
+
+impl Book {
+    /// Weighs every oil on every point; none where an oil makes no curve.
+    pub fn outcome(
+        &mut self,
+        site: &Site,
+        rules: Rules<'_>,
+        settings: Settings,
+    ) -> Option<Outcome> {
+        let terms = self.terms(site, rules, settings);
+        let mut scales: Option<Scales<'_>> = None;
+        let mut all = Outcome::new();
+        for point in &site.points {
+            let address = point.address();
+            let mut known = self.known.get(&address).into_iter().flatten();
+            let before = known.find(|k| k.terms == terms && k.point == *point);
+            let found = if let Some(known) = before {
+                known.found.clone()
+            } else {
+                if scales.is_none() {
+                    scales = Some(Scales::new(site, rules.all, settings).ok()?);
+                }
+                let found = of_point(scales.as_ref()?, point);
+                self.weighed += 1;
+                self.known.entry(address.clone()).or_default().push(Known {
+                    terms,
+                    point: point.clone(),
+                    found: found.clone(),
+                });
+                found
+            };
+            let found = found.into_iter();
+            all.extend(found.map(|(what, shown)| ((address.clone(), what), shown)));
         }
-        for b in &w.barred {
-            put(What::Verdict(id(b.oil)), Shown::word("barred"));
-        }
-        for (end, word) in ENDS {
-            if let Some(says) = limit(&w.demands.middle, end, settings.units) {
-                put(What::Limit(word), says);
-            }
-        }
+        Some(all)
     }
-    Some(found)
+
+    fn terms(&mut self, site: &Site, rules: Rules<'_>, settings: Settings) -> usize {
+        let on_site = site.points.iter().filter_map(oil_in_use);
+        let terms = Terms {
+            oils: site.oils.clone(),
+            house: site.house.clone(),
+            on_site: on_site.map(str::to_owned).collect(),
+            own_rules: rules.own.to_owned(),
+            reserve: settings.reserve,
+            worn: settings.worn,
+            units: settings.units,
+        };
+        let known = self.terms.iter().position(|t| *t == terms);
+        known.unwrap_or_else(|| {
+            self.terms.push(terms);
+            self.terms.len() - 1
+        })
+    }
+}
+
+/// What weighing a point gives.
+fn of_point<'a>(scales: &Scales<'a>, point: &'a Point) -> Vec<(What, Shown)> {
+    let w = scales.weigh(point);
+    let id = |oil: usize| scales.site.oils[oil].id.clone();
+    let proposed = w.proposed().map_or("none".to_owned(), |c| id(c.oil));
+    let mut found = vec![
+        (What::Point, Shown::word("there")),
+        (What::Oil, Shown::word(proposed)),
+    ];
+    found.extend(w.candidates.iter().map(|c| {
+        let word = c.judgement.verdict.word();
+        (What::Verdict(id(c.oil)), Shown::word(word))
+    }));
+    let barred = w.barred.iter();
+    found.extend(barred.map(|b| (What::Verdict(id(b.oil)), Shown::word("barred"))));
+    found.extend(ENDS.into_iter().filter_map(|(end, word)| {
+        let says = limit(&w.demands.middle, end, scales.units)?;
+        Some((What::Limit(word), says))
+    }));
+    found
 }
 
 /// The governing limit of an end.

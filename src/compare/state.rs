@@ -1,7 +1,7 @@
 //! A state of a site: its files as trees, the rules in force, the options it was weighed with.
 
 use super::diff::{Change, File, differences, with};
-use super::outcome::{Outcome, outcome};
+use super::outcome::{Book, Outcome, Rules};
 use crate::demand::rules::CALCULATED;
 use crate::input::file::FileKind;
 use crate::input::load::{self, Tree, With};
@@ -84,6 +84,15 @@ impl State {
         if self.own_rules != new.own_rules {
             found.push(Change::whole(File::Rules, "own rules", None, None));
         }
+        if self.settings.worn != new.settings.worn {
+            let state = |s: &Self| Some(if s.settings.worn { "worn" } else { "new" }.to_owned());
+            found.push(Change::whole(
+                File::As,
+                "option --as",
+                state(self),
+                state(new),
+            ));
+        }
         let reserve = |s: &Self| {
             s.settings
                 .reserve
@@ -104,6 +113,7 @@ impl State {
     /// refuses it.
     pub fn site_with(&self, set: &SourceSet, changes: &[&Change], new: &Self) -> Option<Site> {
         let (rules, _) = self.in_force(changes, new);
+        let rules = rules.all;
         let whole = changes
             .iter()
             .any(|c| c.file == File::Oils && c.span.is_none());
@@ -130,25 +140,26 @@ impl State {
         set: &SourceSet,
         changes: &[&Change],
         new: &Self,
+        book: &mut Book,
     ) -> Option<Outcome> {
         let site = self.site_with(set, changes, new)?;
         let (rules, settings) = self.in_force(changes, new);
-        outcome(&site, rules, settings)
+        book.outcome(&site, rules, settings)
     }
 
-    fn in_force<'s>(&'s self, changes: &[&Change], new: &'s Self) -> (&'s Rulebook, Settings) {
-        let has = |file: File| changes.iter().any(|c| c.file == file);
-        let rules = if has(File::Rules) {
-            &new.rules
-        } else {
-            &self.rules
+    fn in_force<'s>(&'s self, changes: &[&Change], new: &'s Self) -> (Rules<'s>, Settings) {
+        let of = |file: File| {
+            let changed = changes.iter().any(|c| c.file == file);
+            if changed { new } else { self }
+        };
+        let rules = of(File::Rules);
+        let rules = Rules {
+            all: &rules.rules,
+            own: &rules.own_rules,
         };
         let settings = Settings {
-            reserve: if has(File::Option) {
-                new.settings.reserve
-            } else {
-                self.settings.reserve
-            },
+            reserve: of(File::Option).settings.reserve,
+            worn: of(File::As).settings.worn,
             ..self.settings
         };
         (rules, settings)

@@ -8,13 +8,14 @@
 //! What the oil has to declare and what it must not contain is found by trying it on the rules.
 
 pub mod contents;
+mod grease;
 mod trial;
 
 use crate::demand::takes_grease;
 use crate::judge::{Judgement, Verdict};
 use crate::model::rulebook::Rulebook;
-use crate::quantity::Measure;
 use crate::quantity::show::{Toward, Units, quantity};
+use crate::quantity::{KinematicViscosity, Measure};
 use crate::relation::oil::base_stock::BaseStock;
 use crate::relation::oil::grade::IsoGrade;
 use crate::weighing::{Scales, Weighed};
@@ -26,8 +27,8 @@ use trial::Trial;
 pub struct Specification {
     /// Base stock it was solved with: the plainest that can do it.
     pub base: BaseStock,
-    /// ISO VG.
-    pub grade: u32,
+    /// ISO VG; none for a grease, whose base oil has a range of its own.
+    pub grade: Option<u32>,
     /// Viscosity index at least, a whole number.
     pub vi: f64,
     /// Pour point at most, K, a whole number of degrees Celsius; none where nothing asks for one.
@@ -40,10 +41,23 @@ pub struct Specification {
     pub cold: Option<(f64, f64)>,
     /// Whether shear is that of gears and rolling bearings.
     pub severe: bool,
+    /// What a grease has to be beside its base oil; none for an oil.
+    pub grease: Option<GreaseAsked>,
     /// What it has to declare and what it must not contain.
     pub contents: Contents,
     /// The specification weighed: it holds.
     pub judgement: Judgement,
+}
+
+/// A grease beside its base oil.
+#[derive(Clone, Debug, PartialEq)]
+pub struct GreaseAsked {
+    /// Thickeners any of which serves, by name, the first the one it was solved with.
+    pub thickeners: Vec<String>,
+    /// Base oil at 40 degC by the certificate of the batch, at least and at most, m²/s.
+    pub nu40: (f64, f64),
+    /// Coldest start and hottest running it has to be fit for, K, as far as they are known.
+    pub fit_for: (Option<f64>, Option<f64>),
 }
 
 /// What came of it.
@@ -58,9 +72,12 @@ pub enum Ask {
         /// Greatest viscosity index tried.
         vi: f64,
     },
-    /// A grease: not solved for.
-    Grease,
+    /// A grease point, and no thickener on no base oil keeps every limit.
+    NoGrease,
 }
+
+/// What is said where no grease can do it.
+pub const NO_GREASE: &str = "no grease holds here: none of the thickeners of the rules, on a base oil of mineral or PAO, keeps every limit";
 
 /// Bases tried, the plainest first, with the greatest index they reach without polymer.
 const BASES: [(BaseStock, f64); 5] = [
@@ -77,16 +94,19 @@ const LEAST_INDEX: f64 = 90.0;
 /// Solves for the oil to ask for on a point.
 pub fn ask(scales: &Scales<'_>, weighed: &Weighed<'_>) -> Ask {
     if takes_grease(weighed.point) {
-        return Ask::Grease;
+        if let Some(undecided) = undecided(weighed) {
+            return undecided;
+        }
+        let found = grease::ask(scales, weighed);
+        return found.map_or(Ask::NoGrease, |spec| Ask::Specification(Box::new(spec)));
     }
-    if let Some(u) = weighed.demands.middle.undecided.first() {
-        let part = u.part.as_deref().unwrap_or("the point");
-        return Ask::Undecided(format!("{part}: {}", u.because));
+    if let Some(undecided) = undecided(weighed) {
+        return undecided;
     }
     let mut most = 0.0_f64;
     for (base, index) in BASES {
         most = most.max(index);
-        let contents = contents::of(scales, weighed, base);
+        let contents = contents::of(scales, weighed, base, None);
         if contents.barred {
             continue;
         }
@@ -102,6 +122,13 @@ pub fn ask(scales: &Scales<'_>, weighed: &Weighed<'_>) -> Ask {
         }
     }
     Ask::NoRoom { vi: most }
+}
+
+/// What has to be known before anything can be solved for.
+fn undecided(weighed: &Weighed<'_>) -> Option<Ask> {
+    let u = weighed.demands.middle.undecided.first()?;
+    let part = u.part.as_deref().unwrap_or("the point");
+    Some(Ask::Undecided(format!("{part}: {}", u.because)))
 }
 
 /// The grade that holds with the least index up to one; of equals the thinner.
@@ -160,12 +187,13 @@ fn complete(
     let judgement = trial.weigh(grade, vi, pour, loss.filter(|l| *l > 0.0))?;
     (judgement.verdict == Verdict::Holds).then(|| Specification {
         base: trial.base,
-        grade,
+        grade: Some(grade),
         vi,
         pour,
         loss,
         cold: trial.cold_viscosity(grade, vi),
         severe: trial.severe(),
+        grease: None,
         contents: contents.clone(),
         judgement,
     })
@@ -221,10 +249,38 @@ impl Specification {
 
     /// The specification in sentences, for a supplier: figures only, no machine named.
     pub fn lines(&self, shear_test: &str, degrees: impl Fn(f64) -> String) -> Vec<String> {
-        let mut lines = vec![format!(
-            "ISO VG {}, viscosity index at least {:.0}",
-            self.grade, self.vi
-        )];
+        let mut lines = Vec::new();
+        if let Some(grade) = self.grade {
+            lines.push(format!(
+                "ISO VG {grade}, viscosity index at least {:.0}",
+                self.vi
+            ));
+        }
+        if let Some(grease) = &self.grease {
+            let nu = |nu: f64, toward| {
+                quantity(
+                    KinematicViscosity::from_base(nu).amount(),
+                    Units::Si,
+                    toward,
+                )
+            };
+            lines.push(format!(
+                "grease with a base oil of {} to {} at 40 degC, by the certificate of the batch, viscosity index at least {:.0}",
+                nu(grease.nu40.0, Toward::Up),
+                nu(grease.nu40.1, Toward::Down),
+                self.vi
+            ));
+            lines.push(format!("thickener: {}", grease.thickeners.join(" or ")));
+            let (cold, hot) = grease.fit_for;
+            let fit = [
+                cold.map(|t| format!("from {}", degrees(t))),
+                hot.map(|t| format!("to {}", degrees(t))),
+            ];
+            let fit: Vec<String> = fit.into_iter().flatten().collect();
+            if !fit.is_empty() {
+                lines.push(format!("fit for use {}", fit.join(" ")));
+            }
+        }
         lines.extend(
             self.pour
                 .map(|p| format!("pour point at most {}", degrees(p))),

@@ -10,9 +10,9 @@
 //!
 //! The problem is a set cover. It is solved exactly: parted into what does not hang together,
 //! reduced by dominance ([`reduce`]), then searched depth first with a bound ([`search`]). The
-//! length is proven before ties are looked at; ties go by fewest changes from today with
-//! the conditions they bring, then cost, then name. Nothing is bought for two sides of a fence as one: an oil on both sides of one
-//! stands on the list twice.
+//! length is proven before ties are looked at; ties go by fewest changes from today (of
+//! as many changes those that bring fewer conditions), then cost, then name. Nothing is bought for two sides of a fence as one: an oil on both sides of one stands on
+//! the list twice.
 
 pub mod case;
 pub mod check;

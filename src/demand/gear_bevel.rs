@@ -8,15 +8,28 @@ use crate::model::part::{GearMesh, Part};
 use crate::quantity::convert::number;
 use crate::quantity::{Angle, AngularVelocity, Length, Measure, Ratio, Torque};
 use crate::relation::gear::bevel::{Bevel, VIRTUAL, VIRTUAL_LOAD, Virtual, virtual_pair};
-use crate::trace::{Known, Recorder};
+use crate::trace::{Known, Outcome, Recorder};
 
-/// The virtual pair, where teeth, mean module, face width, speed and load are known.
-pub(super) fn pair<R: Recorder>(
+/// The virtual gears of a bevel pair, with what is known of the real ones.
+pub(super) struct VirtualGears {
+    pub(super) gears: Outcome<Virtual>,
+    /// Normal module at mid-face.
+    pub(super) module: Known<Length>,
+    /// Face width of the real pair.
+    pub(super) width: Known<Length>,
+    /// Speed of the real pinion.
+    pub(super) speed: Known<AngularVelocity>,
+}
+
+/// The virtual gears, where teeth, mean module, face width and speed are known. Shafts at right
+/// angles.
+pub(super) fn virtual_gears<R: Recorder>(
     cx: &mut Context<'_, '_, R>,
     part: &Part,
     mesh: &GearMesh,
-    (beta, alpha): (Known<Angle>, Known<Angle>),
-) -> Option<Pair> {
+) -> Option<VirtualGears> {
+    let beta = gear_film::helix(cx, part, mesh);
+    let alpha = gear_film::pressure_angle(cx, part, mesh);
     let (z1, z2) = mesh.teeth.as_ref()?.value;
     let tooth = |n: u32| mesh.teeth.clone().map(|t| t.map(|_| number(f64::from(n))));
     let z1 = cx.r.given("z1", "teeth of the pinion", &tooth(z1)?);
@@ -29,20 +42,19 @@ pub(super) fn pair<R: Recorder>(
         how: "drawing",
     };
     let module = length("normal module", "m_mn", "normal module at mid-face");
-    let m = cx.maybe(part, module, mesh.normal_module.as_ref())?;
+    let module = cx.maybe(part, module, mesh.normal_module.as_ref())?;
     let face = length("face width", "b", "face width");
-    let b = cx.maybe(part, face, mesh.face_width.as_ref())?;
-    let n = super::gear_mesh::pinion_speed(cx, part, mesh)?;
-    let torque = gear_film::torque(cx, part, mesh, n)?;
+    let width = cx.maybe(part, face, mesh.face_width.as_ref())?;
+    let speed = super::gear_mesh::pinion_speed(cx, part, mesh)?;
     let inputs = (
         ("z1", z1),
         ("z2", z2),
-        ("m_mn", m),
-        ("b", b),
+        ("m_mn", module),
+        ("b", width),
         ("beta_m", beta),
         ("alpha_n", alpha),
     );
-    let made =
+    let gears =
         cx.r.attempt_all(
             &VIRTUAL,
             inputs,
@@ -59,6 +71,23 @@ pub(super) fn pair<R: Recorder>(
             },
         )
         .ok()?;
+    Some(VirtualGears {
+        gears,
+        module,
+        width,
+        speed,
+    })
+}
+
+/// The virtual pair as the film takes it.
+pub(super) fn pair<R: Recorder>(
+    cx: &mut Context<'_, '_, R>,
+    part: &Part,
+    mesh: &GearMesh,
+) -> Option<Pair> {
+    let found = virtual_gears(cx, part, mesh)?;
+    let (made, n) = (found.gears, found.speed);
+    let torque = gear_film::torque(cx, part, mesh, n)?;
     let ratio =
         cx.r.take(&made, "u_v", "ratio of the virtual pair", |v: Virtual| {
             number(v.teeth.z2.base() / v.teeth.z1.base())

@@ -70,17 +70,28 @@ pub(super) fn reference_diameter<R: Recorder>(
     .ok()
 }
 
-fn helix<R: Recorder>(cx: &mut Context<'_, '_, R>, part: &Part, mesh: &GearMesh) -> Known<Angle> {
+pub(super) fn helix<R: Recorder>(
+    cx: &mut Context<'_, '_, R>,
+    part: &Part,
+    mesh: &GearMesh,
+) -> Known<Angle> {
     let key = wanted("helix", "beta", "helix angle", "drawing");
-    let usual = match mesh.kind {
-        Some(GearType::Spur | GearType::Bevel) | None => (0.0, "straight teeth unless stated"),
-        Some(_) => (12.0, "helical, usual angle"),
+    let (value, hi, why) = match mesh.kind {
+        Some(GearType::Spur | GearType::Bevel) | None => {
+            (0.0, 30.0, "straight teeth unless stated")
+        }
+        Some(GearType::Helical) => (12.0, 30.0, "helical, usual angle"),
+        Some(_) => (
+            35.0,
+            45.0,
+            "spiral, usual angle at mid-face; common practice",
+        ),
     };
     let usual = Usual {
-        value: degrees(usual.0),
+        value: degrees(value),
         lo: degrees(0.0),
-        hi: degrees(30.0),
-        why: usual.1,
+        hi: degrees(hi),
+        why,
     };
     match &mesh.helix {
         Some(_) => cx.or_assume(part, key, mesh.helix.as_ref(), usual),
@@ -308,7 +319,7 @@ fn pitch_point<R: Recorder>(
     let an = pressure_angle(cx, part, mesh);
     let bevel = matches!(mesh.kind, Some(GearType::Bevel | GearType::SpiralBevel));
     let pair = if bevel {
-        super::gear_bevel::pair(cx, part, mesh, (beta, an))?
+        super::gear_bevel::pair(cx, part, mesh)?
     } else {
         cylindrical(cx, part, mesh)?
     };
@@ -414,7 +425,7 @@ pub(super) fn torque<R: Recorder>(
     .ok()
 }
 
-fn pressure_angle<R: Recorder>(
+pub(super) fn pressure_angle<R: Recorder>(
     cx: &mut Context<'_, '_, R>,
     part: &Part,
     mesh: &GearMesh,

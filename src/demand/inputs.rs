@@ -41,6 +41,13 @@ pub enum GapKind {
     },
     /// Nothing stands in: what needs it cannot be judged.
     Missing,
+    /// A word stands in, where others would be plausible.
+    Word {
+        /// What is used.
+        taken: String,
+        /// What else would be plausible.
+        among: Vec<String>,
+    },
     /// A fact in words that a suitability rule needs.
     Fact,
 }

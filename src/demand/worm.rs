@@ -7,7 +7,7 @@ use super::inputs::{Usual, Wanted};
 use super::{End, Undecided};
 use crate::model::part::{Part, WheelMaterial, WormMesh};
 use crate::quantity::convert::degrees;
-use crate::quantity::{Angle, AngularVelocity, Length, Measure, Ratio, Velocity};
+use crate::quantity::{Angle, AngularVelocity, Length, Measure, Power, Ratio, Velocity};
 use crate::relation::gear::worm::{
     EFFICIENCY, FRICTION, LEAD, LOSS, SLIDING, USUAL_DIAMETER, VISCOSITY_GUIDE, efficiency,
     friction, lead_angle, loss, sliding_speed, usual_diameter, viscosity_guide,
@@ -18,7 +18,7 @@ use crate::trace::{Known, Recorder};
 /// The component of practice whose window a worm takes.
 pub const WINDOW: &str = "gear_worm";
 
-fn wanted(
+const fn wanted(
     key: &'static str,
     symbol: &'static str,
     says: &'static str,
@@ -33,29 +33,25 @@ fn wanted(
     }
 }
 
+const DISTANCE: Wanted<'static> = wanted(
+    "centre distance",
+    "a",
+    "centre distance",
+    "nameplate, or a rule",
+);
+const SPEED: Wanted<'static> = wanted(
+    "worm speed",
+    "n1",
+    "speed of the worm",
+    "nameplate of the motor",
+);
+const LEAD_ANGLE: Wanted<'static> = wanted("lead angle", "gamma", "lead angle", "drawing");
+
 /// Adds the demands of a worm mesh.
 pub fn add<R: Recorder>(cx: &mut Context<'_, '_, R>, part: &Part, mesh: &WormMesh) {
     limits(cx, part, mesh);
-    let distance = cx.maybe(
-        part,
-        wanted(
-            "centre distance",
-            "a",
-            "centre distance",
-            "nameplate, or a rule",
-        ),
-        mesh.centre_distance.as_ref(),
-    );
-    let speed = cx.take(
-        part,
-        wanted(
-            "worm speed",
-            "n1",
-            "speed of the worm",
-            "nameplate of the motor",
-        ),
-        mesh.worm_speed.as_ref(),
-    );
+    let distance = cx.maybe(part, DISTANCE, mesh.centre_distance.as_ref());
+    let speed = cx.take(part, SPEED, mesh.worm_speed.as_ref());
     let Some(speed) = speed else { return };
     older_grade(cx, part, distance, speed);
     let Some(diameter) = diameter(cx, part, mesh, distance) else {
@@ -148,7 +144,7 @@ fn lead<R: Recorder>(
     mesh: &WormMesh,
     (distance, diameter): (Option<Known<Length>>, Known<Length>),
 ) -> Known<Angle> {
-    let key = wanted("lead angle", "gamma", "lead angle", "drawing");
+    let key = LEAD_ANGLE;
     if cx.has(mesh.lead_angle.as_ref())
         && let Some(gamma) = cx.take(part, key, mesh.lead_angle.as_ref())
     {
@@ -191,16 +187,9 @@ fn slide<R: Recorder>(
     cx: &mut Context<'_, '_, R>,
     part: &Part,
     mesh: &WormMesh,
-    (diameter, speed, gamma): (Known<Length>, Known<AngularVelocity>, Known<Angle>),
+    (diameter, speed, gamma): Sized,
 ) {
-    let v = cx.r.attempt(
-        "v_g",
-        "sliding speed",
-        &SLIDING,
-        (("d1", diameter), ("n1", speed), ("gamma", gamma)),
-        |(d, n, g)| sliding_speed(d, n, g),
-    );
-    let Ok(v) = v else {
+    let Some(v) = sliding(cx, (diameter, speed, gamma)) else {
         cx.undecided(part, End::HotFloor, "the worm stands still or has no size");
         return;
     };
@@ -216,16 +205,44 @@ fn slide<R: Recorder>(
         let says = "guide to the viscosity at 40 degC by sliding speed (textbooks, from memory)";
         cx.inform(part, says, Some((nu.value.amount(), nu.step)));
     }
-    losses(cx, part, mesh, (v, gamma));
+    let eta = match efficient(cx, (v, gamma)) {
+        Ok(eta) => eta,
+        Err(mu) => {
+            let says = "friction locks the mesh with this lead angle: no efficiency can be given";
+            cx.inform(part, says, Some((mu.value.amount(), mu.step)));
+            return;
+        }
+    };
+    let says = "efficiency of the mesh, mineral oil; polyglycol runs some per cent better";
+    cx.inform(part, says, Some((eta.value.amount(), eta.step)));
+    if let Some((_, lost)) = into_heat(cx, part, mesh, eta) {
+        let figure = Some((lost.value.amount(), lost.step));
+        cx.inform(part, "power the mesh turns into heat", figure);
+    }
 }
 
-/// Efficiency of the mesh, and the power it turns into heat where the power is known.
-fn losses<R: Recorder>(
+/// Mean diameter of the worm, its speed, its lead angle.
+type Sized = (Known<Length>, Known<AngularVelocity>, Known<Angle>);
+
+fn sliding<R: Recorder>(
     cx: &mut Context<'_, '_, R>,
-    part: &Part,
-    mesh: &WormMesh,
+    (diameter, speed, gamma): Sized,
+) -> Option<Known<Velocity>> {
+    let found = cx.r.attempt(
+        "v_g",
+        "sliding speed",
+        &SLIDING,
+        (("d1", diameter), ("n1", speed), ("gamma", gamma)),
+        |(d, n, g)| sliding_speed(d, n, g),
+    );
+    found.ok()
+}
+
+/// Efficiency of the mesh; the friction where it locks.
+fn efficient<R: Recorder>(
+    cx: &mut Context<'_, '_, R>,
     (v, gamma): (Known<Velocity>, Known<Angle>),
-) {
+) -> Result<Known<Ratio>, Known<Ratio>> {
     let mu = cx.r.law(
         "mu",
         "coefficient of friction of the mesh",
@@ -246,30 +263,63 @@ fn losses<R: Recorder>(
         (("gamma", gamma), ("alpha_n", alpha), ("mu", mu)),
         |(g, a, mu): (Angle, Angle, Ratio)| efficiency(g, a, mu),
     );
-    let Ok(eta) = eta else {
-        let says = "friction locks the mesh with this lead angle: no efficiency can be given";
-        cx.inform(part, says, Some((mu.value.amount(), mu.step)));
-        return;
-    };
-    let says = "efficiency of the mesh, mineral oil; polyglycol runs some per cent better";
-    cx.inform(part, says, Some((eta.value.amount(), eta.step)));
-    let power = cx.maybe(
-        part,
-        wanted("power", "P", "input power", "nameplate of the motor"),
-        mesh.power.as_ref(),
+    eta.map_err(|_| mu)
+}
+
+const POWER: Wanted<'static> = wanted("power", "P", "input power", "nameplate of the motor");
+
+/// Input power and what of it the mesh turns into heat, where the power is known.
+fn into_heat<R: Recorder>(
+    cx: &mut Context<'_, '_, R>,
+    part: &Part,
+    mesh: &WormMesh,
+    eta: Known<Ratio>,
+) -> Option<(Known<Power>, Known<Power>)> {
+    let power = cx.maybe(part, POWER, mesh.power.as_ref())?;
+    let lost = cx.r.law(
+        "P_V",
+        "power the mesh turns into heat",
+        &LOSS,
+        (("P", power), ("eta", eta)),
+        |(p, eta)| loss(p, eta),
     );
-    if let Some(p) = power {
-        let lost = cx.r.law(
-            "P_V",
-            "power the mesh turns into heat",
-            &LOSS,
-            (("P", p), ("eta", eta)),
-            |(p, eta)| loss(p, eta),
-        );
-        cx.inform(
-            part,
-            "power the mesh turns into heat",
-            Some((lost.value.amount(), lost.step)),
-        );
-    }
+    Some((power, lost))
+}
+
+/// Power a worm mesh turns into heat.
+pub(super) struct Lost {
+    pub(super) power: Known<Power>,
+    pub(super) efficiency: Known<Ratio>,
+    pub(super) lost: Power,
+}
+
+/// The loss of a worm mesh, where its speed and power are known.
+///
+/// # Errors
+/// The input that is missing, with why.
+pub(super) fn lost<R: Recorder>(
+    cx: &mut Context<'_, '_, R>,
+    part: &Part,
+    mesh: &WormMesh,
+) -> Result<Lost, (&'static str, Wanted<'static>)> {
+    let distance = cx.maybe(part, DISTANCE, mesh.centre_distance.as_ref());
+    let speed = cx.maybe(part, SPEED, mesh.worm_speed.as_ref());
+    let speed = speed.ok_or(("the speed of the worm is not stated", SPEED))?;
+    let unsized_worm = (
+        "neither worm diameter nor centre distance is stated",
+        DISTANCE,
+    );
+    let diameter = diameter(cx, part, mesh, distance).ok_or(unsized_worm)?;
+    let gamma = lead(cx, part, mesh, (distance, diameter));
+    let v = sliding(cx, (diameter, speed, gamma));
+    let v = v.ok_or(("the worm stands still or has no size", SPEED))?;
+    let efficiency = efficient(cx, (v, gamma));
+    let efficiency = efficiency.map_err(|_| ("friction locks the mesh", LEAD_ANGLE))?;
+    let heat = into_heat(cx, part, mesh, efficiency);
+    let (power, lost) = heat.ok_or(("the power is not stated", POWER))?;
+    Ok(Lost {
+        power,
+        efficiency,
+        lost: lost.value,
+    })
 }

@@ -1,5 +1,6 @@
 //! The keys of one record, read through the table of keys.
 
+mod bounds;
 mod misplaced;
 pub mod quantities;
 pub mod words;

@@ -95,6 +95,15 @@ pub fn example(key: &Key) -> String {
     }
 }
 
+/// Groups of keys that state one thing: a value of one takes the place of all.
+pub const TOGETHER: &[&[&str]] = &[
+    &["sump rise", "sump", "at ambient"],
+    &["radial clearance", "diametral clearance"],
+    &["power", "pinion torque"],
+    &["worm speed", "speed"],
+    &["sheared", "shear loss", "PSSI"],
+];
+
 /// A shorter way to write a row of a table.
 pub(crate) const fn key(
     name: &'static str,

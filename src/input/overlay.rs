@@ -3,12 +3,19 @@
 //! Each value becomes a line of a virtual file, so that it is read, checked and shown by the same
 //! code as any other, and says that it comes from the command line.
 
+mod aim;
+
+pub use aim::About;
+
 use super::fields::{Fields, Slot};
 use super::keys::machine::MACHINE;
+use super::keys::{self, TOGETHER};
+use super::load::Tree;
 use super::reader::{Reader, as_plain};
 use crate::problem::{Code, Problem, Problems, Reported, Write};
 use crate::source::yaml::{self, Entry, Node, NodeKind};
 use crate::source::{COMMAND_LINE, FileId, Place, SourceSet};
+use aim::Aim;
 use std::fmt::Write as _;
 
 /// A value laid over those of some points.
@@ -29,8 +36,11 @@ pub struct Settings {
     pub file: FileId,
     /// Its tree: one entry a value.
     pub root: Node,
-    /// The part of each value, in the order of the entries.
-    parts: Vec<Option<String>>,
+    /// The name before the key of each value, in the order of the entries.
+    names: Vec<Option<String>>,
+    /// What each value is for, once that has been found; those for anything else than the points
+    /// have gone into the trees.
+    aims: Vec<Aim>,
 }
 
 impl Settings {
@@ -39,17 +49,45 @@ impl Settings {
         let entries = self.root.entries().unwrap_or_default();
         entries
             .iter()
-            .zip(&self.parts)
-            .map(|(entry, part)| Overlay {
-                targets: targets.to_vec(),
-                part: part.clone(),
-                entry,
+            .zip(&self.aims)
+            .filter_map(|(entry, aim)| match aim {
+                Aim::Point(part) => Some(Overlay {
+                    targets: targets.to_vec(),
+                    part: part.clone(),
+                    entry,
+                }),
+                _ => None,
             })
             .collect()
     }
+
+    /// Finds what each value is for, and puts those that are not for the points into the trees of
+    /// the files.
+    ///
+    /// # Errors
+    /// A name or key that nothing has, or several things have; all are reported.
+    pub fn put(
+        &mut self,
+        set: &SourceSet,
+        trees: &mut [Tree],
+        about: &About,
+        problems: &mut Problems,
+    ) -> Result<(), Reported> {
+        let entries = self.root.entries().unwrap_or_default();
+        for (entry, name) in entries.iter().zip(&self.names) {
+            let value = set.slice(entry.value.span);
+            let found = aim::aim(problems, (name.as_deref(), entry), value, (about, trees));
+            if let Some(aim) = found {
+                aim::put(trees, &aim, entry);
+                self.aims.push(aim);
+            }
+        }
+        problems.failed().map_or(Ok(()), Err)
+    }
 }
 
-/// Reads `KEY=VALUE` texts; a value of a part is written `PART: KEY=VALUE`.
+/// Reads `KEY=VALUE` texts; a value of something else than the points is written
+/// `NAME: KEY=VALUE`, with the name of a part, an oil, an area, a machine, `house` or a house rule.
 ///
 /// # Errors
 /// A text of another form.
@@ -59,13 +97,13 @@ pub fn settings(
     problems: &mut Problems,
 ) -> Result<Settings, Reported> {
     let mut lines = String::new();
-    let mut parts = Vec::new();
+    let mut names = Vec::new();
     for text in texts {
         let Some((key, value)) = text.split_once('=') else {
             return Err(problems.error(no_pair(text)));
         };
-        let (part, key) = match key.rsplit_once(':') {
-            Some((part, key)) => (Some(part.trim().to_owned()), key.trim()),
+        let (name, key) = match key.rsplit_once(':') {
+            Some((name, key)) => (Some(name.trim().to_owned()), key.trim()),
             None => (None, key.trim()),
         };
         let value = value.trim();
@@ -79,14 +117,19 @@ pub fn settings(
             as_plain(value, false)
         };
         let _ = writeln!(lines, "{}: {value}", as_plain(key, false));
-        parts.push(part);
+        names.push(name);
     }
     let file = set.add(COMMAND_LINE, &lines);
     let gated = yaml::read(file, &lines);
     let whole = gated.complete && gated.faults.is_empty();
     match gated.root {
-        Some(root) if whole && root.entries().map(<[Entry]>::len) == Some(parts.len()) => {
-            Ok(Settings { file, root, parts })
+        Some(root) if whole && root.entries().map(<[Entry]>::len) == Some(names.len()) => {
+            Ok(Settings {
+                file,
+                root,
+                names,
+                aims: Vec::new(),
+            })
         }
         _ => Err(problems.error(no_pair(&texts.join(" ")))),
     }
@@ -98,7 +141,7 @@ fn no_pair(text: &str) -> Problem {
         format!("\"{text}\" is not KEY=VALUE"),
         Place::Flag("--set"),
     )
-    .why("any input by the name it has in the file; a value of one part has its name before it")
+    .why("any input by the name it has in the file; a value of a part, an oil, an area or the house has that name before it")
     .write(Write::words(
         "--set \"sump rise=48 K\"  or  --set \"rolling bearing 22220: speed=250 r/min\"",
     ))
@@ -125,14 +168,6 @@ pub(super) fn apply<'o, 't>(
     }
     of_parts
 }
-
-/// Groups of keys that state one thing: a value laid over one takes the place of all.
-const TOGETHER: &[&[&str]] = &[
-    &["sump rise", "sump", "at ambient"],
-    &["radial clearance", "diametral clearance"],
-    &["power", "pinion torque"],
-    &["worm speed", "speed"],
-];
 
 /// Puts one value in, in place of what stated the same.
 pub(super) fn put<'t>(fields: &mut Fields<'t>, entry: &'t Entry) {
@@ -170,10 +205,12 @@ pub(super) fn over_parts<'t>(
     for overlay in overlays {
         let key = overlay.entry.key.text.as_str();
         let fits = |(label, fields): &(String, Fields<'_>)| {
-            let named = overlay
-                .part
-                .as_ref()
-                .is_none_or(|p| label == p || label.ends_with(&format!(" {p}")));
+            let named = overlay.part.as_ref().is_none_or(|p| {
+                let own = fields.get("name").and_then(|slot| slot.node.text());
+                label == p
+                    || label.ends_with(&format!(" {p}"))
+                    || own.is_some_and(|n| n.trim() == p)
+            });
             named && fields.record.key(key).is_some()
         };
         let places: Vec<usize> = (0..parts.len()).filter(|i| fits(&parts[*i])).collect();
@@ -190,23 +227,30 @@ pub(super) fn over_parts<'t>(
 
 fn none(reader: &mut Reader<'_>, overlay: &Overlay<'_>, address: &str) {
     let key = &overlay.entry.key;
+    let whose = overlay.part.as_deref().unwrap_or(address);
     let mut problem = reader
         .at(
             Code::KeyUnknown,
-            format!("{address} has nothing called \"{}\"", key.text),
+            format!("{whose} has nothing called \"{}\"", key.text),
             key.span,
             address,
         )
-        .why("the keys of machines and parts are listed by: filmwright help keys");
-    if let Some(meant) = MACHINE.meant(&key.text) {
+        .why("the keys of machines, parts, oils, areas and the house are listed by: filmwright help keys");
+    if let Some(meant) = meant(&key.text) {
         problem = problem
             .did_you_mean(meant)
             .write(Write::edit(key.span, meant));
     } else {
-        let words = "--set \"KEY=VALUE\" with a key of the machine or of one of its parts";
+        let words = "--set \"KEY=VALUE\" with a key of the machine or of one of its parts, or with the name of an oil, an area or `house` before it";
         problem = problem.write(Write::words(words));
     }
     reader.report(problem);
+}
+
+/// The key certainly meant, of a machine before any other.
+fn meant(written: &str) -> Option<&'static str> {
+    let of_all = || keys::records().into_iter().find_map(|r| r.meant(written));
+    MACHINE.meant(written).or_else(of_all)
 }
 
 fn which(reader: &mut Reader<'_>, overlay: &Overlay<'_>, address: &str, labels: &[String]) {

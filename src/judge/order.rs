@@ -20,7 +20,7 @@ pub struct Candidate<'a> {
     pub on_site: bool,
     /// Number of conditions.
     pub conditions: usize,
-    /// Smallest hot margin, quantised to a thousandth of a step so that noise cannot reorder.
+    /// Smallest margin over a floor, quantised to a thousandth of a step so that noise cannot reorder.
     pub excess: i64,
     /// Price, thousandths.
     pub price: Option<i64>,
@@ -28,9 +28,12 @@ pub struct Candidate<'a> {
     pub id: &'a str,
 }
 
-/// A margin in thousandths of a step; oils without one come last.
+/// The margin over the governing floor in thousandths of a step: the grade the maker names is a
+/// floor as well. Oils without one come last.
 pub fn quantised(judgement: &Judgement) -> i64 {
-    judgement.hot.map_or(i64::MAX, |m| thousandths(m.value))
+    let floors = [judgement.hot, judgement.maker].into_iter().flatten();
+    let margins = floors.map(|m| thousandths(m.value));
+    margins.min().unwrap_or(i64::MAX)
 }
 
 /// A number in thousandths.

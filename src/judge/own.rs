@@ -3,7 +3,7 @@
 
 use super::margin::Jaw;
 use super::prepared::{PreparedOil, PreparedPoint, ReadyDemand, ReadyLimit, Setting};
-use crate::demand::losses::{Calibrated, Drag, Losses, Settled};
+use crate::demand::losses::{Calibrated, Drag, Losses, Settled, Uncounted};
 use crate::demand::{AtAmbient, Demands, End};
 use crate::oil::Curves;
 use crate::quantity::{KinematicViscosity, Measure, ThermodynamicTemperature};
@@ -172,6 +172,8 @@ pub struct Running {
     pub by_losses: Option<f64>,
     /// Whether the losses are calibrated on a reading: otherwise for information only.
     pub calibrated: bool,
+    /// Shares of the losses that are not in the sum: with one of them it is for information only.
+    pub uncounted: Vec<Uncounted>,
     /// What it costs in the middle of the ambient range.
     pub drag: Drag,
     /// Energy a year, kWh, where the running hours are stated.
@@ -181,6 +183,28 @@ pub struct Running {
 }
 
 impl Running {
+    /// What the losses stand on, and what is not among them, as sentences.
+    pub fn stands_on(&self, ambient: &str) -> String {
+        let says = if self.calibrated {
+            "Running temperature at the hottest ambient by losses, calibrated on the reading with \
+             the oil in use; floors take the warmer."
+        } else if self.uncounted.is_empty() {
+            "Losses for information: no reading of the sump with the oil in use to calibrate them \
+             on."
+        } else {
+            "Losses for information: a part of them is not known, so that they foretell no \
+             temperature."
+        };
+        let mut text = format!("{says} Drag at {ambient} ambient.");
+        if !self.uncounted.is_empty() {
+            let all: Vec<String> = self.uncounted.iter().map(Uncounted::says).collect();
+            text.push_str(" Not counted: ");
+            text.push_str(&all.join("; "));
+            text.push('.');
+        }
+        text
+    }
+
     /// With what it costs over the oil in use.
     #[must_use]
     pub fn over(mut self, in_use: Option<&Self>) -> Self {
@@ -232,6 +256,7 @@ pub fn running(
         stated,
         by_losses,
         calibrated: own.is_some(),
+        uncounted: losses.uncounted.clone(),
         over_in_use: None,
         energy_kwh: hours_a_year.map(|h| drag.total.base() * h / 1000.0),
         drag,

@@ -247,6 +247,8 @@ pub struct JournalBearing {
     pub feed_temperature: Option<Stated<ThermodynamicTemperature>>,
     /// Pressure of the oil fed.
     pub feed_pressure: Option<Stated<Pressure>>,
+    /// Diameter of the hole the oil is fed through, opposite the load.
+    pub feed_hole: Option<Stated<Length>>,
     /// Surface that gives off heat.
     pub casing_area: Option<Stated<Area>>,
     /// Ra of the shaft.

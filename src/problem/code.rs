@@ -325,12 +325,16 @@ codes! {
     // the command line and the judging
     /// An option's value that is not KEY=VALUE.
     SetForm = "set-form" Error,
-    /// A key that several parts have.
+    /// A key that several things have.
     SetWhich = "set-which" Error,
+    /// A value for something that is not there.
+    SetWhose = "set-whose" Error,
     /// Nothing matches what was asked.
     NothingToWeigh = "nothing-to-weigh" Error,
     /// No oil list keeps the terms asked for.
     ListImpossible = "list-impossible" Error,
+    /// An oil is to stay on the list that no machine can take.
+    KeepIdle = "keep-idle" Warning,
     /// No machine can be decided, so there is nothing to make a list from.
     NothingDecided = "nothing-decided" Error,
     /// A rule used outside the range it was made for.

@@ -33,6 +33,27 @@ pub fn unit_of(kind: Kind, units: Units) -> &'static Unit {
     }
 }
 
+/// The unit one figure is told in: that of its kind, or a smaller or larger sister where the kind's
+/// own would bury the figure in zeros. A film is told in micrometres, a churning loss in watts, a
+/// shot of grease in grams, a contact pressure in megapascals. Documents for machines keep
+/// [`unit_of`].
+pub fn unit_for(amount: Amount, units: Units) -> &'static Unit {
+    let own = unit_of(amount.kind, units);
+    let size = amount.base.abs();
+    let sister = match (own.name, amount.kind) {
+        ("mm", Kind::Length) if size < 5e-5 => "um",
+        ("kW", Kind::Power) if size < 1e3 => "W",
+        ("kg", Kind::Mass) if size < 1.0 => "g",
+        ("bar", Kind::Pressure) if size >= 1e8 => "MPa",
+        _ => return own,
+    };
+    if size > 0.0 {
+        amount.kind.unit(sister).unwrap_or(own)
+    } else {
+        own
+    }
+}
+
 /// A unit as printed for people: `mm²/s`, `°C`, `r/min`.
 pub fn pretty_unit(name: &str) -> String {
     match name {
@@ -117,7 +138,7 @@ fn group_thousands(text: &str) -> String {
 
 /// A quantity in the unit of its kind, three significant digits: `40.8 mm2/s`.
 pub fn quantity(amount: Amount, units: Units, toward: Toward) -> String {
-    let unit = unit_of(amount.kind, units);
+    let unit = unit_for(amount, units);
     in_unit(amount, unit, toward)
 }
 
@@ -156,7 +177,7 @@ fn is_short(value: f64) -> bool {
 
 /// The same with the unit as people print it: `40.8 mm²/s`.
 pub fn pretty(amount: Amount, units: Units, toward: Toward) -> String {
-    let unit = unit_of(amount.kind, units);
+    let unit = unit_for(amount, units);
     let text = in_unit(amount, unit, toward);
     let number = text.strip_suffix(unit.name).unwrap_or(&text).trim_end();
     let number = number.replace('-', "\u{2212}");
@@ -202,6 +223,20 @@ pub fn exact(value: f64) -> f64 {
 mod tests {
     use super::*;
     use crate::quantity::convert::{celsius, mm2_s};
+
+    #[test]
+    fn small_figures_are_told_in_a_small_unit() {
+        let told = |kind, base| quantity(Amount { kind, base }, Units::Si, Toward::Nearest);
+        assert_eq!(told(Kind::Length, 1.4e-5), "14 um");
+        assert_eq!(told(Kind::Length, 8e-5), "0.08 mm");
+        assert_eq!(told(Kind::Length, 0.0), "0 mm");
+        assert_eq!(told(Kind::Power, 26.89), "26.89 W");
+        assert_eq!(told(Kind::Power, 1500.0), "1.5 kW");
+        assert_eq!(told(Kind::Mass, 0.0125), "12.5 g");
+        assert_eq!(told(Kind::Mass, 1.25), "1.25 kg");
+        assert_eq!(told(Kind::Pressure, 1.0e9), "1000 MPa");
+        assert_eq!(told(Kind::Pressure, 2e5), "2 bar");
+    }
 
     #[test]
     fn rounds_towards_caution() {

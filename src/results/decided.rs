@@ -1,10 +1,13 @@
 //! What to do where no oil holds, as parts of documents: the pair by season, the oil to ask for.
 
+use super::csv::{Cell, Table};
 use super::json;
 use super::weigh::band;
-use crate::decide::ask::{Ask, Specification};
+use crate::decide::ask::{Ask, NO_GREASE, Specification};
 use crate::decide::season::{Pair, Season};
 use crate::model::word::Word;
+use crate::quantity::Kind;
+use crate::quantity::show::unit_of;
 use crate::weighing::{Scales, Weighed};
 use serde_json::{Map, Value, json};
 
@@ -39,23 +42,106 @@ pub fn season(scales: &Scales<'_>, w: &Weighed<'_>, pair: &Pair) -> Value {
     Value::Object(m)
 }
 
+/// Why there is no specification, in words.
+pub fn why_not(ask: &Ask) -> Option<String> {
+    match ask {
+        Ask::Specification(_) => None,
+        Ask::Undecided(why) => Some(why.clone()),
+        Ask::NoRoom { vi } => Some(format!(
+            "the limits leave no room up to a viscosity index of {vi:.0}"
+        )),
+        Ask::NoGrease => Some(NO_GREASE.to_owned()),
+    }
+}
+
+/// The oils to ask for as a table: one row a point.
+pub fn asks_table(scales: &Scales<'_>, asked: &[(Weighed<'_>, Ask)]) -> Table {
+    let t_unit = unit_of(Kind::Temperature, scales.units);
+    let headings = [
+        "machine",
+        "point",
+        "iso_vg",
+        "vi_at_least",
+        &format!("pour_at_most_{}", t_unit.name),
+        "shear_loss_at_most_percent",
+        "shear_test",
+        "cold_viscosity_at_most_mpa_s",
+        &format!("cold_viscosity_at_{}", t_unit.name),
+        "base",
+        "thickeners",
+        "base_oil_low_mm2_s_at_40_degC",
+        "base_oil_high_mm2_s_at_40_degC",
+        "classes",
+        "additives",
+        "food_class",
+        "environment",
+        "fire_class",
+        "without",
+        "conditions",
+        "verdict",
+        "because",
+    ];
+    Table {
+        headings: headings.map(str::to_owned).to_vec(),
+        rows: asked
+            .iter()
+            .map(|(w, ask)| asks_row(scales, w, ask))
+            .collect(),
+    }
+}
+
+fn asks_row(scales: &Scales<'_>, w: &Weighed<'_>, ask: &Ask) -> Vec<Cell> {
+    let mut row = vec![
+        Cell::from(w.point.machine.as_str()),
+        Cell::maybe(w.point.point.as_deref()),
+    ];
+    let Ask::Specification(spec) = ask else {
+        row.extend((0..19).map(|_| Cell::Empty));
+        row.push(Cell::maybe(why_not(ask).as_deref()));
+        return row;
+    };
+    let t_unit = unit_of(Kind::Temperature, scales.units);
+    let t = |k: f64| t_unit.from_base(k);
+    let c = &spec.contents;
+    let joined = |list: Vec<&str>| Cell::Text(list.join("; "));
+    row.extend([
+        Cell::number(spec.grade.map(f64::from)),
+        Cell::Number(spec.vi),
+        Cell::number(spec.pour.map(t)),
+        Cell::number(spec.loss.map(|l| l * 100.0)),
+        Cell::maybe(spec.loss.map(|_| spec.shear_test(scales.rules)).as_deref()),
+        Cell::number(spec.cold.map(|(_, eta)| eta * 1e3)),
+        Cell::number(spec.cold.map(|(at, _)| t(at))),
+        Cell::from(spec.base.word()),
+        Cell::maybe(
+            spec.grease
+                .as_ref()
+                .map(|g| g.thickeners.join("; "))
+                .as_deref(),
+        ),
+        Cell::number(spec.grease.as_ref().map(|g| g.nu40.0 * 1e6)),
+        Cell::number(spec.grease.as_ref().map(|g| g.nu40.1 * 1e6)),
+        joined(c.classes.iter().map(String::as_str).collect()),
+        joined(c.additives.iter().map(|a| a.word()).collect()),
+        Cell::maybe(c.facts.food_class.map(Word::word)),
+        Cell::maybe(c.facts.environment.map(Word::word)),
+        Cell::maybe(c.facts.fire_class.map(Word::word)),
+        joined(c.without.iter().map(|w| w.what.as_str()).collect()),
+        joined(c.conditions.iter().map(|(rule, _)| rule.as_str()).collect()),
+        Cell::from(spec.judgement.verdict.word()),
+        Cell::Empty,
+    ]);
+    row
+}
+
 /// What to ask for.
 pub fn ask(scales: &Scales<'_>, w: &Weighed<'_>, ask: &Ask) -> Value {
     let mut m = place(w);
     match ask {
         Ask::Specification(spec) => specification(scales, &mut m, spec),
-        Ask::Undecided(why) => {
+        other => {
             m.insert("specification".into(), Value::Null);
-            m.insert("because".into(), json!(why));
-        }
-        Ask::NoRoom { vi } => {
-            m.insert("specification".into(), Value::Null);
-            let says = format!("the limits leave no room up to a viscosity index of {vi:.0}");
-            m.insert("because".into(), json!(says));
-        }
-        Ask::Grease => {
-            m.insert("specification".into(), Value::Null);
-            m.insert("because".into(), json!("greases are not solved for"));
+            m.insert("because".into(), json!(why_not(other)));
         }
     }
     Value::Object(m)
@@ -85,6 +171,15 @@ fn specification(scales: &Scales<'_>, m: &mut Map<String, Value>, spec: &Specifi
                 "value": json::number(eta * 1e3), "unit": "mPa.s", "at": json::temperature(t, scales.units),
             })),
             "base": spec.base.word(),
+            "base_oil": spec.grease.as_ref().map(|g| json!({
+                "low": json::viscosity(g.nu40.0, scales.units), "high": json::viscosity(g.nu40.1, scales.units),
+                "at": "40 degC",
+            })),
+            "thickeners": spec.grease.as_ref().map(|g| &g.thickeners),
+            "fit_for": spec.grease.as_ref().map(|g| {
+                let t = |k: Option<f64>| k.map_or(Value::Null, |k| json::temperature(k, scales.units));
+                json!({ "low": t(g.fit_for.0), "high": t(g.fit_for.1) })
+            }),
             "classes": c.classes,
             "additives": c.additives.iter().map(|a| a.word()).collect::<Vec<_>>(),
             "food_class": c.facts.food_class.map(Word::word),

@@ -111,7 +111,7 @@ fn effect(m: &mut Map<String, Value>, scales: &Scales<'_>, e: &Effect) {
 pub fn kind_word(kind: &GapKind) -> &'static str {
     match kind {
         GapKind::Range(..) => "unknown, with a range",
-        GapKind::Assumed { .. } => "assumed",
+        GapKind::Assumed { .. } | GapKind::Word { .. } => "assumed",
         GapKind::Missing => "missing",
         GapKind::Fact => "not stated",
     }
@@ -128,6 +128,7 @@ fn value(kind: &GapKind, units: Units) -> Value {
                 "unit": unit.name,
             })
         }
+        GapKind::Word { taken, among } => json!({ "value": taken, "among": among }),
         GapKind::Missing | GapKind::Fact => Value::Null,
     }
 }
@@ -176,7 +177,7 @@ fn row(scales: &Scales<'_>, of: &PointGaps<'_>, found: &Found, number: usize) ->
             cells.push(Cell::from(kind_word(&gap.kind)));
             let ends = match &gap.kind {
                 GapKind::Range(lo, hi) | GapKind::Assumed { lo, hi, .. } => Some((*lo, *hi)),
-                GapKind::Missing | GapKind::Fact => None,
+                GapKind::Word { .. } | GapKind::Missing | GapKind::Fact => None,
             };
             let unit = ends.map(|(lo, _)| unit_of(lo.kind, scales.units));
             let of = |a: Option<crate::quantity::Amount>| {

@@ -63,6 +63,33 @@ pub fn text(document: Map<String, Value>) -> String {
     text
 }
 
+/// A list of a document that is made while it is written: its name and its rows.
+pub type Rows<'r> = (&'static str, Box<dyn Iterator<Item = Value> + 'r>);
+
+/// A document in parts, to be written one after the other: what stands at its top, then lists with
+/// one row a line. Only one row is in memory at a time, however long the lists are.
+pub fn in_parts(
+    top: Map<String, Value>,
+    lists: Vec<Rows<'_>>,
+) -> impl Iterator<Item = String> + '_ {
+    let mut head = serde_json::to_string_pretty(&Value::Object(top)).unwrap_or_default();
+    // the lists come before the bracket that ends the document
+    head.truncate(head.trim_end_matches('}').trim_end().len());
+    let lists = lists.into_iter().flat_map(|(name, rows)| {
+        let mut first = true;
+        let rows = rows.map(move |row| {
+            let comma = if std::mem::take(&mut first) { "" } else { "," };
+            format!("{comma}\n    {row}")
+        });
+        std::iter::once(format!(",\n  \"{name}\": ["))
+            .chain(rows)
+            .chain(std::iter::once("\n  ]".to_owned()))
+    });
+    std::iter::once(head)
+        .chain(lists)
+        .chain(std::iter::once("\n}\n".to_owned()))
+}
+
 /// A number in a unit.
 pub fn in_unit(amount: Amount, unit: &Unit) -> Value {
     json!({ "value": number(amount.in_unit(unit)), "unit": unit.name })

@@ -165,6 +165,7 @@ pub fn table_of(points: &[(&Point, PointDemands)], units: Units) -> Table {
         "confidence",
         "governs",
         "standing",
+        "source",
     ];
     let mut table = Table {
         headings: headings
@@ -202,6 +203,7 @@ pub fn table_of(points: &[(&Point, PointDemands)], units: Units) -> Table {
                     "no"
                 }),
                 Cell::from(standing_word(&d.standing)),
+                Cell::from(d.source.as_str()),
             ]);
         }
     }

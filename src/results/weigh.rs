@@ -4,6 +4,7 @@ use super::csv::{Cell, Table};
 use super::json::{self, Head, document};
 use crate::decide::scatter::Scatter;
 use crate::demand::Demand;
+use crate::demand::losses::Uncounted;
 use crate::judge::explain::Explanation;
 use crate::judge::own::Running;
 use crate::judge::weigh::{At, Margin};
@@ -20,33 +21,37 @@ pub type Scatters = BTreeMap<(usize, usize), Scatter>;
 /// Pairs of oils by season, by point in the order weighed; only where no single oil holds.
 pub type Seasons = BTreeMap<usize, crate::decide::season::Pair>;
 
-/// A JSON document of all judgements.
-pub fn document_of(
-    scales: &Scales<'_>,
-    weighed: &[Weighed<'_>],
-    scatters: &Scatters,
-    seasons: &Seasons,
+/// A JSON document of all judgements, in parts: of a large site it is far larger than what it is
+/// made from.
+pub fn document_of<'d>(
+    scales: &'d Scales<'_>,
+    weighed: &'d [Weighed<'_>],
+    scatters: &'d Scatters,
+    seasons: &'d Seasons,
     head: &Head,
-) -> String {
-    let mut top = document("weigh", head);
-    let mut list = Vec::new();
-    for (n, w) in weighed.iter().enumerate() {
-        for candidate in &w.candidates {
+) -> impl Iterator<Item = String> + 'd {
+    let of_point = move |(n, w): (usize, &'d Weighed<'_>)| {
+        let judged = w.candidates.iter().map(move |candidate| {
             let mut value = judgement(scales, w, candidate);
             if let (Value::Object(m), Some(s)) = (&mut value, scatters.get(&(n, candidate.oil))) {
                 m.insert("scatter".into(), super::scatter::value(s, scales.units));
             }
-            list.push(value);
-        }
-        for barred in &w.barred {
-            list.push(barred_row(scales, w, barred));
-        }
-    }
-    top.insert("judgements".into(), Value::Array(list));
+            value
+        });
+        judged.chain(w.barred.iter().map(move |b| barred_row(scales, w, b)))
+    };
     let pairs = seasons.iter();
-    let pairs = pairs.map(|(n, pair)| super::decided::season(scales, &weighed[*n], pair));
-    top.insert("seasons".into(), Value::Array(pairs.collect()));
-    json::text(top)
+    let pairs = pairs.map(move |(n, pair)| super::decided::season(scales, &weighed[*n], pair));
+    json::in_parts(
+        document("weigh", head),
+        vec![
+            (
+                "judgements",
+                Box::new(weighed.iter().enumerate().flat_map(of_point)),
+            ),
+            ("seasons", Box::new(pairs)),
+        ],
+    )
 }
 
 fn place(w: &Weighed<'_>, oil: &str) -> Map<String, Value> {
@@ -126,6 +131,7 @@ fn running(r: &Running, told: &Explanation, units: Units) -> Value {
         "by_losses": t(r.by_losses),
         "judged_at": t(r.used()),
         "calibrated": r.calibrated,
+        "not_counted": r.uncounted.iter().map(not_counted).collect::<Vec<_>>(),
         "drag": {
             "value": r.drag.total.base(), "unit": "W", "by": by_kind,
             "ambient": t(Some(r.drag.ambient.base())), "at": t(Some(r.drag.t.base())),
@@ -135,6 +141,11 @@ fn running(r: &Running, told: &Explanation, units: Units) -> Value {
         },
         "steps": told.running.iter().map(|s| json::step_name(*s)).collect::<Vec<_>>(),
     })
+}
+
+/// A share of the losses that is not in the sum.
+fn not_counted(u: &Uncounted) -> Value {
+    json!({ "part": u.part, "share": u.share, "because": u.because })
 }
 
 /// A barred oil.
@@ -235,6 +246,10 @@ pub fn table_of(scales: &Scales<'_>, weighed: &[Weighed<'_>], scatters: &Scatter
         format!("band_high_{t_unit}"),
         "conditions".to_owned(),
         "because".to_owned(),
+        format!("t_by_losses_{t_unit}"),
+        "drag_w".to_owned(),
+        "drag_over_in_use_w".to_owned(),
+        "drag_energy_kwh_a_year".to_owned(),
     ];
     let mut table = Table {
         headings: headings.to_vec(),
@@ -264,6 +279,7 @@ pub fn table_of(scales: &Scales<'_>, weighed: &[Weighed<'_>], scatters: &Scatter
                     .map(|c| format!("{}: {}", c.rule, c.says))
                     .collect();
             row.push(Cell::Text(by.join("; ")));
+            row.extend((0..4).map(|_| Cell::Empty));
             if !scatters.is_empty() {
                 row.extend((0..3).map(|_| Cell::Empty));
             }
@@ -302,6 +318,12 @@ fn row(scales: &Scales<'_>, w: &Weighed<'_>, c: &Candidate, units: Units) -> Vec
     }
     row.push(Cell::Number(c.conditions.len() as f64));
     row.push(Cell::Text(c.because.join("; ")));
+    let running = c.running.as_ref();
+    let by_losses = running.and_then(|r| r.by_losses);
+    row.push(Cell::number(by_losses.map(|at| t.from_base(at))));
+    row.push(Cell::number(running.map(|r| r.drag.total.base())));
+    row.push(Cell::number(running.and_then(|r| r.over_in_use)));
+    row.push(Cell::number(running.and_then(|r| r.energy_kwh)));
     row
 }
 

@@ -55,7 +55,7 @@ export async function numbers(context, finding) {
     finding.look(seen.read);
     for (const fault of seen.faults) finding.faults.push(`${short(file)}: ${fault}`);
   }
-  finding.ask(finding.looked > 1500, `only ${finding.looked} numbers were read back`);
+  finding.ask(finding.looked > 1200, `only ${finding.looked} numbers were read back`);
   await tab.close();
 }
 
@@ -129,7 +129,7 @@ function readBack() {
       const words = row.querySelector('td[data-l="Ambient"] .sr')?.textContent ?? '';
       const needed = words.match(/needed ([\u2212\d]+) to ([\u2212\d]+)/);
       if (!svg || !needed) continue;
-      const lines = [...svg.querySelectorAll('.need')].map((l) => value(at(l, 'x1')));
+      const lines = [...svg.querySelector('.need').getAttribute('d').matchAll(/M([\d.]+)/g)].map((m) => value(Number(m[1])));
       ask(Math.abs(lines[0] - num(needed[1])) < 1.1 && Math.abs(lines[1] - num(needed[2])) < 1.1, `uprights at ${lines.map((v) => v.toFixed(1))}, said ${needed[0]}`);
     }
   }

@@ -3,6 +3,7 @@
 
 mod bearings;
 mod losses;
+mod shares;
 
 use crate::scenario::{Ran, on};
 use filmwright::cli::host::MemoryHost;

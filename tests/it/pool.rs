@@ -12,7 +12,7 @@ use filmwright::decide::pool::case::in_order;
 use filmwright::decide::pool::check::against_places;
 use filmwright::decide::pool::search::{Budget, fewest, greedy};
 use filmwright::decide::pool::solve::solve;
-use filmwright::decide::pool::ties::{Ties, ties};
+use filmwright::decide::pool::ties::Ties;
 use filmwright::decide::pool::{Fence, Impossible, Offer, Outcome, Place, Terms};
 use filmwright::judge::Verdict;
 use filmwright::judge::order::{Candidate, compare};
@@ -125,6 +125,17 @@ fn home(places: &[Place], terms: &Terms, oil: usize, fences: &[Fence]) -> Fence 
 /// Its length, what decides between lists of that length, and its oils by fence.
 type Shortest = (usize, Ties, Vec<(Fence, usize)>);
 
+/// What ties are decided by: places whose oil changes with their conditions, then cost, unknown costs last.
+fn come_to(offers: &[Vec<Offer>], on: impl Fn(usize) -> bool) -> Ties {
+    let taken = || offers.iter().filter_map(|o| o.iter().find(|o| on(o.oil)));
+    Ties {
+        changes: taken().filter(|o| o.change).count(),
+        conditions: taken().map(|o| o.conditions).sum(),
+        unpriced: taken().filter(|o| o.cost.is_none()).count(),
+        cost: taken().filter_map(|o| o.cost).sum(),
+    }
+}
+
 /// The best list by looking at every subset, fence by fence; `None` where there is none.
 fn by_hand(places: &[Place], oils: usize, terms: &Terms) -> Option<Shortest> {
     let mut fences: Vec<Fence> = places.iter().map(|p| p.fence).collect();
@@ -155,21 +166,15 @@ fn by_hand(places: &[Place], oils: usize, terms: &Terms) -> Option<Shortest> {
             if !kept || dropped || !serves {
                 continue;
             }
-            let elsewhere: BTreeSet<usize> = stocks.iter().map(|(_, o)| *o).collect();
-            let shared = elsewhere.iter().filter(|o| on(**o)).count();
             let mut names: Vec<&str> = (0..oils).filter(|o| on(*o)).map(|o| NAMES[o]).collect();
             names.sort_unstable();
-            let found = (names.len(), ties(&offers, on, shared), names, set);
+            let found = (names.len(), come_to(&offers, on), names, set);
             if best.as_ref().is_none_or(|b| found < *b) {
                 best = Some(found);
             }
         }
         let (_, tie, _, set) = best?;
-        total.shared += tie.shared;
-        total.changes += tie.changes;
-        total.conditions += tie.conditions;
-        total.unpriced += tie.unpriced;
-        total.cost += tie.cost;
+        total = total + tie;
         stocks.extend((0..oils).filter(|o| set >> o & 1 == 1).map(|o| (fence, o)));
     }
     Some((stocks.len(), total, stocks))
@@ -343,6 +348,76 @@ fn without_nodes_a_gap_stands_in_place_of_an_answer() {
     assert!(found.bound >= bound && found.bound <= known);
 }
 
+/// Between lists of one length: fewest changes from today, then cost, then name, and nothing else.
+#[test]
+fn ties_go_by_changes_then_cost_then_name() {
+    let offer = |oil: usize, change: bool, cost: Option<u64>| Offer {
+        oil,
+        tight: false,
+        change,
+        conditions: 0,
+        cost,
+    };
+    let place = |fence: Fence, offers: &[Offer]| Place {
+        fence,
+        offers: offers.to_vec(),
+    };
+    // H-1 is 0, B-2 is 1, G-3 is 2
+    for (places, want) in [
+        // a dearer list that changes nothing today
+        (
+            vec![place(
+                Fence::NONE,
+                &[offer(0, true, Some(1)), offer(1, false, Some(9))],
+            )],
+            vec![1],
+        ),
+        // as many changes: the cheaper, though its name comes later
+        (
+            vec![place(
+                Fence::NONE,
+                &[offer(1, true, Some(9)), offer(0, true, Some(1))],
+            )],
+            vec![0],
+        ),
+        // an unknown cost is not a low one
+        (
+            vec![place(
+                Fence::NONE,
+                &[offer(1, true, None), offer(0, true, Some(1))],
+            )],
+            vec![0],
+        ),
+        // the same cost: the name
+        (
+            vec![place(
+                Fence::NONE,
+                &[offer(0, true, Some(4)), offer(2, true, Some(4))],
+            )],
+            vec![2],
+        ),
+        // the cheaper oil, though it stands on the other side of a fence as well: there it is
+        // bought a second time
+        (
+            vec![
+                place(Fence::FOOD, &[offer(0, true, Some(2))]),
+                place(
+                    Fence::NONE,
+                    &[offer(1, true, Some(9)), offer(0, true, Some(1))],
+                ),
+            ],
+            vec![0, 0],
+        ),
+    ] {
+        let Outcome::Solved(found) = solve(&places, &NAMES[..3], &Terms::default()) else {
+            panic!("solved");
+        };
+        let oils: Vec<usize> = found.stocks.iter().map(|s| s.oil).collect();
+        assert_eq!(oils, want, "{places:?}");
+        assert_eq!(found.bound, want.len());
+    }
+}
+
 #[test]
 fn the_demonstration_is_consolidated_and_says_what_it_costs() {
     let ran = filmwright("pool --demo -q");
@@ -354,13 +429,15 @@ fn the_demonstration_is_consolidated_and_says_what_it_costs() {
     assert_eq!(json["bound"], json["oils"].as_array().map_or(0, Vec::len));
     let today = json["today"]["oils"].as_array().map_or(0, Vec::len);
     assert!(json["bound"].as_u64().unwrap_or(99) < today as u64);
-    // choices of the demonstration that do not hang on a tie of cost
+    // the choices that come with the invented works
     let picks = json["assignments"].as_array().expect("a list");
     for (machine, oil) in [
+        ("M01", "O-16"),
         ("M03", "O-12"),
         ("M04", "O-12"),
         ("M05", "O-14"),
         ("M07", "O-08"),
+        ("M08", "O-16"),
         ("M10", "O-08"),
     ] {
         let found = picks
@@ -369,11 +446,22 @@ fn the_demonstration_is_consolidated_and_says_what_it_costs() {
             .expect("assigned");
         assert_eq!(found["oil"], oil, "{machine}");
     }
-    // nothing is bought as one for two sides of a fence
-    for a in picks {
-        for b in picks {
-            assert!(a["oil"] != b["oil"] || a["fence"] == b["fence"], "{a} {b}");
-        }
+    // nothing is bought as one for two sides of a fence: such an oil stands on the list twice
+    let mut stocks: Vec<String> = picks
+        .iter()
+        .map(|p| format!("{} {}", p["fence"], p["oil"]))
+        .collect();
+    stocks.sort();
+    stocks.dedup();
+    assert_eq!(json["bound"], stocks.len());
+    let told = ran.out.replace('\n', " ");
+    for words in [
+        "9 oils cover all 16 lubrication points",
+        "O-16 stands on the list twice",
+        "today 11 061 cu a year, this list 32 940 cu; 3741 L a year",
+        "5699 L to be filled",
+    ] {
+        assert!(told.contains(words), "{words}: {}", ran.out);
     }
 }
 
@@ -408,10 +496,48 @@ fn terms_that_cannot_be_kept_are_named() {
             "--site-price",
         ),
         ("pool M02 --demo -q", Exit::NoMatch, "[nothing-decided]"),
+        (
+            "pool --demo -q --drop O-*",
+            Exit::NoMatch,
+            "M06, M07 and 8 more have no oil left with --drop O-01",
+        ),
+        // the terms can be kept, and the list is longer than it need be
+        (
+            "pool --demo --keep O-03",
+            Exit::Done,
+            "O-03 is kept and serves nothing: it is barred on 9 of 17",
+        ),
     ] {
         let ran = filmwright(arguments);
         assert_eq!(ran.exit, exit, "{arguments}: {}", ran.err);
         assert!(ran.err.contains(words), "{arguments}: {}", ran.err);
+    }
+    let site = "file: site 1\nmachines:\n  M1:\n    ambient: -5 .. 35 degC\n    sump rise: 30 K\n    lubrication: splash\n    parts:\n      - rolling bearing: 22220\n        speed: 236 r/min\n";
+    for (command, exit, words) in [
+        (
+            "pool",
+            Exit::NoMatch,
+            "no list can be made: the oil list holds no oil",
+        ),
+        (
+            "weigh",
+            Exit::Done,
+            "nothing weighed: the oil list holds no oil",
+        ),
+        ("gaps", Exit::Done, "the oil list holds no oil"),
+        ("mend M1 X", Exit::NoMatch, "no oil matches 'X'"),
+        (
+            "whatif M1 --set \"sump rise=40 K\"",
+            Exit::Done,
+            "nothing weighed: the oil list",
+        ),
+    ] {
+        let host = MemoryHost::new().with("site.yaml", site);
+        let ran = on(host, command);
+        assert_eq!(ran.exit, exit, "{command}: {}", ran.err);
+        let told = format!("{}{}", ran.out, ran.err);
+        assert!(told.contains(words), "{command}: {told}");
+        assert!(told.contains("[nothing-to-weigh]"), "{command}: {told}");
     }
 }
 

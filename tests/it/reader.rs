@@ -6,7 +6,7 @@ use filmwright::input::keys::{
     Form, Key, Record, example, is_private, machine, oil, part, samples, site,
 };
 use filmwright::input::load::{Tree, With, load, take};
-use filmwright::input::overlay;
+use filmwright::input::overlay::{self, About};
 use filmwright::model::machine::{Fill, OilNow, Point, Sump};
 use filmwright::model::oil::{Shear, Viscosity};
 use filmwright::model::part::{BearingClass, PartKind};
@@ -32,7 +32,7 @@ impl Read {
     fn of(files: &[(&str, &str)], over: &[(&str, &str)]) -> Self {
         let mut set = SourceSet::new();
         let mut problems = Problems::new();
-        let trees: Vec<Tree> = files
+        let mut trees: Vec<Tree> = files
             .iter()
             .map(|(path, text)| {
                 let is = |k: &&FileKind| path.starts_with(k.word());
@@ -45,7 +45,15 @@ impl Read {
             .map(|(target, text)| {
                 let texts = [(*text).to_owned()];
                 let read = overlay::settings(&mut set, &texts, &mut problems);
-                ((*target).to_owned(), read.expect("KEY=VALUE"))
+                let mut read = read.expect("KEY=VALUE");
+                let about = About {
+                    targets: vec![(*target).to_owned()],
+                    parts: vec!["rolling bearing 22220".to_owned()],
+                    oils: Vec::new(),
+                };
+                let put = read.put(&set, &mut trees, &about, &mut problems);
+                assert_eq!(put.is_err(), problems.failed().is_some());
+                ((*target).to_owned(), read)
             })
             .collect();
         let overlays: Vec<_> = settings
@@ -342,9 +350,12 @@ fn values_of_the_command_line_lie_over_those_of_the_files() {
         ("sump rize=48 K", Code::KeyUnknown),
         ("sump rise=48 degC", Code::RiseNotTemperature),
         ("colour=green", Code::KeyUnknown),
+        ("pour point=-40 degC", Code::SetWhich),
+        ("nobody: pour point=-40 degC", Code::SetWhose),
+        ("house: reserv=1 step", Code::KeyUnknown),
     ] {
         let read = works(&[("CV-104", text)]);
-        assert!(read.site.is_none());
+        assert!(read.problems.failed().is_some());
         assert_eq!(read.codes(), [code], "{}", read.told());
     }
     let mut problems = Problems::new();

@@ -220,9 +220,9 @@ impl Ruler {
             per_px,
         };
         for (value, px) in ticks {
-            // a pixel figure is written to a hundredth
+            // a pixel figure is written to a tenth: the ends and the tick itself
             assert!(
-                (ruler.px(*value) - px).abs() < 0.03,
+                (ruler.px(*value) - px).abs() < 0.11,
                 "{value} at {px}, the ruler says {}",
                 ruler.px(*value)
             );

@@ -3,6 +3,7 @@
 mod labels;
 mod oils;
 mod pages;
+mod parts;
 mod sites;
 
 use crate::report_pages::markup::{Piece, tags};
@@ -208,7 +209,7 @@ fn models_are_as_agreed() {
         ..Shared::default()
     };
     let mut session = Session::new(&mut host, shared);
-    let loaded = session.load(&[]).expect("the demonstration is sound");
+    let loaded = session.load(None).expect("the demonstration is sound");
     let settings = session.settings(true).expect("no reserve is asked");
     let scales = Scales::new(&loaded.site, &loaded.rules, settings).expect("its oils are sound");
     let points: Vec<_> = loaded.site.points.iter().collect();

@@ -157,6 +157,25 @@ fn the_oil_asked_for_holds_and_one_short_of_it_does_not() {
     };
     assert_ne!(by_line(vi - 2.0), "holds", "a lower index: {spec}");
     assert_ne!(word(vi, pour + 2.0), "holds", "a warmer pour point: {spec}");
+    // as a table
+    let table = on(host(&text, OILS), "need G-1 --ask -f csv -q").out;
+    let mut read = csv::Reader::from_reader(table.as_bytes());
+    let heads = read.headers().expect("headings").clone();
+    let cells = read.records().next().expect("a row").expect("of cells");
+    let cell = |head: &str| {
+        let place = heads.iter().position(|h| h == head);
+        place.and_then(|i| cells.get(i))
+    };
+    assert_eq!(
+        cell("iso_vg").map(str::to_owned),
+        Some(spec["iso_vg"].to_string())
+    );
+    assert_eq!(cell("vi_at_least").and_then(|c| c.parse().ok()), Some(vi));
+    assert_eq!(
+        cell("pour_at_most_degC").and_then(|c| c.parse().ok()),
+        Some(pour)
+    );
+    assert_eq!(cell("base"), spec["base"].as_str());
     // as text for a supplier, and on the sheet
     let told = on(host(&text, OILS), "need G-1 --ask -q").out;
     let figure = format!(
@@ -173,6 +192,8 @@ fn what_leaves_no_room_says_so() {
     let text = site("    start limit: 500 mm2/s, maker\n");
     let told = on(host(&text, OILS), "need G-1 --ask -q").out;
     assert!(told.contains("leave no room"), "{told}");
+    let csv = on(host(&text, OILS), "need G-1 --ask -f csv -q").out;
+    assert!(csv.contains("the limits leave no room"), "{csv}");
 }
 
 #[test]
@@ -187,4 +208,53 @@ fn exclusions_are_found_on_the_rules() {
         without.contains("moly") && without.contains("graphite"),
         "{without}"
     );
+}
+
+/// A greased motor whose base oil has a window of its own (common practice): the range asked for
+/// is written as an oil list and weighed; at its ends the grease holds, beyond them it does not.
+#[test]
+fn the_grease_asked_for_holds_over_its_range_and_not_beyond() {
+    let site = "file: site 1\nmachines:\n  E-1:\n    ambient: 5 .. 38 degC\n    lubrication: grease\n    sump rise: 34 K\n    parts:\n      - rolling bearing: { bore: 95 mm, outside: 200 mm, width: 45 mm, type: deep groove ball }\n        speed: 1487 r/min\n      - component: motor_grease_brg\n";
+    let thin = "file: oils 1\nG-9:\n  kind: grease\n  thickener: li\n  NLGI: \"2\"\n  base: mineral I\n  base oil: [32 mm2/s at 40 degC, 5.3 mm2/s at 100 degC]\n";
+    let asked = || host(site, thin);
+    let spec = on(asked(), "need --ask -f json -q").json()["ask"][0]["specification"].clone();
+    assert_eq!(spec["verdict"], "holds", "{spec}");
+    assert!(spec["iso_vg"].is_null());
+    let (low, high) = (
+        number(&spec["base_oil"]["low"]),
+        number(&spec["base_oil"]["high"]),
+    );
+    // 90 to 120 mm2/s less a quarter step at each end: a certificate halves the reserve
+    let quarter = 10.0_f64.powf(0.25 / 6.0);
+    assert!((low / (90.0 * quarter) - 1.0).abs() < 1e-4, "{low}");
+    assert!((high / (120.0 / quarter) - 1.0).abs() < 1e-4, "{high}");
+    let thickener = spec["thickeners"][0].as_str().expect("a thickener");
+    let vi = spec["vi_at_least"].as_f64().expect("an index");
+    let word = |nu40: f64| {
+        let of = format!("work nu100-from-index \"nu40={nu40} mm2/s\" vi={vi} -f json -q");
+        let nu100 = on(MemoryHost::new(), &of).json()["result"]["nu100"]["value"].clone();
+        let oils = format!(
+            "file: oils 1\nG-9:\n  kind: grease\n  thickener: {thickener}\n  base: {}\n  additives: []\n  points: batch\n  base oil: [{nu40} mm2/s at 40 degC, {nu100} mm2/s at 100 degC]\n",
+            spec["base"].as_str().unwrap_or("")
+        );
+        let json = on(host(site, &oils), "weigh -f json -q").json();
+        json["judgements"][0]["verdict"].as_str().map(str::to_owned)
+    };
+    let holds = Some("holds".to_owned());
+    assert_eq!(word(low * 1.001), holds, "{spec}");
+    assert_eq!(word(high / 1.001), holds, "{spec}");
+    assert_ne!(word(low / 1.01), holds);
+    assert_ne!(word(high * 1.01), holds);
+    let told = on(asked(), "need --ask -q").out;
+    assert!(
+        told.contains("grease with a base oil of 99.1 mm2/s to 109 mm2/s at 40 degC"),
+        "{told}"
+    );
+    let csv = on(asked(), "need --ask -f csv -q").out;
+    assert!(
+        csv.contains("thickeners,base_oil_low_mm2_s_at_40_degC"),
+        "{csv}"
+    );
+    let page = on(asked(), "report --one-file -o - -q").out;
+    assert!(page.contains("The oil to ask a supplier for") && page.contains("with a base oil of"));
 }

@@ -22,7 +22,7 @@ pub fn audit(session: &mut Session<'_>, args: &Audit) -> Exit {
 }
 
 fn run(session: &mut Session<'_>, args: &Audit) -> Result<Exit, Exit> {
-    let mut loaded = session.load(&[])?;
+    let mut loaded = session.load(None)?;
     let settings = session.settings(true)?;
     let only = only(session, &loaded, &args.tags)?;
     let asked = Asked {

@@ -10,7 +10,7 @@ use std::fmt::Write as _;
 
 /// Runs `check`.
 pub fn check(session: &mut Session<'_>) -> Exit {
-    let mut loaded = match session.load(&[]) {
+    let mut loaded = match session.load(None) {
         Ok(loaded) => loaded,
         Err(exit) => return exit,
     };

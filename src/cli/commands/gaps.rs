@@ -24,11 +24,14 @@ fn run(session: &mut Session<'_>, args: &Gaps) -> Result<Exit, Exit> {
         session.fail("--letter 0 would ask nothing\n  write  --letter 5");
         return Err(Exit::Usage);
     }
-    let loaded = session.load(&[])?;
+    let loaded = session.load(None)?;
     let settings = session.settings(true)?;
     let scales = Scales::new(&loaded.site, &loaded.rules, settings)
         .map_err(|(oil, misfit)| session.misfit(&oil, &misfit))?;
     let points = session.points(&loaded.site, &args.tags)?;
+    if loaded.site.oils.is_empty() {
+        session.note("warning: the oil list holds no oil: what a verdict would wait for, and what the rules ask of an oil, is not among the gaps  [nothing-to-weigh]\n  write  oils.yaml with the oils that may be used");
+    }
     let all = of_points(&scales, points);
     let order = ranked(&all);
     let head = session.head(&loaded);

@@ -19,7 +19,7 @@ pub fn labels(session: &mut Session<'_>, args: &Labels) -> Exit {
 }
 
 fn run(session: &mut Session<'_>, args: &Labels) -> Result<Exit, Exit> {
-    let loaded = session.load(&[])?;
+    let loaded = session.load(None)?;
     let settings = session.settings(true)?;
     let points = session.points(&loaded.site, &args.tags)?;
     let scales = Scales::new(&loaded.site, &loaded.rules, settings)

@@ -17,7 +17,7 @@ pub fn mend(session: &mut Session<'_>, args: &Mend) -> Exit {
 }
 
 fn run(session: &mut Session<'_>, args: &Mend) -> Result<Exit, Exit> {
-    let mut loaded = session.load(&[])?;
+    let mut loaded = session.load(None)?;
     if let Some(band) = &args.band {
         loaded.set_ambient(session, band)?;
     }

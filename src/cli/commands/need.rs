@@ -9,7 +9,7 @@ use crate::decide::ask::{Ask, ask};
 use crate::demand::{PointDemands, point_demands};
 use crate::model::Point;
 use crate::results::csv::{Cell, Table};
-use crate::results::decided::ask as ask_value;
+use crate::results::decided::{ask as ask_value, asks_table};
 use crate::results::need::{document_of, table_of};
 use crate::weighing::{Scales, Settings, Weighed};
 
@@ -25,7 +25,7 @@ pub fn need(session: &mut Session<'_>, args: &Need) -> Exit {
 }
 
 fn from_files(session: &mut Session<'_>, args: &Need) -> Result<Exit, Exit> {
-    let loaded = session.load(&[])?;
+    let loaded = session.load(None)?;
     if args.list && session.wants(Format::Csv) {
         let rows = loaded.site.points.iter().map(|p| {
             vec![
@@ -82,6 +82,7 @@ fn from_files(session: &mut Session<'_>, args: &Need) -> Result<Exit, Exit> {
             let asks = args.ask.then_some(asks);
             session.result(&document_of(&all, asks, &head, session.units()))
         }
+        Format::Csv if args.ask => session.table(&asks_table(&scales, &asked)),
         Format::Csv => session.table(&table_of(&all, session.units())),
         Format::Text => {
             let width = session.width();

@@ -42,7 +42,7 @@ fn run(session: &mut Session<'_>, args: &Oil) -> Result<Exit, Exit> {
         );
         return Err(Exit::Usage);
     }
-    let loaded = session.load(&[])?;
+    let loaded = session.load(None)?;
     let settings: Settings = session.settings(true)?;
     let wanted = session.oils(&loaded.site, std::slice::from_ref(&args.oil))?;
     let scales = Scales::new(&loaded.site, &loaded.rules, settings)

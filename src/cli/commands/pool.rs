@@ -18,7 +18,7 @@ pub fn pool(session: &mut Session<'_>, args: &Args) -> Exit {
 }
 
 fn run(session: &mut Session<'_>, args: &Args) -> Result<Exit, Exit> {
-    let loaded = session.load(&[])?;
+    let loaded = session.load(None)?;
     let settings = session.settings(true)?;
     let points = session.points(&loaded.site, &args.tags)?;
     let terms = terms(session, args, &loaded)?;
@@ -36,12 +36,19 @@ fn run(session: &mut Session<'_>, args: &Args) -> Result<Exit, Exit> {
         terms: &terms,
         site_price: args.site_price,
     };
+    if loaded.site.oils.is_empty() {
+        session.fail(
+            "no list can be made: the oil list holds no oil  [nothing-to-weigh]\n  write  oils.yaml with the oils that may be used",
+        );
+        return Err(Exit::NoMatch);
+    }
     if found.places.is_empty() {
         session.fail(
             "no machine can be decided: no oil holds or is tight on any of them  [nothing-decided]\n  write  see why: filmwright weigh",
         );
         return Err(Exit::NoMatch);
     }
+    idle(session, &scales, &found, &terms);
     let printed = print(session, &scales, &loaded, &found, &asked);
     Ok(match &found.outcome {
         Outcome::Impossible(why) => {
@@ -83,6 +90,34 @@ fn terms(session: &mut Session<'_>, args: &Args, loaded: &Loaded) -> Result<Term
         never_tight: args.never_tight,
         nodes: args.nodes,
     })
+}
+
+/// Warns of oils that are kept and that no machine can take.
+fn idle(session: &mut Session<'_>, scales: &Scales<'_>, found: &Pool<'_, '_>, terms: &Terms) {
+    for oil in &terms.keep {
+        let mut all = found.places.iter().flat_map(|p| terms.offers(p));
+        if all.any(|o| o.oil == *oil) {
+            continue;
+        }
+        let of = |w: &&Weighed<'_>| w.barred.iter().any(|b| b.oil == *oil);
+        let barred = found.weighed.iter().filter(of).count();
+        let id = &scales.site.oils[*oil].id;
+        session.note(&format!(
+            "warning: {id} is kept and serves nothing: it is barred on {barred} of {} points and neither holds nor is tight on the others  [keep-idle]\n  write  pool without --keep {id}, or see why: filmwright weigh --oil {id}",
+            found.weighed.len()
+        ));
+    }
+}
+
+/// Machines or options named in a message; more are counted.
+const NAMED: usize = 6;
+
+fn some(all: &[String], between: &str) -> String {
+    let shown = all[..all.len().min(NAMED)].join(between);
+    match all.len() {
+        n if n > NAMED => format!("{shown} and {} more", n - NAMED),
+        _ => shown,
+    }
 }
 
 fn print(
@@ -151,7 +186,7 @@ fn impossible(
             let terms = in_words(scales, asked.terms);
             session.fail(&format!(
                 "no list serves every machine: {} {noun} no oil left with {terms}  [list-impossible]\n  write  leave that out, or find what would make an oil hold: filmwright mend {} OIL",
-                named.join(", "),
+                some(&named, ", "),
                 named.first().map_or("TAG", String::as_str)
             ));
         }
@@ -169,5 +204,5 @@ fn in_words(scales: &Scales<'_>, terms: &Terms) -> String {
     for oil in &terms.drop {
         words.push(format!("--drop {}", scales.site.oils[*oil].id));
     }
-    words.join(" ")
+    some(&words, " ")
 }

@@ -38,7 +38,7 @@ pub fn report(session: &mut Session<'_>, args: &Args) -> Exit {
 
 fn run(session: &mut Session<'_>, args: &Args) -> Result<Exit, Exit> {
     let target = target(session, args)?;
-    let mut loaded = session.load(&[])?;
+    let mut loaded = session.load(None)?;
     let bottles = session.bottles(&mut loaded, None)?;
     let settings = session.settings(true)?;
     let points = session.points(&loaded.site, &args.only)?;

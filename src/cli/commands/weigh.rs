@@ -16,7 +16,7 @@ use crate::weighing::{Scales, Settings, Weighed};
 
 /// Runs `weigh`.
 pub fn weigh(session: &mut Session<'_>, args: &Weigh) -> Exit {
-    let mut loaded = match session.load(&[]) {
+    let mut loaded = match session.load(None) {
         Ok(loaded) => loaded,
         Err(exit) => return exit,
     };
@@ -186,7 +186,8 @@ fn print(
             head.files = session.carried(loaded);
             head.reserve = settings.reserve;
             head.as_new = !settings.worn;
-            session.result(&document_of(scales, all, scatters, seasons, &head))
+            let mut parts = document_of(scales, all, scatters, seasons, &head);
+            session.result_in_parts(&mut parts)
         }
         Format::Csv => session.table(&table_of(scales, all, scatters)),
         Format::Text => {

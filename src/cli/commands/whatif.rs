@@ -6,6 +6,7 @@ use crate::cli::session::Session;
 use crate::cli::text_of::whatif::text;
 use crate::cli::{Format, Whatif};
 use crate::decide::whatif::{Change, change};
+use crate::input::overlay::About;
 use crate::model::Point;
 use crate::results::whatif::{document_of, table_of};
 use crate::source::place::Whose;
@@ -21,18 +22,30 @@ pub fn whatif(session: &mut Session<'_>, args: &Whatif) -> Exit {
 fn run(session: &mut Session<'_>, args: &Whatif) -> Result<Exit, Exit> {
     // the files' own warnings are told once, with the changed values laid over them
     let quiet = std::mem::replace(&mut session.shared.quiet, true);
-    let before = session.load(&[]);
+    let before = session.load(None);
     session.shared.quiet = quiet;
     let before = before?;
     let points = session.points(&before.site, std::slice::from_ref(&args.tag))?;
     let targets: Vec<String> = points.iter().map(|p| p.address()).collect();
     let texts: Vec<String> = args.set.iter().map(|t| with_origin(t, &points)).collect();
-    let after = session.load(&[(targets.clone(), texts)])?;
     let wanted = session.oils(&before.site, &args.oil)?;
     let wanted: Option<Vec<String>> = wanted.map(|places| {
         let id = |i: &usize| before.site.oils[*i].id.clone();
         places.iter().map(id).collect()
     });
+    // a part with a name of its own is called by its kind as well
+    let named = points.iter().flat_map(|p| &p.parts).map(|p| &p.label);
+    let by_kind = points.iter().flat_map(|p| &p.inputs);
+    let by_kind = by_kind.filter_map(|line| line.about.as_ref());
+    let about = About {
+        targets: targets.clone(),
+        parts: named.chain(by_kind).cloned().collect(),
+        oils: wanted.clone().unwrap_or_else(|| {
+            let all = before.site.oils.iter();
+            all.map(|o| o.id.clone()).collect()
+        }),
+    };
+    let after = session.load(Some((&about, &texts)))?;
     let mut changes = compared(session, &before, &after, &targets)?;
     if let Some(wanted) = wanted {
         for change in &mut changes {

@@ -21,7 +21,7 @@ pub fn why(session: &mut Session<'_>, args: &Why) -> Exit {
 }
 
 fn run(session: &mut Session<'_>, args: &Why) -> Result<Exit, Exit> {
-    let loaded = session.load(&[])?;
+    let loaded = session.load(None)?;
     let settings = session.settings(true)?;
     let scales = Scales::new(&loaded.site, &loaded.rules, settings)
         .map_err(|(oil, misfit)| session.misfit(&oil, &misfit))?;

@@ -1,7 +1,7 @@
 //! What to do where no oil holds, as text: the pair of oils by season, the oil to ask for.
 
 use crate::cli::text::hanging;
-use crate::decide::ask::Ask;
+use crate::decide::ask::{Ask, NO_GREASE};
 use crate::decide::season::{Pair, Season, in_words};
 use crate::quantity::show::{Toward, margin, quantity};
 use crate::quantity::{Measure, ThermodynamicTemperature};
@@ -67,7 +67,7 @@ pub fn ask(scales: &Scales<'_>, weighed: &Weighed<'_>, ask: &Ask, width: usize) 
             "no oil of one grade holds here, up to a viscosity index of {vi:.0}: the limits leave no room. Two oils by season, a heater or another limit may help: filmwright mend {} OIL",
             weighed.point.address()
         ),
-        Ask::Grease => "greases are not solved for".to_owned(),
+        Ask::NoGrease => NO_GREASE.to_owned(),
     };
     format!("\n{}", hanging(lead, &body, width))
 }

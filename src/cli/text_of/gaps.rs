@@ -147,6 +147,7 @@ fn value(scales: &Scales<'_>, found: &Found) -> String {
         GapKind::Assumed { taken, lo, hi } => {
             format!("{} ({} .. {})", show(*taken), show(*lo), show(*hi))
         }
+        GapKind::Word { taken, among } => format!("{taken} (or {})", among.join(", ")),
         GapKind::Missing | GapKind::Fact => "missing".to_owned(),
     }
 }

@@ -113,8 +113,12 @@ fn gaps(out: &mut String, units: Units, demands: &PointDemands, width: usize) {
                 show(*lo),
                 show(*hi)
             ),
-            GapKind::Missing => format!("gap   {about}{}: not stated ({how})", gap.key),
-            GapKind::Fact => format!("gap   {about}{}: not stated ({how})", gap.key),
+            GapKind::Word { taken, .. } => {
+                format!("gap   {about}{}: {taken} assumed ({how})", gap.key)
+            }
+            GapKind::Missing | GapKind::Fact => {
+                format!("gap   {about}{}: not stated ({how})", gap.key)
+            }
         };
         out.push_str(&folded(&text, "  ", width));
     }

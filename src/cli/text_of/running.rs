@@ -31,17 +31,7 @@ pub fn running(out: &mut String, scales: &Scales<'_>, w: &Weighed<'_>, width: us
     };
     let units = scales.units;
     let ambient = temperature(Some(first.drag.ambient.base()), units);
-    let says = if first.calibrated {
-        format!(
-            "running temperature at the hottest ambient, by losses calibrated on the reading with \
-             the oil in use; floors take the warmer. Drag at {ambient} ambient."
-        )
-    } else {
-        format!(
-            "losses, for information: no reading of the sump with the oil in use to calibrate \
-             them on. Drag at {ambient} ambient."
-        )
-    };
+    let says = first.stands_on(&ambient);
     out.push('\n');
     out.push_str(&folded(&says, "  ", width));
     let rows: Vec<Vec<String>> = found

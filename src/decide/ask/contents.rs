@@ -43,14 +43,20 @@ pub struct Without {
     pub title: String,
 }
 
-/// What an oil of a base has to be on a point.
-pub(super) fn of(scales: &Scales<'_>, weighed: &Weighed<'_>, base: BaseStock) -> Contents {
+/// What an oil of a base has to be on a point, or a grease with a thickener.
+pub(super) fn of(
+    scales: &Scales<'_>,
+    weighed: &Weighed<'_>,
+    base: BaseStock,
+    thickener: Option<&str>,
+) -> Contents {
     let point = weighed.point;
     let point_facts = facts::of_point(point, &weighed.demands, now(scales, point));
     let card = scales.suitability.point(&point_facts);
     let mut plain = OilFacts {
         id: "the oil asked for".to_owned(),
-        kind: Some(OilKind::Other),
+        kind: Some(thickener.map_or(OilKind::Other, |_| OilKind::Grease)),
+        thickener: thickener.map(str::to_owned),
         base: Some(base),
         polymer: Some(false),
         additives: Some(BTreeSet::new()),

@@ -4,11 +4,14 @@ use super::contents::Contents;
 use crate::demand::End;
 use crate::judge::{Judgement, PreparedOil, Verdict, weigh};
 use crate::model::Oil;
-use crate::model::oil::{DynamicPoint, GradeOnly, OilKind, Polymer, Shear, Viscosity};
+use crate::model::oil::{
+    DynamicPoint, GradeOnly, Grease, OilKind, PointsFrom, Polymer, Shear, Viscosity, ViscosityPoint,
+};
 use crate::model::stated::Bound;
 use crate::quantity::convert::{celsius, number};
-use crate::quantity::{DynamicViscosity, Measure, ThermodynamicTemperature};
+use crate::quantity::{DynamicViscosity, KinematicViscosity, Measure, ThermodynamicTemperature};
 use crate::relation::oil::base_stock::BaseStock;
+use crate::relation::oil::viscosity_index;
 use crate::source::Origin;
 use crate::source::place::Given;
 use crate::weighing::{Scales, Weighed};
@@ -100,6 +103,27 @@ impl<'t, 'a> Trial<'t, 'a> {
         Some(weigh(&self.weighed.ready, &ready))
     }
 
+    /// Weighs a grease on a base oil of so much at 40 degC, m²/s, by the certificate of the batch;
+    /// none where that makes no curve.
+    pub(super) fn weigh_base_oil(&self, nu40: f64, vi: f64) -> Option<Judgement> {
+        let nu40 = KinematicViscosity::from_base(nu40);
+        let nu100 = viscosity_index::nu100(nu40, number(vi)).ok()?;
+        let point = |nu: KinematicViscosity, at: f64| ViscosityPoint {
+            nu: asked(nu),
+            at: celsius(at),
+            tolerance: None,
+        };
+        let oil = Oil {
+            viscosity: Viscosity::Points {
+                points: vec![point(nu40, 40.0), point(nu100, 100.0)],
+                from: PointsFrom::Batch,
+            },
+            ..self.oil(100, vi, None, None, None)
+        };
+        let ready = PreparedOil::new(&oil, self.scales.rules, true).ok()?;
+        Some(weigh(&self.weighed.ready, &ready))
+    }
+
     fn oil(
         &self,
         grade: u32,
@@ -120,7 +144,7 @@ impl<'t, 'a> Trial<'t, 'a> {
             name: None,
             source: None,
             note: None,
-            kind: OilKind::Other,
+            kind: self.contents.facts.kind.unwrap_or(OilKind::Other),
             base: Some(asked(self.base)),
             polymer: if loss.is_some() {
                 Polymer::Thickened
@@ -153,7 +177,12 @@ impl<'t, 'a> Trial<'t, 'a> {
             facts: self.contents.facts.clone(),
             price: None,
             in_stock: None,
-            grease: None,
+            grease: self.contents.facts.thickener.as_ref().map(|id| Grease {
+                thickener: Some(asked(id.clone())),
+                nlgi: None,
+                dropping_point: None,
+                code: None,
+            }),
             inputs: Vec::new(),
             origin: Origin::assumed("solved for"),
         }

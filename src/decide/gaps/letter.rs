@@ -91,6 +91,10 @@ fn input(gap: &Gap, units: Units) -> Vec<String> {
             show(*lo),
             show(*hi)
         )),
+        GapKind::Word { taken, among } => all.push(format!(
+            "We have taken {taken}; {} would be plausible.",
+            among.join(", ")
+        )),
         GapKind::Missing | GapKind::Fact => {}
     }
     match &gap.ask {
@@ -109,6 +113,7 @@ fn asked(key: &str) -> String {
         "part rise" => "the rise over the oil".to_owned(),
         "start" => "the oil temperature at the coldest start".to_owned(),
         "heater" => "the setting of the sump heater".to_owned(),
+        "base" => "the base stock".to_owned(),
         super::oils::SHEAR_LOSS => "the permanent shear loss".to_owned(),
         other => format!("the {other}"),
     }

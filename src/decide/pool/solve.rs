@@ -196,16 +196,10 @@ impl Whole<'_> {
                 .iter()
                 .map(|i| self.offers[*i].clone())
                 .collect();
-            let elsewhere: BTreeSet<usize> = stocks
-                .iter()
-                .filter(|s| s.fence != part.fence)
-                .map(|s| s.oil)
-                .collect();
             let chosen = best(
                 &Wanted {
                     offers: &offers,
                     keep: &part.keep,
-                    elsewhere: &elsewhere,
                     rank: &self.rank,
                     length: part.bound,
                 },
@@ -216,13 +210,7 @@ impl Whole<'_> {
             for (place, offers) in part.places.iter().zip(&offers) {
                 picks.extend(pick(*place, offers, |oil| list.contains(&oil)));
             }
-            let shared = list.intersection(&elsewhere).count();
-            let here = ties(&offers, |oil| list.contains(&oil), shared);
-            sum.shared += here.shared;
-            sum.changes += here.changes;
-            sum.conditions += here.conditions;
-            sum.unpriced += here.unpriced;
-            sum.cost += here.cost;
+            sum = sum + ties(&offers, |oil| list.contains(&oil));
             stocks.extend(list.into_iter().map(|oil| Stock {
                 fence: part.fence,
                 oil,

@@ -50,10 +50,6 @@ pub fn longer(places: &[Place], solved: &Solved, terms: &Terms) -> Option<Step> 
     others.sort_unstable();
     others.dedup();
     let tight = solved.picks.iter().filter(|p| p.offer.tight).count();
-    let now = Ties {
-        shared: 0,
-        ..solved.ties
-    };
     others
         .into_iter()
         .map(|added| {
@@ -61,7 +57,7 @@ pub fn longer(places: &[Place], solved: &Solved, terms: &Terms) -> Option<Step> 
             list.push(added);
             taken(places, list, added, terms)
         })
-        .filter(|s| (s.tight(), s.ties) < (tight, now))
+        .filter(|s| (s.tight(), s.ties) < (tight, solved.ties))
         .min_by_key(|s| (s.tight(), s.ties, s.stock))
 }
 
@@ -90,6 +86,6 @@ fn taken(places: &[Place], list: Vec<Stock>, stock: Stock, terms: &Terms) -> Ste
         stock,
         picks,
         unserved,
-        ties: ties(&offers, |_| true, 0),
+        ties: ties(&offers, |_| true),
     }
 }

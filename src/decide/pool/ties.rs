@@ -6,12 +6,12 @@ use super::case::Offer;
 use super::reduce::{Rows, strictest};
 use super::search::{Budget, Search};
 use std::collections::BTreeSet;
+use std::ops::Add;
 
-/// What ties are decided by, in this order; then by name.
+/// What ties are decided by, in this order; then by name. Of two lists the one whose cost is known
+/// on more places comes first: an unknown cost is not a low one.
 #[derive(Clone, Copy, Debug, Default, PartialEq, Eq, PartialOrd, Ord)]
 pub struct Ties {
-    /// Oils that stand on the other side of a fence as well.
-    pub shared: usize,
     /// Places whose oil changes.
     pub changes: usize,
     /// Conditions that ride with the oils taken: what the changes ask of those who make them.
@@ -28,8 +28,6 @@ pub struct Wanted<'w> {
     pub offers: &'w [Vec<Offer>],
     /// Oils that are on the list already.
     pub keep: &'w BTreeSet<usize>,
-    /// Oils that stand on the other side of a fence.
-    pub elsewhere: &'w BTreeSet<usize>,
     /// Place of each oil in the order of names.
     pub rank: &'w [usize],
     /// Length of the list, kept oils included.
@@ -97,6 +95,19 @@ struct Tying<'w, 's> {
     all: bool,
 }
 
+impl Add for Ties {
+    type Output = Self;
+
+    fn add(self, other: Self) -> Self {
+        Self {
+            changes: self.changes + other.changes,
+            conditions: self.conditions + other.conditions,
+            unpriced: self.unpriced + other.unpriced,
+            cost: self.cost + other.cost,
+        }
+    }
+}
+
 impl Tying<'_, '_> {
     fn descend(&mut self, left: &[usize], room: usize, budget: &mut Budget) {
         if !budget.spend() {
@@ -141,10 +152,7 @@ impl Tying<'_, '_> {
     /// The least the ties can come to with what is on the list and what is left out. Of a place
     /// only offers before and including its first on the list can still be taken.
     fn least(&self) -> Ties {
-        let mut least = Ties {
-            shared: self.shared(),
-            ..Ties::default()
-        };
+        let mut least = Ties::default();
         for offers in self.wanted.offers {
             let (mut change, mut unpriced, mut cost) = (true, true, u64::MAX);
             let mut conditions = usize::MAX;
@@ -172,13 +180,8 @@ impl Tying<'_, '_> {
         least
     }
 
-    fn shared(&self) -> usize {
-        let elsewhere = self.wanted.elsewhere.iter();
-        elsewhere.filter(|o| self.on[**o]).count()
-    }
-
     fn consider(&mut self) {
-        let ties = ties(self.wanted.offers, |oil| self.on[oil], self.shared());
+        let ties = ties(self.wanted.offers, |oil| self.on[oil]);
         let mut names: Vec<usize> = (0..self.on.len())
             .filter(|o| self.on[*o])
             .map(|o| self.wanted.rank[o])
@@ -195,11 +198,8 @@ impl Tying<'_, '_> {
 }
 
 /// What a list comes to: each place takes the first of its offers that is on it.
-pub fn ties(offers: &[Vec<Offer>], on: impl Fn(usize) -> bool, shared: usize) -> Ties {
-    let mut sum = Ties {
-        shared,
-        ..Ties::default()
-    };
+pub fn ties(offers: &[Vec<Offer>], on: impl Fn(usize) -> bool) -> Ties {
+    let mut sum = Ties::default();
     for offer in offers.iter().filter_map(|o| o.iter().find(|o| on(o.oil))) {
         sum.changes += usize::from(offer.change);
         sum.conditions += offer.conditions;

@@ -47,7 +47,7 @@ fn of_gap(gap: &Gap, basis: Basis, role: Role) -> Option<Sampled> {
             ((*lo, *hi), Shape::Peak(taken.base))
         }
         (GapKind::Assumed { lo, hi, .. }, _) => ((*lo, *hi), Shape::Bell),
-        (GapKind::Missing | GapKind::Fact, _) => return None,
+        (GapKind::Word { .. } | GapKind::Missing | GapKind::Fact, _) => return None,
     };
     Some(Sampled {
         key: gap.key.clone(),

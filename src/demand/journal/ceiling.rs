@@ -17,7 +17,7 @@ use crate::quantity::{
 use crate::relation::Law;
 use crate::relation::heat::balance::conductance;
 use crate::relation::journal::Route;
-use crate::relation::journal::feed::Coolant;
+use crate::relation::journal::feed::{Coolant, Feed};
 use crate::relation::journal::film::Bearing;
 use crate::relation::journal::heat::still_air;
 use crate::relation::journal::limits::temperature::{LAW as LIMIT, Supply, permissible};
@@ -40,6 +40,7 @@ static HALF_WAY: Law = Law {
 #[derive(Clone, Debug, PartialEq)]
 pub struct HeatCeiling {
     bearing: Bearing,
+    feed: Feed,
     inlet: AtAmbient,
     limit: ThermodynamicTemperature,
     /// Ambient the figure is worked out at, K.
@@ -61,10 +62,10 @@ impl HeatCeiling {
         }
         // half way between feed and limit the film rises by less than the way there just where
         // the settled bearing leaves cooler than the limit
-        let coolant = Coolant::iso7902();
+        let fed = (&self.feed, Coolant::iso7902());
         let there = eta(half_way(inlet, self.limit));
-        let found = rise_at(&self.bearing, there, coolant)
-            .or_else(|_| rise_at(&self.bearing, thinnest(&self.bearing), coolant));
+        let found = rise_at(&self.bearing, there, fed)
+            .or_else(|_| rise_at(&self.bearing, thinnest(&self.bearing), fed));
         found.map_or(1.0, |rise| ln(room / rise.base()))
     }
 }
@@ -154,9 +155,10 @@ struct Fed {
 fn by_oil<R: Recorder>(cx: &mut Context<'_, '_, R>, part: &Part, shape: &Shape, fed: Fed) {
     let inlet = fed.inlet;
     let limit = limit(cx, supply(cx, shape));
-    let coolant = Coolant::iso7902();
+    let feed = shape.feed();
+    let carried = (&feed, Coolant::iso7902());
     let room = TemperatureInterval::from_base(rise(limit.value, inlet.value).base() / 2.0);
-    let least = rise_at(&shape.bearing, thinnest(&shape.bearing), coolant);
+    let least = rise_at(&shape.bearing, thinnest(&shape.bearing), carried);
     if least.is_ok_and(|least| least.base() >= room.base()) {
         let because = format!(
             "fed at {:.0} degC it leaves hotter than {:.0} degC with the thinnest full film",
@@ -166,7 +168,7 @@ fn by_oil<R: Recorder>(cx: &mut Context<'_, '_, R>, part: &Part, shape: &Shape, 
         cx.undecided(part, End::RunningCeiling, &because);
         return;
     }
-    let Some(found) = for_rise(&shape.bearing, room, coolant) else {
+    let Some(found) = for_rise(&shape.bearing, room, carried) else {
         return; // no oil is thick enough for it
     };
     let (f, d, b, c, n) = shape.sized();
@@ -180,6 +182,7 @@ fn by_oil<R: Recorder>(cx: &mut Context<'_, '_, R>, part: &Part, shape: &Shape, 
     let heat = fed.at.map(|(inlet, ambient)| {
         Box::new(HeatCeiling {
             bearing: shape.bearing,
+            feed,
             inlet,
             limit: limit.value,
             ambient: ambient.base(),

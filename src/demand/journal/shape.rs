@@ -5,10 +5,11 @@ use crate::demand::End;
 use crate::demand::context::Context;
 use crate::model::part::{JournalBearing, Part};
 use crate::quantity::{AngularVelocity, Force, Length, Measure, Pressure, Velocity};
+use crate::relation::journal::feed::Feed;
 use crate::relation::journal::film::Bearing;
 use crate::relation::journal::limits::clearance::usual;
 use crate::relation::journal::{Duty, Geometry, NoFilm, Route, SPECIFIC_LOAD, SURFACE_SPEED};
-use crate::trace::{Known, Recorder};
+use crate::trace::{Known, Recorder, StepId};
 
 /// A bearing with its duty.
 #[derive(Clone, Copy)]
@@ -24,7 +25,12 @@ pub(in crate::demand) struct Shape {
     pub(in crate::demand) pressure: Known<Pressure>,
     /// By the Reynolds solution.
     pub(in crate::demand) bearing: Bearing,
+    /// Oil that the feed pressure presses through, where pressure and hole are stated.
+    pushed: Option<Pushed>,
 }
+
+/// Feed pressure, diameter of the hole, and the flow they give.
+type Pushed = (Known<Pressure>, Known<Length>, Feed);
 
 /// What goes into every relation of the film, with its symbols.
 pub(in crate::demand) type Sized = (
@@ -45,6 +51,17 @@ impl Shape {
             ("c", self.clearance),
             ("omega", self.speed),
         )
+    }
+
+    /// How the oil gets in.
+    pub(in crate::demand) fn feed(&self) -> Feed {
+        self.pushed.map_or(Feed::Drawn, |(_, _, feed)| feed)
+    }
+
+    /// Steps of feed pressure and hole.
+    pub(in crate::demand) fn pushed_steps(&self) -> Vec<(&'static str, StepId)> {
+        let steps = |(p, d, _): Pushed| vec![("p_en", p.step), ("d_H", d.step)];
+        self.pushed.map_or(Vec::new(), steps)
     }
 
     pub(in crate::demand) fn geometry(&self) -> Geometry {
@@ -105,7 +122,9 @@ pub(in crate::demand) fn shape<R: Recorder>(
             let pressure = cx.r.law("P", says, &SPECIFIC_LOAD, with, |_| {
                 duty.specific_load(&geometry)
             });
+            let pushed = pushed(cx, part, b, &geometry);
             Some(Shape {
+                pushed,
                 diameter,
                 width,
                 clearance,
@@ -118,6 +137,38 @@ pub(in crate::demand) fn shape<R: Recorder>(
         }
         Err(refused) => {
             cx.undecided(part, End::HotFloor, &format!("film: {refused}"));
+            None
+        }
+    }
+}
+
+/// Oil pressed through by the feed. Without the hole the pressure says nothing of the flow, and
+/// the film is taken as cooled by what it draws in alone, which is the warmer.
+fn pushed<R: Recorder>(
+    cx: &mut Context<'_, '_, R>,
+    part: &Part,
+    b: &JournalBearing,
+    geometry: &Geometry,
+) -> Option<Pushed> {
+    let key = wanted(
+        "feed pressure",
+        "p_en",
+        "feed pressure",
+        "gauge at the bearing",
+    );
+    let pressure: Known<Pressure> = cx.maybe(part, key, b.feed_pressure.as_ref())?;
+    let key = wanted("feed hole", "d_H", "diameter of the feed hole", DRAWING);
+    let hole: Option<Known<Length>> = cx.maybe(part, key, b.feed_hole.as_ref());
+    let Some(hole) = hole else {
+        let says = "the oil that the feed pressure presses through is not counted, as the \
+                    diameter of the feed hole is not stated: the film runs cooler than shown";
+        cx.inform(part, says, None);
+        return None;
+    };
+    match Feed::hole(geometry, pressure.value, hole.value) {
+        Ok(feed) => Some((pressure, hole, feed)),
+        Err(refused) => {
+            cx.inform(part, format!("feed hole not counted: {refused}"), None);
             None
         }
     }

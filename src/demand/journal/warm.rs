@@ -3,13 +3,14 @@
 use super::shape::Shape;
 use super::wanted;
 use crate::demand::context::{Context, HotAt};
+use crate::demand::losses::With;
 use crate::demand::thermal::AtAmbient;
 use crate::model::Lubrication;
 use crate::model::part::{Feed, JournalBearing, Part};
 use crate::quantity::{
     DynamicViscosity, Measure, Power, TemperatureInterval, ThermodynamicTemperature, VolumeRate,
 };
-use crate::relation::journal::feed::Coolant;
+use crate::relation::journal::feed::{Coolant, LAW as HOLE};
 use crate::relation::journal::film::{self, POWER, SIDE_FLOW};
 use crate::relation::journal::warming::{self, RISE};
 use crate::trace::{Known, Recorder};
@@ -131,8 +132,21 @@ fn rise<R: Recorder>(
     let flow: Known<VolumeRate> = cx.r.law("Q3", says, &SIDE_FLOW, with, |_| film.side_flow);
     cx.r.note(|| film::LAW.source.to_owned());
     let says = "rise of the film over the oil fed";
-    let with = (("P_f", power), ("Q3", flow));
-    Some(cx.r.law("Delta_T", says, &RISE, with, |(p, q)| {
-        warming::rise(p, q, Coolant::iso7902())
-    }))
+    let carried = |q: f64, besides: f64, p: Power| {
+        warming::rise(p, VolumeRate::from_base(q + besides), Coolant::iso7902())
+    };
+    let steps = shape.pushed_steps();
+    if steps.is_empty() {
+        let with = (("P_f", power), ("Q3", flow));
+        let rise = |(p, q): (Power, VolumeRate)| carried(q.base(), 0.0, p);
+        return Some(cx.r.law("Delta_T", says, &RISE, with, rise));
+    }
+    let besides = shape
+        .feed()
+        .flow(&shape.geometry(), eta.value, film.eccentricity);
+    let pressed = "oil pressed through by the feed at that viscosity";
+    let besides: Known<VolumeRate> = cx.r.law("Q_p", pressed, &HOLE, With(steps), |()| besides);
+    let with = (("P_f", power), ("Q3", flow), ("Q_p", besides));
+    let rise = |(p, q, b): (Power, VolumeRate, VolumeRate)| carried(q.base(), b.base(), p);
+    Some(cx.r.law("Delta_T", says, &RISE, with, rise))
 }

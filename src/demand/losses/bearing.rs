@@ -1,16 +1,20 @@
 //! Losses of rolling and plain bearings.
 
-use super::{Form, Inlet, LossKind, Source, Unknown, With, known, sealed};
+use super::source::{Form, Inlet};
+use super::{Lack, LossKind, Source, Tally, With, sealed};
 use crate::demand::context::Context;
-use crate::demand::inputs::Wanted;
+use crate::demand::inputs::{Usual, Wanted};
 use crate::demand::journal::warm::Cooled;
-use crate::model::Lubrication;
 use crate::model::part::{BearingClass, JournalBearing, Part, RollingBearing, ThrustBearing};
+use crate::model::{Lubrication, Stated};
 use crate::quantity::convert::number;
 use crate::quantity::{Force, Measure, Ratio, Torque};
 use crate::relation::bearing::friction::{self, FACTORS, FactorRow};
 use crate::relation::bearing::reference_viscosity::{PITCH_DIAMETER, pitch_diameter};
 use crate::trace::{Known, Recorder};
+
+const ALL: &str = "all its losses";
+const UNDER_LOAD: &str = "friction under load";
 
 fn wanted(key: &'static str, symbol: &'static str, says: &'static str) -> Wanted<'static> {
     Wanted {
@@ -22,45 +26,31 @@ fn wanted(key: &'static str, symbol: &'static str, says: &'static str) -> Wanted
     }
 }
 
-/// A rolling bearing by Palmgren. Its load counts as stated; what the load takes does not depend
-/// on the oil.
+/// A rolling bearing by Palmgren. What the load takes does not depend on the oil; where the load
+/// is not known and nothing stands in for it, only the friction without load is counted.
 pub(super) fn rolling<R: Recorder>(
     cx: &mut Context<'_, '_, R>,
     part: &Part,
     b: &RollingBearing,
-    out: &mut Vec<Source>,
-) -> Result<(), Unknown> {
-    let row = b
-        .class
-        .and_then(row)
-        .ok_or("the kind of a rolling bearing is missing")?;
-    let bore = cx.maybe(part, wanted("bore", "d", "bore"), known(b.bore.as_ref()));
-    let outside = cx.maybe(
-        part,
-        wanted("outside", "D", "outside diameter"),
-        known(b.outside.as_ref()),
-    );
-    let speed = cx.maybe(
-        part,
-        wanted("speed", "n", "speed of rotation"),
-        known(b.speed.as_ref()),
-    );
-    let load = cx.maybe(
-        part,
-        wanted("load", "P", "equivalent load"),
-        known(b.load.as_ref()),
-    );
-    let (Some(bore), Some(outside), Some(speed)) = (bore, outside, speed) else {
-        return Err("the size or the speed of a rolling bearing is missing");
-    };
-    let load: Known<Force> = load.ok_or("the load of a rolling bearing is missing")?;
+    out: &mut Tally,
+) -> Result<(), Lack> {
+    let row = b.class.and_then(row);
+    let row = row.ok_or(Lack::new(ALL, "the kind of bearing is not stated"))?;
+    let size = wanted("bore", "d", "bore");
+    let bore = cx.maybe(part, size, out.known(b.bore.as_ref()));
+    let bore = bore.ok_or(Lack::of(ALL, "the bore is not stated", size))?;
+    let size = wanted("outside", "D", "outside diameter");
+    let outside = cx.maybe(part, size, out.known(b.outside.as_ref()));
+    let outside = outside.ok_or(Lack::of(ALL, "the outside diameter is not stated", size))?;
+    let turns = wanted("speed", "n", "speed of rotation");
+    let speed = cx.maybe(part, turns, out.known(b.speed.as_ref()));
+    let speed = speed.ok_or(Lack::of(ALL, "the speed is not stated", turns))?;
     let with = (("d", bore), ("D", outside));
-    let says = "pitch diameter";
     let dm =
-        cx.r.attempt("Dpw", says, &PITCH_DIAMETER, with, |(d, o)| {
+        cx.r.attempt("Dpw", "pitch diameter", &PITCH_DIAMETER, with, |(d, o)| {
             pitch_diameter(d, o)
         })
-        .map_err(|_| "the size of a rolling bearing cannot be")?;
+        .map_err(|_| Lack::new(ALL, "bore and outside diameter do not fit"))?;
     let why = "Palmgren's factor of the kind, middle of its range";
     let f0 = cx.r.assume(
         "f0",
@@ -68,33 +58,83 @@ pub(super) fn rolling<R: Recorder>(
         f0(cx.lubrication(), row),
         why,
     );
-    let f1 = f1(cx, part, b, row, load)?;
-    let law = &friction::LOAD;
-    let says = "friction torque of the load";
-    let with = (("f1", f1), ("P1", load), ("dm", dm));
-    let torque: Known<Torque> =
-        cx.r.attempt("M1", says, law, with, |(f1, p, dm)| {
-            friction::load(f1, p, dm)
-        })
-        .map_err(|_| "the load of a rolling bearing cannot be")?;
-    out.push(Source {
+    let mut with = vec![("f0", f0.step), ("dm", dm.step), ("n", speed.step)];
+    let torque = match under_load(cx, part, b, row, out) {
+        Ok((load, f1)) => {
+            let says = "friction torque of the load";
+            let sized = (("f1", f1), ("P1", load), ("dm", dm));
+            let law = &friction::LOAD;
+            let made = cx.r.attempt("M1", says, law, sized, |(f1, p, dm)| {
+                friction::load(f1, p, dm)
+            });
+            let torque: Known<Torque> =
+                made.map_err(|_| Lack::new(ALL, "the load is not above zero"))?;
+            with.insert(2, ("M1", torque.step));
+            torque.value
+        }
+        Err(lack) => {
+            out.lacks(part, lack);
+            Torque::from_base(0.0)
+        }
+    };
+    out.sources.push(Source {
         kind: LossKind::Bearing,
         part: part.label.clone(),
-        with: With(vec![
-            ("f0", f0.step),
-            ("dm", dm.step),
-            ("M1", torque.step),
-            ("n", speed.step),
-        ]),
+        with: With(with),
         form: Form::Rolling {
             f0: f0.value,
-            load: torque.value,
+            load: torque,
             speed: speed.value,
             pitch_diameter: dm.value,
         },
     });
     sealed(cx, part, bore, speed, out);
     Ok(())
+}
+
+/// Load and its factor, each stated or usual.
+fn under_load<R: Recorder>(
+    cx: &mut Context<'_, '_, R>,
+    part: &Part,
+    b: &RollingBearing,
+    row: &'static FactorRow,
+    out: &Tally,
+) -> Result<(Known<Force>, Known<Ratio>), Lack> {
+    let load = load(cx, part, b, out)?;
+    let f1 = f1(cx, part, b, row, (load, out))?;
+    Ok((load, f1))
+}
+
+/// The load as stated, or a usual share of the dynamic load rating where that is stated.
+fn load<R: Recorder>(
+    cx: &mut Context<'_, '_, R>,
+    part: &Part,
+    b: &RollingBearing,
+    out: &Tally,
+) -> Result<Known<Force>, Lack> {
+    let key = Wanted {
+        how: "calculation of the maker; 3 to 15 % of the dynamic load rating is usual",
+        ..wanted("load", "P", "equivalent load")
+    };
+    if let Some(load) = cx.maybe(part, key, out.known(b.load.as_ref())) {
+        return Ok(load);
+    }
+    let rated = wanted("C", "C", "dynamic load rating");
+    let rating: Option<Known<Force>> =
+        cx.maybe(part, rated, out.known(b.c.as_ref()).filter(|_| out.asked));
+    let lack = || {
+        let because = "neither the load nor the dynamic load rating is stated";
+        Lack::of(UNDER_LOAD, because, key)
+    };
+    let rating = rating.ok_or_else(lack)?;
+    let share = |k: f64| Force::from_base(rating.value.base() * k);
+    let usual = Usual {
+        value: share(0.08),
+        lo: share(0.03),
+        hi: share(0.15),
+        why: "3 to 15 % of the dynamic load rating is common practice",
+    };
+    Ok(cx.or_assume(part, key, b.load.as_ref(), usual))
 }
 
 /// The factors of a class.
@@ -123,8 +163,8 @@ fn f1<R: Recorder>(
     part: &Part,
     b: &RollingBearing,
     row: &'static FactorRow,
-    load: Known<Force>,
-) -> Result<Known<Ratio>, Unknown> {
+    (load, out): (Known<Force>, &Tally),
+) -> Result<Known<Ratio>, Lack> {
     let says = "factor of the load";
     let law = &friction::LOAD;
     if row.f1_exponent == 0.0 {
@@ -132,25 +172,40 @@ fn f1<R: Recorder>(
         let middle = number(f64::midpoint(row.f1.0, row.f1.1));
         return Ok(cx.r.assume("f1", says, middle, why));
     }
-    let c0 = cx.maybe(
-        part,
-        wanted("C0", "C0", "static load rating"),
-        known(b.c0.as_ref()),
-    );
-    let c0: Known<Force> = c0.ok_or("the static load rating of a ball bearing is missing")?;
+    let key = wanted("C0", "C0", "static load rating");
+    let stated: Option<Known<Force>> = cx.maybe(part, key, out.known(b.c0.as_ref()));
+    let c0 = match stated {
+        Some(c0) => c0,
+        None if out.asked => {
+            let times = |k: f64| Force::from_base(load.value.base() * k);
+            let usual = Usual {
+                value: times(10.0),
+                lo: times(4.0),
+                hi: times(30.0),
+                why: "4 to 30 times the load is common practice",
+            };
+            let nobody: Option<&Stated<Force>> = None;
+            cx.or_assume(part, key, nobody, usual)
+        }
+        None => {
+            let because = "the static load rating of a ball bearing is not stated";
+            return Err(Lack::of(UNDER_LOAD, because, key));
+        }
+    };
     cx.r.attempt("f1", says, law, (("P", load), ("C0", c0)), |(p, c0)| {
         friction::load_factor(row, p, c0)
     })
-    .map_err(|_| "the static load rating of a ball bearing cannot be")
+    .map_err(|_| Lack::new(UNDER_LOAD, "the static load rating is not above zero"))
 }
 
-/// A journal bearing whose sizes and duty are stated.
+/// A journal bearing. Where losses are asked about, the plausible sizes of its film stand in for
+/// those nobody stated, as they do for its floor.
 pub(super) fn journal<R: Recorder>(
     cx: &mut Context<'_, '_, R>,
     part: &Part,
     b: &JournalBearing,
-    out: &mut Vec<Source>,
-) -> Result<(), Unknown> {
+    out: &mut Tally,
+) -> Result<(), Lack> {
     let stated = cx.has(b.diameter.as_ref())
         && cx.has(b.width.as_ref())
         && cx.has(b.radial_clearance.as_ref())
@@ -158,27 +213,28 @@ pub(super) fn journal<R: Recorder>(
         && cx.has(b.load.as_ref());
     // what is amiss has been said where the floor was looked for
     let said = cx.undecided.len();
-    let shape = stated
+    let shape = (stated || out.asked)
         .then(|| crate::demand::journal::shape::shape(cx, part, b))
         .flatten();
     cx.undecided.truncate(said);
-    let shape = shape.ok_or("sizes, load or speed of a journal bearing are missing")?;
+    let shape = shape.ok_or(Lack::new(ALL, "sizes, load or speed are not stated"))?;
     let oil = crate::demand::journal::warm::oil(cx, part, b);
     let fed = oil.at.hottest.filter(|_| b.feed_temperature.is_some());
     let inlet = match (oil.cooled, fed) {
         (Cooled::ByHousing, _) => Inlet::Sump,
-        (Cooled::ByOil, Some(t)) => Inlet::Fed(t.value),
-        (Cooled::ByOil, None) => Inlet::FedAsSump,
+        (Cooled::ByOil, Some(t)) => Inlet::Fed(t.value, shape.feed()),
+        (Cooled::ByOil, None) => Inlet::FedAsSump(shape.feed()),
     };
     let (f, d, w, c, n) = shape.sized();
-    let with = vec![
+    let mut with = vec![
         (f.0, f.1.step),
         (d.0, d.1.step),
         (w.0, w.1.step),
         (c.0, c.1.step),
         (n.0, n.1.step),
     ];
-    out.push(Source {
+    with.extend(shape.pushed_steps());
+    out.sources.push(Source {
         kind: LossKind::Bearing,
         part: part.label.clone(),
         with: With(with),
@@ -196,8 +252,8 @@ pub(super) fn thrust<R: Recorder>(
     cx: &mut Context<'_, '_, R>,
     part: &Part,
     b: &ThrustBearing,
-    out: &mut Vec<Source>,
-) -> Result<(), Unknown> {
+    out: &mut Tally,
+) -> Result<(), Lack> {
     let stated = cx.has(b.pad_length.as_ref())
         && cx.has(b.pad_width.as_ref())
         && cx.has(b.mean_diameter.as_ref())
@@ -205,12 +261,12 @@ pub(super) fn thrust<R: Recorder>(
         && cx.has(b.load.as_ref())
         && b.pads.is_some();
     let said = cx.undecided.len();
-    let loaded = stated
+    let loaded = (stated || out.asked)
         .then(|| crate::demand::thrust::loaded(cx, part, b))
         .flatten();
     cx.undecided.truncate(said);
-    let loaded = loaded.ok_or("sizes, load or speed of a thrust bearing are missing")?;
-    out.push(Source {
+    let loaded = loaded.ok_or(Lack::new(ALL, "sizes, load or speed are not stated"))?;
+    out.sources.push(Source {
         kind: LossKind::Bearing,
         part: part.label.clone(),
         with: With(vec![

@@ -1,10 +1,12 @@
 //! Losses of a gear mesh: rubbing teeth, and the wheel that stirs.
 
-use super::{Form, LossKind, Source, Unknown, With, known};
+use super::source::Form;
+use super::{Lack, LossKind, Source, Tally, With};
 use crate::demand::context::Context;
-use crate::demand::inputs::Wanted;
-use crate::model::Lubrication;
+use crate::demand::gear_bevel;
+use crate::demand::inputs::{Usual, Wanted};
 use crate::model::part::{GearMesh, GearType, Part};
+use crate::model::{Lubrication, Stated};
 use crate::numeric::math::cos;
 use crate::quantity::convert::{degrees, number, rpm, to_rpm, um};
 use crate::quantity::{
@@ -19,6 +21,9 @@ use crate::relation::gear::path::{Path, Tips, pitch_speed, sum_speed};
 use crate::relation::gear::temperature::Friction;
 use crate::trace::{Known, Recorder};
 
+const ALL: &str = "all its losses";
+const TEETH: &str = "rubbing of the teeth";
+
 fn wanted(key: &'static str, symbol: &'static str, says: &'static str) -> Wanted<'static> {
     Wanted {
         key,
@@ -29,14 +34,20 @@ fn wanted(key: &'static str, symbol: &'static str, says: &'static str) -> Wanted
     }
 }
 
-/// What of a pair is stated.
+/// What of a pair is known. A bevel pair is its virtual cylindrical one, at mid-face.
 struct Pair {
     mesh: Mesh,
     path: Path,
+    /// Width that carries.
     width: Known<Length>,
+    /// Speed of the real pinion.
     speed: Known<AngularVelocity>,
     module: Known<Length>,
     centre: Known<Length>,
+    /// Speed of the pinion that rubs, and its torque over that of the real one.
+    rubs: (AngularVelocity, f64),
+    /// Outside diameter and speed of the wheel that stirs.
+    stirs: (Length, AngularVelocity),
 }
 
 /// Adds what a mesh loses.
@@ -44,62 +55,100 @@ pub(super) fn mesh<R: Recorder>(
     cx: &mut Context<'_, '_, R>,
     part: &Part,
     m: &GearMesh,
-    out: &mut Vec<Source>,
-) -> Result<(), Unknown> {
-    if matches!(
-        m.kind,
-        Some(GearType::Bevel | GearType::SpiralBevel | GearType::Hypoid)
-    ) {
-        return Err("losses of bevel and hypoid pairs are not worked out");
-    }
-    let pair = pair(cx, part, m)?;
-    rubbing(cx, part, m, &pair, out)?;
-    let lubrication = cx.lubrication();
+    out: &mut Tally,
+) -> Result<(), Lack> {
+    let pair = match m.kind {
+        Some(GearType::Hypoid) => {
+            let because = "no loss formula is held for sliding along hypoid teeth";
+            return Err(Lack::new(ALL, because));
+        }
+        Some(GearType::Bevel | GearType::SpiralBevel) => bevel(cx, part, m)?,
+        _ => cylindrical(cx, part, m, out)?,
+    };
     let dips = matches!(
-        lubrication,
+        cx.lubrication(),
         Some(Lubrication::Splash | Lubrication::Bath | Lubrication::Flooded)
     );
     if dips {
         stirring(cx, part, &pair, out);
     }
-    Ok(())
+    rubbing(cx, part, m, &pair, out)
 }
 
-fn pair<R: Recorder>(
+/// A bevel pair by its virtual cylindrical one, ISO 10300. The wheel stirs as a cylindrical one of
+/// its outer diameter would.
+fn bevel<R: Recorder>(
     cx: &mut Context<'_, '_, R>,
     part: &Part,
     m: &GearMesh,
-) -> Result<Pair, Unknown> {
-    let given = m
-        .teeth
-        .as_ref()
-        .ok_or("the teeth of a gear mesh are missing")?;
-    let key = wanted("normal module", "m_n", "normal module");
-    let module = cx.maybe(part, key, known(m.normal_module.as_ref()));
-    let module = module.ok_or("the module of a gear mesh is missing")?;
-    let key = wanted("face width", "b", "face width");
-    let width = cx.maybe(part, key, known(m.face_width.as_ref()));
-    let width = width.ok_or("the face width of a gear mesh is missing")?;
+) -> Result<Pair, Lack> {
+    let because = "teeth, module at mid-face, face width or pinion speed are not stated";
+    let found = gear_bevel::virtual_gears(cx, part, m);
+    let found = found.ok_or(Lack::new(ALL, because))?;
+    let v = found.gears.value;
+    let misfit = |_| Lack::new(ALL, "the teeth of the virtual pair do not mesh");
+    let mesh = Mesh::standard(v.teeth).map_err(misfit)?;
+    let path = Path::new(&mesh, Tips::standard(&mesh)).map_err(misfit)?;
+    let width = cx.r.take(&found.gears, "b_e", "width that carries", |v| {
+        v.effective_width
+    });
+    let says = "centre distance of the virtual pair";
+    let centre =
+        cx.r.take(&found.gears, "a_v", says, |_| mesh.centre_distance);
+    let cone = v.cones.1.base();
+    let outer = v.mean_diameters.1.base()
+        + found.width.value.base() * crate::numeric::math::sin(cone)
+        + 2.0 * found.module.value.base() * cos(cone);
+    let n2 = to_rpm(found.speed.value) * v.mean_diameters.0.base() / v.mean_diameters.1.base();
+    let torque = v.torque(Torque::from_base(1.0)).base();
+    Ok(Pair {
+        mesh,
+        path,
+        width,
+        speed: found.speed,
+        module: found.module,
+        centre,
+        rubs: (v.speed(found.speed.value), torque),
+        stirs: (Length::from_base(outer), rpm(n2)),
+    })
+}
+
+fn cylindrical<R: Recorder>(
+    cx: &mut Context<'_, '_, R>,
+    part: &Part,
+    m: &GearMesh,
+    out: &Tally,
+) -> Result<Pair, Lack> {
     let key = wanted("pinion speed", "n1", "pinion speed");
-    let speed = cx.maybe(part, key, known(m.pinion_speed.as_ref()));
-    let speed = speed.ok_or("the pinion speed of a gear mesh is missing")?;
-    let teeth = teeth(cx, part, m, (given.value, module.value));
+    let speed = cx.maybe(part, key, out.known(m.pinion_speed.as_ref()));
+    let speed = speed.ok_or(Lack::of(ALL, "the pinion speed is not stated", key))?;
     let key = wanted("centre distance", "a", "centre distance");
-    let stated: Option<Known<Length>> = cx.maybe(part, key, known(m.centre_distance.as_ref()));
+    let stated: Option<Known<Length>> = cx.maybe(part, key, out.known(m.centre_distance.as_ref()));
+    let counts = counts(cx, part, m, (stated, out))?;
+    let helix = angle(cx, part, m, out);
+    let module = module(cx, part, m, (stated, counts, helix.0), out)?;
+    let width = width(cx, part, m, (stated, out))?;
+    let teeth = Teeth {
+        z1: counts.0.value,
+        z2: counts.1,
+        normal_module: module.value,
+        helix: helix.0,
+        pressure_angle: helix.1,
+    };
     let mesh = match &stated {
         Some(a) => Mesh::new(teeth, a.value),
         None => Mesh::standard(teeth),
     };
     let path = mesh.and_then(|mesh| Ok((mesh, Path::new(&mesh, Tips::standard(&mesh))?)));
     let (mesh, path) =
-        path.map_err(|_| "the teeth of a gear mesh do not fit its centre distance")?;
-    let z = given.clone().map(|_| teeth.z1);
-    let z: Known<Ratio> = cx.r.given("z1", "teeth of the pinion", &z);
+        path.map_err(|_| Lack::new(ALL, "the teeth do not fit the centre distance"))?;
     let centre = stated.unwrap_or_else(|| {
         let says = "centre distance without profile shift";
-        let with = (("m_n", module), ("z1", z));
+        let with = (("m_n", module), ("z1", counts.0));
         cx.r.law("a", says, &MESH, with, |_| mesh.centre_distance)
     });
+    let wheel = mesh.d2.base().abs() + 2.0 * module.value.base();
+    let n2 = to_rpm(speed.value) / mesh.ratio().base().abs();
     Ok(Pair {
         mesh,
         path,
@@ -107,17 +156,51 @@ fn pair<R: Recorder>(
         speed,
         module,
         centre,
+        rubs: (speed.value, 1.0),
+        stirs: (Length::from_base(wheel), rpm(n2)),
     })
 }
 
-/// The teeth, with usual angles where none are stated.
-fn teeth<R: Recorder>(
+/// Teeth of the pinion usual for a hardened pair.
+const PINION_TEETH: (f64, f64, f64) = (20.0, 17.0, 30.0);
+
+/// Teeth of pinion and wheel: counted, or a usual pinion with the ratio stated.
+fn counts<R: Recorder>(
     cx: &mut Context<'_, '_, R>,
     part: &Part,
     m: &GearMesh,
-    ((z1, z2), normal_module): ((u32, u32), Length),
-) -> Teeth {
-    let mut angle = |key, symbol, stated, usual: f64| -> Angle {
+    (distance, out): (Option<Known<Length>>, &Tally),
+) -> Result<(Known<Ratio>, Ratio), Lack> {
+    let key = wanted("teeth", "z1", "teeth of the pinion");
+    if let Some(given) = &m.teeth {
+        let (z1, z2) = given.value;
+        let z1 = given.clone().map(|_| number(f64::from(z1)));
+        return Ok((cx.r.given("z1", key.says, &z1), number(f64::from(z2))));
+    }
+    let ratio = crate::demand::gear_mesh::ratio(cx, part, m).filter(|_| out.asked);
+    let (Some(u), Some(_)) = (ratio, distance) else {
+        return Err(Lack::of(ALL, "the teeth are not stated", key));
+    };
+    let (value, lo, hi) = PINION_TEETH;
+    let usual = Usual {
+        value: number(value),
+        lo: number(lo),
+        hi: number(hi),
+        why: "17 to 30 teeth of the pinion are common practice",
+    };
+    let nobody: Option<&Stated<Ratio>> = None;
+    let z1 = cx.or_assume(part, key, nobody, usual);
+    Ok((z1, number(z1.value.base() * u.value.base())))
+}
+
+/// Helix and normal pressure angle, usual where not stated.
+fn angle<R: Recorder>(
+    cx: &mut Context<'_, '_, R>,
+    part: &Part,
+    m: &GearMesh,
+    out: &Tally,
+) -> (Angle, Angle) {
+    let mut of = |key, symbol, stated, usual: f64| -> Angle {
         let known: Option<Known<Angle>> = cx.maybe(part, wanted(key, symbol, key), stated);
         known.map_or(degrees(usual), |k| k.value)
     };
@@ -126,18 +209,57 @@ fn teeth<R: Recorder>(
     } else {
         0.0
     };
-    Teeth {
-        z1: number(f64::from(z1)),
-        z2: number(f64::from(z2)),
-        normal_module,
-        helix: angle("helix", "beta", known(m.helix.as_ref()), usual),
-        pressure_angle: angle(
-            "pressure angle",
-            "alpha",
-            known(m.pressure_angle.as_ref()),
-            20.0,
-        ),
+    let helix = of("helix", "beta", out.known(m.helix.as_ref()), usual);
+    let stated = out.known(m.pressure_angle.as_ref());
+    (helix, of("pressure angle", "alpha", stated, 20.0))
+}
+
+/// Normal module: stated, or from the centre distance without profile shift.
+fn module<R: Recorder>(
+    cx: &mut Context<'_, '_, R>,
+    part: &Part,
+    m: &GearMesh,
+    (distance, (z1, z2), helix): (Option<Known<Length>>, (Known<Ratio>, Ratio), Angle),
+    out: &Tally,
+) -> Result<Known<Length>, Lack> {
+    let key = wanted("normal module", "m_n", "normal module");
+    if let Some(module) = cx.maybe(part, key, out.known(m.normal_module.as_ref())) {
+        return Ok(module);
     }
+    let Some(a) = distance.filter(|_| out.asked) else {
+        return Err(Lack::of(ALL, "the module is not stated", key));
+    };
+    let says = "normal module, without profile shift";
+    let with = (("a", a), ("z1", z1));
+    Ok(cx
+        .r
+        .law("m_n", says, &MESH, with, |(a, z1): (Length, Ratio)| {
+            Length::from_base(2.0 * a.base() * cos(helix.base()) / (z1.base() + z2.base()))
+        }))
+}
+
+/// Face width: stated, or a usual share of the centre distance.
+fn width<R: Recorder>(
+    cx: &mut Context<'_, '_, R>,
+    part: &Part,
+    m: &GearMesh,
+    (distance, out): (Option<Known<Length>>, &Tally),
+) -> Result<Known<Length>, Lack> {
+    let key = wanted("face width", "b", "face width");
+    if let Some(width) = cx.maybe(part, key, out.known(m.face_width.as_ref())) {
+        return Ok(width);
+    }
+    let Some(a) = distance.filter(|_| out.asked) else {
+        return Err(Lack::of(ALL, "the face width is not stated", key));
+    };
+    let share = |k: f64| Length::from_base(a.value.base() * k);
+    let usual = Usual {
+        value: share(0.35),
+        lo: share(0.2),
+        hi: share(0.5),
+        why: "0.2 to 0.5 of the centre distance is common practice",
+    };
+    Ok(cx.or_assume(part, key, m.face_width.as_ref(), usual))
 }
 
 fn rubbing<R: Recorder>(
@@ -145,9 +267,9 @@ fn rubbing<R: Recorder>(
     part: &Part,
     m: &GearMesh,
     pair: &Pair,
-    out: &mut Vec<Source>,
-) -> Result<(), Unknown> {
-    let (torque, power) = torque(cx, part, m, pair)?;
+    out: &mut Tally,
+) -> Result<(), Lack> {
+    let (torque, power) = torque(cx, part, m, pair, out)?;
     let says = "loss factor of the tooth geometry";
     let with = (("m_n", pair.module), ("a", pair.centre));
     let (mesh, path) = (pair.mesh, pair.path);
@@ -156,12 +278,12 @@ fn rubbing<R: Recorder>(
     });
     let why = "ground flanks; 0.3 to 0.8 um is common practice";
     let key = wanted("flank roughness", "Ra", "Ra of the flanks");
-    let stated = cx.maybe(part, key, known(m.flank_roughness.as_ref()));
+    let stated = cx.maybe(part, key, out.known(m.flank_roughness.as_ref()));
     let ra = stated.unwrap_or_else(|| cx.r.assume("Ra", "Ra of the flanks", um(0.5), why));
-    let v = pitch_speed(mesh.working_diameter, pair.speed.value)
-        .map_err(|_| "the mesh stands still")?;
+    let v = pitch_speed(mesh.working_diameter, pair.rubs.0)
+        .map_err(|_| Lack::new(TEETH, "the mesh stands still"))?;
     let across = pair.width.value.base();
-    let force = 2.0 * torque.base() / mesh.base_diameters.0.base();
+    let force = 2.0 * torque.base() * pair.rubs.1 / mesh.base_diameters.0.base();
     let friction = Friction {
         load: LoadPerLength::from_base(force / across),
         sum_speed: sum_speed(v, mesh.working_pressure_angle),
@@ -170,7 +292,7 @@ fn rubbing<R: Recorder>(
         ra: ra.value,
         oil: number(1.0),
     };
-    out.push(Source {
+    out.sources.push(Source {
         kind: LossKind::Mesh,
         part: part.label.clone(),
         with: With(vec![
@@ -194,9 +316,10 @@ fn torque<R: Recorder>(
     part: &Part,
     m: &GearMesh,
     pair: &Pair,
-) -> Result<(Torque, Known<Power>), Unknown> {
+    out: &Tally,
+) -> Result<(Torque, Known<Power>), Lack> {
     let key = wanted("pinion torque", "T1", "pinion torque");
-    let stated: Option<Known<Torque>> = cx.maybe(part, key, known(m.pinion_torque.as_ref()));
+    let stated: Option<Known<Torque>> = cx.maybe(part, key, out.known(m.pinion_torque.as_ref()));
     if let Some(torque) = stated {
         let with = (("T", torque), ("omega", pair.speed));
         let says = "power through the mesh";
@@ -204,9 +327,10 @@ fn torque<R: Recorder>(
         return Ok((torque.value, power));
     }
     let key = wanted("power", "P", "power through the mesh");
-    let power: Option<Known<Power>> = cx.maybe(part, key, known(m.power.as_ref()));
-    let power = power.ok_or("the power of a gear mesh is missing")?;
-    let torque = torque_of(power.value, pair.speed.value).map_err(|_| "the mesh stands still")?;
+    let power: Option<Known<Power>> = cx.maybe(part, key, out.known(m.power.as_ref()));
+    let power = power.ok_or(Lack::of(TEETH, "the power is not stated", key))?;
+    let torque = torque_of(power.value, pair.speed.value)
+        .map_err(|_| Lack::new(TEETH, "the mesh stands still"))?;
     Ok((torque, power))
 }
 
@@ -215,12 +339,7 @@ const DIPPED: f64 = 0.25;
 
 /// The wheel dips, the pinion does not. The form with viscosity in it is taken: by the other one
 /// oils would not differ.
-fn stirring<R: Recorder>(
-    cx: &mut Context<'_, '_, R>,
-    part: &Part,
-    pair: &Pair,
-    out: &mut Vec<Source>,
-) {
+fn stirring<R: Recorder>(cx: &mut Context<'_, '_, R>, part: &Part, pair: &Pair, out: &mut Tally) {
     let why = "the wheel dips to about a quarter of its height, common practice";
     let dip = cx.r.assume(
         "f_g",
@@ -230,18 +349,17 @@ fn stirring<R: Recorder>(
     );
     let mesh = &pair.mesh;
     let module = pair.module.value.base();
-    let n_rpm = to_rpm(pair.speed.value) / mesh.ratio().base().abs();
     let stirring = Stirring {
         dip_factor: dip.value,
         nu: KinematicViscosity::from_base(1.0),
-        speed: rpm(n_rpm),
-        diameter: Length::from_base(mesh.d2.base().abs() + 2.0 * module),
+        speed: pair.stirs.1,
+        diameter: pair.stirs.0,
         length: Length::from_base(0.0),
         face_width: pair.width.value,
         transverse_module: Length::from_base(module / cos(mesh.teeth.helix.base())),
         helix: mesh.teeth.helix,
     };
-    out.push(Source {
+    out.sources.push(Source {
         kind: LossKind::Churning,
         part: part.label.clone(),
         with: With(vec![

@@ -58,12 +58,14 @@ impl Losses {
         self.cooler.map_or(0.0, |c| c.value.base())
     }
 
-    /// The cooling that gives the reading back with the oil in use.
+    /// The cooling that gives the reading back with the oil in use. `None` without a reading, or
+    /// where a share is not counted: cooling found from too small a sum would make a thicker oil
+    /// too hot.
     ///
     /// # Errors
     /// A reading that says nothing about cooling.
     pub fn calibrate(&self, in_use: &Curves) -> Result<Option<Calibrated>, NoBalance> {
-        let Some(reading) = self.reading else {
+        let Some(reading) = self.reading.filter(|_| self.complete()) else {
             return Ok(None);
         };
         let (t, ambient) = (reading.sump.value, reading.ambient.value);

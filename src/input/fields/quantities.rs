@@ -139,6 +139,9 @@ impl Fields<'_> {
         let slot = self.get(name)?;
         let mut value = slot.value(reader)?;
         slot.as_wanted(&mut value);
+        if !super::bounds::possible(reader, self, slot, &value) {
+            return None;
+        }
         stated_of(slot, value, make)
     }
 

@@ -205,6 +205,7 @@ pub static JOURNAL_BEARING: Record = part!("a journal bearing", &[
         key("feed", Form::Word(FEED), "gap", "How the oil gets in."),
         key("feed temperature", Form::Quantity(Want::stated(TEMPERATURE).such_as("45 degC")), "the sump's", "Temperature of the oil fed."),
         key("feed pressure", stated(PRESSURE), "–", "Pressure of the oil fed."),
+        key("feed hole", stated(LENGTH), "–", "Diameter of the hole the oil is fed through."),
         key("casing area", stated(AREA), "–", "Surface that gives off heat."),
         key("shaft roughness", rough(Roughness::Ra), "–", "Ra of the shaft."),
         key("lining", Form::Text, "–", "Material of the lining."),

@@ -44,6 +44,7 @@ pub(super) fn journal(reader: &mut Reader<'_>, fields: &Fields<'_>) -> JournalBe
     let diametral = sound(reader, "diametral clearance", diametral);
     let diameter = sound(reader, "diameter", diameter);
     let width = fields.stated(reader, "width");
+    let hole = fields.stated(reader, "feed hole");
     let (speed, load) = (
         fields.stated(reader, "speed"),
         fields.stated(reader, "load"),
@@ -77,6 +78,7 @@ pub(super) fn journal(reader: &mut Reader<'_>, fields: &Fields<'_>) -> JournalBe
         feed,
         feed_temperature: fields.stated(reader, "feed temperature"),
         feed_pressure: fields.stated(reader, "feed pressure"),
+        feed_hole: sound(reader, "feed hole", hole),
         casing_area: fields.stated(reader, "casing area"),
         shaft_roughness: fields.stated(reader, "shaft roughness"),
         lining: fields.given_text(reader, "lining"),

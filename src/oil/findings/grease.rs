@@ -28,7 +28,7 @@ pub(super) fn findings(found: &mut Vec<Finding>, oil: &Oil, rules: &Rulebook) {
             found.push(finding(
                 "grease-code",
                 format!("{} is, by DIN 51502: {}", code.written(), code.says(rules)),
-                "nothing; the code is what the label promises",
+                "compare with the label of the container",
             ));
             differs(found, oil, &code, rules);
         }

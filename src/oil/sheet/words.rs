@@ -2,7 +2,7 @@
 
 use super::cold::bound;
 use crate::model::Oil;
-use crate::model::oil::{Polymer, Price};
+use crate::model::oil::{OilKind, Polymer, Price};
 use crate::model::word::Word;
 use crate::oil::Worn;
 use crate::oil::curves::Curves;
@@ -27,6 +27,11 @@ pub(super) fn headline(
             || format!("between the ISO grades, {} at 40 degC", shown(nu)),
             |g| format!("ISO VG {g}"),
         );
+        let grade = if oil.kind == OilKind::Grease {
+            format!("base oil {grade}")
+        } else {
+            grade
+        };
         vi.map_or(grade.clone(), |vi| {
             format!("{grade}, VI {}", fixed(vi.value.base(), 0, Toward::Nearest))
         })

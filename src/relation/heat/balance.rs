@@ -38,6 +38,15 @@ pub static AIR: Law = Law {
     source: "ISO 7902-1 (from memory)",
 };
 
+/// Heat a surface gives off.
+pub static CONDUCTANCE: Law = Law {
+    name: "heat-conductance",
+    title: "heat a surface gives off for every kelvin",
+    formula: "kA = k A",
+    range: "one temperature throughout the housing",
+    source: "definition",
+};
+
 /// Why no temperature is found.
 #[derive(Clone, Copy, Debug, PartialEq, thiserror::Error)]
 pub enum NoBalance {

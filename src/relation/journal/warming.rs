@@ -6,7 +6,7 @@
 //! rise of that limit: no oil need be iterated for.
 
 use super::NoFilm;
-use super::feed::Coolant;
+use super::feed::{Coolant, Feed};
 use super::film::{Bearing, Film};
 use crate::numeric::math::{exp, ln};
 use crate::numeric::root::bracketed;
@@ -17,9 +17,9 @@ use crate::relation::Law;
 pub static RISE: Law = Law {
     name: "journal-film-rise",
     title: "rise of the film of a journal bearing over the oil fed",
-    formula: "Delta_T = T_eff - T_in = P_f/(2 rho c_p Q3)",
-    range: "steady running, the oil carries the heat and leaves twice as far above the feed; oil \
-            pressed through by the feed not counted, so warmer than it is",
+    formula: "Delta_T = T_eff - T_in = P_f/(2 rho c_p (Q3 + Q_p))",
+    range: "steady running, the oil carries the heat and leaves twice as far above the feed; Q_p \
+            pressed through by the feed, where pressure and hole are known",
     source: "ISO 7902-1 for the balance and its rho c_p of 1.8 MJ/(m3 K) (from memory)",
 };
 
@@ -27,7 +27,7 @@ pub static RISE: Law = Law {
 pub static THICKEST: Law = Law {
     name: "journal-viscosity-for-rise",
     title: "viscosity at which the oil leaves a journal bearing at its largest temperature",
-    formula: "P_f(eta)/(2 rho c_p Q3(eta)) = (T_lim - T_in)/2, solved for eta",
+    formula: "P_f/(2 rho c_p (Q3 + Q_p)) = (T_lim - T_in)/2, solved for eta",
     range: "as for the rise of the film; thicker oil runs hotter",
     source: "ISO 7902-1 for the balance and its rho c_p of 1.8 MJ/(m3 K) (from memory)",
 };
@@ -41,10 +41,17 @@ pub static THICKEST_IN_AIR: Law = Law {
     source: "ISO 7902-1 for the balance (from memory)",
 };
 
-/// Rise of [`RISE`] from losses and side flow.
-pub fn rise(power: Power, side_flow: VolumeRate, coolant: Coolant) -> TemperatureInterval {
-    let carried = 2.0 * coolant.heat_per_volume() * side_flow.base();
+/// Rise of [`RISE`] from losses and flow.
+pub fn rise(power: Power, flow: VolumeRate, coolant: Coolant) -> TemperatureInterval {
+    let carried = 2.0 * coolant.heat_per_volume() * flow.base();
     TemperatureInterval::from_base(power.base() / carried)
+}
+
+/// Oil that carries heat out of a film: what leaves at the edges and what the feed presses
+/// through.
+fn flow(bearing: &Bearing, feed: &Feed, eta: DynamicViscosity, film: &Film) -> VolumeRate {
+    let pressed = feed.flow(bearing.geometry(), eta, film.eccentricity);
+    VolumeRate::from_base(film.side_flow.base() + pressed.base())
 }
 
 /// Rise of [`RISE`] at a viscosity.
@@ -54,10 +61,11 @@ pub fn rise(power: Power, side_flow: VolumeRate, coolant: Coolant) -> Temperatur
 pub fn rise_at(
     bearing: &Bearing,
     eta: DynamicViscosity,
-    coolant: Coolant,
+    (feed, coolant): (&Feed, Coolant),
 ) -> Result<TemperatureInterval, NoFilm> {
     let film = bearing.film(eta)?;
-    Ok(rise(film.power, film.side_flow, coolant))
+    let flow = flow(bearing, feed, eta, &film);
+    Ok(rise(film.power, flow, coolant))
 }
 
 /// The thinnest viscosity with a full film, at eccentricity 0.97.
@@ -72,28 +80,30 @@ pub fn thinnest(bearing: &Bearing) -> DynamicViscosity {
 pub fn for_rise(
     bearing: &Bearing,
     wanted: TemperatureInterval,
-    coolant: Coolant,
+    (feed, coolant): (&Feed, Coolant),
 ) -> Option<DynamicViscosity> {
-    solved(bearing, wanted.base(), |film| {
-        rise(film.power, film.side_flow, coolant).base()
+    solved(bearing, wanted.base(), |film, eta| {
+        let flow = flow(bearing, feed, eta, film);
+        rise(film.power, flow, coolant).base()
     })
 }
 
 /// The viscosity of [`THICKEST_IN_AIR`]; `None` as for [`for_rise`].
 pub fn for_power(bearing: &Bearing, wanted: Power) -> Option<DynamicViscosity> {
-    solved(bearing, wanted.base(), |film| film.power.base())
+    solved(bearing, wanted.base(), |film, _| film.power.base())
 }
 
 /// The viscosity at which what grows with it reaches a value.
 fn solved(
     bearing: &Bearing,
     wanted: f64,
-    grows: impl Fn(&Film) -> f64,
+    grows: impl Fn(&Film, DynamicViscosity) -> f64,
 ) -> Option<DynamicViscosity> {
     let least = thinnest(bearing).base();
     let excess = |ln_eta: f64| {
-        let film = bearing.film(DynamicViscosity::from_base(exp(ln_eta)));
-        film.map_or(f64::NAN, |film| ln(grows(&film) / wanted))
+        let eta = DynamicViscosity::from_base(exp(ln_eta));
+        let film = bearing.film(eta);
+        film.map_or(f64::NAN, |film| ln(grows(&film, eta) / wanted))
     };
     let root = bracketed(ln(least), ln(least * 1e4), excess).ok()?;
     Some(DynamicViscosity::from_base(exp(root.at)))
@@ -116,21 +126,40 @@ mod tests {
     #[test]
     fn the_rise_is_that_of_the_settled_bearing() {
         let eta = DynamicViscosity::from_base(0.019_708_7);
-        let rise = rise_at(&bearing(), eta, Coolant::iso7902()).unwrap();
+        let rise = rise_at(&bearing(), eta, (&Feed::Drawn, Coolant::iso7902())).unwrap();
         assert!((rise.base() - 11.4527).abs() < 0.03, "{rise:?}");
+    }
+
+    /// With oil pressed through a hole the film rises less, and the two still undo each other.
+    #[test]
+    fn oil_pressed_through_cools() {
+        let bearing = bearing();
+        let pressure = crate::quantity::Pressure::from_base(2e5);
+        let hole = Feed::hole(bearing.geometry(), pressure, mm(8.0)).unwrap();
+        let coolant = Coolant::iso7902();
+        let eta = DynamicViscosity::from_base(0.02);
+        let drawn = rise_at(&bearing, eta, (&Feed::Drawn, coolant)).unwrap();
+        let pressed = rise_at(&bearing, eta, (&hole, coolant)).unwrap();
+        let film = bearing.film(eta).unwrap();
+        let besides = hole.flow(bearing.geometry(), eta, film.eccentricity);
+        let share = film.side_flow.base() / (film.side_flow.base() + besides.base());
+        assert!((pressed.base() / drawn.base() / share - 1.0).abs() < 1e-12);
+        let again = for_rise(&bearing, pressed, (&hole, coolant)).unwrap();
+        assert!((again.base() / eta.base() - 1.0).abs() < 1e-9);
     }
 
     #[test]
     fn viscosity_and_rise_undo_each_other_and_rise_together() {
         let bearing = bearing();
+        let fed = (&Feed::Drawn, Coolant::iso7902());
         let mut before = 0.0;
         for rise in [8.0, 11.0, 20.0, 40.0] {
-            let eta = for_rise(&bearing, kelvins(rise), Coolant::iso7902()).unwrap();
-            let again = rise_at(&bearing, eta, Coolant::iso7902()).unwrap();
+            let eta = for_rise(&bearing, kelvins(rise), fed).unwrap();
+            let again = rise_at(&bearing, eta, fed).unwrap();
             assert!((again.base() / rise - 1.0).abs() < 1e-9);
             assert!(eta.base() > before);
             before = eta.base();
         }
-        assert!(for_rise(&bearing, kelvins(1e-3), Coolant::iso7902()).is_none());
+        assert!(for_rise(&bearing, kelvins(1e-3), fed).is_none());
     }
 }

@@ -13,9 +13,10 @@ use crate::report::model::{Candidate as Row, Candidates, Phrase, RunKind, minus}
 use crate::weighing::Candidate;
 use std::fmt::Write as _;
 
-/// Oils told with bars and every reason; of a longer list the rest in figures, so that a sheet
-/// stays one to read.
-const IN_FULL: usize = 8;
+/// A list of so many oils is told with bars and every reason.
+const ALL_IN_FULL: usize = 16;
+/// Of a longer one so many, the rest in figures, so that a sheet stays one to read.
+const FIRST_IN_FULL: usize = 8;
 
 /// The table; none where nothing was weighed.
 pub(super) fn candidates(
@@ -26,12 +27,17 @@ pub(super) fn candidates(
     let lead = case.lead?;
     let (hot, cold) = (lead.judgement.at_hot, lead.judgement.at_start);
     let all = &case.w.candidates;
+    let in_full = if all.len() > ALL_IN_FULL {
+        FIRST_IN_FULL
+    } else {
+        ALL_IN_FULL
+    };
     let mut rows: Vec<Row> = all
         .iter()
         .enumerate()
         .map(|(i, c)| {
             let mut row = row(case, c, (hot, cold), numbers, tolerances);
-            if i >= IN_FULL && !row.picked && !row.in_use {
+            if i >= in_full && !row.picked && !row.in_use {
                 row.reason = reason(c, 1, case.units());
                 row.bars.bars.clear();
             }
@@ -45,11 +51,11 @@ pub(super) fn candidates(
         row.bars.axis = Some(i) == last;
     }
     let mut order = format!("{IN_WORDS} Sheared oils by their worn line when hot.");
-    if rows.len() > IN_FULL {
+    if rows.len() > in_full {
         let _ = write!(
             order,
             " From the {}th oil on the margins stand in figures, and the main reason alone.",
-            IN_FULL + 1
+            in_full + 1
         );
     }
     Some(Candidates {

@@ -4,7 +4,7 @@
 use super::case::Case;
 use super::gaps::{Found, Weight};
 use super::say;
-use crate::decide::ask::{Ask, Specification, ask};
+use crate::decide::ask::{Ask, NO_GREASE, Specification, ask};
 use crate::decide::gaps::effect::words;
 use crate::decide::mend::lever::Target;
 use crate::decide::mend::{Mended, mend};
@@ -25,10 +25,12 @@ const FULL: usize = 60;
 /// The section; none where nothing was weighed.
 pub(super) fn changes(case: &Case<'_, '_>, gaps: &[Found], machines: usize) -> Option<Changes> {
     case.lead?;
-    let rows: Vec<ChangeRow> = mended(case, machines)
-        .into_iter()
-        .filter_map(|c| row(case, c))
-        .collect();
+    let told = mended(case, machines);
+    let left = short(case).len() - told.len();
+    let mut rows: Vec<ChangeRow> = told.into_iter().filter_map(|c| row(case, c)).collect();
+    if left > 0 {
+        rows.push(elsewhere(case, left));
+    }
     let unsettles = unsettles(case, gaps);
     let ask_for = ask_for(case, machines);
     let any = !rows.is_empty() || !unsettles.is_empty() || !ask_for.is_empty();
@@ -58,7 +60,7 @@ fn ask_for(case: &Case<'_, '_>, machines: usize) -> Vec<Phrase> {
         Ask::NoRoom { vi } => vec![
             format!("No oil of one grade holds here, up to a viscosity index of {vi:.0}: the limits leave no room.").into(),
         ],
-        Ask::Grease => Vec::new(),
+        Ask::NoGrease => vec![say::stopped(&say::sentence(NO_GREASE)).into()],
     }
 }
 
@@ -84,15 +86,35 @@ fn specification(case: &Case<'_, '_>, spec: &Specification) -> Vec<Phrase> {
         .collect()
 }
 
+/// Where the changes of the oils that have no row are found.
+fn elsewhere(case: &Case<'_, '_>, left: usize) -> ChangeRow {
+    let noun = if left == 1 { "oil" } else { "oils" };
+    ChangeRow {
+        letter: String::new(),
+        oil: format!("{left} other {noun}"),
+        covers: String::new(),
+        change: Phrase::new().and(format!(
+            "Not worked out here; found by: filmwright mend {} OIL",
+            case.w.point.address()
+        )),
+        then: String::new(),
+    }
+}
+
+/// The oils that do not hold and that a change could be solved for.
+fn short<'c>(case: &Case<'c, '_>) -> Vec<&'c Candidate> {
+    let weighed = case.w.candidates.iter();
+    weighed
+        .filter(|c| c.judgement.verdict != Verdict::Holds)
+        .filter(|c| !c.judgement.doubts.undecided)
+        .collect()
+}
+
 /// The oils worth mending, in the order of the table: those that do not hold.
 fn mended<'c>(case: &Case<'c, '_>, machines: usize) -> Vec<&'c Candidate> {
     let most = if machines > FULL { 0 } else { ROWS };
     let first = |c: &Candidate| c.in_use || case.is_lead(c);
-    let weighed = case.w.candidates.iter();
-    let short: Vec<&Candidate> = weighed
-        .filter(|c| c.judgement.verdict != Verdict::Holds)
-        .filter(|c| !c.judgement.doubts.undecided)
-        .collect();
+    let short = short(case);
     let mut left = most.saturating_sub(short.iter().filter(|c| first(c)).count());
     short
         .into_iter()

@@ -137,7 +137,7 @@ fn of_input(case: &Case<'_, '_>, gap: &Gap, found: &decide::Found) -> Found {
         taken: match &gap.kind {
             GapKind::Range(lo, hi) => Some(f64::midpoint(lo.base, hi.base)),
             GapKind::Assumed { taken, .. } => Some(taken.base),
-            GapKind::Missing | GapKind::Fact => None,
+            GapKind::Word { .. } | GapKind::Missing | GapKind::Fact => None,
         },
     }
 }
@@ -145,7 +145,7 @@ fn of_input(case: &Case<'_, '_>, gap: &Gap, found: &decide::Found) -> Found {
 /// The margin at the value used meanwhile; an unknown with a range has none.
 fn used(case: &Case<'_, '_>, gap: &Gap) -> Option<f64> {
     match gap.kind {
-        GapKind::Assumed { .. } => case.lead.and_then(smallest),
+        GapKind::Assumed { .. } | GapKind::Word { .. } => case.lead.and_then(smallest),
         _ => None,
     }
 }
@@ -169,6 +169,9 @@ fn plausible(case: &Case<'_, '_>, gap: &Gap) -> String {
         }
         GapKind::Assumed { taken, lo, hi } => {
             format!("{} assumed, {} plausible", show(*taken), range(*lo, *hi))
+        }
+        GapKind::Word { taken, among } => {
+            format!("{taken} assumed, {} plausible", among.join(", "))
         }
         GapKind::Missing | GapKind::Fact => "not stated, no range".to_owned(),
     }

@@ -23,17 +23,7 @@ pub(super) fn running(case: &Case<'_, '_>) -> Vec<Phrase> {
 
 fn stands_on(case: &Case<'_, '_>, r: &Running) -> String {
     let ambient = say::temperature(r.drag.ambient.base(), case.units());
-    if r.calibrated {
-        format!(
-            "Running temperature at the hottest ambient by losses, calibrated on the reading with \
-             the oil in use; floors take the warmer. Drag at {ambient} ambient."
-        )
-    } else {
-        format!(
-            "Losses for information: no reading of the sump with the oil in use to calibrate them \
-             on. Drag at {ambient} ambient."
-        )
-    }
+    r.stands_on(&ambient)
 }
 
 fn one(case: &Case<'_, '_>, r: &Running) -> String {

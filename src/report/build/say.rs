@@ -3,7 +3,7 @@
 
 use crate::judge::Band;
 use crate::quantity::kind::Unit;
-use crate::quantity::show::{self, Toward, Units, in_unit, pretty_unit, unit_of};
+use crate::quantity::show::{self, Toward, Units, in_unit, pretty_unit, unit_for, unit_of};
 use crate::quantity::{Amount, Kind, KinematicViscosity, Measure, ThermodynamicTemperature};
 use crate::report::model::{Degrees, minus};
 
@@ -26,15 +26,6 @@ pub(super) fn celsius(kelvins: f64) -> f64 {
 /// m²/s as mm²/s, for drawings.
 pub(super) fn mm2_s(base: f64) -> f64 {
     unit_of(Kind::KinematicViscosity, Units::Si).from_base(base)
-}
-
-/// A film is a few ten-thousandths of a millimetre: it is told in micrometres.
-fn unit_for(amount: Amount, units: Units) -> &'static Unit {
-    let small = amount.kind == Kind::Length && amount.base.abs() < 5e-5 && amount.base != 0.0;
-    match Kind::Length.unit("um") {
-        Some(um) if small => um,
-        _ => unit_of(amount.kind, units),
-    }
 }
 
 /// The figure and the unit of a quantity.

@@ -408,7 +408,7 @@ fn converted(amount: Amount, written: &str) -> bool {
     if amount.kind == Kind::VgStep || written.contains("..") || written.starts_with("unknown") {
         return false;
     }
-    let unit = crate::quantity::show::unit_of(amount.kind, Units::Si);
+    let unit = crate::quantity::show::unit_for(amount, Units::Si);
     let shown = crate::quantity::show::in_unit(amount, unit, Toward::Nearest);
     let figure = shown.split(' ').next().unwrap_or("");
     let same = |word: &str| {

@@ -185,7 +185,7 @@ fn oil(counter: &mut Counter<'_>, part: &mut Part, body: &OilSheet) {
             ("facts", "What is stated", "Stated", !body.facts.is_empty()),
             (
                 "findings",
-                "What does not add up",
+                "What to know of it",
                 "Findings",
                 !body.findings.is_empty(),
             ),

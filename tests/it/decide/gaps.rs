@@ -67,6 +67,90 @@ fn a_gap_that_changes_nothing_says_so() {
     assert_eq!(gap["decides"], "nothing", "{gap}");
 }
 
+/// Neither base nor density of the oil is stated: the limit in mPa.s moves with the density, and
+/// the wax of a mineral base leaves a start near the pour point open where PAO has none.
+#[test]
+fn a_base_and_a_density_nobody_states_are_ranked_by_what_they_decide() {
+    let site = |limit: &str| {
+        format!(
+            "file: site 1\nmachines:\n  M1:\n    ambient: -24 .. 35 degC\n    lubrication: splash\n    oil now: X\n    sump rise: 40 K\n    start limit: {limit}, maker\n    parts:\n      - gear mesh: stage\n        pitch-line speed: 60 m/s\n"
+        )
+    };
+    let oils = |more: &str| {
+        format!(
+            "file: oils 1\nX:\n  kind: gear\n  classes: [CKC]\n  additives: [EP]\n  sulphur: inactive\n  viscosity: [100 mm2/s at 40 degC, 11.2 mm2/s at 100 degC]\n  pour point: -33 degC\n{more}"
+        )
+    };
+    let host = |limit: &str, more: &str| {
+        MemoryHost::new()
+            .with("site.yaml", &site(limit))
+            .with("oils.yaml", &oils(more))
+    };
+    let gaps = |limit: &str, more: &str| {
+        let json = on(host(limit, more), "gaps -f json -q").json();
+        json["gaps"].as_array().expect("a list").clone()
+    };
+    let key = |all: &[Value], key: &str| all.iter().find(|g| g["key"] == key).cloned();
+    let word = |limit: &str, more: &str| {
+        let json = on(host(limit, more), "weigh M1 -f json -q").json();
+        json["judgements"][0]["verdict"].as_str().map(str::to_owned)
+    };
+    let wide = "900000 mm2/s";
+    let found = key(&gaps(wide, ""), "base").expect("the base is a gap");
+    assert_eq!(found["decides"], "which oil", "{found}");
+    assert_eq!(found["value"]["value"], "mineral I");
+    assert_eq!(found["part"], "X");
+    let (mineral, pao) = (
+        word(wide, "  base: mineral I\n"),
+        word(wide, "  base: PAO\n"),
+    );
+    assert_eq!(
+        (mineral.as_deref(), pao.as_deref()),
+        (Some("open"), Some("tight"))
+    );
+    let verdicts = found["verdicts"].to_string();
+    assert!(
+        verdicts.contains("open") && verdicts.contains("tight"),
+        "{found}"
+    );
+    // stated, it is no gap
+    assert!(key(&gaps(wide, "  base: PAO\n"), "base").is_none());
+
+    // a limit in mPa.s between those the ends of the range give; oil shrinks by some 0.07 % a
+    // kelvin, 2.7 % from 15 to -24 degC (common practice)
+    let json = on(host(wide, ""), "oil X --at=-24degC -f json -q").json();
+    let point = &json["oil"]["points"][0]["new"]["value"];
+    let nu = point.as_f64().expect("a viscosity");
+    let found = key(&gaps(wide, "  base: PAO, no polymer\n"), "density").expect("a gap");
+    assert_eq!(found["decides"], "nothing", "no limit in mPa.s: {found}");
+    let (lo, hi) = (
+        found["value"]["range"][0].as_f64(),
+        found["value"]["range"][1].as_f64(),
+    );
+    let (lo, hi) = (lo.expect("low"), hi.expect("high"));
+    let limit = format!("{:.0} mPa.s", nu * 1e-3 * f64::midpoint(lo, hi) * 1.027);
+    let found = key(&gaps(&limit, "  base: PAO, no polymer\n"), "density").expect("a gap");
+    assert_eq!(found["decides"], "which oil", "{found}");
+    let end = |rho: f64| {
+        word(
+            &limit,
+            &format!("  base: PAO, no polymer\n  density: {rho} kg/m3 at 15 degC\n"),
+        )
+    };
+    assert_ne!(end(lo), end(hi));
+    let told = on(
+        host(&limit, "  base: PAO, no polymer\n"),
+        "gaps --letter -q",
+    )
+    .out;
+    assert!(told.contains("What is the density of X?"), "{told}");
+    let told = on(host(wide, ""), "gaps -q").out;
+    assert!(
+        told.contains("X: base") && told.contains("which oil"),
+        "{told}"
+    );
+}
+
 #[test]
 fn ranks_never_rise_down_the_list() {
     let order = [

@@ -38,3 +38,16 @@ fn the_sheet_tells_how_sure_it_is_only_where_asked() {
     assert!(page.contains("The verdict stands as it is."));
     assert!(page.contains("What would unsettle the proposal"));
 }
+
+/// Eight oils are mended on a sheet, and the sheet says where the others are found.
+#[test]
+fn oils_without_a_row_are_counted_and_the_command_is_named() {
+    let weighed = filmwright("weigh M08 --demo -f json -q").json();
+    let short = weighed["judgements"].as_array().expect("a list").iter();
+    let short = short.filter(|j| matches!(j["verdict"].as_str(), Some("tight" | "open" | "fails")));
+    let left = short.count() - 8;
+    assert!(left > 1, "{left}");
+    let page = sheet("", "M08");
+    assert!(page.contains(&format!("{left} other oils")), "not counted");
+    assert!(page.contains("Not worked out here; found by: filmwright mend M08 OIL"));
+}
