@@ -1,5 +1,6 @@
 //! A laboratory's table into bottles: every row kept, every cell either understood or named.
 
+mod alike;
 mod cell;
 mod day;
 mod headings;
@@ -55,7 +56,7 @@ pub fn read(map: Option<&SampleMap>, sheet: &Sheet, name: &str, file: FileId) ->
     TableRead {
         bottles,
         unused: headings.unused.clone(),
-        problems: reading.problems,
+        problems: alike::told_once(reading.problems),
     }
 }
 
@@ -375,7 +376,7 @@ impl TableReader<'_> {
                 )
                 .so("the day is not known")
                 .write(Write::words("a year of four figures, as 2026-07-18")),
-                true,
+                !day::looks_like_one(text.trim()),
             ),
         };
         misfits.push(Misfit {

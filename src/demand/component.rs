@@ -26,7 +26,7 @@ pub fn add<R: Recorder>(cx: &mut Context<'_, '_, R>, part: &Part, component: &Co
         let ends = [prefer.lo, prefer.hi].map(shown);
         cx.inform(
             part,
-            format!("preferred {} .. {} while running", ends[0], ends[1]),
+            format!("preferred {} to {} while running", ends[0], ends[1]),
             None,
         );
     }

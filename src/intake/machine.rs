@@ -117,6 +117,9 @@ impl<'r, 'a> RowReader<'r, 'a> {
             let name = self.machine.record.keys.remove(at);
             self.machine.record.keys.insert(0, name);
         }
+        // a register may hold many thousands of them
+        self.machine.record.keys.shrink_to_fit();
+        self.machine.record.notes.shrink_to_fit();
         self.machine
     }
 

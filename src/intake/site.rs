@@ -135,8 +135,12 @@ struct Outline {
     row: u32,
 }
 
-/// Drafts a site file from a register.
-pub fn draft(table: &Table<'_>, context: &Context<'_>) -> Draft {
+/// Drafts a site file from a register; `told` hears how many rows of how many are read.
+pub fn draft(
+    table: &Table<'_>,
+    context: &Context<'_>,
+    told: &mut dyn FnMut(usize, usize),
+) -> Draft {
     let mut reader = Reader {
         context,
         layout: table.layout,
@@ -157,6 +161,7 @@ pub fn draft(table: &Table<'_>, context: &Context<'_>) -> Draft {
     let mut hidden = Vec::new();
     for (i, line) in lines.iter().enumerate() {
         counts.rows += 1;
+        told(i, lines.len());
         let one = &outlines[i];
         if let Some(why) = not_carried(line, one, table.layout) {
             let texts: Vec<String> = line.fields().map(|f| f.content.text()).collect();
@@ -176,6 +181,7 @@ pub fn draft(table: &Table<'_>, context: &Context<'_>) -> Draft {
             listed(&hidden)
         )));
     }
+    drop((lines, outlines, ends));
     counts.missing = reader.missing;
     counts.records = machines.len();
     of_columns(&mut reader);

@@ -1,7 +1,7 @@
 //! The rows of a table: merged cells filled, hidden rows known.
 
 use super::layout::{Column, Layout};
-use crate::table::{Book, Content, Row, Sheet};
+use crate::table::{Book, Comment, Content, Row, Sheet};
 use std::collections::BTreeMap;
 
 /// A table ready to be read row by row.
@@ -12,6 +12,8 @@ pub struct Table<'b> {
     pub layout: &'b Layout,
     /// Where a cell is covered by a merged one: the row that holds its content, by column.
     merged: BTreeMap<u32, Vec<(u32, u32, u32)>>,
+    /// Comments by row.
+    comments: BTreeMap<u32, Vec<&'b Comment>>,
 }
 
 /// One row.
@@ -51,16 +53,21 @@ impl<'b> Table<'b> {
         for spans in merged.values_mut() {
             spans.sort_unstable();
         }
+        let mut comments: BTreeMap<u32, Vec<&'b Comment>> = BTreeMap::new();
+        for comment in &sheet.comments {
+            comments.entry(comment.row).or_default().push(comment);
+        }
         Self {
             sheet,
             layout,
             merged,
+            comments,
         }
     }
 
     /// Comments on the cells of a row.
-    pub fn comments(&self, row: u32) -> impl Iterator<Item = &'b crate::table::Comment> {
-        self.sheet.comments.iter().filter(move |c| c.row == row)
+    pub fn comments(&self, row: u32) -> impl Iterator<Item = &'b Comment> {
+        self.comments.get(&row).into_iter().flatten().copied()
     }
 
     /// Its rows below the headings, those that hold anything.
@@ -112,7 +119,7 @@ impl<'b> Line<'b> {
     }
 
     /// Comments on its cells.
-    pub fn comments(&self) -> impl Iterator<Item = &'b crate::table::Comment> {
+    pub fn comments(&self) -> impl Iterator<Item = &'b Comment> {
         self.table.comments(self.number)
     }
 

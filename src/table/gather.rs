@@ -40,6 +40,9 @@ impl<'t> Gather<'t> {
             ));
         }
         self.drop_empty();
+        if let Some(full) = self.sheet.rows.last_mut() {
+            full.cells.shrink_to_fit();
+        }
         self.sheet.rows.push(Row {
             number,
             hidden,

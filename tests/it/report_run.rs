@@ -3,6 +3,7 @@
 mod labels;
 mod oils;
 mod pages;
+mod parts;
 mod sites;
 
 use crate::report_pages::markup::{Piece, tags};

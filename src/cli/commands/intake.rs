@@ -275,13 +275,17 @@ fn drafted(
         at_ambient: opened.map.at_ambient.as_deref(),
     };
     let table = Table::new(&opened.book, &opened.layout);
-    Ok(match opened.layout.makes {
+    let draft = match opened.layout.makes {
         _ if inputs::is_one(&opened.layout) => {
             inputs::draft(&table, opened.layout.makes, &opened.name)
         }
-        Makes::Site => site::draft(&table, &context),
+        Makes::Site => site::draft(&table, &context, &mut |done, of| {
+            session.progress("reading rows", done, of);
+        }),
         Makes::Oils => oils::draft(&table, &context),
-    })
+    };
+    session.host.progress_end();
+    Ok(draft)
 }
 
 /// How the file was read, a clause each.

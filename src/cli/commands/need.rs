@@ -59,15 +59,19 @@ fn from_files(session: &mut Session<'_>, args: &Need) -> Result<Exit, Exit> {
     };
     let scales = Scales::new(&loaded.site, &loaded.rules, settings)
         .map_err(|(oil, misfit)| session.misfit(&oil, &misfit))?;
-    let all: Vec<(&Point, _)> = points
-        .into_iter()
-        .map(|p| (p, point_demands(p, &loaded.site.house, &loaded.rules)))
-        .collect();
+    let of = points.len();
+    let mut all: Vec<(&Point, PointDemands)> = Vec::with_capacity(of);
+    for point in points {
+        session.progress("working out points", all.len(), of);
+        let demands = point_demands(point, &loaded.site.house, &loaded.rules);
+        all.push((point, demands));
+    }
     let asked = if args.ask {
-        asked(&scales, &all)
+        asked(session, &scales, &all)
     } else {
         Vec::new()
     };
+    session.host.progress_end();
     Ok(match session.shared.format {
         Format::Json => {
             let head = session.head(&loaded);
@@ -103,12 +107,17 @@ fn from_files(session: &mut Session<'_>, args: &Need) -> Result<Exit, Exit> {
 }
 
 /// The oil to ask for on each point.
-fn asked<'a>(scales: &Scales<'a>, all: &[(&'a Point, PointDemands)]) -> Vec<(Weighed<'a>, Ask)> {
-    all.iter()
-        .map(|(point, _)| {
-            let weighed = scales.weigh(point);
-            let found = ask(scales, &weighed);
-            (weighed, found)
-        })
-        .collect()
+fn asked<'a>(
+    session: &mut Session<'_>,
+    scales: &Scales<'a>,
+    all: &[(&'a Point, PointDemands)],
+) -> Vec<(Weighed<'a>, Ask)> {
+    let mut asked = Vec::with_capacity(all.len());
+    for (point, _) in all {
+        session.progress("weighing points", asked.len(), all.len());
+        let weighed = scales.weigh(point);
+        let found = ask(scales, &weighed);
+        asked.push((weighed, found));
+    }
+    asked
 }

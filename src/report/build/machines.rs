@@ -88,7 +88,7 @@ fn row(
     });
     MachineRow {
         group,
-        tag: Phrase::new().link(tag, d.href.clone()),
+        tag: Phrase::new().tag_link(tag, d.href.clone()),
         name: String::new(),
         needs: d.needs.clone(),
         oil: oil.unwrap_or_else(|| register::no_oil(d.mark).to_owned()),

@@ -53,9 +53,10 @@ pub(super) fn facts(t: &Told, units: Units) -> Vec<Said> {
     t.facts
         .iter()
         .map(|(key, text)| {
+            // what people wrote keeps its units and is only set
             let own = matches!(*key, "source" | "note");
             let text = if own {
-                text.clone()
+                say::set(text)
             } else {
                 say::told(text, units)
             };

@@ -176,3 +176,31 @@ fn no_table_breaks_the_reader() {
         prop_assert!(matches!(ran.exit, Exit::Done | Exit::Input), "{:?}", ran.exit);
     });
 }
+
+#[test]
+fn a_whole_column_of_one_mistake_is_told_once_with_its_rows() {
+    let rows: String = (1..=12)
+        .map(|n| format!("HP-1;H46;2026-10-{n:02};45,{n}\n"))
+        .collect();
+    let ran = audit(&format!("machine;label;drawn;nu40\n{rows}"), "");
+    assert_eq!(ran.err.matches("[cell-unread]").count(), 1, "{}", ran.err);
+    assert!(
+        ran.err
+            .contains("11 more cells of this column are alike, rows 3, 4,"),
+        "{}",
+        ran.err
+    );
+    // nothing lost: every cell is kept as it stands
+    let document = ran.json();
+    let samples = document["samples"].as_array().expect("samples");
+    let kept = |s: &&serde_json::Value| s["not_understood"].as_array().map(Vec::len) == Some(1);
+    assert_eq!(samples.iter().filter(kept).count(), 12);
+}
+
+#[test]
+fn an_odd_day_beside_an_odd_cell_is_no_shifted_row() {
+    let table = "machine,label,drawn,nu40,water\nHP-1,H46,01/09/26,45.9,wet\n";
+    let ran = audit(table, "dates: day-month-year\n");
+    assert!(!ran.err.contains("[row-shifted]"), "{}", ran.err);
+    assert_eq!(ran.json()["samples"][0]["readings"]["nu40"]["value"], 45.9);
+}

@@ -65,7 +65,7 @@ pub(super) fn articles(page: &str) -> Vec<String> {
 }
 
 /// The rows of the tables of a class, table by table: the words of each row.
-fn rows(page: &str, class: &str) -> Vec<Vec<String>> {
+pub(super) fn rows(page: &str, class: &str) -> Vec<Vec<String>> {
     let mut tables: Vec<Vec<String>> = Vec::new();
     let mut inside = false;
     for piece in tags(page) {
@@ -95,7 +95,7 @@ fn rows(page: &str, class: &str) -> Vec<Vec<String>> {
 }
 
 /// The row of an oil.
-fn row_of<'r>(table: &'r [String], oil: &str) -> &'r str {
+pub(super) fn row_of<'r>(table: &'r [String], oil: &str) -> &'r str {
     table
         .iter()
         .find(|row| row.split_whitespace().any(|word| word == oil))
@@ -103,7 +103,7 @@ fn row_of<'r>(table: &'r [String], oil: &str) -> &'r str {
 }
 
 /// What the sheet prints of one judgement: margins rounded down, viscosities towards caution.
-fn figures(j: &Value) -> Vec<String> {
+pub(super) fn figures(j: &Value) -> Vec<String> {
     let mut all = Vec::new();
     let value = |v: &Value| v["value"].as_f64();
     for end in ["hot", "cold"] {
