@@ -4,6 +4,7 @@
 //! code as any other, and says that it comes from the command line.
 
 mod aim;
+mod put;
 
 pub use aim::About;
 
@@ -76,7 +77,7 @@ impl Settings {
             let value = set.slice(entry.value.span);
             let found = aim::aim(problems, (name.as_deref(), entry), value, (about, trees));
             for aim in found.map_or(Vec::new(), |aim| aim.of_records(entry, about)) {
-                aim::put(trees, &aim, entry);
+                put::put(trees, &aim, entry);
                 self.aims.push((entry.clone(), aim));
             }
         }
