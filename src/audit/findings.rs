@@ -1,7 +1,10 @@
 //! What was found, in order of urgency, each with a proposal of what to do.
 
+mod changed;
+mod condition;
+mod without;
+
 use super::Audit;
-use super::causes::{Cause, Named};
 use super::judged::Judged;
 use super::limits::Level;
 use super::trend::Trend;
@@ -10,7 +13,10 @@ use super::whose::Whose;
 use crate::judge::Verdict;
 use crate::quantity::show::{Toward, fixed, margin, significant};
 use crate::weighing::Scales;
+use changed::changed;
+use condition::{condition, metals, trend};
 use std::fmt::Write as _;
+use without::{unmatched, unsampled};
 
 /// A finding.
 #[derive(Clone, Debug, PartialEq)]
@@ -297,164 +303,6 @@ fn sentence(text: &str) -> String {
     )
 }
 
-/// Another oil, or the labelled one changed: what it is likely to be.
-#[expect(clippy::too_many_lines, reason = "one sentence after the other")]
-fn changed(audit: &Audit, unit: &Unit, place: usize, scales: &Scales<'_>) -> Option<Finding> {
-    let j = &audit.judged[place];
-    let first = j.diagnosis.causes.first();
-    let viscosity = j.against.iter().filter(|a| a.on.starts_with("viscosity"));
-    let level = viscosity.map(|a| a.level).max().unwrap_or_default();
-    let named: Vec<&Named> = j
-        .diagnosis
-        .causes
-        .iter()
-        .filter(|n| n.likelihood >= 0.5)
-        .collect();
-    if first.is_none() && level == Level::Fine {
-        return None;
-    }
-    let urgent = named.iter().any(|n| {
-        matches!(
-            n.cause,
-            Cause::CopperAttack | Cause::CoolingWater | Cause::Cracking | Cause::Dilution
-        )
-    });
-    let level = match level {
-        Level::Act => Level::Act,
-        _ if urgent => Level::Act,
-        _ => Level::Watch,
-    };
-    let title = match first {
-        Some(_) if j.diagnosis.undecided => "Changed, and the cause is not decided".to_owned(),
-        Some(n) => sentence(n.cause.says()),
-        None => "Changed, and no cause stands out".to_owned(),
-    };
-    let moved = match (j.change.nu40, j.change.nu100) {
-        (Some(a), Some(b)) => format!(
-            "{} at 40 degC, {} at 100 degC against new {}",
-            share(a),
-            share(b),
-            label(j, scales)
-        ),
-        (Some(a), None) => format!(
-            "{} at 40 degC against new {}; 100 degC was not measured",
-            share(a),
-            label(j, scales)
-        ),
-        (None, Some(b)) => format!(
-            "{} at 100 degC against new {}; 40 degC was not measured",
-            share(b),
-            label(j, scales)
-        ),
-        (None, None) => "no viscosity was measured".to_owned(),
-    };
-    let mut text = format!("{}.", sentence(&moved));
-    if j.diagnosis.undecided {
-        let names: Vec<String> = j
-            .diagnosis
-            .causes
-            .iter()
-            .map(|n| n.cause.says().to_owned())
-            .collect();
-        let _ = write!(text, " Not decided between {}.", names.join(", "));
-    }
-    if let Some(oils) = first.map(|n| &n.oils).filter(|o| !o.is_empty()) {
-        let listed: Vec<String> = oils
-            .iter()
-            .map(|o| {
-                format!(
-                    "{} (about {} %)",
-                    o.says,
-                    fixed(100.0 * o.share, 0, Toward::Nearest)
-                )
-            })
-            .collect();
-        let _ = write!(text, " Likely mixed in: {}.", listed.join("; "));
-    }
-    if !j.diagnosis.would_tell.is_empty() {
-        let names: Vec<&str> = j.diagnosis.would_tell.iter().map(|r| r.says()).collect();
-        let _ = write!(text, " Not measured, and would tell: {}.", names.join(", "));
-    }
-    let act = match first {
-        Some(_) if j.diagnosis.undecided => {
-            "have the missing figures measured, or send the sample for infrared against new oil"
-        }
-        Some(n) => n.cause.act(),
-        None => "sample again, with acid number, flash point and elements",
-    };
-    let urgency = if level == Level::Act { 10.0 } else { 30.0 };
-    Some(plain(
-        unit, place, "changed", level, urgency, &title, text, act,
-    ))
-}
-
-fn share(x: f64) -> String {
-    let text = fixed(100.0 * x, 1, Toward::Nearest);
-    if x > 0.0 && text != "0.0" {
-        format!("+{text} %")
-    } else {
-        format!("{text} %")
-    }
-}
-
-/// Water, acids, cleanliness and the other figures against their limits.
-fn condition(audit: &Audit, unit: &Unit, place: usize) -> Vec<Finding> {
-    let j = &audit.judged[place];
-    let mut list = Vec::new();
-    let over: Vec<&super::readings::Against> = j
-        .against
-        .iter()
-        .filter(|a| a.level > Level::Fine && !a.on.starts_with("viscosity"))
-        .collect();
-    if let Some(level) = over.iter().map(|a| a.level).max() {
-        let says: Vec<String> = over.iter().map(|a| limit_words(a)).collect();
-        let water_named = j
-            .diagnosis
-            .causes
-            .iter()
-            .any(|n| matches!(n.cause, Cause::Water | Cause::CoolingWater));
-        let act = if water_named {
-            Cause::Water.act()
-        } else {
-            "sample again soon; plan the oil change where it is confirmed"
-        };
-        list.push(plain(
-            unit,
-            place,
-            "over-limit",
-            level,
-            15.0,
-            "Figures over their limits",
-            format!("{}.", sentence(&says.join("; "))),
-            act,
-        ));
-    }
-    if let Some(clean) = j.clean.as_ref().filter(|c| c.level > Level::Fine)
-        && let Some((target, part, _)) = &clean.target
-    {
-        let over = clean.over.unwrap_or(0);
-        let counted = if clean.from_counts {
-            ", from counts"
-        } else {
-            ""
-        };
-        list.push(plain(unit, place, "cleanliness", clean.level, 25.0, "Dirtier than its strictest part asks",
-            format!("Cleanliness {}{counted} against {target} ({part}): {over} codes over, each of which doubles the particles.", clean.code),
-            &format!("filter to {target}; no oil change for that")));
-    }
-    list
-}
-
-fn limit_words(a: &super::readings::Against) -> String {
-    format!(
-        "{}: {} (rule {}, {})",
-        a.says,
-        a.level.word(),
-        a.limit.rule,
-        a.limit.source
-    )
-}
-
 /// The trend in a sentence.
 pub fn trend_words(trend: &Trend) -> String {
     match trend {
@@ -486,123 +334,6 @@ pub fn trend_words(trend: &Trend) -> String {
             says
         }
     }
-}
-
-fn trend(unit: &Unit, place: usize) -> Option<Finding> {
-    let Trend::Moves(m) = &unit.trend else {
-        return None;
-    };
-    let title = if m.slope < 0.0 {
-        "Thinning"
-    } else {
-        "Thickening"
-    };
-    Some(plain(
-        unit,
-        place,
-        "trend",
-        Level::Watch,
-        35.0,
-        title,
-        format!("{}.", sentence(&trend_words(&unit.trend))),
-        "sample again in a quarter; plan the oil change before the earlier date",
-    ))
-}
-
-fn metals(unit: &Unit, place: usize) -> Option<Finding> {
-    let first = unit.rises.first()?;
-    let says: Vec<&str> = unit.rises.iter().map(|r| r.says.as_str()).collect();
-    let urgent = unit.rises.iter().any(|r| r.urgent);
-    let level = if urgent { Level::Act } else { Level::Watch };
-    Some(plain(
-        unit,
-        place,
-        "metals",
-        level,
-        33.0,
-        &format!("{} rises", sentence(first.element.says())),
-        format!("{}.", sentence(&says.join("; "))),
-        "look at the parts named; halve the sampling interval",
-    ))
-}
-
-fn unsampled(audit: &Audit, scales: &Scales<'_>) -> Vec<Finding> {
-    let mut list = Vec::new();
-    for u in &audit.unsampled {
-        let name = scales.site.points[u.point].address();
-        let oil = u.oil.map_or("an unknown oil".to_owned(), |o| {
-            scales.site.oils[o].id.clone()
-        });
-        let found = if u.barred.is_empty() {
-            (u.verdict == Some(Verdict::Fails)).then(|| {
-                (
-                    "As labelled it does not serve",
-                    u.because.first().cloned().unwrap_or_default(),
-                )
-            })
-        } else {
-            let by: Vec<&str> = u.barred.iter().map(|c| c.says.as_str()).collect();
-            Some(("The labelled oil is barred here", by.join("; ")))
-        };
-        let Some((title, why)) = found else {
-            continue;
-        };
-        list.push(Finding {
-            kind: "unsampled",
-            level: Level::Act,
-            machines: vec![name],
-            title: format!("{title}, not sampled"),
-            text: format!(
-                "No sample; judged as the label says ({oil}). {}.",
-                sentence(&why)
-            ),
-            act: "change the specification (filmwright weigh), and draw a sample".to_owned(),
-            judged: None,
-            urgency: 28.0,
-        });
-    }
-    list
-}
-
-fn unmatched(audit: &Audit, u: &super::Unmatched) -> Finding {
-    let b = &audit.bottles[u.bottle];
-    let name = if b.machine.is_empty() {
-        b.name()
-    } else {
-        b.machine.clone()
-    };
-    let judged = audit.judged.iter().position(|j| j.bottle == u.bottle);
-    let causes = judged.map_or(String::new(), |p| {
-        let named: Vec<&str> = audit.judged[p]
-            .diagnosis
-            .causes
-            .iter()
-            .map(|n| n.cause.says())
-            .collect();
-        if named.is_empty() {
-            String::new()
-        } else {
-            format!(" Against its label: {}.", named.join(", "))
-        }
-    });
-    let meant = u
-        .meant
-        .as_ref()
-        .map_or(String::new(), |m| format!(" {m} may be meant."));
-    Finding {
-        kind: "unmatched",
-        level: Level::Watch,
-        machines: vec![name],
-        title: "Bottle without a machine".to_owned(),
-        text: format!("{} ({}): {}.{meant}{causes}", b.name(), row(b), u.why),
-        act: "add an alias to the samples file, or --match \"NAME=TAG\"".to_owned(),
-        judged,
-        urgency: 70.0,
-    }
-}
-
-fn row(b: &super::bottle::Bottle) -> String {
-    format!("row {}", b.place.row)
 }
 
 /// A margin as printed.

@@ -1,15 +1,19 @@
 //! One bottle judged: whose oil, how far changed, whether it serves, and why.
 
-use super::bottle::{Bottle, Code};
+mod sample;
+
+pub use sample::{Clean, Judged, Label};
+
+use super::bottle::Bottle;
 use super::causes::{Around, Causes, Diagnosis, Setting};
 use super::limits::{Level, Limits, usual_place};
 use super::profile::{From, Profile};
-use super::readings::{Against, Change};
+use super::readings::Change;
 use super::scatter::Scatter;
 use super::serves::{self, Serves};
 use super::whose::Whose;
 use super::{Unsampled, readings, whose};
-use crate::judge::{PreparedPoint, Verdict};
+use crate::judge::PreparedPoint;
 use crate::model::facts::{PointFacts, SumpNow};
 use crate::model::oil::OilKind;
 use crate::model::rulebook::used_oil::Reading as On;
@@ -23,104 +27,6 @@ use crate::weighing::{Condition, Scales, Weighed, facts, oil_in_use};
 use jiff::civil::Date;
 use std::collections::BTreeMap;
 use std::sync::{Arc, PoisonError, RwLock};
-
-/// Which oil a bottle is said to hold.
-#[derive(Clone, Debug, Default, PartialEq, Eq)]
-pub struct Label {
-    /// As written on the bottle; none where nothing is.
-    pub written: Option<String>,
-    /// Its place in the oil list.
-    pub oil: Option<usize>,
-    /// Whether the bottle says nothing and the oil in use of the machine stands in.
-    pub from_machine: bool,
-    /// The oil the machine is said to hold, where it is another.
-    pub machine_holds: Option<usize>,
-}
-
-/// Cleanliness against its target.
-#[derive(Clone, Debug, PartialEq)]
-pub struct Clean {
-    /// The code.
-    pub code: Code,
-    /// Whether it was worked out from counts.
-    pub from_counts: bool,
-    /// The target, for what, and where it comes from.
-    pub target: Option<(Code, String, String)>,
-    /// Codes over the target.
-    pub over: Option<i16>,
-    /// What it calls for.
-    pub level: Level,
-}
-
-/// A bottle judged.
-#[derive(Clone, Debug)]
-pub struct Judged {
-    /// The bottle.
-    pub bottle: usize,
-    /// The point, by its place in the site; none where it is not known.
-    pub point: Option<usize>,
-    /// The label.
-    pub label: Label,
-    /// Where the viscosity of new oil comes from.
-    pub baseline: Option<From>,
-    /// Movement from new oil.
-    pub change: Change,
-    /// Figures against their limits, viscosity first.
-    pub against: Vec<Against>,
-    /// Cleanliness.
-    pub clean: Option<Clean>,
-    /// Whose oil.
-    pub whose: Whose,
-    /// Why that is not known.
-    pub why_not_known: Option<String>,
-    /// Whether it serves; none where the machine is not known or no viscosity was measured.
-    pub serves: Option<Serves>,
-    /// Why the labelled oil is barred here.
-    pub barred: Vec<Condition>,
-    /// Causes.
-    pub diagnosis: Diagnosis,
-    /// Age on the day of the audit, days.
-    pub age_days: Option<i32>,
-    /// Whether it is past the age the site allows.
-    pub too_old: bool,
-    /// Whether another bottle is of the same machine and day.
-    pub twice: bool,
-    /// Whether it is the latest of its fill.
-    pub latest: bool,
-}
-
-impl Judged {
-    /// The verdict, after age and doubles: open where the sample says nothing of today.
-    pub fn verdict(&self) -> Option<Verdict> {
-        if self.too_old || self.twice {
-            return self.point.map(|_| Verdict::Open);
-        }
-        match &self.serves {
-            Some(serves) => Some(serves.verdict),
-            None => self.point.map(|_| Verdict::Open),
-        }
-    }
-
-    /// Whether the labelled oil is the one in it, so that what bars that oil bars this one.
-    pub fn is_barred(&self) -> bool {
-        !self.barred.is_empty() && matches!(self.whose, Whose::AsLabelled | Whose::Changed)
-    }
-
-    /// The word of the verdict: holds, tight, open, fails, barred.
-    pub fn word(&self) -> Option<&'static str> {
-        if self.is_barred() && !self.too_old && !self.twice {
-            return Some("barred");
-        }
-        self.verdict().map(Verdict::word)
-    }
-
-    /// The greatest level of its readings.
-    pub fn level(&self) -> Level {
-        let clean = self.clean.as_ref().map(|c| c.level);
-        let all = self.against.iter().map(|a| a.level).chain(clean);
-        all.max().unwrap_or_default()
-    }
-}
 
 /// Everything about a point and a label that its bottles share.
 struct Pair<'a> {

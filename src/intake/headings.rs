@@ -202,7 +202,7 @@ fn by_unit(makes: Makes, heading: &Heading) -> Option<(u8, &'static str)> {
         Unit::Of(Kind::RotationalSpeed, _) => "speed",
         Unit::Of(Kind::Power, _) => "gear mesh: power",
         Unit::Of(Kind::Temperature, _) if has("oil") || has("sump") => "sump",
-        _ => return None,
+        Unit::Of(..) => return None,
     };
     Some((1, word))
 }

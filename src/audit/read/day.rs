@@ -70,7 +70,7 @@ pub(super) fn read(content: Option<&Content>, order: Option<DateOrder>) -> Day {
 pub(super) fn looks_like_one(text: &str) -> bool {
     let groups: Vec<&str> = text.split(['-', '/', '.', ' ']).collect();
     let figures = |g: &&str| !g.is_empty() && g.len() <= 4 && g.bytes().all(|b| b.is_ascii_digit());
-    groups.len() == 3 && groups.iter().all(|g| figures(&g))
+    groups.len() == 3 && groups.iter().all(figures)
 }
 
 const ORDERS: [DateOrder; 3] = [

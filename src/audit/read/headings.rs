@@ -1,11 +1,14 @@
 //! Which column of a table holds what.
 
 use super::cell::How;
-use crate::model::sample::{Column, Reading, SampleMap};
+use crate::model::sample::{Column, SampleMap};
 use crate::problem::{Code, Problem, Write, suggest};
 use crate::source::Place;
 use crate::source::place::Cell;
 use crate::table::{Row, Sheet};
+use known::{faintly_known, known, parted};
+
+mod known;
 
 /// Rows looked at for the headings.
 const LOOKED_AT: usize = 30;
@@ -29,238 +32,6 @@ impl Headings {
         let found = self.all.iter().find(|(c, _)| *c == column);
         found.map_or("", |(_, h)| h.as_str())
     }
-}
-
-/// Other names under which a column is known, in the bare form of [`bare`].
-const KNOWN: &[(&str, &[&str])] = &[
-    (
-        "bottle",
-        &[
-            "sample",
-            "sampleno",
-            "sampleid",
-            "samplenumber",
-            "bottleno",
-            "bottleid",
-            "labno",
-            "reportno",
-        ],
-    ),
-    (
-        "machine",
-        &[
-            "unit",
-            "unitid",
-            "tag",
-            "equipment",
-            "equipmentid",
-            "asset",
-            "assetid",
-            "component",
-            "machineid",
-            "point",
-        ],
-    ),
-    (
-        "label",
-        &[
-            "oil",
-            "oilname",
-            "lubricant",
-            "oilonlabel",
-            "labelled",
-            "product",
-        ],
-    ),
-    (
-        "drawn",
-        &[
-            "date",
-            "sampledate",
-            "datesampled",
-            "sampled",
-            "drawnon",
-            "samplingdate",
-            "datedrawn",
-        ],
-    ),
-    (
-        "hours on oil",
-        &["oilhours", "hrsonoil", "oilage", "oilhrs"],
-    ),
-    (
-        "hours on machine",
-        &[
-            "machinehours",
-            "hours",
-            "hrsonmachine",
-            "unithours",
-            "servicehours",
-        ],
-    ),
-    ("topped up", &["topup", "oiladded", "makeup", "topupl"]),
-    (
-        "nu40",
-        &[
-            "kv40",
-            "v40",
-            "visc40",
-            "visc40c",
-            "viscosity40",
-            "viscosity40c",
-            "viscosity40degc",
-            "kv40c",
-            "viscat40c",
-            "viscosityat40c",
-            "viscosityat40degc",
-            "vis40",
-        ],
-    ),
-    (
-        "nu100",
-        &[
-            "kv100",
-            "v100",
-            "visc100",
-            "visc100c",
-            "viscosity100",
-            "viscosity100c",
-            "viscosity100degc",
-            "kv100c",
-            "viscat100c",
-            "viscosityat100c",
-            "viscosityat100degc",
-            "vis100",
-        ],
-    ),
-    (
-        "density",
-        &["density15", "density15c", "density15degc", "rho15"],
-    ),
-    (
-        "flash",
-        &["flashpoint", "flashcoc", "flashc", "flashpointc"],
-    ),
-    ("acid number", &["an", "tan", "acidno", "totalacidnumber"]),
-    ("base number", &["bn", "tbn", "baseno", "totalbasenumber"]),
-    (
-        "water",
-        &["h2o", "watercontent", "waterppm", "karlfischer", "waterkf"],
-    ),
-    (
-        "iso4406",
-        &[
-            "iso",
-            "isocode",
-            "cleanliness",
-            "cleanlinesscode",
-            "particlecode",
-        ],
-    ),
-    (
-        "oxidation",
-        &["oxid", "ftiroxidation", "oxidationabscm", "ox"],
-    ),
-    ("nitration", &["nitr", "ftirnitration"]),
-    (
-        "oxidation life left",
-        &["rpvot", "rpvotofnew", "rulerofnew"],
-    ),
-    ("fuel", &["fueldilution", "dilution"]),
-    ("soot", &["sootcontent"]),
-    ("count 4", &["particles4um", "c4um", "p4", "count4um"]),
-    ("count 6", &["particles6um", "c6um", "p6", "count6um"]),
-    ("count 14", &["particles14um", "c14um", "p14", "count14um"]),
-    (
-        "flags",
-        &[
-            "comments",
-            "comment",
-            "remarks",
-            "remark",
-            "note",
-            "notes",
-            "labcomment",
-        ],
-    ),
-    ("Fe", &["iron"]),
-    ("Cu", &["copper"]),
-    ("Pb", &["lead"]),
-    ("Sn", &["tin"]),
-    ("Sb", &["antimony"]),
-    ("Al", &["aluminium", "aluminum"]),
-    ("Cr", &["chromium", "chrome"]),
-    ("Ni", &["nickel"]),
-    ("Mo", &["molybdenum"]),
-    ("Ag", &["silver"]),
-    ("Ti", &["titanium"]),
-    ("V", &["vanadium"]),
-    ("Mn", &["manganese"]),
-    ("Si", &["silicon"]),
-    ("Na", &["sodium"]),
-    ("K", &["potassium"]),
-    ("Li", &["lithium"]),
-    ("B", &["boron"]),
-    ("Ca", &["calcium"]),
-    ("Mg", &["magnesium"]),
-    ("Ba", &["barium"]),
-    ("P", &["phosphorus"]),
-    ("Zn", &["zinc"]),
-    ("S", &["sulphur", "sulfur"]),
-];
-
-/// A heading without its unit, case and separators: `Visc. @ 40 °C (cSt)` is `visc40c`.
-fn bare(heading: &str) -> String {
-    let (name, _) = parted(heading);
-    let letters = name.chars().filter(|c| c.is_alphanumeric());
-    letters.flat_map(char::to_lowercase).collect()
-}
-
-/// A heading's name and the unit in brackets or behind a comma.
-fn parted(heading: &str) -> (&str, Option<&str>) {
-    for (open, close) in [('(', ')'), ('[', ']')] {
-        if let Some((name, rest)) = heading.rsplit_once(open)
-            && let Some((unit, _)) = rest.split_once(close)
-            && !name.trim().is_empty()
-        {
-            return (name.trim(), Some(unit.trim()));
-        }
-    }
-    match heading.rsplit_once(',') {
-        Some((name, unit)) if !name.trim().is_empty() => (name.trim(), Some(unit.trim())),
-        _ => (heading.trim(), None),
-    }
-}
-
-/// The column a heading means by itself.
-fn known(heading: &str) -> Option<Column> {
-    let name = bare(heading);
-    if name.is_empty() {
-        return None;
-    }
-    let same = |key: &str| bare(key) == name;
-    let by_key = Column::TEXTS
-        .iter()
-        .map(|(k, _)| *k)
-        .chain(Reading::ALL.iter().map(|r| r.key()));
-    if let Some(key) = by_key.clone().find(|k| same(k)) {
-        return Column::of(key);
-    }
-    if let Some((key, _)) = KNOWN
-        .iter()
-        .find(|(_, names)| names.contains(&name.as_str()))
-    {
-        return Column::of(key);
-    }
-    let new = name
-        .strip_suffix("new")
-        .or_else(|| name.strip_prefix("new"))?;
-    let reading = Reading::ALL.iter().find(|r| bare(r.key()) == new).copied();
-    let also = || {
-        let found = KNOWN.iter().find(|(_, names)| names.contains(&new))?;
-        Reading::of(found.0)
-    };
-    reading.or_else(also).map(Column::New)
 }
 
 /// What the problems of a table are told with.
@@ -289,7 +60,10 @@ pub(super) fn find(
     let named = map.map_or(&[][..], |m| &m.columns);
     let hits = |row: &Row| {
         let texts = row.cells.iter().map(|c| c.content.text());
-        let hit = |t: &String| named.iter().any(|(_, h)| same(t, &h.value)) || known(t).is_some();
+        let hit = |t: &String| {
+            named.iter().any(|(_, h)| same(t, &h.value))
+                || known(t).or_else(|| faintly_known(t)).is_some()
+        };
         texts.filter(hit).count()
     };
     let rows = about.sheet.rows.iter().take(LOOKED_AT);
@@ -370,6 +144,18 @@ fn columns(
             continue;
         }
         found.push((*at, column, how(map, column, heading)));
+    }
+    // a heading that may as well mean something else counts where none says it better
+    for (at, heading) in all {
+        let Some(column) = faintly_known(heading) else {
+            continue;
+        };
+        if !found
+            .iter()
+            .any(|(c, other, _)| c == at || *other == column)
+        {
+            found.push((*at, column, how(map, column, heading)));
+        }
     }
     let has = |column| found.iter().any(|(_, c, _)| *c == column);
     if told.is_empty() && !has(Column::Machine) && !has(Column::Label) {
@@ -483,32 +269,5 @@ fn no_headings(about: &About<'_>) -> Problem {
         None => problem
             .why("a row with two headings that the map names, or that are named as the keys are, is wanted within the first 30 rows")
             .write(Write::words("columns: { machine: HEADING, drawn: HEADING, nu40: HEADING … } in the samples file")),
-    }
-}
-
-#[cfg(test)]
-mod tests {
-    use super::*;
-
-    #[test]
-    fn headings_are_known_without_unit_and_case() {
-        assert_eq!(
-            known("Visc. @ 40 °C (cSt)"),
-            Some(Column::InUse(Reading::Nu40))
-        );
-        assert_eq!(known("Visc 40C (cSt)"), Some(Column::InUse(Reading::Nu40)));
-        assert_eq!(known("KV100 [mm²/s]"), Some(Column::InUse(Reading::Nu100)));
-        assert_eq!(
-            known("hours_on_oil"),
-            Some(Column::InUse(Reading::HoursOnOil))
-        );
-        assert_eq!(known("Zn new"), Some(Column::New(Reading::Zn)));
-        assert_eq!(
-            known("Acid number new"),
-            Some(Column::New(Reading::AcidNumber))
-        );
-        assert_eq!(known("Sample date"), Some(Column::Drawn));
-        assert_eq!(known("Colour"), None);
-        assert_eq!(parted("Water, %"), ("Water", Some("%")));
     }
 }

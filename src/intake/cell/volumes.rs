@@ -49,6 +49,10 @@ pub(super) fn gallons(
     ) else {
         return Reading::fault("the number is not finite");
     };
+    if us > uk {
+        let last = second.unwrap_or(first);
+        return Reading::fault(format!("{first} to {last} {sign} runs downwards"));
+    }
     let litres = |m3: f64| significant(m3 * 1e3, 3, Toward::Nearest);
     let (lo, hi) = (litres(us), litres(uk));
     let which = format!("{first} {sign}: US ({lo} L) or UK ({hi} L)?");

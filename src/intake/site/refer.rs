@@ -30,11 +30,11 @@ impl Ends {
                 .as_deref()
                 .is_some_and(|t| tags::reference(t).is_some())
         };
-        let index = outlines
-            .iter()
-            .any(refers)
-            .then(|| Index::of(outlines))
-            .unwrap_or_default();
+        let index = if outlines.iter().any(refers) {
+            Index::of(outlines)
+        } else {
+            Index::default()
+        };
         let mut ends: Vec<Option<End>> = vec![None; outlines.len()];
         let mut on_path = vec![false; outlines.len()];
         for from in 0..outlines.len() {
@@ -111,11 +111,11 @@ impl Ends {
 /// Rows by what a reference may call them.
 #[derive(Default)]
 struct Index {
-    by_number: BTreeMap<u32, usize>,
+    numbers: BTreeMap<u32, usize>,
     /// Whole tags and descriptions, and the words of both, each with the rows that have it; two
     /// rows are enough to tell that it is not one.
-    by_name: BTreeMap<String, Vec<usize>>,
-    by_word: BTreeMap<String, Vec<usize>>,
+    names: BTreeMap<String, Vec<usize>>,
+    words: BTreeMap<String, Vec<usize>>,
 }
 
 impl Index {
@@ -125,12 +125,12 @@ impl Index {
         for (i, one) in outlines.iter().enumerate() {
             let number = if numbered { one.number } else { Some(one.row) };
             if let Some(number) = number {
-                index.by_number.entry(number).or_insert(i);
+                index.numbers.entry(number).or_insert(i);
             }
             for text in [&one.tag, &one.description] {
-                add(&mut index.by_name, tags::bare(text), i);
+                add(&mut index.names, tags::bare(text), i);
                 for word in tags::name_words(text) {
-                    add(&mut index.by_word, word, i);
+                    add(&mut index.words, word, i);
                 }
             }
         }
@@ -140,12 +140,12 @@ impl Index {
     fn target_of(&self, reference: &Reference, at: usize) -> Option<usize> {
         match reference {
             Reference::Above => at.checked_sub(1),
-            Reference::Row(n) => self.by_number.get(n).copied(),
+            Reference::Row(n) => self.numbers.get(n).copied(),
             Reference::Named(word) => {
                 let whole = tags::bare(word);
                 let one_word = whole.trim_end_matches('s');
-                let named = self.by_name.get(&whole).into_iter().flatten();
-                let worded = self.by_word.get(one_word).into_iter().flatten();
+                let named = self.names.get(&whole).into_iter().flatten();
+                let worded = self.words.get(one_word).into_iter().flatten();
                 let mut found = named.chain(worded).copied().filter(|i| *i != at);
                 let first = found.next()?;
                 found.all(|other| other == first).then_some(first)
