@@ -2,6 +2,7 @@
 
 pub mod facts;
 pub mod pair;
+mod ratio;
 pub mod top_up;
 pub mod uses;
 
@@ -304,7 +305,11 @@ impl<'a> Scales<'a> {
             oil,
             judgement,
             conditions,
-            notes: self.notes(oil, ready, eligible),
+            notes: {
+                let mut notes = self.notes(oil, ready, eligible);
+                notes.extend(ratio::notes(demands, ready, state, self.rules));
+                notes
+            },
             facts_missing: eligible.gaps.iter().map(|g| g.says.clone()).collect(),
             questions: eligible.gaps.iter().map(|g| g.question.clone()).collect(),
             because,

@@ -11,7 +11,7 @@ use crate::input::rules::rulebook;
 use crate::problem::Problems;
 use crate::source::SourceSet;
 use crate::weighing::Settings;
-use serde_json::Value;
+use serde::Deserialize;
 use std::path::Path;
 
 /// A state with what it is called.
@@ -95,28 +95,32 @@ impl Session<'_> {
             ));
             Exit::Input
         };
-        let Ok(document) = serde_json::from_slice::<Value>(&bytes) else {
+        let Ok(kept) = serde_json::from_slice::<Kept>(&bytes) else {
             return Err(none(self));
         };
-        let Some(files) = document["files"].as_array() else {
+        if kept.files.is_empty() {
             return Err(none(self));
-        };
+        }
         let mut problems = Problems::new();
         let mut trees: Vec<Tree> = Vec::new();
         let mut layers = vec![assets::builtin_rules()];
-        for file in files {
-            let text = |key: &str| file[key].as_str().unwrap_or_default();
-            let (kind, name, bytes) = (text("kind"), text("name"), text("text").as_bytes());
+        for KeptFile { kind, name, text } in &kept.files {
             if kind == "rules" {
                 layers.push(Layer {
                     name: path.to_owned(),
                     files: vec![TextFile {
-                        path: name.to_owned(),
-                        text: text("text").to_owned(),
+                        path: name.clone(),
+                        text: text.clone(),
                     }],
                 });
             } else if let Some(kind) = FileKind::ALL.iter().find(|k| k.word() == kind) {
-                trees.push(reader::take(set, *kind, name, bytes, &mut problems));
+                trees.push(reader::take(
+                    set,
+                    *kind,
+                    name,
+                    text.as_bytes(),
+                    &mut problems,
+                ));
             }
         }
         let rules = rulebook(&layers).map_err(|faults| {
@@ -126,12 +130,35 @@ impl Session<'_> {
             Exit::Input
         })?;
         let settings = Settings {
-            reserve: document["options"]["reserve"].as_f64(),
-            worn: document["options"]["worn"].as_bool().unwrap_or(true),
+            reserve: kept.options.reserve,
+            worn: kept.options.worn.unwrap_or(true),
             units: self.units(),
         };
         Ok((trees, rules, own_rules(&layers), settings, problems))
     }
+}
+
+/// What is read of a result file: the judgements in it, which may be far larger, are passed over.
+#[derive(Deserialize)]
+struct Kept {
+    #[serde(default)]
+    files: Vec<KeptFile>,
+    #[serde(default)]
+    options: KeptOptions,
+}
+
+#[derive(Deserialize)]
+struct KeptFile {
+    kind: String,
+    #[serde(default)]
+    name: String,
+    text: String,
+}
+
+#[derive(Deserialize, Default)]
+struct KeptOptions {
+    reserve: Option<f64>,
+    worn: Option<bool>,
 }
 
 type Parts = (

@@ -46,6 +46,7 @@ pub fn add<R: Recorder>(
         .as_ref()
         .and_then(|inner| contact(cx, part, bearing, inner, speed).map(|c| (c, inner)));
     let Some((contact, inner)) = found else {
+        lacks(cx, part, bearing);
         cx.undecided(
             part,
             End::HotFloor,
@@ -72,6 +73,29 @@ pub fn add<R: Recorder>(
         confidence: Confidence::Medium,
         ..cx.blank(part, at)
     });
+}
+
+/// Notes what of the inner geometry a film asked for still needs.
+fn lacks<R: Recorder>(cx: &mut Context<'_, '_, R>, part: &Part, bearing: &RollingBearing) {
+    let inner = bearing.inner.clone().unwrap_or_default();
+    let roller = bearing.class.is_some_and(|class| !class.is_ball());
+    let known = [
+        (cx.has(bearing.load.as_ref()), "load", "P"),
+        (inner.elements.is_some(), "elements", "Z"),
+        (
+            cx.has(inner.element_diameter.as_ref()),
+            "element diameter",
+            "D_w",
+        ),
+        (
+            !roller || cx.has(inner.element_length.as_ref()),
+            "element length",
+            "L_w",
+        ),
+    ];
+    for (_, key, symbol) in known.into_iter().filter(|(known, ..)| !known) {
+        cx.missing(part, wanted(key, symbol, key), None);
+    }
 }
 
 /// The film of a bearing that asks for none: what a mineral oil would need for a film ratio of 1

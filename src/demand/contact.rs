@@ -1,23 +1,21 @@
 //! Any other contact: film ratio at least 1 unless another is asked for.
 
+mod bodies;
+
 use super::context::Context;
 use super::film::{FilmContact, FilmDemand};
-use super::inputs::{Usual, Wanted};
+use super::inputs::Wanted;
 use super::{Demand, End, Limit};
-use crate::model::Stated;
 use crate::model::part::{Contact, Part};
 use crate::model::rulebook::Confidence;
 use crate::model::site::HouseLimit;
-use crate::quantity::convert::{number, um};
-use crate::quantity::{Angle, Length, Measure, Pressure, Ratio};
-use crate::relation::film::body::{
-    Material, Principal, REDUCED_MODULUS, REDUCED_RADIUS, Radii, SKEWED_RADII, reduced_modulus,
-    reduced_radius, skewed,
-};
+use crate::quantity::convert::number;
+use crate::quantity::{Length, Measure, Ratio};
+use crate::relation::film::body::Radii;
 use crate::relation::film::groups::{LineLoad, PointLoad};
-use crate::relation::film::roughness::{COMPOSITE, composite};
 use crate::source::place::Whose;
 use crate::trace::{Known, Recorder, StepId};
+use bodies::{modulus, radii, sigma};
 
 /// Id of the rule.
 pub const CONTACT_RULE: &str = "contact-film";
@@ -78,6 +76,12 @@ pub fn add<R: Recorder>(cx: &mut Context<'_, '_, R>, part: &Part, contact: &Cont
         _ => None,
     };
     let Some(film) = found else {
+        lacks(
+            cx,
+            part,
+            radii.map(|(_, across)| across.is_some()),
+            (loads.0.is_some(), loads.1.is_some()),
+        );
         cx.undecided(
             part,
             End::HotFloor,
@@ -96,6 +100,22 @@ pub fn add<R: Recorder>(cx: &mut Context<'_, '_, R>, part: &Part, contact: &Cont
         return;
     }
     push(cx, part, contact, film, sigma);
+}
+
+/// Notes what a line or a point contact still needs: its radii, or the load of its kind.
+fn lacks<R: Recorder>(
+    cx: &mut Context<'_, '_, R>,
+    part: &Part,
+    point: Option<bool>,
+    (per_length, load): (bool, bool),
+) {
+    let lacking = match point {
+        None if load && !per_length => wanted("rx", "R_x", "reduced radius along rolling"),
+        None => wanted("radius", "R", "reduced radius"),
+        Some(false) => wanted("load per length", "w", "load per length"),
+        Some(true) => wanted("load", "F", "load"),
+    };
+    cx.missing(part, lacking, None);
 }
 
 fn push<R: Recorder>(
@@ -199,45 +219,6 @@ fn asked<R: Recorder>(
     )
 }
 
-fn modulus<R: Recorder>(
-    cx: &mut Context<'_, '_, R>,
-    part: &Part,
-    contact: &Contact,
-) -> Option<Known<Pressure>> {
-    if contact.modulus.iter().all(Option::is_none) {
-        return Some(super::gear_film::steel(cx));
-    }
-    let mut material = |i: usize| -> Option<(Material, Known<Pressure>)> {
-        let (key, symbol) = if i == 0 { ("E1", "E1") } else { ("E2", "E2") };
-        let stated = contact.modulus[i].as_ref();
-        let youngs = cx.take(part, wanted(key, symbol, "Young's modulus"), stated)?;
-        let poisson = match &contact.poisson[i] {
-            Some(Stated::Known(given, _)) => given.value,
-            _ => number(0.3),
-        };
-        Some((
-            Material {
-                youngs: youngs.value,
-                poisson,
-            },
-            youngs,
-        ))
-    };
-    let (one, k1) = material(0)?;
-    let (two, k2) = match material(1) {
-        Some(other) => other,
-        None => (one, k1),
-    };
-    cx.r.attempt(
-        "E",
-        "reduced modulus",
-        &REDUCED_MODULUS,
-        (("E1", k1), ("E2", k2)),
-        |_: (Pressure, Pressure)| reduced_modulus(one, two),
-    )
-    .ok()
-}
-
 /// Where the oil stands before the contact, if somebody measured it.
 fn meniscus<R: Recorder>(
     cx: &mut Context<'_, '_, R>,
@@ -250,166 +231,4 @@ fn meniscus<R: Recorder>(
         "distance of the meniscus from the centre of the contact",
     );
     cx.maybe(part, key, contact.inlet_distance.as_ref())
-}
-
-type ReducedRadii = (Known<Length>, Option<Known<Length>>);
-
-/// Reduced radii: stated as such, or from the radii of the bodies.
-fn radii<R: Recorder>(
-    cx: &mut Context<'_, '_, R>,
-    part: &Part,
-    contact: &Contact,
-) -> Option<ReducedRadii> {
-    if let Some(r) = cx.maybe(
-        part,
-        wanted("radius", "R", "reduced radius"),
-        contact.radius.as_ref(),
-    ) {
-        return Some((r, None));
-    }
-    let rx = cx.maybe(
-        part,
-        wanted("rx", "Rx", "reduced radius along rolling"),
-        contact.rx.as_ref(),
-    );
-    if let Some(rx) = rx {
-        let ry = cx.maybe(
-            part,
-            wanted("ry", "Ry", "reduced radius across rolling"),
-            contact.ry.as_ref(),
-        );
-        return Some((rx, ry));
-    }
-    let turned = wanted("angle", "theta", "angle between the planes of the bodies");
-    if let Some(angle) = cx.maybe(part, turned, contact.angle.as_ref()) {
-        return skewed_radii(cx, part, contact, angle);
-    }
-    let rx = pair(
-        cx,
-        part,
-        contact,
-        (0, 1),
-        ("r1x", "r2x"),
-        "reduced radius along rolling",
-    )?;
-    let ry = pair(
-        cx,
-        part,
-        contact,
-        (2, 3),
-        ("r1y", "r2y"),
-        "reduced radius across rolling",
-    );
-    Some((rx, ry))
-}
-
-/// Reduced radii of bodies turned against each other; a body's second radius is flat where it is
-/// not stated, and rolling is taken along the smaller reduced radius.
-fn skewed_radii<R: Recorder>(
-    cx: &mut Context<'_, '_, R>,
-    part: &Part,
-    contact: &Contact,
-    angle: Known<Angle>,
-) -> Option<ReducedRadii> {
-    let mut of = |i: usize, key: &'static str, says: &'static str| match &contact.bodies[i] {
-        Some(stated) => cx.take(part, wanted(key, key, says), Some(stated)),
-        None => {
-            let flat = Length::from_base(f64::INFINITY);
-            Some(cx.r.assume(key, says, flat, "flat, none stated"))
-        }
-    };
-    let a1 = of(0, "r1x", "radius of the first body")?;
-    let a2 = of(2, "r1y", "radius of the first body, in its other plane")?;
-    let b1 = of(1, "r2x", "radius of the second body")?;
-    let b2 = of(3, "r2y", "radius of the second body, in its other plane")?;
-    let made =
-        cx.r.attempt_all(
-            &SKEWED_RADII,
-            (
-                ("r1", a1),
-                ("r1'", a2),
-                ("r2", b1),
-                ("r2'", b2),
-                ("theta", angle),
-            ),
-            |(a1, a2, b1, b2, theta): (Length, Length, Length, Length, Angle)| {
-                let body = |first, second| Principal { first, second };
-                skewed(body(a1, a2), body(b1, b2), theta)
-            },
-        )
-        .ok()?;
-    let x =
-        cx.r.take(&made, "Rx", "smaller reduced radius", |r: Radii| r.x);
-    cx.r.note(|| "rolling is taken along the smaller reduced radius".to_owned());
-    let y =
-        cx.r.take(&made, "Ry", "larger reduced radius", |r: Radii| r.y);
-    Some((x, Some(y)))
-}
-
-fn pair<R: Recorder>(
-    cx: &mut Context<'_, '_, R>,
-    part: &Part,
-    contact: &Contact,
-    (i, j): (usize, usize),
-    (first, second): (&'static str, &'static str),
-    says: &'static str,
-) -> Option<Known<Length>> {
-    let a = cx.maybe(
-        part,
-        wanted(first, first, "radius of the first body"),
-        contact.bodies[i].as_ref(),
-    )?;
-    let b = cx.maybe(
-        part,
-        wanted(second, second, "radius of the second body"),
-        contact.bodies[j].as_ref(),
-    );
-    let law = &REDUCED_RADIUS;
-    match b {
-        Some(b) => {
-            cx.r.attempt("R", says, law, (("r1", a), ("r2", b)), |(a, b)| {
-                reduced_radius(a, Some(b))
-            })
-            .ok()
-        }
-        None => {
-            cx.r.attempt("R", says, law, (("r1", a),), |(a,)| reduced_radius(a, None))
-                .ok()
-        }
-    }
-}
-
-fn sigma<R: Recorder>(
-    cx: &mut Context<'_, '_, R>,
-    part: &Part,
-    contact: &Contact,
-) -> Known<Length> {
-    let mut rough = |i: usize| {
-        let (key, symbol) = if i == 0 {
-            ("roughness 1", "Rq1")
-        } else {
-            ("roughness 2", "Rq2")
-        };
-        let why = "ground surface, Rq; 0.1 to 0.5 um is common practice";
-        let usual = Usual {
-            value: um(0.25),
-            lo: um(0.1),
-            hi: um(0.5),
-            why,
-        };
-        cx.or_assume(
-            part,
-            wanted(key, symbol, "roughness"),
-            contact.roughness[i].as_ref(),
-            usual,
-        )
-    };
-    let (a, b) = (rough(0), rough(1));
-    cx.r.law(
-        "sigma",
-        "composite roughness",
-        &COMPOSITE,
-        (("Rq1", a), ("Rq2", b)),
-        |(a, b)| composite(a, b).unwrap_or(a),
-    )
 }

@@ -1,34 +1,28 @@
 //! Film at the pitch point of a gear mesh: information, and a demand where a film ratio is asked
 //! for by the maker, the house or a micropitting result.
 
+mod pitch_point;
+mod tooth;
+
 use super::context::{Context, HotAt};
 use super::film::FilmContact;
-use super::gear_mesh::{film_limit, pinion_speed, ratio};
-use super::inputs::{Usual, Wanted};
-use super::thermal::usual_kelvins;
+use super::gear_mesh::film_limit;
+use super::inputs::Wanted;
 use super::{Demand, End};
-use crate::model::part::{GearMesh, GearType, Part};
+use crate::model::part::{GearMesh, Part};
 use crate::model::rulebook::Confidence;
 use crate::model::site::HouseLimit;
-use crate::quantity::convert::{degrees, number, um};
-use crate::quantity::{
-    Angle, Force, KinematicViscosity, Length, LoadPerLength, Measure, Pressure, Ratio,
-    ThermodynamicTemperature, Torque, Velocity,
-};
-use crate::relation::film::body::{Material, REDUCED_MODULUS, reduced_modulus};
-use crate::relation::film::roughness::{RQ_FROM_RA, rq_from_ra};
-use crate::relation::film::{inverse, line, roughness};
-use crate::relation::gear::film::{self as tooth, ToothContact};
-use crate::relation::gear::load::{
-    LINE_LOAD, PRESSURE, TANGENTIAL_FORCE, pressure, tangential_force, torque_of,
-};
-use crate::relation::gear::pitch_point::{
-    PITCH_DIAMETER, PITCH_SPEED, REDUCED_RADIUS, REFERENCE_DIAMETER, pitch_diameter,
-    reduced_radius, reference_diameter as diameter_of, transverse_sine_cosine,
-};
+use crate::quantity::convert::number;
+use crate::quantity::{KinematicViscosity, Length, Measure, Ratio, ThermodynamicTemperature};
+use crate::relation::film::line;
+use crate::relation::film::{inverse, roughness};
+use crate::relation::gear::film as tooth_film;
 use crate::relation::oil::pressure_viscosity::{Family, agma_925};
 use crate::source::place::Whose;
-use crate::trace::{Known, Recorder};
+use crate::trace::Recorder;
+pub(super) use pitch_point::{Pair, helix, pressure_angle, reference_diameter, steel, torque};
+use pitch_point::{PitchPoint, pitch_point};
+use tooth::REFERENCE_DENSITY;
 
 /// Id of the rule.
 pub const FILM_RULE: &str = "gear-film";
@@ -48,70 +42,12 @@ fn wanted(
     }
 }
 
-/// Reference diameter from module and teeth, where given.
-pub(super) fn reference_diameter<R: Recorder>(
-    cx: &mut Context<'_, '_, R>,
-    part: &Part,
-    mesh: &GearMesh,
-) -> Option<Known<Length>> {
-    let (z1, _) = mesh.teeth.as_ref()?.value;
-    let module = wanted("normal module", "m_n", "normal module", "drawing");
-    let m = cx.maybe(part, module, mesh.normal_module.as_ref())?;
-    let z = mesh.teeth.clone()?.map(|_| number(f64::from(z1)));
-    let z = cx.r.given("z1", "teeth of the pinion", &z);
-    let beta = helix(cx, part, mesh);
-    cx.r.attempt(
-        "d1",
-        "reference diameter of the pinion",
-        &REFERENCE_DIAMETER,
-        (("m_n", m), ("z1", z), ("beta", beta)),
-        |(m, z, b)| diameter_of(m, z, b),
-    )
-    .ok()
-}
-
-pub(super) fn helix<R: Recorder>(
-    cx: &mut Context<'_, '_, R>,
-    part: &Part,
-    mesh: &GearMesh,
-) -> Known<Angle> {
-    let key = wanted("helix", "beta", "helix angle", "drawing");
-    let (value, hi, why) = match mesh.kind {
-        Some(GearType::Spur | GearType::Bevel) | None => {
-            (0.0, 30.0, "straight teeth unless stated")
-        }
-        Some(GearType::Helical) => (12.0, 30.0, "helical, usual angle"),
-        Some(_) => (
-            35.0,
-            45.0,
-            "spiral, usual angle at mid-face; common practice",
-        ),
-    };
-    let usual = Usual {
-        value: degrees(value),
-        lo: degrees(0.0),
-        hi: degrees(hi),
-        why,
-    };
-    match &mesh.helix {
-        Some(_) => cx.or_assume(part, key, mesh.helix.as_ref(), usual),
-        None => cx.r.assume("beta", "helix angle", usual.value, usual.why),
-    }
-}
-
-/// What the film needs of geometry and load.
-struct PitchPoint {
-    contact: ToothContact,
-    rho: Known<Length>,
-    rq: Known<Length>,
-    ra: Known<Length>,
-}
-
 /// Adds the film of a mesh: information always, a demand where a ratio is asked for.
 pub fn add<R: Recorder>(cx: &mut Context<'_, '_, R>, part: &Part, mesh: &GearMesh) {
     let asked = asked(cx, part, mesh);
     let Some(point) = pitch_point(cx, part, mesh) else {
         if asked.is_some() {
+            lacks(cx, part, mesh);
             cx.undecided(
                 part,
                 End::HotFloor,
@@ -120,7 +56,7 @@ pub fn add<R: Recorder>(cx: &mut Context<'_, '_, R>, part: &Part, mesh: &GearMes
         }
         return;
     };
-    let at = tooth_temperature(cx, part);
+    let at = tooth::temperature(cx, part, mesh, &point);
     for target in [0.7, 1.0] {
         inform(cx, part, &point, target, at);
     }
@@ -140,6 +76,25 @@ pub fn add<R: Recorder>(cx: &mut Context<'_, '_, R>, part: &Part, mesh: &GearMes
             confidence: Confidence::Medium,
             ..cx.blank(part, at)
         });
+    }
+}
+
+/// Notes what of the nameplate a film asked for still needs.
+fn lacks<R: Recorder>(cx: &mut Context<'_, '_, R>, part: &Part, mesh: &GearMesh) {
+    let nameplate = "nameplate, or drawing";
+    let teeth = mesh.teeth.is_some();
+    let distance = cx.has(mesh.centre_distance.as_ref());
+    let sized = distance || (teeth && cx.has(mesh.normal_module.as_ref()));
+    let load = cx.has(mesh.power.as_ref()) || cx.has(mesh.pinion_torque.as_ref());
+    let known = [
+        (teeth || cx.has(mesh.ratio.as_ref()), "ratio", "u"),
+        (sized, "centre distance", "a"),
+        (cx.has(mesh.face_width.as_ref()), "face width", "b"),
+        (cx.has(mesh.pinion_speed.as_ref()), "pinion speed", "n1"),
+        (load, "power", "P"),
+    ];
+    for (_, key, symbol) in known.into_iter().filter(|(known, ..)| !known) {
+        cx.missing(part, wanted(key, symbol, key, nameplate), None);
     }
 }
 
@@ -180,39 +135,6 @@ fn asked<R: Recorder>(
         })
 }
 
-fn tooth_temperature<R: Recorder>(cx: &mut Context<'_, '_, R>, part: &Part) -> HotAt {
-    let hot = cx.hot_at(part);
-    if part.part_rise.is_some() {
-        return hot;
-    }
-    let why = "teeth run hotter than the oil; 10 to 25 K is common practice";
-    let rise = cx.or_assume(
-        part,
-        wanted(
-            "part rise",
-            "Delta_t_tooth",
-            "bulk temperature of the teeth over the oil",
-            "estimate from losses",
-        ),
-        None,
-        usual_kelvins(15.0, 10.0, 25.0, why),
-    );
-    let hottest = hot.hottest.map(|t| {
-        cx.r.law(
-            "t_tooth",
-            "bulk temperature of the teeth",
-            &crate::relation::sump::PART,
-            (("t", t), ("Delta_t_tooth", rise)),
-            |(t, d)| crate::relation::sump::running(t, d),
-        )
-    });
-    HotAt {
-        at: hot.at.map(|at| at.raised(rise.value.base())),
-        hottest,
-        coldest: hot.coldest,
-    }
-}
-
 /// Viscosity that a film ratio would need of a mineral oil, both forms.
 fn inform<R: Recorder>(
     cx: &mut Context<'_, '_, R>,
@@ -233,11 +155,11 @@ fn inform<R: Recorder>(
                     why: "no model",
                 }
             })?;
-            let groups = tooth::groups(eta, alpha, point.contact)?;
+            let groups = tooth_film::groups(eta, alpha, point.contact)?;
             Ok(if central {
                 line::central_dowson_toyoda(groups, point.contact.rho_n)
             } else {
-                tooth::minimum(groups, point.contact.rho_n, number(1.0))
+                tooth_film::minimum(groups, point.contact.rho_n, number(1.0))
             })
         })
         .ok()
@@ -266,301 +188,4 @@ fn inform<R: Recorder>(
             Some((nu.amount(), step.step)),
         );
     }
-}
-
-/// Density of a mineral oil near running temperature, for figures that go with no particular oil.
-const REFERENCE_DENSITY: f64 = 860.0;
-
-/// Two cylindrical gears in mesh, as far as speed and load go.
-pub(super) struct Pair {
-    pub(super) ratio: Known<Ratio>,
-    pub(super) speed: Known<crate::quantity::AngularVelocity>,
-    pub(super) distance: Known<Length>,
-    pub(super) width: Known<Length>,
-    pub(super) torque: Known<Torque>,
-}
-
-/// The pair as the nameplate gives it.
-fn cylindrical<R: Recorder>(
-    cx: &mut Context<'_, '_, R>,
-    part: &Part,
-    mesh: &GearMesh,
-) -> Option<Pair> {
-    let ratio = ratio(cx, part, mesh)?;
-    let speed = pinion_speed(cx, part, mesh)?;
-    let centre = wanted(
-        "centre distance",
-        "a",
-        "centre distance",
-        "drawing or a rule",
-    );
-    let distance = match cx.maybe(part, centre, mesh.centre_distance.as_ref()) {
-        Some(a) => a,
-        None => distance(cx, part, mesh, ratio)?,
-    };
-    let face = wanted("face width", "b", "face width", "drawing or a rule");
-    let width = cx.maybe(part, face, mesh.face_width.as_ref())?;
-    let torque = torque(cx, part, mesh, speed)?;
-    Some(Pair {
-        ratio,
-        speed,
-        distance,
-        width,
-        torque,
-    })
-}
-
-fn pitch_point<R: Recorder>(
-    cx: &mut Context<'_, '_, R>,
-    part: &Part,
-    mesh: &GearMesh,
-) -> Option<PitchPoint> {
-    let beta = helix(cx, part, mesh);
-    let an = pressure_angle(cx, part, mesh);
-    let bevel = matches!(mesh.kind, Some(GearType::Bevel | GearType::SpiralBevel));
-    let pair = if bevel {
-        super::gear_bevel::pair(cx, part, mesh)?
-    } else {
-        cylindrical(cx, part, mesh)?
-    };
-    let (u, n, a, b, torque) = (
-        pair.ratio,
-        pair.speed,
-        pair.distance,
-        pair.width,
-        pair.torque,
-    );
-    let d1 =
-        cx.r.attempt(
-            "d1",
-            "pitch diameter of the pinion",
-            &PITCH_DIAMETER,
-            (("a", a), ("u", u)),
-            |(a, u)| pitch_diameter(a, u),
-        )
-        .ok()?;
-    let v = cx.r.law(
-        "v",
-        "pitch-line speed",
-        &PITCH_SPEED,
-        (("n1", n), ("d1", d1)),
-        |(n, d)| crate::quantity::convert::surface_speed(n, d),
-    );
-    let rho =
-        cx.r.attempt(
-            "rho_n",
-            "reduced radius at the pitch point",
-            &REDUCED_RADIUS,
-            (("a", a), ("u", u), ("alpha", an), ("beta", beta)),
-            |(a, u, an, b)| reduced_radius(a, u, an, b),
-        )
-        .ok()?;
-    let load = line_load(cx, part, mesh, (torque, d1, b), (an, beta))?;
-    let e = steel(cx);
-    let p =
-        cx.r.attempt(
-            "p_H",
-            "Hertzian pressure at the pitch point",
-            &PRESSURE,
-            (("w", load), ("rho_n", rho), ("E", e)),
-            |(w, r, e)| pressure(w, r, e),
-        )
-        .ok()?;
-    let (sine, _) = transverse_sine_cosine(an.value, beta.value);
-    let contact = ToothContact {
-        sum_speed: Velocity::from_base(2.0 * v.value.base() * sine.base()),
-        rho_n: rho.value,
-        pressure: p.value,
-        modulus: e.value,
-    };
-    let (ra, rq) = flanks(cx, part, mesh);
-    Some(PitchPoint {
-        contact,
-        rho,
-        rq,
-        ra,
-    })
-}
-
-fn distance<R: Recorder>(
-    cx: &mut Context<'_, '_, R>,
-    part: &Part,
-    mesh: &GearMesh,
-    u: Known<Ratio>,
-) -> Option<Known<Length>> {
-    let d1 = reference_diameter(cx, part, mesh)?;
-    Some(cx.r.law(
-        "a",
-        "centre distance",
-        &PITCH_DIAMETER,
-        (("d1", d1), ("u", u)),
-        |(d, u)| Length::from_base(d.base() * (u.base() + 1.0) / 2.0),
-    ))
-}
-
-pub(super) fn torque<R: Recorder>(
-    cx: &mut Context<'_, '_, R>,
-    part: &Part,
-    mesh: &GearMesh,
-    n: Known<crate::quantity::AngularVelocity>,
-) -> Option<Known<Torque>> {
-    let key = wanted("pinion torque", "T1", "pinion torque", "power and speed");
-    if let Some(t) = cx.maybe(part, key, mesh.pinion_torque.as_ref()) {
-        return Some(t);
-    }
-    let key = wanted(
-        "power",
-        "P",
-        "power through the mesh",
-        "nameplate of the motor",
-    );
-    let p = cx.maybe(part, key, mesh.power.as_ref())?;
-    cx.r.attempt(
-        "T1",
-        "pinion torque",
-        &TANGENTIAL_FORCE,
-        (("P", p), ("n1", n)),
-        |(p, n)| torque_of(p, n),
-    )
-    .ok()
-}
-
-pub(super) fn pressure_angle<R: Recorder>(
-    cx: &mut Context<'_, '_, R>,
-    part: &Part,
-    mesh: &GearMesh,
-) -> Known<Angle> {
-    let key = wanted(
-        "pressure angle",
-        "alpha",
-        "normal pressure angle",
-        "drawing",
-    );
-    match &mesh.pressure_angle {
-        Some(_) => cx.or_assume(
-            part,
-            key,
-            mesh.pressure_angle.as_ref(),
-            Usual {
-                value: degrees(20.0),
-                lo: degrees(14.5),
-                hi: degrees(25.0),
-                why: "standard rack",
-            },
-        ),
-        None => cx.r.assume(
-            "alpha",
-            "normal pressure angle",
-            degrees(20.0),
-            "standard rack",
-        ),
-    }
-}
-
-type Loaded = (Known<Torque>, Known<Length>, Known<Length>);
-
-/// Load per length of contact, on the shortest line, load factors included.
-fn line_load<R: Recorder>(
-    cx: &mut Context<'_, '_, R>,
-    part: &Part,
-    mesh: &GearMesh,
-    (torque, d1, b): Loaded,
-    (an, beta): (Known<Angle>, Known<Angle>),
-) -> Option<Known<LoadPerLength>> {
-    let force =
-        cx.r.attempt(
-            "F_t",
-            "tangential force",
-            &TANGENTIAL_FORCE,
-            (("T1", torque), ("d1", d1)),
-            |(t, d)| tangential_force(t, d),
-        )
-        .ok()?;
-    let factor = match &mesh.application_factor {
-        Some(given) => cx.r.given("K", "load factors together", given),
-        None => {
-            let key = wanted(
-                "application factor",
-                "K",
-                "load factors together",
-                "duty and drive",
-            );
-            let why = "moderate shock; 1 to 2 is common practice";
-            let usual = Usual {
-                value: number(1.25),
-                lo: number(1.0),
-                hi: number(2.0),
-                why,
-            };
-            cx.or_assume(part, key, None, usual)
-        }
-    };
-    Some(cx.r.law(
-        "w",
-        "load per length at the pitch point, one pair carrying",
-        &LINE_LOAD,
-        (
-            ("F_t", force),
-            ("b", b),
-            ("K", factor),
-            ("alpha", an),
-            ("beta", beta),
-        ),
-        |(f, b, k, an, beta): (Force, Length, Ratio, Angle, Angle)| {
-            let (_, cosine) = transverse_sine_cosine(an, beta);
-            LoadPerLength::from_base(k.base() * f.base() / (b.base() * cosine.base()))
-        },
-    ))
-}
-
-/// Reduced modulus of steel on steel.
-pub(super) fn steel<R: Recorder>(cx: &mut Context<'_, '_, R>) -> Known<Pressure> {
-    let steel = Material::steel();
-    let e = cx.r.assume(
-        "E1",
-        "Young's modulus of steel",
-        steel.youngs,
-        "steel on steel",
-    );
-    cx.r.law(
-        "E",
-        "reduced modulus",
-        &REDUCED_MODULUS,
-        (("E1", e),),
-        |_: (Pressure,)| reduced_modulus(steel, steel).unwrap_or(steel.youngs),
-    )
-}
-
-/// Roughness of the flanks: Ra stated or usual, Rq from it.
-fn flanks<R: Recorder>(
-    cx: &mut Context<'_, '_, R>,
-    part: &Part,
-    mesh: &GearMesh,
-) -> (Known<Length>, Known<Length>) {
-    let key = wanted(
-        "flank roughness",
-        "Ra",
-        "Ra of the flanks",
-        "drawing, or a replica of a flank",
-    );
-    let why = "ground flanks; 0.3 to 0.8 um is common practice";
-    let ra = cx.or_assume(
-        part,
-        key,
-        mesh.flank_roughness.as_ref(),
-        Usual {
-            value: um(0.5),
-            lo: um(0.3),
-            hi: um(0.8),
-            why,
-        },
-    );
-    let rq = cx.r.law(
-        "Rq",
-        "Rq of the flanks",
-        &RQ_FROM_RA,
-        (("Ra", ra),),
-        |(ra,)| rq_from_ra(ra),
-    );
-    (ra, rq)
 }

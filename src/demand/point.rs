@@ -151,12 +151,16 @@ pub fn start<R: Recorder>(cx: &mut Context<'_, '_, R>) {
     let lubrication = cx.lubrication();
     let at = cx.thermal.start;
     let step = cx.thermal.start_coldest.map(|k| k.step);
+    // a bath stands for bearings that turn in it; an open gear dips without any
+    let dips = |p: &Part| matches!(p.kind, PartKind::OpenGear(_));
+    let open = !cx.point.parts.is_empty() && cx.point.parts.iter().all(dips);
     let limits: Vec<_> = cx
         .rules
         .start_limits
         .iter()
         .filter(|l| {
-            let implied = lubrication.is_some_and(|x| l.implied_by.contains(&x));
+            let implied = lubrication
+                .is_some_and(|x| l.implied_by.contains(&x) && !(open && x == Lubrication::Bath));
             let stated = match l.stated_by {
                 Some(StatedBy::Filter) => cx.point.filter,
                 Some(StatedBy::GravityReturn) => cx.point.gravity_return,

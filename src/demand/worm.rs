@@ -290,7 +290,7 @@ fn into_heat<R: Recorder>(
 pub(super) struct Lost {
     pub(super) power: Known<Power>,
     pub(super) efficiency: Known<Ratio>,
-    pub(super) lost: Power,
+    pub(super) heat: Power,
 }
 
 /// The loss of a worm mesh, where its speed and power are known.
@@ -320,6 +320,6 @@ pub(super) fn lost<R: Recorder>(
     Ok(Lost {
         power,
         efficiency,
-        lost: lost.value,
+        heat: lost.value,
     })
 }

@@ -1,6 +1,7 @@
 //! Rows of heat: heaters, housings, seals.
 
 use super::contact::{form, may, must};
+use super::journal::steps::Recorded;
 use super::{Args, Refusal, Relation, Worked};
 use crate::quantity::convert::kelvins;
 use crate::quantity::{
@@ -16,7 +17,7 @@ use crate::relation::heat::heater::{
 };
 use crate::relation::heat::seal;
 use crate::relation::journal::heat::still_air;
-use crate::trace::{Known, Recorder};
+use crate::trace::{Known, Recorder, StepId};
 
 const GROUP: &str = "heat";
 
@@ -46,90 +47,94 @@ const HEATER_POWER: Relation = Relation {
     run: heater_power,
 };
 
+/// A tank of oil to be warmed.
+struct Tank {
+    volume: Known<Volume>,
+    density: Known<MassDensity>,
+    heat: Known<SpecificHeatCapacity>,
+    rise: Known<TemperatureInterval>,
+    losses: Known<Power>,
+}
+
+impl Tank {
+    fn read(args: &mut Args, w: &mut Worked) -> Result<Self, Refusal> {
+        let volume = args.quantity(w, "volume", "oil to be warmed")?;
+        let rise = args.quantity(w, "rise", "rise")?;
+        let density = args.maybe(w, "density", "density of the oil")?;
+        let density = density.unwrap_or_else(|| {
+            let usual = MassDensity::from_base(880.0);
+            let says = "density of the oil";
+            w.trace.assume("rho", says, usual, "mineral oil")
+        });
+        let heat = args.maybe(w, "specific_heat", "specific heat of the oil")?;
+        let heat = heat.unwrap_or_else(|| {
+            let usual = SpecificHeatCapacity::from_base(2000.0);
+            let says = "specific heat of the oil";
+            w.trace.assume("c_p", says, usual, "common practice")
+        });
+        let losses = args.maybe(w, "losses", "what the tank gives off")?;
+        let losses = losses.unwrap_or_else(|| {
+            let none = Power::from_base(0.0);
+            let says = "what the tank gives off";
+            w.trace.assume("P_loss", says, none, "not stated")
+        });
+        Ok(Self {
+            volume: positive(volume, "volume")?,
+            density: positive(density, "density")?,
+            heat: positive(heat, "specific_heat")?,
+            rise: positive(rise, "rise")?,
+            losses,
+        })
+    }
+
+    fn steps(&self, last: (&'static str, StepId)) -> Recorded {
+        Recorded(vec![
+            ("V", self.volume.step),
+            ("rho", self.density.step),
+            ("c_p", self.heat.step),
+            ("Delta_t", self.rise.step),
+            last,
+            ("P_loss", self.losses.step),
+        ])
+    }
+
+    fn power(&self, within: Time) -> Power {
+        let (volume, rise) = (self.volume.value, self.rise.value);
+        let warms = power(volume, self.density.value, self.heat.value, rise, within);
+        Power::from_base(warms.base() + self.losses.value.base())
+    }
+
+    /// `None` where the heater gives no more than the tank loses.
+    fn time(&self, with: Power) -> Option<Time> {
+        let (volume, rise) = (self.volume.value, self.rise.value);
+        let warms = Power::from_base(with.base() - self.losses.value.base());
+        let (density, heat) = (self.density.value, self.heat.value);
+        (warms.base() > 0.0).then(|| time(volume, density, heat, rise, warms))
+    }
+}
+
 fn heater_power(args: &mut Args, w: &mut Worked) -> Result<(), Refusal> {
-    let volume: Known<Volume> =
-        positive(args.quantity(w, "volume", "oil to be warmed")?, "volume")?;
-    let rise: Known<TemperatureInterval> = positive(args.quantity(w, "rise", "rise")?, "rise")?;
-    let density: Option<Known<MassDensity>> = args.maybe(w, "density", "density of the oil")?;
-    let density = density.unwrap_or_else(|| {
-        let usual = MassDensity::from_base(880.0);
-        w.trace
-            .assume("rho", "density of the oil", usual, "mineral oil")
-    });
-    let heat: Option<Known<SpecificHeatCapacity>> =
-        args.maybe(w, "specific_heat", "specific heat of the oil")?;
-    let heat = heat.unwrap_or_else(|| {
-        let usual = SpecificHeatCapacity::from_base(2000.0);
-        w.trace
-            .assume("c_p", "specific heat of the oil", usual, "common practice")
-    });
-    let (density, heat) = (
-        positive(density, "density")?,
-        positive(heat, "specific_heat")?,
-    );
-    let losses: Option<Known<Power>> = args.maybe(w, "losses", "what the tank gives off")?;
-    let losses = losses.unwrap_or_else(|| {
-        let none = Power::from_base(0.0);
-        w.trace
-            .assume("P_loss", "what the tank gives off", none, "not stated")
-    });
+    let tank = Tank::read(args, w)?;
     let within: Option<Known<Time>> = args.maybe(w, "time", "time allowed")?;
     let with: Option<Known<Power>> = args.maybe(w, "power", "heater at hand")?;
-    let sized = (
-        ("V", volume),
-        ("rho", density),
-        ("c_p", heat),
-        ("Delta_t", rise),
-    );
-    let (v, rho, c, by) = (volume.value, density.value, heat.value, rise.value);
     match (within, with) {
         (Some(within), None) => {
             let within = positive(within, "time")?;
-            let (a, b, c_, d) = sized;
-            let inputs = (a, b, c_, d, ("tau", within), ("P_loss", losses));
+            let steps = tank.steps(("tau", within.step));
             let says = "power of the heater";
-            let found = w.trace.law(
-                "P",
-                says,
-                &POWER,
-                inputs,
-                |(.., lost): (
-                    Volume,
-                    MassDensity,
-                    SpecificHeatCapacity,
-                    TemperatureInterval,
-                    Time,
-                    Power,
-                )| {
-                    let warms = power(v, rho, c, by, within.value);
-                    Power::from_base(warms.base() + lost.base())
-                },
-            );
+            let found = w
+                .trace
+                .law("P", says, &POWER, steps, |()| tank.power(within.value));
             w.result("power", found, "kW");
         }
         (None, Some(with)) => {
-            let warms = Power::from_base(with.value.base() - losses.value.base());
-            if warms.base() <= 0.0 {
+            let time = tank.time(with.value).ok_or_else(|| {
                 let words = "the heater gives no more than the tank loses: it warms nothing";
-                return Err(Refusal::new("no-answer", words));
-            }
-            let (a, b, c_, d) = sized;
-            let inputs = (a, b, c_, d, ("P", with), ("P_loss", losses));
+                Refusal::new("no-answer", words)
+            })?;
+            let steps = tank.steps(("P", with.step));
             let says = "time it takes";
-            let found = w.trace.law(
-                "tau",
-                says,
-                &POWER,
-                inputs,
-                |_: (
-                    Volume,
-                    MassDensity,
-                    SpecificHeatCapacity,
-                    TemperatureInterval,
-                    Power,
-                    Power,
-                )| { time(v, rho, c, by, warms) },
-            );
+            let found = w.trace.law("tau", says, &POWER, steps, |()| time);
             w.result("time", found, "h");
         }
         _ => {

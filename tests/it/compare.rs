@@ -362,6 +362,18 @@ fn a_result_file_is_compared_like_its_folder() {
     let by_file = on(files, "compare old.json new -f json -q").json();
     let by_folder = compared(&[edit]);
     assert_eq!(by_file["changes"], by_folder["changes"]);
+    // judged as new and judged worn: the option is the cause
+    let text = |name| filmwright::assets::template(name).unwrap_or_default();
+    let demo = host(text("demo/site.yaml"), text("demo/oils.yaml"));
+    let kept = on(demo.clone(), "weigh -C new --as new -f json -q").out;
+    let files = demo.with("new.json", &kept);
+    let json = on(files, "compare new.json new -f json -q").json();
+    assert_eq!(inputs(&json, "inputs"), ["option --as"], "{json}");
+    // a multigrade that shears out of its grade: the invented works was written for it
+    assert_eq!(verdict(&json, "M04", "O-05")["is"], "fails");
+    for change in list(&json, "changes") {
+        assert_eq!(inputs(change, "because"), ["option --as"], "{change}");
+    }
     let without = host(SITE, OILS).with("other.json", "{\"format\": \"filmwright.weigh 1\"}");
     let ran: Ran = on(without, "compare other.json new -q");
     assert_eq!(ran.exit, Exit::Input);

@@ -81,6 +81,23 @@ fn every_expected_answer_comes_out() {
     assert!(wrong.is_empty(), "{}", wrong.join("\n"));
 }
 
+/// The choice of M01 stands first among its candidates; those of the other machines are choices of
+/// the whole list and come out of the shortest one. M02 waits for its heater: then its choice
+/// holds, beside an oil that is on the site.
+#[test]
+fn the_choices_come_out() {
+    let first = |machine: &str| judgements().into_iter().find(|j| j["machine"] == machine);
+    assert_eq!(first("M01").expect("weighed")["oil"], "O-16");
+    let ran = filmwright("whatif M02 --set \"heater=10 degC\" --demo -f json -q");
+    let json = ran.json();
+    let moved = json["changes"].as_array().expect("a list");
+    let o13 = moved.iter().find(|c| c["oil"] == "O-13").expect("moves");
+    assert_eq!(
+        (&o13["before"], &o13["after"]),
+        (&"fails".into(), &"holds".into())
+    );
+}
+
 #[test]
 fn as_new_the_multigrade_holds_and_worn_it_fails() {
     let ran = filmwright("weigh M04 --oil O-05 --as new --demo -f json -q");

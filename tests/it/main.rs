@@ -16,6 +16,7 @@ mod journal_table;
 mod judging;
 mod layers;
 mod nonsense;
+mod part_gaps;
 mod part_kinds;
 mod plain;
 mod pool;

@@ -263,6 +263,19 @@ fn an_open_gear_goes_by_how_it_is_lubricated() {
     assert!(gear("").open("whether the gear dips, is sprayed or is brushed"));
 }
 
+/// A gear that dips has no bearing in the oil: the start limit of bath bearings is not asked of its
+/// compound.
+#[test]
+fn an_open_gear_that_dips_starts_without_bearings() {
+    let duty = format!("{DUTY}lubrication: bath\n");
+    let alone = Need::of(&duty, "- open gear: girth\n  application: bath\n");
+    assert!(!alone.0["demands"].to_string().contains("start-bath"));
+    let parts =
+        "- open gear: girth\n  application: bath\n- rolling bearing: 22220\n  speed: 100 r/min\n";
+    let both = Need::of(&duty, parts);
+    assert!(both.0["demands"].to_string().contains("start-bath"));
+}
+
 #[test]
 fn a_compound_too_stiff_to_spray_carries_a_condition() {
     let duty = "ambient: -10 .. 20 degC\nsump: 20 .. 40 degC\noil now: none\n";

@@ -305,6 +305,30 @@ fn a_chain_too_fast_for_its_feed_is_open_and_says_so() {
     }
 }
 
+/// Components without a window that go by grade: thinner than their thinnest usual grade an oil is
+/// open, with the question to the maker (ISO VG 460 from 414 mm2/s at 40 degC, ISO 3448; AGMA 13
+/// from 190 mm2/s at 100 degC, public reprints of AGMA 9005).
+#[test]
+fn an_open_gear_thinner_than_its_thinnest_grade_is_open() {
+    for (id, least, at_c) in [
+        ("gear_open_bath", 414.0, 40.0),
+        ("gear_open_intermittent", 190.0, 100.0),
+    ] {
+        let c = BOOK.components.get(id).expect("built in");
+        let met = weighed(c, at(least * OFF, at_c, RUNNING), RUNNING, "");
+        assert!(
+            matches!(met.verdict.as_str(), "holds" | "tight"),
+            "{id}: {}",
+            met.whole
+        );
+        let short = weighed(c, at(least / OFF, at_c, RUNNING), RUNNING, "");
+        assert_eq!(short.verdict, "open", "{id}: {}", short.whole);
+        let end = format!("too thin at {at_c:.0} degC");
+        assert!(short.because.contains(&end), "{id}: {}", short.because);
+        assert!(short.conditions.contains(id), "{id}: {}", short.conditions);
+    }
+}
+
 #[test]
 fn what_is_out_of_scope_is_never_given_an_oil() {
     for c in BOOK.components.iter().filter(|c| out_of_scope(c)) {

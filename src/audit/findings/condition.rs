@@ -49,8 +49,9 @@ pub(super) fn condition(audit: &Audit, unit: &Unit, place: usize) -> Vec<Finding
         } else {
             ""
         };
+        let codes = if over == 1 { "code" } else { "codes" };
         list.push(plain(unit, place, "cleanliness", clean.level, 25.0, "Dirtier than its strictest part asks",
-            format!("Cleanliness {}{counted} against {target} ({part}): {over} codes over, each of which doubles the particles.", clean.code),
+            format!("Cleanliness {}{counted} against {target} ({part}): {over} {codes} over, each of which doubles the particles.", clean.code),
             &format!("filter to {target}; no oil change for that")));
     }
     list

@@ -54,6 +54,11 @@ fn run(session: &mut Session<'_>, args: &Compare) -> Result<Exit, Exit> {
 fn audits(session: &Session<'_>, args: &Compare) -> Option<AuditChange> {
     let document = |name: &str| {
         let bytes = session.host.read(Path::new(name)).ok()?;
+        // the format stands at the top; a document of judgements may be very long
+        let top = String::from_utf8_lossy(&bytes[..bytes.len().min(400)]);
+        if !top.contains("filmwright.audit") {
+            return None;
+        }
         audit_change::read(&String::from_utf8(bytes).ok()?)
     };
     let (old, new) = (document(&args.old)?, document(&args.new)?);

@@ -184,10 +184,7 @@ fn need_line(scales: &Scales<'_>, demands: &PointDemands, demand: &Demand) -> (S
         End::HotFloor | End::MakerGrade | End::PourMargin => (">=", Toward::Up),
         _ => ("<=", Toward::Down),
     };
-    let limit = limit_amount(demand, t).map_or_else(
-        || "as its own limit".to_owned(),
-        |a| quantity(a, scales.units, toward),
-    );
+    let limit = limit_amount(demand, t).map(|a| quantity(a, scales.units, toward));
     let at = t.map_or(String::new(), |t| {
         format!(
             " at {}",
@@ -203,10 +200,12 @@ fn need_line(scales: &Scales<'_>, demands: &PointDemands, demand: &Demand) -> (S
     } else {
         format!(", {}", demand.source)
     };
-    (
-        format!("{sign} {limit}{at}"),
-        format!("{}{source}", demand.asks()),
-    )
+    // a limit that is each oil's or grease's own has no figure here
+    let what = limit.map_or_else(
+        || format!("serves{at}"),
+        |limit| format!("{sign} {limit}{at}"),
+    );
+    (what, format!("{}{source}", demand.asks()))
 }
 
 fn row(scales: &Scales<'_>, i: usize, c: &Candidate, style: Style) -> Vec<String> {

@@ -56,30 +56,26 @@ fn one_after_other(
     second: Lever,
     target: Target,
 ) -> Option<Vec<Change>> {
-    let range = trial.range(first, j, target)?;
-    if !acts(j, first, target) {
-        return None;
-    }
-    let one = Change {
-        lever: first,
-        from: range.from,
-        to: smallest(trial, first, range, first.side(), target)?,
-    };
+    let one = own_side(trial, j, first, target)?;
     let next = trial.with(first, one.to)?;
     Some(vec![one, on_top(&next, second, target)?])
 }
 
 /// Solves a change on top of another.
 fn on_top(next: &Trial<'_>, lever: Lever, target: Target) -> Option<Change> {
-    let j = next.judge();
-    let range = next.range(lever, &j, target)?;
-    if !acts(&j, lever, target) {
+    own_side(next, &next.judge(), lever, target)
+}
+
+/// The smallest change that mends the side it acts on; none where nothing is missed there.
+fn own_side(trial: &Trial<'_>, j: &Judgement, lever: Lever, target: Target) -> Option<Change> {
+    let range = trial.range(lever, j, target)?;
+    if !acts(j, lever, target) {
         return None;
     }
     Some(Change {
         lever,
         from: range.from,
-        to: smallest(next, lever, range, lever.side(), target)?,
+        to: smallest(trial, lever, range, lever.side(), target)?,
     })
 }
 

@@ -124,7 +124,6 @@ pub(in crate::demand) fn shape<R: Recorder>(
             });
             let pushed = pushed(cx, part, b, &geometry);
             Some(Shape {
-                pushed,
                 diameter,
                 width,
                 clearance,
@@ -133,6 +132,7 @@ pub(in crate::demand) fn shape<R: Recorder>(
                 surface,
                 pressure,
                 bearing,
+                pushed,
             })
         }
         Err(refused) => {

@@ -24,7 +24,7 @@ pub(super) fn mesh<R: Recorder>(
         kind: LossKind::Mesh,
         part: part.label.clone(),
         with: With(vec![("P", lost.power.step), ("eta", lost.efficiency.step)]),
-        form: Form::Worm(lost.lost),
+        form: Form::Worm(lost.heat),
     });
     out.lacks(
         part,

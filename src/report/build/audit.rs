@@ -16,7 +16,7 @@ use crate::model::sample::Reading;
 use crate::model::word::Word;
 use crate::numeric::math::lg;
 use crate::quantity::convert::{celsius, to_mm2_s};
-use crate::quantity::show::{Toward, fixed, unit_of};
+use crate::quantity::show::{Toward, Units, fixed, unit_of};
 use crate::report::draw::trend::{TrendPanel, TrendSample};
 use crate::report::model::{
     Answer, AuditSheet, Body, CalcStep, Caution, CrossCell, CrossRow, Evidence, Finding, Mark,
@@ -43,7 +43,7 @@ pub(super) fn sheet(report: &Report<'_>, audit: &Audit) -> Option<Sheet> {
         answer: answer(report, audit),
         caution: caution_of(audit),
         cross: cross_rows(report, audit),
-        findings: findings(audit),
+        findings: findings(audit, report.run.scales.units),
         panels: panels(report, audit),
         panels_caption: caption(audit),
         samples: samples(report, audit),
@@ -145,7 +145,7 @@ fn cell(names: &[String], means: &str) -> CrossCell {
 }
 
 fn cross_rows(report: &Report<'_>, audit: &Audit) -> Vec<CrossRow> {
-    let site = report.run.scales.site;
+    let (site, units) = (report.run.scales.site, report.run.scales.units);
     let mut list = Vec::new();
     let mut open: Vec<String> = Vec::new();
     for row in cross::rows(audit, site) {
@@ -170,7 +170,7 @@ fn cross_rows(report: &Report<'_>, audit: &Audit) -> Vec<CrossRow> {
         open.extend(
             row.open
                 .iter()
-                .map(|(name, why)| format!("{name} ({})", say::set(why))),
+                .map(|(name, why)| format!("{name} ({})", say::told(why, units))),
         );
         if row.whose == Whose::NotKnown && row.serves.is_empty() && row.not.is_empty() {
             continue;
@@ -193,16 +193,16 @@ fn cross_rows(report: &Report<'_>, audit: &Audit) -> Vec<CrossRow> {
     list
 }
 
-fn findings(audit: &Audit) -> Vec<Finding> {
+fn findings(audit: &Audit, units: Units) -> Vec<Finding> {
     audit
         .findings
         .iter()
         .enumerate()
-        .map(|(i, f)| finding(audit, i, f))
+        .map(|(i, f)| finding(audit, units, i, f))
         .collect()
 }
 
-fn finding(audit: &Audit, i: usize, f: &Found) -> Finding {
+fn finding(audit: &Audit, units: Units, i: usize, f: &Found) -> Finding {
     let causes = match (f.kind, f.judged) {
         ("changed" | "unmatched", Some(place)) => audit.judged[place]
             .diagnosis
@@ -211,7 +211,9 @@ fn finding(audit: &Audit, i: usize, f: &Found) -> Finding {
             .map(|n| {
                 let lines = |sign: f64| -> Vec<String> {
                     let mine = n.evidence.iter().filter(|e| e.weight * sign > 0.0);
-                    mine.take(LINES).map(|e| say::set(&e.says)).collect()
+                    mine.take(LINES)
+                        .map(|e| say::told(&e.says, units))
+                        .collect()
                 };
                 Evidence {
                     cause: format!("{}, {}", say::sentence(n.cause.says()), n.word()),
@@ -227,9 +229,9 @@ fn finding(audit: &Audit, i: usize, f: &Found) -> Finding {
         number: u32::try_from(i + 1).unwrap_or(u32::MAX),
         level: f.level.word().to_owned(),
         title: format!("{}: {}", f.machines.join(", "), f.title),
-        text: say::set(&f.text).as_str().into(),
+        text: say::told(&f.text, units).as_str().into(),
         causes,
-        what: say::stopped(&say::sentence(&say::set(&f.act)))
+        what: say::stopped(&say::sentence(&say::told(&f.act, units)))
             .as_str()
             .into(),
     }
@@ -304,8 +306,8 @@ fn panel(
                 "Latest {} mm²/s; {} VG steps from the label. The machine asks {}. Trend: {}.",
                 fixed(value, 1, Toward::Nearest),
                 moved.join(", "),
-                say::set(&asks(latest)),
-                say::set(&trend_words(&unit.trend))
+                say::told(&asks(latest), scales.units),
+                say::told(&trend_words(&unit.trend), scales.units)
             ),
             samples: readings
                 .iter()
@@ -423,7 +425,7 @@ fn sample(report: &Report<'_>, audit: &Audit, name: &str, j: &Judged) -> SampleR
         nu40: figure(Reading::Nu40),
         nu100: figure(Reading::Nu100),
         as_labelled: format!("{}{moved}", j.whose.words()),
-        asks: say::set(&asks(j)),
+        asks: say::told(&asks(j), report.run.scales.units),
         mark: mark_of(j),
         margins,
         flags: b.flags.clone().unwrap_or_else(|| "none".to_owned()),
@@ -487,7 +489,7 @@ fn with_steps(report: &Report<'_>, audit: &Audit, mut body: AuditSheet) -> Audit
         body.steps.push(CalcStep {
             id: format!("s{number}"),
             number: number.to_string(),
-            title: say::sentence(&say::set(&step.says)),
+            title: say::sentence(&say::told(&step.says, scales.units)),
             formula: Some(law.formula.to_owned()),
             with,
             result: say::amount(step.amount, scales.units, Toward::Nearest),
@@ -497,7 +499,11 @@ fn with_steps(report: &Report<'_>, audit: &Audit, mut body: AuditSheet) -> Audit
                 String::new()
             },
             source: say::set(law.source),
-            notes: step.notes.iter().map(|n| say::set(n)).collect(),
+            notes: step
+                .notes
+                .iter()
+                .map(|n| say::told(n, scales.units))
+                .collect(),
             carried: !governs,
             governs,
         });

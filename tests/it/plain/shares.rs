@@ -69,7 +69,7 @@ fn a_usual_load_stands_in_where_the_rating_is_stated() {
     assert_eq!(thick["not_counted"].as_array().map(Vec::len), Some(0));
     assert!(figure(&thick["by_losses"]) > 78.0, "{thick}");
     let need = flat(&ran("", &rated, "need -q").out);
-    let gap = "load: 32\u{202f}000 N assumed, 12\u{202f}000 N .. 60\u{202f}000 N plausible";
+    let gap = "load: 32 000 N assumed, 12 000 N .. 60 000 N plausible";
     assert!(need.contains(gap), "{need}");
 }
 
