@@ -4,4 +4,5 @@
 mod again;
 mod dirty;
 mod files;
+mod wide;
 mod workbook;

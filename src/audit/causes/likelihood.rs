@@ -9,7 +9,7 @@ use crate::audit::bottle::{Bounds, Figures};
 use crate::audit::profile::{ADDITIVE, From, Profile};
 use crate::audit::scatter::Scatter;
 use crate::model::sample::Reading;
-use crate::numeric::math::{exp, ln};
+use crate::numeric::math::ln;
 
 /// What a figure is and what is expected of new oil.
 #[derive(Clone, Copy, Debug)]
@@ -113,6 +113,7 @@ impl Sample {
     /// Log-likelihood of the viscosities.
     pub(super) fn viscosity(&self, theta: &Theta) -> f64 {
         let model = theta.spread * theta.spread;
+        let mut product = Product::default();
         match self.nu {
             [Some((a, va)), Some((b, vb))] => {
                 let (ra, rb) = (a - theta.d[0], b - theta.d[1]);
@@ -123,24 +124,70 @@ impl Sample {
                 );
                 let det = va * vb - c * c;
                 let m = (vb * ra * ra - 2.0 * c * ra * rb + va * rb * rb) / det;
-                -0.5 * ln(det) - 4.5 * ln(1.0 + m / 7.0)
+                let y = 1.0 + m / 7.0;
+                product.take(det * eighth(y) * y);
             }
-            [Some((a, v)), None] => student(a - theta.d[0], v + model + self.common),
-            [None, Some((b, v))] => student(b - theta.d[1], v + model + self.common),
-            [None, None] => 0.0,
+            [Some((a, v)), None] => {
+                product.take(student(a - theta.d[0], v + model + self.common));
+            }
+            [None, Some((b, v))] => {
+                product.take(student(b - theta.d[1], v + model + self.common));
+            }
+            [None, None] => {}
         }
+        product.log()
     }
 
     /// Log-likelihood of everything else.
     pub(super) fn rest(&self, theta: &Theta) -> f64 {
-        let all = self.others.iter().chain(&self.additive);
-        all.map(|seen| fit(seen, theta)).sum()
+        let mut product = Product::default();
+        for seen in self.others.iter().chain(&self.additive) {
+            product.take(fit(seen, theta));
+        }
+        product.log()
     }
 }
 
-/// Log of the density of a Student distribution of seven degrees of freedom, without its constant.
+/// Densities multiplied, each as its inverse square, so that one logarithm serves for many figures.
+struct Product {
+    product: f64,
+    sum: f64,
+}
+
+impl Default for Product {
+    fn default() -> Self {
+        Self {
+            product: 1.0,
+            sum: 0.0,
+        }
+    }
+}
+
+impl Product {
+    fn take(&mut self, inverse_square: f64) {
+        self.product *= inverse_square;
+        if !(1e-100..=1e100).contains(&self.product) {
+            self.sum += ln(self.product);
+            self.product = 1.0;
+        }
+    }
+
+    /// Logarithm of the density of all together.
+    fn log(&self) -> f64 {
+        -0.5 * (self.sum + ln(self.product))
+    }
+}
+
+fn eighth(y: f64) -> f64 {
+    let square = y * y;
+    let fourth = square * square;
+    fourth * fourth
+}
+
+/// The density of a Student distribution of seven degrees of freedom, without its constant, as its
+/// inverse square: `variance (1 + r^2 / 7 variance)^8`.
 fn student(r: f64, variance: f64) -> f64 {
-    -0.5 * ln(variance) - 4.0 * ln(1.0 + r * r / (7.0 * variance))
+    variance * eighth(1.0 + r * r / (7.0 * variance))
 }
 
 /// The value a setting expects of a figure, and its variance without that of the test.
@@ -193,6 +240,7 @@ pub(super) fn expected(seen: &Seen, theta: &Theta) -> (f64, f64) {
     (own + from_other + shift.by, variance)
 }
 
+/// The density of a figure at a setting, as its inverse square.
 fn fit(seen: &Seen, theta: &Theta) -> f64 {
     let (mean, variance) = expected(seen, theta);
     let (value, sigma) = match seen.bounds {
@@ -201,14 +249,13 @@ fn fit(seen: &Seen, theta: &Theta) -> f64 {
         Bounds::Below => (mean.min(seen.value), 0.4 * seen.value),
         Bounds::Above => (mean.max(seen.value), seen.sigma),
     };
-    let log = student(value - mean, variance + sigma * sigma);
+    let usual = student(value - mean, variance + sigma * sigma);
     if !(seen.assumed && seen.reading.is_element()) {
-        return log;
+        return usual;
     }
     let anything = 100.0 + 0.5 * seen.value;
-    let unusual = ln(UNUSUAL) + student(0.0, anything * anything);
-    let top = log.max(unusual);
-    top + ln(exp(log - top) + exp(unusual - top))
+    let density = 1.0 / usual.sqrt() + UNUSUAL / anything;
+    1.0 / (density * density)
 }
 
 /// Standard deviations between a figure and what a setting expects.

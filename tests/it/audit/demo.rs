@@ -273,3 +273,22 @@ fn findings_closed_since_the_last_audit_are_listed() {
     let document = on(host, "compare old.json new.json -f json").json();
     assert_eq!(document["changes"][0]["finding"], "closed");
 }
+
+/// Water-soluble polyglycol holds thousands of ppm in solution (common practice), wherever it runs;
+/// a mineral oil in the same machine does not.
+#[test]
+fn the_limit_for_water_is_that_of_the_base() {
+    let table = "bottle,machine,label,drawn,nu40,nu100,water\n\
+                 a,GB-104,P220,2026-10-01,222,40.1,2000\n\
+                 b,FAN,C68,2026-10-01,67.4,8.75,2000\n";
+    let host = with(table, "").with(
+        "oils.yaml",
+        &format!(
+            "{}P220: {{ kind: gear, classes: [CKS], base: PAG water-soluble, viscosity: [222 mm2/s at 40 degC, 40 mm2/s at 100 degC] }}\n",
+            super::sites::OILS
+        ),
+    );
+    let document = on(host, "audit -f json --on 2026-11-02").json();
+    assert!(causes(sample(&document, "a")).is_empty());
+    assert_eq!(causes(sample(&document, "b")), ["water"]);
+}

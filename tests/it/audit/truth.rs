@@ -213,11 +213,11 @@ struct Drawn {
     can_tell: bool,
 }
 
-/// A table of samples, and what each is.
-fn table(count: usize, seed: u64) -> (String, BTreeMap<String, Drawn>) {
+/// A table of samples, and what each is; with a sample of every new oil, or without.
+fn table(count: usize, seed: u64, new_oil: bool) -> (String, BTreeMap<String, Drawn>) {
     let mut chance = Chance::seeded(seed);
     let mut text = HEADINGS.to_owned();
-    for oil in OILS {
+    for oil in OILS.iter().filter(|_| new_oil) {
         let f = read(&fresh(oil), &mut chance);
         row(
             &mut text,
@@ -378,9 +378,8 @@ impl Score {
     clippy::print_stdout,
     reason = "the confusion table is part of the test's output"
 )]
-#[test]
-fn first_named_causes_are_right_and_clean_samples_are_left_alone() {
-    let (text, all) = table(1000, 20_261_201);
+fn scored(count: usize, seed: u64, new_oil: bool) -> Score {
+    let (text, all) = table(count, seed, new_oil);
     let document = on(host(&text), "audit -f json -q").json();
     let mut score = Score::default();
     let mut seen = 0;
@@ -392,21 +391,32 @@ fn first_named_causes_are_right_and_clean_samples_are_left_alone() {
         score.take(drawn, sample["causes"][0]["id"].as_str());
     }
     println!("{}", score.print());
-    assert_eq!(seen, 1000);
-    let share = |a: u32, b: u32| f64::from(a) / f64::from(b.max(1));
-    assert!(
-        share(score.right_where_told, score.told) >= 0.85,
-        "{}",
-        score.print()
-    );
-    assert!(
-        share(score.right, score.causes) >= 0.85,
-        "{}",
-        score.print()
-    );
-    assert!(
-        share(score.accused, score.clean) <= 0.03,
-        "{}",
-        score.print()
-    );
+    assert_eq!(seen, count);
+    score
+}
+
+fn share(a: u32, b: u32) -> f64 {
+    f64::from(a) / f64::from(b.max(1))
+}
+
+#[test]
+fn first_named_causes_are_right_and_clean_samples_are_left_alone() {
+    let score = scored(1000, 20_261_201, true);
+    let told = share(score.right_where_told, score.told);
+    assert!(told >= 0.85, "{}", score.print());
+    let right = share(score.right, score.causes);
+    assert!(right >= 0.85, "{}", score.print());
+    let accused = share(score.accused, score.clean);
+    assert!(accused <= 0.03, "{}", score.print());
+}
+
+/// Where nobody has sampled the new oil its additives are only what is usual for its kind: fewer
+/// causes are certain then, and no clean sample is accused for that.
+#[test]
+fn without_new_oil_samples_nobody_is_accused_on_what_is_usual() {
+    let score = scored(1000, 7_031, false);
+    let told = share(score.right_where_told, score.told);
+    assert!(told >= 0.85, "{}", score.print());
+    let accused = share(score.accused, score.clean);
+    assert!(accused <= 0.03, "{}", score.print());
 }
