@@ -143,13 +143,10 @@ mod tests {
             |x: f64| crate::numeric::math::exp(x) - 3.0,
             |x: f64| x * x * x - 1e-9,
         );
-        let cases: [(f64, f64, &dyn Fn(f64) -> f64); 4] = [
-            (1.0, 1e6, &lg),
-            (-5.0, 40.0, &e),
-            (-1.0, 1.0, &cubed),
-            (10.0, 0.0, &|x: f64| x - 7.3),
-        ];
-        for (lo, hi, f) in cases {
+        let linear = |x: f64| x - 7.3;
+        let residuals: [&dyn Fn(f64) -> f64; 4] = [&lg, &e, &cubed, &linear];
+        let ends = [(1.0, 1e6), (-5.0, 40.0), (-1.0, 1.0), (10.0, 0.0)];
+        for ((lo, hi), f) in ends.into_iter().zip(residuals) {
             let mut calls = 0;
             let root = bracketed(lo, hi, |x| {
                 calls += 1;
@@ -172,8 +169,8 @@ mod tests {
         assert!((root.map_or(f64::NAN, |r| r.at) - 0.9).abs() < 1e-12);
         let sentinel = bracketed(0.0, 1.0, |x| if x < 0.25 { -1e9 } else { x });
         assert!((sentinel.map_or(f64::NAN, |r| r.at) - 0.25).abs() < 1e-12);
-        let unknown = bracketed(0.0, 1.0, |x| match x {
-            x if x == 0.0 => -1.0,
+        let unknown = bracketed(-1.0, 1.0, |x| match x {
+            x if x <= -1.0 => -1.0,
             x if x < 0.25 => f64::NAN,
             x => x,
         });

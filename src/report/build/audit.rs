@@ -1,31 +1,31 @@
 //! The audit sheet: two-by-two, findings, small multiples, sample by sample, one worked through.
 
+mod steps;
+
 use super::case::mark;
 use super::plan::On;
 use super::{Report, caution, say};
+use crate::audit::Audit;
 use crate::audit::cross;
-use crate::audit::findings::{Finding as Found, asks, steps, trend_words};
+use crate::audit::findings::{Finding as Found, asks, steps as steps_of, trend_words};
 use crate::audit::judged::Judged;
 use crate::audit::profile::From;
 use crate::audit::units::Unit;
 use crate::audit::whose::Whose;
-use crate::audit::{Audit, worked};
 use crate::judge::Verdict;
 use crate::model::rulebook::used_oil::Reading as On40;
 use crate::model::sample::Reading;
 use crate::model::word::Word;
 use crate::numeric::math::lg;
 use crate::quantity::convert::{celsius, to_mm2_s};
-use crate::quantity::show::{Toward, Units, fixed, unit_of};
+use crate::quantity::show::{Toward, Units, fixed};
 use crate::report::draw::trend::{TrendPanel, TrendSample};
 use crate::report::model::{
-    Answer, AuditSheet, Body, CalcStep, Caution, CrossCell, CrossRow, Evidence, Finding, Mark,
-    Panel, Phrase, Put, SampleRow, Sheet, SignBox, SignOff,
+    Answer, AuditSheet, Body, Caution, CrossCell, CrossRow, Evidence, Finding, Mark, Panel, Phrase,
+    SampleRow, Sheet, SignBox, SignOff,
 };
 use crate::report::names::plain;
-use crate::trace::{How, StepId};
 use jiff::civil::Date;
-use std::collections::BTreeMap;
 
 /// Machines named in one cell at most.
 const NAMED: usize = 40;
@@ -52,7 +52,7 @@ pub(super) fn sheet(report: &Report<'_>, audit: &Audit) -> Option<Sheet> {
         trust: trust(audit),
         sign: sign(report, audit),
     };
-    let body = with_steps(report, audit, body);
+    let body = steps::with_steps(report, audit, body);
     Some(Sheet {
         place: fixed.place.clone(),
         number: fixed.number,
@@ -293,7 +293,7 @@ fn panel(
     let id = &scales.site.oils[oil].id;
     let moved: Vec<String> = readings
         .iter()
-        .map(|(_, nu)| steps(Some(above(*nu))))
+        .map(|(_, nu)| steps_of(Some(above(*nu))))
         .collect();
     Some(Panel {
         tag: unit.name.clone(),
@@ -431,92 +431,6 @@ fn sample(report: &Report<'_>, audit: &Audit, name: &str, j: &Judged) -> SampleR
         flags: b.flags.clone().unwrap_or_else(|| "none".to_owned()),
         missing,
     }
-}
-
-/// The worked example: the steps behind the margins of one sample.
-fn with_steps(report: &Report<'_>, audit: &Audit, mut body: AuditSheet) -> AuditSheet {
-    let scales = report.run.scales;
-    let Some(j) = worked::example(audit) else {
-        return body;
-    };
-    let Some((told, _)) = worked::explanation(scales, audit, j) else {
-        return body;
-    };
-    let Some(s) = &j.serves else {
-        return body;
-    };
-    let judged = [s.judgement.hot, s.judgement.cold].into_iter().flatten();
-    let results: Vec<StepId> = judged
-        .filter_map(|m| told.margins.iter().find(|e| e.demand == m.demand))
-        .map(|e| e.step)
-        .collect();
-    let mut places: BTreeMap<StepId, usize> = BTreeMap::new();
-    for step in told.trace.behind(&results) {
-        let How::Law { law, with } = &step.how else {
-            continue;
-        };
-        let number = body.steps.len() + 1;
-        let puts = with.iter().filter_map(|(symbol, id)| {
-            let used = told.trace.step(*id)?;
-            let link = places.get(id).map(|at| {
-                let made: &CalcStep = &body.steps[*at];
-                let place = report
-                    .plan
-                    .audit
-                    .as_ref()
-                    .map(|f| f.place.id(&made.id))
-                    .unwrap_or_default();
-                (
-                    made.number.clone(),
-                    crate::report::names::Href::here(&place),
-                )
-            });
-            let from = match &used.how {
-                How::Given { origin, .. } => Some(super::inputs::origin(origin.whose)),
-                How::Law { .. } => None,
-            };
-            Some(Put {
-                symbol: (*symbol).to_owned(),
-                number: String::new(),
-                shown: say::amount(used.amount, scales.units, Toward::Nearest),
-                origin: from,
-                step: link,
-            })
-        });
-        let with: Vec<Put> = puts.collect();
-        places.insert(step.id, body.steps.len());
-        let governs = results.contains(&step.id);
-        body.steps.push(CalcStep {
-            id: format!("s{number}"),
-            number: number.to_string(),
-            title: say::sentence(&say::told(&step.says, scales.units)),
-            formula: Some(law.formula.to_owned()),
-            with,
-            result: say::amount(step.amount, scales.units, Toward::Nearest),
-            aside: if governs {
-                "margin of the sample".to_owned()
-            } else {
-                String::new()
-            },
-            source: say::set(law.source),
-            notes: step
-                .notes
-                .iter()
-                .map(|n| say::told(n, scales.units))
-                .collect(),
-            carried: !governs,
-            governs,
-        });
-    }
-    let address = j
-        .point
-        .map_or(String::new(), |p| scales.site.points[p].address());
-    body.steps_title = format!(
-        "{address}, bottle {}: the same steps give every row of the table. Unit of margins: {}.",
-        audit.bottles[j.bottle].name(),
-        unit_of(crate::quantity::Kind::VgStep, scales.units).name
-    );
-    body
 }
 
 fn trust(audit: &Audit) -> Vec<Phrase> {
