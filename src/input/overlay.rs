@@ -4,6 +4,7 @@
 //! code as any other, and says that it comes from the command line.
 
 mod aim;
+mod put;
 
 pub use aim::About;
 
@@ -40,16 +41,14 @@ pub struct Settings {
     names: Vec<Option<String>>,
     /// What each value is for, once that has been found; those for anything else than the points
     /// have gone into the trees.
-    aims: Vec<Aim>,
+    aims: Vec<(Entry, Aim)>,
 }
 
 impl Settings {
     /// The values laid over the points of some tags or addresses.
     pub fn over(&self, targets: &[String]) -> Vec<Overlay<'_>> {
-        let entries = self.root.entries().unwrap_or_default();
-        entries
+        self.aims
             .iter()
-            .zip(&self.aims)
             .filter_map(|(entry, aim)| match aim {
                 Aim::Point(part) => Some(Overlay {
                     targets: targets.to_vec(),
@@ -73,13 +72,13 @@ impl Settings {
         about: &About,
         problems: &mut Problems,
     ) -> Result<(), Reported> {
-        let entries = self.root.entries().unwrap_or_default();
+        let entries = self.root.entries().unwrap_or_default().to_vec();
         for (entry, name) in entries.iter().zip(&self.names) {
             let value = set.slice(entry.value.span);
             let found = aim::aim(problems, (name.as_deref(), entry), value, (about, trees));
-            if let Some(aim) = found {
-                aim::put(trees, &aim, entry);
-                self.aims.push(aim);
+            for aim in found.map_or(Vec::new(), |aim| aim.of_records(entry, about)) {
+                put::put(trees, &aim, entry);
+                self.aims.push((entry.clone(), aim));
             }
         }
         problems.failed().map_or(Ok(()), Err)

@@ -68,12 +68,16 @@ fn candidates(rows: &[Vec<String>], width: usize) -> String {
 }
 
 /// What is said where the list holds nothing of the sort a point takes.
-pub fn nothing_to_weigh(w: &Weighed<'_>) -> String {
+pub fn nothing_to_weigh(scales: &Scales<'_>, w: &Weighed<'_>) -> String {
     let sort = if crate::demand::takes_grease(w.point) {
         "grease"
     } else {
         "oil"
     };
+    let grease = crate::demand::takes_grease(w.point);
+    if scales.oils.iter().any(|o| o.grease == grease) {
+        return format!("nothing weighed: no {sort} was asked about  [nothing-to-weigh]");
+    }
     format!("nothing weighed: the oil list holds no {sort}  [nothing-to-weigh]")
 }
 
@@ -83,7 +87,7 @@ fn headline(scales: &Scales<'_>, w: &Weighed<'_>, width: usize) -> String {
     let id = |c: &Candidate| scales.site.oils[c.oil].id.clone();
     let Some(best) = w.candidates.first() else {
         return if w.barred.is_empty() {
-            format!("{address}  {}\n", nothing_to_weigh(w))
+            format!("{address}  {}\n", nothing_to_weigh(scales, w))
         } else {
             format!("{address}  every oil is barred here\n")
         };

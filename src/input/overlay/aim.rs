@@ -4,7 +4,6 @@
 //! Values for a point are laid over it as it is read ([`super::apply`]); all others are put into
 //! the trees of the files, so that everything that copies or inherits from there follows.
 
-use super::TOGETHER;
 use crate::input::file::FileKind;
 use crate::input::keys::machine::{AREA, MACHINE};
 use crate::input::keys::oil::OIL;
@@ -14,7 +13,7 @@ use crate::input::keys::{Form, Record, is_private, spelt};
 use crate::input::load::Tree;
 use crate::problem::{Code, Problem, Problems, Write, suggest};
 use crate::source::Place;
-use crate::source::yaml::{Entry, Key, Node, NodeKind};
+use crate::source::yaml::{Entry, Node};
 
 /// The points a run is about, and what its values may be for without being named.
 #[derive(Clone, Debug, Default)]
@@ -66,6 +65,24 @@ impl Aim {
             (_, Some(record)) => record.key(key).is_some(),
             (_, None) => true,
         }
+    }
+
+    /// The same, where the key says from what a machine inherits or copies: that is put into its
+    /// record, before anything is inherited.
+    pub(super) fn of_records(self, entry: &Entry, about: &About) -> Vec<Self> {
+        let inherits = matches!(spelt(&entry.key.text).as_str(), "area" | "like");
+        if self != Self::Point(None) || !inherits {
+            return vec![self];
+        }
+        let mut tags: Vec<&str> = about
+            .targets
+            .iter()
+            .map(|t| t.split('/').next().unwrap_or(t))
+            .collect();
+        tags.dedup();
+        tags.into_iter()
+            .map(|tag| Self::Machine(tag.to_owned()))
+            .collect()
     }
 
     /// As it is written before the key.
@@ -304,83 +321,4 @@ fn unknown_name(
             .write(Write::words(format!("--set \"{meant}: {key}={value}\""))),
         None => problem.write(Write::words(format!("--set \"oil ID: {key}={value}\""))),
     }
-}
-
-/// Puts a value into the trees of the files.
-pub(super) fn put(trees: &mut [Tree], aim: &Aim, entry: &Entry) {
-    let (kind, way): (FileKind, Vec<&str>) = match aim {
-        Aim::Point(_) => return,
-        Aim::Oil(id) => (FileKind::Oils, vec![id]),
-        Aim::Area(name) => (FileKind::Site, vec!["areas", name]),
-        Aim::House => (FileKind::Site, vec!["house"]),
-        Aim::Rule(name) => (FileKind::Site, vec!["house", "rules", name]),
-        Aim::Site => (FileKind::Site, Vec::new()),
-        Aim::Machine(address) => {
-            let way = ["machines"]
-                .into_iter()
-                .chain(match address.split_once('/') {
-                    Some((tag, point)) => vec![tag, "points", point],
-                    None => vec![address.as_str()],
-                });
-            (FileKind::Site, way.collect())
-        }
-    };
-    let mut roots: Vec<&mut Node> = trees
-        .iter_mut()
-        .filter(|t| t.kind == kind)
-        .filter_map(|t| t.root.as_mut())
-        .collect();
-    for root in &mut roots {
-        if let Some(node) = at_mut(root, &way) {
-            set(node, entry);
-            return;
-        }
-    }
-    // house values where the files have none
-    if let (Aim::House, Some(root)) = (aim, roots.first_mut())
-        && let NodeKind::Map(entries) = &mut root.kind
-    {
-        entries.push(Entry {
-            key: Key {
-                text: "house".to_owned(),
-                span: entry.key.span,
-            },
-            value: Node {
-                span: entry.value.span,
-                kind: NodeKind::Map(vec![entry.clone()]),
-            },
-        });
-    }
-}
-
-fn at_mut<'n>(node: &'n mut Node, way: &[&str]) -> Option<&'n mut Node> {
-    let Some((first, rest)) = way.split_first() else {
-        return Some(node);
-    };
-    let NodeKind::Map(entries) = &mut node.kind else {
-        return None;
-    };
-    let names_it = |e: &&mut Entry| e.key.text.trim() == *first || spelt(&e.key.text) == *first;
-    at_mut(&mut entries.iter_mut().find(names_it)?.value, rest)
-}
-
-/// Sets a key of a record, in place of what stated the same.
-fn set(node: &mut Node, entry: &Entry) {
-    let key = spelt(&entry.key.text);
-    if !matches!(node.kind, NodeKind::Map(_)) {
-        node.kind = NodeKind::Map(Vec::new());
-    }
-    let NodeKind::Map(entries) = &mut node.kind else {
-        return;
-    };
-    let reading = ["sump", "at ambient"];
-    let same = |other: &str| {
-        let one_reading = reading.contains(&key.as_str()) && reading.contains(&other);
-        let together = TOGETHER
-            .iter()
-            .any(|g| g.contains(&key.as_str()) && g.contains(&other));
-        other == key || (together && !one_reading)
-    };
-    entries.retain(|e| !same(&spelt(&e.key.text)));
-    entries.push(entry.clone());
 }

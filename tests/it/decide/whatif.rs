@@ -89,7 +89,7 @@ fn the_stated_value_of_an_oil_an_area_or_the_house_changes_nothing() {
 }
 
 /// A site where everything that has a name states something.
-const NAMED: &str = "file: site 1\nsite: Test works\nhouse:\n  reserve: 0.5 step\n  rules:\n    slow, EP:\n      replaces: iso281-kappa\n      limit: kappa >= 0.9\n      for: EP\nareas:\n  yard:\n    ambient: -15 .. 35 degC\nmachines:\n  M1:\n    area: yard\n    lubrication: splash\n    oil now: B-220\n    sump rise: 40 K\n    start limit: 25000 mm2/s, maker\n    parts:\n      - rolling bearing: 22220\n        speed: 236 r/min\n        rule: slow, EP\n  M2:\n    like: M1\n";
+const NAMED: &str = "file: site 1\nsite: Test works\nhouse:\n  reserve: 0.5 step\n  rules:\n    slow, EP:\n      replaces: iso281-kappa\n      limit: kappa >= 0.9\n      for: EP\nareas:\n  yard:\n    ambient: -15 .. 35 degC\n  hall:\n    ambient: 5 .. 55 degC\nmachines:\n  M1:\n    area: yard\n    lubrication: splash\n    oil now: B-220\n    sump rise: 40 K\n    start limit: 25000 mm2/s, maker\n    parts:\n      - rolling bearing: 22220\n        speed: 236 r/min\n        rule: slow, EP\n  M2:\n    like: M1\n";
 const NAMED_OILS: &str = "file: oils 1\nB-220:\n  kind: gear\n  base: PAO, no polymer\n  classes: [CKC]\n  additives: [EP]\n  viscosity: [220 mm2/s at 40 degC, 26.4 mm2/s at 100 degC]\n  pour point: -45 degC\n  density: 860 kg/m3 at 15 degC\nC-320:\n  like: B-220\n  viscosity: [320 mm2/s at 40 degC, 35 mm2/s at 100 degC]\n";
 
 /// A value on the command line does what the same value in the file does.
@@ -175,6 +175,36 @@ fn any_input_by_its_name_is_as_if_the_file_said_so() {
             }
         }
     }
+}
+
+/// What a machine inherits or copies from is set before it inherits and copies.
+#[test]
+fn another_area_or_another_machine_to_copy_is_followed() {
+    let host = || {
+        MemoryHost::new()
+            .with("site.yaml", NAMED)
+            .with("oils.yaml", NAMED_OILS)
+    };
+    let json = on(host(), "whatif M1 --set area=hall -f json -q").json();
+    let edited = MemoryHost::new()
+        .with("site.yaml", &NAMED.replace("area: yard", "area: hall"))
+        .with("oils.yaml", NAMED_OILS);
+    let weighed = on(edited, "weigh M1 -f json -q").json();
+    let moved = json["changes"].as_array().expect("a list");
+    assert!(!moved.is_empty(), "{json}");
+    for change in moved {
+        let all = weighed["judgements"].as_array().expect("a list");
+        let j = all.iter().find(|j| j["oil"] == change["oil"]);
+        let j = j.expect("weighed");
+        assert_eq!(j["verdict"], change["after"]);
+        assert_eq!(
+            j["margins"]["hot"]["value"],
+            change["margins"]["hot"]["after"]
+        );
+    }
+    // a machine with a rise of its own, then copying M1: nothing but M1's part is there
+    let ran = on(host(), "whatif M2 --set like=M3");
+    assert!(ran.err.contains("[like-unknown]"), "{}", ran.err);
 }
 
 #[test]

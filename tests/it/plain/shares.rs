@@ -110,7 +110,7 @@ fn a_nameplate_is_enough_for_a_mesh() {
 const BEVEL: &str = "  B:\n    ambient: -5 .. 35 degC\n    lubrication: splash\n    oil now: GO-220\n    sump: 68 degC, measured\n    at ambient: 22 degC\n    yellow metal: no\n    backstop: no\n    parts:\n      - gear mesh: bevel stage\n        type: spiral bevel\n        teeth: 17/52\n        normal module: 5 mm\n        face width: 45 mm\n        pinion speed: 1480 r/min\n        power: 45 kW\n        flank roughness: Ra 0.5 um\n";
 
 /// 197.449 W at 20 mPa s: the virtual pair of ISO 10300 in the forms of ISO/TR 14179-2, worked out
-/// apart from this program (H_v 0.125497, mu 0.0349632; 35 deg of spiral, 0.85 of the face).
+/// apart from this program (`H_v` 0.125497, mu 0.0349632; 35 deg of spiral, 0.85 of the face).
 #[test]
 fn a_bevel_pair_loses_as_its_virtual_pair() {
     let site = read(BEVEL);

@@ -93,11 +93,14 @@ const MACHINES: &[(&str, &str, &str, &str)] = &[
 fn host() -> MemoryHost {
     let mut site = String::from("file: site 1\nsite: Test yard\nmachines:\n");
     for (tag, lubrication, oil, parts) in MACHINES {
-        site.push_str(&format!(
+        let machine = format!(
             "  {tag}:\n    ambient: 10 .. 30 degC, measured\n    lubrication: {lubrication}\n    sump: 62 degC, measured\n    at ambient: 28 degC\n    oil now: {oil}\n    yellow metal: no\n    backstop: no\n    parts:\n"
-        ));
+        );
+        site.push_str(&machine);
         for line in parts.lines() {
-            site.push_str(&format!("      {line}\n"));
+            site.push_str("      ");
+            site.push_str(line);
+            site.push('\n');
         }
     }
     MemoryHost::new()
