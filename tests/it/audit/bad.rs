@@ -179,9 +179,10 @@ fn no_table_breaks_the_reader() {
 
 #[test]
 fn a_whole_column_of_one_mistake_is_told_once_with_its_rows() {
-    let rows: String = (1..=12)
-        .map(|n| format!("HP-1;H46;2026-10-{n:02};45,{n}\n"))
+    let rows: Vec<String> = (1..=12)
+        .map(|n| format!("HP-1;H46;2026-10-{n:02};45,{n}"))
         .collect();
+    let rows = rows.join("\n");
     let ran = audit(&format!("machine;label;drawn;nu40\n{rows}"), "");
     assert_eq!(ran.err.matches("[cell-unread]").count(), 1, "{}", ran.err);
     assert!(
