@@ -83,6 +83,15 @@ pub enum Bound<T> {
 }
 
 impl<T: Copy> Bound<T> {
+    /// In words, the figure as `shown`: `below -40 degC`.
+    pub fn says(&self, shown: impl Fn(T) -> String) -> String {
+        match self {
+            Self::Exactly(t) => shown(*t),
+            Self::Below(t) => format!("below {}", shown(*t)),
+            Self::Above(t) => format!("above {}", shown(*t)),
+        }
+    }
+
     /// The figure written, whatever it bounds.
     pub fn figure(&self) -> T {
         match self {

@@ -68,6 +68,18 @@ pub enum Used {
     Crosses,
 }
 
+impl Used {
+    /// How the reading is used, in words.
+    pub fn says(self) -> &'static str {
+        match self {
+            Self::Yes => "used",
+            Self::Within => "compared only: warmer than the coldest point stated",
+            Self::ThinnerThanLine => "not used: sheared fast, it reads low",
+            Self::Crosses => "not used: it does not fit the others",
+        }
+    }
+}
+
 /// Everything measured cold, coldest first, with how it is used.
 pub(super) fn points(
     oil: &Oil,

@@ -166,6 +166,25 @@ pub struct ColdDesignation {
     pub lacks: Option<String>,
 }
 
+impl ColdDesignation {
+    /// Its name, how it was found, and what the whole one lacks (or nothing).
+    pub fn says(&self) -> (String, &'static str, String) {
+        let name = match (&self.whole, self.grade) {
+            (Some(whole), _) => whole.clone(),
+            (None, Some(grade)) => grade.to_owned(),
+            (None, None) => "no low-temperature grade".to_owned(),
+        };
+        let how = if self.measured {
+            "measured"
+        } else {
+            "read off the line, not measured"
+        };
+        let lacks = self.lacks.as_ref();
+        let lacks = lacks.map_or(String::new(), |l| format!("; whole designation: {l}"));
+        (name, how, lacks)
+    }
+}
+
 /// Designation of a hydraulic oil by ASTM D6080; `None` for other kinds and for fluids with water.
 pub fn designation(oil: &Oil, curves: &Curves, rules: &Rulebook) -> Option<ColdDesignation> {
     let hydraulic = oil.kind == OilKind::Hydraulic;

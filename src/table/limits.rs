@@ -8,7 +8,7 @@ pub const UNPACKED_BYTES: u64 = 64 << 20;
 /// Bytes of a CSV file.
 pub const TEXT_FILE_BYTES: usize = 64 << 20;
 /// Cells that hold something, all sheets together.
-pub const CELLS: usize = 1_000_000;
+pub const CELLS: usize = 800_000;
 /// Bytes of all cell texts together.
 pub const TEXT_BYTES: usize = 32 << 20;
 /// Bytes of one cell's text: 32 767 characters, the limit of spreadsheets, in their longest form.

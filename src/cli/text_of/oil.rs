@@ -278,13 +278,11 @@ fn loss(p: &PolymerSheet) -> String {
             per_cent(most_severe)
         ),
     };
-    if let Some((written, known)) = &p.test {
-        let known = known
-            .as_ref()
-            .map_or("a test not known here", |k| k.0.as_str());
-        let _ = write!(says, "; test: {written} ({known})");
+    if let Some(test) = p.test_says() {
+        let _ = write!(says, "; {test}");
     }
-    let order: Vec<&str> = p.severity.iter().map(|(name, _)| name.as_str()).collect();
-    let _ = write!(says, ". Tests from mild to severe: {}", order.join("; "));
+    if let Some(order) = p.order_of_tests() {
+        let _ = write!(says, ". {order}");
+    }
     says
 }

@@ -171,10 +171,16 @@ impl Told<'_, '_, '_> {
         } else {
             Verdict::Holds
         };
-        let litres = mine
+        let stated: Vec<f64> = mine
             .iter()
             .filter_map(|p| litres_a_year(self.pool.point(p.place)))
-            .fold(0.0, |sum, l| sum + l);
+            .collect();
+        let sum = fixed(stated.iter().sum(), 0, Toward::Nearest);
+        let litres = match stated.len() {
+            0 => "-".to_owned(),
+            n if n < mine.len() => format!(">= {sum}"),
+            _ => sum,
+        };
         let old = replaces(self.scales, self.pool, &mine);
         let serves: Vec<String> = mine
             .iter()
@@ -194,7 +200,7 @@ impl Told<'_, '_, '_> {
                 verdict(word, self.style.marks)
             },
             self.tightest(&mine),
-            fixed(litres, 0, Toward::Nearest),
+            litres,
             if old.is_empty() {
                 "-".to_owned()
             } else {

@@ -147,9 +147,5 @@ impl Teller<'_> {
 /// A bound in words.
 pub(super) fn bound(b: Bound<ThermodynamicTemperature>) -> String {
     let shown = |t: ThermodynamicTemperature| quantity(t.amount(), Units::Si, Toward::Nearest);
-    match b {
-        Bound::Exactly(t) => shown(t),
-        Bound::Below(t) => format!("below {}", shown(t)),
-        Bound::Above(t) => format!("above {}", shown(t)),
-    }
+    b.says(shown)
 }

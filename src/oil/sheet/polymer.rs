@@ -39,6 +39,30 @@ pub struct PolymerSheet {
     pub calibrated: bool,
 }
 
+impl PolymerSheet {
+    /// The shear test as written, and what the rules know it as.
+    pub fn test_says(&self) -> Option<String> {
+        let (written, known) = self.test.as_ref()?;
+        let known = known.as_ref().map_or("a test not known here", |k| &k.0);
+        Some(format!("test: {written} ({known})"))
+    }
+
+    /// The tests the rules know, in their order.
+    pub fn order_of_tests(&self) -> Option<String> {
+        let order: Vec<&str> = self
+            .severity
+            .iter()
+            .map(|(name, _)| name.as_str())
+            .collect();
+        (!order.is_empty()).then(|| {
+            format!(
+                "Tests are not interchangeable; from mild to severe: {}",
+                order.join("; ")
+            )
+        })
+    }
+}
+
 /// Permanent loss at 40 and 100 °C.
 #[derive(Clone, Debug, PartialEq)]
 pub enum Loss {

@@ -4,7 +4,6 @@
 use super::oil_steps::OilSteps;
 use super::say;
 use crate::model::stated::{Bound, ViscosityLimit};
-use crate::oil::cold::Used;
 use crate::oil::grades::{Graded, Worn};
 use crate::oil::sheet::{Loss, OilSheet as Told, PolymerSheet};
 use crate::oil::start::Standing;
@@ -219,30 +218,20 @@ fn loss(p: &PolymerSheet, steps: &OilSteps, units: Units) -> String {
             per_cent(most_severe)
         ),
     };
-    if let Some((written, known)) = &p.test {
-        let known = known
-            .as_ref()
-            .map_or("a test not known here", |k| k.0.as_str());
-        let _ = write!(text, "; test: {written} ({known})");
+    if let Some(test) = p.test_says() {
+        let _ = write!(text, "; {test}");
     }
-    let order: Vec<&str> = p.severity.iter().map(|(name, _)| name.as_str()).collect();
-    if !order.is_empty() {
-        let _ = write!(
-            text,
-            ". Tests are not interchangeable; from mild to severe: {}",
-            order.join("; ")
-        );
+    if let Some(order) = p.order_of_tests() {
+        let _ = write!(text, ". {order}");
     }
     text
 }
 
 fn bound(b: Option<Bound<ThermodynamicTemperature>>, units: Units) -> String {
-    match b {
-        None => "not stated".to_owned(),
-        Some(Bound::Exactly(t)) => temperature(t, units),
-        Some(Bound::Below(t)) => format!("below {}", temperature(t, units)),
-        Some(Bound::Above(t)) => format!("above {}", temperature(t, units)),
-    }
+    b.map_or_else(
+        || "not stated".to_owned(),
+        |b| b.says(|t| temperature(t, units)),
+    )
 }
 
 /// The cold end.
@@ -254,12 +243,7 @@ pub(super) fn cold(t: &Told, steps: &OilSteps, units: Units) -> Vec<Said> {
     }
     all.push(said("known down to", &temperature(c.coldest, units)));
     for r in &c.measured {
-        let used = match r.point.used {
-            Used::Yes => "used",
-            Used::Within => "compared only: warmer than the coldest point stated",
-            Used::ThinnerThanLine => "not used: sheared fast, it reads low",
-            Used::Crosses => "not used: it does not fit the others",
-        };
+        let used = r.point.used.says();
         let text = format!(
             "{} at {} ({}), the line gives {}: {used}",
             say::amount(r.point.eta.amount(), units, Toward::Nearest),
@@ -270,20 +254,7 @@ pub(super) fn cold(t: &Told, steps: &OilSteps, units: Units) -> Vec<Said> {
         all.push(said("measured", &text));
     }
     if let Some((d, at)) = &c.designation {
-        let how = if d.measured {
-            "measured"
-        } else {
-            "read off the line, not measured"
-        };
-        let name = match (&d.whole, d.grade) {
-            (Some(whole), _) => whole.clone(),
-            (None, Some(grade)) => grade.to_owned(),
-            (None, None) => "no low-temperature grade".to_owned(),
-        };
-        let lacks = d
-            .lacks
-            .as_ref()
-            .map_or(String::new(), |l| format!("; whole designation: {l}"));
+        let (name, how, lacks) = d.says();
         let text = format!(
             "{name}: 750\u{202f}mPa·s at {} ({how}){}{lacks}",
             temperature(at.value, units),

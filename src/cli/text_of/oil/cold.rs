@@ -3,7 +3,6 @@
 use super::{entry, hours, temperature, viscosity};
 use crate::cli::text::{Column, table};
 use crate::model::stated::{Bound, ViscosityLimit};
-use crate::oil::cold::Used;
 use crate::oil::sheet::{ColdSheet, OilSheet};
 use crate::oil::start::Standing;
 use crate::quantity::show::{Toward, Units, fixed, quantity, significant, unit_of};
@@ -11,12 +10,10 @@ use crate::quantity::{Kind, Measure, ThermodynamicTemperature, Time};
 use std::fmt::Write as _;
 
 fn bound(b: Option<Bound<ThermodynamicTemperature>>, units: Units) -> String {
-    match b {
-        None => "not stated".to_owned(),
-        Some(Bound::Exactly(t)) => temperature(t, units),
-        Some(Bound::Below(t)) => format!("below {}", temperature(t, units)),
-        Some(Bound::Above(t)) => format!("above {}", temperature(t, units)),
-    }
+    b.map_or_else(
+        || "not stated".to_owned(),
+        |b| b.says(|t| temperature(t, units)),
+    )
 }
 
 /// What is measured cold, where limits are reached.
@@ -29,12 +26,7 @@ pub(super) fn cold(out: &mut String, c: &ColdSheet, units: Units, width: usize) 
     let _ = write!(says, "; known down to {}", temperature(c.coldest, units));
     out.push_str(&entry("cold", &says, width));
     for r in &c.measured {
-        let used = match r.point.used {
-            Used::Yes => "used",
-            Used::Within => "compared only: warmer than the coldest point stated",
-            Used::ThinnerThanLine => "not used: sheared fast, it reads low",
-            Used::Crosses => "not used: it does not fit the others",
-        };
+        let used = r.point.used.says();
         let says = format!(
             "{} at {} ({}), the line gives {}: {used}",
             quantity(r.point.eta.amount(), units, Toward::Nearest),
@@ -46,20 +38,7 @@ pub(super) fn cold(out: &mut String, c: &ColdSheet, units: Units, width: usize) 
     }
     starts(out, c, units, width);
     if let Some((d, t)) = &c.designation {
-        let how = if d.measured {
-            "measured"
-        } else {
-            "read off the line, not measured"
-        };
-        let name = match (&d.whole, d.grade) {
-            (Some(whole), _) => whole.clone(),
-            (None, Some(grade)) => grade.to_owned(),
-            (None, None) => "no low-temperature grade".to_owned(),
-        };
-        let lacks = d
-            .lacks
-            .as_ref()
-            .map_or(String::new(), |l| format!("; whole designation: {l}"));
+        let (name, how, lacks) = d.says();
         let says = format!(
             "{name}: 750 mPa.s at {} ({how}){lacks}",
             temperature(t.value, units)
