@@ -83,7 +83,7 @@ impl Record {
         let _ = writeln!(out, "{pad}{}:", scalar(&self.name));
         let inner = " ".repeat(indent + 2);
         for (key, value) in &self.keys {
-            let _ = writeln!(out, "{inner}{}: {}", scalar(key), raw_or_scalar(value));
+            let _ = writeln!(out, "{inner}{}: {}", scalar(key), raw_or_scalar(key, value));
         }
         if !self.notes.is_empty() {
             let _ = writeln!(out, "{inner}notes: |");
@@ -101,7 +101,7 @@ impl Record {
                         out,
                         "{inner}  {mark}{}: {}",
                         scalar(key),
-                        raw_or_scalar(value)
+                        raw_or_scalar(key, value)
                     );
                 }
             }
@@ -109,13 +109,34 @@ impl Record {
     }
 }
 
+/// Keys that hold a text as people wrote it, never a list.
+const TEXTS: [&str; 4] = ["name", "area", "source", "note"];
+
 /// Lists and records are written as they are, texts so that they are read back.
-fn raw_or_scalar(value: &str) -> String {
+fn raw_or_scalar(key: &str, value: &str) -> String {
     let structured = (value.starts_with('[') && value.ends_with(']'))
         || (value.starts_with('{') && value.ends_with('}'));
-    if structured {
+    if structured && !TEXTS.contains(&key) {
         value.to_owned()
     } else {
         scalar(value)
+    }
+}
+
+#[cfg(test)]
+mod tests {
+    use super::Record;
+
+    #[test]
+    fn a_name_in_brackets_stays_a_text_and_a_list_a_list() {
+        let mut record = Record {
+            name: "P-1".to_owned(),
+            ..Record::default()
+        };
+        record.set("name", "{spare}");
+        record.set("classes", "[CKC, CKD]");
+        let mut out = String::new();
+        record.write(&mut out, 0);
+        assert_eq!(out, "P-1:\n  name: '{spare}'\n  classes: [CKC, CKD]\n");
     }
 }
