@@ -22,13 +22,7 @@ use crate::trace::{Known, Recorder};
 pub const FILM_RULE: &str = "bearing-film";
 
 fn wanted(key: &'static str, symbol: &'static str, says: &'static str) -> Wanted<'static> {
-    Wanted {
-        key,
-        about: None,
-        symbol,
-        says,
-        how: "bearing maker's drawing",
-    }
+    super::inputs::wanted(key, symbol, says, "bearing maker's drawing")
 }
 
 /// Adds the film demand of a bearing that asks for a film ratio.

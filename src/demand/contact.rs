@@ -21,13 +21,7 @@ use bodies::{modulus, radii, sigma};
 pub const CONTACT_RULE: &str = "contact-film";
 
 fn wanted(key: &'static str, symbol: &'static str, says: &'static str) -> Wanted<'static> {
-    Wanted {
-        key,
-        about: None,
-        symbol,
-        says,
-        how: "drawing, or a measurement on the part",
-    }
+    super::inputs::wanted(key, symbol, says, "drawing, or a measurement on the part")
 }
 
 /// Adds the film demand of a contact.

@@ -7,7 +7,7 @@ mod tooth;
 use super::context::{Context, HotAt};
 use super::film::FilmContact;
 use super::gear_mesh::film_limit;
-use super::inputs::Wanted;
+use super::inputs::wanted;
 use super::{Demand, End};
 use crate::model::part::{GearMesh, Part};
 use crate::model::rulebook::Confidence;
@@ -26,21 +26,6 @@ use tooth::REFERENCE_DENSITY;
 
 /// Id of the rule.
 pub const FILM_RULE: &str = "gear-film";
-
-fn wanted(
-    key: &'static str,
-    symbol: &'static str,
-    says: &'static str,
-    how: &'static str,
-) -> Wanted<'static> {
-    Wanted {
-        key,
-        about: None,
-        symbol,
-        says,
-        how,
-    }
-}
 
 /// Adds the film of a mesh: information always, a demand where a ratio is asked for.
 pub fn add<R: Recorder>(cx: &mut Context<'_, '_, R>, part: &Part, mesh: &GearMesh) {

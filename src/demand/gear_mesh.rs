@@ -3,7 +3,7 @@
 
 use super::context::Context;
 use super::film::{FilmContact, FilmDemand};
-use super::inputs::Wanted;
+use super::inputs::wanted;
 use super::{Demand, End, For, Limit, Standing};
 use crate::model::part::{GearMesh, GearType, Part};
 use crate::model::rulebook::Confidence;
@@ -21,21 +21,6 @@ use crate::trace::{Known, Recorder};
 pub const PITCH_LINE_RULE: &str = "gear-pitch-line";
 /// The component of practice whose window a hypoid mesh takes beside it.
 pub const HYPOID: &str = "gear_hypoid_axle";
-
-fn wanted(
-    key: &'static str,
-    symbol: &'static str,
-    says: &'static str,
-    how: &'static str,
-) -> Wanted<'static> {
-    Wanted {
-        key,
-        about: None,
-        symbol,
-        says,
-        how,
-    }
-}
 
 /// Adds the demands of a gear mesh.
 pub fn add<R: Recorder>(cx: &mut Context<'_, '_, R>, part: &Part, mesh: &GearMesh) {

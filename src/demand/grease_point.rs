@@ -6,7 +6,7 @@ mod interval;
 
 use super::context::Context;
 use super::grease_code;
-use super::inputs::Wanted;
+use super::inputs::wanted;
 use crate::model::Lubrication;
 use crate::model::part::{BearingClass, Part, RollingBearing};
 use crate::quantity::convert::{number, to_mm2_s};
@@ -14,21 +14,6 @@ use crate::quantity::{AngularVelocity, Length, Measure, Ratio};
 use crate::relation::bearing::grease::{AMOUNT, N_DM, SHARE, amount, n_dm};
 use crate::source::place::Given;
 use crate::trace::{Known, Recorder};
-
-fn wanted(
-    key: &'static str,
-    symbol: &'static str,
-    says: &'static str,
-    how: &'static str,
-) -> Wanted<'static> {
-    Wanted {
-        key,
-        about: None,
-        symbol,
-        says,
-        how,
-    }
-}
 
 /// Adds the findings of a bearing on a grease point.
 pub(super) fn add<R: Recorder>(

@@ -67,6 +67,22 @@ pub struct Wanted<'a> {
     pub how: &'static str,
 }
 
+/// An input of the part being worked on.
+pub(super) const fn wanted(
+    key: &'static str,
+    symbol: &'static str,
+    says: &'static str,
+    how: &'static str,
+) -> Wanted<'static> {
+    Wanted {
+        key,
+        about: None,
+        symbol,
+        says,
+        how,
+    }
+}
+
 /// One setting of all unknowns: a share of each range, in the order they are first asked for.
 #[derive(Clone, Debug, Default, PartialEq)]
 pub struct Scenario {

@@ -13,7 +13,7 @@ pub(super) mod shape;
 pub(super) mod warm;
 
 use super::context::Context;
-use super::inputs::Wanted;
+use super::inputs::wanted;
 use super::{Demand, End, Limit};
 use crate::model::part::{JournalBearing, Part};
 use crate::model::rulebook::Confidence;
@@ -29,21 +29,6 @@ pub const TRANSITION_RULE: &str = "journal-transition";
 pub const TEMPERATURE_RULE: &str = "journal-temperature";
 /// Id of the rule of the least eccentricity.
 pub const WHIRL_RULE: &str = "journal-whirl";
-
-fn wanted(
-    key: &'static str,
-    symbol: &'static str,
-    says: &'static str,
-    how: &'static str,
-) -> Wanted<'static> {
-    Wanted {
-        key,
-        about: None,
-        symbol,
-        says,
-        how,
-    }
-}
 
 /// Adds the demands of a journal bearing.
 pub fn add<R: Recorder>(cx: &mut Context<'_, '_, R>, part: &Part, bearing: &JournalBearing) {

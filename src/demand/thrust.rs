@@ -44,13 +44,12 @@ static PRESSURE: Law = Law {
 const LARGE: f64 = 0.5;
 
 fn wanted(key: &'static str, symbol: &'static str, says: &'static str) -> Wanted<'static> {
-    Wanted {
+    super::inputs::wanted(
         key,
-        about: None,
         symbol,
         says,
-        how: "drawing of the thrust bearing, or a rule at the next overhaul",
-    }
+        "drawing of the thrust bearing, or a rule at the next overhaul",
+    )
 }
 
 /// One pad with its duty.

@@ -3,7 +3,7 @@
 
 use super::component::window_demands;
 use super::context::Context;
-use super::inputs::{Usual, Wanted};
+use super::inputs::{Usual, Wanted, wanted};
 use super::{End, Undecided};
 use crate::model::part::{Part, WheelMaterial, WormMesh};
 use crate::quantity::convert::degrees;
@@ -17,21 +17,6 @@ use crate::trace::{Known, Recorder};
 
 /// The component of practice whose window a worm takes.
 pub const WINDOW: &str = "gear_worm";
-
-const fn wanted(
-    key: &'static str,
-    symbol: &'static str,
-    says: &'static str,
-    how: &'static str,
-) -> Wanted<'static> {
-    Wanted {
-        key,
-        about: None,
-        symbol,
-        says,
-        how,
-    }
-}
 
 const DISTANCE: Wanted<'static> = wanted(
     "centre distance",

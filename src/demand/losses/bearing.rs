@@ -17,13 +17,7 @@ const ALL: &str = "all its losses";
 const UNDER_LOAD: &str = "friction under load";
 
 fn wanted(key: &'static str, symbol: &'static str, says: &'static str) -> Wanted<'static> {
-    Wanted {
-        key,
-        about: None,
-        symbol,
-        says,
-        how: "designation, nameplate or drawing",
-    }
+    crate::demand::inputs::wanted(key, symbol, says, "designation, nameplate or drawing")
 }
 
 /// A rolling bearing by Palmgren. What the load takes does not depend on the oil; where the load

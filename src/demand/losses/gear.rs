@@ -25,13 +25,7 @@ const ALL: &str = "all its losses";
 const TEETH: &str = "rubbing of the teeth";
 
 fn wanted(key: &'static str, symbol: &'static str, says: &'static str) -> Wanted<'static> {
-    Wanted {
-        key,
-        about: None,
-        symbol,
-        says,
-        how: "nameplate or drawing",
-    }
+    crate::demand::inputs::wanted(key, symbol, says, "nameplate or drawing")
 }
 
 /// What of a pair is known. A bevel pair is its virtual cylindrical one, at mid-face.
