@@ -54,8 +54,7 @@ pub(super) fn candidates(
     if rows.len() > in_full {
         let _ = write!(
             order,
-            " From the {}th oil on the margins stand in figures, and the main reason alone.",
-            in_full + 1
+            " After the first {in_full}, but for the oil in use, margins stand in figures and with the main reason alone: the command filmwright why tells the rest."
         );
     }
     Some(Candidates {
